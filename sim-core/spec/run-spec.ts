@@ -1,0 +1,186 @@
+import { z } from 'zod';
+import { parameters, rateNames, type RateName, type Rates } from './parameters.ts';
+
+/** Version of the RunSpec format; a reader refuses what it does not know. */
+export const runSpecVersion = 1;
+
+/** Longest horizon and largest grid that a run may ask for. */
+export const maximumYears = 500;
+export const maximumCells = 16_777_216 * 4;
+
+const share = z.number().min(0).max(1);
+const year = z.number().int().min(1000).max(9999);
+const coordinate = z.number();
+const metres = z.number().positive();
+
+/** Where one layer of the ground comes from: one share for all cells, or a raster with how its numbers become shares. */
+const rasterMapping = {
+  band: z.number().int().min(1).optional(),
+  scale: z.number().optional(),
+  offset: z.number().optional(),
+  /** class number → share */
+  classes: z.record(z.string().regex(/^-?\d+$/, 'a whole class number'), share).optional(),
+  /** share where the raster has no data */
+  fill: share.optional(),
+};
+export const layerSourceSchema = z.union([
+  share,
+  z.strictObject({
+    /** path of a GeoTIFF, relative to the spec */ file: z.string().min(1),
+    ...rasterMapping,
+  }),
+  z.strictObject({
+    /** SHA-256 of an uploaded raster */ layer: z.string().regex(/^[0-9a-f]{64}$/),
+    ...rasterMapping,
+  }),
+]);
+export type LayerSource = z.infer<typeof layerSourceSchema>;
+
+export const layerSourcesSchema = z.strictObject({
+  capacity: layerSourceSchema.default(1),
+  vigour: layerSourceSchema.default(1),
+  exposure: layerSourceSchema.default(0),
+  refuge: layerSourceSchema.default(0),
+  fence: layerSourceSchema.default(0),
+  cover: layerSourceSchema,
+});
+export type LayerSources = z.infer<typeof layerSourcesSchema>;
+
+/** Places on the ground, in the site's CRS, m. A cell belongs to an area when its centre does. */
+export const areaSchema = z.discriminatedUnion('shape', [
+  z.strictObject({ shape: z.literal('disc'), x: coordinate, y: coordinate, radius: metres }),
+  z.strictObject({
+    shape: z.literal('polygon'),
+    ring: z
+      .array(z.tuple([coordinate, coordinate]))
+      .min(3)
+      .max(10_000),
+  }),
+]);
+export type Area = z.infer<typeof areaSchema>;
+
+/** Works and one-off losses. What is dated in a year acts at its start and shows in that year's frame. */
+export const actionSchema = z.discriminatedUnion('kind', [
+  /** raises M to `strength` within `radius` of the point and fades it to 0 over a further `halo` metres */
+  z.strictObject({
+    kind: z.literal('mound'),
+    year,
+    x: coordinate,
+    y: coordinate,
+    radius: metres.max(1000),
+    strength: share.default(1),
+    halo: z.number().min(0).max(1000).default(0),
+  }),
+  /** raises cover to `cover`, never above capacity */
+  z.strictObject({ kind: z.literal('planting'), year, area: areaSchema, cover: share }),
+  /** raises F to `strength` from `year` to the end of `until` */
+  z.strictObject({
+    kind: z.literal('fence'),
+    year,
+    until: year.optional(),
+    area: areaSchema,
+    strength: share.default(1),
+  }),
+  /** removes `share` of the cover */
+  z.strictObject({ kind: z.literal('loss'), year, area: areaSchema, share }),
+]);
+export type Action = z.infer<typeof actionSchema>;
+export type Mound = Extract<Action, { kind: 'mound' }>;
+
+const rateSchema = (name: RateName) => {
+  const { min, max, unit, label } = parameters[name];
+  const said = `${label} must lie between ${min} and ${max} ${unit}`;
+  return z.number({ error: said }).min(min, said).max(max, said);
+};
+export const ratesSchema = z.strictObject(
+  Object.fromEntries(rateNames.map((n) => [n, rateSchema(n).default(parameters[n].default)])) as {
+    [name in RateName]: z.ZodDefault<z.ZodNumber>;
+  },
+) as unknown as z.ZodType<Rates, Partial<Rates>>;
+
+export const modeSchema = z.enum(['mean-field', 'counts']);
+export const boundarySchema = z.enum(['mirror', 'bare']);
+export const stepsPerYearSchema = z.union([z.literal(1), z.literal(2), z.literal(4), z.literal(12)]);
+export type Mode = z.infer<typeof modeSchema>;
+export type Boundary = z.infer<typeof boundarySchema>;
+export type StepsPerYear = z.infer<typeof stepsPerYearSchema>;
+
+const droughtIndexValue = z.number().min(-15).max(15);
+
+/** The fields of a RunSpec, before the checks that look at several fields at once. */
+export const runSpecFields = {
+  version: z.literal(runSpecVersion),
+  mode: modeSchema.default('counts'),
+  /** text from which every random draw follows */
+  seed: z.string().min(1).max(200),
+  replicate: z.number().int().min(0).max(0xffffff).default(0),
+  /** year of the survey: the first frame is its `cover`, the first simulated year is the next one */
+  surveyYear: year,
+  years: z.number().int().min(1).max(maximumYears),
+  stepsPerYear: stepsPerYearSchema.default(1),
+  boundary: boundarySchema.default('mirror'),
+  rates: ratesSchema,
+  /** Palmer scale, negative is dry: one value for all steps, one a year, or one a step, from the year after the survey */
+  droughtIndex: z.union([droughtIndexValue, z.array(droughtIndexValue).max(maximumYears * 12)]).default(0),
+  actions: z.array(actionSchema).max(20_000).default([]),
+  /** share of the reference cover that counts as recovered */
+  target: z.number().gt(0).max(1).default(0.9),
+  /** at least one of them is a raster: it gives the grid */
+  layers: layerSourcesSchema,
+  /** years whose cover is reported, the survey year included; every year unless said */
+  reportYears: z.array(year).optional(),
+};
+
+/** Everything that decides a run, but for the bytes of its layers. */
+export const runSpecSchema = z.strictObject(runSpecFields).superRefine((spec, context) => {
+  const first = spec.surveyYear + 1;
+  const last = spec.surveyYear + spec.years;
+  const say = (path: (string | number)[], message: string) =>
+    context.addIssue({ code: 'custom', path, message });
+  if (Array.isArray(spec.droughtIndex)) {
+    const n = spec.droughtIndex.length;
+    const steps = spec.years * spec.stepsPerYear;
+    if (n !== spec.years && n !== steps)
+      say(
+        ['droughtIndex'],
+        `Found ${n} values; expected one for each of ${spec.years} years` +
+          (steps === spec.years ? '' : ` or one for each of ${steps} steps`),
+      );
+  }
+  spec.actions.forEach((action, i) => {
+    if (action.year < first || action.year > last)
+      say(
+        ['actions', i, 'year'],
+        `Dated ${action.year}; works must fall in the simulated years ${first} to ${last}`,
+      );
+    if (action.kind === 'fence' && action.until !== undefined && action.until < action.year)
+      say(['actions', i, 'until'], `Ends in ${action.until}, before it starts in ${action.year}`);
+  });
+  spec.reportYears?.forEach((y, i) => {
+    if (y < spec.surveyYear || y > last)
+      say(['reportYears', i], `${y} lies outside ${spec.surveyYear} to ${last}`);
+  });
+});
+export type RunSpec = z.infer<typeof runSpecSchema>;
+/** What may be left out when a RunSpec is written by hand. */
+export type RunSpecInput = z.input<typeof runSpecSchema>;
+
+/** Drought index of every step, Float64, years × stepsPerYear. */
+export function droughtIndexBySteps(
+  spec: Pick<RunSpec, 'droughtIndex' | 'years' | 'stepsPerYear'>,
+): Float64Array {
+  const steps = spec.years * spec.stepsPerYear;
+  const given = spec.droughtIndex;
+  if (typeof given === 'number') return new Float64Array(steps).fill(given);
+  return Float64Array.from({ length: steps }, (_, s) =>
+    given.length === steps ? given[s] : given[Math.floor(s / spec.stepsPerYear)],
+  );
+}
+
+/** Years that have a frame, ascending: those asked for, or every year from the survey on. */
+export function frameYears(spec: Pick<RunSpec, 'surveyYear' | 'years' | 'reportYears'>): number[] {
+  const asked = spec.reportYears && new Set(spec.reportYears);
+  return Array.from({ length: spec.years + 1 }, (_, i) => spec.surveyYear + i).filter(
+    (y) => !asked || asked.has(y),
+  );
+}
