@@ -2,7 +2,7 @@ import { createHash, randomUUID, type Hash } from 'node:crypto';
 import { createReadStream, createWriteStream } from 'node:fs';
 import { mkdir, open, readdir, readFile, rename, rm, stat } from 'node:fs/promises';
 import { join } from 'node:path';
-import { Readable, Transform } from 'node:stream';
+import { Transform, type Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 
 /** A file that has arrived but belongs to nothing yet: it is kept or discarded by whoever asked for it. */
