@@ -7,6 +7,7 @@ const root = import.meta.dirname;
 export default defineConfig({
   root: `${root}/app`,
   publicDir: `${root}/app/public`,
+  cacheDir: `${root}/node_modules/.vite`,
   plugins: [react(), tailwindcss()],
   build: {
     outDir: `${root}/.build/app`,
