@@ -1,0 +1,44 @@
+import type { SeriesRow } from '#sim-core/spec/run-result.ts';
+
+/** The columns of a series in a CSV file, in order; the unit stands at the end of each name. */
+export const seriesColumns: readonly (readonly [key: keyof SeriesRow, header: string])[] = [
+  ['time', 'time_year'],
+  ['droughtIndex', 'drought_index'],
+  ['coveredArea', 'covered_area_m2'],
+  ['recoveredShare', 'recovered_share'],
+  ['occupiedArea', 'occupied_area_m2'],
+  ['closedArea', 'closed_area_m2'],
+  ['closingArea', 'closing_area_m2'],
+  ['edgeLength', 'edge_length_m'],
+  ['patches', 'patches'],
+  ['largestPatchArea', 'largest_patch_area_m2'],
+  ['lostToDrought', 'lost_to_drought_m2'],
+  ['lostToBackground', 'lost_to_background_m2'],
+  ['lostToEvents', 'lost_to_events_m2'],
+];
+
+type CsvValue = string | number | null;
+
+/**
+ * CSV of RFC 4180: CRLF after every line, quotes only where they are needed. Numbers are written in full precision,
+ * `null` as an empty field.
+ */
+export function csv(header: readonly string[], rows: Iterable<readonly CsvValue[]>): string {
+  let text = csvLine(header);
+  for (const row of rows) text += csvLine(row);
+  return text;
+}
+
+/** The series of one run. */
+export const seriesCsv = (series: readonly SeriesRow[]): string =>
+  csv(
+    seriesColumns.map(([, header]) => header),
+    series.map((row) => seriesColumns.map(([key]) => row[key])),
+  );
+
+const csvLine = (row: readonly CsvValue[]) => `${row.map(csvField).join(',')}\r\n`;
+
+function csvField(value: CsvValue): string {
+  if (typeof value !== 'string') return value === null ? '' : String(value);
+  return /[",\r\n]/.test(value) ? `"${value.replaceAll('"', '""')}"` : value;
+}
