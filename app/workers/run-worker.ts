@@ -1,0 +1,43 @@
+import { expose, transfer, type ProxyMarked, type Remote } from 'comlink';
+import { encodeCellValues } from '#rasters/cells/cell-values.ts';
+import { createRun } from '#sim-core/index.ts';
+import { createRunLoop, type RunInput, type RunListener, type YearEvent } from './run-loop.ts';
+
+const loop = createRunLoop({ createRun, pack: encodeCellValues, now: () => performance.now() });
+
+const buffersOf = (...arrays: (Uint8Array | Int16Array | undefined)[]) =>
+  arrays.filter((a) => a !== undefined).map((a) => a.buffer as ArrayBuffer);
+
+/** What the client calls; everything with cells is handed over, never copied. */
+const face = {
+  /** Holds a lock for as long as this worker lives, so that the page learns of a death that raises no event. */
+  hold: (lock: string) =>
+    new Promise<void>((held, refused) => {
+      navigator.locks
+        .request(lock, () => {
+          held();
+          return new Promise<never>(() => undefined);
+        })
+        .catch(refused);
+    }),
+  run: async (input: RunInput, listener: Remote<RunListener & ProxyMarked>) => {
+    const outcome = await loop.run(input, {
+      onYear: (event: YearEvent) =>
+        listener.onYear(transfer(event, buffersOf(event.frame, event.packed))) as Promise<void>,
+      onProgress: (progress) => void listener.onProgress?.(progress),
+    });
+    return transfer(outcome, buffersOf(outcome.closing, outcome.packedClosing));
+  },
+  pause: () => {
+    loop.pause();
+  },
+  resume: () => {
+    loop.resume();
+  },
+  step: () => {
+    loop.step();
+  },
+};
+export type RunWorkerFace = typeof face;
+
+expose(face);
