@@ -1,0 +1,30 @@
+import { InviteEntity } from './entities/invite.ts';
+import { MembershipEntity } from './entities/membership.ts';
+import { OneTimeLinkEntity } from './entities/one-time-link.ts';
+import { OutboxMessageEntity } from './entities/outbox-message.ts';
+import { PersonEntity } from './entities/person.ts';
+import { SessionEntity } from './entities/session.ts';
+import { TeamEntity } from './entities/team.ts';
+import { LayerEntity } from './entities/layer.ts';
+import { OptionEntity } from './entities/option.ts';
+import { RunEntity } from './entities/run.ts';
+import { RunFrameEntity } from './entities/run-frame.ts';
+import { RunLayerEntity } from './entities/run-layer.ts';
+import { SiteEntity } from './entities/site.ts';
+
+/** Every table. */
+export const entities = [
+  PersonEntity,
+  TeamEntity,
+  MembershipEntity,
+  SessionEntity,
+  InviteEntity,
+  OneTimeLinkEntity,
+  OutboxMessageEntity,
+  SiteEntity,
+  LayerEntity,
+  OptionEntity,
+  RunEntity,
+  RunFrameEntity,
+  RunLayerEntity,
+];
