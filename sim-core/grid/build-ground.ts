@@ -1,0 +1,47 @@
+import { RunProblem } from '#sim-core/run/run-problem.ts';
+import type { FieldProblem } from '#sim-core/spec/problems.ts';
+import type { LayerSource, LayerSources } from '#sim-core/spec/run-spec.ts';
+import { groundLayers, ShareError, toBytes, toShares } from './ground.ts';
+import type { CellValues, Ground, GroundLayer } from './ground.ts';
+
+/** Cells of a raster on the working grid, row-major. */
+export interface RasterValues {
+  readonly values: CellValues;
+  readonly noData?: number | null;
+}
+
+/** A layer source that is a raster. */
+export type RasterSource = Exclude<LayerSource, number>;
+
+/**
+ * The ground of a run from its layer sources.
+ *
+ * @param cells width × height
+ * @param rasterOf cells of the raster that a source names
+ * @throws RunProblem at each layer whose numbers do not become shares
+ */
+export function buildGround(
+  layers: LayerSources,
+  cells: number,
+  rasterOf: (source: RasterSource, layer: GroundLayer) => RasterValues,
+): Ground {
+  const problems: FieldProblem[] = [];
+  const sharesOf = (layer: GroundLayer): Float32Array => {
+    const source = layers[layer];
+    if (typeof source === 'number') return new Float32Array(cells).fill(source);
+    try {
+      const { values, noData } = rasterOf(source, layer);
+      return toShares(values, { ...source, noData });
+    } catch (error) {
+      if (!(error instanceof ShareError)) throw error;
+      problems.push({ field: `layers.${layer}`, message: error.message });
+      return new Float32Array();
+    }
+  };
+  const [capacity, vigour, exposure, refuge, fence] = groundLayers
+    .filter((layer) => layer !== 'cover')
+    .map((layer) => toBytes(sharesOf(layer)));
+  const cover = sharesOf('cover');
+  if (problems.length > 0) throw new RunProblem(problems);
+  return { capacity, vigour, exposure, refuge, fence, cover };
+}

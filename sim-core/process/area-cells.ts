@@ -1,0 +1,79 @@
+import { cellAt, cellCentre, type Grid } from '#sim-core/grid/grid.ts';
+import type { Area } from '#sim-core/spec/run-spec.ts';
+
+/** Cells of an area, ascending, and the share of each that it takes. */
+export interface AreaCells {
+  readonly cells: Uint32Array;
+  readonly share: number;
+}
+
+/**
+ * Cells whose centre lies in the area. A disc too small to hold a centre takes the cell that holds its middle, for the
+ * share that its own area is of the cell. Empty where the area lies off the grid or, a polygon, between centres.
+ */
+export function areaCells(area: Area, grid: Grid): AreaCells {
+  const cells =
+    area.shape === 'disc' ? discCells(area.x, area.y, area.radius, grid) : polygonCells(area, grid);
+  if (cells.length === 0 && area.shape === 'disc') {
+    const middle = cellAt(grid, area.x, area.y);
+    if (middle)
+      return {
+        cells: Uint32Array.of(middle.row * grid.width + middle.column),
+        share: discShare(area.radius, grid),
+      };
+  }
+  return { cells: Uint32Array.from(cells), share: 1 };
+}
+
+/** Share of a cell that a disc smaller than it takes. */
+export const discShare = (radius: number, grid: Grid): number =>
+  Math.min(1, (Math.PI * radius * radius) / (grid.cellSize * grid.cellSize));
+
+/** Columns and rows of the cells that may have their centre within `reach` of a point. */
+export function boxAround(x: number, y: number, reach: number, grid: Grid) {
+  const column = (x - grid.originX) / grid.cellSize - 0.5;
+  const row = (grid.originY - y) / grid.cellSize - 0.5;
+  const cells = reach / grid.cellSize;
+  return {
+    left: Math.max(0, Math.ceil(column - cells)),
+    right: Math.min(grid.width - 1, Math.floor(column + cells)),
+    top: Math.max(0, Math.ceil(row - cells)),
+    bottom: Math.min(grid.height - 1, Math.floor(row + cells)),
+  };
+}
+
+function discCells(x: number, y: number, radius: number, grid: Grid): number[] {
+  const { left, right, top, bottom } = boxAround(x, y, radius, grid);
+  const cells: number[] = [];
+  for (let row = top; row <= bottom; row++)
+    for (let column = left; column <= right; column++) {
+      const centre = cellCentre(grid, column, row);
+      if ((centre.x - x) ** 2 + (centre.y - y) ** 2 <= radius * radius) cells.push(row * grid.width + column);
+    }
+  return cells;
+}
+
+/** Even-odd rule, row by row: the columns between each pair of crossings of the row's middle line. */
+function polygonCells({ ring }: Extract<Area, { shape: 'polygon' }>, grid: Grid): number[] {
+  const cells: number[] = [];
+  const ys = ring.map(([, y]) => y);
+  const highest = ys.reduce((a, b) => Math.max(a, b));
+  const lowest = ys.reduce((a, b) => Math.min(a, b));
+  const top = Math.max(0, Math.ceil((grid.originY - highest) / grid.cellSize - 0.5));
+  const bottom = Math.min(grid.height - 1, Math.floor((grid.originY - lowest) / grid.cellSize - 0.5));
+  for (let row = top; row <= bottom; row++) {
+    const { y } = cellCentre(grid, 0, row);
+    const crossings: number[] = [];
+    ring.forEach(([x0, y0], i) => {
+      const [x1, y1] = ring[(i + 1) % ring.length];
+      if (y0 > y !== y1 > y) crossings.push(x0 + ((y - y0) / (y1 - y0)) * (x1 - x0));
+    });
+    crossings.sort((a, b) => a - b);
+    for (let pair = 0; pair + 1 < crossings.length; pair += 2) {
+      const from = Math.max(0, Math.ceil((crossings[pair] - grid.originX) / grid.cellSize - 0.5));
+      const to = Math.min(grid.width, Math.ceil((crossings[pair + 1] - grid.originX) / grid.cellSize - 0.5));
+      for (let column = from; column < to; column++) cells.push(row * grid.width + column);
+    }
+  }
+  return cells;
+}

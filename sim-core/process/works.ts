@@ -1,0 +1,143 @@
+import type { Grid } from '#sim-core/grid/grid.ts';
+import { coverOfClumps, type Kernel } from '#sim-core/kernel/kernel.ts';
+import { binomialQuantile } from '#sim-core/random/binomial.ts';
+import { cellLuck, processes } from '#sim-core/random/cell-luck.ts';
+import type { PhiloxKey } from '#sim-core/random/streams.ts';
+import type { FieldProblem } from '#sim-core/spec/problems.ts';
+import type { Action } from '#sim-core/spec/run-spec.ts';
+import { areaCells, type AreaCells } from './area-cells.ts';
+import { moundStrengths, type MoundStrengths } from './mound-strengths.ts';
+
+/** The works and losses of one year, rasterised. */
+interface YearWorks {
+  readonly plantings: (AreaCells & { readonly cover: number })[];
+  readonly mounds: MoundStrengths[];
+  readonly losses: (AreaCells & { readonly loss: number })[];
+}
+
+/**
+ * Works and one-off losses of a run, rasterised once. Fences keep grazers out and touch nothing else: as long as no
+ * process reads F they are checked, and change nothing.
+ */
+export interface Works {
+  /** what cannot be carried out, at its action */
+  readonly problems: readonly FieldProblem[];
+  /**
+   * Carries out what is dated `year`: plantings, then mounds, then losses.
+   *
+   * @param index first step of the year: part of the counter of every draw
+   * @returns ΣC that the losses removed, in cells
+   */
+  apply(year: number, index: number, map: WorksMap): number;
+}
+
+/** What works change, and the luck with which they do where clumps are counted. */
+export interface WorksMap {
+  readonly kernel: Kernel;
+  readonly capacity: Uint8Array;
+  readonly sites: Uint32Array;
+  readonly luck: PhiloxKey;
+  readonly replicate: number;
+}
+
+export function prepareWorks(actions: readonly Action[], grid: Grid): Works {
+  const years = new Map<number, YearWorks>();
+  const problems: FieldProblem[] = [];
+  actions.forEach((action, i) => {
+    const works = years.get(action.year) ?? { plantings: [], mounds: [], losses: [] };
+    years.set(action.year, works);
+    const { cells } = action.kind === 'mound' ? addMound(action, works) : addArea(action, works);
+    if (cells.length === 0)
+      problems.push({
+        field: `actions.${i}`,
+        message: `This ${action.kind} reaches no cell of the grid: move it onto the site${
+          action.kind !== 'mound' && action.area.shape === 'polygon' ? ', or draw it larger than a cell' : ''
+        }`,
+      });
+  });
+
+  function addMound(action: Extract<Action, { kind: 'mound' }>, works: YearWorks) {
+    const mound = moundStrengths(action, grid);
+    works.mounds.push(mound);
+    return mound;
+  }
+  function addArea(action: Exclude<Action, { kind: 'mound' }>, works: YearWorks) {
+    const area = areaCells(action.area, grid);
+    if (action.kind === 'planting') works.plantings.push({ ...area, cover: action.cover });
+    if (action.kind === 'loss') works.losses.push({ ...area, loss: action.share });
+    return area;
+  }
+
+  return {
+    problems,
+    apply(year, index, map) {
+      const works = years.get(year);
+      if (!works) return 0;
+      const { refuge } = map.kernel;
+      for (const planting of works.plantings) plant(planting, index, map);
+      for (const { cells, strengths } of works.mounds)
+        cells.forEach((cell, j) => {
+          if (strengths[j] > refuge[cell]) refuge[cell] = strengths[j];
+        });
+      return works.losses.reduce((lost, loss, order) => lost + remove(loss, order, index, map), 0);
+    },
+  };
+}
+
+/** Raises cover to the planted amount, never above capacity; a broken clump is set by the cell's luck. */
+function plant(planting: YearWorks['plantings'][number], index: number, map: WorksMap): void {
+  const { cover, clumps } = map.kernel;
+  const luck = cellLuck(map.luck, index, map.replicate, processes.events);
+  for (const cell of planting.cells) {
+    const capacity = Math.fround(map.capacity[cell] / 255);
+    const planted = Math.min(planting.cover * planting.share, capacity);
+    if (!clumps) cover[cell] = Math.max(cover[cell], planted);
+    else if (planted > 0)
+      setClumps(map, cell, Math.max(clumps[cell], wholeClumps(planted, cell, map, luck(cell).free)));
+  }
+}
+
+/** Removes a share of the cover, clump by clump where clumps are counted; ΣC that went. */
+function remove(
+  { cells, share, loss }: YearWorks['losses'][number],
+  order: number,
+  index: number,
+  map: WorksMap,
+): number {
+  const { cover, clumps } = map.kernel;
+  const through = 1 - loss * share;
+  // A second loss in the same year must not meet the same luck.
+  const luck = cellLuck(map.luck, index, map.replicate, processes.events + (order << 8));
+  let lost = 0;
+  for (const cell of cells) {
+    const before = cover[cell];
+    if (before === 0) continue;
+    if (clumps) setClumps(map, cell, binomialQuantile(luck(cell).standing, clumps[cell], through));
+    else cover[cell] = before * through;
+    lost += before - cover[cell];
+  }
+  return lost;
+}
+
+/**
+ * Clumps that make up a share of a cell: whole ones, and one more with the chance of the rest, so that no cover is made
+ * or lost on average.
+ */
+export function wholeClumps(
+  cover: number,
+  cell: number,
+  { capacity, sites }: Pick<WorksMap, 'capacity' | 'sites'>,
+  u: number,
+): number {
+  const k = capacity[cell];
+  const clumps = (cover / (k / 255)) * sites[k];
+  // What 32-bit cover cannot tell from a whole clump is one.
+  const nearest = Math.round(clumps);
+  return Math.min(sites[k], Math.abs(clumps - nearest) < 1e-4 ? nearest : Math.floor(clumps + u));
+}
+
+function setClumps({ kernel, capacity, sites }: WorksMap, cell: number, clumps: number): void {
+  if (!kernel.clumps) return;
+  kernel.clumps[cell] = clumps;
+  kernel.cover[cell] = coverOfClumps(capacity[cell], clumps, sites[capacity[cell]]);
+}

@@ -1,0 +1,23 @@
+import seedrandom from 'seedrandom';
+
+/** What a stream of random numbers is for; the number is the replicate. */
+export type Purpose = `shoots/${number}` | `events/${number}` | `weather/${number}` | `parameters` | `survey`;
+
+/**
+ * The stream of one purpose: seedrandom 3 (ARC4) keyed by `seed/purpose`, so that no process ever takes another's
+ * numbers and adding a process changes no other's.
+ */
+export const stream = (seed: string, purpose: Purpose): seedrandom.PRNG => seedrandom(`${seed}/${purpose}`);
+
+/** Key of the counter-based draws of a purpose: two 32-bit words from its stream. */
+export interface PhiloxKey {
+  readonly k0: number;
+  readonly k1: number;
+}
+
+export function philoxKey(seed: string, purpose: Purpose): PhiloxKey {
+  const words = stream(seed, purpose);
+  const k0 = words.int32() >>> 0;
+  const k1 = words.int32() >>> 0;
+  return { k0, k1 };
+}
