@@ -30,6 +30,8 @@ export interface BlobStore {
   keep(file: ReceivedFile): Promise<void>;
   /** Removes an arrival that was not kept; harmless when it was. */
   discard(file: { readonly path: string }): Promise<void>;
+  /** Where a blob stands, for a worker that reads it itself. */
+  locate(hash: string): string;
   /** @throws BlobMissing */
   open(hash: string): Promise<{ stream: Readable; bytes: number }>;
   /** @throws BlobMissing */
@@ -98,6 +100,7 @@ export async function openBlobStore(dataDir: string): Promise<BlobStore> {
       await flush(folderOf(file.hash), 'r');
     },
     discard: (file) => rm(file.path, { force: true }),
+    locate: pathOf,
     async open(hash) {
       const path = pathOf(hash);
       const { size } = await stat(path).catch(missing(hash));

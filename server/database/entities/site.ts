@@ -1,0 +1,57 @@
+import { EntitySchema } from 'typeorm';
+import { TeamEntity } from './team.ts';
+
+/** A place with one working grid. `plant` and `outlook` are JSON of the contract's schemas, parsed when read. */
+export interface SiteRow {
+  id: string;
+  teamId: string;
+  name: string;
+  /** marks the demo's place, which does not exist */
+  invented: boolean;
+  width: number;
+  height: number;
+  cellSize: number;
+  originX: number;
+  originY: number;
+  epsg: number;
+  crsName: string;
+  plant: string;
+  /** false while the plant is the default that nobody has looked at */
+  plantSet: boolean;
+  outlook: string;
+  outlookSet: boolean;
+  createdAt: string;
+}
+
+export const SiteEntity = new EntitySchema<SiteRow>({
+  name: 'Site',
+  tableName: 'site',
+  columns: {
+    id: { type: 'text', primary: true },
+    teamId: { type: 'text' },
+    name: { type: 'text' },
+    invented: { type: 'boolean' },
+    width: { type: 'integer' },
+    height: { type: 'integer' },
+    cellSize: { type: 'real' },
+    originX: { type: 'real' },
+    originY: { type: 'real' },
+    epsg: { type: 'integer' },
+    crsName: { type: 'text' },
+    plant: { type: 'text' },
+    plantSet: { type: 'boolean' },
+    outlook: { type: 'text' },
+    outlookSet: { type: 'boolean' },
+    createdAt: { type: 'text' },
+  },
+  indices: [{ name: 'site_by_team', columns: ['teamId'] }],
+  foreignKeys: [
+    {
+      name: 'site_team',
+      target: TeamEntity,
+      columnNames: ['teamId'],
+      referencedColumnNames: ['id'],
+      onDelete: 'CASCADE',
+    },
+  ],
+});
