@@ -12,7 +12,7 @@ export class InflateError extends Error {
  * first byte too many, so a stream that would grow without end costs no more than an honest one.
  * @throws InflateError when the stream is broken, too short, too long, or fails its checksum
  */
-export function inflateExactly(stream: Uint8Array, size: number): Uint8Array {
+export function inflateExactly(stream: Uint8Array, size: number): Uint8Array<ArrayBuffer> {
   if (stream.length < 6)
     throw new InflateError(`a zlib stream of ${stream.length} bytes is too short to be one`);
   const out = new Uint8Array(size);

@@ -1,0 +1,49 @@
+import { inflateExactly, InflateError } from '#rasters/cells/inflate-exactly.ts';
+import { decodeLzw } from './lzw.ts';
+import { decodePackBits } from './pack-bits.ts';
+import { toHostOrder, undoDifferences, undoFloatDifferences } from './predictor.ts';
+import { damaged } from './raster-error.ts';
+import { compressions, type TiffLayout } from './tiff-layout.ts';
+
+/**
+ * The cells of one strip or tile, in this machine's byte order: `rows` × the block's width × the bytes of a cell, in a
+ * fresh buffer. No decoder writes a byte more, whatever the block claims.
+ * @throws RasterError `raster-truncated` when the block is damaged or does not hold so many bytes
+ */
+export function decodeBlock(block: Uint8Array, rows: number, layout: TiffLayout): Uint8Array<ArrayBuffer> {
+  const { compression, predictor, blockWidth, bytesPerCell, littleEndian } = layout;
+  const bytes = unpack(block, rows * blockWidth * bytesPerCell, compression);
+  const shape = { width: blockWidth, rows, bytesPerCell, littleEndian };
+  if (predictor === 3) {
+    undoFloatDifferences(bytes, shape);
+    return bytes;
+  }
+  toHostOrder(bytes, bytesPerCell, littleEndian);
+  if (predictor === 2) undoDifferences(bytes, shape);
+  return bytes;
+}
+
+function unpack(
+  block: Uint8Array,
+  size: number,
+  compression: TiffLayout['compression'],
+): Uint8Array<ArrayBuffer> {
+  switch (compression) {
+    case compressions.none:
+      if (block.length < size) throw damaged(`a strip or tile of ${block.length} bytes where ${size} belong`);
+      // Not slice: a Node Buffer would give a view of the source, and the cells are put in order in place.
+      return new Uint8Array(block.subarray(0, size));
+    case compressions.lzw:
+      return decodeLzw(block, size);
+    case compressions.packBits:
+      return decodePackBits(block, size);
+    case compressions.deflate:
+    case compressions.oldDeflate:
+      try {
+        return inflateExactly(block, size);
+      } catch (error) {
+        if (error instanceof InflateError) throw damaged(`a strip or tile that holds ${error.message}`);
+        throw error;
+      }
+  }
+}
