@@ -3,7 +3,13 @@ import { join } from 'node:path';
 import { pino, type Logger } from 'pino';
 import type { Config } from './config.ts';
 import { openDatabase, type Database } from './database/open-database.ts';
+import { createScopeLookup } from './database/scope-lookup.ts';
+import { openBlobStore, type BlobStore } from './files/blob-store.ts';
+import { sweepBlobs } from './files/stored-files.ts';
+import { createRasterPool, type RasterPool } from './jobs/raster-pool.ts';
+import { createMail, type Mail } from './mail/mail.ts';
 import type { ScopeLookup } from './middleware/access.ts';
+import { createPasswords, type Passwords } from './people/passwords.ts';
 import { keptSessionSecret } from './session-secret.ts';
 
 /** All that the routes of one app share. Nothing is global: tests build many apps side by side. */
@@ -16,7 +22,13 @@ export interface Services {
   /** the one way to write */
   write: Database['write'];
   sessionSecret: string;
+  passwords: Passwords;
+  mail: Mail;
   scope: ScopeLookup;
+  /** uploaded and computed files, by the SHA-256 of their bytes */
+  blobs: BlobStore;
+  /** heavy work on rasters, off the thread that answers requests */
+  rasters: RasterPool;
   /** waits for work in the background, then closes the database */
   close(): Promise<void>;
 }
@@ -30,6 +42,10 @@ export async function createServices(
   const log = pino({ level: config.logLevel });
   const database = await openDatabase(join(config.dataDir, 'foothold.sqlite'));
   const { dataSource, write } = database;
+  const blobs = await openBlobStore(config.dataDir);
+  const rasters = createRasterPool();
+  await sweepBlobs({ write, blobs });
+  const mail = createMail({ config, write, clock, log });
   return {
     config,
     log,
@@ -37,10 +53,15 @@ export async function createServices(
     dataSource,
     write,
     sessionSecret: config.sessionSecret ?? keptSessionSecret(config.dataDir),
-    scope: {
-      teamOfSite: () => Promise.resolve(undefined),
-      teamOfRun: () => Promise.resolve(undefined),
+    passwords: createPasswords(config.bcryptCost),
+    mail,
+    scope: createScopeLookup(dataSource),
+    blobs,
+    rasters,
+    async close() {
+      await mail.idle();
+      await rasters.close();
+      await database.close();
     },
-    close: () => database.close(),
   };
 }

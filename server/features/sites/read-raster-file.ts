@@ -1,0 +1,53 @@
+import type { Grid } from '#sim-core/grid/grid.ts';
+import type { LayerPart, ValueUnit } from '#contract/sites.ts';
+import { maximumCells } from '#sim-core/spec/run-spec.ts';
+import type { ReceivedFile } from '#server/files/blob-store.ts';
+import type { LayerFacts } from '#server/jobs/layer-facts.ts';
+import type { Services } from '#server/services.ts';
+
+/** A raster as it came in: the file, its name for show, and who sent it. */
+export interface ArrivedRaster {
+  part: LayerPart;
+  file: ReceivedFile;
+  fileName: string;
+  /** the name of whoever sent it */
+  by: string;
+}
+
+export interface ReadRaster {
+  grid: Grid;
+  facts: LayerFacts;
+  /** what the values most likely are; meaningless for `habitat` */
+  unit: ValueUnit;
+  /** the decoded values, an arrival that waits to be kept */
+  values: ReceivedFile;
+}
+
+/**
+ * Has an uploaded file read and checked by the worker. When it is refused, the file and what was made of it are removed.
+ * @param grid the site's, when there is a site already: the raster must lie on it
+ * @throws ProblemError what is wrong with the raster
+ */
+export async function readRasterFile(
+  services: Services,
+  file: ReceivedFile,
+  part: LayerPart,
+  grid?: Grid,
+): Promise<ReadRaster> {
+  const valuesPath = services.blobs.reserve();
+  try {
+    const { values, ...read } = await services.rasters.run({
+      kind: 'read-layer',
+      path: file.path,
+      valuesPath,
+      part,
+      grid: grid ?? null,
+      cells: maximumCells,
+    });
+    return { ...read, values: { path: valuesPath, ...values } };
+  } catch (error) {
+    await services.blobs.discard(file);
+    await services.blobs.discard({ path: valuesPath });
+    throw error;
+  }
+}

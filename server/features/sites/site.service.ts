@@ -1,0 +1,90 @@
+import { randomUUID } from 'node:crypto';
+import type { Outlook, Plant, Site } from '#contract/sites.ts';
+import { defaultRates } from '#sim-core/spec/parameters.ts';
+import type { SiteRow } from '#server/database/entities/site.ts';
+import { releaseBlobs, storeWithRows } from '#server/files/stored-files.ts';
+import type { Services } from '#server/services.ts';
+import { layerRowOf } from './layer.service.ts';
+import { readRasterFile, type ArrivedRaster } from './read-raster-file.ts';
+import { siteReply } from './site-reply.ts';
+import { deleteSiteRows, insertSite, updateSite } from './site.repository.ts';
+
+const defaultHorizon = 34;
+
+/** An outlook to start from: the survey is this year's, and no year is dry. */
+export const defaultOutlook = (thisYear: number): Outlook => ({
+  surveyYear: thisYear,
+  years: defaultHorizon,
+  stepsPerYear: 1,
+  boundary: 'mirror',
+  droughtIndex: Array.from({ length: defaultHorizon }, () => 0),
+});
+
+const defaultPlant: Plant = { name: 'Plant', rates: defaultRates };
+
+/**
+ * Makes a site whose working grid is the raster's, with the option `Wait`, a default plant and a default outlook. A
+ * refused raster leaves nothing behind.
+ * @throws ProblemError what is wrong with the raster
+ */
+export async function createSite(
+  services: Services,
+  {
+    teamId,
+    name,
+    invented = false,
+    ...raster
+  }: ArrivedRaster & { teamId: string; name: string; invented?: boolean },
+): Promise<Site> {
+  const read = await readRasterFile(services, raster.file, raster.part);
+  const now = services.clock();
+  const site: SiteRow = {
+    id: randomUUID(),
+    teamId,
+    name,
+    invented,
+    ...read.grid,
+    crsName: read.facts.crsName,
+    plant: JSON.stringify(defaultPlant),
+    plantSet: false,
+    outlook: JSON.stringify(defaultOutlook(now.getUTCFullYear())),
+    outlookSet: false,
+    createdAt: now.toISOString(),
+  };
+  const wait = {
+    id: randomUUID(),
+    siteId: site.id,
+    wait: true,
+    name: 'Wait',
+    works: '[]',
+    revision: 1,
+    createdAt: site.createdAt,
+    changedAt: site.createdAt,
+    changedBy: raster.by,
+  };
+  return storeWithRows(services, [raster.file, read.values], async (manager) => {
+    await insertSite(manager, { site, layer: layerRowOf(site.id, raster, read, site.createdAt), wait });
+    return siteReply(manager, site.id);
+  });
+}
+
+const changeSite = (services: Services, siteId: string, change: Partial<SiteRow>): Promise<Site> =>
+  services.write(async (manager) => {
+    await updateSite(manager, siteId, change);
+    return siteReply(manager, siteId);
+  });
+
+export const renameSite = (services: Services, siteId: string, name: string): Promise<Site> =>
+  changeSite(services, siteId, { name });
+
+export const setPlant = (services: Services, siteId: string, plant: Plant): Promise<Site> =>
+  changeSite(services, siteId, { plant: JSON.stringify(plant), plantSet: true });
+
+export const setOutlook = (services: Services, siteId: string, outlook: Outlook): Promise<Site> =>
+  changeSite(services, siteId, { outlook: JSON.stringify(outlook), outlookSet: true });
+
+/** Deletes a site with its layers, options and runs, and every file that nothing else refers to. */
+export async function deleteSite(services: Services, siteId: string): Promise<void> {
+  const hashes = await services.write((manager) => deleteSiteRows(manager, siteId));
+  await releaseBlobs(services, hashes);
+}

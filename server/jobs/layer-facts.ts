@@ -1,0 +1,66 @@
+import type { z } from 'zod';
+import { layerSchema, type LayerPart, type ValueUnit } from '#contract/sites.ts';
+
+/** What was found in a raster, as the contract shows it. */
+export const layerFactsSchema = layerSchema.pick({
+  dataType: true,
+  crsName: true,
+  noData: true,
+  noDataShare: true,
+  minimum: true,
+  maximum: true,
+  histogram: true,
+  classCounts: true,
+});
+export type LayerFacts = z.infer<typeof layerFactsSchema>;
+
+/** What is wrong with a raster's values for the part it should play. */
+export interface ValueComplaint {
+  found: string;
+  expected: string;
+  remedy: string;
+}
+
+const largest: Record<ValueUnit, number> = { share: 1, percent: 100, byte: 255, presence: 1 };
+
+/** Whether all values of a raster can be read in a unit; present and absent are whole numbers. */
+export function fitsUnit(
+  { dataType, minimum, maximum }: Pick<LayerFacts, 'dataType' | 'minimum' | 'maximum'>,
+  unit: ValueUnit,
+): boolean {
+  if (unit === 'presence' && dataType.startsWith('float')) return false;
+  return minimum >= 0 && maximum <= largest[unit];
+}
+
+/** What forbids that a raster plays a part when its values are read in `unit`, or undefined. */
+export function valueComplaint(
+  part: LayerPart,
+  facts: LayerFacts,
+  unit: ValueUnit,
+): ValueComplaint | undefined {
+  const range = `values from ${facts.minimum} to ${facts.maximum}`;
+  if (!Number.isFinite(facts.minimum) || !Number.isFinite(facts.maximum))
+    return {
+      found: range,
+      expected: 'finite numbers',
+      remedy: 'Find out how the raster was computed (a division by zero?) and write such cells as no data.',
+    };
+  if (part === 'habitat') {
+    if (facts.classCounts && facts.classCounts.every(({ value }) => Number.isSafeInteger(value)))
+      return undefined;
+    return {
+      found: `${range} that are no classes: fractions, or more than 256 different numbers`,
+      expected: 'whole class numbers, at most 256 different ones',
+      remedy: 'Upload the classified raster, or choose the part that these values play.',
+    };
+  }
+  if (fitsUnit(facts, unit)) return undefined;
+  return {
+    found: range,
+    expected: 'shares: 0 to 1, 0 to 100 per cent, or 0 to 255 in 8 bits',
+    remedy:
+      facts.minimum < 0
+        ? `If ${facts.minimum} stands for missing cells, declare it: gdal_translate -a_nodata ${facts.minimum} IN.tif OUT.tif.`
+        : 'Scale the values to shares first, for example with gdal_translate -scale and -ot Float32.',
+  };
+}
