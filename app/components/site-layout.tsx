@@ -50,7 +50,7 @@ function MapPage(props: Parameters<typeof SiteLayout>[0]) {
         </div>
       </div>
       {props.yearline !== undefined && (
-        <div className="border-t border-ink lg:order-last lg:col-span-2 lg:h-[170px]">{props.yearline}</div>
+        <div className="border-t border-ink lg:order-last lg:col-span-2">{props.yearline}</div>
       )}
       <aside
         aria-label="Notes on the map"

@@ -16,6 +16,8 @@ export function Table<Row>(props: {
   /** what the table holds; read out, and shown when `showCaption` */
   caption: string;
   showCaption?: boolean;
+  /** the column heads are only read out */
+  headless?: boolean;
   columns: readonly Column<Row>[];
   rows: readonly Row[];
   rowKey: (row: Row) => string;
@@ -30,7 +32,7 @@ export function Table<Row>(props: {
       >
         {props.caption}
       </caption>
-      <thead>
+      <thead className={props.headless ? 'sr-only' : undefined}>
         <tr>
           {props.columns.map((column) => (
             <th

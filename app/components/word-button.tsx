@@ -1,4 +1,4 @@
-import type { AnchorHTMLAttributes, ButtonHTMLAttributes, Ref } from 'react';
+import type { AnchorHTMLAttributes, ButtonHTMLAttributes, ReactNode, Ref } from 'react';
 import { Link } from 'react-router-dom';
 import { classNames } from '#app/lib/class-names.ts';
 
@@ -6,6 +6,7 @@ const word =
   'inline-flex min-h-7 touch:min-h-11 items-center gap-1.5 border-b-2 px-0.5 text-[13.5px] whitespace-nowrap ' +
   'no-underline transition-colors duration-150 disabled:text-ink-3 disabled:cursor-not-allowed disabled:border-transparent';
 const rest = 'border-transparent enabled:hover:border-rule';
+const plain = 'border-transparent hover:border-rule';
 const lined = 'border-rule hover:border-ink';
 const on = 'border-ink font-bold';
 
@@ -42,10 +43,10 @@ export function WordButton({
   );
 }
 
-/** A word that leads to a page of ours. */
-export function WordLink(props: { to: string; className?: string; children: React.ReactNode }) {
+/** A word that leads to a page of ours; `plain` among other words that need no line either. */
+export function WordLink(props: { to: string; plain?: boolean; className?: string; children: ReactNode }) {
   return (
-    <Link to={props.to} className={classNames(word, lined, props.className)}>
+    <Link to={props.to} className={classNames(word, props.plain ? plain : lined, props.className)}>
       {props.children}
     </Link>
   );

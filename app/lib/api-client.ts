@@ -76,7 +76,9 @@ export function endpointUrl<E extends Endpoint>(endpoint: E, input: AddressInput
 function address(endpoint: Endpoint, input: RawInput): string {
   const path = fillPath(endpoint.path, input.params as Record<string, string | number> | undefined);
   const query = new URLSearchParams();
-  for (const [name, value] of Object.entries((input.query ?? {}) as Record<string, string | number | undefined>)) {
+  for (const [name, value] of Object.entries(
+    (input.query ?? {}) as Record<string, string | number | undefined>,
+  )) {
     if (value !== undefined) query.set(name, String(value));
   }
   const search = query.toString();

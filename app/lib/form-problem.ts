@@ -5,8 +5,8 @@ import { errorText, ProblemError } from './api-client.ts';
  * Puts what the server found wrong at the fields of a form and returns the sentence that belongs to none of them
  * (undefined when every complaint found its field).
  */
-export function showProblem<Values extends FieldValues>(
-  form: UseFormReturn<Values>,
+export function showProblem<Values extends FieldValues, Context, Output>(
+  form: UseFormReturn<Values, Context, Output>,
   error: unknown,
 ): string | undefined {
   const known = form.getValues();

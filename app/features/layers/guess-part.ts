@@ -1,0 +1,13 @@
+import { layerParts, type LayerPart } from '#contract/sites.ts';
+
+const hints: Record<LayerPart, RegExp> = {
+  habitat: /habitat|class|landcover|land-cover|zones?/i,
+  cover: /cover|vegetation|canopy/i,
+  refuge: /refuge|mound|shelter/i,
+};
+
+/** The part that a file most likely plays: by its name, else the first that has no layer yet; undefined when none is free. */
+export function guessPart(fileName: string, taken: readonly LayerPart[]): LayerPart | undefined {
+  const named = layerParts.find((part) => hints[part].test(fileName));
+  return named ?? layerParts.find((part) => !taken.includes(part));
+}

@@ -1,0 +1,129 @@
+import type { Layer, LayerPart, Option, Site } from '#contract/sites.ts';
+import { valueUnitScale } from '#contract/sites.ts';
+import { fitKernel, RunProblem } from '#sim-core/index.ts';
+import { prepareWorks } from '#sim-core/process/works.ts';
+import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
+import { runSpecSchema, runSpecVersion, type Mode, type RunSpec } from '#sim-core/spec/run-spec.ts';
+
+/** What the person who starts a run decides; everything else comes from the site and the option. */
+export interface RunChoices {
+  readonly mode: Mode;
+  readonly seed: string;
+}
+
+/** Where a problem is mended: a page of the site, or the form itself. */
+export type MendingPlace = 'ground' | 'plant' | 'outlook' | 'options' | 'form';
+
+export interface CompositionProblem extends FieldProblem {
+  readonly mend: MendingPlace;
+}
+
+export type Composition =
+  | { readonly spec: RunSpec; readonly problems?: undefined }
+  | { readonly spec?: undefined; readonly problems: readonly CompositionProblem[] };
+
+/** The layer that plays a part on a site. */
+export const layerOf = (site: Site, part: LayerPart): Layer | undefined =>
+  site.layers.find((layer) => layer.part === part);
+
+/**
+ * The RunSpec of an option on a site: capacity and vigour from the classes of `habitat`, cover and refuge by the scale
+ * of their unit, each named by the hash of its file. Instead of a spec it returns everything that stands in the way,
+ * each with the page where it is mended: what is missing, what the schema refuses, what the engine refuses.
+ */
+export function composeRunSpec(
+  site: Site,
+  option: Pick<Option, 'works'>,
+  { mode, seed }: RunChoices,
+): Composition {
+  const missing = missingGround(site);
+  if (missing.length > 0) return { problems: missing };
+  const { surveyYear, years, stepsPerYear, boundary, droughtIndex } = site.outlook;
+  const parsed = runSpecSchema.safeParse({
+    version: runSpecVersion,
+    mode,
+    seed: seed.trim(),
+    surveyYear,
+    years,
+    stepsPerYear,
+    boundary,
+    rates: site.plant.rates,
+    droughtIndex,
+    actions: option.works,
+    layers: layerSources(site),
+  });
+  if (!parsed.success) return { problems: fieldProblems(parsed.error).map(placed) };
+  const refused = engineRefusals(parsed.data, site);
+  return refused.length > 0 ? { problems: refused.map(placed) } : { spec: parsed.data };
+}
+
+function layerSources(site: Site) {
+  const habitat = layerOf(site, 'habitat');
+  const classes = habitat?.classes ?? [];
+  const table = (of: 'capacity' | 'vigour') => ({
+    layer: habitat?.hash,
+    classes: Object.fromEntries(classes.map((row) => [String(row.value), row[of]])),
+  });
+  const scaled = (layer: Layer | undefined) =>
+    layer && { layer: layer.hash, scale: valueUnitScale[layer.unit] };
+  return {
+    capacity: table('capacity'),
+    vigour: table('vigour'),
+    cover: scaled(layerOf(site, 'cover')),
+    refuge: scaled(layerOf(site, 'refuge')) ?? 0,
+  };
+}
+
+function missingGround(site: Site): CompositionProblem[] {
+  const problems: CompositionProblem[] = [];
+  const say = (field: string, message: string) => problems.push({ field, message, mend: 'ground' });
+  const habitat = layerOf(site, 'habitat');
+  if (!habitat)
+    say('layers.capacity', 'There is no habitat layer, so nothing says where the plant can grow.');
+  else if (!habitat.classes)
+    say('layers.capacity', 'The habitat layer has no class table, so nothing says what each class can hold.');
+  else if (habitat.classes.every((row) => row.capacity === 0))
+    say('layers.capacity', 'No habitat class can hold the plant: give at least one a capacity above 0.');
+  if (!layerOf(site, 'cover'))
+    say('layers.cover', 'There is no cover layer, so nothing says what stands now.');
+  for (const part of ['cover', 'refuge'] as const) {
+    const layer = layerOf(site, part);
+    const scale = layer && valueUnitScale[layer.unit];
+    if (layer && scale && (layer.maximum * scale > 1 + 1e-6 || layer.minimum * scale < -1e-6))
+      say(
+        `layers.${part}`,
+        `The ${part} layer holds ${layer.minimum} to ${layer.maximum}, which its unit does not turn into shares from 0 to 1.`,
+      );
+  }
+  return problems;
+}
+
+function engineRefusals(spec: RunSpec, site: Site): FieldProblem[] {
+  const problems: FieldProblem[] = [...prepareWorks(spec.actions, site.grid).problems];
+  try {
+    fitKernel(spec.rates, site.grid.cellSize, spec.stepsPerYear);
+  } catch (error) {
+    if (!(error instanceof RunProblem)) throw error;
+    problems.push(...error.problems);
+  }
+  return problems;
+}
+
+const places: readonly [prefix: string, mend: MendingPlace][] = [
+  ['layers', 'ground'],
+  ['rates', 'plant'],
+  ['actions', 'options'],
+  ['seed', 'form'],
+  ['mode', 'form'],
+];
+
+function placed(problem: FieldProblem): CompositionProblem {
+  const mend = places.find(([prefix]) => problem.field.startsWith(prefix))?.[1] ?? 'outlook';
+  return { ...problem, message: inWords(problem), mend };
+}
+
+/** Works are counted from 1 on the page, as in their table. */
+function inWords({ field, message }: FieldProblem): string {
+  const nth = /^actions\.(\d+)/.exec(field)?.[1];
+  return nth === undefined ? message : `Number ${Number(nth) + 1} of the works: ${message}`;
+}

@@ -1,0 +1,61 @@
+import type { Layer, Site } from '#contract/sites.ts';
+import { defaultRates } from '#sim-core/spec/parameters.ts';
+
+const id = (n: number) => `00000000-0000-4000-8000-${String(n).padStart(12, '0')}`;
+
+export const layerFixture = (part: Layer['part'], more: Partial<Layer> = {}): Layer => ({
+  id: id(10 + part.length),
+  part,
+  fileName: `${part}.tif`,
+  hash: part === 'habitat' ? 'a'.repeat(64) : part === 'cover' ? 'b'.repeat(64) : 'c'.repeat(64),
+  bytes: 1000,
+  uploadedAt: '2026-12-01T08:00:00.000Z',
+  uploadedBy: 'Invented Person',
+  dataType: part === 'habitat' ? 'uint8' : 'float32',
+  crsName: 'an invented CRS',
+  noData: null,
+  noDataShare: 0,
+  minimum: 0,
+  maximum: 1,
+  histogram: [],
+  classCounts: null,
+  unit: 'share',
+  classes:
+    part === 'habitat'
+      ? [
+          { value: 1, name: 'creek', colour: '#b7c4ce', capacity: 0, vigour: 0 },
+          { value: 2, name: 'marsh', colour: '#5b825a', capacity: 0.9, vigour: 1 },
+        ]
+      : null,
+  ...more,
+});
+
+/** A small invented site that is ready to run. */
+export const siteFixture = (more: Partial<Site> = {}): Site => ({
+  id: id(1),
+  teamId: id(2),
+  name: 'Invented Reach',
+  invented: true,
+  createdAt: '2026-12-01T08:00:00.000Z',
+  grid: { width: 6, height: 4, cellSize: 1, originX: 1000, originY: 2000, epsg: 32631 },
+  parts: ['habitat', 'cover', 'refuge'],
+  options: 2,
+  runs: 0,
+  crsName: 'an invented CRS',
+  layers: [
+    layerFixture('habitat'),
+    layerFixture('cover', { unit: 'percent', maximum: 100 }),
+    layerFixture('refuge', { unit: 'byte', maximum: 255, dataType: 'uint8' }),
+  ],
+  plant: { name: 'Invented grass', rates: defaultRates },
+  plantSet: true,
+  outlook: {
+    surveyYear: 2026,
+    years: 4,
+    stepsPerYear: 1,
+    boundary: 'mirror',
+    droughtIndex: [0, -1, -4, 0],
+  },
+  outlookSet: true,
+  ...more,
+});

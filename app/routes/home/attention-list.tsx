@@ -1,0 +1,60 @@
+import { LinkButton } from '#app/components/link-button.tsx';
+import { Section } from '#app/components/paper-layout.tsx';
+import { WordLink } from '#app/components/word-button.tsx';
+import { formatDateTime } from '#app/lib/formats.ts';
+import type { Role } from '#contract/people.ts';
+import type { RunSummary } from '#contract/runs.ts';
+import type { SiteSummary } from '#contract/sites.ts';
+import { nextStep } from './next-step.ts';
+
+interface Item {
+  key: string;
+  name: string;
+  words: string;
+  to: string;
+  action: string;
+}
+
+/** What waits for this person: runs that have not finished, then what each site needs next from their role. */
+export function AttentionList(props: {
+  sites: readonly { site: SiteSummary; role: Role }[];
+  unfinished: readonly { site: SiteSummary; run: RunSummary }[];
+}) {
+  const items: Item[] = [
+    ...props.unfinished.map(({ site, run }) => ({
+      key: run.id,
+      name: `${run.name}, ${site.name}`,
+      words: `started ${formatDateTime(run.startedAt)} by ${run.startedBy}; ${run.frames} of ${run.years + 1} years kept so far`,
+      to: `/sites/${site.id}/runs/${run.id}`,
+      action: 'Open the run',
+    })),
+    ...props.sites.flatMap(({ site, role }) => {
+      const next = nextStep(site);
+      return next?.roles.includes(role) ? [{ key: site.id, name: site.name, ...next }] : [];
+    }),
+  ];
+  if (items.length === 0) return null;
+  return (
+    <Section title="Waits for you">
+      <ul>
+        {items.map((item, i) => (
+          <li
+            key={item.key}
+            className="flex flex-wrap items-center justify-between gap-x-6 gap-y-1 border-t border-rule-2 py-2 first:border-t-0"
+          >
+            <p className="min-w-0">
+              <b>{item.name}</b> <span className="text-ink-2">{item.words}</span>
+            </p>
+            {i === 0 ? (
+              <LinkButton kind="primary" to={item.to}>
+                {item.action}
+              </LinkButton>
+            ) : (
+              <WordLink to={item.to}>{item.action}</WordLink>
+            )}
+          </li>
+        ))}
+      </ul>
+    </Section>
+  );
+}

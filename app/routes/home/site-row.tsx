@@ -1,0 +1,44 @@
+import { Link } from 'react-router-dom';
+import { StaffRule } from '#app/components/staff-rule.tsx';
+import { formatArea, formatCounted, formatDate, formatLength } from '#app/lib/formats.ts';
+import type { SiteSummary } from '#contract/sites.ts';
+import { nextStep, siteShare } from './next-step.ts';
+
+/** One site: its name, its ground, how far the work on it is. The whole row leads to it. */
+export function SiteRow({ site }: { site: SiteSummary }) {
+  const { width, height, cellSize } = site.grid;
+  const next = nextStep(site);
+  return (
+    <li className="group relative grid gap-x-8 border-t border-rule-2 py-3 first:border-t-0 hover:bg-sheet md:grid-cols-[minmax(0,5fr)_minmax(0,4fr)_minmax(0,4fr)] md:items-end">
+      <div className="min-w-0">
+        <Link
+          to={next?.to ?? `/sites/${site.id}/runs`}
+          className="text-title font-strong no-underline after:absolute after:inset-0 group-hover:underline"
+        >
+          {site.name}
+        </Link>
+        <p className="text-note text-ink-2">
+          {site.invented ? 'Invented, ' : ''}since {formatDate(site.createdAt)}
+        </p>
+      </div>
+      <p className="text-note text-ink-2">
+        {formatArea(width * height * cellSize ** 2)} in cells of {formatLength(cellSize)}
+        <br />
+        <span className="font-mono text-axis">
+          {width} × {height} EPSG:{site.grid.epsg}
+        </span>
+      </p>
+      <div className="max-md:mt-2">
+        <p className="mb-1 flex justify-between gap-4 text-note">
+          <span>
+            {formatCounted(site.options, 'option')}, {formatCounted(site.runs, 'run')}
+          </span>
+          <span className="text-ink-2">{next?.words ?? 'ready to run again'}</span>
+        </p>
+        <div className="border-b border-ink">
+          <StaffRule share={siteShare(site)} />
+        </div>
+      </div>
+    </li>
+  );
+}
