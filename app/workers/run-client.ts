@@ -1,6 +1,6 @@
 import { proxy, releaseProxy, transfer, wrap } from 'comlink';
 import { groundBuffers, type RunInput, type RunListener, type RunOutcome } from './run-loop.ts';
-import type { RunWorkerFace } from './run-worker.ts';
+import type { PageListener, RunWorkerFace } from './run-worker.ts';
 
 /** The run was cancelled by its caller. */
 export class RunCancelled extends Error {
@@ -54,7 +54,7 @@ export function startRun(input: RunInput, listener: RunListener, options: RunCli
   const failed = new Promise<never>((_, reject) => (fail = reject));
 
   const died = (event: Event) => {
-    const { error, message } = event as Partial<ErrorEvent>;
+    const { error, message } = event as Partial<{ error: unknown; message: string }>;
     const reason = error instanceof Error ? `${error.name}: ${error.message}` : message;
     fail(new RunWorkerDied(`The run’s worker stopped: ${reason || 'it could not be loaded or read'}`));
   };
@@ -72,7 +72,7 @@ export function startRun(input: RunInput, listener: RunListener, options: RunCli
   };
 
   async function work(): Promise<RunOutcome> {
-    const heard: RunListener = {
+    const heard: PageListener = {
       onYear: async (event) => {
         if (over) return;
         try {

@@ -1,12 +1,18 @@
 import { expose, transfer, type ProxyMarked, type Remote } from 'comlink';
 import { encodeCellValues } from '#rasters/cells/cell-values.ts';
 import { createRun } from '#sim-core/index.ts';
-import { createRunLoop, type RunInput, type RunListener, type YearEvent } from './run-loop.ts';
+import { createRunLoop, type RunInput, type RunProgress, type YearEvent } from './run-loop.ts';
 
 const loop = createRunLoop({ createRun, pack: encodeCellValues, now: () => performance.now() });
 
 const buffersOf = (...arrays: (Uint8Array | Int16Array | undefined)[]) =>
   arrays.filter((a) => a !== undefined).map((a) => a.buffer as ArrayBuffer);
+
+/** The caller's listener as it is seen from here: both calls cross to the page. */
+export interface PageListener {
+  onYear(event: YearEvent): Promise<void>;
+  onProgress(progress: RunProgress): void;
+}
 
 /** What the client calls; everything with cells is handed over, never copied. */
 const face = {
@@ -20,11 +26,10 @@ const face = {
         })
         .catch(refused);
     }),
-  run: async (input: RunInput, listener: Remote<RunListener & ProxyMarked>) => {
+  run: async (input: RunInput, listener: Remote<PageListener & ProxyMarked>) => {
     const outcome = await loop.run(input, {
-      onYear: (event: YearEvent) =>
-        listener.onYear(transfer(event, buffersOf(event.frame, event.packed))) as Promise<void>,
-      onProgress: (progress) => void listener.onProgress?.(progress),
+      onYear: (event: YearEvent) => listener.onYear(transfer(event, buffersOf(event.frame, event.packed))),
+      onProgress: (progress) => void listener.onProgress(progress),
     });
     return transfer(outcome, buffersOf(outcome.closing, outcome.packedClosing));
   },

@@ -1,0 +1,134 @@
+import type { ReactNode } from 'react';
+import { scaleBar } from './map-ticks.ts';
+import type { MapRaster } from './map-raster.ts';
+
+export interface MapLegendProps {
+  readonly raster?: MapRaster;
+  /** whether ground that cannot hold the plant is painted as water */
+  readonly water: boolean;
+  readonly metresPerPixel: number;
+  /** a small map: only what cannot be left out */
+  readonly compact: boolean;
+  /** words above the ramp, instead of the usual ones */
+  readonly title?: string;
+  readonly children?: ReactNode;
+}
+
+const mostClasses = 8;
+
+/** What the colours mean, how long a stretch of ground is, and where north is. */
+export function MapLegend({ raster, water, metresPerPixel, compact, title, children }: MapLegendProps) {
+  const swatches = (
+    <>
+      {raster?.kind === 'closing' && (
+        <>
+          <Swatch colour="var(--color-standing)">stood at the survey</Swatch>
+          <Swatch colour={hatch}>open past {raster.lastYear}</Swatch>
+        </>
+      )}
+      {water && <Swatch colour="var(--color-water)">cannot hold the plant</Swatch>}
+      {raster?.kind === 'classes' && <ClassSwatches classes={raster.classes} />}
+      {children}
+    </>
+  );
+  return (
+    <div className="flex items-end gap-4 text-note text-ink">
+      {!compact && (
+        <svg width={12} height={26} aria-label="North is up" role="img" className="shrink-0">
+          <path d="M6 26V9M6 1l4.500 9h-9z" stroke="currentColor" fill="currentColor" strokeWidth={1.2} />
+        </svg>
+      )}
+      <div className="flex flex-wrap items-end gap-x-5 gap-y-1.5">
+        <Ramp raster={raster} title={title} />
+        <div className="grid gap-x-4 leading-[1.35]">{swatches}</div>
+        <ScaleRule metresPerPixel={metresPerPixel} room={compact ? 90 : 150} />
+      </div>
+    </div>
+  );
+}
+
+const hatch = 'repeating-linear-gradient(135deg, var(--color-standing) 0 1.5px, var(--color-late) 1.5px 5px)';
+
+function Swatch({ colour, children }: { colour: string; children: ReactNode }) {
+  return (
+    <span className="flex items-center gap-1.5">
+      <span
+        aria-hidden="true"
+        className="h-2.5 w-3.5 shrink-0 border border-ink"
+        style={{ background: colour }}
+      />
+      {children}
+    </span>
+  );
+}
+
+function ClassSwatches({ classes }: { classes: Extract<MapRaster, { kind: 'classes' }>['classes'] }) {
+  const more = classes.length - mostClasses;
+  return (
+    <span className="grid grid-cols-2 gap-x-4">
+      {classes.slice(0, mostClasses).map((c) => (
+        <Swatch key={c.value} colour={c.colour}>
+          {c.name}
+        </Swatch>
+      ))}
+      {more > 0 && <span className="text-ink-2">and {more} more</span>}
+    </span>
+  );
+}
+
+function Ramp({ raster, title }: { raster: MapRaster | undefined; title: string | undefined }) {
+  if (!raster || raster.kind === 'classes') return null;
+  const closing = raster.kind === 'closing';
+  const stops = Array.from({ length: 9 }, (_, i) => `var(--color-${closing ? 'closing' : 'cover'}-${i})`);
+  const [from, half, to] = closing ? [raster.surveyYear + 1, '', raster.lastYear] : ['0', '50', '100 %'];
+  const usual = closing ? 'Year the ground closes' : raster.kind === 'cover' ? 'Cover' : raster.name;
+  return (
+    <div className="w-[170px]">
+      <div className="font-semibold">{title ?? usual}</div>
+      <div
+        aria-hidden="true"
+        className="my-0.5 h-[9px]"
+        style={{ background: `linear-gradient(to right, ${stops.join(', ')})` }}
+      />
+      <div className="flex justify-between font-mono text-axis font-semibold">
+        <span>{from}</span>
+        <span>{half}</span>
+        <span>{to}</span>
+      </div>
+    </div>
+  );
+}
+
+function ScaleRule({ metresPerPixel, room }: { metresPerPixel: number; room: number }) {
+  const { pixels, labels, unit, metres } = scaleBar(metresPerPixel, room);
+  const ink = 'var(--color-ink)';
+  return (
+    <svg
+      width={pixels + 40}
+      height={24}
+      role="img"
+      aria-label={`This bar is ${metres} m long`}
+      className="-ml-1.5 overflow-visible fill-ink font-mono text-axis font-semibold"
+    >
+      <g transform="translate(6 20)">
+        <path d={`M0 0h${pixels / 2}`} stroke={ink} strokeWidth={5} />
+        <path
+          d={`M${pixels / 2} -2h${pixels / 2}m0 4h-${pixels / 2}M${pixels} -2.500v5`}
+          stroke={ink}
+          fill="none"
+        />
+        <text y={-8} textAnchor="middle">
+          {labels[0]}
+        </text>
+        {pixels > 80 && (
+          <text x={pixels / 2} y={-8} textAnchor="middle">
+            {labels[1]}
+          </text>
+        )}
+        <text x={pixels - labels[2].length * 3.3} y={-8}>
+          {labels[2]} {unit}
+        </text>
+      </g>
+    </svg>
+  );
+}

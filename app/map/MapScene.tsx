@@ -1,0 +1,130 @@
+import 'pixi.js/unsafe-eval';
+import { Application, extend, useApplication } from '@pixi/react';
+import { Container, type Application as PixiApplication } from 'pixi.js';
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import type { Grid } from '#sim-core/grid/grid.ts';
+import { paletteOf, schemeOf, type MapColours } from './map-colours.ts';
+import { toTexels, type MapRaster } from './map-raster.ts';
+import { symbolSize, type MapFoothold } from './map-symbols.ts';
+import { toScreen, type MapSize, type MapView } from './map-view.ts';
+import { RasterTiles } from './raster-tiles.ts';
+import { SymbolLayer } from './symbol-layer.ts';
+
+extend({ Container });
+
+export interface MapSceneProps {
+  readonly grid: Grid;
+  readonly raster?: MapRaster;
+  readonly ground?: Uint8Array;
+  readonly footholds: readonly MapFoothold[];
+  /** id of a foothold that is being moved and drawn elsewhere */
+  readonly hidden?: string;
+  readonly view: MapView;
+  readonly size: MapSize;
+  readonly pixelRatio: number;
+  readonly colours: MapColours;
+  /** The graphics context is gone; nothing is drawn until the scene is made anew. */
+  readonly onLost: () => void;
+}
+
+/** The painted part of the map: a Pixi scene that draws when something changed, and rests otherwise. */
+export function MapScene(props: MapSceneProps) {
+  const { pixelRatio, size, onLost } = props;
+  const lost = useRef(onLost);
+  useEffect(() => {
+    lost.current = onLost;
+  });
+  const begin = useCallback((app: PixiApplication) => {
+    const { gl } = app.renderer as unknown as { gl: WebGL2RenderingContext };
+    // Rows of bytes stand side by side, whatever their number.
+    gl.pixelStorei(gl.UNPACK_ALIGNMENT, 1);
+    app.canvas.addEventListener('webglcontextlost', () => {
+      lost.current();
+    });
+  }, []);
+  return (
+    <Application
+      className="absolute inset-0 block"
+      preference="webgl"
+      autoStart={false}
+      sharedTicker={false}
+      backgroundAlpha={0}
+      antialias={false}
+      autoDensity
+      resolution={pixelRatio}
+      width={size.width}
+      height={size.height}
+      onInit={begin}
+    >
+      <Scene {...props} />
+    </Application>
+  );
+}
+
+interface Layers {
+  readonly tiles: RasterTiles;
+  readonly symbols: SymbolLayer;
+}
+
+function Scene(props: MapSceneProps) {
+  const { grid, raster, ground, footholds, hidden, view, size, pixelRatio, colours } = props;
+  const { app } = useApplication();
+  const [layers, setLayers] = useState<Layers>();
+  const { width, height } = grid;
+
+  const attach = useCallback(
+    (root: Container) => {
+      const { gl } = app.renderer as unknown as { gl: WebGL2RenderingContext };
+      const limit = gl.getParameter(gl.MAX_TEXTURE_SIZE) as number;
+      const made = { tiles: new RasterTiles(width, height, limit), symbols: new SymbolLayer() };
+      root.addChild(made.tiles.container, made.symbols.container);
+      setLayers(made);
+      return () => {
+        setLayers(undefined);
+        made.symbols.destroy();
+        made.tiles.destroy();
+      };
+    },
+    [app, width, height],
+  );
+
+  useEffect(() => {
+    if (raster) layers?.tiles.setTexels(toTexels(raster));
+  }, [layers, raster]);
+  useEffect(() => {
+    layers?.tiles.setGround(ground);
+  }, [layers, ground]);
+  const { kind, surveyYear, lastYear, classes } = schemeOf(raster);
+  const palette = useMemo(
+    () => paletteOf({ kind, surveyYear, lastYear, classes }, colours),
+    [kind, surveyYear, lastYear, classes, colours],
+  );
+  useEffect(() => {
+    layers?.tiles.setPalette(palette, colours);
+  }, [layers, palette, colours]);
+  useEffect(() => {
+    layers?.symbols.setSheet(colours, pixelRatio);
+  }, [layers, colours, pixelRatio]);
+  useEffect(() => {
+    layers?.symbols.setFootholds(footholds, grid, hidden);
+  }, [layers, footholds, grid, hidden]);
+  useEffect(() => {
+    layers?.tiles.setScale(view.scale);
+    layers?.symbols.setSize(symbolSize(view, grid, footholds.length) / view.scale);
+  }, [layers, view, grid, footholds.length]);
+  useEffect(() => {
+    app.renderer.resize(size.width, size.height, pixelRatio);
+  }, [app, size, pixelRatio]);
+  useEffect(() => {
+    // After every commit: whatever changed is painted once, in the next frame.
+    const frame = requestAnimationFrame(() => {
+      app.render();
+    });
+    return () => {
+      cancelAnimationFrame(frame);
+    };
+  });
+
+  const corner = toScreen(view, grid, size, grid.originX, grid.originY);
+  return <pixiContainer ref={attach} x={corner.left} y={corner.top} scale={view.scale} />;
+}

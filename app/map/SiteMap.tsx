@@ -1,0 +1,142 @@
+import { useId, useMemo, useRef, useState } from 'react';
+import { classNames } from '#app/lib/class-names.ts';
+import { useTheme } from '#app/lib/use-theme.ts';
+import { cellAt, cellCentre, cellIndex } from '#sim-core/grid/grid.ts';
+import { MapControls, MapReading, MapUnavailable } from './MapFurniture.tsx';
+import { MapEdge } from './MapEdge.tsx';
+import { MapFrameContext } from './map-context.ts';
+import { Crosshair, MovingFlag, SelectionRing } from './MapMarks.tsx';
+import { MapLegend } from './MapLegend.tsx';
+import { MapScene } from './MapScene.tsx';
+import { readMapColours } from './map-colours.ts';
+import { describeCell } from './map-raster.ts';
+import type { MapFoothold } from './map-symbols.ts';
+import { clampView, startView, toScreen, wholeView, zoomAt, type MapSize, type MapView } from './map-view.ts';
+import type { SiteMapProps } from './site-map-props.ts';
+import { useBoxSize } from './use-box-size.ts';
+import { useGraphics } from './use-graphics.ts';
+import { useMapActions } from './use-map-actions.ts';
+
+const noFootholds: readonly MapFoothold[] = [];
+const compactBelow = 560;
+const noRoom: MapSize = { width: 0, height: 0 };
+
+/** The map of a site: a raster under palette, footholds, and words; by pointer, finger and keyboard alike. */
+export function SiteMap(props: SiteMapProps) {
+  const { grid, raster, ground, footholds = noFootholds, selectedId, furniture = true } = props;
+  const box = useRef<HTMLDivElement>(null);
+  const surface = useRef<HTMLDivElement>(null);
+  const room = useBoxSize(box);
+  const { theme } = useTheme();
+  const graphics = useGraphics();
+  const [own, setOwn] = useState<MapView>();
+  const help = useId();
+
+  const size = room?.size ?? noRoom;
+  const view = useMemo(
+    () => room && clampView(props.view ?? own ?? startView(grid, room.size), grid, room.size),
+    [props.view, own, grid, room],
+  );
+  const show = (next: MapView) => {
+    setOwn(next);
+    props.onView?.(next);
+  };
+  const act = useMapActions({ ...props, footholds, surface, view, size, show });
+  const { hovered, crosshair, moving, keyed } = act;
+
+  // The theme is what makes the computed colours change.
+  const colours = useMemo(
+    () => (room && theme ? readMapColours(document.documentElement) : undefined),
+    [room, theme],
+  );
+  const read = crosshair ?? (hovered && cellAt(grid, hovered.x, hovered.y));
+  const centre = read && cellCentre(grid, read.column, read.row);
+  const reading = read && describeCell(raster, ground, cellIndex(grid, read.column, read.row));
+  const selected = footholds.find((f) => f.id === selectedId);
+  const shownSelection = selected && (moving?.id === selected.id ? { ...selected, ...moving } : selected);
+  const frame = useMemo(
+    () =>
+      view && {
+        size,
+        scale: view.scale,
+        pixelsPerMetre: view.scale / grid.cellSize,
+        project: (x: number, y: number) => toScreen(view, grid, size, x, y),
+      },
+    [view, grid, size],
+  );
+  const summary = props.summary ?? props.label;
+  const compact = size.width < compactBelow;
+
+  return (
+    <div ref={box} className={classNames('relative overflow-hidden bg-standing', props.className)}>
+      {room && view && colours && graphics.ready && (
+        <MapScene
+          key={graphics.generation}
+          {...{ grid, raster, ground, footholds, view, colours }}
+          {...room}
+          hidden={moving?.id}
+          onLost={graphics.lose}
+        />
+      )}
+      <div
+        ref={surface}
+        role="application"
+        aria-roledescription="map"
+        aria-label={props.label}
+        aria-describedby={help}
+        tabIndex={0}
+        className={classNames(
+          'absolute inset-0 touch-none outline-offset-[-3px]',
+          props.tool === 'place' ? 'cursor-crosshair' : 'cursor-grab active:cursor-grabbing',
+        )}
+        {...act.handlers}
+      />
+      <p id={help} className="sr-only">
+        {summary} Arrow keys move a crosshair that reads the ground, with Shift by one cell; plus and minus
+        zoom; 0 shows the whole site.
+        {props.tool === 'place' && ' Enter places a foothold at the crosshair.'}
+        {footholds.length > 0 && ' N selects the next foothold.'}
+        {props.onMove && ' Arrow keys move a selected planned foothold by one cell, with Shift by ten.'}{' '}
+        Escape lets go.
+      </p>
+      {frame && view && (
+        <MapFrameContext value={frame}>
+          <svg className="pointer-events-none absolute inset-0 size-full" aria-hidden="true">
+            {furniture && <MapEdge {...{ grid, view, size }} />}
+            {centre && crosshair && <Crosshair {...centre} />}
+            {moving && <MovingFlag x={moving.x} y={moving.y} />}
+            {shownSelection && <SelectionRing foothold={shownSelection} />}
+          </svg>
+          <div className="pointer-events-none absolute inset-0 overflow-hidden">{props.children}</div>
+          {furniture && (
+            <>
+              <div className="pointer-events-none absolute bottom-0 left-0 max-w-full border-t border-r border-ink bg-ground px-4 py-2">
+                <MapLegend
+                  raster={raster}
+                  water={ground !== undefined}
+                  metresPerPixel={grid.cellSize / view.scale}
+                  compact={compact}
+                  title={props.legendTitle}
+                >
+                  {props.legend}
+                </MapLegend>
+              </div>
+              <MapControls
+                onZoom={(factor) => {
+                  show(zoomAt(view, grid, size, { left: size.width / 2, top: size.height / 2 }, factor));
+                }}
+                onWhole={() => {
+                  show(wholeView(grid, size));
+                }}
+              />
+            </>
+          )}
+          {centre && <MapReading {...centre} reading={reading ?? ''} spoken={keyed} compact={compact} />}
+        </MapFrameContext>
+      )}
+      {graphics.problem && (
+        <MapUnavailable problem={graphics.problem} summary={summary} onAgain={graphics.again} />
+      )}
+    </div>
+  );
+}

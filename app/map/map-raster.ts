@@ -1,0 +1,96 @@
+import type { CellValues } from '#sim-core/grid/ground.ts';
+
+/** One row of a class table, as far as a map needs it. */
+export interface MapClass {
+  readonly value: number;
+  readonly name: string;
+  /** `#rrggbb` */
+  readonly colour: string;
+}
+
+/**
+ * What a map can be coloured by; row-major from the north-west, one value a cell.
+ * A new raster is a new `values` array: a map looks at its identity, not at its contents.
+ */
+export type MapRaster =
+  /** round(255·C) */
+  | { readonly kind: 'cover'; readonly values: Uint8Array }
+  /** round(255·share) of something else, such as capacity or refuge */
+  | { readonly kind: 'share'; readonly values: Uint8Array; readonly name: string }
+  /** closing years: 0 still open at the horizon, -32768 cannot hold the plant; the survey year: stood at the survey */
+  | {
+      readonly kind: 'closing';
+      readonly values: Int16Array;
+      readonly surveyYear: number;
+      readonly lastYear: number;
+    }
+  | {
+      readonly kind: 'classes';
+      readonly values: CellValues;
+      readonly classes: readonly MapClass[];
+      readonly noData?: number | null;
+    };
+
+/** Codes of a closing-year texture; years follow from `closingFirst` on. */
+export const closingCode = { noData: 0, open: 1, standing: 2, first: 3 } as const;
+export const noClassCode = 255;
+const noClosing = -32768;
+
+/** Texture code of a closing year: one code a year as long as 253 are enough, evenly shared beyond. */
+export function closingTexel(year: number, surveyYear: number, lastYear: number): number {
+  if (year === noClosing) return closingCode.noData;
+  if (year === 0) return closingCode.open;
+  if (year <= surveyYear) return closingCode.standing;
+  const codes = 256 - closingCode.first;
+  const years = Math.max(1, lastYear - surveyYear);
+  const place = Math.min(years, year - surveyYear) - 1;
+  return closingCode.first + (years <= codes ? place : Math.floor((place * codes) / years));
+}
+
+/**
+ * One byte a cell, as it goes to the graphics card. Shares are that already and come back as they are, uncopied.
+ * @throws RangeError when a class table has more rows than a byte can tell apart
+ */
+export function toTexels(raster: MapRaster): Uint8Array {
+  if (raster.kind === 'cover' || raster.kind === 'share') return raster.values;
+  const texels = new Uint8Array(raster.values.length);
+  if (raster.kind === 'closing') {
+    const { values, surveyYear, lastYear } = raster;
+    for (let i = 0; i < texels.length; i++) texels[i] = closingTexel(values[i], surveyYear, lastYear);
+    return texels;
+  }
+  const { values, classes, noData } = raster;
+  if (classes.length > noClassCode)
+    throw new RangeError(`Found ${classes.length} classes; a map shows at most ${noClassCode}. Merge some.`);
+  const codes = new Map(classes.map((c, i) => [c.value, i]));
+  if (typeof noData === 'number') codes.delete(noData);
+  for (let i = 0; i < texels.length; i++) texels[i] = codes.get(values[i]) ?? noClassCode;
+  return texels;
+}
+
+const percent = (byte: number) => `${Math.round((byte / 255) * 100)} %`;
+
+/** One cell in words. `capacity` is the ground's, where it is known: 0 cannot hold the plant. */
+export function describeCell(
+  raster: MapRaster | undefined,
+  capacity: Uint8Array | undefined,
+  cell: number,
+): string {
+  if (capacity?.[cell] === 0 && raster?.kind !== 'classes') return 'cannot hold the plant';
+  if (!raster) return '';
+  const value = raster.values[cell];
+  switch (raster.kind) {
+    case 'cover':
+      return `cover ${percent(value)}`;
+    case 'share':
+      return `${raster.name} ${percent(value)}`;
+    case 'closing':
+      if (value === noClosing) return 'cannot hold the plant';
+      if (value === 0) return `still open in ${raster.lastYear}`;
+      return value <= raster.surveyYear ? 'stood at the survey' : `closes in ${value}`;
+    case 'classes': {
+      if (Number.isNaN(value) || value === raster.noData) return 'no data';
+      return raster.classes.find((c) => c.value === value)?.name ?? `class ${value}, not in the table`;
+    }
+  }
+}
