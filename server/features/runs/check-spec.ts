@@ -1,0 +1,52 @@
+import { fitKernel, RunProblem } from '#sim-core/index.ts';
+import type { FieldProblem } from '#sim-core/spec/problems.ts';
+import type { RunSpec } from '#sim-core/spec/run-spec.ts';
+import type { Manager } from '#server/database/manager.ts';
+import { foreignHashes } from './run.repository.ts';
+
+/** The rasters that a spec names, each at its field. */
+export function layerHashes(spec: RunSpec): { field: string; hash: string; band: number | undefined }[] {
+  return Object.entries(spec.layers).flatMap(([name, source]) =>
+    typeof source === 'object' && 'layer' in source
+      ? [{ field: `spec.layers.${name}`, hash: source.layer, band: source.band }]
+      : [],
+  );
+}
+
+/** What is wrong with the layers of a spec that should run on a site; empty when nothing is. */
+export async function checkLayers(manager: Manager, siteId: string, spec: RunSpec): Promise<FieldProblem[]> {
+  const problems: FieldProblem[] = [];
+  for (const [name, source] of Object.entries(spec.layers))
+    if (typeof source === 'object' && 'file' in source)
+      problems.push({
+        field: `spec.layers.${name}.file`,
+        message: 'Found a file; runs of a site take its uploaded layers, named by their SHA-256 in `layer`',
+      });
+  const used = layerHashes(spec);
+  const foreign = await foreignHashes(
+    manager,
+    siteId,
+    used.map(({ hash }) => hash),
+  );
+  for (const { field, hash, band } of used) {
+    if (foreign.has(hash))
+      problems.push({
+        field: `${field}.layer`,
+        message: `No layer of this site has the SHA-256 ${hash.slice(0, 12)}…; it was replaced or never uploaded. Load the site again`,
+      });
+    if (band !== undefined && band !== 1)
+      problems.push({ field: `${field}.band`, message: `Found band ${band}; uploaded layers have one band` });
+  }
+  return problems;
+}
+
+/** What makes a spec impossible on cells of a size; empty when nothing does. */
+export function checkRates({ rates, stepsPerYear }: RunSpec, cellSize: number): FieldProblem[] {
+  try {
+    fitKernel(rates, cellSize, stepsPerYear);
+    return [];
+  } catch (error) {
+    if (!(error instanceof RunProblem)) throw error;
+    return error.problems.map(({ field, message }) => ({ field: `spec.${field}`, message }));
+  }
+}

@@ -1,0 +1,129 @@
+import type { Readable } from 'node:stream';
+import { CellValuesError, decodeCellValues } from '#rasters/cells/cell-values.ts';
+import { gridSchema } from '#contract/sites.ts';
+import type { Grid } from '#sim-core/grid/grid.ts';
+import { frameYears, runSpecSchema } from '#sim-core/spec/run-spec.ts';
+import type { RunRow } from '#server/database/entities/run.ts';
+import { readJson } from '#server/database/json-column.ts';
+import { FileTooLarge, type ReceivedFile } from '#server/files/blob-store.ts';
+import { releaseBlobs, storeWithRows } from '#server/files/stored-files.ts';
+import { fieldProblem, ProblemError } from '#server/middleware/problem-error.ts';
+import type { Services } from '#server/services.ts';
+import { readFile } from 'node:fs/promises';
+import { requireRun } from './run-reply.ts';
+import { findFrame, putFrameRow, updateRun } from './run.repository.ts';
+
+/** What a map of a run is made of. */
+const mapTypes = { frame: Uint8Array, closing: Int16Array } as const;
+type MapKind = keyof typeof mapTypes;
+
+/**
+ * Stores the frame of a year. Repeating it is harmless; on a run that still runs a different one takes its place.
+ * @throws ProblemError at `year`; `invalid-request` for anything but the right binary; `conflict` when the run is over
+ */
+export async function putFrame(
+  services: Services,
+  runId: string,
+  year: number,
+  body: Readable,
+): Promise<void> {
+  const run = await requireRun(services.dataSource.manager, runId);
+  const years = frameYears(readJson(runSpecSchema, run.spec));
+  if (!years.includes(year))
+    throw fieldProblem(
+      'year',
+      `The run has no frame of ${year}; expected one of ${years[0]} to ${years.at(-1)}`,
+    );
+  await putMap(services, run, 'frame', body, async (manager, { hash, bytes }) => {
+    const present = await findFrame(manager, runId, year);
+    const write = () => putFrameRow(manager, { runId, year, hash, bytes });
+    return { present: present?.hash ?? null, write };
+  });
+}
+
+/**
+ * Stores the closing years; like a frame.
+ * @throws ProblemError `invalid-request` for anything but the right binary; `conflict` when the run is over
+ */
+export async function putClosing(services: Services, runId: string, body: Readable): Promise<void> {
+  const run = await requireRun(services.dataSource.manager, runId);
+  await putMap(services, run, 'closing', body, async (manager, { hash, bytes }) => {
+    const { closingHash } = await requireRun(manager, runId);
+    const write = () => updateRun(manager, runId, { closingHash: hash, closingBytes: bytes });
+    return { present: closingHash, write };
+  });
+}
+
+type Manager = Services['dataSource']['manager'];
+
+async function putMap(
+  services: Services,
+  run: RunRow,
+  kind: MapKind,
+  body: Readable,
+  place: (
+    manager: Manager,
+    file: ReceivedFile,
+  ) => Promise<{ present: string | null; write: () => Promise<void> }>,
+): Promise<void> {
+  const grid = readJson(gridSchema, run.grid);
+  const file = await receiveMap(services, grid, kind, body);
+  try {
+    await checkMap(file, grid, kind);
+  } catch (error) {
+    await services.blobs.discard(file);
+    throw error;
+  }
+  const replaced = await storeWithRows(services, [file], async (manager) => {
+    const { present, write } = await place(manager, file);
+    if (present === file.hash) return undefined;
+    const { status } = await requireRun(manager, run.id);
+    if (status !== 'running')
+      throw new ProblemError('conflict', `This run is already ${status}; its maps no longer change.`);
+    await write();
+    return present ?? undefined;
+  });
+  if (replaced) await releaseBlobs(services, [replaced]);
+}
+
+/** A zlib stream of what cannot be packed is a little longer than what it holds (RFC 1951: 5 bytes a stored block). */
+const longestBinary = (cells: number, kind: MapKind) =>
+  Math.ceil(cells * mapTypes[kind].BYTES_PER_ELEMENT * 1.01) + 4096;
+
+async function receiveMap(
+  { blobs }: Services,
+  { width, height }: Grid,
+  kind: MapKind,
+  body: Readable,
+): Promise<ReceivedFile> {
+  const limit = longestBinary(width * height, kind);
+  try {
+    return await blobs.receive(body, limit);
+  } catch (error) {
+    if (error instanceof FileTooLarge)
+      throw new ProblemError(
+        'too-large',
+        `Found more than ${limit} bytes; a ${kind} of ${width} × ${height} cells is shorter.`,
+      );
+    throw error;
+  }
+}
+
+async function checkMap(file: ReceivedFile, grid: Grid, kind: MapKind): Promise<void> {
+  const { width, height, values } = await decode(file, grid);
+  const type = mapTypes[kind];
+  if (width !== grid.width || height !== grid.height || !(values instanceof type))
+    throw new ProblemError(
+      'invalid-request',
+      `Found ${values.constructor.name} of ${width} × ${height} cells; expected ${type.name} of ${grid.width} × ${grid.height}, the grid of the run.`,
+    );
+}
+
+async function decode(file: ReceivedFile, { width, height }: Grid) {
+  try {
+    return decodeCellValues(await readFile(file.path), { cells: width * height });
+  } catch (error) {
+    if (error instanceof CellValuesError) throw new ProblemError('invalid-request', error.message);
+    throw error;
+  }
+}
