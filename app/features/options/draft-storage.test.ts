@@ -1,0 +1,41 @@
+import { beforeEach, describe, expect, it } from 'vitest';
+import type { Option } from '#contract/sites.ts';
+import type { Mound } from '#sim-core/spec/run-spec.ts';
+import { forgetDraft, keepDraft, restoreDraft } from './draft-storage.ts';
+import { draftOf, isUnsaved, optionDraft } from './option-draft.ts';
+
+const mound: Mound = { kind: 'mound', year: 2028, x: 1, y: 2, radius: 1, strength: 1, halo: 0 };
+const option = (revision: number, works: Mound[] = []) =>
+  ({ id: 'o-1', name: 'Option', wait: false, works, revision }) as unknown as Option;
+
+beforeEach(() => {
+  sessionStorage.clear();
+});
+
+describe('an unsaved drawing', () => {
+  it('survives a reload on the revision that it was made on, with the way back', () => {
+    keepDraft('o-1', optionDraft(draftOf(option(3)), { type: 'place', mound }));
+    const restored = restoreDraft(option(4));
+    expect(restored.works.map((work) => work.action)).toEqual([mound]);
+    expect([restored.revision, isUnsaved(restored)]).toEqual([3, true]);
+    expect(optionDraft(restored, { type: 'undo' }).works).toEqual([]);
+  });
+
+  it('is forgotten once it is saved, or when it is what the server has anyway', () => {
+    const drawn = optionDraft(draftOf(option(3)), { type: 'place', mound });
+    keepDraft('o-1', drawn);
+    expect(restoreDraft(option(4, [mound])).revision).toBe(4);
+    keepDraft('o-1', optionDraft(drawn, { type: 'saved', revision: 4, works: drawn.works }));
+    expect(sessionStorage.length).toBe(0);
+    keepDraft('o-1', drawn);
+    forgetDraft('o-1');
+    expect(restoreDraft(option(4)).works).toEqual([]);
+  });
+
+  it('gives way to what the server has when it cannot be read', () => {
+    sessionStorage.setItem('foothold.draft.o-1', '{"revision":3,"works":[{"kind":"tower"}]}');
+    expect(restoreDraft(option(4, [mound])).works).toHaveLength(1);
+    sessionStorage.setItem('foothold.draft.o-1', 'not JSON');
+    expect(restoreDraft(option(4, [mound])).works).toHaveLength(1);
+  });
+});

@@ -1,0 +1,59 @@
+import { z } from 'zod';
+import { actionSchema } from '#sim-core/spec/run-spec.ts';
+import type { Option } from '#contract/sites.ts';
+import { draftOf, isUnsaved, optionDraft, type OptionDraft } from './option-draft.ts';
+
+const keptSchema = z.object({ revision: z.number().int(), works: z.array(actionSchema) });
+const keyOf = (optionId: string) => `foothold.draft.${optionId}`;
+
+/** The browser may refuse storage, or hold something else there: the drawing then lasts as long as the page. */
+function tab(): Storage | undefined {
+  try {
+    return window.sessionStorage;
+  } catch {
+    return undefined;
+  }
+}
+
+/** Keeps an unsaved drawing in this tab, so that a reload loses nothing; forgets it once it is saved. */
+export function keepDraft(optionId: string, draft: OptionDraft): void {
+  try {
+    if (!isUnsaved(draft)) tab()?.removeItem(keyOf(optionId));
+    else {
+      const { revision, works } = draft;
+      tab()?.setItem(keyOf(optionId), JSON.stringify({ revision, works: works.map((work) => work.action) }));
+    }
+  } catch {
+    // Storage is full: nothing else depends on it.
+  }
+}
+
+export function forgetDraft(optionId: string): void {
+  tab()?.removeItem(keyOf(optionId));
+}
+
+/**
+ * The drawing of an option: what this tab kept of it, else what the server has. A kept drawing stays on the revision
+ * that it was made on, so that saving it over somebody else's change is refused and asked about.
+ */
+export function restoreDraft(option: Option): OptionDraft {
+  const saved = draftOf(option);
+  const kept = readKept(option.id);
+  if (!kept) return saved;
+  const drawn = kept.works.map((action, i) => ({ key: `k${i}`, action }));
+  const restored = {
+    ...optionDraft(saved, { type: 'select', key: undefined }),
+    works: drawn,
+    past: [saved.works],
+  };
+  return isUnsaved(restored) ? { ...restored, revision: kept.revision } : saved;
+}
+
+function readKept(optionId: string): z.infer<typeof keptSchema> | undefined {
+  try {
+    const text = tab()?.getItem(keyOf(optionId));
+    return text ? keptSchema.parse(JSON.parse(text)) : undefined;
+  } catch {
+    return undefined;
+  }
+}
