@@ -12,8 +12,16 @@ const ink = 'var(--color-ink)';
 /** Room that a label needs along an edge, px. */
 const room = 88;
 
+interface MapEdgeProps {
+  readonly grid: Grid;
+  readonly view: MapView;
+  readonly size: MapSize;
+  /** a small map has ticks without numbers down its side */
+  readonly compact: boolean;
+}
+
 /** Eastings ticked along the top and northings down the left, as on a survey sheet. */
-export function MapEdge({ grid, view, size }: { grid: Grid; view: MapView; size: MapSize }) {
+export function MapEdge({ grid, view, size, compact }: MapEdgeProps) {
   const { width, height } = size;
   const from = toGround(view, grid, size, { left: 0, top: 0 });
   const to = toGround(view, grid, size, { left: width, top: height });
@@ -33,7 +41,7 @@ export function MapEdge({ grid, view, size }: { grid: Grid; view: MapView; size:
       {edgeTicks(from.y, to.y, height, room).map(({ value, at, labelled }) => (
         <g key={value} transform={`translate(0 ${at.toFixed(1)})`}>
           <path d={`M0 0.500h${labelled ? 9 : 5}`} stroke={ink} />
-          {labelled && at > 60 && at < height - 12 && (
+          {labelled && !compact && at > 60 && at < height - 12 && (
             <text transform="translate(13 -5) rotate(-90)" className={labels} style={halo}>
               {value}
             </text>

@@ -31,17 +31,28 @@ export function MapLegend({ raster, water, metresPerPixel, compact, title, child
       {children}
     </>
   );
+  const ramp = <Ramp raster={raster} title={title} width={compact ? 136 : 170} />;
+  const rule = <ScaleRule metresPerPixel={metresPerPixel} room={compact ? 90 : 150} />;
+  if (compact)
+    return (
+      <details className="pointer-events-auto text-note text-ink">
+        <summary className="flex list-none items-end gap-4 [&::-webkit-details-marker]:hidden">
+          {ramp}
+          {rule}
+          <span className="border-b border-ink">key</span>
+        </summary>
+        <div className="grid gap-y-0.5 pt-2">{swatches}</div>
+      </details>
+    );
   return (
     <div className="flex items-end gap-4 text-note text-ink">
-      {!compact && (
-        <svg width={12} height={26} aria-label="North is up" role="img" className="shrink-0">
-          <path d="M6 26V9M6 1l4.500 9h-9z" stroke="currentColor" fill="currentColor" strokeWidth={1.2} />
-        </svg>
-      )}
+      <svg width={12} height={26} aria-label="North is up" role="img" className="shrink-0">
+        <path d="M6 26V9M6 1l4.500 9h-9z" stroke="currentColor" fill="currentColor" strokeWidth={1.2} />
+      </svg>
       <div className="flex flex-wrap items-end gap-x-5 gap-y-1.5">
-        <Ramp raster={raster} title={title} />
+        {ramp}
         <div className="grid gap-x-4 leading-[1.35]">{swatches}</div>
-        <ScaleRule metresPerPixel={metresPerPixel} room={compact ? 90 : 150} />
+        {rule}
       </div>
     </div>
   );
@@ -76,14 +87,20 @@ function ClassSwatches({ classes }: { classes: Extract<MapRaster, { kind: 'class
   );
 }
 
-function Ramp({ raster, title }: { raster: MapRaster | undefined; title: string | undefined }) {
+interface RampProps {
+  readonly raster: MapRaster | undefined;
+  readonly title: string | undefined;
+  readonly width: number;
+}
+
+function Ramp({ raster, title, width }: RampProps) {
   if (!raster || raster.kind === 'classes') return null;
   const closing = raster.kind === 'closing';
   const stops = Array.from({ length: 9 }, (_, i) => `var(--color-${closing ? 'closing' : 'cover'}-${i})`);
   const [from, half, to] = closing ? [raster.surveyYear + 1, '', raster.lastYear] : ['0', '50', '100 %'];
   const usual = closing ? 'Year the ground closes' : raster.kind === 'cover' ? 'Cover' : raster.name;
   return (
-    <div className="w-[170px]">
+    <div style={{ width }}>
       <div className="font-semibold">{title ?? usual}</div>
       <div
         aria-hidden="true"

@@ -4,7 +4,7 @@ import { useMapFrame } from './map-context.ts';
 const halo = 'var(--color-halo)';
 const ink = 'var(--color-sel)';
 
-/** Ring with four marks around the selected foothold, and the reach of its refuge. */
+/** Ring with four marks around the selected foothold, and the reach of its refuge where that is larger. */
 export function SelectionRing({ foothold }: { foothold: MapFoothold }) {
   const { project, pixelsPerMetre } = useMapFrame();
   const { left, top } = project(foothold.x, foothold.y);
@@ -13,7 +13,7 @@ export function SelectionRing({ foothold }: { foothold: MapFoothold }) {
   const reach = (foothold.radius ?? 0) * pixelsPerMetre;
   return (
     <>
-      {reach > 4 && (
+      {reach > 26 && (
         <g transform={`translate(${left} ${top})`} fill="none">
           <circle r={reach} stroke={halo} strokeWidth={3} />
           <circle r={reach} stroke={ink} strokeDasharray="2 3" />

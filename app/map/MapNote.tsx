@@ -1,5 +1,6 @@
-import type { ReactNode } from 'react';
+import type { CSSProperties, ReactNode } from 'react';
 import { useMapFrame } from './map-context.ts';
+import type { MapSize, ScreenPoint } from './map-view.ts';
 
 export interface MapNoteProps {
   /** the place that the words are about, in the grid's CRS, m */
@@ -12,16 +13,17 @@ export interface MapNoteProps {
 
 /** Width that a note is given, px. */
 const noteWidth = 210;
+/** Room that the buttons on the right edge take, px. */
+const controlsWidth = 48;
+/** From the middle of a selected symbol to where its leader starts, px. */
+const ring = 22;
 
-/** Words on the map, tied to their place by a thin leader line. On the right edge they go to the other side. */
+/** Words on the map, tied to their place by a thin leader line. Near an edge they go where there is room. */
 export function MapNote({ x, y, offset = { left: 84, top: 0 }, children }: MapNoteProps) {
   const { project, size } = useMapFrame();
   const at = project(x, y);
   if (at.left < 0 || at.top < 0 || at.left > size.width || at.top > size.height) return null;
-  const flipped = at.left + offset.left + noteWidth > size.width && at.left - offset.left - noteWidth > 0;
-  const end = { left: at.left + (flipped ? -offset.left : offset.left), top: at.top + offset.top };
-  const start = at.left + (flipped ? -22 : 22);
-  const d = `M${start} ${at.top}L${end.left} ${end.top}`;
+  const { d, style } = layNote(at, size, offset);
   return (
     <>
       <svg className="absolute inset-0 size-full" aria-hidden="true">
@@ -30,11 +32,7 @@ export function MapNote({ x, y, offset = { left: 84, top: 0 }, children }: MapNo
       </svg>
       <div
         className="pointer-events-auto absolute max-w-[210px] bg-standing/90 px-1.5 py-1 text-note text-ink"
-        style={
-          flipped
-            ? { right: size.width - end.left, top: end.top - 12 }
-            : { left: end.left, top: end.top - 12 }
-        }
+        style={style}
         onPointerDown={(event) => {
           event.stopPropagation();
         }}
@@ -43,4 +41,26 @@ export function MapNote({ x, y, offset = { left: 84, top: 0 }, children }: MapNo
       </div>
     </>
   );
+}
+
+/** The leader's path and the note's place: beside the point, on the other side, or where neither fits below or above. */
+function layNote(at: ScreenPoint, size: MapSize, offset: ScreenPoint): { d: string; style: CSSProperties } {
+  const top = at.top + offset.top;
+  const right = at.left + offset.left;
+  const left = at.left - offset.left;
+  const lead = (x1: number, y1: number, x2: number, y2: number) => `M${x1} ${y1}L${x2} ${y2}`;
+  if (right + noteWidth <= size.width - controlsWidth)
+    return { d: lead(at.left + ring, at.top, right, top), style: { left: right, top: top - 12 } };
+  if (left - noteWidth >= 0)
+    return {
+      d: lead(at.left - ring, at.top, left, top),
+      style: { right: size.width - left, top: top - 12 },
+    };
+  const edge = Math.max(20, Math.min(at.left - noteWidth / 2, size.width - noteWidth - controlsWidth));
+  const below = at.top < size.height / 2;
+  const end = at.top + (below ? 40 : -40);
+  return {
+    d: lead(at.left, at.top + (below ? ring : -ring), at.left, end),
+    style: { left: edge, ...(below ? { top: end } : { bottom: size.height - end }) },
+  };
 }

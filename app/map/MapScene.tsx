@@ -30,6 +30,8 @@ export interface MapSceneProps {
 /** The painted part of the map: a Pixi scene that draws when something changed, and rests otherwise. */
 export function MapScene(props: MapSceneProps) {
   const { pixelRatio, size, onLost } = props;
+  // Pixi is made asynchronously, and its children may be asked for before it is there.
+  const [ready, setReady] = useState(false);
   const lost = useRef(onLost);
   useEffect(() => {
     lost.current = onLost;
@@ -41,6 +43,7 @@ export function MapScene(props: MapSceneProps) {
     app.canvas.addEventListener('webglcontextlost', () => {
       lost.current();
     });
+    setReady(true);
   }, []);
   return (
     <Application
@@ -56,7 +59,7 @@ export function MapScene(props: MapSceneProps) {
       height={size.height}
       onInit={begin}
     >
-      <Scene {...props} />
+      {ready && <Scene {...props} />}
     </Application>
   );
 }

@@ -102,7 +102,7 @@ export function SiteMap(props: SiteMapProps) {
       {frame && view && (
         <MapFrameContext value={frame}>
           <svg className="pointer-events-none absolute inset-0 size-full" aria-hidden="true">
-            {furniture && <MapEdge {...{ grid, view, size }} />}
+            {furniture && <MapEdge {...{ grid, view, size, compact }} />}
             {centre && crosshair && <Crosshair {...centre} />}
             {moving && <MovingFlag x={moving.x} y={moving.y} />}
             {shownSelection && <SelectionRing foothold={shownSelection} />}
@@ -110,7 +110,7 @@ export function SiteMap(props: SiteMapProps) {
           <div className="pointer-events-none absolute inset-0 overflow-hidden">{props.children}</div>
           {furniture && (
             <>
-              <div className="pointer-events-none absolute bottom-0 left-0 max-w-full border-t border-r border-ink bg-ground px-4 py-2">
+              <div className="pointer-events-none absolute bottom-0 left-0 max-w-full border-t border-r border-ink bg-ground px-3 py-1.5 sm:px-4 sm:py-2">
                 <MapLegend
                   raster={raster}
                   water={ground !== undefined}

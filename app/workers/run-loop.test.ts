@@ -22,7 +22,7 @@ function countingRun(years: number, breakIn?: number) {
       if (year > 2026 + years) return undefined;
       asked.push(year);
       if (year === breakIn) throw new RangeError('cover left 0..1');
-      onStep?.(1, 2);
+      onStep?.(asked.length * 2 - 1, years * 2);
       return { year, rows: [], frame: year % 2 ? Uint8Array.of(year - 2000, 0) : undefined };
     },
     closing: () => Int16Array.of(2030, 0),

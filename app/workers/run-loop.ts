@@ -44,6 +44,7 @@ export interface RunListener {
 /** The face of the engine that the loop drives. */
 export interface StepwiseRun {
   readonly survey: EngineYear;
+  /** `onStep` is told how many of all the run's steps are done. */
   nextYear(onStep?: (done: number, of: number) => void): EngineYear | undefined;
   closing(): Int16Array;
   result(): RunResult;
@@ -120,7 +121,7 @@ export function createRunLoop({ createRun, pack, now }: RunLoopParts): RunLoop {
         while (waiting.size >= unacknowledgedLimit) await Promise.race(waiting);
         const begun = now();
         const outcome = engine.nextYear((done) => {
-          if (now() - saidAt >= progressEvery) say(year * spec.stepsPerYear + done, active + now() - begun);
+          if (now() - saidAt >= progressEvery) say(done, active + now() - begun);
         });
         if (!outcome) break;
         send(outcome);

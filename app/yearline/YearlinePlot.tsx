@@ -219,17 +219,19 @@ function YearTicks({ scale, surveyYear, lastYear, availableUntil }: YearlinePlot
     ));
 }
 
-function Notes({ scale, pins, marks, heading }: YearlinePlotProps) {
+function Notes({ scale, pins, marks, heading, year: shown }: YearlinePlotProps) {
   const { datum, compact, left, right, top } = scale;
   const pinHeight = compact ? 44 : 64;
   const flag = compact ? 7 : 12;
   const words = new Map<number, string>();
   for (const p of pins) words.set(p.year, [words.get(p.year), p.label].filter(Boolean).join(', '));
   const flags = [...words].map(([year, label]) => ({ year, label, x: scale.x(year) + flag + 5 }));
-  const ticks = marks.map((m) => ({ ...m, x: scale.x(m.year) + 5 }));
-  const pinWords = labelsThatFit([...flags].sort((a, b) => b.x - a.x).slice(0, compact ? 0 : 99), 0, right);
-  const clear = pinWords.filter((p) => !flags.some((f) => f.x > p.x && f.x - p.x < p.label.length * 6.6));
-  const headingEnd = compact ? 0 : left + heading.length * 6.2;
+  // The playhead needs room for its head beside the word of its own year.
+  const ticks = marks.map((m) => ({ ...m, x: scale.x(m.year) + (m.year === shown ? 11 : 5) }));
+  // A label must stand clear of the flags after it, then of the labels before it.
+  const clear = flags.filter((p) => !flags.some((f) => f.x > p.x && f.x - p.x < p.label.length * 6.6));
+  const pinWords = compact ? [] : labelsThatFit(clear, 0, right);
+  const headingEnd = left + heading.length * 6.2;
   return (
     <>
       {!compact && (
@@ -238,10 +240,16 @@ function Notes({ scale, pins, marks, heading }: YearlinePlotProps) {
         </text>
       )}
       {ticks.map((m) => (
-        <path key={`${m.year} ${m.label}`} d={`M${m.x - 5} ${top - 8}V${scale.y(1)}`} stroke={ink} />
+        <path key={`${m.year} ${m.label}`} d={`M${scale.x(m.year)} ${top - 8}V${scale.y(1)}`} stroke={ink} />
       ))}
-      {labelsThatFit(ticks, headingEnd, scale.width).map((m) => (
-        <text key={`${m.year} ${m.label}`} x={m.x} y={top - 6} className={note} style={halo}>
+      {labelsThatFit(compact ? [] : ticks, headingEnd, scale.width).map((m) => (
+        <text
+          key={`${m.year} ${m.label}`}
+          x={m.x}
+          y={top - 6}
+          className={m.year === shown ? strong : note}
+          style={halo}
+        >
           {m.label}
         </text>
       ))}
@@ -255,7 +263,7 @@ function Notes({ scale, pins, marks, heading }: YearlinePlotProps) {
           </Fragment>
         );
       })}
-      {clear.map((p) => (
+      {pinWords.map((p) => (
         <text key={p.year} x={p.x} y={datum - pinHeight + 8.5} className={strong} style={halo}>
           {p.label}
         </text>
