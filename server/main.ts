@@ -1,28 +1,45 @@
 import { existsSync } from 'node:fs';
 import { createApp } from './app.ts';
 import { ConfigError, readConfig } from './config.ts';
-import { createServices } from './services.ts';
+import { prepareFirstStart } from './first-start.ts';
+import { openDemoAccounts } from './people/session-view.repository.ts';
+import { createServices, type Services } from './services.ts';
 
 const say = (text: string) => process.stdout.write(`${text}\n`);
+
+/** Prints how to get in: the demo's sign-ins while it is on, or the one-time set-up link. */
+async function greet({ config, dataSource }: Services, setupLink: string | undefined): Promise<void> {
+  say(`\nFoothold is ready at ${config.publicUrl}\n`);
+  if (setupLink) say(`Nobody has an account yet. Make the first one within 24 hours:\n  ${setupLink}\n`);
+  const accounts = await openDemoAccounts(dataSource, config.demo);
+  if (accounts.length === 0) return;
+  say('The demo is on. Everything in it is invented. Sign in as');
+  for (const { role, email, password } of accounts) say(`  ${role.padEnd(9)} ${email}  ${password}`);
+  say('Set DEMO=off before other people can reach this server.\n');
+}
 
 async function main(): Promise<void> {
   if (existsSync('.env')) process.loadEnvFile('.env');
   const config = readConfig(process.env);
   const services = await createServices(config);
+  const { setupLink } = await prepareFirstStart(services);
   const server = createApp(services).listen(config.port, config.host);
   await new Promise<void>((resolve, reject) => {
     server.once('listening', resolve).once('error', reject);
   });
-  say(`Foothold is ready at ${config.publicUrl}`);
+  await greet(services, setupLink);
 
+  let stopping = false;
   const stop = () => {
+    if (stopping) process.exit(1);
+    stopping = true;
     server.close(() => {
       void services.close().then(() => process.exit(0));
     });
     server.closeIdleConnections();
   };
-  process.once('SIGTERM', stop);
-  process.once('SIGINT', stop);
+  process.on('SIGTERM', stop);
+  process.on('SIGINT', stop);
 }
 
 main().catch((error: unknown) => {

@@ -1,6 +1,30 @@
+import { accountRoutes } from './features/account/account.routes.ts';
+import { inviteRoutes } from './features/auth/invite.routes.ts';
+import { passwordResetRoutes } from './features/auth/password-reset.routes.ts';
+import { sessionRoutes } from './features/auth/session.routes.ts';
+import { setupRoutes } from './features/auth/setup.routes.ts';
 import { healthRoutes } from './features/health/health.routes.ts';
+import { teamInviteRoutes } from './features/team/invites.routes.ts';
+import { optionRoutes } from './features/options/option.routes.ts';
+import { runRoutes } from './features/runs/run.routes.ts';
+import { siteRoutes } from './features/sites/site.routes.ts';
+import { memberRoutes } from './features/team/members.routes.ts';
+import { outboxRoutes } from './features/team/outbox.routes.ts';
 import type { Route } from './middleware/route.ts';
 import type { Services } from './services.ts';
 
 /** Every route of the product. */
-export const allRoutes = (services: Services): Route[] => [...healthRoutes(services)];
+export const allRoutes = (services: Services): Route[] => [
+  ...healthRoutes(services),
+  ...sessionRoutes(services),
+  ...setupRoutes(services),
+  ...inviteRoutes(services),
+  ...passwordResetRoutes(services),
+  ...accountRoutes(services),
+  ...memberRoutes(services),
+  ...teamInviteRoutes(services),
+  ...outboxRoutes(services),
+  ...siteRoutes(services),
+  ...optionRoutes(services),
+  ...runRoutes(services),
+];

@@ -3,10 +3,13 @@ import { ipKeyGenerator, rateLimit } from 'express-rate-limit';
 import type { Config } from '../config.ts';
 import { ProblemError } from './problem-error.ts';
 
+/** `refused` counts attempts that fail; `all` is for what never fails, such as asking for an e-mail. */
+export type CountedAttempts = 'refused' | 'all';
+
 export interface AttemptLimits {
   /** by address alone, before anything is read */
   byAddress: RequestHandler;
-  /** by address and account (or link), once the body is read; only refused attempts count */
+  /** by address and account (or link), once the body is read */
   byAccount: RequestHandler;
 }
 
@@ -19,14 +22,21 @@ function accountOf(request: Request): string {
   return typeof account === 'string' ? account.trim().toLowerCase() : '';
 }
 
-/** Limits on guessing. Keyed by address too, so that nobody can lock somebody else out of an account. */
-export function createAttemptLimits({ attempts }: Config): AttemptLimits {
-  const limiter = (limit: number, keyGenerator: (request: Request) => string, onlyRefused: boolean) =>
+/**
+ * Limits on guessing at one route. By account they are keyed by address too, so that nobody can lock somebody else out
+ * of an account.
+ */
+export function createAttemptLimits({ attempts }: Config, counted: CountedAttempts): AttemptLimits {
+  const limiter = (
+    limit: number,
+    keyGenerator: (request: Request) => string,
+    skipSuccessfulRequests: boolean,
+  ) =>
     rateLimit({
       windowMs: attempts.windowMs,
       limit,
       keyGenerator,
-      skipSuccessfulRequests: onlyRefused,
+      skipSuccessfulRequests,
       standardHeaders: 'draft-8',
       legacyHeaders: false,
       validate: { xForwardedForHeader: false },
@@ -40,6 +50,10 @@ export function createAttemptLimits({ attempts }: Config): AttemptLimits {
     });
   return {
     byAddress: limiter(attempts.perAddress, addressOf, false),
-    byAccount: limiter(attempts.perAccount, (r) => `${addressOf(r)} ${accountOf(r)}`, true),
+    byAccount: limiter(
+      attempts.perAccount,
+      (request) => `${addressOf(request)} ${accountOf(request)}`,
+      counted === 'refused',
+    ),
   };
 }

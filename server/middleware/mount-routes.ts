@@ -1,8 +1,8 @@
-import type { IRouter, Request, Response } from 'express';
+import type { IRouter, Request, RequestHandler, Response } from 'express';
 import type { z } from 'zod';
 import type { Services } from '../services.ts';
 import { admit } from './access.ts';
-import { createAttemptLimits, type AttemptLimits } from './attempts.ts';
+import { createAttemptLimits } from './attempts.ts';
 import { bodyReader } from './body.ts';
 import { problemOfIssues } from './classify-error.ts';
 import { ProblemError } from './problem-error.ts';
@@ -30,16 +30,16 @@ function parseBody({ endpoint, options }: Route, request: Request): unknown {
  * What happens to a request, in this order: attempts are counted, the session is loaded, the access rule speaks, the body
  * is read, everything is parsed, the handler works, its reply is checked.
  */
-function answer(route: Route, services: Services, limits: AttemptLimits) {
+function answer(route: Route, services: Services, loadSession: RequestHandler) {
   const { endpoint, access, options, handle } = route;
-  const loadSession = sessions(services);
+  const limits = options.limitAttempts && createAttemptLimits(services.config, options.limitAttempts);
   const readBody = bodyReader(route);
   return async (request: Request, response: Response): Promise<void> => {
-    if (options.limitAttempts) await runMiddleware(limits.byAddress, request, response);
+    if (limits) await runMiddleware(limits.byAddress, request, response);
     await runMiddleware(loadSession, request, response);
     const { person, membership } = await admit(request, access, services);
     await runMiddleware(readBody, request, response);
-    if (options.limitAttempts) await runMiddleware(limits.byAccount, request, response);
+    if (limits) await runMiddleware(limits.byAccount, request, response);
     const call = {
       params: parse(endpoint.params, request.params),
       query: parse(endpoint.query, request.query),
@@ -61,8 +61,8 @@ const methods = { GET: 'get', POST: 'post', PUT: 'put', PATCH: 'patch', DELETE: 
 
 /** Mounts every route on an app. Whatever is not mounted does not answer. */
 export function mountRoutes(app: IRouter, routes: readonly Route[], services: Services): void {
-  const limits = createAttemptLimits(services.config);
+  const loadSession = sessions(services);
   for (const route of routes) {
-    app[methods[route.endpoint.method]](route.endpoint.path, answer(route, services, limits));
+    app[methods[route.endpoint.method]](route.endpoint.path, answer(route, services, loadSession));
   }
 }

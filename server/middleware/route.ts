@@ -3,6 +3,7 @@ import type { Request, RequestHandler, Response } from 'express';
 import type { z } from 'zod';
 import type { Endpoint } from '#contract/endpoint.ts';
 import type { Role } from '#contract/people.ts';
+import type { CountedAttempts } from './attempts.ts';
 
 /**
  * Who may use a route. `team`, `site` and `run` name the roles that may, in the team that owns what `:teamId`, `:siteId`
@@ -62,7 +63,7 @@ export interface RouteOptions {
   /** reads a `form` body: puts the text fields in `request.body` and the file where the handler finds it */
   form?: RequestHandler;
   /** counts attempts by address and by account or link */
-  limitAttempts?: boolean;
+  limitAttempts?: CountedAttempts;
 }
 
 /** An endpoint with its rule and its handler. */
