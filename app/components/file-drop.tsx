@@ -1,7 +1,7 @@
 import { useId, useState, type DragEvent } from 'react';
 import { classNames } from '#app/lib/class-names.ts';
 
-/** Takes one file, dropped or chosen. The whole field is the label of the file input, so keys and pointer both work. */
+/** Takes one file, or several with `onFiles`, dropped or chosen. The whole field is the label of the file input, so keys and pointer both work. */
 export function FileDrop(props: {
   /** `Drop a GeoTIFF here` */
   label: string;
@@ -13,15 +13,21 @@ export function FileDrop(props: {
   fileName?: string;
   error?: string;
   disabled?: boolean;
-  onFile: (file: File) => void;
+  onFile?: (file: File) => void;
+  /** takes all files at once instead */
+  onFiles?: (files: File[]) => void;
 }) {
   const id = useId();
   const [over, setOver] = useState(false);
   const drop = (event: DragEvent) => {
     event.preventDefault();
     setOver(false);
-    const file = event.dataTransfer.files.item(0);
-    if (file && !props.disabled) props.onFile(file);
+    if (!props.disabled) take([...event.dataTransfer.files]);
+  };
+  const take = (files: File[]) => {
+    if (files.length === 0) return;
+    props.onFile?.(files[0]);
+    props.onFiles?.(files);
   };
   return (
     <div>
@@ -45,20 +51,25 @@ export function FileDrop(props: {
           id={id}
           type="file"
           accept={props.accept}
+          multiple={props.onFiles !== undefined}
           disabled={props.disabled}
           aria-invalid={props.error !== undefined || undefined}
           aria-describedby={`${id}-note`}
           className="absolute inset-0 cursor-inherit opacity-0"
           onChange={(event) => {
-            const file = event.target.files?.item(0);
+            const files = [...(event.target.files ?? [])];
             // Emptied, so that the same file, mended, can be chosen again.
             event.target.value = '';
-            if (file) props.onFile(file);
+            take(files);
           }}
         />
         <b className="text-lead">{props.fileName ?? props.label}</b>
         <span className="text-[13.5px] underline decoration-rule decoration-2 underline-offset-4">
-          {props.fileName === undefined ? 'or choose a file' : 'choose another'}
+          {props.onFiles
+            ? 'or choose files'
+            : props.fileName === undefined
+              ? 'or choose a file'
+              : 'choose another'}
         </span>
       </label>
       <p

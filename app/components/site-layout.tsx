@@ -10,15 +10,17 @@ export function SiteLayout(props: {
   staff: ReactNode;
   /** words and blanks above the map */
   tools?: ReactNode;
-  /** fills its place; the page without a map gives `children` instead */
+  /** fills its place; the page without a map gives `sheet` or `children` instead */
   map?: ReactNode;
+  /** words where the map would be: as wide, scrolling, with the same margin beside it */
+  sheet?: ReactNode;
   margin?: ReactNode;
   yearline?: ReactNode;
   /** the one action that matters now, and what it will take */
   action?: ReactNode;
   children?: ReactNode;
 }) {
-  const hasMap = props.map !== undefined;
+  const hasMap = props.map !== undefined || props.sheet !== undefined;
   return (
     <div className={classNames('flex min-h-dvh flex-col', hasMap && 'lg:h-dvh lg:overflow-hidden')}>
       <SkipLink />
@@ -45,9 +47,13 @@ function MapPage(props: Parameters<typeof SiteLayout>[0]) {
         {props.tools !== undefined && (
           <div className="no-print border-b border-ink px-4 py-1.5 lg:pl-6">{props.tools}</div>
         )}
-        <div className="relative h-[48dvh] min-h-[300px] overflow-hidden bg-standing lg:h-auto lg:min-h-0 lg:flex-1">
-          {props.map}
-        </div>
+        {props.map === undefined ? (
+          <div className="min-h-0 px-4 pt-5 pb-10 lg:flex-1 lg:overflow-y-auto lg:px-6">{props.sheet}</div>
+        ) : (
+          <div className="relative h-[48dvh] min-h-[300px] overflow-hidden bg-standing lg:h-auto lg:min-h-0 lg:flex-1">
+            {props.map}
+          </div>
+        )}
       </div>
       {props.yearline !== undefined && (
         <div className="border-t border-ink lg:order-last lg:col-span-2">{props.yearline}</div>

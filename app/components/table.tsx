@@ -25,6 +25,7 @@ export function Table<Row>(props: {
   selected?: (row: Row) => boolean;
   className?: string;
 }) {
+  const selectable = props.selected !== undefined;
   return (
     <table className={classNames('w-full border-collapse text-[13px] leading-[1.3]', props.className)}>
       <caption
@@ -38,7 +39,7 @@ export function Table<Row>(props: {
             <th
               key={column.key}
               scope="col"
-              className={cellClass(column, 'pb-1 text-note font-semibold text-ink-2')}
+              className={cellClass(column, selectable, 'pb-1 text-note font-semibold text-ink-2')}
             >
               {column.head}
             </th>
@@ -51,7 +52,7 @@ export function Table<Row>(props: {
           return (
             <tr
               key={props.rowKey(row)}
-              aria-selected={props.selected ? selected : undefined}
+              aria-selected={selectable ? selected : undefined}
               className={classNames(
                 'border-t border-rule-2',
                 selected &&
@@ -59,7 +60,10 @@ export function Table<Row>(props: {
               )}
             >
               {props.columns.map((column) => (
-                <td key={column.key} className={cellClass(column, 'py-1.5 touch:py-2.5 align-baseline')}>
+                <td
+                  key={column.key}
+                  className={cellClass(column, selectable, 'py-1.5 touch:py-2.5 align-baseline')}
+                >
                   {column.cell(row)}
                 </td>
               ))}
@@ -71,9 +75,11 @@ export function Table<Row>(props: {
   );
 }
 
-function cellClass<Row>(column: Column<Row>, more: string): string {
+function cellClass<Row>(column: Column<Row>, selectable: boolean, more: string): string {
   return classNames(
     'pr-3 pl-2.5 last:pr-0',
+    // The first column stands flush with its heading, but for room for the bar where a row can be selected.
+    !selectable && 'first:pl-0',
     column.number ? 'text-right' : 'text-left',
     column.wide && 'max-md:hidden',
     more,

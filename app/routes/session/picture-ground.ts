@@ -59,7 +59,7 @@ const apart = (a: Spot, b: Spot) => Math.hypot(a.column - b.column, a.row - b.ro
 
 /** Where plants outlived the drought on old mounds, and where people plan new ones. */
 export const survivors = scattered(37, 11);
-export const planned = scattered(46, 23).filter((p) => survivors.every((s) => apart(s, p) > 16));
+export const planned = scattered(33, 23).filter((p) => survivors.every((s) => apart(s, p) > 13));
 
 /** The ground as surveyed in the first year: stands, bare mud, survivors on mounds. */
 export function pictureGround(): Ground {
@@ -88,7 +88,7 @@ export function pictureGround(): Ground {
 function droughtIndex(): number[] {
   return Array.from({ length: pictureYears.last - pictureYears.survey }, (_, i) => {
     const year = pictureYears.survey + 1 + i;
-    if (year === 2049 || year === 2050) return -4.4;
+    if (year === 2049 || year === 2050) return -3.9;
     return Math.round((2.4 * lattice(year, 1, 71) - 1.2) * 10) / 10;
   });
 }
