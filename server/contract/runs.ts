@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { runResultSchema } from '#sim-core/spec/run-result.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import { endpoint, id, instant, sha256, text } from './endpoint.ts';
-import { gridSchema } from './sites.ts';
+import { gridSchema, layerPartSchema } from './sites.ts';
 
 export const runStatuses = ['running', 'finished', 'stopped'] as const;
 export const runSummarySchema = z.object({
@@ -31,6 +31,18 @@ export const runSchema = runSummarySchema.extend({
   spec: runSpecSchema,
   grid: gridSchema,
   crsName: z.string(),
+  /** the rasters that the spec names; those that were replaced since are kept for their runs */
+  layers: z.array(
+    z.object({
+      hash: sha256,
+      part: layerPartSchema,
+      fileName: z.string(),
+      /** raster value that means no data */
+      noData: z.number().nullable(),
+      /** whether it still is the site's layer of its part */
+      current: z.boolean(),
+    }),
+  ),
   /** years that have a stored frame, ascending */
   storedYears: z.array(z.number().int()),
   hasClosing: z.boolean(),

@@ -1,13 +1,14 @@
 import { z } from 'zod';
 import { runStatuses, runSummarySchema, type Run, type RunSummary } from '#contract/runs.ts';
-import { gridSchema } from '#contract/sites.ts';
+import { gridSchema, layerPartSchema } from '#contract/sites.ts';
 import { runResultSchema } from '#sim-core/spec/run-result.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import type { RunRow } from '#server/database/entities/run.ts';
 import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
+import { layerFactsSchema } from '#server/jobs/layer-facts.ts';
 import { notFound } from '#server/middleware/problem-error.ts';
-import { findRun, framesOfRun, runsOfSite, type RunListRow } from './run.repository.ts';
+import { findRun, framesOfRun, layersOfRun, runsOfSite, type RunListRow } from './run.repository.ts';
 
 const statusSchema = z.enum(runStatuses);
 
@@ -59,6 +60,13 @@ export async function runReply(manager: Manager, runId: string): Promise<Run> {
     spec: readJson(runSpecSchema, run.spec),
     grid: readJson(gridSchema, run.grid),
     crsName: run.crsName,
+    layers: (await layersOfRun(manager, run)).map(({ hash, part, fileName, facts, replacedAt }) => ({
+      hash,
+      part: layerPartSchema.parse(part),
+      fileName,
+      noData: readJson(layerFactsSchema, facts).noData,
+      current: replacedAt === null,
+    })),
     storedYears: frames.map((frame) => frame.year),
     hasClosing: run.closingHash !== null,
     result: run.result === null ? null : readJson(runResultSchema, run.result),

@@ -1,6 +1,6 @@
 import { In } from 'typeorm';
 import type { Manager } from '#server/database/manager.ts';
-import { LayerEntity } from '#server/database/entities/layer.ts';
+import { LayerEntity, type LayerRow } from '#server/database/entities/layer.ts';
 import { OptionEntity, type OptionRow } from '#server/database/entities/option.ts';
 import { RunFrameEntity, type RunFrameRow } from '#server/database/entities/run-frame.ts';
 import { RunLayerEntity } from '#server/database/entities/run-layer.ts';
@@ -29,6 +29,16 @@ export async function foreignHashes(
   const foreign = new Set(hashes);
   for (const { hash } of known) foreign.delete(hash);
   return foreign;
+}
+
+/** The layers that a run stands on, in the order of their upload; of two with the same bytes, the later. */
+export async function layersOfRun(manager: Manager, run: Pick<RunRow, 'id' | 'siteId'>): Promise<LayerRow[]> {
+  const used = await manager.findBy(RunLayerEntity, { runId: run.id });
+  const layers = await manager.find(LayerEntity, {
+    where: { siteId: run.siteId, hash: In(used.map(({ hash }) => hash)) },
+    order: { uploadedAt: 'ASC' },
+  });
+  return [...new Map(layers.map((layer) => [layer.hash, layer])).values()];
 }
 
 export async function insertRun(manager: Manager, run: RunRow, layers: readonly string[]): Promise<void> {

@@ -1,0 +1,51 @@
+import { mutationOptions, type QueryClient } from '@tanstack/react-query';
+import { changeOption, createOption, deleteOption, type Option } from '#contract/sites.ts';
+import type { Action } from '#sim-core/spec/run-spec.ts';
+import { callEndpoint } from '#app/lib/api-client.ts';
+import { siteKey } from '#app/lib/site-cache.ts';
+import { forgetDraft } from './draft-storage.ts';
+import { optionsQuery } from './list-options.ts';
+
+/** Puts an option into the list that was fetched, at the end when it is new; the site's count is asked for again. */
+function keepOption(queryClient: QueryClient, option: Option): void {
+  queryClient.setQueryData(optionsQuery(option.siteId).queryKey, (options: Option[] | undefined) =>
+    options?.some(({ id }) => id === option.id)
+      ? options.map((other) => (other.id === option.id ? option : other))
+      : [...(options ?? []), option],
+  );
+  void queryClient.invalidateQueries({ queryKey: siteKey(option.siteId) });
+}
+
+export const createOptionMutation = (queryClient: QueryClient, siteId: string) =>
+  mutationOptions({
+    mutationFn: (body: { name: string; works: Action[] }) =>
+      callEndpoint(createOption, { params: { siteId }, body }),
+    onSuccess: (option) => keepOption(queryClient, option),
+  });
+
+/** Refused with `conflict` when somebody changed the option after `revision`. */
+export const saveOptionMutation = (queryClient: QueryClient, siteId: string) =>
+  mutationOptions({
+    mutationFn: ({
+      optionId,
+      ...body
+    }: {
+      optionId: string;
+      name: string;
+      works: Action[];
+      revision: number;
+    }) => callEndpoint(changeOption, { params: { siteId, optionId }, body }),
+    onSuccess: (option) => keepOption(queryClient, option),
+  });
+
+export const deleteOptionMutation = (queryClient: QueryClient, siteId: string) =>
+  mutationOptions({
+    mutationFn: (optionId: string) => callEndpoint(deleteOption, { params: { siteId, optionId } }),
+    onSuccess: (_, optionId) => {
+      forgetDraft(optionId);
+      queryClient.setQueryData(optionsQuery(siteId).queryKey, (options: Option[] | undefined) =>
+        options?.filter(({ id }) => id !== optionId),
+      );
+      void queryClient.invalidateQueries({ queryKey: siteKey(siteId) });
+    },
+  });

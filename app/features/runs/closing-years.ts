@@ -1,0 +1,21 @@
+import { queryOptions } from '@tanstack/react-query';
+import { decodeCellValues } from '#rasters/cells/cell-values.ts';
+import { getClosing } from '#contract/runs.ts';
+import { maximumCells } from '#sim-core/spec/run-spec.ts';
+import { fetchBytes } from '#app/lib/api-client.ts';
+
+/** The closing year of every cell of a run that reached its horizon. */
+export const closingQuery = (runId: string) =>
+  queryOptions({
+    queryKey: ['run-closing', runId],
+    queryFn: async ({ signal }) => {
+      const bytes = await fetchBytes(getClosing, { params: { runId }, signal });
+      const { values } = decodeCellValues(bytes, { cells: maximumCells });
+      if (!(values instanceof Int16Array))
+        throw new Error('The map of closing years holds other numbers than years; run it again.');
+      return values;
+    },
+    staleTime: Infinity,
+    gcTime: 60_000,
+    structuralSharing: false,
+  });
