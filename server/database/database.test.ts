@@ -1,0 +1,135 @@
+import { mkdtempSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { TeamEntity } from './entities/team.ts';
+import { migrations } from './migrations/index.ts';
+import { openDatabase, openWriter, type Database } from './open-database.ts';
+
+let folder: string;
+let file: string;
+let database: Database;
+beforeEach(async () => {
+  folder = mkdtempSync(join(tmpdir(), 'foothold-database-'));
+  file = join(folder, 'foothold.sqlite');
+  database = await openDatabase(file);
+});
+afterEach(async () => {
+  await database.close();
+  rmSync(folder, { recursive: true, force: true });
+});
+
+const team = (id: string) => ({ id, name: `Team ${id}`, createdAt: '2026-01-01T00:00:00.000Z' });
+const teamIds = async () => {
+  const rows = await database.dataSource.getRepository(TeamEntity).find({ order: { id: 'ASC' } });
+  return rows.map((row) => row.id);
+};
+const soon = () => new Promise<void>((resolve) => setImmediate(resolve));
+
+describe('the write queue', () => {
+  it('keeps one write apart from another that rolls back at the same time', async () => {
+    const failing = database.write(async (manager) => {
+      await manager.getRepository(TeamEntity).insert(team('lost'));
+      for (let i = 0; i < 5; i++) await soon();
+      throw new Error('changed my mind');
+    });
+    const lasting = database.write(async (manager) => {
+      await manager.getRepository(TeamEntity).insert(team('kept'));
+      await soon();
+      return 'done';
+    });
+    await expect(failing).rejects.toThrow('changed my mind');
+    await expect(lasting).resolves.toBe('done');
+    expect(await teamIds()).toEqual(['kept']);
+  });
+
+  it('is needed: on the bare connection the rollback of one takes the other along', async () => {
+    const writer = await openWriter(join(folder, 'bare.sqlite'));
+    await writer.runMigrations();
+    const failing = writer.transaction(async (manager) => {
+      await manager.getRepository(TeamEntity).insert(team('lost'));
+      for (let i = 0; i < 5; i++) await soon();
+      throw new Error('changed my mind');
+    });
+    const lasting = writer.transaction(async (manager) => {
+      await manager.getRepository(TeamEntity).insert(team('kept'));
+    });
+    await Promise.allSettled([failing, lasting]);
+    const kept = await writer.getRepository(TeamEntity).countBy({ id: 'kept' });
+    await writer.destroy();
+    // Once this fails, the driver has learnt to keep transactions apart, and the queue may go.
+    expect(kept).toBe(0);
+  });
+
+  it('runs writes in the order in which they were asked for', async () => {
+    const order: number[] = [];
+    await Promise.all(
+      [3, 0, 2, 1].map((pauses, index) =>
+        database.write(async () => {
+          for (let i = 0; i < pauses; i++) await soon();
+          order.push(index);
+        }),
+      ),
+    );
+    expect(order).toEqual([0, 1, 2, 3]);
+  });
+
+  it('goes on after a write that failed', async () => {
+    await expect(database.write(() => Promise.reject(new Error('no')))).rejects.toThrow('no');
+    await database.write((manager) => manager.getRepository(TeamEntity).insert(team('after')));
+    expect(await teamIds()).toEqual(['after']);
+  });
+
+  it('refuses a write inside a write, which would wait for itself', async () => {
+    const nested = database.write(() => database.write(() => Promise.resolve()));
+    await expect(nested).rejects.toThrow('write() was called inside write()');
+  });
+});
+
+describe('the reading connection', () => {
+  it('does not see a transaction that is still open', async () => {
+    let seen: string[] | undefined;
+    await database.write(async (manager) => {
+      await manager.getRepository(TeamEntity).insert(team('open'));
+      seen = await teamIds();
+    });
+    expect(seen).toEqual([]);
+    expect(await teamIds()).toEqual(['open']);
+  });
+
+  it('cannot write', async () => {
+    const insert = database.dataSource.getRepository(TeamEntity).insert(team('past the queue'));
+    await expect(insert).rejects.toThrow('readonly');
+    expect(await teamIds()).toEqual([]);
+  });
+});
+
+describe('the schema', () => {
+  it('is what the entities say, by migrations alone', async () => {
+    const writer = await openWriter(file);
+    const { upQueries } = await writer.driver.createSchemaBuilder().log();
+    await writer.destroy();
+    expect(upQueries.map((query) => query.query)).toEqual([]);
+  });
+
+  it('goes back down to nothing, and up again', async () => {
+    const writer = await openWriter(join(folder, 'again.sqlite'));
+    await writer.runMigrations();
+    for (let i = 0; i < migrations.length; i++) await writer.undoLastMigration();
+    const left = await writer.query<{ name: string }[]>(
+      `SELECT name FROM sqlite_master WHERE type = 'table' AND name NOT LIKE 'sqlite_%' AND name <> 'migrations'`,
+    );
+    expect(left).toEqual([]);
+    expect(await writer.runMigrations()).toHaveLength(migrations.length);
+    await writer.destroy();
+  });
+
+  it('keeps WAL, foreign keys and durable commits', async () => {
+    const writer = await openWriter(file);
+    const pragma = async (name: string) =>
+      Object.values((await writer.query<Record<string, unknown>[]>(`PRAGMA ${name}`))[0])[0];
+    const found = [await pragma('journal_mode'), await pragma('foreign_keys'), await pragma('synchronous')];
+    await writer.destroy();
+    expect(found).toEqual(['wal', 1, 2]);
+  });
+});
