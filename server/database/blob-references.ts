@@ -9,7 +9,7 @@ const references = [
 ] as const;
 
 const anyReference = references
-  .map(([table, column]) => `EXISTS (SELECT 1 FROM "${table}" WHERE "${column}" = ?1)`)
+  .map(([table, column]) => `EXISTS (SELECT 1 FROM "${table}" WHERE "${column}" = ?)`)
   .join(' OR ');
 
 /** Those of `hashes` that no row refers to. */
@@ -19,7 +19,10 @@ export async function unreferencedHashes(
 ): Promise<string[]> {
   const free: string[] = [];
   for (const hash of new Set(hashes)) {
-    const rows: unknown[] = await manager.query(`SELECT 1 WHERE ${anyReference}`, [hash]);
+    const rows: unknown[] = await manager.query(
+      `SELECT 1 WHERE ${anyReference}`,
+      references.map(() => hash),
+    );
     if (rows.length === 0) free.push(hash);
   }
   return free;

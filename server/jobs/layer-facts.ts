@@ -39,12 +39,6 @@ export function valueComplaint(
   unit: ValueUnit,
 ): ValueComplaint | undefined {
   const range = `values from ${facts.minimum} to ${facts.maximum}`;
-  if (!Number.isFinite(facts.minimum) || !Number.isFinite(facts.maximum))
-    return {
-      found: range,
-      expected: 'finite numbers',
-      remedy: 'Find out how the raster was computed (a division by zero?) and write such cells as no data.',
-    };
   if (part === 'habitat') {
     if (facts.classCounts && facts.classCounts.every(({ value }) => Number.isSafeInteger(value)))
       return undefined;
