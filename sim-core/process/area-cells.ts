@@ -48,7 +48,8 @@ function discCells(x: number, y: number, radius: number, grid: Grid): number[] {
   for (let row = top; row <= bottom; row++)
     for (let column = left; column <= right; column++) {
       const centre = cellCentre(grid, column, row);
-      if ((centre.x - x) ** 2 + (centre.y - y) ** 2 <= radius * radius) cells.push(row * grid.width + column);
+      const [dx, dy] = [centre.x - x, centre.y - y];
+      if (dx * dx + dy * dy <= radius * radius) cells.push(row * grid.width + column);
     }
   return cells;
 }

@@ -23,7 +23,8 @@ export function moundStrengths(mound: Mound, grid: Grid): MoundStrengths {
   for (let row = top; row <= bottom; row++)
     for (let column = left; column <= right; column++) {
       const centre = cellCentre(grid, column, row);
-      const distance = Math.sqrt((centre.x - x) ** 2 + (centre.y - y) ** 2);
+      const [dx, dy] = [centre.x - x, centre.y - y];
+      const distance = Math.sqrt(dx * dx + dy * dy);
       const share = distance <= radius ? 1 : halo > 0 ? Math.max(0, 1 - (distance - radius) / halo) : 0;
       if (share === 0) continue;
       if (distance <= radius) holdsCentre = true;

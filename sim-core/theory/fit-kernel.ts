@@ -27,7 +27,7 @@ export interface FittedKernel {
 
 /** Below this next to nothing leaves its cell; above, the kernel would be wider than a run allows. Cells² a step. */
 const smallestVariance = 1.1e-6;
-const largestVariance = (widestRadius / 5.2) ** 2;
+const largestVariance = (widestRadius * widestRadius) / 27;
 /** Diagonal against straight speed below which the lattice shows. */
 const coarse = 0.95;
 
@@ -143,8 +143,8 @@ function coarsenessWarning(
     else high = middle;
   }
   const fineCell = rates.lateralSpread / frontSpeed(rates, 1, stepsPerYear, exp(high));
-  const longer = ([4, 2, 1] as const).find((steps) => {
-    if (steps >= stepsPerYear) return false;
+  const other = ([1, 2, 4, 12] as const).find((steps) => {
+    if (steps === stepsPerYear) return false;
     const speed = (t: number) => frontSpeed(rates, cellSize, steps, t);
     return evenness(rates, steps, varianceFor(rates.lateralSpread, speed)) >= coarse;
   });
@@ -152,18 +152,16 @@ function coarsenessWarning(
     `A cell of ${figure(cellSize)} m is coarse for a front of ${figure(rates.lateralSpread)} m/yr and ` +
       `${stepsPerYear === 1 ? 'yearly steps' : `${stepsPerYear} steps a year`}: fronts along the diagonal run at ` +
       `${Math.round(ratio * 100)} % of those along the rows. Cells of ${figure(roundDown(fineCell))} m or less ` +
-      `would mend it${longer ? `, and so would ${longer === 1 ? 'one step' : `${longer} steps`} a year` : ''}.`,
+      `would mend it${other ? `, and so would ${other === 1 ? 'one step' : `${other} steps`} a year` : ''}.`,
   ];
 }
 
 /** Three significant digits, without a tail of zeros. */
 const figure = (x: number): string => String(Number(x.toPrecision(3)));
 /** Two significant digits, never above (below) what holds. */
-function roundDown(x: number): number {
-  const rounded = Number(x.toPrecision(2));
-  return rounded <= x ? rounded : Number((x * 0.95).toPrecision(2));
-}
-function roundUp(x: number): number {
-  const rounded = Number(x.toPrecision(2));
-  return rounded >= x ? rounded : Number((x * 1.05).toPrecision(2));
+const roundDown = (x: number): number => twoDigits(x, Math.floor);
+const roundUp = (x: number): number => twoDigits(x, Math.ceil);
+function twoDigits(x: number, round: (x: number) => number): number {
+  const exponent = Number(x.toExponential().split('e')[1]) - 1;
+  return Number((round(x / 10 ** exponent) * 10 ** exponent).toPrecision(2));
 }
