@@ -1,5 +1,5 @@
 import { execFileSync } from 'node:child_process';
-import { request as httpRequest, type Server } from 'node:http';
+import { request as httpRequest } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import type { Problem } from '#contract/problem.ts';
