@@ -9,6 +9,7 @@ const keys = {
   rasterType: 1025,
   citation: 1026,
   geographic: 2048,
+  geographicCitation: 2049,
   projected: 3072,
   projectedCitation: 3073,
   linearUnit: 3076,
@@ -46,14 +47,17 @@ export async function readCrs(directory: TiffDirectory): Promise<RasterCrs> {
       expected: 'a projected CRS in metres',
       remedy: 'Say what it is, for example gdal_translate -a_srs EPSG:32631 IN.tif OUT.tif.',
     });
-  const name = cleanName(geo.text(keys.projectedCitation) ?? geo.text(keys.citation));
+  const name = cleanName(
+    geo.text(keys.projectedCitation) ?? geo.text(keys.citation) ?? geo.text(keys.geographicCitation),
+  );
   const reproject =
     'Reproject it to the UTM zone of the site, for example gdalwarp -t_srs EPSG:32631 IN.tif OUT.tif.';
   if (model !== 1)
     throw new RasterError('raster-not-projected', {
-      found: `${model === 2 ? 'degrees (a geographic CRS' : 'a CRS that is not projected ('}${
-        model === 2 ? `${name ? `, ${name}` : ''})` : `${name ?? `model type ${model}`})`
-      }`,
+      found:
+        model === 2
+          ? `degrees (a geographic CRS${name ? `, ${name}` : ''})`
+          : `a CRS of model type ${model}, which is not projected`,
       expected: 'a projected CRS in metres',
       remedy: reproject,
     });
