@@ -1,4 +1,4 @@
-import { copyFileSync, mkdtempSync, rmSync } from 'node:fs';
+import { copyFileSync, cpSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import supertest from 'supertest';
@@ -30,12 +30,18 @@ export interface TestServer {
   /** moves the server's clock on */
   pass(milliseconds: number): void;
   close(): Promise<void>;
+  /** closes, and leaves the data folder to the caller: `testServer({}, folder)` starts on a copy of it */
+  freeze(): Promise<string>;
 }
 
-/** The real app on a real SQLite file in a folder of its own. Close it when the test is done. */
-export async function testServer(changes: Partial<Config> = {}): Promise<TestServer> {
+/**
+ * The real app on a real SQLite file in a folder of its own. Close it when the test is done.
+ * @param frozen a data folder to start on a copy of; an empty database unless given
+ */
+export async function testServer(changes: Partial<Config> = {}, frozen?: string): Promise<TestServer> {
   const dataDir = makeFolder();
-  copyFileSync(await (template ??= makeTemplate()), join(dataDir, 'foothold.sqlite'));
+  if (frozen) cpSync(frozen, dataDir, { recursive: true });
+  else copyFileSync(await (template ??= makeTemplate()), join(dataDir, 'foothold.sqlite'));
   const config: Config = {
     ...readConfig({}),
     dataDir,
@@ -60,6 +66,10 @@ export async function testServer(changes: Partial<Config> = {}): Promise<TestSer
     async close() {
       await services.close();
       rmSync(dataDir, { recursive: true, force: true });
+    },
+    async freeze() {
+      await services.close();
+      return dataDir;
     },
   };
 }

@@ -1,0 +1,154 @@
+import { rmSync } from 'node:fs';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { fillPath, type Endpoint } from '#contract/endpoint.ts';
+import * as people from '#contract/people.ts';
+import * as runs from '#contract/runs.ts';
+import * as sites from '#contract/sites.ts';
+import { allRoutes } from '#server/routes.ts';
+import { makeAccessFixture, type AccessFixture } from '#server/testing/access-fixture.ts';
+import { testServer, type TestServer } from '#server/testing/test-server.ts';
+
+/**
+ * Who may use what, written down a second time and by hand: a rule that is loosened in a route fails here. `anyone` needs no
+ * account, `signed-in` an account, the rest name the roles that may, in the team that owns the thing.
+ */
+const everyRole = 'modeller manager trainer admin';
+const planners = 'modeller manager admin';
+const modellers = 'modeller admin';
+const expected: Record<string, string> = {
+  'GET /api/health': 'anyone',
+  'GET /api/session': 'anyone',
+  'POST /api/session': 'anyone',
+  'DELETE /api/session': 'anyone',
+  'GET /api/demo-accounts': 'anyone',
+  'GET /api/setup/:token': 'anyone',
+  'POST /api/setup/:token': 'anyone',
+  'GET /api/invites/:token': 'anyone',
+  'POST /api/invites/:token': 'anyone',
+  'POST /api/password-resets': 'anyone',
+  'POST /api/password-resets/:token': 'anyone',
+
+  'GET /api/account/sessions': 'signed-in',
+  'DELETE /api/account/sessions/:sessionId': 'signed-in',
+  'PATCH /api/account': 'signed-in',
+  'POST /api/account/password': 'signed-in',
+  'POST /api/teams': 'signed-in',
+
+  'GET /api/teams/:teamId/members': everyRole,
+  'PATCH /api/teams/:teamId/members/:personId': 'admin',
+  'DELETE /api/teams/:teamId/members/:personId': 'admin',
+  'DELETE /api/teams/:teamId/members/:personId/sessions': 'admin',
+  'GET /api/teams/:teamId/invites': 'admin',
+  'POST /api/teams/:teamId/invites': 'admin',
+  'DELETE /api/teams/:teamId/invites/:inviteId': 'admin',
+  'GET /api/teams/:teamId/outbox': 'admin',
+  'GET /api/teams/:teamId/outbox/:messageId': 'admin',
+  'GET /api/teams/:teamId/outbox/:messageId/message.eml': 'admin',
+
+  'GET /api/teams/:teamId/sites': everyRole,
+  'POST /api/teams/:teamId/sites': modellers,
+  'GET /api/sites/:siteId': everyRole,
+  'PATCH /api/sites/:siteId': modellers,
+  'DELETE /api/sites/:siteId': modellers,
+  'POST /api/sites/:siteId/layers': modellers,
+  'PATCH /api/sites/:siteId/layers/:layerId': modellers,
+  'PUT /api/sites/:siteId/layers/:layerId/classes': modellers,
+  'DELETE /api/sites/:siteId/layers/:layerId': modellers,
+  'GET /api/sites/:siteId/layer-values/:hash': everyRole,
+  'PUT /api/sites/:siteId/plant': modellers,
+  'PUT /api/sites/:siteId/outlook': modellers,
+
+  'GET /api/sites/:siteId/options': everyRole,
+  'POST /api/sites/:siteId/options': planners,
+  'PUT /api/sites/:siteId/options/:optionId': planners,
+  'DELETE /api/sites/:siteId/options/:optionId': planners,
+
+  'GET /api/sites/:siteId/runs': everyRole,
+  'POST /api/sites/:siteId/runs': planners,
+  'GET /api/runs/:runId': everyRole,
+  'PATCH /api/runs/:runId': planners,
+  'DELETE /api/runs/:runId': planners,
+  'PUT /api/runs/:runId/frames/:year': planners,
+  'GET /api/runs/:runId/frames/:year': everyRole,
+  'PUT /api/runs/:runId/closing': planners,
+  'GET /api/runs/:runId/closing': everyRole,
+  'POST /api/runs/:runId/finish': planners,
+  'POST /api/runs/:runId/stop': planners,
+  'POST /api/runs/:runId/checks': everyRole,
+  'GET /api/runs/:runId/series.csv': everyRole,
+  'GET /api/runs/:runId/cover/:year': everyRole,
+  'GET /api/runs/:runId/closing.tif': everyRole,
+};
+
+const callers = ['nobody', 'modeller', 'manager', 'trainer', 'admin', 'outsider'] as const;
+type Caller = (typeof callers)[number];
+
+/** The status of a refusal, or undefined for whoever is let in. */
+function refusal(rule: string, caller: Caller): number | undefined {
+  if (rule === 'anyone') return undefined;
+  if (caller === 'nobody') return 401;
+  if (rule === 'signed-in') return undefined;
+  if (caller === 'outsider') return 404;
+  return rule.split(' ').includes(caller) ? undefined : 403;
+}
+
+const isEndpoint = (value: unknown): value is Endpoint =>
+  typeof value === 'object' && value !== null && 'method' in value && 'path' in value && 'reply' in value;
+const contract = [people, sites, runs]
+  .flatMap((module) => Object.values<unknown>({ ...module }))
+  .filter(isEndpoint);
+const nameOf = ({ method, path }: Endpoint) => `${method} ${path}`;
+
+let fixture: AccessFixture;
+let shared: TestServer;
+beforeAll(async () => {
+  fixture = await makeAccessFixture();
+  shared = await testServer({}, fixture.folder);
+});
+afterAll(async () => {
+  await shared.close();
+  rmSync(fixture.folder, { recursive: true, force: true });
+});
+
+async function ask(server: TestServer, endpoint: Endpoint, caller: Caller): Promise<number> {
+  const cookie = fixture.cookies[caller] ?? '';
+  const params = { ...fixture.params, sessionId: fixture.sessionIds[caller] ?? 'none' };
+  const method = endpoint.method.toLowerCase() as Lowercase<Endpoint['method']>;
+  return (await server.request[method](fillPath(endpoint.path, params)).set('Cookie', cookie)).status;
+}
+
+/** Asks on a copy of the fixture, so that what a caller deletes is there for the next one. */
+async function askOnCopy(endpoint: Endpoint, caller: Caller): Promise<number> {
+  const server = await testServer({}, fixture.folder);
+  const status = await ask(server, endpoint, caller);
+  await server.close();
+  return status;
+}
+
+describe('every route', () => {
+  it('is in the contract and in the table above, and every endpoint of the contract is mounted', async () => {
+    const server = await testServer();
+    const mounted = allRoutes(server.services).map(({ endpoint }) => nameOf(endpoint));
+    await server.close();
+    expect(mounted.toSorted()).toEqual(Object.keys(expected).sort());
+    expect(contract.map(nameOf).sort()).toEqual(Object.keys(expected).sort());
+  });
+
+  it.each(contract.map((endpoint) => [nameOf(endpoint), endpoint] as const))(
+    '%s lets in whom it should',
+    async (name, endpoint) => {
+      const rule = expected[name];
+      for (const caller of callers) {
+        const wanted = refusal(rule, caller);
+        if (wanted !== undefined)
+          expect([caller, await ask(shared, endpoint, caller)]).toEqual([caller, wanted]);
+        else {
+          const deletes = endpoint.method === 'DELETE';
+          const status = deletes ? await askOnCopy(endpoint, caller) : await ask(shared, endpoint, caller);
+          // Without a body, 400 is as far as whoever is let in can come; but the thing must be there for them.
+          expect([401, 403, 404, 500], `${caller}: ${status}`).not.toContain(status);
+        }
+      }
+    },
+  );
+});

@@ -1,0 +1,113 @@
+import type { Role } from '#contract/people.ts';
+import type { Option } from '#contract/sites.ts';
+import { encodeCellValues } from '#rasters/cells/cell-values.ts';
+import { makePerson, makeTeam, testPassword, type TestPerson } from './people.ts';
+import { makeSite } from './sites.ts';
+import { testServer, type TestServer } from './test-server.ts';
+import { addMember } from '../people/people.repository.ts';
+
+/** A data folder with one of everything that a path can point at, and the cookies of whoever may ask for it. */
+export interface AccessFixture {
+  folder: string;
+  params: Record<string, string | number>;
+  /** the session cookie of each caller; nobody has none */
+  cookies: Partial<Record<Role | 'outsider' | 'nobody', string>>;
+  /** the shown id of each caller's session */
+  sessionIds: Partial<Record<Role | 'outsider' | 'nobody', string>>;
+}
+
+const surveyYear = 2026;
+
+/** Signs in and returns the cookie, which stays good on a copy of the data folder. */
+async function cookieOf(server: TestServer, { email }: TestPerson): Promise<string> {
+  const reply = await server.request.post('/api/session').send({ email, password: testPassword }).expect(200);
+  return (reply.headers['set-cookie'] as unknown as string[])[0].split(';')[0];
+}
+
+async function currentSessionId(server: TestServer, cookie: string): Promise<string> {
+  const reply = await server.request.get('/api/account/sessions').set('Cookie', cookie).expect(200);
+  const { sessions } = reply.body as { sessions: { id: string; current: boolean }[] };
+  return sessions.find((session) => session.current)!.id;
+}
+
+/** A running run with the frame of the survey year and its closing years. */
+async function addRun(agent: Awaited<ReturnType<typeof makeTeam>>['agents']['admin'], siteId: string) {
+  const site = await makeRunnable(agent, siteId);
+  const spec = {
+    version: 1,
+    seed: 'access',
+    surveyYear,
+    years: 2,
+    rates: {},
+    layers: { cover: { layer: site.cover } },
+  };
+  const started = await agent
+    .post(`/api/sites/${siteId}/runs`)
+    .send({ name: 'Run', optionId: site.optionId, spec })
+    .expect(200);
+  const { id } = started.body as { id: string };
+  const put = (path: string, values: Uint8Array | Int16Array) =>
+    agent
+      .put(`/api/runs/${id}/${path}`)
+      .set('Content-Type', 'application/octet-stream')
+      .send(Buffer.from(encodeCellValues({ width: 6, height: 4, values })))
+      .expect(204);
+  await put(`frames/${surveyYear}`, new Uint8Array(24));
+  await put('closing', new Int16Array(24));
+  return id;
+}
+
+async function makeRunnable(agent: Parameters<typeof addRun>[0], siteId: string) {
+  const site = await agent.get(`/api/sites/${siteId}`).expect(200);
+  const { layers } = site.body as { layers: { part: string; hash: string }[] };
+  const made = await agent
+    .post(`/api/sites/${siteId}/options`)
+    .send({ name: 'Mounds', works: [] })
+    .expect(200);
+  return {
+    cover: layers.find((layer) => layer.part === 'cover')!.hash,
+    optionId: (made.body as Option).id,
+  };
+}
+
+/** Makes the fixture through the API, and closes the server on it. */
+export async function makeAccessFixture(): Promise<AccessFixture> {
+  const server = await testServer();
+  const { teamId, people, agents } = await makeTeam(server, 'Own team');
+  const other = await makeTeam(server, 'Other team');
+  const extra = await makePerson(server, 'Extra');
+  const { write, clock } = server.services;
+  await write((manager) => addMember(manager, teamId, extra.id, 'trainer', clock()));
+
+  const invited = await agents.admin
+    .post(`/api/teams/${teamId}/invites`)
+    .send({ email: 'new@people.example', role: 'trainer' })
+    .expect(200);
+  const outbox = await agents.admin.get(`/api/teams/${teamId}/outbox`).expect(200);
+  const site = await makeSite(agents.admin, teamId);
+  const runId = await addRun(agents.admin, site.id);
+  const options = await agents.admin.get(`/api/sites/${site.id}/options`).expect(200);
+
+  const callers = { ...people, outsider: other.people.admin };
+  const cookies: AccessFixture['cookies'] = {};
+  const sessionIds: AccessFixture['sessionIds'] = {};
+  for (const [caller, person] of Object.entries(callers) as [Role | 'outsider', TestPerson][]) {
+    const cookie = await cookieOf(server, person);
+    cookies[caller] = cookie;
+    sessionIds[caller] = await currentSessionId(server, cookie);
+  }
+  const params = {
+    token: 'x'.repeat(43),
+    teamId,
+    personId: extra.id,
+    inviteId: (invited.body as { id: string }).id,
+    messageId: (outbox.body as { messages: { id: string }[] }).messages[0].id,
+    siteId: site.id,
+    layerId: site.layers[0].id,
+    hash: site.layers[0].hash,
+    optionId: (options.body as { options: Option[] }).options.find((option) => !option.wait)!.id,
+    runId,
+    year: surveyYear,
+  };
+  return { folder: await server.freeze(), params, cookies, sessionIds };
+}
