@@ -24,7 +24,7 @@ export type OutlookEvent =
   | { type: 'boundary'; value: Boundary }
   | { type: 'value'; year: number; value: number }
   | { type: 'constant'; value: number }
-  | { type: 'laid'; values: ReadonlyMap<number, number>; years?: number }
+  | { type: 'laid'; values: ReadonlyMap<number, number> }
   | { type: 'reset'; outlook: Outlook };
 
 export function startDraft(outlook: Outlook): OutlookDraft {
@@ -44,7 +44,8 @@ export function outlookDraft(draft: OutlookDraft, event: OutlookEvent): OutlookD
     case 'surveyYear':
     case 'years': {
       const next = { ...draft, [event.type]: event.text };
-      const value = wholeIn(event.text, ...limits[event.type]);
+      const [least, most] = limits[event.type];
+      const value = wholeIn(event.text, least, most);
       return value === undefined ? next : { ...next, span: { ...draft.span, [event.type]: value } };
     }
     case 'stepsPerYear':
@@ -55,11 +56,8 @@ export function outlookDraft(draft: OutlookDraft, event: OutlookEvent): OutlookD
       return { ...draft, values: new Map(draft.values).set(event.year, tidy(event.value)) };
     case 'constant':
       return { ...draft, values: new Map(simulatedYears(draft).map((year) => [year, tidy(event.value)])) };
-    case 'laid': {
-      const values = new Map([...draft.values, ...event.values]);
-      if (event.years === undefined) return { ...draft, values };
-      return outlookDraft({ ...draft, values }, { type: 'years', text: String(event.years) });
-    }
+    case 'laid':
+      return { ...draft, values: new Map([...draft.values, ...event.values]) };
     case 'reset':
       return startDraft(event.outlook);
   }

@@ -17,6 +17,9 @@ export function Page() {
   const site = useQuery(siteQuery(siteId));
   const runs = useQuery(runsQuery(siteId));
   const session = useQuery(sessionQuery).data;
+  // An address whose id is no id at all is refused as an invalid request; to a reader it is the same.
+  const status = site.error instanceof ProblemError ? site.error.status : 0;
+  if ([400, 403, 404].includes(status)) return <NotFound top={<PageTop />} what="site" />;
   // What was known last stays in use while it is asked again: an outage must not take a page away.
   if (site.data !== undefined) {
     const role = roleIn(session, site.data.teamId);
@@ -34,9 +37,6 @@ export function Page() {
     return <Outlet key={siteId} context={context} />;
   }
   if (site.isPending) return <Opening />;
-  // An address whose id is no id at all is refused as an invalid request; to a reader it is the same.
-  const status = site.error instanceof ProblemError ? site.error.status : 0;
-  if ([400, 403, 404].includes(status)) return <NotFound top={<PageTop />} what="site" />;
   return (
     <MessagePage
       top={<PageTop />}

@@ -1,0 +1,82 @@
+import type { ReactNode } from 'react';
+import { Notice } from '#app/components/notice.tsx';
+import { FillCurve } from '#app/features/plant/fill-curve.tsx';
+import type { Implications } from '#app/features/plant/implied.ts';
+import { KernelBars } from '#app/features/plant/kernel-bars.tsx';
+import { LossCurves } from '#app/features/plant/loss-curves.tsx';
+import { formatCounted, formatNumber, formatShare } from '#app/lib/formats.ts';
+import type { Rates } from '#sim-core/spec/parameters.ts';
+import { useSite } from './use-site.ts';
+
+/** What the rates imply on the cells of this site, drawn and in words. */
+export function PlantMargin({ implied, rates }: { implied: Implications; rates: Rates }) {
+  const { site } = useSite();
+  const { cellSize } = site.grid;
+  const { kernel } = implied;
+  return (
+    <div>
+      <h2 className="text-lead">What they imply</h2>
+      <p className="mb-2.5 text-note text-ink-2">
+        on cells of {formatNumber(cellSize)} m, {formatCounted(site.outlook.stepsPerYear, 'step')} a year
+      </p>
+      <Part title="A straight edge moves">
+        {kernel === undefined ? (
+          <Notice kind="problem" title="No front.">
+            {implied.problems.map(({ message }) => message).join(' ')}
+          </Notice>
+        ) : (
+          <>
+            <dl className="flex gap-x-8">
+              <Speed speed={kernel.frontSpeed} words="along rows" />
+              <Speed speed={kernel.diagonalFrontSpeed} words="along the diagonal" />
+            </dl>
+            {kernel.warnings.length > 0 ? (
+              <Notice className="mt-2" title="The cell is coarse.">
+                {kernel.warnings.join(' ')}
+              </Notice>
+            ) : (
+              <p className="mt-1 text-note text-ink-2">
+                {formatShare(kernel.diagonalFrontSpeed / kernel.frontSpeed)} of the speed on the diagonal: the
+                cells do not show. It crosses 10 m in{' '}
+                {formatCounted(Math.round(10 / kernel.frontSpeed), 'year')}.
+              </p>
+            )}
+          </>
+        )}
+      </Part>
+      {kernel !== undefined && (
+        <>
+          <Part title="Where new clumps land">
+            <KernelBars kernel={kernel} cellSize={cellSize} />
+          </Part>
+          <Part title="Ground fills in">
+            <FillCurve {...implied} />
+          </Part>
+        </>
+      )}
+      <Part title="What drought takes in a year">
+        <LossCurves rates={rates} halfLoss={implied.halfLoss} />
+      </Part>
+    </div>
+  );
+}
+
+function Part(props: { title: string; children: ReactNode }) {
+  return (
+    <section className="border-t border-rule pt-1.5 pb-3.5">
+      <h3 className="mb-1 text-note font-semibold">{props.title}</h3>
+      {props.children}
+    </section>
+  );
+}
+
+function Speed({ speed, words }: { speed: number; words: string }) {
+  return (
+    <div className="flex flex-col-reverse">
+      <dt className="text-note text-ink-2">{words}</dt>
+      <dd className="text-figure font-light tracking-tight">
+        {formatNumber(speed, 3)} <span className="text-body">m/yr</span>
+      </dd>
+    </div>
+  );
+}
