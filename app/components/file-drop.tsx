@@ -1,7 +1,10 @@
 import { useId, useState, type DragEvent } from 'react';
 import { classNames } from '#app/lib/class-names.ts';
 
-/** Takes one file, or several with `onFiles`, dropped or chosen. The whole field is the label of the file input, so keys and pointer both work. */
+/**
+ * Takes one file, or several with `onFiles`, dropped or chosen. The whole field is the label of the file input, so
+ * keys and pointer both work.
+ */
 export function FileDrop(props: {
   /** `Drop a GeoTIFF here` */
   label: string;

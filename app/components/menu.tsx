@@ -6,21 +6,19 @@ const item =
   'flex min-h-8 touch:min-h-11 cursor-pointer items-center justify-between gap-6 px-3.5 text-body no-underline outline-none ' +
   'data-highlighted:bg-ink data-highlighted:text-sheet data-disabled:text-ink-3';
 
-/** A list of words that opens from `trigger`, which must be a button. */
+/** A list of words that opens from `trigger`, which must be a button. It stays in the trigger's own landmark. */
 export function Menu(props: { trigger: ReactNode; children: ReactNode; align?: 'start' | 'end' }) {
   return (
-    <DropdownMenu.Root>
+    <DropdownMenu.Root modal={false}>
       <DropdownMenu.Trigger asChild>{props.trigger}</DropdownMenu.Trigger>
-      <DropdownMenu.Portal>
-        <DropdownMenu.Content
-          align={props.align ?? 'end'}
-          sideOffset={4}
-          collisionPadding={8}
-          className="z-50 min-w-[200px] rounded-edge border-[1.5px] border-ink bg-sheet py-1.5"
-        >
-          {props.children}
-        </DropdownMenu.Content>
-      </DropdownMenu.Portal>
+      <DropdownMenu.Content
+        align={props.align ?? 'end'}
+        sideOffset={4}
+        collisionPadding={8}
+        className="z-50 min-w-[200px] rounded-edge border-[1.5px] border-ink bg-sheet py-1.5"
+      >
+        {props.children}
+      </DropdownMenu.Content>
     </DropdownMenu.Root>
   );
 }

@@ -60,10 +60,7 @@ export function Table<Row>(props: {
               )}
             >
               {props.columns.map((column) => (
-                <td
-                  key={column.key}
-                  className={cellClass(column, selectable, 'py-1.5 touch:py-2.5 align-baseline')}
-                >
+                <td key={column.key} className={cellClass(column, selectable, 'py-1.5 align-baseline')}>
                   {column.cell(row)}
                 </td>
               ))}

@@ -1,6 +1,10 @@
 /** What a person chose on this browser; `system` follows the operating system. */
-export const themeChoices = ['system', 'light', 'dark'] as const;
-export type ThemeChoice = (typeof themeChoices)[number];
+export const themeOptions = [
+  { key: 'system', label: 'as the system' },
+  { key: 'light', label: 'light' },
+  { key: 'dark', label: 'dark' },
+] as const;
+export type ThemeChoice = (typeof themeOptions)[number]['key'];
 export type Theme = 'light' | 'dark';
 
 const key = 'foothold.theme';
@@ -14,7 +18,7 @@ export function getThemeChoice(): ThemeChoice {
   if (unsaved !== undefined) return unsaved;
   try {
     const saved = window.localStorage.getItem(key);
-    return themeChoices.find((choice) => choice === saved) ?? 'system';
+    return themeOptions.find(({ key: choice }) => choice === saved)?.key ?? 'system';
   } catch {
     return 'system';
   }

@@ -72,4 +72,6 @@ export function fillPath(path: string, params: Record<string, string | number> =
 export const id = z.uuid();
 export const sha256 = z.string().regex(/^[0-9a-f]{64}$/, 'a SHA-256 in hexadecimal');
 export const instant = z.iso.datetime();
-export const text = (longest: number) => z.string().trim().min(1).max(longest);
+/** Text that people type, without blanks at its ends, 1 to `longest` characters. */
+export const text = (longest: number) =>
+  z.string().trim().min(1, 'Fill this in').max(longest, `At most ${longest} characters`);

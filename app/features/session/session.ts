@@ -10,9 +10,9 @@ export const sessionQuery = queryOptions({
   staleTime: 60_000,
 });
 
-/** After somebody came or went: nothing that was fetched for another person may stay in sight. */
+/** After somebody came: nothing that was fetched for another person may stay. What the page at the door shows does. */
 export function enterSession(queryClient: QueryClient, session: Session): void {
-  queryClient.removeQueries({ predicate: (query) => query.queryKey[0] !== sessionKey[0] });
+  queryClient.removeQueries({ type: 'inactive' });
   queryClient.setQueryData(sessionQuery.queryKey, session);
 }
 

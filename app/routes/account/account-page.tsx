@@ -7,11 +7,9 @@ import { NameForm } from '#app/features/account/name-form.tsx';
 import { PasswordForm } from '#app/features/account/password-form.tsx';
 import { SessionSection } from '#app/features/account/session-section.tsx';
 import { sessionQuery } from '#app/features/session/session.ts';
-import { themeChoices } from '#app/lib/theme.ts';
+import { themeOptions } from '#app/lib/theme.ts';
 import { useTheme } from '#app/lib/use-theme.ts';
 import { PaperPage } from '../shell/paper-page.tsx';
-
-const themeWords = { system: 'as the system', light: 'light', dark: 'dark' };
 
 export function Page() {
   const session = useQuery(sessionQuery).data;
@@ -19,35 +17,41 @@ export function Page() {
   if (!session?.person) return null;
   return (
     <PaperPage title="Account" lead={session.person.email}>
-      <Section title="Name">
-        <NameForm name={session.person.name} />
-      </Section>
-      <Section title="Password">
-        <PasswordForm email={session.person.email} />
-      </Section>
-      <SessionSection />
-      <Section title="Theme on this browser">
-        <WordChoice
-          label="Theme on this browser"
-          options={themeChoices.map((key) => ({ key, label: themeWords[key] }))}
-          value={choice}
-          onChange={setChoice}
-        />
-      </Section>
-      <Section title="Teams">
-        <ul className="mb-4">
-          {session.memberships.map(({ teamId, teamName, role }) => (
-            <li
-              key={teamId}
-              className="flex items-baseline gap-3 border-t border-rule-2 py-1 first:border-t-0"
-            >
-              <WordLink to={`/team/${teamId}`}>{teamName}</WordLink>
-              <span className="text-note text-ink-2">as {role}</span>
-            </li>
-          ))}
-        </ul>
-        <FoundTeam />
-      </Section>
+      <div className="grid gap-x-14 lg:grid-cols-2">
+        <div>
+          <Section title="Name">
+            <NameForm name={session.person.name} />
+          </Section>
+          <Section title="Password">
+            <PasswordForm email={session.person.email} />
+          </Section>
+        </div>
+        <div>
+          <SessionSection />
+          <Section title="Theme on this browser">
+            <WordChoice
+              label="Theme on this browser"
+              options={themeOptions}
+              value={choice}
+              onChange={setChoice}
+            />
+          </Section>
+          <Section title="Teams">
+            <ul className="mb-4">
+              {session.memberships.map(({ teamId, teamName, role }) => (
+                <li
+                  key={teamId}
+                  className="flex items-baseline gap-3 border-t border-rule-2 py-1 first:border-t-0"
+                >
+                  <WordLink to={`/team/${teamId}`}>{teamName}</WordLink>
+                  <span className="text-note text-ink-2">as {role}</span>
+                </li>
+              ))}
+            </ul>
+            <FoundTeam />
+          </Section>
+        </div>
+      </div>
     </PaperPage>
   );
 }

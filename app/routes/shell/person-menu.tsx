@@ -5,10 +5,8 @@ import { sayDone } from '#app/components/toast.tsx';
 import { sessionQuery } from '#app/features/session/session.ts';
 import { signOutMutation } from '#app/features/session/sign-out.ts';
 import { errorText } from '#app/lib/api-client.ts';
-import { themeChoices } from '#app/lib/theme.ts';
+import { themeOptions } from '#app/lib/theme.ts';
 import { useTheme } from '#app/lib/use-theme.ts';
-
-const themeWords = { system: 'as the system', light: 'light', dark: 'dark' };
 
 /** Who is signed in, as the door to account, teams, theme and signing out. `note` is the role on the page's team. */
 export function PersonMenu(props: { note?: string }) {
@@ -43,12 +41,7 @@ export function PersonMenu(props: { note?: string }) {
       ))}
       <MenuLink to="/account">Account</MenuLink>
       <MenuRule />
-      <MenuChoice
-        label="Theme on this browser"
-        options={themeChoices.map((key) => ({ key, label: themeWords[key] }))}
-        value={choice}
-        onChange={setChoice}
-      />
+      <MenuChoice label="Theme on this browser" options={themeOptions} value={choice} onChange={setChoice} />
       <MenuRule />
       <MenuItem onSelect={() => leave.mutate()}>Sign out</MenuItem>
     </Menu>
