@@ -1,0 +1,75 @@
+import { createHash } from 'node:crypto';
+import { createReadStream } from 'node:fs';
+import { dirname, resolve } from 'node:path';
+import { pipeline } from 'node:stream/promises';
+import { validateOnGrid } from '#rasters/read/on-grid.ts';
+import { RasterError } from '#rasters/read/raster-error.ts';
+import { readRaster, type Raster } from '#rasters/read/read-raster.ts';
+import { withFileSource } from '#server/files/file-source.ts';
+import { buildGround, RunProblem } from '#sim-core/index.ts';
+import type { Grid } from '#sim-core/grid/grid.ts';
+import { groundLayers, type Ground } from '#sim-core/grid/ground.ts';
+import type { FieldProblem } from '#sim-core/spec/problems.ts';
+import type { LayerSources } from '#sim-core/spec/run-spec.ts';
+import { SimulateError } from './simulate-error.ts';
+
+export interface GroundOnFile {
+  readonly grid: Grid;
+  readonly crsName: string;
+  readonly ground: Ground;
+  /** the files that layers came from, by layer: path as the spec names it, SHA-256 of the bytes */
+  readonly files: Readonly<Record<string, { file: string; sha256: string }>>;
+}
+
+/**
+ * Reads every GeoTIFF that the layers name, once each; the first gives the grid and the others must have its cells.
+ *
+ * @param specPath file that relative paths start from
+ * @throws SimulateError naming each layer whose file cannot be used
+ */
+export async function readGround(layers: LayerSources, specPath: string): Promise<GroundOnFile> {
+  const rasters = new Map<string, Raster>();
+  const files: Record<string, { file: string; sha256: string }> = {};
+  const hashes = new Map<string, string>();
+  const problems: FieldProblem[] = [];
+  let first: Raster | undefined;
+  for (const layer of groundLayers) {
+    const source = layers[layer];
+    if (typeof source === 'number' || !('file' in source)) continue;
+    const path = resolve(dirname(specPath), source.file);
+    try {
+      const raster = rasters.get(path) ?? (await withFileSource(path, (bytes) => readRaster(bytes)));
+      first ??= raster;
+      validateOnGrid(raster, first.grid);
+      rasters.set(path, raster);
+      if (!hashes.has(path)) hashes.set(path, await sha256Of(path));
+      files[layer] = { file: source.file, sha256: hashes.get(path) ?? '' };
+    } catch (error) {
+      problems.push({ field: `layers.${layer}`, message: `${path}: ${whyNot(error)}` });
+    }
+  }
+  if (problems.length > 0 || !first) throw SimulateError.ofFields(problems);
+  const { grid, crsName } = first;
+  const ground = buildGround(layers, grid.width * grid.height, (source) => {
+    const raster = 'file' in source ? rasters.get(resolve(dirname(specPath), source.file)) : undefined;
+    if (!raster) throw new RunProblem([{ field: 'layers', message: 'Only files can be read here' }]);
+    return raster;
+  });
+  return { grid, crsName, ground, files };
+}
+
+/** The reason why a file cannot be used, in words; what is no fault of the file is thrown on. */
+function whyNot(error: unknown): string {
+  if (error instanceof RasterError) return error.message;
+  const code = error instanceof Error && 'code' in error ? error.code : undefined;
+  if (code === 'ENOENT') return 'there is no such file';
+  if (code === 'EISDIR') return 'this is a folder; name a GeoTIFF in it';
+  if (code === 'EACCES') return 'it may not be read; check its permissions';
+  throw error;
+}
+
+async function sha256Of(path: string): Promise<string> {
+  const hash = createHash('sha256');
+  await pipeline(createReadStream(path), hash);
+  return hash.digest('hex');
+}
