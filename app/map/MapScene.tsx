@@ -7,6 +7,7 @@ import { paletteOf, schemeOf, type MapColours } from './map-colours.ts';
 import { toTexels, type MapRaster } from './map-raster.ts';
 import { symbolSize, type MapFoothold } from './map-symbols.ts';
 import { toScreen, type MapSize, type MapView } from './map-view.ts';
+import { useMapColours } from './use-map-colours.ts';
 import { RasterTiles } from './raster-tiles.ts';
 import { SymbolLayer } from './symbol-layer.ts';
 
@@ -22,7 +23,6 @@ export interface MapSceneProps {
   readonly view: MapView;
   readonly size: MapSize;
   readonly pixelRatio: number;
-  readonly colours: MapColours;
   /** The graphics context is gone; nothing is drawn until the scene is made anew. */
   readonly onLost: () => void;
 }
@@ -30,6 +30,7 @@ export interface MapSceneProps {
 /** The painted part of the map: a Pixi scene that draws when something changed, and rests otherwise. */
 export function MapScene(props: MapSceneProps) {
   const { pixelRatio, size, onLost } = props;
+  const colours = useMapColours();
   // Pixi is made asynchronously, and its children may be asked for before it is there.
   const [ready, setReady] = useState(false);
   const lost = useRef(onLost);
@@ -59,7 +60,7 @@ export function MapScene(props: MapSceneProps) {
       height={size.height}
       onInit={begin}
     >
-      {ready && <Scene {...props} />}
+      {ready && <Scene {...props} colours={colours} />}
     </Application>
   );
 }
@@ -69,7 +70,7 @@ interface Layers {
   readonly symbols: SymbolLayer;
 }
 
-function Scene(props: MapSceneProps) {
+function Scene(props: MapSceneProps & { readonly colours: MapColours }) {
   const { grid, raster, ground, footholds, hidden, view, size, pixelRatio, colours } = props;
   const { app } = useApplication();
   const [layers, setLayers] = useState<Layers>();

@@ -1,14 +1,11 @@
-import { useId, useMemo, useRef, useState } from 'react';
+import { lazy, Suspense, useId, useMemo, useRef, useState } from 'react';
 import { classNames } from '#app/lib/class-names.ts';
-import { useTheme } from '#app/lib/use-theme.ts';
 import { cellAt, cellCentre, cellIndex } from '#sim-core/grid/grid.ts';
 import { MapControls, MapReading, MapUnavailable } from './MapFurniture.tsx';
 import { MapEdge } from './MapEdge.tsx';
 import { MapFrameContext } from './map-context.ts';
 import { Crosshair, MovingFlag, SelectionRing } from './MapMarks.tsx';
 import { MapLegend } from './MapLegend.tsx';
-import { MapScene } from './MapScene.tsx';
-import { readMapColours } from './map-colours.ts';
 import { describeCell } from './map-raster.ts';
 import type { MapFoothold } from './map-symbols.ts';
 import { clampView, startView, toScreen, wholeView, zoomAt, type MapSize, type MapView } from './map-view.ts';
@@ -16,6 +13,9 @@ import type { SiteMapProps } from './site-map-props.ts';
 import { useBoxSize } from './use-box-size.ts';
 import { useGraphics } from './use-graphics.ts';
 import { useMapActions } from './use-map-actions.ts';
+
+/** Pixi comes when a map is painted: other pages, and browsers that cannot paint, do without it. */
+const MapScene = lazy(() => import('./MapScene.tsx').then((m) => ({ default: m.MapScene })));
 
 const noFootholds: readonly MapFoothold[] = [];
 const compactBelow = 560;
@@ -27,7 +27,6 @@ export function SiteMap(props: SiteMapProps) {
   const box = useRef<HTMLDivElement>(null);
   const surface = useRef<HTMLDivElement>(null);
   const room = useBoxSize(box);
-  const { theme } = useTheme();
   const graphics = useGraphics();
   const [own, setOwn] = useState<MapView>();
   const help = useId();
@@ -44,11 +43,6 @@ export function SiteMap(props: SiteMapProps) {
   const act = useMapActions({ ...props, footholds, surface, view, size, show });
   const { hovered, crosshair, moving, keyed } = act;
 
-  // The theme is what makes the computed colours change.
-  const colours = useMemo(
-    () => (room && theme ? readMapColours(document.documentElement) : undefined),
-    [room, theme],
-  );
   const read = crosshair ?? (hovered && cellAt(grid, hovered.x, hovered.y));
   const centre = read && cellCentre(grid, read.column, read.row);
   const reading = read && describeCell(raster, ground, cellIndex(grid, read.column, read.row));
@@ -69,14 +63,16 @@ export function SiteMap(props: SiteMapProps) {
 
   return (
     <div ref={box} className={classNames('relative overflow-hidden bg-standing', props.className)}>
-      {room && view && colours && graphics.ready && (
-        <MapScene
-          key={graphics.generation}
-          {...{ grid, raster, ground, footholds, view, colours }}
-          {...room}
-          hidden={moving?.id}
-          onLost={graphics.lose}
-        />
+      {room && view && graphics.ready && (
+        <Suspense>
+          <MapScene
+            key={graphics.generation}
+            {...{ grid, raster, ground, footholds, view }}
+            {...room}
+            hidden={moving?.id}
+            onLost={graphics.lose}
+          />
+        </Suspense>
       )}
       <div
         ref={surface}

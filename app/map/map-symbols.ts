@@ -10,6 +10,8 @@ export interface MapFoothold {
   readonly kind: 'surveyed' | 'planned';
   /** year of a planned one */
   readonly year?: number;
+  /** not there yet in the year shown: drawn faint */
+  readonly faint?: boolean;
   /** radius of the refuge, m: drawn around the selected one */
   readonly radius?: number;
   /** what it is called, such as `Mound 17` */

@@ -4,6 +4,8 @@ import type { MapColours } from './map-colours.ts';
 import type { MapFoothold } from './map-symbols.ts';
 
 const side = 32;
+/** of what is not there yet: still to be seen on every ramp */
+const faintness = 0.45;
 const kinds = ['surveyed', 'planned'] as const;
 type Kind = (typeof kinds)[number];
 /** The point on the ground inside its square of the sheet, px. */
@@ -74,8 +76,9 @@ export class SymbolLayer {
       .filter((f) => f.id !== hidden && cellAt(grid, f.x, f.y))
       .sort((a, b) => (a.kind === b.kind ? b.y - a.y : a.kind === 'surveyed' ? -1 : 1));
     this.#particles = inOrder.map(
-      ({ kind, x, y }) =>
+      ({ kind, x, y, faint }) =>
         new Particle({
+          alpha: faint ? faintness : 1,
           texture: textures[kind],
           x: (x - grid.originX) / grid.cellSize,
           y: (grid.originY - y) / grid.cellSize,

@@ -1,4 +1,4 @@
-import { useEffect, useState, type KeyboardEvent, type RefObject } from 'react';
+import { useEffect, useRef, useState, type KeyboardEvent, type RefObject } from 'react';
 import { cellAt, cellCentre, type Grid } from '#sim-core/grid/grid.ts';
 import { arrowMove, crosshairStride, movedCell, type MapCell } from './map-keys.ts';
 import { footholdAt, type MapFoothold } from './map-symbols.ts';
@@ -43,6 +43,7 @@ export function useMapActions(input: MapActionsInput) {
   const [hovered, setHovered] = useState<{ x: number; y: number }>();
   const [crosshair, setCrosshair] = useState<MapCell>();
   const [moving, setMoving] = useState<{ id: string; x: number; y: number }>();
+  const grabbedId = useRef<string>(undefined);
   const selected = footholds.find((f) => f.id === selectedId);
   const movable = (f: MapFoothold | undefined) => (onMove && f?.kind === 'planned' ? f : undefined);
 
@@ -79,14 +80,14 @@ export function useMapActions(input: MapActionsInput) {
     doubleClick: (at, out) => {
       if (view && input.tool !== 'place' && !hit(at)) show(zoomAt(view, grid, size, at, out ? 0.5 : 2));
     },
-    grab: (at) => movable(hit(at)) !== undefined,
+    grab: (at) => {
+      grabbedId.current = movable(hit(at))?.id;
+      return grabbedId.current !== undefined;
+    },
     drag: (at) => {
       const ground = groundAt(at);
-      if (!ground) return;
-      setMoving((old) => {
-        const id = old?.id ?? movable(hit(at))?.id;
-        return id === undefined ? old : { id, ...ground };
-      });
+      const id = grabbedId.current;
+      if (ground && id !== undefined) setMoving({ id, ...ground });
     },
     drop: (at) => {
       const ground = at && groundAt(at);
@@ -116,6 +117,7 @@ export function useMapActions(input: MapActionsInput) {
       const cells = arrowMove(event.key, event.shiftKey ? 10 : 1) ?? [0, 0];
       const place = placeAt(grid, own.x + cells[0] * grid.cellSize, own.y - cells[1] * grid.cellSize);
       if (place) {
+        setCrosshair(undefined);
         onMove?.(own.id, place);
         lookAt(place.x, place.y);
       }
@@ -134,6 +136,7 @@ export function useMapActions(input: MapActionsInput) {
     const at = footholds.findIndex((f) => f.id === selectedId);
     const from = at === -1 && step < 0 ? 0 : at;
     const found = footholds[(from + step + footholds.length) % footholds.length];
+    setCrosshair(undefined);
     onSelect?.(found.id);
     lookAt(found.x, found.y);
   };

@@ -231,10 +231,11 @@ function Notes({ scale, pins, marks, heading, year: shown }: YearlinePlotProps) 
   // A label must stand clear of the flags after it, then of the labels before it.
   const clear = flags.filter((p) => !flags.some((f) => f.x > p.x && f.x - p.x < p.label.length * 6.6));
   const pinWords = compact ? [] : labelsThatFit(clear, 0, right);
-  const headingEnd = left + heading.length * 6.2;
+  // Marks matter more than the heading, which is also said in the legend.
+  const crowded = ticks.some((t) => t.x < left + heading.length * 6.2);
   return (
     <>
-      {!compact && (
+      {!compact && !crowded && (
         <text x={left} y={top - 6} className={note}>
           {heading}
         </text>
@@ -242,7 +243,7 @@ function Notes({ scale, pins, marks, heading, year: shown }: YearlinePlotProps) 
       {ticks.map((m) => (
         <path key={`${m.year} ${m.label}`} d={`M${scale.x(m.year)} ${top - 8}V${scale.y(1)}`} stroke={ink} />
       ))}
-      {labelsThatFit(compact ? [] : ticks, headingEnd, scale.width).map((m) => (
+      {labelsThatFit(compact ? [] : ticks, 0, scale.width).map((m) => (
         <text
           key={`${m.year} ${m.label}`}
           x={m.x}

@@ -1,3 +1,4 @@
+// @vitest-environment node
 import { describe, expect, it } from 'vitest';
 import type { SeriesRow } from '#sim-core/spec/run-result.ts';
 import { yearRecords } from './year-records.ts';

@@ -1,3 +1,4 @@
+// @vitest-environment node
 import { describe, expect, it } from 'vitest';
 import { labelledYears, labelsThatFit, yearlineScale } from './yearline-scale.ts';
 
