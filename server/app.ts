@@ -33,8 +33,11 @@ const securityHeaders = (publicUrl: string) => {
   });
 };
 
-/** The whole product behind one address: the API, and the client where it is built. */
-export function createApp(services: Services): Express {
+/**
+ * The whole product behind one address: the API, and the client where it is built.
+ * @param clientFolder of the built client, where it is not the project's own
+ */
+export function createApp(services: Services, clientFolder?: string): Express {
   const { config, log } = services;
   const app = express();
   app.set('trust proxy', config.trustProxy);
@@ -43,7 +46,7 @@ export function createApp(services: Services): Express {
   app.use('/api', sameOrigin(config.publicUrl));
   mountRoutes(app, allRoutes(services), services);
   app.use('/api', nothingHere);
-  app.use(clientPages());
+  app.use(clientPages(clientFolder));
   app.use(problemWriter);
   return app;
 }

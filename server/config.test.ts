@@ -98,7 +98,15 @@ describe('the configuration', () => {
     expect(named).toEqual(
       [
         ...['ADMIN_EMAIL', 'ADMIN_PASSWORD', 'ADMIN_TEAM', 'DATA_DIR', 'DEMO', 'HOST', 'LOG_LEVEL'],
-        ...['MAIL_FROM', 'PORT', 'PUBLIC_URL', 'SESSION_SECRET', 'SMTP_URL', 'TRUST_PROXY', 'UPLOAD_LIMIT_MB'],
+        ...[
+          'MAIL_FROM',
+          'PORT',
+          'PUBLIC_URL',
+          'SESSION_SECRET',
+          'SMTP_URL',
+          'TRUST_PROXY',
+          'UPLOAD_LIMIT_MB',
+        ],
       ].sort(),
     );
   });

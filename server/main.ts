@@ -1,6 +1,7 @@
 import { existsSync } from 'node:fs';
 import { createApp } from './app.ts';
 import { ConfigError, readConfig } from './config.ts';
+import { loadDemo } from './demo/load-demo.ts';
 import { prepareFirstStart } from './first-start.ts';
 import { openDemoAccounts } from './people/session-view.repository.ts';
 import { createServices, type Services } from './services.ts';
@@ -22,7 +23,8 @@ async function main(): Promise<void> {
   if (existsSync('.env')) process.loadEnvFile('.env');
   const config = readConfig(process.env);
   const services = await createServices(config);
-  const { setupLink } = await prepareFirstStart(services);
+  const { demo, setupLink } = await prepareFirstStart(services);
+  if (demo) await loadDemo(services);
   const server = createApp(services).listen(config.port, config.host);
   await new Promise<void>((resolve, reject) => {
     server.once('listening', resolve).once('error', reject);

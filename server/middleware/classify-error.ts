@@ -1,6 +1,6 @@
 import type { z } from 'zod';
 import { problemCodes, type ProblemCode } from '#contract/problem.ts';
-import { fieldProblem, ProblemError } from './problem-error.ts';
+import { fieldProblem, notFound, ProblemError } from './problem-error.ts';
 
 const tooLarge = (detail: string) => new ProblemError('too-large', detail);
 
@@ -49,7 +49,7 @@ const isCode = (code: unknown): code is ProblemCode =>
 export function classifyError(error: unknown): ProblemError {
   if (error instanceof ProblemError) return error;
   if (!(error instanceof Error)) return internal();
-  const { code, field, type, found, expected, remedy } = error as Error & Record<string, unknown>;
+  const { code, field, type, status, found, expected, remedy } = error as Error & Record<string, unknown>;
   if (error.name === 'MulterError' && typeof code === 'string')
     return problemOfUpload(code, typeof field === 'string' ? field : '');
   // A refused raster: rasters/ is plain library code, so its errors are known by their parts.
@@ -58,7 +58,8 @@ export function classifyError(error: unknown): ProblemError {
   if (typeof type === 'string') return problemOfBody(type) ?? internal();
   if (error instanceof URIError)
     return new ProblemError('invalid-request', 'The address is not well formed.');
-  return internal();
+  // A file of the client that is missing, as Express says it.
+  return status === 404 ? notFound() : internal();
 }
 
 const internal = () =>

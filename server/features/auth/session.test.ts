@@ -38,6 +38,18 @@ describe('sign-in', () => {
     expect(reply.headers['set-cookie'][0]).toMatch(/; Path=\/; .*HttpOnly; SameSite=Lax$/);
   });
 
+  it('gives a cookie for https alone where the product is served so', async () => {
+    const secure = await testServer({ publicUrl: 'https://shore.example', trustProxy: 1 });
+    const { email } = await makePerson(secure);
+    const reply = await secure.request
+      .post('/api/session')
+      .set('X-Forwarded-Proto', 'https')
+      .send({ email, password: testPassword })
+      .expect(200);
+    expect(reply.headers['set-cookie'][0]).toMatch(/; Secure;/);
+    await secure.close();
+  });
+
   it('answers a wrong password and an unknown address with the same words', async () => {
     const wrong = await signIn(person.email, 'not the password').expect(401);
     const unknown = await signIn('nobody@people.example', 'not the password').expect(401);
