@@ -36,6 +36,9 @@ const sitePages: RouteObject[] = [
       { path: 'ground', ...page(() => import('./site/ground-page.tsx')) },
       { path: 'plant', ...page(() => import('./site/plant-page.tsx')) },
       { path: 'outlook', ...page(() => import('./site/outlook-page.tsx')) },
+      { path: 'options', ...page(() => import('./site/options-page.tsx')) },
+      { path: 'runs', ...page(() => import('./site/runs-page.tsx')) },
+      { path: 'runs/:runId', ...page(() => import('./site/run-page.tsx')) },
     ],
   },
 ];

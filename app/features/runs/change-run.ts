@@ -28,8 +28,7 @@ export const stopRunMutation = (queryClient: QueryClient, runId: string) =>
 
 export const deleteRunMutation = (queryClient: QueryClient) =>
   mutationOptions({
-    mutationFn: (run: Pick<Run, 'id' | 'siteId'>) =>
-      callEndpoint(deleteRun, { params: { runId: run.id } }),
+    mutationFn: (run: Pick<Run, 'id' | 'siteId'>) => callEndpoint(deleteRun, { params: { runId: run.id } }),
     onSuccess: (_, run) => {
       runFrames.drop(run.id);
       forgetRun(queryClient, run);

@@ -64,6 +64,17 @@ describe('createFrameCache', () => {
     expect(cache.peek('r', 1)).toBeDefined();
   });
 
+  it('reads one cell through the years at hand', () => {
+    const cache = createFrameCache(() => Promise.reject(new Error('not asked for')), 1000);
+    cache.put('r', 2028, Uint8Array.of(1, 2));
+    cache.put('r', 2026, Uint8Array.of(3, 4));
+    cache.put('s', 2027, Uint8Array.of(5, 6));
+    expect(cache.history('r', 2026, 2030, 1)).toEqual([
+      { year: 2026, byte: 4 },
+      { year: 2028, byte: 2 },
+    ]);
+  });
+
   it('forgets a run that was deleted', () => {
     const cache = createFrameCache(() => Promise.reject(new Error('not asked for')), 1000);
     cache.put('r', 1, frame(1));

@@ -10,8 +10,9 @@ export interface FrameCache {
   prefetch(runId: string, years: readonly number[]): void;
   /** how many frames of a size the cache holds: what is worth fetching ahead */
   capacity(cells: number): number;
+  /** one cell through the years whose frames are at hand, ascending; none of them counts as shown by this */
+  history(runId: string, first: number, last: number, cell: number): { year: number; byte: number }[];
   drop(runId: string): void;
-  clear(): void;
 }
 
 export type FetchFrame = (runId: string, year: number) => Promise<Uint8Array>;
@@ -87,13 +88,16 @@ export function createFrameCache(fetchFrame: FetchFrame, budget: number): FrameC
       void fetchAhead(runId, years, ++wave);
     },
     capacity: (cells) => Math.max(fewest, Math.floor(budget / cells)),
+    history: (runId, first, last, cell) => {
+      const found: { year: number; byte: number }[] = [];
+      for (let year = first; year <= last; year++) {
+        const byte = kept.get(keyOf(runId, year))?.[cell];
+        if (byte !== undefined) found.push({ year, byte });
+      }
+      return found;
+    },
     drop: (runId) => {
       for (const key of [...kept.keys()]) if (key.startsWith(`${runId}/`)) forget(key);
-    },
-    clear: () => {
-      kept.clear();
-      bytes = 0;
-      wave++;
     },
   };
 }

@@ -1,0 +1,80 @@
+import type { Action, Area, Mound } from '#sim-core/spec/run-spec.ts';
+import { formatCounted, formatLength, formatShare } from '#app/lib/formats.ts';
+
+const kinds: Record<Action['kind'], [one: string, many: string]> = {
+  mound: ['mound', 'mounds'],
+  planting: ['planting', 'plantings'],
+  fence: ['fence', 'fences'],
+  loss: ['one-off loss', 'one-off losses'],
+};
+
+/** `22 mounds in 2027`, one entry for each kind and year, in order of years. */
+export function worksByYear(
+  works: readonly Action[],
+): { year: number; kind: Action['kind']; count: number }[] {
+  const groups = new Map<string, { year: number; kind: Action['kind']; count: number }>();
+  for (const { kind, year } of works) {
+    const group = groups.get(`${year}/${kind}`) ?? { year, kind, count: 0 };
+    groups.set(`${year}/${kind}`, { ...group, count: group.count + 1 });
+  }
+  return [...groups.values()].sort((a, b) => a.year - b.year || a.kind.localeCompare(b.kind));
+}
+
+export const countOf = (kind: Action['kind'], count: number): string => formatCounted(count, ...kinds[kind]);
+
+/** Works in one line: `40 mounds in 2027 and 2028; 3 plantings in 2027`. */
+export function worksInWords(works: readonly Action[]): string {
+  if (works.length === 0) return 'nothing drawn yet';
+  return [...new Set(works.map((work) => work.kind))]
+    .map((kind) => {
+      const mine = works.filter((work) => work.kind === kind);
+      const years = [...new Set(mine.map((work) => work.year))].sort((a, b) => a - b);
+      const when =
+        years.length <= 2 ? `in ${years.join(' and ')}` : `from ${years[0]} to ${years[years.length - 1]}`;
+      return `${countOf(kind, mine.length)} ${when}`;
+    })
+    .join('; ');
+}
+
+/** `3 m across, full strength, fading over 1 m` */
+export function moundInWords({ radius, strength, halo }: Mound): string {
+  const parts = [
+    `${formatLength(2 * radius)} across`,
+    strength === 1 ? 'full strength' : `${formatShare(strength)} strength`,
+    halo > 0 && `fading over ${formatLength(halo)}`,
+  ];
+  return parts.filter(Boolean).join(', ');
+}
+
+/** What one of the works is, where it is no mound. */
+export function workInWords(action: Exclude<Action, Mound>): string {
+  const size = areaInWords(action.area);
+  switch (action.kind) {
+    case 'planting':
+      return `planting to ${formatShare(action.cover)} cover, ${size}`;
+    case 'fence':
+      return `fence at ${formatShare(action.strength)}, ${size}${action.until === undefined ? '' : `, until ${action.until}`}`;
+    case 'loss':
+      return `loss of ${formatShare(action.share)}, ${size}`;
+  }
+}
+
+const areaInWords = (area: Area): string =>
+  area.shape === 'disc' ? `${formatLength(2 * area.radius)} across` : `outline of ${area.ring.length} points`;
+
+/** Where one of the works stands: its centre, or the middle of its outline, m. */
+export function placeOf(action: Action): { x: number; y: number } {
+  if (action.kind === 'mound') return action;
+  if (action.area.shape === 'disc') return action.area;
+  const { ring } = action.area;
+  const mean = (of: 0 | 1) => ring.reduce((sum, point) => sum + point[of], 0) / ring.length;
+  return { x: mean(0), y: mean(1) };
+}
+
+const coordinate = new Intl.NumberFormat('en-GB', { maximumFractionDigits: 1 });
+
+/** `E 412 355 N 5 301 925`, to the decimetre where they are no whole metres. */
+export function placeInWords({ x, y }: { x: number; y: number }): string {
+  const say = (metres: number) => coordinate.format(metres).replaceAll(',', '\u2009');
+  return `E ${say(x)} N ${say(y)}`;
+}

@@ -1,0 +1,44 @@
+import { exportClosing, exportFrame, exportSeries, type Run } from '#contract/runs.ts';
+import { WordAnchor, WordButton } from '#app/components/word-button.tsx';
+import { endpointUrl } from '#app/lib/api-client.ts';
+
+/** What can be taken away from a run. */
+export function RunExports({ run, year }: { run: Run; year: number | undefined }) {
+  const params = { runId: run.id };
+  return (
+    <section aria-label="Take away" className="border-t border-rule py-2">
+      <h2 className="text-body font-bold">Take away</h2>
+      <div className="flex flex-wrap gap-x-4">
+        {run.result && (
+          <WordAnchor href={endpointUrl(exportSeries, { params })} download>
+            Series, CSV
+          </WordAnchor>
+        )}
+        {year !== undefined && (
+          <WordAnchor href={endpointUrl(exportFrame, { params: { ...params, year } })} download>
+            Cover in {year}, GeoTIFF
+          </WordAnchor>
+        )}
+        {run.hasClosing && (
+          <WordAnchor href={endpointUrl(exportClosing, { params })} download>
+            Closing years, GeoTIFF
+          </WordAnchor>
+        )}
+        <WordButton lined onClick={() => downloadSpec(run)}>
+          RunSpec, JSON
+        </WordButton>
+      </div>
+    </section>
+  );
+}
+
+/** The spec is at hand already, so it is written to a file without asking the server. */
+function downloadSpec(run: Run): void {
+  const json = JSON.stringify(run.spec, null, 2);
+  const address = URL.createObjectURL(new Blob([json], { type: 'application/json' }));
+  const link = document.createElement('a');
+  link.href = address;
+  link.download = `${run.name.replace(/[^\p{L}\p{N}]+/gu, '-').toLowerCase()}-spec.json`;
+  link.click();
+  setTimeout(() => URL.revokeObjectURL(address), 10_000);
+}

@@ -1,0 +1,112 @@
+import type { ReactNode } from 'react';
+import type { Run } from '#contract/runs.ts';
+import type { RunResult, SeriesRow } from '#sim-core/spec/run-result.ts';
+import { formatArea, formatDateTime, formatNumber, formatShare } from '#app/lib/formats.ts';
+import type { YearRecord } from '#app/yearline/year-records.ts';
+import { lossesIn } from './run-series.ts';
+import { modeWords } from './run-words.ts';
+
+/** What the playhead's year holds, in figures and words. */
+export function YearFacts(props: {
+  year: number;
+  record: YearRecord | undefined;
+  compare: { label: string; record: YearRecord } | undefined;
+  rows: readonly SeriesRow[];
+  /** ΣC* × cell area, m², once it is known */
+  referenceArea: number | undefined;
+}) {
+  const { year, record, compare } = props;
+  if (!record) return null;
+  const losses = lossesIn(props.rows, year);
+  const lost = losses && losses.drought + losses.background + losses.events;
+  return (
+    <section aria-label={`The year ${year}`} className="border-t border-rule py-2">
+      <div className="flex items-baseline justify-between">
+        <h2 className="text-body font-bold">{year}</h2>
+        <span className="text-note text-ink-2">under the playhead</span>
+      </div>
+      <div className="grid grid-cols-2 gap-x-4">
+        <Figure value={formatShare(record.coverShare)} words="of the reference covered" />
+        <Figure value={formatArea(record.closedArea)} words="closed by then" />
+      </div>
+      <p className="mt-1 text-note text-ink-2">
+        {formatArea(record.coveredArea)} covered
+        {props.referenceArea !== undefined &&
+          ` of ${formatArea(props.referenceArea)} that the ground can carry`}
+        .{compare && ` ${compare.label}: ${formatShare(compare.record.coverShare)}.`}
+        {losses !== undefined &&
+          lost !== undefined &&
+          ` Lost in ${year}: ${formatArea(lost)}, ${formatArea(losses.drought)} of it to drought${
+            losses.events > 0 ? ` and ${formatArea(losses.events)} to one-off losses` : ''
+          }.`}
+      </p>
+    </section>
+  );
+}
+
+function Figure({ value, words }: { value: string; words: string }) {
+  return (
+    <div>
+      <div className="text-figure font-light tracking-[-0.02em]">{value}</div>
+      <div className="text-note leading-tight">{words}</div>
+    </div>
+  );
+}
+
+/** What decided the run, and what it amounts to: enough for somebody else to run it again. */
+export function RunFacts({ run, result }: { run: Run; result: RunResult | undefined }) {
+  const { spec } = run;
+  const mode = modeWords[spec.mode];
+  return (
+    <section aria-label="What decided it" className="border-t border-rule py-2">
+      <h2 className="mb-1 text-body font-bold">What decided it</h2>
+      <dl className="grid grid-cols-[92px_minmax(0,1fr)] gap-x-3 gap-y-1 text-note">
+        <Fact name="option">{run.optionName}</Fact>
+        <Fact name="seed">
+          <span className="font-mono">{spec.seed}</span>
+        </Fact>
+        <Fact name="chance">
+          {mode.name}
+          {spec.mode === 'mean-field' && ', so the seed changes nothing'}
+        </Fact>
+        <Fact name="years">
+          {spec.surveyYear} to {spec.surveyYear + spec.years}, {spec.stepsPerYear} step
+          {spec.stepsPerYear === 1 ? '' : 's'} a year
+        </Fact>
+        {result && (
+          <Fact name="front">
+            {formatNumber(result.kernel.frontSpeed)} m a year,{' '}
+            {formatNumber(result.kernel.diagonalFrontSpeed)} along the diagonal
+          </Fact>
+        )}
+        {result && <Fact name="engine">{result.engineVersion}</Fact>}
+        {run.digest !== null && (
+          <Fact name="digest">
+            <span className="font-mono break-all">{run.digest}</span>
+          </Fact>
+        )}
+        {run.layers.map((layer) => (
+          <Fact key={layer.hash} name={layer.part}>
+            <span className="break-all">{layer.fileName}</span>
+            {!layer.current && ', replaced on the site since'}
+            <span className="block font-mono text-axis text-ink-2" title={layer.hash}>
+              SHA-256 {layer.hash.slice(0, 16)}…
+            </span>
+          </Fact>
+        ))}
+        <Fact name="started">
+          {formatDateTime(run.startedAt)}, {run.startedBy}
+        </Fact>
+      </dl>
+    </section>
+  );
+}
+
+function Fact({ name, children }: { name: string; children: ReactNode }) {
+  return (
+    <>
+      <dt className="text-ink-2">{name}</dt>
+      <dd className="min-w-0">{children}</dd>
+    </>
+  );
+}

@@ -1,0 +1,183 @@
+import { useState } from 'react';
+import type { Option, Site } from '#contract/sites.ts';
+import { Blank, BlankSelect } from '#app/components/blank.tsx';
+import { Button } from '#app/components/button.tsx';
+import { ProblemNotice } from '#app/components/notice.tsx';
+import { WordButton, WordLink } from '#app/components/word-button.tsx';
+import { WordChoice } from '#app/components/word-choice.tsx';
+import { formatCount, formatDuration } from '#app/lib/formats.ts';
+import type { Mode, RunSpec } from '#sim-core/spec/run-spec.ts';
+import { composeRunSpec, type CompositionProblem, type MendingPlace } from './compose-run-spec.ts';
+import { randomSeed } from './random-seed.ts';
+import { estimateSeconds } from './run-pace.ts';
+import { modeWords } from './run-words.ts';
+
+export interface StartedRun {
+  name: string;
+  optionId: string;
+  spec: RunSpec;
+}
+
+/** A run as a sentence with blanks; what stands in its way is said where it stands, with the page that mends it. */
+export function StartForm(props: {
+  site: Site;
+  options: readonly Option[];
+  /** the option that the page was asked to run */
+  startId: string | undefined;
+  /** names that are taken, so that a new one can be told apart */
+  names: readonly string[];
+  busy: boolean;
+  error: unknown;
+  onStart: (run: StartedRun) => void;
+}) {
+  const { site, options, names } = props;
+  const [optionId, setOptionId] = useState(
+    options.find(({ id }) => id === props.startId)?.id ?? options[0].id,
+  );
+  const option = options.find(({ id }) => id === optionId) ?? options[0];
+  const [typed, setTyped] = useState<string>();
+  const [seed, setSeed] = useState(() => randomSeed());
+  const [mode, setMode] = useState<Mode>('counts');
+  const name = typed ?? freeName(option.name, names);
+  const { surveyYear, years, stepsPerYear } = site.outlook;
+  const composed = composeRunSpec(site, option, { mode, seed });
+  const problems = composed.problems ?? [];
+  const nameProblem = name.trim() === '' ? 'Give the run a name.' : undefined;
+  const ownProblems = problems.filter((problem) => problem.mend === 'form');
+  const cells = site.grid.width * site.grid.height;
+  const seconds = estimateSeconds(mode, cells, years * stepsPerYear);
+  const start = () => {
+    if (composed.spec && !nameProblem)
+      props.onStart({ name: name.trim(), optionId: option.id, spec: composed.spec });
+  };
+  return (
+    <form
+      aria-label="Start a run"
+      onSubmit={(event) => {
+        event.preventDefault();
+        start();
+      }}
+    >
+      <p className="flex flex-wrap items-baseline gap-x-1.5 gap-y-2 text-lead leading-loose">
+        <span>Run</span>
+        <BlankSelect
+          label="Option to run"
+          className="max-w-full text-[15px]"
+          value={option.id}
+          onChange={(event) => setOptionId(event.target.value)}
+        >
+          {options.map(({ id, name: words }) => (
+            <option key={id} value={id}>
+              {words}
+            </option>
+          ))}
+        </BlankSelect>
+        <span>from the survey of {surveyYear} to</span>
+        <b>{surveyYear + years}</b>
+        <span>with the seed</span>
+        <Blank
+          label="Seed, from which every draw of chance follows"
+          error={ownProblems.find(({ field }) => field === 'seed')?.message}
+          className="max-w-full"
+          value={seed}
+          characters={Math.max(8, seed.length)}
+          maxLength={200}
+          onChange={(event) => setSeed(event.target.value)}
+        />
+        <WordButton lined onClick={() => setSeed(randomSeed())}>
+          another seed
+        </WordButton>
+        <span>and keep it as</span>
+        <Blank
+          label="Name of the run"
+          error={nameProblem}
+          className="max-w-full font-sans"
+          value={name}
+          characters={Math.min(44, Math.max(12, name.length))}
+          maxLength={120}
+          onChange={(event) => setTyped(event.target.value)}
+        />
+      </p>
+      <div className="mt-2 flex flex-wrap items-baseline gap-x-5 gap-y-1">
+        <WordChoice
+          label="Chance"
+          showLabel
+          options={[
+            { key: 'counts', label: modeWords.counts.name },
+            { key: 'mean-field', label: modeWords['mean-field'].name },
+          ]}
+          value={mode}
+          onChange={setMode}
+        />
+        <span className="text-note text-ink-2">{modeWords[mode].means}</span>
+      </div>
+      <Problems problems={problems} nameProblem={nameProblem} site={site} optionId={option.id} />
+      {props.error ? (
+        <ProblemNotice error={props.error} title="The run was not started." className="mt-3" />
+      ) : null}
+      <div className="mt-3 flex flex-wrap items-center gap-x-4 gap-y-1">
+        <Button
+          kind="primary"
+          type="submit"
+          busy={props.busy}
+          busyLabel="Starting"
+          disabled={composed.spec === undefined || nameProblem !== undefined}
+        >
+          Start the run
+        </Button>
+        <span className="text-note text-ink-2">
+          {formatCount(cells)} cells over {years * stepsPerYear} {stepsPerYear === 1 ? 'years' : 'steps'}:
+          about {formatDuration(seconds)} on this browser. You can leave the page, but not close the tab.
+        </span>
+      </div>
+    </form>
+  );
+}
+
+const places: Record<Exclude<MendingPlace, 'form'>, string> = {
+  ground: 'Mend it on Ground',
+  plant: 'Mend it on Plant',
+  outlook: 'Mend it on Outlook',
+  options: 'Mend it on Options',
+};
+
+function Problems(props: {
+  problems: readonly CompositionProblem[];
+  nameProblem: string | undefined;
+  site: Site;
+  optionId: string;
+}) {
+  const { problems, nameProblem, site } = props;
+  if (problems.length === 0 && nameProblem === undefined) return null;
+  return (
+    <ul role="alert" className="mt-3 border-l-[6px] border-danger">
+      {nameProblem !== undefined && <li className="py-1 pl-3.5 text-[13.5px]">{nameProblem}</li>}
+      {problems.slice(0, 8).map(({ field, message, mend }) => (
+        <li
+          key={field}
+          className="flex flex-wrap items-baseline gap-x-4 border-t border-rule-2 py-1 pl-3.5 text-[13.5px] first:border-0"
+        >
+          <span>{message}</span>
+          {mend !== 'form' && (
+            <WordLink
+              to={`/sites/${site.id}/${mend}${mend === 'options' ? `?option=${props.optionId}` : ''}`}
+            >
+              {places[mend]}
+            </WordLink>
+          )}
+        </li>
+      ))}
+      {problems.length > 8 && (
+        <li className="py-1 pl-3.5 text-note text-ink-2">and {problems.length - 8} more</li>
+      )}
+    </ul>
+  );
+}
+
+/** `Wait, run 2`: the first number that is free. */
+function freeName(option: string, taken: readonly string[]): string {
+  for (let n = 1; ; n++) {
+    const name = `${option.slice(0, 100)}, run ${n}`;
+    if (!taken.includes(name)) return name;
+  }
+}

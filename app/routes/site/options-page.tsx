@@ -1,0 +1,59 @@
+import { useQuery } from '@tanstack/react-query';
+import { useState } from 'react';
+import { useSearchParams } from 'react-router-dom';
+import { LoadingLines } from '#app/components/loading-lines.tsx';
+import { ProblemNotice } from '#app/components/notice.tsx';
+import { WordButton } from '#app/components/word-button.tsx';
+import { useGroundRasters } from '#app/features/layers/use-ground-rasters.ts';
+import { optionsQuery } from '#app/features/options/list-options.ts';
+import { startingPen } from '#app/features/options/mound-pen.ts';
+import { OptionBoard } from './option-board.tsx';
+import { SitePage } from './site-page.tsx';
+import { useSite } from './use-site.ts';
+
+/** The map as drawing board: what could be done on the ground, where and when. */
+export function Page() {
+  const { site } = useSite();
+  const options = useQuery(optionsQuery(site.id));
+  const ground = useGroundRasters(site);
+  const [search, setSearch] = useSearchParams();
+  const [pen, setPen] = useState(() => startingPen(site.outlook.surveyYear));
+  const [tool, setTool] = useState<'place' | 'look'>('look');
+
+  if (options.data === undefined)
+    return (
+      <SitePage step="options" map={<div className="size-full" />} margin={<Waiting options={options} />} />
+    );
+  const asked = search.get('option');
+  const option = options.data.find(({ id }) => id === asked) ?? options.data[1] ?? options.data[0];
+  return (
+    <OptionBoard
+      key={option.id}
+      {...{ option, ground, pen, tool }}
+      options={options.data}
+      onPen={setPen}
+      onTool={setTool}
+      onChoose={(id) =>
+        setSearch(
+          (current) => {
+            const next = new URLSearchParams(current);
+            next.set('option', id);
+            return next;
+          },
+          { replace: true },
+        )
+      }
+    />
+  );
+}
+
+function Waiting({ options }: { options: { error: unknown; refetch: () => unknown } }) {
+  if (!options.error) return <LoadingLines label="Fetching the options" lines={4} />;
+  return (
+    <ProblemNotice error={options.error} title="The options could not be fetched.">
+      <WordButton lined onClick={() => void options.refetch()}>
+        Try again
+      </WordButton>
+    </ProblemNotice>
+  );
+}

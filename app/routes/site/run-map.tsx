@@ -1,0 +1,95 @@
+import { useMemo } from 'react';
+import type { Run } from '#contract/runs.ts';
+import { ProblemNotice } from '#app/components/notice.tsx';
+import { FlagSymbol } from '#app/components/symbols.tsx';
+import { WordButton } from '#app/components/word-button.tsx';
+import { placeOf } from '#app/features/options/works-words.ts';
+import type { useFrame } from '#app/features/runs/use-frame.ts';
+import { formatArea, formatShare } from '#app/lib/formats.ts';
+import type { MapRaster } from '#app/map/map-raster.ts';
+import type { MapFoothold } from '#app/map/map-symbols.ts';
+import { SiteMap } from '#app/map/SiteMap.tsx';
+import type { YearRecord } from '#app/yearline/year-records.ts';
+import { useRunCapacity } from './run-ground.ts';
+
+/** A frame of a run, or its closing years, on the ground. */
+export function RunMap(props: {
+  run: Run;
+  show: 'cover' | 'closing';
+  closing: Int16Array | undefined;
+  closingError: unknown;
+  frame: ReturnType<typeof useFrame>;
+  year: number;
+  record: YearRecord | undefined;
+  onHover: (cell: { column: number; row: number } | undefined) => void;
+}) {
+  const { run, show, closing, frame, year, record } = props;
+  const { surveyYear, years } = run;
+  const capacity = useRunCapacity(run);
+  const cover = frame.frame;
+  const raster = useMemo((): MapRaster | undefined => {
+    if (show === 'closing')
+      return closing && { kind: 'closing', values: closing, surveyYear, lastYear: surveyYear + years };
+    return cover && { kind: 'cover', values: cover };
+  }, [show, closing, cover, surveyYear, years]);
+  const footholds = useMemo(
+    () =>
+      run.spec.actions.map((action, i): MapFoothold => ({
+        id: `w${i}`,
+        ...placeOf(action),
+        kind: 'planned',
+        year: action.year,
+        faint: show === 'cover' && action.year > year,
+        radius: action.kind === 'mound' ? action.radius + action.halo : undefined,
+        name: `${action.kind} ${i + 1}`,
+      })),
+    [run.spec.actions, show, year],
+  );
+  const error = show === 'closing' ? props.closingError : frame.error;
+  const waiting = show === 'cover' ? frame.year !== year : !closing;
+  return (
+    <>
+      <SiteMap
+        className="size-full"
+        grid={run.grid}
+        raster={raster}
+        ground={capacity}
+        footholds={footholds}
+        onHover={props.onHover}
+        label={show === 'cover' ? `${run.name}, cover in ${year}` : `${run.name}, closing years`}
+        summary={
+          record &&
+          `In ${year} ${formatShare(record.coverShare)} of the reference is covered and ${formatArea(record.closedArea)} have closed.`
+        }
+        legendTitle={show === 'cover' ? `Cover in ${frame.year ?? year}` : undefined}
+        legend={
+          footholds.length > 0 ? (
+            <span className="flex items-center gap-1.5">
+              <FlagSymbol /> works
+            </span>
+          ) : undefined
+        }
+      />
+      {error ? (
+        <div className="absolute top-10 left-4 max-w-[420px] bg-ground lg:left-6">
+          <ProblemNotice error={error} title="This map could not be fetched.">
+            {show === 'cover' && (
+              <WordButton lined onClick={frame.again}>
+                Try again
+              </WordButton>
+            )}
+          </ProblemNotice>
+        </div>
+      ) : (
+        waiting && (
+          <p
+            role="status"
+            className="busy-ticks absolute top-10 left-4 bg-ground px-3 py-1.5 text-note lg:left-6"
+          >
+            Fetching {show === 'cover' ? year : 'the closing years'}
+          </p>
+        )
+      )}
+    </>
+  );
+}

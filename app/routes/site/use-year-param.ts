@@ -1,0 +1,44 @@
+import { useEffect, useState } from 'react';
+import { useSearchParams } from 'react-router-dom';
+
+const settleAfter = 300;
+
+/**
+ * The year under the playhead, which the address keeps as `?year=`. It is written there once the playhead rests: a
+ * browser refuses an address that changes with every step of a drag.
+ *
+ * @param usual year to show where the address names none that can be shown
+ */
+export function useYearParam(
+  first: number,
+  last: number,
+  usual: number,
+): { year: number; chosen: boolean; setYear: (year: number | undefined) => void } {
+  const [search, setSearch] = useSearchParams();
+  const asked = Number(search.get('year') ?? NaN);
+  const [moved, setMoved] = useState<{ to: number | undefined }>();
+  const wanted = moved ? moved.to : asked;
+
+  useEffect(() => {
+    if (!moved) return undefined;
+    const timer = setTimeout(() => {
+      setSearch(
+        (current) => {
+          const next = new URLSearchParams(current);
+          if (moved.to === undefined) next.delete('year');
+          else next.set('year', String(moved.to));
+          return next;
+        },
+        { replace: true, preventScrollReset: true },
+      );
+    }, settleAfter);
+    return () => clearTimeout(timer);
+  }, [moved, setSearch]);
+
+  const chosen = wanted !== undefined && Number.isInteger(wanted) && wanted >= first && wanted <= last;
+  return {
+    year: chosen ? wanted : Math.min(last, Math.max(first, usual)),
+    chosen,
+    setYear: (to) => setMoved({ to }),
+  };
+}
