@@ -1,4 +1,6 @@
+import type { Grid } from '#sim-core/grid/grid.ts';
 import { fitKernel, RunProblem } from '#sim-core/index.ts';
+import { prepareWorks } from '#sim-core/process/works.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
 import type { RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { Manager } from '#server/database/manager.ts';
@@ -40,13 +42,14 @@ export async function checkLayers(manager: Manager, siteId: string, spec: RunSpe
   return problems;
 }
 
-/** What makes a spec impossible on cells of a size; empty when nothing does. */
-export function checkRates({ rates, stepsPerYear }: RunSpec, cellSize: number): FieldProblem[] {
+/** What makes a spec impossible on a grid, whatever its layers hold; empty when nothing does. */
+export function checkOnGrid({ rates, stepsPerYear, actions }: RunSpec, grid: Grid): FieldProblem[] {
+  const problems = [...prepareWorks(actions, grid).problems];
   try {
-    fitKernel(rates, cellSize, stepsPerYear);
-    return [];
+    fitKernel(rates, grid.cellSize, stepsPerYear);
   } catch (error) {
     if (!(error instanceof RunProblem)) throw error;
-    return error.problems.map(({ field, message }) => ({ field: `spec.${field}`, message }));
+    problems.push(...error.problems);
   }
+  return problems.map(({ field, message }) => ({ field: `spec.${field}`, message }));
 }

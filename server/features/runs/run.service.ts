@@ -8,7 +8,7 @@ import { forgetReplacedLayers } from '#server/database/replaced-layers.ts';
 import { releaseBlobs } from '#server/files/stored-files.ts';
 import { fieldProblem, notFound, ProblemError } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
-import { checkLayers, checkRates, layerHashes } from './check-spec.ts';
+import { checkLayers, checkOnGrid, layerHashes } from './check-spec.ts';
 import { requireRun, runReply } from './run-reply.ts';
 import { deleteRunRows, findOption, findSite, framesOfRun, insertRun, updateRun } from './run.repository.ts';
 
@@ -16,18 +16,20 @@ import { deleteRunRows, findOption, findSite, framesOfRun, insertRun, updateRun 
  * Registers a run on the grid that the site has now. Whoever computes it sends its frames as they come.
  * @throws ProblemError at each field of the spec that makes it impossible on this site
  */
-export function startRun(
+export async function startRun(
   services: Services,
   siteId: string,
   { name, optionId, spec }: { name: string; optionId: string; spec: RunSpec },
   by: string,
 ): Promise<Run> {
+  const site = await findSite(services.dataSource.manager, siteId);
+  if (!site) throw notFound();
+  // A site's grid never changes, so this needs no turn in the queue.
+  const onGrid = checkOnGrid(spec, site);
   return services.write(async (manager) => {
-    const site = await findSite(manager, siteId);
-    if (!site) throw notFound();
     const option = await findOption(manager, siteId, optionId);
     if (!option) throw fieldProblem('optionId', 'This site has no such option; it may have been deleted');
-    const problems = [...(await checkLayers(manager, siteId, spec)), ...checkRates(spec, site.cellSize)];
+    const problems = [...(await checkLayers(manager, siteId, spec)), ...onGrid];
     if (problems.length > 0)
       throw new ProblemError(
         'invalid-request',

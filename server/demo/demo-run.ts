@@ -1,0 +1,75 @@
+import { Readable } from 'node:stream';
+import { valueUnitScale, type Layer, type Option, type Site } from '#contract/sites.ts';
+import { decodeCellValues, encodeCellValues } from '#rasters/cells/cell-values.ts';
+import type { CellValues } from '#sim-core/grid/ground.ts';
+import { buildGround, createRun } from '#sim-core/index.ts';
+import { runSpecSchema, runSpecVersion, type LayerSource, type RunSpec } from '#sim-core/spec/run-spec.ts';
+import { findLayerByHash } from '../features/sites/layer.repository.ts';
+import { putClosing, putFrame } from '../features/runs/run-maps.service.ts';
+import { finishRun, startRun } from '../features/runs/run.service.ts';
+import type { Services } from '../services.ts';
+
+/** The decoded values of a site's layer. */
+export async function layerValues(services: Services, siteId: string, hash: string): Promise<CellValues> {
+  const layer = await findLayerByHash(services.dataSource.manager, siteId, hash);
+  if (!layer) throw new Error(`The demo has lost its layer ${hash}.`);
+  return decodeCellValues(await services.blobs.read(layer.valuesHash)).values;
+}
+
+function specOf(site: Site, option: Option, seed: string): RunSpec {
+  const layerOf = (part: Layer['part']) => site.layers.find((layer) => layer.part === part)!;
+  const { hash, classes } = layerOf('habitat');
+  const classed = (of: 'capacity' | 'vigour'): LayerSource => ({
+    layer: hash,
+    classes: Object.fromEntries((classes ?? []).map((row) => [String(row.value), row[of]])),
+  });
+  const scaled = ({ hash: layer, unit }: Layer): LayerSource => ({ layer, scale: valueUnitScale[unit] });
+  const { surveyYear, years, stepsPerYear, boundary, droughtIndex } = site.outlook;
+  return runSpecSchema.parse({
+    version: runSpecVersion,
+    seed,
+    surveyYear,
+    years,
+    stepsPerYear,
+    boundary,
+    droughtIndex,
+    rates: site.plant.rates,
+    actions: option.works,
+    layers: {
+      capacity: classed('capacity'),
+      vigour: classed('vigour'),
+      cover: scaled(layerOf('cover')),
+      refuge: scaled(layerOf('refuge')),
+    },
+  });
+}
+
+/** Computes a run of an option and stores it as a browser does: started, frame by frame, closing years, finished. */
+export async function runDemoOption(
+  services: Services,
+  site: Site,
+  option: Option,
+  { name, seed, by }: { name: string; seed: string; by: string },
+): Promise<void> {
+  const spec = specOf(site, option, seed);
+  const { grid } = site;
+  const { width, height } = grid;
+  const rasters = new Map<string, { values: CellValues; noData: number | null }>();
+  for (const { hash, noData } of site.layers)
+    rasters.set(hash, { values: await layerValues(services, site.id, hash), noData });
+  const ground = buildGround(spec.layers, width * height, (source) => {
+    if (!('layer' in source)) throw new Error('The demo runs on uploaded layers alone.');
+    return rasters.get(source.layer)!;
+  });
+  const { id } = await startRun(services, site.id, { name, optionId: option.id, spec }, by);
+  const packed = (values: CellValues) => Readable.from([encodeCellValues({ width, height, values })]);
+  const run = createRun({ spec, grid, ground });
+  for (let year = run.survey; ;) {
+    if (year.frame) await putFrame(services, id, year.year, packed(year.frame));
+    const next = run.nextYear();
+    if (!next) break;
+    year = next;
+  }
+  await putClosing(services, id, packed(run.closing()));
+  await finishRun(services, id, run.result());
+}

@@ -1,0 +1,82 @@
+import { Readable } from 'node:stream';
+import type { LayerPart, Option, Site } from '#contract/sites.ts';
+import { demoRasters } from '#rasters/demo/sallow-reach.ts';
+import { createOption, listOptions } from '../features/options/option.service.ts';
+import { addLayer, setLayerClasses } from '../features/sites/layer.service.ts';
+import { listSitesOf } from '../features/sites/site-reply.ts';
+import { createSite, deleteSite, setOutlook, setPlant } from '../features/sites/site.service.ts';
+import { addMember, addPerson, addTeam } from '../people/people.repository.ts';
+import type { Services } from '../services.ts';
+import { demoAccounts } from './demo-accounts.ts';
+import { demoOptions } from './demo-options.ts';
+import { demoHabitatClasses, demoOutlook, demoPlant, demoSiteName, demoTeamName } from './demo-place.ts';
+import { layerValues, runDemoOption } from './demo-run.ts';
+import { anyoneAt, deleteTeam, renameTeam, teamIdsNamed } from './demo.repository.ts';
+
+/** The team's name until everything of it is there: a start that finds it knows that an earlier one was broken off. */
+const unfinishedName = `${demoTeamName} (being made)`;
+const nameOf = (role: string) => demoAccounts.find((account) => account.role === role)!.name;
+
+/**
+ * Loads the invented team, place and runs through the same functions that serve uploads and runs. Its people come last:
+ * once they are there nothing is done any more, and what a start left half made is wiped and made again.
+ */
+export async function loadDemo(services: Services): Promise<void> {
+  const { dataSource, write, clock, passwords, log } = services;
+  const emails = demoAccounts.map((account) => account.email);
+  if (await anyoneAt(dataSource.manager, emails)) return;
+  log.info('loading the demo');
+  for (const teamId of await teamIdsNamed(dataSource.manager, unfinishedName))
+    await wipeTeam(services, teamId);
+
+  const team = await write((manager) => addTeam(manager, unfinishedName, clock()));
+  const site = await makeSite(services, team.id);
+  const options = await makeOptions(services, site);
+  for (const option of options.slice(0, 2))
+    await runDemoOption(services, site, option, {
+      name: `${option.name}, demo`,
+      seed: 'sallow-reach',
+      by: nameOf('modeller'),
+    });
+
+  const passwordHashes = await Promise.all(demoAccounts.map(({ password }) => passwords.hash(password)));
+  await write(async (manager) => {
+    await renameTeam(manager, team.id, demoTeamName);
+    for (const [i, { email, name, role }] of demoAccounts.entries()) {
+      const person = await addPerson(manager, { email, name, passwordHash: passwordHashes[i] }, clock());
+      await addMember(manager, team.id, person.id, role, clock());
+    }
+  });
+}
+
+async function wipeTeam(services: Services, teamId: string): Promise<void> {
+  for (const { id } of await listSitesOf(services.dataSource.manager, teamId)) await deleteSite(services, id);
+  await services.write((manager) => deleteTeam(manager, teamId));
+}
+
+async function makeSite(services: Services, teamId: string): Promise<Site> {
+  const by = nameOf('modeller');
+  const { uploadLimitBytes } = services.config;
+  let site: Site | undefined;
+  for (const { name, fileName, bytes } of demoRasters()) {
+    const part: LayerPart = name;
+    const file = await services.blobs.receive(Readable.from([bytes]), uploadLimitBytes);
+    const raster = { part, file, fileName, by };
+    site = site
+      ? await addLayer(services, site.id, raster)
+      : await createSite(services, { teamId, name: demoSiteName, invented: true, ...raster });
+  }
+  const { id, layers } = site!;
+  const habitat = layers.find((layer) => layer.part === 'habitat')!;
+  await setLayerClasses(services, id, habitat.id, demoHabitatClasses);
+  await setPlant(services, id, demoPlant);
+  return setOutlook(services, id, demoOutlook);
+}
+
+/** Wait and the demo's own options, in that order. */
+async function makeOptions(services: Services, site: Site): Promise<Option[]> {
+  const cover = site.layers.find((layer) => layer.part === 'cover')!;
+  for (const option of demoOptions(await layerValues(services, site.id, cover.hash)))
+    await createOption(services, site.id, option, nameOf('manager'));
+  return listOptions(services.dataSource.manager, site.id);
+}
