@@ -18,7 +18,9 @@ test('mean cover and the year by which at least half have closed', () => {
 });
 
 test('maps that do not fit are refused before they are made', () => {
-  expect(() => ensembleMaps(16_000_000, [2020, 2030], 200)).toThrow(/need 7 GB .* at most 2 GB .*"reportYears"/);
+  expect(() => ensembleMaps(16_000_000, [2020, 2030], 200)).toThrow(
+    /need 7 GB .* at most 2 GB .*"reportYears"/,
+  );
 });
 
 test('progress tells the time left by the pace so far, and seldom where lines add up', () => {
