@@ -1,5 +1,6 @@
 import { zlibSync } from 'fflate';
 import type { Grid } from '#sim-core/grid/grid.ts';
+import { differenceFloats } from './difference-floats.ts';
 import { layOutTiff, type TiffField } from './tiff-file.ts';
 
 /** The number types that exports need. */
@@ -28,6 +29,7 @@ export interface GeoTiffOptions {
 
 const tileSize = 256;
 const stripBytes = 65_536;
+const predictor = { none: 1, floats: 3 } as const;
 
 /**
  * A GeoTIFF 1.1 (OGC 19-008r4) of one DEFLATE-compressed band, north up, PixelIsArea, in a projected CRS in metres.
@@ -54,6 +56,7 @@ export function encodeGeoTiff(
     { tag: 259, type: 'short', values: [8] }, // DEFLATE
     { tag: 262, type: 'short', values: [1] }, // black is zero
     { tag: 277, type: 'short', values: [1] },
+    { tag: 317, type: 'short', values: [values instanceof Float32Array ? predictor.floats : predictor.none] },
     ...(tiled
       ? ([
           { tag: 322, type: 'short', values: [tileSize] },
@@ -94,7 +97,12 @@ function packBlocks(
         const start = (top + row) * width + left;
         cells.set(values.subarray(start, start + columns), row * blockWidth);
       }
-      packed.push(zlibSync(littleEndianBytes(cells)));
+      const bytes = littleEndianBytes(cells);
+      packed.push(
+        cells instanceof Float32Array
+          ? zlibSync(differenceFloats(bytes, blockWidth), { level: 3 })
+          : zlibSync(bytes, { level: 6 }),
+      );
     }
   return packed;
 }
