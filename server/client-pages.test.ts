@@ -6,12 +6,14 @@ import supertest from 'supertest';
 import { afterAll, expect, it } from 'vitest';
 import { clientPages } from './client-pages.ts';
 
-const folder = mkdtempSync(join(tmpdir(), 'foothold-client-'));
-mkdirSync(join(folder, 'assets'));
+// In a dot folder, as the build is.
+const above = mkdtempSync(join(tmpdir(), 'foothold-client-'));
+const folder = join(above, '.build/app');
+mkdirSync(join(folder, 'assets'), { recursive: true });
 writeFileSync(join(folder, 'index.html'), '<title>Foothold</title>');
 writeFileSync(join(folder, 'assets/main-abc.js'), 'export {};');
 writeFileSync(join(folder, 'icon.svg'), '<svg/>');
-afterAll(() => rmSync(folder, { recursive: true, force: true }));
+afterAll(() => rmSync(above, { recursive: true, force: true }));
 
 const client = supertest(express().use(clientPages(folder)));
 

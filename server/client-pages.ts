@@ -23,7 +23,8 @@ export function clientPages(folder = join(projectRoot, '.build/app')): Router {
   router.use(express.static(folder, { index: false, maxAge: '1h' }));
   router.get('/{*splat}', (_request, response) => {
     response.set('Cache-Control', 'no-cache');
-    response.sendFile(join(folder, 'index.html'), { cacheControl: false });
+    // By root and name: a whole path with a dot folder in it, as the build's, would be refused.
+    response.sendFile('index.html', { root: folder, cacheControl: false });
   });
   return router;
 }
