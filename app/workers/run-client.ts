@@ -48,6 +48,8 @@ export function startRun(input: RunInput, listener: RunListener, options: RunCli
   const worker = createWorker();
   const remote = wrap<RunWorkerFace>(worker);
   const watch = new AbortController();
+  // Both come in secure contexts alone.
+  const lock = locks && `run-${crypto.randomUUID()}`;
   let over = false;
   let refusal: { reason: unknown } | undefined;
   let fail!: (reason: unknown) => void;
@@ -83,22 +85,23 @@ export function startRun(input: RunInput, listener: RunListener, options: RunCli
         }
       },
       onProgress: (progress) => {
-        if (!over) listener.onProgress?.(progress);
+        if (over) return;
+        // The worker holds the lock before it says anything.
+        if (progress.stepsDone === 0) watchOver();
+        listener.onProgress?.(progress);
       },
     };
-    if (locks) await watchOver(locks);
     try {
-      return await remote.run(transfer(input, groundBuffers(input.ground)), proxy(heard));
+      return await remote.run(transfer(input, groundBuffers(input.ground)), proxy(heard), lock);
     } catch (reason) {
       // The listener's own error, with its class and fields, rather than the copy that crossed twice.
       throw refusal ? refusal.reason : reason;
     }
   }
 
-  async function watchOver(manager: LockManager) {
-    const lock = `run-${crypto.randomUUID()}`;
-    await remote.hold(lock);
-    manager
+  function watchOver() {
+    if (!locks || !lock) return;
+    locks
       .request(lock, { signal: watch.signal }, () => {
         fail(new RunWorkerDied('The run’s worker stopped without a word, most likely for lack of memory'));
       })

@@ -23,7 +23,7 @@ export interface YearEvent {
 export interface RunProgress {
   readonly stepsDone: number;
   readonly steps: number;
-  /** from the pace so far, waiting left out; undefined until a step is done */
+  /** from the pace so far, waiting left out; undefined until a step is done; the first word, at 0 steps, comes at once */
   readonly secondsLeft: number | undefined;
 }
 
@@ -112,8 +112,8 @@ export function createRunLoop({ createRun, pack, now }: RunLoopParts): RunLoop {
     };
 
     try {
-      const engine = createRun(input);
       say(0, 0);
+      const engine = createRun(input);
       send(engine.survey);
       for (let year = 0; ; year++) {
         await turn();

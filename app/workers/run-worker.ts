@@ -14,19 +14,21 @@ export interface PageListener {
   onProgress(progress: RunProgress): void;
 }
 
+/** Holds a lock for as long as this worker lives: its coming free tells the page of a death that raises no event. */
+const hold = (lock: string) =>
+  new Promise<void>((held, refused) => {
+    navigator.locks
+      .request(lock, () => {
+        held();
+        return new Promise<never>(() => undefined);
+      })
+      .catch(refused);
+  });
+
 /** What the client calls; everything with cells is handed over, never copied. */
 const face = {
-  /** Holds a lock for as long as this worker lives, so that the page learns of a death that raises no event. */
-  hold: (lock: string) =>
-    new Promise<void>((held, refused) => {
-      navigator.locks
-        .request(lock, () => {
-          held();
-          return new Promise<never>(() => undefined);
-        })
-        .catch(refused);
-    }),
-  run: async (input: RunInput, listener: Remote<PageListener & ProxyMarked>) => {
+  run: async (input: RunInput, listener: Remote<PageListener & ProxyMarked>, lock: string | undefined) => {
+    if (lock !== undefined) await hold(lock);
     const outcome = await loop.run(input, {
       onYear: (event: YearEvent) => listener.onYear(transfer(event, buffersOf(event.frame, event.packed))),
       onProgress: (progress) => void listener.onProgress(progress),
