@@ -9,6 +9,7 @@ import { runsQuery } from '#app/features/runs/list-runs.ts';
 import { sessionQuery } from '#app/features/session/session.ts';
 import { sitesQuery } from '#app/features/sites/list-sites.ts';
 import type { Role } from '#contract/people.ts';
+import type { RunSummary } from '#contract/runs.ts';
 import type { SiteSummary } from '#contract/sites.ts';
 import { PaperPage } from '../shell/paper-page.tsx';
 import { AttentionList } from './attention-list.tsx';
@@ -21,6 +22,9 @@ export function Page() {
   const mine = teams.flatMap(({ role, list }) => (list.data ?? []).map((site) => ({ site, role })));
   const withRuns = mine.filter(({ site }) => site.runs > 0);
   const runLists = useQueries({ queries: withRuns.map(({ site }) => runsQuery(site.id, { limit: 20 })) });
+  const latest = new Map(
+    withRuns.map(({ site }, i) => [site.id, runLists[i].data?.runs.find((run) => run.status === 'finished')]),
+  );
   const unfinished = withRuns.flatMap(({ site }, i) =>
     (runLists[i].data?.runs ?? []).filter((run) => run.status === 'running').map((run) => ({ site, run })),
   );
@@ -38,7 +42,7 @@ export function Page() {
               </WordButton>
             </ProblemNotice>
           )}
-          {list.isSuccess && <TeamSites teamId={teamId} role={role} sites={list.data} />}
+          {list.isSuccess && <TeamSites teamId={teamId} role={role} sites={list.data} latest={latest} />}
         </Section>
       ))}
       {memberships.length === 0 && (
@@ -50,7 +54,13 @@ export function Page() {
   );
 }
 
-function TeamSites(props: { teamId: string; role: Role; sites: readonly SiteSummary[] }) {
+function TeamSites(props: {
+  teamId: string;
+  role: Role;
+  sites: readonly SiteSummary[];
+  /** the latest finished run of each site that has one */
+  latest: ReadonlyMap<string, RunSummary | undefined>;
+}) {
   const mayMake = props.role === 'modeller' || props.role === 'admin';
   const path = `/teams/${props.teamId}/new-site`;
   if (props.sites.length === 0) {
@@ -75,7 +85,7 @@ function TeamSites(props: { teamId: string; role: Role; sites: readonly SiteSumm
     <>
       <ul>
         {props.sites.map((site) => (
-          <SiteRow key={site.id} site={site} />
+          <SiteRow key={site.id} site={site} latest={props.latest.get(site.id)} />
         ))}
       </ul>
       {mayMake && (

@@ -1,15 +1,18 @@
 import { Link } from 'react-router-dom';
 import { StaffRule } from '#app/components/staff-rule.tsx';
 import { formatArea, formatCounted, formatDate, formatLength } from '#app/lib/formats.ts';
+import type { RunSummary } from '#contract/runs.ts';
 import type { SiteSummary } from '#contract/sites.ts';
 import { nextStep, siteShare } from './next-step.ts';
+import { SitePicture } from './site-picture.tsx';
 
 /** One site: its name, its ground, how far the work on it is. The whole row leads to it. */
-export function SiteRow({ site }: { site: SiteSummary }) {
+export function SiteRow({ site, latest }: { site: SiteSummary; latest: RunSummary | undefined }) {
   const { width, height, cellSize } = site.grid;
   const next = nextStep(site);
   return (
-    <li className="group relative grid gap-x-8 border-t border-rule-2 py-3 first:border-t-0 hover:bg-sheet md:grid-cols-[minmax(0,5fr)_minmax(0,4fr)_minmax(0,4fr)] md:items-end">
+    <li className="group relative grid gap-x-8 border-t border-rule-2 py-3 first:border-t-0 hover:bg-sheet md:grid-cols-[240px_minmax(0,5fr)_minmax(0,4fr)] md:items-end">
+      <SitePicture site={site} latest={latest} />
       <div className="min-w-0">
         <Link
           to={next?.to ?? `/sites/${site.id}/runs`}
@@ -20,14 +23,14 @@ export function SiteRow({ site }: { site: SiteSummary }) {
         <p className="text-note text-ink-2">
           {site.invented ? 'Invented, ' : ''}since {formatDate(site.createdAt)}
         </p>
+        <p className="mt-1 text-note text-ink-2">
+          {formatArea(width * height * cellSize ** 2)} in cells of {formatLength(cellSize)}
+          <br />
+          <span className="font-mono text-axis">
+            {width} × {height} EPSG:{site.grid.epsg}
+          </span>
+        </p>
       </div>
-      <p className="text-note text-ink-2">
-        {formatArea(width * height * cellSize ** 2)} in cells of {formatLength(cellSize)}
-        <br />
-        <span className="font-mono text-axis">
-          {width} × {height} EPSG:{site.grid.epsg}
-        </span>
-      </p>
       <div className="max-md:mt-2">
         <p className="mb-1 flex justify-between gap-4 text-note">
           <span>

@@ -4,19 +4,20 @@ import { YearlinePlot } from '#app/yearline/YearlinePlot.tsx';
 import { useWidth } from '#app/yearline/use-width.ts';
 import { yearlineScale } from '#app/yearline/yearline-scale.ts';
 import type { YearRecord } from '#app/yearline/year-records.ts';
-import { useTheme } from '#app/lib/use-theme.ts';
 import { Moment } from './moment.tsx';
-import { pictureGround, pictureSpec, pictureYears, planned, survivors } from './picture-ground.ts';
+import { pictureGround, pictureSpec, nearest, pictureYears, planned, survivors } from './picture-ground.ts';
 import { PictureLabel } from './picture-label.tsx';
 import { usePictureRun } from './use-picture-run.ts';
 
 const { survey, last, shown } = pictureYears;
-const momentWords = ['after the drought', '8 years on', '16 years on'];
+
+const yearsOn = (years: number) =>
+  years === 0 ? 'after the drought' : years === 1 ? '1 year on' : `${years} years on`;
 
 /** What the product does, shown and not told: invented ground, and one future of it made by the engine on the spot. */
 export function HowItWorks() {
-  const { theme } = useTheme();
   const { frames, records, failed } = usePictureRun();
+  const reached = Math.max(survey, ...frames.keys());
   // The survey is known before the engine has been fetched, so the picture is never empty.
   const surveyed = useMemo(() => toFrame(pictureGround().cover), []);
   return (
@@ -31,34 +32,41 @@ export function HowItWorks() {
         of 2049 and 2050 and rises again.
       </p>
       <div className="flex min-h-0 flex-1">
-        {shown.map((year, i) => (
-          <Moment
-            key={year}
-            year={year}
-            words={failed && i > 0 ? 'could not be run here' : momentWords[i]}
-            frame={frames.get(year) ?? (i === 0 ? surveyed : undefined)}
-            theme={theme}
-          >
-            {i === 0 && (
-              <>
-                <PictureLabel
-                  at={planned[1]}
-                  lines={['a foothold people add:', 'planted mounds fly a flag']}
-                />
-                <PictureLabel at={survivors[3]} lines={['a foothold that survived', 'on an old mound']} />
-              </>
-            )}
-          </Moment>
-        ))}
+        {shown.map((moment, i) => {
+          const year = Math.min(moment, reached);
+          return (
+            <Moment
+              key={moment}
+              year={year}
+              words={yearsOn(year - survey)}
+              frame={frames.get(year) ?? surveyed}
+              growing={!failed && year < moment}
+            >
+              {i === 0 && (
+                <>
+                  <PictureLabel
+                    at={nearest(planned, { column: 40, row: 112 })}
+                    lines={['a foothold people add:', 'planted mounds fly a flag']}
+                  />
+                  <PictureLabel
+                    at={nearest(survivors, { column: 70, row: 236 })}
+                    lines={['a foothold that survived', 'on an old mound']}
+                  />
+                </>
+              )}
+            </Moment>
+          );
+        })}
       </div>
-      <PictureYearline records={records} />
+      <PictureYearline {...{ records, failed }} year={Math.min(shown[2], reached)} />
     </section>
   );
 }
 
 const spec = pictureSpec();
 
-function PictureYearline({ records }: { records: readonly YearRecord[] }) {
+function PictureYearline(props: { records: readonly YearRecord[]; year: number; failed: boolean }) {
+  const { records, year, failed } = props;
   const box = useRef<HTMLDivElement>(null);
   const width = useWidth(box);
   const drought = spec.droughtIndex as number[];
@@ -79,7 +87,7 @@ function PictureYearline({ records }: { records: readonly YearRecord[] }) {
       {width > 0 && (
         <YearlinePlot
           {...{ scale, surveyYear: survey, lastYear: last, records, tolerances }}
-          year={shown[2]}
+          year={year}
           availableUntil={soFar}
           droughtIndex={drought}
           pins={[
@@ -92,7 +100,9 @@ function PictureYearline({ records }: { records: readonly YearRecord[] }) {
       )}
       {!scale.compact && (
         <p className="absolute top-3 left-6 w-[108px] text-note text-ink-2">
-          Invented ground; one future, run by the engine as you look.
+          {failed
+            ? 'Invented ground. This browser could not run its future.'
+            : 'Invented ground; one future, run by the engine as you look.'}
         </p>
       )}
     </div>

@@ -1,63 +1,39 @@
-import { useEffect, useRef, type ReactNode } from 'react';
-import { paletteOf, readMapColours } from '#app/map/map-colours.ts';
+import { useMemo, type ReactNode } from 'react';
+import { RasterPicture } from '#app/components/raster-picture.tsx';
 import { classNames } from '#app/lib/class-names.ts';
-import type { Theme } from '#app/lib/theme.ts';
 import { pictureGrid, planned, survivors } from './picture-ground.ts';
 
 const { width, height } = pictureGrid;
 
-/** The picture's ground at the end of one year, with its footholds. */
+/** The picture's ground at the end of one year, with its footholds. While the run is on its way there it grows. */
 export function Moment(props: {
   year: number;
   words: string;
-  frame: Uint8Array | undefined;
-  theme: Theme;
+  frame: Uint8Array;
+  /** the run has not reached the moment yet */
+  growing: boolean;
   children?: ReactNode;
 }) {
+  const raster = useMemo(() => ({ kind: 'cover' as const, values: props.frame }), [props.frame]);
   return (
     <div className="relative min-w-0 flex-1 overflow-hidden border-ink bg-sheet not-first:border-l">
-      {props.frame && (
-        <>
-          <CoverCanvas frame={props.frame} theme={props.theme} />
-          <Footholds>{props.children}</Footholds>
-        </>
-      )}
+      <RasterPicture
+        raster={raster}
+        width={width}
+        height={height}
+        className="absolute inset-0 size-full object-cover [image-rendering:pixelated]"
+      />
+      <Footholds>{props.children}</Footholds>
       <p
         className={classNames(
           'absolute bottom-0 left-0 border-t border-r border-ink bg-ground px-3.5 py-1.5 text-note leading-tight text-ink-2',
-          !props.frame && 'busy-ticks',
+          props.growing && 'busy-ticks',
         )}
       >
         <b className="block text-title leading-tight font-strong text-ink">{props.year}</b>
         {props.words}
       </p>
     </div>
-  );
-}
-
-function CoverCanvas({ frame, theme }: { frame: Uint8Array; theme: Theme }) {
-  const canvas = useRef<HTMLCanvasElement>(null);
-  useEffect(() => {
-    const context = canvas.current?.getContext('2d');
-    if (!canvas.current || !context) return;
-    const palette = paletteOf(
-      { kind: 'cover', surveyYear: 0, lastYear: 0, classes: [] },
-      readMapColours(canvas.current),
-    );
-    const image = context.createImageData(width, height);
-    for (let i = 0; i < frame.length; i++)
-      image.data.set(palette.subarray(frame[i] * 4, frame[i] * 4 + 4), i * 4);
-    context.putImageData(image, 0, 0);
-    // `theme` is not read, but the palette is another one when it changes.
-  }, [frame, theme]);
-  return (
-    <canvas
-      ref={canvas}
-      width={width}
-      height={height}
-      aria-hidden="true"
-      className="absolute inset-0 size-full object-cover [image-rendering:pixelated]"
-    />
   );
 }
 

@@ -61,19 +61,27 @@ const apart = (a: Spot, b: Spot) => Math.hypot(a.column - b.column, a.row - b.ro
 export const survivors = scattered(37, 11);
 export const planned = scattered(33, 23).filter((p) => survivors.every((s) => apart(s, p) > 13));
 
+/** The spot that lies nearest to a place. */
+export const nearest = (spots: readonly Spot[], place: Spot): Spot =>
+  spots.reduce((best, spot) => (apart(spot, place) < apart(best, place) ? spot : best));
+
 /** The ground as surveyed in the first year: stands, bare mud, survivors on mounds. */
 export function pictureGround(): Ground {
   const { width, height } = pictureGrid;
   const cells = width * height;
   const cover = new Float32Array(cells);
   const refuge = new Uint8Array(cells);
+  const share = (column: number, row: number) => 0.72 + 0.28 * lumps(column, row, 17, 40);
   for (let row = 0; row < height; row++)
-    for (let column = 0; column < width; column++) {
-      const i = row * width + column;
-      const onMound = survivors.some((s) => apart(s, { column, row }) <= 2);
-      if (onMound) refuge[i] = 255;
-      if (onMound || stands(column, row)) cover[i] = 0.72 + 0.28 * lumps(column, row, 17, 40);
-    }
+    for (let column = 0; column < width; column++)
+      if (stands(column, row)) cover[row * width + column] = share(column, row);
+  for (const survivor of survivors)
+    for (let row = survivor.row - 2; row <= survivor.row + 2; row++)
+      for (let column = survivor.column - 2; column <= survivor.column + 2; column++)
+        if (apart(survivor, { column, row }) <= 2) {
+          refuge[row * width + column] = 255;
+          cover[row * width + column] = share(column, row);
+        }
   return {
     capacity: new Uint8Array(cells).fill(255),
     vigour: new Uint8Array(cells).fill(255),
@@ -108,6 +116,7 @@ function works(): Action[] {
 
 /** The run behind the picture; its layers are the ground above. */
 export function pictureSpec(): RunSpec {
+  const { survey, shown } = pictureYears;
   return runSpecSchema.parse({
     version: 1,
     seed: 'sign-in',
@@ -116,7 +125,8 @@ export function pictureSpec(): RunSpec {
     rates: { lateralSpread: 1.5 },
     droughtIndex: droughtIndex(),
     actions: works(),
-    reportYears: [...pictureYears.shown],
+    // Every year up to the last moment, so that the picture grows as the run proceeds.
+    reportYears: Array.from({ length: shown[2] - survey + 1 }, (_, i) => survey + i),
     layers: { cover: 0 },
   });
 }
