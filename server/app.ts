@@ -28,6 +28,7 @@ const securityHeaders = (publicUrl: string) => {
       },
     },
     strictTransportSecurity: https,
+    xFrameOptions: { action: 'deny' },
     // One-time links carry their token in the path.
     referrerPolicy: { policy: 'no-referrer' },
   });

@@ -72,12 +72,26 @@ describe('the configuration', () => {
       { ADMIN_EMAIL: 'ana@shore.example' },
       'ADMIN_PASSWORD: found nothing, expected both ADMIN_EMAIL and ADMIN_PASSWORD, or neither.',
     ],
+    [
+      { TRUST_PROXY: 'yes' },
+      'TRUST_PROXY: found "yes", expected off, the number of proxies, or their addresses such as 10.0.0.0/8, loopback.',
+    ],
     [{ PORT: 'x', DEMO: 'y' }, /^PORT: .*\nDEMO: .*$/],
     [{ PUBLIC_URL: 'https://shore.example' }, /^TRUST_PROXY: found "off", expected the number of proxies/],
   ])('refuses %o by name', (environment, message) => {
     expect(messageOf(environment)).toEqual(
       typeof message === 'string' ? message : expect.stringMatching(message),
     );
+  });
+
+  it.each([
+    ['off', false],
+    ['2', 2],
+    ['loopback', 'loopback'],
+    ['10.0.0.0/8, loopback', '10.0.0.0/8, loopback'],
+    ['::1,fc00::/7', '::1,fc00::/7'],
+  ])('trusts the proxies of %o', (given, trusted) => {
+    expect(readConfig({ TRUST_PROXY: given }).trustProxy).toBe(trusted);
   });
 
   it('does not repeat a secret', () => {

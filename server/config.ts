@@ -36,6 +36,10 @@ const urlWith = (protocols: readonly string[], example: string) =>
     message: `an address such as ${example}`,
   });
 
+/** `off`, a number, or a list of addresses, networks and Express's names for networks */
+const trustedProxies =
+  /^(off|\d+|(loopback|linklocal|uniquelocal|[\da-f]*[.:][\da-f.:]+(\/[\d.]+)?)(, *(?!$)|$))+$/i;
+
 const variables = z.object({
   HOST: z.string().default('127.0.0.1'),
   PORT: z.coerce
@@ -53,7 +57,10 @@ const variables = z.object({
   ADMIN_PASSWORD: passwordSchema.optional(),
   ADMIN_TEAM: z.string().trim().min(1).max(100, 'at most 100 characters').default('My team'),
   DEMO: z.enum(['on', 'off', 'auto'], 'on, off or auto').default('auto'),
-  TRUST_PROXY: z.string().default('off'),
+  TRUST_PROXY: z
+    .string()
+    .regex(trustedProxies, 'off, the number of proxies, or their addresses such as 10.0.0.0/8, loopback')
+    .default('off'),
   LOG_LEVEL: z
     .enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent'], 'fatal, error, warn, info, debug or silent')
     .default('info'),

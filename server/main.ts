@@ -20,6 +20,8 @@ async function greet({ config, dataSource }: Services, setupLink: string | undef
 }
 
 async function main(): Promise<void> {
+  // Whatever is written from here on is for this account alone: sessions, passwords' hashes, unsent e-mail.
+  process.umask(0o077);
   if (existsSync('.env')) process.loadEnvFile('.env');
   const config = readConfig(process.env);
   const services = await createServices(config);
@@ -39,6 +41,8 @@ async function main(): Promise<void> {
       void services.close().then(() => process.exit(0));
     });
     server.closeIdleConnections();
+    // A download that nobody reads on must not keep the server from ending.
+    setTimeout(() => server.closeAllConnections(), 10_000).unref();
   };
   process.on('SIGTERM', stop);
   process.on('SIGINT', stop);

@@ -63,6 +63,11 @@ export const inviteRoutes = (services: Services): Route[] => {
         const account = person ? undefined : await newAccount(services, body.name, body.password);
         const personId = await write(async (manager) => {
           if (!(await useInvite(manager, invite.id))) throw gone();
+          if (account && (await findPersonByEmail(manager, email)))
+            throw new ProblemError(
+              'conflict',
+              `An account for ${email} was made meanwhile. Open the link again.`,
+            );
           const id = account ? (await addPerson(manager, { email, ...account }, clock())).id : person!.id;
           if (await isMember(manager, teamId, id))
             throw new ProblemError('conflict', `${email} is already in ${invite.teamName}. Sign in instead.`);

@@ -75,6 +75,27 @@ describe('an invite', () => {
     expect(replies.map((reply) => reply.status).sort()).toEqual([200, 410]);
   });
 
+  it('makes one account even when two teams’ invites are accepted at the same moment', async () => {
+    const email = newAddress();
+    const other = await makeTeam(server, 'Other shore');
+    await other.agents.admin
+      .post(`/api/teams/${other.teamId}/invites`)
+      .send({ email, role: 'trainer' })
+      .expect(200);
+    const [{ text }] = await server.services.dataSource.query<{ text: string }[]>(
+      `SELECT text FROM outbox_message WHERE recipient = '${email}'`,
+    );
+    const paths = [pathIn(text), await invited(email)];
+    const replies = await Promise.all(
+      paths.map((path) => server.request.post(path).send({ name: 'New', password: newPassword })),
+    );
+    expect(replies.map((reply) => reply.status).sort()).toEqual([200, 409]);
+    // The invite that was refused still stands, now for the account that exists.
+    const left = paths[replies.findIndex((reply) => reply.status === 409)];
+    const joined = await server.request.post(left).send({ password: newPassword }).expect(200);
+    expect(joined.body.memberships).toHaveLength(2);
+  });
+
   it('is listed while it waits, and ends when it is withdrawn', async () => {
     const email = newAddress();
     const path = await invited(email);
