@@ -1,7 +1,7 @@
 import { useSyncExternalStore } from 'react';
 import { decodeCellValues } from '#rasters/cells/cell-values.ts';
 import { getFrame } from '#contract/runs.ts';
-import { maximumCells, type Mode } from '#sim-core/spec/run-spec.ts';
+import { maximumCells } from '#sim-core/spec/run-spec.ts';
 import { fetchBytes } from '#app/lib/api-client.ts';
 import { startRun } from '#app/workers/run-client.ts';
 import { createFrameCache } from './frame-cache.ts';
@@ -28,10 +28,10 @@ export const runManager = createRunManager({
   startWorker: (input, listener) => {
     const { spec, grid } = input;
     const onProgress: typeof listener.onProgress = (progress) => {
-      keepPace(spec.mode as Mode, grid.width * grid.height, progress);
+      keepPace(spec.mode, grid.width * grid.height, progress);
       listener.onProgress?.(progress);
     };
-    return startRun(input, { onYear: listener.onYear, onProgress });
+    return startRun(input, { onYear: (event) => listener.onYear(event), onProgress });
   },
   wait: waitByClock,
   onFrame: (runId, year, frame) => {

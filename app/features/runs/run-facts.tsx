@@ -3,7 +3,7 @@ import type { Run } from '#contract/runs.ts';
 import type { RunResult, SeriesRow } from '#sim-core/spec/run-result.ts';
 import { formatArea, formatDateTime, formatNumber, formatShare } from '#app/lib/formats.ts';
 import type { YearRecord } from '#app/yearline/year-records.ts';
-import { lossesIn } from './run-series.ts';
+import { lossesIn, type YearLosses } from './run-series.ts';
 import { modeWords } from './run-words.ts';
 
 /** What the playhead's year holds, in figures and words. */
@@ -18,7 +18,6 @@ export function YearFacts(props: {
   const { year, record, compare } = props;
   if (!record) return null;
   const losses = lossesIn(props.rows, year);
-  const lost = losses && losses.drought + losses.background + losses.events;
   return (
     <section aria-label={`The year ${year}`} className="border-t border-rule py-2">
       <div className="flex items-baseline justify-between">
@@ -34,14 +33,24 @@ export function YearFacts(props: {
         {props.referenceArea !== undefined &&
           ` of ${formatArea(props.referenceArea)} that the ground can carry`}
         .{compare && ` ${compare.label}: ${formatShare(compare.record.coverShare)}.`}
-        {losses !== undefined &&
-          lost !== undefined &&
-          ` Lost in ${year}: ${formatArea(lost)}, ${formatArea(losses.drought)} of it to drought${
-            losses.events > 0 ? ` and ${formatArea(losses.events)} to one-off losses` : ''
-          }.`}
+        {losses !== undefined && ` ${lossesInWords(year, losses)}`}
       </p>
     </section>
   );
+}
+
+/** `Lost in 2049: 5.2 ha, of it 5.1 ha to drought.`; a cause that took all or nothing is not given a figure. */
+function lossesInWords(year: number, { drought, background, events }: YearLosses): string {
+  const lost = drought + background + events;
+  if (formatArea(lost) === formatArea(0)) return `Nothing was lost in ${year}.`;
+  const causes = [
+    ['drought', drought],
+    ['background loss', background],
+    ['one-off losses', events],
+  ] as const;
+  const parts = causes.filter(([, area]) => formatArea(area) !== formatArea(0));
+  if (parts.length === 1) return `Lost in ${year}: ${formatArea(lost)}, all to ${parts[0][0]}.`;
+  return `Lost in ${year}: ${formatArea(lost)}, of it ${parts.map(([cause, area]) => `${formatArea(area)} to ${cause}`).join(', ')}.`;
 }
 
 function Figure({ value, words }: { value: string; words: string }) {

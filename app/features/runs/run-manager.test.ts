@@ -51,9 +51,9 @@ function loopWorker(made: { years: number }) {
     const died = new Promise<never>((_, reject) => (fail = reject));
     const handle: RunHandle = {
       result: Promise.race([loop.run(input, listener), died]),
-      pause: loop.pause,
-      resume: loop.resume,
-      step: loop.step,
+      pause: () => loop.pause(),
+      resume: () => loop.resume(),
+      step: () => loop.step(),
       cancel: () => fail(new Error('cancelled')),
     };
     handle.result.catch(() => undefined);

@@ -56,9 +56,9 @@ export interface StartParts {
 }
 
 export interface RunManager {
-  subscribe(listener: () => void): () => void;
+  readonly subscribe: (listener: () => void) => () => void;
   /** the same array until something changed */
-  list(): readonly LiveRun[];
+  readonly list: () => readonly LiveRun[];
   get(runId: string): LiveRun | undefined;
   /** Works on a run that the server has just registered: each frame is stored as it comes. */
   start(parts: StartParts): void;

@@ -126,8 +126,9 @@ export function StartForm(props: {
           Start the run
         </Button>
         <span className="text-note text-ink-2">
-          {formatCount(cells)} cells over {years * stepsPerYear} {stepsPerYear === 1 ? 'years' : 'steps'}:
-          about {formatDuration(seconds)} on this browser. You can leave the page, but not close the tab.
+          {formatCount(cells)} cells over {years * stepsPerYear} {stepsPerYear === 1 ? 'years' : 'steps'}:{' '}
+          {seconds < 5 ? 'a few seconds' : `about ${formatDuration(seconds)}`} on this browser. You can leave
+          the page, but not close the tab.
         </span>
       </div>
     </form>

@@ -84,9 +84,9 @@ export function OptionMargin(props: {
               key: 'what',
               head: 'works',
               cell: ({ kind, count }) => (
-                <span className="flex items-center gap-1.5">
+                <>
                   {kind === 'mound' ? <FlagSymbol /> : <PlantingSymbol />} {countOf(kind, count)}
-                </span>
+                </>
               ),
             },
             { key: 'year', head: 'year', number: true, cell: ({ year }) => year },
@@ -141,7 +141,7 @@ function OptionDeeds(props: {
   return (
     <div className="flex flex-wrap gap-x-4 border-t border-rule pt-1">
       <WordButton onClick={() => setAsked('add')}>Add an option</WordButton>
-      <WordButton onClick={() => setAsked('copy')}>Copy this one</WordButton>
+      <WordButton onClick={() => setAsked('copy')}>Copy</WordButton>
       {!option.wait && (
         <>
           <WordButton onClick={() => setAsked('rename')}>Rename</WordButton>
