@@ -8,6 +8,7 @@ precision highp float;
 in vec2 aPosition;
 in vec2 aUV;
 out vec2 vCell;
+out vec2 vPlace;
 uniform mat3 uProjectionMatrix;
 uniform mat3 uWorldTransformMatrix;
 uniform mat3 uTransformMatrix;
@@ -15,12 +16,14 @@ void main() {
   mat3 toClip = uProjectionMatrix * uWorldTransformMatrix * uTransformMatrix;
   gl_Position = vec4((toClip * vec3(aPosition, 1.0)).xy, 0.0, 1.0);
   vCell = aUV; // in cells of this tile
+  vPlace = aPosition; // in cells of the grid
 }`;
 
 export const rasterFragment = `#version 300 es
 precision highp float;
 precision highp int;
 in vec2 vCell;
+in vec2 vPlace;
 out vec4 finalColor;
 uniform sampler2D uTexels;
 uniform sampler2D uGround;
@@ -42,7 +45,7 @@ vec4 colourAt(vec2 place) {
   int code = int(texelFetch(uTexels, cellOf(place), 0).r * 255.0 + 0.5);
   vec4 colour = texelFetch(uPalette, ivec2(code, 0), 0);
   if (colour.a > 0.25 && colour.a < 0.75) {
-    float stripe = mod((vCell.x + vCell.y) / uCellsPerPixel, 7.0);
+    float stripe = mod((vPlace.x + vPlace.y) / uCellsPerPixel, 7.0);
     return stripe < 2.0 ? uStanding : vec4(colour.rgb, 1.0);
   }
   return vec4(colour.rgb * colour.a, colour.a);
