@@ -1,12 +1,13 @@
 import type { z } from 'zod';
 import { problemCodes, type ProblemCode } from '#contract/problem.ts';
+import { fieldProblems } from '#sim-core/spec/problems.ts';
 import { fieldProblem, notFound, ProblemError } from './problem-error.ts';
 
 const tooLarge = (detail: string) => new ProblemError('too-large', detail);
 
 /** The issues of a schema as fields; the detail repeats the first few for whoever reads the text alone. */
 export function problemOfIssues(issues: readonly z.core.$ZodIssue[]): ProblemError {
-  const fields = issues.map((issue) => ({ field: issue.path.join('.'), message: issue.message }));
+  const fields = fieldProblems({ issues });
   const shown = fields.slice(0, 3).map(({ field, message }) => (field ? `${field}: ${message}` : message));
   const more = fields.length > 3 ? ` (and ${fields.length - 3} more)` : '';
   return new ProblemError('invalid-request', shown.join('. ') + more, { fields });

@@ -8,7 +8,7 @@ export interface FieldProblem {
 }
 
 /** What zod found, as field problems in plain order. */
-export function fieldProblems(error: z.ZodError): FieldProblem[] {
+export function fieldProblems(error: { readonly issues: readonly z.core.$ZodIssue[] }): FieldProblem[] {
   return error.issues.flatMap((issue) => {
     const field = issue.path.map(String).join('.');
     if (issue.code === 'unrecognized_keys')

@@ -78,7 +78,8 @@ export async function runsOfSite(
   siteId: string,
   { offset, limit }: { offset: number; limit: number },
 ): Promise<{ runs: RunListRow[]; total: number }> {
-  const [rows, total] = await manager.findAndCount(RunEntity, {
+  const total = await manager.countBy(RunEntity, { siteId });
+  const rows = await manager.find(RunEntity, {
     where: { siteId },
     order: { startedAt: 'DESC', id: 'DESC' },
     skip: offset,
