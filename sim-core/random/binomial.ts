@@ -40,8 +40,7 @@ function walk(u: number, n: number, p: number, strict: boolean): number {
 /** x^n by squaring. */
 function power(x: number, n: number): number {
   let result = 1;
-  for (let base = x, left = n; left > 0; left >>= 1, base *= base)
-    if (left & 1) result *= base;
+  for (let base = x, left = n; left > 0; left >>= 1, base *= base) if (left & 1) result *= base;
   return result;
 }
 
