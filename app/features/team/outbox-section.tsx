@@ -21,8 +21,9 @@ export function OutboxSection({ teamId }: { teamId: string }) {
       {outbox.isError && <ProblemNotice error={outbox.error} title="The messages did not come." />}
       {outbox.isSuccess && !outbox.data.mailServer && (
         <Notice className="mb-3" title="No mail server is set.">
-          Messages leave this machine only if you carry them: read one here, or download it and send it with
-          your own mail program.
+          Invites leave this machine only if you carry them: read one here, or download it and send it with
+          your own mail program. Password links are hidden here; whoever runs the server finds them in its
+          outbox folder.
         </Notice>
       )}
       {outbox.isSuccess && outbox.data.messages.length === 0 && (

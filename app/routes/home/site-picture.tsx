@@ -8,6 +8,9 @@ import type { SiteSummary } from '#contract/sites.ts';
 /** Above this many cells the bytes behind a picture would keep a field connection busy for too long. */
 const cellsAtMost = 1_500_000;
 
+const closingRamp =
+  'bg-[linear-gradient(to_right,var(--color-closing-0),var(--color-closing-2),var(--color-closing-4),var(--color-closing-6),var(--color-closing-8))]';
+
 /** The site as its latest finished run leaves it: the year in which each cell closes. */
 export function SitePicture({ site, latest }: { site: SiteSummary; latest: RunSummary | undefined }) {
   const { width, height } = site.grid;
@@ -24,20 +27,31 @@ export function SitePicture({ site, latest }: { site: SiteSummary; latest: RunSu
       },
     [closing.data, latest],
   );
+  const shape = { aspectRatio: `${width} / ${height}` };
+  if (!raster || !latest) {
+    return (
+      <div
+        style={{ ...shape, maxHeight: 120 }}
+        className="flex w-full items-end border border-dashed border-rule p-2 text-note text-ink-2"
+      >
+        {pictureWords(latest !== undefined, shown, closing.isError)}
+      </div>
+    );
+  }
   return (
-    <div className="max-md:mb-2" style={{ aspectRatio: `${width} / ${height}`, maxHeight: 200 }}>
-      {raster ? (
-        <RasterPicture
-          {...{ raster, width, height }}
-          label={`The year each part of ${site.name} closes in its latest run, ${latest?.optionName ?? ''}`}
-          className="size-full border border-rule object-cover"
-        />
-      ) : (
-        <div className="flex size-full items-end border border-dashed border-rule p-2 text-note text-ink-2">
-          {pictureWords(latest !== undefined, shown, closing.isError)}
-        </div>
-      )}
-    </div>
+    <figure>
+      <RasterPicture
+        {...{ raster, width, height }}
+        label={`Map of the year in which each part of ${site.name} closes`}
+        className="max-h-[300px] w-full border border-rule object-cover"
+      />
+      <figcaption className="mt-1.5 flex flex-wrap items-center gap-x-2 text-note text-ink-2">
+        <span className="min-w-0 flex-1 truncate">Closing year, latest run: {latest.optionName}</span>
+        <span className="font-mono text-axis">{latest.surveyYear + 1}</span>
+        <span aria-hidden="true" className={`h-2 w-24 ${closingRamp}`} />
+        <span className="font-mono text-axis">{raster.lastYear}</span>
+      </figcaption>
+    </figure>
   );
 }
 

@@ -11,35 +11,37 @@ export function SiteRow({ site, latest }: { site: SiteSummary; latest: RunSummar
   const { width, height, cellSize } = site.grid;
   const next = nextStep(site);
   return (
-    <li className="group relative grid gap-x-8 border-t border-rule-2 py-3 first:border-t-0 hover:bg-sheet md:grid-cols-[240px_minmax(0,5fr)_minmax(0,4fr)] md:items-end">
+    <li className="group relative grid gap-x-8 gap-y-3 border-t border-rule-2 py-4 first:border-t-0 md:grid-cols-[minmax(0,5fr)_minmax(0,6fr)]">
       <SitePicture site={site} latest={latest} />
-      <div className="min-w-0">
-        <Link
-          to={next?.to ?? `/sites/${site.id}/runs`}
-          className="text-title font-strong no-underline after:absolute after:inset-0 group-hover:underline"
-        >
-          {site.name}
-        </Link>
-        <p className="text-note text-ink-2">
-          {site.invented ? 'Invented, ' : ''}since {formatDate(site.createdAt)}
-        </p>
-        <p className="mt-1 text-note text-ink-2">
-          {formatArea(width * height * cellSize ** 2)} in cells of {formatLength(cellSize)}
-          <br />
-          <span className="font-mono text-axis">
-            {width} × {height} EPSG:{site.grid.epsg}
-          </span>
-        </p>
-      </div>
-      <div className="max-md:mt-2">
-        <p className="mb-1 flex justify-between gap-4 text-note">
-          <span>
-            {formatCounted(site.options, 'option')}, {formatCounted(site.runs, 'run')}
-          </span>
-          <span className="text-ink-2">{next?.words ?? 'ready to run again'}</span>
-        </p>
-        <div className="border-b border-ink">
-          <StaffRule share={siteShare(site)} />
+      <div className="flex min-w-0 flex-col justify-between gap-4">
+        <div>
+          <Link
+            to={next?.to ?? `/sites/${site.id}/runs`}
+            className="text-title font-strong no-underline after:absolute after:inset-0 group-hover:underline"
+          >
+            {site.name}
+          </Link>
+          <p className="text-note text-ink-2">
+            {site.invented ? 'Invented, ' : ''}since {formatDate(site.createdAt)}
+          </p>
+          <p className="mt-2 text-note text-ink-2">
+            {formatArea(width * height * cellSize ** 2)} in cells of {formatLength(cellSize)}
+            <br />
+            <span className="font-mono text-axis">
+              {width} × {height} EPSG:{site.grid.epsg}
+            </span>
+          </p>
+        </div>
+        <div>
+          <p className="mb-1 flex justify-between gap-4 text-note">
+            <span>
+              {formatCounted(site.options, 'option')}, {formatCounted(site.runs, 'run')}
+            </span>
+            <span className="text-ink-2">{next?.words ?? 'ready to run again'}</span>
+          </p>
+          <div className="border-b border-ink">
+            <StaffRule share={siteShare(site)} />
+          </div>
         </div>
       </div>
     </li>

@@ -20,7 +20,8 @@ export function Page() {
       {request.isSuccess ? (
         <Notice className="mt-7" title="Look in your mail.">
           If there is an account for {request.variables.email}, a link is on its way. It works once, and not
-          for long. Where no mail server is set up, an admin of your team finds it in the team’s outbox.
+          for long. Where no mail server is set up, the message waits in the outbox folder of whoever runs the
+          server.
         </Notice>
       ) : (
         <form
