@@ -22,11 +22,11 @@ it('reads shares with a decimal comma, and says what is wrong at the field', () 
     { capacity: 0.5 },
     layer.classes[0],
   ]);
-  const wrong = { ...first, name: ' ', capacity: '1.2', vigour: 'good' };
+  const wrong = { ...first, name: ' ', capacity: '1.2', vigour: ' ' };
   expect(rowErrors(wrong)).toEqual({
     name: 'Give this class a name',
-    capacity: 'Found “1.2”; a share from 0 to 1 is expected',
-    vigour: 'Found “good”; a share from 0 to 1 is expected',
+    capacity: 'Capacity: found “1.2”, expected a share from 0 to 1',
+    vigour: 'Vigour: found nothing, expected a share from 0 to 1',
   });
   expect(readRows([wrong, second])).toBeUndefined();
   expect(classesForMap([wrong])[0]).toMatchObject({ capacity: 1, vigour: 0 });

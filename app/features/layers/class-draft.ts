@@ -37,7 +37,8 @@ export function rowErrors(row: ClassRow): Partial<Record<ClassField, string>> {
     if (field === 'name')
       errors.name = row.name.trim() === '' ? 'Give this class a name' : 'At most 80 characters';
     else if (field === 'capacity' || field === 'vigour')
-      errors[field] = `Found “${row[field].trim()}”; a share from 0 to 1 is expected`;
+      errors[field] =
+        `${field === 'capacity' ? 'Capacity' : 'Vigour'}: found ${row[field].trim() === '' ? 'nothing' : `“${row[field].trim()}”`}, expected a share from 0 to 1`;
   }
   return errors;
 }

@@ -72,18 +72,15 @@ function ClassLine({ layer, row, cellSize, onChange }: Omit<ClassTableProps, 'ro
       </span>
       <span role="cell" className="min-w-0">
         {field('name', 'Name', 'w-full font-semibold')}
-        <span id={noteId} className="block px-1 text-note text-ink-2">
-          {messages.length > 0 ? (
-            <span className="text-danger">{messages.join('. ')}</span>
-          ) : (
-            <span title={`${formatCount(cells)} cells`}>
-              class {row.value}, {formatArea(cells * cellSize * cellSize)}
-            </span>
-          )}
+        <span className="block px-1 text-note text-ink-2" title={`${formatCount(cells)} cells`}>
+          class {row.value}, {formatArea(cells * cellSize * cellSize)}
         </span>
       </span>
       <span role="cell">{field('capacity', 'Capacity', 'w-full text-center font-mono font-medium')}</span>
       <span role="cell">{field('vigour', 'Vigour', 'w-full text-center font-mono font-medium')}</span>
+      <span id={noteId} className="col-span-3 col-start-2 px-1 text-note text-danger empty:hidden">
+        {messages.join('. ')}
+      </span>
     </div>
   );
 }

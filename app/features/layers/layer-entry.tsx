@@ -3,7 +3,7 @@ import { useState, type ReactNode } from 'react';
 import type { Layer } from '#contract/sites.ts';
 import { ConfirmDialog } from '#app/components/confirm-dialog.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
-import { formatBytes, formatDateTime, formatNumber, formatShare } from '#app/lib/formats.ts';
+import { formatBytes, formatDateTime, formatShare } from '#app/lib/formats.ts';
 import { deleteLayerMutation } from './change-layer.ts';
 import { Histogram } from './histogram.tsx';
 import { partLabels } from './part-words.ts';
@@ -24,7 +24,7 @@ export function LayerEntry(props: {
   return (
     <section className="border-t border-rule py-2.5" aria-label={partLabels[part]}>
       <div className="flex items-baseline justify-between gap-3">
-        <h3 className="text-body">{partLabels[part]}</h3>
+        <h2 className="text-body">{partLabels[part]}</h2>
         <span className="flex shrink-0 gap-3">
           <WordButton pressed={props.shown} onClick={props.onShow}>
             {props.shown ? 'on the map' : 'show'}
@@ -40,8 +40,8 @@ export function LayerEntry(props: {
       <div className="text-note text-ink-2">
         {noDataShare === 0
           ? 'Every cell has a value'
-          : `${formatShare(noDataShare)} of the cells have no data`}
-        {layer.noData === null ? '' : ` (marked ${formatNumber(layer.noData)})`}; stored as {layer.dataType}.
+          : `${formatShare(noDataShare)} of the cells have no data${layer.noData === null ? '' : ` (marked ${layer.noData})`}`}
+        ; stored as {layer.dataType}.
       </div>
       {props.children !== undefined && <div className="mt-1.5 text-note">{props.children}</div>}
     </section>

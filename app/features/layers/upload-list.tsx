@@ -6,12 +6,16 @@ import { ProblemNotice } from '#app/components/notice.tsx';
 import { Progress } from '#app/components/progress.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { formatBytes, formatCounted } from '#app/lib/formats.ts';
-import { partHolds } from './part-words.ts';
 import { doubledParts, type Upload } from './upload-queue.ts';
 import type { UploadStore } from './upload-store.ts';
 
 /** The files of a drop zone: each is asked for its part, then sent; what was refused stays with the reason. */
-export function UploadList(props: { store: UploadStore; taken: readonly LayerPart[] }) {
+export function UploadList(props: {
+  store: UploadStore;
+  taken: readonly LayerPart[];
+  /** whether sending is the action of the page that matters now */
+  primary: boolean;
+}) {
   const { store, taken } = props;
   const uploads = useSyncExternalStore(store.subscribe, store.snapshot);
   const asking = uploads.filter((upload) => upload.state.kind === 'asking');
@@ -30,7 +34,7 @@ export function UploadList(props: { store: UploadStore; taken: readonly LayerPar
       {asking.length > 0 && (
         <div className="mt-1 flex flex-wrap items-center gap-x-3 gap-y-1">
           <Button
-            kind="primary"
+            kind={props.primary ? 'primary' : 'quiet'}
             disabled={undecided.length > 0 || doubled.length > 0}
             onClick={() => store.tell({ type: 'confirmed', keys: asking.map((upload) => upload.key) })}
           >
@@ -101,7 +105,7 @@ function UploadEntry(props: { upload: Upload; store: UploadStore; taken: readonl
           </option>
           {layerParts.map((choice) => (
             <option key={choice} value={choice}>
-              {choice}, {partHolds[choice]}
+              {choice}
             </option>
           ))}
         </BlankSelect>

@@ -67,7 +67,11 @@ function Bands({ scale, size, compact }: PlotProps) {
         />
         {i > 0 && <path d={`M0 ${bottom}H${size.width}`} className="stroke-rule-2" />}
         {!compact && bottom - top > 13 && (
-          <text x={24} y={(top + bottom) / 2 + 4} className="fill-ink-2 text-note">
+          <text
+            x={24}
+            y={name === 'near normal' ? scale.y(0) - 5 : (top + bottom) / 2 + 4}
+            className="fill-ink-2 text-note"
+          >
             {name}
           </text>
         )}
@@ -99,7 +103,7 @@ function ToleranceLines({ tolerances, scale, compact }: PlotProps) {
         d={`M${scale.left} ${scale.y(at)}H${compact ? scale.right : scale.right + 8}`}
         strokeDasharray={dash}
         strokeWidth={1.5}
-        className="stroke-focus"
+        className="stroke-ink"
       />
       <text
         x={compact ? scale.right : scale.right + 13}

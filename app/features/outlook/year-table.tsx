@@ -42,7 +42,7 @@ export function YearTable(props: {
             <th scope="row" className="py-0.5 pl-2.5 text-left font-mono font-semibold">
               {each}
             </th>
-            <td className="py-0.5 text-center font-mono">
+            <td className="px-4 py-0.5 text-center font-mono">
               {onChange ? (
                 <IndexBlank
                   year={each}

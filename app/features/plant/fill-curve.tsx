@@ -1,4 +1,5 @@
 import { formatCounted, formatNumber, formatShare } from '#app/lib/formats.ts';
+import { ReadAsTable } from './read-as-table.tsx';
 import { fillFrom, yearsToReach, type Implications } from './implied.ts';
 
 const width = 312;
@@ -50,6 +51,11 @@ export function FillCurve({ fill, settles, doublingYears }: Implications) {
       <figcaption className="text-note text-ink-2">
         {words} From little, cover doubles every {formatNumber(doublingYears)} years, losses aside.
       </figcaption>
+      <ReadAsTable
+        caption="Cover of good ground at the end of each year"
+        heads={['year', 'cover']}
+        rows={fill.slice(0, shown + 1).map((share, year) => [String(year), formatShare(share)])}
+      />
     </figure>
   );
 }

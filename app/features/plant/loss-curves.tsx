@@ -1,5 +1,6 @@
 import type { Rates } from '#sim-core/spec/parameters.ts';
 import { formatNumber, formatShare } from '#app/lib/formats.ts';
+import { ReadAsTable } from './read-as-table.tsx';
 import { yearlyLoss, type Implications } from './implied.ts';
 
 const width = 312;
@@ -9,7 +10,7 @@ const samples = 156;
 /** Share lost in one year by drought index, on open marsh and on a full refuge. */
 export function LossCurves({ rates, halfLoss }: Pick<Implications, 'halfLoss'> & { rates: Rates }) {
   const { open, refuge } = halfLoss;
-  const driest = Math.floor(Math.min(-4, open, refuge) - 1.5);
+  const driest = Math.floor(Math.min(-4, open, refuge) - 2.5);
   const wettest = Math.ceil(Math.max(1, open + 1));
   const x = (index: number) => ((wettest - index) / (wettest - driest)) * width;
   const y = (share: number) => height - share * (height - 6);
@@ -26,6 +27,10 @@ export function LossCurves({ rates, halfLoss }: Pick<Implications, 'halfLoss'> &
   const ticks = [0, -2, -4, -6, -8, -10].filter((t) => t < wettest && t > driest);
   return (
     <figure>
+      <div aria-hidden="true" className="mb-1 flex gap-5 text-note font-semibold">
+        <Key words="open marsh" />
+        <Key words="near a mound" dash="6 3" />
+      </div>
       <svg viewBox={`0 -4 ${width} ${height + 20}`} role="img" aria-label={words} className="block w-full">
         <path d={`M0 ${y(1)}H${width}M0 ${y(0.5)}H${width}`} className="stroke-rule-2" />
         {[open, refuge].map((place) => (
@@ -52,19 +57,31 @@ export function LossCurves({ rates, halfLoss }: Pick<Implications, 'halfLoss'> &
             drier
           </text>
         </g>
-        <g className="fill-ink text-note font-semibold">
-          <text x={x(open) - 5} y={y(0.62)} textAnchor="end">
-            open marsh
-          </text>
-          <text x={x(refuge) + 6} y={y(0.18)}>
-            near a mound
-          </text>
-        </g>
       </svg>
       <figcaption className="text-note text-ink-2">
         {words} Half of the drought loss acts at {formatNumber(halfLoss.neighbours)} among full neighbours and
         at {formatNumber(halfLoss.exposed)} on fully exposed ground.
       </figcaption>
+      <ReadAsTable
+        caption="Share lost in a year, by drought index"
+        heads={['index', 'open marsh', 'near a mound']}
+        rows={[1, 0, -1, -2, -3, -4, -5, -6].map((index) => [
+          formatNumber(index),
+          formatShare(yearlyLoss(rates, open, index)),
+          formatShare(yearlyLoss(rates, refuge, index)),
+        ])}
+      />
     </figure>
+  );
+}
+
+function Key({ words, dash }: { words: string; dash?: string }) {
+  return (
+    <span className="flex items-center gap-1.5">
+      <svg width={26} height={4}>
+        <path d="M0 2h26" strokeWidth={2} strokeDasharray={dash} className="stroke-ink" />
+      </svg>
+      {words}
+    </span>
   );
 }

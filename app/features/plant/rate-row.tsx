@@ -44,7 +44,7 @@ function RangeRule({ rate, value }: { rate: RateName; value: number }) {
     length * (byLogarithm ? Math.log(x / min) / Math.log(max / min) : (x - min) / (max - min));
   return (
     <div aria-hidden="true" className="mt-1.5 flex items-center gap-2 font-mono text-axis text-ink-2">
-      <span>{formatNumber(min, 4)}</span>
+      <span className="w-11">{formatNumber(min, 4)}</span>
       <svg viewBox={`-4 0 ${length + 8} 12`} className="h-3 w-full max-w-[248px] overflow-visible">
         <path d={`M0 8.5H${length}`} className="stroke-rule" />
         <path d={`M0 5v7M${length} 5v7`} className="stroke-ink-3" />

@@ -39,7 +39,7 @@ describe('siteSteps', () => {
     expect(step('ground', { layers: [layer('cover')] }).share).toBeCloseTo(1 / 3);
     expect(step('ground', { layers: [layer('habitat')] })).toMatchObject({ state: 'cover is missing' });
     expect(step('ground', { layers: [layer('habitat'), layer('cover')] })).toMatchObject({
-      state: 'habitat has no classes yet',
+      state: 'habitat needs classes',
     });
     expect(step('ground', { layers: [layer('habitat'), layer('cover')] }).share).toBeCloseTo(2 / 3);
     expect(
@@ -51,12 +51,12 @@ describe('siteSteps', () => {
   });
 
   it('does not call starting values set', () => {
-    expect(step('plant')).toMatchObject({ state: 'starting values, not yet looked at', share: 0 });
-    expect(step('plant', { plantSet: true })).toMatchObject({ state: 'set: Cordgrass', share: 1 });
-    expect(step('outlook')).toMatchObject({ state: '3 years, not yet looked at', share: 0 });
+    expect(step('plant')).toMatchObject({ state: 'not yet looked at', share: 0 });
+    expect(step('plant', { plantSet: true })).toMatchObject({ state: 'set', share: 1 });
+    expect(step('outlook')).toMatchObject({ state: 'not yet looked at', share: 0 });
   });
 
-  it('names the first year that kills open marsh', () => {
+  it('names the year that kills open marsh, or counts them', () => {
     expect(step('outlook', { outlookSet: true })).toMatchObject({ state: '3 years, drought 2029', share: 1 });
     const two = {
       surveyYear: 2026,
@@ -66,7 +66,7 @@ describe('siteSteps', () => {
       droughtIndex: [-3, -4],
     } as const;
     expect(step('outlook', { outlookSet: true, outlook: { ...two, droughtIndex: [-3, -4] } }).state).toBe(
-      '2 years, drought 2027 and 1 more',
+      '2 years, 2 of drought',
     );
     expect(step('outlook', { outlookSet: true, outlook: { ...two, droughtIndex: [0, 1] } }).state).toBe(
       '2 years, no drought',

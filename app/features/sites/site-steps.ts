@@ -56,12 +56,12 @@ function groundState({ layers, grid }: StatedSite): State {
   if (layers.length === 0) return ['no layers yet', 0];
   if (missing.includes('habitat')) return ['habitat is missing', done];
   if (missing.includes('cover')) return ['cover is missing', done];
-  if (missing.includes('classes')) return ['habitat has no classes yet', done];
+  if (missing.includes('classes')) return ['habitat needs classes', done];
   return [`${formatCounted(layers.length, 'layer')} on a ${formatNumber(grid.cellSize)} m grid`, 1];
 }
 
-function plantState({ plant, plantSet }: StatedSite): State {
-  return plantSet ? [`set: ${plant.name}`, 1] : ['starting values, not yet looked at', 0];
+function plantState({ plantSet }: StatedSite): State {
+  return plantSet ? ['set', 1] : ['not yet looked at', 0];
 }
 
 /** The years whose drought index lies below what open marsh bears. */
@@ -74,10 +74,10 @@ export function killingYears(
 
 function outlookState({ outlook, outlookSet, plant }: StatedSite): State {
   const years = formatCounted(outlook.years, 'year');
-  if (!outlookSet) return [`${years}, not yet looked at`, 0];
+  if (!outlookSet) return ['not yet looked at', 0];
   const killing = killingYears(outlook, plant.rates.tolerance);
   if (killing.length === 0) return [`${years}, no drought`, 1];
-  return [`${years}, drought ${killing[0]}${killing.length > 1 ? ` and ${killing.length - 1} more` : ''}`, 1];
+  return [`${years}, ${killing.length === 1 ? `drought ${killing[0]}` : `${killing.length} of drought`}`, 1];
 }
 
 function optionsState(options: number): State {

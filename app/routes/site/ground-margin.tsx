@@ -24,6 +24,8 @@ interface GroundMarginProps {
   onShow: (part: LayerPart) => void;
   uploads: UploadStore;
   taken: readonly LayerPart[];
+  /** the class table waits to be saved, so that is the action that matters now */
+  unsaved: boolean;
   onFiles: (files: File[]) => void;
 }
 
@@ -67,7 +69,7 @@ export function GroundMargin(props: GroundMarginProps) {
       {mayKeepGround ? (
         <section aria-label="Add layers" className="border-t border-ink pt-3">
           <h2 className="mb-2 text-body">Add or replace a layer</h2>
-          <UploadList store={props.uploads} taken={props.taken} />
+          <UploadList store={props.uploads} taken={props.taken} primary={!props.unsaved} />
           <FileDrop
             label="Drop GeoTIFFs here"
             hint="One band each, on the same cells as the working grid. A layer of the same part is replaced; runs keep the old one."
@@ -88,10 +90,10 @@ export function GroundMargin(props: GroundMarginProps) {
 function MissingPart({ part }: { part: LayerPart }) {
   return (
     <section className="border-t border-rule py-2.5" aria-label={partLabels[part]}>
-      <h3 className="text-body text-ink-2">
+      <h2 className="text-body text-ink-2">
         {partLabels[part]}{' '}
         <span className="text-note font-normal">{part === 'refuge' ? 'none' : 'is missing'}</span>
-      </h3>
+      </h2>
       <p className="text-note text-ink-2">{partReasons[part]}</p>
     </section>
   );
@@ -136,7 +138,7 @@ function EngineView({ rasters, classes }: Pick<GroundMarginProps, 'rasters' | 'c
   return (
     <section className="border-t border-ink py-3" aria-label="What the engine will see">
       <h2 className="mb-1 text-body">What the engine will see</h2>
-      <dl className="grid grid-cols-[1fr_auto] gap-x-3 text-[13px] [&>dd]:text-right [&>dd]:font-semibold [&>div]:contents">
+      <dl className="grid grid-cols-[1fr_auto] gap-x-3 text-[13px] [&_dd]:text-right [&_dd]:font-semibold [&>div]:contents">
         <div>
           <dt>can hold the plant</dt>
           <dd>

@@ -67,7 +67,11 @@ export function Page() {
       map={<GroundMap shown={shown} rasters={rasters} classes={shownClasses} />}
       margin={
         <>
-          <GroundMargin {...{ rasters, classes, shown, uploads, taken }} onShow={show} onFiles={addFiles} />
+          <GroundMargin
+            {...{ rasters, classes, shown, uploads, taken, unsaved }}
+            onShow={show}
+            onFiles={addFiles}
+          />
           <LeaveGuard when={mayKeepGround && classes.dirty} what="The class table" />
         </>
       }

@@ -1,6 +1,6 @@
 import { useQuery, useQueryClient } from '@tanstack/react-query';
 import { useRef, useState, type FormEvent } from 'react';
-import { useNavigate, useParams } from 'react-router-dom';
+import { Navigate, useParams } from 'react-router-dom';
 import { layerParts, type LayerPart } from '#contract/sites.ts';
 import { Button } from '#app/components/button.tsx';
 import { FileDrop } from '#app/components/file-drop.tsx';
@@ -37,7 +37,11 @@ export function Page() {
   return <NewSite teamId={teamId} teamName={team.teamName} />;
 }
 
-type Sending = { kind: 'idle' } | { kind: 'sending'; sent: Sent } | { kind: 'refused'; error: unknown };
+type Sending =
+  | { kind: 'idle' }
+  | { kind: 'sending'; sent: Sent }
+  | { kind: 'refused'; error: unknown }
+  | { kind: 'made'; siteId: string };
 
 function NewSite({ teamId, teamName }: { teamId: string; teamName: string }) {
   const [name, setName] = useState('');
@@ -47,7 +51,6 @@ function NewSite({ teamId, teamName }: { teamId: string; teamName: string }) {
   const [sending, setSending] = useState<Sending>({ kind: 'idle' });
   const abort = useRef<AbortController>(undefined);
   const queryClient = useQueryClient();
-  const navigate = useNavigate();
   const busy = sending.kind === 'sending';
   const choose = (chosen: File) => {
     setFile(chosen);
@@ -71,12 +74,13 @@ function NewSite({ teamId, teamName }: { teamId: string; teamName: string }) {
         onProgress: (sent) => setSending({ kind: 'sending', sent }),
         signal: controller.signal,
       });
-      setSending({ kind: 'idle' });
-      void navigate(`/sites/${site.id}/ground`);
+      setSending({ kind: 'made', siteId: site.id });
     } catch (error) {
       setSending(controller.signal.aborted ? { kind: 'idle' } : { kind: 'refused', error });
     }
   };
+  // By rendering, so that the guard against leaving is gone first.
+  if (sending.kind === 'made') return <Navigate to={`/sites/${sending.siteId}/ground`} replace />;
   const refusal = sending.kind === 'refused' ? sending.error : undefined;
   const nameRefusal = refusal instanceof ProblemError ? refusal.fields.name : undefined;
 

@@ -54,7 +54,7 @@ export function Page() {
     <SitePage
       step="plant"
       sheet={
-        <div className="max-w-[860px]">
+        <div className="max-w-[960px]">
           <h1 className="text-figure font-heavy tracking-tight">Plant</h1>
           <p className="mt-1 mb-4 max-w-[62ch] text-lead text-ink-2">
             {site.plantSet

@@ -24,7 +24,7 @@ export function SitePage({
       staff={
         <TideStaff
           title={site.name}
-          note={`Foothold, ${teamName}${site.invented ? ', invented' : ''}`}
+          note={`${site.invented ? 'Invented' : 'Foothold'}: ${teamName}`}
           steps={steps}
           current={step}
           person={<PersonMenu note={role} />}
