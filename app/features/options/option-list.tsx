@@ -1,4 +1,5 @@
 import type { Option } from '#contract/sites.ts';
+import type { Action } from '#sim-core/spec/run-spec.ts';
 import { FlagSymbol, PlantingSymbol, WaitSymbol } from '#app/components/symbols.tsx';
 import { classNames } from '#app/lib/class-names.ts';
 import { worksInWords } from './works-words.ts';
@@ -7,6 +8,8 @@ import { worksInWords } from './works-words.ts';
 export function OptionList(props: {
   options: readonly Option[];
   chosen: string;
+  /** works of the chosen one as they are drawn now */
+  drawn: readonly Action[];
   /** those with a drawing in this tab that is not saved */
   unsaved: (option: Option) => boolean;
   onChoose: (optionId: string) => void;
@@ -15,9 +18,8 @@ export function OptionList(props: {
     <ul className="-mx-4 lg:-mr-7 lg:-ml-6">
       {props.options.map((option) => {
         const chosen = option.id === props.chosen;
-        const words = option.wait
-          ? 'no works: what every option is measured against'
-          : worksInWords(option.works);
+        const works = chosen ? props.drawn : option.works;
+        const words = option.wait ? 'no works: what every option is measured against' : worksInWords(works);
         return (
           <li key={option.id} className="border-t border-rule-2 first:border-rule">
             <button
@@ -30,7 +32,7 @@ export function OptionList(props: {
               )}
             >
               <span className="pt-px">
-                <OptionSymbol option={option} />
+                <OptionSymbol works={works} />
               </span>
               <span className="min-w-0">
                 <span
@@ -54,7 +56,7 @@ export function OptionList(props: {
   );
 }
 
-function OptionSymbol({ option }: { option: Option }) {
-  if (option.wait || option.works.length === 0) return <WaitSymbol />;
-  return option.works.some((work) => work.kind === 'mound') ? <FlagSymbol /> : <PlantingSymbol />;
+function OptionSymbol({ works }: { works: readonly Action[] }) {
+  if (works.length === 0) return <WaitSymbol />;
+  return works.some((work) => work.kind === 'mound') ? <FlagSymbol /> : <PlantingSymbol />;
 }

@@ -24,7 +24,7 @@ export const countOf = (kind: Action['kind'], count: number): string => formatCo
 
 /** Works in one line: `40 mounds in 2027 and 2028; 3 plantings in 2027`. */
 export function worksInWords(works: readonly Action[]): string {
-  if (works.length === 0) return 'nothing drawn yet';
+  if (works.length === 0) return 'no works';
   return [...new Set(works.map((work) => work.kind))]
     .map((kind) => {
       const mine = works.filter((work) => work.kind === kind);

@@ -26,11 +26,13 @@ export function StartForm(props: {
   startId: string | undefined;
   /** names that are taken, so that a new one can be told apart */
   names: readonly string[];
+  /** the newest finished run of Wait: with its seed, the difference is what the works did */
+  waitRun: { name: string; seed: string } | undefined;
   busy: boolean;
   error: unknown;
   onStart: (run: StartedRun) => void;
 }) {
-  const { site, options, names } = props;
+  const { site, options, names, waitRun } = props;
   const [optionId, setOptionId] = useState(
     options.find(({ id }) => id === props.startId)?.id ?? options[0].id,
   );
@@ -87,6 +89,11 @@ export function StartForm(props: {
         <WordButton lined onClick={() => setSeed(randomSeed())}>
           another seed
         </WordButton>
+        {waitRun && !option.wait && seed !== waitRun.seed && (
+          <WordButton lined onClick={() => setSeed(waitRun.seed)}>
+            same luck as “{waitRun.name}”
+          </WordButton>
+        )}
         <span>and keep it as</span>
         <Blank
           label="Name of the run"

@@ -30,7 +30,8 @@ export function OptionMargin(props: {
   const { options, option, drawing } = props;
   const { draft } = drawing;
   const mound = moundsOf(draft.works).find((work) => work.key === draft.selected);
-  const groups = worksByYear(draft.works.map((work) => work.action));
+  const drawn = draft.works.map((work) => work.action);
+  const groups = worksByYear(drawn);
   const unsaved = (other: Option) =>
     other.id === option.id ? drawing.unsaved : !other.wait && isUnsaved(restoreDraft(other));
   return (
@@ -66,7 +67,7 @@ export function OptionMargin(props: {
           {formatCounted(options.length - 1, 'option')} beside Wait
         </span>
       </div>
-      <OptionList {...{ options, unsaved }} chosen={option.id} onChoose={props.onChoose} />
+      <OptionList {...{ options, drawn, unsaved }} chosen={option.id} onChoose={props.onChoose} />
       {props.mayDraw && <OptionDeeds {...props} />}
       <h2 className="mt-4 mb-1 border-t border-rule pt-2 text-body font-bold">Works in {option.name}</h2>
       {groups.length === 0 ? (

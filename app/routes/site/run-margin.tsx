@@ -47,6 +47,7 @@ export function RunMargin(props: {
         </p>
       )}
       <RunState run={run} live={live} />
+      <RunCheck run={run} live={live} />
       {result?.warnings.map((warning) => (
         <Notice key={warning} title="Mind:" className="my-2">
           {warning}
@@ -68,7 +69,6 @@ export function RunMargin(props: {
         year={year}
       />
       <RunFacts run={run} result={result} />
-      <RunCheck run={run} live={live} />
       <RunExports run={run} year={props.frameYear} />
       {mayDraw && (
         <div className="flex flex-wrap gap-x-4 border-t border-rule pt-1">

@@ -45,6 +45,7 @@ export function Page() {
 
   const listed = runs.data?.runs ?? [];
   const total = runs.data?.total ?? 0;
+  const waitId = options.data?.find(({ wait }) => wait)?.id;
   const startId = search.get('start') ?? undefined;
   return (
     <SitePage step="runs">
@@ -64,6 +65,7 @@ export function Page() {
             key={startId ?? 'first'}
             {...{ site, startId }}
             options={options.data}
+            waitRun={listed.find(({ optionId, status }) => status === 'finished' && optionId === waitId)}
             names={listed.map(({ name }) => name)}
             busy={register.isPending}
             error={register.error}
