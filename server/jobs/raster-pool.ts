@@ -33,17 +33,21 @@ export function createRasterPool(settings: Partial<RasterPoolSettings> = {}): Ra
     execArgv: fromSources ? ['--import', 'tsx'] : [],
     minThreads: 0,
     maxThreads: 1,
-    maxQueue: queue,
     idleTimeout: 10_000,
     resourceLimits: { maxOldGenerationSizeMb: 512, maxYoungGenerationSizeMb: 64 },
   });
+  // Piscina's own limit lets everything through while its worker is starting.
+  let unfinished = 0;
   return {
     async run<K extends keyof TaskResults>(task: Extract<RasterTask, { kind: K }>) {
+      if (unfinished > queue) throw busy();
+      unfinished++;
       const answer = (await pool
         .run(task, { signal: AbortSignal.timeout(longestMs) })
         .catch((error: unknown) => {
           throw breakdown(error);
-        })) as { value: TaskResults[K] } | { refused: Refusal };
+        })
+        .finally(() => unfinished--)) as { value: TaskResults[K] } | { refused: Refusal };
       if ('value' in answer) return answer.value;
       const { code, message, ...parts } = answer.refused;
       throw new ProblemError(code, message, parts);
@@ -52,14 +56,15 @@ export function createRasterPool(settings: Partial<RasterPoolSettings> = {}): Ra
   };
 }
 
+const busy = () =>
+  new ProblemError(
+    'too-many-requests',
+    'The server is working through other rasters and as many wait as it takes. Try again in a minute.',
+  );
+
 /** What became of a task that did not come to its end. */
 function breakdown(error: unknown): unknown {
-  const { name, code, message } = error as Error & { code?: string };
-  if (message === 'Task queue is at limit')
-    return new ProblemError(
-      'too-many-requests',
-      'The server is working through other rasters and as many wait as it takes. Try again in a minute.',
-    );
+  const { name, code } = error as Error & { code?: string };
   if (name === 'AbortError')
     return new ProblemError(
       'raster-too-large',

@@ -39,7 +39,7 @@ describe('a run', () => {
       digest: null,
       result: null,
     });
-    const finished = (await sendRun(manager, id, computed).then((reply) => reply.body)) as Run;
+    const finished = (await sendRun(manager, id, computed)).body as Run;
     expect(finished).toMatchObject({
       status: 'finished',
       digest: computed.result.digest,
