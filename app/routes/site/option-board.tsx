@@ -146,7 +146,6 @@ export function OptionBoard(props: {
           onYear={setYear}
           droughtIndex={outlook.droughtIndex}
           tolerances={tolerancesOf(site.plant.rates)}
-          heading="The outlook’s drought index hangs below; works stand as flags"
           label="Year that the map shows"
         />
       }
