@@ -1,4 +1,5 @@
 import { readFile } from 'node:fs/promises';
+import { setImmediate as nextTurn } from 'node:timers/promises';
 import { encodeGeoTiff, type WritableValues } from '#rasters/write/geotiff.ts';
 import { csv, seriesColumns, seriesCsv } from '#server/files/series-csv.ts';
 import { cannotClose, createRun, engineVersion, RunProblem, type RunResult } from '#sim-core/index.ts';
@@ -67,6 +68,8 @@ async function runAll(
         if (maps) maps.addCover(year.year, run.cover());
         else await folder.write(`cover-${year.year}.tif`, coverMap(year.year, run.cover()));
       }
+      // A year is computed in one go; between years the process must be able to hear that it is to stop.
+      await nextTurn();
       const next = run.nextYear(onStep);
       if (!next) break;
       year = next;
