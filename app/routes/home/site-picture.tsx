@@ -50,6 +50,8 @@ export function SitePicture({ site, latest }: { site: SiteSummary; latest: RunSu
         <span className="font-mono text-axis">{latest.surveyYear + 1}</span>
         <span aria-hidden="true" className={`h-2 w-24 ${closingRamp}`} />
         <span className="font-mono text-axis">{raster.lastYear}</span>
+        <span aria-hidden="true" className="size-2 bg-late" />
+        <span>still open</span>
       </figcaption>
     </figure>
   );
