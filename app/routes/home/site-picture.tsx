@@ -46,7 +46,9 @@ export function SitePicture({ site, latest }: { site: SiteSummary; latest: RunSu
         className="max-h-[300px] w-full border border-rule object-cover"
       />
       <figcaption className="mt-1.5 flex flex-wrap items-center gap-x-2 text-note text-ink-2">
-        <span className="min-w-0 flex-1 truncate">Closing year, latest run: {latest.optionName}</span>
+        <span className="min-w-0 flex-1 truncate max-sm:basis-full">
+          Closing year, latest run: {latest.optionName}
+        </span>
         <span className="font-mono text-axis">{latest.surveyYear + 1}</span>
         <span aria-hidden="true" className={`h-2 w-24 ${closingRamp}`} />
         <span className="font-mono text-axis">{raster.lastYear}</span>
