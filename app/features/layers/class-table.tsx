@@ -111,7 +111,12 @@ export function ClassList({ layer, rows, cellSize }: Omit<ClassTableProps, 'onCh
             </span>
           ),
         },
-        { key: 'area', head: 'area', number: true, cell: (row) => formatArea(area(row.value)) },
+        {
+          key: 'area',
+          head: 'area',
+          number: true,
+          cell: (row) => <span className="whitespace-nowrap">{formatArea(area(row.value))}</span>,
+        },
         { key: 'capacity', head: 'capacity', number: true, cell: (row) => row.capacity },
         { key: 'vigour', head: 'vigour', number: true, cell: (row) => row.vigour },
       ]}

@@ -37,7 +37,7 @@ export function DroughtPlot(props: PlotProps) {
           y={Math.min(datum, scale.y(index))}
           width={scale.yearWidth * 0.82}
           height={Math.max(index === 0 ? 0 : 1, Math.abs(scale.y(index) - datum))}
-          className={index < tolerances.open ? 'fill-ink' : index < 0 ? 'fill-shore' : 'fill-water'}
+          className={index < tolerances.open ? 'fill-ink' : index < 0 ? 'fill-shore' : 'fill-shore/60'}
         />
       ))}
       <path d={`M0 ${datum}H${size.width}`} strokeWidth={1.5} className="stroke-ink" />

@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import { classNames } from '#app/lib/class-names.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
-import { yearEffect, type Tolerances, type YearIndex } from './outlook-words.ts';
+import type { Tolerances, YearIndex } from './outlook-words.ts';
 import { palmerClass } from './palmer-classes.ts';
 
 /** The drought record as a table, in which single years are typed. */
@@ -40,9 +40,21 @@ export function YearTable(props: {
             )}
           >
             <th scope="row" className="py-0.5 pl-2.5 text-left font-mono font-semibold">
-              {each}
+              {onChange ? (
+                each
+              ) : (
+                <button
+                  type="button"
+                  aria-label={`Read ${each} on the drawing`}
+                  aria-pressed={each === year}
+                  className="min-h-6 touch:min-h-11 hover:underline"
+                  onClick={() => onYear(each)}
+                >
+                  {each}
+                </button>
+              )}
             </th>
-            <td className="px-4 py-0.5 text-center font-mono">
+            <td className="px-3 py-0.5 text-center font-mono">
               {onChange ? (
                 <IndexBlank
                   year={each}
@@ -58,7 +70,7 @@ export function YearTable(props: {
               {palmerClass(index)}
               {index < tolerances.open && (
                 <span className="block text-note font-normal text-ink-2">
-                  {yearEffect(index, tolerances)}
+                  {index < tolerances.mound ? 'kills near a mound too' : 'kills open marsh'}
                 </span>
               )}
             </td>

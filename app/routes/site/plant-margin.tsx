@@ -22,7 +22,7 @@ export function PlantMargin({ implied, rates }: { implied: Implications; rates: 
       <Part title="A straight edge moves">
         {kernel === undefined ? (
           <Notice kind="problem" title="No front.">
-            {implied.problems.map(({ message }) => message).join(' ')}
+            {implied.problems.map(({ message }) => `${message}.`).join(' ')}
           </Notice>
         ) : (
           <>
