@@ -19,6 +19,8 @@ export default defineConfig({
   outputDir: join(root, '.build/browser'),
   reporter: process.env.PLAYWRIGHT_JSON_OUTPUT_FILE ? [['list'], ['json']] : 'list',
   workers: 1,
+  // The camera runs by `npm run screenshots` alone.
+  ...(process.env.SCREENSHOTS ? { grep: /@screenshots/ } : { grepInvert: /@screenshots/ }),
   timeout: 180_000,
   expect: { timeout: 30_000 },
   use: {

@@ -1,0 +1,13 @@
+/** Every page behind the door, by name. */
+export const pagesOf = ({ teamId, siteId, runId }: { teamId: string; siteId: string; runId: string }) => ({
+  home: '/',
+  team: `/team/${teamId}`,
+  account: '/account',
+  'new-site': `/teams/${teamId}/new-site`,
+  ground: `/sites/${siteId}/ground`,
+  plant: `/sites/${siteId}/plant`,
+  outlook: `/sites/${siteId}/outlook`,
+  options: `/sites/${siteId}/options`,
+  runs: `/sites/${siteId}/runs`,
+  run: `/sites/${siteId}/runs/${runId}?year=2043`,
+});

@@ -1,0 +1,30 @@
+import AxeBuilder from '@axe-core/playwright';
+import { demoAddresses } from './addresses.ts';
+import { pagesOf } from './all-pages.ts';
+import { demoPeople } from './people.ts';
+import { expect, signIn, test } from './test.ts';
+
+for (const [width, theme] of [
+  [1440, 'light'],
+  [390, 'dark'],
+] as const)
+  test(`every page is accessible and fits at ${width} wide, ${theme}`, async ({ page }) => {
+    await page.setViewportSize({ width, height: width > 500 ? 900 : 844 });
+    await page.emulateMedia({ colorScheme: theme });
+    const check = async (name: string, path: string) => {
+      await page.goto(path);
+      await expect(page.locator('h1, h2').first()).toBeVisible();
+      await expect(page.locator('[aria-busy=true]')).toHaveCount(0);
+      const { violations } = await new AxeBuilder({ page }).analyze();
+      expect(
+        violations.map(({ id, nodes }) => `${id}: ${nodes.map(({ target }) => String(target)).join(' | ')}`),
+        name,
+      ).toEqual([]);
+      const overflow = await page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth);
+      expect(overflow, `${name} scrolls sideways`).toBeLessThanOrEqual(0);
+    };
+    await check('sign-in', '/sign-in');
+    await check('forgot', '/forgot');
+    await signIn(page, demoPeople.admin);
+    for (const [name, path] of Object.entries(pagesOf(await demoAddresses(page)))) await check(name, path);
+  });

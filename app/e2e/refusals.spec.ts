@@ -1,0 +1,26 @@
+import { readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { demoPeople } from './people.ts';
+import { writeRasters } from './raster-files.ts';
+import { expect, signIn, test } from './test.ts';
+
+const fixtures = join(import.meta.dirname, '../../rasters/fixtures');
+
+test('a file that cannot be used is refused with what was found and how to mend it', async ({ page }) => {
+  const { habitat } = writeRasters();
+  await signIn(page, demoPeople.modeller);
+  await page.getByRole('link', { name: 'New site' }).click();
+  await page.getByLabel('Name of the site').fill('Refused');
+  const send = async (name: string, bytes: Buffer) => {
+    await page.locator('input[type=file]').setInputFiles({ name, mimeType: 'image/tiff', buffer: bytes });
+    await page.getByRole('button', { name: 'Make the site' }).click();
+    await expect(page.getByText(`${name} was refused.`)).toBeVisible();
+  };
+  const whole = readFileSync(habitat);
+  await send('cut-short.tif', whole.subarray(0, whole.length >> 1));
+  await send('picture.tif', Buffer.from('\x89PNG\r\n\x1a\n and so on', 'latin1'));
+  await send('degrees.tif', readFileSync(join(fixtures, 'bad-degrees.tif')));
+  await expect(page.getByText(/gdalwarp/)).toBeVisible();
+  await page.goto('/');
+  await expect(page.getByRole('link', { name: 'Refused' })).toHaveCount(0);
+});
