@@ -1,6 +1,10 @@
 import { unzlibSync, zlibSync } from 'fflate';
 import { describe, expect, it } from 'vitest';
 import { CellValuesError, decodeCellValues, encodeCellValues, type CellArray } from './cell-values.ts';
+import { unpackCellValues } from './unpack-cell-values.ts';
+
+const unpack = (packed: Uint8Array, limits?: { cells: number }) =>
+  unpackCellValues(new Uint8Array(packed), limits);
 
 const arrays: CellArray[] = [
   { width: 3, height: 2, values: Uint8Array.of(0, 1, 127, 128, 254, 255) },
@@ -20,6 +24,12 @@ describe('cell values', () => {
     expect(back.values.constructor).toBe(array.values.constructor);
   });
 
+  it.each(arrays)('come back by the host’s inflater alike: $values', async (array) => {
+    const back = await unpack(encodeCellValues(array));
+    expect(back).toEqual(array);
+    expect(back.values.constructor).toBe(array.values.constructor);
+  });
+
   it('are laid out as described, little-endian', () => {
     const packed = encodeCellValues({ width: 2, height: 1, values: Int16Array.of(1, -2) });
     expect([...packed.subarray(0, 16)]).toEqual([0x46, 0x48, 0x43, 0x56, 1, 3, 0, 0, 2, 0, 0, 0, 1, 0, 0, 0]);
@@ -34,10 +44,11 @@ describe('cell values', () => {
     expect(decodeCellValues(shifted.subarray(5)).values).toEqual(values);
   });
 
-  it('of a whole site come back', () => {
+  it('of a whole site come back', async () => {
     const values = Uint8Array.from({ length: 640 * 372 }, (_, i) => (i * 7919) >> 5);
-    const back = decodeCellValues(encodeCellValues({ width: 640, height: 372, values })).values as Uint8Array;
-    expect(Buffer.compare(back, values)).toBe(0);
+    const packed = encodeCellValues({ width: 640, height: 372, values });
+    expect(Buffer.compare(decodeCellValues(packed).values as Uint8Array, values)).toBe(0);
+    expect(Buffer.compare((await unpack(packed)).values as Uint8Array, values)).toBe(0);
   });
 
   it('refuse an array that does not fit its size', () => {
@@ -67,21 +78,32 @@ describe('refused before inflating', () => {
     ['more cells than values', changed(8, 5), /damaged: found 16 bytes where 20 belong/],
     ['fewer cells than values', changed(8, 3), /damaged: found more than the 12 bytes/],
     ['a cut', good.subarray(0, good.length - 3), /damaged/],
-  ])('%s', (_, packed, message) => {
+  ])('%s', async (_, packed, message) => {
     expect(() => decodeCellValues(packed)).toThrow(CellValuesError);
     expect(() => decodeCellValues(packed)).toThrow(message);
+    await expect(unpack(packed)).rejects.toThrow(CellValuesError);
+    await expect(unpack(packed)).rejects.toThrow(message);
   });
 
-  it('what passes the limit given', () => {
+  it('a changed byte, by the checksum', async () => {
+    const packed = good.slice();
+    packed[packed.length - 1] ^= 1;
+    expect(() => decodeCellValues(packed)).toThrow(/damaged/);
+    await expect(unpack(packed)).rejects.toThrow(/damaged/);
+  });
+
+  it('what passes the limit given', async () => {
     expect(() => decodeCellValues(good, { cells: 15 })).toThrow(/at most 15/);
+    await expect(unpack(good, { cells: 15 })).rejects.toThrow(/at most 15/);
     expect(decodeCellValues(good, { cells: 16 }).values).toHaveLength(16);
   });
 
-  it('a body that inflates past its size', () => {
+  it('a body that inflates past its size', async () => {
     const bomb = zlibSync(new Uint8Array(50_000_000));
     const packed = new Uint8Array(16 + bomb.length);
     packed.set(good.subarray(0, 16));
     packed.set(bomb, 16);
     expect(() => decodeCellValues(packed)).toThrow(/more than the 16 bytes/);
+    await expect(unpack(packed)).rejects.toThrow(/more than the 16 bytes/);
   });
 });
