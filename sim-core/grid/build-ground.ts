@@ -1,8 +1,8 @@
 import { RunProblem } from '#sim-core/run/run-problem.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
 import type { LayerSource, LayerSources } from '#sim-core/spec/run-spec.ts';
-import { groundLayers, ShareError, toBytes, toShares } from './ground.ts';
-import type { CellValues, Ground, GroundLayer } from './ground.ts';
+import { constantBytes, groundLayers, ShareError, toShareBytes, toShares } from './ground.ts';
+import type { CellValues, Ground, GroundLayer, ShareMapping } from './ground.ts';
 
 /** Cells of a raster on the working grid, row-major. */
 export interface RasterValues {
@@ -26,22 +26,26 @@ export function buildGround(
   rasterOf: (source: RasterSource, layer: GroundLayer) => RasterValues,
 ): Ground {
   const problems: FieldProblem[] = [];
-  const sharesOf = (layer: GroundLayer): Float32Array => {
+  const held = <T extends Float32Array | Uint8Array>(
+    layer: GroundLayer,
+    constant: (share: number) => T,
+    ofRaster: (values: CellValues, mapping: ShareMapping) => T,
+  ): T => {
     const source = layers[layer];
-    if (typeof source === 'number') return new Float32Array(cells).fill(source);
+    if (typeof source === 'number') return constant(source);
     try {
       const { values, noData } = rasterOf(source, layer);
-      return toShares(values, { ...source, noData });
+      return ofRaster(values, { ...source, noData });
     } catch (error) {
       if (!(error instanceof ShareError)) throw error;
       problems.push({ field: `layers.${layer}`, message: error.message });
-      return new Float32Array();
+      return constant(0);
     }
   };
   const [capacity, vigour, exposure, refuge, fence] = groundLayers
     .filter((layer) => layer !== 'cover')
-    .map((layer) => toBytes(sharesOf(layer)));
-  const cover = sharesOf('cover');
+    .map((layer) => held(layer, (share) => constantBytes(cells, share), toShareBytes));
+  const cover = held('cover', (share) => new Float32Array(cells).fill(share), toShares);
   if (problems.length > 0) throw new RunProblem(problems);
   return { capacity, vigour, exposure, refuge, fence, cover };
 }

@@ -1,3 +1,5 @@
+import { mapValues } from './map-values.ts';
+
 /**
  * What the engine stands on: one value a cell, row-major, all of width × height.
  * Shares are held in 8 bits (k/255): finer than any survey, small, and exactly what is hashed.
@@ -46,33 +48,55 @@ export class ShareError extends Error {
  * @throws ShareError naming the first value that leaves 0..1 (beyond rounding) and the cell it stands in
  */
 export function toShares(values: CellValues, mapping: ShareMapping = {}): Float32Array {
+  return checked(values, mapping, (shareOf) => mapValues(values, new Float32Array(values.length), shareOf));
+}
+
+/**
+ * The shares of a raster's cells held in 8 bits, round(255 × share) of the Float32 share: what `toBytes` makes of
+ * `toShares`, without the array in between.
+ * @throws ShareError as `toShares`
+ */
+export function toShareBytes(values: CellValues, mapping: ShareMapping = {}): Uint8Array {
+  return checked(values, mapping, (shareOf) =>
+    mapValues(values, new Uint8Array(values.length), (value) =>
+      Math.round(Math.fround(shareOf(value)) * 255),
+    ),
+  );
+}
+
+/** Hands out the mapping of one value, and refuses afterwards where a cell holds what it has no share for. */
+function checked<T>(
+  values: CellValues,
+  mapping: ShareMapping,
+  make: (shareOf: (value: number) => number) => T,
+): T {
   const { scale = 1, offset = 0, classes, noData, fill = 0 } = mapping;
-  const shares = new Float32Array(values.length);
   const table = classes && new Map(Object.entries(classes).map(([k, v]) => [Number(k), v]));
-  for (let i = 0; i < values.length; i++) {
-    const value = values[i];
-    if (Number.isNaN(value) || value === noData) {
-      shares[i] = fill;
-      continue;
-    }
+  const refused = new Set<number>();
+  const made = make((value) => {
+    if (Number.isNaN(value) || value === noData) return fill;
     const share = table ? (table.get(value) ?? fill) : value * scale + offset;
-    if (!(share >= -1e-6 && share <= 1 + 1e-6))
-      throw new ShareError(
-        `Cell ${i} holds ${value}${scale === 1 && offset === 0 ? '' : ` (${share} after scale and offset)`}; ` +
-          'a share must lie between 0 and 1. Give a scale (0.01 for per cent, 1/255 for 8 bits) or a class table.',
-      );
-    shares[i] = Math.min(1, Math.max(0, share));
-  }
-  return shares;
+    if (share >= -1e-6 && share <= 1 + 1e-6) return Math.min(1, Math.max(0, share));
+    // A table is asked about values that no cell holds, too, so this is no error yet; one of many is enough.
+    if (refused.size < 65_536) refused.add(value);
+    return 0;
+  });
+  if (refused.size === 0) return made;
+  const cell = values.findIndex((value: number) => refused.has(value));
+  if (cell < 0) return made;
+  const value = values[cell];
+  const share = table ? (table.get(value) ?? fill) : value * scale + offset;
+  throw new ShareError(
+    `Cell ${cell} holds ${value}${scale === 1 && offset === 0 ? '' : ` (${share} after scale and offset)`}; ` +
+      'a share must lie between 0 and 1. Give a scale (0.01 for per cent, 1/255 for 8 bits) or a class table.',
+  );
 }
 
 /** Shares held in 8 bits: round(255 × share). */
 export function toBytes(shares: Float32Array): Uint8Array {
-  const bytes = new Uint8Array(shares.length);
-  for (let i = 0; i < shares.length; i++) bytes[i] = Math.round(shares[i] * 255);
-  return bytes;
+  return mapValues(shares, new Uint8Array(shares.length), (share) => Math.round(share * 255));
 }
 
-/** A constant share over all cells. */
+/** A constant share over all cells, held in 8 bits as `toBytes` holds it. */
 export const constantBytes = (cells: number, share: number): Uint8Array =>
-  new Uint8Array(cells).fill(Math.round(share * 255));
+  new Uint8Array(cells).fill(Math.round(Math.fround(share) * 255));
