@@ -1,6 +1,6 @@
 import { deflateSync, zlibSync } from 'fflate';
 import { describe, expect, it } from 'vitest';
-import { adler32, inflateExactly, InflateError } from './inflate-exactly.ts';
+import { adler32, inflateAtMost, inflateExactly, InflateError } from './inflate-exactly.ts';
 
 const noise = (length: number) => Uint8Array.from({ length }, (_, i) => (i * i * 31 + (i >> 3)) & 255);
 
@@ -25,6 +25,14 @@ describe('inflateExactly', () => {
     expect(() => inflateExactly(bomb, 100_000_000)).toThrow(/broken/);
   });
 
+  it('refuses a short stream that grows past its size', () => {
+    const bomb = zlibSync(new Uint8Array(10_000_000));
+    expect(bomb.length).toBeLessThan(16_384);
+    for (const size of [0, 1000, 9_999_999])
+      expect(() => inflateExactly(bomb, size)).toThrow(`more than the ${size} bytes`);
+    expect(inflateExactly(bomb, 10_000_000)).toHaveLength(10_000_000);
+  });
+
   it.each([
     ['too short', zlibSync(noise(100)), 101],
     ['one byte too long', zlibSync(noise(100)), 99],
@@ -40,6 +48,12 @@ describe('inflateExactly', () => {
     stream[200] ^= 1;
     expect(() => inflateExactly(stream, 500)).toThrow(/checksum/);
   });
+});
+
+it.each([100, 300_001])('inflateAtMost gives back %i bytes or fewer, and no more', (length) => {
+  const stream = zlibSync(noise(length));
+  expect(inflateAtMost(stream, length + 50)).toEqual(noise(length));
+  expect(() => inflateAtMost(stream, length - 1)).toThrow(/more than/);
 });
 
 it('adler32 agrees with the example of its description ("Wikipedia" gives 0x11E60398, from memory) and the writer', () => {

@@ -34,3 +34,30 @@ export async function readBytes(
   if (bytes.length !== length) throw damaged(`${bytes.length} bytes of ${what} where ${length} belong`);
   return bytes;
 }
+
+/** Bytes taken at once where blocks stand one after another; most writers leave at most some bytes between two. */
+const stretch = 262_144;
+const mostBetween = 64;
+
+/**
+ * A source that reads ahead while it is asked for one stretch after another, as a file of thousands of small tiles costs
+ * a call to the system each. Asked for scattered pieces, it reads no more than these.
+ */
+export function readAhead(source: RasterSource): RasterSource {
+  let held: Uint8Array = new Uint8Array(0);
+  let heldFrom = 0;
+  let asked = -1;
+  return {
+    size: source.size,
+    async read(offset, length) {
+      const from = offset - heldFrom;
+      const follows = asked >= 0 && offset >= asked && offset - asked <= mostBetween;
+      asked = offset + length;
+      if (from >= 0 && from + length <= held.length) return held.subarray(from, from + length);
+      if (!follows || length >= stretch) return source.read(offset, length);
+      held = await source.read(offset, Math.min(stretch, source.size - offset));
+      heldFrom = offset;
+      return held.subarray(0, length);
+    },
+  };
+}
