@@ -1,4 +1,5 @@
 import { inflateExactly, InflateError } from '#rasters/cells/inflate-exactly.ts';
+import { decodeLerc, decodeZstd } from './library-decoders.ts';
 import { decodeLzw } from './lzw.ts';
 import { decodePackBits } from './pack-bits.ts';
 import { toHostOrder, undoDifferences, undoFloatDifferences } from './predictor.ts';
@@ -10,9 +11,16 @@ import { compressions, type TiffLayout } from './tiff-layout.ts';
  * fresh buffer. No decoder writes a byte more, whatever the block claims.
  * @throws RasterError `raster-truncated` when the block is damaged or does not hold so many bytes
  */
-export function decodeBlock(block: Uint8Array, rows: number, layout: TiffLayout): Uint8Array<ArrayBuffer> {
+export async function decodeBlock(
+  block: Uint8Array,
+  rows: number,
+  layout: TiffLayout,
+): Promise<Uint8Array<ArrayBuffer>> {
   const { compression, predictor, blockWidth, bytesPerCell, littleEndian } = layout;
-  const bytes = unpack(block, rows * blockWidth * bytesPerCell, compression);
+  if (compression === compressions.lerc) return decodeLerc(block, rows, layout);
+  const size = rows * blockWidth * bytesPerCell;
+  const bytes =
+    compression === compressions.zstd ? await decodeZstd(block, size) : unpack(block, size, compression);
   const shape = { width: blockWidth, rows, bytesPerCell, littleEndian };
   if (predictor === 3) {
     undoFloatDifferences(bytes, shape);
@@ -23,11 +31,9 @@ export function decodeBlock(block: Uint8Array, rows: number, layout: TiffLayout)
   return bytes;
 }
 
-function unpack(
-  block: Uint8Array,
-  size: number,
-  compression: TiffLayout['compression'],
-): Uint8Array<ArrayBuffer> {
+type OwnCompression = Exclude<TiffLayout['compression'], typeof compressions.lerc | typeof compressions.zstd>;
+
+function unpack(block: Uint8Array, size: number, compression: OwnCompression): Uint8Array<ArrayBuffer> {
   switch (compression) {
     case compressions.none:
       if (block.length < size) throw damaged(`a strip or tile of ${block.length} bytes where ${size} belong`);

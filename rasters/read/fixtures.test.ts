@@ -69,18 +69,22 @@ describe.each(good)('%s', (name) => {
   });
 });
 
-// geotiff.js differences 16-bit cells in this machine's order, so it misreads the big-endian file; GDAL is right there.
-it.each(good.filter((name) => name !== 'good-big-endian-predictor2.tif'))(
-  '%s: geotiff.js agrees',
-  async (name) => {
-    const bytes = load(name);
-    const image = await (
-      await fromArrayBuffer(bytes.buffer.slice(bytes.byteOffset, bytes.byteOffset + bytes.length))
-    ).getImage();
-    const [band] = (await image.readRasters()) as unknown as CellValues[];
-    expect(plain((await readRaster(load(name))).values)).toEqual(plain(band));
-  },
-);
+/** Files that geotiff.js itself misreads; GDAL is right there. */
+const misread = new Set([
+  // It differences 16-bit cells in this machine's order.
+  'good-big-endian-predictor2.tif',
+  // It leaves out LERC's mask, which holds NaN, and takes the header for cells where 8-bit cells were kept raw.
+  'good-lerc-nan.tif',
+  'good-lerc-raw.tif',
+]);
+it.each(good.filter((name) => !misread.has(name)))('%s: geotiff.js agrees', async (name) => {
+  const bytes = load(name);
+  const image = await (
+    await fromArrayBuffer(bytes.buffer.slice(bytes.byteOffset, bytes.byteOffset + bytes.length))
+  ).getImage();
+  const [band] = (await image.readRasters()) as unknown as CellValues[];
+  expect(plain((await readRaster(load(name))).values)).toEqual(plain(band));
+});
 
 const refusals: [name: string, code: RasterErrorCode, found: RegExp, remedy: RegExp][] = [
   ['bad-png.tif', 'not-a-geotiff', /a PNG picture/, /gdal_translate -of GTiff/],
@@ -102,7 +106,7 @@ const refusals: [name: string, code: RasterErrorCode, found: RegExp, remedy: Reg
   ['bad-mask.tif', 'raster-bands', /mask/, /-dstnodata/],
   ['bad-complex.tif', 'raster-type', /complex/, /-ot Float32/],
   ['bad-four-bits.tif', 'raster-type', /4 bits/, /-ot/],
-  ['bad-zstd.tif', 'raster-type', /ZSTD compression/, /COMPRESS=DEFLATE/],
+  ['bad-jpeg.tif', 'raster-type', /JPEG compression/, /COMPRESS=DEFLATE/],
   ['bad-empty.tif', 'raster-empty', /no cell with a value/, /gdalinfo/],
 ];
 

@@ -4,7 +4,7 @@ import { decodeBlock } from './decode-block.ts';
 import { readCrs } from './geo-keys.ts';
 import { placementOf, readAffine } from './placement.ts';
 import { RasterError } from './raster-error.ts';
-import { readBytes, toSource, type RasterSource } from './raster-source.ts';
+import { readAhead, readBytes, toSource, type RasterSource } from './raster-source.ts';
 import { fieldText, readTiffDirectory } from './tiff-directory.ts';
 import {
   defaultRasterLimits,
@@ -55,7 +55,7 @@ export async function readRaster(
   const crs = await readCrs(directory);
   const placement = placementOf(affine, crs.pixelIsPoint);
   const noData = parseNoData(await fieldText(directory, noDataTag, 1024), dataType);
-  const values = await readValues(source, layout, noData);
+  const values = await readValues(readAhead(source), layout, noData);
   checkValues(values, noData, width);
   return {
     grid: { width, height, ...placement, epsg: crs.epsg },
@@ -114,7 +114,7 @@ async function readValues(
         layout.byteCounts[block],
         'a strip or tile',
       );
-      const bytes = decodeBlock(packed, layout.tiled ? blockHeight : rows, layout);
+      const bytes = await decodeBlock(packed, layout.tiled ? blockHeight : rows, layout);
       for (let row = 0; row < rows; row++) {
         const from = row * blockWidth * bytesPerCell;
         target.set(

@@ -14,8 +14,17 @@ export interface RasterLimits {
 /** A site of 8,192 × 8,192 cells, and a raster of 4,000 × 4,000 doubles kept in one strip. */
 export const defaultRasterLimits: RasterLimits = { cells: 67_108_864, blockBytes: 134_217_728 };
 
-export const compressions = { none: 1, lzw: 5, deflate: 8, oldDeflate: 32946, packBits: 32773 } as const;
+export const compressions = {
+  none: 1,
+  lzw: 5,
+  deflate: 8,
+  oldDeflate: 32946,
+  packBits: 32773,
+  lerc: 34887,
+  zstd: 50000,
+} as const;
 export type Compression = (typeof compressions)[keyof typeof compressions];
+export type LercPacking = typeof compressions.none | typeof compressions.deflate | typeof compressions.zstd;
 
 /** How the cells of a one-band TIFF are kept, all of it checked against the limits and the length of the file. */
 export interface TiffLayout {
@@ -25,6 +34,8 @@ export interface TiffLayout {
   readonly bytesPerCell: number;
   readonly littleEndian: boolean;
   readonly compression: Compression;
+  /** how a LERC block is packed once more */
+  readonly lercPacking: LercPacking;
   readonly predictor: 1 | 2 | 3;
   /** strips are blocks as wide as the raster */
   readonly tiled: boolean;
@@ -53,7 +64,15 @@ const tags = {
   tileOffsets: 324,
   tileByteCounts: 325,
   sampleFormat: 339,
+  lercParameters: 50674,
 } as const;
+
+/** Width × height as the header claims them, unchecked; 0 where it does not say. @throws RasterError `raster-truncated` */
+export async function claimedCells(directory: TiffDirectory): Promise<number> {
+  const [width = 0] = (await fieldNumbers(directory, tags.width, 1)) ?? [];
+  const [height = 0] = (await fieldNumbers(directory, tags.height, 1)) ?? [];
+  return width * height;
+}
 
 /**
  * Reads how the one band is kept. Nothing is decoded and nothing of the size of the raster is allocated.
@@ -74,6 +93,7 @@ export async function readTiffLayout(directory: TiffDirectory, limits: RasterLim
   checkBands(directory, (await one(tags.samples)) ?? 1);
   const cell = await readCellType(directory);
   const compression = readCompression((await one(tags.compression)) ?? 1);
+  const lercPacking = readLercPacking(await fieldNumbers(directory, tags.lercParameters, 16));
   if (((await one(tags.fillOrder)) ?? 1) !== 1)
     throw otherType('bits kept in reverse order', 'bits in their usual order');
   const predictor = readPredictor(compression, (await one(tags.predictor)) ?? 1, cell);
@@ -110,6 +130,7 @@ export async function readTiffLayout(directory: TiffDirectory, limits: RasterLim
     ...cell,
     littleEndian: directory.littleEndian,
     compression,
+    lercPacking,
     predictor,
     tiled,
     blockWidth,
@@ -182,9 +203,7 @@ async function readCellType(
 const refusedCompressions: Readonly<Record<number, string>> = {
   6: 'JPEG',
   7: 'JPEG',
-  34887: 'LERC',
   34925: 'LZMA',
-  50000: 'ZSTD',
   50001: 'WebP',
   50002: 'JPEG XL',
 };
@@ -194,19 +213,32 @@ function readCompression(code: number): Compression {
   if (known === undefined)
     throw otherType(
       refusedCompressions[code] ? `${refusedCompressions[code]} compression` : `compression number ${code}`,
-      'no compression, DEFLATE, LZW or PackBits',
+      'no compression, DEFLATE, LZW, ZSTD, LERC or PackBits',
       'Write it again with gdal_translate -co COMPRESS=DEFLATE IN.tif OUT.tif.',
     );
   return known;
 }
 
-/** LZW and DEFLATE alone take a predictor; elsewhere the tag means nothing (TIFF 6.0, section 14). */
+/** The LercParameters tag holds the version and the additional compression (libtiff, tif_lerc.c; from memory). */
+function readLercPacking([, packing = 0]: readonly number[] = []): LercPacking {
+  const packings = [compressions.none, compressions.deflate, compressions.zstd] as const;
+  if (!(packing in packings)) throw damaged(`a LERC packing number ${packing}, which does not exist`);
+  return packings[packing];
+}
+
+/** LZW, DEFLATE and ZSTD alone take a predictor; elsewhere the tag means nothing (TIFF 6.0, section 14). */
 function readPredictor(
   compression: Compression,
   predictor: number,
   { dataType }: { dataType: RasterDataType },
 ): 1 | 2 | 3 {
-  if (compression === compressions.none || compression === compressions.packBits) return 1;
+  const takes: readonly number[] = [
+    compressions.lzw,
+    compressions.deflate,
+    compressions.oldDeflate,
+    compressions.zstd,
+  ];
+  if (!takes.includes(compression)) return 1;
   const floating = dataType.startsWith('float');
   if (predictor === 1 || predictor === 2 || (predictor === 3 && floating)) return predictor;
   throw otherType(
