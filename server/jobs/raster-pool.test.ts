@@ -1,8 +1,10 @@
-import { mkdtemp, readFile, rm, writeFile } from 'node:fs/promises';
+import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { pathToFileURL } from 'node:url';
 import { afterEach, beforeEach, expect, it } from 'vitest';
 import { decodeCellValues } from '#rasters/cells/cell-values.ts';
+import { encodeGeoTiff } from '#rasters/write/geotiff.ts';
 import { ProblemError } from '#server/middleware/problem-error.ts';
 import { cover, smallGrid } from '#server/testing/sites.ts';
 import { createRasterPool, type RasterPool } from './raster-pool.ts';
@@ -35,6 +37,13 @@ it('reads a raster in its worker and leaves its values in a file', async () => {
   expect(decodeCellValues(await readFile(join(folder, 'values'))).values).toHaveLength(24);
 });
 
+it('has the decoders of geotiff.js in its worker', async () => {
+  pool = createRasterPool();
+  const path = join(import.meta.dirname, '../../rasters/fixtures/good-zstd.tif');
+  const { facts } = await pool.run({ ...task('values', path), part: 'habitat' });
+  expect(facts).toMatchObject({ dataType: 'uint8', noData: 255, maximum: 254 });
+});
+
 it('brings a refusal across whole', async () => {
   pool = createRasterPool();
   const refusal = await pool.run({ ...task('values'), cells: 10 }).catch((error: unknown) => error);
@@ -58,7 +67,46 @@ it('refuses what comes when as many wait as it takes', async () => {
   expect(settled.filter((s) => s.status === 'fulfilled').length).toBeGreaterThanOrEqual(2);
 });
 
-it('breaks off a task that takes too long, and works on', async () => {
-  pool = createRasterPool({ longestMs: 1 });
-  await expect(pool.run(task('values'))).rejects.toMatchObject({ code: 'raster-too-large' });
+it('destroys a worker that takes longer than the size of the raster explains, leaves nothing, and works on', async () => {
+  pool = createRasterPool({ longestMs: (cells) => (cells > 24 ? 1 : 60_000) });
+  const grid = { ...smallGrid, width: 300, height: 200 };
+  await writeFile(join(folder, 'large.tif'), encodeGeoTiff({ grid, values: new Float32Array(60_000) }));
+  const large = { ...task('large-values', join(folder, 'large.tif')), cells: 60_000 };
+  const outcomes = await Promise.allSettled([pool.run(large), pool.run(task('values'))]);
+  expect(outcomes).toMatchObject([
+    {
+      status: 'rejected',
+      reason: { code: 'raster-too-large', extra: { remedy: expect.stringContaining('damaged') as string } },
+    },
+    { status: 'fulfilled', value: { unit: 'share' } },
+  ]);
+  expect((await readdir(folder)).sort()).toEqual(['cover.tif', 'large.tif', 'values']);
+});
+
+/** A pool whose worker is other code than ours. */
+async function poolOf(code: string, longestMs = 60_000): Promise<RasterPool> {
+  const workerFile = join(folder, 'worker.mjs');
+  await writeFile(workerFile, code);
+  return createRasterPool({ workerFile: pathToFileURL(workerFile), longestMs: () => longestMs });
+}
+
+it('destroys a worker that loops for ever, each time', async () => {
+  pool = await poolOf('export default () => { for (;;); };', 300);
+  for (let i = 0; i < 2; i++)
+    await expect(pool.run(task('values'))).rejects.toMatchObject({ code: 'raster-too-large' });
+});
+
+it('rejects the task of a worker that cannot be loaded, and lives on', async () => {
+  pool = await poolOf('throw new Error("no such luck");');
+  for (let i = 0; i < 2; i++) await expect(pool.run(task('values'))).rejects.toThrow('no such luck');
+});
+
+it('rejects the task of a worker that cannot start, and lives on', async () => {
+  pool = createRasterPool({ workerOptions: ['--import', 'no-such-loader'] });
+  for (let i = 0; i < 2; i++) await expect(pool.run(task('values'))).rejects.toThrow('no-such-loader');
+});
+
+it('rejects the task of a worker that dies of it', async () => {
+  pool = await poolOf('export default () => process.exit(3);');
+  for (let i = 0; i < 2; i++) await expect(pool.run(task('values'))).rejects.toThrow('exited with code: 3');
 });

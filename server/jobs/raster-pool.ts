@@ -1,7 +1,9 @@
-import { fileURLToPath } from 'node:url';
+import { createRequire } from 'node:module';
+import { fileURLToPath, pathToFileURL } from 'node:url';
 import { Piscina } from 'piscina';
 import { ProblemError } from '../middleware/problem-error.ts';
 import type { Refusal, RasterTask, TaskResults } from './raster-tasks.ts';
+import { taskCells } from './task-cells.ts';
 
 /** Heavy work on rasters, off the thread that answers requests. */
 export interface RasterPool {
@@ -16,38 +18,75 @@ export interface RasterPool {
 export interface RasterPoolSettings {
   /** tasks that may wait for the worker */
   queue: number;
-  /** a task that takes longer is broken off */
-  longestMs: number;
+  /** milliseconds that a task of so many cells may take once it has begun; then its worker is destroyed */
+  longestMs: (cells: number) => number;
+  workerFile: URL;
+  /** options of Node for the worker */
+  workerOptions: string[];
 }
-
-const defaults: RasterPoolSettings = { queue: 24, longestMs: 5 * 60_000 };
 
 /** Built, the worker is an entry of its own beside the bundle; from the sources it is read through tsx. */
 const fromSources = import.meta.url.endsWith('.ts');
-const workerFile = new URL(fromSources ? './raster-worker.ts' : './raster-worker.js', import.meta.url);
+
+/** tsx as a URL, since a bare name would be looked for from the current folder. */
+const loader = () => pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href;
+
+const defaults: RasterPoolSettings = {
+  queue: 24,
+  // Ten million cells take one or two seconds, and a worker as long to start, on a machine that does nothing else.
+  longestMs: (cells) => 30_000 + 30_000 * (cells / 1e7),
+  workerFile: new URL(fromSources ? './raster-worker.ts' : './raster-worker.js', import.meta.url),
+  workerOptions: fromSources ? ['--import', loader()] : [],
+};
 
 export function createRasterPool(settings: Partial<RasterPoolSettings> = {}): RasterPool {
-  const { queue, longestMs } = { ...defaults, ...settings };
+  const { queue, longestMs, workerFile, workerOptions } = { ...defaults, ...settings };
   const pool = new Piscina({
     filename: fileURLToPath(workerFile),
-    execArgv: fromSources ? ['--import', 'tsx'] : [],
+    execArgv: workerOptions,
+    // A package that geotiff.js loads reads it, and fails in a worker that has none.
+    workerData: {},
     minThreads: 0,
     maxThreads: 1,
     idleTimeout: 10_000,
     resourceLimits: { maxOldGenerationSizeMb: 512, maxYoungGenerationSizeMb: 64 },
   });
+  let breakOff: ((why: unknown) => void) | undefined;
+  // A worker that fails to start tells the pool alone, and its task would wait. One that fails with no task is replaced.
+  pool.on('error', (error) => breakOff?.(error));
+
+  async function perform(task: RasterTask): Promise<unknown> {
+    const limit = longestMs(await taskCells(task));
+    const stop = new AbortController();
+    let why: unknown;
+    breakOff = (reason) => {
+      why ??= reason;
+      stop.abort();
+    };
+    const timer = setTimeout(() => breakOff?.(tooLong()), limit);
+    try {
+      return await pool.run(task, { signal: stop.signal });
+    } catch (error) {
+      // The worker is gone before anyone clears up after it, so that it cannot write once more.
+      if (why !== undefined) await Promise.all(pool.threads.map((thread) => thread.terminate()));
+      throw why ?? breakdown(error);
+    } finally {
+      clearTimeout(timer);
+      breakOff = undefined;
+    }
+  }
+
+  // One task at a time is handed over, so that none is timed while it waits for another.
+  let last: Promise<unknown> = Promise.resolve();
   // Piscina's own limit lets everything through while its worker is starting.
   let unfinished = 0;
   return {
     async run<K extends keyof TaskResults>(task: Extract<RasterTask, { kind: K }>) {
       if (unfinished > queue) throw busy();
       unfinished++;
-      const answer = (await pool
-        .run(task, { signal: AbortSignal.timeout(longestMs) })
-        .catch((error: unknown) => {
-          throw breakdown(error);
-        })
-        .finally(() => unfinished--)) as { value: TaskResults[K] } | { refused: Refusal };
+      const turn = last.then(() => perform(task)).finally(() => unfinished--);
+      last = turn.catch(() => undefined);
+      const answer = (await turn) as { value: TaskResults[K] } | { refused: Refusal };
       if ('value' in answer) return answer.value;
       const { code, message, ...parts } = answer.refused;
       throw new ProblemError(code, message, parts);
@@ -62,18 +101,28 @@ const busy = () =>
     'The server is working through other rasters and as many wait as it takes. Try again in a minute.',
   );
 
+const rewrite =
+  'write it again with gdal_translate -co TILED=YES -co COMPRESS=DEFLATE IN.tif OUT.tif, and clip it to the site.';
+
+const tooLong = () => {
+  const parts = {
+    found: 'a raster that takes far longer to read than its size explains',
+    expected: 'seconds for ten million cells',
+    remedy: `The file may be damaged: ${rewrite}`,
+  };
+  return new ProblemError(
+    'raster-too-large',
+    `Found ${parts.found}; expected ${parts.expected}. ${parts.remedy}`,
+    parts,
+  );
+};
+
 /** What became of a task that did not come to its end. */
 function breakdown(error: unknown): unknown {
-  const { name, code } = error as Error & { code?: string };
-  if (name === 'AbortError')
+  if ((error as Error & { code?: string }).code === 'ERR_WORKER_OUT_OF_MEMORY')
     return new ProblemError(
       'raster-too-large',
-      'Found a raster that takes minutes to read; expected a few seconds. Clip it to the site, or write it again with gdal_translate -co TILED=YES -co COMPRESS=DEFLATE IN.tif OUT.tif.',
-    );
-  if (code === 'ERR_WORKER_OUT_OF_MEMORY')
-    return new ProblemError(
-      'raster-too-large',
-      'Found a raster that needs more memory than a site may; expected a plain grid of cells. Write it again with gdal_translate -co TILED=YES -co COMPRESS=DEFLATE IN.tif OUT.tif.',
+      `Found a raster that needs more memory than a site may; expected a plain grid of cells. To mend it, ${rewrite}`,
     );
   return error;
 }
