@@ -1,51 +1,12 @@
 // @vitest-environment node
-import { MessageChannel, type MessagePort } from 'node:worker_threads';
-import { expose, transfer } from 'comlink';
+import { transfer } from 'comlink';
 import { describe, expect, it, vi } from 'vitest';
 import { RunCancelled, RunWorkerDied, startRun } from './run-client.ts';
-import type { RunInput, RunListener } from './run-loop.ts';
-
-/** A worker as the client sees it, over a real message port, so that transfers and errors truly cross. */
-function portWorker(face: object) {
-  const { port1, port2 } = new MessageChannel();
-  expose(face, port2 as never);
-  const own = new EventTarget();
-  const listen = (port: MessagePort, type: string, f: EventListener, add: boolean) => {
-    if (type === 'message')
-      (port as unknown as EventTarget)[add ? 'addEventListener' : 'removeEventListener'](type, f);
-    else own[add ? 'addEventListener' : 'removeEventListener'](type, f);
-  };
-  port1.start();
-  const terminate = vi.fn(() => {
-    port1.close();
-    port2.close();
-  });
-  const worker = {
-    postMessage: (message: unknown, buffers?: ArrayBuffer[]) => {
-      port1.postMessage(message, buffers as never);
-    },
-    addEventListener: (type: string, f: EventListener) => {
-      listen(port1, type, f, true);
-    },
-    removeEventListener: (type: string, f: EventListener) => {
-      listen(port1, type, f, false);
-    },
-    terminate,
-  } as unknown as Worker;
-  return { worker, terminate, emit: (event: Event) => own.dispatchEvent(event) };
-}
+import type { LayerRasters, RunInput, RunListener } from './run-loop.ts';
+import { portWorker } from './testing/port-worker.ts';
 
 function someInput() {
-  const bytes = () => new Uint8Array(6).fill(255);
-  const shared = bytes();
-  const ground = {
-    capacity: shared,
-    vigour: shared,
-    exposure: bytes(),
-    refuge: bytes(),
-    fence: bytes(),
-    cover: new Float32Array(6),
-  };
+  const ground = new Map([['a', { values: Uint8Array.of(1, 2, 3, 4, 5, 6), noData: null }]]);
   return { spec: { seed: 'a' }, grid: { width: 3, height: 2 }, ground } as unknown as RunInput;
 }
 const start = (face: object, listener: Partial<RunListener> = {}, locks?: LockManager) => {
@@ -59,14 +20,14 @@ const start = (face: object, listener: Partial<RunListener> = {}, locks?: LockMa
 };
 
 describe('startRun', () => {
-  it('hands the ground over instead of copying it, and frames back likewise', async () => {
+  it('lets the page keep its layers, and hands frames back instead of copying them', async () => {
     const input = someInput();
     const frames: Uint8Array[] = [];
     let kept: Uint8Array | undefined;
     const locks = { request: () => new Promise(() => undefined) } as unknown as LockManager;
     const { worker, terminate } = portWorker({
       run: async (given: RunInput, listener: RunListener) => {
-        kept = Uint8Array.of(given.ground.capacity.length, given.ground.cover.length);
+        kept = Uint8Array.from((given.ground as LayerRasters).get('a')!.values);
         await listener.onYear(transfer({ year: 2026, rows: [], frame: kept }, [kept.buffer]));
         return { closing: Int16Array.of(1) };
       },
@@ -76,10 +37,9 @@ describe('startRun', () => {
       { onYear: (e) => void frames.push(e.frame!) },
       { createWorker: () => worker, locks },
     );
-    expect(input.ground.capacity).toHaveLength(0);
-    expect(input.ground.cover).toHaveLength(0);
+    expect((input.ground as LayerRasters).get('a')?.values).toHaveLength(6);
     expect([...(await result).closing]).toEqual([1]);
-    expect([...frames[0]]).toEqual([6, 6]);
+    expect([...frames[0]]).toEqual([1, 2, 3, 4, 5, 6]);
     expect(kept).toHaveLength(0);
     expect(terminate).toHaveBeenCalledOnce();
   });
@@ -158,6 +118,20 @@ describe('startRun', () => {
     });
     free!();
     await expect(handle.result).rejects.toBeInstanceOf(RunWorkerDied);
+  });
+
+  it('tells when a paused run stands still', async () => {
+    const onStandstill = vi.fn();
+    const run = (_: RunInput, listener: RunListener) => {
+      listener.onStandstill?.();
+      return new Promise(() => undefined);
+    };
+    const { handle } = start({ run }, { onStandstill });
+    await vi.waitFor(() => {
+      expect(onStandstill).toHaveBeenCalledOnce();
+    });
+    handle.cancel();
+    await expect(handle.result).rejects.toBeInstanceOf(RunCancelled);
   });
 
   it('carries pause, step and resume across', async () => {

@@ -1,13 +1,18 @@
+import type { RasterValues } from '#sim-core/grid/build-ground.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Ground } from '#sim-core/grid/ground.ts';
 import type { RunResult, SeriesRow } from '#sim-core/spec/run-result.ts';
 import type { RunSpec } from '#sim-core/spec/run-spec.ts';
 
+/** Cells of the layers that a spec names, by hash. */
+export type LayerRasters = ReadonlyMap<string, RasterValues>;
+
 /** What a run starts from. */
 export interface RunInput {
   readonly spec: RunSpec;
   readonly grid: Grid;
-  readonly ground: Ground;
+  /** ready, or the layers from which the worker builds it, so that the page need not */
+  readonly ground: Ground | LayerRasters;
 }
 
 /** One year that is done; the survey comes first. `frame` and `packed` are there for reported years alone. */
@@ -39,6 +44,8 @@ export interface RunListener {
   /** The year counts as acknowledged when this returns, or when its promise does; a rejection ends the run. */
   onYear(event: YearEvent): void | Promise<void>;
   onProgress?(progress: RunProgress): void;
+  /** Paused, and the year that was being worked on is done. */
+  onStandstill?(): void;
 }
 
 /** The face of the engine that the loop drives. */
@@ -82,8 +89,11 @@ export function createRunLoop({ createRun, pack, now }: RunLoopParts): RunLoop {
   let allowed = 0;
   let wake: (() => void) | undefined;
 
-  async function permission() {
-    while (paused && allowed === 0) await new Promise<void>((resolve) => (wake = resolve));
+  async function permission(listener: RunListener) {
+    while (paused && allowed === 0) {
+      listener.onStandstill?.();
+      await new Promise<void>((resolve) => (wake = resolve));
+    }
     if (paused) allowed--;
   }
 
@@ -117,7 +127,7 @@ export function createRunLoop({ createRun, pack, now }: RunLoopParts): RunLoop {
       send(engine.survey);
       for (let year = 0; ; year++) {
         await turn();
-        await permission();
+        await permission(listener);
         while (waiting.size >= unacknowledgedLimit) await Promise.race(waiting);
         const begun = now();
         const outcome = engine.nextYear((done) => {
@@ -169,10 +179,4 @@ function createTurns() {
       port1.close();
     },
   };
-}
-
-/** Buffers of a run's ground, each once, to be handed over instead of copied. */
-export function groundBuffers(ground: Ground): ArrayBuffer[] {
-  const { capacity, vigour, exposure, refuge, fence, cover } = ground;
-  return [...new Set([capacity, vigour, exposure, refuge, fence, cover].map((a) => a.buffer as ArrayBuffer))];
 }

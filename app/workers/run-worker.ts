@@ -1,17 +1,23 @@
 import { expose, transfer, type ProxyMarked, type Remote } from 'comlink';
 import { encodeCellValues } from '#rasters/cells/cell-values.ts';
 import { createRun } from '#sim-core/index.ts';
+import { groundOf } from './run-ground.ts';
 import { createRunLoop, type RunInput, type RunProgress, type YearEvent } from './run-loop.ts';
 
-const loop = createRunLoop({ createRun, pack: encodeCellValues, now: () => performance.now() });
+const loop = createRunLoop({
+  createRun: (input) => createRun({ spec: input.spec, grid: input.grid, ground: groundOf(input) }),
+  pack: encodeCellValues,
+  now: () => performance.now(),
+});
 
 const buffersOf = (...arrays: (Uint8Array | Int16Array | undefined)[]) =>
   arrays.filter((a) => a !== undefined).map((a) => a.buffer as ArrayBuffer);
 
-/** The caller's listener as it is seen from here: both calls cross to the page. */
+/** The caller's listener as it is seen from here: all calls cross to the page. */
 export interface PageListener {
   onYear(event: YearEvent): Promise<void>;
   onProgress(progress: RunProgress): void;
+  onStandstill(): void;
 }
 
 /** Holds a lock for as long as this worker lives: its coming free tells the page of a death that raises no event. */
@@ -25,13 +31,14 @@ const hold = (lock: string) =>
       .catch(refused);
   });
 
-/** What the client calls; everything with cells is handed over, never copied. */
+/** What the client calls; whatever has cells is handed to it, never copied. */
 const face = {
   run: async (input: RunInput, listener: Remote<PageListener & ProxyMarked>, lock: string | undefined) => {
     if (lock !== undefined) await hold(lock);
     const outcome = await loop.run(input, {
       onYear: (event: YearEvent) => listener.onYear(transfer(event, buffersOf(event.frame, event.packed))),
       onProgress: (progress) => void listener.onProgress(progress),
+      onStandstill: () => void listener.onStandstill(),
     });
     return transfer(outcome, buffersOf(outcome.closing, outcome.packedClosing));
   },

@@ -1,5 +1,7 @@
 import { expect, it } from 'vitest';
-import { capacityBytes, coveredArea, layerShares, plantableArea, refugeArea } from './ground-facts.ts';
+import { toShareBytes } from '#sim-core/grid/ground.ts';
+import { sumShares } from '#app/workers/sum-shares.ts';
+import { capacityMapping, plantableArea, refugeArea, unitMapping } from './ground-facts.ts';
 
 const classes = [
   { value: 1, name: 'Creek', colour: '#8496a2', capacity: 0, vigour: 0 },
@@ -8,7 +10,7 @@ const classes = [
 const habitat = Uint8Array.of(1, 2, 2, 9, 255);
 
 it('gives ground without a class, and without data, no capacity', () => {
-  expect([...capacityBytes({ noData: 255 }, habitat, classes)]).toEqual([0, 204, 204, 0, 0]);
+  expect([...toShareBytes(habitat, capacityMapping({ noData: 255 }, classes))]).toEqual([0, 204, 204, 0, 0]);
 });
 
 it('counts the ground that can hold the plant in m²', () => {
@@ -23,10 +25,11 @@ it('counts the ground that can hold the plant in m²', () => {
 });
 
 it('counts what stands no higher than what the ground can hold', () => {
-  const cover = layerShares({ unit: 'percent', noData: -1 }, Float32Array.of(100, 100, 40, -1));
+  const cover = Float32Array.of(100, 100, 40, -1);
+  const mapping = unitMapping({ unit: 'percent', noData: -1 });
   const capacity = Uint8Array.of(0, 204, 204, 204);
-  expect(coveredArea(cover, capacity, 2)).toBeCloseTo(4 * (0.8 + 0.4), 5);
-  expect(coveredArea(cover, undefined, 2)).toBeCloseTo(4 * 2.4, 5);
+  expect(sumShares(cover, mapping, capacity)).toBeCloseTo(0.8 + 0.4, 5);
+  expect(sumShares(cover, mapping, undefined)).toBeCloseTo(2.4, 5);
 });
 
 it('counts cells with any refuge', () => {

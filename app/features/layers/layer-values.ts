@@ -1,16 +1,52 @@
 import { queryOptions } from '@tanstack/react-query';
-import { decodeCellValues } from '#rasters/cells/cell-values.ts';
 import { getLayerValues } from '#contract/sites.ts';
+import type { ShareMapping } from '#sim-core/grid/ground.ts';
+import { maximumCells } from '#sim-core/spec/run-spec.ts';
 import { fetchBytes } from '#app/lib/api-client.ts';
+import { cells } from '#app/workers/cells-client.ts';
 
-/** The decoded values of a layer's cells. Bytes of a hash never change, so they are fetched once and let go soon. */
+/** Bytes of a hash never change, so they are fetched once; they are large, so they are let go soon. */
+const held = { staleTime: Infinity, gcTime: 60_000, structuralSharing: false } as const;
+
+/** The decoded values of a layer's cells. */
 export const layerValuesQuery = (siteId: string, hash: string) =>
   queryOptions({
     queryKey: ['layer-values', siteId, hash],
     queryFn: async ({ signal }) =>
-      decodeCellValues(await fetchBytes(getLayerValues, { params: { siteId, hash }, signal })),
+      cells.unpack(await fetchBytes(getLayerValues, { params: { siteId, hash }, signal }), {
+        cells: maximumCells,
+      }),
+    ...held,
+  });
+
+/** Shares of a layer's cells in 8 bits, as maps show them. */
+export const shareBytesQuery = (siteId: string, hash: string, mapping: ShareMapping) =>
+  queryOptions({
+    queryKey: ['layer-shares', siteId, hash, mapping],
+    queryFn: async ({ client }) => {
+      const { values } = await client.fetchQuery(layerValuesQuery(siteId, hash));
+      return cells.shareBytes(values, mapping);
+    },
+    ...held,
+  });
+
+/**
+ * Sum of a layer's shares, none above the capacity of its cell.
+ * @param ceiling the layer and the mapping that give the capacity; undefined where there is none
+ */
+export const sumSharesQuery = (
+  siteId: string,
+  hash: string,
+  mapping: ShareMapping,
+  ceiling: { hash: string; mapping: ShareMapping } | undefined,
+) =>
+  queryOptions({
+    queryKey: ['layer-sum', siteId, hash, mapping, ceiling],
+    queryFn: async ({ client }) => {
+      const { values } = await client.fetchQuery(layerValuesQuery(siteId, hash));
+      const capacity =
+        ceiling && (await client.fetchQuery(shareBytesQuery(siteId, ceiling.hash, ceiling.mapping)));
+      return cells.sumShares(values, mapping, capacity);
+    },
     staleTime: Infinity,
-    gcTime: 60_000,
-    // Comparing millions of values to find that they are the same would cost more than it saves.
-    structuralSharing: false,
   });

@@ -1,8 +1,8 @@
 import { queryOptions } from '@tanstack/react-query';
-import { decodeCellValues } from '#rasters/cells/cell-values.ts';
 import { getClosing } from '#contract/runs.ts';
 import { maximumCells } from '#sim-core/spec/run-spec.ts';
 import { fetchBytes } from '#app/lib/api-client.ts';
+import { cells } from '#app/workers/cells-client.ts';
 
 /** The closing year of every cell of a run that reached its horizon. */
 export const closingQuery = (runId: string) =>
@@ -10,7 +10,7 @@ export const closingQuery = (runId: string) =>
     queryKey: ['run-closing', runId],
     queryFn: async ({ signal }) => {
       const bytes = await fetchBytes(getClosing, { params: { runId }, signal });
-      const { values } = decodeCellValues(bytes, { cells: maximumCells });
+      const { values } = await cells.unpack(bytes, { cells: maximumCells });
       if (!(values instanceof Int16Array))
         throw new Error('The map of closing years holds other numbers than years; run it again.');
       return values;

@@ -5,6 +5,7 @@ import type { LiveRun } from './run-manager.ts';
 
 const heads: Partial<Record<LiveRun['phase'], string>> = {
   loading: 'Fetching the ground',
+  pausing: 'Pausing after this year',
   paused: 'Paused',
   saving: 'Saving the end',
 };
@@ -26,12 +27,16 @@ export function LiveProgress({ live, onCancel }: { live: LiveRun; onCancel: () =
         note={stored}
       />
       <div className="flex flex-wrap gap-x-4">
-        {phase === 'paused' ? (
+        {phase === 'paused' || phase === 'pausing' ? (
           <>
             <WordButton lined onClick={() => runManager.resume(runId)}>
               Resume
             </WordButton>
-            <WordButton lined disabled={progress === undefined} onClick={() => runManager.step(runId)}>
+            <WordButton
+              lined
+              disabled={phase === 'pausing' || progress === undefined}
+              onClick={() => runManager.step(runId)}
+            >
               One year on
             </WordButton>
           </>

@@ -1,8 +1,8 @@
 import { useSyncExternalStore } from 'react';
-import { decodeCellValues } from '#rasters/cells/cell-values.ts';
 import { getFrame } from '#contract/runs.ts';
 import { maximumCells } from '#sim-core/spec/run-spec.ts';
 import { fetchBytes } from '#app/lib/api-client.ts';
+import { cells } from '#app/workers/cells-client.ts';
 import { startRun } from '#app/workers/run-client.ts';
 import { createFrameCache } from './frame-cache.ts';
 import { keepPace } from './run-pace.ts';
@@ -16,7 +16,7 @@ const frameBudget = 96 * 1024 * 1024;
 /** The frames that this tab has at hand, of all runs. */
 export const runFrames = createFrameCache(async (runId, year) => {
   const bytes = await fetchBytes(getFrame, { params: { runId, year } });
-  const { values } = decodeCellValues(bytes, { cells: maximumCells });
+  const { values } = await cells.unpack(bytes, { cells: maximumCells });
   if (!(values instanceof Uint8Array))
     throw new Error('The frame holds other numbers than cover; run it again.');
   return values;
@@ -31,7 +31,7 @@ export const runManager = createRunManager({
       keepPace(spec.mode, grid.width * grid.height, progress);
       listener.onProgress?.(progress);
     };
-    return startRun(input, { onYear: (event) => listener.onYear(event), onProgress });
+    return startRun(input, { ...listener, onProgress });
   },
   wait: waitByClock,
   onFrame: (runId, year, frame) => {

@@ -90,7 +90,7 @@ function setUp() {
     onFrame,
     onChange,
   });
-  const parts = { run, loadGround: () => Promise.resolve({} as never), onRecord };
+  const parts = { run, loadRasters: () => Promise.resolve(new Map<string, never>()), onRecord };
   return { manager, server, made, stored, waits, onFrame, onChange, onRecord, parts, die: worker.die };
 }
 const phase = (t: ReturnType<typeof setUp>) => t.manager.get('run-1')?.phase;
@@ -161,7 +161,7 @@ describe('createRunManager', () => {
 
   it('fails where the layers cannot be read, before any work', async () => {
     const t = setUp();
-    t.manager.start({ ...t.parts, loadGround: () => Promise.reject(refused(404)) });
+    t.manager.start({ ...t.parts, loadRasters: () => Promise.reject(refused(404)) });
     await lately(() => phase(t) === 'failed');
     expect(t.made.years).toBe(0);
     expect(t.server.stop).toHaveBeenCalledTimes(1);
@@ -192,11 +192,31 @@ describe('createRunManager', () => {
     for (let i = 0; i < 20; i++) await later();
     expect([t.made.years, phase(t)]).toEqual([0, 'paused']);
     t.manager.step('run-1');
+    expect(phase(t)).toBe('pausing');
     await lately(() => t.stored.length === 2);
     for (let i = 0; i < 20; i++) await later();
-    expect(t.made.years).toBe(1);
+    expect([t.made.years, phase(t)]).toEqual([1, 'paused']);
     t.manager.resume('run-1');
     await lately(() => phase(t) === 'done');
+  });
+
+  it('says that it is pausing until the year is done, and lets that be taken back', async () => {
+    const t = setUp();
+    const answers: (() => void)[] = [];
+    t.server.putFrame.mockImplementation(() => new Promise<void>((resolve) => answers.push(resolve)));
+    t.manager.start(t.parts);
+    await lately(() => answers.length === unacknowledgedLimit);
+    t.manager.pause('run-1');
+    expect(phase(t)).toBe('pausing');
+    t.manager.resume('run-1');
+    expect(phase(t)).toBe('running');
+    t.manager.pause('run-1');
+    expect(phase(t)).toBe('pausing');
+    answers.forEach((answer) => answer());
+    await lately(() => phase(t) === 'paused');
+    const { years } = t.made;
+    for (let i = 0; i < 20; i++) await later();
+    expect([t.made.years, phase(t)]).toEqual([years, 'paused']);
   });
 
   it('repeats without storing a frame and records the digest', async () => {

@@ -1,16 +1,17 @@
 import type { Run } from '#contract/runs.ts';
-import type { Grid } from '#sim-core/grid/grid.ts';
-import type { Ground } from '#sim-core/grid/ground.ts';
 import type { SeriesRow } from '#sim-core/spec/run-result.ts';
-import type { RunSpec } from '#sim-core/spec/run-spec.ts';
 import { errorText, type ProblemError } from '#app/lib/api-client.ts';
 import type { RunHandle } from '#app/workers/run-client.ts';
-import type { RunInput, RunListener, RunProgress } from '#app/workers/run-loop.ts';
+import type { LayerRasters, RunInput, RunListener, RunProgress } from '#app/workers/run-loop.ts';
 import { saveWithRetry } from './save-with-retry.ts';
 import type { RunServer } from './run-server.ts';
 
-/** Where work in this tab stands. `saving`: all years are done and their end is being recorded. */
-export type LivePhase = 'loading' | 'running' | 'paused' | 'saving' | 'done' | 'stopped' | 'failed';
+/**
+ * Where work in this tab stands. `pausing`: it will stand still when the year that is being worked on is done;
+ * `saving`: all years are done and their end is being recorded.
+ */
+export type LivePhase =
+  'loading' | 'running' | 'pausing' | 'paused' | 'saving' | 'done' | 'stopped' | 'failed';
 
 /** A run that this tab is working on: its first time, or a repeat that only compares the digest. */
 export interface LiveRun {
@@ -50,7 +51,7 @@ export interface RunManagerParts {
 
 export interface StartParts {
   readonly run: Run;
-  readonly loadGround: (spec: RunSpec, grid: Grid, signal: AbortSignal) => Promise<Ground>;
+  readonly loadRasters: () => Promise<LayerRasters>;
   /** what the server now knows of the run */
   readonly onRecord: (run: Run) => void;
 }
@@ -80,7 +81,7 @@ interface Job {
   handle?: RunHandle;
 }
 
-const atWork: readonly LivePhase[] = ['loading', 'running', 'paused', 'saving'];
+const atWork: readonly LivePhase[] = ['loading', 'running', 'pausing', 'paused', 'saving'];
 export const isAtWork = (live: LiveRun | undefined): live is LiveRun =>
   live !== undefined && atWork.includes(live.phase);
 
@@ -127,10 +128,10 @@ export function createRunManager(manager: RunManagerParts): RunManager {
   }
 
   async function work(job: Job, repeat: boolean): Promise<void> {
-    const { run, loadGround, onRecord } = job.parts;
+    const { run, loadRasters, onRecord } = job.parts;
     const { signal } = job.abort;
     const save = saver(job);
-    const ground = await loadGround(run.spec, run.grid, signal);
+    const ground = await loadRasters();
     if (signal.aborted) return;
     const onYear: RunListener['onYear'] = async ({ year, rows, frame, packed }) => {
       const before = get(run.id)?.rows ?? [];
@@ -144,7 +145,13 @@ export function createRunManager(manager: RunManagerParts): RunManager {
     const onProgress = (progress: RunProgress) => {
       change(run.id, { progress });
     };
-    job.handle = startWorker({ spec: run.spec, grid: run.grid, ground }, { onYear, onProgress });
+    const onStandstill = () => {
+      if (get(run.id)?.phase === 'pausing') change(run.id, { phase: 'paused' });
+    };
+    job.handle = startWorker(
+      { spec: run.spec, grid: run.grid, ground },
+      { onYear, onProgress, onStandstill },
+    );
     // Whoever paused while the layers were on their way meant it.
     if (get(run.id)?.phase === 'paused') job.handle.pause();
     else change(run.id, { phase: 'running' });
@@ -207,19 +214,23 @@ export function createRunManager(manager: RunManagerParts): RunManager {
     start: (parts) => begin(parts, false),
     repeat: (parts) => begin(parts, true),
     pause: (runId) => {
-      if (!isAtWork(get(runId)) || get(runId)?.phase === 'saving') return;
+      const { phase } = get(runId) ?? {};
+      if (phase !== 'loading' && phase !== 'running') return;
       jobs.get(runId)?.handle?.pause();
-      change(runId, { phase: 'paused' });
+      change(runId, { phase: phase === 'loading' ? 'paused' : 'pausing' });
     },
     resume: (runId) => {
       const job = jobs.get(runId);
-      if (get(runId)?.phase !== 'paused') return;
+      const { phase } = get(runId) ?? {};
+      if (phase !== 'paused' && phase !== 'pausing') return;
       job?.handle?.resume();
       change(runId, { phase: job?.handle ? 'running' : 'loading' });
     },
     step: (runId) => {
-      if (get(runId)?.phase !== 'paused') return;
-      jobs.get(runId)?.handle?.step();
+      const handle = jobs.get(runId)?.handle;
+      if (get(runId)?.phase !== 'paused' || !handle) return;
+      handle.step();
+      change(runId, { phase: 'pausing' });
     },
     cancel,
     dismiss: (runId) => {

@@ -30,6 +30,7 @@ export function statusWords(
 const phaseWords: Partial<Record<LiveRun['phase'], string>> = {
   loading: 'fetching the ground',
   running: 'running',
+  pausing: 'pausing after this year',
   paused: 'paused',
   saving: 'saving the end',
 };

@@ -1,11 +1,11 @@
 import { useQuery, useQueryClient, type QueryClient } from '@tanstack/react-query';
-import { useMemo } from 'react';
 import type { Run } from '#contract/runs.ts';
-import { buildGround } from '#sim-core/index.ts';
-import { toBytes, toShares, type Ground } from '#sim-core/grid/ground.ts';
-import { layerValuesQuery } from '#app/features/layers/layer-values.ts';
+import type { RasterSource } from '#sim-core/grid/build-ground.ts';
+import type { ShareMapping } from '#sim-core/grid/ground.ts';
+import { layerValuesQuery, shareBytesQuery } from '#app/features/layers/layer-values.ts';
 import { keepRun } from '#app/features/runs/get-run.ts';
 import type { StartParts } from '#app/features/runs/run-manager.ts';
+import type { LayerRasters } from '#app/workers/run-loop.ts';
 
 type GroundedRun = Pick<Run, 'siteId' | 'spec' | 'grid' | 'layers'>;
 
@@ -13,32 +13,27 @@ const noDataOf = (run: GroundedRun, hash: string) =>
   run.layers.find((layer) => layer.hash === hash)?.noData ?? null;
 
 /**
- * The ground that a run stands on, from the layers that its spec names, also those that were replaced since.
- * @throws ProblemError where a layer cannot be fetched; RunProblem where its numbers do not become shares
+ * Cells of every layer that a run's spec names, also of those that were replaced since.
+ * @throws ProblemError where a layer cannot be fetched
  */
-async function loadGround(queryClient: QueryClient, run: GroundedRun): Promise<Ground> {
-  const { siteId, spec, grid } = run;
+async function loadRasters(queryClient: QueryClient, run: GroundedRun): Promise<LayerRasters> {
+  const { siteId, spec } = run;
   const sources = Object.values(spec.layers).filter((source) => typeof source === 'object');
   const hashes = new Set(sources.flatMap((source) => ('layer' in source ? [source.layer] : [])));
-  const rasters = new Map(
+  return new Map(
     await Promise.all(
-      [...hashes].map(
-        async (hash) => [hash, await queryClient.fetchQuery(layerValuesQuery(siteId, hash))] as const,
-      ),
+      [...hashes].map(async (hash) => {
+        const { values } = await queryClient.fetchQuery(layerValuesQuery(siteId, hash));
+        return [hash, { values, noData: noDataOf(run, hash) }] as const;
+      }),
     ),
   );
-  return buildGround(spec.layers, grid.width * grid.height, (source) => {
-    const hash = 'layer' in source ? source.layer : '';
-    const raster = rasters.get(hash);
-    if (!raster) throw new Error('The run names a file instead of an uploaded layer.');
-    return { values: raster.values, noData: noDataOf(run, hash) };
-  });
 }
 
 /** What the run manager needs to work on a run. */
 export const startParts = (queryClient: QueryClient, run: Run): StartParts => ({
   run,
-  loadGround: () => loadGround(queryClient, run),
+  loadRasters: () => loadRasters(queryClient, run),
   onRecord: (record) => keepRun(queryClient, record),
 });
 
@@ -46,16 +41,20 @@ export const startParts = (queryClient: QueryClient, run: Run): StartParts => ({
 export function useRunCapacity(run: GroundedRun): Uint8Array | undefined {
   const source = run.spec.layers.capacity;
   const hash = typeof source === 'object' && 'layer' in source ? source.layer : undefined;
-  const values = useQuery({ ...layerValuesQuery(run.siteId, hash ?? ''), enabled: hash !== undefined }).data;
+  const mapping = typeof source === 'object' && hash !== undefined ? mappingOf(source) : {};
   const noData = hash === undefined ? null : noDataOf(run, hash);
-  return useMemo(
-    () =>
-      values && typeof source === 'object'
-        ? toBytes(toShares(values.values, { ...source, noData }))
-        : undefined,
-    [values, source, noData],
-  );
+  return useQuery({
+    ...shareBytesQuery(run.siteId, hash ?? '', { ...mapping, noData }),
+    enabled: hash !== undefined,
+  }).data;
 }
+
+const mappingOf = ({ scale, offset, classes, fill }: RasterSource): ShareMapping => ({
+  scale,
+  offset,
+  classes,
+  fill,
+});
 
 /** What the run manager needs, for pages that start runs. */
 export function useStartParts(): (run: Run) => StartParts {

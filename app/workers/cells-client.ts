@@ -1,0 +1,62 @@
+import { releaseProxy, transfer, wrap, type Remote } from 'comlink';
+import type { CellArray, CellLimits } from '#rasters/cells/cell-header.ts';
+import type { CellValues, ShareMapping } from '#sim-core/grid/ground.ts';
+import type { CellsFace } from './cells-face.ts';
+
+/** The worker died, or what it sent could not be read. */
+export class CellsWorkerDied extends Error {
+  override name = 'CellsWorkerDied';
+}
+
+/** Work on whole rasters off the page's thread; refusals come with the name and the message that they have there. */
+export interface CellsClient {
+  /** Inflates a cell-values binary, whose bytes are handed over. @throws CellValuesError (by name) */
+  unpack(packed: Uint8Array<ArrayBuffer>, limits: CellLimits): Promise<CellArray>;
+  /** round(255 × share) of every cell. @throws ShareError (by name) */
+  shareBytes(values: CellValues, mapping: ShareMapping): Promise<Uint8Array>;
+  /** Sum of the shares, none above its cell's capacity. @throws ShareError (by name) */
+  sumShares(values: CellValues, mapping: ShareMapping, capacity: Uint8Array | undefined): Promise<number>;
+}
+
+const startWorker = () =>
+  new Worker(new URL('./cells-worker.ts', import.meta.url), { type: 'module', name: 'cells' });
+
+/** One worker, started when it is first needed and again after it died. */
+export function createCellsClient(createWorker: () => Worker = startWorker): CellsClient {
+  let current: { remote: Remote<CellsFace>; failed: Promise<never> } | undefined;
+
+  function start() {
+    const worker = createWorker();
+    const remote = wrap<CellsFace>(worker);
+    const failed = new Promise<never>((_, reject) => {
+      const died = (event: Event) => {
+        current = undefined;
+        remote[releaseProxy]();
+        worker.terminate();
+        const { message } = event as Partial<ErrorEvent>;
+        reject(
+          new CellsWorkerDied(`The map’s worker stopped: ${message || 'it could not be loaded or read'}`),
+        );
+      };
+      worker.addEventListener('error', died);
+      worker.addEventListener('messageerror', died);
+    });
+    // It is raced below; this keeps a death that nobody waits on from counting as unhandled.
+    failed.catch(() => undefined);
+    return { remote, failed };
+  }
+
+  function ask<T>(call: (remote: Remote<CellsFace>) => Promise<T>): Promise<T> {
+    const { remote, failed } = (current ??= start());
+    return Promise.race([call(remote), failed]);
+  }
+
+  return {
+    unpack: (packed, limits) => ask((remote) => remote.unpack(transfer(packed, [packed.buffer]), limits)),
+    shareBytes: (values, mapping) => ask((remote) => remote.shareBytes(values, mapping)),
+    sumShares: (values, mapping, capacity) => ask((remote) => remote.sumShares(values, mapping, capacity)),
+  };
+}
+
+/** The one that the pages share. */
+export const cells = createCellsClient();

@@ -1,0 +1,4 @@
+import { expose } from 'comlink';
+import { cellsFace } from './cells-face.ts';
+
+expose(cellsFace);
