@@ -1,0 +1,29 @@
+import { readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { describe, expect, it } from 'vitest';
+import { parameters, rateNames } from './parameters.ts';
+
+const page = readFileSync(join(import.meta.dirname, '../../docs/run-spec.md'), 'utf8');
+/** Cells of the page's rate table, by name. */
+const rows = new Map(
+  page
+    .split('\n')
+    .filter((line) => line.startsWith('| `'))
+    .map((line) => line.split('|').map((cell) => cell.trim()))
+    .map(([, name, ...cells]) => [name.replaceAll('`', ''), cells]),
+);
+
+describe('the table of rates', () => {
+  it.each(rateNames)('%s stands on the documented page as it is', (name) => {
+    const { symbol, unit, default: start, min, max, meaning, source } = parameters[name];
+    const cells = rows.get(name)?.slice(0, 6);
+    const plain = (text: string) => text.replaceAll('\\', '');
+    expect(cells?.map(plain)).toEqual([symbol, unit, String(start), `${min} to ${max}`, meaning, source]);
+  });
+
+  it.each(rateNames)('%s starts within its range', (name) => {
+    const { default: start, min, max } = parameters[name];
+    expect(start).toBeGreaterThanOrEqual(min);
+    expect(start).toBeLessThanOrEqual(max);
+  });
+});
