@@ -1,15 +1,15 @@
 import type { Readable } from 'node:stream';
-import { CellValuesError, decodeCellValues } from '#rasters/cells/cell-values.ts';
+import { CellValuesError } from '#rasters/cells/cell-header.ts';
 import { gridSchema } from '#contract/sites.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { frameYears, runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import type { RunRow } from '#server/database/entities/run.ts';
 import { readJson } from '#server/database/json-column.ts';
+import { checkCellsFile } from '#server/files/check-cells.ts';
 import { FileTooLarge, type ReceivedFile } from '#server/files/blob-store.ts';
 import { releaseBlobs, storeWithRows } from '#server/files/stored-files.ts';
 import { fieldProblem, ProblemError } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
-import { readFile } from 'node:fs/promises';
 import { requireRun } from './run-reply.ts';
 import { findFrame, putFrameRow, updateRun } from './run.repository.ts';
 
@@ -110,18 +110,18 @@ async function receiveMap(
 }
 
 async function checkMap(file: ReceivedFile, grid: Grid, kind: MapKind): Promise<void> {
-  const { width, height, values } = await decode(file, grid);
-  const type = mapTypes[kind];
-  if (width !== grid.width || height !== grid.height || !(values instanceof type))
+  const { width, height, type } = await headerOf(file, grid);
+  const expected = mapTypes[kind];
+  if (width !== grid.width || height !== grid.height || type !== expected)
     throw new ProblemError(
       'invalid-request',
-      `Found ${values.constructor.name} of ${width} × ${height} cells; expected ${type.name} of ${grid.width} × ${grid.height}, the grid of the run.`,
+      `Found ${type.name} of ${width} × ${height} cells; expected ${expected.name} of ${grid.width} × ${grid.height}, the grid of the run.`,
     );
 }
 
-async function decode(file: ReceivedFile, { width, height }: Grid) {
+async function headerOf(file: ReceivedFile, { width, height }: Grid) {
   try {
-    return decodeCellValues(await readFile(file.path), { cells: width * height });
+    return await checkCellsFile(file.path, { cells: width * height });
   } catch (error) {
     if (error instanceof CellValuesError) throw new ProblemError('invalid-request', error.message);
     throw error;
