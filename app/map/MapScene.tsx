@@ -4,7 +4,7 @@ import { Container, type Application as PixiApplication } from 'pixi.js';
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { paletteOf, schemeOf, type MapColours } from './map-colours.ts';
-import { toTexels, type MapRaster } from './map-raster.ts';
+import type { MapRaster } from './map-raster.ts';
 import { symbolSize, type MapFoothold } from './map-symbols.ts';
 import { toScreen, type MapSize, type MapView } from './map-view.ts';
 import { useMapColours } from './use-map-colours.ts';
@@ -25,6 +25,8 @@ export interface MapSceneProps {
   readonly pixelRatio: number;
   /** The graphics context is gone; nothing is drawn until the scene is made anew. */
   readonly onLost: () => void;
+  /** The map was painted, with the raster or still without one. */
+  readonly onPainted: (withRaster: boolean) => void;
 }
 
 /** The painted part of the map: a Pixi scene that draws when something changed, and rests otherwise. */
@@ -71,7 +73,7 @@ interface Layers {
 }
 
 function Scene(props: MapSceneProps & { readonly colours: MapColours }) {
-  const { grid, raster, ground, footholds, hidden, view, size, pixelRatio, colours } = props;
+  const { grid, raster, ground, footholds, hidden, view, size, pixelRatio, colours, onPainted } = props;
   const { app } = useApplication();
   const [layers, setLayers] = useState<Layers>();
   const { width, height } = grid;
@@ -93,7 +95,7 @@ function Scene(props: MapSceneProps & { readonly colours: MapColours }) {
   );
 
   useEffect(() => {
-    if (raster) layers?.tiles.setTexels(toTexels(raster));
+    if (raster) layers?.tiles.setRaster(raster);
   }, [layers, raster]);
   useEffect(() => {
     layers?.tiles.setGround(ground);
@@ -123,6 +125,7 @@ function Scene(props: MapSceneProps & { readonly colours: MapColours }) {
     // After every commit: whatever changed is painted once, in the next frame.
     const frame = requestAnimationFrame(() => {
       app.render();
+      if (layers) onPainted(raster !== undefined);
     });
     return () => {
       cancelAnimationFrame(frame);

@@ -19,6 +19,11 @@ const MapScene = lazy(() => import('./MapScene.tsx').then((m) => ({ default: m.M
 
 const noFootholds: readonly MapFoothold[] = [];
 const compactBelow = 560;
+/** What has been painted by the scene of a generation. */
+interface Painting {
+  readonly generation: number;
+  readonly withRaster: boolean;
+}
 const noRoom: MapSize = { width: 0, height: 0 };
 
 /** The map of a site: a raster under palette, footholds, and words; by pointer, finger and keyboard alike. */
@@ -29,6 +34,7 @@ export function SiteMap(props: SiteMapProps) {
   const room = useBoxSize(box);
   const graphics = useGraphics();
   const [own, setOwn] = useState<MapView>();
+  const [painting, setPainting] = useState<Painting>();
   const help = useId();
 
   const size = room?.size ?? noRoom;
@@ -60,17 +66,28 @@ export function SiteMap(props: SiteMapProps) {
   );
   const summary = props.summary ?? props.label;
   const compact = size.width < compactBelow;
+  const { generation } = graphics;
+  const painted = painting?.generation === generation && (painting.withRaster || raster === undefined);
+  const onPainted = (withRaster: boolean) => {
+    if (painting?.generation !== generation || painting.withRaster !== withRaster)
+      setPainting({ generation, withRaster });
+  };
 
   return (
-    <div ref={box} className={classNames('relative overflow-hidden bg-standing', props.className)}>
+    <div
+      ref={box}
+      data-painted={painted}
+      className={classNames('relative overflow-hidden bg-standing', props.className)}
+    >
       {room && view && graphics.ready && (
         <Suspense>
           <MapScene
-            key={graphics.generation}
+            key={generation}
             {...{ grid, raster, ground, footholds, view }}
             {...room}
             hidden={moving?.id}
             onLost={graphics.lose}
+            onPainted={onPainted}
           />
         </Suspense>
       )}
@@ -129,6 +146,11 @@ export function SiteMap(props: SiteMapProps) {
           )}
           {centre && <MapReading {...centre} reading={reading ?? ''} spoken={keyed} compact={compact} />}
         </MapFrameContext>
+      )}
+      {!painted && graphics.ready && (
+        <p className="pointer-events-none absolute inset-0 grid place-content-center text-note text-ink-2">
+          Drawing the map
+        </p>
       )}
       {graphics.problem && (
         <MapUnavailable problem={graphics.problem} summary={summary} onAgain={graphics.again} />

@@ -5,6 +5,7 @@ import {
   closingTexel,
   describeCell,
   noClassCode,
+  sameTexels,
   toTexels,
   type MapRaster,
 } from './map-raster.ts';
@@ -47,6 +48,29 @@ describe('toTexels', () => {
     expect(() => toTexels({ kind: 'classes', values: Uint8Array.of(1), classes: many })).toThrow(
       /256 classes/,
     );
+  });
+});
+
+describe('sameTexels', () => {
+  const renamed = {
+    ...classes,
+    classes: classes.classes.map((c) => ({ ...c, name: 'x', colour: '#000000' })),
+  };
+  const swapped = { ...classes, classes: [...classes.classes].reverse() };
+  const years = closing([2041, 0]);
+  const values = Uint8Array.of(1, 2);
+  it.each<[string, MapRaster, MapRaster, boolean]>([
+    ['a class by another name and colour', classes, renamed, true],
+    ['classes in another order', classes, swapped, false],
+    ['another value for no data', classes, { ...classes, noData: 9 }, false],
+    ['other cells', classes, { ...classes, values: Int16Array.of(1, 9, -1, 3) }, false],
+    ['the same years', years, { ...years }, true],
+    ['another horizon', years, { ...years, lastYear: 2100 } as MapRaster, false],
+    ['a share by another name', { kind: 'cover', values }, { kind: 'share', values, name: 'refuge' }, true],
+    ['shares as classes', { kind: 'cover', values }, { ...classes, values }, false],
+  ])('%s', (_, a, b, same) => {
+    expect(sameTexels(a, b)).toBe(same);
+    if (same) expect(toTexels(a)).toEqual(toTexels(b));
   });
 });
 

@@ -1,4 +1,5 @@
 import type { CellValues } from '#sim-core/grid/ground.ts';
+import { mapValues } from '#sim-core/grid/map-values.ts';
 
 /** One row of a class table, as far as a map needs it. */
 export interface MapClass {
@@ -56,16 +57,28 @@ export function toTexels(raster: MapRaster): Uint8Array {
   const texels = new Uint8Array(raster.values.length);
   if (raster.kind === 'closing') {
     const { values, surveyYear, lastYear } = raster;
-    for (let i = 0; i < texels.length; i++) texels[i] = closingTexel(values[i], surveyYear, lastYear);
-    return texels;
+    return mapValues(values, texels, (year) => closingTexel(year, surveyYear, lastYear));
   }
   const { values, classes, noData } = raster;
   if (classes.length > noClassCode)
     throw new RangeError(`Found ${classes.length} classes; a map shows at most ${noClassCode}. Merge some.`);
   const codes = new Map(classes.map((c, i) => [c.value, i]));
   if (typeof noData === 'number') codes.delete(noData);
-  for (let i = 0; i < texels.length; i++) texels[i] = codes.get(values[i]) ?? noClassCode;
-  return texels;
+  return mapValues(values, texels, (value) => codes.get(value) ?? noClassCode);
+}
+
+/** Whether `toTexels` gives the same for both, so that a class's new name or colour costs no look at the cells. */
+export function sameTexels(a: MapRaster, b: MapRaster): boolean {
+  if (a.values !== b.values) return false;
+  if (a.kind === 'closing' && b.kind === 'closing')
+    return a.surveyYear === b.surveyYear && a.lastYear === b.lastYear;
+  if (a.kind === 'classes' && b.kind === 'classes')
+    return (
+      a.noData === b.noData &&
+      a.classes.length === b.classes.length &&
+      a.classes.every(({ value }, i) => value === b.classes[i].value)
+    );
+  return a.kind !== 'classes' && b.kind !== 'classes';
 }
 
 const percent = (byte: number) => `${Math.round((byte / 255) * 100)} %`;

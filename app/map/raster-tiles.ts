@@ -1,5 +1,6 @@
 import { BufferImageSource, Container, GlProgram, Mesh, MeshGeometry, Shader, UniformGroup } from 'pixi.js';
 import type { MapColours, Rgb } from './map-colours.ts';
+import { sameTexels, toTexels, type MapRaster } from './map-raster.ts';
 import { rasterFragment, rasterVertex } from './raster-shader.ts';
 import { copyTile, splitTiles, type Tile } from './split-tiles.ts';
 
@@ -60,6 +61,7 @@ export class RasterTiles {
     uCellsPerPixel: { value: 1, type: 'f32' },
   });
   readonly #parts: TileParts[];
+  #raster: MapRaster | undefined;
 
   /** @param limit largest side of a texture, texels */
   constructor(width: number, height: number, limit: number) {
@@ -87,8 +89,12 @@ export class RasterTiles {
     source.update();
   }
 
-  /** One upload a tile; the array itself is kept, not copied, where one texture is enough. */
-  setTexels(values: Uint8Array) {
+  /** One upload a tile, where the cells changed; shares are kept, not copied, where one texture is enough. */
+  setRaster(raster: MapRaster) {
+    const last = this.#raster;
+    this.#raster = raster;
+    if (last && sameTexels(last, raster)) return;
+    const values = toTexels(raster);
     for (const { tile, texels } of this.#parts) this.#fill(texels, tile, values);
   }
 

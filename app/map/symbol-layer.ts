@@ -106,7 +106,8 @@ export class SymbolLayer {
   #destroySheet() {
     this.#textures?.surveyed.destroy();
     this.#textures?.planned.destroy();
-    this.#source?.destroy();
+    // Pixi's own particle shader holds on to its last sheet, and complains of one that is destroyed under it.
+    this.#source?.unload();
   }
 
   destroy() {
