@@ -3,6 +3,7 @@ import { useQueryClient } from '@tanstack/react-query';
 import { useSearchParams } from 'react-router-dom';
 import type { LayerPart } from '#contract/sites.ts';
 import { layerParts } from '#contract/sites.ts';
+import { useSearchPatch } from '#app/lib/use-search-patch.ts';
 import { LeaveGuard } from '#app/components/leave-guard.tsx';
 import { LinkButton } from '#app/components/link-button.tsx';
 import { SaveBar } from '#app/components/save-bar.tsx';
@@ -35,11 +36,12 @@ export function Page() {
     uploads.tell({ type: 'dropped', files, guess: (file) => guessPart(file.name, taken) });
   useDropAnywhere(mayKeepGround ? addFiles : undefined);
 
-  const [search, setSearch] = useSearchParams();
+  const [search] = useSearchParams();
+  const patchSearch = useSearchPatch();
   const asked = search.get('layer');
   const present = layerParts.filter((part) => taken.includes(part));
   const shown = present.find((part) => part === asked) ?? present.at(0);
-  const show = (part: LayerPart) => setSearch({ layer: part }, { replace: true });
+  const show = (part: LayerPart) => patchSearch({ layer: part });
 
   // The map follows while somebody types; on a large site it must not hold the typing up.
   const rows = useDeferredValue(classes.rows);

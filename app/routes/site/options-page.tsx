@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
+import { useSearchPatch } from '#app/lib/use-search-patch.ts';
 import { LoadingLines } from '#app/components/loading-lines.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
@@ -16,7 +17,8 @@ export function Page() {
   const { site } = useSite();
   const options = useQuery(optionsQuery(site.id));
   const ground = useGroundRasters(site);
-  const [search, setSearch] = useSearchParams();
+  const [search] = useSearchParams();
+  const patchSearch = useSearchPatch();
   const [pen, setPen] = useState(() => startingPen(site.outlook.surveyYear));
   const [tool, setTool] = useState<'place' | 'look'>('look');
 
@@ -33,16 +35,7 @@ export function Page() {
       options={options.data}
       onPen={setPen}
       onTool={setTool}
-      onChoose={(id) =>
-        setSearch(
-          (current) => {
-            const next = new URLSearchParams(current);
-            next.set('option', id);
-            return next;
-          },
-          { replace: true },
-        )
-      }
+      onChoose={(id) => patchSearch({ option: id })}
     />
   );
 }

@@ -2,6 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import { useNavigate, useSearchParams } from 'react-router-dom';
 import type { Run } from '#contract/runs.ts';
+import { useSearchPatch } from '#app/lib/use-search-patch.ts';
 import { WordButton, WordLink } from '#app/components/word-button.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
 import { optionsQuery } from '#app/features/options/list-options.ts';
@@ -34,7 +35,8 @@ export function RunView({ run, live }: { run: Run; live: LiveRun | undefined }) 
   const { spec, surveyYear } = run;
   const lastYear = surveyYear + run.years;
   const growing = isAtWork(live) && !live.repeat;
-  const [search, setSearch] = useSearchParams();
+  const [search] = useSearchParams();
+  const patchSearch = useSearchPatch();
   const [asTable, setAsTable] = useState(false);
   const [asked, setAsked] = useState<AskedDeed>();
   const [cell, setCell] = useState<{ column: number; row: number }>();
@@ -93,17 +95,7 @@ export function RunView({ run, live }: { run: Run; live: LiveRun | undefined }) 
                 { key: 'closing', label: 'closing year', disabled: !run.hasClosing && !live?.closing },
               ]}
               value={show}
-              onChange={(key) =>
-                setSearch(
-                  (current) => {
-                    const next = new URLSearchParams(current);
-                    if (key === 'closing') next.set('show', key);
-                    else next.delete('show');
-                    return next;
-                  },
-                  { replace: true },
-                )
-              }
+              onChange={(key) => patchSearch({ show: key === 'closing' ? key : undefined })}
             />
             {growing && chosen && year < latest && (
               <WordButton lined onClick={() => setYear(undefined)}>

@@ -1,5 +1,6 @@
 import { useEffect, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
+import { useSearchPatch } from '#app/lib/use-search-patch.ts';
 
 const settleAfter = 300;
 
@@ -14,7 +15,8 @@ export function useYearParam(
   last: number,
   usual: number,
 ): { year: number; chosen: boolean; setYear: (year: number | undefined) => void } {
-  const [search, setSearch] = useSearchParams();
+  const [search] = useSearchParams();
+  const patchSearch = useSearchPatch();
   const asked = Number(search.get('year') ?? NaN);
   const [moved, setMoved] = useState<{ to: number | undefined }>();
   const wanted = moved ? moved.to : asked;
@@ -22,18 +24,10 @@ export function useYearParam(
   useEffect(() => {
     if (!moved) return undefined;
     const timer = setTimeout(() => {
-      setSearch(
-        (current) => {
-          const next = new URLSearchParams(current);
-          if (moved.to === undefined) next.delete('year');
-          else next.set('year', String(moved.to));
-          return next;
-        },
-        { replace: true, preventScrollReset: true },
-      );
+      patchSearch({ year: moved.to === undefined ? undefined : String(moved.to) });
     }, settleAfter);
     return () => clearTimeout(timer);
-  }, [moved, setSearch]);
+  }, [moved, patchSearch]);
 
   const chosen = wanted !== undefined && Number.isInteger(wanted) && wanted >= first && wanted <= last;
   return {
