@@ -6,11 +6,14 @@ import { copyTile, splitTiles, type Tile } from './split-tiles.ts';
 
 interface TileParts {
   readonly tile: Tile;
-  readonly texels: BufferImageSource;
   readonly shader: Shader;
   readonly mesh: Mesh<MeshGeometry, Shader>;
+  texels: BufferImageSource | undefined;
   ground: BufferImageSource | undefined;
 }
+
+/** What a tile's cells are read from, by the shader's names. */
+const resources = { texels: 'uTexels', ground: 'uGround' } as const;
 
 const bytes = (resource: Uint8Array, width: number, height: number) =>
   new BufferImageSource({
@@ -72,20 +75,29 @@ export class RasterTiles {
       name: 'foothold-raster',
     });
     this.#parts = splitTiles(width, height, limit).map((tile) => {
-      const texels = bytes(new Uint8Array(tile.width * tile.height), tile.width, tile.height);
       const shader = new Shader({
         glProgram,
-        resources: { uTexels: texels, uGround: this.#bare, uPalette: this.#palette, look: this.#look },
+        resources: { uTexels: this.#bare, uGround: this.#bare, uPalette: this.#palette, look: this.#look },
       });
       const mesh = new Mesh<MeshGeometry, Shader>({ geometry: quad(tile), shader });
       this.container.addChild(mesh);
-      return { tile, texels, shader, mesh, ground: undefined };
+      return { tile, shader, mesh, texels: undefined, ground: undefined };
     });
   }
 
-  #fill(source: BufferImageSource, tile: Tile, values: Uint8Array) {
-    if (this.#parts.length === 1) source.resource = values;
-    else copyTile(values, this.#columns, tile, source.resource as Uint8Array);
+  /** Until it is filled, a tile shares one cell with all others, so that a bare map costs no upload. */
+  #fill(part: TileParts, name: keyof typeof resources, values: Uint8Array) {
+    const { tile, shader } = part;
+    const whole = this.#parts.length === 1;
+    let source = part[name];
+    if (source) {
+      if (whole) source.resource = values;
+    } else {
+      source = bytes(whole ? values : new Uint8Array(tile.width * tile.height), tile.width, tile.height);
+      part[name] = source;
+      (shader.resources as Record<string, unknown>)[resources[name]] = source;
+    }
+    if (!whole) copyTile(values, this.#columns, tile, source.resource as Uint8Array);
     source.update();
   }
 
@@ -95,22 +107,14 @@ export class RasterTiles {
     this.#raster = raster;
     if (last && sameTexels(last, raster)) return;
     const values = toTexels(raster);
-    for (const { tile, texels } of this.#parts) this.#fill(texels, tile, values);
+    for (const part of this.#parts) this.#fill(part, 'texels', values);
   }
 
   /** Capacity of the ground, where cells of 0 are water; undefined where the raster speaks for itself. */
   setGround(capacity: Uint8Array | undefined) {
     this.#look.uniforms.uHasGround = capacity ? 1 : 0;
     if (!capacity) return;
-    for (const part of this.#parts) {
-      const { tile } = part;
-      if (!part.ground) {
-        const own = this.#parts.length === 1 ? capacity : new Uint8Array(tile.width * tile.height);
-        part.ground = bytes(own, tile.width, tile.height);
-        part.shader.resources.uGround = part.ground;
-      }
-      this.#fill(part.ground, tile, capacity);
-    }
+    for (const part of this.#parts) this.#fill(part, 'ground', capacity);
   }
 
   setPalette(palette: Uint8Array, colours: MapColours) {
@@ -134,7 +138,7 @@ export class RasterTiles {
       mesh.destroy();
       shader.destroy();
       geometry.destroy();
-      texels.destroy();
+      texels?.destroy();
       ground?.destroy();
     }
     this.#palette.destroy();

@@ -24,16 +24,18 @@ describe('createCellsClient', () => {
     worker.terminate();
   });
 
-  it('makes shares and their sum of values that stay here', async () => {
+  it('makes shares and their sum, and says why where it cannot', async () => {
     const { worker } = portWorker(cellsFace);
     const client = createCellsClient(() => worker);
-    const values = Float32Array.of(50, 100, -1);
+    const packed = () =>
+      new Uint8Array(encodeCellValues({ width: 3, height: 1, values: Float32Array.of(50, 100, -1) }));
     const mapping = { scale: 0.01, noData: -1 };
-    expect(await client.shareBytes(values, mapping)).toEqual(Uint8Array.of(128, 255, 0));
-    expect(await client.sumShares(values, mapping, undefined)).toBe(1.5);
-    expect(await client.sumShares(values, mapping, Uint8Array.of(255, 51, 255))).toBeCloseTo(0.7, 12);
-    expect(values).toHaveLength(3);
-    await expect(client.shareBytes(values, {})).rejects.toMatchObject({ name: 'ShareError' });
+    expect(await client.shareBytes(packed(), limits, mapping)).toEqual(Uint8Array.of(128, 255, 0));
+    expect(await client.sumShares(packed(), limits, mapping, undefined)).toBe(1.5);
+    const capacity = Uint8Array.of(255, 51, 255);
+    expect(await client.sumShares(packed(), limits, mapping, capacity)).toBeCloseTo(0.7, 12);
+    expect(capacity).toHaveLength(3);
+    await expect(client.shareBytes(packed(), limits, {})).rejects.toMatchObject({ name: 'ShareError' });
     worker.terminate();
   });
 

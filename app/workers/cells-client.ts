@@ -1,6 +1,6 @@
 import { releaseProxy, transfer, wrap, type Remote } from 'comlink';
 import type { CellArray, CellLimits } from '#rasters/cells/cell-header.ts';
-import type { CellValues, ShareMapping } from '#sim-core/grid/ground.ts';
+import type { ShareMapping } from '#sim-core/grid/ground.ts';
 import type { CellsFace } from './cells-face.ts';
 
 /** The worker died, or what it sent could not be read. */
@@ -8,14 +8,21 @@ export class CellsWorkerDied extends Error {
   override name = 'CellsWorkerDied';
 }
 
-/** Work on whole rasters off the page's thread; refusals come with the name and the message that they have there. */
+/**
+ * Work on whole rasters off the page's thread, from their cell-values binaries, whose bytes are handed over. Refusals
+ * come with the name and the message that they have there: CellValuesError, ShareError.
+ */
 export interface CellsClient {
-  /** Inflates a cell-values binary, whose bytes are handed over. @throws CellValuesError (by name) */
   unpack(packed: Uint8Array<ArrayBuffer>, limits: CellLimits): Promise<CellArray>;
-  /** round(255 × share) of every cell. @throws ShareError (by name) */
-  shareBytes(values: CellValues, mapping: ShareMapping): Promise<Uint8Array>;
-  /** Sum of the shares, none above its cell's capacity. @throws ShareError (by name) */
-  sumShares(values: CellValues, mapping: ShareMapping, capacity: Uint8Array | undefined): Promise<number>;
+  /** round(255 × share) of every cell */
+  shareBytes(packed: Uint8Array<ArrayBuffer>, limits: CellLimits, mapping: ShareMapping): Promise<Uint8Array>;
+  /** Sum of the shares, none above its cell's capacity (round(255 × share), copied) where that is known. */
+  sumShares(
+    packed: Uint8Array<ArrayBuffer>,
+    limits: CellLimits,
+    mapping: ShareMapping,
+    capacity: Uint8Array | undefined,
+  ): Promise<number>;
 }
 
 const startWorker = () =>
@@ -51,10 +58,11 @@ export function createCellsClient(createWorker: () => Worker = startWorker): Cel
     return Promise.race([call(remote), failed]);
   }
 
+  const handOver = (packed: Uint8Array<ArrayBuffer>) => transfer(packed, [packed.buffer]);
   return {
-    unpack: (packed, limits) => ask((remote) => remote.unpack(transfer(packed, [packed.buffer]), limits)),
-    shareBytes: (values, mapping) => ask((remote) => remote.shareBytes(values, mapping)),
-    sumShares: (values, mapping, capacity) => ask((remote) => remote.sumShares(values, mapping, capacity)),
+    unpack: (packed, ...rest) => ask((remote) => remote.unpack(handOver(packed), ...rest)),
+    shareBytes: (packed, ...rest) => ask((remote) => remote.shareBytes(handOver(packed), ...rest)),
+    sumShares: (packed, ...rest) => ask((remote) => remote.sumShares(handOver(packed), ...rest)),
   };
 }
 

@@ -2,11 +2,11 @@
 import { transfer } from 'comlink';
 import { describe, expect, it, vi } from 'vitest';
 import { RunCancelled, RunWorkerDied, startRun } from './run-client.ts';
-import type { LayerRasters, RunInput, RunListener } from './run-loop.ts';
+import type { PackedLayers, RunInput, RunListener } from './run-loop.ts';
 import { portWorker } from './testing/port-worker.ts';
 
 function someInput() {
-  const ground = new Map([['a', { values: Uint8Array.of(1, 2, 3, 4, 5, 6), noData: null }]]);
+  const ground = new Map([['a', { packed: Uint8Array.of(1, 2, 3, 4, 5, 6), noData: null }]]);
   return { spec: { seed: 'a' }, grid: { width: 3, height: 2 }, ground } as unknown as RunInput;
 }
 const start = (face: object, listener: Partial<RunListener> = {}, locks?: LockManager) => {
@@ -20,14 +20,14 @@ const start = (face: object, listener: Partial<RunListener> = {}, locks?: LockMa
 };
 
 describe('startRun', () => {
-  it('lets the page keep its layers, and hands frames back instead of copying them', async () => {
+  it('hands the ground over instead of copying it, and frames back likewise', async () => {
     const input = someInput();
     const frames: Uint8Array[] = [];
     let kept: Uint8Array | undefined;
     const locks = { request: () => new Promise(() => undefined) } as unknown as LockManager;
     const { worker, terminate } = portWorker({
       run: async (given: RunInput, listener: RunListener) => {
-        kept = Uint8Array.from((given.ground as LayerRasters).get('a')!.values);
+        kept = Uint8Array.from((given.ground as PackedLayers).get('a')!.packed);
         await listener.onYear(transfer({ year: 2026, rows: [], frame: kept }, [kept.buffer]));
         return { closing: Int16Array.of(1) };
       },
@@ -37,7 +37,7 @@ describe('startRun', () => {
       { onYear: (e) => void frames.push(e.frame!) },
       { createWorker: () => worker, locks },
     );
-    expect((input.ground as LayerRasters).get('a')?.values).toHaveLength(6);
+    expect((input.ground as PackedLayers).get('a')?.packed).toHaveLength(0);
     expect([...(await result).closing]).toEqual([1]);
     expect([...frames[0]]).toEqual([1, 2, 3, 4, 5, 6]);
     expect(kept).toHaveLength(0);

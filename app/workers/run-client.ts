@@ -1,5 +1,5 @@
-import { proxy, releaseProxy, wrap } from 'comlink';
-import type { RunInput, RunListener, RunOutcome } from './run-loop.ts';
+import { proxy, releaseProxy, transfer, wrap } from 'comlink';
+import { groundBuffers, type RunInput, type RunListener, type RunOutcome } from './run-loop.ts';
 import type { PageListener, RunWorkerFace } from './run-worker.ts';
 
 /** The run was cancelled by its caller. */
@@ -39,8 +39,7 @@ const startWorker = () =>
 /**
  * Starts a run in a worker of its own.
  *
- * The arrays of `input.ground` are copied in one piece each and stay usable here: maps show them, too. Frames and
- * closing years are handed over.
+ * The arrays of `input.ground` are handed over: they are empty afterwards, so give copies of what is still needed.
  * At most four years are on their way at any time: a year is acknowledged when `listener.onYear` (or its promise)
  * returns, so a slow saver slows the run instead of filling memory.
  */
@@ -96,7 +95,7 @@ export function startRun(input: RunInput, listener: RunListener, options: RunCli
       },
     };
     try {
-      return await remote.run(input, proxy(heard), lock);
+      return await remote.run(transfer(input, groundBuffers(input.ground)), proxy(heard), lock);
     } catch (reason) {
       // The listener's own error, with its class and fields, rather than the copy that crossed twice.
       throw refusal ? refusal.reason : reason;

@@ -1,18 +1,22 @@
+import { unpackCellValues } from '#rasters/cells/unpack-cell-values.ts';
 import { buildGround } from '#sim-core/index.ts';
+import type { RasterValues } from '#sim-core/grid/build-ground.ts';
 import type { Ground } from '#sim-core/grid/ground.ts';
-import type { LayerRasters, RunInput } from './run-loop.ts';
+import { isPacked, type RunInput } from './run-loop.ts';
 
 /**
  * The ground that a run stands on, from the layers that its spec names.
- * @throws RunProblem where the numbers of a layer do not become shares
+ * @throws CellValuesError where a layer is damaged; RunProblem where its numbers do not become shares
  */
-export function groundOf({ spec, grid, ground }: RunInput): Ground {
-  if (!isRasters(ground)) return ground;
-  return buildGround(spec.layers, grid.width * grid.height, (source) => {
-    const raster = ground.get('layer' in source ? source.layer : '');
+export async function groundOf({ spec, grid, ground }: RunInput): Promise<Ground> {
+  if (!isPacked(ground)) return ground;
+  const cells = grid.width * grid.height;
+  const rasters = new Map<string, RasterValues>();
+  for (const [hash, { packed, noData }] of ground)
+    rasters.set(hash, { values: (await unpackCellValues(packed, { cells })).values, noData });
+  return buildGround(spec.layers, cells, (source) => {
+    const raster = rasters.get('layer' in source ? source.layer : '');
     if (!raster) throw new Error('The run names a layer that was not handed over.');
     return raster;
   });
 }
-
-const isRasters = (ground: RunInput['ground']): ground is LayerRasters => ground instanceof Map;

@@ -1,18 +1,23 @@
-import type { RasterValues } from '#sim-core/grid/build-ground.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Ground } from '#sim-core/grid/ground.ts';
 import type { RunResult, SeriesRow } from '#sim-core/spec/run-result.ts';
 import type { RunSpec } from '#sim-core/spec/run-spec.ts';
 
-/** Cells of the layers that a spec names, by hash. */
-export type LayerRasters = ReadonlyMap<string, RasterValues>;
+/** A layer that a spec names. */
+export interface PackedLayer {
+  /** its cells in the binary of `rasters/cells/cell-values.ts` */
+  readonly packed: Uint8Array<ArrayBuffer>;
+  readonly noData: number | null;
+}
+/** The layers that a spec names, by hash. */
+export type PackedLayers = ReadonlyMap<string, PackedLayer>;
 
 /** What a run starts from. */
 export interface RunInput {
   readonly spec: RunSpec;
   readonly grid: Grid;
   /** ready, or the layers from which the worker builds it, so that the page need not */
-  readonly ground: Ground | LayerRasters;
+  readonly ground: Ground | PackedLayers;
 }
 
 /** One year that is done; the survey comes first. `frame` and `packed` are there for reported years alone. */
@@ -63,7 +68,7 @@ interface EngineYear {
 }
 
 export interface RunLoopParts {
-  readonly createRun: (input: RunInput) => StepwiseRun;
+  readonly createRun: (input: RunInput) => StepwiseRun | Promise<StepwiseRun>;
   readonly pack: (cells: { width: number; height: number; values: Uint8Array | Int16Array }) => Uint8Array;
   /** milliseconds, for the pace alone: no result depends on it */
   readonly now: () => number;
@@ -123,7 +128,7 @@ export function createRunLoop({ createRun, pack, now }: RunLoopParts): RunLoop {
 
     try {
       say(0, 0);
-      const engine = createRun(input);
+      const engine = await createRun(input);
       send(engine.survey);
       for (let year = 0; ; year++) {
         await turn();
@@ -180,3 +185,13 @@ function createTurns() {
     },
   };
 }
+
+/** Buffers of what a run stands on, each once, to be handed over instead of copied. */
+export function groundBuffers(ground: RunInput['ground']): ArrayBuffer[] {
+  const arrays = isPacked(ground)
+    ? [...ground.values()].map(({ packed }) => packed)
+    : [ground.capacity, ground.vigour, ground.exposure, ground.refuge, ground.fence, ground.cover];
+  return [...new Set(arrays.map((array) => array.buffer as ArrayBuffer))];
+}
+
+export const isPacked = (ground: RunInput['ground']): ground is PackedLayers => ground instanceof Map;

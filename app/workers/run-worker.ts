@@ -5,7 +5,7 @@ import { groundOf } from './run-ground.ts';
 import { createRunLoop, type RunInput, type RunProgress, type YearEvent } from './run-loop.ts';
 
 const loop = createRunLoop({
-  createRun: (input) => createRun({ spec: input.spec, grid: input.grid, ground: groundOf(input) }),
+  createRun: async (input) => createRun({ ...input, ground: await groundOf(input) }),
   pack: encodeCellValues,
   now: () => performance.now(),
 });

@@ -5,17 +5,19 @@ import { maximumCells } from '#sim-core/spec/run-spec.ts';
 import { fetchBytes } from '#app/lib/api-client.ts';
 import { cells } from '#app/workers/cells-client.ts';
 
+const limits = { cells: maximumCells };
 /** Bytes of a hash never change, so they are fetched once; they are large, so they are let go soon. */
 const held = { staleTime: Infinity, gcTime: 60_000, structuralSharing: false } as const;
+
+/** A layer's cells as they are stored, from the browser's own cache where it has them. */
+export const fetchLayer = (siteId: string, hash: string, signal?: AbortSignal) =>
+  fetchBytes(getLayerValues, { params: { siteId, hash }, signal });
 
 /** The decoded values of a layer's cells. */
 export const layerValuesQuery = (siteId: string, hash: string) =>
   queryOptions({
     queryKey: ['layer-values', siteId, hash],
-    queryFn: async ({ signal }) =>
-      cells.unpack(await fetchBytes(getLayerValues, { params: { siteId, hash }, signal }), {
-        cells: maximumCells,
-      }),
+    queryFn: async ({ signal }) => cells.unpack(await fetchLayer(siteId, hash, signal), limits),
     ...held,
   });
 
@@ -23,10 +25,7 @@ export const layerValuesQuery = (siteId: string, hash: string) =>
 export const shareBytesQuery = (siteId: string, hash: string, mapping: ShareMapping) =>
   queryOptions({
     queryKey: ['layer-shares', siteId, hash, mapping],
-    queryFn: async ({ client }) => {
-      const { values } = await client.fetchQuery(layerValuesQuery(siteId, hash));
-      return cells.shareBytes(values, mapping);
-    },
+    queryFn: async ({ signal }) => cells.shareBytes(await fetchLayer(siteId, hash, signal), limits, mapping),
     ...held,
   });
 
@@ -42,11 +41,10 @@ export const sumSharesQuery = (
 ) =>
   queryOptions({
     queryKey: ['layer-sum', siteId, hash, mapping, ceiling],
-    queryFn: async ({ client }) => {
-      const { values } = await client.fetchQuery(layerValuesQuery(siteId, hash));
+    queryFn: async ({ client, signal }) => {
       const capacity =
         ceiling && (await client.fetchQuery(shareBytesQuery(siteId, ceiling.hash, ceiling.mapping)));
-      return cells.sumShares(values, mapping, capacity);
+      return cells.sumShares(await fetchLayer(siteId, hash, signal), limits, mapping, capacity);
     },
     staleTime: Infinity,
   });

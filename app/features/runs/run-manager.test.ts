@@ -90,7 +90,7 @@ function setUp() {
     onFrame,
     onChange,
   });
-  const parts = { run, loadRasters: () => Promise.resolve(new Map<string, never>()), onRecord };
+  const parts = { run, loadLayers: () => Promise.resolve(new Map<string, never>()), onRecord };
   return { manager, server, made, stored, waits, onFrame, onChange, onRecord, parts, die: worker.die };
 }
 const phase = (t: ReturnType<typeof setUp>) => t.manager.get('run-1')?.phase;
@@ -161,7 +161,7 @@ describe('createRunManager', () => {
 
   it('fails where the layers cannot be read, before any work', async () => {
     const t = setUp();
-    t.manager.start({ ...t.parts, loadRasters: () => Promise.reject(refused(404)) });
+    t.manager.start({ ...t.parts, loadLayers: () => Promise.reject(refused(404)) });
     await lately(() => phase(t) === 'failed');
     expect(t.made.years).toBe(0);
     expect(t.server.stop).toHaveBeenCalledTimes(1);

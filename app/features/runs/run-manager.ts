@@ -2,7 +2,7 @@ import type { Run } from '#contract/runs.ts';
 import type { SeriesRow } from '#sim-core/spec/run-result.ts';
 import { errorText, type ProblemError } from '#app/lib/api-client.ts';
 import type { RunHandle } from '#app/workers/run-client.ts';
-import type { LayerRasters, RunInput, RunListener, RunProgress } from '#app/workers/run-loop.ts';
+import type { PackedLayers, RunInput, RunListener, RunProgress } from '#app/workers/run-loop.ts';
 import { saveWithRetry } from './save-with-retry.ts';
 import type { RunServer } from './run-server.ts';
 
@@ -51,7 +51,7 @@ export interface RunManagerParts {
 
 export interface StartParts {
   readonly run: Run;
-  readonly loadRasters: () => Promise<LayerRasters>;
+  readonly loadLayers: () => Promise<PackedLayers>;
   /** what the server now knows of the run */
   readonly onRecord: (run: Run) => void;
 }
@@ -128,10 +128,10 @@ export function createRunManager(manager: RunManagerParts): RunManager {
   }
 
   async function work(job: Job, repeat: boolean): Promise<void> {
-    const { run, loadRasters, onRecord } = job.parts;
+    const { run, loadLayers, onRecord } = job.parts;
     const { signal } = job.abort;
     const save = saver(job);
-    const ground = await loadRasters();
+    const ground = await loadLayers();
     if (signal.aborted) return;
     const onYear: RunListener['onYear'] = async ({ year, rows, frame, packed }) => {
       const before = get(run.id)?.rows ?? [];

@@ -2,10 +2,10 @@ import { useQuery, useQueryClient, type QueryClient } from '@tanstack/react-quer
 import type { Run } from '#contract/runs.ts';
 import type { RasterSource } from '#sim-core/grid/build-ground.ts';
 import type { ShareMapping } from '#sim-core/grid/ground.ts';
-import { layerValuesQuery, shareBytesQuery } from '#app/features/layers/layer-values.ts';
+import { fetchLayer, shareBytesQuery } from '#app/features/layers/layer-values.ts';
 import { keepRun } from '#app/features/runs/get-run.ts';
 import type { StartParts } from '#app/features/runs/run-manager.ts';
-import type { LayerRasters } from '#app/workers/run-loop.ts';
+import type { PackedLayers } from '#app/workers/run-loop.ts';
 
 type GroundedRun = Pick<Run, 'siteId' | 'spec' | 'grid' | 'layers'>;
 
@@ -13,18 +13,17 @@ const noDataOf = (run: GroundedRun, hash: string) =>
   run.layers.find((layer) => layer.hash === hash)?.noData ?? null;
 
 /**
- * Cells of every layer that a run's spec names, also of those that were replaced since.
+ * Every layer that a run's spec names, also those that were replaced since.
  * @throws ProblemError where a layer cannot be fetched
  */
-async function loadRasters(queryClient: QueryClient, run: GroundedRun): Promise<LayerRasters> {
-  const { siteId, spec } = run;
-  const sources = Object.values(spec.layers).filter((source) => typeof source === 'object');
+async function loadLayers(run: GroundedRun): Promise<PackedLayers> {
+  const sources = Object.values(run.spec.layers).filter((source) => typeof source === 'object');
   const hashes = new Set(sources.flatMap((source) => ('layer' in source ? [source.layer] : [])));
   return new Map(
     await Promise.all(
       [...hashes].map(async (hash) => {
-        const { values } = await queryClient.fetchQuery(layerValuesQuery(siteId, hash));
-        return [hash, { values, noData: noDataOf(run, hash) }] as const;
+        const packed = await fetchLayer(run.siteId, hash);
+        return [hash, { packed, noData: noDataOf(run, hash) }] as const;
       }),
     ),
   );
@@ -33,7 +32,7 @@ async function loadRasters(queryClient: QueryClient, run: GroundedRun): Promise<
 /** What the run manager needs to work on a run. */
 export const startParts = (queryClient: QueryClient, run: Run): StartParts => ({
   run,
-  loadRasters: () => loadRasters(queryClient, run),
+  loadLayers: () => loadLayers(run),
   onRecord: (record) => keepRun(queryClient, record),
 });
 
