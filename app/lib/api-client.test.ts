@@ -1,7 +1,7 @@
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { z } from 'zod';
 import { endpoint } from '#contract/endpoint.ts';
-import { callEndpoint, endpointUrl, fetchBytes, onSignedOut, ProblemError } from './api-client.ts';
+import { callEndpoint, endpointUrl, fetchBlob, onSignedOut, ProblemError } from './api-client.ts';
 
 const read = endpoint({
   method: 'GET',
@@ -64,9 +64,15 @@ describe('callEndpoint', () => {
 
   it('sends bytes as they are and gets bytes back', async () => {
     const fetched = answer(200, Uint8Array.of(7, 8, 9));
-    await callEndpoint(put, { bytes: Uint8Array.of(1, 2) });
-    expect(fetched.mock.calls[0][1]?.body).toEqual(Uint8Array.of(1, 2));
-    expect(await fetchBytes(bytes, {})).toEqual(Uint8Array.of(7, 8, 9));
+    const sent = new Blob([Uint8Array.of(1, 2)]);
+    await callEndpoint(put, { bytes: sent });
+    expect(fetched.mock.calls[0][1]?.body).toBe(sent);
+    expect([...new Uint8Array(await (await fetchBlob(bytes, {})).arrayBuffer())]).toEqual([7, 8, 9]);
+  });
+
+  it('reads the report where bytes are refused', async () => {
+    problem(404, 'not-found');
+    expect(await refusal(fetchBlob(bytes, {}))).toMatchObject({ status: 404, message: 'Because.' });
   });
 
   it('does not trust a reply that breaks the contract', async () => {
@@ -126,8 +132,7 @@ class FakeXhr {
   static last: FakeXhr;
   upload: { onprogress?: (event: object) => void } = {};
   status = 0;
-  response = new ArrayBuffer(0);
-  responseType = '';
+  responseText = '';
   body: unknown;
   aborted = false;
   onload?: () => void;
@@ -149,7 +154,7 @@ class FakeXhr {
   }
   answer(status: number, body: string) {
     this.status = status;
-    this.response = new TextEncoder().encode(body).buffer;
+    this.responseText = body;
     this.onload?.();
     this.onloadend?.();
   }

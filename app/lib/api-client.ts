@@ -19,7 +19,7 @@ export type AddressInput<E extends Endpoint> = Part<'params', E['params']> &
 export type CallInput<E extends Endpoint> = AddressInput<E> &
   Part<'body', E['body']> & {
     file?: File;
-    bytes?: Uint8Array<ArrayBuffer>;
+    bytes?: Blob;
     /** bytes sent so far, while a file goes up */
     onProgress?: (progress: Progress) => void;
     signal?: AbortSignal;
@@ -31,7 +31,7 @@ interface RawInput {
   query?: unknown;
   body?: unknown;
   file?: File;
-  bytes?: Uint8Array<ArrayBuffer>;
+  bytes?: Blob;
   onProgress?: (progress: Progress) => void;
   signal?: AbortSignal;
 }
@@ -60,12 +60,9 @@ export async function callEndpoint<E extends Endpoint>(
   return reply.data as z.output<E['reply']>;
 }
 
-/** As `callEndpoint`, for endpoints that answer with bytes. */
-export async function fetchBytes<E extends Endpoint>(
-  endpoint: E,
-  input: CallInput<E>,
-): Promise<Uint8Array<ArrayBuffer>> {
-  return (await ask(endpoint, input)).bytes;
+/** As `callEndpoint`, for endpoints that answer with bytes: they pass the page by, on their way to a worker. */
+export async function fetchBlob<E extends Endpoint>(endpoint: E, input: CallInput<E>): Promise<Blob> {
+  return (await ask(endpoint, input, 'blob')).blob ?? new Blob();
 }
 
 /** The address of an endpoint, for links that the browser follows or downloads. */
@@ -85,16 +82,17 @@ function address(endpoint: Endpoint, input: RawInput): string {
   return search === '' ? path : `${path}?${search}`;
 }
 
-async function ask(endpoint: Endpoint, input: RawInput): Promise<Answer> {
+async function ask(endpoint: Endpoint, input: RawInput, reads?: 'blob'): Promise<Answer> {
   const answer = await sendRequest({
     method: endpoint.method,
     url: address(endpoint, input),
     ...requestBody(endpoint, input),
     onProgress: input.onProgress,
     signal: input.signal,
+    reads,
   });
   if (answer.status >= 200 && answer.status < 300) return answer;
-  const error = ProblemError.fromReply(answer.status, new TextDecoder().decode(answer.bytes));
+  const error = ProblemError.fromReply(answer.status, answer.text);
   if (error.code === 'not-signed-in') signedOutListeners.forEach((listener) => listener());
   throw error;
 }
@@ -121,7 +119,7 @@ function requestBody(endpoint: Endpoint, input: RawInput): { body?: BodyInit; co
 
 function parseJson(answer: Answer): unknown {
   try {
-    return JSON.parse(new TextDecoder().decode(answer.bytes)) as unknown;
+    return JSON.parse(answer.text) as unknown;
   } catch {
     return undefined;
   }

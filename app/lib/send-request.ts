@@ -13,11 +13,15 @@ export interface Request {
   contentType?: string;
   onProgress?: (progress: Progress) => void;
   signal?: AbortSignal;
+  /** what a good reply is read as; a refusal is text always */
+  reads?: 'text' | 'blob';
 }
 
+/** `blob` for a good reply that was to be read as one; the browser then holds it outside of the page. */
 export interface Answer {
   status: number;
-  bytes: Uint8Array<ArrayBuffer>;
+  text: string;
+  blob?: Blob;
 }
 
 /**
@@ -33,12 +37,16 @@ export function sendRequest(request: Request): Promise<Answer> {
 
 const accept = 'application/json, application/problem+json, */*';
 
-async function sendByFetch({ method, url, body, contentType, signal }: Request): Promise<Answer> {
+async function sendByFetch(request: Request): Promise<Answer> {
+  const { method, url, body, contentType, signal } = request;
   const headers: Record<string, string> = { accept };
   if (contentType !== undefined) headers['content-type'] = contentType;
   try {
     const reply = await fetch(url, { method, headers, body, signal, credentials: 'same-origin' });
-    return { status: reply.status, bytes: new Uint8Array(await reply.arrayBuffer()) };
+    const { status } = reply;
+    return request.reads === 'blob' && reply.ok
+      ? { status, text: '', blob: await reply.blob() }
+      : { status, text: await reply.text() };
   } catch (error) {
     if (signal?.aborted) throw abortError();
     if (error instanceof TypeError || error instanceof DOMException) throw ProblemError.unreachable();
@@ -53,16 +61,11 @@ function sendByXhr(request: Request, onProgress: (progress: Progress) => void): 
     const xhr = new XMLHttpRequest();
     const abort = () => xhr.abort();
     xhr.open(method, url);
-    xhr.responseType = 'arraybuffer';
     xhr.setRequestHeader('accept', accept);
     if (contentType !== undefined) xhr.setRequestHeader('content-type', contentType);
     xhr.upload.onprogress = ({ loaded, total, lengthComputable }) =>
       onProgress({ sent: loaded, total: lengthComputable ? total : undefined });
-    xhr.onload = () =>
-      resolve({
-        status: xhr.status,
-        bytes: new Uint8Array((xhr.response ?? new ArrayBuffer(0)) as ArrayBuffer),
-      });
+    xhr.onload = () => resolve({ status: xhr.status, text: xhr.responseText });
     xhr.onerror = () => reject(ProblemError.unreachable());
     xhr.onabort = () => reject(abortError());
     xhr.onloadend = () => signal?.removeEventListener('abort', abort);

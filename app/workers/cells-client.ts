@@ -1,4 +1,4 @@
-import { releaseProxy, transfer, wrap, type Remote } from 'comlink';
+import { releaseProxy, wrap, type Remote } from 'comlink';
 import type { CellArray, CellLimits } from '#rasters/cells/cell-header.ts';
 import type { ShareMapping } from '#sim-core/grid/ground.ts';
 import type { CellsFace } from './cells-face.ts';
@@ -9,16 +9,16 @@ export class CellsWorkerDied extends Error {
 }
 
 /**
- * Work on whole rasters off the page's thread, from their cell-values binaries, whose bytes are handed over. Refusals
+ * Work on whole rasters off the page's thread, from their cell-values binaries. Refusals
  * come with the name and the message that they have there: CellValuesError, ShareError.
  */
 export interface CellsClient {
-  unpack(packed: Uint8Array<ArrayBuffer>, limits: CellLimits): Promise<CellArray>;
+  unpack(packed: Blob, limits: CellLimits): Promise<CellArray>;
   /** round(255 × share) of every cell */
-  shareBytes(packed: Uint8Array<ArrayBuffer>, limits: CellLimits, mapping: ShareMapping): Promise<Uint8Array>;
+  shareBytes(packed: Blob, limits: CellLimits, mapping: ShareMapping): Promise<Uint8Array>;
   /** Sum of the shares, none above its cell's capacity (round(255 × share), copied) where that is known. */
   sumShares(
-    packed: Uint8Array<ArrayBuffer>,
+    packed: Blob,
     limits: CellLimits,
     mapping: ShareMapping,
     capacity: Uint8Array | undefined,
@@ -58,11 +58,10 @@ export function createCellsClient(createWorker: () => Worker = startWorker): Cel
     return Promise.race([call(remote), failed]);
   }
 
-  const handOver = (packed: Uint8Array<ArrayBuffer>) => transfer(packed, [packed.buffer]);
   return {
-    unpack: (packed, ...rest) => ask((remote) => remote.unpack(handOver(packed), ...rest)),
-    shareBytes: (packed, ...rest) => ask((remote) => remote.shareBytes(handOver(packed), ...rest)),
-    sumShares: (packed, ...rest) => ask((remote) => remote.sumShares(handOver(packed), ...rest)),
+    unpack: (...input) => ask((remote) => remote.unpack(...input)),
+    shareBytes: (...input) => ask((remote) => remote.shareBytes(...input)),
+    sumShares: (...input) => ask((remote) => remote.sumShares(...input)),
   };
 }
 

@@ -1,12 +1,22 @@
 // @vitest-environment node
 import { transfer } from 'comlink';
 import { describe, expect, it, vi } from 'vitest';
+import type { Ground } from '#sim-core/grid/ground.ts';
 import { RunCancelled, RunWorkerDied, startRun } from './run-client.ts';
-import type { PackedLayers, RunInput, RunListener } from './run-loop.ts';
+import type { RunInput, RunListener } from './run-loop.ts';
 import { portWorker } from './testing/port-worker.ts';
 
 function someInput() {
-  const ground = new Map([['a', { packed: Uint8Array.of(1, 2, 3, 4, 5, 6), noData: null }]]);
+  const bytes = () => new Uint8Array(6).fill(255);
+  const shared = bytes();
+  const ground = {
+    capacity: shared,
+    vigour: shared,
+    exposure: bytes(),
+    refuge: bytes(),
+    fence: bytes(),
+    cover: new Float32Array(6),
+  };
   return { spec: { seed: 'a' }, grid: { width: 3, height: 2 }, ground } as unknown as RunInput;
 }
 const start = (face: object, listener: Partial<RunListener> = {}, locks?: LockManager) => {
@@ -27,7 +37,8 @@ describe('startRun', () => {
     const locks = { request: () => new Promise(() => undefined) } as unknown as LockManager;
     const { worker, terminate } = portWorker({
       run: async (given: RunInput, listener: RunListener) => {
-        kept = Uint8Array.from((given.ground as PackedLayers).get('a')!.packed);
+        const { capacity, cover } = given.ground as Ground;
+        kept = Uint8Array.of(capacity.length, cover.length);
         await listener.onYear(transfer({ year: 2026, rows: [], frame: kept }, [kept.buffer]));
         return { closing: Int16Array.of(1) };
       },
@@ -37,9 +48,10 @@ describe('startRun', () => {
       { onYear: (e) => void frames.push(e.frame!) },
       { createWorker: () => worker, locks },
     );
-    expect((input.ground as PackedLayers).get('a')?.packed).toHaveLength(0);
+    expect((input.ground as Ground).capacity).toHaveLength(0);
+    expect((input.ground as Ground).cover).toHaveLength(0);
     expect([...(await result).closing]).toEqual([1]);
-    expect([...frames[0]]).toEqual([1, 2, 3, 4, 5, 6]);
+    expect([...frames[0]]).toEqual([6, 6]);
     expect(kept).toHaveLength(0);
     expect(terminate).toHaveBeenCalledOnce();
   });

@@ -39,7 +39,8 @@ const startWorker = () =>
 /**
  * Starts a run in a worker of its own.
  *
- * The arrays of `input.ground` are handed over: they are empty afterwards, so give copies of what is still needed.
+ * The arrays of a ready `input.ground` are handed over: they are empty afterwards, so give copies of what is still
+ * needed.
  * At most four years are on their way at any time: a year is acknowledged when `listener.onYear` (or its promise)
  * returns, so a slow saver slows the run instead of filling memory.
  */

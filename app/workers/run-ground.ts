@@ -1,7 +1,7 @@
-import { unpackCellValues } from '#rasters/cells/unpack-cell-values.ts';
 import { buildGround } from '#sim-core/index.ts';
 import type { RasterValues } from '#sim-core/grid/build-ground.ts';
 import type { Ground } from '#sim-core/grid/ground.ts';
+import { unpackBlob } from './unpack-blob.ts';
 import { isPacked, type RunInput } from './run-loop.ts';
 
 /**
@@ -13,7 +13,7 @@ export async function groundOf({ spec, grid, ground }: RunInput): Promise<Ground
   const cells = grid.width * grid.height;
   const rasters = new Map<string, RasterValues>();
   for (const [hash, { packed, noData }] of ground)
-    rasters.set(hash, { values: (await unpackCellValues(packed, { cells })).values, noData });
+    rasters.set(hash, { values: (await unpackBlob(packed, { cells })).values, noData });
   return buildGround(spec.layers, cells, (source) => {
     const raster = rasters.get('layer' in source ? source.layer : '');
     if (!raster) throw new Error('The run names a layer that was not handed over.');

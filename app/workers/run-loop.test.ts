@@ -31,7 +31,8 @@ function countingRun(years: number, breakIn?: number) {
   return { run, asked };
 }
 const pack = ({ values }: { values: Uint8Array | Int16Array }) =>
-  Uint8Array.of(values.length, values[0] & 255);
+  new Blob([Uint8Array.of(values.length, values[0] & 255)]);
+const bytesOf = async (blob: Blob | undefined) => blob && [...new Uint8Array(await blob.arrayBuffer())];
 const turns = async (n: number) => {
   for (let i = 0; i < n; i++) await new Promise((resolve) => setImmediate(resolve));
 };
@@ -43,9 +44,14 @@ describe('createRunLoop', () => {
     const loop = createRunLoop({ createRun: () => run, pack, now: () => 0 });
     const outcome = await loop.run(input(3), { onYear: (e) => void seen.push(e) });
     expect(seen.map((e) => e.year)).toEqual([2026, 2027, 2028, 2029]);
-    expect(seen.map((e) => e.packed && [...e.packed])).toEqual([[2, 1], [2, 27], undefined, [2, 29]]);
+    expect(await Promise.all(seen.map((e) => bytesOf(e.packed)))).toEqual([
+      [2, 1],
+      [2, 27],
+      undefined,
+      [2, 29],
+    ]);
     expect([...outcome.closing]).toEqual([2030, 0]);
-    expect([...outcome.packedClosing]).toEqual([2, 2030 & 255]);
+    expect(await bytesOf(outcome.packedClosing)).toEqual([2, 2030 & 255]);
     expect(outcome.result.digest).toBe('of this run');
   });
 

@@ -6,7 +6,7 @@ import type { RunSpec } from '#sim-core/spec/run-spec.ts';
 /** A layer that a spec names. */
 export interface PackedLayer {
   /** its cells in the binary of `rasters/cells/cell-values.ts` */
-  readonly packed: Uint8Array<ArrayBuffer>;
+  readonly packed: Blob;
   readonly noData: number | null;
 }
 /** The layers that a spec names, by hash. */
@@ -27,7 +27,7 @@ export interface YearEvent {
   /** round(255·C), row-major */
   readonly frame?: Uint8Array;
   /** the frame in the binary of `rasters/cells/cell-values.ts`, ready to be stored */
-  readonly packed?: Uint8Array;
+  readonly packed?: Blob;
 }
 
 export interface RunProgress {
@@ -42,7 +42,7 @@ export interface RunOutcome {
   /** closing year of every cell: 0 still open at the horizon, -32768 cannot hold the plant */
   readonly closing: Int16Array;
   /** the closing years in the binary of `rasters/cells/cell-values.ts` */
-  readonly packedClosing: Uint8Array;
+  readonly packedClosing: Blob;
 }
 
 export interface RunListener {
@@ -69,7 +69,7 @@ interface EngineYear {
 
 export interface RunLoopParts {
   readonly createRun: (input: RunInput) => StepwiseRun | Promise<StepwiseRun>;
-  readonly pack: (cells: { width: number; height: number; values: Uint8Array | Int16Array }) => Uint8Array;
+  readonly pack: (cells: { width: number; height: number; values: Uint8Array | Int16Array }) => Blob;
   /** milliseconds, for the pace alone: no result depends on it */
   readonly now: () => number;
 }
@@ -186,12 +186,11 @@ function createTurns() {
   };
 }
 
-/** Buffers of what a run stands on, each once, to be handed over instead of copied. */
+/** Buffers of a ready ground, each once, to be handed over instead of copied; blobs cost nothing to send. */
 export function groundBuffers(ground: RunInput['ground']): ArrayBuffer[] {
-  const arrays = isPacked(ground)
-    ? [...ground.values()].map(({ packed }) => packed)
-    : [ground.capacity, ground.vigour, ground.exposure, ground.refuge, ground.fence, ground.cover];
-  return [...new Set(arrays.map((array) => array.buffer as ArrayBuffer))];
+  if (isPacked(ground)) return [];
+  const { capacity, vigour, exposure, refuge, fence, cover } = ground;
+  return [...new Set([capacity, vigour, exposure, refuge, fence, cover].map((a) => a.buffer as ArrayBuffer))];
 }
 
 export const isPacked = (ground: RunInput['ground']): ground is PackedLayers => ground instanceof Map;

@@ -2,7 +2,7 @@ import { queryOptions } from '@tanstack/react-query';
 import { getLayerValues } from '#contract/sites.ts';
 import type { ShareMapping } from '#sim-core/grid/ground.ts';
 import { maximumCells } from '#sim-core/spec/run-spec.ts';
-import { fetchBytes } from '#app/lib/api-client.ts';
+import { fetchBlob } from '#app/lib/api-client.ts';
 import { cells } from '#app/workers/cells-client.ts';
 
 const limits = { cells: maximumCells };
@@ -11,7 +11,7 @@ const held = { staleTime: Infinity, gcTime: 60_000, structuralSharing: false } a
 
 /** A layer's cells as they are stored, from the browser's own cache where it has them. */
 export const fetchLayer = (siteId: string, hash: string, signal?: AbortSignal) =>
-  fetchBytes(getLayerValues, { params: { siteId, hash }, signal });
+  fetchBlob(getLayerValues, { params: { siteId, hash }, signal });
 
 /** The decoded values of a layer's cells. */
 export const layerValuesQuery = (siteId: string, hash: string) =>

@@ -1,7 +1,7 @@
 import { useSyncExternalStore } from 'react';
 import { getFrame } from '#contract/runs.ts';
 import { maximumCells } from '#sim-core/spec/run-spec.ts';
-import { fetchBytes } from '#app/lib/api-client.ts';
+import { fetchBlob } from '#app/lib/api-client.ts';
 import { cells } from '#app/workers/cells-client.ts';
 import { startRun } from '#app/workers/run-client.ts';
 import { createFrameCache } from './frame-cache.ts';
@@ -15,8 +15,8 @@ const frameBudget = 96 * 1024 * 1024;
 
 /** The frames that this tab has at hand, of all runs. */
 export const runFrames = createFrameCache(async (runId, year) => {
-  const bytes = await fetchBytes(getFrame, { params: { runId, year } });
-  const { values } = await cells.unpack(bytes, { cells: maximumCells });
+  const packed = await fetchBlob(getFrame, { params: { runId, year } });
+  const { values } = await cells.unpack(packed, { cells: maximumCells });
   if (!(values instanceof Uint8Array))
     throw new Error('The frame holds other numbers than cover; run it again.');
   return values;
