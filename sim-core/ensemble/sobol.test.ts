@@ -1,4 +1,6 @@
 import { describe, expect, test } from 'vitest';
+import { stream } from '#sim-core/random/streams.ts';
+import { wholeBelow } from '#sim-core/random/whole.ts';
 import { mixColumns, sobolDesign, sobolIndices, type SobolDesign } from './sobol.ts';
 
 type Model = (x: Float64Array) => number;
@@ -122,6 +124,25 @@ test('nine in ten intervals of 90 % hold the index', () => {
   }
   // Three standard errors of 150 trials are 0.073; a Latin hypercube's intervals may be wider than they need be.
   expect(held / trials).toBeGreaterThan(0.82);
+});
+
+test('a resample is the definition on the rows drawn, mean and variance included', () => {
+  const [a, b, ab] = [
+    [3, 1, 4, 1, 5, 9],
+    [2, 6, 5, 3, 5, 8],
+    [1, 4, 1, 4, 2, 13],
+  ];
+  const random = stream('again', 'bootstrap');
+  const rows = a.map(() => wholeBelow(6, random));
+  expect(new Set(rows).size).toBeLessThan(6);
+  const mean = rows.reduce((sum, r) => sum + a[r] + b[r], 0) / 12;
+  const variance = rows.reduce((sum, r) => sum + (a[r] - mean) ** 2 + (b[r] - mean) ** 2, 0) / 12;
+  const first = rows.reduce((sum, r) => sum + (b[r] - mean) * (ab[r] - a[r]), 0) / (6 * variance);
+  const total = rows.reduce((sum, r) => sum + (a[r] - ab[r]) ** 2, 0) / (12 * variance);
+  const [found] = sobolIndices({ a, b, mixed: [ab] }, 'again', { resamples: 1 }).factors;
+  expect(found.first.low).toBeCloseTo(first, 12);
+  expect(found.first.high).toBeCloseTo(first, 12);
+  expect(found.total.low).toBeCloseTo(total, 12);
 });
 
 test('what cannot be estimated', () => {

@@ -39,7 +39,7 @@ export function arrivalTimes(input: ArrivalInput): Float64Array {
   function reach(cell: number): void {
     if (times[cell] < Infinity || !(speed[cell] > 0)) return;
     const crossing = cellSize / speed[cell];
-    // First order is never early, so it alone may overrule a start; second order can be, by a hair, and that would add up.
+    // First order errs on the late side, so it alone may overrule a start; second order can be a hair early, which adds up.
     const holds = starts[cell] < Infinity && firstOrder(cell, crossing) >= starts[cell];
     // The latest value replaces the one before: keeping the smaller would cost the second order.
     queue.offer(cell, holds ? starts[cell] : timeAt(cell, crossing));

@@ -85,6 +85,23 @@ describe('by its parts', () => {
     expect(found[19]).toBeLessThan(40);
     expect([found[20], found[21], found[30], found[31]]).toEqual([NaN, Infinity, NaN, Infinity]);
   });
+  test('round a lone foothold, order 2 comes nearer the circle on the diagonal', () => {
+    const cover = new Float32Array(41 * 41);
+    cover[20 * 41 + 20] = 1;
+    const at = (order?: 1 | 2) =>
+      closingEstimate({
+        grid: gridOf(41, 41),
+        ground: groundOf(41 * 41, { cover }),
+        rates,
+        stepsPerYear: 1,
+        order,
+      })[0];
+    const circle = Math.hypot(20, 20) / 0.5 + good.fill(0.05);
+    expect(at()).toBe(at(1));
+    expect(at(1) - circle).toBeGreaterThan(1.5);
+    expect(at(1) - circle).toBeLessThan(2.5);
+    expect(Math.abs(at(2) - circle)).toBeLessThan(0.8);
+  });
   test('plantings start when they are planted, with what is planted', () => {
     const plantings = [
       { cell: 2 * width + 40, after: 3, cover: 0.9 },

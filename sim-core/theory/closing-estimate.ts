@@ -17,6 +17,8 @@ export interface ClosingEstimateInput {
   readonly stepsPerYear: StepsPerYear;
   /** cells that are planted, each some years after the survey, up to a cover */
   readonly plantings?: Iterable<{ readonly cell: number; readonly after: number; readonly cover: number }>;
+  /** of the arrival times; 1 unless said, which is late by up to a cell or so on the diagonals, and twice as fast */
+  readonly order?: 1 | 2;
 }
 
 /** What a kind of ground, one vigour and one strength of refuge, makes of growth. */
@@ -24,7 +26,7 @@ export interface LocalGrowth {
   /** of a straight front, m/yr; 0 where none advances */
   readonly speed: number;
   /** years to half its reference from a share of its capacity */
-  fill(from: number): number;
+  readonly fill: (from: number) => number;
 }
 
 /**
@@ -64,7 +66,7 @@ export function localGrowth(
  * @throws RunProblem where no kernel gives the rates on such cells (`fitKernel`)
  */
 export function closingEstimate(input: ClosingEstimateInput): Float32Array {
-  const { grid, ground, rates, stepsPerYear, plantings = [] } = input;
+  const { grid, ground, rates, stepsPerYear, plantings = [], order } = input;
   const { width, height, cellSize } = grid;
   const { capacity, vigour, refuge, cover } = ground;
   const growthOf = localGrowth(rates, cellSize, stepsPerYear);
@@ -90,7 +92,7 @@ export function closingEstimate(input: ClosingEstimateInput): Float32Array {
   }
   for (const { cell, after, cover: planted } of plantings) foothold(cell, after, planted);
 
-  const arrivals = arrivalTimes({ width, height, cellSize, speed, starts });
+  const arrivals = arrivalTimes({ width, height, cellSize, speed, starts, order });
   return Float32Array.from(arrivals, (arrival, cell) =>
     speed[cell] === 0
       ? NaN
