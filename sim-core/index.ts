@@ -10,3 +10,41 @@ export { cannotClose, stillOpen } from './measure/closing.ts';
 export { buildGround, type RasterValues } from './grid/build-ground.ts';
 export type { RunResult, SeriesRow } from './spec/run-result.ts';
 export { prepareWorks } from './process/works.ts';
+export { fillTime } from './theory/fill-time.ts';
+export { arrivalTimes, type ArrivalInput } from './theory/arrival-time.ts';
+export {
+  closingEstimate,
+  localGrowth,
+  type ClosingEstimateInput,
+  type LocalGrowth,
+} from './theory/closing-estimate.ts';
+export { drawWeather, weatherProblems, type WeatherSource } from './weather/draw-weather.ts';
+export { palmerClass, palmerClasses, type PalmerClass } from './weather/palmer-classes.ts';
+export { chanceOfLonger, meanWait, type WaitingLaw } from './weather/waiting-law.ts';
+export {
+  ensembleTally,
+  type EnsembleInput,
+  type EnsembleSummary,
+  type EnsembleTally,
+} from './ensemble/ensemble-tally.ts';
+export { kaplanMeier, medianTime, restrictedMean, type CurvePoint } from './ensemble/kaplan-meier.ts';
+export { wilsonInterval, type Interval } from './ensemble/proportion.ts';
+export { quantiles } from './ensemble/quantile.ts';
+export { coverFan, fanShares, type CoverFan } from './ensemble/cover-fan.ts';
+export { closingMaps, type ClosingMaps } from './ensemble/closing-maps.ts';
+export { nextDroughtYear, type BeforeDrought } from './ensemble/next-drought.ts';
+export { latinHypercube } from './ensemble/latin-hypercube.ts';
+export { rankCorrelation } from './ensemble/rank-correlation.ts';
+export {
+  morrisScreening,
+  morrisTrajectories,
+  type FactorEffect,
+  type Trajectory,
+} from './ensemble/morris.ts';
+export {
+  sobolDesign,
+  sobolIndices,
+  type SobolDesign,
+  type SobolIndices,
+  type SobolOutputs,
+} from './ensemble/sobol.ts';

@@ -1,7 +1,15 @@
 import seedrandom from 'seedrandom';
 
 /** What a stream of random numbers is for; the number is the replicate. */
-export type Purpose = `shoots/${number}` | `events/${number}` | `weather/${number}` | `parameters` | `survey`;
+export type Purpose =
+  | `shoots/${number}`
+  | `events/${number}`
+  | `weather/${number}`
+  | `parameters`
+  | `survey`
+  | `screening`
+  | `indices`
+  | `bootstrap`;
 
 /**
  * The stream of one purpose: seedrandom 3 (ARC4) keyed by `seed/purpose`, so that no process ever takes another's

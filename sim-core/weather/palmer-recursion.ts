@@ -1,0 +1,52 @@
+import { normalQuantile } from '#sim-core/numeric/normal.ts';
+import { power } from '#sim-core/numeric/power.ts';
+
+/**
+ * Share of Palmer's index that a month hands on to the next: X_t = 0.897 X_{t−1} + Z_t / 3 (Palmer 1965, US Weather
+ * Bureau Research Paper 45; Alley 1984, J. Clim. Appl. Met. 23:1100). The recursion alone is not the full index, which
+ * also switches between spells: hence "Palmer-type".
+ */
+export const monthlyMemory = 0.897;
+/** What a month's moisture anomaly Z adds to the index. */
+export const anomalyWeight = 1 / 3;
+
+/** Share of the index that is left after some years: 0.897^(12 years). */
+export const memoryOver = (years: number): number => power(monthlyMemory, 12 * years);
+
+/** One step of the recursion around a mean. */
+export const nextIndex = (index: number, memory: number, addition: number, mean = 0): number =>
+  mean + memory * (index - mean) + addition;
+
+/** Weather that remembers: each step keeps part of the last and adds chance. */
+export interface PalmerRecursion {
+  /** long-run mean of the index, 0 unless said */
+  readonly mean?: number;
+  /** long-run standard deviation of the index */
+  readonly standardDeviation: number;
+  /** index at the end of the survey year; drawn from the long-run law unless said */
+  readonly start?: number;
+}
+
+/**
+ * X_t = 0.897^(12Δt) X_{t−Δt} + normal noise, scaled so that the long-run standard deviation is the given one whatever
+ * the step. One draw a step after the one for the start, so a longer horizon begins with the same years.
+ *
+ * @param uniform draws strictly between 0 and 1
+ * @returns index of each step, Float64
+ */
+export function drawPalmerRecursion(
+  { mean = 0, standardDeviation, start }: PalmerRecursion,
+  steps: number,
+  stepsPerYear: number,
+  uniform: () => number,
+): Float64Array {
+  const memory = memoryOver(1 / stepsPerYear);
+  const noise = standardDeviation * Math.sqrt(1 - memory * memory);
+  // Drawn in any case, so that naming a start leaves all later luck as it was.
+  const drawnStart = mean + standardDeviation * normalQuantile(uniform());
+  let index = start ?? drawnStart;
+  return Float64Array.from(
+    { length: steps },
+    () => (index = nextIndex(index, memory, noise * normalQuantile(uniform()), mean)),
+  );
+}
