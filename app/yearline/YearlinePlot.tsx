@@ -58,7 +58,7 @@ export function YearlinePlot(props: YearlinePlotProps) {
 }
 
 function DroughtBars({ scale, surveyYear, droughtIndex, tolerances, availableUntil }: YearlinePlotProps) {
-  const { datum, yearWidth, left, right, compact } = scale;
+  const { datum, barWidth, left, right, compact } = scale;
   const tolerance = (index: number, dashes: string, words: string, dy: number): ReactNode => {
     const y = datum + scale.length(index) + 0.5;
     return (
@@ -82,9 +82,9 @@ function DroughtBars({ scale, surveyYear, droughtIndex, tolerances, availableUnt
         return (
           <rect
             key={year}
-            x={scale.x(year) - yearWidth * 0.26}
+            x={scale.x(year) - barWidth * 0.26}
             y={datum + 1}
-            width={yearWidth * 0.52}
+            width={barWidth * 0.52}
             height={scale.length(index)}
             fill={dry ? ink : 'var(--color-shore)'}
             fillOpacity={(dry ? 1 : 0.62) * (year > availableUntil ? 0.45 : 1)}
@@ -131,7 +131,7 @@ function CoverAxis({ scale }: { scale: YearlineScale }) {
 }
 
 function ClosingColumns({ scale, records, surveyYear, lastYear }: YearlinePlotProps) {
-  const { datum, top, yearWidth } = scale;
+  const { datum, top, barWidth } = scale;
   const columns = records.filter((r) => r.year > surveyYear && r.closingArea > 0);
   const most = Math.max(...columns.map((r) => r.closingArea));
   return columns.map((r) => {
@@ -139,9 +139,9 @@ function ClosingColumns({ scale, records, surveyYear, lastYear }: YearlinePlotPr
     return (
       <rect
         key={r.year}
-        x={scale.x(r.year) - yearWidth * 0.44}
+        x={scale.x(r.year) - barWidth * 0.44}
         y={datum - height}
-        width={yearWidth * 0.88}
+        width={barWidth * 0.88}
         height={height}
         style={{ fill: closingColour(r.year, surveyYear, lastYear) }}
       />
@@ -231,12 +231,14 @@ function Notes({ scale, pins, marks, heading, year: shown }: YearlinePlotProps) 
   // A label must stand clear of the flags after it, then of the labels before it.
   const clear = flags.filter((p) => !flags.some((f) => f.x > p.x && f.x - p.x < p.label.length * 6.6));
   const pinWords = compact ? [] : labelsThatFit(clear, 0, right);
-  // Marks matter more than the heading, which is also said in the legend.
-  const crowded = ticks.some((t) => t.x < left + heading.length * 6.2);
+  // The heading makes way for the playhead; marks matter more than it, as the legend says it too.
+  const long = heading.length * 6.2;
+  const begins = scale.x(shown) < left + long + 8 ? scale.x(shown) + 14 : left;
+  const crowded = ticks.some((t) => t.x < begins + long);
   return (
     <>
       {!compact && !crowded && (
-        <text x={left} y={top - 6} className={note}>
+        <text x={begins} y={top - 6} className={note}>
           {heading}
         </text>
       )}

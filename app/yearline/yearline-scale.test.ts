@@ -15,6 +15,11 @@ describe('yearlineScale', () => {
     expect(s.yearAt(-1000)).toBe(2026);
     expect(s.yearAt(width + 1000)).toBe(2060);
   });
+  it('keeps the bars of a short future out of the margin', () => {
+    const s = yearlineScale({ width: 1440, surveyYear: 2026, lastYear: 2029, indices: [], highestShare: 1 });
+    expect(s.yearWidth).toBeGreaterThan(300);
+    expect(s.barWidth * 0.26).toBeLessThan(12);
+  });
   it('hangs drought further down the drier it is, and never past the room for it', () => {
     const s = scale(1440, [-6, 2]);
     expect(s.length(3)).toBe(0);

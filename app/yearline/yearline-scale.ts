@@ -14,6 +14,8 @@ export interface YearlineScale {
   readonly hang: number;
   /** width of one year */
   readonly yearWidth: number;
+  /** the same, no wider than the margin leaves room for past the last year */
+  readonly barWidth: number;
   x(year: number): number;
   /** y of a share of the reference cover */
   y(share: number): number;
@@ -57,6 +59,7 @@ export function yearlineScale({
     compact,
     ...shape,
     yearWidth,
+    barWidth: Math.min(yearWidth, 44),
     x: (year) => left + (year - surveyYear) * yearWidth,
     y: (share) => datum - (share / fullShare) * (datum - top),
     length: (index) => ((wettest - Math.min(index, wettest)) / (wettest - driest)) * hang,
