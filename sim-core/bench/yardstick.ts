@@ -57,7 +57,7 @@ export function compileYardstick(): Yardstick | { readonly reason: string } {
 }
 
 /** A case as yardstick.c reads it: its struct, the taps, the sites, then the arrays of cells. */
-function encodeCase({ setup, mode, steps, rounds, droughtIndex }: BenchCase): Uint8Array {
+export function encodeCase({ setup, mode, steps, rounds, droughtIndex }: BenchCase): Uint8Array {
   const { width, height, taps, step, rates, luck, sites, capacity, vigour, exposure, refuge } = setup;
   const parts: ArrayBufferView[] = [
     Int32Array.of(width, height, taps.length - 1, mode === 'counts' ? 1 : 0, steps, rounds),
