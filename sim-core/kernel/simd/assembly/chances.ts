@@ -1,36 +1,19 @@
 import { exp, partOf, rest, scaleOf, shifted } from './exp';
 import {
-  alive,
-  backgroundLoss,
   capacity,
-  carryOver,
-  counts,
   cover,
   crowding,
-  droughtLoss,
   exposure,
-  exposureShift,
-  flagStride,
-  free,
   groups,
-  heard,
   lastLanes,
-  lossWidth,
-  lostRow,
-  neighbourShift,
-  recruits,
   refuge,
-  refugeGrowth,
-  refugeShift,
-  seedlings,
   skipsBare,
   skipsBarren,
-  standing,
-  tolerance,
   vigour,
   width,
-  years,
 } from './state';
+import { held, records, recruitment, wetness } from './stretch';
+import * as vectors from './vectors';
 
 /** Four bytes as floats. */
 function floats(bytes: usize): v128 {
@@ -38,107 +21,72 @@ function floats(bytes: usize): v128 {
 }
 
 /**
- * Recruitment q and the share S that comes through, of groups `from` up to `to` of row y, four cells at a time, and what
- * is lost of them. Mean-field: the next state. Counts: the chances of standing and of free sites, for the draws.
+ * What the chances of groups `from` up to `to` of row y hang on, four cells at a time: K, recruitment q, and
+ * e^((X − X^c)/ω). K = 0 marks what is left out. `outcomes.ts` goes on from here: in two loops, because one
+ * would have more steps that wait for one another than a processor looks ahead.
  */
-export function weigh(y: i32, from: i32, to: i32, droughtIndex: f64): void {
-  const byteUnit: f32 = 1.0 / 255.0;
-  const one = f32x4.splat(1);
-  const least = f32x4.splat(-87);
-  // k/255 as a 16-bit part, whose product with a byte is exact, and the rest: rounds to what fround(k / 255) gives.
-  const unit = f32x4.splat(0.0039215087890625);
-  const unitRest = f32x4.splat(5.983839201917363e-8);
-  const recruitsPerByte = f32x4.splat(-recruits * byteUnit);
-  const growthPerByte = f32x4.splat(refugeGrowth * byteUnit);
+export function weigh(y: i32, from: i32, to: i32): void {
   const crowded = crowding > 0;
-  const seeds = f32x4.splat(seedlings);
-  const calm = f32x4.splat(<f32>((droughtIndex - tolerance) / lossWidth));
-  const exposurePerByte = f32x4.splat(exposureShift * byteUnit);
-  const refugePerByte = f32x4.splat(refugeShift * byteUnit);
-  const relief = f32x4.splat(neighbourShift);
-  const drought = f32x4.splat(droughtLoss);
-  const background = f32x4.splat(backgroundLoss);
-  const step = f32x4.splat(-years);
-  const carry = f32x4.splat(carryOver);
-  const freed = f32x4.splat(1 - carryOver);
-  const loses = droughtLoss > 0 || backgroundLoss > 0;
-  const twoCauses = droughtLoss > 0 && backgroundLoss > 0;
-  const columns = <usize>width;
-  const flags = alive + <usize>y * flagStride;
-  let lost = v128.load(lostRow);
-  let lostToDrought = v128.load(lostRow, 16);
+  const mayBeBare = skipsBare;
+  const mayBeBarren = skipsBarren;
+  const row = <usize>y * <usize>width;
+  const coverRow = cover + (row << 2);
+  const capacityRow = capacity + row;
+  const vigourRow = vigour + row;
+  const exposureRow = exposure + row;
+  const refugeRow = refuge + row;
 
-  for (let g = from; g < to; g++) {
-    const cell = <usize>y * columns + ((<usize>g) << 2);
-    const c = v128.load(cover + (cell << 2));
-    const around = v128.load(heard + (g << 4));
+  let record = records;
+  for (let g = from; g < to; g++, record += 64) {
+    const at = (<usize>g) << 2;
+    const around = v128.load(record);
     if (
-      (skipsBarren && load<u32>(capacity + cell) == 0) ||
-      (skipsBare && !v128.any_true(v128.or(c, around)))
+      mayBeBare
+        ? !v128.any_true(v128.or(v128.load(coverRow + (at << 2)), around))
+        : mayBeBarren && load<u32>(capacityRow + at) == 0
     ) {
-      if (counts) v128.store(free + (g << 4), i64x2.splat(0));
-      if (skipsBare) store<u8>(flags + g, 0);
+      v128.store(record, i64x2.splat(0), held);
       continue;
     }
-    const k = floats(capacity + cell);
-    const K = f32x4.add(f32x4.mul(k, unit), f32x4.mul(k, unitRest));
-    const lanes = g + 1 == groups ? lastLanes : i32x4.splat(-1);
-    const holds = v128.and(f32x4.gt(K, i64x2.splat(0)), lanes);
-    const M = floats(refuge + cell);
-    const E = floats(exposure + cell);
+    const one = v128.load(vectors.one);
+    const k = floats(capacityRow + at);
+    const K = f32x4.add(f32x4.mul(k, v128.load(vectors.share)), f32x4.mul(k, v128.load(vectors.shareRest)));
+    v128.store(record, K, held);
+    const M = floats(refugeRow + at);
+    const E = floats(exposureRow + at);
 
-    // q = 1 − e^x; where K = 0 all that follows is no number, and is masked.
+    // Where K = 0 all that follows is no number; `outcomes.ts` masks it.
     const phi = f32x4.div(around, K);
     const phi1 = f32x4.pmin(one, phi);
-    let pressure = f32x4.mul(
-      f32x4.mul(recruitsPerByte, floats(vigour + cell)),
-      f32x4.add(one, f32x4.mul(growthPerByte, M)),
-    );
-    if (crowded)
-      pressure = f32x4.mul(
-        pressure,
-        exp(
-          f32x4.mul(
-            f32x4.mul(f32x4.splat(-crowding), f32x4.sub(one, f32x4.mul(E, f32x4.splat(byteUnit)))),
-            phi1,
-          ),
-        ),
-      );
-    const x = f32x4.pmax(least, f32x4.sub(f32x4.mul(pressure, phi), seeds));
-    const xBits = shifted(x);
-    const xScale = scaleOf(xBits);
-    const q = f32x4.sub(f32x4.sub(one, xScale), f32x4.mul(xScale, partOf(rest(x, xBits))));
 
     // X − X^c, in widths of the loss curve
     const margin = f32x4.add(
-      f32x4.sub(f32x4.add(calm, f32x4.mul(refugePerByte, M)), f32x4.mul(exposurePerByte, E)),
-      f32x4.mul(relief, phi1),
+      f32x4.sub(
+        f32x4.add(v128.load(vectors.calm), f32x4.mul(v128.load(vectors.refugePerByte), M)),
+        f32x4.mul(v128.load(vectors.exposurePerByte), E),
+      ),
+      f32x4.mul(v128.load(vectors.relief), phi1),
     );
-    const hazard = f32x4.div(drought, f32x4.add(one, exp(margin)));
-    const total = f32x4.add(background, hazard);
-    const h = f32x4.pmax(least, f32x4.mul(total, step));
-    const hBits = shifted(h);
-    const hScale = scaleOf(hBits);
-    const hPart = f32x4.mul(hScale, partOf(rest(h, hBits)));
-    const S = f32x4.add(hScale, hPart);
+    v128.store(record, exp(margin), wetness);
 
-    const kept = f32x4.mul(carry, c);
-    const before = f32x4.add(kept, f32x4.mul(f32x4.sub(K, kept), q));
-    if (loses) {
-      const gone = v128.and(f32x4.mul(before, f32x4.sub(f32x4.sub(one, hScale), hPart)), holds);
-      lost = f32x4.add(lost, gone);
-      if (twoCauses)
-        lostToDrought = f32x4.add(lostToDrought, v128.and(f32x4.mul(gone, f32x4.div(hazard, total)), holds));
+    // q = 1 − e^x
+    let pressure = f32x4.mul(
+      f32x4.mul(v128.load(vectors.recruitsPerByte), floats(vigourRow + at)),
+      f32x4.add(one, f32x4.mul(v128.load(vectors.growthPerByte), M)),
+    );
+    if (crowded) {
+      const open = f32x4.sub(one, f32x4.mul(E, v128.load(vectors.byteUnit)));
+      pressure = f32x4.mul(pressure, exp(f32x4.mul(f32x4.mul(v128.load(vectors.crowd), open), phi1)));
     }
-    if (counts) {
-      v128.store(free + (g << 4), v128.and(f32x4.mul(S, q), holds));
-      v128.store(standing + (g << 4), f32x4.mul(S, f32x4.add(carry, f32x4.mul(freed, q))));
-      continue;
-    }
-    const next = v128.and(f32x4.pmin(K, f32x4.mul(S, before)), holds);
-    v128.store(cover + (cell << 2), v128.bitselect(next, c, lanes));
-    if (skipsBare) store<u8>(flags + g, <u8>v128.any_true(next));
+    const x = f32x4.pmax(
+      v128.load(vectors.lowest),
+      f32x4.sub(f32x4.mul(pressure, phi), v128.load(vectors.seeds)),
+    );
+    const bits = shifted(x);
+    const scale = scaleOf(bits);
+    const part = f32x4.mul(scale, partOf(rest(x, bits)));
+    v128.store(record, f32x4.sub(f32x4.sub(one, scale), part), recruitment);
   }
-  v128.store(lostRow, lost);
-  v128.store(lostRow, lostToDrought, 16);
+  // What lies behind the end of a row is the next one.
+  if (to == groups) v128.store(record - 64, v128.and(v128.load(record - 64, held), lastLanes), held);
 }

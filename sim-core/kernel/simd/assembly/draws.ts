@@ -6,18 +6,19 @@ import {
   clumps,
   cover,
   flagStride,
-  free,
   key0,
   key1,
   replicate,
   shares,
   sites,
   skipsBare,
-  standing,
   wide,
   width,
-  words,
 } from './state';
+import { free, records, standing } from './stretch';
+
+/** the random words of one stretch: two a cell, from the first cell of a counter on */
+export const words: usize = memory.data((64 << 5) + 128, 16);
 
 /** A word as a number strictly between 0 and 1: (word + ½) / 2³². */
 function uniform(word: usize): f64 {
@@ -38,15 +39,16 @@ export function draw(y: i32, from: i32, to: i32, step: u32): void {
   let living = false;
   for (let cell = first; cell < end; cell++) {
     const column = cell - row;
+    const lane = records + (((column >> 2) - from) << 6) + ((column & 3) << 2);
     const byte = <usize>load<u8>(capacity + cell);
     const N = load<i32>(sites + (byte << 2));
     if (N > 0) {
       const n = wide ? load<i32>(clumps + (cell << 2)) : <i32>load<u16>(clumps + (cell << 1));
-      const chance = load<f32>(free + (column << 2));
+      const chance = load<f32>(lane, free);
       if (n != 0 || chance > 0) {
         const word = luck + (cell << 3);
         const next =
-          binomialQuantile(uniform(word), n, <f64>load<f32>(standing + (column << 2))) +
+          binomialQuantile(uniform(word), n, <f64>load<f32>(lane, standing)) +
           binomialQuantile(uniform(word + 4), N - n, <f64>chance);
         if (next != n) {
           if (wide) store<i32>(clumps + (cell << 2), next);

@@ -2,6 +2,7 @@ import { draw } from './draws';
 import { hear, lookAround, spreadRow } from './neighbourhood';
 import { nextRun, runEnd } from './runs';
 import { weigh } from './chances';
+import { comeThrough } from './outcomes';
 import {
   alive,
   backgroundLoss,
@@ -13,13 +14,18 @@ import {
   heardFlags,
   height,
   lastLanes,
+  lossWidth,
   lostRow,
   radius,
   skipsBare,
+  tolerance,
   width,
 } from './state';
+import { stretch } from './stretch';
+import * as vectors from './vectors';
 
 export { binomialQuantile } from './binomial';
+export { words } from './draws';
 export { philox } from './philox';
 export {
   capacity,
@@ -35,7 +41,6 @@ export {
   sites,
   taps,
   vigour,
-  words,
 } from './state';
 
 /** ΣC that the last step lost, in cells. */
@@ -63,15 +68,19 @@ function sum(lanes: v128): f64 {
 }
 
 /** Row y: hears what is around, and moves on, in place. */
-function advance(y: i32, index: u32, droughtIndex: f64): void {
+function advance(y: i32, index: u32): void {
   lookAround(y);
   v128.store(lostRow, i64x2.splat(0));
   v128.store(lostRow, i64x2.splat(0), 16);
   for (let g = nextRun(heardFlags, 0, groups); g >= 0; g = nextRun(heardFlags, runEnd, groups)) {
     const end = runEnd;
-    hear(g, end);
-    weigh(y, g, end, droughtIndex);
-    if (counts) draw(y, g, end, index);
+    for (let from = g; from < end; from += stretch) {
+      const to = min(from + stretch, end);
+      hear(from, to);
+      weigh(y, from, to);
+      comeThrough(y, from, to);
+      if (counts) draw(y, from, to, index);
+    }
   }
   const lost = sum(v128.load(lostRow));
   const drought = backgroundLoss == 0 ? lost : droughtLoss == 0 ? 0 : sum(v128.load(lostRow, 16));
@@ -83,9 +92,10 @@ function advance(y: i32, index: u32, droughtIndex: f64): void {
 export function step(index: u32, droughtIndex: f64): void {
   lostToDrought = 0;
   lostToBackground = 0;
+  vectors.set(vectors.calm, (droughtIndex - tolerance) / lossWidth);
   let spread = 0;
   for (let y = 0; y < height; y++) {
     for (const last = min(height - 1, y + radius); spread <= last; spread++) spreadRow(spread);
-    advance(y, index, droughtIndex);
+    advance(y, index);
   }
 }

@@ -6,7 +6,6 @@ import {
   cover,
   flagStride,
   groups,
-  heard,
   heardFlags,
   height,
   mirror,
@@ -19,6 +18,7 @@ import {
   taps,
   width,
 } from './state';
+import { records } from './stretch';
 
 /** Index that a half-sample symmetric boundary puts in the place of i: … 1 0 | 0 1 … n−1 | n−1 n−2 … */
 function mirrored(i: i32, n: i32): i32 {
@@ -29,18 +29,19 @@ function mirrored(i: i32, n: i32): i32 {
 /** Weighs one row along itself, groups `from` up to `to`. Weights of equal distance are summed before they are weighed. */
 function along(out: usize, from: i32, to: i32): void {
   const row = padded;
-  const last = taps + (radius << 2);
+  const weights = taps;
+  const last = weights + (radius << 2);
   let g = from;
   for (; g + 4 <= to; g += 4) {
     const at = row + (g << 4);
     let left = at;
     let right = at;
-    let tap = v128.load32_splat(taps);
+    let tap = v128.load32_splat(weights);
     let a = f32x4.mul(tap, v128.load(at));
     let b = f32x4.mul(tap, v128.load(at, 16));
     let c = f32x4.mul(tap, v128.load(at, 32));
     let d = f32x4.mul(tap, v128.load(at, 48));
-    for (let weight = taps + 4; weight <= last; weight += 4) {
+    for (let weight = weights + 4; weight <= last; weight += 4) {
       left -= 4;
       right += 4;
       tap = v128.load32_splat(weight);
@@ -59,8 +60,8 @@ function along(out: usize, from: i32, to: i32): void {
     const at = row + (g << 4);
     let left = at;
     let right = at;
-    let a = f32x4.mul(v128.load32_splat(taps), v128.load(at));
-    for (let weight = taps + 4; weight <= last; weight += 4) {
+    let a = f32x4.mul(v128.load32_splat(weights), v128.load(at));
+    for (let weight = weights + 4; weight <= last; weight += 4) {
       left -= 4;
       right += 4;
       a = f32x4.add(a, f32x4.mul(v128.load32_splat(weight), f32x4.add(v128.load(left), v128.load(right))));
@@ -84,8 +85,7 @@ export function spreadRow(y: i32): void {
   let any = false;
   for (let g = nextRun(source, 0, groups); g >= 0; g = nextRun(source, runEnd, groups)) {
     any = true;
-    for (let at = g << 4, end = runEnd << 4; at < end; at += 16)
-      v128.store(padded + at, v128.load(cells + at));
+    memory.copy(padded + (g << 4), cells + (g << 4), (runEnd - g) << 4);
     const from = max(0, g - reach);
     memory.fill(flags + from, 1, min(groups, runEnd + reach) - from);
   }
@@ -99,7 +99,7 @@ export function spreadRow(y: i32): void {
   }
   for (let g = nextRun(flags, 0, groups); g >= 0; g = nextRun(flags, runEnd, groups)) along(out, g, runEnd);
   for (let g = nextRun(source, 0, groups); g >= 0; g = nextRun(source, runEnd, groups))
-    for (let at = g << 4, end = runEnd << 4; at < end; at += 16) v128.store(padded + at, i64x2.splat(0));
+    memory.fill(padded + (g << 4), 0, (runEnd - g) << 4);
 }
 
 function slotOf(y: i32): i32 {
@@ -127,44 +127,50 @@ export function lookAround(y: i32): void {
   }
 }
 
-/** Weighs the spread rows around the present one, groups `from` up to `to`. */
+/** Weighs the spread rows around the present one, groups `from` up to `to`: one stretch. */
 export function hear(from: i32, to: i32): void {
+  const weights = taps;
+  const up0 = load<usize>(above);
+  const aboves = above;
+  const belows = below;
+  let out = records;
   const last = radius << 2;
   let g = from;
   for (; g + 4 <= to; g += 4) {
     const shift = g << 4;
-    let up = load<usize>(above) + shift;
-    let tap = v128.load32_splat(taps);
+    let up = up0 + shift;
+    let tap = v128.load32_splat(weights);
     let a = f32x4.mul(tap, v128.load(up));
     let b = f32x4.mul(tap, v128.load(up, 16));
     let c = f32x4.mul(tap, v128.load(up, 32));
     let d = f32x4.mul(tap, v128.load(up, 48));
     for (let i = 4; i <= last; i += 4) {
-      tap = v128.load32_splat(taps + i);
-      up = load<usize>(above + i) + shift;
-      const down = load<usize>(below + i) + shift;
+      tap = v128.load32_splat(weights + i);
+      up = load<usize>(aboves + i) + shift;
+      const down = load<usize>(belows + i) + shift;
       a = f32x4.add(a, f32x4.mul(tap, f32x4.add(v128.load(up), v128.load(down))));
       b = f32x4.add(b, f32x4.mul(tap, f32x4.add(v128.load(up, 16), v128.load(down, 16))));
       c = f32x4.add(c, f32x4.mul(tap, f32x4.add(v128.load(up, 32), v128.load(down, 32))));
       d = f32x4.add(d, f32x4.mul(tap, f32x4.add(v128.load(up, 48), v128.load(down, 48))));
     }
-    const to = heard + shift;
-    v128.store(to, a);
-    v128.store(to, b, 16);
-    v128.store(to, c, 32);
-    v128.store(to, d, 48);
+    v128.store(out, a);
+    v128.store(out, b, 64);
+    v128.store(out, c, 128);
+    v128.store(out, d, 192);
+    out += 256;
   }
   for (; g < to; g++) {
     const shift = g << 4;
-    let a = f32x4.mul(v128.load32_splat(taps), v128.load(load<usize>(above) + shift));
+    let a = f32x4.mul(v128.load32_splat(weights), v128.load(up0 + shift));
     for (let i = 4; i <= last; i += 4)
       a = f32x4.add(
         a,
         f32x4.mul(
-          v128.load32_splat(taps + i),
-          f32x4.add(v128.load(load<usize>(above + i) + shift), v128.load(load<usize>(below + i) + shift)),
+          v128.load32_splat(weights + i),
+          f32x4.add(v128.load(load<usize>(aboves + i) + shift), v128.load(load<usize>(belows + i) + shift)),
         ),
       );
-    v128.store(heard + shift, a);
+    v128.store(out, a);
+    out += 64;
   }
 }

@@ -1,3 +1,5 @@
+import * as vectors from './vectors';
+
 /** Where one map lies in memory, and the rates of its step. Set once, before the first step. */
 
 export let width: i32 = 0;
@@ -31,9 +33,8 @@ export let slots: i32 = 0;
 export let rowBytes: i32 = 0;
 export let spread: usize = 0;
 export let spreadFlags: usize = 0;
-/** groups of the present row that hear something, and what they hear */
+/** groups of the present row that hear something */
 export let heardFlags: usize = 0;
-export let heard: usize = 0;
 /** cell 0 of one row of cover with room for its boundary on both sides; 0 between uses, but for the boundary */
 export let padded: usize = 0;
 /** f32 weight of each distance, and the spread rows above and below at each distance */
@@ -43,29 +44,19 @@ export let below: usize = 0;
 /** losses of one row, four lanes each: all, and those by drought */
 export let lostRow: usize = 0;
 
-/** counts: chance of a standing and of a free site, random words of a span, sites by capacity byte, K by capacity byte */
-export let standing: usize = 0;
-export let free: usize = 0;
-export let words: usize = 0;
+/** counts: sites by capacity byte, K by capacity byte */
 export let sites: usize = 0;
 export let shares: usize = 0;
 /** counts: (n − k)/(k + 1) for n and k below 32 */
 export let ratios: usize = 0;
 
-export let carryOver: f32 = 0;
-export let recruits: f32 = 0;
-export let seedlings: f32 = 0;
-export let years: f32 = 0;
-export let backgroundLoss: f32 = 0;
-export let droughtLoss: f32 = 0;
-export let refugeGrowth: f32 = 0;
-export let crowding: f32 = 0;
-/** shifts of the drought index, in widths of the loss curve */
+/** rates that decide what a step must reckon with; all others lie in `vectors.ts` */
+export let seedlings: f64 = 0;
+export let crowding: f64 = 0;
+export let backgroundLoss: f64 = 0;
+export let droughtLoss: f64 = 0;
 export let tolerance: f64 = 0;
 export let lossWidth: f64 = 0;
-export let exposureShift: f32 = 0;
-export let refugeShift: f32 = 0;
-export let neighbourShift: f32 = 0;
 
 export let key0: u32 = 0;
 export let key1: u32 = 0;
@@ -105,6 +96,7 @@ export function layOut(
   // Addresses have 32 bits.
   if (<u64>width * <u64>height > 256 << 20) return false;
 
+  vectors.setConstants();
   top = (__heap_base + 15) & ~15;
   cover = room(cells << 2);
   capacity = room(cells);
@@ -116,7 +108,6 @@ export function layOut(
   spread = room(<usize>(slots + 1) * rowBytes);
   spreadFlags = room(<usize>(slots + 1) * flagStride);
   heardFlags = room(flagStride);
-  heard = room(rowBytes);
   const side = (radius + 3) & ~3;
   padded = room(<usize>((side << 1) << 2) + rowBytes) + (side << 2);
   taps = room((radius + 1) << 2);
@@ -124,9 +115,6 @@ export function layOut(
   below = room((radius + 1) << 2);
   lostRow = room(32);
   if (counts) {
-    standing = room(rowBytes);
-    free = room(rowBytes);
-    words = room((rowBytes << 1) + 128);
     sites = room(256 << 2);
     shares = room(256 << 3);
     ratios = room((32 * 32) << 3);
@@ -141,38 +129,37 @@ export function layOut(
   return true;
 }
 
-export function setSpread(
-  carry: f64,
-  recruitsPerStep: f64,
-  seedlingsPerStep: f64,
-  growth: f64,
-  crowd: f64,
-): void {
-  carryOver = <f32>carry;
-  recruits = <f32>recruitsPerStep;
-  seedlings = <f32>seedlingsPerStep;
-  refugeGrowth = <f32>growth;
-  crowding = <f32>crowd;
+export function setSpread(carryOver: f64, recruits: f64, seeds: f64, growth: f64, crowd: f64): void {
+  seedlings = seeds;
+  crowding = crowd;
+  vectors.set(vectors.carry, carryOver);
+  vectors.set(vectors.freed, 1 - carryOver);
+  vectors.set(vectors.recruitsPerByte, -recruits / 255);
+  vectors.set(vectors.growthPerByte, growth / 255);
+  vectors.set(vectors.seeds, seeds);
+  vectors.set(vectors.crowd, -crowd);
 }
 
 export function setLoss(
-  stepYears: f64,
+  years: f64,
   background: f64,
   drought: f64,
   indexWidth: f64,
   indexTolerance: f64,
-  byExposure: f64,
-  byRefuge: f64,
-  byNeighbours: f64,
+  exposureShift: f64,
+  refugeShift: f64,
+  neighbourShift: f64,
 ): void {
-  years = <f32>stepYears;
-  backgroundLoss = <f32>background;
-  droughtLoss = <f32>drought;
+  backgroundLoss = background;
+  droughtLoss = drought;
   lossWidth = indexWidth;
   tolerance = indexTolerance;
-  exposureShift = <f32>(byExposure / indexWidth);
-  refugeShift = <f32>(byRefuge / indexWidth);
-  neighbourShift = <f32>(byNeighbours / indexWidth);
+  vectors.set(vectors.minusYears, -years);
+  vectors.set(vectors.background, background);
+  vectors.set(vectors.drought, drought);
+  vectors.set(vectors.exposurePerByte, exposureShift / indexWidth / 255);
+  vectors.set(vectors.refugePerByte, refugeShift / indexWidth / 255);
+  vectors.set(vectors.relief, neighbourShift / indexWidth);
 }
 
 export function setLuck(first: u32, second: u32, ofReplicate: u32): void {
