@@ -31,6 +31,7 @@ export interface KernelExports {
   look(): void;
   step(index: number, droughtIndex: number): void;
   binomialQuantile(u: number, n: number, p: number): number;
+  drawPair(word: number, n: number, N: number, chance: number): number;
   philox(out: number, counter: number, step: number, replicate: number, key0: number, key1: number): void;
   readonly cover: Address;
   readonly clumps: Address;

@@ -1,4 +1,4 @@
-import { binomialQuantile } from './binomial';
+import { binomialQuantile, drawPair, fewSites } from './binomial';
 import { philox } from './philox';
 import {
   alive,
@@ -48,8 +48,10 @@ export function draw(y: i32, from: i32, to: i32, step: u32): void {
       if (n != 0 || chance > 0) {
         const word = luck + (cell << 3);
         const next =
-          binomialQuantile(uniform(word), n, <f64>load<f32>(lane, standing)) +
-          binomialQuantile(uniform(word + 4), N - n, <f64>chance);
+          N <= fewSites
+            ? drawPair(word, n, N, lane + standing)
+            : binomialQuantile(uniform(word), n, <f64>load<f32>(lane, standing)) +
+              binomialQuantile(uniform(word + 4), N - n, <f64>chance);
         if (next != n) {
           if (wide) store<i32>(clumps + (cell << 2), next);
           else store<u16>(clumps + (cell << 1), <u16>next);

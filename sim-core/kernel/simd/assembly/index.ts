@@ -24,7 +24,7 @@ import {
 import { stretch } from './stretch';
 import * as vectors from './vectors';
 
-export { binomialQuantile } from './binomial';
+export { binomialQuantile, drawPair } from './binomial';
 export { words } from './draws';
 export { philox } from './philox';
 export {

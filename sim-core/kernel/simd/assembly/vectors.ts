@@ -3,7 +3,7 @@
  * because V8 puts a vector that the code names together anew wherever it is used, in the innermost loop too; a load is
  * one instruction.
  */
-const vectors: usize = memory.data(28 << 4, 16);
+const vectors: usize = memory.data(31 << 4, 16);
 
 export const one = vectors;
 export const byteUnit = vectors + (1 << 4);
@@ -41,6 +41,12 @@ export const relief = vectors + (25 << 4);
 /** (X − X0), in widths of the loss curve: set anew for each step */
 export const calm = vectors + (26 << 4);
 
+/** pairs of doubles, for the draws */
+export const oneTwice = vectors + (27 << 4);
+export const halfTwice = vectors + (28 << 4);
+export const wordUnit = vectors + (29 << 4);
+export const bitTwice = vectors + (30 << 4);
+
 export function set(vector: usize, value: f64): void {
   v128.store(vector, f32x4.splat(<f32>value));
 }
@@ -61,4 +67,8 @@ export function setConstants(): void {
   set(p4, 0.04166655242443085);
   set(p5, 0.00836323294788599);
   set(p6, 0.0013926250394433737);
+  v128.store(oneTwice, f64x2.splat(1));
+  v128.store(halfTwice, f64x2.splat(0.5));
+  v128.store(wordUnit, f64x2.splat(2.3283064365386963e-10));
+  v128.store(bitTwice, i64x2.splat(1));
 }
