@@ -3,8 +3,8 @@
  * anything out. The same separable neighbourhood, the same rates, in counts mode the same Philox draws and the same
  * quantile by inversion. Single precision, so that the compiler can work on as many cells at once as the vectors hold.
  *
- * Reads a case written by yardstick.ts (see its `encodeCase`) and prints: seconds of the fastest round, and the sum of
- * cover after it.
+ * Reads a case as `case-file.ts` writes it and prints: seconds of the processor in the fastest round, and the sum of cover
+ * after it.
  */
 #include <math.h>
 #include <stdint.h>
@@ -126,9 +126,13 @@ int main(int argc, char **argv) {
   float *q = need(c.width * sizeof(float)), *S = need(c.width * sizeof(float));
   float *padded = need((c.width + 2 * c.radius) * sizeof(float));
   uint16_t *first = need(cells * sizeof(uint16_t)), *clumps = need(cells * sizeof(uint16_t));
-  take(start, cells * sizeof(float), file);
-  take(first, cells * sizeof(uint16_t), file);
+  if (c.counts)
+    take(first, cells * sizeof(uint16_t), file);
+  else
+    take(start, cells * sizeof(float), file);
   fclose(file);
+  for (size_t i = 0; c.counts && i < cells; i++)
+    start[i] = capacity[i] * (1.0f / 255) * ((float)first[i] / sites[capacity[i]]);
 
   double best = 1e300, sum = 0;
   for (int round = 0; round < c.rounds; round++) {

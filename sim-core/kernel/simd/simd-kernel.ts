@@ -57,18 +57,16 @@ export const createSimdKernel: CreateKernel = (setup) => {
       for (let i = 0; i < cells; i++) cover[i] = coverOfClumps(capacity[i], clumps[i], sites[capacity[i]]);
     }
   } else if (setup.cover) cover.set(setup.cover);
-  let looked = false;
+  wasm.look();
 
   return {
     cover,
     clumps,
     refuge,
     changed() {
-      looked = false;
+      wasm.look();
     },
     step(index: number, droughtIndex: number): StepLosses {
-      if (!looked) wasm.look();
-      looked = true;
       wasm.step(index, droughtIndex);
       return { drought: wasm.lostToDrought.value, background: wasm.lostToBackground.value };
     },

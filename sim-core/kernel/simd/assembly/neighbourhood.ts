@@ -1,4 +1,4 @@
-import { nextRun, runEnd } from './runs';
+import { clear, copy, nextRun, runEnd } from './runs';
 import {
   above,
   alive,
@@ -76,8 +76,8 @@ export function spreadRow(y: i32): void {
   const out = spread + <usize>slot * rowBytes;
   const flags = spreadFlags + <usize>slot * flagStride;
   for (let g = nextRun(flags, 0, groups); g >= 0; g = nextRun(flags, runEnd, groups))
-    memory.fill(out + (g << 4), 0, (runEnd - g) << 4);
-  memory.fill(flags, 0, groups);
+    clear(out + (g << 4), (runEnd - g) << 4);
+  clear(flags, flagStride);
 
   const source = alive + <usize>y * flagStride;
   const cells = cover + ((<usize>y * <usize>width) << 2);
@@ -85,9 +85,11 @@ export function spreadRow(y: i32): void {
   let any = false;
   for (let g = nextRun(source, 0, groups); g >= 0; g = nextRun(source, runEnd, groups)) {
     any = true;
-    memory.copy(padded + (g << 4), cells + (g << 4), (runEnd - g) << 4);
+    copy(padded + (g << 4), cells + (g << 4), (runEnd - g) << 4);
     const from = max(0, g - reach);
-    memory.fill(flags + from, 1, min(groups, runEnd + reach) - from);
+    const to = min(groups, runEnd + reach);
+    if (to - from > 64) memory.fill(flags + from, 1, to - from);
+    else for (let at = from; at < to; at++) store<u8>(flags + at, 1);
   }
   if (!any) return;
   for (let d = 0; d < radius; d++) {
@@ -99,7 +101,7 @@ export function spreadRow(y: i32): void {
   }
   for (let g = nextRun(flags, 0, groups); g >= 0; g = nextRun(flags, runEnd, groups)) along(out, g, runEnd);
   for (let g = nextRun(source, 0, groups); g >= 0; g = nextRun(source, runEnd, groups))
-    memory.fill(padded + (g << 4), 0, (runEnd - g) << 4);
+    clear(padded + (g << 4), (runEnd - g) << 4);
 }
 
 function slotOf(y: i32): i32 {
