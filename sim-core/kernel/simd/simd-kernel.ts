@@ -4,7 +4,7 @@ import { instantiateKernel } from './kernel-module.ts';
 
 /**
  * The kernel that ships: the step of the model four cells at a time, in single precision, in WebAssembly (`assembly/`).
- * It keeps the whole map in one memory, 8.5 bytes a cell in mean-field and 10.5 in counts (12.5 above 65,535 sites), and
+ * It keeps the whole map in one memory, 8.3 bytes a cell in mean-field and 10.3 in counts (12.3 above 65,535 sites), and
  * a few rows.
  *
  * @throws RunProblem where the machine does not give that much memory
