@@ -27,6 +27,7 @@ export default defineConfig({
         test: {
           name: 'node',
           root,
+          globalSetup: `${root}/.config/kernel-for-tests.mjs`,
           environment: 'node',
           include: ['{sim-core,rasters,server}/**/*.test.ts'],
           testTimeout: 60_000,
@@ -39,6 +40,7 @@ export default defineConfig({
         test: {
           name: 'app',
           root,
+          globalSetup: `${root}/.config/kernel-for-tests.mjs`,
           environment: 'happy-dom',
           include: ['app/**/*.test.{ts,tsx}'],
           exclude: ['app/e2e/**'],

@@ -3,7 +3,9 @@ import { rmSync } from 'node:fs';
 import { join } from 'node:path';
 import { build as buildServer } from 'esbuild';
 import { build as buildClient } from 'vite';
-import { root } from './lib/shell.mjs';
+import { ensureKernel, root } from './lib/shell.mjs';
+
+ensureKernel();
 
 const outdir = join(root, '.build/server');
 rmSync(outdir, { recursive: true, force: true });

@@ -1,8 +1,9 @@
 // npm run dev: the server restarts on a change (PORT, 4173), Vite serves the client at its own address and passes /api on.
 import { spawn } from 'node:child_process';
-import { ensureInstalled, root } from './lib/shell.mjs';
+import { ensureInstalled, ensureKernel, root } from './lib/shell.mjs';
 
 ensureInstalled();
+ensureKernel();
 const children = [
   spawn(process.execPath, ['--watch', '--import', 'tsx', 'server/main.ts'], { cwd: root, stdio: 'inherit' }),
   spawn('node_modules/.bin/vite', ['--config', 'vite.config.ts'], { cwd: root, stdio: 'inherit' }),

@@ -1,9 +1,10 @@
 // npm test: type-check, lint, unit and API tests, browser journeys. All parts run even when one fails.
 import { mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { ensureBuilt, ensureInstalled, ensureTestTools, root, run, say } from './lib/shell.mjs';
+import { ensureBuilt, ensureInstalled, ensureKernel, ensureTestTools, root, run, say } from './lib/shell.mjs';
 
 ensureInstalled();
+ensureKernel();
 ensureTestTools();
 
 const reports = join(root, '.build/reports');

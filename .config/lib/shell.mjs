@@ -1,6 +1,6 @@
 import { spawn, spawnSync } from 'node:child_process';
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { dirname, join, resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
@@ -70,8 +70,25 @@ export function ensureInstalled() {
   });
 }
 
+/** Where the shipping kernel is written, and the module that it is compiled into. */
+export const kernelSource = 'sim-core/kernel/simd/assembly';
+export const kernelBytes = 'sim-core/kernel/simd/kernel-bytes.ts';
+
+/** Compiles the kernel unless the module that holds it is of the very same sources. */
+export function ensureKernel() {
+  const stamp = join(root, '.build/kernel');
+  if (!existsSync(join(root, kernelBytes))) rmSync(stamp, { force: true });
+  const files = [...filesBelow(kernelSource), 'package-lock.json', '.config/build-kernel.mjs'];
+  unlessDone(stamp, files, () => {
+    say('Compiling the kernel …');
+    if (run(process.execPath, ['.config/build-kernel.mjs']) !== 0)
+      giveUp('The kernel could not be compiled; the lines above say why.');
+  });
+}
+
 /** Builds client and server unless the present build is of the very same sources. */
 export function ensureBuilt() {
+  ensureKernel();
   const sources = ['app', 'server', 'sim-core', 'rasters'].flatMap(filesBelow);
   const files = [...sources, 'package-lock.json', 'vite.config.ts', '.config/build.mjs'];
   unlessDone(join(root, '.build/built'), files, () => {

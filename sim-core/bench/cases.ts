@@ -19,26 +19,38 @@ export interface BenchCase {
 }
 
 const cellSize = 1;
+/** Larger maps are this one laid side by side, so that a cell is the same work at every size. */
+const tile = 500;
 
 /** A map of the given kind, drawn from a seed of its own, under default rates. */
 export function benchCase(mode: Mode, map: 'full' | 'sparse', size: number): BenchCase {
-  const cells = size * size;
-  const random = stream(`bench ${map} ${size}`, 'parameters');
+  const random = stream(`bench ${map}`, 'parameters');
   const byte = (low: number, high: number) =>
-    Uint8Array.from({ length: cells }, () => low + Math.floor((high - low + 1) * random.quick()));
+    Uint8Array.from({ length: tile * tile }, () => low + Math.floor((high - low + 1) * random.quick()));
   const capacity = byte(180, 255);
-  const alive = map === 'full' ? new Uint8Array(cells).fill(1) : patches(size, random);
+  const alive = map === 'full' ? new Uint8Array(tile * tile).fill(1) : patches(tile, random);
   const sites = clumpSites(defaultRates.clumpsPerSquareMetre, cellSize);
   const clumps = Uint32Array.from(capacity, (k, i) =>
     alive[i] ? Math.ceil(sites[k] * (0.5 + 0.5 * random.quick())) : 0,
   );
-  const steps = size > 1000 ? 2 : 8;
+  const cover = Float32Array.from(capacity, (k, i) => coverOfClumps(k, clumps[i], sites[k]));
+  const laid = <T extends Uint8Array | Uint32Array | Float32Array>(from: T, to: T): T => {
+    for (let y = 0; y < size; y++)
+      for (let x = 0; x < size; x += tile) {
+        const row = (y % tile) * tile;
+        to.set(from.subarray(row, row + Math.min(tile, size - x)), y * size + x);
+      }
+    return to;
+  };
+  const cells = size * size;
+  const counts = mode === 'counts';
   return {
     mode,
     map,
     size,
-    steps,
-    rounds: 3,
+    // One, so that a sparse map is one: what lives is heard of ever farther.
+    steps: 1,
+    rounds: size > 2000 ? 3 : size > 500 ? 10 : 200,
     droughtIndex: -1,
     setup: {
       width: size,
@@ -48,12 +60,12 @@ export function benchCase(mode: Mode, map: 'full' | 'sparse', size: number): Ben
       taps: fitKernel(defaultRates, cellSize, 1).taps,
       step: stepRates(defaultRates, 1),
       rates: defaultRates,
-      capacity,
-      vigour: byte(200, 255),
-      exposure: byte(0, 60),
-      refuge: byte(0, 40),
-      cover: Float32Array.from(capacity, (k, i) => coverOfClumps(k, clumps[i], sites[k])),
-      clumps,
+      capacity: laid(capacity, new Uint8Array(cells)),
+      vigour: laid(byte(200, 255), new Uint8Array(cells)),
+      exposure: laid(byte(0, 60), new Uint8Array(cells)),
+      refuge: laid(byte(0, 40), new Uint8Array(cells)),
+      cover: counts ? undefined : laid(cover, new Float32Array(cells)),
+      clumps: counts ? laid(clumps, new Uint32Array(cells)) : undefined,
       sites,
       luck: { k0: 1, k1: 2 },
       replicate: 0,

@@ -3,8 +3,8 @@
  * anything out. The same separable neighbourhood, the same rates, in counts mode the same Philox draws and the same
  * quantile by inversion. Single precision, so that the compiler can work on as many cells at once as the vectors hold.
  *
- * Reads a case written by yardstick.ts (see its `encodeCase`) and prints: seconds of the fastest round, and the sum of
- * cover after it.
+ * Reads a case as `case-file.ts` writes it and prints: seconds of the processor in the fastest round, and the sum of cover
+ * after it.
  */
 #include <math.h>
 #include <stdint.h>
@@ -44,6 +44,32 @@ static void spread(const float *in, float *out, const float *taps, int width, in
   }
 }
 static int mirrored(int i, int n) { return i < 0 ? -1 - i : i < n ? i : 2 * n - 1 - i; }
+
+/* q and S of one row; no branch and no alias, so that the compiler does use the vectors. */
+static void chances(const Case *c, int width, const float *restrict heard, const uint8_t *restrict capacity,
+                    const uint8_t *restrict vigour, const uint8_t *restrict exposure,
+                    const uint8_t *restrict refuge, float *restrict q, float *restrict S) {
+  const float unit = 1.0f / 255, recruits = c->recruits, growth = c->refugeGrowth, years = c->years;
+  const float exposureShift = c->exposureShift, refugeShift = c->refugeShift, neighbourShift = c->neighbourShift;
+  const float wet = c->droughtIndex - c->tolerance, sharp = 1 / c->lossWidth;
+  const float background = c->background, drought = c->drought;
+  for (int x = 0; x < width; x++) {
+    float K = capacity[x] * unit, M = refuge[x] * unit, E = exposure[x] * unit;
+    /* ground that holds nothing is left out below; a least K spares the branch here */
+    float phi = heard[x] / fmaxf(K, 1e-9f), phi1 = fminf(phi, 1);
+    q[x] = 1 - expf(-recruits * (vigour[x] * unit) * (1 + growth * M) * phi);
+    float margin = (wet - exposureShift * E + refugeShift * M + neighbourShift * phi1) * sharp;
+    S[x] = expf(-(background + drought / (1 + expf(margin))) * years);
+  }
+}
+static void meanField(const Case *c, int width, const uint8_t *restrict capacity, const float *restrict q,
+                      const float *restrict S, float *restrict cover) {
+  const float carry = c->carry;
+  for (int x = 0; x < width; x++) {
+    float K = capacity[x] * (1.0f / 255), kept = carry * cover[x];
+    cover[x] = fminf(S[x] * (kept + (K - kept) * q[x]), K);
+  }
+}
 
 static void philox(uint32_t c0, uint32_t c1, uint32_t k0, uint32_t k1, uint32_t *out) {
   uint32_t c2 = 0, c3 = 0;
@@ -97,18 +123,23 @@ int main(int argc, char **argv) {
   take(refuge, cells, file);
   float *start = need(cells * sizeof(float)), *cover = need(cells * sizeof(float));
   float *rows = need(cells * sizeof(float)), *row = need(c.width * sizeof(float));
+  float *q = need(c.width * sizeof(float)), *S = need(c.width * sizeof(float));
   float *padded = need((c.width + 2 * c.radius) * sizeof(float));
   uint16_t *first = need(cells * sizeof(uint16_t)), *clumps = need(cells * sizeof(uint16_t));
-  take(start, cells * sizeof(float), file);
-  take(first, cells * sizeof(uint16_t), file);
+  if (c.counts)
+    take(first, cells * sizeof(uint16_t), file);
+  else
+    take(start, cells * sizeof(float), file);
   fclose(file);
+  for (size_t i = 0; c.counts && i < cells; i++)
+    start[i] = capacity[i] * (1.0f / 255) * ((float)first[i] / sites[capacity[i]]);
 
   double best = 1e300, sum = 0;
   for (int round = 0; round < c.rounds; round++) {
     memcpy(cover, start, cells * sizeof(float));
     memcpy(clumps, first, cells * sizeof(uint16_t));
     struct timespec from, to;
-    clock_gettime(CLOCK_MONOTONIC, &from);
+    clock_gettime(CLOCK_PROCESS_CPUTIME_ID, &from);
     for (int step = 0; step < c.steps; step++) {
       spread(cover, rows, taps, c.width, c.height, c.radius, padded);
       for (int y = 0; y < c.height; y++) {
@@ -120,18 +151,9 @@ int main(int argc, char **argv) {
           for (int x = 0; x < c.width; x++) row[x] += taps[d] * (up[x] + down[x]);
         }
         size_t at = (size_t)y * c.width;
+        chances(&c, c.width, row, capacity + at, vigour + at, exposure + at, refuge + at, q, S);
         if (!c.counts) {
-          for (int x = 0; x < c.width; x++) {
-            size_t i = at + x;
-            float K = capacity[i] * (1.0f / 255), M = refuge[i] * (1.0f / 255);
-            float phi = K > 0 ? row[x] / K : 0, phi1 = phi < 1 ? phi : 1;
-            float q = 1 - expf(-c.recruits * (vigour[i] * (1.0f / 255)) * (1 + c.refugeGrowth * M) * phi);
-            float margin = (c.droughtIndex - c.tolerance - c.exposureShift * (exposure[i] * (1.0f / 255)) +
-                            c.refugeShift * M + c.neighbourShift * phi1) / c.lossWidth;
-            float S = expf(-(c.background + c.drought / (1 + expf(margin))) * c.years);
-            float kept = c.carry * cover[i], next = S * (kept + (K - kept) * q);
-            cover[i] = next < K ? next : K;
-          }
+          meanField(&c, c.width, capacity + at, q, S, cover + at);
           continue;
         }
         uint32_t words[4];
@@ -139,27 +161,21 @@ int main(int argc, char **argv) {
         for (int x = 0; x < c.width; x++) {
           size_t i = at + x;
           if (capacity[i] == 0) continue;
-          float K = capacity[i] * (1.0f / 255), M = refuge[i] * (1.0f / 255);
-          float phi = row[x] / K, phi1 = phi < 1 ? phi : 1;
-          float q = 1 - expf(-c.recruits * (vigour[i] * (1.0f / 255)) * (1 + c.refugeGrowth * M) * phi);
           int n = clumps[i], N = sites[capacity[i]];
-          if (n == 0 && q <= 0) continue;
-          float margin = (c.droughtIndex - c.tolerance - c.exposureShift * (exposure[i] * (1.0f / 255)) +
-                          c.refugeShift * M + c.neighbourShift * phi1) / c.lossWidth;
-          float S = expf(-(c.background + c.drought / (1 + expf(margin))) * c.years);
+          if (n == 0 && q[x] <= 0) continue;
           if (i / 2 != drawn) {
             drawn = i / 2;
             philox((uint32_t)drawn, step, c.k0, c.k1, words);
           }
           int word = (i & 1) * 2;
-          n = quantile((words[word] + 0.5) / 4294967296.0, n, S * (c.carry + (1 - c.carry) * q)) +
-              quantile((words[word + 1] + 0.5) / 4294967296.0, N - n, S * q);
+          n = quantile((words[word] + 0.5) / 4294967296.0, n, S[x] * (c.carry + (1 - c.carry) * q[x])) +
+              quantile((words[word + 1] + 0.5) / 4294967296.0, N - n, S[x] * q[x]);
           clumps[i] = n;
-          cover[i] = K * ((float)n / N);
+          cover[i] = capacity[i] * (1.0f / 255) * ((float)n / N);
         }
       }
     }
-    clock_gettime(CLOCK_MONOTONIC, &to);
+    clock_gettime(CLOCK_PROCESS_CPUTIME_ID, &to);
     double seconds = (to.tv_sec - from.tv_sec) + (to.tv_nsec - from.tv_nsec) * 1e-9;
     if (seconds < best) best = seconds;
     sum = 0;

@@ -51,12 +51,15 @@ export interface StepLosses {
 
 /**
  * The step of the model on one map. The arrays are live views of the kernel's own state: actions write to them between
- * steps, and in counts mode whoever changes `clumps` changes `cover` too (`coverOfClumps`).
+ * steps, and in counts mode whoever changes `clumps` changes `cover` too (`coverOfClumps`). Whoever changed them calls
+ * `changed` before the next step.
  */
 export interface Kernel {
   readonly cover: Float32Array;
   readonly clumps: Uint16Array | Uint32Array | undefined;
   readonly refuge: Uint8Array;
+  /** Says that others wrote to the arrays, so that the kernel looks anew at where anything lives. */
+  changed(): void;
   /**
    * Neighbourhood, recruitment, loss, next state.
    *

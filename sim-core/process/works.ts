@@ -79,7 +79,9 @@ export function prepareWorks(actions: readonly Action[], grid: Grid): Works {
         cells.forEach((cell, j) => {
           if (strengths[j] > refuge[cell]) refuge[cell] = strengths[j];
         });
-      return works.losses.reduce((lost, loss, order) => lost + remove(loss, order, index, map), 0);
+      const lost = works.losses.reduce((sum, loss, order) => sum + remove(loss, order, index, map), 0);
+      map.kernel.changed();
+      return lost;
     },
   };
 }

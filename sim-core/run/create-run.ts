@@ -2,7 +2,7 @@ import type { Grid } from '#sim-core/grid/grid.ts';
 import { groundLayers, type Ground } from '#sim-core/grid/ground.ts';
 import { clumpSites } from '#sim-core/kernel/clump-sites.ts';
 import type { CreateKernel, StepLosses } from '#sim-core/kernel/kernel.ts';
-import { createReferenceKernel } from '#sim-core/kernel/reference/reference-kernel.ts';
+import { createSimdKernel } from '#sim-core/kernel/simd/simd-kernel.ts';
 import { closingYears, referenceSum } from '#sim-core/measure/closing.ts';
 import { measureCover } from '#sim-core/measure/cover-measures.ts';
 import { recoveredYear } from '#sim-core/measure/recovery.ts';
@@ -56,11 +56,12 @@ export interface RunInput {
 /**
  * A run: a pure function of its specification and ground.
  *
+ * @param createKernel the one that ships; the reference kernel in tests
  * @throws RunProblem naming each field that makes the run impossible
  */
 export function createRun(
   { spec, grid, ground }: RunInput,
-  createKernel: CreateKernel = createReferenceKernel,
+  createKernel: CreateKernel = createSimdKernel,
 ): Run {
   refuseOtherSizes(grid, ground);
   const { width, height, cellSize } = grid;

@@ -35,6 +35,9 @@ export const createReferenceKernel: CreateKernel = (setup) => {
     cover,
     clumps,
     refuge,
+    changed() {
+      // It looks at every cell of C in every step.
+    },
     step(index: number, droughtIndex: number): StepLosses {
       const losses: StepLosses = { drought: 0, background: 0 };
       let drawn = -1;

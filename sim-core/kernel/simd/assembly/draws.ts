@@ -1,0 +1,68 @@
+import { binomialQuantile, drawPair, fewSites } from './binomial';
+import { philox } from './philox';
+import {
+  alive,
+  capacity,
+  clumps,
+  cover,
+  flagStride,
+  key0,
+  key1,
+  replicate,
+  shares,
+  sites,
+  skipsBare,
+  wide,
+  width,
+} from './state';
+import { free, records, standing } from './stretch';
+
+/** the random words of one stretch: two a cell, from the first cell of a counter on */
+export const words: usize = memory.data((64 << 5) + 128, 16);
+
+/** A word as a number strictly between 0 and 1: (word + ½) / 2³². */
+function uniform(word: usize): f64 {
+  return (<f64>load<u32>(word) + 0.5) * 2.3283064365386963e-10;
+}
+
+/** Draws the next state of groups `from` up to `to` of row y from the chances that `weigh` left. */
+export function draw(y: i32, from: i32, to: i32, step: u32): void {
+  const row = <usize>y * <usize>width;
+  const first = row + ((<usize>from) << 2);
+  const end = row + <usize>min(to << 2, width);
+  // Two cells share a counter, four counters are drawn at once.
+  const pair = <u32>(first >> 1);
+  for (let at = pair, out = words; (<usize>at) << 1 < end; at += 4, out += 64)
+    philox(out, at, step, replicate, key0, key1);
+  const luck = words - ((<usize>pair) << 4);
+
+  let living = false;
+  for (let cell = first; cell < end; cell++) {
+    const column = cell - row;
+    const lane = records + (((column >> 2) - from) << 6) + ((column & 3) << 2);
+    const byte = <usize>load<u8>(capacity + cell);
+    const N = load<i32>(sites + (byte << 2));
+    if (N > 0) {
+      const n = wide ? load<i32>(clumps + (cell << 2)) : <i32>load<u16>(clumps + (cell << 1));
+      const chance = load<f32>(lane, free);
+      if (n != 0 || chance > 0) {
+        const word = luck + (cell << 3);
+        const next =
+          N <= fewSites
+            ? drawPair(word, n, N, lane + standing)
+            : binomialQuantile(uniform(word), n, <f64>load<f32>(lane, standing)) +
+              binomialQuantile(uniform(word + 4), N - n, <f64>chance);
+        if (next != n) {
+          if (wide) store<i32>(clumps + (cell << 2), next);
+          else store<u16>(clumps + (cell << 1), <u16>next);
+          store<f32>(cover + (cell << 2), <f32>(load<f64>(shares + (byte << 3)) * (<f64>next / <f64>N)));
+        }
+        if (next != 0) living = true;
+      }
+    }
+    if ((column & 3) == 3 || cell + 1 == end) {
+      if (skipsBare) store<u8>(alive + <usize>y * flagStride + (column >> 2), <u8>living);
+      living = false;
+    }
+  }
+}
