@@ -2,11 +2,11 @@ import type { Mode } from '#sim-core/spec/run-spec.ts';
 import type { RunProgress } from '#app/workers/run-loop.ts';
 
 /**
- * Seconds that a million cells take a step, until this browser's own are known: what the engine took in Node on one core
- * of a small server (0.15 s of processor time by mean field, 0.20 s in counts, over 3 years of 1,000 × 1,000 cells), and
- * a good half more for packing frames and for a browser that has other things to do. Rough, and said as “about”.
+ * Seconds that a million cells take a step, until this browser's own are known: what a year took in Node on one core of a
+ * small server with its measures and the packing of its frame (0.08 s of processor time by mean field, 0.14 s in counts,
+ * over 6 years of 1,000 × 1,000 cells), and half more for a browser that has other things to do. Rough, and said as “about”.
  */
-const startingPace: Record<Mode, number> = { 'mean-field': 0.23, counts: 0.3 };
+const startingPace: Record<Mode, number> = { 'mean-field': 0.12, counts: 0.2 };
 const keyOf = (mode: Mode) => `foothold.pace.${mode}`;
 
 /** Learns from a run how fast this browser is. */
