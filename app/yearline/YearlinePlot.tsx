@@ -65,7 +65,7 @@ function DroughtBars({ scale, surveyYear, droughtIndex, tolerances, availableUnt
       <>
         <path d={`M${left} ${y}H${right}`} stroke={ink} strokeDasharray={dashes} strokeOpacity={0.85} />
         {!compact && (
-          <text x={right + 12} y={y + dy} className={note}>
+          <text x={right + 12} y={Math.min(y + dy, scale.labels - 18)} className={note}>
             {words}
           </text>
         )}
