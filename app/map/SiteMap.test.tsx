@@ -3,6 +3,7 @@ import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { useState } from 'react';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { MapFoothold } from './map-symbols.ts';
+import { toScreen, type MapView } from './map-view.ts';
 import type { MapPlace, SiteMapProps } from './site-map-props.ts';
 import { SiteMap } from './SiteMap.tsx';
 
@@ -40,6 +41,7 @@ function show(props: Partial<SiteMapProps> = {}) {
         }}
         onMove={(id, place) => calls.push(['move', id, place])}
         onRemove={(id) => calls.push(['remove', id])}
+        onKept={(id) => calls.push(['kept', id])}
         {...props}
         selectedId={selectedId}
       />
@@ -125,18 +127,33 @@ describe('SiteMap by keyboard', () => {
     const { calls, press } = show();
     press('n');
     press('ArrowUp');
-    press('Delete');
-    expect(calls.splice(0)).toEqual([['select', 'm']]);
-    press('n');
-    press('ArrowUp');
     press('ArrowLeft', true);
     press('Delete');
-    expect(calls).toEqual([
+    expect(calls.splice(0)).toEqual([
       ['select', 'f'],
       ['move', 'f', { column: 20, row: 19, x: 1020.5, y: 2030.5 }],
       ['move', 'f', { column: 10, row: 20, x: 1010.5, y: 2029.5 }],
       ['remove', 'f'],
     ]);
+    press('n');
+    press('ArrowUp');
+    press('Delete');
+    expect(calls).toEqual([
+      ['select', 'm'],
+      ['kept', 'm'],
+    ]);
+  });
+  it('brings into view what it finds', () => {
+    const views: MapView[] = [];
+    const { press } = show({ onView: (view) => views.push(view) });
+    for (let i = 0; i < 4; i++) press('+');
+    press('n');
+    const view = views[views.length - 1];
+    const { left, top } = toScreen(view, grid, { width: 1000, height: 500 }, flag.x, flag.y);
+    expect(left).toBeGreaterThanOrEqual(59);
+    expect(left).toBeLessThanOrEqual(941);
+    expect(top).toBeGreaterThanOrEqual(59);
+    expect(top).toBeLessThanOrEqual(441);
   });
   it('zooms by keys and by buttons, and comes back to the whole', () => {
     const scales: number[] = [];

@@ -108,7 +108,7 @@ export function SiteMap(props: SiteMapProps) {
         {summary} Arrow keys move a crosshair that reads the ground, with Shift by one cell; plus and minus
         zoom; 0 shows the whole site.
         {props.tool === 'place' && ' Enter places a foothold at the crosshair.'}
-        {footholds.length > 0 && ' N selects the next foothold.'}
+        {footholds.length > 0 && ' N selects the next foothold, planned ones first.'}
         {props.onMove && ' Arrow keys move a selected planned foothold by one cell, with Shift by ten.'}{' '}
         Escape lets go.
       </p>

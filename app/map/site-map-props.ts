@@ -28,6 +28,8 @@ export interface SiteMapProps {
   readonly onMove?: (id: string, place: MapPlace) => void;
   /** Delete on a selected planned foothold. */
   readonly onRemove?: (id: string) => void;
+  /** Delete on a selected surveyed foothold, which cannot be removed: the place to say so. */
+  readonly onKept?: (id: string) => void;
   readonly onHover?: (cell: MapCell | undefined) => void;
   /** Controlled view, for maps that move together; without it the map keeps its own. */
   readonly view?: MapView;

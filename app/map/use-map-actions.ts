@@ -18,7 +18,7 @@ import { useMapPointer } from './use-map-pointer.ts';
 
 interface MapActionsInput extends Pick<
   SiteMapProps,
-  'grid' | 'selectedId' | 'tool' | 'onPlace' | 'onSelect' | 'onMove' | 'onRemove' | 'onHover'
+  'grid' | 'selectedId' | 'tool' | 'onPlace' | 'onSelect' | 'onMove' | 'onRemove' | 'onKept' | 'onHover'
 > {
   readonly footholds: readonly MapFoothold[];
   readonly surface: RefObject<HTMLDivElement | null>;
@@ -133,9 +133,13 @@ export function useMapActions(input: MapActionsInput) {
 
   const next = (step: number) => {
     if (footholds.length === 0) return;
-    const at = footholds.findIndex((f) => f.id === selectedId);
+    // What people plan comes before what they found: there may be hundreds of surveyed ones.
+    const order = (['planned', 'surveyed'] as const).flatMap((kind) =>
+      footholds.filter((f) => f.kind === kind),
+    );
+    const at = order.findIndex((f) => f.id === selectedId);
     const from = at === -1 && step < 0 ? 0 : at;
-    const found = footholds[(from + step + footholds.length) % footholds.length];
+    const found = order[(from + step + order.length) % order.length];
     setCrosshair(undefined);
     onSelect?.(found.id);
     lookAt(found.x, found.y);
@@ -164,8 +168,8 @@ export function useMapActions(input: MapActionsInput) {
       else if (event.key === '0') show(wholeView(grid, size));
       else if (event.key === 'Enter') enter();
       else if (event.key.toLowerCase() === 'n') next(event.shiftKey ? -1 : 1);
-      else if ((event.key === 'Delete' || event.key === 'Backspace') && selected?.kind === 'planned')
-        input.onRemove?.(selected.id);
+      else if ((event.key === 'Delete' || event.key === 'Backspace') && selected)
+        (selected.kind === 'planned' ? input.onRemove : input.onKept)?.(selected.id);
       else if (event.key === 'Escape') {
         setCrosshair(undefined);
         onSelect?.(undefined);
