@@ -119,7 +119,7 @@ test('from a GeoTIFF to a run that is replayed, repeated and exported', async ({
 
   let runAddress = '';
   await test.step('run, pause, step and let it end', async () => {
-    await page.getByRole('link', { name: 'Run this option' }).click();
+    await page.getByRole('link', { name: 'Set up a run' }).click();
     await page.getByRole('button', { name: 'Start the run' }).click();
     await expect(page).toHaveURL(/\/runs\/[\w-]+/);
     runAddress = page.url();

@@ -5,9 +5,11 @@ import type { MoundPen, PenErrors, PenField } from './mound-pen.ts';
 export function MoundSentence(props: {
   pen: MoundPen;
   errors: PenErrors;
+  /** clicks on the map that placed nothing, since the sentence was last written on */
+  missed: number;
   onChange: (pen: MoundPen) => void;
 }) {
-  const { pen, errors, onChange } = props;
+  const { pen, errors, missed, onChange } = props;
   const blank = (field: PenField, label: string) => (
     <Blank
       label={label}
@@ -18,6 +20,7 @@ export function MoundSentence(props: {
     />
   );
   const wrong = Object.values(errors);
+  // The alert is keyed by the click: another click is said again, although the words are the same.
   return (
     <div className="text-[13.5px]">
       <p className="flex flex-wrap items-baseline gap-x-1.5 gap-y-1">
@@ -27,7 +30,8 @@ export function MoundSentence(props: {
         <span>m, in</span> {blank('year', 'Year in which it is placed')}
       </p>
       {wrong.length > 0 && (
-        <p role="alert" className="mt-0.5 text-note text-danger">
+        <p key={missed} role="alert" className="mt-0.5 text-note text-danger">
+          {missed > 0 && <b>Nothing was placed. </b>}
           {wrong.join(' ')}
         </p>
       )}

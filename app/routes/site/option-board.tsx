@@ -1,9 +1,5 @@
-import { useMemo, useRef, useState } from 'react';
-import { useNavigate } from 'react-router-dom';
+import { useEffect, useMemo, useRef, useState } from 'react';
 import type { Option } from '#contract/sites.ts';
-import { Button } from '#app/components/button.tsx';
-import { LinkButton } from '#app/components/link-button.tsx';
-import { WordButton } from '#app/components/word-button.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
 import { moundProblem } from '#app/features/options/check-mound.ts';
 import { readPen, type MoundPen } from '#app/features/options/mound-pen.ts';
@@ -11,8 +7,10 @@ import { moundsOf } from '#app/features/options/option-draft.ts';
 import { useOptionDrawing } from '#app/features/options/use-option-drawing.ts';
 import { countOf, worksByYear } from '#app/features/options/works-words.ts';
 import type { MoundField } from '#app/features/options/works-table.tsx';
+import { useUndoKeys } from '#app/features/options/use-undo-keys.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
 import { Yearline } from '#app/yearline/Yearline.tsx';
+import { OptionAction } from './option-action.tsx';
 import { OptionMap, type RefusedPlace } from './option-map.tsx';
 import { OptionMargin } from './option-margin.tsx';
 import { OptionTools } from './option-tools.tsx';
@@ -27,20 +25,25 @@ export function OptionBoard(props: {
   option: Option;
   ground: GroundRasters;
   pen: MoundPen;
-  tool: 'place' | 'look';
+  /** it was added this moment: the keyboard goes to its map */
+  justMade: boolean;
   onPen: (pen: MoundPen) => void;
-  onTool: (tool: 'place' | 'look') => void;
-  onChoose: (optionId: string) => void;
+  onChoose: (optionId: string, isNew?: boolean) => void;
 }) {
-  const { option, ground, pen, onChoose } = props;
+  const { option, ground, pen, justMade, onChoose } = props;
   const { site, mayDraw } = useSite();
   const { outlook, grid } = site;
   const drawing = useOptionDrawing(option);
-  const { draft, draw, unsaved, conflict } = drawing;
+  const { draft, draw } = drawing;
   const [asTable, setAsTable] = useState(false);
   const [refused, setRefused] = useState<RefusedPlace>();
+  const [missed, setMissed] = useState(0);
+  const [chosenTool, setTool] = useState<'place' | 'look'>(draft.works.length === 0 ? 'place' : 'look');
   const board = useRef<HTMLDivElement>(null);
-  const navigate = useNavigate();
+  const focusMap = () => board.current?.querySelector<HTMLElement>('[role="application"]')?.focus();
+  useEffect(() => {
+    if (justMade) focusMap();
+  }, [justMade]);
 
   const lastYear = outlook.surveyYear + outlook.years;
   const dated = draft.works.map((work) => work.action.year);
@@ -48,7 +51,11 @@ export function OptionBoard(props: {
   const { year, setYear } = useYearParam(outlook.surveyYear, lastYear, usual);
 
   const editable = mayDraw && !option.wait;
-  const tool = editable ? props.tool : 'look';
+  const tool = editable ? chosenTool : 'look';
+  useUndoKeys(editable, (type) => {
+    setRefused(undefined);
+    draw({ type });
+  });
   const read = readPen(pen, outlook);
   const pins = useMemo(
     () =>
@@ -66,7 +73,7 @@ export function OptionBoard(props: {
     return problem === undefined;
   };
   const place = (x: number, y: number) => {
-    if (!read.mound) return setRefused({ x, y, problem: 'Mend the sentence above the map first.' });
+    if (!read.mound) return setMissed(missed + 1);
     if (!allowed(x, y)) return;
     draw({ type: 'place', mound: { kind: 'mound', x, y, ...read.mound } });
     // What was just placed must not stand faint on the map.
@@ -99,18 +106,14 @@ export function OptionBoard(props: {
     ? (key: string) => ({
         onYear: (text: string) => edit(key, 'year', text),
         onMove: () => {
-          props.onTool('look');
+          setTool('look');
           setAsTable(false);
-          board.current?.querySelector<HTMLElement>('[role="application"]')?.focus();
+          focusMap();
         },
         onRemove: () => remove(key),
       })
     : undefined;
 
-  const runAddress = `/sites/${site.id}/runs?start=${option.id}`;
-  const saveAndRun = async () => {
-    if (await drawing.save()) void navigate(runAddress);
-  };
   return (
     <SitePage
       step="options"
@@ -119,8 +122,12 @@ export function OptionBoard(props: {
         <OptionTools
           {...{ option, editable, mayDraw, tool, pen, draft, draw, asTable }}
           errors={read.errors ?? {}}
-          onPen={props.onPen}
-          onTool={props.onTool}
+          missed={missed}
+          onPen={(next) => {
+            setMissed(0);
+            props.onPen(next);
+          }}
+          onTool={setTool}
           onTable={setAsTable}
         />
       }
@@ -149,44 +156,7 @@ export function OptionBoard(props: {
           label="Year that the map shows"
         />
       }
-      action={
-        mayDraw && (
-          <>
-            {unsaved && !conflict ? (
-              <Button
-                kind="primary"
-                busy={drawing.saving}
-                busyLabel="Saving"
-                onClick={() => void saveAndRun()}
-              >
-                Save and run
-              </Button>
-            ) : (
-              <LinkButton kind={conflict ? 'quiet' : 'primary'} to={runAddress}>
-                Run {option.wait ? 'Wait' : 'this option'}
-              </LinkButton>
-            )}
-            {unsaved && !conflict && (
-              <>
-                <Button busy={drawing.saving} onClick={() => void drawing.save()}>
-                  Save
-                </Button>
-                <WordButton onClick={() => draw({ type: 'discard' })}>Discard</WordButton>
-              </>
-            )}
-            <p role="status" className="w-full text-note text-ink-2">
-              {statusWords({ unsaved, conflict, option })}
-            </p>
-          </>
-        )
-      }
+      action={mayDraw && <OptionAction {...{ option, drawing }} />}
     />
   );
-}
-
-function statusWords(state: { unsaved: boolean; conflict: boolean; option: Option }): string {
-  if (state.conflict) return 'Runs what was saved last, not your drawing.';
-  if (state.unsaved) return 'Changes are kept in this tab, and not saved for the team yet.';
-  if (state.option.wait) return 'Wait is run like any option, so that there is something to compare with.';
-  return 'Saved.';
 }

@@ -1,4 +1,4 @@
-import { useMemo } from 'react';
+import { useMemo, useState } from 'react';
 import { EmptyState } from '#app/components/empty-state.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { FlagSymbol, SurvivorSymbol } from '#app/components/symbols.tsx';
@@ -8,7 +8,7 @@ import { MoundNote, type MoundNoteProps } from '#app/features/options/mound-note
 import { moundsOf, type OptionDraft } from '#app/features/options/option-draft.ts';
 import { surveyedMounds } from '#app/features/options/surveyed-mounds.ts';
 import { WorksTable, type MoundField } from '#app/features/options/works-table.tsx';
-import { placeOf, worksInWords } from '#app/features/options/works-words.ts';
+import { placeInWords, placeOf, worksInWords } from '#app/features/options/works-words.ts';
 import { formatCounted } from '#app/lib/formats.ts';
 import { MapNote } from '#app/map/MapNote.tsx';
 import type { MapRaster } from '#app/map/map-raster.ts';
@@ -72,6 +72,8 @@ export function OptionMap(props: OptionMapProps) {
     }));
     return [...surveyed, ...planned];
   }, [draft.works, surveyed, year]);
+  const [found, setFound] = useState<{ id: string; kept?: boolean }>();
+  const surveyedOne = draft.selected === undefined ? surveyed.find((f) => f.id === found?.id) : undefined;
   const raster = useMemo(
     (): MapRaster | undefined => (ground.cover ? { kind: 'cover', values: ground.cover } : undefined),
     [ground.cover],
@@ -108,15 +110,21 @@ export function OptionMap(props: OptionMapProps) {
         raster={raster}
         ground={ground.capacity}
         footholds={footholds}
-        selectedId={draft.selected}
+        selectedId={draft.selected ?? surveyedOne?.id}
         tool={props.tool}
-        onPlace={({ x, y }) => props.onPlace(x, y)}
+        onPlace={({ x, y }) => {
+          setFound(undefined);
+          props.onPlace(x, y);
+        }}
         onSelect={(id) => {
           props.onForget();
-          props.onSelect(id?.startsWith('s') ? undefined : id);
+          const isSurveyed = surveyed.some((f) => f.id === id);
+          setFound(isSurveyed && id !== undefined ? { id } : undefined);
+          props.onSelect(isSurveyed ? undefined : id);
         }}
         onMove={editable ? (id, { x, y }) => props.onMove(id, x, y) : undefined}
         onRemove={editable ? props.onRemove : undefined}
+        onKept={editable ? (id) => setFound({ id, kept: true }) : undefined}
         label={props.title}
         summary={`Cover at the survey, with ${worksInWords(works)}${
           surveyed.length > 0 ? ` and ${formatCounted(surveyed.length, 'surveyed mound')}` : ''
@@ -138,6 +146,17 @@ export function OptionMap(props: OptionMapProps) {
         {mound && !refused && (
           <MapNote x={mound.action.x} y={mound.action.y}>
             <MoundNote key={mound.key} mound={mound} number={number} edit={props.noteEdit?.(mound.key)} />
+          </MapNote>
+        )}
+        {surveyedOne && !refused && (
+          <MapNote x={surveyedOne.x} y={surveyedOne.y}>
+            <b className="block text-body leading-tight">Surveyed mound</b>
+            <span className="block font-mono text-axis text-ink-2">{placeInWords(surveyedOne)}</span>
+            {found?.kept && (
+              <span role="alert" className="block border-l-[5px] border-danger pl-2">
+                It was there already at the survey and cannot be removed.
+              </span>
+            )}
           </MapNote>
         )}
         {refused && (

@@ -25,7 +25,8 @@ export function OptionMargin(props: {
   drawing: OptionDrawing;
   mayDraw: boolean;
   noteEdit: ((key: string) => MoundNoteProps['edit']) | undefined;
-  onChoose: (optionId: string) => void;
+  /** `isNew`: it was made this moment */
+  onChoose: (optionId: string, isNew?: boolean) => void;
 }) {
   const { options, option, drawing } = props;
   const { draft } = drawing;
@@ -67,7 +68,7 @@ export function OptionMargin(props: {
           {formatCounted(options.length - 1, 'option')} beside Wait
         </span>
       </div>
-      <OptionList {...{ options, drawn, unsaved }} chosen={option.id} onChoose={props.onChoose} />
+      <OptionList {...{ options, drawn, unsaved }} chosen={option.id} onChoose={(id) => props.onChoose(id)} />
       {props.mayDraw && <OptionDeeds {...props} />}
       <h2 className="mt-4 mb-1 border-t border-rule pt-2 text-body font-bold">Works in {option.name}</h2>
       {groups.length === 0 ? (
@@ -109,7 +110,8 @@ function OptionDeeds(props: {
   options: readonly Option[];
   option: Option;
   drawing: OptionDrawing;
-  onChoose: (optionId: string) => void;
+  /** `isNew`: it was made this moment */
+  onChoose: (optionId: string, isNew?: boolean) => void;
 }) {
   const { option, options, drawing, onChoose } = props;
   const [asked, setAsked] = useState<'add' | 'copy' | 'rename' | 'delete'>();
@@ -130,7 +132,7 @@ function OptionDeeds(props: {
       {
         onSuccess: (made) => {
           close();
-          onChoose(made.id);
+          onChoose(made.id, true);
         },
       },
     );

@@ -14,6 +14,7 @@ export function OptionTools(props: {
   tool: 'place' | 'look';
   pen: MoundPen;
   errors: PenErrors;
+  missed: number;
   draft: OptionDraft;
   draw: (action: DraftAction) => void;
   asTable: boolean;
@@ -65,7 +66,7 @@ export function OptionTools(props: {
         </WordButton>
       </div>
       {editable && tool === 'place' && (
-        <MoundSentence pen={props.pen} errors={props.errors} onChange={props.onPen} />
+        <MoundSentence pen={props.pen} errors={props.errors} missed={props.missed} onChange={props.onPen} />
       )}
       {editable && tool === 'look' && (
         <p className="flex min-h-6 items-center text-[13.5px] text-ink-2">

@@ -20,7 +20,7 @@ export function Page() {
   const [search] = useSearchParams();
   const patchSearch = useSearchPatch();
   const [pen, setPen] = useState(() => startingPen(site.outlook.surveyYear));
-  const [tool, setTool] = useState<'place' | 'look'>('look');
+  const [made, setMade] = useState<string>();
 
   if (options.data === undefined)
     return (
@@ -31,11 +31,14 @@ export function Page() {
   return (
     <OptionBoard
       key={option.id}
-      {...{ option, ground, pen, tool }}
+      {...{ option, ground, pen }}
       options={options.data}
+      justMade={option.id === made}
       onPen={setPen}
-      onTool={setTool}
-      onChoose={(id) => patchSearch({ option: id })}
+      onChoose={(id, isNew = false) => {
+        setMade(isNew ? id : undefined);
+        patchSearch({ option: id });
+      }}
     />
   );
 }
