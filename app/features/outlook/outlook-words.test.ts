@@ -27,6 +27,10 @@ describe('outlookWords', () => {
       'Near a mound it still dies in 2031.',
       expect.stringContaining('2 years, 2029 to 2030'),
     ]);
+    expect(outlookWords(series(0, -3, 0, 0, -5), tolerances)[2]).toContain('starts again from its footholds');
+    expect(outlookWords(series(0, -3, 0, 0), tolerances)[2]).toBe(
+      'The longest stretch without such a year is 2 years, 2029 to 2030: no drought ends it within this outlook.',
+    );
     expect(outlookWords(series(-3), tolerances)).toEqual([
       '1 of 1 year would kill open marsh: 2027.',
       'Near a mound the marsh bears them all.',

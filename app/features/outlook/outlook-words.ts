@@ -57,7 +57,10 @@ export function outlookWords(series: readonly YearIndex[], tolerances: Tolerance
   if (length > 0)
     words.push(
       `The longest stretch without such a year is ${formatCounted(length, 'year')}` +
-        `${length > 1 ? `, ${best.from} to ${best.to}` : `, ${best.from}`}: what has not closed by then starts again from its footholds.`,
+        `${length > 1 ? `, ${best.from} to ${best.to}` : `, ${best.from}`}: ` +
+        (best.to === last
+          ? 'no drought ends it within this outlook.'
+          : 'what has not closed by then starts again from its footholds.'),
     );
   return words;
 }

@@ -95,6 +95,8 @@ describe('siteSteps', () => {
       undefined,
       undefined,
     ]);
+    for (const key of ['compare', 'brief'])
+      expect(step(key)).toMatchObject({ state: 'not built yet', share: 0 });
   });
 });
 

@@ -28,8 +28,8 @@ export function siteSteps(site: StatedSite, runs: readonly Pick<RunSummary, 'sta
     outlook: ['Outlook', ...outlookState(site)],
     options: ['Options', ...optionsState(site.options)],
     runs: ['Runs', ...runsState(site.runs, runs)],
-    compare: ['Compare', 'needs ensembles', 0],
-    brief: ['Brief', 'needs a comparison', 0],
+    compare: ['Compare', 'not built yet', 0],
+    brief: ['Brief', 'not built yet', 0],
   };
   return stepKeys.map((key) => {
     const [label, state, share] = states[key];

@@ -22,12 +22,14 @@ export function OutboxSection({ teamId }: { teamId: string }) {
       {outbox.isSuccess && !outbox.data.mailServer && (
         <Notice className="mb-3" title="No mail server is set.">
           Invites leave this machine only if you carry them: read one here, or download it and send it with
-          your own mail program. Password links are hidden here; whoever runs the server finds them in its
-          outbox folder.
+          your own mail program. Letters for a new password are listed, too, but their links are hidden:
+          whoever runs the server finds them in its outbox folder.
         </Notice>
       )}
       {outbox.isSuccess && outbox.data.messages.length === 0 && (
-        <p className="text-ink-2">No messages yet. Invites and password links appear here.</p>
+        <p className="text-ink-2">
+          No messages yet. Invites appear here, and letters for a new password without their links.
+        </p>
       )}
       {outbox.isSuccess && outbox.data.messages.length > 0 && (
         <Table
