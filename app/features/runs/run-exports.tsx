@@ -1,10 +1,12 @@
 import { exportClosing, exportFrame, exportSeries, type Run } from '#contract/runs.ts';
 import { WordAnchor, WordButton } from '#app/components/word-button.tsx';
 import { endpointUrl } from '#app/lib/api-client.ts';
+import { fileNames, specForFiles } from './spec-for-files.ts';
 
 /** What can be taken away from a run. */
 export function RunExports({ run, year }: { run: Run; year: number | undefined }) {
   const params = { runId: run.id };
+  const names = fileNames(run.layers);
   return (
     <section aria-label="Take away" className="border-t border-rule py-2">
       <h2 className="text-body font-bold">Take away</h2>
@@ -28,13 +30,19 @@ export function RunExports({ run, year }: { run: Run; year: number | undefined }
           RunSpec, JSON
         </WordButton>
       </div>
+      {run.layers.length > 0 && (
+        <p className="text-note break-words text-ink-2">
+          The RunSpec runs from the command line with its rasters beside it, under these names:{' '}
+          {run.layers.map(({ part, hash }) => `${names.get(hash)} (${part})`).join(', ')}.
+        </p>
+      )}
     </section>
   );
 }
 
 /** The spec is at hand already, so it is written to a file without asking the server. */
 function downloadSpec(run: Run): void {
-  const json = JSON.stringify(run.spec, null, 2);
+  const json = JSON.stringify(specForFiles(run.spec, run.layers), null, 2);
   const address = URL.createObjectURL(new Blob([json], { type: 'application/json' }));
   const link = document.createElement('a');
   link.href = address;
