@@ -27,7 +27,7 @@ export function StartForm(props: {
   /** names that are taken, so that a new one can be told apart */
   names: readonly string[];
   /** the newest finished run of Wait: with its seed, the difference is what the works did */
-  waitRun: { name: string; seed: string } | undefined;
+  waitRun: { name: string; seed: string; mode: string } | undefined;
   busy: boolean;
   error: unknown;
   onStart: (run: StartedRun) => void;
@@ -38,8 +38,12 @@ export function StartForm(props: {
   );
   const option = options.find(({ id }) => id === optionId) ?? options[0];
   const [typed, setTyped] = useState<string>();
-  const [seed, setSeed] = useState(() => randomSeed());
+  const [drawnSeed] = useState(() => randomSeed());
+  const [typedSeed, setSeed] = useState<string>();
   const [mode, setMode] = useState<Mode>('counts');
+  // Options share the luck of Wait unless the person says otherwise.
+  const seed = typedSeed ?? (option.wait ? undefined : waitRun?.seed) ?? drawnSeed;
+  const sharesLuck = waitRun !== undefined && !option.wait && seed === waitRun.seed && mode === 'counts';
   const name = typed ?? freeName(option.name, names);
   const { surveyYear, years, stepsPerYear } = site.outlook;
   const composed = composeRunSpec(site, option, { mode, seed });
@@ -90,7 +94,7 @@ export function StartForm(props: {
           another seed
         </WordButton>
         {waitRun && !option.wait && seed !== waitRun.seed && (
-          <WordButton lined onClick={() => setSeed(waitRun.seed)}>
+          <WordButton lined onClick={() => setSeed(undefined)}>
             same luck as “{waitRun.name}”
           </WordButton>
         )}
@@ -118,6 +122,13 @@ export function StartForm(props: {
         />
         <span className="text-note text-ink-2">{modeWords[mode].means}</span>
       </div>
+      {sharesLuck && (
+        <p className="mt-1 text-note text-ink-2">
+          {waitRun.mode === mode
+            ? `The seed is that of “${waitRun.name}”, so both share their luck: what differs is what the works did.`
+            : `The seed is that of “${waitRun.name}”, but that run was without chance, so they do not share their luck.`}
+        </p>
+      )}
       <Problems problems={problems} nameProblem={nameProblem} site={site} optionId={option.id} />
       {props.error ? (
         <ProblemNotice error={props.error} title="The run was not started." className="mt-3" />
