@@ -1,9 +1,11 @@
-import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
+import { useEffect } from 'react';
 import type { RunSummary } from '#contract/runs.ts';
 import { ConfirmDialog } from '#app/components/confirm-dialog.tsx';
 import { NameDialog } from '#app/components/name-dialog.tsx';
 import { sayDone } from '#app/components/toast.tsx';
 import { deleteRunMutation, renameRunMutation, stopRunMutation } from '#app/features/runs/change-run.ts';
+import { runQuery } from '#app/features/runs/get-run.ts';
 import { runManager } from '#app/features/runs/live-runs.ts';
 import { isAtWork } from '#app/features/runs/run-manager.ts';
 
@@ -26,6 +28,13 @@ export function RunDeed({
   const rename = useMutation(renameRunMutation(queryClient, run.id));
   const stop = useMutation(stopRunMutation(queryClient, run.id));
   const remove = useMutation(deleteRunMutation(queryClient));
+  const status = useQuery({ ...runQuery(run.id), enabled: deed === 'stop', refetchInterval: 4000 }).data
+    ?.status;
+  // A run that ended while the question stood cannot be stopped any more. The answer's own end closes it by `done`.
+  const moot = status !== undefined && status !== 'running' && deed === 'stop' && stop.isIdle;
+  useEffect(() => {
+    if (moot) onClose();
+  }, [moot, onClose]);
   const done = (words: string) => {
     sayDone(words);
     onClose();
