@@ -25,14 +25,16 @@ export function YearFacts(props: {
         <span className="text-note text-ink-2">under the playhead</span>
       </div>
       <div className="grid grid-cols-2 gap-x-4">
-        <Figure value={formatShare(record.coverShare)} words="of the reference covered" />
-        <Figure value={formatArea(record.closedArea)} words="closed by then" />
+        <Figure value={formatShare(record.coverShare)} words="of what the ground can carry is covered" />
+        <Figure
+          value={formatArea(record.closedArea)}
+          words="closed: reached half of what the ground can carry at some time by then"
+        />
       </div>
       <p className="mt-1 text-note text-ink-2">
         {formatArea(record.coveredArea)} covered
-        {props.referenceArea !== undefined &&
-          ` of ${formatArea(props.referenceArea)} that the ground can carry`}
-        .{compare && ` ${compare.label}: ${formatShare(compare.record.coverShare)}.`}
+        {props.referenceArea !== undefined && `; the ground can carry ${formatArea(props.referenceArea)}`}.
+        {compare && ` ${compare.label}: ${formatShare(compare.record.coverShare)}.`}
         {losses !== undefined && ` ${lossesInWords(year, losses)}`}
       </p>
     </section>

@@ -59,7 +59,7 @@ export function RunMap(props: {
         label={show === 'cover' ? `${run.name}, cover in ${year}` : `${run.name}, closing years`}
         summary={
           record &&
-          `In ${year} ${formatShare(record.coverShare)} of the reference is covered and ${formatArea(record.closedArea)} have closed.`
+          `In ${year} ${formatShare(record.coverShare)} of what the ground can carry is covered; ${formatArea(record.closedArea)} had reached half of it at some time by then.`
         }
         legendTitle={show === 'cover' ? `Cover in ${frame.year ?? year}` : undefined}
         legend={
