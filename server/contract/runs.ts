@@ -21,6 +21,8 @@ export const runSummarySchema = z.object({
   /** frames that are stored */
   frames: z.number().int(),
   recoveredYear: z.number().nullable(),
+  /** first year from then on that ended below the target again */
+  lostYear: z.number().int().nullable(),
   digest: sha256.nullable(),
   /** latest time that it was run again, and whether the digest agreed */
   check: z.object({ at: instant, by: z.string(), agreed: z.boolean(), engineVersion: z.string() }).nullable(),

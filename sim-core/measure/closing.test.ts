@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest';
 import { cannotClose, closingYears, referenceSum, stillOpen } from './closing.ts';
-import { recoveredYear } from './recovery.ts';
+import { lostYear, recoveredYear } from './recovery.ts';
 
 const references = new Float64Array(256);
 references[255] = 0.9;
@@ -29,4 +29,19 @@ test('the year of recovery is the first that reaches the target, or none by the 
   expect(recoveredYear(rows, 0.2)).toBe(2020);
   expect(recoveredYear(rows, 0.95)).toBe(2022);
   expect(recoveredYear(rows, 0.96)).toBeNull();
+});
+
+test('what was recovered is lost again in the first year from then on that ends below the target', () => {
+  const rows = [0.2, 0.92, 0.95, 0.3, 0.95, 0.1].map((recoveredShare, i) => ({
+    time: 2020 + i,
+    recoveredShare,
+  }));
+  expect(lostYear(rows, 0.9)).toBe(2023);
+  expect(lostYear(rows.slice(0, 3), 0.9)).toBeNull();
+  expect(lostYear(rows, 0.96)).toBeNull();
+  const within = [
+    { time: 2020.5, recoveredShare: 0.95 },
+    { time: 2021, recoveredShare: 0.5 },
+  ];
+  expect(lostYear(within, 0.9)).toBe(2021);
 });

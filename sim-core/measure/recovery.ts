@@ -11,3 +11,19 @@ export function recoveredYear(
   const first = series.find((row) => row.recoveredShare >= target);
   return first ? Math.ceil(first.time) : null;
 }
+
+/**
+ * First calendar year, from the year of recovery on, at whose end ΣC < target · ΣC* again; null where recovery never
+ * came or was kept to the horizon.
+ */
+export function lostYear(
+  series: readonly Pick<SeriesRow, 'time' | 'recoveredShare'>[],
+  target: number,
+): number | null {
+  const recovered = recoveredYear(series, target);
+  if (recovered === null) return null;
+  const lost = series.find(
+    (row) => Number.isInteger(row.time) && row.time >= recovered && row.recoveredShare < target,
+  );
+  return lost?.time ?? null;
+}

@@ -1,6 +1,6 @@
 import type { Run, RunSummary } from '#contract/runs.ts';
 import type { Mode } from '#sim-core/spec/run-spec.ts';
-import { formatDuration } from '#app/lib/formats.ts';
+import { formatDuration, formatShare } from '#app/lib/formats.ts';
 import { isAtWork, type LiveRun } from './run-manager.ts';
 
 export const modeWords: Record<Mode, { name: string; means: string }> = {
@@ -41,17 +41,29 @@ function progressWords({ year, surveyYear, years, progress, phase }: LiveRun): s
   return `year ${done} of ${years}${typeof left === 'number' ? `, ${formatDuration(left)} left` : ''}`;
 }
 
-/** `recovered in 2047`, `open at 2060`; nothing where a run did not reach its horizon. */
-export function recoveryWords({
+type Recovery = Pick<RunSummary, 'status' | 'recoveredYear' | 'lostYear' | 'surveyYear' | 'years'>;
+
+/**
+ * `recovered in 2047`, `recovered in 2048, lost again in 2049`, `still open in 2060`; nothing where a run did not reach
+ * its horizon. With the `target` a recovery that did not last is told as `reached 90 % in 2048, lost again in 2049`.
+ */
+export function recoveryWords(run: Recovery, target?: number): string | undefined {
+  const years = recoveryYears(run);
+  if (years === undefined || run.recoveredYear === null) return years;
+  return `${run.lostYear === null || target === undefined ? 'recovered' : `reached ${formatShare(target)}`} in ${years}`;
+}
+
+/** `2047`, `2048, lost again in 2049`, `still open in 2060`: to stand beside another run's. */
+export function recoveryYears({
   status,
   recoveredYear,
+  lostYear,
   surveyYear,
   years,
-}: Pick<RunSummary, 'status' | 'recoveredYear' | 'surveyYear' | 'years'>): string | undefined {
+}: Recovery): string | undefined {
   if (status !== 'finished') return undefined;
-  return recoveredYear === null
-    ? `open at ${surveyYear + years}`
-    : `recovered in ${Math.ceil(recoveredYear)}`;
+  if (recoveredYear === null) return `still open in ${surveyYear + years}`;
+  return `${Math.ceil(recoveredYear)}${lostYear === null ? '' : `, lost again in ${lostYear}`}`;
 }
 
 /** Whether the digest agreed when it was run again. */

@@ -1,8 +1,9 @@
 // @vitest-environment node
 import { describe, expect, it } from 'vitest';
 import type { RunSummary } from '#contract/runs.ts';
+import { formatShare } from '#app/lib/formats.ts';
 import { composeRunSpec } from './compose-run-spec.ts';
-import { checkWords, recoveryWords, statusWords } from './run-words.ts';
+import { checkWords, recoveryWords, recoveryYears, statusWords } from './run-words.ts';
 import { randomSeed } from './random-seed.ts';
 import type { LiveRun } from './run-manager.ts';
 import { siteFixture } from './testing/site-fixture.ts';
@@ -19,6 +20,7 @@ const summary = (more: Partial<RunSummary>) =>
     years: 34,
     frames: 35,
     recoveredYear: null,
+    lostYear: null,
     check: null,
     ...more,
   }) as RunSummary;
@@ -69,7 +71,12 @@ describe('a run in words', () => {
     expect(statusWords(mine, { ...live, repeat: true, phase: 'done' })).toBe('finished');
   });
   it('says what came of it', () => {
-    expect(recoveryWords(mine)).toBe('open at 2060');
+    expect(recoveryWords(mine)).toBe('still open in 2060');
+    const relapsed = summary({ recoveredYear: 2048, lostYear: 2049 });
+    expect(recoveryWords(relapsed)).toBe('recovered in 2048, lost again in 2049');
+    expect(recoveryWords(relapsed, 0.9)).toBe(`reached ${formatShare(0.9)} in 2048, lost again in 2049`);
+    expect(recoveryYears(relapsed)).toBe('2048, lost again in 2049');
+    expect(recoveryYears(summary({ recoveredYear: 2059 }))).toBe('2059');
     expect(recoveryWords(summary({ recoveredYear: 2046.25 }))).toBe('recovered in 2047');
     expect(recoveryWords(summary({ status: 'stopped' }))).toBeUndefined();
     expect(checkWords(mine)).toBe('not run again yet');

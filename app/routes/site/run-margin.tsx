@@ -22,7 +22,7 @@ export function RunMargin(props: {
   frameYear: number | undefined;
   records: readonly YearRecord[];
   rows: readonly SeriesRow[];
-  compare: { label: string; records: readonly YearRecord[] } | undefined;
+  compare: { label: string; records: readonly YearRecord[]; recovery: string | undefined } | undefined;
   cell: { column: number; row: number } | undefined;
   onDeed: (deed: AskedDeed['deed']) => void;
 }) {
@@ -30,7 +30,7 @@ export function RunMargin(props: {
   const { mayDraw } = useSite();
   const at = (list: readonly YearRecord[]) => list.find((record) => record.year === year);
   const compared = compare && at(compare.records);
-  const recovery = recoveryWords(run);
+  const recovery = recoveryWords(run, run.spec.target);
   const result = run.result ?? undefined;
   return (
     <>
@@ -38,9 +38,12 @@ export function RunMargin(props: {
       <p className="pb-2 text-note text-ink-2">{statusWords(run, live)}</p>
       {recovery !== undefined && (
         <p className="pb-2 text-title font-bold">
-          {recovery === `open at ${props.lastYear}`
-            ? `Still open in ${props.lastYear}`
-            : `R${recovery.slice(1)}`}
+          {`${recovery[0].toUpperCase()}${recovery.slice(1)}`}
+          {compare?.recovery !== undefined && (
+            <span className="block text-body font-normal">
+              {compare.label}: {compare.recovery}, with the same luck
+            </span>
+          )}
           <span className="block text-note font-normal text-ink-2">
             recovered means {Math.round(run.spec.target * 100)} % of what the ground can carry
           </span>

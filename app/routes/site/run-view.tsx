@@ -13,6 +13,7 @@ import { runsQuery } from '#app/features/runs/list-runs.ts';
 import { LiveProgress } from '#app/features/runs/live-progress.tsx';
 import { isAtWork, type LiveRun } from '#app/features/runs/run-manager.ts';
 import { driestByYear } from '#app/features/runs/run-series.ts';
+import { recoveryYears } from '#app/features/runs/run-words.ts';
 import { useFrame } from '#app/features/runs/use-frame.ts';
 import { sameOutlook, waitRunFor } from '#app/features/runs/wait-run.ts';
 import { yearRecords } from '#app/yearline/year-records.ts';
@@ -112,7 +113,11 @@ export function RunView({ run, live }: { run: Run; live: LiveRun | undefined }) 
       map={
         asTable ? (
           <div className="size-full overflow-auto bg-ground px-4 py-3 lg:px-6">
-            <YearlineTable {...yearline} notes={[...pins, ...marks]} caption={`${run.name}, year by year`} />
+            <YearlineTable
+              {...yearline}
+              notes={[...pins, ...marks]}
+              caption={`${run.name}, year by year. Cover is the share of what the ground can carry; closed is what reached half of it at some time by then.`}
+            />
           </div>
         ) : (
           <RunMap
@@ -165,7 +170,7 @@ function useWaitCompare(run: Run) {
   return useMemo(
     () =>
       wait?.result && sameOutlook(wait.spec, run.spec)
-        ? { label: 'Wait', records: yearRecords(wait.result.series) }
+        ? { label: 'Wait', records: yearRecords(wait.result.series), recovery: recoveryYears(wait) }
         : undefined,
     [wait, run.spec],
   );

@@ -21,6 +21,7 @@ export interface RunRow {
   years: number;
   result: string | null;
   recoveredYear: number | null;
+  lostYear: number | null;
   digest: string | null;
   closingHash: string | null;
   closingBytes: number | null;
@@ -48,6 +49,7 @@ export const RunEntity = new EntitySchema<RunRow>({
     years: { type: 'integer' },
     result: { type: 'text', nullable: true },
     recoveredYear: { type: 'real', nullable: true },
+    lostYear: { type: 'integer', nullable: true },
     digest: { type: 'text', nullable: true },
     closingHash: { type: 'text', nullable: true },
     closingBytes: { type: 'integer', nullable: true },

@@ -29,6 +29,7 @@ function summaryOf(run: RunListRow): RunSummary {
     years,
     frames: run.frames,
     recoveredYear: run.recoveredYear,
+    lostYear: run.lostYear,
     digest: run.digest,
     check: run.check === null ? null : readJson(runSummarySchema.shape.check, run.check),
   };

@@ -97,6 +97,7 @@ export async function runsOfSite(
       surveyYear: true,
       years: true,
       recoveredYear: true,
+      lostYear: true,
       digest: true,
       closingHash: true,
       closingBytes: true,

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import type { Run } from '#contract/runs.ts';
+import { lostYear } from '#sim-core/measure/recovery.ts';
 import type { RunResult } from '#sim-core/spec/run-result.ts';
 import { frameYears, maximumCells, runSpecSchema, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { RunRow } from '#server/database/entities/run.ts';
@@ -53,6 +54,7 @@ export async function startRun(
       years: spec.years,
       result: null,
       recoveredYear: null,
+      lostYear: null,
       digest: null,
       closingHash: null,
       closingBytes: null,
@@ -119,6 +121,7 @@ export async function finishRun(services: Services, runId: string, result: RunRe
       status: 'finished',
       result: JSON.stringify(result),
       recoveredYear,
+      lostYear: lostYear(result.series, readJson(runSpecSchema, now.spec).target),
       digest,
     });
     return runReply(writer, runId);
