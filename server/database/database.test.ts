@@ -124,6 +124,29 @@ describe('the schema', () => {
     await writer.destroy();
   });
 
+  it('reads off the series of runs that are kept when they lost again what they had recovered', async () => {
+    const writer = await openWriter(file);
+    await writer.undoLastMigration();
+    await writer.query('PRAGMA foreign_keys = OFF');
+    const shares = { lost: [0.2, 0.92, 0.3, 0.95, 0.1], kept: [0.2, 0.92, 0.95, 0.95, 0.95] };
+    for (const [id, series] of Object.entries(shares)) {
+      const rows = series.map((recoveredShare, i) => ({ time: 2024 + i, recoveredShare }));
+      await writer.query(
+        `INSERT INTO "run" ("id", "siteId", "optionName", "name", "status", "spec", "grid", "crsName", "seed", "mode",
+          "surveyYear", "years", "result", "recoveredYear", "startedAt", "startedBy")
+         VALUES (?, 's', '', '', 'finished', '{"target":0.9}', '{}', '', '', 'counts', 2024, 4, ?, 2025, '', '')`,
+        [id, JSON.stringify({ series: rows })],
+      );
+    }
+    await writer.runMigrations();
+    const found = await writer.query<unknown>(`SELECT "id", "lostYear" FROM "run" ORDER BY "id"`);
+    await writer.destroy();
+    expect(found).toEqual([
+      { id: 'kept', lostYear: null },
+      { id: 'lost', lostYear: 2026 },
+    ]);
+  });
+
   it('keeps WAL, foreign keys and durable commits', async () => {
     const writer = await openWriter(file);
     const pragma = async (name: string) =>

@@ -60,6 +60,18 @@ describe('a run', () => {
     expect(decodeCellValues(closing.body as Buffer).values).toEqual(computed.closing);
   });
 
+  it('says in the list, too, when it lost again what it had recovered', async () => {
+    const { manager, trainer } = team.agents;
+    // The first year brings it to the target; a drought past every tolerance takes it in the second.
+    const spec = specFor(site, { droughtIndex: [0, -12, 0, 0], target: 0.6, mode: 'mean-field' });
+    const computed = await computeRun(site, spec);
+    const { id } = await openRun(manager, site, spec, 'Lost again');
+    const finished = (await sendRun(manager, id, computed)).body as Run;
+    expect(finished).toMatchObject({ recoveredYear: 2025, lostYear: 2026 });
+    const { runs } = (await trainer.get(`/api/sites/${site.id}/runs`).expect(200)).body as { runs: Run[] };
+    expect(runs.find((run) => run.id === id)).toMatchObject({ recoveredYear: 2025, lostYear: 2026 });
+  });
+
   it('stands in the list, newest first, page by page', async () => {
     const { manager, trainer } = team.agents;
     const own = await makeSite(team.agents.modeller, team.teamId);
