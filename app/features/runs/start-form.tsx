@@ -125,7 +125,7 @@ export function StartForm(props: {
       {sharesLuck && (
         <p className="mt-1 text-note text-ink-2">
           {waitRun.mode === mode
-            ? `The seed is that of “${waitRun.name}”, so both share their luck: what differs is what the works did.`
+            ? `The seed is that of “${waitRun.name}”, so both share their luck: under the same outlook, what differs is what the works did.`
             : `The seed is that of “${waitRun.name}”, but that run was without chance, so they do not share their luck.`}
         </p>
       )}

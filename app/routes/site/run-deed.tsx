@@ -31,7 +31,8 @@ export function RunDeed({
   const status = useQuery({ ...runQuery(run.id), enabled: deed === 'stop', refetchInterval: 4000 }).data
     ?.status;
   // A run that ended while the question stood cannot be stopped any more. The answer's own end closes it by `done`.
-  const moot = status !== undefined && status !== 'running' && deed === 'stop' && stop.isIdle;
+  const moot =
+    status !== undefined && status !== 'running' && deed === 'stop' && !stop.isPending && !stop.isSuccess;
   useEffect(() => {
     if (moot) onClose();
   }, [moot, onClose]);
