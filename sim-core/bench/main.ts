@@ -14,6 +14,10 @@ interface Line {
   readonly map: string;
   readonly size: number;
   readonly against: string;
+  /** cells stepped in our fastest round */
+  readonly work: number;
+  /** processor time of that round */
+  readonly seconds: number;
   /** cells a second; of memory, bytes a cell */
   readonly rate: number;
   /** null where there is nothing to hold it against, and `reason` says why */
@@ -106,7 +110,8 @@ for (const size of sizes)
         if (again.seconds < ours.seconds) ours = again;
       }
       costs.set(`${mode} ${map} ${size}`, ours.seconds / work);
-      const line = { name: 'kernel', mode, map, size, rate: work / ours.seconds } as const;
+      const { seconds } = ours;
+      const line = { name: 'kernel', mode, map, size, work, seconds, rate: work / seconds } as const;
       for (const [against, yardstick] of yardsticks) {
         const timed = theirs.get(against);
         if (timed) print({ ...line, against, ratio: timed.seconds / ours.seconds });
