@@ -5,7 +5,8 @@ import { join, resolve } from 'node:path';
 import { defineConfig } from '@playwright/test';
 
 const root = resolve(import.meta.dirname, '..');
-const port = Number(process.env.E2E_PORT ?? 4199);
+// A port of this run's own, so that a server left by another run is not in the way; workers inherit it.
+const port = Number((process.env.E2E_PORT ??= String(20_000 + (process.pid % 10_000))));
 const chromium =
   process.env.CHROMIUM_PATH ??
   spawnSync('sh', ['-c', 'command -v chromium || command -v chromium-browser'], {
