@@ -10,8 +10,8 @@ const compactBelow = 620;
 /** How far a press must move before it counts as drawing: a plain press only selects. */
 const drawingFrom = 4;
 
-/** The drought record as a drawing: bars are dragged by pointer or finger, or moved by the arrow keys. */
-export function DroughtChart(props: {
+/** What drawing and table of the drought record are told, and tell. */
+export interface DroughtRecordProps {
   series: readonly YearIndex[];
   tolerances: Tolerances;
   /** year that is read */
@@ -19,7 +19,10 @@ export function DroughtChart(props: {
   onYear: (year: number) => void;
   /** left out for those who may only read */
   onChange?: (year: number, index: number) => void;
-}) {
+}
+
+/** The drought record as a drawing: bars are dragged by pointer or finger, or moved by the arrow keys. */
+export function DroughtChart(props: DroughtRecordProps) {
   const { series, tolerances, year, onYear, onChange } = props;
   const box = useRef<HTMLDivElement>(null);
   const room = useBoxSize(box);

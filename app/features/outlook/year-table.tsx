@@ -1,17 +1,11 @@
+import type { DroughtRecordProps } from './drought-chart.tsx';
 import { useState } from 'react';
 import { classNames } from '#app/lib/class-names.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
-import type { Tolerances, YearIndex } from './outlook-words.ts';
 import { palmerClass } from './palmer-classes.ts';
 
 /** The drought record as a table, in which single years are typed. */
-export function YearTable(props: {
-  series: readonly YearIndex[];
-  tolerances: Tolerances;
-  year: number;
-  onYear: (year: number) => void;
-  onChange?: (year: number, index: number) => void;
-}) {
+export function YearTable(props: DroughtRecordProps) {
   const { series, tolerances, year, onYear, onChange } = props;
   return (
     <table className="w-full border-collapse text-[13px]">
