@@ -28,7 +28,8 @@ function carryOut(actions: Action[], mode: 'mean-field' | 'counts', year = 2021,
   const kernel = createReferenceKernel(setup);
   const works = prepareWorks(actions, grid);
   const { capacity, sites } = setup;
-  const lost = works.apply(year, 0, { kernel, capacity, sites, luck: { k0: 3, k1: 4 }, replicate });
+  const luck = { k0: 3, k1: 4 };
+  const lost = works.apply(year, 0, { kernel, capacity, sites, clumpsOnFullCell: 16, luck, replicate });
   return { kernel, lost, works };
 }
 

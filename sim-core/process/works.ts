@@ -1,16 +1,17 @@
 import type { Grid } from '#sim-core/grid/grid.ts';
-import { coverOfClumps, type Kernel } from '#sim-core/kernel/kernel.ts';
 import { binomialQuantile } from '#sim-core/random/binomial.ts';
 import { cellLuck, processes } from '#sim-core/random/cell-luck.ts';
-import type { PhiloxKey } from '#sim-core/random/streams.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
-import type { Action } from '#sim-core/spec/run-spec.ts';
+import type { Action, Clumps, Mound } from '#sim-core/spec/run-spec.ts';
 import { areaCells, type AreaCells } from './area-cells.ts';
 import { moundStrengths, type MoundStrengths } from './mound-strengths.ts';
+import { plantedClumps, setPlantedClumps, type PlantedClumps } from './planted-clumps.ts';
+import { setClumps, type WorksMap } from './works-map.ts';
 
 /** The works and losses of one year, rasterised. */
 interface YearWorks {
   readonly plantings: (AreaCells & { readonly cover: number })[];
+  readonly clumps: PlantedClumps[];
   readonly mounds: MoundStrengths[];
   readonly losses: (AreaCells & { readonly loss: number })[];
 }
@@ -23,7 +24,7 @@ export interface Works {
   /** what cannot be carried out, at its action */
   readonly problems: readonly FieldProblem[];
   /**
-   * Carries out what is dated `year`: plantings, then mounds, then losses.
+   * Carries out what is dated `year`: plantings, then clumps, mounds, and losses.
    *
    * @param index first step of the year: part of the counter of every draw
    * @returns ΣC that the losses removed, in cells
@@ -31,21 +32,22 @@ export interface Works {
   apply(year: number, index: number, map: WorksMap): number;
 }
 
-/** What works change, and the luck with which they do where clumps are counted. */
-export interface WorksMap {
-  readonly kernel: Kernel;
-  readonly capacity: Uint8Array;
-  readonly sites: Uint32Array;
-  readonly luck: PhiloxKey;
-  readonly replicate: number;
-}
-
-export function prepareWorks(actions: readonly Action[], grid: Grid): Works {
+/**
+ * @param capacity K of each cell, where it is known: clumps on ground that cannot hold the plant are then among the
+ *   problems
+ */
+export function prepareWorks(actions: readonly Action[], grid: Grid, capacity?: Uint8Array): Works {
   const years = new Map<number, YearWorks>();
   const problems: FieldProblem[] = [];
   actions.forEach((action, i) => {
-    const works = years.get(action.year) ?? { plantings: [], mounds: [], losses: [] };
+    const works = years.get(action.year) ?? { plantings: [], clumps: [], mounds: [], losses: [] };
     years.set(action.year, works);
+    if (action.kind === 'clumps') {
+      const planted = plantedClumps(action, grid, capacity);
+      works.clumps.push(planted);
+      problems.push(...pointProblems(planted, i));
+      return;
+    }
     const { cells } = action.kind === 'mound' ? addMound(action, works) : addArea(action, works);
     if (cells.length === 0)
       problems.push({
@@ -56,12 +58,12 @@ export function prepareWorks(actions: readonly Action[], grid: Grid): Works {
       });
   });
 
-  function addMound(action: Extract<Action, { kind: 'mound' }>, works: YearWorks) {
+  function addMound(action: Mound, works: YearWorks) {
     const mound = moundStrengths(action, grid);
     works.mounds.push(mound);
     return mound;
   }
-  function addArea(action: Exclude<Action, { kind: 'mound' }>, works: YearWorks) {
+  function addArea(action: Exclude<Action, Mound | Clumps>, works: YearWorks) {
     const area = areaCells(action.area, grid);
     if (action.kind === 'planting') works.plantings.push({ ...area, cover: action.cover });
     if (action.kind === 'loss') works.losses.push({ ...area, loss: action.share });
@@ -75,6 +77,7 @@ export function prepareWorks(actions: readonly Action[], grid: Grid): Works {
       if (!works) return 0;
       const { refuge } = map.kernel;
       for (const planting of works.plantings) plant(planting, index, map);
+      for (const clumps of works.clumps) setPlantedClumps(clumps, grid, map);
       for (const { cells, strengths } of works.mounds)
         cells.forEach((cell, j) => {
           if (strengths[j] > refuge[cell]) refuge[cell] = strengths[j];
@@ -138,8 +141,23 @@ export function wholeClumps(
   return Math.min(sites[k], Math.abs(clumps - nearest) < 1e-4 ? nearest : Math.floor(clumps + u));
 }
 
-function setClumps({ kernel, capacity, sites }: WorksMap, cell: number, clumps: number): void {
-  if (!kernel.clumps) return;
-  kernel.clumps[cell] = clumps;
-  kernel.cover[cell] = coverOfClumps(capacity[cell], clumps, sites[capacity[cell]]);
+/** Points that can take no clump, each kind at the first of them. */
+function pointProblems({ offGrid, cannotGrow }: PlantedClumps, action: number): FieldProblem[] {
+  const say = (points: number[], where: string): FieldProblem[] =>
+    points.length === 0
+      ? []
+      : [
+          {
+            field: `actions.${action}.points.${points[0]}`,
+            message: `${
+              points.length === 1
+                ? `Point ${points[0] + 1} of these clumps lies`
+                : `${points.length} points of these clumps, the first of them point ${points[0] + 1}, lie`
+            } ${where}`,
+          },
+        ];
+  return [
+    ...say(offGrid, 'off the grid: move or remove what lies off the site'),
+    ...say(cannotGrow, 'where the plant cannot grow (capacity 0): move or remove what lies there'),
+  ];
 }

@@ -216,6 +216,10 @@ describe('a run that cannot be is refused at its fields', () => {
   test('works off the site', () => {
     const off = spec({ actions: [{ kind: 'mound', year: 2022, x: 0, y: 0, radius: 1 }] });
     expect(problems({ spec: off })[0]).toMatchObject({ field: 'actions.0' });
+    const inChannel = spec({
+      actions: [{ kind: 'clumps', year: 2022, points: [[grid.originX + 11.5, grid.originY - 2]] }],
+    });
+    expect(problems({ spec: inChannel })[0]).toMatchObject({ field: 'actions.0.points.0' });
   });
   test('a layer of another size, or ground that holds nothing', () => {
     const bare = new Uint8Array(width * height);

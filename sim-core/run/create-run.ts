@@ -67,7 +67,7 @@ export function createRun(
   const { width, height, cellSize } = grid;
   const { capacity, vigour, exposure, refuge } = ground;
   const { seed, replicate, mode, boundary, rates, surveyYear, stepsPerYear } = spec;
-  const works = prepareWorks(spec.actions, grid);
+  const works = prepareWorks(spec.actions, grid, capacity);
   if (works.problems.length > 0) throw new RunProblem(works.problems);
   const fitted = fitKernel(rates, cellSize, stepsPerYear);
   const step = stepRates(rates, stepsPerYear);
@@ -91,9 +91,16 @@ export function createRun(
     luck: philoxKey(seed, `shoots/${replicate}`),
     replicate,
   });
-  const worksMap = { kernel, capacity, sites, luck: philoxKey(seed, `events/${replicate}`), replicate };
-
   const cellArea = cellSize * cellSize;
+  const worksMap = {
+    kernel,
+    capacity,
+    sites,
+    clumpsOnFullCell: rates.clumpsPerSquareMetre * cellArea,
+    luck: philoxKey(seed, `events/${replicate}`),
+    replicate,
+  };
+
   const references = referenceShares(step);
   const reference = referenceSum(capacity, vigour, references);
   const closing = closingYears(capacity, vigour, references);

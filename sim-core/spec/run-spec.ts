@@ -73,6 +73,16 @@ export const actionSchema = z.discriminatedUnion('kind', [
   }),
   /** raises cover to `cover`, never above capacity */
   z.strictObject({ kind: z.literal('planting'), year, area: areaSchema, cover: share }),
+  /** sets `each` clumps at every point; what finds no free site there goes to the nearest cells that have some */
+  z.strictObject({
+    kind: z.literal('clumps'),
+    year,
+    points: z
+      .array(z.tuple([coordinate, coordinate]))
+      .min(1)
+      .max(20_000),
+    each: z.number().int().min(1).max(100_000).default(1),
+  }),
   /** raises F to `strength` from `year` to the end of `until` */
   z.strictObject({
     kind: z.literal('fence'),
@@ -86,6 +96,7 @@ export const actionSchema = z.discriminatedUnion('kind', [
 ]);
 export type Action = z.infer<typeof actionSchema>;
 export type Mound = Extract<Action, { kind: 'mound' }>;
+export type Clumps = Extract<Action, { kind: 'clumps' }>;
 
 const rateSchema = (name: RateName) => {
   const { min, max, unit, label } = parameters[name];

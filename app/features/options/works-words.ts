@@ -1,21 +1,27 @@
-import type { Action, Area, Mound } from '#sim-core/spec/run-spec.ts';
+import type { Action, Area, Clumps, Mound } from '#sim-core/spec/run-spec.ts';
 import { formatCounted, formatLength, formatShare } from '#app/lib/formats.ts';
 
 const kinds: Record<Action['kind'], [one: string, many: string]> = {
   mound: ['mound', 'mounds'],
   planting: ['planting', 'plantings'],
+  clumps: ['clump', 'clumps'],
   fence: ['fence', 'fences'],
   loss: ['one-off loss', 'one-off losses'],
 };
+
+/** What one of the works counts for: clumps one by one, all others as one. */
+const countIn = (work: Action): number => (work.kind === 'clumps' ? clumpsIn(work) : 1);
+const clumpsIn = ({ points, each }: Clumps): number => points.length * each;
 
 /** `22 mounds in 2027`, one entry for each kind and year, in order of years. */
 export function worksByYear(
   works: readonly Action[],
 ): { year: number; kind: Action['kind']; count: number }[] {
   const groups = new Map<string, { year: number; kind: Action['kind']; count: number }>();
-  for (const { kind, year } of works) {
+  for (const work of works) {
+    const { kind, year } = work;
     const group = groups.get(`${year}/${kind}`) ?? { year, kind, count: 0 };
-    groups.set(`${year}/${kind}`, { ...group, count: group.count + 1 });
+    groups.set(`${year}/${kind}`, { ...group, count: group.count + countIn(work) });
   }
   return [...groups.values()].sort((a, b) => a.year - b.year || a.kind.localeCompare(b.kind));
 }
@@ -31,7 +37,8 @@ export function worksInWords(works: readonly Action[]): string {
       const years = [...new Set(mine.map((work) => work.year))].sort((a, b) => a - b);
       const when =
         years.length <= 2 ? `in ${years.join(' and ')}` : `from ${years[0]} to ${years[years.length - 1]}`;
-      return `${countOf(kind, mine.length)} ${when}`;
+      const count = mine.reduce((sum, work) => sum + countIn(work), 0);
+      return `${countOf(kind, count)} ${when}`;
     })
     .join('; ');
 }
@@ -48,6 +55,8 @@ export function moundInWords({ radius, strength, halo }: Mound): string {
 
 /** What one of the works is, where it is no mound. */
 export function workInWords(action: Exclude<Action, Mound>): string {
+  if (action.kind === 'clumps')
+    return `${countOf('clumps', clumpsIn(action))} at ${formatCounted(action.points.length, 'point')}`;
   const size = areaInWords(action.area);
   switch (action.kind) {
     case 'planting':
@@ -62,12 +71,15 @@ export function workInWords(action: Exclude<Action, Mound>): string {
 const areaInWords = (area: Area): string =>
   area.shape === 'disc' ? `${formatLength(2 * area.radius)} across` : `outline of ${area.ring.length} points`;
 
-/** Where one of the works stands: its centre, or the middle of its outline, m. */
+/** Where one of the works stands: its centre, or the middle of its outline or points, m. */
 export function placeOf(action: Action): { x: number; y: number } {
   if (action.kind === 'mound') return action;
-  if (action.area.shape === 'disc') return action.area;
-  const { ring } = action.area;
-  const mean = (of: 0 | 1) => ring.reduce((sum, point) => sum + point[of], 0) / ring.length;
+  if (action.kind === 'clumps') return middleOf(action.points);
+  return action.area.shape === 'disc' ? action.area : middleOf(action.area.ring);
+}
+
+function middleOf(points: readonly [number, number][]): { x: number; y: number } {
+  const mean = (of: 0 | 1) => points.reduce((sum, point) => sum + point[of], 0) / points.length;
   return { x: mean(0), y: mean(1) };
 }
 
