@@ -64,7 +64,7 @@ const folderRules = [
     top: 'rasters',
     pattern: only(
       ['#sim-core/grid', '#rasters', 'geotiff', 'proj4', 'fflate'],
-      'rasters imports sim-core/grid, geotiff, proj4 and fflate.',
+      'rasters imports sim-core/grid, geotiff, proj4 and fflate; only geo/epsg-register.ts reads epsg-index.',
     ),
   },
   {

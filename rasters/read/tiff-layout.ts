@@ -24,6 +24,7 @@ export const compressions = {
   zstd: 50000,
 } as const;
 export type Compression = (typeof compressions)[keyof typeof compressions];
+export type CompressionName = keyof typeof compressions;
 export type LercPacking = typeof compressions.none | typeof compressions.deflate | typeof compressions.zstd;
 
 /** How the cells of a one-band TIFF are kept, all of it checked against the limits and the length of the file. */
