@@ -1,13 +1,13 @@
 import { mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { pathToFileURL } from 'node:url';
 import { afterEach, beforeEach, expect, it } from 'vitest';
 import { decodeCellValues } from '#rasters/cells/cell-values.ts';
 import { encodeGeoTiff } from '#rasters/write/geotiff.ts';
 import { ProblemError } from '#server/middleware/problem-error.ts';
 import { cover, smallGrid } from '#server/testing/sites.ts';
 import { createRasterPool, type RasterPool } from './raster-pool.ts';
+import { workerFile } from './worker-file.ts';
 
 let folder: string;
 let pool: RasterPool;
@@ -85,9 +85,9 @@ it('destroys a worker that takes longer than the size of the raster explains, le
 
 /** A pool whose worker is other code than ours. */
 async function poolOf(code: string, longestMs = 60_000): Promise<RasterPool> {
-  const workerFile = join(folder, 'worker.mjs');
-  await writeFile(workerFile, code);
-  return createRasterPool({ workerFile: pathToFileURL(workerFile), longestMs: () => longestMs });
+  const filename = join(folder, 'worker.mjs');
+  await writeFile(filename, code);
+  return createRasterPool({ worker: { filename, execArgv: [] }, longestMs: () => longestMs });
 }
 
 it('destroys a worker that loops for ever, each time', async () => {
@@ -102,7 +102,9 @@ it('rejects the task of a worker that cannot be loaded, and lives on', async () 
 });
 
 it('rejects the task of a worker that cannot start, and lives on', async () => {
-  pool = createRasterPool({ workerOptions: ['--import', 'no-such-loader'] });
+  pool = createRasterPool({
+    worker: { ...workerFile('raster-worker'), execArgv: ['--import', 'no-such-loader'] },
+  });
   for (let i = 0; i < 2; i++) await expect(pool.run(task('values'))).rejects.toThrow('no-such-loader');
 });
 

@@ -1,9 +1,8 @@
-import { createRequire } from 'node:module';
-import { fileURLToPath, pathToFileURL } from 'node:url';
 import { Piscina } from 'piscina';
 import { ProblemError } from '../middleware/problem-error.ts';
 import type { Refusal, RasterTask, TaskResults } from './raster-tasks.ts';
 import { taskCells } from './task-cells.ts';
+import { workerFile, type WorkerFile } from './worker-file.ts';
 
 /** Heavy work on rasters, off the thread that answers requests. */
 export interface RasterPool {
@@ -20,30 +19,20 @@ export interface RasterPoolSettings {
   queue: number;
   /** milliseconds that a task of so many cells may take once it has begun; then its worker is destroyed */
   longestMs: (cells: number) => number;
-  workerFile: URL;
-  /** options of Node for the worker */
-  workerOptions: string[];
+  worker: WorkerFile;
 }
-
-/** Built, the worker is an entry of its own beside the bundle; from the sources it is read through tsx. */
-const fromSources = import.meta.url.endsWith('.ts');
-
-/** tsx as a URL, since a bare name would be looked for from the current folder. */
-const loader = () => pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href;
 
 const defaults: RasterPoolSettings = {
   queue: 24,
   // Ten million cells take one or two seconds, and a worker as long to start, on a machine that does nothing else.
   longestMs: (cells) => 30_000 + 30_000 * (cells / 1e7),
-  workerFile: new URL(fromSources ? './raster-worker.ts' : './raster-worker.js', import.meta.url),
-  workerOptions: fromSources ? ['--import', loader()] : [],
+  worker: workerFile('raster-worker'),
 };
 
 export function createRasterPool(settings: Partial<RasterPoolSettings> = {}): RasterPool {
-  const { queue, longestMs, workerFile, workerOptions } = { ...defaults, ...settings };
+  const { queue, longestMs, worker } = { ...defaults, ...settings };
   const pool = new Piscina({
-    filename: fileURLToPath(workerFile),
-    execArgv: workerOptions,
+    ...worker,
     // A package that geotiff.js loads reads it, and fails in a worker that has none.
     workerData: {},
     minThreads: 0,
