@@ -1,5 +1,7 @@
 import { Readable } from 'node:stream';
-import { valueUnitScale, type Layer, type Option, type Site } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import { runActions } from '#contract/works.ts';
+import { valueUnitScale, type Layer, type Site } from '#contract/sites.ts';
 import { decodeCellValues, encodeCellValues } from '#rasters/cells/cell-values.ts';
 import type { CellValues } from '#sim-core/grid/ground.ts';
 import { buildGround, createRun } from '#sim-core/index.ts';
@@ -34,7 +36,7 @@ function specOf(site: Site, option: Option, seed: string): RunSpec {
     boundary,
     droughtIndex,
     rates: site.plant.rates,
-    actions: option.works,
+    actions: runActions(option.works),
     layers: {
       capacity: classed('capacity'),
       vigour: classed('vigour'),

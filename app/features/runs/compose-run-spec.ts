@@ -1,4 +1,5 @@
-import type { Layer, LayerPart, Option, Site } from '#contract/sites.ts';
+import { runActions, type WorkInput } from '#contract/works.ts';
+import type { Layer, LayerPart, Site } from '#contract/sites.ts';
 import { valueUnitScale } from '#contract/sites.ts';
 import { fitKernel, RunProblem } from '#sim-core/index.ts';
 import { prepareWorks } from '#sim-core/process/works.ts';
@@ -33,7 +34,7 @@ export const layerOf = (site: Site, part: LayerPart): Layer | undefined =>
  */
 export function composeRunSpec(
   site: Site,
-  option: Pick<Option, 'works'>,
+  option: { readonly works: readonly WorkInput[] },
   { mode, seed }: RunChoices,
 ): Composition {
   const missing = missingGround(site);
@@ -49,7 +50,7 @@ export function composeRunSpec(
     boundary,
     rates: site.plant.rates,
     droughtIndex,
-    actions: option.works,
+    actions: runActions(option.works),
     layers: layerSources(site),
   });
   if (!parsed.success) return { problems: fieldProblems(parsed.error).map(placed) };

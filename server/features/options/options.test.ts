@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import type { Option, Site } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import type { Site } from '#contract/sites.ts';
 import { makeTeam, type TestTeam } from '#server/testing/people.ts';
 import { makeSite } from '#server/testing/sites.ts';
 import { testServer, type TestServer } from '#server/testing/test-server.ts';
@@ -41,7 +42,7 @@ describe('options', () => {
     const { id } = await make('Contested');
     const moved = [{ ...mound, x: 412_205 }];
     const first = await modeller
-      .put(`${path}/${id}`)
+      .patch(`${path}/${id}`)
       .send({ name: 'Mine', works: moved, revision: 1 })
       .expect(200);
     expect(first.body).toMatchObject({
@@ -51,7 +52,7 @@ describe('options', () => {
       changedBy: 'Option team: modeller',
     });
     const second = await manager
-      .put(`${path}/${id}`)
+      .patch(`${path}/${id}`)
       .send({ name: 'No, mine', works: [], revision: 1 })
       .expect(409);
     expect(second.body.code).toBe('conflict');
@@ -65,7 +66,7 @@ describe('options', () => {
     const { id } = await make('Raced');
     const replies = await Promise.all(
       [manager, modeller].map((agent, i) =>
-        agent.put(`${path}/${id}`).send({ name: `Version ${i}`, works: [], revision: 1 }),
+        agent.patch(`${path}/${id}`).send({ name: `Version ${i}`, works: [], revision: 1 }),
       ),
     );
     expect(replies.map((reply) => reply.status).sort()).toEqual([200, 409]);
@@ -78,7 +79,7 @@ describe('options', () => {
     await manager.delete(`${path}/${id}`).expect(404);
     const [wait] = (await manager.get(path)).body.options as [Option];
     const change = await manager
-      .put(`${path}/${wait.id}`)
+      .patch(`${path}/${wait.id}`)
       .send({ name: 'x', works: [mound], revision: 1 })
       .expect(409);
     expect(change.body.detail).toContain('Wait is what every other option is measured against');
@@ -91,7 +92,7 @@ describe('options', () => {
     const other = await makeSite(modeller, team.teamId);
     const { id } = await make('Elsewhere');
     const elsewhere = `/api/sites/${other.id}/options/${id}`;
-    await manager.put(elsewhere).send({ name: 'x', works: [], revision: 1 }).expect(404);
+    await manager.patch(elsewhere).send({ name: 'x', works: [], revision: 1 }).expect(404);
     await manager.delete(elsewhere).expect(404);
   });
 

@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
-import type { Option, Site } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import type { Site } from '#contract/sites.ts';
 import { makeTeam, type TestTeam } from '#server/testing/people.ts';
 import { computeRun, openRun, packed, sendBytes, specFor, type ComputedRun } from '#server/testing/runs.ts';
 import { makeSite, storedFiles } from '#server/testing/sites.ts';
