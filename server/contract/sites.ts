@@ -1,5 +1,6 @@
 import { z } from 'zod';
-import { boundarySchema, ratesSchema, stepsPerYearSchema, maximumYears } from '#sim-core/spec/run-spec.ts';
+import { maximumYears } from '#sim-core/spec/limits.ts';
+import { boundarySchema, ratesSchema, stepsPerYearSchema } from '#sim-core/spec/run-spec.ts';
 import { endpoint, id, instant, sha256, text } from './endpoint.ts';
 
 export const gridSchema = z.object({

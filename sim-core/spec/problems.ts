@@ -11,6 +11,13 @@ export interface FieldProblem {
 export function fieldProblems(error: { readonly issues: readonly z.core.$ZodIssue[] }): FieldProblem[] {
   return error.issues.flatMap((issue) => {
     const field = issue.path.map(String).join('.');
+    if (issue.code === 'invalid_union') {
+      const meant = meantAlternative(issue.errors);
+      if (meant)
+        return fieldProblems({
+          issues: meant.map((inner) => ({ ...inner, path: [...issue.path, ...inner.path] })),
+        });
+    }
     if (issue.code === 'unrecognized_keys')
       return issue.keys.map((key) => ({
         field: field ? `${field}.${key}` : key,
@@ -18,4 +25,12 @@ export function fieldProblems(error: { readonly issues: readonly z.core.$ZodIssu
       }));
     return [{ field, message: issue.message }];
   });
+}
+
+/** Of the ways to write a field, the one that was meant: it was got into, or its kind of value was right. */
+function meantAlternative(alternatives: readonly (readonly z.core.$ZodIssue[])[]) {
+  return (
+    alternatives.find((issues) => issues.some((issue) => issue.path.length > 0)) ??
+    alternatives.find((issues) => issues.length > 0 && issues.every((issue) => issue.code !== 'invalid_type'))
+  );
 }

@@ -1,12 +1,11 @@
 import { z } from 'zod';
+import { weatherProblems } from '#sim-core/weather/weather-problems.ts';
 import { parameters, rateNames, type RateName, type Rates } from './parameters.ts';
+import { maximumYears } from './limits.ts';
+import { weatherSourceSchema } from './weather-source.ts';
 
 /** Version of the RunSpec format; a reader refuses what it does not know. */
 export const runSpecVersion = 1;
-
-/** Longest horizon and largest grid that a run may ask for. */
-export const maximumYears = 500;
-export const maximumCells = 16_777_216 * 4;
 
 const share = z.number().min(0).max(1);
 const year = z.number().int().min(1000).max(9999);
@@ -116,8 +115,6 @@ export type Mode = z.infer<typeof modeSchema>;
 export type Boundary = z.infer<typeof boundarySchema>;
 export type StepsPerYear = z.infer<typeof stepsPerYearSchema>;
 
-const droughtIndexValue = z.number().min(-15).max(15);
-
 /** The fields of a RunSpec, before the checks that look at several fields at once. */
 export const runSpecFields = {
   version: z.literal(runSpecVersion),
@@ -131,8 +128,8 @@ export const runSpecFields = {
   stepsPerYear: stepsPerYearSchema.default(1),
   boundary: boundarySchema.default('mirror'),
   rates: ratesSchema,
-  /** Palmer scale, negative is dry: one value for all steps, one a year, or one a step, from the year after the survey */
-  droughtIndex: z.union([droughtIndexValue, z.array(droughtIndexValue).max(maximumYears * 12)]).default(0),
+  /** a list, or a source from which each replicate draws its own */
+  droughtIndex: weatherSourceSchema.default(0),
   actions: z.array(actionSchema).max(20_000).default([]),
   /** share of the reference cover that counts as recovered */
   target: z.number().gt(0).max(1).default(0.9),
@@ -148,16 +145,8 @@ export const runSpecSchema = z.strictObject(runSpecFields).superRefine((spec, co
   const last = spec.surveyYear + spec.years;
   const say = (path: (string | number)[], message: string) =>
     context.addIssue({ code: 'custom', path, message });
-  if (Array.isArray(spec.droughtIndex)) {
-    const n = spec.droughtIndex.length;
-    const steps = spec.years * spec.stepsPerYear;
-    if (n !== spec.years && n !== steps)
-      say(
-        ['droughtIndex'],
-        `Found ${n} values; expected one for each of ${spec.years} years` +
-          (steps === spec.years ? '' : ` or one for each of ${steps} steps`),
-      );
-  }
+  for (const { field, message } of weatherProblems(spec.droughtIndex, spec))
+    say(['droughtIndex', ...field.split('.').filter(Boolean)], message);
   spec.actions.forEach((action, i) => {
     if (action.year < first || action.year > last)
       say(
@@ -175,18 +164,6 @@ export const runSpecSchema = z.strictObject(runSpecFields).superRefine((spec, co
 export type RunSpec = z.infer<typeof runSpecSchema>;
 /** What may be left out when a RunSpec is written by hand. */
 export type RunSpecInput = z.input<typeof runSpecSchema>;
-
-/** Drought index of every step, Float64, years × stepsPerYear. */
-export function droughtIndexBySteps(
-  spec: Pick<RunSpec, 'droughtIndex' | 'years' | 'stepsPerYear'>,
-): Float64Array {
-  const steps = spec.years * spec.stepsPerYear;
-  const given = spec.droughtIndex;
-  if (typeof given === 'number') return new Float64Array(steps).fill(given);
-  return Float64Array.from({ length: steps }, (_, s) =>
-    given.length === steps ? given[s] : given[Math.floor(s / spec.stepsPerYear)],
-  );
-}
 
 /** Years that have a frame, ascending: those asked for, or every year from the survey on. */
 export function frameYears(spec: Pick<RunSpec, 'surveyYear' | 'years' | 'reportYears'>): number[] {

@@ -1,7 +1,7 @@
 import { queryOptions } from '@tanstack/react-query';
 import { getLayerValues } from '#contract/sites.ts';
 import type { ShareMapping } from '#sim-core/grid/ground.ts';
-import { maximumCells } from '#sim-core/spec/run-spec.ts';
+import { maximumCells } from '#sim-core/spec/limits.ts';
 import { fetchBlob } from '#app/lib/api-client.ts';
 import { cells } from '#app/workers/cells-client.ts';
 
