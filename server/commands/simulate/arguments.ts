@@ -5,9 +5,18 @@ import { SimulateError } from './simulate-error.ts';
 export type Task =
   | { readonly kind: 'help' }
   | { readonly kind: 'example' }
-  | { readonly kind: 'run'; readonly spec: string; readonly out: string; readonly force: boolean };
+  | {
+      readonly kind: 'run';
+      readonly spec: string;
+      readonly out: string;
+      readonly force: boolean;
+      /** runs at once; undefined: as many as there are cores */
+      readonly workers: number | undefined;
+    };
 
-export const help = `npm run simulate -- SPEC.json --out DIR [--force]
+const mostWorkers = 256;
+
+export const help = `npm run simulate -- SPEC.json --out DIR [--force] [--workers N]
 npm run simulate -- --example > spec.json
 
 Runs one simulation, or an ensemble where the spec says "replicates": N, on GeoTIFFs.
@@ -15,6 +24,7 @@ Runs one simulation, or an ensemble where the spec says "replicates": N, on GeoT
   SPEC.json   what to run; its layers name GeoTIFFs relative to it, or are constants
   --out DIR   where the results go: cover-<year>.tif, closing.tif, series.csv, summary.json
   --force     replace the results of an earlier run in DIR
+  --workers N how many replicates to run at once, as many as there are cores unless said; the results are the same
   --example   print a complete spec that runs as it stands, on invented demo rasters
   --help      print this
 `;
@@ -37,7 +47,16 @@ export function parseTask(argv: readonly string[], folder: string): Task {
     spec: resolve(folder, positionals[0]),
     out: resolve(folder, values.out),
     force: values.force ?? false,
+    workers: workersOf(values.workers),
   };
+}
+
+function workersOf(said: string | undefined): number | undefined {
+  if (said === undefined) return undefined;
+  const workers = Number(said);
+  if (!/^\d+$/.test(said) || workers < 1 || workers > mostWorkers)
+    throw new SimulateError(`Found --workers ${said}; expected a whole number from 1 to ${mostWorkers}.`);
+  return workers;
 }
 
 function understood(argv: readonly string[]) {
@@ -48,6 +67,7 @@ function understood(argv: readonly string[]) {
       options: {
         out: { type: 'string' },
         force: { type: 'boolean' },
+        workers: { type: 'string' },
         example: { type: 'boolean' },
         help: { type: 'boolean', short: 'h' },
       },

@@ -2,7 +2,7 @@ import { join } from 'node:path';
 import { help, parseTask } from './arguments.ts';
 import { exampleSpec } from './example.ts';
 import { showProgress, type ProgressTarget } from './progress.ts';
-import { openResultFolder, type ResultFolder } from './result-folder.ts';
+import { openResultFolder, refuseOccupied, type ResultFolder } from './result-folder.ts';
 import { runSpecFile } from './run-spec-file.ts';
 import { SimulateError } from './simulate-error.ts';
 
@@ -39,7 +39,8 @@ export async function simulate(argv: readonly string[], context: CommandContext)
       onPartial?.(results);
       return results;
     };
-    await runSpecFile(task.spec, open, showProgress(progress));
+    await refuseOccupied(task.out, task.force);
+    await runSpecFile(task.spec, { open, tell: showProgress(progress), workers: task.workers });
     progress.write(`The results are in ${task.out}\n`);
     return 0;
   } catch (error) {

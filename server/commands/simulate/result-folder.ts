@@ -37,7 +37,8 @@ export async function openResultFolder(out: string, force: boolean): Promise<Res
   };
 }
 
-async function refuseOccupied(out: string, force: boolean): Promise<void> {
+/** @throws SimulateError where `out` is a file, or holds anything and `force` was not said */
+export async function refuseOccupied(out: string, force: boolean): Promise<void> {
   const found = await stat(out).catch(() => undefined);
   if (!found) return;
   if (!found.isDirectory()) throw new SimulateError(`${out} is a file; --out must name a folder.`);

@@ -1,10 +1,13 @@
+import { spawn } from 'node:child_process';
 import { createHash } from 'node:crypto';
+import { once } from 'node:events';
 import { mkdir, mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterEach, beforeEach, describe, expect, test } from 'vitest';
+import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
 import { readRaster } from '#rasters/read/read-raster.ts';
 import { encodeGeoTiff } from '#rasters/write/geotiff.ts';
+import { projectRoot } from '#server/project.ts';
 import { createRun, type RunResult } from '#sim-core/index.ts';
 import { constantBytes, toBytes } from '#sim-core/grid/ground.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
@@ -147,6 +150,34 @@ describe('a run on files', () => {
     expect(lines.slice(1).map((line) => line.split(',')[0])).toEqual([...'000001111122222']);
   });
 
+  test('results do not hang on how many replicates run at once', async () => {
+    await writeSpec({ ...plain, replicates: 5 });
+    expect(await run('spec.json', '--out', 'one', '--workers', '1')).toBe(0);
+    expect(await run('spec.json', '--out', 'three', '--workers', '3')).toBe(0);
+    const names = await readdir(join(folder, 'one'));
+    expect(names).toHaveLength(5 + 3);
+    for (const name of names)
+      expect(await readFile(join(folder, 'three', name))).toEqual(await readFile(join(folder, 'one', name)));
+    expect(said).toMatch(/20 of 20 steps, 5 of 5 replicates, took/);
+  });
+
+  test('broken off, it leaves nothing half-written', async () => {
+    await writeSpec({ ...plain, years: 500, droughtIndex: 0, replicates: 2000 });
+    const command = spawn(
+      process.execPath,
+      ['--import', 'tsx', join(projectRoot, 'server/commands/simulate.ts'), 'spec.json', '--out', 'out'],
+      { cwd: projectRoot, env: { ...process.env, INIT_CWD: folder }, stdio: 'ignore' },
+    );
+    const ended = once(command, 'exit');
+    const before = ['cover.tif', 'habitat.tif', 'spec.json'];
+    await vi.waitFor(async () => expect(await readdir(folder)).toHaveLength(before.length + 1), {
+      timeout: 30_000,
+    });
+    command.kill('SIGINT');
+    expect(await ended).toEqual([1, null]);
+    expect((await readdir(folder)).sort()).toEqual(before);
+  });
+
   test('--force replaces the results of an earlier run and leaves the rest alone', async () => {
     await writeSpec(plain);
     await run('spec.json', '--out', 'out');
@@ -190,8 +221,8 @@ describe('what cannot be run is refused in words, and nothing is written', () =>
     expect(message).toMatch(/Lateral spread must lie between 0\.005 and 20 m\/yr/);
   });
 
-  test('what the engine refuses, too', async () => {
-    expect(await refused({ ...plain, rates: { lateralSpread: 0.005 } })).toMatch(
+  test.each([{}, { replicates: 3 }])('what the engine refuses, too: %o', async (given) => {
+    expect(await refused({ ...plain, ...given, rates: { lateralSpread: 0.005 } })).toMatch(
       /rates\.lateralSpread: A front of/,
     );
   });
@@ -246,6 +277,10 @@ describe('what cannot be run is refused in words, and nothing is written', () =>
     expect(await refused(plain, 'spec.json')).toMatch(/Say with --out DIR/);
     said = '';
     expect(await refused(plain, '--out', 'out')).toMatch(/Found no spec; expected one/);
+    said = '';
+    expect(await refused(plain, 'spec.json', '--out', 'out', '--workers', '0')).toMatch(
+      /Found --workers 0; expected a whole number from 1/,
+    );
     said = '';
     expect(await refused(plain, 'spec.json', '--to', 'out')).toMatch(/Unknown option '--to'/);
     await mkdir(join(folder, 'full'));
