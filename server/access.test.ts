@@ -1,6 +1,8 @@
 import { rmSync } from 'node:fs';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { fillPath, type Endpoint } from '#contract/endpoint.ts';
+import * as costs from '#contract/costs.ts';
+import * as options from '#contract/options.ts';
 import * as people from '#contract/people.ts';
 import * as runs from '#contract/runs.ts';
 import * as sites from '#contract/sites.ts';
@@ -60,7 +62,14 @@ const expected: Record<string, string> = {
 
   'GET /api/sites/:siteId/options': everyRole,
   'POST /api/sites/:siteId/options': planners,
-  'PUT /api/sites/:siteId/options/:optionId': planners,
+  'PATCH /api/sites/:siteId/options/:optionId': planners,
+  'POST /api/sites/:siteId/options/:optionId/copies': planners,
+  'PUT /api/sites/:siteId/option-order': planners,
+  'GET /api/sites/:siteId/options/:optionId/history': everyRole,
+  'GET /api/sites/:siteId/options/:optionId/history/:revision': everyRole,
+  'POST /api/sites/:siteId/options/:optionId/history/:revision/bring-back': planners,
+  'GET /api/sites/:siteId/costs': everyRole,
+  'PUT /api/sites/:siteId/costs': planners,
   'DELETE /api/sites/:siteId/options/:optionId': planners,
 
   'GET /api/sites/:siteId/runs': everyRole,
@@ -94,7 +103,7 @@ function refusal(rule: string, caller: Caller): number | undefined {
 
 const isEndpoint = (value: unknown): value is Endpoint =>
   typeof value === 'object' && value !== null && 'method' in value && 'path' in value && 'reply' in value;
-const contract = [people, sites, runs]
+const contract = [people, sites, options, costs, runs]
   .flatMap((module) => Object.values<unknown>({ ...module }))
   .filter(isEndpoint);
 const nameOf = ({ method, path }: Endpoint) => `${method} ${path}`;

@@ -3,6 +3,7 @@ import { inviteRoutes } from './features/auth/invite.routes.ts';
 import { passwordResetRoutes } from './features/auth/password-reset.routes.ts';
 import { sessionRoutes } from './features/auth/session.routes.ts';
 import { setupRoutes } from './features/auth/setup.routes.ts';
+import { costsRoutes } from './features/costs/costs.routes.ts';
 import { healthRoutes } from './features/health/health.routes.ts';
 import { teamInviteRoutes } from './features/team/invites.routes.ts';
 import { optionRoutes } from './features/options/option.routes.ts';
@@ -26,5 +27,6 @@ export const allRoutes = (services: Services): Route[] => [
   ...outboxRoutes(services),
   ...siteRoutes(services),
   ...optionRoutes(services),
+  ...costsRoutes(services),
   ...runRoutes(services),
 ];

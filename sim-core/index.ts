@@ -18,9 +18,10 @@ export {
   type ClosingEstimateInput,
   type LocalGrowth,
 } from './theory/closing-estimate.ts';
-export { drawWeather, weatherProblems, type WeatherSource } from './weather/draw-weather.ts';
+export { drawWeather, type WeatherOfRun } from './weather/draw-weather.ts';
+export type { WaitingLaw, WeatherSource } from './spec/weather-source.ts';
 export { palmerClass, palmerClasses, type PalmerClass } from './weather/palmer-classes.ts';
-export { chanceOfLonger, meanWait, type WaitingLaw } from './weather/waiting-law.ts';
+export { chanceOfLonger, meanWait } from './weather/waiting-law.ts';
 export {
   ensembleTally,
   type EnsembleInput,

@@ -1,11 +1,6 @@
 import { z } from 'zod';
-import {
-  actionSchema,
-  boundarySchema,
-  ratesSchema,
-  stepsPerYearSchema,
-  maximumYears,
-} from '#sim-core/spec/run-spec.ts';
+import { maximumYears } from '#sim-core/spec/limits.ts';
+import { boundarySchema, ratesSchema, stepsPerYearSchema } from '#sim-core/spec/run-spec.ts';
 import { endpoint, id, instant, sha256, text } from './endpoint.ts';
 
 export const gridSchema = z.object({
@@ -224,49 +219,4 @@ export const setOutlook = endpoint({
   params: siteParams,
   body: outlookSchema,
   reply: siteSchema,
-});
-
-/** Works on the ground. `Wait` has none and cannot be changed. */
-export const optionSchema = z.object({
-  id,
-  siteId: id,
-  name: z.string(),
-  wait: z.boolean(),
-  works: z.array(actionSchema),
-  /** rises with each change; a change must name the revision that it was made on */
-  revision: z.number().int(),
-  changedAt: instant,
-  changedBy: z.string(),
-});
-export type Option = z.infer<typeof optionSchema>;
-const optionBody = { name: text(100), works: z.array(actionSchema).max(20_000) };
-export const listOptions = endpoint({
-  method: 'GET',
-  path: '/api/sites/:siteId/options',
-  summary: 'The options of a site, Wait first',
-  params: siteParams,
-  reply: z.object({ options: z.array(optionSchema) }),
-});
-export const createOption = endpoint({
-  method: 'POST',
-  path: '/api/sites/:siteId/options',
-  summary: 'Add an option',
-  params: siteParams,
-  body: z.strictObject(optionBody),
-  reply: optionSchema,
-});
-const optionParams = z.object({ siteId: id, optionId: id });
-export const changeOption = endpoint({
-  method: 'PUT',
-  path: '/api/sites/:siteId/options/:optionId',
-  summary: 'Change an option; refused with `conflict` when somebody changed it meanwhile',
-  params: optionParams,
-  body: z.strictObject({ ...optionBody, revision: z.number().int() }),
-  reply: optionSchema,
-});
-export const deleteOption = endpoint({
-  method: 'DELETE',
-  path: '/api/sites/:siteId/options/:optionId',
-  summary: 'Delete an option; its runs stay',
-  params: optionParams,
 });

@@ -3,8 +3,15 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { TeamEntity } from './entities/team.ts';
+import { LostYear1764576000000 } from './migrations/1764576000000-lost-year.ts';
+import { OptionHistory1764580000000 } from './migrations/1764580000000-option-history.ts';
 import { migrations } from './migrations/index.ts';
 import { openDatabase, openWriter, type Database } from './open-database.ts';
+
+/** Takes a migration back, and all that came after it. */
+async function undo(writer: Awaited<ReturnType<typeof openWriter>>, migration: (typeof migrations)[number]) {
+  for (let i = migrations.length; i > migrations.indexOf(migration); i--) await writer.undoLastMigration();
+}
 
 let folder: string;
 let file: string;
@@ -126,7 +133,7 @@ describe('the schema', () => {
 
   it('reads off the series of runs that are kept when they lost again what they had recovered', async () => {
     const writer = await openWriter(file);
-    await writer.undoLastMigration();
+    await undo(writer, LostYear1764576000000);
     await writer.query('PRAGMA foreign_keys = OFF');
     const shares = { lost: [0.2, 0.92, 0.3, 0.95, 0.1], kept: [0.2, 0.92, 0.95, 0.95, 0.95] };
     for (const [id, series] of Object.entries(shares)) {
@@ -144,6 +151,50 @@ describe('the schema', () => {
     expect(found).toEqual([
       { id: 'kept', lostYear: null },
       { id: 'lost', lostYear: 2026 },
+    ]);
+  });
+
+  it('gives the works that are kept ids and the options their order, Wait first', async () => {
+    const writer = await openWriter(file);
+    await undo(writer, OptionHistory1764580000000);
+    await writer.query('PRAGMA foreign_keys = OFF');
+    const options = [
+      [
+        'later',
+        0,
+        '2026-03-01',
+        [
+          { kind: 'loss', share: 0.1 },
+          { kind: 'mound', x: 412_203.123456789 },
+        ],
+      ],
+      ['wait', 1, '2026-02-01', []],
+      ['sooner', 0, '2026-01-01', []],
+    ] as const;
+    for (const [id, wait, createdAt, works] of options)
+      await writer.query(
+        `INSERT INTO "option" ("id", "siteId", "wait", "name", "works", "revision", "createdAt", "changedAt", "changedBy")
+         VALUES (?, 's', ?, '', ?, 1, ?, '', '')`,
+        [id, wait, JSON.stringify(works), createdAt],
+      );
+    await writer.runMigrations();
+    const found = await writer.query<{ id: string; works: string }[]>(
+      `SELECT "id", "works", "place", "note", "archived", "sets" FROM "option" ORDER BY "place"`,
+    );
+    await writer.destroy();
+    const plain = { note: '', archived: 0, sets: '[]' };
+    expect(found.map(({ works, ...row }) => ({ ...row, works: JSON.parse(works) as unknown }))).toEqual([
+      { id: 'wait', place: 0, works: [], ...plain },
+      { id: 'sooner', place: 1, works: [], ...plain },
+      {
+        id: 'later',
+        place: 2,
+        works: [
+          { kind: 'loss', share: 0.1, id: 'w1' },
+          { kind: 'mound', x: 412_203.123456789, id: 'w2' },
+        ],
+        ...plain,
+      },
     ]);
   });
 

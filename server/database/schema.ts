@@ -7,10 +7,12 @@ import { SessionEntity } from './entities/session.ts';
 import { TeamEntity } from './entities/team.ts';
 import { LayerEntity } from './entities/layer.ts';
 import { OptionEntity } from './entities/option.ts';
+import { OptionDrawingEntity, OptionRevisionEntity } from './entities/option-revision.ts';
 import { RunEntity } from './entities/run.ts';
 import { RunFrameEntity } from './entities/run-frame.ts';
 import { RunLayerEntity } from './entities/run-layer.ts';
 import { SiteEntity } from './entities/site.ts';
+import { SiteCostsEntity } from './entities/site-costs.ts';
 
 /** Every table. */
 export const entities = [
@@ -22,8 +24,11 @@ export const entities = [
   OneTimeLinkEntity,
   OutboxMessageEntity,
   SiteEntity,
+  SiteCostsEntity,
   LayerEntity,
   OptionEntity,
+  OptionRevisionEntity,
+  OptionDrawingEntity,
   RunEntity,
   RunFrameEntity,
   RunLayerEntity,

@@ -1,7 +1,8 @@
 import { Readable } from 'node:stream';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Run, RunSummary } from '#contract/runs.ts';
-import type { Option, Site, SiteSummary } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import type { Site, SiteSummary } from '#contract/sites.ts';
 import { addTeam } from '#server/people/people.repository.ts';
 import { createSite } from '#server/features/sites/site.service.ts';
 import { habitat, storedFiles } from '#server/testing/sites.ts';

@@ -1,5 +1,7 @@
 import { Readable } from 'node:stream';
-import type { LayerPart, Option, Site } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import { worksOf } from '#contract/works.ts';
+import type { LayerPart, Site } from '#contract/sites.ts';
 import { demoRasters } from '#rasters/demo/sallow-reach.ts';
 import { createOption, listOptions } from '../features/options/option.service.ts';
 import { addLayer, setLayerClasses } from '../features/sites/layer.service.ts';
@@ -76,7 +78,12 @@ async function makeSite(services: Services, teamId: string): Promise<Site> {
 /** Wait and the demo's own options, in that order. */
 async function makeOptions(services: Services, site: Site): Promise<Option[]> {
   const cover = site.layers.find((layer) => layer.part === 'cover')!;
-  for (const option of demoOptions(await layerValues(services, site.id, cover.hash)))
-    await createOption(services, site.id, option, nameOf('manager'));
+  for (const { name, works } of demoOptions(await layerValues(services, site.id, cover.hash)))
+    await createOption(
+      services,
+      site.id,
+      { name, note: '', works: worksOf(works), sets: [] },
+      nameOf('manager'),
+    );
   return listOptions(services.dataSource.manager, site.id);
 }

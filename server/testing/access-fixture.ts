@@ -1,5 +1,5 @@
 import type { Role } from '#contract/people.ts';
-import type { Option } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
 import { encodeCellValues } from '#rasters/cells/cell-values.ts';
 import { makePerson, makeTeam, testPassword, type TestPerson } from './people.ts';
 import { makeSite } from './sites.ts';
@@ -106,6 +106,7 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     layerId: site.layers[0].id,
     hash: site.layers[0].hash,
     optionId: (options.body as { options: Option[] }).options.find((option) => !option.wait)!.id,
+    revision: 1,
     runId,
     year: surveyYear,
   };

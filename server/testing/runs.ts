@@ -1,4 +1,6 @@
-import type { Option, Site } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import type { Site } from '#contract/sites.ts';
+import type supertest from 'supertest';
 import type { Run } from '#contract/runs.ts';
 import { encodeCellValues } from '#rasters/cells/cell-values.ts';
 import { readRaster } from '#rasters/read/read-raster.ts';
@@ -39,7 +41,7 @@ export async function computeRun(site: Site, spec: RunSpec): Promise<ComputedRun
       [habitat(), cover()].map(async (file, i) => [site.layers[i].hash, await readRaster(file)] as const),
     ),
   );
-  const ground = buildGround(spec.layers, site.grid, (source) =>
+  const ground = buildGround(spec.layers, 24, (source) =>
     rasters.get('layer' in source ? source.layer : '')!,
   );
   const run = createRun({ spec, grid: site.grid, ground });
@@ -71,7 +73,11 @@ export async function openRun(agent: Agent, site: Site, spec: RunSpec, name = 'A
 }
 
 /** Sends everything that a computed run is made of; the reply to `finish` is left to the caller. */
-export async function sendRun(agent: Agent, runId: string, { frames, closing, result }: ComputedRun) {
+export async function sendRun(
+  agent: Agent,
+  runId: string,
+  { frames, closing, result }: ComputedRun,
+): Promise<supertest.Response> {
   for (const [year, frame] of frames)
     await sendBytes(agent, `/api/runs/${runId}/frames/${year}`, packed(frame)).expect(204);
   await sendBytes(agent, `/api/runs/${runId}/closing`, packed(closing)).expect(204);

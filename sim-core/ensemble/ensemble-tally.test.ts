@@ -2,7 +2,6 @@ import { describe, expect, test } from 'vitest';
 import { createRun } from '#sim-core/run/create-run.ts';
 import type { RunResult } from '#sim-core/spec/run-result.ts';
 import { gridOf, groundOf, specOf } from '#sim-core/testing/setups.ts';
-import { drawWeather } from '#sim-core/weather/draw-weather.ts';
 import { ensembleTally } from './ensemble-tally.ts';
 import { quantiles } from './quantile.ts';
 
@@ -26,7 +25,7 @@ function replicates(count: number, stepsPerYear: 1 | 4 = 1): { result: RunResult
       years,
       stepsPerYear,
       rates: { lateralSpread: 1 },
-      droughtIndex: [...drawWeather(source, { seed: 'tally', replicate, surveyYear, years, stepsPerYear })],
+      droughtIndex: source,
     });
     const run = createRun({ spec, grid: gridOf(width, height), ground: groundOf(width * height, { cover }) });
     while (run.nextYear());

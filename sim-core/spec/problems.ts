@@ -7,20 +7,17 @@ export interface FieldProblem {
   readonly message: string;
 }
 
-/**
- * What zod found, as field problems in plain order. Of the kinds that a value may be, one that fits it but for something
- * inside is taken for what was meant, and the problem is named there.
- */
+/** What zod found, as field problems in plain order. */
 export function fieldProblems(error: { readonly issues: readonly z.core.$ZodIssue[] }): FieldProblem[] {
   return error.issues.flatMap((issue) => {
+    const field = issue.path.map(String).join('.');
     if (issue.code === 'invalid_union') {
-      const meant = issue.errors.filter((issues) => issues.every(({ path }) => path.length > 0));
-      if (meant.length === 1)
+      const meant = meantAlternative(issue.errors);
+      if (meant)
         return fieldProblems({
-          issues: meant[0].map((inner) => ({ ...inner, path: [...issue.path, ...inner.path] })),
+          issues: meant.map((inner) => ({ ...inner, path: [...issue.path, ...inner.path] })),
         });
     }
-    const field = issue.path.map(String).join('.');
     if (issue.code === 'unrecognized_keys')
       return issue.keys.map((key) => ({
         field: field ? `${field}.${key}` : key,
@@ -28,4 +25,12 @@ export function fieldProblems(error: { readonly issues: readonly z.core.$ZodIssu
       }));
     return [{ field, message: issue.message }];
   });
+}
+
+/** Of the ways to write a field, the one that was meant: it was got into, or its kind of value was right. */
+function meantAlternative(alternatives: readonly (readonly z.core.$ZodIssue[])[]) {
+  return (
+    alternatives.find((issues) => issues.some((issue) => issue.path.length > 0)) ??
+    alternatives.find((issues) => issues.length > 0 && issues.every((issue) => issue.code !== 'invalid_type'))
+  );
 }

@@ -1,29 +1,62 @@
 import { z } from 'zod';
-import { layerSourcesSchema } from './layer-source.ts';
+import { weatherProblems } from '#sim-core/weather/weather-problems.ts';
 import { parameters, rateNames, type RateName, type Rates } from './parameters.ts';
-import { areaSchema, coordinate, maximumPlaces, moundFields, share } from './places.ts';
-
-// A spec's parts are had from here, wherever they are written.
-export { areaSchema, type Area } from './places.ts';
-export {
-  layerSourceSchema,
-  layerSourcesSchema,
-  mapRasters,
-  rasterSources,
-  type Curve,
-  type LayerSource,
-  type LayerSources,
-  type RasterSource,
-} from './layer-source.ts';
+import { maximumYears } from './limits.ts';
+import { weatherSourceSchema } from './weather-source.ts';
 
 /** Version of the RunSpec format; a reader refuses what it does not know. */
 export const runSpecVersion = 1;
 
-/** Longest horizon and largest grid that a run may ask for. */
-export const maximumYears = 500;
-export const maximumCells = 16_777_216 * 4;
-
+const share = z.number().min(0).max(1);
 const year = z.number().int().min(1000).max(9999);
+const coordinate = z.number();
+const metres = z.number().positive();
+
+/** Where one layer of the ground comes from: one share for all cells, or a raster with how its numbers become shares. */
+const rasterMapping = {
+  band: z.number().int().min(1).optional(),
+  scale: z.number().optional(),
+  offset: z.number().optional(),
+  /** class number → share */
+  classes: z.record(z.string().regex(/^-?\d+$/, 'a whole class number'), share).optional(),
+  /** share where the raster has no data */
+  fill: share.optional(),
+};
+export const layerSourceSchema = z.union([
+  share,
+  z.strictObject({
+    /** path of a GeoTIFF, relative to the spec */ file: z.string().min(1),
+    ...rasterMapping,
+  }),
+  z.strictObject({
+    /** SHA-256 of an uploaded raster */ layer: z.string().regex(/^[0-9a-f]{64}$/),
+    ...rasterMapping,
+  }),
+]);
+export type LayerSource = z.infer<typeof layerSourceSchema>;
+
+export const layerSourcesSchema = z.strictObject({
+  capacity: layerSourceSchema.default(1),
+  vigour: layerSourceSchema.default(1),
+  exposure: layerSourceSchema.default(0),
+  refuge: layerSourceSchema.default(0),
+  fence: layerSourceSchema.default(0),
+  cover: layerSourceSchema,
+});
+export type LayerSources = z.infer<typeof layerSourcesSchema>;
+
+/** Places on the ground, in the site's CRS, m. A cell belongs to an area when its centre does. */
+export const areaSchema = z.discriminatedUnion('shape', [
+  z.strictObject({ shape: z.literal('disc'), x: coordinate, y: coordinate, radius: metres }),
+  z.strictObject({
+    shape: z.literal('polygon'),
+    ring: z
+      .array(z.tuple([coordinate, coordinate]))
+      .min(3)
+      .max(10_000),
+  }),
+]);
+export type Area = z.infer<typeof areaSchema>;
 
 /** Works and one-off losses. What is dated in a year acts at its start and shows in that year's frame. */
 export const actionSchema = z.discriminatedUnion('kind', [
@@ -31,7 +64,11 @@ export const actionSchema = z.discriminatedUnion('kind', [
   z.strictObject({
     kind: z.literal('mound'),
     year,
-    ...moundFields,
+    x: coordinate,
+    y: coordinate,
+    radius: metres.max(1000),
+    strength: share.default(1),
+    halo: z.number().min(0).max(1000).default(0),
   }),
   /** raises cover to `cover`, never above capacity */
   z.strictObject({ kind: z.literal('planting'), year, area: areaSchema, cover: share }),
@@ -78,8 +115,6 @@ export type Mode = z.infer<typeof modeSchema>;
 export type Boundary = z.infer<typeof boundarySchema>;
 export type StepsPerYear = z.infer<typeof stepsPerYearSchema>;
 
-const droughtIndexValue = z.number().min(-15).max(15);
-
 /** The fields of a RunSpec, before the checks that look at several fields at once. */
 export const runSpecFields = {
   version: z.literal(runSpecVersion),
@@ -93,9 +128,9 @@ export const runSpecFields = {
   stepsPerYear: stepsPerYearSchema.default(1),
   boundary: boundarySchema.default('mirror'),
   rates: ratesSchema,
-  /** Palmer scale, negative is dry: one value for all steps, one a year, or one a step, from the year after the survey */
-  droughtIndex: z.union([droughtIndexValue, z.array(droughtIndexValue).max(maximumYears * 12)]).default(0),
-  actions: z.array(actionSchema).max(maximumPlaces).default([]),
+  /** a list, or a source from which each replicate draws its own */
+  droughtIndex: weatherSourceSchema.default(0),
+  actions: z.array(actionSchema).max(20_000).default([]),
   /** share of the reference cover that counts as recovered */
   target: z.number().gt(0).max(1).default(0.9),
   /** at least one of them is a raster: it gives the grid */
@@ -110,16 +145,8 @@ export const runSpecSchema = z.strictObject(runSpecFields).superRefine((spec, co
   const last = spec.surveyYear + spec.years;
   const say = (path: (string | number)[], message: string) =>
     context.addIssue({ code: 'custom', path, message });
-  if (Array.isArray(spec.droughtIndex)) {
-    const n = spec.droughtIndex.length;
-    const steps = spec.years * spec.stepsPerYear;
-    if (n !== spec.years && n !== steps)
-      say(
-        ['droughtIndex'],
-        `Found ${n} values; expected one for each of ${spec.years} years` +
-          (steps === spec.years ? '' : ` or one for each of ${steps} steps`),
-      );
-  }
+  for (const { field, message } of weatherProblems(spec.droughtIndex, spec))
+    say(['droughtIndex', ...field.split('.').filter(Boolean)], message);
   spec.actions.forEach((action, i) => {
     if (action.year < first || action.year > last)
       say(
@@ -137,18 +164,6 @@ export const runSpecSchema = z.strictObject(runSpecFields).superRefine((spec, co
 export type RunSpec = z.infer<typeof runSpecSchema>;
 /** What may be left out when a RunSpec is written by hand. */
 export type RunSpecInput = z.input<typeof runSpecSchema>;
-
-/** Drought index of every step, Float64, years × stepsPerYear. */
-export function droughtIndexBySteps(
-  spec: Pick<RunSpec, 'droughtIndex' | 'years' | 'stepsPerYear'>,
-): Float64Array {
-  const steps = spec.years * spec.stepsPerYear;
-  const given = spec.droughtIndex;
-  if (typeof given === 'number') return new Float64Array(steps).fill(given);
-  return Float64Array.from({ length: steps }, (_, s) =>
-    given.length === steps ? given[s] : given[Math.floor(s / spec.stepsPerYear)],
-  );
-}
 
 /** Years that have a frame, ascending: those asked for, or every year from the survey on. */
 export function frameYears(spec: Pick<RunSpec, 'surveyYear' | 'years' | 'reportYears'>): number[] {

@@ -1,5 +1,6 @@
 import { normalQuantile } from '#sim-core/numeric/normal.ts';
 import { power } from '#sim-core/numeric/power.ts';
+import type { PalmerRecursion } from '#sim-core/spec/weather-source.ts';
 
 /**
  * Share of Palmer's index that a month hands on to the next: X_t = 0.897 X_{t−1} + Z_t / 3 (Palmer 1965, US Weather
@@ -16,16 +17,6 @@ export const memoryOver = (years: number): number => power(monthlyMemory, 12 * y
 /** One step of the recursion around a mean. */
 export const nextIndex = (index: number, memory: number, addition: number, mean = 0): number =>
   mean + memory * (index - mean) + addition;
-
-/** Weather that remembers: each step keeps part of the last and adds chance. */
-export interface PalmerRecursion {
-  /** long-run mean of the index, 0 unless said */
-  readonly mean?: number;
-  /** long-run standard deviation of the index */
-  readonly standardDeviation: number;
-  /** index at the end of the survey year; drawn from the long-run law unless said */
-  readonly start?: number;
-}
 
 /**
  * X_t = 0.897^(12Δt) X_{t−Δt} + normal noise, scaled so that the long-run standard deviation is the given one whatever

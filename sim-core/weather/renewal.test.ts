@@ -1,6 +1,7 @@
 import { expect, test } from 'vitest';
 import { stream } from '#sim-core/random/streams.ts';
-import { drawRenewal, type DroughtRenewal } from './renewal.ts';
+import type { DroughtRenewal } from '#sim-core/spec/weather-source.ts';
+import { drawRenewal } from './renewal.ts';
 
 const uniformOf = (seed: string, replicate = 0) => stream(seed, `weather/${replicate}`);
 const fixed = (years: number) => ({ law: 'fixed', years }) as const;

@@ -1,20 +1,6 @@
 import { normalQuantile } from '#sim-core/numeric/normal.ts';
-import { remainingWait, waitExceededWith, type WaitingLaw } from './waiting-law.ts';
-
-/** Droughts that come back: a renewal process of their beginnings. */
-export interface DroughtRenewal {
-  /** from the beginning of one drought to that of the next */
-  readonly returnInterval: WaitingLaw;
-  /** years since the latest drought before the end of the survey year began; that drought may still last */
-  readonly sinceLatest: number;
-  /** index while a drought lasts: its mean, and the standard deviation between droughts (0 unless said) */
-  readonly depth: number;
-  readonly depthSpread?: number;
-  /** how long a drought lasts; it ends early where the next one begins */
-  readonly length: WaitingLaw;
-  /** index at other times, 0 unless said; no drought is milder */
-  readonly between?: number;
-}
+import type { DroughtRenewal } from '#sim-core/spec/weather-source.ts';
+import { remainingWait, waitExceededWith } from './waiting-law.ts';
 
 /**
  * Index of each step. A step is a drought's when the drought lasts at the middle of the step: a length of whole steps

@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
-import { chanceOfLonger, meanWait, remainingWait, waitExceededWith, type WaitingLaw } from './waiting-law.ts';
+import { chanceOfLonger, meanWait, remainingWait, waitExceededWith } from './waiting-law.ts';
+import type { WaitingLaw } from '#sim-core/spec/weather-source.ts';
 
 const weibull = (shape: number, scale: number): WaitingLaw => ({ law: 'weibull', shape, scale });
 const gamma = (shape: number, scale: number): WaitingLaw => ({ law: 'gamma', shape, scale });

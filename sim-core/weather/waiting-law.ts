@@ -2,13 +2,7 @@ import { exp } from '#sim-core/numeric/exp.ts';
 import { gammaAbove, gammaQuantileAbove, logGamma } from '#sim-core/numeric/gamma.ts';
 import { log } from '#sim-core/numeric/log.ts';
 import { power } from '#sim-core/numeric/power.ts';
-
-/** How long something takes, in years. */
-export type WaitingLaw =
-  | { readonly law: 'fixed'; readonly years: number }
-  | { readonly law: 'exponential'; readonly mean: number }
-  | { readonly law: 'weibull'; readonly shape: number; readonly scale: number }
-  | { readonly law: 'gamma'; readonly shape: number; readonly scale: number };
+import type { WaitingLaw } from '#sim-core/spec/weather-source.ts';
 
 /** Mean, years: of the Weibull law scale Γ(1 + 1/shape), of the gamma law shape × scale. */
 export function meanWait(wait: WaitingLaw): number {

@@ -1,6 +1,6 @@
 import { mutationOptions, type QueryClient } from '@tanstack/react-query';
-import { changeOption, createOption, deleteOption, type Option } from '#contract/sites.ts';
-import type { Action } from '#sim-core/spec/run-spec.ts';
+import { changeOption, createOption, deleteOption, type Option } from '#contract/options.ts';
+import type { Work, WorkSet } from '#contract/works.ts';
 import { callEndpoint } from '#app/lib/api-client.ts';
 import { siteKey } from '#app/lib/site-cache.ts';
 import { forgetDraft } from './draft-storage.ts';
@@ -18,7 +18,7 @@ function keepOption(queryClient: QueryClient, option: Option): void {
 
 export const createOptionMutation = (queryClient: QueryClient, siteId: string) =>
   mutationOptions({
-    mutationFn: (body: { name: string; works: Action[] }) =>
+    mutationFn: (body: { name: string; note?: string; works: Work[]; sets?: WorkSet[] }) =>
       callEndpoint(createOption, { params: { siteId }, body }),
     onSuccess: (option) => keepOption(queryClient, option),
   });
@@ -31,9 +31,12 @@ export const saveOptionMutation = (queryClient: QueryClient, siteId: string) =>
       ...body
     }: {
       optionId: string;
-      name: string;
-      works: Action[];
       revision: number;
+      name?: string;
+      note?: string;
+      archived?: boolean;
+      works?: Work[];
+      sets?: WorkSet[];
     }) => callEndpoint(changeOption, { params: { siteId, optionId }, body }),
     onSuccess: (option) => keepOption(queryClient, option),
   });

@@ -1,4 +1,4 @@
-import type { Option } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
 import { Notice } from '#app/components/notice.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { formatDateTime } from '#app/lib/formats.ts';

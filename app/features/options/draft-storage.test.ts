@@ -1,11 +1,11 @@
 import { beforeEach, describe, expect, it } from 'vitest';
-import type { Option } from '#contract/sites.ts';
-import type { Mound } from '#sim-core/spec/run-spec.ts';
+import type { Option } from '#contract/options.ts';
+import type { Work } from '#contract/works.ts';
 import { forgetDraft, keepDraft, restoreDraft } from './draft-storage.ts';
 import { draftOf, isUnsaved, optionDraft } from './option-draft.ts';
 
-const mound: Mound = { kind: 'mound', year: 2028, x: 1, y: 2, radius: 1, strength: 1, halo: 0 };
-const option = (revision: number, works: Mound[] = []) =>
+const mound = { id: 'm', kind: 'mound' as const, year: 2028, x: 1, y: 2, radius: 1, strength: 1, halo: 0 };
+const option = (revision: number, works: Work[] = []) =>
   ({ id: 'o-1', name: 'Option', wait: false, works, revision }) as unknown as Option;
 
 beforeEach(() => {

@@ -1,9 +1,9 @@
 import { z } from 'zod';
-import { actionSchema } from '#sim-core/spec/run-spec.ts';
-import type { Option } from '#contract/sites.ts';
-import { draftOf, isUnsaved, optionDraft, type OptionDraft } from './option-draft.ts';
+import type { Option } from '#contract/options.ts';
+import { worksSchema } from '#contract/works.ts';
+import { draftOf, draftWorks, isUnsaved, optionDraft, type OptionDraft } from './option-draft.ts';
 
-const keptSchema = z.object({ revision: z.number().int(), works: z.array(actionSchema) });
+const keptSchema = z.object({ revision: z.number().int(), works: worksSchema });
 const keyOf = (optionId: string) => `foothold.draft.${optionId}`;
 
 /** The browser may refuse storage, or hold something else there: the drawing then lasts as long as the page. */
@@ -40,10 +40,9 @@ export function restoreDraft(option: Option): OptionDraft {
   const saved = draftOf(option);
   const kept = readKept(option.id);
   if (!kept) return saved;
-  const drawn = kept.works.map((action, i) => ({ key: `k${i}`, action }));
   const restored = {
     ...optionDraft(saved, { type: 'select', key: undefined }),
-    works: drawn,
+    works: draftWorks(kept.works),
     past: [saved.works],
   };
   return isUnsaved(restored) ? { ...restored, revision: kept.revision } : saved;

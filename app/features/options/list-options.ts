@@ -1,5 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
-import { listOptions } from '#contract/sites.ts';
+import { listOptions } from '#contract/options.ts';
 import { callEndpoint } from '#app/lib/api-client.ts';
 import { siteKey } from '#app/lib/site-cache.ts';
 

@@ -1,7 +1,6 @@
 // @vitest-environment node
 import { describe, expect, it } from 'vitest';
-import type { Mound } from '#sim-core/spec/run-spec.ts';
-import type { Option } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
 import {
   draftOf,
   isUnsaved,
@@ -11,8 +10,9 @@ import {
   type OptionDraft,
 } from './option-draft.ts';
 
-const mound = (x: number, year = 2028): Mound => ({
-  kind: 'mound',
+const mound = (x: number, year = 2028) => ({
+  id: `m${x}`,
+  kind: 'mound' as const,
   year,
   x,
   y: 10,
@@ -21,6 +21,7 @@ const mound = (x: number, year = 2028): Mound => ({
   halo: 0,
 });
 const planting = {
+  id: 'p',
   kind: 'planting',
   year: 2028,
   cover: 0.5,
@@ -58,9 +59,9 @@ describe('optionDraft', () => {
   it('counts a mound pushed along by arrow keys as one step back', () => {
     const moved = after(
       start,
-      { type: 'change', key: 'w0', change: { x: 2, y: 10 } },
-      { type: 'change', key: 'w0', change: { x: 3, y: 10 } },
-      { type: 'change', key: 'w0', change: { year: 2030 } },
+      { type: 'change', key: 'm1', change: { x: 2, y: 10 } },
+      { type: 'change', key: 'm1', change: { x: 3, y: 10 } },
+      { type: 'change', key: 'm1', change: { year: 2030 } },
     );
     expect(moved.past).toHaveLength(2);
     expect(after(moved, { type: 'undo' }).works[0].action).toMatchObject({ x: 3, year: 2028 });
@@ -69,13 +70,13 @@ describe('optionDraft', () => {
 
   it('changes nothing for what is not there, is no mound, or is the same already', () => {
     expect(after(start, { type: 'change', key: 'w9', change: { x: 2 } })).toBe(start);
-    expect(after(start, { type: 'change', key: 'w1', change: { x: 2 } })).toBe(start);
-    expect(after(start, { type: 'change', key: 'w0', change: { x: 1 } })).toBe(start);
+    expect(after(start, { type: 'change', key: 'p', change: { x: 2 } })).toBe(start);
+    expect(after(start, { type: 'change', key: 'm1', change: { x: 1 } })).toBe(start);
     expect(after(start, { type: 'remove', key: 'w9' })).toBe(start);
   });
 
   it('keeps works of other kinds in their place', () => {
-    const removed = after(start, { type: 'remove', key: 'w0' });
+    const removed = after(start, { type: 'remove', key: 'm1' });
     expect(removed.works.map((work) => work.action)).toEqual([planting]);
     expect(isUnsaved(removed)).toBe(true);
   });

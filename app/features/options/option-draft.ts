@@ -1,12 +1,14 @@
-import type { Option } from '#contract/sites.ts';
-import type { Action, Mound } from '#sim-core/spec/run-spec.ts';
+import type { Option } from '#contract/options.ts';
+import { sameWork } from '#contract/work-changes.ts';
+import type { Marks, Work } from '#contract/works.ts';
+import type { Mound } from '#sim-core/spec/run-spec.ts';
 
-/** One of the works while it is drawn: its key stays, whatever is moved, undone or saved. */
+/** One of the works while it is drawn: its key is its id, and stays, whatever is moved, undone or saved. */
 export interface DraftWork {
   readonly key: string;
-  readonly action: Action;
+  readonly action: Work;
 }
-export type DraftMound = DraftWork & { readonly action: Mound };
+export type DraftMound = DraftWork & { readonly action: Mound & Marks };
 
 /** What is drawn on an option and not saved yet, with the way back. */
 export interface OptionDraft {
@@ -17,14 +19,13 @@ export interface OptionDraft {
   /** what the server has, as far as this page knows: the revision that the drawing was made on, and its works */
   readonly revision: number;
   readonly saved: readonly DraftWork[];
-  readonly nextKey: number;
   /** the change made last, so that a mound pushed along by arrow keys is one step back */
   readonly lastChange: string | undefined;
 }
 
 export type MoundChange = Partial<Pick<Mound, 'x' | 'y' | 'year' | 'radius' | 'strength' | 'halo'>>;
 export type DraftAction =
-  | { type: 'place'; mound: Mound }
+  | { type: 'place'; mound: Mound & Marks }
   | { type: 'change'; key: string; change: MoundChange }
   | { type: 'remove'; key: string }
   | { type: 'select'; key: string | undefined }
@@ -40,9 +41,12 @@ const longestPast = 200;
 const isMound = (work: DraftWork): work is DraftMound => work.action.kind === 'mound';
 export const moundsOf = (works: readonly DraftWork[]): DraftMound[] => works.filter(isMound);
 
+export const draftWorks = (works: readonly Work[]): DraftWork[] =>
+  works.map((action) => ({ key: action.id, action }));
+
 /** A draft of what the server has. */
 export function draftOf(option: Pick<Option, 'works' | 'revision'>): OptionDraft {
-  const works = option.works.map((action, i) => ({ key: `w${i}`, action }));
+  const works = draftWorks(option.works);
   return {
     works,
     past: [],
@@ -50,30 +54,27 @@ export function draftOf(option: Pick<Option, 'works' | 'revision'>): OptionDraft
     selected: undefined,
     revision: option.revision,
     saved: works,
-    nextKey: works.length,
     lastChange: undefined,
   };
 }
 
-const sameAction = (a: Action, b: Action) => a === b || JSON.stringify(a) === JSON.stringify(b);
 /** Whether the drawing differs from what the server has. */
 export const isUnsaved = ({ works, saved }: OptionDraft): boolean =>
   works !== saved &&
-  (works.length !== saved.length || works.some((work, i) => !sameAction(work.action, saved[i].action)));
+  (works.length !== saved.length || works.some((work, i) => !sameWork(work.action, saved[i].action)));
 
 /** The next state of a drawing; what cannot be (an unknown key, nothing to undo) changes nothing. */
 export function optionDraft(draft: OptionDraft, action: DraftAction): OptionDraft {
   switch (action.type) {
     case 'place': {
-      const key = `w${draft.nextKey}`;
-      const works = [...draft.works, { key, action: action.mound }];
-      return { ...drawn(draft, works), selected: key, nextKey: draft.nextKey + 1 };
+      const works = [...draft.works, ...draftWorks([action.mound])];
+      return { ...drawn(draft, works), selected: action.mound.id };
     }
     case 'change': {
       const found = draft.works.find((work) => work.key === action.key);
       if (!found || !isMound(found)) return draft;
       const changed = { ...found, action: { ...found.action, ...action.change } };
-      if (sameAction(changed.action, found.action)) return draft;
+      if (sameWork(changed.action, found.action)) return draft;
       const works = draft.works.map((work) => (work === found ? changed : work));
       return drawn(draft, works, `${action.key}:${Object.keys(action.change).sort().join()}`);
     }
@@ -99,13 +100,12 @@ export function optionDraft(draft: OptionDraft, action: DraftAction): OptionDraf
     case 'saved':
       return { ...draft, saved: action.works, revision: action.revision, lastChange: undefined };
     case 'take': {
-      const theirs = action.option.works.map((work, i) => ({ key: `w${draft.nextKey + i}`, action: work }));
+      const theirs = draftWorks(action.option.works);
       return {
         ...drawn(draft, theirs),
         saved: theirs,
         selected: undefined,
         revision: action.option.revision,
-        nextKey: draft.nextKey + theirs.length,
       };
     }
   }

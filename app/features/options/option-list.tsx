@@ -1,4 +1,4 @@
-import type { Option } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
 import type { Action } from '#sim-core/spec/run-spec.ts';
 import { FlagSymbol, PlantingSymbol, WaitSymbol } from '#app/components/symbols.tsx';
 import { classNames } from '#app/lib/class-names.ts';

@@ -1,6 +1,6 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useReducer } from 'react';
-import type { Option } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
 import { ProblemError } from '#app/lib/api-client.ts';
 import { useWarnBeforeClosing } from '#app/lib/use-warn-before-closing.ts';
 import { createOptionMutation, saveOptionMutation } from './change-option.ts';
@@ -44,13 +44,12 @@ export function useOptionDrawing(option: Option): OptionDrawing {
   useWarnBeforeClosing(unsaved);
 
   const isConflict = saveOption.error instanceof ProblemError && saveOption.error.code === 'conflict';
-  const send = async (name: string, works: OptionDraft['works']) => {
+  const send = async (works: OptionDraft['works'], name?: string) => {
     try {
       const saved = await saveOption.mutateAsync({
         optionId: option.id,
-        name,
-        works: works.map((work) => work.action),
         revision: draft.revision,
+        ...(name === undefined ? { works: works.map((work) => work.action) } : { name }),
       });
       draw({ type: 'saved', revision: saved.revision, works });
     } catch (error) {
@@ -67,11 +66,11 @@ export function useOptionDrawing(option: Option): OptionDrawing {
     saving: saveOption.isPending || copyOption.isPending,
     error: isConflict ? copyOption.error : (saveOption.error ?? copyOption.error),
     save: () =>
-      send(option.name, draft.works).then(
+      send(draft.works).then(
         () => true,
         () => false,
       ),
-    rename: (name) => send(name, draft.saved),
+    rename: (name) => send(draft.saved, name),
     keepAsCopy: async () => {
       try {
         const copy = await copyOption.mutateAsync({

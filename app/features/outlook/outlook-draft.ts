@@ -1,6 +1,7 @@
 import { outlookSchema, type Outlook } from '#contract/sites.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
-import { maximumYears, type Boundary, type StepsPerYear } from '#sim-core/spec/run-spec.ts';
+import { maximumYears } from '#sim-core/spec/limits.ts';
+import type { Boundary, StepsPerYear } from '#sim-core/spec/run-spec.ts';
 import type { SeriesEntry } from './parse-series.ts';
 
 /**

@@ -1,6 +1,6 @@
 import { queryOptions } from '@tanstack/react-query';
 import { getClosing } from '#contract/runs.ts';
-import { maximumCells } from '#sim-core/spec/run-spec.ts';
+import { maximumCells } from '#sim-core/spec/limits.ts';
 import { fetchBlob } from '#app/lib/api-client.ts';
 import { cells } from '#app/workers/cells-client.ts';
 

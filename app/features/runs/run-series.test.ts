@@ -5,9 +5,12 @@ import { driestByYear, lossesIn } from './run-series.ts';
 
 describe('driestByYear', () => {
   it('takes the driest step of each year', () => {
-    expect(driestByYear({ years: 2, stepsPerYear: 2, droughtIndex: [0, -3, 1, 2] })).toEqual([-3, 1]);
-    expect(driestByYear({ years: 2, stepsPerYear: 4, droughtIndex: [-1, -2] })).toEqual([-1, -2]);
-    expect(driestByYear({ years: 3, stepsPerYear: 1, droughtIndex: -0.5 })).toEqual([-0.5, -0.5, -0.5]);
+    const run = { surveyYear: 2026, seed: 'sallow', replicate: 0 };
+    const driest = (years: number, stepsPerYear: 1 | 2 | 4, droughtIndex: number | number[]) =>
+      driestByYear({ ...run, years, stepsPerYear, droughtIndex });
+    expect(driest(2, 2, [0, -3, 1, 2])).toEqual([-3, 1]);
+    expect(driest(2, 4, [-1, -2])).toEqual([-1, -2]);
+    expect(driest(3, 1, -0.5)).toEqual([-0.5, -0.5, -0.5]);
   });
 });
 

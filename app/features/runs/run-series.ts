@@ -1,9 +1,9 @@
 import type { SeriesRow } from '#sim-core/spec/run-result.ts';
-import { droughtIndexBySteps, type RunSpec } from '#sim-core/spec/run-spec.ts';
+import { drawWeather, type WeatherOfRun } from '#sim-core/weather/draw-weather.ts';
 
 /** Drought index of each simulated year: that of its driest step, since that is the one that kills. */
-export function driestByYear(spec: Pick<RunSpec, 'droughtIndex' | 'years' | 'stepsPerYear'>): number[] {
-  const steps = droughtIndexBySteps(spec);
+export function driestByYear(spec: WeatherOfRun): number[] {
+  const steps = drawWeather(spec);
   return Array.from({ length: spec.years }, (_, i) =>
     Math.min(...steps.subarray(i * spec.stepsPerYear, (i + 1) * spec.stepsPerYear)),
   );

@@ -1,6 +1,6 @@
 import { cleanup, fireEvent, render, screen } from '@testing-library/react';
 import { afterEach, expect, it } from 'vitest';
-import type { Option } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
 import { StartForm } from './start-form.tsx';
 import { siteFixture } from './testing/site-fixture.ts';
 

@@ -1,5 +1,6 @@
 import { useState } from 'react';
-import type { Option, Site } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import type { Site } from '#contract/sites.ts';
 import { Blank, BlankSelect } from '#app/components/blank.tsx';
 import { Button } from '#app/components/button.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';

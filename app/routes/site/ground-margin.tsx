@@ -135,8 +135,6 @@ function EngineView({ rasters, classes }: Pick<GroundMarginProps, 'rasters' | 'c
     [habitat, classes.rows, grid.cellSize],
   );
   const pending = 'being counted';
-  const { facts } = rasters;
-  const covered = facts && facts.covered * grid.cellSize ** 2;
   return (
     <section className="border-t border-ink py-3" aria-label="What the engine will see">
       <h2 className="mb-1 text-body">What the engine will see</h2>
@@ -154,9 +152,9 @@ function EngineView({ rasters, classes }: Pick<GroundMarginProps, 'rasters' | 'c
           <dd>
             {!has('cover')
               ? 'needs cover'
-              : covered === undefined
+              : rasters.covered === undefined
                 ? pending
-                : `${formatArea(covered)}${plantable ? `, ${formatShare(covered / plantable)} of that` : ''}`}
+                : `${formatArea(rasters.covered)}${plantable ? `, ${formatShare(rasters.covered / plantable)} of that` : ''}`}
           </dd>
         </div>
         <div>
@@ -164,9 +162,9 @@ function EngineView({ rasters, classes }: Pick<GroundMarginProps, 'rasters' | 'c
           <dd>
             {!has('refuge')
               ? 'none'
-              : facts === undefined
+              : rasters.sheltered === undefined
                 ? pending
-                : formatArea(facts.sheltered * grid.cellSize ** 2)}
+                : formatArea(rasters.sheltered)}
           </dd>
         </div>
       </dl>

@@ -1,5 +1,5 @@
 import { useNavigate } from 'react-router-dom';
-import type { Option } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
 import { Button } from '#app/components/button.tsx';
 import { LinkButton } from '#app/components/link-button.tsx';
 import { WordButton, WordLink } from '#app/components/word-button.tsx';

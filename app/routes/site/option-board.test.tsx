@@ -2,19 +2,21 @@ import { QueryClientProvider } from '@tanstack/react-query';
 import { cleanup, fireEvent, render, screen } from '@testing-library/react';
 import { createMemoryRouter, Outlet, RouterProvider } from 'react-router-dom';
 import { afterEach, beforeEach, expect, it, vi } from 'vitest';
-import type { Option, Site } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import type { Site } from '#contract/sites.ts';
 import { startingPen } from '#app/features/options/mound-pen.ts';
 import { layerFixture, siteFixture } from '#app/features/runs/testing/site-fixture.ts';
 import { createQueryClient } from '#app/lib/query-client.ts';
-import type { Mound } from '#sim-core/spec/run-spec.ts';
+import type { Work } from '#contract/works.ts';
 import { OptionBoard } from './option-board.tsx';
 import type { SiteContext } from './use-site.ts';
 
 const site = siteFixture();
 const { grid } = site;
 const cells = grid.width * grid.height;
-const mound: Mound = {
-  kind: 'mound',
+const mound = {
+  id: 'm1',
+  kind: 'mound' as const,
   year: 2028,
   x: grid.originX + grid.cellSize / 2,
   y: grid.originY - grid.cellSize / 2,
@@ -22,12 +24,15 @@ const mound: Mound = {
   strength: 1,
   halo: 0,
 };
-const optionWith = (works: Mound[]): Option => ({
+const optionWith = (works: Work[]): Option => ({
   id: '7b0f8a52-3a51-4d0c-9d9a-0d4a3a3b1c22',
   siteId: site.id,
   name: 'Mounds',
+  note: '',
   wait: false,
+  archived: false,
   works,
+  sets: [],
   revision: 1,
   changedAt: '2026-12-01T00:00:00.000Z',
   changedBy: 'Invented Person',
@@ -44,7 +49,7 @@ afterEach(() => {
   vi.restoreAllMocks();
 });
 
-function show(more: { works?: Mound[]; on?: Site; year?: string; justMade?: boolean } = {}) {
+function show(more: { works?: Work[]; on?: Site; year?: string; justMade?: boolean } = {}) {
   const on = more.on ?? site;
   const option = optionWith(more.works ?? []);
   // The last cell of the site bears a mound that was found at the survey.
@@ -64,7 +69,11 @@ function show(more: { works?: Mound[]; on?: Site; year?: string; justMade?: bool
       option={option}
       ground={{
         habitat: undefined,
+        cover: undefined,
         refuge,
+        capacity: undefined,
+        covered: undefined,
+        sheltered: undefined,
         errors: {},
         retry: () => undefined,
       }}

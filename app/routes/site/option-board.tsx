@@ -1,5 +1,6 @@
 import { useEffect, useMemo, useRef, useState } from 'react';
-import type { Option } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import { newWorkId } from '#contract/works.ts';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
 import { moundProblem } from '#app/features/options/check-mound.ts';
 import { readPen, type MoundPen } from '#app/features/options/mound-pen.ts';
@@ -75,7 +76,7 @@ export function OptionBoard(props: {
   const place = (x: number, y: number) => {
     if (!read.mound) return setMissed(missed + 1);
     if (!allowed(x, y)) return;
-    draw({ type: 'place', mound: { kind: 'mound', x, y, ...read.mound } });
+    draw({ type: 'place', mound: { id: newWorkId(), kind: 'mound', x, y, ...read.mound } });
     // What was just placed must not stand faint on the map.
     if (year < read.mound.year) setYear(read.mound.year);
   };

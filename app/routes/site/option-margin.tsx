@@ -1,6 +1,6 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
-import type { Option } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
 import { ConfirmDialog } from '#app/components/confirm-dialog.tsx';
 import { NameDialog } from '#app/components/name-dialog.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';

@@ -1,4 +1,4 @@
-import type { Option } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
 import { FlagSymbol } from '#app/components/symbols.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';

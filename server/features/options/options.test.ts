@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import type { Option, Site } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import type { Site } from '#contract/sites.ts';
 import { makeTeam, type TestTeam } from '#server/testing/people.ts';
 import { makeSite } from '#server/testing/sites.ts';
 import { testServer, type TestServer } from '#server/testing/test-server.ts';
@@ -41,7 +42,7 @@ describe('options', () => {
     const { id } = await make('Contested');
     const moved = [{ ...mound, x: 412_205 }];
     const first = await modeller
-      .put(`${path}/${id}`)
+      .patch(`${path}/${id}`)
       .send({ name: 'Mine', works: moved, revision: 1 })
       .expect(200);
     expect(first.body).toMatchObject({
@@ -51,7 +52,7 @@ describe('options', () => {
       changedBy: 'Option team: modeller',
     });
     const second = await manager
-      .put(`${path}/${id}`)
+      .patch(`${path}/${id}`)
       .send({ name: 'No, mine', works: [], revision: 1 })
       .expect(409);
     expect(second.body.code).toBe('conflict');
@@ -65,7 +66,7 @@ describe('options', () => {
     const { id } = await make('Raced');
     const replies = await Promise.all(
       [manager, modeller].map((agent, i) =>
-        agent.put(`${path}/${id}`).send({ name: `Version ${i}`, works: [], revision: 1 }),
+        agent.patch(`${path}/${id}`).send({ name: `Version ${i}`, works: [], revision: 1 }),
       ),
     );
     expect(replies.map((reply) => reply.status).sort()).toEqual([200, 409]);
@@ -78,7 +79,7 @@ describe('options', () => {
     await manager.delete(`${path}/${id}`).expect(404);
     const [wait] = (await manager.get(path)).body.options as [Option];
     const change = await manager
-      .put(`${path}/${wait.id}`)
+      .patch(`${path}/${wait.id}`)
       .send({ name: 'x', works: [mound], revision: 1 })
       .expect(409);
     expect(change.body.detail).toContain('Wait is what every other option is measured against');
@@ -86,13 +87,78 @@ describe('options', () => {
     expect(((await manager.get(path)).body.options as Option[])[0]).toEqual(wait);
   });
 
+  it('are renamed and noted without sending their works', async () => {
+    const { id, works } = await make('Before');
+    const reply = await team.agents.manager
+      .patch(`${path}/${id}`)
+      .send({ revision: 1, name: 'After', note: '  Ask the harbour first.  ' })
+      .expect(200);
+    expect(reply.body).toMatchObject({ name: 'After', note: 'Ask the harbour first.', works, revision: 2 });
+  });
+
+  it('can be put in the archive, where nobody draws on them, and brought back', async () => {
+    const { id } = await make('Put away');
+    const patch = (body: object) => team.agents.manager.patch(`${path}/${id}`).send(body);
+    expect((await patch({ revision: 1, archived: true }).expect(200)).body).toMatchObject({ archived: true });
+    expect((await patch({ revision: 2, works: [] }).expect(409)).body.detail).toContain('is in the archive');
+    const back = await patch({ revision: 2, archived: false, works: [] }).expect(200);
+    expect(back.body).toMatchObject({ archived: false, works: [], revision: 3 });
+  });
+
+  it('are copied with works, sets and note; the copy stands after the original', async () => {
+    const site2 = await makeSite(team.agents.modeller, team.teamId);
+    const there = `/api/sites/${site2.id}/options`;
+    const post = (at: string, body: object) => team.agents.manager.post(at).send(body).expect(200);
+    const set = { id: 's1', laid: { pattern: 'scattered', seed: 'x', parameters: { count: 3 } } };
+    const body = { name: 'A', note: 'n', works: [{ ...mound, id: 'a', set: 's1' }], sets: [set] };
+    const { body: a } = await post(there, body);
+    await post(there, { name: 'B', works: [] });
+    const { body: copy } = await post(`${there}/${(a as Option).id}/copies`, { name: 'A, copy' });
+    expect(copy).toMatchObject({ ...body, name: 'A, copy', revision: 1 });
+    expect((copy as Option).id).not.toBe((a as Option).id);
+    const list = async () => (await team.agents.manager.get(there)).body.options as Option[];
+    const [wait] = await list();
+    await post(`${there}/${wait.id}/copies`, { name: 'Wait, copy' });
+    expect((await list()).map(({ name }) => name)).toEqual(['Wait', 'Wait, copy', 'A', 'A, copy', 'B']);
+    await post(there, { name: 'Last', works: [] });
+    expect((await list()).at(-1)?.name).toBe('Last');
+  });
+
+  it('are put in another order, Wait staying first', async () => {
+    const site2 = await makeSite(team.agents.modeller, team.teamId);
+    const there = `/api/sites/${site2.id}/options`;
+    for (const name of ['A', 'B', 'C'])
+      await team.agents.manager.post(there).send({ name, works: [] }).expect(200);
+    const options = (await team.agents.manager.get(there)).body.options as Option[];
+    const [wait, a, b, c] = options.map(({ id }) => id);
+    const order = (optionIds: string[]) =>
+      team.agents.manager.put(`/api/sites/${site2.id}/option-order`).send({ optionIds });
+    const reply = await order([c, a, b]).expect(200);
+    const names = (body: { options: Option[] }) => body.options.map(({ name }) => name);
+    expect(names(reply.body as { options: Option[] })).toEqual(['Wait', 'C', 'A', 'B']);
+    for (const wrong of [
+      [a, b],
+      [a, b, c, c],
+      [wait, a, b, c],
+      [a, b, site.id],
+    ])
+      expect((await order(wrong).expect(409)).body.detail).toContain('each of the 3 beside Wait once');
+    expect(names((await team.agents.trainer.get(there)).body as { options: Option[] })).toEqual([
+      'Wait',
+      'C',
+      'A',
+      'B',
+    ]);
+  });
+
   it('of one site are not found under another', async () => {
     const { modeller, manager } = team.agents;
     const other = await makeSite(modeller, team.teamId);
     const { id } = await make('Elsewhere');
     const elsewhere = `/api/sites/${other.id}/options/${id}`;
-    await manager.put(elsewhere).send({ name: 'x', works: [], revision: 1 }).expect(404);
+    await manager.patch(elsewhere).send({ name: 'x', works: [], revision: 1 }).expect(404);
     await manager.delete(elsewhere).expect(404);
+    await manager.post(`${elsewhere}/copies`).send({ name: 'x' }).expect(404);
   });
 
   // The site spans eastings 412200 to 412212 and northings 5301892 to 5301900.
@@ -105,6 +171,27 @@ describe('options', () => {
     ['works.0.strength', [{ ...mound, strength: 1.2 }]],
     ['works.0.kind', [{ ...mound, kind: 'dam' }]],
     ['works.0.colour', [{ ...mound, colour: 'coral' }]],
+    ['works.0.set', [{ ...mound, set: 'gone' }]],
+    [
+      'works.1.id',
+      [
+        { ...mound, id: 'a' },
+        { ...mound, id: 'a' },
+      ],
+    ],
+    [
+      'works.0.points.1.0',
+      [
+        {
+          kind: 'clumps',
+          year: 2027,
+          points: [
+            [412_203, 5_301_897],
+            [0, 5_301_897],
+          ],
+        },
+      ],
+    ],
   ])('with works that cannot be are refused at %s', async (field, works) => {
     const reply = await team.agents.manager.post(path).send({ name: 'Off', works }).expect(400);
     expect(reply.body.fields).toMatchObject([{ field }]);

@@ -2,22 +2,35 @@ import type { Grid } from '#sim-core/grid/grid.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
 import type { Action } from '#sim-core/spec/run-spec.ts';
 
-/** The first mound that lies off the grid, at the coordinate that is wrong; undefined when all lie on it. */
+type Place = readonly [x: number, y: number, fieldOfX: string, fieldOfY: string];
+
+/**
+ * The first mound or clump that lies off the grid, at the coordinate that is wrong; undefined when all lie on it. Areas
+ * may reach beyond: a run leaves out what lies outside. Whether the ground can hold the plant is known to rasters alone;
+ * the page and the run look at it.
+ */
 export function checkWorksOnGrid(works: readonly Action[], grid: Grid): FieldProblem | undefined {
   const { originX: west, originY: north, cellSize, width, height } = grid;
   const [east, south] = [west + width * cellSize, north - height * cellSize];
-  for (const [i, action] of works.entries()) {
-    if (action.kind !== 'mound') continue;
-    if (!(action.x >= west && action.x < east))
-      return {
-        field: `works.${i}.x`,
-        message: `Easting ${action.x} lies off the site; expected ${west} to ${east}`,
-      };
-    if (!(action.y > south && action.y <= north))
-      return {
-        field: `works.${i}.y`,
-        message: `Northing ${action.y} lies off the site; expected ${south} to ${north}`,
-      };
-  }
+  for (const [i, action] of works.entries())
+    for (const [x, y, fieldOfX, fieldOfY] of placesOf(action)) {
+      if (!(x >= west && x < east))
+        return {
+          field: `works.${i}.${fieldOfX}`,
+          message: `Easting ${x} lies off the site; expected ${west} to ${east}`,
+        };
+      if (!(y > south && y <= north))
+        return {
+          field: `works.${i}.${fieldOfY}`,
+          message: `Northing ${y} lies off the site; expected ${south} to ${north}`,
+        };
+    }
   return undefined;
+}
+
+function placesOf(action: Action): Place[] {
+  if (action.kind === 'mound') return [[action.x, action.y, 'x', 'y']];
+  if (action.kind === 'clumps')
+    return action.points.map(([x, y], i): Place => [x, y, `points.${i}.0`, `points.${i}.1`]);
+  return [];
 }

@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
-import type { Option, Site } from '#contract/sites.ts';
+import type { Option } from '#contract/options.ts';
+import type { Site } from '#contract/sites.ts';
 import { makeTeam, type TestTeam } from '#server/testing/people.ts';
 import { computeRun, openRun, packed, sendBytes, specFor, type ComputedRun } from '#server/testing/runs.ts';
 import { makeSite, storedFiles } from '#server/testing/sites.ts';
@@ -29,14 +30,6 @@ describe('an impossible run is refused at the field that is wrong', () => {
     ['spec.actions.0.year', { actions: [{ ...mound, year: 2040 }] }],
     ['spec.actions.0', { actions: [{ ...mound, x: 0 }] }],
     ['spec.layers.cover.layer', { layers: { cover: { layer: elsewhere } } }],
-    [
-      'spec.layers.capacity.product.1.layer',
-      { layers: { cover: 0, capacity: { product: [1, { layer: elsewhere }] } } },
-    ],
-    [
-      'spec.layers.refuge.highest.0.file',
-      { layers: { cover: 0, refuge: { highest: [{ file: 'a.tif' }, 0] } } },
-    ],
     ['spec.layers.cover.file', { layers: { cover: { file: 'cover.tif' } } }],
     ['spec.layers.cover.band', { layers: { cover: { layer: 'COVER', band: 2 } } }],
     ['spec.layers', { layers: { cover: { layer: 'not a hash' } } }],

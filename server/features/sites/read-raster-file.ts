@@ -1,6 +1,6 @@
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { LayerPart, ValueUnit } from '#contract/sites.ts';
-import { maximumCells } from '#sim-core/spec/run-spec.ts';
+import { maximumCells } from '#sim-core/spec/limits.ts';
 import type { ReceivedFile } from '#server/files/blob-store.ts';
 import type { LayerFacts } from '#server/jobs/layer-facts.ts';
 import type { Services } from '#server/services.ts';
