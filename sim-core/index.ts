@@ -49,3 +49,9 @@ export {
   type SobolIndices,
   type SobolOutputs,
 } from './ensemble/sobol.ts';
+export { pairedDifference, type PairedDifference } from './compare/paired-difference.ts';
+export { bestShares, type BestShare } from './compare/best-option.ts';
+export { efficiency, efficientLine, type CostAndGain } from './compare/efficient-options.ts';
+export { regretTable, type RegretTable } from './compare/regret.ts';
+export { weighOptions, type Criterion, type Weighting } from './compare/weighting.ts';
+export { levelOfLooks, sureEnough, type Standing, type StopRule } from './compare/stop-rule.ts';
