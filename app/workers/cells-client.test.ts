@@ -1,6 +1,7 @@
 // @vitest-environment node
 import { describe, expect, it, vi } from 'vitest';
 import { encodeCellValues } from '#rasters/cells/cell-values.ts';
+import { layerSourcesSchema } from '#sim-core/spec/run-spec.ts';
 import { cellsFace } from './cells-face.ts';
 import { CellsWorkerDied, createCellsClient } from './cells-client.ts';
 import { portWorker } from './testing/port-worker.ts';
@@ -23,17 +24,21 @@ describe('createCellsClient', () => {
     worker.terminate();
   });
 
-  it('makes shares and their sum, and says why where it cannot', async () => {
+  it('makes ground from layers, and says why where it cannot', async () => {
     const { worker } = portWorker(cellsFace);
     const client = createCellsClient(() => worker);
-    const packed = blobOf(Float32Array.of(50, 100, -1));
-    const mapping = { scale: 0.01, noData: -1 };
-    expect(await client.shareBytes(packed, limits, mapping)).toEqual(Uint8Array.of(128, 255, 0));
-    expect(await client.sumShares(packed, limits, mapping, undefined)).toBe(1.5);
-    const capacity = Uint8Array.of(255, 51, 255);
-    expect(await client.sumShares(packed, limits, mapping, capacity)).toBeCloseTo(0.7, 12);
-    expect(capacity).toHaveLength(3);
-    await expect(client.shareBytes(packed, limits, {})).rejects.toMatchObject({ name: 'ShareError' });
+    const grid = { width: 3, height: 1, cellSize: 1, originX: 0, originY: 0, epsg: 32631 };
+    const hash = 'a'.repeat(64);
+    const layers = new Map([[hash, { packed: blobOf(Float32Array.of(50, 100, -1)), noData: -1 }]]);
+    const cover = { layer: hash, scale: 0.01 };
+    expect(await client.sourceBytes(layers, cover, grid)).toEqual(Uint8Array.of(128, 255, 0));
+    const sources = layerSourcesSchema.parse({ capacity: 0.8, cover });
+    const ground = await client.engineGround(layers, sources, grid);
+    expect(ground.cover).toEqual(Uint8Array.of(128, 204, 0));
+    expect(ground.facts.covered).toBeCloseTo(1.3, 6);
+    await expect(client.sourceBytes(layers, { layer: hash }, grid)).rejects.toMatchObject({
+      name: 'ShareError',
+    });
     worker.terminate();
   });
 

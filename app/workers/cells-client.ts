@@ -1,7 +1,10 @@
 import { releaseProxy, wrap, type Remote } from 'comlink';
 import type { CellArray, CellLimits } from '#rasters/cells/cell-header.ts';
-import type { ShareMapping } from '#sim-core/grid/ground.ts';
+import type { Grid } from '#sim-core/grid/grid.ts';
+import type { LayerSource, LayerSources } from '#sim-core/spec/run-spec.ts';
 import type { CellsFace } from './cells-face.ts';
+import type { EngineGround } from './engine-ground.ts';
+import type { PackedLayers } from './run-loop.ts';
 
 /** The worker died, or what it sent could not be read. */
 export class CellsWorkerDied extends Error {
@@ -10,19 +13,14 @@ export class CellsWorkerDied extends Error {
 
 /**
  * Work on whole rasters off the page's thread, from their cell-values binaries. Refusals
- * come with the name and the message that they have there: CellValuesError, ShareError.
+ * come with the name and the message that they have there: CellValuesError, ShareError, RunProblem.
  */
 export interface CellsClient {
   unpack(packed: Blob, limits: CellLimits): Promise<CellArray>;
-  /** round(255 × share) of every cell */
-  shareBytes(packed: Blob, limits: CellLimits, mapping: ShareMapping): Promise<Uint8Array>;
-  /** Sum of the shares, none above its cell's capacity (round(255 × share), copied) where that is known. */
-  sumShares(
-    packed: Blob,
-    limits: CellLimits,
-    mapping: ShareMapping,
-    capacity: Uint8Array | undefined,
-  ): Promise<number>;
+  /** round(255 × share) of every cell, from one source of the ground */
+  sourceBytes(layers: PackedLayers, source: LayerSource, grid: Grid): Promise<Uint8Array>;
+  /** the whole ground, as a run would start from it */
+  engineGround(layers: PackedLayers, sources: LayerSources, grid: Grid): Promise<EngineGround>;
 }
 
 const startWorker = () =>
@@ -60,8 +58,8 @@ export function createCellsClient(createWorker: () => Worker = startWorker): Cel
 
   return {
     unpack: (...input) => ask((remote) => remote.unpack(...input)),
-    shareBytes: (...input) => ask((remote) => remote.shareBytes(...input)),
-    sumShares: (...input) => ask((remote) => remote.sumShares(...input)),
+    sourceBytes: (...input) => ask((remote) => remote.sourceBytes(...input)),
+    engineGround: (...input) => ask((remote) => remote.engineGround(...input)),
   };
 }
 

@@ -1,8 +1,14 @@
 import { transfer } from 'comlink';
 import type { CellLimits } from '#rasters/cells/cell-header.ts';
-import { toShareBytes, type ShareMapping } from '#sim-core/grid/ground.ts';
-import { sumShares } from './sum-shares.ts';
+import { sourceBytes } from '#sim-core/grid/build-ground.ts';
+import type { Grid } from '#sim-core/grid/grid.ts';
+import type { LayerSource, LayerSources } from '#sim-core/spec/run-spec.ts';
+import { engineGround } from './engine-ground.ts';
+import type { PackedLayers } from './run-loop.ts';
 import { unpackBlob } from './unpack-blob.ts';
+import { unpackLayers } from './unpack-layers.ts';
+
+const cellsOf = ({ width, height }: Grid) => width * height;
 
 /** Work on whole rasters that would hold up the page; what comes back is handed over, never copied. */
 export const cellsFace = {
@@ -10,15 +16,17 @@ export const cellsFace = {
     const cells = await unpackBlob(packed, limits);
     return transfer(cells, [cells.values.buffer as ArrayBuffer]);
   },
-  shareBytes: async (packed: Blob, limits: CellLimits, mapping: ShareMapping) => {
-    const bytes = toShareBytes((await unpackBlob(packed, limits)).values, mapping);
+  sourceBytes: async (layers: PackedLayers, source: LayerSource, grid: Grid) => {
+    const bytes = sourceBytes(source, grid, await unpackLayers(layers, cellsOf(grid)));
     return transfer(bytes, [bytes.buffer as ArrayBuffer]);
   },
-  sumShares: async (
-    packed: Blob,
-    limits: CellLimits,
-    mapping: ShareMapping,
-    capacity: Uint8Array | undefined,
-  ) => sumShares((await unpackBlob(packed, limits)).values, mapping, capacity),
+  engineGround: async (layers: PackedLayers, sources: LayerSources, grid: Grid) => {
+    const ground = engineGround(sources, grid, await unpackLayers(layers, cellsOf(grid)));
+    const maps = Object.values(ground).filter((part) => part instanceof Uint8Array);
+    return transfer(
+      ground,
+      maps.map((map) => map.buffer as ArrayBuffer),
+    );
+  },
 };
 export type CellsFace = typeof cellsFace;

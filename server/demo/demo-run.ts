@@ -1,11 +1,12 @@
 import { Readable } from 'node:stream';
+import { layerSources } from '#contract/layer-sources.ts';
 import type { Option } from '#contract/options.ts';
 import { runActions } from '#contract/works.ts';
-import { valueUnitScale, type Layer, type Site } from '#contract/sites.ts';
+import type { Site } from '#contract/sites.ts';
 import { decodeCellValues, encodeCellValues } from '#rasters/cells/cell-values.ts';
 import type { CellValues } from '#sim-core/grid/ground.ts';
 import { buildGround, createRun } from '#sim-core/index.ts';
-import { runSpecSchema, runSpecVersion, type LayerSource, type RunSpec } from '#sim-core/spec/run-spec.ts';
+import { runSpecSchema, runSpecVersion, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import { findLayerByHash } from '../features/sites/layer.repository.ts';
 import { putClosing, putFrame } from '../features/runs/run-maps.service.ts';
 import { finishRun, startRun } from '../features/runs/run.service.ts';
@@ -19,13 +20,6 @@ export async function layerValues(services: Services, siteId: string, hash: stri
 }
 
 function specOf(site: Site, option: Option, seed: string): RunSpec {
-  const layerOf = (part: Layer['part']) => site.layers.find((layer) => layer.part === part)!;
-  const { hash, classes } = layerOf('habitat');
-  const classed = (of: 'capacity' | 'vigour'): LayerSource => ({
-    layer: hash,
-    classes: Object.fromEntries((classes ?? []).map((row) => [String(row.value), row[of]])),
-  });
-  const scaled = ({ hash: layer, unit }: Layer): LayerSource => ({ layer, scale: valueUnitScale[unit] });
   const { surveyYear, years, stepsPerYear, boundary, droughtIndex } = site.outlook;
   return runSpecSchema.parse({
     version: runSpecVersion,
@@ -37,12 +31,7 @@ function specOf(site: Site, option: Option, seed: string): RunSpec {
     droughtIndex,
     rates: site.plant.rates,
     actions: runActions(option.works),
-    layers: {
-      capacity: classed('capacity'),
-      vigour: classed('vigour'),
-      cover: scaled(layerOf('cover')),
-      refuge: scaled(layerOf('refuge')),
-    },
+    layers: layerSources(site),
   });
 }
 
@@ -59,7 +48,7 @@ export async function runDemoOption(
   const rasters = new Map<string, { values: CellValues; noData: number | null }>();
   for (const { hash, noData } of site.layers)
     rasters.set(hash, { values: await layerValues(services, site.id, hash), noData });
-  const ground = buildGround(spec.layers, width * height, (source) => {
+  const ground = buildGround(spec.layers, grid, (source) => {
     if (!('layer' in source)) throw new Error('The demo runs on uploaded layers alone.');
     return rasters.get(source.layer)!;
   });

@@ -41,7 +41,7 @@ export async function computeRun(site: Site, spec: RunSpec): Promise<ComputedRun
       [habitat(), cover()].map(async (file, i) => [site.layers[i].hash, await readRaster(file)] as const),
     ),
   );
-  const ground = buildGround(spec.layers, 24, (source) =>
+  const ground = buildGround(spec.layers, site.grid, (source) =>
     rasters.get('layer' in source ? source.layer : '')!,
   );
   const run = createRun({ spec, grid: site.grid, ground });

@@ -1,3 +1,5 @@
+import type { Curve } from '#sim-core/spec/layer-source.ts';
+import { curveShare } from './curve-share.ts';
 import { mapValues } from './map-values.ts';
 
 /**
@@ -28,11 +30,13 @@ export type CellValues =
 
 /** How the numbers of a raster become shares. */
 export interface ShareMapping {
-  /** share = value × scale + offset, unless `classes` is given */
+  /** share = value × scale + offset, unless `classes` or `curve` is given */
   readonly scale?: number;
   readonly offset?: number;
   /** class number → share; a class that is not listed counts as no data */
   readonly classes?: Readonly<Record<string, number>>;
+  /** value × scale + offset → share */
+  readonly curve?: Curve;
   /** raster value that means no data; NaN always does */
   readonly noData?: number | null;
   /** share where there is no data, 0 unless said */
@@ -45,10 +49,17 @@ export class ShareError extends Error {
 
 /**
  * Shares 0..1 of a raster's cells, Float32, same length.
+ * @param out written and returned; a fresh array unless given
+ * @param first number of the first cell, where the values are part of a raster
  * @throws ShareError naming the first value that leaves 0..1 (beyond rounding) and the cell it stands in
  */
-export function toShares(values: CellValues, mapping: ShareMapping = {}): Float32Array {
-  return checked(values, mapping, (shareOf) => mapValues(values, new Float32Array(values.length), shareOf));
+export function toShares(
+  values: CellValues,
+  mapping: ShareMapping = {},
+  out: Float32Array = new Float32Array(values.length),
+  first = 0,
+): Float32Array {
+  return checked(values, mapping, (shareOf) => mapValues(values, out, shareOf), first);
 }
 
 /**
@@ -69,13 +80,19 @@ function checked<T>(
   values: CellValues,
   mapping: ShareMapping,
   make: (shareOf: (value: number) => number) => T,
+  first = 0,
 ): T {
-  const { scale = 1, offset = 0, classes, noData, fill = 0 } = mapping;
+  const { scale = 1, offset = 0, classes, curve, noData, fill = 0 } = mapping;
   const table = classes && new Map(Object.entries(classes).map(([k, v]) => [Number(k), v]));
+  const mapped = (value: number) => {
+    if (table) return table.get(value) ?? fill;
+    const scaled = value * scale + offset;
+    return curve ? curveShare(curve, scaled) : scaled;
+  };
   const refused = new Set<number>();
   const made = make((value) => {
     if (Number.isNaN(value) || value === noData) return fill;
-    const share = table ? (table.get(value) ?? fill) : value * scale + offset;
+    const share = mapped(value);
     if (share >= -1e-6 && share <= 1 + 1e-6) return Math.min(1, Math.max(0, share));
     // A table is asked about values that no cell holds, too, so this is no error yet; one of many is enough.
     if (refused.size < 65_536) refused.add(value);
@@ -85,9 +102,9 @@ function checked<T>(
   const cell = values.findIndex((value: number) => refused.has(value));
   if (cell < 0) return made;
   const value = values[cell];
-  const share = table ? (table.get(value) ?? fill) : value * scale + offset;
+  const share = mapped(value);
   throw new ShareError(
-    `Cell ${cell} holds ${value}${scale === 1 && offset === 0 ? '' : ` (${share} after scale and offset)`}; ` +
+    `Cell ${first + cell} holds ${value}${scale === 1 && offset === 0 ? '' : ` (${share} after scale and offset)`}; ` +
       'a share must lie between 0 and 1. Give a scale (0.01 for per cent, 1/255 for 8 bits) or a class table.',
   );
 }

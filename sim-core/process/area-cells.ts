@@ -1,5 +1,5 @@
 import { cellAt, cellCentre, type Grid } from '#sim-core/grid/grid.ts';
-import type { Area } from '#sim-core/spec/run-spec.ts';
+import type { Area } from '#sim-core/spec/places.ts';
 
 /** Cells of an area, ascending, and the share of each that it takes. */
 export interface AreaCells {

@@ -1,5 +1,5 @@
 import { cellAt, cellCentre, type Grid } from '#sim-core/grid/grid.ts';
-import type { Mound } from '#sim-core/spec/run-spec.ts';
+import type { MoundPlace } from '#sim-core/spec/places.ts';
 import { boxAround, discShare } from './area-cells.ts';
 
 /** Refuge that a mound makes: strength k/255 of each cell that it reaches. */
@@ -13,7 +13,7 @@ export interface MoundStrengths {
  * further `halo` metres. A mound too small to hold a centre still shelters the cell that it stands in, for the share
  * that its own area is of the cell. Empty where the point lies off the grid.
  */
-export function moundStrengths(mound: Mound, grid: Grid): MoundStrengths {
+export function moundStrengths(mound: MoundPlace, grid: Grid): MoundStrengths {
   const { x, y, radius, halo, strength } = mound;
   const home = cellAt(grid, x, y);
   if (!home) return { cells: new Uint32Array(), strengths: new Uint8Array() };

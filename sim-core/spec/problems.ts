@@ -27,10 +27,10 @@ export function fieldProblems(error: { readonly issues: readonly z.core.$ZodIssu
   });
 }
 
-/** Of the ways to write a field, the one that was meant: it was got into, or its kind of value was right. */
+/** Of the ways to write a field, the one that was meant: it is wrong inside alone, or its kind of value was right. */
 function meantAlternative(alternatives: readonly (readonly z.core.$ZodIssue[])[]) {
   return (
-    alternatives.find((issues) => issues.some((issue) => issue.path.length > 0)) ??
+    alternatives.find((issues) => issues.every(({ path }) => path.length > 0)) ??
     alternatives.find((issues) => issues.length > 0 && issues.every((issue) => issue.code !== 'invalid_type'))
   );
 }

@@ -1,62 +1,28 @@
 import { z } from 'zod';
 import { weatherProblems } from '#sim-core/weather/weather-problems.ts';
-import { parameters, rateNames, type RateName, type Rates } from './parameters.ts';
+import { layerSourcesSchema } from './layer-source.ts';
 import { maximumYears } from './limits.ts';
+import { parameters, rateNames, type RateName, type Rates } from './parameters.ts';
+import { areaSchema, coordinate, maximumPlaces, moundFields, share } from './places.ts';
 import { weatherSourceSchema } from './weather-source.ts';
+
+// A spec's parts are had from here, wherever they are written.
+export { areaSchema, type Area } from './places.ts';
+export {
+  layerSourceSchema,
+  layerSourcesSchema,
+  mapRasters,
+  rasterSources,
+  type Curve,
+  type LayerSource,
+  type LayerSources,
+  type RasterSource,
+} from './layer-source.ts';
 
 /** Version of the RunSpec format; a reader refuses what it does not know. */
 export const runSpecVersion = 1;
 
-const share = z.number().min(0).max(1);
 const year = z.number().int().min(1000).max(9999);
-const coordinate = z.number();
-const metres = z.number().positive();
-
-/** Where one layer of the ground comes from: one share for all cells, or a raster with how its numbers become shares. */
-const rasterMapping = {
-  band: z.number().int().min(1).optional(),
-  scale: z.number().optional(),
-  offset: z.number().optional(),
-  /** class number → share */
-  classes: z.record(z.string().regex(/^-?\d+$/, 'a whole class number'), share).optional(),
-  /** share where the raster has no data */
-  fill: share.optional(),
-};
-export const layerSourceSchema = z.union([
-  share,
-  z.strictObject({
-    /** path of a GeoTIFF, relative to the spec */ file: z.string().min(1),
-    ...rasterMapping,
-  }),
-  z.strictObject({
-    /** SHA-256 of an uploaded raster */ layer: z.string().regex(/^[0-9a-f]{64}$/),
-    ...rasterMapping,
-  }),
-]);
-export type LayerSource = z.infer<typeof layerSourceSchema>;
-
-export const layerSourcesSchema = z.strictObject({
-  capacity: layerSourceSchema.default(1),
-  vigour: layerSourceSchema.default(1),
-  exposure: layerSourceSchema.default(0),
-  refuge: layerSourceSchema.default(0),
-  fence: layerSourceSchema.default(0),
-  cover: layerSourceSchema,
-});
-export type LayerSources = z.infer<typeof layerSourcesSchema>;
-
-/** Places on the ground, in the site's CRS, m. A cell belongs to an area when its centre does. */
-export const areaSchema = z.discriminatedUnion('shape', [
-  z.strictObject({ shape: z.literal('disc'), x: coordinate, y: coordinate, radius: metres }),
-  z.strictObject({
-    shape: z.literal('polygon'),
-    ring: z
-      .array(z.tuple([coordinate, coordinate]))
-      .min(3)
-      .max(10_000),
-  }),
-]);
-export type Area = z.infer<typeof areaSchema>;
 
 /** Works and one-off losses. What is dated in a year acts at its start and shows in that year's frame. */
 export const actionSchema = z.discriminatedUnion('kind', [
@@ -64,11 +30,7 @@ export const actionSchema = z.discriminatedUnion('kind', [
   z.strictObject({
     kind: z.literal('mound'),
     year,
-    x: coordinate,
-    y: coordinate,
-    radius: metres.max(1000),
-    strength: share.default(1),
-    halo: z.number().min(0).max(1000).default(0),
+    ...moundFields,
   }),
   /** raises cover to `cover`, never above capacity */
   z.strictObject({ kind: z.literal('planting'), year, area: areaSchema, cover: share }),
@@ -130,7 +92,7 @@ export const runSpecFields = {
   rates: ratesSchema,
   /** a list, or a source from which each replicate draws its own */
   droughtIndex: weatherSourceSchema.default(0),
-  actions: z.array(actionSchema).max(20_000).default([]),
+  actions: z.array(actionSchema).max(maximumPlaces).default([]),
   /** share of the reference cover that counts as recovered */
   target: z.number().gt(0).max(1).default(0.9),
   /** at least one of them is a raster: it gives the grid */

@@ -1,6 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
 import { getLayerValues } from '#contract/sites.ts';
-import type { ShareMapping } from '#sim-core/grid/ground.ts';
 import { maximumCells } from '#sim-core/spec/limits.ts';
 import { fetchBlob } from '#app/lib/api-client.ts';
 import { cells } from '#app/workers/cells-client.ts';
@@ -19,32 +18,4 @@ export const layerValuesQuery = (siteId: string, hash: string) =>
     queryKey: ['layer-values', siteId, hash],
     queryFn: async ({ signal }) => cells.unpack(await fetchLayer(siteId, hash, signal), limits),
     ...held,
-  });
-
-/** Shares of a layer's cells in 8 bits, as maps show them. */
-export const shareBytesQuery = (siteId: string, hash: string, mapping: ShareMapping) =>
-  queryOptions({
-    queryKey: ['layer-shares', siteId, hash, mapping],
-    queryFn: async ({ signal }) => cells.shareBytes(await fetchLayer(siteId, hash, signal), limits, mapping),
-    ...held,
-  });
-
-/**
- * Sum of a layer's shares, none above the capacity of its cell.
- * @param ceiling the layer and the mapping that give the capacity; undefined where there is none
- */
-export const sumSharesQuery = (
-  siteId: string,
-  hash: string,
-  mapping: ShareMapping,
-  ceiling: { hash: string; mapping: ShareMapping } | undefined,
-) =>
-  queryOptions({
-    queryKey: ['layer-sum', siteId, hash, mapping, ceiling],
-    queryFn: async ({ client, signal }) => {
-      const capacity =
-        ceiling && (await client.fetchQuery(shareBytesQuery(siteId, ceiling.hash, ceiling.mapping)));
-      return cells.sumShares(await fetchLayer(siteId, hash, signal), limits, mapping, capacity);
-    },
-    staleTime: Infinity,
   });

@@ -1,6 +1,6 @@
+import { layerOf, layerSources } from '#contract/layer-sources.ts';
 import { runActions, type WorkInput } from '#contract/works.ts';
-import type { Layer, LayerPart, Site } from '#contract/sites.ts';
-import { valueUnitScale } from '#contract/sites.ts';
+import { valueUnitScale, type Site } from '#contract/sites.ts';
 import { fitKernel, RunProblem } from '#sim-core/index.ts';
 import { prepareWorks } from '#sim-core/process/works.ts';
 import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
@@ -23,13 +23,8 @@ export type Composition =
   | { readonly spec: RunSpec; readonly problems?: undefined }
   | { readonly spec?: undefined; readonly problems: readonly CompositionProblem[] };
 
-/** The layer that plays a part on a site. */
-export const layerOf = (site: Site, part: LayerPart): Layer | undefined =>
-  site.layers.find((layer) => layer.part === part);
-
 /**
- * The RunSpec of an option on a site: capacity and vigour from the classes of `habitat`, cover and refuge by the scale
- * of their unit, each named by the hash of its file. Instead of a spec it returns everything that stands in the way,
+ * The RunSpec of an option on a site. Instead of a spec it returns everything that stands in the way,
  * each with the page where it is mended: what is missing, what the schema refuses, what the engine refuses.
  */
 export function composeRunSpec(
@@ -56,23 +51,6 @@ export function composeRunSpec(
   if (!parsed.success) return { problems: fieldProblems(parsed.error).map(placed) };
   const refused = engineRefusals(parsed.data, site);
   return refused.length > 0 ? { problems: refused.map(placed) } : { spec: parsed.data };
-}
-
-function layerSources(site: Site) {
-  const habitat = layerOf(site, 'habitat');
-  const classes = habitat?.classes ?? [];
-  const table = (of: 'capacity' | 'vigour') => ({
-    layer: habitat?.hash,
-    classes: Object.fromEntries(classes.map((row) => [String(row.value), row[of]])),
-  });
-  const scaled = (layer: Layer | undefined) =>
-    layer && { layer: layer.hash, scale: valueUnitScale[layer.unit] };
-  return {
-    capacity: table('capacity'),
-    vigour: table('vigour'),
-    cover: scaled(layerOf(site, 'cover')),
-    refuge: scaled(layerOf(site, 'refuge')) ?? 0,
-  };
 }
 
 function missingGround(site: Site): CompositionProblem[] {

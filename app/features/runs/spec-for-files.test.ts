@@ -1,6 +1,6 @@
 // @vitest-environment node
 import { expect, it } from 'vitest';
-import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
+import { runSpecSchema, type LayerSource } from '#sim-core/spec/run-spec.ts';
 import { composeRunSpec } from './compose-run-spec.ts';
 import { fileNames, specForFiles } from './spec-for-files.ts';
 import { siteFixture } from './testing/site-fixture.ts';
@@ -21,6 +21,46 @@ it('names each raster by its file, keeps how its numbers are read, and is a RunS
     fence: 0,
   });
   expect({ ...written, layers: spec.layers }).toEqual(spec);
+});
+
+it('names the rasters inside a layer that is put together, and leaves the rest', () => {
+  const mounds = [{ x: 1, y: 2, radius: 1, strength: 1, halo: 0 }];
+  const [, cover] = site.layers;
+  const made: LayerSource = {
+    highest: [
+      { mounds },
+      {
+        product: [
+          {
+            layer: cover.hash,
+            curve: [
+              [0, 0],
+              [1, 1],
+            ],
+          },
+          0.5,
+        ],
+      },
+    ],
+  };
+  const written = specForFiles({ ...spec, layers: { ...spec.layers, refuge: made } }, site.layers);
+  expect(written.layers.refuge).toEqual({
+    highest: [
+      { mounds },
+      {
+        product: [
+          {
+            file: 'cover.tif',
+            curve: [
+              [0, 0],
+              [1, 1],
+            ],
+          },
+          0.5,
+        ],
+      },
+    ],
+  });
 });
 
 it('tells rasters of one file name apart by their part, also where only capitals differ', () => {

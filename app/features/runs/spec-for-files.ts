@@ -1,5 +1,5 @@
 import type { Run } from '#contract/runs.ts';
-import type { LayerSource, RunSpec } from '#sim-core/spec/run-spec.ts';
+import { mapRasters, type LayerSource, type RasterSource, type RunSpec } from '#sim-core/spec/run-spec.ts';
 
 type RunLayer = Pick<Run['layers'][number], 'hash' | 'part' | 'fileName'>;
 
@@ -19,14 +19,15 @@ export function fileNames(layers: readonly RunLayer[]): Map<string, string> {
  */
 export function specForFiles(spec: RunSpec, layers: readonly RunLayer[]): RunSpec {
   const names = fileNames(layers);
-  const onFile = (source: LayerSource): LayerSource => {
-    if (typeof source === 'number' || 'file' in source) return source;
+  const named = (source: RasterSource): RasterSource => {
+    if ('file' in source) return source;
     const { layer, ...mapping } = source;
     const file = names.get(layer);
     if (file === undefined)
       throw new Error(`Found the raster ${layer} in the spec; expected one of the run's layers.`);
     return { file, ...mapping };
   };
+  const onFile = (source: LayerSource) => mapRasters(source, named);
   const { capacity, vigour, exposure, refuge, fence, cover } = spec.layers;
   return {
     ...spec,

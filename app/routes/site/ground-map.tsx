@@ -33,7 +33,7 @@ export function GroundMap(props: {
         Nothing to show yet: the first layer appears here.
       </div>
     );
-  const error = rasters.errors[shown];
+  const error = shown === 'habitat' ? rasters.errors.habitat : rasters.errors.ground;
   return (
     <>
       <SiteMap
@@ -55,7 +55,7 @@ export function GroundMap(props: {
       {error !== undefined && (
         <div className="absolute inset-x-6 top-4 max-w-[520px] bg-ground">
           <ProblemNotice error={error} title={`${partLabels[shown]} cannot be shown.`}>
-            <WordButton lined onClick={() => rasters.retry(shown)}>
+            <WordButton lined onClick={rasters.retry}>
               Try again
             </WordButton>
           </ProblemNotice>
@@ -76,9 +76,9 @@ export function GroundMap(props: {
         })
         .join(', ')}.`;
     const [amount, words] =
-      part === 'cover' ? [rasters.covered, 'covered'] : [rasters.sheltered, 'with some refuge'];
+      part === 'cover' ? [rasters.facts?.covered, 'covered'] : [rasters.facts?.sheltered, 'with some refuge'];
     return amount === undefined
       ? `${partLabels[part]} of ${formatArea(whole * area)}.`
-      : `${formatArea(amount)} ${words}, ${formatShare(amount / (whole * area))} of the site.`;
+      : `${formatArea(amount * area)} ${words}, ${formatShare(amount / whole)} of the site.`;
   }
 }

@@ -135,6 +135,8 @@ function EngineView({ rasters, classes }: Pick<GroundMarginProps, 'rasters' | 'c
     [habitat, classes.rows, grid.cellSize],
   );
   const pending = 'being counted';
+  const { facts } = rasters;
+  const covered = facts && facts.covered * grid.cellSize ** 2;
   return (
     <section className="border-t border-ink py-3" aria-label="What the engine will see">
       <h2 className="mb-1 text-body">What the engine will see</h2>
@@ -152,9 +154,9 @@ function EngineView({ rasters, classes }: Pick<GroundMarginProps, 'rasters' | 'c
           <dd>
             {!has('cover')
               ? 'needs cover'
-              : rasters.covered === undefined
+              : covered === undefined
                 ? pending
-                : `${formatArea(rasters.covered)}${plantable ? `, ${formatShare(rasters.covered / plantable)} of that` : ''}`}
+                : `${formatArea(covered)}${plantable ? `, ${formatShare(covered / plantable)} of that` : ''}`}
           </dd>
         </div>
         <div>
@@ -162,9 +164,9 @@ function EngineView({ rasters, classes }: Pick<GroundMarginProps, 'rasters' | 'c
           <dd>
             {!has('refuge')
               ? 'none'
-              : rasters.sheltered === undefined
+              : facts === undefined
                 ? pending
-                : formatArea(rasters.sheltered)}
+                : formatArea(facts.sheltered * grid.cellSize ** 2)}
           </dd>
         </div>
       </dl>

@@ -69,11 +69,7 @@ function show(more: { works?: Work[]; on?: Site; year?: string; justMade?: boole
       option={option}
       ground={{
         habitat: undefined,
-        cover: undefined,
         refuge,
-        capacity: undefined,
-        covered: undefined,
-        sheltered: undefined,
         errors: {},
         retry: () => undefined,
       }}

@@ -179,19 +179,13 @@ export function OptionMap(props: OptionMapProps) {
 function GroundState({ ground }: { ground: GroundRasters }) {
   const { site } = useSite();
   const has = (part: 'habitat' | 'cover') => site.layers.some((layer) => layer.part === part);
-  const error = ground.errors.cover ?? ground.errors.habitat;
+  const error = ground.errors.ground ?? ground.errors.habitat;
   const box = 'absolute top-10 left-4 max-w-[420px] bg-ground px-3 py-1.5 text-note lg:left-6';
   if (error)
     return (
       <div className={box}>
         <ProblemNotice error={error} title="The ground could not be fetched.">
-          <WordButton
-            lined
-            onClick={() => {
-              if (ground.errors.cover) ground.retry('cover');
-              if (ground.errors.habitat) ground.retry('habitat');
-            }}
-          >
+          <WordButton lined onClick={ground.retry}>
             Try again
           </WordButton>
         </ProblemNotice>

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
-import { runSpecSchema, type RunSpec } from '#sim-core/spec/run-spec.ts';
+import { rasterSources, runSpecSchema, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import { SimulateError } from './simulate-error.ts';
 
 /** A RunSpec whose layers are files, run once or as an ensemble. */
@@ -45,24 +45,25 @@ export function parseHeadlessSpec(text: string): HeadlessSpec {
 
 function whatOnlyFilesCanBe({ layers }: RunSpec): FieldProblem[] {
   const problems: FieldProblem[] = [];
-  const sources = Object.entries(layers);
-  for (const [name, source] of sources) {
-    if (typeof source === 'number') continue;
+  const named = Object.entries(layers).flatMap(([name, source]) =>
+    rasterSources(source).map(({ at, raster }) => ({ field: `layers.${name}${at}`, source: raster })),
+  );
+  for (const { field, source } of named) {
     if ('layer' in source)
       problems.push({
-        field: `layers.${name}.layer`,
+        field: `${field}.layer`,
         message: 'Names an uploaded raster; here, name a GeoTIFF with "file"',
       });
     if (source.band !== undefined && source.band !== 1)
       problems.push({
-        field: `layers.${name}.band`,
+        field: `${field}.band`,
         message: `Found ${source.band}; files of one band are read. Take the band out with gdal_translate -b ${source.band} IN.tif OUT.tif`,
       });
   }
-  if (sources.every(([, source]) => typeof source === 'number'))
+  if (named.length === 0)
     problems.push({
       field: 'layers',
-      message: 'All are constants; at least one must be a GeoTIFF, which gives the grid',
+      message: 'None is a raster; at least one must be a GeoTIFF, which gives the grid',
     });
   return problems;
 }

@@ -10,14 +10,14 @@ import { buildGround, RunProblem } from '#sim-core/index.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { groundLayers, type Ground } from '#sim-core/grid/ground.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
-import type { LayerSources } from '#sim-core/spec/run-spec.ts';
+import { rasterSources, type LayerSources } from '#sim-core/spec/run-spec.ts';
 import { SimulateError } from './simulate-error.ts';
 
 export interface GroundOnFile {
   readonly grid: Grid;
   readonly crsName: string;
   readonly ground: Ground;
-  /** the files that layers came from, by layer: path as the spec names it, SHA-256 of the bytes */
+  /** the files that layers came from, by their place in `layers`: path as the spec names it, SHA-256 of the bytes */
   readonly files: Readonly<Record<string, { file: string; sha256: string }>>;
 }
 
@@ -33,9 +33,11 @@ export async function readGround(layers: LayerSources, specPath: string): Promis
   const hashes = new Map<string, string>();
   const problems: FieldProblem[] = [];
   let first: Raster | undefined;
-  for (const layer of groundLayers) {
-    const source = layers[layer];
-    if (typeof source === 'number' || !('file' in source)) continue;
+  const named = groundLayers.flatMap((layer) =>
+    rasterSources(layers[layer]).map(({ at, raster }) => ({ field: layer + at, source: raster })),
+  );
+  for (const { field, source } of named) {
+    if (!('file' in source)) continue;
     const path = resolve(dirname(specPath), source.file);
     try {
       const raster = rasters.get(path) ?? (await withFileSource(path, (bytes) => readRaster(bytes)));
@@ -43,14 +45,14 @@ export async function readGround(layers: LayerSources, specPath: string): Promis
       validateOnGrid(raster, first.grid);
       rasters.set(path, raster);
       if (!hashes.has(path)) hashes.set(path, await sha256Of(path));
-      files[layer] = { file: source.file, sha256: hashes.get(path) ?? '' };
+      files[field] = { file: source.file, sha256: hashes.get(path) ?? '' };
     } catch (error) {
-      problems.push({ field: `layers.${layer}`, message: `${path}: ${whyNot(error)}` });
+      problems.push({ field: `layers.${field}`, message: `${path}: ${whyNot(error)}` });
     }
   }
   if (problems.length > 0 || !first) throw SimulateError.ofFields(problems);
   const { grid, crsName } = first;
-  const ground = buildGround(layers, grid.width * grid.height, (source) => {
+  const ground = buildGround(layers, grid, (source) => {
     const raster = 'file' in source ? rasters.get(resolve(dirname(specPath), source.file)) : undefined;
     if (!raster) throw new RunProblem([{ field: 'layers', message: 'Only files can be read here' }]);
     return raster;

@@ -77,6 +77,39 @@ interface Summary extends RunResult {
 const summaryOf = async (out: string) => JSON.parse(await readText(out, 'summary.json')) as Summary;
 
 describe('a run on files', () => {
+  test('takes layers put together from files, curves and places, and says where each file stands', async () => {
+    const heights = Float32Array.from({ length: cells }, (_, i) => (i % grid.width) / 10);
+    await writeFile(join(folder, 'heights.tif'), encodeGeoTiff({ grid, values: heights }));
+    const curve = [
+      [0.2, 0.5],
+      [1, 1],
+    ];
+    const mound = { x: 400_005.5, y: 4_999_993.5, radius: 2, halo: 1 };
+    const layers = {
+      capacity: { product: [plain.layers.capacity, { file: 'heights.tif', curve }] },
+      refuge: { highest: [{ mounds: [mound] }, { file: 'heights.tif', scale: 0.1 }] },
+      cover: plain.layers.cover,
+    };
+    await writeSpec({ ...plain, layers });
+    expect(await run('spec.json', '--out', 'out')).toBe(0);
+    const summary = await summaryOf('out');
+    expect(Object.keys(summary.layers)).toEqual([
+      'capacity.product.0',
+      'capacity.product.1',
+      'refuge.highest.1',
+      'cover',
+    ]);
+    const survey = (await readTif('out', 'cover-2020.tif')).values;
+    // Column 3: 0.3 m stands for a factor of 0.5 + 0.5 · 0.1/0.8, on capacity 0.8.
+    expect(survey[3]).toBeCloseTo(0.8 * (0.5 + (0.5 * 0.1) / 0.8), 2);
+    await writeSpec({ ...plain, layers: { ...layers, refuge: { mounds: [{ ...mound, x: 0 }] } } });
+    expect(await run('spec.json', '--out', 'other')).toBe(1);
+    expect(said).toMatch(/layers\.refuge: Mound 1 reaches no cell/);
+    await writeSpec({ ...plain, layers: { ...layers, fence: { highest: [0, { file: 'none.tif' }] } } });
+    expect(await run('spec.json', '--out', 'other')).toBe(1);
+    expect(said).toMatch(/layers\.fence\.highest\.1: .*no such file/);
+  });
+
   test('is the engine’s own run, written as maps, series and summary', async () => {
     await writeSpec(plain);
     expect(await run('spec.json', '--out', 'out')).toBe(0);
@@ -265,7 +298,7 @@ describe('what cannot be run is refused in words, and nothing is written', () =>
   });
 
   test('constants alone, uploaded layers and second bands', async () => {
-    expect(await refused({ ...plain, layers: { cover: 0.5 } })).toMatch(/layers: All are constants/);
+    expect(await refused({ ...plain, layers: { cover: 0.5 } })).toMatch(/layers: None is a raster/);
     said = '';
     const layers = { cover: { layer: 'a'.repeat(64) }, refuge: { file: 'cover.tif', band: 2 } };
     const message = await refused({ ...plain, layers });

@@ -2,26 +2,28 @@ import type { Grid } from '#sim-core/grid/grid.ts';
 import { fitKernel, RunProblem } from '#sim-core/index.ts';
 import { prepareWorks } from '#sim-core/process/works.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
-import type { RunSpec } from '#sim-core/spec/run-spec.ts';
+import { rasterSources, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { foreignHashes } from './run.repository.ts';
 
-/** The rasters that a spec names, each at its field. */
-export function layerHashes(spec: RunSpec): { field: string; hash: string; band: number | undefined }[] {
-  return Object.entries(spec.layers).flatMap(([name, source]) =>
-    typeof source === 'object' && 'layer' in source
-      ? [{ field: `spec.layers.${name}`, hash: source.layer, band: source.band }]
-      : [],
+const named = (spec: RunSpec) =>
+  Object.entries(spec.layers).flatMap(([name, source]) =>
+    rasterSources(source).map(({ at, raster }) => ({ field: `spec.layers.${name}${at}`, raster })),
   );
-}
+
+/** The uploaded rasters that a spec names, each at its field. */
+export const layerHashes = (spec: RunSpec): { field: string; hash: string; band: number | undefined }[] =>
+  named(spec).flatMap(({ field, raster }) =>
+    'layer' in raster ? [{ field, hash: raster.layer, band: raster.band }] : [],
+  );
 
 /** What is wrong with the layers of a spec that should run on a site; empty when nothing is. */
 export async function checkLayers(manager: Manager, siteId: string, spec: RunSpec): Promise<FieldProblem[]> {
   const problems: FieldProblem[] = [];
-  for (const [name, source] of Object.entries(spec.layers))
-    if (typeof source === 'object' && 'file' in source)
+  for (const { field, raster } of named(spec))
+    if ('file' in raster)
       problems.push({
-        field: `spec.layers.${name}.file`,
+        field: `${field}.file`,
         message: 'Found a file; runs of a site take its uploaded layers, named by their SHA-256 in `layer`',
       });
   const used = layerHashes(spec);

@@ -30,6 +30,14 @@ describe('an impossible run is refused at the field that is wrong', () => {
     ['spec.actions.0.year', { actions: [{ ...mound, year: 2040 }] }],
     ['spec.actions.0', { actions: [{ ...mound, x: 0 }] }],
     ['spec.layers.cover.layer', { layers: { cover: { layer: elsewhere } } }],
+    [
+      'spec.layers.capacity.product.1.layer',
+      { layers: { cover: 0, capacity: { product: [1, { layer: elsewhere }] } } },
+    ],
+    [
+      'spec.layers.refuge.highest.0.file',
+      { layers: { cover: 0, refuge: { highest: [{ file: 'a.tif' }, 0] } } },
+    ],
     ['spec.layers.cover.file', { layers: { cover: { file: 'cover.tif' } } }],
     ['spec.layers.cover.band', { layers: { cover: { layer: 'COVER', band: 2 } } }],
     ['spec.layers', { layers: { cover: { layer: 'not a hash' } } }],
