@@ -66,6 +66,7 @@ const folderRules = [
       ['#sim-core/grid', '#rasters', 'geotiff', 'proj4', 'fflate'],
       'rasters imports sim-core/grid, geotiff, proj4 and fflate; only geo/epsg-register.ts reads epsg-index.',
     ),
+    except: ['rasters/geo/epsg-register.ts'],
   },
   {
     top: 'server/contract',
@@ -81,7 +82,11 @@ const folderRules = [
   },
   {
     top: 'app',
-    pattern: { regex: '^#server/', message: 'The app speaks to the server through #contract alone.' },
+    pattern: {
+      regex: '^#server/|^#rasters/(?:geo|describe|align)/',
+      message:
+        'The app speaks to the server through #contract alone, and the EPSG register stays off the browser.',
+    },
   },
 ];
 

@@ -2,8 +2,7 @@ import type { CompressionName, RasterDataType } from '#rasters/read/tiff-layout.
 
 /** What a CRS is called and how long its unit is. */
 export interface CrsDescription {
-  /** EPSG code, or null for a CRS that the file spells out and no code was found for */
-  readonly epsg: number | null;
+  readonly epsg: number;
   /** the name in the EPSG register, else the file's own, else `EPSG:n` */
   readonly name: string;
   readonly kind: 'projected' | 'geographic';
@@ -47,9 +46,11 @@ export interface RasterDescription {
   /** sides of a cell, both positive, in units of the CRS */
   readonly cellWidth: number;
   readonly cellHeight: number;
-  /** sides of a cell on the ellipsoid at the raster's centre, m: in degrees its width shrinks with latitude */
+  /** sides of a cell, m: in degrees those on the ellipsoid at the raster's centre, as a degree shrinks with latitude */
   readonly cellMetres: { readonly width: number; readonly height: number };
-  /** bounding box in degrees on WGS 84; null where the CRS cannot be transformed */
+  /** whether lengths in the CRS are those on the ground within 2 % here; never for degrees */
+  readonly metresTrue: boolean;
+  /** bounding box in degrees on the CRS's own datum; null where the CRS cannot be computed here */
   readonly lonLat: LonLatBox | null;
   /** the first row of the file lies in the south */
   readonly southUp: boolean;

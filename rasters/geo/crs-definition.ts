@@ -12,6 +12,8 @@ export interface CrsDefinition {
   readonly use: { west: number; south: number; east: number; north: number } | null;
   /** definition for proj4 */
   readonly proj4: string;
+  /** accuracy of the shift to WGS 84 that the definition holds, m, as the register states it */
+  readonly accuracy: number | null;
 }
 
 /** What a move from one CRS into another is worth. */

@@ -7,8 +7,8 @@ import { damaged } from './raster-error.ts';
 import { compressions, type TiffLayout } from './tiff-layout.ts';
 
 /**
- * The cells of one strip or tile, in this machine's byte order: `rows` × the block's width × the bytes of a cell, in a
- * fresh buffer. No decoder writes a byte more, whatever the block claims.
+ * The cells of one strip or tile, in this machine's byte order: `rows` × the block's width × the samples of a cell ×
+ * their bytes, in a fresh buffer. No decoder writes a byte more, whatever the block claims.
  * @throws RasterError `raster-truncated` when the block is damaged or does not hold so many bytes
  */
 export async function decodeBlock(
@@ -16,12 +16,12 @@ export async function decodeBlock(
   rows: number,
   layout: TiffLayout,
 ): Promise<Uint8Array<ArrayBuffer>> {
-  const { compression, predictor, blockWidth, bytesPerCell, littleEndian } = layout;
+  const { compression, predictor, blockWidth, samples, bytesPerCell, littleEndian } = layout;
   if (compression === compressions.lerc) return decodeLerc(block, rows, layout);
-  const size = rows * blockWidth * bytesPerCell;
+  const size = rows * blockWidth * samples * bytesPerCell;
   const bytes =
     compression === compressions.zstd ? await decodeZstd(block, size) : unpack(block, size, compression);
-  const shape = { width: blockWidth, rows, bytesPerCell, littleEndian };
+  const shape = { width: blockWidth, samples, rows, bytesPerCell, littleEndian };
   if (predictor === 3) {
     undoFloatDifferences(bytes, shape);
     return bytes;

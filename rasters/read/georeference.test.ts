@@ -57,7 +57,7 @@ describe('where cells lie', () => {
       originY: 5_316_081.3,
       epsg: 32660,
     });
-    expect(crsName).toBe('UTM Zone 60 N with WGS 84');
+    expect(crsName).toBe('WGS 84 / UTM zone 60N');
   });
 
   it('an area file and a point file of the same ground have the same corner', async () => {
@@ -90,42 +90,74 @@ describe('where cells lie', () => {
       originY: 5_301_750,
     });
     expect(await codeOf(tiff(matrix(...straight.with(1, 0.1)), projected(32631)))).toBe('raster-rotated');
-    expect(await codeOf(tiff(matrix(...straight.with(5, 0.5)), projected(32631)))).toBe('raster-rotated');
+    expect(await codeOf(tiff(matrix(...straight.with(0, -0.5)), projected(32631)))).toBe('raster-rotated');
+    expect((await readRaster(tiff(matrix(...straight.with(5, 0.5)), projected(32631)))).grid.originY).toBe(
+      5_301_751,
+    );
     expect(await codeOf(tiff(matrix(...straight.with(5, -0.6)), projected(32631)))).toBe('raster-not-square');
     expect(await codeOf(tiff(matrix(...straight.with(3, NaN)), projected(32631)))).toBe('raster-truncated');
+    expect(await codeOf(tiff(scale(1, -1, 0), place[1], projected(32631)))).toBe('raster-rotated');
   });
 });
 
 describe('which CRS', () => {
   it.each([
-    ['UTM without its unit, as the code is known', projected(32631), 'EPSG:32631'],
-    ['an unlisted code with metres', projected(3765, [3076, 0, 1, 9001]), 'EPSG:3765'],
-    ['an unlisted code without its unit', projected(3765), 'raster-not-metric'],
-    ['US survey feet', projected(32631, [3076, 0, 1, 9003]), 'raster-not-metric'],
+    ['UTM without its unit, as the code is known', projected(32631), 'WGS 84 / UTM zone 31N'],
+    ['a code that the register lacks, in metres', projected(32600, [3076, 0, 1, 9001]), 'EPSG:32600'],
+    ['a code that the register lacks, without its unit', projected(32600), 'raster-crs'],
+    ['a code that the register lacks, in feet', projected(32600, [3076, 0, 1, 9002]), 'raster-crs'],
+    ['US survey feet with a code of metres', projected(32631, [3076, 0, 1, 9003]), 'raster-crs'],
+    ['the other feet than the code’s', projected(2263, [3076, 0, 1, 9002]), 'raster-crs'],
+    ['a geographic code in place of a projected one', projected(4326), 'raster-crs'],
+    ['a vertical code', keys([1024, 0, 1, 2], [2048, 0, 1, 5703]), 'raster-crs'],
     ['Mercator of the whole world', projected(3857, [3076, 0, 1, 9001]), 'raster-not-metric'],
     ['a user-defined CRS', projected(32767, [3076, 0, 1, 9001]), 'raster-not-projected'],
-    ['degrees', keys([1024, 0, 1, 2], [2048, 0, 1, 4326]), 'raster-not-projected'],
-    ['degrees without a model type', keys([2048, 0, 1, 4326]), 'raster-not-projected'],
-    ['a projected code without a model type', keys([3072, 0, 1, 32631]), 'EPSG:32631'],
+    [
+      'coordinates that are no degrees',
+      keys([1024, 0, 1, 2], [2048, 0, 1, 4326]),
+      'raster-not-georeferenced',
+    ],
+    ['gons', keys([1024, 0, 1, 2], [2048, 0, 1, 4326], [2054, 0, 1, 9105]), 'raster-crs'],
+    ['a projected code without a model type', keys([3072, 0, 1, 32631]), 'WGS 84 / UTM zone 31N'],
     ['geocentric', keys([1024, 0, 1, 3]), 'raster-not-projected'],
     ['empty keys', keys(), 'raster-not-georeferenced'],
   ])('%s', async (_, crs, outcome) => {
     expect(await codeOf(tiff(...place, crs))).toBe(outcome);
   });
 
-  it('a unit of its own is taken when it is one metre long', async () => {
+  it('a unit of its own is taken when it is as long as the code’s', async () => {
     const own = (size: number) => [doubles(size), projected(3765, [3076, 0, 1, 32767], [3077, 34736, 1, 0])];
-    expect(await codeOf(tiff(...place, ...own(1)))).toBe('EPSG:3765');
-    expect(await codeOf(tiff(...place, ...own(0.3048)))).toBe('raster-not-metric');
+    expect(await codeOf(tiff(...place, ...own(1)))).toBe('HTRS96 / Croatia TM');
+    expect(await codeOf(tiff(...place, ...own(0.3048)))).toBe('raster-crs');
   });
 
-  it('a citation is one clean line', async () => {
+  it('the citation names a code that the register lacks, as one clean line', async () => {
     const file = tiff(
       ...place,
-      projected(32631, [1026, 34737, 30, 0]),
+      projected(32600, [3076, 0, 1, 9001], [1026, 34737, 30, 0]),
       text('PCS Name = UTM\n31  N|and more'),
     );
     expect(await codeOf(file)).toBe('UTM 31 N');
+  });
+
+  it.each([
+    ['WGS_1984_UTM_Zone_31N|', [], 'WGS 84 / UTM zone 31N'],
+    ['WGS 84 / UTM zone 31N|', [3], 'WGS 84 / UTM zone 31N'],
+    ['PCS Name = NAD_1983_UTM_Zone_17N|', [-81], 'NAD83 / UTM zone 17N'],
+    ['WGS 84 / UTM zone 33S|', [15], 'WGS 84 / UTM zone 33S'],
+    ['ETRS89 / UTM zone 32N|', [], 'ETRS89 / UTM zone 32N'],
+    ['WGS 84 / UTM zone 31N|', [9], 'raster-not-projected'],
+    ['NAD83 / UTM zone 17S|', [], 'raster-not-projected'],
+    ['WGS 84 / UTM zone 61N|', [], 'raster-not-projected'],
+    ['Site grid 31N|', [], 'raster-not-projected'],
+  ])('a CRS spelled out as %s with central meridian %s is %s', async (name, meridian, outcome) => {
+    const file = tiff(
+      ...place,
+      projected(32767, [3073, 34737, name.length, 0], ...meridian.map(() => [3080, 34736, 1, 0])),
+      text(name),
+      ...(meridian.length > 0 ? [doubles(...meridian)] : []),
+    );
+    expect(await codeOf(file)).toBe(outcome);
   });
 
   it('no keys at all', async () => {

@@ -7,7 +7,7 @@ const blobOf = (name: string) => {
   const bytes = readFileSync(new URL(`../fixtures/${name}`, import.meta.url));
   return new Uint8Array(bytes.subarray(bytes.indexOf('Lerc2 ')));
 };
-const shape = { width: 9, rows: 7, dataType: 'float32' } as const;
+const shape = { width: 9, samples: 1, rows: 7, dataType: 'float32' } as const;
 const missing = (mask: Uint8Array) =>
   Array.from({ length: 63 }, (_, i) => i).filter((i) => (mask[i >> 3] & (0x80 >> (i & 7))) === 0);
 

@@ -9,6 +9,8 @@ export interface LercBlob {
 
 interface Shape {
   readonly width: number;
+  /** values of a cell */
+  readonly samples: number;
   readonly rows: number;
   readonly dataType: RasterDataType;
 }
@@ -44,7 +46,7 @@ const largestMicroBlock = 256;
  * Layout of the header and mask from the decoder that geotiff.js uses (lerc, LercDecode.js).
  * @throws RasterError `raster-truncated` when the header says anything else
  */
-export function readLercBlob(blob: Uint8Array, { width, rows, dataType }: Shape): LercBlob {
+export function readLercBlob(blob: Uint8Array, { width, samples, rows, dataType }: Shape): LercBlob {
   if (blob.length < maskAt || !new TextDecoder().decode(blob.subarray(0, 6)).startsWith('Lerc2 '))
     throw damaged('a LERC block without its header');
   const view = new DataView(blob.buffer, blob.byteOffset, blob.byteLength);
@@ -54,8 +56,8 @@ export function readLercBlob(blob: Uint8Array, { width, rows, dataType }: Shape)
     throw damaged(
       `a LERC block of ${says(fields.width)} × ${says(fields.height)} cells where ${width} × ${rows} belong`,
     );
-  if (says(fields.valuesPerCell) !== 1 || imageTypes[says(fields.imageType)] !== dataType)
-    throw damaged(`a LERC block of other numbers than ${dataType}`);
+  if (says(fields.valuesPerCell) !== samples || imageTypes[says(fields.imageType)] !== dataType)
+    throw damaged(`a LERC block of other numbers than ${samples} ${dataType} a cell`);
   if (says(fields.blobSize) !== blob.length)
     throw damaged(`a LERC block of ${blob.length} bytes that says ${says(fields.blobSize)}`);
   const microBlock = says(fields.microBlock);

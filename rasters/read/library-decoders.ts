@@ -45,17 +45,17 @@ export async function decodeZstd(block: Uint8Array, size: number): Promise<Uint8
 export async function decodeLerc(
   block: Uint8Array,
   rows: number,
-  { blockWidth, bytesPerCell, dataType, littleEndian, lercPacking }: TiffLayout,
+  { blockWidth, samples, bytesPerCell, dataType, littleEndian, lercPacking }: TiffLayout,
 ): Promise<Uint8Array<ArrayBuffer>> {
-  const size = rows * blockWidth * bytesPerCell;
+  const size = rows * blockWidth * samples * bytesPerCell;
   const blob = await unpackBlob(block, size, lercPacking);
-  const { mask } = readLercBlob(blob, { width: blockWidth, rows, dataType });
+  const { mask } = readLercBlob(blob, { width: blockWidth, samples, rows, dataType });
   const decoded = await decodeByLibrary(compressions.lerc, blob.buffer);
   // 8-bit cells that were kept as they are come back as the blob they lie in, at its end.
   const bytes =
     decoded === blob.buffer ? blob.slice(blob.length - size) : exactly(size, new Uint8Array(decoded));
   toHostOrder(bytes, bytesPerCell, littleEndian);
-  if (mask) setMissing(bytes, mask, dataType);
+  if (mask) setMissing(bytes, mask, { dataType, samples });
   return bytes;
 }
 
@@ -86,7 +86,11 @@ async function unpackBlob(
   }
 }
 
-function setMissing(bytes: Uint8Array<ArrayBuffer>, mask: Uint8Array, dataType: string): void {
+function setMissing(
+  bytes: Uint8Array<ArrayBuffer>,
+  mask: Uint8Array,
+  { dataType, samples }: Pick<TiffLayout, 'dataType' | 'samples'>,
+): void {
   if (!dataType.startsWith('float'))
     throw new RasterError('raster-type', {
       found: `a LERC block of ${dataType} numbers with cells left out`,
@@ -94,5 +98,6 @@ function setMissing(bytes: Uint8Array<ArrayBuffer>, mask: Uint8Array, dataType: 
       remedy: 'Write it again with gdal_translate -co COMPRESS=DEFLATE IN.tif OUT.tif.',
     });
   const cells = dataType === 'float32' ? new Float32Array(bytes.buffer) : new Float64Array(bytes.buffer);
-  for (let i = 0; i < cells.length; i++) if ((mask[i >> 3] & (0x80 >> (i & 7))) === 0) cells[i] = NaN;
+  for (let i = 0; i < cells.length / samples; i++)
+    if ((mask[i >> 3] & (0x80 >> (i & 7))) === 0) cells.fill(NaN, i * samples, (i + 1) * samples);
 }

@@ -1,6 +1,6 @@
 import { gridDifferences, type Grid } from '#sim-core/grid/grid.ts';
 import { RasterError } from './raster-error.ts';
-import type { Raster } from './read-raster.ts';
+import type { Raster } from './raster.ts';
 
 /**
  * Checks that a raster has the very cells of the working grid.

@@ -2,7 +2,7 @@ import { expect, it } from 'vitest';
 import { differenceFloats } from '#rasters/write/difference-floats.ts';
 import { toHostOrder, undoDifferences, undoFloatDifferences } from './predictor.ts';
 
-const shape = { width: 3, rows: 2, littleEndian: true };
+const shape = { width: 3, samples: 1, rows: 2, littleEndian: true };
 
 it('undoes differences row by row, in arithmetic of the cell’s width', () => {
   const bytes = Uint8Array.of(250, 10, 1, 5, 255, 1);
@@ -19,7 +19,7 @@ it('undoes differences row by row, in arithmetic of the cell’s width', () => {
 it('undoes floating-point differences: planes of bytes, most significant first', () => {
   // 1.0 = 3f 80 00 00 and 2.0 = 40 00 00 00: planes 3f 40 | 80 00 | 00 00 | 00 00, then byte differences.
   const bytes = Uint8Array.of(0x3f, 0x01, 0x40, 0x80, 0, 0, 0, 0);
-  undoFloatDifferences(bytes, { width: 2, rows: 1, bytesPerCell: 4, littleEndian: true });
+  undoFloatDifferences(bytes, { width: 2, samples: 1, rows: 1, bytesPerCell: 4, littleEndian: true });
   expect([...new Float32Array(bytes.buffer)]).toEqual([1, 2]);
   expect([...differenceFloats(new Uint8Array(Float32Array.of(1, 2).buffer), 2)]).toEqual([
     0x3f, 0x01, 0x40, 0x80, 0, 0, 0, 0,

@@ -12,6 +12,8 @@ export type RasterErrorCode =
   | 'raster-type'
   | 'raster-empty'
   | 'raster-values'
+  | 'raster-crs'
+  | 'raster-elsewhere'
   | 'grid-mismatch';
 
 export interface RasterComplaint {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { validateOnGrid } from './on-grid.ts';
-import type { Raster } from './read-raster.ts';
+import type { Raster } from './raster.ts';
 import { histogramBins, summarise } from './summary.ts';
 
 const grid = { width: 4, height: 2, cellSize: 1, originX: 412_200, originY: 5_301_750, epsg: 32631 };

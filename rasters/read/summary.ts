@@ -1,4 +1,4 @@
-import type { Raster } from './read-raster.ts';
+import type { Raster } from './raster.ts';
 
 /** What a raster's values look like, as the page shows it and the contract's `layerSchema` wants it. */
 export interface RasterSummary {

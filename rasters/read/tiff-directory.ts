@@ -34,6 +34,8 @@ interface Field {
 export interface TiffDirectory {
   readonly source: RasterSource;
   readonly littleEndian: boolean;
+  /** BigTIFF: offsets of 64 bits */
+  readonly big: boolean;
   readonly fields: ReadonlyMap<number, Field>;
   /** NewSubfileType of each later directory: bit 0 a reduced copy, bit 2 a mask, 0 a picture of its own */
   readonly laterKinds: readonly number[];
@@ -72,7 +74,7 @@ export async function readTiffDirectory(source: RasterSource): Promise<TiffDirec
     );
     next = directory.next;
   }
-  return { source, littleEndian, fields: first.fields, laterKinds };
+  return { ...walk, fields: first.fields, laterKinds };
 }
 
 async function readDirectory(

@@ -14,6 +14,9 @@ export interface RasterLimits {
 /** A site of 8,192 × 8,192 cells, and a raster of 4,000 × 4,000 doubles kept in one strip. */
 export const defaultRasterLimits: RasterLimits = { cells: 67_108_864, blockBytes: 134_217_728 };
 
+/** A raster that a site's is cut out of, or made of by larger cells: 32,768 × 32,768, never held whole. */
+export const largestSource: RasterLimits = { ...defaultRasterLimits, cells: 1_073_741_824 };
+
 export const compressions = {
   none: 1,
   lzw: 5,
@@ -27,12 +30,18 @@ export type Compression = (typeof compressions)[keyof typeof compressions];
 export type CompressionName = keyof typeof compressions;
 export type LercPacking = typeof compressions.none | typeof compressions.deflate | typeof compressions.zstd;
 
-/** How the cells of a one-band TIFF are kept, all of it checked against the limits and the length of the file. */
+/** How the cells of a TIFF are kept, all of it checked against the limits and the length of the file. */
 export interface TiffLayout {
   readonly width: number;
   readonly height: number;
   readonly dataType: RasterDataType;
   readonly bytesPerCell: number;
+  /** bands of the file */
+  readonly bands: number;
+  /** the band, counted from 1, whose 0 says that a cell holds no data; null where there is none */
+  readonly alphaBand: number | null;
+  /** values of one cell in a block: all bands, or 1 where each band has blocks of its own, one band after another */
+  readonly samples: number;
   readonly littleEndian: boolean;
   readonly compression: Compression;
   /** how a LERC block is packed once more */
@@ -43,12 +52,15 @@ export interface TiffLayout {
   readonly blockWidth: number;
   readonly blockHeight: number;
   readonly blocksAcross: number;
+  /** blocks that hold the whole width and height once */
+  readonly blocks: number;
   /** where each block stands, row by row, and how long it is; 0 and 0 is a block left out */
   readonly offsets: readonly number[];
   readonly byteCounts: readonly number[];
 }
 
 const mostBlocks = 1_048_576;
+const mostBands = 1024;
 const tags = {
   width: 256,
   height: 257,
@@ -57,6 +69,7 @@ const tags = {
   fillOrder: 266,
   stripOffsets: 273,
   samples: 277,
+  planar: 284,
   rowsPerStrip: 278,
   stripByteCounts: 279,
   predictor: 317,
@@ -64,6 +77,7 @@ const tags = {
   tileHeight: 323,
   tileOffsets: 324,
   tileByteCounts: 325,
+  extraSamples: 338,
   sampleFormat: 339,
   lercParameters: 50674,
 } as const;
@@ -76,7 +90,7 @@ export async function claimedCells(directory: TiffDirectory): Promise<number> {
 }
 
 /**
- * Reads how the one band is kept. Nothing is decoded and nothing of the size of the raster is allocated.
+ * Reads how the bands are kept. Nothing is decoded and nothing of the size of the raster is allocated.
  * @throws RasterError `raster-too-large`, `raster-bands`, `raster-type`, `raster-truncated`
  */
 export async function readTiffLayout(directory: TiffDirectory, limits: RasterLimits): Promise<TiffLayout> {
@@ -91,8 +105,12 @@ export async function readTiffLayout(directory: TiffDirectory, limits: RasterLim
       remedy:
         'Clip the raster to the site (gdal_translate -projwin) or use larger cells (gdal_translate -tr 2 2).',
     });
-  checkBands(directory, (await one(tags.samples)) ?? 1);
-  const cell = await readCellType(directory);
+  checkPictures(directory);
+  const bands = (await one(tags.samples)) ?? 1;
+  if (!isCount(bands) || bands > mostBands) throw damaged(`${bands} bands`);
+  const apart = bands > 1 && (await one(tags.planar)) === 2;
+  const samples = apart ? 1 : bands;
+  const cell = await readCellType(directory, bands);
   const compression = readCompression((await one(tags.compression)) ?? 1);
   const lercPacking = readLercPacking(await fieldNumbers(directory, tags.lercParameters, 16));
   if (((await one(tags.fillOrder)) ?? 1) !== 1)
@@ -107,28 +125,28 @@ export async function readTiffLayout(directory: TiffDirectory, limits: RasterLim
   if (!isCount(blockWidth) || !isCount(blockHeight)) throw damaged('strips or tiles without a size');
   const blocksAcross = Math.ceil(width / blockWidth);
   const blocks = blocksAcross * Math.ceil(height / blockHeight);
+  const all = apart ? blocks * bands : blocks;
   const blockCells = blockWidth * blockHeight;
   if (
-    blocks > mostBlocks ||
-    blockCells * cell.bytesPerCell > limits.blockBytes ||
+    all > mostBlocks ||
+    blockCells * samples * cell.bytesPerCell > limits.blockBytes ||
     blocks * blockCells > 4 * limits.cells
   )
     throw new RasterError('raster-too-large', {
-      found: `${blocks} strips or tiles of ${blockWidth} × ${blockHeight} cells`,
+      found: `${all} strips or tiles of ${blockWidth} × ${blockHeight} cells`,
       expected: `strips or tiles of at most ${limits.blockBytes} bytes, and at most ${mostBlocks} of them`,
       remedy: 'Write it again with gdal_translate -co TILED=YES -co COMPRESS=DEFLATE IN.tif OUT.tif.',
     });
-  const offsets = await blockNumbers(directory, tiled ? tags.tileOffsets : tags.stripOffsets, blocks);
-  const byteCounts = await blockNumbers(
-    directory,
-    tiled ? tags.tileByteCounts : tags.stripByteCounts,
-    blocks,
-  );
+  const offsets = await blockNumbers(directory, tiled ? tags.tileOffsets : tags.stripOffsets, all);
+  const byteCounts = await blockNumbers(directory, tiled ? tags.tileByteCounts : tags.stripByteCounts, all);
   checkBlocks(offsets, byteCounts, directory.source.size);
   return {
     width,
     height,
     ...cell,
+    bands,
+    alphaBand: await readAlphaBand(directory, bands),
+    samples,
     littleEndian: directory.littleEndian,
     compression,
     lercPacking,
@@ -137,6 +155,7 @@ export async function readTiffLayout(directory: TiffDirectory, limits: RasterLim
     blockWidth,
     blockHeight,
     blocksAcross,
+    blocks,
     offsets,
     byteCounts,
   };
@@ -144,25 +163,18 @@ export async function readTiffLayout(directory: TiffDirectory, limits: RasterLim
 
 const isCount = (n: number | undefined): n is number => n !== undefined && Number.isSafeInteger(n) && n > 0;
 
-function checkBands(directory: TiffDirectory, samples: number): void {
+function checkPictures(directory: TiffDirectory): void {
   const pictures = 1 + directory.laterKinds.filter((kind) => (kind & 5) === 0).length;
-  const expected = 'one band';
-  if (samples !== 1)
-    throw new RasterError('raster-bands', {
-      found: `${samples} bands`,
-      expected,
-      remedy: 'Pick the band that holds the layer, for example gdal_translate -b 1 IN.tif OUT.tif.',
-    });
   if (pictures > 1)
     throw new RasterError('raster-bands', {
       found: `${pictures} pictures in one file`,
-      expected,
+      expected: 'one picture',
       remedy: 'Pick one, for example gdal_translate GTIFF_DIR:1:IN.tif OUT.tif.',
     });
   if (directory.laterKinds.some((kind) => (kind & 4) !== 0))
     throw new RasterError('raster-bands', {
-      found: 'a band and a mask beside it',
-      expected: `${expected} whose missing cells hold a no-data value`,
+      found: 'a picture and a mask beside it',
+      expected: 'one picture whose missing cells hold a no-data value',
       remedy: 'Burn the mask in, for example gdalwarp -dstnodata -9999 -ot Float32 IN.tif OUT.tif.',
     });
 }
@@ -189,9 +201,13 @@ const formatNames = ['', 'unsigned', 'signed', 'floating-point', 'untyped', 'com
 
 async function readCellType(
   directory: TiffDirectory,
+  bands: number,
 ): Promise<{ dataType: RasterDataType; bytesPerCell: number }> {
-  const bits = (await fieldNumbers(directory, tags.bits, 1))?.[0] ?? 1;
-  const format = (await fieldNumbers(directory, tags.sampleFormat, 1))?.[0] ?? 1;
+  const allBits = (await fieldNumbers(directory, tags.bits, bands)) ?? [1];
+  const formats = (await fieldNumbers(directory, tags.sampleFormat, bands)) ?? [1];
+  const [[bits], [format]] = [allBits, formats];
+  if (allBits.some((b) => b !== bits) || formats.some((f) => f !== format))
+    throw otherType('bands of different number types', 'bands of one number type');
   const dataType = dataTypes[`${format}/${bits}`];
   if (!dataType)
     throw otherType(
@@ -199,6 +215,13 @@ async function readCellType(
       'whole numbers of 8, 16 or 32 bits or floating-point numbers of 32 or 64 bits',
     );
   return { dataType, bytesPerCell: bits / 8 };
+}
+
+/** The first extra sample that is alpha (TIFF 6.0, section 18): associated (1) or not (2). */
+async function readAlphaBand(directory: TiffDirectory, bands: number): Promise<number | null> {
+  const extra = (await fieldNumbers(directory, tags.extraSamples, bands)) ?? [];
+  const first = extra.findIndex((kind) => kind === 1 || kind === 2);
+  return first < 0 || extra.length >= bands ? null : bands - extra.length + first + 1;
 }
 
 const refusedCompressions: Readonly<Record<number, string>> = {

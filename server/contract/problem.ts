@@ -22,6 +22,8 @@ export const problemCodes = [
   'raster-type',
   'raster-empty',
   'raster-values',
+  'raster-crs',
+  'raster-elsewhere',
   'grid-mismatch',
   'digest-mismatch', // 422
   'too-many-requests', // 429

@@ -45,6 +45,8 @@ const titles: Record<ProblemCode, readonly [status: number, title: string]> = {
   'raster-type': [422, 'The data type cannot be used'],
   'raster-empty': [422, 'The raster has no data'],
   'raster-values': [422, 'The values cannot be used'],
+  'raster-crs': [422, 'The raster’s coordinate system cannot be used'],
+  'raster-elsewhere': [422, 'The raster lies elsewhere'],
   'grid-mismatch': [422, 'The raster does not fit the grid'],
   'digest-mismatch': [422, 'The digest does not agree'],
   'too-many-requests': [429, 'Too many attempts'],
