@@ -9,7 +9,6 @@ export { stepRates, type StepRates } from './theory/step-rates.ts';
 export { cannotClose, stillOpen } from './measure/closing.ts';
 export { buildGround, type RasterValues } from './grid/build-ground.ts';
 export type { RunResult, SeriesRow } from './spec/run-result.ts';
-export { prepareWorks } from './process/works.ts';
 export { fillTime } from './theory/fill-time.ts';
 export { arrivalTimes, type ArrivalInput } from './theory/arrival-time.ts';
 export {

@@ -21,6 +21,7 @@ const row = (
   largestPatchArea: 0,
   lostToDrought: 0,
   lostToBackground: 0,
+  lostToGrazing: 0,
   lostToEvents: 0,
 });
 

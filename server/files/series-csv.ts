@@ -14,6 +14,7 @@ export const seriesColumns: readonly (readonly [key: keyof SeriesRow, header: st
   ['largestPatchArea', 'largest_patch_area_m2'],
   ['lostToDrought', 'lost_to_drought_m2'],
   ['lostToBackground', 'lost_to_background_m2'],
+  ['lostToGrazing', 'lost_to_grazing_m2'],
   ['lostToEvents', 'lost_to_events_m2'],
 ];
 

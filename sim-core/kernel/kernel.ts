@@ -1,3 +1,4 @@
+import type { Grazing } from '#sim-core/process/grazers.ts';
 import type { PhiloxKey } from '#sim-core/random/streams.ts';
 import type { Rates } from '#sim-core/spec/parameters.ts';
 import type { Boundary, Mode } from '#sim-core/spec/run-spec.ts';
@@ -39,14 +40,20 @@ export interface KernelSetup {
   readonly sites: Uint32Array;
   readonly luck: PhiloxKey;
   readonly replicate: number;
+  /** absent: there are none */
+  readonly grazing?: Grazing;
   /** leave out what is bare and hears nothing (default); the results are the same without */
   readonly skip?: boolean;
 }
 
-/** ΣC that a step lost, in cells, by cause. In counts mode what is to be expected of the state before the step. */
+/**
+ * ΣC that a step lost, in cells, by cause: what is lost in a cell is split in proportion to the hazards of the causes, so
+ * that they add up to it. In counts mode what is to be expected of the state before the step.
+ */
 export interface StepLosses {
   drought: number;
   background: number;
+  grazing: number;
 }
 
 /**
@@ -58,10 +65,13 @@ export interface Kernel {
   readonly cover: Float32Array;
   readonly clumps: Uint16Array | Uint32Array | undefined;
   readonly refuge: Uint8Array;
+  /** where there are grazers: how many, 1/m², and F, k/255 */
+  readonly grazers: Float32Array | undefined;
+  readonly fence: Uint8Array | undefined;
   /** Says that others wrote to the arrays, so that the kernel looks anew at where anything lives. */
   changed(): void;
   /**
-   * Neighbourhood, recruitment, loss, next state.
+   * Neighbourhood, recruitment, loss, next state; then grazers, who hear the plants of the start of the step.
    *
    * @param index step from the survey on, 0 first: part of the counter of every draw
    * @param droughtIndex X of this step

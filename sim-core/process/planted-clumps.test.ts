@@ -30,9 +30,9 @@ function carryOut(
   const capacity = Uint8Array.from({ length: width * height }, (_, i) => capacityOf(i));
   const sites = clumpSites(clumpsPerSquareMetre, 2);
   const kernel = createReferenceKernel(kernelSetup({ width, height, mode, capacity, sites }));
-  const luck = { k0: 1, k1: 2 };
-  const map = { kernel, capacity, sites, clumpsOnFullCell: clumpsPerSquareMetre * 4, luck, replicate: 0 };
-  prepareWorks(actions, grid).apply(2021, 0, map);
+  const map = { kernel, capacity, sites, clumpsOnFullCell: clumpsPerSquareMetre * 4, replicate: 0 };
+  const none = { fence: new Uint8Array(width * height), luck: { k0: 1, k1: 2 } };
+  prepareWorks(actions, grid).apply(2021, 0, { ...map, ...none });
   return kernel;
 }
 const total = (values: ArrayLike<number>) => Array.from(values).reduce((sum, v) => sum + v, 0);

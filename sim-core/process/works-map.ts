@@ -5,6 +5,8 @@ import type { PhiloxKey } from '#sim-core/random/streams.ts';
 export interface WorksMap {
   readonly kernel: Kernel;
   readonly capacity: Uint8Array;
+  /** F surveyed, k/255 */
+  readonly fence: Uint8Array;
   /** clump sites of a cell, by capacity byte; counts alone reads them */
   readonly sites: Uint32Array;
   /** ν Δx², clumps on a cell of full capacity; may be less than one */
@@ -14,7 +16,11 @@ export interface WorksMap {
 }
 
 /** Puts the clumps of a cell, and the cover that they make. */
-export function setClumps({ kernel, capacity, sites }: WorksMap, cell: number, clumps: number): void {
+export function setClumps(
+  { kernel, capacity, sites }: Pick<WorksMap, 'kernel' | 'capacity' | 'sites'>,
+  cell: number,
+  clumps: number,
+): void {
   if (!kernel.clumps) return;
   kernel.clumps[cell] = clumps;
   kernel.cover[cell] = coverOfClumps(capacity[cell], clumps, sites[capacity[cell]]);

@@ -28,8 +28,8 @@ function carryOut(actions: Action[], mode: 'mean-field' | 'counts', year = 2021,
   const kernel = createReferenceKernel(setup);
   const works = prepareWorks(actions, grid);
   const { capacity, sites } = setup;
-  const luck = { k0: 3, k1: 4 };
-  const lost = works.apply(year, 0, { kernel, capacity, sites, clumpsOnFullCell: 16, luck, replicate });
+  const map = { kernel, capacity, fence: new Uint8Array(6), sites, clumpsOnFullCell: 16, replicate };
+  const lost = works.apply(year, 0, { ...map, luck: { k0: 3, k1: 4 } });
   return { kernel, lost, works };
 }
 

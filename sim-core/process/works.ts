@@ -4,6 +4,7 @@ import { cellLuck, processes } from '#sim-core/random/cell-luck.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
 import type { Action, Clumps, Mound } from '#sim-core/spec/run-spec.ts';
 import { areaCells, type AreaCells } from './area-cells.ts';
+import { standingFences, type Fence } from './fences.ts';
 import { moundStrengths, type MoundStrengths } from './mound-strengths.ts';
 import { plantedClumps, setPlantedClumps, type PlantedClumps } from './planted-clumps.ts';
 import { setClumps, type WorksMap } from './works-map.ts';
@@ -16,15 +17,13 @@ interface YearWorks {
   readonly losses: (AreaCells & { readonly loss: number })[];
 }
 
-/**
- * Works and one-off losses of a run, rasterised once. Fences keep grazers out and touch nothing else: as long as no
- * process reads F they are checked, and change nothing.
- */
+/** Works and one-off losses of a run, rasterised once. */
 export interface Works {
   /** what cannot be carried out, at its action */
   readonly problems: readonly FieldProblem[];
   /**
-   * Carries out what is dated `year`: plantings, then clumps, mounds, and losses.
+   * Carries out what is dated `year`: plantings, then clumps, mounds, and losses; and where there are grazers, raises the
+   * fences that stand from this year on and takes away those that stood until the year before.
    *
    * @param index first step of the year: part of the counter of every draw
    * @returns ΣC that the losses removed, in cells
@@ -38,6 +37,7 @@ export interface Works {
  */
 export function prepareWorks(actions: readonly Action[], grid: Grid, capacity?: Uint8Array): Works {
   const years = new Map<number, YearWorks>();
+  const fences: Fence[] = [];
   const problems: FieldProblem[] = [];
   actions.forEach((action, i) => {
     const works = years.get(action.year) ?? { plantings: [], clumps: [], mounds: [], losses: [] };
@@ -67,12 +67,16 @@ export function prepareWorks(actions: readonly Action[], grid: Grid, capacity?: 
     const area = areaCells(action.area, grid);
     if (action.kind === 'planting') works.plantings.push({ ...area, cover: action.cover });
     if (action.kind === 'loss') works.losses.push({ ...area, loss: action.share });
+    if (action.kind === 'fence')
+      fences.push({ ...area, strength: action.strength, from: action.year, until: action.until });
     return area;
   }
 
   return {
     problems,
     apply(year, index, map) {
+      if (map.kernel.fence && fences.some(({ from, until }) => from === year || until === year - 1))
+        standingFences(fences, year, map.fence, map.kernel.fence);
       const works = years.get(year);
       if (!works) return 0;
       const { refuge } = map.kernel;

@@ -2,7 +2,7 @@ import { philox4x32, uniform } from './philox.ts';
 import type { PhiloxKey } from './streams.ts';
 
 /** Last word of the counter: which process draws. Never renumber one; a result depends on it. */
-export const processes = { shoots: 0, events: 1, survey: 2 } as const;
+export const processes = { shoots: 0, events: 1, survey: 2, fragments: 3, flights: 4 } as const;
 
 /** The two draws of a cell, each strictly between 0 and 1. */
 export interface CellDraws {

@@ -4,6 +4,7 @@ import seedrandom from 'seedrandom';
 export type Purpose =
   | `shoots/${number}`
   | `events/${number}`
+  | `fragments/${number}`
   | `weather/${number}`
   | `parameters`
   | `survey`

@@ -1,5 +1,7 @@
 import { createHash } from 'node:crypto';
 import { describe, expect, test } from 'vitest';
+import type { CreateKernel } from '#sim-core/kernel/kernel.ts';
+import { createReferenceKernel } from '#sim-core/kernel/reference/reference-kernel.ts';
 import { runResultSchema, seriesRowSchema } from '#sim-core/spec/run-result.ts';
 import type { RunSpecInput } from '#sim-core/spec/run-spec.ts';
 import { gridOf, groundOf, specOf } from '#sim-core/testing/setups.ts';
@@ -46,8 +48,8 @@ const spec = (given: Partial<RunSpecInput> = {}) =>
     ],
     ...given,
   });
-function runAll(input: RunInput) {
-  const run = createRun(input);
+function runAll(input: RunInput, createKernel?: CreateKernel) {
+  const run = createRun(input, createKernel);
   const years = [run.survey];
   for (let outcome = run.nextYear(); outcome; outcome = run.nextYear()) years.push(outcome);
   return { run, years, result: run.result() };
@@ -195,6 +197,91 @@ describe('a run', () => {
     expect(
       runAll({ spec: spec({ ...calm, years: 3 }), grid, ground: ground() }).result.recoveredYear,
     ).toBeNull();
+  });
+});
+
+describe('processes beside spread and loss', () => {
+  const droughts = { years: 8, droughtIndex: [-1, -3.5, -4.5, -4, 0, 1, -4, 0] };
+  const grazed = (given: Partial<RunSpecInput> = {}, createKernel?: CreateKernel) =>
+    runAll(
+      {
+        spec: spec({
+          ...droughts,
+          processes: { grazers: { initialGrazers: 100, grazingRate: 0.02 } },
+          ...given,
+        }),
+        grid,
+        ground: ground(),
+      },
+      createKernel,
+    );
+
+  test('are off: a spec that names none and one that names none of them are the same run', () => {
+    expect(runAll({ spec: spec({ processes: {} }), grid, ground: ground() }).result.digest).toBe(
+      runAll({ spec: spec(), grid, ground: ground() }).result.digest,
+    );
+  });
+
+  test.each(['mean-field', 'counts'] as const)(
+    'grazers take their share, and the losses tell it (%s)',
+    (mode) => {
+      const { series } = grazed({ mode }).result;
+      const without = runAll({ spec: spec({ ...droughts, mode }), grid, ground: ground() }).result.series;
+      expect(series.slice(1).every((row) => row.lostToGrazing > 0)).toBe(true);
+      expect(without.every((row) => row.lostToGrazing === 0)).toBe(true);
+      expect(series.at(-1)!.coveredArea).toBeLessThan(0.9 * without.at(-1)!.coveredArea);
+      const reference = grazed({ mode }, createReferenceKernel).result.series;
+      // The luck of single clumps moves on with the rounding of single chances.
+      const near = mode === 'counts' ? 0.05 : 1e-4;
+      series.forEach((row, i) =>
+        expect(Math.abs(row.coveredArea - reference[i].coveredArea)).toBeLessThan(
+          near * row.coveredArea + near,
+        ),
+      );
+    },
+  );
+
+  test('fences keep them out while they stand', () => {
+    const everywhere = { shape: 'disc' as const, x: grid.originX + 12, y: grid.originY - 9, radius: 40 };
+    const lost = (until: number | undefined) =>
+      grazed({
+        mode: 'mean-field',
+        actions: [{ kind: 'fence', year: 2022, until, area: everywhere }],
+      }).result.series.map((row) => row.lostToGrazing > 0);
+    expect(lost(undefined)).toEqual([false, true, false, false, false, false, false, false, false]);
+    expect(lost(2024)).toEqual([false, true, false, false, false, true, true, true, true]);
+    const fenced = grazed({ actions: [{ kind: 'fence', year: 2022, area: everywhere }] });
+    expect(fenced.result.warnings.join(' ')).not.toMatch(/Fences/);
+    const surveyed = { ...ground(), fence: new Uint8Array(width * height).fill(255) };
+    const { series } = runAll({
+      spec: spec({ ...droughts, processes: { grazers: {} } }),
+      grid,
+      ground: surveyed,
+    }).result;
+    expect(series.every((row) => row.lostToGrazing === 0)).toBe(true);
+  });
+
+  test('fragments take root far from where anything stands, in counts mode alone', () => {
+    const quiet = { years: 3, droughtIndex: 1, actions: [], rates: { lateralSpread: 0.3 } };
+    const east = (given: Partial<RunSpecInput>) => {
+      const { run, result } = runAll({ spec: spec({ ...quiet, ...given }), grid, ground: ground() });
+      return { cells: run.cover().filter((c, i) => c > 0 && i % width > 11).length, result };
+    };
+    const processes = { fragments: { fragmentRate: 0.5, fragmentDistance: 10 } };
+    expect(east({}).cells).toBe(0);
+    const scattered = east({ processes });
+    expect(scattered.cells).toBeGreaterThan(20);
+    expect(east({ processes }).result.digest).toBe(scattered.result.digest);
+    expect(east({ processes, replicate: 1 }).result.digest).not.toBe(scattered.result.digest);
+    const field = east({ processes, mode: 'mean-field' });
+    expect(field.result.digest).toBe(east({ mode: 'mean-field' }).result.digest);
+    expect(field.result.warnings.join(' ')).toMatch(/Fragments .* left out in mean-field/);
+  });
+
+  test('series of runs made before there were grazers are read as without', () => {
+    const { lostToGrazing, ...old } = runAll({ spec: spec(), grid, ground: ground() }).result.series[2];
+    expect(lostToGrazing).toBe(0);
+    expect(seriesRowSchema.parse(old)).toEqual({ ...old, lostToGrazing: 0 });
   });
 });
 

@@ -6,6 +6,8 @@ import { createSimdKernel } from '#sim-core/kernel/simd/simd-kernel.ts';
 import { closingYears, referenceSum } from '#sim-core/measure/closing.ts';
 import { measureCover } from '#sim-core/measure/cover-measures.ts';
 import { recoveredYear } from '#sim-core/measure/recovery.ts';
+import { scatterFragments, type FragmentMap } from '#sim-core/process/fragments.ts';
+import { grazerTaps } from '#sim-core/process/grazers.ts';
 import { prepareWorks } from '#sim-core/process/works.ts';
 import { philoxKey } from '#sim-core/random/streams.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
@@ -66,10 +68,11 @@ export function createRun(
 ): Run {
   refuseOtherSizes(grid, ground);
   const { width, height, cellSize } = grid;
-  const { capacity, vigour, exposure, refuge } = ground;
+  const { capacity, vigour, exposure, refuge, fence } = ground;
   const { seed, replicate, mode, boundary, rates, surveyYear, stepsPerYear } = spec;
   const works = prepareWorks(spec.actions, grid, capacity);
   if (works.problems.length > 0) throw new RunProblem(works.problems);
+  const { grazers, fragments } = spec.processes;
   const fitted = fitKernel(rates, cellSize, stepsPerYear);
   const step = stepRates(rates, stepsPerYear);
   const counts = mode === 'counts';
@@ -91,15 +94,23 @@ export function createRun(
     clumps: counts ? surveyedClumps(ground, sites, seed) : undefined,
     luck: philoxKey(seed, `shoots/${replicate}`),
     replicate,
+    grazing: grazers && { rates: grazers, taps: grazerTaps(grazers, cellSize, stepsPerYear), fence },
   });
+
   const cellArea = cellSize * cellSize;
   const worksMap = {
     kernel,
     capacity,
+    fence,
     sites,
     clumpsOnFullCell: rates.clumpsPerSquareMetre * cellArea,
     luck: philoxKey(seed, `events/${replicate}`),
     replicate,
+  };
+  const fragmentMap: FragmentMap = {
+    ...{ kernel, capacity, sites, replicate, width, height, cellSize, boundary },
+    years: step.years,
+    luck: philoxKey(seed, `fragments/${replicate}`),
   };
 
   const references = referenceShares(step);
@@ -129,6 +140,7 @@ export function createRun(
       largestPatchArea: measured.largestPatch * cellArea,
       lostToDrought: lost.drought * cellArea,
       lostToBackground: lost.background * cellArea,
+      lostToGrazing: lost.grazing * cellArea,
       lostToEvents: lost.events * cellArea,
     };
     series.push(row);
@@ -141,7 +153,7 @@ export function createRun(
     return { year, rows, frame };
   }
 
-  const survey = outcome([record(null, { drought: 0, background: 0, events: 0 })]);
+  const survey = outcome([record(null, { drought: 0, background: 0, grazing: 0, events: 0 })]);
 
   return {
     survey,
@@ -153,6 +165,7 @@ export function createRun(
         const events = s === 0 ? works.apply(year, stepsDone, worksMap) : 0;
         const index = stepsDone++;
         const losses = kernel.step(index, drought[index]);
+        if (fragments) scatterFragments(fragments, index, fragmentMap);
         rows.push(record(drought[index], { ...losses, events }));
         onStep?.(stepsDone, drought.length);
       }
@@ -201,7 +214,10 @@ function warnings(spec: RunSpec, reference: number): string[] {
   const said: string[] = [];
   if (reference === 0)
     said.push('Nothing grows from little on this ground at these rates, so there is no cover to recover to.');
-  if (spec.actions.some((action) => action.kind === 'fence'))
+  const { grazers, fragments } = spec.processes;
+  if (!grazers && spec.actions.some((action) => action.kind === 'fence'))
     said.push('Fences keep grazers out; this run has no grazers, so they change nothing.');
+  if (fragments && spec.mode === 'mean-field')
+    said.push('Fragments are single pieces: they are left out in mean-field mode. Use mode counts.');
   return said;
 }

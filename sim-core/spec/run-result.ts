@@ -23,6 +23,8 @@ export const seriesRowSchema = z.object({
   /** covered area lost in this step */
   lostToDrought: z.number(),
   lostToBackground: z.number(),
+  /** runs made before there were grazers do not tell it */
+  lostToGrazing: z.number().default(0),
   lostToEvents: z.number(),
 });
 export type SeriesRow = z.infer<typeof seriesRowSchema>;

@@ -2,8 +2,10 @@ import { z } from 'zod';
 import { weatherProblems } from '#sim-core/weather/weather-problems.ts';
 import { layerSourcesSchema } from './layer-source.ts';
 import { maximumYears } from './limits.ts';
-import { parameters, rateNames, type RateName, type Rates } from './parameters.ts';
+import { parameters, type Rates } from './parameters.ts';
 import { areaSchema, coordinate, maximumPlaces, moundFields, share } from './places.ts';
+import { processesSchema } from './processes.ts';
+import { rateSchema } from './rate-schema.ts';
 import { weatherSourceSchema } from './weather-source.ts';
 
 // A spec's parts are had from here, wherever they are written.
@@ -41,7 +43,7 @@ export const actionSchema = z.discriminatedUnion('kind', [
     points: z
       .array(z.tuple([coordinate, coordinate]))
       .min(1)
-      .max(20_000),
+      .max(maximumPlaces),
     each: z.number().int().min(1).max(100_000).default(1),
   }),
   /** raises F to `strength` from `year` to the end of `until` */
@@ -59,16 +61,7 @@ export type Action = z.infer<typeof actionSchema>;
 export type Mound = Extract<Action, { kind: 'mound' }>;
 export type Clumps = Extract<Action, { kind: 'clumps' }>;
 
-const rateSchema = (name: RateName) => {
-  const { min, max, unit, label } = parameters[name];
-  const said = `${label} must lie between ${min} and ${max} ${unit}`;
-  return z.number({ error: said }).min(min, said).max(max, said);
-};
-export const ratesSchema = z.strictObject(
-  Object.fromEntries(rateNames.map((n) => [n, rateSchema(n).default(parameters[n].default)])) as {
-    [name in RateName]: z.ZodDefault<z.ZodNumber>;
-  },
-) as unknown as z.ZodType<Rates, Partial<Rates>>;
+export const ratesSchema: z.ZodType<Rates, Partial<Rates>> = rateSchema(parameters);
 
 export const modeSchema = z.enum(['mean-field', 'counts']);
 export const boundarySchema = z.enum(['mirror', 'bare']);
@@ -90,6 +83,7 @@ export const runSpecFields = {
   stepsPerYear: stepsPerYearSchema.default(1),
   boundary: boundarySchema.default('mirror'),
   rates: ratesSchema,
+  processes: processesSchema.default({}),
   /** a list, or a source from which each replicate draws its own */
   droughtIndex: weatherSourceSchema.default(0),
   actions: z.array(actionSchema).max(maximumPlaces).default([]),

@@ -27,6 +27,17 @@ const rates: fc.Arbitrary<Rates> = fc
   })
   .map((some) => ({ ...defaultRates, ...some }));
 
+const grazers = fc.record({
+  variance: fc.constantFrom(0.2, 5),
+  rates: fc.record({
+    initialGrazers: fc.constantFrom(0, 30),
+    grazingRate: fc.constantFrom(0, 0.05),
+    predation: fc.constantFrom(0, 3),
+    grazerImmigration: fc.constantFrom(0, 5),
+    grazerLimit: fc.constantFrom(20, 500),
+  }),
+});
+
 function cases(mode: KernelSetup['mode'], given: Partial<Rates> = {}): fc.Arbitrary<Case> {
   return fc
     .record({
@@ -36,6 +47,7 @@ function cases(mode: KernelSetup['mode'], given: Partial<Rates> = {}): fc.Arbitr
       variance: fc.constantFrom(0.01, 0.4, 3),
       boundary: fc.constantFrom('mirror' as const, 'bare' as const),
       stepsPerYear: fc.constantFrom(1, 4),
+      grazers: fc.option(grazers, { nil: undefined, freq: 2 }),
       drought: fc.array(fc.double({ min: -6, max: 3, noNaN: true }), { minLength: 1, maxLength: 6 }),
     })
     .chain((drawn) => {
@@ -46,6 +58,7 @@ function cases(mode: KernelSetup['mode'], given: Partial<Rates> = {}): fc.Arbitr
           vigour: bytes(cells),
           exposure: bytes(cells),
           refuge: bytes(cells),
+          fence: bytes(cells),
           share: fc.array(fc.constantFrom(0, 0, 0.3, 1), { minLength: cells, maxLength: cells }),
         })
         .map((layers) => {
@@ -59,6 +72,7 @@ function cases(mode: KernelSetup['mode'], given: Partial<Rates> = {}): fc.Arbitr
               mode,
               capacity,
               sites,
+              grazers: drawn.grazers && { ...drawn.grazers, fence: layers.fence },
               cover: Float32Array.from(layers.share, (s, i) => s * Math.fround(capacity[i] / 255)),
               clumps: Uint32Array.from(layers.share, (s, i) => Math.floor(s * sites[capacity[i]])),
             }),
@@ -81,7 +95,7 @@ export function describeKernelProperties(name: string, createKernel: CreateKerne
     fc.assert(fc.property(arbitrary, hold), { numRuns, seed: 20 });
 
   describe(`${name}: properties`, () => {
-    test.each(modes)('0 ≤ C ≤ K, and losses are no less than nothing (%s)', (mode) => {
+    test.each(modes)('0 ≤ C ≤ K, 0 ≤ G ≤ G_max, and losses are no less than nothing (%s)', (mode) => {
       check(cases(mode), ({ setup, drought }) => {
         const { kernel, losses } = runKernel(createKernel, setup, drought);
         kernel.cover.forEach((c, i) => {
@@ -93,10 +107,17 @@ export function describeKernelProperties(name: string, createKernel: CreateKerne
             expect(c).toBe(N ? Math.fround((setup.capacity[i] / 255) * (kernel.clumps[i] / N)) : 0);
           }
         });
-        for (const { drought: d, background } of losses) {
+        for (const { drought: d, background, grazing } of losses) {
           expect(d).toBeGreaterThanOrEqual(0);
           expect(background).toBeGreaterThanOrEqual(0);
+          expect(grazing).toBeGreaterThanOrEqual(0);
+          if (!setup.grazing || setup.grazing.rates.grazingRate === 0) expect(grazing).toBe(0);
         }
+        const most = Math.fround(setup.grazing?.rates.grazerLimit ?? 0);
+        kernel.grazers?.forEach((g) => {
+          expect(g).toBeGreaterThanOrEqual(0);
+          expect(g).toBeLessThanOrEqual(most);
+        });
       });
     });
 
@@ -122,6 +143,7 @@ export function describeKernelProperties(name: string, createKernel: CreateKerne
         const plodding = runKernel(createKernel, { ...setup, skip: false }, drought);
         expect(skipping.kernel.cover).toEqual(plodding.kernel.cover);
         expect(skipping.losses).toEqual(plodding.losses);
+        expect(skipping.kernel.grazers).toEqual(plodding.kernel.grazers);
       });
     });
 
@@ -139,7 +161,7 @@ export function describeKernelProperties(name: string, createKernel: CreateKerne
           (i: number) => i - (i % width) + (width - 1 - (i % width)),
           (i: number) => (height - 1 - Math.floor(i / width)) * width + (i % width),
         ];
-        const straight = runKernel(createKernel, setup, drought).kernel.cover;
+        const straight = runKernel(createKernel, setup, drought).kernel;
         for (const flip of flips) {
           const flipped = <T extends Uint8Array | Float32Array>(a: T) => a.map((_, i) => a[flip(i)]) as T;
           const mirrored = runKernel(
@@ -151,10 +173,12 @@ export function describeKernelProperties(name: string, createKernel: CreateKerne
               exposure: flipped(setup.exposure),
               refuge: flipped(setup.refuge),
               cover: setup.cover && flipped(setup.cover),
+              grazing: setup.grazing && { ...setup.grazing, fence: flipped(setup.grazing.fence) },
             },
             drought,
-          ).kernel.cover;
-          expect(flipped(mirrored)).toEqual(straight);
+          ).kernel;
+          expect(flipped(mirrored.cover)).toEqual(straight.cover);
+          expect(mirrored.grazers && flipped(mirrored.grazers)).toEqual(straight.grazers);
         }
       });
     });

@@ -3,22 +3,26 @@ import type { Ground } from '#sim-core/grid/ground.ts';
 import { clumpSites } from '#sim-core/kernel/clump-sites.ts';
 import type { KernelSetup } from '#sim-core/kernel/kernel.ts';
 import { defaultRates, type Rates } from '#sim-core/spec/parameters.ts';
+import type { GrazerRates } from '#sim-core/spec/process-parameters.ts';
+import { processesSchema } from '#sim-core/spec/processes.ts';
 import { runSpecSchema, type RunSpec, type RunSpecInput } from '#sim-core/spec/run-spec.ts';
 import { discreteGaussian } from '#sim-core/theory/spread-kernel.ts';
 import { stepRates } from '#sim-core/theory/step-rates.ts';
 
 /** What a test may say about a kernel; the rest is plain: full ground, no exposure, no refuge, yearly steps. */
-export type SetupInput = Partial<Omit<KernelSetup, 'step' | 'rates' | 'taps'>> & {
+export type SetupInput = Partial<Omit<KernelSetup, 'step' | 'rates' | 'taps' | 'grazing'>> & {
   width: number;
   height: number;
   variance?: number;
   rates?: Partial<Rates>;
   stepsPerYear?: number;
   cellSize?: number;
+  /** rates at their defaults but for those told; the variance is that of their spread, cells² */
+  grazers?: { rates?: Partial<GrazerRates>; variance?: number; fence?: Uint8Array };
 };
 
 export function kernelSetup(input: SetupInput): KernelSetup {
-  const { width, height, variance = 0.5, stepsPerYear = 1, cellSize = 2 } = input;
+  const { width, height, variance = 0.5, stepsPerYear = 1, cellSize = 2, grazers } = input;
   const rates = { ...defaultRates, ...input.rates };
   const cells = width * height;
   return {
@@ -35,6 +39,11 @@ export function kernelSetup(input: SetupInput): KernelSetup {
     taps: discreteGaussian(variance),
     step: stepRates(rates, stepsPerYear),
     rates,
+    grazing: grazers && {
+      rates: processesSchema.parse({ grazers: grazers.rates ?? {} }).grazers!,
+      taps: discreteGaussian(grazers.variance ?? 1),
+      fence: grazers.fence ?? new Uint8Array(cells),
+    },
   };
 }
 

@@ -4,7 +4,13 @@ import { RunProblem } from '#sim-core/run/run-problem.ts';
 import type { Rates } from '#sim-core/spec/parameters.ts';
 import type { StepsPerYear } from '#sim-core/spec/run-spec.ts';
 import { latticeSpeed } from './lattice-speed.ts';
-import { discreteGaussian, logMoment, logMomentOfTaps, widestRadius } from './spread-kernel.ts';
+import {
+  discreteGaussian,
+  largestVariance,
+  logMoment,
+  logMomentOfTaps,
+  widestRadius,
+} from './spread-kernel.ts';
 import { stepRates } from './step-rates.ts';
 
 /** The rates that decide the spread kernel. */
@@ -25,9 +31,8 @@ export interface FittedKernel {
   readonly warnings: readonly string[];
 }
 
-/** Below this next to nothing leaves its cell; above, the kernel would be wider than a run allows. Cells² a step. */
+/** Below this next to nothing leaves its cell. Cells² a step. */
 const smallestVariance = 1.1e-6;
-const largestVariance = (widestRadius * widestRadius) / 27;
 /** Diagonal against straight speed below which the lattice shows. */
 const coarse = 0.95;
 

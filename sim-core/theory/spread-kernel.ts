@@ -7,6 +7,8 @@ export const cutMass = 1e-6;
 
 /** Widest kernel that a run may use, cells. */
 export const widestRadius = 256;
+/** Variance above which the kernel would be wider than that, cells² a step. */
+export const largestVariance = (widestRadius * widestRadius) / 27;
 
 /**
  * Right half of the discrete Gaussian T(n; t) = e^(−t) I_n(t) (Lindeberg 1990, IEEE Trans. PAMI 12:234–254): the

@@ -1,8 +1,7 @@
 import { layerOf, layerSources } from '#contract/layer-sources.ts';
 import { runActions, type WorkInput } from '#contract/works.ts';
 import { valueUnitScale, type Site } from '#contract/sites.ts';
-import { fitKernel, RunProblem } from '#sim-core/index.ts';
-import { prepareWorks } from '#sim-core/process/works.ts';
+import { gridProblems } from '#sim-core/run/grid-problems.ts';
 import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
 import { runSpecSchema, runSpecVersion, type Mode, type RunSpec } from '#sim-core/spec/run-spec.ts';
 
@@ -49,7 +48,7 @@ export function composeRunSpec(
     layers: layerSources(site),
   });
   if (!parsed.success) return { problems: fieldProblems(parsed.error).map(placed) };
-  const refused = engineRefusals(parsed.data, site);
+  const refused = gridProblems(parsed.data, site.grid);
   return refused.length > 0 ? { problems: refused.map(placed) } : { spec: parsed.data };
 }
 
@@ -77,20 +76,10 @@ function missingGround(site: Site): CompositionProblem[] {
   return problems;
 }
 
-function engineRefusals(spec: RunSpec, site: Site): FieldProblem[] {
-  const problems: FieldProblem[] = [...prepareWorks(spec.actions, site.grid).problems];
-  try {
-    fitKernel(spec.rates, site.grid.cellSize, spec.stepsPerYear);
-  } catch (error) {
-    if (!(error instanceof RunProblem)) throw error;
-    problems.push(...error.problems);
-  }
-  return problems;
-}
-
 const places: readonly [prefix: string, mend: MendingPlace][] = [
   ['layers', 'ground'],
   ['rates', 'plant'],
+  ['processes', 'plant'],
   ['actions', 'options'],
   ['seed', 'form'],
   ['mode', 'form'],

@@ -42,12 +42,13 @@ export function YearFacts(props: {
 }
 
 /** `Lost in 2049: 5.2 ha, of it 5.1 ha to drought.`; a cause that took all or nothing is not given a figure. */
-function lossesInWords(year: number, { drought, background, events }: YearLosses): string {
-  const lost = drought + background + events;
+function lossesInWords(year: number, { drought, background, grazing, events }: YearLosses): string {
+  const lost = drought + background + grazing + events;
   if (formatArea(lost) === formatArea(0)) return `Nothing was lost in ${year}.`;
   const causes = [
     ['drought', drought],
     ['background loss', background],
+    ['grazing', grazing],
     ['one-off losses', events],
   ] as const;
   const parts = causes.filter(([, area]) => formatArea(area) !== formatArea(0));

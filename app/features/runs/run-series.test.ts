@@ -16,11 +16,18 @@ describe('driestByYear', () => {
 
 describe('lossesIn', () => {
   const row = (time: number, droughtIndex: number | null, lost: number) =>
-    ({ time, droughtIndex, lostToDrought: lost, lostToBackground: 1, lostToEvents: 0 }) as SeriesRow;
+    ({
+      time,
+      droughtIndex,
+      lostToDrought: lost,
+      lostToBackground: 1,
+      lostToGrazing: lost / 2,
+      lostToEvents: 0,
+    }) as SeriesRow;
   const rows = [row(2026, null, 99), row(2026.5, 0, 2), row(2027, 0, 3), row(2027.5, 0, 4)];
   it('sums the steps of a year, and has nothing to say of the survey', () => {
-    expect(lossesIn(rows, 2027)).toEqual({ drought: 5, background: 2, events: 0 });
-    expect(lossesIn(rows, 2028)).toEqual({ drought: 4, background: 1, events: 0 });
+    expect(lossesIn(rows, 2027)).toEqual({ drought: 5, background: 2, grazing: 2.5, events: 0 });
+    expect(lossesIn(rows, 2028)).toEqual({ drought: 4, background: 1, grazing: 2, events: 0 });
     expect(lossesIn(rows, 2026)).toBeUndefined();
   });
 });

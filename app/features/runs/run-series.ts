@@ -13,6 +13,7 @@ export function driestByYear(spec: WeatherOfRun): number[] {
 export interface YearLosses {
   readonly drought: number;
   readonly background: number;
+  readonly grazing: number;
   readonly events: number;
 }
 
@@ -27,6 +28,7 @@ export function lossesIn(rows: readonly SeriesRow[], year: number): YearLosses |
   return {
     drought: sum((row) => row.lostToDrought),
     background: sum((row) => row.lostToBackground),
+    grazing: sum((row) => row.lostToGrazing),
     events: sum((row) => row.lostToEvents),
   };
 }

@@ -41,6 +41,7 @@ export async function exampleSpec(folder: string): Promise<RunSpecInput> {
     stepsPerYear: 1,
     boundary: 'mirror',
     rates: defaultRates,
+    processes: {},
     droughtIndex: inventedDrought,
     actions: demoMounds().map(({ x, y }) => ({
       kind: 'mound' as const,

@@ -1,6 +1,5 @@
 import type { Grid } from '#sim-core/grid/grid.ts';
-import { fitKernel, RunProblem } from '#sim-core/index.ts';
-import { prepareWorks } from '#sim-core/process/works.ts';
+import { gridProblems } from '#sim-core/run/grid-problems.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
 import { rasterSources, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { Manager } from '#server/database/manager.ts';
@@ -45,13 +44,5 @@ export async function checkLayers(manager: Manager, siteId: string, spec: RunSpe
 }
 
 /** What makes a spec impossible on a grid, whatever its layers hold; empty when nothing does. */
-export function checkOnGrid({ rates, stepsPerYear, actions }: RunSpec, grid: Grid): FieldProblem[] {
-  const problems = [...prepareWorks(actions, grid).problems];
-  try {
-    fitKernel(rates, grid.cellSize, stepsPerYear);
-  } catch (error) {
-    if (!(error instanceof RunProblem)) throw error;
-    problems.push(...error.problems);
-  }
-  return problems.map(({ field, message }) => ({ field: `spec.${field}`, message }));
-}
+export const checkOnGrid = (spec: RunSpec, grid: Grid): FieldProblem[] =>
+  gridProblems(spec, grid).map(({ field, message }) => ({ field: `spec.${field}`, message }));

@@ -1,10 +1,5 @@
+import { mirrored } from '#sim-core/grid/mirrored.ts';
 import type { Boundary } from '#sim-core/spec/run-spec.ts';
-
-/** Index that a half-sample symmetric boundary puts in the place of i: … 1 0 | 0 1 … n−1 | n−1 n−2 … */
-export function mirrored(i: number, n: number): number {
-  const within = ((i % (2 * n)) + 2 * n) % (2 * n);
-  return within < n ? within : 2 * n - 1 - within;
-}
 
 /** Φ = T * C of one row at a time, so that C may be overwritten row by row behind it. */
 export interface Neighbourhood {
@@ -102,6 +97,8 @@ export function neighbourhood(
         for (let d = 1; d <= radius; d++) sum += taps[d] * (spread[above[d] + x] + spread[below[d] + x]);
         values[x] = sum;
       }
+      values.fill(0, 0, from);
+      values.fill(0, to);
       return { values, from, to };
     },
   };

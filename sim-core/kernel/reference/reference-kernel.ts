@@ -1,8 +1,10 @@
 import { exp, oneMinusExp } from '#sim-core/numeric/exp.ts';
+import { grazerDecline } from '#sim-core/process/grazers.ts';
 import { binomialQuantile } from '#sim-core/random/binomial.ts';
 import { processes } from '#sim-core/random/cell-luck.ts';
 import { philox4x32, uniform } from '#sim-core/random/philox.ts';
 import { coverOfClumps, type CreateKernel, type StepLosses } from '../kernel.ts';
+import { createHerd } from './herd.ts';
 import { neighbourhood } from './neighbourhood.ts';
 
 /** Shares that 8 bits can hold, as 32-bit numbers: C is 32-bit and must not pass K. */
@@ -28,6 +30,9 @@ export const createReferenceKernel: CreateKernel = (setup) => {
     for (let i = 0; i < cells; i++) cover[i] = coverOfClumps(capacity[i], clumps[i], sites[capacity[i]]);
   }
   const around = neighbourhood(cover, width, height, taps, boundary, skip);
+  const herd = setup.grazing && createHerd(setup, setup.grazing, refuge);
+  const fence = setup.grazing?.fence.slice();
+  const grazingRate = setup.grazing?.rates.grazingRate ?? 0;
   /** the four random words of two neighbouring cells */
   const words = new Uint32Array(4);
 
@@ -35,11 +40,14 @@ export const createReferenceKernel: CreateKernel = (setup) => {
     cover,
     clumps,
     refuge,
+    grazers: herd?.grazers,
+    fence,
     changed() {
       // It looks at every cell of C in every step.
     },
     step(index: number, droughtIndex: number): StepLosses {
-      const losses: StepLosses = { drought: 0, background: 0 };
+      const losses: StepLosses = { drought: 0, background: 0, grazing: 0 };
+      const decline = setup.grazing ? grazerDecline(setup.grazing.rates, years, droughtIndex) : 0;
       let drawn = -1;
       for (let y = 0; y < height; y++) {
         const { values, from, to } = around.row(y);
@@ -68,7 +76,8 @@ export const createReferenceKernel: CreateKernel = (setup) => {
             (droughtIndex - tolerance - exposureShift * E + refugeShift * M + neighbourShift * phi1) /
             lossWidth;
           const hazard = droughtLoss > 0 ? droughtLoss / (1 + exp(margin)) : 0;
-          const total = backgroundLoss + hazard;
+          const grazing = herd && fence ? grazingRate * (1 - fence[i] / 255) * herd.grazers[i] : 0;
+          const total = backgroundLoss + hazard + grazing;
           const S = exp(-total * years);
 
           const kept = carryOver * c;
@@ -77,6 +86,7 @@ export const createReferenceKernel: CreateKernel = (setup) => {
             const lost = before * (1 - S);
             losses.drought += (lost * hazard) / total;
             losses.background += (lost * backgroundLoss) / total;
+            losses.grazing += (lost * grazing) / total;
           }
           if (!clumps) {
             const next = Math.fround(S * before);
@@ -99,6 +109,7 @@ export const createReferenceKernel: CreateKernel = (setup) => {
             cover[i] = coverOfClumps(k, next, N);
           }
         }
+        herd?.advance(y, values, decline);
       }
       return losses;
     },

@@ -66,6 +66,42 @@ describe('the shipping kernel agrees with the reference', () => {
     },
   );
 
+  test.each([
+    ['mirror', 3, 'mean-field'],
+    ['bare', 40, 'mean-field'],
+    ['mirror', 9, 'counts'],
+  ] as const)(
+    'with grazers, over 6 steps: %s boundary, variance of their spread %d, %s',
+    (boundary, variance, mode) => {
+      const input = varied(301, 40, { boundary, mode });
+      const fence = Uint8Array.from({ length: 301 * 40 }, (_, i) => (i % 7) * 40);
+      const rates = { initialGrazers: 60, grazerLimit: 90, grazingRate: 0.02, grazerGrowth: 5, predation: 1 };
+      const years = mode === 'counts' ? [-3] : [1, -1, 0, -1.5, 2, -2.5];
+      const grazed = { ...input, grazers: { rates, variance, fence } };
+      const ours = after(createSimdKernel, grazed, years);
+      const theirs = after(createReferenceKernel, grazed, years);
+      let worst = 0;
+      let highest = 0;
+      theirs.kernel.grazers!.forEach((g, i) => {
+        worst = Math.max(worst, Math.abs(ours.kernel.grazers![i] / g - 1));
+        highest = Math.max(highest, g);
+      });
+      // Single precision, growing with e^(f Δt φ₁): a few units in the seventh digit a step.
+      expect(worst).toBeLessThan(2e-5);
+      expect(highest).toBe(90);
+      let different = 0;
+      theirs.kernel.cover.forEach((c, i) => {
+        if (mode === 'counts' ? ours.kernel.cover[i] !== c : Math.abs(ours.kernel.cover[i] - c) > 1e-5)
+          different++;
+      });
+      expect(different).toBeLessThanOrEqual(mode === 'counts' ? 1 : 0);
+      years.forEach((_, i) => {
+        for (const cause of ['drought', 'background', 'grazing'] as const)
+          expect(Math.abs(ours.losses[i][cause] / theirs.losses[i][cause] - 1)).toBeLessThan(1e-4);
+      });
+    },
+  );
+
   test('mean-field, 20 steps: within 2e−5 where C is 0 to 1', () => {
     const input = varied(120, 30);
     const years = Array.from({ length: 20 }, (_, i) => Math.sin(i) * 2 - 1);
@@ -115,10 +151,14 @@ describe('skipping on a map of many stretches', () => {
     const barren = (i: number) => i % 601 > 200 && i % 601 < 280;
     const ground = { ...input, capacity: input.capacity!.map((k, i) => (barren(i) ? 0 : k)) };
     const years = [0, -3, 1, 0, 0];
+    for (const grazers of [undefined, { rates: { initialGrazers: 40 }, variance: 2 }]) {
+      const skipping = after(createSimdKernel, { ...ground, grazers }, years);
+      const plodding = after(createSimdKernel, { ...ground, grazers, skip: false }, years);
+      expect(skipping.kernel.cover).toEqual(plodding.kernel.cover);
+      expect(skipping.kernel.grazers).toEqual(plodding.kernel.grazers);
+      expect(skipping.losses).toEqual(plodding.losses);
+    }
     const skipping = after(createSimdKernel, ground, years);
-    const plodding = after(createSimdKernel, { ...ground, skip: false }, years);
-    expect(skipping.kernel.cover).toEqual(plodding.kernel.cover);
-    expect(skipping.losses).toEqual(plodding.losses);
     const bare = skipping.kernel.cover.reduce((sum, c) => sum + (c === 0 ? 1 : 0), 0);
     expect(bare).toBeGreaterThan(1000);
   });

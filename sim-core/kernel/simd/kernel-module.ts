@@ -29,7 +29,10 @@ export interface KernelExports {
   setLuck(key0: number, key1: number, replicate: number): void;
   setSkip(skip: boolean): void;
   look(): void;
-  step(index: number, droughtIndex: number): void;
+  /** after `layOut`, where there are grazers */
+  layOutGrazers(radius: number): number;
+  setGrazers(eats: number, masses: number, refugeLoss: number, comeIn: number, most: number): void;
+  step(index: number, droughtIndex: number, grazerDecline: number): void;
   binomialQuantile(u: number, n: number, p: number): number;
   drawPair(word: number, n: number, N: number, chance: number): number;
   philox(out: number, counter: number, step: number, replicate: number, key0: number, key1: number): void;
@@ -39,11 +42,15 @@ export interface KernelExports {
   readonly vigour: Address;
   readonly exposure: Address;
   readonly refuge: Address;
+  readonly grazers: Address;
+  readonly fence: Address;
   readonly taps: Address;
+  readonly grazerTaps: Address;
   readonly sites: Address;
   readonly words: Address;
   readonly lostToDrought: { readonly value: number };
   readonly lostToBackground: { readonly value: number };
+  readonly lostToGrazing: { readonly value: number };
 }
 
 let compiled: WebAssembly.Module | undefined;

@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import { expect, test } from 'vitest';
 import { describeFrontSpeeds } from '#sim-core/testing/front-speeds.ts';
+import { describeGrazerProperties } from '#sim-core/testing/grazer-properties.ts';
 import { describeKernelProperties } from '#sim-core/testing/kernel-properties.ts';
 import { kernelSetup } from '#sim-core/testing/setups.ts';
 import { describeStepByHand } from '#sim-core/testing/step-by-hand.ts';
@@ -8,6 +9,7 @@ import { createSimdKernel } from './simd-kernel.ts';
 
 describeKernelProperties('the shipping kernel', createSimdKernel);
 describeStepByHand('the shipping kernel', createSimdKernel);
+describeGrazerProperties('the shipping kernel', createSimdKernel);
 describeFrontSpeeds('the shipping kernel', createSimdKernel);
 
 /**

@@ -1,21 +1,26 @@
 import { RunProblem } from '#sim-core/run/run-problem.ts';
+import { grazerDecline, type Grazing } from '#sim-core/process/grazers.ts';
+import type { StepRates } from '#sim-core/theory/step-rates.ts';
 import { coverOfClumps, type CreateKernel, type StepLosses } from '../kernel.ts';
-import { instantiateKernel } from './kernel-module.ts';
+import { instantiateKernel, type KernelExports } from './kernel-module.ts';
 
 /**
  * The kernel that ships: the step of the model four cells at a time, in single precision, in WebAssembly (`assembly/`).
- * It keeps the whole map in one memory, 8.3 bytes a cell in mean-field and 10.3 in counts (12.3 above 65,535 sites), and
- * a few rows.
+ * It keeps the whole map in one memory, 8.3 bytes a cell in mean-field and 10.3 in counts (12.3 above 65,535 sites), 5
+ * more where there are grazers, and a few rows.
  *
  * @throws RunProblem where the machine does not give that much memory
  */
 export const createSimdKernel: CreateKernel = (setup) => {
-  const { width, height, mode, boundary, taps, step, rates, sites, luck, skip = true } = setup;
+  const { width, height, mode, boundary, taps, step, rates, sites, luck, skip = true, grazing } = setup;
   const counts = mode === 'counts';
   const wide = sites[255] > 65_535;
   const cells = width * height;
   const wasm = instantiateKernel();
-  if (!wasm.layOut(width, height, taps.length - 1, boundary === 'mirror', counts, wide))
+  const laidOut =
+    wasm.layOut(width, height, taps.length - 1, boundary === 'mirror', counts, wide) &&
+    (!grazing || wasm.layOutGrazers(grazing.taps.length - 1));
+  if (!laidOut)
     throw new RunProblem([
       {
         field: 'layers',
@@ -58,17 +63,46 @@ export const createSimdKernel: CreateKernel = (setup) => {
     }
   } else if (setup.cover) cover.set(setup.cover);
   wasm.look();
+  const herd = grazing && setGrazers(wasm, grazing, step, cells);
 
   return {
     cover,
     clumps,
     refuge,
+    grazers: herd?.grazers,
+    fence: herd?.fence,
     changed() {
       wasm.look();
     },
     step(index: number, droughtIndex: number): StepLosses {
-      wasm.step(index, droughtIndex);
-      return { drought: wasm.lostToDrought.value, background: wasm.lostToBackground.value };
+      wasm.step(index, droughtIndex, grazing ? grazerDecline(grazing.rates, step.years, droughtIndex) : 0);
+      return {
+        drought: wasm.lostToDrought.value,
+        background: wasm.lostToBackground.value,
+        grazing: wasm.lostToGrazing.value,
+      };
     },
   };
 };
+
+function setGrazers(
+  wasm: KernelExports,
+  { rates, taps, fence }: Grazing,
+  { years }: StepRates,
+  cells: number,
+) {
+  const { buffer } = wasm.memory;
+  wasm.setGrazers(
+    rates.grazingRate,
+    rates.grazerGrowth * years,
+    rates.refugePredation * years,
+    rates.grazerImmigration * years,
+    rates.grazerLimit,
+  );
+  new Float32Array(buffer, wasm.grazerTaps.value, taps.length).set(taps);
+  const grazers = new Float32Array(buffer, wasm.grazers.value, cells);
+  grazers.fill(Math.min(rates.initialGrazers, rates.grazerLimit));
+  const fences = new Uint8Array(buffer, wasm.fence.value, cells);
+  fences.set(fence);
+  return { grazers, fence: fences };
+}

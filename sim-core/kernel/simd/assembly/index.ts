@@ -1,4 +1,5 @@
 import { draw } from './draws';
+import { feed, grazed, lostToGrazers, moveOn, startGrazers, visit } from './grazers';
 import { hear, lookAround, spreadRow } from './neighbourhood';
 import { nextRun, runEnd } from './runs';
 import { weigh } from './chances';
@@ -25,6 +26,7 @@ import { stretch } from './stretch';
 import * as vectors from './vectors';
 
 export { binomialQuantile, drawPair } from './binomial';
+export { fence, grazers, grazerTaps, layOutGrazers, setGrazers } from './grazers';
 export { words } from './draws';
 export { philox } from './philox';
 export {
@@ -46,6 +48,7 @@ export {
 /** ΣC that the last step lost, in cells. */
 export let lostToDrought: f64 = 0;
 export let lostToBackground: f64 = 0;
+export let lostToGrazing: f64 = 0;
 
 /** Marks what is alive from the cover itself: before the first step, and after others wrote to it. */
 export function look(): void {
@@ -72,26 +75,43 @@ function advance(y: i32, index: u32): void {
   lookAround(y);
   v128.store(lostRow, i64x2.splat(0));
   v128.store(lostRow, i64x2.splat(0), 16);
+  if (grazed) visit(y);
   for (let g = nextRun(heardFlags, 0, groups); g >= 0; g = nextRun(heardFlags, runEnd, groups)) {
     const end = runEnd;
     for (let from = g; from < end; from += stretch) {
       const to = min(from + stretch, end);
       hear(from, to);
       weigh(y, from, to);
+      if (grazed) feed(from, to);
       comeThrough(y, from, to);
       if (counts) draw(y, from, to, index);
     }
   }
-  const lost = sum(v128.load(lostRow));
-  const drought = backgroundLoss == 0 ? lost : droughtLoss == 0 ? 0 : sum(v128.load(lostRow, 16));
-  lostToDrought += drought;
-  lostToBackground += lost - drought;
+  reckonLosses();
+  if (grazed) moveOn(y);
 }
 
-/** Neighbourhood, recruitment, loss, next state of the whole map. */
-export function step(index: u32, droughtIndex: f64): void {
+/** Adds what the present row lost to the losses of the step, by cause. */
+function reckonLosses(): void {
+  const lost = sum(v128.load(lostRow));
+  const grazing = grazed ? sum(v128.load(lostToGrazers)) : 0;
+  const alone = backgroundLoss == 0 && !grazed;
+  const drought = alone ? lost : droughtLoss == 0 ? 0 : sum(v128.load(lostRow, 16));
+  lostToDrought += drought;
+  lostToGrazing += grazing;
+  // Of three parts that are rounded each, the last may come to less than nothing.
+  if (backgroundLoss > 0) lostToBackground += max(0, lost - drought - grazing);
+}
+
+/**
+ * Neighbourhood, recruitment, loss, next state of the whole map; then grazers. `grazerDecline` is −Δt (m + p (1 − D)), and
+ * is not read where there are none.
+ */
+export function step(index: u32, droughtIndex: f64, grazerDecline: f64): void {
   lostToDrought = 0;
   lostToBackground = 0;
+  lostToGrazing = 0;
+  if (grazed) startGrazers(grazerDecline);
   vectors.set(vectors.calm, (droughtIndex - tolerance) / lossWidth);
   let spread = 0;
   for (let y = 0; y < height; y++) {

@@ -21,7 +21,7 @@ import {
 import { records } from './stretch';
 
 /** Index that a half-sample symmetric boundary puts in the place of i: … 1 0 | 0 1 … n−1 | n−1 n−2 … */
-function mirrored(i: i32, n: i32): i32 {
+export function mirrored(i: i32, n: i32): i32 {
   const within = ((i % (2 * n)) + 2 * n) % (2 * n);
   return within < n ? within : 2 * n - 1 - within;
 }

@@ -1,4 +1,5 @@
 import { partOf, rest, scaleOf, shifted } from './exp';
+import { calmRow, grazed, grazingRow, lostToGrazers } from './grazers';
 import {
   alive,
   backgroundLoss,
@@ -20,7 +21,8 @@ import * as vectors from './vectors';
  * next state. Counts: the chances of standing and of free sites, for the draws.
  */
 export function comeThrough(y: i32, from: i32, to: i32): void {
-  const twoCauses = droughtLoss > 0 && backgroundLoss > 0;
+  const eaten = grazed;
+  const manyCauses = droughtLoss > 0 && (backgroundLoss > 0 || eaten);
   const draws = counts;
   const mayBeBare = skipsBare;
   const coverRow = cover + ((<usize>y * <usize>width) << 2);
@@ -30,8 +32,11 @@ export function comeThrough(y: i32, from: i32, to: i32): void {
   let lost = v128.load(lostRow);
   let lostToDrought = v128.load(lostRow, 16);
 
+  // Hazard by all but drought: one for all cells, unless grazers make it differ.
+  let calm = eaten ? calmRow + ((<usize>from) << 4) : vectors.background;
+  const nextCalm: usize = eaten ? 16 : 0;
   let record = records;
-  for (let g = from; g < to; g++, record += 64) {
+  for (let g = from; g < to; g++, record += 64, calm += nextCalm) {
     const at = (<usize>g) << 4;
     if (g == last) lanes = lastLanes;
     const K = v128.load(record, held);
@@ -44,7 +49,7 @@ export function comeThrough(y: i32, from: i32, to: i32): void {
     const one = v128.load(vectors.one);
     const q = v128.load(record, recruitment);
     const hazard = f32x4.div(v128.load(vectors.drought), f32x4.add(one, v128.load(record, wetness)));
-    const total = f32x4.add(v128.load(vectors.background), hazard);
+    const total = f32x4.add(v128.load(calm), hazard);
     const h = f32x4.pmax(v128.load(vectors.lowest), f32x4.mul(total, v128.load(vectors.minusYears)));
     const bits = shifted(h);
     const scale = scaleOf(bits);
@@ -57,8 +62,12 @@ export function comeThrough(y: i32, from: i32, to: i32): void {
     const before = f32x4.add(kept, f32x4.mul(f32x4.sub(K, kept), q));
     const gone = v128.and(f32x4.mul(before, f32x4.sub(f32x4.sub(one, scale), part)), holds);
     lost = f32x4.add(lost, gone);
-    if (twoCauses)
+    if (manyCauses)
       lostToDrought = f32x4.add(lostToDrought, v128.and(f32x4.mul(gone, f32x4.div(hazard, total)), holds));
+    if (eaten) {
+      const grazing = v128.and(f32x4.mul(gone, f32x4.div(v128.load(grazingRow + at), total)), holds);
+      v128.store(lostToGrazers, f32x4.add(v128.load(lostToGrazers), grazing));
+    }
     if (draws) {
       const stays = f32x4.add(carry, f32x4.mul(v128.load(vectors.freed), q));
       v128.store(record, v128.and(f32x4.mul(S, q), holds), free);

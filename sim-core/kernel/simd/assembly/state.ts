@@ -65,10 +65,16 @@ export let replicate: u32 = 0;
 let top: usize = 0;
 
 /** A stretch of memory that starts on 16 bytes and may be read 16 bytes past its end. */
-function room(bytes: usize): usize {
+export function room(bytes: usize): usize {
   const start = top;
   top = (top + bytes + 31) & ~15;
   return start;
+}
+
+/** Takes the memory that was given room to; false where the machine does not give that much. */
+export function claim(): bool {
+  const missing = <i32>((top + 65535) >> 16) - memory.size();
+  return missing <= 0 || memory.grow(missing) >= 0;
 }
 
 /** Lays out the memory of a map; false where the machine does not give that much. */
@@ -119,8 +125,7 @@ export function layOut(
     shares = room(256 << 3);
     ratios = room((32 * 32) << 3);
   }
-  const missing = <i32>((top + 65535) >> 16) - memory.size();
-  if (missing > 0 && memory.grow(missing) < 0) return false;
+  if (!claim()) return false;
   if (counts) {
     for (let k = 0; k < 256; k++) store<f64>(shares + (k << 3), <f64>k / 255);
     for (let n = 0; n < 32; n++)

@@ -1,0 +1,122 @@
+import type { Parameter } from './parameters.ts';
+
+/** The rates of grazers, in the order in which they are told. The same kind of table as `parameters.ts`. */
+export const grazerParameters = {
+  initialGrazers: {
+    label: 'Grazers at the survey',
+    symbol: 'G₀',
+    unit: '1/m²',
+    meaning: 'Grazers everywhere at the survey',
+    default: 5,
+    min: 0,
+    max: 10_000,
+    source: 'common practice, no source',
+  },
+  grazingRate: {
+    label: 'Grazing',
+    symbol: 'α',
+    unit: 'm²/yr',
+    meaning: 'Loss hazard a year that one grazer a square metre adds',
+    default: 0.01,
+    min: 0,
+    max: 10,
+    source: 'common practice, no source',
+  },
+  grazerGrowth: {
+    label: 'Massing on plants',
+    symbol: 'f',
+    unit: '1/yr',
+    meaning: 'How fast grazers increase where neighbours stand full',
+    default: 2,
+    min: 0,
+    max: 10,
+    source: 'common practice, no source',
+  },
+  grazerMortality: {
+    label: 'Grazer mortality',
+    symbol: 'm',
+    unit: '1/yr',
+    meaning: 'How fast grazers dwindle for want of plants',
+    default: 0.7,
+    min: 0,
+    max: 10,
+    source: 'common practice, no source',
+  },
+  predation: {
+    label: 'Predation',
+    symbol: 'p',
+    unit: '1/yr',
+    meaning: 'How fast predators take grazers; less the drier it is, none at an index of −4 and below',
+    default: 2,
+    min: 0,
+    max: 20,
+    source: 'common practice, no source',
+  },
+  refugePredation: {
+    label: 'Predation at refuges',
+    symbol: 'p_M',
+    unit: '1/yr',
+    meaning: 'How fast predators that live in a full-strength refuge take grazers there, in drought too',
+    default: 1.5,
+    min: 0,
+    max: 20,
+    source: 'common practice, no source',
+  },
+  grazerImmigration: {
+    label: 'Grazers that come in',
+    symbol: 'ι',
+    unit: '1/m²/yr',
+    meaning: 'Grazers that arrive from beyond the site, everywhere alike',
+    default: 1,
+    min: 0,
+    max: 1000,
+    source: 'common practice, no source',
+  },
+  grazerLimit: {
+    label: 'Most grazers',
+    symbol: 'G_max',
+    unit: '1/m²',
+    meaning: 'Grazers that find room on a square metre',
+    default: 500,
+    min: 0.01,
+    max: 10_000,
+    source: 'Several hundred snails on a square metre in a grazing front, from memory',
+  },
+  grazerSpread: {
+    label: 'Grazer spread',
+    symbol: 's_G',
+    unit: 'm',
+    meaning: 'How far grazers move in a year along each axis, root mean square',
+    default: 5,
+    min: 0,
+    max: 500,
+    source: 'common practice, no source',
+  },
+} as const satisfies Record<string, Parameter>;
+
+/** The rates of fragments, likewise. */
+export const fragmentParameters = {
+  fragmentRate: {
+    label: 'Fragments',
+    symbol: 'ρ',
+    unit: '1/m²/yr',
+    meaning: 'Pieces that break off a square metre of cover in a year and can take root',
+    default: 0.01,
+    min: 0,
+    max: 10,
+    source: 'common practice, no source',
+  },
+  fragmentDistance: {
+    label: 'Fragment distance',
+    symbol: 'L',
+    unit: 'm',
+    meaning: 'Mean distance over which a piece is carried',
+    default: 20,
+    min: 0.1,
+    max: 5000,
+    source: 'common practice, no source',
+  },
+} as const satisfies Record<string, Parameter>;
+
+export type GrazerRates = { [name in keyof typeof grazerParameters]: number };
+export type FragmentRates = { [name in keyof typeof fragmentParameters]: number };
