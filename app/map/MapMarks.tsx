@@ -27,25 +27,6 @@ export function SelectionRing({ foothold }: { foothold: MapFoothold }) {
   );
 }
 
-/** A flag that is being moved. */
-export function MovingFlag({ x, y }: { x: number; y: number }) {
-  const { left, top } = useMapFrame().project(x, y);
-  return (
-    <g transform={`translate(${left} ${top})`}>
-      <path
-        d="M0 0V-12.500M0-12.500h8.500v5.600h-8.500"
-        fill="none"
-        stroke={halo}
-        strokeWidth={4}
-        strokeLinejoin="round"
-      />
-      <path d="M0-12.600h8.600v6h-8.600z" fill="var(--color-flag)" />
-      <path d="M0 0V-13" stroke="var(--color-ink)" strokeWidth={1.5} />
-      <circle r={1.7} fill="var(--color-ink)" />
-    </g>
-  );
-}
-
 /** Lines through the cell that the keyboard reads, with the cell itself where it is large enough to be seen. */
 export function Crosshair({ x, y }: { x: number; y: number }) {
   const { project, size, scale } = useMapFrame();

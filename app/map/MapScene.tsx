@@ -5,7 +5,7 @@ import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { paletteOf, schemeOf, type MapColours } from './map-colours.ts';
 import type { MapRaster } from './map-raster.ts';
-import { symbolSize, type MapFoothold } from './map-symbols.ts';
+import { clumpSize, clumpSpacing, symbolSize, type MapFoothold } from './map-symbols.ts';
 import { toScreen, type MapSize, type MapView } from './map-view.ts';
 import { useMapColours } from './use-map-colours.ts';
 import { RasterTiles } from './raster-tiles.ts';
@@ -18,8 +18,6 @@ export interface MapSceneProps {
   readonly raster?: MapRaster;
   readonly ground?: Uint8Array;
   readonly footholds: readonly MapFoothold[];
-  /** id of a foothold that is being moved and drawn elsewhere */
-  readonly hidden?: string;
   readonly view: MapView;
   readonly size: MapSize;
   readonly pixelRatio: number;
@@ -73,7 +71,7 @@ interface Layers {
 }
 
 function Scene(props: MapSceneProps & { readonly colours: MapColours }) {
-  const { grid, raster, ground, footholds, hidden, view, size, pixelRatio, colours, onPainted } = props;
+  const { grid, raster, ground, footholds, view, size, pixelRatio, colours, onPainted } = props;
   const { app } = useApplication();
   const [layers, setLayers] = useState<Layers>();
   const { width, height } = grid;
@@ -112,12 +110,16 @@ function Scene(props: MapSceneProps & { readonly colours: MapColours }) {
     layers?.symbols.setSheet(colours, pixelRatio);
   }, [layers, colours, pixelRatio]);
   useEffect(() => {
-    layers?.symbols.setFootholds(footholds, grid, hidden);
-  }, [layers, footholds, grid, hidden]);
+    layers?.symbols.setFootholds(footholds, grid);
+  }, [layers, footholds, grid]);
+  const spacing = useMemo(() => clumpSpacing(footholds), [footholds]);
   useEffect(() => {
     layers?.tiles.setScale(view.scale);
-    layers?.symbols.setSize(symbolSize(view, grid, footholds.length) / view.scale);
-  }, [layers, view, grid, footholds.length]);
+    layers?.symbols.setSize(
+      symbolSize(view, grid, footholds.length) / view.scale,
+      clumpSize(spacing, view.scale / grid.cellSize) / view.scale,
+    );
+  }, [layers, view, grid, footholds.length, spacing]);
   useEffect(() => {
     app.renderer.resize(size.width, size.height, pixelRatio);
   }, [app, size, pixelRatio]);

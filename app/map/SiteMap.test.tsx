@@ -1,10 +1,10 @@
 import { cleanup, fireEvent, render, screen } from '@testing-library/react';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
-import { useState } from 'react';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { MapFoothold } from './map-symbols.ts';
+import type { MapPoint, MapTool } from './map-tool.ts';
 import { toScreen, type MapView } from './map-view.ts';
-import type { MapPlace, SiteMapProps } from './site-map-props.ts';
+import type { SiteMapProps } from './site-map-props.ts';
 import { SiteMap } from './SiteMap.tsx';
 
 /** 100 × 50 cells of 1 m on 1000 × 500 px: ten px a cell. */
@@ -23,31 +23,33 @@ afterEach(() => {
   vi.restoreAllMocks();
 });
 
-function show(props: Partial<SiteMapProps> = {}) {
-  const calls: unknown[][] = [];
-  function Harness() {
-    const [selectedId, setSelected] = useState<string | undefined>(props.selectedId);
-    return (
-      <SiteMap
-        grid={grid}
-        raster={{ kind: 'cover', values }}
-        footholds={[mound, flag]}
-        label="Sallow Reach, cover in 2043"
-        summary="A fifth of the ground is covered."
-        onPlace={(place: MapPlace) => calls.push(['place', place])}
-        onSelect={(id) => {
-          calls.push(['select', id]);
-          setSelected(id);
-        }}
-        onMove={(id, place) => calls.push(['move', id, place])}
-        onRemove={(id) => calls.push(['remove', id])}
-        onKept={(id) => calls.push(['kept', id])}
-        {...props}
-        selectedId={selectedId}
-      />
-    );
-  }
-  render(<Harness />);
+/** What a tool is told, as words: `press 12 34 f` */
+const told = (what: string, at: MapPoint | undefined) =>
+  at ? `${what} ${at.x} ${at.y}${at.id ? ` ${at.id}` : ''}${at.shift ? ' shift' : ''}` : what;
+
+function show(props: Partial<SiteMapProps> = {}, more: Partial<MapTool> = {}) {
+  const calls: string[] = [];
+  const tell = (what: string) => (at: MapPoint | undefined) => void calls.push(told(what, at));
+  const tool: MapTool = {
+    cursor: 'crosshair',
+    help: 'Enter places a foothold.',
+    press: tell('press'),
+    grab: (at) => at.id === 'f',
+    drag: tell('drag'),
+    drop: tell('drop'),
+    ...more,
+  };
+  render(
+    <SiteMap
+      grid={grid}
+      raster={{ kind: 'cover', values }}
+      footholds={[mound, flag]}
+      label="Sallow Reach, cover in 2043"
+      summary="A fifth of the ground is covered."
+      tool={tool}
+      {...props}
+    />,
+  );
   const map = screen.getByRole('application');
   const press = (key: string, shiftKey = false) => fireEvent.keyDown(map, { key, shiftKey });
   const at = (clientX: number, clientY: number) => ({ clientX, clientY, pointerId: 1, button: 0 });
@@ -64,37 +66,53 @@ describe('SiteMap where there is no WebGL', () => {
 });
 
 describe('SiteMap by pointer', () => {
-  it('places where it is clicked, to the centimetre, with its cell', () => {
-    const { calls, map, at } = show({ tool: 'place' });
+  it('tells its tool where it is pressed, to the centimetre, and what stands there', () => {
+    const { calls, map, at } = show();
     fireEvent.pointerDown(map, at(403, 123.4));
-    fireEvent.pointerUp(map, at(404, 123.4));
-    expect(calls).toEqual([['place', { column: 40, row: 12, x: 1040.4, y: 2037.66 }]]);
-  });
-  it('selects what is clicked, also while placing, and lets go on bare ground', () => {
-    const { calls, map, at } = show({ tool: 'place' });
+    fireEvent.pointerUp(map, { ...at(404, 123.4), shiftKey: true });
     fireEvent.pointerDown(map, at(207, 200));
     fireEvent.pointerUp(map, at(207, 200));
-    expect(calls).toEqual([['select', 'f']]);
-    cleanup();
-    const look = show();
-    fireEvent.pointerDown(look.map, look.at(500, 400));
-    fireEvent.pointerUp(look.map, look.at(500, 400));
-    expect(look.calls).toEqual([['select', undefined]]);
+    expect(calls).toEqual(['press 1040.4 2037.66 shift', 'press 1020.7 2030 f']);
   });
-  it('drags a planned foothold to where it is dropped', () => {
+  it('finds an outline where no symbol stands', () => {
+    const { calls, map, at } = show({
+      areas: [
+        {
+          id: 'a',
+          kind: 'fence',
+          ring: [
+            [1040, 2040],
+            [1060, 2040],
+            [1050, 2020],
+          ],
+        },
+      ],
+    });
+    fireEvent.pointerDown(map, at(500, 200));
+    fireEvent.pointerUp(map, at(500, 200));
+    expect(calls).toEqual(['press 1050 2030 a']);
+  });
+  it('gives its tool the drags that it grabs, and moves the map by the others', () => {
+    const views: MapView[] = [];
+    const whole = show({ onView: (view) => views.push(view) });
+    const { at } = whole;
+    fireEvent.pointerDown(whole.map, at(205, 203));
+    fireEvent.pointerMove(whole.map, at(260, 300));
+    fireEvent.pointerUp(whole.map, at(300, 300));
+    expect(whole.calls).toEqual(['drag 1026 2020', 'drop 1030 2020']);
+    expect(views).toEqual([]);
+    fireEvent.pointerDown(whole.map, at(805, 405));
+    fireEvent.pointerMove(whole.map, at(700, 300));
+    fireEvent.pointerUp(whole.map, at(700, 300));
+    expect(views).toHaveLength(1);
+    expect(whole.calls).toHaveLength(2);
+  });
+  it('breaks a drag off where the browser takes the pointer away', () => {
     const { calls, map, at } = show();
     fireEvent.pointerDown(map, at(205, 203));
     fireEvent.pointerMove(map, at(260, 300));
-    fireEvent.pointerMove(map, at(300, 300));
-    fireEvent.pointerUp(map, at(300, 300));
-    expect(calls).toEqual([['move', 'f', { column: 30, row: 30, x: 1030, y: 2020 }]]);
-  });
-  it('does not drag what was surveyed', () => {
-    const { calls, map, at } = show();
-    fireEvent.pointerDown(map, at(805, 405));
-    fireEvent.pointerMove(map, at(700, 300));
-    fireEvent.pointerUp(map, at(700, 300));
-    expect(calls).toEqual([]);
+    fireEvent.pointerCancel(map, at(260, 300));
+    expect(calls.at(-1)).toBe('drop');
   });
 });
 
@@ -116,36 +134,20 @@ describe('SiteMap by keyboard', () => {
     press('Escape');
     expect(screen.queryByText('cover 20 %')).toBeNull();
   });
-  it('places at the crosshair', () => {
-    const { calls, press } = show({ tool: 'place' });
+  it('presses at the crosshair by Enter and by Space', () => {
+    const { calls, press } = show();
     press('ArrowRight');
     press('ArrowRight', true);
     press('Enter');
-    expect(calls).toEqual([['place', { column: 51, row: 25, x: 1051.5, y: 2024.5 }]]);
+    press(' ');
+    expect(calls).toEqual(['press 1051.5 2024.5', 'press 1051.5 2024.5']);
   });
-  it('finds footholds one after the other, moves and removes planned ones, and surveyed ones not', () => {
-    const { calls, press } = show();
-    press('n');
-    press('ArrowUp');
-    press('ArrowLeft', true);
-    press('Delete');
-    expect(calls.splice(0)).toEqual([
-      ['select', 'f'],
-      ['move', 'f', { column: 20, row: 19, x: 1020.5, y: 2030.5 }],
-      ['move', 'f', { column: 10, row: 20, x: 1010.5, y: 2029.5 }],
-      ['remove', 'f'],
-    ]);
-    press('n');
-    press('ArrowUp');
-    press('Delete');
-    expect(calls).toEqual([
-      ['select', 'm'],
-      ['kept', 'm'],
-    ]);
-  });
-  it('brings into view what it finds', () => {
+  it('lets its tool take keys first, and brings into view what that names', () => {
     const views: MapView[] = [];
-    const { press } = show({ onView: (view) => views.push(view) });
+    const { press } = show(
+      { onView: (view) => views.push(view) },
+      { key: (event) => (event.key === 'n' ? flag : event.key === '0') },
+    );
     for (let i = 0; i < 4; i++) press('+');
     press('n');
     const view = views[views.length - 1];
@@ -154,6 +156,9 @@ describe('SiteMap by keyboard', () => {
     expect(left).toBeLessThanOrEqual(941);
     expect(top).toBeGreaterThanOrEqual(59);
     expect(top).toBeLessThanOrEqual(441);
+    const before = views.length;
+    press('0');
+    expect(views).toHaveLength(before);
   });
   it('zooms by keys and by buttons, and comes back to the whole', () => {
     const scales: number[] = [];

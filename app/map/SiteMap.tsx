@@ -4,11 +4,14 @@ import { cellAt, cellCentre, cellIndex } from '#sim-core/grid/grid.ts';
 import { MapControls, MapReading, MapUnavailable } from './MapFurniture.tsx';
 import { MapEdge } from './MapEdge.tsx';
 import { MapFrameContext } from './map-context.ts';
-import { Crosshair, MovingFlag, SelectionRing } from './MapMarks.tsx';
+import { Crosshair, SelectionRing } from './MapMarks.tsx';
 import { MapLegend } from './MapLegend.tsx';
+import { MapOverlay } from './MapOverlay.tsx';
+import type { MapArea } from './map-areas.ts';
 import { describeCell } from './map-raster.ts';
 import type { MapFoothold } from './map-symbols.ts';
 import { clampView, startView, toScreen, wholeView, zoomAt, type MapSize, type MapView } from './map-view.ts';
+import type { MapContour } from './paint-overlay.ts';
 import type { SiteMapProps } from './site-map-props.ts';
 import { useBoxSize } from './use-box-size.ts';
 import { useGraphics } from './use-graphics.ts';
@@ -18,6 +21,9 @@ import { useMapActions } from './use-map-actions.ts';
 const MapScene = lazy(() => import('./MapScene.tsx').then((m) => ({ default: m.MapScene })));
 
 const noFootholds: readonly MapFoothold[] = [];
+const noAreas: readonly MapArea[] = [];
+const noContours: readonly MapContour[] = [];
+const noneSelected: ReadonlySet<string> = new Set();
 const compactBelow = 560;
 /** What has been painted by the scene of a generation. */
 interface Painting {
@@ -28,7 +34,8 @@ const noRoom: MapSize = { width: 0, height: 0 };
 
 /** The map of a site: a raster under palette, footholds, and words; by pointer, finger and keyboard alike. */
 export function SiteMap(props: SiteMapProps) {
-  const { grid, raster, ground, footholds = noFootholds, selectedId, furniture = true } = props;
+  const { grid, raster, ground, footholds = noFootholds, furniture = true, tool } = props;
+  const { areas = noAreas, contours = noContours, selected = noneSelected } = props;
   const box = useRef<HTMLDivElement>(null);
   const surface = useRef<HTMLDivElement>(null);
   const room = useBoxSize(box);
@@ -46,14 +53,17 @@ export function SiteMap(props: SiteMapProps) {
     setOwn(next);
     props.onView?.(next);
   };
-  const act = useMapActions({ ...props, footholds, surface, view, size, show });
-  const { hovered, crosshair, moving, keyed } = act;
+  const act = useMapActions({ ...props, footholds, areas, surface, view, size, show });
+  const { hovered, crosshair, keyed } = act;
 
   const read = crosshair ?? (hovered && cellAt(grid, hovered.x, hovered.y));
   const centre = read && cellCentre(grid, read.column, read.row);
   const reading = read && describeCell(raster, ground, cellIndex(grid, read.column, read.row));
-  const selected = footholds.find((f) => f.id === selectedId);
-  const shownSelection = selected && (moving?.id === selected.id ? { ...selected, ...moving } : selected);
+  const chosen = useMemo(
+    () => (selected.size > 0 ? footholds.filter((f) => f.kind !== 'clump' && selected.has(f.id)) : []),
+    [footholds, selected],
+  );
+  const ringed = chosen.length > 1 ? chosen : noFootholds;
   const frame = useMemo(
     () =>
       view && {
@@ -85,11 +95,13 @@ export function SiteMap(props: SiteMapProps) {
             key={generation}
             {...{ grid, raster, ground, footholds, view }}
             {...room}
-            hidden={moving?.id}
             onLost={graphics.lose}
             onPainted={onPainted}
           />
         </Suspense>
+      )}
+      {room && view && graphics.ready && (areas.length > 0 || contours.length > 0 || ringed.length > 0) && (
+        <MapOverlay {...{ grid, view, areas, contours, ringed, selected }} {...room} />
       )}
       <div
         ref={surface}
@@ -100,25 +112,20 @@ export function SiteMap(props: SiteMapProps) {
         tabIndex={0}
         className={classNames(
           'absolute inset-0 touch-none outline-offset-[-3px]',
-          props.tool === 'place' ? 'cursor-crosshair' : 'cursor-grab active:cursor-grabbing',
+          tool?.cursor === 'crosshair' ? 'cursor-crosshair' : 'cursor-grab active:cursor-grabbing',
         )}
         {...act.handlers}
       />
       <p id={help} className="sr-only">
         {summary} Arrow keys move a crosshair that reads the ground, with Shift by one cell; plus and minus
-        zoom; 0 shows the whole site.
-        {props.tool === 'place' && ' Enter places a foothold at the crosshair.'}
-        {footholds.length > 0 && ' N selects the next foothold, planned ones first.'}
-        {props.onMove && ' Arrow keys move a selected planned foothold by one cell, with Shift by ten.'}{' '}
-        Escape lets go.
+        zoom; 0 shows the whole site. {tool?.help} Escape lets go.
       </p>
       {frame && view && (
         <MapFrameContext value={frame}>
           <svg className="pointer-events-none absolute inset-0 size-full" aria-hidden="true">
             {furniture && <MapEdge {...{ grid, view, size, compact }} />}
             {centre && crosshair && <Crosshair {...centre} />}
-            {moving && <MovingFlag x={moving.x} y={moving.y} />}
-            {shownSelection && <SelectionRing foothold={shownSelection} />}
+            {chosen.length === 1 && <SelectionRing foothold={chosen[0]} />}
           </svg>
           <div className="pointer-events-none absolute inset-0 overflow-hidden">{props.children}</div>
           {furniture && (

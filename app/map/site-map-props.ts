@@ -1,15 +1,12 @@
 import type { ReactNode } from 'react';
 import type { Grid } from '#sim-core/grid/grid.ts';
+import type { MapArea } from './map-areas.ts';
 import type { MapCell } from './map-keys.ts';
 import type { MapRaster } from './map-raster.ts';
 import type { MapFoothold } from './map-symbols.ts';
+import type { MapTool } from './map-tool.ts';
 import type { MapView } from './map-view.ts';
-
-/** A place that was pointed at, in the grid's CRS, m (to the centimetre), and its cell. */
-export interface MapPlace extends MapCell {
-  readonly x: number;
-  readonly y: number;
-}
+import type { MapContour } from './paint-overlay.ts';
 
 export interface SiteMapProps {
   readonly grid: Grid;
@@ -18,18 +15,14 @@ export interface SiteMapProps {
   /** capacity of the ground (0..255); cells of 0 are painted as water. Leave it out under class maps. */
   readonly ground?: Uint8Array;
   readonly footholds?: readonly MapFoothold[];
-  readonly selectedId?: string;
-  /** `place`: a click or Enter puts something where it points; `look`: it selects */
-  readonly tool?: 'look' | 'place';
-  readonly onPlace?: (place: MapPlace) => void;
-  /** `undefined`: nothing is selected any more */
-  readonly onSelect?: (id: string | undefined) => void;
-  /** Planned footholds can be moved where this is given: by dragging, or by arrow keys when selected. */
-  readonly onMove?: (id: string, place: MapPlace) => void;
-  /** Delete on a selected planned foothold. */
-  readonly onRemove?: (id: string) => void;
-  /** Delete on a selected surveyed foothold, which cannot be removed: the place to say so. */
-  readonly onKept?: (id: string) => void;
+  /** works that take up ground, outlined */
+  readonly areas?: readonly MapArea[];
+  /** lines of equal values, such as closing years */
+  readonly contours?: readonly MapContour[];
+  /** ids of footholds and areas that are selected */
+  readonly selected?: ReadonlySet<string>;
+  /** what pointer and keys do beyond reading, moving and zooming the map */
+  readonly tool?: MapTool;
   readonly onHover?: (cell: MapCell | undefined) => void;
   /** Controlled view, for maps that move together; without it the map keeps its own. */
   readonly view?: MapView;

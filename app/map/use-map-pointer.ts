@@ -4,15 +4,15 @@ import type { ScreenPoint } from './map-view.ts';
 export interface MapPointerActions {
   readonly zoom: (at: ScreenPoint, factor: number) => void;
   readonly pan: (right: number, down: number) => void;
-  readonly hover: (at: ScreenPoint | undefined) => void;
+  readonly hover: (at: ScreenPoint | undefined, shift: boolean) => void;
   /** Pressed and let go in one place. */
-  readonly click: (at: ScreenPoint) => void;
-  readonly doubleClick: (at: ScreenPoint, out: boolean) => void;
-  /** Whether what is below may be dragged; if so, `drag` follows it and `drop` ends it. */
-  readonly grab: (at: ScreenPoint) => boolean;
-  readonly drag: (at: ScreenPoint) => void;
+  readonly click: (at: ScreenPoint, shift: boolean) => void;
+  readonly doubleClick: (at: ScreenPoint, shift: boolean) => void;
+  /** Whether a drag that begins here is not to move the map; if so, `drag` follows it and `drop` ends it. */
+  readonly grab: (at: ScreenPoint, shift: boolean) => boolean;
+  readonly drag: (at: ScreenPoint, shift: boolean) => void;
   /** `undefined`: the drag was broken off. */
-  readonly drop: (at: ScreenPoint | undefined) => void;
+  readonly drop: (at: ScreenPoint | undefined, shift: boolean) => void;
 }
 
 type Gesture = 'pressed' | 'pan' | 'drag' | 'pinch' | undefined;
@@ -68,19 +68,19 @@ export function useMapPointer(element: RefObject<HTMLElement | null>, actions: M
     event.currentTarget.setPointerCapture(event.pointerId);
     pointers.current.set(event.pointerId, at);
     if (pointers.current.size === 2) {
-      if (gesture.current === 'drag') latest.current.drop(undefined);
+      if (gesture.current === 'drag') latest.current.drop(undefined, event.shiftKey);
       gesture.current = 'pinch';
     } else if (pointers.current.size === 1) {
       gesture.current = 'pressed';
       pressedAt.current = at;
-      grabbed.current = event.button === 0 && latest.current.grab(at);
+      grabbed.current = event.button === 0 && latest.current.grab(at, event.shiftKey);
     }
   };
   const onPointerMove = (event: PointerEvent<HTMLElement>) => {
     const at = place(event);
     const before = pointers.current.get(event.pointerId);
     if (!before) {
-      latest.current.hover(at);
+      latest.current.hover(at, event.shiftKey);
       return;
     }
     if (gesture.current === 'pinch' && pointers.current.size === 2) {
@@ -97,15 +97,15 @@ export function useMapPointer(element: RefObject<HTMLElement | null>, actions: M
       Math.hypot(at.left - pressedAt.current.left, at.top - pressedAt.current.top) >= still
     )
       gesture.current = grabbed.current ? 'drag' : 'pan';
-    if (gesture.current === 'drag') latest.current.drag(at);
+    if (gesture.current === 'drag') latest.current.drag(at, event.shiftKey);
     if (gesture.current === 'pan') latest.current.pan(at.left - before.left, at.top - before.top);
-    latest.current.hover(at);
+    latest.current.hover(at, event.shiftKey);
   };
   const finish = (event: PointerEvent<HTMLElement>, kept: boolean) => {
     if (!pointers.current.delete(event.pointerId)) return;
     const at = place(event);
-    if (gesture.current === 'drag') latest.current.drop(kept ? at : undefined);
-    if (gesture.current === 'pressed' && kept && event.button === 0) latest.current.click(at);
+    if (gesture.current === 'drag') latest.current.drop(kept ? at : undefined, event.shiftKey);
+    if (gesture.current === 'pressed' && kept && event.button === 0) latest.current.click(at, event.shiftKey);
     // After a pinch the finger that stays goes on moving the map, and lifts without a click.
     gesture.current = gesture.current === 'pinch' && pointers.current.size === 1 ? 'pan' : undefined;
   };
@@ -120,7 +120,7 @@ export function useMapPointer(element: RefObject<HTMLElement | null>, actions: M
       finish(event, false);
     },
     onPointerLeave: () => {
-      latest.current.hover(undefined);
+      latest.current.hover(undefined, false);
     },
     onDoubleClick: (event: { clientX: number; clientY: number; shiftKey: boolean }) => {
       latest.current.doubleClick(place(event), event.shiftKey);
