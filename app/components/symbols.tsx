@@ -38,3 +38,24 @@ export function PlantingSymbol() {
     </svg>
   );
 }
+
+/** A fence: the dashed line of its outline. */
+export function FenceSymbol() {
+  return (
+    <svg width="14" height="16" aria-hidden="true" className={inLine}>
+      <path d="M0 9h14" strokeWidth="1.8" strokeDasharray="4 2" className="fill-none stroke-ink" />
+    </svg>
+  );
+}
+
+/** A loss that is expected: a dotted ring with a cross. */
+export function LossSymbol() {
+  return (
+    <svg width="14" height="16" aria-hidden="true" className={inLine}>
+      <g strokeWidth="1.3" className="fill-none stroke-ink">
+        <circle cx="7" cy="9" r="6" strokeDasharray="2 2" />
+        <path d="M4.500 6.500l5 5m0-5l-5 5" />
+      </g>
+    </svg>
+  );
+}

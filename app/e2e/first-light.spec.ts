@@ -88,7 +88,7 @@ test('from a GeoTIFF to a run that is replayed, repeated and exported', async ({
     await page.getByRole('button', { name: 'Add an option' }).click();
     await page.getByLabel('Name of the option').fill('Three mounds');
     await page.getByRole('button', { name: 'Add it' }).click();
-    await page.getByText('Place mounds', { exact: true }).click();
+    await page.getByRole('radio', { name: 'Mounds: one by one' }).check();
     const map = page.getByRole('application');
     await expect(page.locator('canvas')).toBeVisible();
     const box = (await map.boundingBox())!;

@@ -8,6 +8,8 @@ export interface MapNoteProps {
   readonly y: number;
   /** where the words stand from it, px; to the right unless said */
   readonly offset?: { readonly left: number; readonly top: number };
+  /** shown at the edge of the map where the place itself is out of sight */
+  readonly always?: boolean;
   readonly children: ReactNode;
 }
 
@@ -19,10 +21,14 @@ const controlsWidth = 48;
 const ring = 22;
 
 /** Words on the map, tied to their place by a thin leader line. Near an edge they go where there is room. */
-export function MapNote({ x, y, offset = { left: 84, top: 0 }, children }: MapNoteProps) {
+export function MapNote({ x, y, offset = { left: 84, top: 0 }, always, children }: MapNoteProps) {
   const { project, size } = useMapFrame();
-  const at = project(x, y);
-  if (at.left < 0 || at.top < 0 || at.left > size.width || at.top > size.height) return null;
+  const exact = project(x, y);
+  const at = {
+    left: Math.min(size.width, Math.max(0, exact.left)),
+    top: Math.min(size.height, Math.max(0, exact.top)),
+  };
+  if (!always && (at.left !== exact.left || at.top !== exact.top)) return null;
   const { d, style } = layNote(at, size, offset);
   return (
     <>

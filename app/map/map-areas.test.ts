@@ -1,6 +1,6 @@
 // @vitest-environment node
 import { expect, it } from 'vitest';
-import { areaAt, areasIn, type MapArea } from './map-areas.ts';
+import { areaAt, type MapArea } from './map-areas.ts';
 
 const square = (id: string, west: number, south: number, side: number): MapArea => ({
   id,
@@ -20,9 +20,4 @@ it('finds the smallest area that holds a place, and an outline before either', (
   expect(areaAt(areas, 100.5, 50, 0.1)?.id).toBe('large');
   expect(areaAt([areas[1], square('within', 38, 38, 24)], 39, 50, 0.05)?.id).toBe('within');
   expect(areaAt(areas, 102, 50, 0.1)).toBeUndefined();
-});
-
-it('takes into a box what lies in it wholly', () => {
-  expect(areasIn(areas, { west: 30, east: 70, south: 30, north: 70 }).map((a) => a.id)).toEqual(['small']);
-  expect(areasIn(areas, { west: 45, east: 70, south: 30, north: 70 })).toEqual([]);
 });

@@ -61,10 +61,3 @@ export function areaAt(
   }
   return found;
 }
-
-/** Areas that lie wholly inside a box of the ground. */
-export const areasIn = (areas: readonly MapArea[], box: Box): MapArea[] =>
-  areas.filter((area) => {
-    const { west, east, south, north } = boxOf(area);
-    return west >= box.west && east <= box.east && south >= box.south && north <= box.north;
-  });

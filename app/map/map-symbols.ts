@@ -97,20 +97,3 @@ export function footholdAt(
   });
   return found;
 }
-
-/** Those of the footholds, each id once, whose point lies in a box of the ground. */
-export function footholdsIn(
-  footholds: readonly MapFoothold[],
-  box: { west: number; east: number; south: number; north: number },
-): MapFoothold[] {
-  const byId = new Map<string, MapFoothold>();
-  for (const foothold of footholds)
-    if (
-      foothold.x >= box.west &&
-      foothold.x <= box.east &&
-      foothold.y >= box.south &&
-      foothold.y <= box.north
-    )
-      byId.set(foothold.id, foothold);
-  return [...byId.values()];
-}

@@ -1,9 +1,13 @@
 import { z } from 'zod';
+import { workSchema, workSetSchema } from '#contract/works.ts';
 import type { Option } from '#contract/options.ts';
-import { worksSchema } from '#contract/works.ts';
-import { draftOf, draftWorks, isUnsaved, optionDraft, type OptionDraft } from './option-draft.ts';
+import { draftOf, isUnsaved, noneSelected, optionDraft, type OptionDraft } from './option-draft.ts';
 
-const keptSchema = z.object({ revision: z.number().int(), works: worksSchema });
+const keptSchema = z.object({
+  revision: z.number().int(),
+  works: z.array(workSchema),
+  sets: z.array(workSetSchema).default([]),
+});
 const keyOf = (optionId: string) => `foothold.draft.${optionId}`;
 
 /** The browser may refuse storage, or hold something else there: the drawing then lasts as long as the page. */
@@ -20,8 +24,8 @@ export function keepDraft(optionId: string, draft: OptionDraft): void {
   try {
     if (!isUnsaved(draft)) tab()?.removeItem(keyOf(optionId));
     else {
-      const { revision, works } = draft;
-      tab()?.setItem(keyOf(optionId), JSON.stringify({ revision, works: works.map((work) => work.action) }));
+      const { revision, works, sets } = draft;
+      tab()?.setItem(keyOf(optionId), JSON.stringify({ revision, works, sets }));
     }
   } catch {
     // Storage is full: nothing else depends on it.
@@ -41,9 +45,10 @@ export function restoreDraft(option: Option): OptionDraft {
   const kept = readKept(option.id);
   if (!kept) return saved;
   const restored = {
-    ...optionDraft(saved, { type: 'select', key: undefined }),
-    works: draftWorks(kept.works),
-    past: [saved.works],
+    ...optionDraft(saved, { type: 'select', ids: noneSelected }),
+    works: kept.works,
+    sets: kept.sets,
+    past: [saved.saved],
   };
   return isUnsaved(restored) ? { ...restored, revision: kept.revision } : saved;
 }

@@ -1,134 +1,156 @@
 import type { Option } from '#contract/options.ts';
 import { sameWork } from '#contract/work-changes.ts';
-import type { Marks, Work } from '#contract/works.ts';
+import type { Marks, Work, WorkSet } from '#contract/works.ts';
 import type { Mound } from '#sim-core/spec/run-spec.ts';
 
-/** One of the works while it is drawn: its key is its id, and stays, whatever is moved, undone or saved. */
-export interface DraftWork {
-  readonly key: string;
-  readonly action: Work;
+export type MoundWork = Mound & Marks;
+
+/** What is drawn at one time: the works, and how those were laid that a pattern laid. */
+export interface DraftState {
+  readonly works: readonly Work[];
+  readonly sets: readonly WorkSet[];
 }
-export type DraftMound = DraftWork & { readonly action: Mound & Marks };
 
 /** What is drawn on an option and not saved yet, with the way back. */
-export interface OptionDraft {
-  readonly works: readonly DraftWork[];
-  readonly past: readonly (readonly DraftWork[])[];
-  readonly future: readonly (readonly DraftWork[])[];
-  readonly selected: string | undefined;
-  /** what the server has, as far as this page knows: the revision that the drawing was made on, and its works */
+export interface OptionDraft extends DraftState {
+  readonly past: readonly DraftState[];
+  readonly future: readonly DraftState[];
+  /** ids of the works that are selected */
+  readonly selected: ReadonlySet<string>;
+  /** what the server has, as far as this page knows: the revision that the drawing was made on, and what it held */
   readonly revision: number;
-  readonly saved: readonly DraftWork[];
-  /** the change made last, so that a mound pushed along by arrow keys is one step back */
+  readonly saved: DraftState;
+  /** the change made last, so that works pushed along by arrow keys are one step back */
   readonly lastChange: string | undefined;
 }
 
-export type MoundChange = Partial<Pick<Mound, 'x' | 'y' | 'year' | 'radius' | 'strength' | 'halo'>>;
 export type DraftAction =
-  | { type: 'place'; mound: Mound & Marks }
-  | { type: 'change'; key: string; change: MoundChange }
-  | { type: 'remove'; key: string }
-  | { type: 'select'; key: string | undefined }
+  /** new works, selected from now on; `instead` takes others away in the same step, `set` says how they were laid */
+  | { type: 'add'; works: readonly Work[]; set?: WorkSet; instead?: ReadonlySet<string> }
+  /** these in place of those with their ids; the same `step` again is one step back */
+  | { type: 'change'; works: readonly Work[]; step?: string }
+  | { type: 'remove'; ids: ReadonlySet<string> }
+  | { type: 'select'; ids: Iterable<string> }
   | { type: 'undo' | 'redo' | 'discard' }
-  /** the server took these works */
-  | { type: 'saved'; revision: number; works: readonly DraftWork[] }
+  /** the server took this */
+  | { type: 'saved'; revision: number; state: DraftState }
   /** what somebody else saved replaces the drawing; undo brings the drawing back */
-  | { type: 'take'; option: Option };
+  | { type: 'take'; option: Pick<Option, 'works' | 'sets' | 'revision'> };
 
 /** Steps that can be taken back. */
 const longestPast = 200;
+export const noneSelected: ReadonlySet<string> = new Set();
 
-const isMound = (work: DraftWork): work is DraftMound => work.action.kind === 'mound';
-export const moundsOf = (works: readonly DraftWork[]): DraftMound[] => works.filter(isMound);
-
-export const draftWorks = (works: readonly Work[]): DraftWork[] =>
-  works.map((action) => ({ key: action.id, action }));
+export const isMound = (work: Work): work is MoundWork => work.kind === 'mound';
 
 /** A draft of what the server has. */
-export function draftOf(option: Pick<Option, 'works' | 'revision'>): OptionDraft {
-  const works = draftWorks(option.works);
+export function draftOf({ works, sets, revision }: Pick<Option, 'works' | 'sets' | 'revision'>): OptionDraft {
+  const saved = { works, sets };
   return {
-    works,
+    ...saved,
     past: [],
     future: [],
-    selected: undefined,
-    revision: option.revision,
-    saved: works,
+    selected: noneSelected,
+    revision,
+    saved,
     lastChange: undefined,
   };
 }
 
 /** Whether the drawing differs from what the server has. */
-export const isUnsaved = ({ works, saved }: OptionDraft): boolean =>
-  works !== saved &&
-  (works.length !== saved.length || works.some((work, i) => !sameWork(work.action, saved[i].action)));
+export const isUnsaved = ({ works, sets, saved }: OptionDraft): boolean =>
+  (works !== saved.works && !sameWork(works, saved.works)) ||
+  (sets !== saved.sets && !sameWork(sets, saved.sets));
 
-/** The next state of a drawing; what cannot be (an unknown key, nothing to undo) changes nothing. */
+/** The next state of a drawing; what cannot be (an unknown id, nothing to undo) changes nothing. */
 export function optionDraft(draft: OptionDraft, action: DraftAction): OptionDraft {
   switch (action.type) {
-    case 'place': {
-      const works = [...draft.works, ...draftWorks([action.mound])];
-      return { ...drawn(draft, works), selected: action.mound.id };
+    case 'add': {
+      if (action.works.length === 0) return draft;
+      const kept = action.instead ? draft.works.filter((work) => !action.instead?.has(work.id)) : draft.works;
+      const sets = action.set
+        ? [...draft.sets.filter(({ id }) => id !== action.set?.id), action.set]
+        : draft.sets;
+      return {
+        ...drawn(draft, usedSets({ works: [...kept, ...action.works], sets })),
+        selected: new Set(action.works.map((work) => work.id)),
+      };
     }
     case 'change': {
-      const found = draft.works.find((work) => work.key === action.key);
-      if (!found || !isMound(found)) return draft;
-      const changed = { ...found, action: { ...found.action, ...action.change } };
-      if (sameWork(changed.action, found.action)) return draft;
-      const works = draft.works.map((work) => (work === found ? changed : work));
-      return drawn(draft, works, `${action.key}:${Object.keys(action.change).sort().join()}`);
+      const given = new Map(action.works.map((work) => [work.id, work]));
+      let changed = false;
+      const works = draft.works.map((work) => {
+        const next = given.get(work.id);
+        if (!next || sameWork(next, work)) return work;
+        changed = true;
+        return next;
+      });
+      return changed ? drawn(draft, usedSets({ works, sets: draft.sets }), action.step) : draft;
     }
     case 'remove': {
-      if (!draft.works.some((work) => work.key === action.key)) return draft;
-      const works = draft.works.filter((work) => work.key !== action.key);
-      const selected = draft.selected === action.key ? undefined : draft.selected;
-      return { ...drawn(draft, works), selected };
+      const works = draft.works.filter((work) => !action.ids.has(work.id));
+      if (works.length === draft.works.length) return draft;
+      return stillThere(drawn(draft, usedSets({ works, sets: draft.sets })));
     }
-    case 'select':
-      return { ...draft, selected: action.key, lastChange: undefined };
+    case 'select': {
+      const selected = new Set(action.ids);
+      return { ...draft, selected: selected.size > 0 ? selected : noneSelected, lastChange: undefined };
+    }
     case 'undo': {
-      const works = draft.past.at(-1);
-      if (!works) return draft;
-      return turned(draft, works, draft.past.slice(0, -1), [draft.works, ...draft.future]);
+      const before = draft.past.at(-1);
+      if (!before) return draft;
+      return turned(draft, before, draft.past.slice(0, -1), [stateOf(draft), ...draft.future]);
     }
     case 'redo': {
-      const [works, ...future] = draft.future;
-      return works ? turned(draft, works, [...draft.past, draft.works], future) : draft;
+      const [next, ...future] = draft.future;
+      return next ? turned(draft, next, [...draft.past, stateOf(draft)], future) : draft;
     }
     case 'discard':
-      return isUnsaved(draft) ? drawn(draft, draft.saved) : draft;
+      return isUnsaved(draft) ? stillThere(drawn(draft, draft.saved)) : draft;
     case 'saved':
-      return { ...draft, saved: action.works, revision: action.revision, lastChange: undefined };
+      return { ...draft, saved: action.state, revision: action.revision, lastChange: undefined };
     case 'take': {
-      const theirs = draftWorks(action.option.works);
-      return {
-        ...drawn(draft, theirs),
-        saved: theirs,
-        selected: undefined,
-        revision: action.option.revision,
-      };
+      const { works, sets, revision } = action.option;
+      const theirs = { works, sets };
+      return stillThere({ ...drawn(draft, theirs), saved: theirs, revision });
     }
   }
 }
 
-/** The same change to the same mound again is one step back, not many. */
-function drawn(draft: OptionDraft, works: readonly DraftWork[], change?: string): OptionDraft {
-  const again = change !== undefined && change === draft.lastChange;
+export const stateOf = ({ works, sets }: DraftState): DraftState => ({ works, sets });
+
+/** A set goes with the last of its works. */
+function usedSets({ works, sets }: DraftState): DraftState {
+  if (sets.length === 0) return { works, sets };
+  const used = new Set(works.map((work) => work.set));
+  const kept = sets.filter(({ id }) => used.has(id));
+  return { works, sets: kept.length === sets.length ? sets : kept };
+}
+
+/** The same change to the same works again is one step back, not many. */
+function drawn(draft: OptionDraft, state: DraftState, step?: string): OptionDraft {
+  const again = step !== undefined && step === draft.lastChange;
   return {
     ...draft,
-    works,
-    past: again ? draft.past : [...draft.past, draft.works].slice(-longestPast),
+    ...stateOf(state),
+    past: again ? draft.past : [...draft.past, stateOf(draft)].slice(-longestPast),
     future: [],
-    lastChange: change,
+    lastChange: step,
   };
 }
 
-function turned(
+const turned = (
   draft: OptionDraft,
-  works: readonly DraftWork[],
+  state: DraftState,
   past: OptionDraft['past'],
   future: OptionDraft['future'],
-): OptionDraft {
-  const selected = works.some((work) => work.key === draft.selected) ? draft.selected : undefined;
-  return { ...draft, works, past, future, selected, lastChange: undefined };
+): OptionDraft => stillThere({ ...draft, ...stateOf(state), past, future, lastChange: undefined });
+
+/** Nothing is selected that is not there. */
+function stillThere(draft: OptionDraft): OptionDraft {
+  if (draft.selected.size === 0) return draft;
+  const ids = new Set(draft.works.map((work) => work.id));
+  const kept = [...draft.selected].filter((id) => ids.has(id));
+  if (kept.length === draft.selected.size) return draft;
+  return { ...draft, selected: kept.length > 0 ? new Set(kept) : noneSelected };
 }

@@ -6,7 +6,14 @@ import { useWarnBeforeClosing } from '#app/lib/use-warn-before-closing.ts';
 import { createOptionMutation, saveOptionMutation } from './change-option.ts';
 import { keepDraft, restoreDraft } from './draft-storage.ts';
 import { optionsQuery } from './list-options.ts';
-import { isUnsaved, optionDraft, type DraftAction, type OptionDraft } from './option-draft.ts';
+import {
+  isUnsaved,
+  optionDraft,
+  stateOf,
+  type DraftAction,
+  type DraftState,
+  type OptionDraft,
+} from './option-draft.ts';
 
 export interface OptionDrawing {
   readonly draft: OptionDraft;
@@ -25,7 +32,8 @@ export interface OptionDrawing {
   readonly takeTheirs: () => void;
 }
 
-const worksOf = (draft: OptionDraft) => draft.works.map((work) => work.action);
+/** What the contract takes: lists of its own. */
+const bodyOf = ({ works, sets }: DraftState) => ({ works: [...works], sets: [...sets] });
 
 /** Drawing on one option; the component that uses it must be keyed by the option. */
 export function useOptionDrawing(option: Option): OptionDrawing {
@@ -44,14 +52,14 @@ export function useOptionDrawing(option: Option): OptionDrawing {
   useWarnBeforeClosing(unsaved);
 
   const isConflict = saveOption.error instanceof ProblemError && saveOption.error.code === 'conflict';
-  const send = async (works: OptionDraft['works'], name?: string) => {
+  const send = async (state: DraftState, name?: string) => {
     try {
       const saved = await saveOption.mutateAsync({
         optionId: option.id,
         revision: draft.revision,
-        ...(name === undefined ? { works: works.map((work) => work.action) } : { name }),
+        ...(name === undefined ? bodyOf(state) : { name }),
       });
-      draw({ type: 'saved', revision: saved.revision, works });
+      draw({ type: 'saved', revision: saved.revision, state });
     } catch (error) {
       // The list then brings what the others saved, and with it who and when.
       await queryClient.invalidateQueries({ queryKey: optionsQuery(option.siteId).queryKey });
@@ -66,7 +74,7 @@ export function useOptionDrawing(option: Option): OptionDrawing {
     saving: saveOption.isPending || copyOption.isPending,
     error: isConflict ? copyOption.error : (saveOption.error ?? copyOption.error),
     save: () =>
-      send(draft.works).then(
+      send(stateOf(draft)).then(
         () => true,
         () => false,
       ),
@@ -75,7 +83,7 @@ export function useOptionDrawing(option: Option): OptionDrawing {
       try {
         const copy = await copyOption.mutateAsync({
           name: `${option.name}, my copy`.slice(0, 100),
-          works: worksOf(draft),
+          ...bodyOf(draft),
         });
         draw({ type: 'take', option });
         return copy;

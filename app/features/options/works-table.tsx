@@ -1,55 +1,69 @@
 import { useState } from 'react';
-import { Blank } from '#app/components/blank.tsx';
-import { FlagSymbol, PlantingSymbol } from '#app/components/symbols.tsx';
+import type { Work } from '#contract/works.ts';
+import { FenceSymbol, FlagSymbol, LossSymbol, PlantingSymbol } from '#app/components/symbols.tsx';
 import { Table, type Column } from '#app/components/table.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
-import type { DraftWork } from './option-draft.ts';
-import { moundInWords, placeInWords, placeOf, workInWords } from './works-words.ts';
+import { EditedBlank } from './edited-blank.tsx';
+import { fieldText, type WorkField } from './work-fields.ts';
+import { placeInWords, placeOf, titleOf, workInWords } from './works-words.ts';
 
-export interface NumberedWork {
+interface NumberedWork {
   readonly number: number;
-  readonly work: DraftWork;
+  readonly work: Work;
 }
-/** Fields of a mound that the table edits, as they are typed. */
-export type MoundField = 'year' | 'x' | 'y' | 'radius';
 
 const atOnce = 200;
 
-/** The works read as a table: the way to draw with keys alone, and on a phone. */
+/** The works read as a table: the words for the picture, with the same selection, and a way to draw with keys alone. */
 export function WorksTable(props: {
-  works: readonly DraftWork[];
-  selected: string | undefined;
-  onSelect: (key: string) => void;
+  works: readonly Work[];
+  selected: ReadonlySet<string>;
+  onSelect: (ids: readonly string[]) => void;
   /** absent for those who only read; returns what is wrong, or undefined when the value was taken */
-  onEdit?: (key: string, field: MoundField, text: string) => string | undefined;
-  onRemove?: (key: string) => void;
+  onEdit?: (id: string, field: WorkField, text: string) => string | undefined;
+  onRemove?: (id: string) => void;
 }) {
   const [most, setMost] = useState(atOnce);
-  const { onEdit, onRemove } = props;
+  const { onEdit, onRemove, selected } = props;
   const rows = props.works.map((work, i): NumberedWork => ({ number: i + 1, work }));
-  const field = (row: NumberedWork, name: MoundField, label: string) => {
-    const { action, key } = row.work;
-    if (action.kind !== 'mound') return name === 'year' ? action.year : '–';
+  const field = ({ work, number }: NumberedWork, name: WorkField, label: string) => {
+    const text = fieldText(work, name);
+    if (text === undefined) return '–';
     return onEdit ? (
-      <EditedNumber
-        key={`${key}/${name}/${action[name]}`}
-        label={`${label} of mound ${row.number}`}
-        value={action[name]}
-        onTake={(text) => onEdit(key, name, text)}
+      <EditedBlank
+        key={`${work.id}/${name}/${text}`}
+        label={`${label} of ${work.kind} ${number}`}
+        value={text}
+        onTake={(typed) => onEdit(work.id, name, typed)}
       />
     ) : (
-      action[name]
+      text
     );
   };
+  const toggled = (id: string) =>
+    selected.has(id) ? [...selected].filter((other) => other !== id) : [...selected, id];
   const columns: Column<NumberedWork>[] = [
+    {
+      key: 'selected',
+      head: <span className="sr-only">selected</span>,
+      cell: ({ work, number }) => (
+        <input
+          type="checkbox"
+          aria-label={`Select number ${number}`}
+          className="size-4 accent-ink touch:size-6"
+          checked={selected.has(work.id)}
+          onChange={() => props.onSelect(toggled(work.id))}
+        />
+      ),
+    },
     { key: 'number', head: 'no.', number: true, cell: (row) => row.number },
     {
       key: 'what',
       head: 'works',
-      cell: ({ work: { key, action } }) => (
-        <WordButton className="text-left whitespace-normal" onClick={() => props.onSelect(key)}>
-          {action.kind === 'mound' ? <FlagSymbol /> : <PlantingSymbol />}
-          {action.kind === 'mound' ? `mound, ${moundInWords(action)}` : workInWords(action)}
+      cell: ({ work, number }) => (
+        <WordButton className="text-left whitespace-normal" onClick={() => props.onSelect([work.id])}>
+          <WorkSymbol work={work} />
+          {titleOf(work, number)}: {workInWords(work)}
         </WordButton>
       ),
     },
@@ -70,7 +84,7 @@ export function WorksTable(props: {
           {
             key: 'place',
             head: 'place',
-            cell: ({ work }) => <span className="font-mono">{placeInWords(placeOf(work.action))}</span>,
+            cell: ({ work }) => <span className="font-mono">{placeInWords(placeOf(work))}</span>,
           },
         ] satisfies Column<NumberedWork>[])),
     ...(onRemove
@@ -79,7 +93,7 @@ export function WorksTable(props: {
             key: 'remove',
             head: <span className="sr-only">remove</span>,
             cell: ({ work, number }) => (
-              <WordButton lined aria-label={`Remove number ${number}`} onClick={() => onRemove(work.key)}>
+              <WordButton lined aria-label={`Remove number ${number}`} onClick={() => onRemove(work.id)}>
                 Remove
               </WordButton>
             ),
@@ -93,8 +107,8 @@ export function WorksTable(props: {
         caption="Works in this option"
         columns={columns}
         rows={rows.slice(0, most)}
-        rowKey={({ work }) => work.key}
-        selected={({ work }) => work.key === props.selected}
+        rowKey={({ work }) => work.id}
+        selected={({ work }) => selected.has(work.id)}
       />
       {rows.length > most && (
         <WordButton lined className="mt-2" onClick={() => setMost(most + atOnce)}>
@@ -105,35 +119,9 @@ export function WorksTable(props: {
   );
 }
 
-/** A number that is taken when it is left or confirmed, and put back by Escape. */
-function EditedNumber(props: { label: string; value: number; onTake: (text: string) => string | undefined }) {
-  const [text, setText] = useState(String(props.value));
-  const [error, setError] = useState<string>();
-  const take = () => {
-    if (text !== String(props.value)) setError(props.onTake(text));
-  };
-  return (
-    <>
-      <Blank
-        label={props.label}
-        inputMode="decimal"
-        value={text}
-        error={error}
-        onChange={(event) => setText(event.target.value)}
-        onBlur={take}
-        onKeyDown={(event) => {
-          if (event.key === 'Enter') take();
-          if (event.key === 'Escape') {
-            setText(String(props.value));
-            setError(undefined);
-          }
-        }}
-      />
-      {error !== undefined && (
-        <span role="alert" className="block max-w-[32ch] text-left text-note text-danger">
-          {error}
-        </span>
-      )}
-    </>
-  );
+/** The mark of one of the works, small enough for a line of text. */
+export function WorkSymbol({ work }: { work: Pick<Work, 'kind'> }) {
+  if (work.kind === 'mound') return <FlagSymbol />;
+  if (work.kind === 'planting' || work.kind === 'clumps') return <PlantingSymbol />;
+  return work.kind === 'fence' ? <FenceSymbol /> : <LossSymbol />;
 }

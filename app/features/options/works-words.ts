@@ -13,6 +13,17 @@ const kinds: Record<Action['kind'], [one: string, many: string]> = {
 const countIn = (work: Action): number => (work.kind === 'clumps' ? clumpsIn(work) : 1);
 const clumpsIn = ({ points, each }: Clumps): number => points.length * each;
 
+const titles: Record<Action['kind'], string> = {
+  mound: 'Mound',
+  planting: 'Planting',
+  clumps: 'Planting of clumps',
+  fence: 'Fence',
+  loss: 'Loss',
+};
+/** What one of the works is called: its name, or what it is with its number in the table. */
+export const titleOf = (work: Action & { name?: string | undefined }, number: number): string =>
+  work.name ?? `${titles[work.kind]} ${number}`;
+
 /** `22 mounds in 2027`, one entry for each kind and year, in order of years. */
 export function worksByYear(
   works: readonly Action[],
@@ -53,8 +64,9 @@ export function moundInWords({ radius, strength, halo }: Mound): string {
   return parts.filter(Boolean).join(', ');
 }
 
-/** What one of the works is, where it is no mound. */
-export function workInWords(action: Exclude<Action, Mound>): string {
+/** What one of the works is. */
+export function workInWords(action: Action): string {
+  if (action.kind === 'mound') return moundInWords(action);
   if (action.kind === 'clumps')
     return `${countOf('clumps', clumpsIn(action))} at ${formatCounted(action.points.length, 'point')}`;
   const size = areaInWords(action.area);

@@ -4,7 +4,7 @@ import { createMemoryRouter, Outlet, RouterProvider } from 'react-router-dom';
 import { afterEach, beforeEach, expect, it, vi } from 'vitest';
 import type { Option } from '#contract/options.ts';
 import type { Site } from '#contract/sites.ts';
-import { startingPen } from '#app/features/options/mound-pen.ts';
+import { startingPens } from '#app/features/options/board/board-pens.ts';
 import { layerFixture, siteFixture } from '#app/features/runs/testing/site-fixture.ts';
 import { createQueryClient } from '#app/lib/query-client.ts';
 import type { Work } from '#contract/works.ts';
@@ -73,9 +73,9 @@ function show(more: { works?: Work[]; on?: Site; year?: string; justMade?: boole
         errors: {},
         retry: () => undefined,
       }}
-      pen={{ ...startingPen(on.outlook.surveyYear), ...(more.year !== undefined && { year: more.year }) }}
+      pens={{ ...startingPens(on.outlook.surveyYear), ...(more.year !== undefined && { year: more.year }) }}
       justMade={more.justMade ?? false}
-      onPen={() => undefined}
+      onPens={() => undefined}
       onChoose={() => undefined}
     />
   );

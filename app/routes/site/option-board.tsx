@@ -1,19 +1,26 @@
 import { useEffect, useMemo, useRef, useState } from 'react';
 import type { Option } from '#contract/options.ts';
-import { newWorkId } from '#contract/works.ts';
+import { newWorkId, type Work } from '#contract/works.ts';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
-import { moundProblem } from '#app/features/options/check-mound.ts';
-import { readPen, type MoundPen } from '#app/features/options/mound-pen.ts';
-import { moundsOf } from '#app/features/options/option-draft.ts';
+import { readArea } from '#app/features/options/board/area-pen.ts';
+import type { BoardPens } from '#app/features/options/board/board-pens.ts';
+import { isAreaTool, type BoardTool } from '#app/features/options/board/board-tools.ts';
+import { worksProblem, type RefusedPlace } from '#app/features/options/board/check-works.ts';
+import { useBoardTool } from '#app/features/options/board/use-board-tool.ts';
+import { readYear } from '#app/features/options/board/area-pen.ts';
+import { readMound } from '#app/features/options/mound-pen.ts';
+import { SelectionForm } from '#app/features/options/selection-form.tsx';
+import { surveyedMounds } from '#app/features/options/surveyed-mounds.ts';
 import { useOptionDrawing } from '#app/features/options/use-option-drawing.ts';
-import { countOf, worksByYear } from '#app/features/options/works-words.ts';
-import type { MoundField } from '#app/features/options/works-table.tsx';
 import { useUndoKeys } from '#app/features/options/use-undo-keys.ts';
-import { parseNumber } from '#app/lib/parse-number.ts';
+import { withField, type WorkField } from '#app/features/options/work-fields.ts';
+import { countOf, worksByYear } from '#app/features/options/works-words.ts';
+import type { MapFoothold } from '#app/map/map-symbols.ts';
 import { Yearline } from '#app/yearline/Yearline.tsx';
 import { OptionAction } from './option-action.tsx';
-import { OptionMap, type RefusedPlace } from './option-map.tsx';
+import { OptionMap, type FoundSurveyed } from './option-map.tsx';
 import { OptionMargin } from './option-margin.tsx';
+import { OptionSentence } from './option-sentence.tsx';
 import { OptionTools } from './option-tools.tsx';
 import { SitePage } from './site-page.tsx';
 import { tolerancesOf } from './tolerances.ts';
@@ -25,13 +32,13 @@ export function OptionBoard(props: {
   options: readonly Option[];
   option: Option;
   ground: GroundRasters;
-  pen: MoundPen;
+  pens: BoardPens;
   /** it was added this moment: the keyboard goes to its map */
   justMade: boolean;
-  onPen: (pen: MoundPen) => void;
+  onPens: (pens: BoardPens) => void;
   onChoose: (optionId: string, isNew?: boolean) => void;
 }) {
-  const { option, ground, pen, justMade, onChoose } = props;
+  const { option, ground, pens, justMade, onChoose } = props;
   const { site, mayDraw } = useSite();
   const { outlook, grid } = site;
   const drawing = useOptionDrawing(option);
@@ -39,81 +46,108 @@ export function OptionBoard(props: {
   const [asTable, setAsTable] = useState(false);
   const [refused, setRefused] = useState<RefusedPlace>();
   const [missed, setMissed] = useState(0);
-  const [chosenTool, setTool] = useState<'place' | 'look'>(draft.works.length === 0 ? 'place' : 'look');
-  const board = useRef<HTMLDivElement>(null);
-  const focusMap = () => board.current?.querySelector<HTMLElement>('[role="application"]')?.focus();
+  const [found, setFound] = useState<FoundSurveyed>();
+  const [chosenTool, setTool] = useState<BoardTool>(draft.works.length === 0 ? 'mound' : 'select');
+  const page = useRef<HTMLDivElement>(null);
+  const focusMap = () => page.current?.querySelector<HTMLElement>('[role="application"]')?.focus();
   useEffect(() => {
     if (justMade) focusMap();
   }, [justMade]);
 
   const lastYear = outlook.surveyYear + outlook.years;
-  const dated = draft.works.map((work) => work.action.year);
-  const usual = Math.max(outlook.surveyYear + 1, ...dated);
+  const dated = draft.works.map((work) => work.year);
+  const usual = dated.reduce((latest, year) => Math.max(latest, year), outlook.surveyYear + 1);
   const { year, setYear } = useYearParam(outlook.surveyYear, lastYear, usual);
 
   const editable = mayDraw && !option.wait;
-  const tool = editable ? chosenTool : 'look';
+  const tool = editable ? chosenTool : 'select';
   useUndoKeys(editable, (type) => {
     setRefused(undefined);
     draw({ type });
   });
-  const read = readPen(pen, outlook);
+  const worksGround = useMemo(
+    // A site has no layer of allowed ground yet: works may go wherever the plant can grow.
+    () => ({ grid, capacity: ground.capacity, allowed: undefined }),
+    [grid, ground.capacity],
+  );
+  const surveyed = useMemo(
+    (): MapFoothold[] =>
+      ground.refuge
+        ? surveyedMounds(grid, ground.refuge).map(({ x, y }, i) => ({
+            id: `s${i}`,
+            x,
+            y,
+            kind: 'surveyed',
+            name: 'Surveyed mound',
+          }))
+        : [],
+    [ground.refuge, grid],
+  );
   const pins = useMemo(
     () =>
-      worksByYear(draft.works.map((work) => work.action)).map(({ year: y, kind, count }) => ({
-        year: y,
-        label: countOf(kind, count),
-      })),
+      worksByYear(draft.works).map(({ year: y, kind, count }) => ({ year: y, label: countOf(kind, count) })),
     [draft.works],
   );
 
-  /** Takes a place for a new or a moved mound, or says on the spot why not. */
-  const allowed = (x: number, y: number): boolean => {
-    const problem = moundProblem(grid, ground.capacity, x, y);
-    setRefused(problem === undefined ? undefined : { x, y, problem });
-    return problem === undefined;
-  };
-  const place = (x: number, y: number) => {
-    if (!read.mound) return setMissed(missed + 1);
-    if (!allowed(x, y)) return;
-    draw({ type: 'place', mound: { id: newWorkId(), kind: 'mound', x, y, ...read.mound } });
-    // What was just placed must not stand faint on the map.
-    if (year < read.mound.year) setYear(read.mound.year);
-  };
-  const move = (key: string, x: number, y: number) => {
-    if (allowed(x, y)) draw({ type: 'change', key, change: { x, y } });
-  };
-  const remove = (key: string) => {
-    setRefused(undefined);
-    draw({ type: 'remove', key });
-  };
-  const edit = (key: string, field: MoundField, text: string): string | undefined => {
-    const mound = moundsOf(draft.works).find((work) => work.key === key)?.action;
-    const value = parseNumber(text);
-    if (!mound) return undefined;
-    if (value === undefined) return `“${text}” is no number.`;
-    if (field === 'year' && (!Number.isInteger(value) || value <= outlook.surveyYear || value > lastYear))
-      return `Works fall in the years ${outlook.surveyYear + 1} to ${lastYear}.`;
-    if (field === 'radius' && !(value > 0 && value <= 1000)) return 'A radius lies above 0 and up to 1000 m.';
-    if (field === 'x' || field === 'y') {
-      const to = field === 'x' ? { x: value, y: mound.y } : { x: mound.x, y: value };
-      const problem = moundProblem(grid, ground.capacity, to.x, to.y);
-      if (problem) return problem;
-    }
-    draw({ type: 'change', key, change: { [field]: value } });
+  const mound = readMound(pens.mound);
+  const workYear = readYear(pens.year, outlook);
+  const area = isAreaTool(tool) ? readArea(tool, pens.area, pens.year, outlook) : undefined;
+  const errors = area
+    ? (area.errors ?? {})
+    : { ...mound.errors, ...(typeof workYear === 'string' && { year: workYear }) };
+  const miss = () => {
+    setMissed(missed + 1);
     return undefined;
   };
-  const noteEdit = editable
-    ? (key: string) => ({
-        onYear: (text: string) => edit(key, 'year', text),
-        onMove: () => {
-          setTool('look');
-          setAsTable(false);
-          focusMap();
-        },
-        onRemove: () => remove(key),
-      })
-    : undefined;
+  const show = (works: readonly Work[]) => {
+    // What was just placed must not stand faint on the map.
+    const first = works.reduce((least, work) => Math.min(least, work.year), lastYear);
+    if (year < first) setYear(first);
+  };
+  const board = useBoardTool({
+    ...{ ground: worksGround, draft, draw, tool, editable, surveyed },
+    snap: pens.snap,
+    shown: draft.selected.size === 0 ? found?.id : undefined,
+    onTool: setTool,
+    onSnap: () => props.onPens({ ...pens, snap: !pens.snap }),
+    onSurveyed: (id, kept) => {
+      setFound(id === undefined ? undefined : { id, kept });
+      if (id !== undefined && draft.selected.size > 0) draw({ type: 'select', ids: [] });
+    },
+    onRefused: setRefused,
+    moundAt: (x, y) =>
+      mound.mound && typeof workYear === 'number'
+        ? { kind: 'mound', id: newWorkId(), year: workYear, x, y, ...mound.mound }
+        : miss(),
+    workOf: (ring) =>
+      area?.work
+        ? {
+            ...area.work,
+            id: newWorkId(),
+            area: { shape: 'polygon', ring: ring.map(([x, y]) => [x, y]) },
+          }
+        : miss(),
+    onPlace: () => false,
+    onAdded: show,
+  });
+
+  /** Takes changed works, or says why not. */
+  const change = (works: readonly Work[]): string | undefined => {
+    const problem = worksProblem(worksGround, works)?.problem;
+    if (problem === undefined) draw({ type: 'change', works });
+    return problem;
+  };
+  const edit = (id: string, field: WorkField, text: string): string | undefined => {
+    const work = draft.works.find((other) => other.id === id);
+    const next = work && withField(work, field, text, outlook);
+    return typeof next === 'string' ? next : next && change([next]);
+  };
+  const select = (ids: readonly string[]) => {
+    setRefused(undefined);
+    setFound(undefined);
+    draw({ type: 'select', ids });
+  };
+  const chosen = draft.works.filter((work) => draft.selected.has(work.id));
 
   return (
     <SitePage
@@ -121,32 +155,55 @@ export function OptionBoard(props: {
       title={`Options, ${option.name}`}
       tools={
         <OptionTools
-          {...{ option, editable, mayDraw, tool, pen, draft, draw, asTable }}
-          errors={read.errors ?? {}}
-          missed={missed}
-          onPen={(next) => {
-            setMissed(0);
-            props.onPen(next);
-          }}
+          {...{ option, editable, mayDraw, tool, draft, draw, asTable }}
+          snap={pens.snap}
+          sentence={
+            <OptionSentence
+              {...{ tool, pens, board, errors, missed }}
+              onPens={(next) => {
+                setMissed(0);
+                props.onPens(next);
+              }}
+            />
+          }
           onTool={setTool}
+          onSnap={(snap) => props.onPens({ ...pens, snap })}
           onTable={setAsTable}
         />
       }
       map={
-        <div ref={board} className="size-full">
+        <div ref={page} className="size-full">
           <OptionMap
-            {...{ ground, draft, year, tool, asTable, refused, editable, noteEdit }}
+            {...{ ground, draft, board, tool, surveyed, found, year, asTable, refused, editable }}
             title={`${site.name}, ${option.name}, ${year}`}
-            onPlace={place}
-            onSelect={(key) => draw({ type: 'select', key })}
-            onMove={move}
-            onRemove={remove}
+            onSelect={select}
             onEdit={edit}
+            onRemove={(id) => draw({ type: 'remove', ids: new Set([id]) })}
+            onMove={() => {
+              setTool('select');
+              setAsTable(false);
+              focusMap();
+            }}
             onForget={() => setRefused(undefined)}
           />
         </div>
       }
-      margin={<OptionMargin {...{ drawing, option, noteEdit, mayDraw, onChoose }} options={props.options} />}
+      margin={
+        <OptionMargin
+          {...{ drawing, option, mayDraw, onChoose }}
+          options={props.options}
+          selection={
+            chosen.length > 0 && (
+              <SelectionForm
+                works={chosen}
+                number={draft.works.indexOf(chosen[0]) + 1}
+                span={outlook}
+                edit={editable ? { onChange: change, onCopy: board.copy, onRemove: board.remove } : undefined}
+              />
+            )
+          }
+        />
+      }
       yearline={
         <Yearline
           surveyYear={outlook.surveyYear}

@@ -1,20 +1,19 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import type { Option } from '#contract/options.ts';
 import { ConfirmDialog } from '#app/components/confirm-dialog.tsx';
 import { NameDialog } from '#app/components/name-dialog.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
-import { FlagSymbol, PlantingSymbol } from '#app/components/symbols.tsx';
 import { Table } from '#app/components/table.tsx';
 import { sayDone } from '#app/components/toast.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { createOptionMutation, deleteOptionMutation } from '#app/features/options/change-option.ts';
 import { ConflictNotice } from '#app/features/options/conflict-notice.tsx';
 import { restoreDraft } from '#app/features/options/draft-storage.ts';
-import { MoundNote, type MoundNoteProps } from '#app/features/options/mound-note.tsx';
-import { isUnsaved, moundsOf } from '#app/features/options/option-draft.ts';
+import { isUnsaved } from '#app/features/options/option-draft.ts';
 import { OptionList } from '#app/features/options/option-list.tsx';
 import type { OptionDrawing } from '#app/features/options/use-option-drawing.ts';
+import { WorkSymbol } from '#app/features/options/works-table.tsx';
 import { countOf, worksByYear, worksInWords } from '#app/features/options/works-words.ts';
 import { formatCounted } from '#app/lib/formats.ts';
 
@@ -24,29 +23,20 @@ export function OptionMargin(props: {
   option: Option;
   drawing: OptionDrawing;
   mayDraw: boolean;
-  noteEdit: ((key: string) => MoundNoteProps['edit']) | undefined;
+  /** what is selected, above all else */
+  selection: ReactNode;
   /** `isNew`: it was made this moment */
   onChoose: (optionId: string, isNew?: boolean) => void;
 }) {
   const { options, option, drawing } = props;
   const { draft } = drawing;
-  const mound = moundsOf(draft.works).find((work) => work.key === draft.selected);
-  const drawn = draft.works.map((work) => work.action);
+  const drawn = draft.works;
   const groups = worksByYear(drawn);
   const unsaved = (other: Option) =>
     other.id === option.id ? drawing.unsaved : !other.wait && isUnsaved(restoreDraft(other));
   return (
     <>
-      {mound && (
-        <div className="mb-3 border-b border-rule pb-2 lg:hidden">
-          <MoundNote
-            key={mound.key}
-            mound={mound}
-            number={draft.works.indexOf(mound) + 1}
-            edit={props.noteEdit?.(mound.key)}
-          />
-        </div>
-      )}
+      {props.selection}
       {drawing.conflict && (
         <ConflictNotice
           theirs={option}
@@ -75,7 +65,7 @@ export function OptionMargin(props: {
         <p className="text-note text-ink-2">
           {option.wait
             ? 'None: the ground is left to what survived.'
-            : 'None yet. “Place mounds” above the map, then press the map.'}
+            : 'None yet. Choose a tool above the map, then press the map.'}
         </p>
       ) : (
         <Table
@@ -87,7 +77,7 @@ export function OptionMargin(props: {
               head: 'works',
               cell: ({ kind, count }) => (
                 <>
-                  {kind === 'mound' ? <FlagSymbol /> : <PlantingSymbol />} {countOf(kind, count)}
+                  <WorkSymbol work={{ kind }} /> {countOf(kind, count)}
                 </>
               ),
             },
@@ -126,9 +116,9 @@ function OptionDeeds(props: {
     setRenaming({ busy: false });
   };
   const add = (name: string) => {
-    const works = asked === 'copy' ? drawing.draft.works.map((work) => work.action) : [];
+    const { works, sets } = asked === 'copy' ? drawing.draft : { works: [], sets: [] };
     create.mutate(
-      { name, works },
+      { name, works: [...works], sets: [...sets] },
       {
         onSuccess: (made) => {
           close();

@@ -1,52 +1,56 @@
+import type { ReactNode } from 'react';
 import type { Option } from '#contract/options.ts';
-import { FlagSymbol } from '#app/components/symbols.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
-import { WordChoice } from '#app/components/word-choice.tsx';
-import type { MoundPen, PenErrors } from '#app/features/options/mound-pen.ts';
-import { MoundSentence } from '#app/features/options/mound-sentence.tsx';
+import type { BoardTool } from '#app/features/options/board/board-tools.ts';
+import { ToolChoice } from '#app/features/options/board/tool-choice.tsx';
 import type { DraftAction, OptionDraft } from '#app/features/options/option-draft.ts';
 
-/** Tools in words, and the sentence that says what a click does. */
+/** Tools in words, and the sentence that says what the one in use does. */
 export function OptionTools(props: {
   option: Option;
   editable: boolean;
   mayDraw: boolean;
-  tool: 'place' | 'look';
-  pen: MoundPen;
-  errors: PenErrors;
-  missed: number;
+  tool: BoardTool;
+  snap: boolean;
   draft: OptionDraft;
   draw: (action: DraftAction) => void;
   asTable: boolean;
-  onPen: (pen: MoundPen) => void;
-  onTool: (tool: 'place' | 'look') => void;
+  /** what the tool in use does, as blanks in a sentence */
+  sentence: ReactNode;
+  onTool: (tool: BoardTool) => void;
+  onSnap: (snap: boolean) => void;
   onTable: (asTable: boolean) => void;
 }) {
   const { option, editable, draft, draw, tool, asTable } = props;
   return (
     <div className="grid gap-y-1">
-      <div className="flex flex-wrap items-center gap-x-4">
+      <div className="flex flex-wrap items-center gap-x-2.5">
         {editable && (
           <>
-            <span className="hidden items-center gap-1.5 text-[13.5px] text-ink-2 sm:flex">
-              <FlagSymbol /> Mounds
+            <ToolChoice tool={tool} onTool={props.onTool} />
+            <span className="flex items-center gap-x-2.5 sm:border-l sm:border-rule sm:pl-2.5">
+              <WordButton
+                pressed={props.snap}
+                title="Points keep to the cells. Key on the map: K"
+                onClick={() => props.onSnap(!props.snap)}
+              >
+                snap
+              </WordButton>
+              <WordButton
+                disabled={draft.past.length === 0}
+                title="Control and Z"
+                onClick={() => draw({ type: 'undo' })}
+              >
+                Undo
+              </WordButton>
+              <WordButton
+                disabled={draft.future.length === 0}
+                title="Control, Shift and Z"
+                onClick={() => draw({ type: 'redo' })}
+              >
+                Redo
+              </WordButton>
             </span>
-            <WordChoice
-              label="Tool"
-              options={[
-                { key: 'place', label: 'Place mounds' },
-                { key: 'look', label: 'Select and move' },
-              ]}
-              value={tool}
-              onChange={props.onTool}
-            />
-            <span aria-hidden="true" className="hidden h-5 border-l border-rule sm:block" />
-            <WordButton disabled={draft.past.length === 0} onClick={() => draw({ type: 'undo' })}>
-              Undo
-            </WordButton>
-            <WordButton disabled={draft.future.length === 0} onClick={() => draw({ type: 'redo' })}>
-              Redo
-            </WordButton>
           </>
         )}
         {!editable && (
@@ -65,14 +69,7 @@ export function OptionTools(props: {
           {asTable ? 'Read as a map' : 'Read as a table'}
         </WordButton>
       </div>
-      {editable && tool === 'place' && (
-        <MoundSentence pen={props.pen} errors={props.errors} missed={props.missed} onChange={props.onPen} />
-      )}
-      {editable && tool === 'look' && (
-        <p className="flex min-h-6 items-center text-[13.5px] text-ink-2">
-          Press a flag for its note; drag it, or use the arrow keys; Delete removes it.
-        </p>
-      )}
+      {editable && props.sentence}
     </div>
   );
 }

@@ -7,7 +7,7 @@ import { ProblemNotice } from '#app/components/notice.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { useGroundRasters } from '#app/features/layers/use-ground-rasters.ts';
 import { optionsQuery } from '#app/features/options/list-options.ts';
-import { startingPen } from '#app/features/options/mound-pen.ts';
+import { startingPens } from '#app/features/options/board/board-pens.ts';
 import { OptionBoard } from './option-board.tsx';
 import { SitePage } from './site-page.tsx';
 import { useSite } from './use-site.ts';
@@ -19,7 +19,7 @@ export function Page() {
   const ground = useGroundRasters(site);
   const [search] = useSearchParams();
   const patchSearch = useSearchPatch();
-  const [pen, setPen] = useState(() => startingPen(site.outlook.surveyYear));
+  const [pens, setPens] = useState(() => startingPens(site.outlook.surveyYear));
   const [made, setMade] = useState<string>();
 
   if (options.data === undefined)
@@ -31,10 +31,10 @@ export function Page() {
   return (
     <OptionBoard
       key={option.id}
-      {...{ option, ground, pen }}
+      {...{ option, ground, pens }}
       options={options.data}
       justMade={option.id === made}
-      onPen={setPen}
+      onPens={setPens}
       onChoose={(id, isNew = false) => {
         setMade(isNew ? id : undefined);
         patchSearch({ option: id });

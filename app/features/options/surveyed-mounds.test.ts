@@ -1,28 +1,10 @@
 // @vitest-environment node
 import { describe, expect, it } from 'vitest';
-import { moundProblem } from './check-mound.ts';
 import { surveyedMounds } from './surveyed-mounds.ts';
 
 const grid = { width: 6, height: 4, cellSize: 2, originX: 100, originY: 50, epsg: 32631 };
 const drawn = (text: string, values: Record<string, number>) =>
   Uint8Array.from([...text.replace(/\s/g, '')].map((mark) => values[mark]));
-
-describe('moundProblem', () => {
-  const capacity = drawn(
-    `~.....
-     ......
-     ......
-     ......`,
-    { '~': 0, '.': 255 },
-  );
-  it('names what is wrong with a place', () => {
-    expect(moundProblem(grid, capacity, 104, 45)).toBeUndefined();
-    expect(moundProblem(grid, capacity, 101, 49)).toContain('cannot grow there');
-    expect(moundProblem(grid, undefined, 101, 49)).toBeUndefined();
-    expect(moundProblem(grid, capacity, 99, 49)).toContain('eastings run from 100 to 112 m');
-    expect(moundProblem(grid, capacity, 101, 41.9)).toContain('northings from 42 to 50 m');
-  });
-});
 
 describe('surveyedMounds', () => {
   const values = { '.': 0, w: 127, o: 128, X: 255 };

@@ -1,0 +1,34 @@
+import type { Work } from '#contract/works.ts';
+import type { MapArea } from '#app/map/map-areas.ts';
+import type { MapFoothold } from '#app/map/map-symbols.ts';
+import { discRing, type Ring } from '#app/map/rings.ts';
+import type { Area } from '#sim-core/spec/run-spec.ts';
+
+/** Works as the map draws them: a flag for a mound, a dot for a clump, an outline for what takes up ground. */
+export interface DrawnWorks {
+  readonly footholds: MapFoothold[];
+  readonly areas: MapArea[];
+}
+
+/** Not there yet, or no longer, in the year that the map shows. */
+export const isFaint = (work: Work, year: number): boolean =>
+  work.year > year || (work.kind === 'fence' && work.until !== undefined && work.until < year);
+
+export const ringOf = (area: Area): Ring =>
+  area.shape === 'disc' ? discRing(area.x, area.y, area.radius) : area.ring;
+
+/** What is to be drawn for works in a year; `faint` draws all of them faint, as works that are not placed yet. */
+export function worksOnMap(works: readonly Work[], year: number, faint = false): DrawnWorks {
+  const footholds: MapFoothold[] = [];
+  const areas: MapArea[] = [];
+  works.forEach((work, i) => {
+    const common = { id: work.id, year: work.year, name: work.name ?? `${work.kind} ${i + 1}` };
+    const look = faint || isFaint(work, year) ? { ...common, faint: true } : common;
+    if (work.kind === 'mound')
+      footholds.push({ ...look, x: work.x, y: work.y, kind: 'planned', radius: work.radius + work.halo });
+    else if (work.kind === 'clumps')
+      for (const [x, y] of work.points) footholds.push({ ...look, x, y, kind: 'clump' });
+    else areas.push({ ...look, kind: work.kind, ring: ringOf(work.area) });
+  });
+  return { footholds, areas };
+}

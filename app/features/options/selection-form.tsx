@@ -1,0 +1,121 @@
+import type { Work } from '#contract/works.ts';
+import { WordButton } from '#app/components/word-button.tsx';
+import type { Span } from './board/area-pen.ts';
+import { EditedBlank } from './edited-blank.tsx';
+import { fieldText, withField, type WorkField } from './work-fields.ts';
+import { placeInWords, placeOf, titleOf, worksInWords } from './works-words.ts';
+
+/** A blank of the sentence that says what the works are, with the words around it. */
+interface Piece {
+  readonly field: WorkField;
+  readonly label: string;
+  readonly before?: string;
+  readonly after?: string;
+}
+const inYear: Piece = { field: 'year', label: 'Year', before: 'in' };
+const pieces: Record<Work['kind'], readonly Piece[]> = {
+  mound: [
+    { field: 'radius', label: 'Radius, m', after: 'm in radius,' },
+    { field: 'strength', label: 'Strength, per cent of full', before: 'at', after: '% of full strength,' },
+    { field: 'halo', label: 'Width of the fading edge, m', before: 'fading over', after: 'm,' },
+    inYear,
+  ],
+  planting: [
+    { field: 'cover', label: 'Cover that is planted, per cent', before: 'to', after: '% cover,' },
+    inYear,
+  ],
+  clumps: [{ field: 'each', label: 'Clumps at every point', after: 'at every point,' }, inYear],
+  fence: [
+    { field: 'strength', label: 'Grazing kept out, per cent', before: 'keeps out', after: '% of grazing,' },
+    { field: 'year', label: 'First year', before: 'from' },
+    { field: 'until', label: 'Last year; empty for the end', before: 'to' },
+  ],
+  loss: [
+    { field: 'share', label: 'Share of the cover lost, per cent', after: '% of the cover lost,' },
+    inYear,
+  ],
+};
+
+/** What is selected, as blanks that change all of it at once. */
+export function SelectionForm(props: {
+  works: readonly Work[];
+  /** number of the only one selected in the table of works, from 1 */
+  number: number;
+  span: Span;
+  /** absent for those who only read */
+  edit?: {
+    /** why the works cannot be taken, or undefined when they were */
+    onChange: (works: readonly Work[]) => string | undefined;
+    onCopy: () => void;
+    onRemove: () => void;
+  };
+}) {
+  const { works, edit, span } = props;
+  const [first] = works;
+  const alone = works.length === 1;
+  const kind = works.every((work) => work.kind === first.kind) ? first.kind : undefined;
+  const take = (field: WorkField) => (text: string) => {
+    const changed = works.map((work) => withField(work, field, text, span));
+    const wrong = changed.find((work) => typeof work === 'string');
+    return typeof wrong === 'string' ? wrong : edit?.onChange(changed as Work[]);
+  };
+  const blank = ({ field, label }: Piece) => {
+    const texts = new Set(works.map((work) => fieldText(work, field)));
+    const same = texts.size === 1;
+    const [value = ''] = same ? texts : [];
+    if (!edit) return <b className="font-semibold">{same ? value || 'the end' : 'several'}</b>;
+    return (
+      <EditedBlank
+        key={`${works
+          .map((work) => work.id)
+          .join()
+          .slice(0, 200)}/${field}/${value}/${same}`}
+        label={same ? label : `${label}: several, one for all`}
+        value={value}
+        placeholder={same ? (field === 'until' ? 'the end' : undefined) : 'several'}
+        characters={same && value !== '' ? undefined : 7}
+        onTake={take(field)}
+      />
+    );
+  };
+  return (
+    <section aria-label="What is selected" className="mb-3 border-b border-rule pb-2 text-[13.5px]">
+      <h2 className="text-body leading-tight font-bold">
+        {alone ? titleOf(first, props.number) : `${works.length} selected`}
+      </h2>
+      {!alone && <p className="text-note text-ink-2">{worksInWords(works)}</p>}
+      <p className="mt-0.5 flex flex-wrap items-baseline gap-x-1.5 gap-y-1">
+        {(kind ? pieces[kind] : [inYear]).map((piece) => (
+          <span key={piece.field} className="inline-flex flex-wrap items-baseline gap-x-1.5">
+            {piece.before} {blank(piece)} {piece.after}
+          </span>
+        ))}
+      </p>
+      {alone && edit && (
+        <p className="mt-1 flex flex-wrap items-baseline gap-x-1.5">
+          called
+          <EditedBlank
+            key={`${first.id}/name/${first.name ?? ''}`}
+            label="Name"
+            words
+            characters={16}
+            placeholder="no name"
+            value={first.name ?? ''}
+            onTake={take('name')}
+          />
+        </p>
+      )}
+      {alone && <p className="font-mono text-axis text-ink-2">{placeInWords(placeOf(first))}</p>}
+      {edit && (
+        <p className="mt-0.5 flex flex-wrap gap-x-4">
+          <WordButton lined onClick={edit.onCopy}>
+            Copy
+          </WordButton>
+          <WordButton lined onClick={edit.onRemove}>
+            Remove
+          </WordButton>
+        </p>
+      )}
+    </section>
+  );
+}
