@@ -8,6 +8,7 @@ import { healthRoutes } from './features/health/health.routes.ts';
 import { teamInviteRoutes } from './features/team/invites.routes.ts';
 import { optionRoutes } from './features/options/option.routes.ts';
 import { runRoutes } from './features/runs/run.routes.ts';
+import { layerRoutes } from './features/sites/layer.routes.ts';
 import { siteRoutes } from './features/sites/site.routes.ts';
 import { memberRoutes } from './features/team/members.routes.ts';
 import { outboxRoutes } from './features/team/outbox.routes.ts';
@@ -26,6 +27,7 @@ export const allRoutes = (services: Services): Route[] => [
   ...teamInviteRoutes(services),
   ...outboxRoutes(services),
   ...siteRoutes(services),
+  ...layerRoutes(services),
   ...optionRoutes(services),
   ...costsRoutes(services),
   ...runRoutes(services),

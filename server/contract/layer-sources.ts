@@ -1,5 +1,6 @@
 import type { LayerSource } from '#sim-core/spec/run-spec.ts';
-import { valueUnitScale, type Layer, type LayerPart, type Site } from './sites.ts';
+import { valueUnitScale, type Layer, type LayerPart } from './layers.ts';
+import { type Site } from './sites.ts';
 
 /** The layer that plays a part on a site. */
 export const layerOf = (site: Pick<Site, 'layers'>, part: LayerPart): Layer | undefined =>

@@ -2,7 +2,8 @@ import { z } from 'zod';
 import { runResultSchema } from '#sim-core/spec/run-result.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import { endpoint, id, instant, sha256, text } from './endpoint.ts';
-import { gridSchema, layerPartSchema } from './sites.ts';
+import { gridSchema } from './grid.ts';
+import { layerPartSchema } from './layers.ts';
 
 export const runStatuses = ['running', 'finished', 'stopped'] as const;
 export const runSummarySchema = z.object({

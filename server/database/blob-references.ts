@@ -4,6 +4,10 @@ import type { EntityManager } from 'typeorm';
 const references = [
   ['layer', 'hash'],
   ['layer', 'valuesHash'],
+  ['layer', 'sourceHash'],
+  ['upload', 'hash'],
+  ['upload', 'thumbnailHash'],
+  ['feature_import', 'hash'],
   ['run_frame', 'hash'],
   ['run', 'closingHash'],
 ] as const;

@@ -2,9 +2,13 @@ import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { gridSchema } from '#contract/grid.ts';
+import { alignmentSchema } from '#contract/layers.ts';
+import { storedSourceSchema } from '#server/features/sites/layer-reply.ts';
 import { TeamEntity } from './entities/team.ts';
 import { LostYear1764576000000 } from './migrations/1764576000000-lost-year.ts';
 import { OptionHistory1764580000000 } from './migrations/1764580000000-option-history.ts';
+import { Ground1796119200000 } from './migrations/1796119200000-ground.ts';
 import { migrations } from './migrations/index.ts';
 import { openDatabase, openWriter, type Database } from './open-database.ts';
 
@@ -196,6 +200,40 @@ describe('the schema', () => {
         ...plain,
       },
     ]);
+  });
+
+  it('keeps layers of before as layers that are made from the very file that they are', async () => {
+    const writer = await openWriter(file);
+    await undo(writer, Ground1796119200000);
+    await writer.query('PRAGMA foreign_keys = OFF');
+    await writer.query(
+      `INSERT INTO "site" VALUES ('s', 't', '', 0, 6, 4, 2, 412200, 5301900, 32631, 'UTM', '{}', 0, '{}', 0, '')`,
+    );
+    await writer.query(
+      `INSERT INTO "layer" VALUES ('l', 's', 'cover', 'c.tif', 'h', 7, 'v', 8, '{"crsName":"UTM 31"}', 'share', NULL, 'u', 'by', NULL)`,
+    );
+    await writer.query('PRAGMA foreign_keys = ON');
+    await writer.runMigrations();
+    const [layer] = await writer.query<Record<string, string>[]>(`SELECT * FROM "layer"`);
+    await writer.undoLastMigration();
+    const before = await writer.query<unknown>(`SELECT * FROM "layer"`);
+    await writer.destroy();
+    expect(layer).toMatchObject({
+      id: 'l',
+      hash: 'h',
+      sourceHash: 'h',
+      sourceBytes: 7,
+      note: '',
+      vertical: null,
+    });
+    expect(gridSchema.parse(JSON.parse(layer.grid))).toMatchObject({ width: 6, cellSize: 2, epsg: 32631 });
+    expect(storedSourceSchema.parse(JSON.parse(layer.source))).toMatchObject({
+      crsName: 'UTM 31',
+      cellHeight: 2,
+      band: 1,
+    });
+    expect(alignmentSchema.parse(JSON.parse(layer.alignment))).toMatchObject({ method: 'copy' });
+    expect(before).toMatchObject([{ id: 'l', hash: 'h', facts: '{"crsName":"UTM 31"}', replacedAt: null }]);
   });
 
   it('keeps WAL, foreign keys and durable commits', async () => {

@@ -5,6 +5,9 @@ import { OutboxMessageEntity } from './entities/outbox-message.ts';
 import { PersonEntity } from './entities/person.ts';
 import { SessionEntity } from './entities/session.ts';
 import { TeamEntity } from './entities/team.ts';
+import { FeatureImportEntity } from './entities/feature-import.ts';
+import { FeatureEntity } from './entities/feature.ts';
+import { GridChangeEntity } from './entities/grid-change.ts';
 import { LayerEntity } from './entities/layer.ts';
 import { OptionEntity } from './entities/option.ts';
 import { OptionDrawingEntity, OptionRevisionEntity } from './entities/option-revision.ts';
@@ -13,6 +16,7 @@ import { RunFrameEntity } from './entities/run-frame.ts';
 import { RunLayerEntity } from './entities/run-layer.ts';
 import { SiteEntity } from './entities/site.ts';
 import { SiteCostsEntity } from './entities/site-costs.ts';
+import { UploadEntity } from './entities/upload.ts';
 
 /** Every table. */
 export const entities = [
@@ -26,6 +30,10 @@ export const entities = [
   SiteEntity,
   SiteCostsEntity,
   LayerEntity,
+  UploadEntity,
+  GridChangeEntity,
+  FeatureImportEntity,
+  FeatureEntity,
   OptionEntity,
   OptionRevisionEntity,
   OptionDrawingEntity,

@@ -1,4 +1,5 @@
-import type { HabitatClass, Outlook, Plant } from '#contract/sites.ts';
+import type { HabitatClass } from '#contract/layers.ts';
+import type { Outlook, Plant } from '#contract/sites.ts';
 import { demoClasses } from '#rasters/demo/classes.ts';
 import { demoSurveyYear } from '#rasters/demo/sallow-reach.ts';
 import { defaultRates } from '#sim-core/spec/parameters.ts';

@@ -1,7 +1,8 @@
 import { Readable } from 'node:stream';
 import type { Option } from '#contract/options.ts';
 import { worksOf } from '#contract/works.ts';
-import type { LayerPart, Site } from '#contract/sites.ts';
+import type { LayerPart } from '#contract/layers.ts';
+import type { Site } from '#contract/sites.ts';
 import { demoRasters } from '#rasters/demo/sallow-reach.ts';
 import { createOption, listOptions } from '../features/options/option.service.ts';
 import { addLayer, setLayerClasses } from '../features/sites/layer.service.ts';

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { fitsUnit, valueComplaint, type LayerFacts } from './layer-facts.ts';
+import type { LayerFacts } from '#contract/layers.ts';
+import { fitsUnit, valueComplaint } from './layer-facts.ts';
 
 const facts = (changes: Partial<LayerFacts>): LayerFacts => ({
   dataType: 'float32',

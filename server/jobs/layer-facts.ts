@@ -1,18 +1,4 @@
-import type { z } from 'zod';
-import { layerSchema, type LayerPart, type ValueUnit } from '#contract/sites.ts';
-
-/** What was found in a raster, as the contract shows it. */
-export const layerFactsSchema = layerSchema.pick({
-  dataType: true,
-  crsName: true,
-  noData: true,
-  noDataShare: true,
-  minimum: true,
-  maximum: true,
-  histogram: true,
-  classCounts: true,
-});
-export type LayerFacts = z.infer<typeof layerFactsSchema>;
+import type { LayerFacts, LayerPart, ValueUnit } from '#contract/layers.ts';
 
 /** What is wrong with a raster's values for the part it should play. */
 export interface ValueComplaint {
@@ -48,6 +34,8 @@ export function valueComplaint(
       remedy: 'Upload the classified raster, or choose the part that these values play.',
     };
   }
+  // Heights may be any numbers: below zero is common, and their unit and datum are a person's to say.
+  if (part === 'elevation') return undefined;
   if (fitsUnit(facts, unit)) return undefined;
   return {
     found: range,

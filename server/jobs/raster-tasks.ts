@@ -1,7 +1,6 @@
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { ProblemCode } from '#contract/problem.ts';
-import type { LayerPart, ValueUnit } from '#contract/sites.ts';
-import type { LayerFacts } from './layer-facts.ts';
+import type { LayerFacts, LayerPart, ValueUnit } from '#contract/layers.ts';
 
 /** What the raster worker is asked to do. Files are named by paths that the server made; nothing large is copied. */
 export type RasterTask = ReadLayerTask | WriteMapTask | DigestTask;

@@ -1,6 +1,7 @@
 import { readdirSync } from 'node:fs';
 import { join } from 'node:path';
-import type { LayerPart, Site } from '#contract/sites.ts';
+import type { LayerPart } from '#contract/layers.ts';
+import type { Site } from '#contract/sites.ts';
 import { encodeGeoTiff, type GeoTiffContent } from '#rasters/write/geotiff.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Agent } from './people.ts';

@@ -1,5 +1,6 @@
 import { mutationOptions, type QueryClient } from '@tanstack/react-query';
-import { changeLayer, deleteLayer, setClasses, type HabitatClass, type ValueUnit } from '#contract/sites.ts';
+import { changeLayer, deleteLayer, setClasses } from '#contract/ground.ts';
+import { type HabitatClass, type ValueUnit } from '#contract/layers.ts';
 import { callEndpoint } from '#app/lib/api-client.ts';
 import { keepSite } from '#app/lib/site-cache.ts';
 

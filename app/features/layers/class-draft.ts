@@ -1,4 +1,4 @@
-import { habitatClassSchema, type HabitatClass, type Layer } from '#contract/sites.ts';
+import { habitatClassSchema, type HabitatClass, type Layer } from '#contract/layers.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
 import { suggestClasses } from './suggest-classes.ts';
 

@@ -1,4 +1,4 @@
-import type { Layer } from '#contract/sites.ts';
+import type { Layer } from '#contract/layers.ts';
 import { Table } from '#app/components/table.tsx';
 import { classNames } from '#app/lib/class-names.ts';
 import { formatArea, formatCount } from '#app/lib/formats.ts';

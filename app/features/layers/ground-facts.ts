@@ -1,4 +1,4 @@
-import type { HabitatClass, Layer } from '#contract/sites.ts';
+import type { HabitatClass, Layer } from '#contract/layers.ts';
 
 /** Ground that can hold the plant, m², from the class counts alone; `classes` may be unsaved. */
 export function plantableArea(

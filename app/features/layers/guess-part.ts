@@ -1,9 +1,12 @@
-import { layerParts, type LayerPart } from '#contract/sites.ts';
+import { layerParts, type LayerPart } from '#contract/layers.ts';
 
 const hints: Record<LayerPart, RegExp> = {
   habitat: /habitat|class|landcover|land-cover|zones?/i,
+  elevation: /elevation|height|dem|dtm|lidar/i,
   cover: /cover|vegetation|canopy/i,
+  exposure: /expos|fetch|wave/i,
   refuge: /refuge|mound|shelter/i,
+  allowed: /allow|permit/i,
 };
 
 /** The part that a file most likely plays: by its name, else the first that has no layer yet; undefined when none is free. */

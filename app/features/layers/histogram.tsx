@@ -1,4 +1,4 @@
-import type { Layer } from '#contract/sites.ts';
+import type { Layer } from '#contract/layers.ts';
 import { formatNumber } from '#app/lib/formats.ts';
 
 const height = 34;

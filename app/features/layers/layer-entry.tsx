@@ -1,6 +1,6 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useState, type ReactNode } from 'react';
-import type { Layer } from '#contract/sites.ts';
+import type { Layer } from '#contract/layers.ts';
 import { ConfirmDialog } from '#app/components/confirm-dialog.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { formatBytes, formatDateTime, formatShare } from '#app/lib/formats.ts';
@@ -33,8 +33,8 @@ export function LayerEntry(props: {
         </span>
       </div>
       <p className="text-note wrap-anywhere text-ink-2">
-        <span className="font-mono text-ink">{layer.fileName}</span>, {formatBytes(layer.bytes)},{' '}
-        {layer.uploadedBy}, {formatDateTime(layer.uploadedAt)}
+        <span className="font-mono text-ink">{layer.source.fileName}</span>, {formatBytes(layer.source.bytes)}
+        , {layer.source.uploadedBy}, {formatDateTime(layer.source.uploadedAt)}
       </p>
       {part !== 'habitat' && <Histogram layer={layer} />}
       <div className="text-note text-ink-2">
@@ -65,7 +65,7 @@ function RemoveLayer({ siteId, layer }: { siteId: string; layer: Layer }) {
         }}
         title={`Remove ${layer.part} from this site?`}
         description={
-          `${layer.fileName} ${layer.classes ? 'and its class table go' : 'goes'} from the site. ` +
+          `${layer.source.fileName} ${layer.classes ? 'and its class table go' : 'goes'} from the site. ` +
           'Runs already made keep the layer they stand on. To replace it, drop another file; there is no need to remove it first.'
         }
         action={`Remove ${layer.part}`}

@@ -1,5 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
-import { getLayerValues } from '#contract/sites.ts';
+import { getLayerValues } from '#contract/ground.ts';
 import { maximumCells } from '#sim-core/spec/limits.ts';
 import { fetchBlob } from '#app/lib/api-client.ts';
 import { cells } from '#app/workers/cells-client.ts';

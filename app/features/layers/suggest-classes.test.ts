@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { habitatClassesSchema } from '#contract/sites.ts';
+import { habitatClassesSchema } from '#contract/layers.ts';
 import { suggestClasses } from './suggest-classes.ts';
 
 const counts = (n: number) => Array.from({ length: n }, (_, i) => ({ value: i, cells: 10 }));

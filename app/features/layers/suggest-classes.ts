@@ -1,4 +1,4 @@
-import type { HabitatClass, Layer } from '#contract/sites.ts';
+import type { HabitatClass, Layer } from '#contract/layers.ts';
 
 /**
  * Muted colours that stay apart from one another, from the map's coral and, by turns of lightness, in grey: the first

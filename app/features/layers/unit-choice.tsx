@@ -1,5 +1,5 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { valueUnits, type Layer, type ValueUnit } from '#contract/sites.ts';
+import { valueUnits, type Layer, type ValueUnit } from '#contract/layers.ts';
 import { BlankSelect } from '#app/components/blank.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { changeUnitMutation } from './change-layer.ts';

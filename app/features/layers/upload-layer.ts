@@ -1,5 +1,7 @@
 import type { QueryClient } from '@tanstack/react-query';
-import { uploadLayer, type LayerPart, type Site } from '#contract/sites.ts';
+import { uploadLayer } from '#contract/ground.ts';
+import { type LayerPart } from '#contract/layers.ts';
+import { type Site } from '#contract/sites.ts';
 import { callEndpoint, type Progress } from '#app/lib/api-client.ts';
 import { keepSite } from '#app/lib/site-cache.ts';
 

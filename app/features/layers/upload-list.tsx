@@ -1,5 +1,5 @@
 import { useSyncExternalStore } from 'react';
-import { layerParts, type LayerPart } from '#contract/sites.ts';
+import { layerParts, type LayerPart } from '#contract/layers.ts';
 import { BlankSelect } from '#app/components/blank.tsx';
 import { Button } from '#app/components/button.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';

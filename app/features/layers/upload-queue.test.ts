@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { LayerPart } from '#contract/sites.ts';
+import type { LayerPart } from '#contract/layers.ts';
 import { doubledParts, nextUpload, uploadQueue, type Upload } from './upload-queue.ts';
 
 const file = (name: string) => new File(['x'], name);

@@ -1,4 +1,4 @@
-import type { LayerPart } from '#contract/sites.ts';
+import type { LayerPart } from '#contract/layers.ts';
 import type { Progress } from '#app/lib/api-client.ts';
 
 /** One file on its way to the site. */

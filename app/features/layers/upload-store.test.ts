@@ -1,5 +1,5 @@
 import { describe, expect, it, vi } from 'vitest';
-import type { LayerPart } from '#contract/sites.ts';
+import type { LayerPart } from '#contract/layers.ts';
 import { createUploadStore, type SendUpload } from './upload-store.ts';
 
 const files = (...names: string[]) => names.map((name) => new File(['abc'], name));

@@ -1,6 +1,6 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
-import type { Layer } from '#contract/sites.ts';
+import type { Layer } from '#contract/layers.ts';
 import { sayDone } from '#app/components/toast.tsx';
 import { formatCounted } from '#app/lib/formats.ts';
 import { setClassesMutation } from './change-layer.ts';

@@ -1,6 +1,7 @@
 import { layerOf, layerSources } from '#contract/layer-sources.ts';
 import { runActions, type WorkInput } from '#contract/works.ts';
-import { valueUnitScale, type Site } from '#contract/sites.ts';
+import { valueUnitScale } from '#contract/layers.ts';
+import { type Site } from '#contract/sites.ts';
 import { gridProblems } from '#sim-core/run/grid-problems.ts';
 import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
 import { runSpecSchema, runSpecVersion, type Mode, type RunSpec } from '#sim-core/spec/run-spec.ts';

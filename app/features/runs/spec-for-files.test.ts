@@ -6,10 +6,11 @@ import { fileNames, specForFiles } from './spec-for-files.ts';
 import { siteFixture } from './testing/site-fixture.ts';
 
 const site = siteFixture();
+const layers = site.layers.map((layer) => ({ ...layer, fileName: layer.source.fileName }));
 const spec = composeRunSpec(site, { works: [] }, { mode: 'counts', seed: 's' }).spec!;
 
 it('names each raster by its file, keeps how its numbers are read, and is a RunSpec still', () => {
-  const written = specForFiles(spec, site.layers);
+  const written = specForFiles(spec, layers);
   expect(runSpecSchema.parse(JSON.parse(JSON.stringify(written)))).toEqual(written);
   expect(JSON.stringify(written)).not.toContain('"layer":');
   expect(written.layers).toEqual({
@@ -43,7 +44,7 @@ it('names the rasters inside a layer that is put together, and leaves the rest',
       },
     ],
   };
-  const written = specForFiles({ ...spec, layers: { ...spec.layers, refuge: made } }, site.layers);
+  const written = specForFiles({ ...spec, layers: { ...spec.layers, refuge: made } }, layers);
   expect(written.layers.refuge).toEqual({
     highest: [
       { mounds },
@@ -64,7 +65,7 @@ it('names the rasters inside a layer that is put together, and leaves the rest',
 });
 
 it('tells rasters of one file name apart by their part, also where only capitals differ', () => {
-  const [habitat, cover, refuge] = site.layers;
+  const [habitat, cover, refuge] = layers;
   const names = fileNames([
     { ...habitat, fileName: 'Marsh.tif' },
     { ...cover, fileName: 'marsh.tif' },
@@ -74,5 +75,5 @@ it('tells rasters of one file name apart by their part, also where only capitals
 });
 
 it('refuses a raster that the run does not have', () => {
-  expect(() => specForFiles(spec, site.layers.slice(1))).toThrow(/expected one of the run's layers/);
+  expect(() => specForFiles(spec, layers.slice(1))).toThrow(/expected one of the run's layers/);
 });

@@ -1,5 +1,6 @@
 import type { QueryClient } from '@tanstack/react-query';
-import { createSite, type LayerPart, type Site } from '#contract/sites.ts';
+import { type LayerPart } from '#contract/layers.ts';
+import { createSite, type Site } from '#contract/sites.ts';
 import { callEndpoint, type Progress } from '#app/lib/api-client.ts';
 import { keepSite } from '#app/lib/site-cache.ts';
 

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import type { Layer, Site } from '#contract/sites.ts';
+import type { Layer } from '#contract/layers.ts';
+import type { Site } from '#contract/sites.ts';
 import { defaultRates } from '#sim-core/spec/parameters.ts';
 import { killingYears, missingGround, siteSteps } from './site-steps.ts';
 

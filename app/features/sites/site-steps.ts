@@ -1,5 +1,6 @@
 import type { RunSummary } from '#contract/runs.ts';
-import type { Layer, Outlook, Site } from '#contract/sites.ts';
+import type { Layer } from '#contract/layers.ts';
+import type { Outlook, Site } from '#contract/sites.ts';
 import { formatCounted, formatNumber } from '#app/lib/formats.ts';
 
 export const stepKeys = ['ground', 'plant', 'outlook', 'options', 'runs', 'compare', 'brief'] as const;

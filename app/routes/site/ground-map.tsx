@@ -1,5 +1,5 @@
 import { useMemo } from 'react';
-import type { HabitatClass, LayerPart } from '#contract/sites.ts';
+import type { HabitatClass, LayerPart } from '#contract/layers.ts';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';

@@ -1,5 +1,5 @@
 import { useMemo } from 'react';
-import { layerParts, type LayerPart } from '#contract/sites.ts';
+import { layerParts, type LayerPart } from '#contract/layers.ts';
 import { FileDrop } from '#app/components/file-drop.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { classesForMap } from '#app/features/layers/class-draft.ts';
@@ -59,7 +59,7 @@ export function GroundMargin(props: GroundMarginProps) {
           >
             {part === 'habitat' ? (
               <Classes {...props} />
-            ) : (
+            ) : part === 'elevation' ? undefined : (
               <UnitChoice siteId={site.id} layer={layer} editable={mayKeepGround} />
             )}
           </LayerEntry>
@@ -92,7 +92,9 @@ function MissingPart({ part }: { part: LayerPart }) {
     <section className="border-t border-rule py-2.5" aria-label={partLabels[part]}>
       <h2 className="text-body text-ink-2">
         {partLabels[part]}{' '}
-        <span className="text-note font-normal">{part === 'refuge' ? 'none' : 'is missing'}</span>
+        <span className="text-note font-normal">
+          {part === 'habitat' || part === 'cover' ? 'is missing' : 'none'}
+        </span>
       </h2>
       <p className="text-note text-ink-2">{partReasons[part]}</p>
     </section>

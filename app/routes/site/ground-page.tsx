@@ -1,8 +1,8 @@
 import { useDeferredValue, useMemo, useState } from 'react';
 import { useQueryClient } from '@tanstack/react-query';
 import { useSearchParams } from 'react-router-dom';
-import type { LayerPart } from '#contract/sites.ts';
-import { layerParts } from '#contract/sites.ts';
+import type { LayerPart } from '#contract/layers.ts';
+import { layerParts } from '#contract/layers.ts';
 import { useSearchPatch } from '#app/lib/use-search-patch.ts';
 import { LeaveGuard } from '#app/components/leave-guard.tsx';
 import { LinkButton } from '#app/components/link-button.tsx';

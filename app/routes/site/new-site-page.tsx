@@ -1,7 +1,7 @@
 import { useQuery, useQueryClient } from '@tanstack/react-query';
 import { useRef, useState, type FormEvent } from 'react';
 import { Navigate, useParams } from 'react-router-dom';
-import { layerParts, type LayerPart } from '#contract/sites.ts';
+import { layerParts, type LayerPart } from '#contract/layers.ts';
 import { Button } from '#app/components/button.tsx';
 import { FileDrop } from '#app/components/file-drop.tsx';
 import { TextField } from '#app/components/inputs.tsx';

@@ -1,7 +1,7 @@
 import { EntitySchema } from 'typeorm';
 import { TeamEntity } from './team.ts';
 
-/** A place with one working grid. `plant` and `outlook` are JSON of the contract's schemas, parsed when read. */
+/** A place with one working grid. `plant`, `outlook` and their like are JSON of the contract's schemas, parsed when read. */
 export interface SiteRow {
   id: string;
   teamId: string;
@@ -15,6 +15,11 @@ export interface SiteRow {
   originY: number;
   epsg: number;
   crsName: string;
+  /** JSON: the grid that the site was made with; null while it still has it */
+  finestGrid: string | null;
+  /** JSON: what elevation does, and the levels of the tide beside it; null until they are set */
+  elevationCurves: string | null;
+  tidalDatums: string | null;
   plant: string;
   /** false while the plant is the default that nobody has looked at */
   plantSet: boolean;
@@ -38,6 +43,9 @@ export const SiteEntity = new EntitySchema<SiteRow>({
     originY: { type: 'real' },
     epsg: { type: 'integer' },
     crsName: { type: 'text' },
+    finestGrid: { type: 'text', nullable: true },
+    elevationCurves: { type: 'text', nullable: true },
+    tidalDatums: { type: 'text', nullable: true },
     plant: { type: 'text' },
     plantSet: { type: 'boolean' },
     outlook: { type: 'text' },

@@ -2,6 +2,7 @@ import { People1764547200000 } from './1764547200000-people.ts';
 import { Sites1764547260000 } from './1764547260000-sites.ts';
 import { LostYear1764576000000 } from './1764576000000-lost-year.ts';
 import { OptionHistory1764580000000 } from './1764580000000-option-history.ts';
+import { Ground1796119200000 } from './1796119200000-ground.ts';
 
 /** Every change of the schema, oldest first. One that has been released is never edited. */
 export const migrations = [
@@ -9,4 +10,5 @@ export const migrations = [
   Sites1764547260000,
   LostYear1764576000000,
   OptionHistory1764580000000,
+  Ground1796119200000,
 ];

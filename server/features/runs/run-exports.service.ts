@@ -1,6 +1,6 @@
 import { createReadStream } from 'node:fs';
 import { runResultSchema } from '#sim-core/spec/run-result.ts';
-import { gridSchema } from '#contract/sites.ts';
+import { gridSchema } from '#contract/grid.ts';
 import type { RunRow } from '#server/database/entities/run.ts';
 import { readJson } from '#server/database/json-column.ts';
 import { safeFileName } from '#server/files/file-name.ts';

@@ -1,6 +1,6 @@
 import type { Readable } from 'node:stream';
 import { CellValuesError } from '#rasters/cells/cell-header.ts';
-import { gridSchema } from '#contract/sites.ts';
+import { gridSchema } from '#contract/grid.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { frameYears, runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import type { RunRow } from '#server/database/entities/run.ts';

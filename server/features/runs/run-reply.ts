@@ -1,12 +1,12 @@
 import { z } from 'zod';
 import { runStatuses, runSummarySchema, type Run, type RunSummary } from '#contract/runs.ts';
-import { gridSchema, layerPartSchema } from '#contract/sites.ts';
+import { gridSchema } from '#contract/grid.ts';
+import { layerFactsSchema, layerPartSchema } from '#contract/layers.ts';
 import { runResultSchema } from '#sim-core/spec/run-result.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import type { RunRow } from '#server/database/entities/run.ts';
 import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
-import { layerFactsSchema } from '#server/jobs/layer-facts.ts';
 import { notFound } from '#server/middleware/problem-error.ts';
 import { findRun, framesOfRun, layersOfRun, runsOfSite, type RunListRow } from './run.repository.ts';
 

@@ -6,7 +6,6 @@ import { maximumCells } from '#sim-core/spec/limits.ts';
 import { frameYears, runSpecSchema, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { RunRow } from '#server/database/entities/run.ts';
 import { readJson } from '#server/database/json-column.ts';
-import { forgetReplacedLayers } from '#server/database/replaced-layers.ts';
 import { releaseBlobs } from '#server/files/stored-files.ts';
 import { fieldProblem, notFound, ProblemError } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
@@ -163,11 +162,9 @@ export function checkRun(
 
 /** Deletes a run with its frames, and every file that nothing else refers to. */
 export async function deleteRun(services: Services, runId: string): Promise<void> {
-  const hashes = await services.write(async (manager) => {
-    const run = await requireRun(manager, runId);
-    const ofRun = await deleteRunRows(manager, run);
-    return [...ofRun, ...(await forgetReplacedLayers(manager, run.siteId))];
-  });
+  const hashes = await services.write(async (manager) =>
+    deleteRunRows(manager, await requireRun(manager, runId)),
+  );
   await releaseBlobs(services, hashes);
 }
 

@@ -102,7 +102,7 @@ describe('a run', () => {
     expect(storedFiles(server).blobs).not.toContain(own);
   });
 
-  it('keeps the layers that it stands on when they are replaced, until it is deleted', async () => {
+  it('keeps the layers that it stands on when they are replaced, and after it is deleted they may be forgotten', async () => {
     const { modeller } = team.agents;
     const own = await makeSite(modeller, team.teamId);
     const first = geoTiff(Float32Array.from({ length: 24 }, (_, i) => i / 100));
@@ -116,7 +116,12 @@ describe('a run', () => {
       part: 'cover',
       current: false,
     });
+    const replaced = withLayer.layers.find((layer) => layer.part === 'cover')!;
+    const forget = () => modeller.delete(`/api/sites/${own.id}/layers/${replaced.id}`);
+    const kept = await forget().expect(409);
+    expect(kept.body.detail).toContain('“A run”');
     await modeller.delete(`/api/runs/${id}`).expect(204);
+    await forget().expect(200);
     await modeller.get(`/api/sites/${own.id}/layer-values/${hashOf(first)}`).expect(404);
     expect(storedFiles(server).blobs).not.toContain(hashOf(first));
   });

@@ -1,6 +1,8 @@
-import { IsNull } from 'typeorm';
+import { IsNull, Not } from 'typeorm';
 import type { Manager } from '#server/database/manager.ts';
 import { LayerEntity, type LayerRow } from '#server/database/entities/layer.ts';
+import { RunLayerEntity } from '#server/database/entities/run-layer.ts';
+import { RunEntity } from '#server/database/entities/run.ts';
 
 /** The layers that stand on a site now. */
 export const currentLayers = (manager: Manager, siteId: string): Promise<LayerRow[]> =>
@@ -9,9 +11,44 @@ export const currentLayers = (manager: Manager, siteId: string): Promise<LayerRo
 export const findCurrentLayer = (manager: Manager, siteId: string, id: string): Promise<LayerRow | null> =>
   manager.findOneBy(LayerEntity, { id, siteId, replacedAt: IsNull() });
 
-/** Any layer of the site that was made from this file, a replaced one included. */
+/** Any layer of the site, one of the history included. */
+export const findLayer = (manager: Manager, siteId: string, id: string): Promise<LayerRow | null> =>
+  manager.findOneBy(LayerEntity, { id, siteId });
+
+/** Any layer of the site that this raster is, one of the history included. */
 export const findLayerByHash = (manager: Manager, siteId: string, hash: string): Promise<LayerRow | null> =>
   manager.findOne(LayerEntity, { where: { siteId, hash }, order: { uploadedAt: 'DESC' } });
+
+/** Any layer of the site that was made from this file, one of the history included. */
+export const findLayerBySource = (
+  manager: Manager,
+  siteId: string,
+  sourceHash: string,
+): Promise<LayerRow | null> =>
+  manager.findOne(LayerEntity, { where: { siteId, sourceHash }, order: { uploadedAt: 'DESC' } });
+
+/** Every layer that plays or has played a part: the one that stands first, then the latest to be replaced. */
+export const layersOfPart = (manager: Manager, siteId: string, part: string): Promise<LayerRow[]> =>
+  manager.find(LayerEntity, {
+    where: { siteId, part },
+    order: { replacedAt: { direction: 'DESC', nulls: 'FIRST' }, uploadedAt: 'DESC' },
+  });
+
+/** How many runs of a site stand on a raster, and the names of the latest. */
+export async function runsOnRaster(
+  manager: Manager,
+  siteId: string,
+  hash: string,
+): Promise<{ runs: number; runNames: string[] }> {
+  const query = manager
+    .createQueryBuilder(RunEntity, 'run')
+    .innerJoin(RunLayerEntity.options.name, 'used', 'used.runId = run.id')
+    .where('run.siteId = :siteId AND used.hash = :hash', { siteId, hash })
+    .orderBy('run.startedAt', 'DESC')
+    .limit(5);
+  const [rows, runs] = await query.getManyAndCount();
+  return { runs, runNames: rows.map((run) => run.name) };
+}
 
 export const findLayerOfPart = (manager: Manager, siteId: string, part: string): Promise<LayerRow | null> =>
   manager.findOneBy(LayerEntity, { siteId, part, replacedAt: IsNull() });
@@ -22,4 +59,12 @@ export async function insertLayer(manager: Manager, layer: LayerRow): Promise<vo
 
 export async function updateLayer(manager: Manager, id: string, change: Partial<LayerRow>): Promise<void> {
   await manager.update(LayerEntity, { id }, change);
+}
+
+/** Whether another layer of the site is the same raster. */
+export const hasTwin = (manager: Manager, { id, siteId, hash }: LayerRow): Promise<boolean> =>
+  manager.existsBy(LayerEntity, { id: Not(id), siteId, hash });
+
+export async function deleteLayerRow(manager: Manager, id: string): Promise<void> {
+  await manager.delete(LayerEntity, { id });
 }

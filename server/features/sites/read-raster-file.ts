@@ -1,8 +1,7 @@
 import type { Grid } from '#sim-core/grid/grid.ts';
-import type { LayerPart, ValueUnit } from '#contract/sites.ts';
 import { maximumCells } from '#sim-core/spec/limits.ts';
+import type { LayerFacts, LayerPart, ValueUnit } from '#contract/layers.ts';
 import type { ReceivedFile } from '#server/files/blob-store.ts';
-import type { LayerFacts } from '#server/jobs/layer-facts.ts';
 import type { Services } from '#server/services.ts';
 
 /** A raster as it came in: the file, its name for show, and who sent it. */

@@ -1,56 +1,39 @@
 import { z } from 'zod';
+import { gridSchema } from '#contract/grid.ts';
 import {
-  habitatClassesSchema,
+  elevationCurvesSchema,
   layerPartSchema,
-  outlookSchema,
-  plantSchema,
-  valueUnitSchema,
-  type Layer,
-  type Site,
-  type SiteSummary,
-} from '#contract/sites.ts';
-import type { LayerRow } from '#server/database/entities/layer.ts';
+  tidalDatumsSchema,
+  type ElevationCurves,
+} from '#contract/layers.ts';
+import { outlookSchema, plantSchema, type Site, type SiteSummary } from '#contract/sites.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
-import { layerFactsSchema } from '#server/jobs/layer-facts.ts';
 import { notFound } from '#server/middleware/problem-error.ts';
+import { featuresOfSite } from './feature-reply.ts';
+import { layerReply } from './layer-reply.ts';
 import { currentLayers } from './layer.repository.ts';
-import { countsOfSites, findSite, sitesOfTeam, type SiteCounts } from './site.repository.ts';
+import { countsOfSites, findSite, gridOf, sitesOfTeam, type SiteCounts } from './site.repository.ts';
 
 const partsSchema = z.array(layerPartSchema);
 
 function summaryOf(site: SiteRow, counts: SiteCounts): SiteSummary {
-  const { id, teamId, name, invented, createdAt, ...row } = site;
-  const { width, height, cellSize, originX, originY, epsg } = row;
+  const { id, teamId, name, invented, createdAt } = site;
   return {
     id,
     teamId,
     name,
     invented,
     createdAt,
-    grid: { width, height, cellSize, originX, originY, epsg },
+    grid: gridOf(site),
     parts: partsSchema.parse(counts.parts),
     options: counts.options,
     runs: counts.runs,
   };
 }
 
-function layerOf(row: LayerRow): Layer {
-  const { id, fileName, hash, bytes, uploadedAt, uploadedBy } = row;
-  return {
-    id,
-    part: layerPartSchema.parse(row.part),
-    fileName,
-    hash,
-    bytes,
-    uploadedAt,
-    uploadedBy,
-    ...readJson(layerFactsSchema, row.facts),
-    unit: valueUnitSchema.parse(row.unit),
-    classes: row.classes === null ? null : readJson(habitatClassesSchema, row.classes),
-  };
-}
+const noCurves: ElevationCurves = { capacity: null, vigour: null, exposure: null };
 
 /** The sites of a team, oldest first. */
 export async function listSitesOf(manager: Manager, teamId: string): Promise<SiteSummary[]> {
@@ -70,10 +53,16 @@ export async function siteReply(manager: Manager, siteId: string): Promise<Site>
   const site = await findSite(manager, siteId);
   if (!site) throw notFound();
   const counts = await countsOfSites(manager, [siteId]);
+  const summary = summaryOf(site, counts.get(siteId)!);
+  const { finestGrid, elevationCurves, tidalDatums } = site;
   return {
-    ...summaryOf(site, counts.get(siteId)!),
+    ...summary,
     crsName: site.crsName,
-    layers: (await currentLayers(manager, siteId)).map(layerOf),
+    finestGrid: finestGrid === null ? summary.grid : readJson(gridSchema, finestGrid),
+    layers: (await currentLayers(manager, siteId)).map(layerReply),
+    features: await featuresOfSite(manager, siteId),
+    elevationCurves: elevationCurves === null ? noCurves : readJson(elevationCurvesSchema, elevationCurves),
+    tidalDatums: tidalDatums === null ? [] : readJson(tidalDatumsSchema, tidalDatums),
     plant: readJson(plantSchema, site.plant),
     plantSet: site.plantSet,
     outlook: readJson(outlookSchema, site.outlook),

@@ -1,13 +1,26 @@
 import { In, IsNull } from 'typeorm';
+import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { LayerEntity, type LayerRow } from '#server/database/entities/layer.ts';
 import { OptionEntity, type OptionRow } from '#server/database/entities/option.ts';
 import { RunFrameEntity } from '#server/database/entities/run-frame.ts';
 import { RunEntity } from '#server/database/entities/run.ts';
+import { FeatureImportEntity } from '#server/database/entities/feature-import.ts';
+import { UploadEntity } from '#server/database/entities/upload.ts';
 import { SiteEntity, type SiteRow } from '#server/database/entities/site.ts';
 
 export const findSite = (manager: Manager, id: string): Promise<SiteRow | null> =>
   manager.findOneBy(SiteEntity, { id });
+
+/** The working grid of a site. */
+export const gridOf = ({ width, height, cellSize, originX, originY, epsg }: SiteRow): Grid => ({
+  width,
+  height,
+  cellSize,
+  originX,
+  originY,
+  epsg,
+});
 
 /** Oldest first, so that a list keeps its order. */
 export const sitesOfTeam = (manager: Manager, teamId: string): Promise<SiteRow[]> =>
@@ -34,7 +47,10 @@ export async function deleteSiteRows(manager: Manager, id: string): Promise<stri
     where: { siteId: id },
     select: { id: true, closingHash: true },
   });
-  const hashes = layers.flatMap((layer) => [layer.hash, layer.valuesHash]);
+  const hashes = layers.flatMap((layer) => [layer.hash, layer.valuesHash, layer.sourceHash]);
+  for (const { hash, thumbnailHash } of await manager.findBy(UploadEntity, { siteId: id }))
+    hashes.push(hash, ...(thumbnailHash ? [thumbnailHash] : []));
+  for (const { hash } of await manager.findBy(FeatureImportEntity, { siteId: id })) hashes.push(hash);
   for (const run of runs) {
     const frames = await manager.findBy(RunFrameEntity, { runId: run.id });
     hashes.push(...frames.map((frame) => frame.hash), ...(run.closingHash ? [run.closingHash] : []));

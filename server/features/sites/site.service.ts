@@ -1,4 +1,5 @@
 import { randomUUID } from 'node:crypto';
+import type { ElevationCurves, TidalDatum } from '#contract/layers.ts';
 import type { Outlook, Plant, Site } from '#contract/sites.ts';
 import { defaultRates } from '#sim-core/spec/parameters.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
@@ -45,6 +46,9 @@ export async function createSite(
     invented,
     ...read.grid,
     crsName: read.facts.crsName,
+    finestGrid: null,
+    elevationCurves: null,
+    tidalDatums: null,
     plant: JSON.stringify(defaultPlant),
     plantSet: false,
     outlook: JSON.stringify(defaultOutlook(now.getUTCFullYear())),
@@ -86,6 +90,17 @@ export const setPlant = (services: Services, siteId: string, plant: Plant): Prom
 
 export const setOutlook = (services: Services, siteId: string, outlook: Outlook): Promise<Site> =>
   changeSite(services, siteId, { outlook: JSON.stringify(outlook), outlookSet: true });
+
+/** Says what elevation does on a site, and which levels of the tide are drawn beside it. */
+export const setElevationCurves = (
+  services: Services,
+  siteId: string,
+  { elevationCurves, tidalDatums }: { elevationCurves: ElevationCurves; tidalDatums: TidalDatum[] },
+): Promise<Site> =>
+  changeSite(services, siteId, {
+    elevationCurves: JSON.stringify(elevationCurves),
+    tidalDatums: JSON.stringify(tidalDatums),
+  });
 
 /** Deletes a site with its layers, options and runs, and every file that nothing else refers to. */
 export async function deleteSite(services: Services, siteId: string): Promise<void> {

@@ -50,10 +50,9 @@ describe('a site made from a GeoTIFF', () => {
     expect(site.layers).toMatchObject([
       {
         part: 'habitat',
-        fileName: 'habitat.tif',
+        source: { fileName: 'habitat.tif', uploadedBy: 'Marsh team: modeller' },
         hash: sha256(habitat()),
         bytes: habitat().length,
-        uploadedBy: 'Marsh team: modeller',
         dataType: 'uint8',
         noData: 0,
         noDataShare: 1 / 24,
@@ -158,7 +157,7 @@ describe('layers', () => {
     await put('cover', classes).expect(400);
   });
 
-  it('are replaced part by part, and a replaced one without a run leaves no file behind', async () => {
+  it('are replaced part by part, and one that is taken out of the history leaves no file behind', async () => {
     const { modeller } = team.agents;
     const { id } = await makeSite(modeller, team.teamId);
     const other = geoTiff(Float32Array.from({ length: 24 }, (_, i) => (i * 7) / 1000));
@@ -167,11 +166,15 @@ describe('layers', () => {
     const after = siteOf(await uploadLayer(modeller, id, 'refuge', newest).expect(200));
     expect(after.layers.map((l) => l.part)).toEqual(before.layers.map((l) => l.part));
     expect(after.layers.find((l) => l.part === 'refuge')?.hash).toBe(sha256(newest));
+    const idOf = (of: Site) => of.layers.find((l) => l.part === 'refuge')!.id;
+    const remove = (layerId: string) => modeller.delete(`/api/sites/${id}/layers/${layerId}`).expect(200);
+    await modeller.get(`/api/sites/${id}/layer-values/${sha256(other)}`).expect(200);
+    await remove(idOf(before));
     expect(storedFiles(server).blobs).not.toContain(sha256(other));
     await modeller.get(`/api/sites/${id}/layer-values/${sha256(other)}`).expect(404);
-    await modeller
-      .delete(`/api/sites/${id}/layers/${after.layers.find((l) => l.part === 'refuge')!.id}`)
-      .expect(200);
+    expect(siteOf(await remove(idOf(after))).parts).not.toContain('refuge');
+    expect(storedFiles(server).blobs).toContain(sha256(newest));
+    await remove(idOf(after));
     expect(storedFiles(server).blobs).not.toContain(sha256(newest));
   });
 

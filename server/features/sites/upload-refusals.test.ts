@@ -183,7 +183,7 @@ describe('a form that is not right leaves nothing', () => {
     expect(noName.body.fields).toMatchObject([{ field: 'name' }]);
     const wrong = await modeller
       .post(`/api/sites/${siteId}/layers`)
-      .field('part', 'exposure')
+      .field('part', 'soil')
       .attach('file', cover(), 'c.tif')
       .expect(400);
     expect(wrong.body.fields).toMatchObject([{ field: 'part' }]);

@@ -1,16 +1,36 @@
-import type { Layer, Site } from '#contract/sites.ts';
+import type { Layer } from '#contract/layers.ts';
+import type { Site } from '#contract/sites.ts';
 import { defaultRates } from '#sim-core/spec/parameters.ts';
 
 const id = (n: number) => `00000000-0000-4000-8000-${String(n).padStart(12, '0')}`;
 
+const gridFixture = { width: 6, height: 4, cellSize: 1, originX: 1000, originY: 2000, epsg: 32631 };
+
 export const layerFixture = (part: Layer['part'], more: Partial<Layer> = {}): Layer => ({
   id: id(10 + part.length),
   part,
-  fileName: `${part}.tif`,
   hash: part === 'habitat' ? 'a'.repeat(64) : part === 'cover' ? 'b'.repeat(64) : 'c'.repeat(64),
   bytes: 1000,
-  uploadedAt: '2026-12-01T08:00:00.000Z',
-  uploadedBy: 'Invented Person',
+  grid: gridFixture,
+  source: {
+    fileName: `${part}.tif`,
+    hash: 'd'.repeat(64),
+    bytes: 1000,
+    uploadedAt: '2026-12-01T08:00:00.000Z',
+    uploadedBy: 'Invented Person',
+    crsName: 'an invented CRS',
+    epsg: 32631,
+    width: 6,
+    height: 4,
+    cellWidth: 1,
+    cellHeight: 1,
+    band: 1,
+    bands: 1,
+    scale: 1,
+    offset: 0,
+  },
+  alignment: { method: 'copy', reprojectedFrom: null, cropped: 0, padded: 0 },
+  note: '',
   dataType: part === 'habitat' ? 'uint8' : 'float32',
   crsName: 'an invented CRS',
   noData: null,
@@ -20,6 +40,7 @@ export const layerFixture = (part: Layer['part'], more: Partial<Layer> = {}): La
   histogram: [],
   classCounts: null,
   unit: 'share',
+  vertical: part === 'elevation' ? { datum: '', unit: 'metre' } : null,
   classes:
     part === 'habitat'
       ? [
@@ -37,7 +58,8 @@ export const siteFixture = (more: Partial<Site> = {}): Site => ({
   name: 'Invented Reach',
   invented: true,
   createdAt: '2026-12-01T08:00:00.000Z',
-  grid: { width: 6, height: 4, cellSize: 1, originX: 1000, originY: 2000, epsg: 32631 },
+  grid: gridFixture,
+  finestGrid: gridFixture,
   parts: ['habitat', 'cover', 'refuge'],
   options: 2,
   runs: 0,
@@ -47,6 +69,9 @@ export const siteFixture = (more: Partial<Site> = {}): Site => ({
     layerFixture('cover', { unit: 'percent', maximum: 100 }),
     layerFixture('refuge', { unit: 'byte', maximum: 255, dataType: 'uint8' }),
   ],
+  features: [],
+  elevationCurves: { capacity: null, vigour: null, exposure: null },
+  tidalDatums: [],
   plant: { name: 'Invented grass', rates: defaultRates },
   plantSet: true,
   outlook: {

@@ -1,0 +1,42 @@
+import { EntitySchema } from 'typeorm';
+import { SiteEntity } from './site.ts';
+
+/** A file that features of a site came with. */
+export interface FeatureImportRow {
+  id: string;
+  siteId: string;
+  fileName: string;
+  /** SHA-256 of the file, the name of its blob */
+  hash: string;
+  /** what its coordinates were in */
+  crsName: string;
+  importedAt: string;
+  importedBy: string;
+}
+
+export const FeatureImportEntity = new EntitySchema<FeatureImportRow>({
+  name: 'FeatureImport',
+  tableName: 'feature_import',
+  columns: {
+    id: { type: 'text', primary: true },
+    siteId: { type: 'text' },
+    fileName: { type: 'text' },
+    hash: { type: 'text' },
+    crsName: { type: 'text' },
+    importedAt: { type: 'text' },
+    importedBy: { type: 'text' },
+  },
+  indices: [
+    { name: 'feature_import_by_site', columns: ['siteId'] },
+    { name: 'feature_import_by_hash', columns: ['hash'] },
+  ],
+  foreignKeys: [
+    {
+      name: 'feature_import_site',
+      target: SiteEntity,
+      columnNames: ['siteId'],
+      referencedColumnNames: ['id'],
+      onDelete: 'CASCADE',
+    },
+  ],
+});

@@ -1,0 +1,48 @@
+import { gridSchema } from '#contract/grid.ts';
+import {
+  alignmentSchema,
+  habitatClassesSchema,
+  layerFactsSchema,
+  layerPartSchema,
+  layerSourceFileSchema,
+  valueUnitSchema,
+  verticalSchema,
+  type Layer,
+} from '#contract/layers.ts';
+import type { LayerRow } from '#server/database/entities/layer.ts';
+import { readJson } from '#server/database/json-column.ts';
+
+/** What `source` of a layer's row holds; the rest of the contract's source stands in columns of its own. */
+export const storedSourceSchema = layerSourceFileSchema.omit({
+  fileName: true,
+  hash: true,
+  bytes: true,
+  uploadedAt: true,
+  uploadedBy: true,
+});
+
+/** A layer as the contract shows it. */
+export function layerReply(row: LayerRow): Layer {
+  const { id, hash, bytes, note, fileName, sourceHash, sourceBytes, uploadedAt, uploadedBy } = row;
+  return {
+    id,
+    part: layerPartSchema.parse(row.part),
+    hash,
+    bytes,
+    grid: readJson(gridSchema, row.grid),
+    source: {
+      fileName,
+      hash: sourceHash,
+      bytes: sourceBytes,
+      uploadedAt,
+      uploadedBy,
+      ...readJson(storedSourceSchema, row.source),
+    },
+    alignment: readJson(alignmentSchema, row.alignment),
+    note,
+    ...readJson(layerFactsSchema, row.facts),
+    unit: valueUnitSchema.parse(row.unit),
+    vertical: row.vertical === null ? null : readJson(verticalSchema, row.vertical),
+    classes: row.classes === null ? null : readJson(habitatClassesSchema, row.classes),
+  };
+}
