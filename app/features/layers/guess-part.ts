@@ -9,8 +9,11 @@ const hints: Record<LayerPart, RegExp> = {
   allowed: /allow|permit/i,
 };
 
-/** The part that a file most likely plays: by its name, else the first that has no layer yet; undefined when none is free. */
+/** Parts that most sites have. */
+const usual: readonly LayerPart[] = ['habitat', 'cover', 'refuge'];
+
+/** The part that a file most likely plays: by its name, else the first usual one without a layer; undefined when none is free. */
 export function guessPart(fileName: string, taken: readonly LayerPart[]): LayerPart | undefined {
   const named = layerParts.find((part) => hints[part].test(fileName));
-  return named ?? layerParts.find((part) => !taken.includes(part));
+  return named ?? usual.find((part) => !taken.includes(part));
 }
