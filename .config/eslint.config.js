@@ -51,8 +51,8 @@ const folderRules = [
   {
     top: 'sim-core',
     pattern: only(
-      ['seedrandom', '@noble/hashes', '#sim-core'],
-      'sim-core is pure: it imports itself, seedrandom and @noble/hashes.',
+      ['seedrandom', '@noble/hashes', 'd3-contour', '#sim-core'],
+      'sim-core is pure: it imports itself, seedrandom, @noble/hashes and d3-contour.',
     ),
     except: ['sim-core/spec/**'],
   },

@@ -11,12 +11,8 @@ export { buildGround, type RasterValues } from './grid/build-ground.ts';
 export type { RunResult, SeriesRow } from './spec/run-result.ts';
 export { fillTime } from './theory/fill-time.ts';
 export { arrivalTimes, type ArrivalInput } from './theory/arrival-time.ts';
-export {
-  closingEstimate,
-  localGrowth,
-  type ClosingEstimateInput,
-  type LocalGrowth,
-} from './theory/closing-estimate.ts';
+export { closingEstimate, type ClosingEstimateInput } from './theory/closing-estimate.ts';
+export { localGrowth, type LocalGrowth } from './theory/local-growth.ts';
 export { drawWeather, type WeatherOfRun } from './weather/draw-weather.ts';
 export type { WaitingLaw, WeatherSource } from './spec/weather-source.ts';
 export { palmerClass, palmerClasses, type PalmerClass } from './weather/palmer-classes.ts';

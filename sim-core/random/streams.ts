@@ -10,7 +10,8 @@ export type Purpose =
   | `survey`
   | `screening`
   | `indices`
-  | `bootstrap`;
+  | `bootstrap`
+  | `pattern/${string}`;
 
 /**
  * The stream of one purpose: seedrandom 3 (ARC4) keyed by `seed/purpose`, so that no process ever takes another's

@@ -2,7 +2,8 @@ import { describe, expect, test } from 'vitest';
 import { createRun } from '#sim-core/run/create-run.ts';
 import { defaultRates, type Rates } from '#sim-core/spec/parameters.ts';
 import { gridOf, groundOf, specOf } from '#sim-core/testing/setups.ts';
-import { closingEstimate, localGrowth } from './closing-estimate.ts';
+import { closingEstimate } from './closing-estimate.ts';
+import { localGrowth } from './local-growth.ts';
 
 const rates = defaultRates;
 const [width, height] = [50, 4];

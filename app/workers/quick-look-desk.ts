@@ -1,0 +1,81 @@
+import type { Grid } from '#sim-core/grid/grid.ts';
+import type { Ground } from '#sim-core/grid/ground.ts';
+import type { ClosingSummary } from '#sim-core/plan/closing-tally.ts';
+import { lineYears, yearLines, type YearLine } from '#sim-core/plan/year-lines.ts';
+import { layPattern, type LaidPoints, type PatternInput } from '#sim-core/plan/pattern.ts';
+import { createQuickLook, type QuickLook, type WorksChange } from '#sim-core/plan/quick-look.ts';
+import { groundOf } from './run-ground.ts';
+import type { RunInput } from './run-loop.ts';
+
+/** What a quick look starts from: a run's spec, whose actions are left out, and its ground. */
+export interface QuickLookStart extends RunInput {
+  /** not 0 where works are allowed; everywhere unless said */
+  readonly allowed?: Uint8Array;
+}
+
+/** What growth alone would do with the works as they are. */
+export interface Look {
+  /** as a run reports them: 0 not by the horizon, −32768 cannot hold the plant, the survey year stood; Int16, row-major */
+  readonly years: Int16Array;
+  readonly summary: ClosingSummary;
+  readonly lines: readonly YearLine[];
+}
+
+/** A pattern to be laid on the ground that the desk holds. */
+export type PatternRequest = Pick<PatternInput, 'pattern' | 'ring' | 'bareOnly' | 'seed'>;
+
+/** The one ground that is looked at, with the works that are on it. */
+export interface QuickLookDesk {
+  /** Takes a ground, without works. @throws RunProblem, CellValuesError */
+  open(start: QuickLookStart): Promise<Look>;
+  change(change: WorksChange): Look;
+  /** @throws RangeError where the pattern makes no sense */
+  lay(request: PatternRequest): LaidPoints;
+}
+
+export function createQuickLookDesk(): QuickLookDesk {
+  let held:
+    | {
+        readonly look: QuickLook;
+        readonly grid: Grid;
+        readonly ground: Ground;
+        readonly start: QuickLookStart;
+      }
+    | undefined;
+  const opened = () => {
+    if (!held) throw new Error('No ground was opened.');
+    return held;
+  };
+  function shown(): Look {
+    const { look, grid, start } = opened();
+    const { surveyYear, years } = start.spec;
+    const lines = yearLines({
+      grid,
+      closing: (cell) => look.closing(cell),
+      surveyYear,
+      horizon: years,
+      years: lineYears(surveyYear, years),
+    });
+    // A copy, since it is handed over.
+    return { years: look.years.slice(), summary: look.summary(), lines };
+  }
+  return {
+    async open(start) {
+      const { spec, grid } = start;
+      const ground = await groundOf(start);
+      const { rates, stepsPerYear, surveyYear, years } = spec;
+      const look = createQuickLook({ grid, ground, rates, stepsPerYear, surveyYear, years });
+      held = { look, grid, ground, start };
+      return shown();
+    },
+    change(change) {
+      opened().look.change(change);
+      return shown();
+    },
+    lay(request) {
+      const { grid, ground, start } = opened();
+      const { capacity, cover } = ground;
+      return layPattern({ ...request, grid, capacity, cover, allowed: start.allowed });
+    },
+  };
+}
