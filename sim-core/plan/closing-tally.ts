@@ -23,10 +23,15 @@ export interface ClosingTally {
 /** A hair that rounding may leave above a whole year. */
 const hair = 1e-4;
 
-/** @param areaOf m² that the plant can cover in a cell; 0 where it cannot grow */
+/**
+ * @param parts what the plant can cover in a cell, in whole parts, so that sums stay exact however often they are
+ * changed; 0 where it cannot grow
+ * @param part m² of one part
+ */
 export function closingTally(
   cells: number,
-  areaOf: (cell: number) => number,
+  parts: (cell: number) => number,
+  part: number,
   surveyYear: number,
   horizon: number,
 ): ClosingTally {
@@ -34,10 +39,10 @@ export function closingTally(
   const closing = new Float64Array(horizon + 1);
   let closable = 0;
   for (let cell = 0; cell < cells; cell++) {
-    const area = areaOf(cell);
-    if (area === 0) continue;
+    const here = parts(cell);
+    if (here === 0) continue;
     years[cell] = stillOpen;
-    closable += area;
+    closable += here;
   }
   return {
     years,
@@ -47,17 +52,23 @@ export function closingTally(
       const wait = Math.ceil(after - hair);
       const year = wait <= horizon ? surveyYear + Math.max(0, wait) : stillOpen;
       if (year === before) return;
-      const area = areaOf(cell);
-      if (before !== stillOpen) closing[before - surveyYear] -= area;
-      if (year !== stillOpen) closing[year - surveyYear] += area;
+      const here = parts(cell);
+      if (before !== stillOpen) closing[before - surveyYear] -= here;
+      if (year !== stillOpen) closing[year - surveyYear] += here;
       years[cell] = year;
     },
     summary() {
-      let area = 0;
-      const closedBy = Array.from(closing, (more, i) => ({ year: surveyYear + i, area: (area += more) }));
+      let closed = 0;
+      const closedBy = Array.from(closing, (more, i) => ({ year: surveyYear + i, parts: (closed += more) }));
       const yearOf = (share: number) =>
-        closable > 0 ? closedBy.find((by) => by.area >= share * closable * (1 - 1e-9))?.year : undefined;
-      return { closable, closedBy, half: yearOf(0.5), eighty: yearOf(0.8), ninety: yearOf(0.9) };
+        closable > 0 ? closedBy.find((by) => by.parts >= share * closable)?.year : undefined;
+      return {
+        closable: closable * part,
+        closedBy: closedBy.map(({ year, parts: sum }) => ({ year, area: sum * part })),
+        half: yearOf(0.5),
+        eighty: yearOf(0.8),
+        ninety: yearOf(0.9),
+      };
     },
   };
 }

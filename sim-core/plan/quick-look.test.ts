@@ -16,8 +16,7 @@ const point = (column: number, row: number): [number, number] => [at(column, row
 test('without works it is the closing estimate', () => {
   const look = createQuickLook(input);
   const estimate = closingEstimate({ grid, ground, rates: defaultRates, stepsPerYear: 1 });
-  for (let cell = 0; cell < width * height; cell++)
-    expect(look.closing(cell)).toBeCloseTo(estimate[cell], 3);
+  for (let cell = 0; cell < width * height; cell++) expect(look.closing(cell)).toBeCloseTo(estimate[cell], 3);
 });
 
 test('works that come and go leave no trace, and a gain that is asked for leaves none', () => {

@@ -63,15 +63,17 @@ export function createQuickLook(input: QuickLookInput): QuickLook {
   const cells = width * height;
   const cellArea = cellSize * cellSize;
   const growthOf = localGrowth(rates, cellSize, stepsPerYear);
-  const references = referenceShares(stepRates(rates, stepsPerYear));
-  const areaOf = (cell: number) => (capacity[cell] / 255) * references[vigour[cell]] * cellArea;
+  const references = referenceShares(stepRates(rates, stepsPerYear)).map((u) => Math.round(u * fineness));
+  /** K u of a cell, in whole parts of `part` m² */
+  const partsOf = (cell: number) => capacity[cell] * references[vigour[cell]];
+  const part = cellArea / (255 * fineness);
 
   const crossing = Float32Array.from(vigour, (v, cell) =>
     capacity[cell] === 0 ? Infinity : cellSize / growthOf(v, refuge[cell]).speed,
   );
   const field = arrivalField({ width, height, crossing, latest: horizon });
-  const tally = closingTally(cells, areaOf, surveyYear, horizon);
-  const { closable } = tally.summary();
+  const tally = closingTally(cells, partsOf, part, surveyYear, horizon);
+  const closable = tally.summary().closable / part;
   const worked = workedCells(capacity, rates.clumpsPerSquareMetre * cellArea);
   const reaches = new Map<number, WorkReach>();
   /** years until what stands or is planted in a cell fills it by itself: on its ground, and on that of its mounds */
@@ -133,7 +135,7 @@ export function createQuickLook(input: QuickLookInput): QuickLook {
     arrival: (cell) => field.time(cell),
     closing,
     summary: () => tally.summary(),
-    areaOf,
+    areaOf: (cell) => partsOf(cell) * part,
     change({ removed, added }) {
       const dirty = new Set<number>();
       for (const key of removed) {
@@ -165,7 +167,7 @@ export function createQuickLook(input: QuickLookInput): QuickLook {
       let gain = 0;
       for (let i = 0; i < count; i++) {
         const [was, is] = [Math.min(before[i], horizon), Math.min(field.time(changed[i]), horizon)];
-        gain += areaOf(changed[i]) * (was - is);
+        gain += partsOf(changed[i]) * (was - is);
       }
       field.rollBack();
       for (const reach of tried) worked.remove(reach);
@@ -174,6 +176,9 @@ export function createQuickLook(input: QuickLookInput): QuickLook {
     },
   };
 }
+
+/** Parts of a reference share u that are told apart. */
+const fineness = 65_536;
 
 /** Slow until it turns fast: what is under way by then comes no sooner than that. */
 const hurried = (slow: number, fast: number, from: number): number =>
