@@ -3,6 +3,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { fillPath, type Endpoint } from '#contract/endpoint.ts';
 import * as costs from '#contract/costs.ts';
 import * as ground from '#contract/ground.ts';
+import * as optionFiles from '#contract/option-files.ts';
 import * as options from '#contract/options.ts';
 import * as people from '#contract/people.ts';
 import * as runs from '#contract/runs.ts';
@@ -73,6 +74,11 @@ const expected: Record<string, string> = {
   'GET /api/sites/:siteId/options/:optionId/history': everyRole,
   'GET /api/sites/:siteId/options/:optionId/history/:revision': everyRole,
   'POST /api/sites/:siteId/options/:optionId/history/:revision/bring-back': planners,
+  'GET /api/sites/:siteId/options/:optionId/option.geojson': everyRole,
+  'GET /api/sites/:siteId/options/:optionId/points.csv': everyRole,
+  'GET /api/sites/:siteId/options/:optionId/crew.gpx': everyRole,
+  'GET /api/sites/:siteId/options/:optionId/crew.csv': everyRole,
+  'POST /api/sites/:siteId/works-preview': planners,
   'GET /api/sites/:siteId/costs': everyRole,
   'PUT /api/sites/:siteId/costs': planners,
   'DELETE /api/sites/:siteId/options/:optionId': planners,
@@ -110,7 +116,7 @@ const isEndpoint = (value: unknown): value is Endpoint =>
   typeof value === 'object' && value !== null && 'method' in value && 'path' in value && 'reply' in value;
 /** Endpoints that the contract announces and no route answers yet. */
 const announced = /put-back|feature/;
-const contract = [people, sites, ground, options, costs, runs]
+const contract = [people, sites, ground, options, optionFiles, costs, runs]
   .flatMap((module) => Object.values<unknown>({ ...module }))
   .filter(isEndpoint)
   .filter(({ path }) => !announced.test(path));

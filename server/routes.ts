@@ -6,6 +6,7 @@ import { setupRoutes } from './features/auth/setup.routes.ts';
 import { costsRoutes } from './features/costs/costs.routes.ts';
 import { healthRoutes } from './features/health/health.routes.ts';
 import { teamInviteRoutes } from './features/team/invites.routes.ts';
+import { optionFileRoutes } from './features/options/files/option-files.routes.ts';
 import { optionRoutes } from './features/options/option.routes.ts';
 import { runRoutes } from './features/runs/run.routes.ts';
 import { layerRoutes } from './features/sites/layer.routes.ts';
@@ -29,6 +30,7 @@ export const allRoutes = (services: Services): Route[] => [
   ...siteRoutes(services),
   ...layerRoutes(services),
   ...optionRoutes(services),
+  ...optionFileRoutes(services),
   ...costsRoutes(services),
   ...runRoutes(services),
 ];

@@ -1,4 +1,5 @@
 import type { SeriesRow } from '#sim-core/spec/run-result.ts';
+import { csv } from './csv.ts';
 
 /** The columns of a series in a CSV file, in order; the unit stands at the end of each name. */
 export const seriesColumns: readonly (readonly [key: keyof SeriesRow, header: string])[] = [
@@ -18,28 +19,9 @@ export const seriesColumns: readonly (readonly [key: keyof SeriesRow, header: st
   ['lostToEvents', 'lost_to_events_m2'],
 ];
 
-type CsvValue = string | number | null;
-
-/**
- * CSV of RFC 4180: CRLF after every line, quotes only where they are needed. Numbers are written in full precision,
- * `null` as an empty field.
- */
-export function csv(header: readonly string[], rows: Iterable<readonly CsvValue[]>): string {
-  let text = csvLine(header);
-  for (const row of rows) text += csvLine(row);
-  return text;
-}
-
 /** The series of one run. */
 export const seriesCsv = (series: readonly SeriesRow[]): string =>
   csv(
     seriesColumns.map(([, header]) => header),
     series.map((row) => seriesColumns.map(([key]) => row[key])),
   );
-
-const csvLine = (row: readonly CsvValue[]) => `${row.map(csvField).join(',')}\r\n`;
-
-function csvField(value: CsvValue): string {
-  if (typeof value !== 'string') return value === null ? '' : String(value);
-  return /[",\r\n]/.test(value) ? `"${value.replaceAll('"', '""')}"` : value;
-}

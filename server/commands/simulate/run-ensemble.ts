@@ -1,4 +1,5 @@
-import { csv, seriesColumns } from '#server/files/series-csv.ts';
+import { csv } from '#server/files/csv.ts';
+import { seriesColumns } from '#server/files/series-csv.ts';
 import { createRunPool } from '#server/jobs/run-pool.ts';
 import { attemptsOfRun, WorkerDied } from '#sim-core/ensemble/runner.ts';
 import type { RunResult } from '#sim-core/index.ts';
