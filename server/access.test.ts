@@ -1,6 +1,7 @@
 import { rmSync } from 'node:fs';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { fillPath, type Endpoint } from '#contract/endpoint.ts';
+import * as comparisons from '#contract/comparisons.ts';
 import * as costs from '#contract/costs.ts';
 import * as ground from '#contract/ground.ts';
 import * as optionFiles from '#contract/option-files.ts';
@@ -98,6 +99,22 @@ const expected: Record<string, string> = {
   'GET /api/runs/:runId/series.csv': everyRole,
   'GET /api/runs/:runId/cover/:year': everyRole,
   'GET /api/runs/:runId/closing.tif': everyRole,
+
+  'GET /api/sites/:siteId/comparisons': everyRole,
+  'POST /api/sites/:siteId/comparisons': planners,
+  'GET /api/sites/:siteId/comparisons/:comparisonId': everyRole,
+  'PATCH /api/sites/:siteId/comparisons/:comparisonId': planners,
+  'DELETE /api/sites/:siteId/comparisons/:comparisonId': planners,
+  'POST /api/sites/:siteId/comparisons/:comparisonId/copies': planners,
+  'PUT /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/replicates': planners,
+  'GET /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/replicates': everyRole,
+  'PUT /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/maps/:map': planners,
+  'GET /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/maps/:map': everyRole,
+  'PUT /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/maps-state': planners,
+  'GET /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/maps-state': everyRole,
+  'POST /api/sites/:siteId/comparisons/:comparisonId/end': planners,
+  'POST /api/sites/:siteId/comparisons/:comparisonId/resume': planners,
+  'POST /api/sites/:siteId/comparisons/:comparisonId/decision': 'manager admin',
 };
 
 const callers = ['nobody', 'modeller', 'manager', 'trainer', 'admin', 'outsider'] as const;
@@ -116,7 +133,7 @@ const isEndpoint = (value: unknown): value is Endpoint =>
   typeof value === 'object' && value !== null && 'method' in value && 'path' in value && 'reply' in value;
 /** Endpoints that the contract announces and no route answers yet. */
 const announced = /put-back|feature/;
-const contract = [people, sites, ground, options, optionFiles, costs, runs]
+const contract = [people, sites, ground, options, optionFiles, costs, runs, comparisons]
   .flatMap((module) => Object.values<unknown>({ ...module }))
   .filter(isEndpoint)
   .filter(({ path }) => !announced.test(path));

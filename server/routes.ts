@@ -3,6 +3,7 @@ import { inviteRoutes } from './features/auth/invite.routes.ts';
 import { passwordResetRoutes } from './features/auth/password-reset.routes.ts';
 import { sessionRoutes } from './features/auth/session.routes.ts';
 import { setupRoutes } from './features/auth/setup.routes.ts';
+import { comparisonRoutes } from './features/comparisons/comparison.routes.ts';
 import { costsRoutes } from './features/costs/costs.routes.ts';
 import { healthRoutes } from './features/health/health.routes.ts';
 import { teamInviteRoutes } from './features/team/invites.routes.ts';
@@ -33,4 +34,5 @@ export const allRoutes = (services: Services): Route[] => [
   ...optionFileRoutes(services),
   ...costsRoutes(services),
   ...runRoutes(services),
+  ...comparisonRoutes(services),
 ];

@@ -10,6 +10,7 @@ const references = [
   ['feature_import', 'hash'],
   ['run_frame', 'hash'],
   ['run', 'closingHash'],
+  ['ensemble_map', 'hash'],
 ] as const;
 
 const anyReference = references

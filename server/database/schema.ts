@@ -14,6 +14,13 @@ import { OptionDrawingEntity, OptionRevisionEntity } from './entities/option-rev
 import { RunEntity } from './entities/run.ts';
 import { RunFrameEntity } from './entities/run-frame.ts';
 import { RunLayerEntity } from './entities/run-layer.ts';
+import { ComparisonEntity } from './entities/comparison.ts';
+import {
+  ComparisonEventEntity,
+  ComparisonLayerEntity,
+  EnsembleMapEntity,
+  ReplicateEntity,
+} from './entities/comparison-parts.ts';
 import { SiteEntity } from './entities/site.ts';
 import { SiteCostsEntity } from './entities/site-costs.ts';
 import { UploadEntity } from './entities/upload.ts';
@@ -40,4 +47,9 @@ export const entities = [
   RunEntity,
   RunFrameEntity,
   RunLayerEntity,
+  ComparisonEntity,
+  ReplicateEntity,
+  EnsembleMapEntity,
+  ComparisonLayerEntity,
+  ComparisonEventEntity,
 ];

@@ -2,6 +2,8 @@ import type { Role } from '#contract/people.ts';
 import type { Option } from '#contract/options.ts';
 import { encodeCellValues } from '#rasters/cells/cell-values.ts';
 import { makePerson, makeTeam, testPassword, type TestPerson } from './people.ts';
+import { startTestComparison } from './comparisons.ts';
+import { packed, sendBytes } from './runs.ts';
 import { makeSite } from './sites.ts';
 import { testServer, type TestServer } from './test-server.ts';
 import { addMember } from '../people/people.repository.ts';
@@ -87,6 +89,11 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
   const site = await makeSite(agents.admin, teamId);
   const runId = await addRun(agents.admin, site.id);
   const options = await agents.admin.get(`/api/sites/${site.id}/options`).expect(200);
+  const comparison = await startTestComparison(agents.admin, site);
+  const ensemble = `/api/sites/${site.id}/comparisons/${comparison.id}/ensembles/0/0`;
+  const noCells = packed(new Int16Array(24));
+  await sendBytes(agents.admin, `${ensemble}/maps/closing?replicates=1`, noCells).expect(204);
+  await sendBytes(agents.admin, `${ensemble}/maps-state?replicates=1`, noCells).expect(204);
 
   const callers = { ...people, outsider: other.people.admin };
   const cookies: AccessFixture['cookies'] = {};
@@ -109,6 +116,10 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     revision: 1,
     runId,
     year: surveyYear,
+    comparisonId: comparison.id,
+    option: 0,
+    outlook: 0,
+    map: 'closing',
   };
   return { folder: await server.freeze(), params, cookies, sessionIds };
 }

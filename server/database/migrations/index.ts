@@ -3,6 +3,7 @@ import { Sites1764547260000 } from './1764547260000-sites.ts';
 import { LostYear1764576000000 } from './1764576000000-lost-year.ts';
 import { OptionHistory1764580000000 } from './1764580000000-option-history.ts';
 import { Ground1796119200000 } from './1796119200000-ground.ts';
+import { Comparisons1796121000000 } from './1796121000000-comparisons.ts';
 
 /** Every change of the schema, oldest first. One that has been released is never edited. */
 export const migrations = [
@@ -11,4 +12,5 @@ export const migrations = [
   LostYear1764576000000,
   OptionHistory1764580000000,
   Ground1796119200000,
+  Comparisons1796121000000,
 ];

@@ -1,12 +1,10 @@
 import type { Readable } from 'node:stream';
-import { CellValuesError } from '#rasters/cells/cell-header.ts';
 import { gridSchema } from '#contract/grid.ts';
-import type { Grid } from '#sim-core/grid/grid.ts';
 import { frameYears, runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import type { RunRow } from '#server/database/entities/run.ts';
 import { readJson } from '#server/database/json-column.ts';
-import { checkCellsFile } from '#server/files/check-cells.ts';
-import { FileTooLarge, type ReceivedFile } from '#server/files/blob-store.ts';
+import type { ReceivedFile } from '#server/files/blob-store.ts';
+import { receiveCells } from '#server/files/receive-cells.ts';
 import { releaseBlobs, storeWithRows } from '#server/files/stored-files.ts';
 import { fieldProblem, ProblemError } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
@@ -67,13 +65,7 @@ async function putMap(
   ) => Promise<{ present: string | null; write: () => Promise<void> }>,
 ): Promise<void> {
   const grid = readJson(gridSchema, run.grid);
-  const file = await receiveMap(services, grid, kind, body);
-  try {
-    await checkMap(file, grid, kind);
-  } catch (error) {
-    await services.blobs.discard(file);
-    throw error;
-  }
+  const file = await receiveCells(services, { ...grid, type: mapTypes[kind], what: kind }, body);
   const replaced = await storeWithRows(services, [file], async (manager) => {
     const { present, write } = await place(manager, file);
     if (present === file.hash) return undefined;
@@ -84,46 +76,4 @@ async function putMap(
     return present ?? undefined;
   });
   if (replaced) await releaseBlobs(services, [replaced]);
-}
-
-/** A zlib stream of what cannot be packed is a little longer than what it holds (RFC 1951: 5 bytes a stored block). */
-const longestBinary = (cells: number, kind: MapKind) =>
-  Math.ceil(cells * mapTypes[kind].BYTES_PER_ELEMENT * 1.01) + 4096;
-
-async function receiveMap(
-  { blobs }: Services,
-  { width, height }: Grid,
-  kind: MapKind,
-  body: Readable,
-): Promise<ReceivedFile> {
-  const limit = longestBinary(width * height, kind);
-  try {
-    return await blobs.receive(body, limit);
-  } catch (error) {
-    if (error instanceof FileTooLarge)
-      throw new ProblemError(
-        'too-large',
-        `Found more than ${limit} bytes; a ${kind} of ${width} × ${height} cells is shorter.`,
-      );
-    throw error;
-  }
-}
-
-async function checkMap(file: ReceivedFile, grid: Grid, kind: MapKind): Promise<void> {
-  const { width, height, type } = await headerOf(file, grid);
-  const expected = mapTypes[kind];
-  if (width !== grid.width || height !== grid.height || type !== expected)
-    throw new ProblemError(
-      'invalid-request',
-      `Found ${type.name} of ${width} × ${height} cells; expected ${expected.name} of ${grid.width} × ${grid.height}, the grid of the run.`,
-    );
-}
-
-async function headerOf(file: ReceivedFile, { width, height }: Grid) {
-  try {
-    return await checkCellsFile(file.path, { cells: width * height });
-  } catch (error) {
-    if (error instanceof CellValuesError) throw new ProblemError('invalid-request', error.message);
-    throw error;
-  }
 }

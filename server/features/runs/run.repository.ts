@@ -16,21 +16,6 @@ export const findSite = (manager: Manager, id: string): Promise<SiteRow | null> 
 export const findOption = (manager: Manager, siteId: string, id: string): Promise<OptionRow | null> =>
   manager.findOneBy(OptionEntity, { id, siteId });
 
-/** Those of `hashes` that are no layer of the site, present or replaced. */
-export async function foreignHashes(
-  manager: Manager,
-  siteId: string,
-  hashes: readonly string[],
-): Promise<Set<string>> {
-  const known = await manager.find(LayerEntity, {
-    where: { siteId, hash: In([...hashes]) },
-    select: { hash: true },
-  });
-  const foreign = new Set(hashes);
-  for (const { hash } of known) foreign.delete(hash);
-  return foreign;
-}
-
 /** The layers that a run stands on, in the order of their upload; of two with the same bytes, the later. */
 export async function layersOfRun(manager: Manager, run: Pick<RunRow, 'id' | 'siteId'>): Promise<LayerRow[]> {
   const used = await manager.findBy(RunLayerEntity, { runId: run.id });

@@ -6,10 +6,10 @@ import { maximumCells } from '#sim-core/spec/limits.ts';
 import { frameYears, runSpecSchema, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { RunRow } from '#server/database/entities/run.ts';
 import { readJson } from '#server/database/json-column.ts';
+import { checkLayers, checkOnGrid, layerHashes } from '#server/specs/check-spec.ts';
 import { releaseBlobs } from '#server/files/stored-files.ts';
 import { fieldProblem, notFound, ProblemError } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
-import { checkLayers, checkOnGrid, layerHashes } from './check-spec.ts';
 import { requireRun, runReply } from './run-reply.ts';
 import { deleteRunRows, findOption, findSite, framesOfRun, insertRun, updateRun } from './run.repository.ts';
 

@@ -1,6 +1,7 @@
 import { In, IsNull } from 'typeorm';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Manager } from '#server/database/manager.ts';
+import { EnsembleMapEntity } from '#server/database/entities/comparison-parts.ts';
 import { LayerEntity, type LayerRow } from '#server/database/entities/layer.ts';
 import { OptionEntity, type OptionRow } from '#server/database/entities/option.ts';
 import { RunFrameEntity } from '#server/database/entities/run-frame.ts';
@@ -55,6 +56,11 @@ export async function deleteSiteRows(manager: Manager, id: string): Promise<stri
     const frames = await manager.findBy(RunFrameEntity, { runId: run.id });
     hashes.push(...frames.map((frame) => frame.hash), ...(run.closingHash ? [run.closingHash] : []));
   }
+  const maps = await manager
+    .createQueryBuilder(EnsembleMapEntity, 'map')
+    .where(`"map"."comparisonId" IN (SELECT "id" FROM "comparison" WHERE "siteId" = :id)`, { id })
+    .getMany();
+  hashes.push(...maps.map((map) => map.hash));
   await manager.delete(SiteEntity, { id });
   return hashes;
 }

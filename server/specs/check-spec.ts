@@ -3,7 +3,7 @@ import { gridProblems } from '#sim-core/run/grid-problems.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
 import { rasterSources, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { Manager } from '#server/database/manager.ts';
-import { foreignHashes } from './run.repository.ts';
+import { foreignHashes } from './site-layers.repository.ts';
 
 const named = (spec: RunSpec) =>
   Object.entries(spec.layers).flatMap(([name, source]) =>
