@@ -1,12 +1,6 @@
-import {
-  currencyCodes,
-  getCosts,
-  setCosts,
-  costsSchema,
-  type Costs,
-  type SiteCosts,
-} from '#contract/costs.ts';
+import { currencyCodes, getCosts, setCosts, type SiteCosts } from '#contract/costs.ts';
 import { roles, type Role } from '#contract/people.ts';
+import { unitCostsSchema, type UnitCosts } from '#sim-core/spec/unit-costs.ts';
 import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { fieldProblem } from '#server/middleware/problem-error.ts';
@@ -18,16 +12,7 @@ import { findCosts, putCosts } from './costs.repository.ts';
 const planners: readonly Role[] = ['modeller', 'manager', 'admin'];
 
 /** Before anybody has set them: nothing costs anything, and there is no budget. */
-const noCosts: Costs = {
-  currency: 'EUR',
-  perMound: 0,
-  perClump: 0,
-  perFenceMetre: 0,
-  perVisit: 0,
-  perYear: 0,
-  budget: null,
-  discountRate: 0,
-};
+const noCosts: UnitCosts = unitCostsSchema.parse({ currency: 'EUR' });
 
 /** What works cost on a site, and the budget. */
 export const costsRoutes = (services: Services): Route[] => [
@@ -41,10 +26,10 @@ async function costsOf(manager: Manager, siteId: string): Promise<SiteCosts> {
   const row = await findCosts(manager, siteId);
   if (!row) return { costs: noCosts, changedAt: null, changedBy: null };
   const { changedAt, changedBy } = row;
-  return { costs: readJson(costsSchema, row.costs), changedAt, changedBy };
+  return { costs: readJson(unitCostsSchema, row.costs), changedAt, changedBy };
 }
 
-function keepCosts(services: Services, siteId: string, costs: Costs, by: string): Promise<SiteCosts> {
+function keepCosts(services: Services, siteId: string, costs: UnitCosts, by: string): Promise<SiteCosts> {
   if (!currencyCodes.includes(costs.currency))
     throw fieldProblem(
       'currency',
