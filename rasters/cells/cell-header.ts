@@ -2,8 +2,8 @@ import type { CellValues } from '#sim-core/grid/ground.ts';
 
 /**
  * The binary in which arrays of cell values are sent and stored. Little-endian:
- * bytes 0–3 `FHCV`, 4 version (1), 5 type code, 6–7 zero, 8–11 width, 12–15 height, then the values, row-major from the
- * north-west, as a zlib stream.
+ * bytes 0–3 `FHCV`, 4 version, 5 type code, 6–7 zero, 8–11 width, 12–15 height, then the values, row-major from the
+ * north-west: in version 1 as a zlib stream, in version 2, which holds bytes alone, as `context-code.ts` packs them.
  */
 export interface CellArray {
   readonly width: number;
@@ -24,7 +24,9 @@ export class CellValuesError extends Error {
 }
 
 const magic = [0x46, 0x48, 0x43, 0x56];
-const version = 1;
+/** How the values are packed; the version is the place in this list, from 1 on. */
+const packings = ['zlib', 'context'] as const;
+export type Packing = (typeof packings)[number];
 export const headerLength = 16;
 /** The type code is the place in this list; codes are never given anew. */
 const arrayTypes = [
@@ -43,6 +45,7 @@ export interface CellHeader {
   readonly width: number;
   readonly height: number;
   readonly type: (typeof arrayTypes)[number];
+  readonly packing: Packing;
   /** bytes of all values, once inflated */
   readonly byteLength: number;
 }
@@ -54,14 +57,19 @@ export interface CellHeader {
 export function readCellHeader(packed: Uint8Array, limits: CellLimits = defaultCellLimits): CellHeader {
   if (packed.length < headerLength || magic.some((byte, i) => packed[i] !== byte))
     throw new CellValuesError('Found no cell values (they begin with FHCV); fetch the file again.');
-  if (packed[4] !== version)
+  const packing = packings.at(packed[4] > 0 ? packed[4] - 1 : packings.length);
+  if (!packing)
     throw new CellValuesError(
-      `Found cell values of version ${packed[4]}; this program reads version ${version}.`,
+      `Found cell values of version ${packed[4]}; this program reads versions 1 to ${packings.length}.`,
     );
   const type = arrayTypes.at(packed[5] < arrayTypes.length ? packed[5] : arrayTypes.length);
   if (!type)
     throw new CellValuesError(
       `Found the type code ${packed[5]}; this program knows 0 to ${arrayTypes.length - 1}.`,
+    );
+  if (packing === 'context' && type !== Uint8Array)
+    throw new CellValuesError(
+      `Found the type code ${packed[5]} in cell values of version 2, which hold bytes (0) alone.`,
     );
   const view = new DataView(packed.buffer, packed.byteOffset, packed.byteLength);
   const width = view.getUint32(8, true);
@@ -71,14 +79,18 @@ export function readCellHeader(packed: Uint8Array, limits: CellLimits = defaultC
     throw new CellValuesError(
       `Found ${width} × ${height} cells; expected at least 1 and at most ${limits.cells}.`,
     );
-  return { width, height, type, byteLength: cells * type.BYTES_PER_ELEMENT };
+  return { width, height, type, packing, byteLength: cells * type.BYTES_PER_ELEMENT };
 }
 
 /**
  * Writes the header of `cells` to the first bytes of `packed`.
  * @throws CellValuesError when the number of values is not width × height
  */
-export function writeCellHeader(packed: Uint8Array, { width, height, values }: CellArray): void {
+export function writeCellHeader(
+  packed: Uint8Array,
+  { width, height, values }: CellArray,
+  packing: Packing,
+): void {
   if (!isSize(width) || !isSize(height) || values.length !== width * height)
     throw new CellValuesError(
       `Found ${values.length} values for ${width} × ${height} cells; expected one value a cell.`,
@@ -87,7 +99,7 @@ export function writeCellHeader(packed: Uint8Array, { width, height, values }: C
   if (code < 0)
     throw new CellValuesError('Found no typed array of numbers; expected one, such as Uint8Array.');
   packed.set(magic);
-  packed[4] = version;
+  packed[4] = packings.indexOf(packing) + 1;
   packed[5] = code;
   const view = new DataView(packed.buffer, packed.byteOffset, packed.byteLength);
   view.setUint32(8, width, true);

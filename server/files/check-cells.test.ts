@@ -39,6 +39,16 @@ describe('checkCellsFile', () => {
     await expect(check(bytes)).rejects.toThrow(message);
   });
 
+  it('checks a coded map to its last byte', async () => {
+    const few = Uint8Array.from({ length: 420_000 }, (_, i) => (i >> 8) & 3);
+    const coded = Buffer.from(encodeCellValues({ width: 600, height: 700, values: few }));
+    expect(await check(coded)).toMatchObject({ width: 600, packing: 'context' });
+    await expect(check(coded.subarray(0, coded.length - 1))).rejects.toThrow(/fails its checksum/);
+    await expect(check(Buffer.concat([coded, Buffer.alloc(1)]))).rejects.toThrow(/fails its checksum/);
+    const long = Buffer.concat([coded, Buffer.alloc(420_000)]);
+    await expect(check(long)).rejects.toThrow(/damaged: found \d+ bytes for 420000 cells/);
+  });
+
   it('refuses a changed checksum, and more cells than it may', async () => {
     const changed = Buffer.from(good);
     changed[changed.length - 1] ^= 1;
