@@ -1,6 +1,5 @@
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Ground } from '#sim-core/grid/ground.ts';
-import { occupiedFrom } from '#sim-core/measure/cover-measures.ts';
 import type { Rates } from '#sim-core/spec/parameters.ts';
 import type { Action, StepsPerYear } from '#sim-core/spec/run-spec.ts';
 import { arrivalField, type ArrivalChange } from '#sim-core/theory/arrival-field.ts';
@@ -48,8 +47,9 @@ export interface QuickLook {
 }
 
 /**
- * Closing years without a run: until growth arrives from the nearest foothold in time, and then until the cell fills.
- * Kept up while works are drawn. The years agree with `closingEstimate`, but for the scheme of the arrival times.
+ * Closing years (half the reference) without a run, kept up while works are drawn: until growth arrives from the nearest
+ * foothold in time, and then until the cell fills from the share at which it counts as occupied. A foothold below that
+ * share starts once it has grown to it.
  *
  * Mounds make growth faster in the cells that they shelter, from their year on; plantings and clumps start growth in
  * theirs. Weather, chance, grazing, fences and losses are left out (`quickLookLeavesOut`).
@@ -95,10 +95,10 @@ export function createQuickLook(input: QuickLookInput): QuickLook {
     const planted = [...(works?.planted ?? [])];
     if (stands > 0) planted.push({ after: 0, share: stands });
     const plain = growthOf(vigour[cell], refuge[cell]);
-    const fill = plain.fill(occupiedFrom);
+    const fill = plain.fromOccupied;
     const shelter = works && works.refuge > refuge[cell] ? growthOf(vigour[cell], works.refuge) : undefined;
     const from = shelter && works ? works.refugeFrom : Infinity;
-    const fastFill = shelter?.fill(occupiedFrom) ?? fill;
+    const fastFill = shelter?.fromOccupied ?? fill;
     let start = Infinity;
     let own = Infinity;
     let fastOwn = Infinity;
@@ -120,7 +120,7 @@ export function createQuickLook(input: QuickLookInput): QuickLook {
   function closing(cell: number): number {
     if (crossing[cell] === Infinity) return Infinity;
     const arrival = field.time(cell);
-    const slow = Math.min(alone[cell], arrival + growthOf(vigour[cell], refuge[cell]).fill(occupiedFrom));
+    const slow = Math.min(alone[cell], arrival + growthOf(vigour[cell], refuge[cell]).fromOccupied);
     const shelter = sheltered.get(cell);
     if (!shelter) return slow;
     return hurried(slow, Math.min(shelter.alone, arrival + shelter.fill), shelter.from);

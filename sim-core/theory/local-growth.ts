@@ -1,3 +1,4 @@
+import { occupiedFrom } from '#sim-core/measure/cover-measures.ts';
 import type { Rates } from '#sim-core/spec/parameters.ts';
 import type { StepsPerYear } from '#sim-core/spec/run-spec.ts';
 import { fillTime } from './fill-time.ts';
@@ -17,6 +18,8 @@ export interface LocalGrowth {
   readonly speed: number;
   /** years to half its reference from a share of its capacity */
   readonly fill: (from: number) => number;
+  /** the same from the share at which a cell counts as occupied */
+  readonly fromOccupied: number;
 }
 
 /**
@@ -31,18 +34,20 @@ export function localGrowth(
 ): (vigour: number, refuge: number) => LocalGrowth {
   const { variance } = fitKernel(rates, cellSize, stepsPerYear);
   const step = stepRates(rates, stepsPerYear);
-  const known = new Map<number, LocalGrowth>();
+  const known = new Array<LocalGrowth | undefined>(65_536);
   return (vigour, refuge) => {
     const kind = vigour * 256 + refuge;
-    const found = known.get(kind);
+    const found = known[kind];
     if (found) return found;
     const growth = (vigour / 255) * (1 + rates.refugeGrowth * (refuge / 255));
     const half = referenceShare(step, vigour / 255) / 2;
-    const local: LocalGrowth = {
+    const fill = (from: number) => fillTime(step, growth, from, half);
+    const local = {
       speed: half > 0 ? frontSpeed(rates, cellSize, stepsPerYear, variance, 'straight', growth) : 0,
-      fill: (from) => fillTime(step, growth, from, half),
+      fill,
+      fromOccupied: fill(occupiedFrom),
     };
-    known.set(kind, local);
+    known[kind] = local;
     return local;
   };
 }

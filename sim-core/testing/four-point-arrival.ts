@@ -1,4 +1,4 @@
-import { arrivalQueue } from './arrival-queue.ts';
+import { arrivalQueue } from './four-point-queue.ts';
 
 /** Where growth starts and how fast it goes, one value a cell, row-major, width × height. */
 export interface ArrivalInput {
@@ -19,6 +19,9 @@ export interface ArrivalInput {
 /**
  * Years until growth reaches each cell's centre: |∇T| · v = 1 from all starts at once, by fast marching (Sethian 1996,
  * PNAS 93:1591–1595; 1999, SIAM Rev. 41:199–235): cells settle in order of time, each from neighbours that came before.
+ *
+ * The yardstick of `theory/arrival-field.ts`: the textbook scheme on four neighbours, to first and to second order,
+ * written apart from it.
  *
  * @returns Float64, row-major; Infinity where it never arrives
  * @throws RangeError where a layer has another size than the map

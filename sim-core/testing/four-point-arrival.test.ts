@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { arrivalQueue } from './arrival-queue.ts';
-import { arrivalTimes, type ArrivalInput } from './arrival-time.ts';
+import { arrivalQueue } from './four-point-queue.ts';
+import { arrivalTimes, type ArrivalInput } from './four-point-arrival.ts';
 
 /** Growth at 1 m/yr from the middle of a square of n × n nodes, h apart. */
 function fromMiddle(n: number, order: 1 | 2, exactWithin = 0) {
