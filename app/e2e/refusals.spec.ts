@@ -19,7 +19,7 @@ test('a file that cannot be used is refused with what was found and how to mend 
   const whole = readFileSync(habitat);
   await send('cut-short.tif', whole.subarray(0, whole.length >> 1));
   await send('picture.tif', Buffer.from('\x89PNG\r\n\x1a\n and so on', 'latin1'));
-  await send('degrees.tif', readFileSync(join(fixtures, 'bad-degrees.tif')));
+  await send('degrees.tif', readFileSync(join(fixtures, 'mend-degrees.tif')));
   await expect(page.getByText(/gdalwarp/)).toBeVisible();
   await page.goto('/');
   await expect(page.getByRole('link', { name: 'Refused' })).toHaveCount(0);

@@ -67,13 +67,13 @@ function through(
 }
 
 /** How far between its nodes a lattice may be off, in cells of the raster. */
-const tolerance = 5e-4;
+const tolerance = 2e-5;
 const widestStep = 64;
 const finestStep = 4;
 const probesAlongSide = 8;
 
 /**
- * A map that is exact on a lattice of points and linear between them, off by less than a thousandth of a raster cell: a
+ * A map that is exact on a lattice of points and linear between them, off by less than a ten-thousandth of a raster cell: a
  * projection costs a hundred times as much as drawing a line. Where two cells meet in a corner, both get the same point.
  * A map that bends too much for that is given back as it is.
  * @param width, height of the grid whose points will be asked for, its last corners among them

@@ -1,4 +1,4 @@
-import { findCrs } from '#rasters/geo/epsg-register.ts';
+import { checkAxes, findCrs } from '#rasters/geo/epsg-register.ts';
 import { geoKeys, userDefined, type GeoKeys } from '#rasters/read/geo-keys.ts';
 import { RasterError } from '#rasters/read/raster-error.ts';
 import type { CrsDescription } from './raster-description.ts';
@@ -57,6 +57,7 @@ function describeProjected(keys: GeoKeys, code: number | undefined): CrsDescript
   const length = said === userDefined ? keys.number(geoKeys.linearUnitSize) : lengths[said ?? 0];
   const known = findCrs(epsg);
   if (!known) return describeUnknown(epsg, name, said, length);
+  checkAxes(known);
   if (known.kind !== 'projected') throw contradiction(epsg, known.name, 'a projected CRS', 'degrees');
   if (said !== undefined && !(length !== undefined && sameLength(length, known.metresPerUnit ?? 0)))
     throw contradiction(

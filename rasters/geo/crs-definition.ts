@@ -10,6 +10,8 @@ export interface CrsDefinition {
   readonly datum: string;
   /** where it is meant to be used, in degrees; null where the register does not say */
   readonly use: { west: number; south: number; east: number; north: number } | null;
+  /** whether coordinates run east and north, as nearly all do; southern African ones run west and south */
+  readonly eastNorth: boolean;
   /** definition for proj4 */
   readonly proj4: string;
   /** accuracy of the shift to WGS 84 that the definition holds, m, as the register states it */

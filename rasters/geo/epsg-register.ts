@@ -38,6 +38,17 @@ export function crsDefinition(epsg: number): CrsDefinition {
   return found;
 }
 
+/** @throws RasterError `raster-crs` where coordinates do not run east and north: programs write such files in two ways */
+export function checkAxes({ epsg, name, eastNorth }: CrsDefinition): void {
+  if (eastNorth) return;
+  throw new RasterError('raster-crs', {
+    found: `${name} (EPSG:${epsg}), whose axes do not run east and north`,
+    expected: 'eastings and northings',
+    remedy:
+      'Reproject it to the UTM zone of the site, for example gdalwarp -t_srs EPSG:32631 IN.tif OUT.tif.',
+  });
+}
+
 function readEntry(epsg: number): CrsDefinition | undefined {
   // Only EPSG's own range fits a GeoKey (GeoTIFF 1.1, OGC 19-008r4, section 7.3); the files above it are other registers'.
   if (!Number.isInteger(epsg) || epsg < 1024 || epsg > 32766) return undefined;
@@ -57,6 +68,7 @@ function readEntry(epsg: number): CrsDefinition | undefined {
     ...unitOf(kind, entry.proj4),
     datum,
     use: useOf(entry.bbox),
+    eastNorth: !/\+axis=(?!enu)/.test(entry.proj4),
     proj4: entry.proj4,
     accuracy: entry.accuracy,
   };

@@ -2,7 +2,7 @@ import proj4 from 'proj4';
 import { RasterError } from '#rasters/read/raster-error.ts';
 import type { CrsDefinition, DatumShift } from './crs-definition.ts';
 import { shiftToWgs84 } from './datum-shifts.ts';
-import { crsDefinition } from './epsg-register.ts';
+import { checkAxes, crsDefinition } from './epsg-register.ts';
 
 /** Carries points from one CRS into another: easting and northing, or longitude and latitude in degrees. */
 export interface Transformer {
@@ -86,7 +86,7 @@ function converter(
   to: CrsDefinition,
   toText: string,
 ): Pick<Transformer, 'forward' | 'inverse'> {
-  for (const crs of [from, to]) if (/\+axis=/.test(crs.proj4)) throw turnedAxes(crs);
+  for (const crs of [from, to]) checkAxes(crs);
   const way = makeConverter(fromText, toText) ?? refuse(from, to);
   const carry =
     (step: (point: [number, number]) => [number, number]) =>
@@ -117,13 +117,6 @@ const unknownProjection = ({ epsg, name }: CrsDefinition): RasterError =>
   new RasterError('raster-crs', {
     found: `${name} (EPSG:${epsg}), a projection that cannot be computed here`,
     expected: 'a common projection, such as transverse Mercator, Lambert or Albers',
-    remedy: byGdal,
-  });
-
-const turnedAxes = ({ epsg, name }: CrsDefinition): RasterError =>
-  new RasterError('raster-crs', {
-    found: `${name} (EPSG:${epsg}), whose axes do not run east and north`,
-    expected: 'eastings and northings',
     remedy: byGdal,
   });
 
