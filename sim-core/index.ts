@@ -24,7 +24,8 @@ export { kaplanMeier, medianTime, restrictedMean, type CurvePoint } from './ense
 export { wilsonInterval, type Interval } from './ensemble/proportion.ts';
 export { quantiles } from './ensemble/quantile.ts';
 export { coverFan, fanShares, type CoverFan } from './ensemble/cover-fan.ts';
-export { closingMaps, type ClosingMaps } from './ensemble/closing-maps.ts';
+export { closingMaps, type ClosingCounts, type ClosingMaps } from './ensemble/closing-maps.ts';
+export { recordReplicate } from './ensemble/replicate-record.ts';
 export { nextDroughtYear, type BeforeDrought } from './ensemble/next-drought.ts';
 export { latinHypercube } from './ensemble/latin-hypercube.ts';
 export { rankCorrelation } from './ensemble/rank-correlation.ts';

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { driest, wettest } from '#sim-core/spec/limits.ts';
 import { runSpecFields, type RunSpec } from '#sim-core/spec/run-spec.ts';
+import { replicateRecordSchema } from '#sim-core/spec/replicate-record.ts';
 import { weatherSourceSchema } from '#sim-core/spec/weather-source.ts';
 import { endpoint, id, instant, sha256, text } from './endpoint.ts';
 import { gridSchema } from './grid.ts';
@@ -75,33 +76,6 @@ export function replicateSpec(
     actions: options[option].actions,
   };
 }
-
-/** What is kept of one replicate: enough for every statistic, and to know it again when it is run alone. */
-export const replicateSchema = z.strictObject({
-  replicate: z
-    .number()
-    .int()
-    .min(0)
-    .max(mostReplicates - 1),
-  digest: sha256,
-  /** null: not by the horizon */
-  recoveredYear: z.number().nullable(),
-  lostYear: z.number().int().nullable(),
-  /** first year with the threshold's drought, null where none comes by the horizon */
-  droughtYear: z.number().int().nullable(),
-  /** covered area, m², at the survey and at the end of each year */
-  coveredArea: z.array(z.number().min(0)).max(501),
-  /** driest index of each simulated year */
-  droughtIndex: z.array(z.number()).max(500),
-  /** covered area lost over all years, m², by cause */
-  lost: z.strictObject({
-    drought: z.number().min(0),
-    background: z.number().min(0),
-    grazing: z.number().min(0).default(0),
-    events: z.number().min(0),
-  }),
-});
-export type Replicate = z.infer<typeof replicateSchema>;
 
 /** A map of an ensemble: `closing` (median year), `chance-<year>` and `cover-<year>` (bytes, k/255). */
 export const mapNameSchema = z
@@ -248,7 +222,7 @@ export const putReplicates = endpoint({
   path: `${ensemble}/replicates`,
   summary: 'Store replicates of one ensemble; repeating it is harmless',
   params: ensembleParams,
-  body: z.strictObject({ replicates: z.array(replicateSchema).min(1).max(64) }),
+  body: z.strictObject({ replicates: z.array(replicateRecordSchema).min(1).max(64) }),
   reply: z.object({ done: z.number().int() }),
 });
 export const getReplicates = endpoint({
@@ -260,7 +234,7 @@ export const getReplicates = endpoint({
     offset: z.coerce.number().int().min(0).default(0),
     limit: z.coerce.number().int().min(1).max(500).default(500),
   }),
-  reply: z.object({ replicates: z.array(replicateSchema), total: z.number().int() }),
+  reply: z.object({ replicates: z.array(replicateRecordSchema), total: z.number().int() }),
 });
 const shownReplicates = z.object({ replicates: z.coerce.number().int().min(1).max(mostReplicates) });
 /** Body: a map in the binary of `rasters/cells/cell-values.ts`. */

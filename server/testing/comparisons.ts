@@ -1,4 +1,5 @@
-import type { Comparison, Replicate } from '#contract/comparisons.ts';
+import type { Comparison } from '#contract/comparisons.ts';
+import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import type { Option } from '#contract/options.ts';
 import type { Site } from '#contract/sites.ts';
 import type { Agent } from './people.ts';
@@ -41,7 +42,7 @@ export async function startTestComparison(
 }
 
 /** A replicate as a browser sends it, with a digest that follows from its number. */
-export const replicateOf = (replicate: number, changes: Partial<Replicate> = {}): Replicate => ({
+export const replicateOf = (replicate: number, changes: Partial<ReplicateRecord> = {}): ReplicateRecord => ({
   replicate,
   digest: replicate.toString(16).padStart(64, '0'),
   recoveredYear: 2027,

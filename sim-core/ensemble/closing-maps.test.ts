@@ -87,3 +87,23 @@ test('years that are not in order are refused', () => {
   expect(() => closingMaps(1, [])).toThrow(RangeError);
   expect(() => closingMaps(1, [2021, 2020])).toThrow('ascending');
 });
+
+test('goes on from its counts as if it had never stopped', () => {
+  const random = stream('stopped', 'parameters');
+  const drawn = Array.from({ length: 300 }, () =>
+    Int16Array.from({ length: 9 }, () => [cannotClose, stillOpen, 2020, 2021, 2023][wholeBelow(5, random)]),
+  );
+  const whole = closingMaps(9, years);
+  drawn.forEach((closing) => whole.add(closing));
+  for (const stop of [1, 200, 270]) {
+    const first = closingMaps(9, years);
+    drawn.slice(0, stop).forEach((closing) => first.add(closing));
+    const second = closingMaps(9, years, structuredClone(first.counts()));
+    drawn.slice(stop).forEach((closing) => second.add(closing));
+    expect(second.count).toBe(300);
+    expect(second.medianYear()).toEqual(whole.medianYear());
+    expect(second.chanceBy(2022)).toEqual(whole.chanceBy(2022));
+  }
+  expect(() => closingMaps(8, years, whole.counts())).toThrow(/another map/);
+  expect(() => closingMaps(9, [2020], whole.counts())).toThrow(/other years/);
+});

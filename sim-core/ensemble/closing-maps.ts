@@ -1,9 +1,20 @@
 import { cannotClose, stillOpen } from '#sim-core/measure/closing.ts';
 
+/** All that the maps are made of: enough to go on from. */
+export interface ClosingCounts {
+  readonly count: number;
+  /** 1 where some replicate can hold the plant */
+  readonly canClose: Uint8Array;
+  /** by kept year: replicates that closed each cell in it since the kept year before; undefined where none did */
+  readonly planes: readonly (Uint8Array | Uint16Array | undefined)[];
+}
+
 export interface ClosingMaps {
   /** A replicate's closing years, Int16, row-major: 0 still open, −32768 cannot hold the plant. */
   add(closing: Int16Array): void;
   readonly count: number;
+  /** live arrays: whoever keeps them copies them */
+  counts(): ClosingCounts;
   /**
    * chance that each cell has closed by the end of a year, Float32, row-major; NaN where it cannot hold the plant.
    * @throws RangeError of a year that is not kept
@@ -29,20 +40,26 @@ const mostReplicates = 0xffff;
  *
  * @param years kept years, ascending; a closing counts in the first kept year that is not before it, and later ones
  * not at all. Fewer years take less memory
+ * @param from counts to go on from, taken over
  */
-export function closingMaps(cells: number, years: readonly number[]): ClosingMaps {
+export function closingMaps(cells: number, years: readonly number[], from?: ClosingCounts): ClosingMaps {
   if (years.length === 0 || years.some((year, i) => i > 0 && year <= years[i - 1]))
     throw new RangeError('The years to keep must be given, ascending');
   /** replicates that closed each cell in each kept year since the one before */
-  const planes = new Array<Uint8Array | Uint16Array | undefined>(years.length);
+  const planes = from ? [...from.planes] : new Array<Uint8Array | Uint16Array | undefined>(years.length);
   /** 1 where some replicate can hold the plant */
-  const canClose = new Uint8Array(cells);
+  const canClose = from ? from.canClose : new Uint8Array(cells);
   const last = years.length - 1;
   /** kept year by calendar year, from the first kept one on */
   const slots = Uint16Array.from({ length: years[last] - years[0] + 1 }, (_, i) =>
     years.findIndex((year) => year >= years[0] + i),
   );
-  let count = 0;
+  let count = from?.count ?? 0;
+  if (
+    planes.length !== years.length ||
+    [canClose, ...planes].some((plane) => plane && plane.length !== cells)
+  )
+    throw new RangeError('The counts to go on from are of other years or of another map');
 
   /** Calls `then` with how many replicates closed each cell in each kept year up to `until`, where any did. */
   function each(until: number, then: (closings: number, cell: number, year: number) => void): void {
@@ -74,6 +91,7 @@ export function closingMaps(cells: number, years: readonly number[]): ClosingMap
     get count() {
       return count;
     },
+    counts: () => ({ count, canClose, planes }),
     chanceBy(year) {
       const until = years.indexOf(year);
       if (until < 0) throw new RangeError(`${year} is not kept; the years are ${years.join(', ')}`);

@@ -1,14 +1,20 @@
 import { describe, expect, test } from 'vitest';
 import { createRun } from '#sim-core/run/create-run.ts';
+import { replicateRecordSchema, type ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import type { RunResult } from '#sim-core/spec/run-result.ts';
 import { gridOf, groundOf, specOf } from '#sim-core/testing/setups.ts';
 import { ensembleTally } from './ensemble-tally.ts';
 import { quantiles } from './quantile.ts';
+import { recordReplicate } from './replicate-record.ts';
 
 const [width, height, years, surveyYear] = [16, 12, 12, 2020];
+const threshold = -2.3;
 
 /** Replicates of a small real ensemble: droughts that come back, counts of clumps, quarterly steps or yearly ones. */
-function replicates(count: number, stepsPerYear: 1 | 4 = 1): { result: RunResult; closing: Int16Array }[] {
+function replicates(
+  count: number,
+  stepsPerYear: 1 | 4 = 1,
+): { result: RunResult; record: ReplicateRecord }[] {
   const cover = new Float32Array(width * height);
   for (let y = 0; y < height; y++) for (let x = 0; x < 11; x++) cover[y * width + x] = 0.8;
   const source = {
@@ -29,16 +35,16 @@ function replicates(count: number, stepsPerYear: 1 | 4 = 1): { result: RunResult
     });
     const run = createRun({ spec, grid: gridOf(width, height), ground: groundOf(width * height, { cover }) });
     while (run.nextYear());
-    return { result: run.result(), closing: run.closing() };
+    return { result: run.result(), record: recordReplicate(run.result(), spec, threshold) };
   });
 }
 
-const input = { surveyYear, years, mostArea: width * height, droughtThreshold: -2.3, cells: width * height };
+const input = { surveyYear, years, mostArea: width * height };
 
 describe('a real ensemble', () => {
   const drawn = replicates(40);
   const tally = ensembleTally(input);
-  drawn.forEach(({ result, closing }) => tally.add(result, closing));
+  drawn.forEach(({ record }) => tally.add(record));
   const summary = tally.summary();
   const times = drawn.map(({ result }) => result.recoveredYear ?? Infinity);
 
@@ -68,41 +74,36 @@ describe('a real ensemble', () => {
     );
     expect(Math.abs(summary.fan[2][7] - middle[0])).toBeLessThan(0.05);
   });
-  test('maps closing: where cover stood it is certain, and chances rise with the years', () => {
-    const survey = tally.maps?.chanceBy(surveyYear);
-    const end = tally.maps?.chanceBy(surveyYear + years);
-    expect(survey?.[0]).toBe(1);
-    expect(survey?.[width - 1]).toBe(0);
-    expect(end?.every((chance, i) => chance >= (survey?.[i] ?? 2))).toBe(true);
-    expect(tally.maps?.medianYear()[0]).toBe(surveyYear);
-  });
   test('does not depend on the order', () => {
     const back = ensembleTally(input);
-    drawn.toReversed().forEach(({ result, closing }) => back.add(result, closing));
+    drawn.toReversed().forEach(({ record }) => back.add(record));
     expect(back.summary()).toEqual(summary);
-    expect(back.maps?.medianYear()).toEqual(tally.maps?.medianYear());
   });
 });
 
-test('takes a year’s end from quarterly steps', () => {
-  const [{ result }] = replicates(1, 4);
-  const tally = ensembleTally({ ...input, cells: undefined });
-  tally.add(result);
-  const { fan } = tally.summary();
-  expect(Math.abs(fan[2][3] - result.series[12].coveredArea)).toBeLessThan(0.05);
+test('a record holds what its result says, from quarterly steps too', () => {
+  const [{ result, record }] = replicates(1, 4);
+  expect(record.coveredArea).toHaveLength(years + 1);
+  expect(record.coveredArea[3]).toBe(result.series[12].coveredArea);
+  const second = result.series.slice(5, 9);
+  expect(record.droughtIndex[1]).toBe(Math.min(...second.map((row) => row.droughtIndex!)));
+  const sum = (of: 'lostToDrought' | 'lostToEvents') =>
+    result.series.reduce((total, row) => total + row[of], 0);
+  expect(record.lost.drought).toBeCloseTo(sum('lostToDrought'), 9);
+  expect(record.lost.drought).toBeGreaterThan(0);
+  expect(record).toMatchObject({ replicate: 0, digest: result.digest, recoveredYear: result.recoveredYear });
+  const dry = result.series.find((row) => row.droughtIndex !== null && row.droughtIndex <= threshold);
+  expect(record.droughtYear).toBe(dry ? Math.ceil(dry.time) : null);
+  expect(replicateRecordSchema.parse(record)).toEqual(record);
 });
 
 test('nothing gives nothing; what does not fit is refused', () => {
   const tally = ensembleTally(input);
   expect(tally.summary()).toMatchObject({ replicates: 0, recovery: [], restrictedMean: undefined, fan: [] });
-  const [{ result }] = replicates(1);
-  expect(() => tally.add(result)).toThrow('Found no closing years; the maps need 192');
-  expect(() => tally.add(result, new Int16Array(5))).toThrow('Found 5 closing years');
-  expect(() => tally.add({ ...result, recoveredYear: 2050 }, new Int16Array(192))).toThrow(
-    'Recovered in 2050',
-  );
-  expect(() => ensembleTally({ ...input, years: 5 }).add(result)).toThrow(
-    "The series runs from 2020 over 13 years' ends; expected 2020 to 2025",
+  const [{ record }] = replicates(1);
+  expect(() => tally.add({ ...record, recoveredYear: 2050 })).toThrow('Recovered in 2050');
+  expect(() => ensembleTally({ ...input, years: 5 }).add({ ...record, recoveredYear: null })).toThrow(
+    'Found 13 values; expected one at each of 6 times',
   );
   expect(tally.summary().replicates).toBe(0);
 });

@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { replicateSpec, type Comparison, type Replicate } from '#contract/comparisons.ts';
+import { replicateSpec, type Comparison } from '#contract/comparisons.ts';
+import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import type { Option } from '#contract/options.ts';
 import type { Problem } from '#contract/problem.ts';
 import type { Site } from '#contract/sites.ts';
@@ -32,7 +33,7 @@ afterAll(() => server.close());
 
 const pathOf = (comparison: Comparison, rest = '') =>
   `/api/sites/${site.id}/comparisons/${comparison.id}${rest}`;
-const put = (comparison: Comparison, option: number, replicates: Replicate[], status = 200) =>
+const put = (comparison: Comparison, option: number, replicates: ReplicateRecord[], status = 200) =>
   team.agents.modeller
     .put(pathOf(comparison, `/ensembles/${option}/0/replicates`))
     .send({ replicates })
@@ -112,7 +113,7 @@ describe('a comparison', () => {
       [{ droughtIndex: [1] }, 'replicates.0.droughtIndex'],
       [{ recoveredYear: 2050 }, 'replicates.0.recoveredYear'],
     ] as const) {
-      const refused = await put(comparison, 0, [replicateOf(0, changes as Partial<Replicate>)], 400);
+      const refused = await put(comparison, 0, [replicateOf(0, changes as Partial<ReplicateRecord>)], 400);
       expect((refused.body as Problem).fields?.[0].field).toBe(field);
     }
     await put(comparison, 2, [replicateOf(0)], 404);

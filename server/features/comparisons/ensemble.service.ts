@@ -1,6 +1,7 @@
 import type { Readable } from 'node:stream';
-import { comparisonPlanSchema, replicateSchema, type Replicate } from '#contract/comparisons.ts';
+import { comparisonPlanSchema } from '#contract/comparisons.ts';
 import { gridSchema } from '#contract/grid.ts';
+import { replicateRecordSchema, type ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import type { ComparisonRow } from '#server/database/entities/comparison.ts';
 import type { EnsembleAddress } from '#server/database/entities/comparison-parts.ts';
 import { readJson } from '#server/database/json-column.ts';
@@ -43,7 +44,7 @@ async function requireEnsemble(manager: Manager, { siteId, comparisonId, option,
 export function putReplicates(
   services: Services,
   params: EnsembleParams,
-  replicates: Replicate[],
+  replicates: ReplicateRecord[],
 ): Promise<{ done: number }> {
   return services.write(async (manager) => {
     const { row, plan, address } = await requireEnsemble(manager, params);
@@ -81,7 +82,7 @@ export function putReplicates(
       replicates.map(({ replicate }) => replicate),
     );
     const digests = new Map(stored.map(({ replicate, digest }) => [replicate, digest]));
-    const fresh = new Map<number, Replicate>();
+    const fresh = new Map<number, ReplicateRecord>();
     for (const found of replicates) {
       const before = digests.get(found.replicate) ?? fresh.get(found.replicate)?.digest;
       if (before === undefined) fresh.set(found.replicate, found);
@@ -113,10 +114,10 @@ export async function getReplicates(
   manager: Manager,
   params: EnsembleParams,
   page: { offset: number; limit: number },
-): Promise<{ replicates: Replicate[]; total: number }> {
+): Promise<{ replicates: ReplicateRecord[]; total: number }> {
   const { address } = await requireEnsemble(manager, params);
   const [rows, total] = await replicatesOf(manager, address, page);
-  return { replicates: rows.map((row) => readJson(replicateSchema, row.record)), total };
+  return { replicates: rows.map((row) => readJson(replicateRecordSchema, row.record)), total };
 }
 
 /**
