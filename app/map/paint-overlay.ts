@@ -126,10 +126,10 @@ function paintContours(
   for (const { lines } of contours) {
     pen.beginPath();
     for (const line of lines) trace(pen, line, place, false);
-    pen.globalAlpha = 0.55;
-    outline(pen, colours.halo, 2.6);
-    pen.globalAlpha = 0.85;
-    outline(pen, colours.ink, 0.9);
+    pen.globalAlpha = 0.3;
+    outline(pen, colours.halo, 2.2);
+    pen.globalAlpha = 0.7;
+    outline(pen, colours.ink, 0.8);
   }
   pen.globalAlpha = 1;
   pen.font = '600 11px "Atkinson Hyperlegible Mono Variable", monospace';

@@ -47,11 +47,12 @@ export function createQuickLookDesk(): QuickLookDesk {
     return held;
   };
   function shown(): Look {
-    const { look, grid, start } = opened();
+    const { look, grid, ground, start } = opened();
     const { surveyYear, years } = start.spec;
     const lines = yearLines({
       grid,
       closing: (cell) => look.closing(cell),
+      holds: (cell) => ground.capacity[cell] > 0,
       surveyYear,
       horizon: years,
       years: lineYears(surveyYear, years),

@@ -14,6 +14,8 @@ export interface YearLinesInput {
   readonly grid: Grid;
   /** years from the survey until a cell closes; Infinity not by the horizon */
   readonly closing: (cell: number) => number;
+  /** whether a cell can hold the plant: no line runs along the shore of those that cannot */
+  readonly holds?: (cell: number) => boolean;
   readonly surveyYear: number;
   /** years that lines are wanted of, ascending */
   readonly years: readonly number[];
@@ -40,16 +42,26 @@ export function lineYears(surveyYear: number, years: number): number[] {
  * does not close counts as closing a year after the horizon.
  */
 export function yearLines(input: YearLinesInput): YearLine[] {
-  const { grid, closing, surveyYear, years, side = 400, horizon } = input;
+  const { grid, closing, holds = () => true, surveyYear, years, side = 400, horizon } = input;
   const step = Math.max(1, Math.ceil(Math.max(grid.width, grid.height) / side));
   const width = Math.ceil(grid.width / step);
   const height = Math.ceil(grid.height / step);
   const half = (step - 1) / 2;
   const at = (i: number, length: number) => Math.min(length - 1, Math.floor(i * step + half));
-  const samples = Array.from({ length: width * height }, (_, i) => {
-    const cell = at(Math.floor(i / width), grid.height) * grid.width + at(i % width, grid.width);
-    return -Math.min(horizon + 1, closing(cell));
-  });
+  const cellOf = (i: number) =>
+    at(Math.floor(i / width), grid.height) * grid.width + at(i % width, grid.width);
+  const samples = Array.from(
+    { length: width * height },
+    (_, i) => -Math.min(horizon + 1, closing(cellOf(i))),
+  );
+  /** A point of a line stands between the middles of samples: on the shore where one of them cannot hold the plant. */
+  const onShore = (x: number, y: number): boolean =>
+    [Math.floor(y - 0.5), Math.ceil(y - 0.5)].some((row) =>
+      [Math.floor(x - 0.5), Math.ceil(x - 0.5)].some(
+        (column) =>
+          row >= 0 && row < height && column >= 0 && column < width && !holds(cellOf(row * width + column)),
+      ),
+    );
   const generator = contours().size([width, height]);
   const place = ([x, y]: number[]): Point => [
     grid.originX + x * step * grid.cellSize,
@@ -59,17 +71,22 @@ export function yearLines(input: YearLinesInput): YearLine[] {
     const { coordinates } = generator.contour(samples, -(year - surveyYear));
     const lines = coordinates
       .flat()
-      .flatMap((ring) => piecesInside(ring, width, height).map((l) => l.map(place)));
+      .flatMap((ring) => piecesInside(ring, width, height, onShore).map((l) => l.map(place)));
     return { year, lines, label: labelOf(lines) };
   });
 }
 
-/** The pieces of a ring that do not run along the edge of the map. */
-function piecesInside(ring: number[][], width: number, height: number): number[][][] {
+/** The pieces of a ring that run neither along the edge of the map nor along a shore. */
+function piecesInside(
+  ring: number[][],
+  width: number,
+  height: number,
+  onShore: (x: number, y: number) => boolean,
+): number[][][] {
   const pieces: number[][][] = [[]];
   for (const point of ring) {
     const [x, y] = point;
-    if (x <= 0 || y <= 0 || x >= width || y >= height) pieces.push([]);
+    if (x <= 0 || y <= 0 || x >= width || y >= height || onShore(x, y)) pieces.push([]);
     else pieces[pieces.length - 1].push(point);
   }
   return pieces.filter((piece) => piece.length > 1);

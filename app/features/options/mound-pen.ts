@@ -9,12 +9,16 @@ export interface MoundPen {
   readonly strength: string;
   /** m over which it fades out beyond the radius */
   readonly halo: string;
+  /** set on it */
+  readonly clumps: string;
 }
-export type MoundField = keyof MoundPen;
-export type MoundErrors = Partial<Record<MoundField, string>>;
-export type PenMound = Pick<Mound, MoundField>;
+export type MoundField = Exclude<keyof MoundPen, 'clumps'>;
+export type MoundErrors = Partial<Record<keyof MoundPen, string>>;
+export type PenMound = Pick<Mound, MoundField> & { readonly clumps: number };
 
-export const startingMound: MoundPen = { radius: '1.5', strength: '100', halo: '1' };
+export const startingMound: MoundPen = { radius: '1.5', strength: '100', halo: '1', clumps: '9' };
+/** Most clumps that are set at one point. */
+const mostClumps = 100_000;
 
 /** One field of a mound as it is typed, or what is wrong with it. */
 export function readMoundField(field: MoundField, text: string): number | string {
@@ -44,6 +48,9 @@ export function readMound(
     errors[field] = value;
     return 0;
   };
-  const mound = { radius: read('radius'), strength: read('strength'), halo: read('halo') };
+  const clumps = parseNumber(pen.clumps) ?? -1;
+  if (!Number.isInteger(clumps) || clumps < 0 || clumps > mostClumps)
+    errors.clumps = 'The clumps on a mound must be a whole number from 0 to 100,000.';
+  const mound = { radius: read('radius'), strength: read('strength'), halo: read('halo'), clumps };
   return Object.keys(errors).length > 0 ? { errors } : { mound };
 }

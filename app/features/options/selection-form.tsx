@@ -1,6 +1,7 @@
 import type { Work } from '#contract/works.ts';
 import { WordButton } from '#app/components/word-button.tsx';
 import type { Span } from './board/area-pen.ts';
+import { withoutPlanted } from './board/planted-mounds.ts';
 import { EditedBlank } from './edited-blank.tsx';
 import { fieldText, withField, type WorkField } from './work-fields.ts';
 import { placeInWords, placeOf, titleOf, worksInWords } from './works-words.ts';
@@ -13,6 +14,12 @@ interface Piece {
   readonly after?: string;
 }
 const inYear: Piece = { field: 'year', label: 'Year', before: 'in' };
+const onMounds: Piece = {
+  field: 'each',
+  label: 'Clumps set on a mound',
+  before: 'with',
+  after: 'clumps set on it',
+};
 const pieces: Record<Work['kind'], readonly Piece[]> = {
   mound: [
     { field: 'radius', label: 'Radius, m', after: 'm in radius,' },
@@ -48,19 +55,26 @@ export function SelectionForm(props: {
     onChange: (works: readonly Work[]) => string | undefined;
     onCopy: () => void;
     onRemove: () => void;
+    /** lays the set that it belongs to anew; undefined where no pattern laid it */
+    onLay: (() => void) | undefined;
   };
 }) {
   const { works, edit, span } = props;
-  const [first] = works;
-  const alone = works.length === 1;
-  const kind = works.every((work) => work.kind === first.kind) ? first.kind : undefined;
+  // Clumps on a mound count as part of it.
+  const things = withoutPlanted(works);
+  const [first] = things;
+  const alone = things.length === 1;
+  const kind = things.every((work) => work.kind === first.kind) ? first.kind : undefined;
+  const sentence = kind
+    ? [...pieces[kind], ...(things.length < works.length && kind === 'mound' ? [onMounds] : [])]
+    : [inYear];
   const take = (field: WorkField) => (text: string) => {
     const changed = works.map((work) => withField(work, field, text, span));
     const wrong = changed.find((work) => typeof work === 'string');
     return typeof wrong === 'string' ? wrong : edit?.onChange(changed as Work[]);
   };
   const blank = ({ field, label }: Piece) => {
-    const texts = new Set(works.map((work) => fieldText(work, field)));
+    const texts = new Set(works.map((work) => fieldText(work, field)).filter((text) => text !== undefined));
     const same = texts.size === 1;
     const [value = ''] = same ? texts : [];
     if (!edit) return <b className="font-semibold">{same ? value || 'the end' : 'several'}</b>;
@@ -81,11 +95,11 @@ export function SelectionForm(props: {
   return (
     <section aria-label="What is selected" className="mb-3 border-b border-rule pb-2 text-[13.5px]">
       <h2 className="text-body leading-tight font-bold">
-        {alone ? titleOf(first, props.number) : `${works.length} selected`}
+        {alone ? titleOf(first, props.number) : `${things.length} selected`}
       </h2>
       {!alone && <p className="text-note text-ink-2">{worksInWords(works)}</p>}
       <p className="mt-0.5 flex flex-wrap items-baseline gap-x-1.5 gap-y-1">
-        {(kind ? pieces[kind] : [inYear]).map((piece) => (
+        {sentence.map((piece) => (
           <span key={piece.field} className="inline-flex flex-wrap items-baseline gap-x-1.5">
             {piece.before} {blank(piece)} {piece.after}
           </span>
@@ -101,7 +115,10 @@ export function SelectionForm(props: {
             characters={16}
             placeholder="no name"
             value={first.name ?? ''}
-            onTake={take('name')}
+            onTake={(text) => {
+              const named = withField(first, 'name', text, span);
+              return typeof named === 'string' ? named : edit.onChange([named]);
+            }}
           />
         </p>
       )}
@@ -114,6 +131,11 @@ export function SelectionForm(props: {
           <WordButton lined onClick={edit.onRemove}>
             Remove
           </WordButton>
+          {edit.onLay && (
+            <WordButton lined onClick={edit.onLay}>
+              Lay the pattern anew
+            </WordButton>
+          )}
         </p>
       )}
     </section>

@@ -1,29 +1,35 @@
+import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useMemo, useRef, useState } from 'react';
 import type { Option } from '#contract/options.ts';
-import { newWorkId, type Work } from '#contract/works.ts';
+import type { Work } from '#contract/works.ts';
+import { sayDone } from '#app/components/toast.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
-import { readArea } from '#app/features/options/board/area-pen.ts';
 import type { BoardPens } from '#app/features/options/board/board-pens.ts';
-import { isAreaTool, type BoardTool } from '#app/features/options/board/board-tools.ts';
-import { worksProblem, type RefusedPlace } from '#app/features/options/board/check-works.ts';
-import { useBoardTool } from '#app/features/options/board/use-board-tool.ts';
-import { readYear } from '#app/features/options/board/area-pen.ts';
-import { readMound } from '#app/features/options/mound-pen.ts';
+import { useBoard } from '#app/features/options/board/use-board.ts';
+import { createOptionMutation } from '#app/features/options/change-option.ts';
+import { useLookOf, useQuickLook } from '#app/features/options/quick-look/use-quick-look.ts';
 import { SelectionForm } from '#app/features/options/selection-form.tsx';
 import { surveyedMounds } from '#app/features/options/surveyed-mounds.ts';
+import { readMound } from '#app/features/options/mound-pen.ts';
+import { readYear } from '#app/features/options/board/area-pen.ts';
+import { SuggestPanel } from '#app/features/options/suggest/suggest-panel.tsx';
+import { useSuggest } from '#app/features/options/suggest/use-suggest.ts';
 import { useOptionDrawing } from '#app/features/options/use-option-drawing.ts';
 import { useUndoKeys } from '#app/features/options/use-undo-keys.ts';
-import { withField, type WorkField } from '#app/features/options/work-fields.ts';
 import { countOf, worksByYear } from '#app/features/options/works-words.ts';
 import type { MapFoothold } from '#app/map/map-symbols.ts';
 import { Yearline } from '#app/yearline/Yearline.tsx';
 import { OptionAction } from './option-action.tsx';
-import { OptionMap, type FoundSurveyed } from './option-map.tsx';
+import { OptionMap } from './option-map.tsx';
 import { OptionMargin } from './option-margin.tsx';
+import { OptionMeters, useSetCosts } from './option-meters.tsx';
+import type { MapShow } from './option-raster.ts';
 import { OptionSentence } from './option-sentence.tsx';
 import { OptionTools } from './option-tools.tsx';
 import { SitePage } from './site-page.tsx';
 import { tolerancesOf } from './tolerances.ts';
+import { useAllowed } from './use-allowed.ts';
+import { useLookStart } from './use-look-start.ts';
 import { useSite } from './use-site.ts';
 import { useYearParam } from './use-year-param.ts';
 
@@ -44,10 +50,7 @@ export function OptionBoard(props: {
   const drawing = useOptionDrawing(option);
   const { draft, draw } = drawing;
   const [asTable, setAsTable] = useState(false);
-  const [refused, setRefused] = useState<RefusedPlace>();
-  const [missed, setMissed] = useState(0);
-  const [found, setFound] = useState<FoundSurveyed>();
-  const [chosenTool, setTool] = useState<BoardTool>(draft.works.length === 0 ? 'mound' : 'select');
+  const [show, setShow] = useState<MapShow>('closing');
   const page = useRef<HTMLDivElement>(null);
   const focusMap = () => page.current?.querySelector<HTMLElement>('[role="application"]')?.focus();
   useEffect(() => {
@@ -55,20 +58,14 @@ export function OptionBoard(props: {
   }, [justMade]);
 
   const lastYear = outlook.surveyYear + outlook.years;
-  const dated = draft.works.map((work) => work.year);
-  const usual = dated.reduce((latest, year) => Math.max(latest, year), outlook.surveyYear + 1);
+  const usual = draft.works.reduce((latest, work) => Math.max(latest, work.year), outlook.surveyYear + 1);
   const { year, setYear } = useYearParam(outlook.surveyYear, lastYear, usual);
 
-  const editable = mayDraw && !option.wait;
-  const tool = editable ? chosenTool : 'select';
-  useUndoKeys(editable, (type) => {
-    setRefused(undefined);
-    draw({ type });
-  });
+  const editable = mayDraw && !option.wait && !option.archived;
+  const allowed = useAllowed(site);
   const worksGround = useMemo(
-    // A site has no layer of allowed ground yet: works may go wherever the plant can grow.
-    () => ({ grid, capacity: ground.capacity, allowed: undefined }),
-    [grid, ground.capacity],
+    () => ({ grid, capacity: ground.capacity, allowed: allowed.cells }),
+    [grid, ground.capacity, allowed.cells],
   );
   const surveyed = useMemo(
     (): MapFoothold[] =>
@@ -89,84 +86,59 @@ export function OptionBoard(props: {
     [draft.works],
   );
 
-  const mound = readMound(pens.mound);
-  const workYear = readYear(pens.year, outlook);
-  const area = isAreaTool(tool) ? readArea(tool, pens.area, pens.year, outlook) : undefined;
-  const errors = area
-    ? (area.errors ?? {})
-    : { ...mound.errors, ...(typeof workYear === 'string' && { year: workYear }) };
-  const miss = () => {
-    setMissed(missed + 1);
-    return undefined;
-  };
-  const show = (works: readonly Work[]) => {
-    // What was just placed must not stand faint on the map.
-    const first = works.reduce((least, work) => Math.min(least, work.year), lastYear);
-    if (year < first) setYear(first);
-  };
-  const board = useBoardTool({
-    ...{ ground: worksGround, draft, draw, tool, editable, surveyed },
-    snap: pens.snap,
-    shown: draft.selected.size === 0 ? found?.id : undefined,
-    onTool: setTool,
-    onSnap: () => props.onPens({ ...pens, snap: !pens.snap }),
-    onSurveyed: (id, kept) => {
-      setFound(id === undefined ? undefined : { id, kept });
-      if (id !== undefined && draft.selected.size > 0) draw({ type: 'select', ids: [] });
+  const costs = useSetCosts(site.id);
+  const start = useLookStart(site, allowed);
+  const view = useQuickLook(start);
+  const board = useBoard({
+    ...{ ground: worksGround, draft, draw, editable, pens, surveyed },
+    span: outlook,
+    unitCosts: costs,
+    layer: view.layer,
+    onPens: props.onPens,
+    onAdded: (works) => {
+      // What was just placed must not stand faint on the map.
+      const first = works.reduce((least, work) => Math.min(least, work.year), lastYear);
+      if (year < first) setYear(first);
     },
-    onRefused: setRefused,
-    moundAt: (x, y) =>
-      mound.mound && typeof workYear === 'number'
-        ? { kind: 'mound', id: newWorkId(), year: workYear, x, y, ...mound.mound }
-        : miss(),
-    workOf: (ring) =>
-      area?.work
-        ? {
-            ...area.work,
-            id: newWorkId(),
-            area: { shape: 'polygon', ring: ring.map(([x, y]) => [x, y]) },
-          }
-        : miss(),
-    onPlace: () => false,
-    onAdded: show,
+  });
+  const mound = useMemo(() => readMound(pens.mound).mound, [pens.mound]);
+  const workYear = readYear(pens.year, outlook);
+  const suggesting = useSuggest({
+    ...{ start, mound },
+    drawn: draft.works,
+    year: typeof workYear === 'number' ? workYear : undefined,
+    each: costs && mound && costs.mound + mound.clumps * costs.clump,
+  });
+  const preview = useMemo(
+    () => [...board.laying.works, ...suggesting.works],
+    [board.laying.works, suggesting.works],
+  );
+  const all = useMemo(
+    () => (preview.length > 0 ? [...board.works, ...preview] : board.works),
+    [board.works, preview],
+  );
+  useLookOf(view, all);
+  useUndoKeys(editable, (type) => {
+    board.forget();
+    draw({ type });
   });
 
-  /** Takes changed works, or says why not. */
-  const change = (works: readonly Work[]): string | undefined => {
-    const problem = worksProblem(worksGround, works)?.problem;
-    if (problem === undefined) draw({ type: 'change', works });
-    return problem;
-  };
-  const edit = (id: string, field: WorkField, text: string): string | undefined => {
-    const work = draft.works.find((other) => other.id === id);
-    const next = work && withField(work, field, text, outlook);
-    return typeof next === 'string' ? next : next && change([next]);
-  };
-  const select = (ids: readonly string[]) => {
-    setRefused(undefined);
-    setFound(undefined);
-    draw({ type: 'select', ids });
-  };
+  const queryClient = useQueryClient();
+  const create = useMutation(createOptionMutation(queryClient, site.id));
   const chosen = draft.works.filter((work) => draft.selected.has(work.id));
-
   return (
     <SitePage
       step="options"
       title={`Options, ${option.name}`}
       tools={
         <OptionTools
-          {...{ option, editable, mayDraw, tool, draft, draw, asTable }}
+          {...{ option, editable, mayDraw, draft, draw, asTable }}
+          tool={board.tool}
           snap={pens.snap}
-          sentence={
-            <OptionSentence
-              {...{ tool, pens, board, errors, missed }}
-              onPens={(next) => {
-                setMissed(0);
-                props.onPens(next);
-              }}
-            />
-          }
-          onTool={setTool}
+          sentence={<OptionSentence {...{ pens, board }} currency={costs?.currency} />}
+          quickLook={start && show !== 'gain' ? show === 'closing' : undefined}
+          onQuickLook={(shown) => setShow(shown ? 'closing' : 'cover')}
+          onTool={board.setTool}
           onSnap={(snap) => props.onPens({ ...pens, snap })}
           onTable={setAsTable}
         />
@@ -174,17 +146,16 @@ export function OptionBoard(props: {
       map={
         <div ref={page} className="size-full">
           <OptionMap
-            {...{ ground, draft, board, tool, surveyed, found, year, asTable, refused, editable }}
+            {...{ ground, draft, board, surveyed, preview, year, asTable, editable, show }}
+            look={view.look}
+            gain={suggesting.gain.result}
             title={`${site.name}, ${option.name}, ${year}`}
-            onSelect={select}
-            onEdit={edit}
             onRemove={(id) => draw({ type: 'remove', ids: new Set([id]) })}
             onMove={() => {
-              setTool('select');
+              board.setTool('select');
               setAsTable(false);
               focusMap();
             }}
-            onForget={() => setRefused(undefined)}
           />
         </div>
       }
@@ -198,9 +169,48 @@ export function OptionBoard(props: {
                 works={chosen}
                 number={draft.works.indexOf(chosen[0]) + 1}
                 span={outlook}
-                edit={editable ? { onChange: change, onCopy: board.copy, onRemove: board.remove } : undefined}
+                edit={
+                  editable
+                    ? {
+                        onChange: board.change,
+                        onCopy: board.copy,
+                        onRemove: board.remove,
+                        onLay: layable(draft.sets, chosen, board.laying.takeUp),
+                      }
+                    : undefined
+                }
               />
             )
+          }
+          meters={
+            <>
+              <OptionMeters works={all} view={view} possible={start !== undefined} />
+              {editable && (
+                <SuggestPanel
+                  {...{ suggesting }}
+                  currency={costs?.currency}
+                  moundWords={`Each as the sentence of “one by one” says, in ${pens.year}.`}
+                  gainShown={show === 'gain'}
+                  onShowGain={(shown) => setShow(shown ? 'gain' : 'closing')}
+                  busy={create.isPending}
+                  onAdd={() => {
+                    draw({ type: 'add', works: suggesting.works });
+                    suggesting.forget();
+                    sayDone('Added to this option; not saved yet');
+                  }}
+                  onNewOption={() =>
+                    create.mutate(
+                      {
+                        name: `${option.name}, with ${suggesting.taken} suggested`.slice(0, 100),
+                        works: [...draft.works, ...suggesting.works],
+                        sets: [...draft.sets],
+                      },
+                      { onSuccess: (made) => onChoose(made.id, true) },
+                    )
+                  }
+                />
+              )}
+            </>
           }
         />
       }
@@ -217,4 +227,15 @@ export function OptionBoard(props: {
       action={mayDraw && <OptionAction {...{ option, drawing }} />}
     />
   );
+}
+
+/** The way to lay a set anew, where the selection belongs to one that a pattern laid. */
+function layable(
+  sets: Option['sets'] | readonly Option['sets'][number][],
+  chosen: readonly Work[],
+  takeUp: (setId: string) => void,
+): (() => void) | undefined {
+  const [{ set }] = chosen;
+  if (set === undefined || chosen.some((work) => work.set !== set)) return undefined;
+  return sets.some(({ id }) => id === set) ? () => takeUp(set) : undefined;
 }

@@ -1,15 +1,17 @@
 import { useMemo } from 'react';
+import type { Work } from '#contract/works.ts';
+import type { GainMap } from '#sim-core/plan/gain-map.ts';
 import { EmptyState } from '#app/components/empty-state.tsx';
 import { FlagSymbol, SurvivorSymbol } from '#app/components/symbols.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
-import type { RefusedPlace } from '#app/features/options/board/check-works.ts';
+import { withoutPlanted } from '#app/features/options/board/planted-mounds.ts';
 import { SketchMarks } from '#app/features/options/board/sketch-marks.tsx';
-import { drawsOutline, type Board } from '#app/features/options/board/use-board-tool.ts';
+import type { DrawingBoard } from '#app/features/options/board/use-board.ts';
+import { drawsOutline } from '#app/features/options/board/use-board-tool.ts';
 import { worksOnMap } from '#app/features/options/board/works-on-map.ts';
-import type { BoardTool } from '#app/features/options/board/board-tools.ts';
+import { yearContours } from '#app/features/options/quick-look/year-contours.ts';
 import type { OptionDraft } from '#app/features/options/option-draft.ts';
-import type { WorkField } from '#app/features/options/work-fields.ts';
 import { WorkNote } from '#app/features/options/work-note.tsx';
 import { WorksTable } from '#app/features/options/works-table.tsx';
 import { placeInWords, placeOf, worksInWords } from '#app/features/options/works-words.ts';
@@ -18,47 +20,59 @@ import { MapNote } from '#app/map/MapNote.tsx';
 import type { MapRaster } from '#app/map/map-raster.ts';
 import type { MapFoothold } from '#app/map/map-symbols.ts';
 import { SiteMap } from '#app/map/SiteMap.tsx';
+import type { Look } from '#app/workers/quick-look-desk.ts';
+import { closingRaster, gainRaster, type MapShow } from './option-raster.ts';
 import { GroundState } from './ground-state.tsx';
 import { useSite } from './use-site.ts';
 
-/** A surveyed foothold that was found on the map; `kept`: somebody tried to remove it. */
-export interface FoundSurveyed {
-  readonly id: string;
-  readonly kept: boolean;
-}
+const shownWords: Record<MapShow, string> = {
+  cover: 'Cover at the survey',
+  closing: 'The year in which the ground closes by growth alone',
+  gain: 'What one more mound would bring in each place',
+};
 
 /** The works on the ground, over the cover that stands today; or the same works as a table. */
 export function OptionMap(props: {
   ground: GroundRasters;
   draft: OptionDraft;
-  board: Board;
-  tool: BoardTool;
+  board: DrawingBoard;
   surveyed: readonly MapFoothold[];
-  found: FoundSurveyed | undefined;
+  /** works that are shown before they are placed */
+  preview: readonly Work[];
+  show: MapShow;
+  look: Look | undefined;
+  gain: GainMap | undefined;
   /** works that come later stand faint */
   year: number;
   asTable: boolean;
-  refused: RefusedPlace | undefined;
   editable: boolean;
   title: string;
-  onSelect: (ids: readonly string[]) => void;
-  onEdit: (id: string, field: WorkField, text: string) => string | undefined;
   onRemove: (id: string) => void;
   onMove: () => void;
-  onForget: () => void;
 }) {
-  const { ground, draft, board, year, refused, editable, surveyed, tool } = props;
+  const { ground, draft, board, year, editable, surveyed, preview, show, look, gain } = props;
+  const { tool, refused } = board;
   const { site } = useSite();
-  const { grid } = site;
+  const { grid, outlook } = site;
   const drawn = useMemo(() => worksOnMap(board.works, year), [board.works, year]);
-  const footholds = useMemo(() => [...surveyed, ...drawn.footholds], [surveyed, drawn]);
-  const raster = useMemo(
-    (): MapRaster | undefined => (ground.cover ? { kind: 'cover', values: ground.cover } : undefined),
-    [ground.cover],
+  const faint = useMemo(() => worksOnMap(preview, year, true), [preview, year]);
+  const footholds = useMemo(
+    () => [...surveyed, ...drawn.footholds, ...faint.footholds],
+    [surveyed, drawn, faint],
   );
-  const [onlyId] = draft.selected.size === 1 ? draft.selected : [];
-  const only = board.works.find((work) => work.id === onlyId);
-  const surveyedOne = draft.selected.size === 0 ? surveyed.find((f) => f.id === props.found?.id) : undefined;
+  const { surveyYear, years } = outlook;
+  const raster = useMemo((): MapRaster | undefined => {
+    if (show === 'gain' && gain) return gainRaster(gain);
+    if (show === 'closing' && look) return closingRaster(look, surveyYear, years);
+    return ground.cover ? { kind: 'cover', values: ground.cover } : undefined;
+  }, [show, gain, look, ground.cover, surveyYear, years]);
+  const contours = useMemo(
+    () => (show === 'closing' && look ? yearContours(look.lines) : undefined),
+    [show, look],
+  );
+  const chosen = draft.selected.size <= 2 ? board.works.filter(({ id }) => draft.selected.has(id)) : [];
+  const [only, ...others] = withoutPlanted(chosen);
+  const surveyedOne = draft.selected.size === 0 ? surveyed.find((f) => f.id === board.found?.id) : undefined;
   const selected = useMemo(
     () => (surveyedOne ? new Set([surveyedOne.id]) : draft.selected),
     [surveyedOne, draft.selected],
@@ -77,8 +91,8 @@ export function OptionMap(props: {
           <WorksTable
             works={draft.works}
             selected={draft.selected}
-            onSelect={props.onSelect}
-            onEdit={editable ? props.onEdit : undefined}
+            onSelect={board.select}
+            onEdit={editable ? board.edit : undefined}
             onRemove={editable ? props.onRemove : undefined}
           />
         )}
@@ -93,13 +107,20 @@ export function OptionMap(props: {
         ground={ground.capacity}
         footholds={footholds}
         areas={drawn.areas}
+        contours={contours}
         selected={selected}
         tool={board.mapTool}
         label={props.title}
-        summary={`Cover at the survey, with ${worksInWords(draft.works)}${
+        summary={`${raster ? shownWords[raster.kind === 'closing' ? 'closing' : raster.kind === 'share' ? 'gain' : 'cover'] : 'The site'}, with ${worksInWords(draft.works)}${
           surveyed.length > 0 ? ` and ${formatCounted(surveyed.length, 'surveyed mound')}` : ''
         }.`}
-        legendTitle={`Cover in ${site.outlook.surveyYear}, the survey`}
+        legendTitle={
+          raster?.kind === 'closing'
+            ? 'Year it closes, quick look'
+            : raster?.kind === 'share'
+              ? 'Gain of one more mound'
+              : `Cover in ${surveyYear}, the survey`
+        }
         legend={
           <>
             <span className="flex items-center gap-1.5">
@@ -120,11 +141,11 @@ export function OptionMap(props: {
           corner={board.corner}
           box={board.box}
         />
-        {only && !refused && (
+        {only && others.length === 0 && !refused && (
           <MapNote {...placeOf(only)}>
             <WorkNote
               work={only}
-              number={draft.works.findIndex((work) => work.id === onlyId) + 1}
+              number={draft.works.findIndex((work) => work.id === only.id) + 1}
               edit={editable ? { onMove: props.onMove, onRemove: () => props.onRemove(only.id) } : undefined}
             />
           </MapNote>
@@ -133,7 +154,7 @@ export function OptionMap(props: {
           <MapNote x={surveyedOne.x} y={surveyedOne.y}>
             <b className="block text-body leading-tight">Surveyed mound</b>
             <span className="block font-mono text-axis text-ink-2">{placeInWords(surveyedOne)}</span>
-            {props.found?.kept && (
+            {board.found?.kept && (
               <span role="alert" className="block border-l-[5px] border-danger pl-2">
                 It was there already at the survey and cannot be removed.
               </span>
@@ -145,7 +166,7 @@ export function OptionMap(props: {
             <span role="alert" className="block border-l-[5px] border-danger pl-2">
               <b className="text-danger">Not here.</b> {refused.problem}
             </span>
-            <WordButton lined onClick={props.onForget}>
+            <WordButton lined onClick={board.forget}>
               Understood
             </WordButton>
           </MapNote>

@@ -25,6 +25,8 @@ export function OptionMargin(props: {
   mayDraw: boolean;
   /** what is selected, above all else */
   selection: ReactNode;
+  /** what the drawing would cost and bring, and what could be added to it */
+  meters: ReactNode;
   /** `isNew`: it was made this moment */
   onChoose: (optionId: string, isNew?: boolean) => void;
 }) {
@@ -87,6 +89,7 @@ export function OptionMargin(props: {
           rowKey={({ kind, year }) => `${kind}${year}`}
         />
       )}
+      {props.meters}
       <p className="mt-4 text-note text-ink-2">
         Moving bivalves between water bodies can need a permit and a biosecurity check. Work between the tides
         needs tide, weather and mud precautions. Follow local codes and licensed practice.

@@ -1,24 +1,25 @@
+import { ProblemNotice } from '#app/components/notice.tsx';
 import { AreaSentence } from '#app/features/options/board/area-sentence.tsx';
-import type { AreaErrors } from '#app/features/options/board/area-pen.ts';
 import type { BoardPens } from '#app/features/options/board/board-pens.ts';
-import { isAreaTool, type BoardTool } from '#app/features/options/board/board-tools.ts';
+import { isAreaTool, isPattern, type PatternTool } from '#app/features/options/board/board-tools.ts';
 import { MoundBlanks } from '#app/features/options/board/mound-blanks.tsx';
+import { PatternBlanks } from '#app/features/options/board/pattern-sentence.tsx';
+import { PatternWords } from '#app/features/options/board/pattern-words.tsx';
 import { NumberBlank, Sentence } from '#app/features/options/board/sentence.tsx';
 import { SketchWords } from '#app/features/options/board/sketch-words.tsx';
-import type { Board } from '#app/features/options/board/use-board-tool.ts';
-import type { MoundErrors } from '#app/features/options/mound-pen.ts';
+import type { DrawingBoard } from '#app/features/options/board/use-board.ts';
+
+interface OptionSentenceProps {
+  readonly pens: BoardPens;
+  readonly board: DrawingBoard;
+  /** ISO 4217; undefined where no costs are set */
+  readonly currency: string | undefined;
+}
 
 /** What the tool in use does, as blanks in a sentence. */
-export function OptionSentence(props: {
-  tool: BoardTool;
-  pens: BoardPens;
-  board: Board;
-  errors: MoundErrors & AreaErrors;
-  missed: number;
-  onPens: (pens: BoardPens) => void;
-}) {
-  const { tool, pens, board, errors, missed, onPens } = props;
-  const setYear = (year: string) => onPens({ ...pens, year });
+export function OptionSentence(props: OptionSentenceProps) {
+  const { pens, board } = props;
+  const { tool, errors, missed, onPens } = board;
   if (isAreaTool(tool))
     return (
       <>
@@ -27,23 +28,18 @@ export function OptionSentence(props: {
           pen={pens.area}
           year={pens.year}
           onPen={(area) => onPens({ ...pens, area })}
-          onYear={setYear}
+          onYear={(year) => onPens({ ...pens, year })}
         />
         <SketchWords sketch={board.sketch} closed send={board.send} />
       </>
     );
+  if (isPattern(tool)) return <PatternSentence {...props} tool={tool} />;
   if (tool === 'mound')
     return (
       <Sentence errors={errors} missed={missed}>
         <span>A press places a mound</span>
         <MoundBlanks pen={pens.mound} errors={errors} onChange={(mound) => onPens({ ...pens, mound })} />
-        <span>m, in</span>
-        <NumberBlank
-          label="Year in which it is placed"
-          value={pens.year}
-          error={errors.year}
-          onChange={setYear}
-        />
+        <YearBlank {...props} />
       </Sentence>
     );
   return (
@@ -52,5 +48,63 @@ export function OptionSentence(props: {
         ? 'Drag a box around works, or press two of its corners.'
         : 'Press works to select them, with Shift several; drag them, or use the arrow keys; Delete removes them.'}
     </p>
+  );
+}
+
+function YearBlank({ pens, board }: OptionSentenceProps) {
+  return (
+    <>
+      <span>in</span>
+      <NumberBlank
+        label="Year in which it is placed"
+        value={pens.year}
+        error={board.errors.year}
+        onChange={(year) => board.onPens({ ...pens, year })}
+      />
+    </>
+  );
+}
+
+function PatternSentence(props: OptionSentenceProps & { readonly tool: PatternTool }) {
+  const { tool, pens, board, currency } = props;
+  const { errors, laying, missed, onPens } = board;
+  const pen = pens.patterns[tool];
+  return (
+    <>
+      <Sentence errors={errors} missed={missed}>
+        <PatternBlanks
+          {...{ tool, pen, errors, currency }}
+          onChange={(next) => onPens({ ...pens, patterns: { ...pens.patterns, [tool]: next } })}
+        />
+        <YearBlank {...props} />
+        {laying.ofMounds && (
+          <>
+            <span className="ml-2">Each</span>
+            <MoundBlanks pen={pens.mound} errors={errors} onChange={(mound) => onPens({ ...pens, mound })} />
+          </>
+        )}
+      </Sentence>
+      {(tool === 'line' || pen.region === 'outline') && (
+        <SketchWords sketch={board.sketch} closed={tool !== 'line'} send={board.send} />
+      )}
+      {laying.error && !laying.busy ? (
+        <ProblemNotice error={laying.error} title="The pattern could not be laid." />
+      ) : !laying.ready ? (
+        <p className="text-note text-ink-2">Patterns need the ground: habitat with its classes, and cover.</p>
+      ) : (
+        !laying.needsSketch &&
+        Object.keys(errors).length === 0 && (
+          <PatternWords
+            laid={laying.laid}
+            thing={laying.ofMounds ? 'mound' : 'clump'}
+            busy={laying.busy}
+            chance={laying.chance}
+            again={laying.again}
+            onPlace={laying.place}
+            onLayAgain={laying.layAgain}
+          />
+        )
+      )}
+    </>
   );
 }

@@ -15,6 +15,9 @@ export function OptionTools(props: {
   draft: OptionDraft;
   draw: (action: DraftAction) => void;
   asTable: boolean;
+  /** undefined where there is no quick look */
+  quickLook: boolean | undefined;
+  onQuickLook: (shown: boolean) => void;
   /** what the tool in use does, as blanks in a sentence */
   sentence: ReactNode;
   onTool: (tool: BoardTool) => void;
@@ -28,7 +31,7 @@ export function OptionTools(props: {
         {editable && (
           <>
             <ToolChoice tool={tool} onTool={props.onTool} />
-            <span className="flex items-center gap-x-2.5 sm:border-l sm:border-rule sm:pl-2.5">
+            <span className="flex items-center gap-x-2.5">
               <WordButton
                 pressed={props.snap}
                 title="Points keep to the cells. Key on the map: K"
@@ -60,12 +63,18 @@ export function OptionTools(props: {
               : 'Modellers, managers and admins draw options; you can look at them here.'}
           </span>
         )}
-        <WordButton
-          className="ml-auto"
-          lined
-          pressed={asTable || undefined}
-          onClick={() => props.onTable(!asTable)}
-        >
+        <span className="ml-auto" />
+        {props.quickLook !== undefined && !asTable && (
+          <WordButton
+            lined
+            pressed={props.quickLook}
+            title="Colour the map by the year in which the ground closes, by growth alone"
+            onClick={() => props.onQuickLook(!props.quickLook)}
+          >
+            Quick look
+          </WordButton>
+        )}
+        <WordButton lined pressed={asTable || undefined} onClick={() => props.onTable(!asTable)}>
           {asTable ? 'Read as a map' : 'Read as a table'}
         </WordButton>
       </div>

@@ -51,12 +51,23 @@ export const toolGroups: readonly ToolGroup[] = [
   {
     name: 'Mounds',
     symbol: 'flag',
-    tools: [{ tool: 'mound', label: 'one by one', letter: 'm', hint: 'A press places a mound' }],
+    tools: [
+      { tool: 'mound', label: 'one by one', letter: 'm', hint: 'A press places a mound' },
+      { tool: 'scattered', label: 'scattered', letter: 't', hint: 'At random, a distance apart' },
+      { tool: 'grid', label: 'grid', letter: 'g', hint: 'In rows and columns' },
+      { tool: 'groups', label: 'groups', letter: 'u', hint: 'Several around each of some middles' },
+      { tool: 'edge', label: 'along the edge', letter: 'e', hint: 'Beside what stands today' },
+      { tool: 'line', label: 'along a line', letter: 'l', hint: 'Along a line that you draw' },
+    ],
   },
   {
     name: 'Planting',
     symbol: 'planting',
-    tools: [{ tool: 'even', label: 'even cover', letter: 'c', hint: 'One cover all over an outline' }],
+    tools: [
+      { tool: 'clumped', label: 'clumped', letter: 'p', hint: 'Clumps in groups, inside an outline' },
+      { tool: 'dispersed', label: 'dispersed', letter: 'd', hint: 'Clumps apart, inside an outline' },
+      { tool: 'even', label: 'even cover', letter: 'c', hint: 'One cover all over an outline' },
+    ],
   },
   {
     name: 'Areas',

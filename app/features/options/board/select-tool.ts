@@ -9,6 +9,7 @@ import { placeOf } from '../works-words.ts';
 import { holdAt, pulled, withoutCorner, type Hold } from './corners.ts';
 import { movedWork, snappedToCorner, snappedToMiddle } from './move-works.ts';
 import { nextOnMap } from './find-works.ts';
+import { partnerOf, withoutPlanted, withPartners } from './planted-mounds.ts';
 
 /** What is held while it is dragged: works, a corner of an outline, or the far corner of a box. */
 export type Grip =
@@ -79,8 +80,10 @@ export function selectTool(context: SelectContext): MapTool {
     return [tx - x, ty - y];
   };
   const cornerAt = (at: MapPoint): GroundPoint => (snap ? snappedToCorner(grid, [at.x, at.y]) : [at.x, at.y]);
-  const moving = (id: string) =>
-    selected.has(id) ? works.filter((w) => selected.has(w.id)) : works.filter((w) => w.id === id);
+  const moving = (id: string) => {
+    const ids = selected.has(id) ? selected : withPartners([id], works);
+    return works.filter((work) => ids.has(work.id));
+  };
 
   return {
     cursor: boxes ? 'crosshair' : 'default',
@@ -99,7 +102,7 @@ export function selectTool(context: SelectContext): MapTool {
         return;
       }
       if (isWork(at.id)) {
-        const others = [...selected].filter((id) => id !== at.id);
+        const others = [...selected].filter((id) => id !== at.id && id !== partnerOf(at.id ?? ''));
         context.select(at.shift ? (selected.has(at.id) ? others : [...others, at.id]) : [at.id]);
       } else if (at.id !== undefined) context.onSurveyed(at.id, false);
       else if (!at.shift) context.select([]);
@@ -159,8 +162,9 @@ function keyed(
   }
   if (event.altKey) return false;
   if (letter === 'n') {
-    const from = context.shown ?? [...selected].at(-1);
-    const next = nextOnMap(works, context.surveyed, from, event.shiftKey ? -1 : 1);
+    const stops = withoutPlanted(works);
+    const from = context.shown ?? stops.findLast((work) => selected.has(work.id))?.id;
+    const next = nextOnMap(stops, context.surveyed, from, event.shiftKey ? -1 : 1);
     if (!next) return false;
     if (works.some((work) => work.id === next.id)) context.select([next.id]);
     else context.onSurveyed(next.id, false);

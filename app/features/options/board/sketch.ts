@@ -21,6 +21,8 @@ export type SketchEvent =
   | { type: 'finish' }
   | { type: 'hold'; hold: Hold | undefined }
   | { type: 'pull'; to: GroundPoint }
+  /** an outline or a line that was drawn before */
+  | { type: 'put'; points: readonly GroundPoint[] }
   | { type: 'clear' };
 
 export const noSketch: Sketch = { points: [], over: undefined, done: false };
@@ -62,6 +64,8 @@ export function sketchStep(sketch: Sketch, event: SketchEvent, closed: boolean):
       const index = held.kind === 'middle' ? held.index + 1 : held.index;
       return { ...sketch, points: pulled(points, held, event.to), held: { kind: 'corner', index } };
     }
+    case 'put':
+      return event.points.length > 0 ? { points: event.points, over: undefined, done: true } : noSketch;
     case 'clear':
       return noSketch;
   }

@@ -8,6 +8,7 @@ import { isAreaTool, isPattern, toolOfLetter, type BoardTool } from './board-too
 import { worksProblem, type RefusedPlace, type WorksGround } from './check-works.ts';
 import { pulled } from './corners.ts';
 import { worksInBox } from './find-works.ts';
+import { partnerOf, withPartners } from './planted-mounds.ts';
 import { copiedWorks, movedWork, snappedToMiddle } from './move-works.ts';
 import { reshapable, selectTool, withRing, type Grip } from './select-tool.ts';
 import { noSketch, sketchStep, type Sketch, type SketchEvent } from './sketch.ts';
@@ -27,10 +28,12 @@ export interface BoardInput {
   readonly onSnap: () => void;
   readonly onSurveyed: (id: string | undefined, kept: boolean) => void;
   readonly onRefused: (place: RefusedPlace | undefined) => void;
-  /** A mound at a place: what is typed above the map, or undefined where that is wrong. */
-  readonly moundAt: (x: number, y: number) => Work | undefined;
+  /** A mound at a place as it is typed above the map, with the clumps on it; undefined where that is wrong. */
+  readonly moundAt: (x: number, y: number) => readonly Work[] | undefined;
   /** The works of an outline, or undefined where what is typed is wrong. */
   readonly workOf: (ring: Ring) => Work | undefined;
+  /** the first point of an outline or a line was drawn */
+  readonly onSketch: () => void;
   /** Enter on a finished outline or line; whether something was placed. */
   readonly onPlace: () => boolean;
   /** Where things that were added stand in time, so that they can be shown. */
@@ -85,7 +88,7 @@ export function useBoardTool(input: BoardInput): Board {
   const select = (ids: Iterable<string>) => {
     input.onRefused(undefined);
     input.onSurveyed(undefined, false);
-    draw({ type: 'select', ids });
+    draw({ type: 'select', ids: withPartners(ids, works) });
   };
   const copy = () => {
     const mine = works.filter((work) => selected.has(work.id));
@@ -139,6 +142,7 @@ export function useBoardTool(input: BoardInput): Board {
   };
   const send = (event: SketchEvent) => {
     if (event.type === 'press' || event.type === 'clear') input.onRefused(undefined);
+    if (event.type === 'press' && sketch.points.length === 0) input.onSketch();
     // What cannot be placed stays open, with its points, so that it can be mended.
     if (finish(sketchStep(sketch, event, closed))) setSketch(event);
   };
@@ -160,7 +164,7 @@ export function useBoardTool(input: BoardInput): Board {
       if (at.id !== undefined) return selecting.press?.(at);
       const [x, y] = snap ? snappedToMiddle(grid, [at.x, at.y]) : [at.x, at.y];
       const mound = input.moundAt(x, y);
-      if (mound) add([mound]);
+      if (mound) add(mound);
     },
   };
   const sketches = editable && (isPattern(tool) || isAreaTool(tool));
@@ -210,7 +214,8 @@ function shownWorks(
 ): readonly Work[] {
   if (grip?.kind === 'works') {
     const [dx, dy] = grip.by;
-    const moves = (id: string) => (selected.has(grip.id) ? selected.has(id) : id === grip.id);
+    const moves = (id: string) =>
+      selected.has(grip.id) ? selected.has(id) : id === grip.id || id === partnerOf(grip.id);
     return dx === 0 && dy === 0 ? works : works.map((w) => (moves(w.id) ? movedWork(w, dx, dy) : w));
   }
   const shape = grip?.kind === 'corner' && grip.to ? reshapable(works, selected) : undefined;

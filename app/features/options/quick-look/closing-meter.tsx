@@ -1,0 +1,55 @@
+import type { ClosingSummary } from '#sim-core/plan/closing-tally.ts';
+import { quickLookLeavesOut } from '#sim-core/plan/quick-look.ts';
+import { formatArea } from '#app/lib/formats.ts';
+
+const shares = [
+  { key: 'half', words: 'half' },
+  { key: 'eighty', words: '80 %' },
+  { key: 'ninety', words: '90 %' },
+] as const;
+
+/** When half, 80 and 90 % of the ground would have closed, by growth alone, and how much sooner than under Wait. */
+export function ClosingMeter(props: {
+  summary: ClosingSummary | undefined;
+  wait: ClosingSummary | undefined;
+  lastYear: number;
+}) {
+  const { summary, wait, lastYear } = props;
+  return (
+    <section aria-label="Quick look" className="mt-3">
+      <div className="flex items-baseline justify-between gap-x-3">
+        <h2 className="text-body font-bold">
+          Expected closing{summary ? ` of ${formatArea(summary.closable)}` : ''}
+        </h2>
+        <span className="text-note text-ink-2">quick look, one future</span>
+      </div>
+      {summary ? (
+        <dl className="mt-0.5 grid grid-cols-3 gap-x-3" role="status">
+          {shares.map(({ key, words }) => (
+            <div key={key} className="flex flex-col-reverse justify-end">
+              <dt className="text-note">
+                {words}
+                <span className="block text-ink-2">{againstWait(summary[key], wait?.[key])}</span>
+              </dt>
+              <dd className="-ml-px text-[28px] leading-[1.1] font-light tracking-[-0.02em]">
+                {summary[key] ?? <span className="text-body">after {lastYear}</span>}
+              </dd>
+            </div>
+          ))}
+        </dl>
+      ) : (
+        <p role="status" className="busy-ticks py-2 text-note text-ink-2">
+          Working out when growth arrives
+        </p>
+      )}
+      <p className="mt-1.5 text-note text-ink-2">{quickLookLeavesOut}</p>
+    </section>
+  );
+}
+
+function againstWait(year: number | undefined, wait: number | undefined): string {
+  if (year === undefined) return '';
+  if (wait === undefined) return 'not by then under Wait';
+  const sooner = wait - year;
+  return sooner > 0 ? `${sooner} y before Wait` : 'as under Wait';
+}

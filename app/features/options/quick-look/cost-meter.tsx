@@ -1,0 +1,60 @@
+import type { Costs } from '#sim-core/plan/costs.ts';
+import { costPerHectare } from '#sim-core/plan/costs.ts';
+import { formatArea } from '#app/lib/formats.ts';
+import { Table } from '#app/components/table.tsx';
+import { BudgetRule } from './budget-rule.tsx';
+import { formatMoney } from './format-money.ts';
+
+/** What the works cost: in all against the budget, by year, and for each hectare that they bring back. */
+export function CostMeter(props: {
+  costs: Costs;
+  budget: number | null;
+  /** m² closed by the horizon with the works and without; undefined while not known */
+  closed: { works: number; wait: number } | undefined;
+  lastYear: number;
+}) {
+  const { costs, budget, closed, lastYear } = props;
+  const money = (amount: number) => formatMoney(amount, costs.currency);
+  const years = costs.byYear.filter((year) => year.total > 0);
+  const each = closed && costPerHectare(costs.total, closed.works, closed.wait);
+  return (
+    <section aria-label="Costs" className="mt-3">
+      <BudgetRule total={costs.total} budget={budget} currency={costs.currency} />
+      <p className="mt-1 text-note text-ink-2">
+        {costs.presentValue !== costs.total && `Worth ${money(costs.presentValue)} in today’s money. `}
+        {each !== undefined && closed
+          ? `${money(each)} a hectare: ${formatArea(closed.works - closed.wait)} close by ${lastYear} that would not under Wait.`
+          : closed && costs.total > 0
+            ? `By ${lastYear} no more ground closes than under Wait, so there is no cost per hectare.`
+            : ''}
+      </p>
+      {years.length > 0 && (
+        <details className="mt-1 text-note">
+          <summary className="w-max border-b border-rule">Costs by year</summary>
+          <Table
+            caption={`Costs by year, ${costs.currency}`}
+            className="mt-1"
+            columns={[
+              { key: 'year', head: 'year', cell: (row) => row.year },
+              {
+                key: 'works',
+                head: 'works',
+                number: true,
+                cell: (row) => money(row.mounds + row.clumps + row.fences),
+              },
+              {
+                key: 'rest',
+                head: 'visits, fixed',
+                number: true,
+                cell: (row) => money(row.visits + row.fixed),
+              },
+              { key: 'total', head: 'in all', number: true, cell: (row) => money(row.total) },
+            ]}
+            rows={years}
+            rowKey={(row) => String(row.year)}
+          />
+        </details>
+      )}
+    </section>
+  );
+}
