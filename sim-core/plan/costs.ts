@@ -65,14 +65,22 @@ export function amountsOf(action: Action, clumpsPerSquareMetre: number): Omit<Am
 
 /**
  * What the works cost: mounds, clumps and fence line by the piece in their year, visits in every year that has works, and
- * fixed costs every year to the horizon. Fences are paid for once, when they are put up.
+ * fixed costs every year to the horizon, as long as there are works at all. A fence is paid for once, when it is put up.
+ * Works dated outside the years that are looked at are left out.
  */
 export function costsOf(input: CostInput): Costs {
   const { works, unitCosts, surveyYear, years, clumpsPerSquareMetre } = input;
+  const paid = works.filter((work) => work.kind !== 'loss');
+  const ofYear = new Map<number, Action[]>();
+  for (const work of paid) {
+    const there = ofYear.get(work.year);
+    if (there) there.push(work);
+    else ofYear.set(work.year, [work]);
+  }
   const amounts = { mounds: 0, clumps: 0, fenceMetres: 0, visits: 0 };
   const byYear = Array.from({ length: years }, (_, i) => {
     const year = surveyYear + 1 + i;
-    const here = works.filter((work) => work.year === year && work.kind !== 'loss');
+    const here = ofYear.get(year) ?? [];
     const parts = { mounds: 0, clumps: 0, fences: 0, visits: 0, fixed: 0, total: 0 };
     for (const work of here) {
       const { mounds, clumps, fenceMetres } = amountsOf(work, clumpsPerSquareMetre);
@@ -86,7 +94,7 @@ export function costsOf(input: CostInput): Costs {
     const visits = here.length > 0 ? unitCosts.visitsPerYear : 0;
     amounts.visits += visits;
     parts.visits = visits * unitCosts.visit;
-    parts.fixed = works.some((work) => work.kind !== 'loss') ? unitCosts.perYear : 0;
+    parts.fixed = paid.length > 0 ? unitCosts.perYear : 0;
     parts.total = parts.mounds + parts.clumps + parts.fences + parts.visits + parts.fixed;
     return { year, ...parts, discounted: parts.total / (1 + unitCosts.discountRate) ** (i + 1) };
   });

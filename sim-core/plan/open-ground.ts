@@ -99,10 +99,13 @@ export function openGround(input: OpenGroundInput): OpenGround {
       }
     }
   }
-  const corner = (i: number): Point => [
-    originX + (left + (i % columns)) * cellSize,
-    originY - (top + Math.floor(i / columns)) * cellSize,
-  ];
+  /** North-western corner of a cell of the box. */
+  function corner(i: number): Point {
+    return [
+      originX + (left + (i % columns)) * cellSize,
+      originY - (top + Math.floor(i / columns)) * cellSize,
+    ];
+  }
   function shareInside(i: number): number {
     const [west, north] = corner(i);
     let hits = 0;

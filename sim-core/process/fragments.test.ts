@@ -103,6 +103,20 @@ test('as many break off as ρ Δt ΣC Δx² says, from where the cover is', () =
   expect(gained[1]).toBe(0);
 });
 
+test('cells have luck of their own, those that share a block of words too', () => {
+  const sites = new Uint32Array(256).fill(10_000, 1);
+  const [width, height] = [80, 40];
+  const thin = new Uint32Array(width * height).fill(1000);
+  const { map, clumps } = mapOf({ width, height, clumps: thin, sites });
+  scatterFragments({ fragmentRate: 5, fragmentDistance: 0.001 }, 0, map);
+  const pieces = Array.from(clumps, (n) => n - 1000);
+  const mean = total(pieces) / pieces.length;
+  const covariance = (other: number) =>
+    total(pieces.map((n, i) => (i % 4 ? 0 : (n - mean) * (pieces[i + other] - mean)))) / (pieces.length / 4);
+  // Of 800 pairs a correlation is within 4/√800 of none.
+  for (const other of [1, 2, 3]) expect(Math.abs(covariance(other) / covariance(0))).toBeLessThan(0.15);
+});
+
 test.each([
   ['reference', createReferenceKernel],
   ['shipping', createSimdKernel],

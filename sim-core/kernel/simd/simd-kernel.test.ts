@@ -19,7 +19,9 @@ describeFrontSpeeds('the shipping kernel', createSimdKernel);
 test.each([
   ['mean-field', '4091b6bb2efee48cae1616c0d19af77ae339e254c4785019afe6969762fe2915'],
   ['counts', '9e1dd9bac646c1942bf6fafb82115477e45517519d0b3220cf94a66449004310'],
-] as const)('keeps its bits (%s)', (mode, bits) => {
+  ['counts, with grazers', 'c55e9ebb28cf57afb7f4a24280eaa72827119d8f22f3dc39af3b5ee34910f826'],
+] as const)('keeps its bits (%s)', (what, bits) => {
+  const grazed = what.endsWith('grazers');
   const [width, height] = [150, 97];
   const cells = width * height;
   const layer = (factor: number, shift: number, low: number) =>
@@ -29,16 +31,19 @@ test.each([
     kernelSetup({
       width,
       height,
-      mode,
+      mode: what === 'mean-field' ? what : 'counts',
       vigour: layer(31, 7, 90),
       exposure: layer(57, 3, 0),
       refuge: layer(101, 9, 0),
       cover,
       clumps: Uint32Array.from(cover, (c) => Math.floor(c * 16)),
       rates: { backgroundLoss: 0.03, crowding: 0.4 },
+      grazers: grazed ? { rates: { initialGrazers: 30 }, variance: 6, fence: layer(13, 5, 0) } : undefined,
     }),
   );
   for (let i = 0; i < 12; i++) kernel.step(i, Math.round(((i * 37) % 11) - 6) / 2);
-  const state = new Uint8Array(kernel.cover.buffer, kernel.cover.byteOffset, kernel.cover.byteLength);
-  expect(createHash('sha256').update(state).digest('hex')).toBe(bits);
+  const hash = createHash('sha256');
+  for (const cells of [kernel.cover, kernel.grazers])
+    if (cells) hash.update(new Uint8Array(cells.buffer, cells.byteOffset, cells.byteLength));
+  expect(hash.digest('hex')).toBe(bits);
 });
