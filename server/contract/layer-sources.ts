@@ -1,35 +1,82 @@
-import type { LayerSource } from '#sim-core/spec/run-spec.ts';
-import { valueUnitScale, type Layer, type LayerPart } from './layers.ts';
-import { type Site } from './sites.ts';
+import type { Curve, LayerSource, LayerSources } from '#sim-core/spec/run-spec.ts';
+import type { Feature } from './features.ts';
+import { heightUnitScale, valueUnitScale, type Layer, type LayerPart } from './layers.ts';
+import type { Site } from './sites.ts';
 
 /** The layer that plays a part on a site. */
 export const layerOf = (site: Pick<Site, 'layers'>, part: LayerPart): Layer | undefined =>
   site.layers.find((layer) => layer.part === part);
 
 /**
- * What a site's layers are to the engine: capacity and vigour from the classes of `habitat`, cover and refuge by the
- * scale of their unit, each raster named by its hash. A layer that the site lacks is left out, but for cover, which no
- * run can be without: there, nothing stands.
+ * What a site's ground is to the engine; each raster is named by its hash.
+ *
+ * - capacity, vigour: what the class of `habitat` says, times the curve of elevation;
+ * - exposure: the highest of the layer `exposure` and the curve of elevation;
+ * - refuge: the highest of the layer `refuge`, surveyed mounds (discs) and surveyed areas;
+ * - fence: surveyed fences; cover: the layer `cover`, without which nothing stands.
+ *
+ * No data counts as 0 in every raster: ground without an elevation cannot hold the plant where capacity hangs on it.
  */
-export function layerSources(site: Pick<Site, 'layers'>) {
+export function layerSources(
+  site: Pick<Site, 'layers' | 'features' | 'elevationCurves'>,
+): Required<LayerSources> {
   const habitat = layerOf(site, 'habitat');
-  const ofClass = (of: 'capacity' | 'vigour'): LayerSource =>
-    habitat?.classes
+  const elevation = layerOf(site, 'elevation');
+  const { classes } = habitat ?? {};
+  const ofClass = (of: 'capacity' | 'vigour'): LayerSource | undefined =>
+    habitat && classes
       ? {
           layer: habitat.hash,
-          classes: Object.fromEntries(habitat.classes.map((row) => [String(row.value), row[of]])),
+          classes: Object.fromEntries(classes.map((row) => [String(row.value), row[of]])),
         }
-      : 1;
-  const shares = (part: LayerPart): LayerSource => {
+      : undefined;
+  const byHeight = (curve: Curve | null): LayerSource | undefined => {
+    if (!elevation || !curve) return undefined;
+    const scale = heightUnitScale[elevation.vertical?.unit ?? 'metre'];
+    return { layer: elevation.hash, ...(scale !== 1 && { scale }), curve };
+  };
+  const shares = (part: LayerPart): LayerSource | undefined => {
     const layer = layerOf(site, part);
-    return layer ? { layer: layer.hash, scale: valueUnitScale[layer.unit] } : 0;
+    return layer && { layer: layer.hash, scale: valueUnitScale[layer.unit] };
   };
+  const { capacity, vigour, exposure } = site.elevationCurves;
   return {
-    capacity: ofClass('capacity'),
-    vigour: ofClass('vigour'),
-    exposure: 0,
-    refuge: shares('refuge'),
-    fence: 0,
-    cover: shares('cover'),
+    capacity: product(ofClass('capacity'), byHeight(capacity)),
+    vigour: product(ofClass('vigour'), byHeight(vigour)),
+    exposure: highest(shares('exposure'), byHeight(exposure)),
+    refuge: highest(shares('refuge'), moundsOf(site.features), areasOf(site.features, 'refuge')),
+    fence: highest(areasOf(site.features, 'fence')),
+    cover: highest(shares('cover')),
   };
+}
+
+type MaySource = LayerSource | undefined;
+const given = (sources: MaySource[]) => sources.filter((source) => source !== undefined);
+
+function product(...sources: MaySource[]): LayerSource {
+  const [first, ...others] = given(sources);
+  return others.length > 0 ? { product: [first, ...others] } : (first ?? 1);
+}
+
+function highest(...sources: MaySource[]): LayerSource {
+  const [first, ...others] = given(sources);
+  return others.length > 0 ? { highest: [first, ...others] } : (first ?? 0);
+}
+
+/** Surveyed points that shelter, as mounds of an option would. */
+function moundsOf(features: readonly Feature[]): MaySource {
+  const mounds = features.flatMap(({ kind, shape, strength, halo }) =>
+    kind === 'refuge' && shape.shape === 'disc'
+      ? [{ x: shape.x, y: shape.y, radius: shape.radius, strength, halo }]
+      : [],
+  );
+  return mounds.length > 0 ? { mounds } : undefined;
+}
+
+/** Areas of a kind; of refuges, those that are no mounds. */
+function areasOf(features: readonly Feature[], of: 'refuge' | 'fence'): MaySource {
+  const areas = features.flatMap(({ kind, shape, strength }) =>
+    kind === of && (of === 'fence' || shape.shape === 'polygon') ? [{ area: shape, strength }] : [],
+  );
+  return areas.length > 0 ? { areas } : undefined;
 }

@@ -1,7 +1,7 @@
 import { layerOf, layerSources } from '#contract/layer-sources.ts';
 import { runActions, type WorkInput } from '#contract/works.ts';
 import { valueUnitScale } from '#contract/layers.ts';
-import { type Site } from '#contract/sites.ts';
+import type { Site } from '#contract/sites.ts';
 import { gridProblems } from '#sim-core/run/grid-problems.ts';
 import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
 import { runSpecSchema, runSpecVersion, type Mode, type RunSpec } from '#sim-core/spec/run-spec.ts';
@@ -65,7 +65,7 @@ function missingGround(site: Site): CompositionProblem[] {
     say('layers.capacity', 'No habitat class can hold the plant: give at least one a capacity above 0.');
   if (!layerOf(site, 'cover'))
     say('layers.cover', 'There is no cover layer, so nothing says what stands now.');
-  for (const part of ['cover', 'refuge'] as const) {
+  for (const part of ['cover', 'exposure', 'refuge'] as const) {
     const layer = layerOf(site, part);
     const scale = layer && valueUnitScale[layer.unit];
     if (layer && scale && (layer.maximum * scale > 1 + 1e-6 || layer.minimum * scale < -1e-6))
