@@ -12,7 +12,7 @@ export const mostOutlooks = 4;
 export const mostReplicates = 2000;
 
 /** What all runs of a comparison share: a RunSpec without what an option, an outlook or a replicate decides. */
-const commonSchema = z
+export const commonSchema = z
   .strictObject(runSpecFields)
   .omit({ replicate: true, droughtIndex: true, actions: true, reportYears: true });
 

@@ -8,7 +8,7 @@ import { createFrameCache } from './frame-cache.ts';
 import { keepPace } from './run-pace.ts';
 import { createRunManager, type LiveRun } from './run-manager.ts';
 import { runServer } from './run-server.ts';
-import { waitByClock } from './save-with-retry.ts';
+import { waitByClock } from '#app/lib/save-with-retry.ts';
 
 /** Bytes of frames that are kept at hand: all of a small site's run, a handful at 4,000 × 4,000 cells. */
 const frameBudget = 96 * 1024 * 1024;

@@ -3,7 +3,7 @@ import type { SeriesRow } from '#sim-core/spec/run-result.ts';
 import { errorText, type ProblemError } from '#app/lib/api-client.ts';
 import type { RunHandle } from '#app/workers/run-client.ts';
 import type { PackedLayers, RunInput, RunListener, RunProgress } from '#app/workers/run-loop.ts';
-import { saveWithRetry } from './save-with-retry.ts';
+import { saveWithRetry } from '#app/lib/save-with-retry.ts';
 import type { RunServer } from './run-server.ts';
 
 /**

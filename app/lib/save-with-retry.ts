@@ -1,4 +1,4 @@
-import { ProblemError } from '#app/lib/api-client.ts';
+import { ProblemError } from './api-client.ts';
 
 export interface RetryParts {
   /** Waits so many milliseconds; rejects when the signal is aborted. */

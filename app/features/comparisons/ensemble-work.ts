@@ -1,0 +1,51 @@
+import { mostOutlooks, replicateSpec, type Comparison, type ComparisonPlan } from '#contract/comparisons.ts';
+import type { RunSpec } from '#sim-core/spec/run-spec.ts';
+import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
+
+/** One replicate that is to be run. */
+export interface Task {
+  readonly option: number;
+  readonly outlook: number;
+  readonly replicate: number;
+}
+
+/** Replicates that are known of each ensemble, `[option][outlook]`, each by its number. */
+export type KnownRecords = readonly (readonly ReadonlyMap<number, ReplicateRecord>[])[];
+
+/** Key of an ensemble among those of its comparison. */
+export const ensembleKey = (option: number, outlook: number): string =>
+  String(option * mostOutlooks + outlook);
+
+/**
+ * What is left to run, so that pairs are complete as early as may be: replicate by replicate, all options of one before
+ * the next. A replicate whose record is known but which the maps lack is run again.
+ *
+ * @param inMaps numbers of the replicates that the maps of an ensemble hold
+ */
+export function tasksLeft(
+  plan: ComparisonPlan,
+  known: KnownRecords,
+  inMaps: (option: number, outlook: number) => ReadonlySet<number>,
+): Task[] {
+  const tasks: Task[] = [];
+  for (let replicate = 0; replicate < plan.replicates; replicate++)
+    plan.outlooks.forEach((_, outlook) => {
+      plan.options.forEach((__, option) => {
+        if (!known[option][outlook].has(replicate) || !inMaps(option, outlook).has(replicate))
+          tasks.push({ option, outlook, replicate });
+      });
+    });
+  return tasks;
+}
+
+/** The run of a task. */
+export const specOf = ({ plan }: Pick<Comparison, 'plan'>, task: Task): RunSpec =>
+  replicateSpec(plan, task.option, task.outlook, task.replicate);
+
+/** Numbers of the replicates that every ensemble has: those that make pairs. Ascending. */
+export function sharedReplicates(known: KnownRecords): number[] {
+  const [first, ...others] = known.flat();
+  return [...(first?.keys() ?? [])]
+    .filter((replicate) => others.every((records) => records.has(replicate)))
+    .sort((a, b) => a - b);
+}
