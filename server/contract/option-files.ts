@@ -9,6 +9,9 @@ const number = z.coerce.number();
 /** The largest file with works that can be read, bytes. */
 export const largestWorksFile = 16 * 1024 * 1024;
 
+/** Points of one hand-out to a crew: more is no list for people, and slow in a hand-held receiver. */
+export const mostCrewPoints = 5000;
+
 /** `docs/option-geojson.md` says what stands in it. */
 export const exportGeoJson = endpoint({
   method: 'GET',

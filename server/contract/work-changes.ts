@@ -38,3 +38,32 @@ export function workChanges(before: readonly Work[], after: readonly Work[]): Wo
 /** The same works in the same order. */
 export const sameWorks = (a: readonly Work[], b: readonly Work[]): boolean =>
   a === b || (a.length === b.length && a.every((work, i) => sameWork(work, b[i])));
+
+const kindWords: Record<Work['kind'], readonly [one: string, many: string]> = {
+  mound: ['mound', 'mounds'],
+  planting: ['planting', 'plantings'],
+  clumps: ['clump', 'clumps'],
+  fence: ['fence', 'fences'],
+  loss: ['one-off loss', 'one-off losses'],
+};
+
+/** `12 mounds`, `5 clumps`: one entry for each kind, clumps one by one. */
+export function countsInWords(works: readonly Work[]): string[] {
+  const byKind = new Map<Work['kind'], number>();
+  for (const work of works) {
+    const count = work.kind === 'clumps' ? work.points.length * work.each : 1;
+    byKind.set(work.kind, (byKind.get(work.kind) ?? 0) + count);
+  }
+  return [...byKind].map(([kind, n]) => `${n} ${kindWords[kind][n === 1 ? 0 : 1]}`);
+}
+
+/** `2 mounds added, 1 mound changed`: how the works came from others; empty when they are the same. */
+export function changesInWords(before: readonly Work[], after: readonly Work[]): string {
+  const { added, removed, changed } = workChanges(before, after);
+  const done = (works: readonly Work[], deed: string) =>
+    countsInWords(works).map((words) => `${words} ${deed}`);
+  const words = [...done(added, 'added'), ...done(changed, 'changed'), ...done(removed, 'removed')].join(
+    ', ',
+  );
+  return words || (sameWorks(before, after) ? '' : 'works put in another order');
+}

@@ -7,7 +7,7 @@ import { forgetDraft } from './draft-storage.ts';
 import { optionsQuery } from './list-options.ts';
 
 /** Puts an option into the list that was fetched, at the end when it is new; the site's count is asked for again. */
-function keepOption(queryClient: QueryClient, option: Option): void {
+export function keepOption(queryClient: QueryClient, option: Option): void {
   queryClient.setQueryData(optionsQuery(option.siteId).queryKey, (options: Option[] | undefined) =>
     options?.some(({ id }) => id === option.id)
       ? options.map((other) => (other.id === option.id ? option : other))

@@ -35,7 +35,9 @@ export type DraftAction =
   /** the server took this */
   | { type: 'saved'; revision: number; state: DraftState }
   /** what somebody else saved replaces the drawing; undo brings the drawing back */
-  | { type: 'take'; option: Pick<Option, 'works' | 'sets' | 'revision'> };
+  | { type: 'take'; option: Pick<Option, 'works' | 'sets' | 'revision'> }
+  /** the drawing and what somebody else saved, put together on what they saved; undo brings the drawing back */
+  | { type: 'merge'; option: Pick<Option, 'works' | 'sets' | 'revision'>; state: DraftState };
 
 /** Steps that can be taken back. */
 const longestPast = 200;
@@ -113,6 +115,10 @@ export function optionDraft(draft: OptionDraft, action: DraftAction): OptionDraf
       const { works, sets, revision } = action.option;
       const theirs = { works, sets };
       return stillThere({ ...drawn(draft, theirs), saved: theirs, revision });
+    }
+    case 'merge': {
+      const { works, sets, revision } = action.option;
+      return stillThere({ ...drawn(draft, action.state), saved: { works, sets }, revision });
     }
   }
 }

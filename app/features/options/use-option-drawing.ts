@@ -15,6 +15,9 @@ import {
   type OptionDraft,
 } from './option-draft.ts';
 
+/** What an option is called, what is noted of it, and whether it is put away. */
+export type OptionWords = { name?: string; note?: string; archived?: boolean };
+
 export interface OptionDrawing {
   readonly draft: OptionDraft;
   readonly draw: (action: DraftAction) => void;
@@ -26,10 +29,13 @@ export interface OptionDrawing {
   readonly error: unknown;
   /** @returns whether the drawing is saved now */
   readonly save: () => Promise<boolean>;
-  readonly rename: (name: string) => Promise<void>;
+  /** Changes what is said of the option, and leaves the drawing as it is. */
+  readonly describe: (words: OptionWords) => Promise<void>;
   /** Saves the drawing as another option and gives this one back as it was saved. */
   readonly keepAsCopy: () => Promise<Option | undefined>;
   readonly takeTheirs: () => void;
+  /** Goes on with both put together, on what they saved. */
+  readonly merge: (state: DraftState) => void;
 }
 
 /** What the contract takes: lists of its own. */
@@ -52,12 +58,12 @@ export function useOptionDrawing(option: Option): OptionDrawing {
   useWarnBeforeClosing(unsaved);
 
   const isConflict = saveOption.error instanceof ProblemError && saveOption.error.code === 'conflict';
-  const send = async (state: DraftState, name?: string) => {
+  const send = async (state: DraftState, words?: OptionWords) => {
     try {
       const saved = await saveOption.mutateAsync({
         optionId: option.id,
         revision: draft.revision,
-        ...(name === undefined ? bodyOf(state) : { name }),
+        ...(words ?? bodyOf(state)),
       });
       draw({ type: 'saved', revision: saved.revision, state });
     } catch (error) {
@@ -78,7 +84,7 @@ export function useOptionDrawing(option: Option): OptionDrawing {
         () => true,
         () => false,
       ),
-    rename: (name) => send(draft.saved, name),
+    describe: (words) => send(draft.saved, words),
     keepAsCopy: async () => {
       try {
         const copy = await copyOption.mutateAsync({
@@ -94,6 +100,10 @@ export function useOptionDrawing(option: Option): OptionDrawing {
     takeTheirs: () => {
       saveOption.reset();
       draw({ type: 'take', option });
+    },
+    merge: (state) => {
+      saveOption.reset();
+      draw({ type: 'merge', option, state });
     },
   };
 }

@@ -161,7 +161,7 @@ export function OptionBoard(props: {
       }
       margin={
         <OptionMargin
-          {...{ drawing, option, mayDraw, onChoose }}
+          {...{ drawing, option, ground, mayDraw, onChoose }}
           options={props.options}
           selection={
             chosen.length > 0 && (

@@ -5,7 +5,7 @@ import type { Work } from '#contract/works.ts';
 import { costsOf } from '#sim-core/plan/costs.ts';
 import type { ClosingSummary } from '#sim-core/plan/closing-tally.ts';
 import { ProblemNotice } from '#app/components/notice.tsx';
-import { costsQuery } from '#app/features/options/get-costs.ts';
+import { costsQuery } from '#app/features/options/costs/site-costs.ts';
 import { ClosingMeter } from '#app/features/options/quick-look/closing-meter.tsx';
 import { CostMeter } from '#app/features/options/quick-look/cost-meter.tsx';
 import type { QuickLookView } from '#app/features/options/quick-look/use-quick-look.ts';

@@ -59,7 +59,9 @@ export function OptionTools(props: {
         {!editable && (
           <span className="text-[13.5px] text-ink-2">
             {props.mayDraw
-              ? `${option.name} stays as it is: it has no works. Add an option to draw on.`
+              ? option.archived
+                ? `${option.name} is in the archive. Bring it back (More) or copy it to draw on it.`
+                : `${option.name} stays as it is: it has no works. Add an option to draw on.`
               : 'Modellers, managers and admins draw options; you can look at them here.'}
           </span>
         )}

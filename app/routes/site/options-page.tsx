@@ -27,7 +27,9 @@ export function Page() {
       <SitePage step="options" map={<div className="size-full" />} margin={<Waiting options={options} />} />
     );
   const asked = search.get('option');
-  const option = options.data.find(({ id }) => id === asked) ?? options.data[1] ?? options.data[0];
+  const [wait, ...others] = options.data;
+  const option =
+    options.data.find(({ id }) => id === asked) ?? others.find(({ archived }) => !archived) ?? wait;
   return (
     <OptionBoard
       key={option.id}

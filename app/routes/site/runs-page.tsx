@@ -64,7 +64,7 @@ export function Page() {
           <StartForm
             key={startId ?? 'first'}
             {...{ site, startId }}
-            options={options.data}
+            options={options.data.filter(({ archived, id }) => !archived || id === startId)}
             waitRun={listed.find(({ optionId, status }) => status === 'finished' && optionId === waitId)}
             names={listed.map(({ name }) => name)}
             busy={register.isPending}

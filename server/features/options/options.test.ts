@@ -99,7 +99,11 @@ describe('options', () => {
   it('can be put in the archive, where nobody draws on them, and brought back', async () => {
     const { id } = await make('Put away');
     const patch = (body: object) => team.agents.manager.patch(`${path}/${id}`).send(body);
+    const counted = async () =>
+      ((await team.agents.manager.get(`/api/sites/${site.id}`)).body as Site).options;
+    const before = await counted();
     expect((await patch({ revision: 1, archived: true }).expect(200)).body).toMatchObject({ archived: true });
+    expect(await counted()).toBe(before - 1);
     expect((await patch({ revision: 2, works: [] }).expect(409)).body.detail).toContain('is in the archive');
     const back = await patch({ revision: 2, archived: false, works: [] }).expect(200);
     expect(back.body).toMatchObject({ archived: false, works: [], revision: 3 });

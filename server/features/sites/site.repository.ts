@@ -67,6 +67,7 @@ export async function deleteSiteRows(manager: Manager, id: string): Promise<stri
 
 export interface SiteCounts {
   parts: string[];
+  /** without those in the archive */
   options: number;
   runs: number;
 }
@@ -103,6 +104,8 @@ const countBySite = (
     .createQueryBuilder(entity.options.name, 'row')
     .select('row.siteId', 'siteId')
     .addSelect('COUNT(*)', 'count')
-    .where('row.siteId IN (:...siteIds)', { siteIds: siteIds.length ? siteIds : [''] })
+    .where(`row.siteId IN (:...siteIds)${entity === OptionEntity ? ' AND row.archived = 0' : ''}`, {
+      siteIds: siteIds.length ? siteIds : [''],
+    })
     .groupBy('row.siteId')
     .getRawMany<{ siteId: string; count: number }>();

@@ -1,8 +1,9 @@
 import { expect, it } from 'vitest';
+import { mostCrewPoints } from '#contract/option-files.ts';
 import type { Work } from '#contract/works.ts';
 import { crewCsv } from './crew-csv.ts';
 import { crewGpx, type DegreePoint } from './crew-gpx.ts';
-import { crewPoints, mostCrewPoints } from './crew-stops.ts';
+import { crewPoints } from './crew-stops.ts';
 
 const mound = (id: string, x: number, more: Partial<Work> = {}) =>
   ({ id, kind: 'mound', year: 2027, x, y: 0, radius: 1.5, strength: 1, halo: 0, ...more }) as Work;

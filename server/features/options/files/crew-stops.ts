@@ -1,3 +1,4 @@
+import { mostCrewPoints } from '#contract/option-files.ts';
 import type { Work } from '#contract/works.ts';
 import { ProblemError } from '#server/middleware/problem-error.ts';
 import type { Point } from './place-projection.ts';
@@ -14,9 +15,6 @@ export interface CrewPoint {
   /** in the site's CRS, m */
   readonly place: Point;
 }
-
-/** Points of one hand-out: more is no list for a crew, and slow in a hand-held receiver. */
-export const mostCrewPoints = 5000;
 
 /** One stop of the round: a point, or the corners of an outline one after the other. */
 interface Stop {
