@@ -9,6 +9,7 @@ import * as options from '#contract/options.ts';
 import * as people from '#contract/people.ts';
 import * as runs from '#contract/runs.ts';
 import * as sites from '#contract/sites.ts';
+import * as uploads from '#contract/uploads.ts';
 import { allRoutes } from '#server/routes.ts';
 import { makeAccessFixture, type AccessFixture } from '#server/testing/access-fixture.ts';
 import { testServer, type TestServer } from '#server/testing/test-server.ts';
@@ -49,6 +50,17 @@ const expected: Record<string, string> = {
   'GET /api/teams/:teamId/outbox': 'admin',
   'GET /api/teams/:teamId/outbox/:messageId': 'admin',
   'GET /api/teams/:teamId/outbox/:messageId/message.eml': 'admin',
+
+  'GET /api/teams/:teamId/uploads': everyRole,
+  'POST /api/teams/:teamId/uploads': modellers,
+  'GET /api/teams/:teamId/uploads/:uploadId': everyRole,
+  'GET /api/teams/:teamId/uploads/:uploadId/thumbnail': everyRole,
+  'PUT /api/teams/:teamId/uploads/:uploadId/choices': modellers,
+  'POST /api/teams/:teamId/uploads/:uploadId/place': modellers,
+  'POST /api/teams/:teamId/uploads/:uploadId/site': modellers,
+  'POST /api/teams/:teamId/uploads/:uploadId/cancel': modellers,
+  'POST /api/teams/:teamId/uploads/:uploadId/retry': modellers,
+  'DELETE /api/teams/:teamId/uploads/:uploadId': modellers,
 
   'GET /api/teams/:teamId/sites': everyRole,
   'POST /api/teams/:teamId/sites': modellers,
@@ -133,7 +145,7 @@ const isEndpoint = (value: unknown): value is Endpoint =>
   typeof value === 'object' && value !== null && 'method' in value && 'path' in value && 'reply' in value;
 /** Endpoints that the contract announces and no route answers yet. */
 const announced = /put-back|feature/;
-const contract = [people, sites, ground, options, optionFiles, costs, runs, comparisons]
+const contract = [people, sites, ground, uploads, options, optionFiles, costs, runs, comparisons]
   .flatMap((module) => Object.values<unknown>({ ...module }))
   .filter(isEndpoint)
   .filter(({ path }) => !announced.test(path));

@@ -4,6 +4,7 @@ import { ConfigError, readConfig } from './config.ts';
 import { loadDemo } from './demo/load-demo.ts';
 import { prepareFirstStart } from './first-start.ts';
 import { openDemoAccounts } from './people/session-view.repository.ts';
+import { resumeWork } from './resume-work.ts';
 import { createServices, type Services } from './services.ts';
 
 const say = (text: string) => process.stdout.write(`${text}\n`);
@@ -27,6 +28,7 @@ async function main(): Promise<void> {
   const services = await createServices(config);
   const { demo, setupLink } = await prepareFirstStart(services);
   if (demo) await loadDemo(services);
+  await resumeWork(services);
   const server = createApp(services).listen(config.port, config.host);
   await new Promise<void>((resolve, reject) => {
     server.once('listening', resolve).once('error', reject);

@@ -6,6 +6,7 @@ import { openDatabase, type Database } from './database/open-database.ts';
 import { createScopeLookup } from './database/scope-lookup.ts';
 import { openBlobStore, type BlobStore } from './files/blob-store.ts';
 import { sweepBlobs } from './files/stored-files.ts';
+import { createBackground, type Background } from './jobs/background.ts';
 import { createRasterPool, type RasterPool } from './jobs/raster-pool.ts';
 import { createMail, type Mail } from './mail/mail.ts';
 import type { ScopeLookup } from './middleware/access.ts';
@@ -29,6 +30,9 @@ export interface Services {
   blobs: BlobStore;
   /** heavy work on rasters, off the thread that answers requests */
   rasters: RasterPool;
+  /** long work that no request waits for, with a worker of its own, so that exports do not queue behind it */
+  background: Background;
+  backgroundRasters: RasterPool;
   /** waits for work in the background, then closes the database */
   close(): Promise<void>;
 }
@@ -44,6 +48,8 @@ export async function createServices(
   const { dataSource, write } = database;
   const blobs = await openBlobStore(config.dataDir);
   const rasters = createRasterPool();
+  const background = createBackground(log);
+  const backgroundRasters = createRasterPool();
   await sweepBlobs({ write, blobs });
   const mail = createMail({ config, write, clock, log });
   return {
@@ -58,7 +64,11 @@ export async function createServices(
     scope: createScopeLookup(dataSource),
     blobs,
     rasters,
+    background,
+    backgroundRasters,
     async close() {
+      await background.close();
+      await backgroundRasters.close();
       await mail.idle();
       await rasters.close();
       await database.close();

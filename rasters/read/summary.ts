@@ -15,7 +15,8 @@ export interface RasterSummary {
 }
 
 export const histogramBins = 64;
-const mostClasses = 256;
+/** Beyond so many different whole numbers they are no classes. */
+export const mostClasses = 256;
 
 /** Summarises the valid, finite cells of a raster; `readRaster` has made sure that there is a valid one. */
 export function summarise({ values, noData, dataType }: Raster): RasterSummary {
@@ -53,7 +54,7 @@ export function summarise({ values, noData, dataType }: Raster): RasterSummary {
  * A guess that the page shows and people can correct: whole numbers 0 and 1 are presence, up to 100 per cent, beyond
  * that 8 bits; with a fractional part up to 1 a share, beyond that per cent.
  */
-function guessUnit(floating: boolean, minimum: number, maximum: number): RasterSummary['unit'] {
+export function guessUnit(floating: boolean, minimum: number, maximum: number): RasterSummary['unit'] {
   if (minimum < 0) return 'share';
   if (maximum <= 1) return floating ? 'share' : 'presence';
   if (maximum <= 100) return 'percent';

@@ -6,7 +6,8 @@ import { fromArrayBuffer } from 'geotiff';
 import { afterAll, describe, expect, it } from 'vitest';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { readRaster } from '#rasters/read/read-raster.ts';
-import { encodeGeoTiff, type WritableValues } from './geotiff.ts';
+import type { CellValues } from '#sim-core/grid/ground.ts';
+import { encodeGeoTiff } from './geotiff.ts';
 
 const grid: Grid = {
   width: 301,
@@ -22,8 +23,32 @@ const content = {
   int16: Int16Array.from({ length: cells }, (_, i) => (i % 7 === 0 ? -32_768 : 2027 + (i % 33))),
   uint16: Uint16Array.from({ length: cells }, (_, i) => (i * 31) & 0xffff),
   float32: Float32Array.from({ length: cells }, (_, i) => (i % 11 === 0 ? NaN : Math.sin(i) / 2 + 0.5)),
-} satisfies Record<string, WritableValues>;
-const noData = { uint8: 255, int16: -32_768, uint16: undefined, float32: NaN };
+  int8: Int8Array.from({ length: cells }, (_, i) => (i % 251) - 125),
+  int32: Int32Array.from({ length: cells }, (_, i) => (i % 7 === 0 ? -2_147_483_648 : i * 25_000 - 9)),
+  uint32: Uint32Array.from({ length: cells }, (_, i) => i * 50_000),
+  float64: Float64Array.from({ length: cells }, (_, i) => (i % 11 === 0 ? NaN : Math.sin(i) * 1e7)),
+} satisfies Record<string, CellValues>;
+const noData = {
+  uint8: 255,
+  int16: -32_768,
+  uint16: undefined,
+  float32: NaN,
+  int8: -125,
+  int32: -2_147_483_648,
+  uint32: undefined,
+  float64: NaN,
+};
+/** GDAL before 3.7 knows signed bytes by a note beside the type alone. */
+const gdalTypes: Record<keyof typeof content, string[]> = {
+  uint8: ['Byte'],
+  int8: ['Int8', 'Byte'],
+  uint16: ['UInt16'],
+  int16: ['Int16'],
+  uint32: ['UInt32'],
+  int32: ['Int32'],
+  float32: ['Float32'],
+  float64: ['Float64'],
+};
 const cases = (['strips', 'tiles'] as const).flatMap((blocks) =>
   (Object.keys(content) as (keyof typeof content)[]).map((type) => ({ blocks, type })),
 );
@@ -54,7 +79,7 @@ describe.each(cases)('$type in $blocks', ({ blocks, type }) => {
 
   it('is read alike by geotiff.js', async () => {
     const image = await (await fromArrayBuffer(file.buffer as ArrayBuffer)).getImage();
-    const [band] = (await image.readRasters()) as unknown as WritableValues[];
+    const [band] = (await image.readRasters()) as unknown as CellValues[];
     expect(band.constructor).toBe(content[type].constructor);
     expect(same(band, content[type])).toBe(true);
     expect(image.getOrigin().slice(0, 2)).toEqual([412_200, 5_301_750]);
@@ -114,7 +139,7 @@ describe.skipIf(!gdal)('GDAL (skipped where gdalinfo is not installed)', () => {
               i ? Math.min(n, 263) : n,
             ),
       );
-      expect(band.type).toBe({ uint8: 'Byte', int16: 'Int16', uint16: 'UInt16', float32: 'Float32' }[type]);
+      expect(gdalTypes[type]).toContain(band.type);
       expect(band.description).toBe('cover <1>');
       expect(band.unit).toBe('share');
       expect(band.noDataValue).toEqual(Number.isNaN(noData[type]) ? 'NaN' : noData[type]);

@@ -1,18 +1,16 @@
 import { zlibSync } from 'fflate';
+import type { CellValues } from '#sim-core/grid/ground.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { differenceFloats } from './difference-floats.ts';
 import { layOutTiff, type TiffField } from './tiff-file.ts';
 
-/** The number types that exports need. */
-export type WritableValues = Uint8Array | Int16Array | Uint16Array | Float32Array;
-
 export interface GeoTiffContent {
   readonly grid: Grid;
   /** width × height values, row-major from the north-west */
-  readonly values: WritableValues;
+  readonly values: CellValues;
   /** name of the CRS for the citation key, ASCII; left out otherwise */
   readonly crsName?: string;
-  /** value that means no data; NaN for a Float32Array whose missing cells are NaN */
+  /** value that means no data; NaN for floats whose missing cells are NaN */
   readonly noData?: number;
   /** what the band holds, e.g. `cover 2031` */
   readonly bandName?: string;
@@ -75,8 +73,10 @@ export function encodeGeoTiff(
   );
 }
 
-const sampleFormat = (values: WritableValues): number =>
-  values instanceof Float32Array ? 3 : values instanceof Int16Array ? 2 : 1;
+const sampleFormat = (values: CellValues): number => {
+  if (values instanceof Float32Array || values instanceof Float64Array) return 3;
+  return values instanceof Int8Array || values instanceof Int16Array || values instanceof Int32Array ? 2 : 1;
+};
 
 function packBlocks(
   { grid: { width, height }, values, noData = 0 }: GeoTiffContent,
@@ -90,7 +90,7 @@ function packBlocks(
       const rows = Math.min(blockHeight, height - top);
       const columns = Math.min(blockWidth, width - left);
       // A tile at the edge is as large as any other; a last strip holds its own rows alone.
-      const block = values.slice(0, 0).constructor as new (length: number) => WritableValues;
+      const block = values.slice(0, 0).constructor as new (length: number) => CellValues;
       const cells = new block(blockWidth * (tiled ? blockHeight : rows));
       if (columns < blockWidth || (tiled && rows < blockHeight)) cells.fill(noData);
       for (let row = 0; row < rows; row++) {
@@ -107,7 +107,7 @@ function packBlocks(
   return packed;
 }
 
-function littleEndianBytes(cells: WritableValues): Uint8Array {
+function littleEndianBytes(cells: CellValues): Uint8Array {
   const bytes = new Uint8Array(cells.buffer, cells.byteOffset, cells.byteLength);
   if (new Uint8Array(Uint16Array.of(1).buffer)[0] === 1 || cells.BYTES_PER_ELEMENT === 1) return bytes;
   for (let start = 0; start < bytes.length; start += cells.BYTES_PER_ELEMENT)

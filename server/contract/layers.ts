@@ -102,16 +102,10 @@ export const resamplingMethods = ['copy', 'nearest', 'bilinear', 'area-weighted'
 export const resamplingMethodSchema = z.enum(resamplingMethods);
 export type ResamplingMethod = z.infer<typeof resamplingMethodSchema>;
 
-/** The file that a layer was made from, as it came. */
-export const layerSourceFileSchema = z.object({
-  fileName: z.string(),
-  hash: sha256,
-  bytes: z.number().int(),
-  uploadedAt: instant,
-  uploadedBy: z.string(),
+/** What the file is that a layer was made from, and which of its bands. */
+export const storedSourceSchema = z.object({
   crsName: z.string(),
-  /** null where the CRS has no EPSG code */
-  epsg: z.number().int().nullable(),
+  epsg: z.number().int(),
   width: z.number().int(),
   height: z.number().int(),
   /** sides of a cell in the unit of the CRS */
@@ -123,6 +117,16 @@ export const layerSourceFileSchema = z.object({
   /** value = stored number × scale + offset, as the file says */
   scale: z.number(),
   offset: z.number(),
+});
+export type StoredSource = z.infer<typeof storedSourceSchema>;
+
+/** The file that a layer was made from, as it came. */
+export const layerSourceFileSchema = storedSourceSchema.extend({
+  fileName: z.string(),
+  hash: sha256,
+  bytes: z.number().int(),
+  uploadedAt: instant,
+  uploadedBy: z.string(),
 });
 export type LayerSourceFile = z.infer<typeof layerSourceFileSchema>;
 

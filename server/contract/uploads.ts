@@ -13,8 +13,7 @@ import { problemSchema } from './problem.ts';
 import { siteSchema } from './sites.ts';
 
 const crsSchema = z.object({
-  /** null where the file spells out a CRS that has no known code */
-  epsg: z.number().int().nullable(),
+  epsg: z.number().int(),
   name: z.string(),
   kind: z.enum(['projected', 'geographic']),
   unit: z.enum(['metre', 'foot', 'us-foot', 'degree', 'other']),
@@ -49,15 +48,19 @@ export const rasterDescriptionSchema = z.object({
   cellHeight: z.number(),
   /** sides of a cell on the ground at the raster's centre, m */
   cellMetres: z.object({ width: z.number(), height: z.number() }),
+  /** whether lengths in the CRS are those on the ground, within 2 % */
+  metresTrue: z.boolean(),
   /** bounding box in degrees on WGS 84 */
   lonLat: z.object({ west: z.number(), south: z.number(), east: z.number(), north: z.number() }).nullable(),
   southUp: z.boolean(),
   pixelIsPoint: z.boolean(),
-  compression: z.string(),
+  compression: z.enum(['none', 'lzw', 'deflate', 'oldDeflate', 'packBits', 'lerc', 'zstd']),
   tiled: z.boolean(),
   bigTiff: z.boolean(),
   overviews: z.number().int(),
 });
+
+export type RasterDescription = z.infer<typeof rasterDescriptionSchema>;
 
 const cellShareSchema = z.object({ cells: z.number().int(), share: z.number() });
 
@@ -89,15 +92,17 @@ export const alignmentPlanSchema = z.object({
   padded: cellShareSchema,
   scaling: z.object({ scale: z.number(), offset: z.number() }).nullable(),
   /** what people should know before they accept it, in whole sentences */
-  cautions: z.array(z.object({ code: z.string(), text: z.string() })),
+  cautions: z.array(z.object({ code: z.string(), text: z.string() })).readonly(),
 });
+
+export type AlignmentPlan = z.infer<typeof alignmentPlanSchema>;
 
 /** The working grid that a first raster leads to, and why it is not simply the raster's own. */
 export const suggestedGridSchema = z.object({
   grid: gridSchema,
   crs: crsSchema,
   asInFile: z.boolean(),
-  reasons: z.array(z.string()),
+  reasons: z.array(z.string()).readonly(),
 });
 
 /** What is decided about an upload; null where the product's proposal stands, or for `part` and `band`, nothing yet. */

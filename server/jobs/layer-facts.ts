@@ -1,4 +1,8 @@
+import type { RasterContent } from '#rasters/align/alignment-plan.ts';
 import type { LayerFacts, LayerPart, ValueUnit } from '#contract/layers.ts';
+
+/** What the values of a part are, which decides how they may be resampled. */
+export const contentOf = (part: LayerPart): RasterContent => (part === 'habitat' ? 'classes' : 'amounts');
 
 /** What is wrong with a raster's values for the part it should play. */
 export interface ValueComplaint {

@@ -1,3 +1,4 @@
+import { MessageChannel } from 'node:worker_threads';
 import { Piscina } from 'piscina';
 import { ProblemError } from '../middleware/problem-error.ts';
 import type { Refusal, RasterTask, TaskResults } from './raster-tasks.ts';
@@ -7,11 +8,21 @@ import { workerFile, type WorkerFile } from './worker-file.ts';
 /** Heavy work on rasters, off the thread that answers requests. */
 export interface RasterPool {
   /**
-   * Runs one task in the worker.
+   * Runs one task in the worker. On the signal, a task that waits is dropped and one under way loses its worker.
    * @throws ProblemError what the task refuses, or that too many wait, or that it took too long or too much memory
+   * @throws the signal's reason
    */
-  run<K extends keyof TaskResults>(task: Extract<RasterTask, { kind: K }>): Promise<TaskResults[K]>;
+  run<K extends keyof TaskResults>(
+    task: Extract<RasterTask, { kind: K }>,
+    progress?: TaskProgress,
+  ): Promise<TaskResults[K]>;
   close(): Promise<void>;
+}
+
+export interface TaskProgress {
+  /** told the share that is done, 0..1, by tasks that know it */
+  onProgress?: (share: number) => void;
+  signal?: AbortSignal;
 }
 
 export interface RasterPoolSettings {
@@ -44,7 +55,8 @@ export function createRasterPool(settings: Partial<RasterPoolSettings> = {}): Ra
   // A worker that fails to start tells the pool alone, and its task would wait. One that fails with no task is replaced.
   pool.on('error', (error) => breakOff?.(error));
 
-  async function perform(task: RasterTask): Promise<unknown> {
+  async function perform(task: RasterTask, { onProgress, signal }: TaskProgress): Promise<unknown> {
+    signal?.throwIfAborted();
     const limit = longestMs(await taskCells(task));
     const stop = new AbortController();
     let why: unknown;
@@ -53,14 +65,20 @@ export function createRasterPool(settings: Partial<RasterPoolSettings> = {}): Ra
       stop.abort();
     };
     const timer = setTimeout(() => breakOff?.(tooLong()), limit);
+    const cancelled = () => breakOff?.(signal?.reason);
+    signal?.addEventListener('abort', cancelled);
+    const { port1: here, port2: there } = new MessageChannel();
+    here.on('message', (share: number) => onProgress?.(share));
     try {
-      return await pool.run(task, { signal: stop.signal });
+      return await pool.run({ task, port: there }, { signal: stop.signal, transferList: [there] });
     } catch (error) {
       // The worker is gone before anyone clears up after it, so that it cannot write once more.
       if (why !== undefined) await Promise.all(pool.threads.map((thread) => thread.terminate()));
       throw why ?? breakdown(error);
     } finally {
       clearTimeout(timer);
+      signal?.removeEventListener('abort', cancelled);
+      here.close();
       breakOff = undefined;
     }
   }
@@ -70,10 +88,13 @@ export function createRasterPool(settings: Partial<RasterPoolSettings> = {}): Ra
   // Piscina's own limit lets everything through while its worker is starting.
   let unfinished = 0;
   return {
-    async run<K extends keyof TaskResults>(task: Extract<RasterTask, { kind: K }>) {
+    async run<K extends keyof TaskResults>(
+      task: Extract<RasterTask, { kind: K }>,
+      progress: TaskProgress = {},
+    ) {
       if (unfinished > queue) throw busy();
       unfinished++;
-      const turn = last.then(() => perform(task)).finally(() => unfinished--);
+      const turn = last.then(() => perform(task, progress)).finally(() => unfinished--);
       last = turn.catch(() => undefined);
       const answer = (await turn) as { value: TaskResults[K] } | { refused: Refusal };
       if ('value' in answer) return answer.value;

@@ -1,9 +1,17 @@
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { ProblemCode } from '#contract/problem.ts';
-import type { LayerFacts, LayerPart, ValueUnit } from '#contract/layers.ts';
+import type {
+  Alignment,
+  LayerFacts,
+  LayerPart,
+  ResamplingMethod,
+  StoredSource,
+  ValueUnit,
+} from '#contract/layers.ts';
+import type { RasterDescription } from '#rasters/describe/raster-description.ts';
 
 /** What the raster worker is asked to do. Files are named by paths that the server made; nothing large is copied. */
-export type RasterTask = ReadLayerTask | WriteMapTask | DigestTask;
+export type RasterTask = ReadLayerTask | SurveyTask | PlaceTask | WriteMapTask | DigestTask;
 
 /** Read and check an uploaded GeoTIFF and write its values as a cell-values binary. */
 export interface ReadLayerTask {
@@ -15,6 +23,42 @@ export interface ReadLayerTask {
   grid: Grid | null;
   /** most cells that are decoded */
   cells: number;
+}
+
+/** Look at every cell of a band of an uploaded file, before anything is decided about it. */
+export interface SurveyTask {
+  kind: 'survey';
+  path: string;
+  /** from 1; null for the first with data */
+  band: number | null;
+  /** where the small picture goes, as a cell-values binary */
+  thumbnailPath: string;
+}
+
+/** Bring a band of an uploaded file onto a grid and write it as GeoTIFF and as cell values. */
+export interface PlaceTask {
+  kind: 'place';
+  path: string;
+  part: LayerPart;
+  band: number;
+  grid: Grid;
+  /** null for the one that fits */
+  method: ResamplingMethod | null;
+  /** how its values are read; null for the likeliest way */
+  unit: ValueUnit | null;
+  rasterPath: string;
+  valuesPath: string;
+}
+
+/** What became of a placed raster. */
+export interface Placed {
+  facts: LayerFacts;
+  unit: ValueUnit;
+  source: StoredSource;
+  alignment: Alignment;
+  /** null where the file itself has the grid's cells, untouched: then nothing was written at `rasterPath` */
+  raster: WrittenFile | null;
+  values: WrittenFile;
 }
 
 /** Write a stored frame or the closing years as GeoTIFF. */
@@ -46,6 +90,8 @@ export interface WrittenFile {
 
 export interface TaskResults {
   'read-layer': { grid: Grid; facts: LayerFacts; unit: ValueUnit; values: WrittenFile };
+  survey: { description: RasterDescription; band: number; facts: LayerFacts; thumbnail: WrittenFile };
+  place: Placed;
   'write-map': WrittenFile;
   digest: string;
 }

@@ -1,17 +1,24 @@
 import { readTiffDirectory } from '#rasters/read/tiff-directory.ts';
-import { claimedCells } from '#rasters/read/tiff-layout.ts';
+import { claimedCells, largestSource } from '#rasters/read/tiff-layout.ts';
 import { withFileSource } from '../files/file-source.ts';
 import type { RasterTask } from './raster-tasks.ts';
+
+/** Cells as the header claims them; what has none is refused by the worker at once. */
+const cellsOfFile = (path: string): Promise<number> =>
+  withFileSource(path, async (source) => claimedCells(await readTiffDirectory(source))).catch(() => 0);
 
 /** How many cells a task goes through, at most: what the time it may take is measured by. */
 export async function taskCells(task: RasterTask): Promise<number> {
   switch (task.kind) {
-    case 'read-layer': {
-      const claimed = await withFileSource(task.path, async (source) =>
-        claimedCells(await readTiffDirectory(source)),
-      ).catch(() => 0); // What has no header is refused by the worker at once.
-      return Math.min(claimed, task.cells);
-    }
+    case 'read-layer':
+      return Math.min(await cellsOfFile(task.path), task.cells);
+    case 'survey':
+      return Math.min(await cellsOfFile(task.path), largestSource.cells);
+    case 'place':
+      // Cells that are calculated take a few times as long as those that are read, and are packed twice.
+      return (
+        Math.min(await cellsOfFile(task.path), largestSource.cells) + 4 * task.grid.width * task.grid.height
+      );
     case 'write-map':
       return task.grid.width * task.grid.height;
     case 'digest':

@@ -23,7 +23,7 @@ export async function writeMap(task: WriteMapTask): Promise<WrittenFile> {
       task.outPath,
       encodeGeoTiff({
         grid,
-        values: stored as Int16Array,
+        values: stored,
         noData: cannotGrow,
         bandName: 'closing year, 0 = open at the horizon',
         unit: 'year',

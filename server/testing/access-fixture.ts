@@ -4,7 +4,7 @@ import { encodeCellValues } from '#rasters/cells/cell-values.ts';
 import { makePerson, makeTeam, testPassword, type TestPerson } from './people.ts';
 import { startTestComparison } from './comparisons.ts';
 import { packed, sendBytes } from './runs.ts';
-import { makeSite } from './sites.ts';
+import { cover, makeSite, sendUpload } from './sites.ts';
 import { testServer, type TestServer } from './test-server.ts';
 import { addMember } from '../people/people.repository.ts';
 
@@ -95,6 +95,9 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
   await sendBytes(agents.admin, `${ensemble}/maps/closing?replicates=1`, noCells).expect(204);
   await sendBytes(agents.admin, `${ensemble}/maps-state?replicates=1`, noCells).expect(204);
 
+  const upload = await sendUpload(agents.admin, teamId, cover());
+  await server.services.background.idle();
+
   const callers = { ...people, outsider: other.people.admin };
   const cookies: AccessFixture['cookies'] = {};
   const sessionIds: AccessFixture['sessionIds'] = {};
@@ -112,6 +115,7 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     siteId: site.id,
     layerId: site.layers[0].id,
     hash: site.layers[0].hash,
+    uploadId: upload.id,
     optionId: (options.body as { options: Option[] }).options.find((option) => !option.wait)!.id,
     revision: 1,
     runId,

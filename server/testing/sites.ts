@@ -1,6 +1,7 @@
 import { readdirSync } from 'node:fs';
 import { join } from 'node:path';
 import type { LayerPart } from '#contract/layers.ts';
+import type { Upload } from '#contract/uploads.ts';
 import type { Site } from '#contract/sites.ts';
 import { encodeGeoTiff, type GeoTiffContent } from '#rasters/write/geotiff.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
@@ -57,6 +58,22 @@ export const uploadLayer = (
   file: Buffer,
   fileName = `${part}.tif`,
 ) => agent.post(`/api/sites/${siteId}/layers`).field('part', part).attach('file', file, fileName);
+
+/** Sends a raster as an upload; it is read in the background. */
+export async function sendUpload(
+  agent: Agent,
+  teamId: string,
+  file: Buffer,
+  {
+    fileName = 'raster.tif',
+    ...fields
+  }: { siteId?: string; part?: LayerPart; place?: string; fileName?: string } = {},
+): Promise<Upload> {
+  const request = agent.post(`/api/teams/${teamId}/uploads`);
+  for (const [name, value] of Object.entries(fields)) void request.field(name, value);
+  const reply = await request.attach('file', file, fileName).expect(200);
+  return reply.body as Upload;
+}
 
 /** A site with `habitat` (classed) and `cover`. */
 export async function makeSite(agent: Agent, teamId: string): Promise<Site> {

@@ -5,6 +5,7 @@ import supertest from 'supertest';
 import { createApp } from '#server/app.ts';
 import { readConfig, type Config } from '#server/config.ts';
 import { openDatabase } from '#server/database/open-database.ts';
+import { resumeWork } from '#server/resume-work.ts';
 import { createServices, type Services } from '#server/services.ts';
 
 const makeFolder = () => mkdtempSync(join(tmpdir(), 'foothold-test-'));
@@ -54,6 +55,7 @@ export async function testServer(changes: Partial<Config> = {}, frozen?: string)
   };
   let passed = 0;
   const services = await createServices(config, () => new Date(Date.now() + passed));
+  await resumeWork(services);
   const app = createApp(services);
   return {
     services,

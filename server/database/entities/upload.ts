@@ -16,12 +16,16 @@ export interface UploadRow {
   state: string;
   /** how often its present work has begun: what breaks the server each time is not begun for ever */
   attempts: number;
-  /** becomes a layer by itself when nothing has to be decided */
-  placeWhenClear: boolean;
+  /** `when-asked`, `when-clear` (by itself when nothing has to be decided) or `always` (put back from the history) */
+  place: string;
+  /** the layer of the history that it is made from; null for a fresh file */
+  putBackOf: string | null;
   /** JSON of the contract's schemas, null until known */
   description: string | null;
   facts: string | null;
-  /** blob of the small picture of the band that `facts` are about */
+  /** the band, from 1, that `facts` and the thumbnail are about */
+  band: number | null;
+  /** blob of the small picture */
   thumbnailHash: string | null;
   choices: string;
   /** JSON: why it was refused, or failed */
@@ -43,9 +47,11 @@ export const UploadEntity = new EntitySchema<UploadRow>({
     bytes: { type: 'integer' },
     state: { type: 'text' },
     attempts: { type: 'integer' },
-    placeWhenClear: { type: 'boolean' },
+    place: { type: 'text' },
+    putBackOf: { type: 'text', nullable: true },
     description: { type: 'text', nullable: true },
     facts: { type: 'text', nullable: true },
+    band: { type: 'integer', nullable: true },
     thumbnailHash: { type: 'text', nullable: true },
     choices: { type: 'text' },
     problem: { type: 'text', nullable: true },

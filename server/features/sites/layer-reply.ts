@@ -4,22 +4,13 @@ import {
   habitatClassesSchema,
   layerFactsSchema,
   layerPartSchema,
-  layerSourceFileSchema,
+  storedSourceSchema,
   valueUnitSchema,
   verticalSchema,
   type Layer,
 } from '#contract/layers.ts';
 import type { LayerRow } from '#server/database/entities/layer.ts';
 import { readJson } from '#server/database/json-column.ts';
-
-/** What `source` of a layer's row holds; the rest of the contract's source stands in columns of its own. */
-export const storedSourceSchema = layerSourceFileSchema.omit({
-  fileName: true,
-  hash: true,
-  bytes: true,
-  uploadedAt: true,
-  uploadedBy: true,
-});
 
 /** A layer as the contract shows it. */
 export function layerReply(row: LayerRow): Layer {

@@ -2,7 +2,7 @@ import { In, IsNull } from 'typeorm';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { EnsembleMapEntity } from '#server/database/entities/comparison-parts.ts';
-import { LayerEntity, type LayerRow } from '#server/database/entities/layer.ts';
+import { LayerEntity } from '#server/database/entities/layer.ts';
 import { OptionEntity, type OptionRow } from '#server/database/entities/option.ts';
 import { RunFrameEntity } from '#server/database/entities/run-frame.ts';
 import { RunEntity } from '#server/database/entities/run.ts';
@@ -27,13 +27,9 @@ export const gridOf = ({ width, height, cellSize, originX, originY, epsg }: Site
 export const sitesOfTeam = (manager: Manager, teamId: string): Promise<SiteRow[]> =>
   manager.find(SiteEntity, { where: { teamId }, order: { createdAt: 'ASC', id: 'ASC' } });
 
-/** A site with its first layer and the option that does nothing. */
-export async function insertSite(
-  manager: Manager,
-  rows: { site: SiteRow; layer: LayerRow; wait: OptionRow },
-): Promise<void> {
+/** A site with the option that does nothing. */
+export async function insertSite(manager: Manager, rows: { site: SiteRow; wait: OptionRow }): Promise<void> {
   await manager.insert(SiteEntity, rows.site);
-  await manager.insert(LayerEntity, rows.layer);
   await manager.insert(OptionEntity, rows.wait);
 }
 

@@ -1,27 +1,14 @@
-import { randomUUID } from 'node:crypto';
 import type { ElevationCurves, TidalDatum } from '#contract/layers.ts';
 import type { Outlook, Plant, Site } from '#contract/sites.ts';
-import { defaultRates } from '#sim-core/spec/parameters.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import { releaseBlobs, storeWithRows } from '#server/files/stored-files.ts';
 import type { Services } from '#server/services.ts';
+import { insertLayer } from './layer.repository.ts';
 import { layerRowOf } from './layer.service.ts';
+import { newSiteRows } from './new-site.ts';
 import { readRasterFile, type ArrivedRaster } from './read-raster-file.ts';
 import { siteReply } from './site-reply.ts';
 import { deleteSiteRows, insertSite, updateSite } from './site.repository.ts';
-
-const defaultHorizon = 34;
-
-/** An outlook to start from: the survey is this year's, and no year is dry. */
-export const defaultOutlook = (thisYear: number): Outlook => ({
-  surveyYear: thisYear,
-  years: defaultHorizon,
-  stepsPerYear: 1,
-  boundary: 'mirror',
-  droughtIndex: Array.from({ length: defaultHorizon }, () => 0),
-});
-
-const defaultPlant: Plant = { name: 'Plant', rates: defaultRates };
 
 /**
  * Makes a site whose working grid is the raster's, with the option `Wait`, a default plant and a default outlook. A
@@ -38,41 +25,14 @@ export async function createSite(
   }: ArrivedRaster & { teamId: string; name: string; invented?: boolean },
 ): Promise<Site> {
   const read = await readRasterFile(services, raster.file, raster.part);
+  const { grid, facts } = read;
   const now = services.clock();
-  const site: SiteRow = {
-    id: randomUUID(),
-    teamId,
-    name,
-    invented,
-    ...read.grid,
-    crsName: read.facts.crsName,
-    finestGrid: null,
-    elevationCurves: null,
-    tidalDatums: null,
-    plant: JSON.stringify(defaultPlant),
-    plantSet: false,
-    outlook: JSON.stringify(defaultOutlook(now.getUTCFullYear())),
-    outlookSet: false,
-    createdAt: now.toISOString(),
-  };
-  const wait = {
-    id: randomUUID(),
-    siteId: site.id,
-    wait: true,
-    place: 0,
-    name: 'Wait',
-    note: '',
-    archived: false,
-    works: '[]',
-    sets: '[]',
-    revision: 1,
-    createdAt: site.createdAt,
-    changedAt: site.createdAt,
-    changedBy: raster.by,
-  };
+  const rows = newSiteRows({ teamId, name, by: raster.by, grid, crsName: facts.crsName, now, invented });
+  const layer = layerRowOf(rows.site.id, raster, read, now.toISOString());
   return storeWithRows(services, [raster.file, read.values], async (manager) => {
-    await insertSite(manager, { site, layer: layerRowOf(site.id, raster, read, site.createdAt), wait });
-    return siteReply(manager, site.id);
+    await insertSite(manager, rows);
+    await insertLayer(manager, layer);
+    return siteReply(manager, rows.site.id);
   });
 }
 

@@ -1,0 +1,7 @@
+import { resumeUploads } from './features/sites/uploads/upload.service.ts';
+import type { Services } from './services.ts';
+
+/** Takes up again all long work that an earlier process left unfinished. For the start. */
+export async function resumeWork(services: Services): Promise<void> {
+  await resumeUploads(services);
+}
