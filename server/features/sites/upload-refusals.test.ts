@@ -1,6 +1,8 @@
 import { execFileSync } from 'node:child_process';
 import { request as httpRequest } from 'node:http';
+import { readFileSync } from 'node:fs';
 import type { AddressInfo } from 'node:net';
+import { join } from 'node:path';
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import type { Problem } from '#contract/problem.ts';
 import { makeTeam, testPassword, type TestTeam } from '#server/testing/people.ts';
@@ -79,15 +81,6 @@ const withTag = (file: Buffer, tag: number, value: number) =>
 const renamed = (file: Buffer, tag: number) =>
   withEntry(file, tag, (copy, at) => void copy.writeUInt16LE(65_000, at));
 
-/** With a row of 16-bit numbers overwritten by another, wherever it first stands. */
-function rewritten(file: Buffer, row: number[], by: number[]): Buffer {
-  const at = file.indexOf(Buffer.from(Uint16Array.from(row).buffer));
-  if (at < 0) throw new Error(`No ${row.join(' ')}`);
-  const copy = Buffer.from(file);
-  Buffer.from(Uint16Array.from(by).buffer).copy(copy, at);
-  return copy;
-}
-
 describe('a file that cannot be a layer is refused with what was found, expected and how to mend it', () => {
   it('no GeoTIFF', async () => {
     const png = Buffer.from('89504e470d0a1a0a0000000d49484452', 'hex');
@@ -115,12 +108,7 @@ describe('a file that cannot be a layer is refused with what was found, expected
 
   it('without a georeference, or with one in degrees', async () => {
     await refused(renamed(renamed(cover(), 33550), 33922), 'raster-not-georeferenced');
-    // GTModelType 1 (projected) becomes 2 (geographic), and ProjectedCRS becomes GeodeticCRS 4326.
-    const degrees = rewritten(
-      rewritten(cover(), [1024, 0, 1, 1], [1024, 0, 1, 2]),
-      [3072, 0, 1, 32631],
-      [2048, 0, 1, 4326],
-    );
+    const degrees = readFileSync(join(import.meta.dirname, '../../../rasters/fixtures/mend-degrees.tif'));
     await refused(degrees, 'raster-not-projected');
   });
 
