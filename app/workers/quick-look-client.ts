@@ -59,6 +59,8 @@ export function startQuickLook(
     over = true;
     remote[releaseProxy]();
     worker.terminate();
+    // Whoever still waits for points must not wait for ever.
+    fail(new QuickLookDied('The quick look was closed'));
   }
   failed.catch((reason: unknown) => {
     if (over) return;

@@ -1,48 +1,64 @@
-import { candidateCells, type CandidateInput } from './candidate-cells.ts';
-import { createQuickLook, type QuickLookInput } from './quick-look.ts';
-import { footholdWorks, type FootholdKind, type SuggestProgress } from './suggest.ts';
-import type { Action } from '#sim-core/spec/run-spec.ts';
+import { candidatePlaces, mayHold } from './candidates.ts';
+import {
+  footholdWorks,
+  lookWithWorks,
+  usualNumber,
+  type SuggestInput,
+  type SuggestProgress,
+} from './suggest.ts';
 
-export interface GainMapInput extends QuickLookInput, Pick<CandidateInput, 'allowed' | 'candidates'> {
-  readonly works: readonly Action[];
-  readonly foothold: FootholdKind;
-}
+export type GainMapInput = Omit<SuggestInput, 'amount'>;
 
 export interface GainMap {
-  /** years by which one more foothold in a cell would bring the mean arrival forward; NaN where none may stand. Float32 */
+  /** years by which one more foothold in a cell would bring the mean arrival forward; NaN where none may stand; Float32 */
   readonly gains: Float32Array;
-  /** the most that any place that was weighed would bring */
-  readonly most: number;
+  /** the most that any place that was weighed would bring, and where that is, undefined where there was none */
+  readonly best: { readonly x: number; readonly y: number; readonly gain: number } | undefined;
+  /** places that were weighed */
   readonly candidates: number;
 }
 
 /**
  * Where one more foothold would help most: the gain of a single one at each candidate place, and between them the mean
- * of the places around, weighted by the inverse square of their distance (Shepard 1968).
+ * of the places within two blocks, weighted by (1 − d²/r²)², which falls to nothing smoothly at that distance.
+ *
+ * Yields its progress; what it returns is the map.
  */
 export function* gainMap(input: GainMapInput): Generator<SuggestProgress, GainMap> {
-  const { grid, foothold, works, ground, allowed } = input;
-  const look = createQuickLook(input);
-  look.change({ removed: [], added: works.map((action, i) => [i, action] as const) });
-  const candidates = candidateCells(input);
-  const gains: number[] = [];
-  for (const [i, { x, y }] of candidates.entries()) {
-    yield { stage: 'weighing', done: i, of: candidates.length };
-    gains.push(look.gainOf(footholdWorks(x, y, foothold)));
+  const { grid, foothold } = input;
+  const look = lookWithWorks(input);
+  const { places, side, columns, inBlock } = candidatePlaces(input, input.candidates ?? usualNumber(input));
+  const gains = new Float64Array(places.length);
+  let best: GainMap['best'];
+  for (const [i, { x, y }] of places.entries()) {
+    yield { stage: 'weighing', done: i, of: places.length };
+    gains[i] = look.gainOf(footholdWorks(x, y, foothold));
+    if (!best || gains[i] > best.gain) best = { x, y, gain: gains[i] };
   }
-  const { width } = grid;
-  const map = Float32Array.from(ground.capacity, (k, cell) => {
-    if (k === 0 || allowed?.[cell] === 0) return NaN;
-    let [sum, weights] = [0, 0];
-    for (const [i, { cell: other }] of candidates.entries()) {
-      const dx = (cell % width) - (other % width);
-      const dy = Math.floor(cell / width) - Math.floor(other / width);
-      if (dx === 0 && dy === 0) return gains[i];
-      const weight = 1 / (dx * dx + dy * dy) ** 2;
-      sum += weight * gains[i];
-      weights += weight;
+  const may = mayHold(input);
+  const rows = inBlock.length / columns;
+  const reach = (2 * side) ** 2;
+  const map = new Float32Array(grid.width * grid.height).fill(NaN);
+  for (let row = 0; row < grid.height; row++)
+    for (let column = 0; column < grid.width; column++) {
+      const cell = row * grid.width + column;
+      if (may(cell)) map[cell] = mean(column, row);
     }
-    return weights > 0 ? sum / weights : NaN;
-  });
-  return { gains: map, most: gains.reduce((a, b) => Math.max(a, b), 0), candidates: candidates.length };
+  return { gains: map, best, candidates: places.length };
+
+  function mean(column: number, row: number): number {
+    const [blockColumn, blockRow] = [Math.floor(column / side), Math.floor(row / side)];
+    let [sum, weights] = [0, 0];
+    for (let r = Math.max(0, blockRow - 2); r <= Math.min(rows - 1, blockRow + 2); r++)
+      for (let c = Math.max(0, blockColumn - 2); c <= Math.min(columns - 1, blockColumn + 2); c++) {
+        const place = inBlock[r * columns + c];
+        if (place < 0) continue;
+        const [dx, dy] = [places[place].column - column, places[place].row - row];
+        const near = 1 - (dx * dx + dy * dy) / reach;
+        if (near <= 0) continue;
+        sum += near * near * gains[place];
+        weights += near * near;
+      }
+    return sum / weights;
+  }
 }

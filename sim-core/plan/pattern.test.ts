@@ -113,8 +113,8 @@ describe('how points lie', () => {
     const { points } = lay({ kind: 'grid', angle: 30, amount: { by: 'spacing', spacing: 10 } });
     expect(Math.abs(points.length - area / 100)).toBeLessThan(25);
     for (const away of nearest(points)) expect(away).toBeCloseTo(10, 6);
-    const [first, second] = points;
-    expect(distance(first, second)).toBeCloseTo(10, 6);
+    const row = points.findIndex((point, i) => i > 0 && distance(point, points[i - 1]) < 11);
+    const [first, second] = points.slice(row - 1);
     expect(Math.atan2(second[1] - first[1], second[0] - first[0])).toBeCloseTo(Math.PI / 6, 6);
     expect(lay({ kind: 'grid', angle: 0, amount: { by: 'spacing', spacing: 16 } }).points).toHaveLength(100);
   });

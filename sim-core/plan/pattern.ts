@@ -117,7 +117,7 @@ export function layPattern(input: PatternInput): LaidPoints {
   }
 
   /**
-   * Points at the spacing that was asked for, or at the widest that gives as many as were.
+   * Points at the spacing that was asked for; or at the usual one of as many as were, or else the widest that gives them.
    *
    * @param usual spacing of so many points, were all ground alike
    * @param closer how many times narrower than that it may become
@@ -130,6 +130,8 @@ export function layPattern(input: PatternInput): LaidPoints {
   ): Point[] {
     if (amount.by === 'spacing') return at(amount.spacing);
     if (!asked || !(usual(asked) > 0)) return [];
+    const first = at(usual(asked));
+    if (first.length === asked) return first;
     return widestSpacing(at, asked, usual(asked) / closer, usual(asked) * 4);
   }
 }

@@ -2,8 +2,8 @@ import type { Point } from './extent.ts';
 import type { OpenGround } from './open-ground.ts';
 
 /**
- * A square grid of points over the ground, row by row from one side to the other; one of its points lies in the middle of
- * the ground's box.
+ * A square grid of points over the ground, row by row from one side to the other; the middle of the ground's box
+ * lies between four of its points.
  *
  * @param spacing m
  * @param angle degrees that rows turn from east towards north
@@ -14,8 +14,8 @@ export function pointsInRows(ground: OpenGround, spacing: number, angle: number)
   const reach = Math.ceil(Math.hypot(east - west, north - south) / 2 / spacing);
   const [cos, sin] = [Math.cos((angle * Math.PI) / 180), Math.sin((angle * Math.PI) / 180)];
   const points: Point[] = [];
-  for (let row = -reach; row <= reach; row++)
-    for (let column = -reach; column <= reach; column++) {
+  for (let row = -reach - 0.5; row <= reach; row++)
+    for (let column = -reach - 0.5; column <= reach; column++) {
       const x = midX + spacing * (column * cos - row * sin);
       const y = midY + spacing * (column * sin + row * cos);
       if (ground.isOpen(x, y)) points.push([x, y]);

@@ -18,6 +18,8 @@ export interface QuickLookInput {
   readonly surveyYear: number;
   /** years that are looked at */
   readonly years: number;
+  /** m; of the cells that growth runs on, where those of the grid are but blocks of them */
+  readonly growthCellSize?: number;
 }
 
 /** Works that come and go, each under a key of the caller's. */
@@ -62,7 +64,8 @@ export function createQuickLook(input: QuickLookInput): QuickLook {
   const { width, height, cellSize } = grid;
   const cells = width * height;
   const cellArea = cellSize * cellSize;
-  const growthOf = localGrowth(rates, cellSize, stepsPerYear);
+  const growthCell = input.growthCellSize ?? cellSize;
+  const growthOf = localGrowth(rates, growthCell, stepsPerYear);
   const references = referenceShares(stepRates(rates, stepsPerYear)).map((u) => Math.round(u * fineness));
   /** K u of a cell, in whole parts of `part` m² */
   const partsOf = (cell: number) => capacity[cell] * references[vigour[cell]];
@@ -74,7 +77,8 @@ export function createQuickLook(input: QuickLookInput): QuickLook {
   const field = arrivalField({ width, height, crossing, latest: horizon });
   const tally = closingTally(cells, partsOf, part, surveyYear, horizon);
   const closable = tally.summary().closable / part;
-  const worked = workedCells(capacity, rates.clumpsPerSquareMetre * cellArea);
+  // On blocks of cells too, a clump is the start that it is on the cell it is set in.
+  const worked = workedCells(capacity, rates.clumpsPerSquareMetre * growthCell * growthCell);
   const reaches = new Map<number, WorkReach>();
   /** years until what stands or is planted in a cell fills it by itself: on its ground, and on that of its mounds */
   const alone = new Float32Array(cells).fill(Infinity);

@@ -1,6 +1,8 @@
 import type { Action } from '#sim-core/spec/run-spec.ts';
-import { candidateCells } from './candidate-cells.ts';
-import { createQuickLook, type QuickLookInput } from './quick-look.ts';
+import { candidateNumber, candidatePlaces } from './candidates.ts';
+import { coarserGround } from './coarser-ground.ts';
+import { gainKnee } from './gain-knee.ts';
+import { createQuickLook, type QuickLook, type QuickLookInput } from './quick-look.ts';
 
 /** What is placed: a mound with clumps on it, all of one kind. A radius of 0: clumps alone. */
 export interface FootholdKind {
@@ -23,7 +25,7 @@ export interface SuggestInput extends QuickLookInput {
   readonly amount:
     | { readonly by: 'count'; readonly count: number }
     | { readonly by: 'budget'; readonly budget: number; readonly each: number };
-  /** most places that are weighed against each other */
+  /** most places that are weighed against each other; of itself: `candidateNumber` */
   readonly candidates?: number;
 }
 
@@ -53,6 +55,26 @@ export interface Suggestion {
   readonly weighed: number;
 }
 
+/** How many places are weighed unless it is said. */
+export const usualNumber = ({
+  grid,
+  rates,
+  years,
+  surveyYear,
+  foothold,
+}: Omit<SuggestInput, 'amount'>): number =>
+  candidateNumber(
+    grid.width * grid.height,
+    (rates.lateralSpread * Math.max(0, surveyYear + years - foothold.year)) / grid.cellSize,
+  );
+
+/** A look at what stands, on cells coarse enough to be looked at many times. */
+export function lookWithWorks(input: Omit<SuggestInput, 'amount' | 'foothold'>): QuickLook {
+  const look = createQuickLook(coarserGround(input));
+  look.change({ removed: [], added: input.works.map((action, i) => [i, action] as const) });
+  return look;
+}
+
 /** The works that make up one foothold. */
 export function footholdWorks(x: number, y: number, kind: FootholdKind): Action[] {
   const { year, radius, strength, halo, clumps } = kind;
@@ -69,12 +91,15 @@ export function footholdWorks(x: number, y: number, kind: FootholdKind): Action[
  * lazily: a gain found earlier bounds the gain now, and only the places at the top are weighed again (Minoux 1978).
  *
  * Yields its progress; what it returns is the suggestion.
+ *
+ * @throws RangeError where a budget is to be spent on what costs nothing
  */
 export function* suggest(input: SuggestInput): Generator<SuggestProgress, Suggestion> {
   const { foothold, amount, works } = input;
-  const look = createQuickLook(input);
-  look.change({ removed: [], added: works.map((action, i) => [i, action] as const) });
-  const candidates = candidateCells(input);
+  if (amount.by === 'budget' && !(amount.each > 0))
+    throw new RangeError(`Found a cost of ${amount.each} for each foothold; expected more than 0`);
+  const look = lookWithWorks(input);
+  const candidates = candidatePlaces(input, input.candidates ?? usualNumber(input)).places;
   const wanted = Math.min(
     candidates.length,
     amount.by === 'count' ? amount.count : Math.floor((amount.budget / amount.each) * (1 + 1e-12)),
@@ -123,21 +148,4 @@ export function* suggest(input: SuggestInput): Generator<SuggestProgress, Sugges
     candidates: candidates.length,
     weighed,
   };
-}
-
-/**
- * Number of footholds at the knee of the summed gain: where the curve lies highest above the chord from nothing to all
- * (the rule of Satopää et al. 2011, "Finding a Kneedle in a Haystack", from memory, without its smoothing). Undefined for
- * fewer than three, or where no point lies 5 % of the whole gain above the chord.
- */
-export function gainKnee(gains: readonly number[]): number | undefined {
-  const total = gains.reduce((sum, gain) => sum + gain, 0);
-  if (gains.length < 3 || !(total > 0)) return undefined;
-  let [sum, highest, knee] = [0, 0.05, undefined as number | undefined];
-  gains.forEach((gain, i) => {
-    sum += gain;
-    const above = sum / total - (i + 1) / gains.length;
-    if (above > highest) [highest, knee] = [above, i + 1];
-  });
-  return knee;
 }

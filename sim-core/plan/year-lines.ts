@@ -1,12 +1,13 @@
 import { contours } from 'd3-contour';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Point } from './extent.ts';
+import { lineLength } from './points-along.ts';
 
 /** A line along which the ground closes in one year, in the site's CRS. */
 export interface YearLine {
   readonly year: number;
   readonly lines: readonly (readonly Point[])[];
-  /** where its year may be written: along its longest piece, with the way that the line runs there, radians from east */
+  /** where its year may be written: along its longest piece, and how the line runs there, −π/2 to π/2 from east to north */
   readonly label: { readonly x: number; readonly y: number; readonly angle: number } | undefined;
 }
 
@@ -93,11 +94,13 @@ function piecesInside(
 }
 
 function labelOf(lines: Point[][]): YearLine['label'] {
-  const longest = lines.reduce<Point[]>((a, b) => (b.length > a.length ? b : a), []);
+  const longest = lines.reduce<Point[]>((a, b) => (lineLength(b) > lineLength(a) ? b : a), []);
   if (longest.length < 2) return undefined;
   const middle = Math.floor(longest.length / 2);
   const [x, y] = longest[middle];
   const [fromX, fromY] = longest[Math.max(0, middle - 2)];
   const [toX, toY] = longest[Math.min(longest.length - 1, middle + 2)];
-  return { x, y, angle: Math.atan2(toY - fromY, toX - fromX) };
+  // Read from left to right, whichever way the line was walked.
+  const forward = toX >= fromX ? 1 : -1;
+  return { x, y, angle: Math.atan2(forward * (toY - fromY), forward * (toX - fromX)) };
 }
