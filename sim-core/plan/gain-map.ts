@@ -12,8 +12,9 @@ export type GainMapInput = Omit<SuggestInput, 'amount'>;
 export interface GainMap {
   /** years by which one more foothold in a cell would bring the mean arrival forward; NaN where none may stand; Float32 */
   readonly gains: Float32Array;
-  /** the most that any place that was weighed would bring, and where that is, undefined where there was none */
-  readonly best: { readonly x: number; readonly y: number; readonly gain: number } | undefined;
+  /** the most that any place that was weighed would bring, and which that is, undefined where none was */
+  readonly most: number;
+  readonly best: { readonly x: number; readonly y: number } | undefined;
   /** places that were weighed */
   readonly candidates: number;
 }
@@ -29,11 +30,12 @@ export function* gainMap(input: GainMapInput): Generator<SuggestProgress, GainMa
   const look = lookWithWorks(input);
   const { places, side, columns, inBlock } = candidatePlaces(input, input.candidates ?? usualNumber(input));
   const gains = new Float64Array(places.length);
+  let most = 0;
   let best: GainMap['best'];
   for (const [i, { x, y }] of places.entries()) {
     yield { stage: 'weighing', done: i, of: places.length };
     gains[i] = look.gainOf(footholdWorks(x, y, foothold));
-    if (!best || gains[i] > best.gain) best = { x, y, gain: gains[i] };
+    if (!best || gains[i] > most) [most, best] = [gains[i], { x, y }];
   }
   const may = mayHold(input);
   const rows = inBlock.length / columns;
@@ -44,7 +46,7 @@ export function* gainMap(input: GainMapInput): Generator<SuggestProgress, GainMa
       const cell = row * grid.width + column;
       if (may(cell)) map[cell] = mean(column, row);
     }
-  return { gains: map, best, candidates: places.length };
+  return { gains: map, most, best, candidates: places.length };
 
   function mean(column: number, row: number): number {
     const [blockColumn, blockRow] = [Math.floor(column / side), Math.floor(row / side)];

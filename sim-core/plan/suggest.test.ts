@@ -162,7 +162,7 @@ describe('where one more would help most', () => {
     const look = createQuickLook(input);
     const { places } = candidatePlaces(input, 60);
     const gains = places.map(({ x, y }) => look.gainOf(footholdWorks(x, y, clumpsAlone)));
-    expect(result.best!.gain).toBeCloseTo(Math.max(...gains), 9);
+    expect(result.most).toBeCloseTo(Math.max(...gains), 9);
     const [lowest, highest] = [Math.min(...gains), Math.max(...gains)];
     let shown = 0;
     for (const gain of result.gains)
