@@ -1,12 +1,18 @@
 import { z } from 'zod';
 import { maximumYears } from '#sim-core/spec/limits.ts';
 import { boundarySchema, ratesSchema, stepsPerYearSchema } from '#sim-core/spec/run-spec.ts';
+import { processesSchema } from '#sim-core/spec/processes.ts';
 import { endpoint, id, instant, text } from './endpoint.ts';
 import { featureSchema } from './features.ts';
 import { gridSchema } from './grid.ts';
 import { elevationCurvesSchema, layerPartSchema, layerSchema, tidalDatumsSchema } from './layers.ts';
 
-export const plantSchema = z.strictObject({ name: text(100), rates: ratesSchema });
+export const plantSchema = z.strictObject({
+  name: text(100),
+  rates: ratesSchema,
+  /** what goes on beside spread and loss; nothing unless named */
+  processes: processesSchema.optional(),
+});
 export type Plant = z.infer<typeof plantSchema>;
 
 export const outlookSchema = z

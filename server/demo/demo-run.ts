@@ -30,6 +30,7 @@ function specOf(site: Site, option: Option, seed: string): RunSpec {
     boundary,
     droughtIndex,
     rates: site.plant.rates,
+    processes: site.plant.processes,
     actions: runActions(option.works),
     layers: layerSources(site),
   });

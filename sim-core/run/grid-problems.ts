@@ -7,17 +7,19 @@ import { fitKernel } from '#sim-core/theory/fit-kernel.ts';
 import { RunProblem } from './run-problem.ts';
 
 /** What makes a spec impossible on a grid, whatever its layers hold; empty when nothing does. */
-export function gridProblems(
-  { rates, processes, stepsPerYear, actions }: RunSpec,
-  grid: Grid,
-): FieldProblem[] {
-  const { grazers } = processes;
-  return [
-    ...prepareWorks(actions, grid).problems,
-    ...refusals(() => fitKernel(rates, grid.cellSize, stepsPerYear)),
-    ...(grazers ? refusals(() => grazerTaps(grazers, grid.cellSize, stepsPerYear)) : []),
-  ];
-}
+export const gridProblems = (spec: RunSpec, grid: Grid): FieldProblem[] => [
+  ...prepareWorks(spec.actions, grid).problems,
+  ...rateProblems(spec, grid.cellSize),
+];
+
+/** What makes rates impossible on cells of a size, m. */
+export const rateProblems = (
+  { rates, processes: { grazers }, stepsPerYear }: Pick<RunSpec, 'rates' | 'processes' | 'stepsPerYear'>,
+  cellSize: number,
+): FieldProblem[] => [
+  ...refusals(() => fitKernel(rates, cellSize, stepsPerYear)),
+  ...(grazers ? refusals(() => grazerTaps(grazers, cellSize, stepsPerYear)) : []),
+];
 
 function refusals(attempt: () => unknown): readonly FieldProblem[] {
   try {

@@ -1,15 +1,26 @@
 import type { Plant } from '#contract/sites.ts';
-import { parseNumber } from '#app/lib/parse-number.ts';
-import { parameters, rateNames, type RateName, type Rates } from '#sim-core/spec/parameters.ts';
+import { parameters, rateNames, type RateName } from '#sim-core/spec/parameters.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
-import { ratesSchema } from '#sim-core/spec/run-spec.ts';
+import { processesSchema, type Processes } from '#sim-core/spec/processes.ts';
+import {
+  fragmentParameters,
+  grazerParameters,
+  type FragmentRates,
+  type GrazerRates,
+} from '#sim-core/spec/process-parameters.ts';
+import { sheetErrors, startSheet, type RateSheet, type SheetErrors } from './rate-sheet.ts';
 
-/** A plant while it is edited: rates as typed, and the rates as they last made sense. */
+/** A plant while it is edited. */
 export interface PlantDraft {
   readonly name: string;
-  readonly typed: Readonly<Record<RateName, string>>;
-  /** what the pictures show while somebody types */
-  readonly rates: Rates;
+  readonly rates: RateSheet<RateName>;
+  readonly grazers: ProcessSheet<keyof GrazerRates>;
+  readonly fragments: ProcessSheet<keyof FragmentRates>;
+}
+
+/** A process: what is typed stays while it is off. */
+export interface ProcessSheet<Name extends string> extends RateSheet<Name> {
+  readonly on: boolean;
 }
 
 /** The rates in the order in which they are asked for. */
@@ -31,36 +42,64 @@ export const rateGroups: readonly { title: string; note: string; names: readonly
   },
 ];
 
-export const startPlant = ({ name, rates }: Plant): PlantDraft => ({
-  name,
-  typed: Object.fromEntries(rateNames.map((rate) => [rate, String(rates[rate])])) as PlantDraft['typed'],
-  rates,
+const atDefaults = processesSchema.parse({ grazers: {}, fragments: {} }) as Required<Processes>;
+
+export function startPlant({ name, rates, processes = {} }: Plant): PlantDraft {
+  const { grazers, fragments } = processes;
+  return {
+    name,
+    rates: startSheet(rates),
+    grazers: { ...startSheet(grazers ?? atDefaults.grazers), on: grazers !== undefined },
+    fragments: { ...startSheet(fragments ?? atDefaults.fragments), on: fragments !== undefined },
+  };
+}
+
+export interface PlantErrors {
+  readonly name?: string;
+  readonly rates: SheetErrors<RateName>;
+  readonly grazers: SheetErrors<keyof GrazerRates>;
+  readonly fragments: SheetErrors<keyof FragmentRates>;
+}
+
+/**
+ * What is wrong, by part and rate: outside its range, or refused by the engine (`problems`, at `rates.<name>` and
+ * `processes.<part>.<name>`). Of a process that is off, nothing.
+ */
+export function plantErrors(draft: PlantDraft, problems: readonly FieldProblem[]): PlantErrors {
+  const refused = <Name extends string>(field: string, names: readonly Name[]): SheetErrors<Name> =>
+    Object.fromEntries(
+      problems.flatMap((problem) => {
+        const name = names.find((rate) => problem.field === `${field}.${rate}`);
+        return name ? [[name, problem.message]] : [];
+      }),
+    ) as SheetErrors<Name>;
+  const { rates, grazers, fragments } = draft;
+  return {
+    ...(draft.name.trim() === '' ? { name: 'Give the plant a name' } : {}),
+    rates: { ...refused('rates', rateNames), ...sheetErrors(parameters, rates) },
+    grazers: grazers.on
+      ? {
+          ...refused('processes.grazers', Object.keys(grazerParameters) as (keyof GrazerRates)[]),
+          ...sheetErrors(grazerParameters, grazers),
+        }
+      : {},
+    fragments: fragments.on ? sheetErrors(fragmentParameters, fragments) : {},
+  };
+}
+
+export const wrongFields = ({ name, ...parts }: PlantErrors): number =>
+  (name === undefined ? 0 : 1) +
+  Object.values(parts).reduce((sum: number, errors: object) => sum + Object.keys(errors).length, 0);
+
+/** The processes that are on, with their rates. */
+export const processesOf = ({ grazers, fragments }: PlantDraft): Processes => ({
+  ...(grazers.on ? { grazers: grazers.values } : {}),
+  ...(fragments.on ? { fragments: fragments.values } : {}),
 });
 
-export function typeRate(draft: PlantDraft, rate: RateName, text: string): PlantDraft {
-  const typed = { ...draft.typed, [rate]: text };
-  const value = parseNumber(text);
-  const { min, max } = parameters[rate];
-  const fits = value !== undefined && value >= min && value <= max;
-  return { ...draft, typed, rates: fits ? { ...draft.rates, [rate]: value } : draft.rates };
-}
-
-export type PlantErrors = Partial<Record<RateName | 'name', string>>;
-
-/** What is wrong, by field: outside the range of a rate, or refused by the engine (`problems`, at `rates.<name>`). */
-export function plantErrors(draft: PlantDraft, problems: readonly FieldProblem[]): PlantErrors {
-  const errors: PlantErrors = {};
-  for (const { field, message } of problems) {
-    const rate = rateNames.find((name) => field === `rates.${name}`);
-    if (rate) errors[rate] = message;
-  }
-  const read = ratesSchema.safeParse(
-    Object.fromEntries(rateNames.map((rate) => [rate, parseNumber(draft.typed[rate]) ?? draft.typed[rate]])),
-  );
-  for (const issue of read.error?.issues ?? []) {
-    const rate = rateNames.find((name) => name === issue.path[0]);
-    if (rate) errors[rate] = `Found “${draft.typed[rate].trim()}”. ${issue.message}`;
-  }
-  if (draft.name.trim() === '') errors.name = 'Give the plant a name';
-  return errors;
-}
+/** The plant as it is saved. */
+export const plantOf = (draft: PlantDraft): Plant => ({
+  name: draft.name.trim(),
+  rates: draft.rates.values,
+  processes: processesOf(draft),
+});

@@ -1,10 +1,11 @@
 import { NumberField } from '#app/components/inputs.tsx';
 import { formatNumber } from '#app/lib/formats.ts';
-import { parameters, type RateName } from '#sim-core/spec/parameters.ts';
+import type { Parameter } from '#sim-core/spec/parameters.ts';
+import { typeRate, type RateSheet, type SheetErrors } from './rate-sheet.ts';
 
 /** One rate: the blank, what it means, where its starting value comes from, and where it stands in its range. */
-export function RateRow(props: {
-  rate: RateName;
+function RateRow(props: {
+  parameter: Parameter;
   typed: string;
   /** as it last made sense */
   value: number;
@@ -12,7 +13,7 @@ export function RateRow(props: {
   editable: boolean;
   onChange: (text: string) => void;
 }) {
-  const { label, symbol, unit, meaning, source, default: start } = parameters[props.rate];
+  const { label, symbol, unit, meaning, source, default: start } = props.parameter;
   return (
     <div className="grid gap-x-6 gap-y-1 border-t border-rule-2 py-2.5 sm:grid-cols-[230px_minmax(0,1fr)]">
       <NumberField
@@ -28,17 +29,40 @@ export function RateRow(props: {
         <p className="text-note text-ink-2">
           Starts at {formatNumber(start, 4)}: {source}
         </p>
-        <RangeRule rate={props.rate} value={props.value} />
+        <RangeRule parameter={props.parameter} value={props.value} />
       </div>
     </div>
   );
 }
 
+/** Rates of one table, one below the other. */
+export function RateRows<Name extends string>(props: {
+  table: Readonly<Record<Name, Parameter>>;
+  names: readonly Name[];
+  sheet: RateSheet<Name>;
+  errors: SheetErrors<Name>;
+  editable: boolean;
+  onChange: (sheet: RateSheet<Name>) => void;
+}) {
+  const { table, sheet } = props;
+  return props.names.map((name) => (
+    <RateRow
+      key={name}
+      parameter={table[name]}
+      typed={sheet.typed[name]}
+      value={sheet.values[name]}
+      error={props.errors[name]}
+      editable={props.editable}
+      onChange={(text) => props.onChange(typeRate(table, sheet, name, text))}
+    />
+  ));
+}
+
 const length = 240;
 
 /** The range of a rate as a rule: the tick is where it starts, the block where it stands. Wide ranges by their logarithm. */
-function RangeRule({ rate, value }: { rate: RateName; value: number }) {
-  const { min, max, default: start } = parameters[rate];
+function RangeRule({ parameter, value }: { parameter: Parameter; value: number }) {
+  const { min, max, default: start } = parameter;
   const byLogarithm = min > 0 && max / min >= 100;
   const place = (x: number) =>
     length * (byLogarithm ? Math.log(x / min) / Math.log(max / min) : (x - min) / (max - min));

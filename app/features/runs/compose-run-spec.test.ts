@@ -1,6 +1,7 @@
 // @vitest-environment node
 import { describe, expect, it } from 'vitest';
 import { defaultRates } from '#sim-core/spec/parameters.ts';
+import { processesSchema } from '#sim-core/spec/processes.ts';
 import type { Action } from '#sim-core/spec/run-spec.ts';
 import { composeRunSpec } from './compose-run-spec.ts';
 import { layerFixture, siteFixture } from './testing/site-fixture.ts';
@@ -38,6 +39,18 @@ describe('composeRunSpec', () => {
       actions: [mound()],
       rates: defaultRates,
     });
+  });
+
+  it('takes the processes of the plant, none unless they are on, and says where theirs are mended', () => {
+    const site = siteFixture();
+    expect(composeRunSpec(site, wait, choices).spec?.processes).toEqual({});
+    const grazed = (grazerSpread: number) => {
+      const { plant } = siteFixture();
+      const processes = processesSchema.parse({ grazers: { grazerSpread } });
+      return composeRunSpec({ ...site, plant: { ...plant, processes } }, wait, choices);
+    };
+    expect(grazed(3).spec?.processes.grazers).toMatchObject({ grazerSpread: 3, grazingRate: 0.01 });
+    expect(grazed(500).problems).toMatchObject([{ field: 'processes.grazers.grazerSpread', mend: 'plant' }]);
   });
 
   it('runs without a refuge layer', () => {

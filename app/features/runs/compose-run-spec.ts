@@ -44,6 +44,7 @@ export function composeRunSpec(
     stepsPerYear,
     boundary,
     rates: site.plant.rates,
+    processes: site.plant.processes,
     droughtIndex,
     actions: runActions(option.works),
     layers: layerSources(site),

@@ -85,6 +85,9 @@ export function RunFacts({ run, result }: { run: Run; result: RunResult | undefi
           {spec.surveyYear} to {spec.surveyYear + spec.years}, {spec.stepsPerYear} step
           {spec.stepsPerYear === 1 ? '' : 's'} a year
         </Fact>
+        {Object.keys(spec.processes).length > 0 && (
+          <Fact name="processes">{Object.keys(spec.processes).join(' and ')}</Fact>
+        )}
         {result && (
           <Fact name="front">
             {formatNumber(result.kernel.frontSpeed)} m a year,{' '}

@@ -7,16 +7,23 @@ import { ProblemNotice } from '#app/components/notice.tsx';
 import { SaveBar } from '#app/components/save-bar.tsx';
 import { sayDone } from '#app/components/toast.tsx';
 import { implications } from '#app/features/plant/implied.ts';
+import { GrazersInWords } from '#app/features/plant/grazers-in-words.tsx';
 import {
   plantErrors,
+  plantOf,
   rateGroups,
   startPlant,
-  typeRate,
+  wrongFields,
   type PlantDraft,
 } from '#app/features/plant/plant-draft.ts';
-import { RateRow } from '#app/features/plant/rate-row.tsx';
+import { ProcessSection } from '#app/features/plant/process-section.tsx';
+import { RateRows } from '#app/features/plant/rate-row.tsx';
+import { RateSection } from '#app/features/plant/rate-section.tsx';
 import { setPlantMutation } from '#app/features/plant/set-plant.ts';
 import { formatCounted, formatNumber } from '#app/lib/formats.ts';
+import { rateProblems } from '#sim-core/run/grid-problems.ts';
+import { parameters } from '#sim-core/spec/parameters.ts';
+import { fragmentParameters, grazerParameters } from '#sim-core/spec/process-parameters.ts';
 import { PlantMargin } from './plant-margin.tsx';
 import { SitePage } from './site-page.tsx';
 import { useSite } from './use-site.ts';
@@ -29,25 +36,27 @@ export function Page() {
   const [edited, setEdited] = useState<PlantDraft>();
   const draft = edited ?? startPlant(site.plant);
   const save = useMutation(setPlantMutation(useQueryClient(), site.id));
-  const rates = useDeferredValue(draft.rates);
+  const rates = useDeferredValue(draft.rates.values);
   const implied = useMemo(() => implications(rates, cellSize, stepsPerYear), [rates, cellSize, stepsPerYear]);
-  const errors = plantErrors(draft, implied.problems);
-  const wrong = Object.keys(errors).length;
+  const grazers = draft.grazers.on ? draft.grazers.values : undefined;
+  const refused = useMemo(
+    () => rateProblems({ rates, processes: { grazers }, stepsPerYear }, cellSize),
+    [rates, grazers, stepsPerYear, cellSize],
+  );
+  const errors = plantErrors(draft, refused);
+  const wrong = wrongFields(errors);
 
   const submit = () => {
     if (wrong > 0) {
       document.querySelector<HTMLElement>('[aria-invalid="true"]')?.focus();
       return;
     }
-    save.mutate(
-      { name: draft.name.trim(), rates: draft.rates },
-      {
-        onSuccess: () => {
-          setEdited(undefined);
-          sayDone('Plant saved');
-        },
+    save.mutate(plantOf(draft), {
+      onSuccess: () => {
+        setEdited(undefined);
+        sayDone('Plant saved');
       },
-    );
+    });
   };
 
   return (
@@ -73,24 +82,39 @@ export function Page() {
             onChange={(event) => setEdited({ ...draft, name: event.target.value })}
           />
           {rateGroups.map((group) => (
-            <section key={group.title} className="border-t border-ink pt-2.5 pb-6">
-              <div className="mb-1.5 flex flex-wrap items-baseline justify-between gap-x-6">
-                <h2 className="text-lead">{group.title}</h2>
-                <p className="text-note text-ink-2">{group.note}</p>
-              </div>
-              {group.names.map((rate) => (
-                <RateRow
-                  key={rate}
-                  rate={rate}
-                  typed={draft.typed[rate]}
-                  value={draft.rates[rate]}
-                  error={errors[rate]}
-                  editable={mayKeepGround}
-                  onChange={(text) => setEdited(typeRate(draft, rate, text))}
-                />
-              ))}
-            </section>
+            <RateSection key={group.title} title={group.title} note={group.note}>
+              <RateRows
+                table={parameters}
+                names={group.names}
+                sheet={draft.rates}
+                errors={errors.rates}
+                editable={mayKeepGround}
+                onChange={(sheet) => setEdited({ ...draft, rates: sheet })}
+              />
+            </RateSection>
           ))}
+          <ProcessSection
+            title="Grazers"
+            note="Animals that eat the plant, held down by predators except in drought. Fences keep them out."
+            table={grazerParameters}
+            sheet={draft.grazers}
+            errors={errors.grazers}
+            editable={mayKeepGround}
+            saved={site.plant.processes?.grazers !== undefined}
+            onChange={(grazers) => setEdited({ ...draft, grazers })}
+          >
+            <GrazersInWords rates={draft.grazers.values} />
+          </ProcessSection>
+          <ProcessSection
+            title="Fragments"
+            note="Pieces that break off and take root elsewhere, in runs that count clumps."
+            table={fragmentParameters}
+            sheet={draft.fragments}
+            errors={errors.fragments}
+            editable={mayKeepGround}
+            saved={site.plant.processes?.fragments !== undefined}
+            onChange={(fragments) => setEdited({ ...draft, fragments })}
+          />
         </div>
       }
       margin={
