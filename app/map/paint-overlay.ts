@@ -141,7 +141,7 @@ function paintContours(
       const { left, top } = place([x, y]);
       if (left < 24 || top < 24 || left > size.width - 24 || top > size.height - 12) continue;
       // Years that stood on each other could not be read.
-      if (taken.some((other) => Math.abs(other.left - left) < 44 && Math.abs(other.top - top) < 26)) continue;
+      if (taken.some((other) => Math.abs(other.left - left) < 80 && Math.abs(other.top - top) < 48)) continue;
       taken.push({ left, top });
       pen.save();
       pen.translate(left, top);

@@ -66,7 +66,10 @@ export function SelectionForm(props: {
   const alone = things.length === 1;
   const kind = things.every((work) => work.kind === first.kind) ? first.kind : undefined;
   const sentence = kind
-    ? [...pieces[kind], ...(things.length < works.length && kind === 'mound' ? [onMounds] : [])]
+    ? [
+        ...pieces[kind],
+        ...(kind === 'mound' && works.some((work) => work.kind === 'clumps') ? [onMounds] : []),
+      ]
     : [inYear];
   const take = (field: WorkField) => (text: string) => {
     const changed = works.map((work) => withField(work, field, text, span));

@@ -2,8 +2,12 @@ import type { ReactNode } from 'react';
 import type { Option } from '#contract/options.ts';
 import { WordButton } from '#app/components/word-button.tsx';
 import type { BoardTool } from '#app/features/options/board/board-tools.ts';
-import { ToolChoice } from '#app/features/options/board/tool-choice.tsx';
+import { ToolChoice, ToolList } from '#app/features/options/board/tool-choice.tsx';
+import { useMediaQuery } from '#app/lib/use-media-query.ts';
 import type { DraftAction, OptionDraft } from '#app/features/options/option-draft.ts';
+
+/** Whether the page is as narrow as a phone. */
+const useNarrow = () => useMediaQuery('(width < 48rem)');
 
 /** Tools in words, and the sentence that says what the one in use does. */
 export function OptionTools(props: {
@@ -25,12 +29,17 @@ export function OptionTools(props: {
   onTable: (asTable: boolean) => void;
 }) {
   const { option, editable, draft, draw, tool, asTable } = props;
+  const narrow = useNarrow();
   return (
     <div className="grid gap-y-1">
       <div className="flex flex-wrap items-center gap-x-2.5">
         {editable && (
           <>
-            <ToolChoice tool={tool} onTool={props.onTool} />
+            {narrow ? (
+              <ToolList tool={tool} onTool={props.onTool} />
+            ) : (
+              <ToolChoice tool={tool} onTool={props.onTool} />
+            )}
             <span className="flex items-center gap-x-2.5">
               <WordButton
                 pressed={props.snap}
@@ -77,7 +86,7 @@ export function OptionTools(props: {
           </WordButton>
         )}
         <WordButton lined pressed={asTable || undefined} onClick={() => props.onTable(!asTable)}>
-          {asTable ? 'Read as a map' : 'Read as a table'}
+          {asTable ? (narrow ? 'Map' : 'Read as a map') : narrow ? 'Table' : 'Read as a table'}
         </WordButton>
       </div>
       {editable && props.sentence}

@@ -12,8 +12,10 @@ import type { AllowedGround } from './use-allowed.ts';
  */
 export function useLookStart(site: Site, allowed: AllowedGround): QuickLookStart | undefined {
   const { id, grid, layers, plant, outlook } = site;
-  const composed = composeRunSpec(site, { works: [] }, { mode: 'mean-field', seed: 'quick look' });
-  const { spec } = composed;
+  const { spec } = useMemo(
+    () => composeRunSpec(site, { works: [] }, { mode: 'mean-field', seed: 'quick look' }),
+    [site],
+  );
   const rasters = layers.map(({ hash, noData }) => ({ hash, noData }));
   const fetched = useQuery({
     queryKey: ['look-start', id, grid, rasters, plant.rates, outlook, spec?.layers],

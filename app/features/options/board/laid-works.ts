@@ -44,6 +44,6 @@ export function laidWorks(
   const places = points.map(([x, y]): [number, number] => [toCentimetre(x), toCentimetre(y)]);
   const works: Work[] = isClumpPattern(tool)
     ? [{ kind: 'clumps', id: newId(), set: id, year, points: places, each: 1 }]
-    : places.flatMap(([x, y]) => plantedMound(newId(), mound, { x, y, year, set: id }));
+    : places.flatMap(([x, y]) => plantedMound(newId, mound, { x, y, year, set: id }));
   return { works: places.length > 0 ? works : [], set };
 }

@@ -2,7 +2,6 @@ import type { Work } from '#contract/works.ts';
 import type { Area } from '#sim-core/spec/run-spec.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { GroundPoint } from '#app/map/rings.ts';
-import { copyIds } from './planted-mounds.ts';
 
 const toCentimetre = (metres: number) => Math.round(metres * 100) / 100;
 
@@ -20,15 +19,8 @@ export function movedWork(work: Work, dx: number, dy: number): Work {
 }
 
 /** Copies with ids of their own, moved by so many metres. They were not laid as a set. */
-export function copiedWorks(works: readonly Work[], dx: number, dy: number, newId: () => string): Work[] {
-  const ids = copyIds(works, newId);
-  return works.map((work) => ({
-    ...movedWork(work, dx, dy),
-    id: ids.get(work.id) ?? newId(),
-    set: undefined,
-    name: undefined,
-  }));
-}
+export const copiedWorks = (works: readonly Work[], dx: number, dy: number, newId: () => string): Work[] =>
+  works.map((work) => ({ ...movedWork(work, dx, dy), id: newId(), set: undefined, name: undefined }));
 
 /** The middle of the cell that holds a place (also beyond the site, as if the cells went on). */
 export function snappedToMiddle({ originX, originY, cellSize }: Grid, [x, y]: GroundPoint): GroundPoint {

@@ -1,31 +1,37 @@
 // @vitest-environment node
 import { expect, it } from 'vitest';
-import { copyIds, partnerOf, plantedMound, withoutPlanted, withPartners } from './planted-mounds.ts';
+import type { Work } from '#contract/works.ts';
+import { plantedMound, withoutPlanted, withPartners } from './planted-mounds.ts';
 
 const pen = { radius: 1.5, strength: 1, halo: 1, clumps: 9 };
 const at = { x: 10, y: 20, year: 2027, set: 's' };
-const pair = plantedMound('a', pen, at);
+let n = 0;
+const pair = plantedMound(() => `w${n++}`, pen, at);
+const disc: Work = {
+  kind: 'planting',
+  id: 'disc',
+  year: 2027,
+  cover: 0.5,
+  area: { shape: 'disc', x: 10, y: 20, radius: 1 },
+};
+const elsewhere: Work = { kind: 'clumps', id: 'else', year: 2027, each: 1, points: [[11, 20]] };
 
 it('sets clumps on a mound, in its middle and its year, unless there are none', () => {
   expect(pair).toMatchObject([
-    { kind: 'mound', id: 'a', set: 's', x: 10, y: 20, year: 2027, radius: 1.5 },
-    { kind: 'clumps', id: 'a-p', set: 's', points: [[10, 20]], each: 9, year: 2027 },
+    { kind: 'mound', id: 'w0', set: 's', x: 10, y: 20, year: 2027, radius: 1.5 },
+    { kind: 'clumps', id: 'w1', set: 's', points: [[10, 20]], each: 9, year: 2027 },
   ]);
   expect(pair[0]).not.toHaveProperty('clumps');
-  expect(plantedMound('a', { ...pen, clumps: 0 }, at)).toHaveLength(1);
+  expect(plantedMound(() => 'm', { ...pen, clumps: 0 }, at)).toHaveLength(1);
 });
 
-it('takes both where one is meant, and nothing that is not there', () => {
-  expect([partnerOf('a'), partnerOf('a-p')]).toEqual(['a-p', 'a']);
-  expect(withPartners(['a-p'], pair)).toEqual(new Set(['a-p', 'a']));
-  expect(withPartners(['a'], pair.slice(0, 1))).toEqual(new Set(['a']));
-  expect(withoutPlanted(pair)).toEqual(pair.slice(0, 1));
-  expect(withoutPlanted(pair.slice(1))).toEqual(pair.slice(1));
-});
-
-it('gives copies ids that still belong together, and clumps copied alone one of their own', () => {
-  let n = 0;
-  const ids = copyIds([...pair].reverse(), () => `n${n++}`);
-  expect([ids.get('a'), ids.get('a-p')]).toEqual(['n0', 'n0-p']);
-  expect(copyIds(pair.slice(1), () => 'alone').get('a-p')).toBe('alone');
+it('takes a mound and what is planted on it together, whichever of them is meant', () => {
+  const works = [...pair, disc, elsewhere];
+  for (const id of ['w0', 'w1', 'disc'])
+    expect([...withPartners([id], works)].sort()).toEqual(['disc', 'w0', 'w1']);
+  expect([...withPartners(['else'], works)]).toEqual(['else']);
+  // Without a mound below them, plantings of one place are their own.
+  expect([...withPartners(['w1'], [pair[1], disc])]).toEqual(['w1']);
+  expect(withoutPlanted(works).map((work) => work.id)).toEqual(['w0', 'else']);
+  expect(withoutPlanted([pair[1], disc])).toHaveLength(2);
 });

@@ -9,7 +9,7 @@ import { placeOf } from '../works-words.ts';
 import { holdAt, pulled, withoutCorner, type Hold } from './corners.ts';
 import { movedWork, snappedToCorner, snappedToMiddle } from './move-works.ts';
 import { nextOnMap } from './find-works.ts';
-import { partnerOf, withoutPlanted, withPartners } from './planted-mounds.ts';
+import { withoutPlanted, withPartners } from './planted-mounds.ts';
 
 /** What is held while it is dragged: works, a corner of an outline, or the far corner of a box. */
 export type Grip =
@@ -102,7 +102,8 @@ export function selectTool(context: SelectContext): MapTool {
         return;
       }
       if (isWork(at.id)) {
-        const others = [...selected].filter((id) => id !== at.id && id !== partnerOf(at.id ?? ''));
+        const pressed = withPartners([at.id], works);
+        const others = [...selected].filter((id) => !pressed.has(id));
         context.select(at.shift ? (selected.has(at.id) ? others : [...others, at.id]) : [at.id]);
       } else if (at.id !== undefined) context.onSurveyed(at.id, false);
       else if (!at.shift) context.select([]);

@@ -1,7 +1,30 @@
 import { useId } from 'react';
+import { BlankSelect } from '#app/components/blank.tsx';
 import { FlagSymbol, PlantingSymbol } from '#app/components/symbols.tsx';
 import { classNames } from '#app/lib/class-names.ts';
 import { toolGroups, type BoardTool } from './board-tools.ts';
+
+/** The same tools where there is little room: one of a list. */
+export function ToolList(props: { tool: BoardTool; onTool: (tool: BoardTool) => void }) {
+  return (
+    <BlankSelect
+      label="Tool"
+      className="text-[15px]"
+      value={props.tool}
+      onChange={(event) => props.onTool(event.target.value as BoardTool)}
+    >
+      {toolGroups.map((group) => (
+        <optgroup key={group.name} label={group.name}>
+          {group.tools.map(({ tool, label }) => (
+            <option key={tool} value={tool}>
+              {group.symbol ? `${group.name}: ${label}` : label}
+            </option>
+          ))}
+        </optgroup>
+      ))}
+    </BlankSelect>
+  );
+}
 
 /** The tools in words, as radio buttons of one choice: arrow keys go from one to the next, letters choose on the map. */
 export function ToolChoice(props: { tool: BoardTool; onTool: (tool: BoardTool) => void }) {

@@ -8,7 +8,7 @@ import { isAreaTool, isPattern, toolOfLetter, type BoardTool } from './board-too
 import { worksProblem, type RefusedPlace, type WorksGround } from './check-works.ts';
 import { pulled } from './corners.ts';
 import { worksInBox } from './find-works.ts';
-import { partnerOf, withPartners } from './planted-mounds.ts';
+import { withPartners } from './planted-mounds.ts';
 import { copiedWorks, movedWork, snappedToMiddle } from './move-works.ts';
 import { reshapable, selectTool, withRing, type Grip } from './select-tool.ts';
 import { noSketch, sketchStep, type Sketch, type SketchEvent } from './sketch.ts';
@@ -214,9 +214,10 @@ function shownWorks(
 ): readonly Work[] {
   if (grip?.kind === 'works') {
     const [dx, dy] = grip.by;
-    const moves = (id: string) =>
-      selected.has(grip.id) ? selected.has(id) : id === grip.id || id === partnerOf(grip.id);
-    return dx === 0 && dy === 0 ? works : works.map((w) => (moves(w.id) ? movedWork(w, dx, dy) : w));
+    const moved = selected.has(grip.id) ? selected : withPartners([grip.id], works);
+    return dx === 0 && dy === 0
+      ? works
+      : works.map((work) => (moved.has(work.id) ? movedWork(work, dx, dy) : work));
   }
   const shape = grip?.kind === 'corner' && grip.to ? reshapable(works, selected) : undefined;
   if (!shape || grip?.kind !== 'corner' || !grip.to) return works;

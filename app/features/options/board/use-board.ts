@@ -97,9 +97,7 @@ export function useBoard(setting: BoardSetting): DrawingBoard {
     },
     onRefused: setRefused,
     moundAt: (x, y) =>
-      mound.mound && typeof year === 'number'
-        ? plantedMound(newWorkId(), mound.mound, { x, y, year })
-        : miss(),
+      mound.mound && typeof year === 'number' ? plantedMound(newWorkId, mound.mound, { x, y, year }) : miss(),
     workOf,
     onSketch: () => {
       if (!isPattern(tool) || pens.patterns[tool].region === 'outline') return;

@@ -1,12 +1,7 @@
 import type { ClosingSummary } from '#sim-core/plan/closing-tally.ts';
 import { quickLookLeavesOut } from '#sim-core/plan/quick-look.ts';
-import { formatArea } from '#app/lib/formats.ts';
-
-const shares = [
-  { key: 'half', words: 'half' },
-  { key: 'eighty', words: '80 %' },
-  { key: 'ninety', words: '90 %' },
-] as const;
+import { formatArea, formatShare } from '#app/lib/formats.ts';
+import { bareClosing } from './bare-closing.ts';
 
 /** When half, 80 and 90 % of the ground would have closed, by growth alone, and how much sooner than under Wait. */
 export function ClosingMeter(props: {
@@ -14,25 +9,27 @@ export function ClosingMeter(props: {
   wait: ClosingSummary | undefined;
   lastYear: number;
 }) {
-  const { summary, wait, lastYear } = props;
+  const { lastYear } = props;
+  const summary = props.summary && bareClosing(props.summary);
+  const wait = props.wait && bareClosing(props.wait);
   return (
     <section aria-label="Quick look" className="mt-3">
       <div className="flex items-baseline justify-between gap-x-3">
         <h2 className="text-body font-bold">
-          Expected closing{summary ? ` of ${formatArea(summary.closable)}` : ''}
+          Expected closing{summary ? ` of ${formatArea(summary.bare)}` : ''}
         </h2>
-        <span className="text-note text-ink-2">quick look, one future</span>
+        <span className="text-note text-ink-2">bare today; one future</span>
       </div>
       {summary ? (
         <dl className="mt-0.5 grid grid-cols-3 gap-x-3" role="status">
-          {shares.map(({ key, words }) => (
-            <div key={key} className="flex flex-col-reverse justify-end">
+          {summary.years.map(({ share, year }, i) => (
+            <div key={share} className="flex flex-col-reverse justify-end">
               <dt className="text-note">
-                {words}
-                <span className="block text-ink-2">{againstWait(summary[key], wait?.[key])}</span>
+                {share === 0.5 ? 'half' : formatShare(share)}
+                <span className="block text-ink-2">{wait && againstWait(year, wait.years[i].year)}</span>
               </dt>
               <dd className="-ml-px text-[28px] leading-[1.1] font-light tracking-[-0.02em]">
-                {summary[key] ?? <span className="text-body">after {lastYear}</span>}
+                {year ?? <span className="text-body">after {lastYear}</span>}
               </dd>
             </div>
           ))}

@@ -11,7 +11,7 @@ const labels = (...lines: GroundPoint[][]) =>
 
 it('writes years along their lines, never on their head', () => {
   for (const angle of [0, 0.5, 1.5, 2, 3, -1, -3]) {
-    const [label] = labels(straight(angle, 20));
+    const [label] = labels(straight(angle, 60));
     expect(Math.abs(label.angle ?? 9)).toBeLessThanOrEqual(Math.PI / 2 + 1e-9);
     // Along the line, with north up on the ground and down on the screen.
     expect(Math.abs(Math.sin((label.angle ?? 9) + angle))).toBeLessThan(1e-9);
@@ -19,6 +19,6 @@ it('writes years along their lines, never on their head', () => {
 });
 
 it('writes none on a line too short for it, and several on a long one', () => {
-  expect(labels(straight(0, 10))).toEqual([]);
-  expect(labels(straight(0, 20), straight(1, 400))).toHaveLength(4);
+  expect(labels(straight(0, 40))).toEqual([]);
+  expect(labels(straight(0, 60), straight(1, 500))).toHaveLength(4);
 });

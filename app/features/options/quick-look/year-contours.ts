@@ -3,8 +3,8 @@ import type { MapContour } from '#app/map/paint-overlay.ts';
 import type { GroundPoint } from '#app/map/rings.ts';
 
 /** Points of a line that is worth a year of its own, and from one label on it to the next. */
-const worth = 14;
-const between = 120;
+const worth = 48;
+const between = 160;
 
 /** Lines of closing years as the map paints them, with their years along them, to be read from below. */
 export const yearContours = (lines: readonly YearLine[]): MapContour[] =>

@@ -69,7 +69,7 @@ export function useSuggest(input: {
       footholds && asked
         ? footholds
             .slice(0, taken)
-            .flatMap(({ x, y }) => plantedMound(newWorkId(), asked.mound, { x, y, year: asked.year }))
+            .flatMap(({ x, y }) => plantedMound(newWorkId, asked.mound, { x, y, year: asked.year }))
         : noWorks,
     [footholds, asked, taken],
   );
