@@ -28,7 +28,12 @@ export function closingYears(capacity: Uint8Array, vigour: Uint8Array, reference
     update(cover, year) {
       let closing = 0;
       for (let i = 0; i < years.length; i++)
-        if (years[i] === stillOpen && cover[i] >= 0.5 * references[vigour[i]] * (capacity[i] / 255)) {
+        // Bare ground, most of many maps, is told by its first two numbers: a reference that can close is above 0.
+        if (
+          years[i] === stillOpen &&
+          cover[i] > 0 &&
+          cover[i] >= 0.5 * references[vigour[i]] * (capacity[i] / 255)
+        ) {
           years[i] = year;
           closing++;
         }

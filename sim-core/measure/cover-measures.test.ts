@@ -54,7 +54,12 @@ test('agrees with a flood fill on any map', () => {
       }
       sizes.push(size);
     }
-    return { patches: sizes.length, largestPatch: Math.max(0, ...sizes) };
+    let edges = 0;
+    cells.forEach((lives, at) => {
+      if (at % width > 0 && lives !== cells[at - 1]) edges++;
+      if (at >= width && lives !== cells[at - width]) edges++;
+    });
+    return { patches: sizes.length, largestPatch: Math.max(0, ...sizes), edges };
   };
   fc.assert(
     fc.property(

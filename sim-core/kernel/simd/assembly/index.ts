@@ -1,7 +1,7 @@
 import { draw } from './draws';
 import { feed, grazed, lostToGrazers, moveOn, startGrazers, visit } from './grazers';
-import { hear, lookAround, spreadRow } from './neighbourhood';
-import { nextRun, runEnd } from './runs';
+import { hear, heardBy, lookAround, spreadRow } from './neighbourhood';
+import { clear, nextRun, runEnd } from './runs';
 import { weigh } from './chances';
 import { comeThrough } from './outcomes';
 import {
@@ -12,7 +12,6 @@ import {
   droughtLoss,
   flagStride,
   groups,
-  heardFlags,
   height,
   lastLanes,
   lossWidth,
@@ -76,7 +75,8 @@ function advance(y: i32, index: u32): void {
   v128.store(lostRow, i64x2.splat(0));
   v128.store(lostRow, i64x2.splat(0), 16);
   if (grazed) visit(y);
-  for (let g = nextRun(heardFlags, 0, groups); g >= 0; g = nextRun(heardFlags, runEnd, groups)) {
+  const heard = heardBy(y);
+  for (let g = nextRun(heard, 0, groups); g >= 0; g = nextRun(heard, runEnd, groups)) {
     const end = runEnd;
     for (let from = g; from < end; from += stretch) {
       const to = min(from + stretch, end);
@@ -87,6 +87,8 @@ function advance(y: i32, index: u32): void {
       if (counts) draw(y, from, to, index);
     }
   }
+  // The row that comes to stand here later starts from nothing.
+  clear(heard, flagStride);
   reckonLosses();
   if (grazed) moveOn(y);
 }

@@ -1,4 +1,4 @@
-import { clear, copy, nextRun, runEnd } from './runs';
+import { clear, copy, mark, nextRun, runEnd } from './runs';
 import {
   above,
   alive,
@@ -70,7 +70,12 @@ function along(out: usize, from: i32, to: i32): void {
   }
 }
 
-/** Spreads row y along itself into its slot of the ring. */
+/** Flags of the groups of row y that hear something. */
+export function heardBy(y: i32): usize {
+  return heardFlags + <usize>(y % slots) * flagStride;
+}
+
+/** Spreads row y along itself into its slot of the ring, and marks who hears it. */
 export function spreadRow(y: i32): void {
   const slot = y % slots;
   const out = spread + <usize>slot * rowBytes;
@@ -86,10 +91,7 @@ export function spreadRow(y: i32): void {
   for (let g = nextRun(source, 0, groups); g >= 0; g = nextRun(source, runEnd, groups)) {
     any = true;
     copy(padded + (g << 4), cells + (g << 4), (runEnd - g) << 4);
-    const from = max(0, g - reach);
-    const to = min(groups, runEnd + reach);
-    if (to - from > 64) memory.fill(flags + from, 1, to - from);
-    else for (let at = from; at < to; at++) store<u8>(flags + at, 1);
+    mark(flags, max(0, g - reach), min(groups, runEnd + reach));
   }
   if (!any) return;
   for (let d = 0; d < radius; d++) {
@@ -99,7 +101,13 @@ export function spreadRow(y: i32): void {
       mirror ? load<f32>(cells + (mirrored(width + d, width) << 2)) : 0,
     );
   }
-  for (let g = nextRun(flags, 0, groups); g >= 0; g = nextRun(flags, runEnd, groups)) along(out, g, runEnd);
+  const first = max(0, y - radius);
+  const last = min(height - 1, y + radius);
+  for (let g = nextRun(flags, 0, groups); g >= 0; g = nextRun(flags, runEnd, groups)) {
+    along(out, g, runEnd);
+    // A row that is heard by way of the mirror is heard from no farther than this.
+    for (let at = first; at <= last; at++) mark(heardBy(at), g, runEnd);
+  }
   for (let g = nextRun(source, 0, groups); g >= 0; g = nextRun(source, runEnd, groups))
     clear(padded + (g << 4), (runEnd - g) << 4);
 }
@@ -109,23 +117,11 @@ function slotOf(y: i32): i32 {
   return mirror ? mirrored(y, height) % slots : slots;
 }
 
-/** Finds the spread rows around row y, and which of its groups hear something. */
+/** Finds the spread rows around row y. */
 export function lookAround(y: i32): void {
   for (let d = 0; d <= radius; d++) {
-    store<i32>(above + (d << 2), slotOf(y - d));
-    store<i32>(below + (d << 2), slotOf(y + d));
-  }
-  for (let g = 0; g < groups; g += 16) {
-    let any = v128.load(spreadFlags + g + load<i32>(above) * flagStride);
-    for (let d = 1; d <= radius; d++) {
-      any = v128.or(any, v128.load(spreadFlags + g + load<i32>(above + (d << 2)) * flagStride));
-      any = v128.or(any, v128.load(spreadFlags + g + load<i32>(below + (d << 2)) * flagStride));
-    }
-    v128.store(heardFlags + g, any);
-  }
-  for (let d = 0; d <= radius; d++) {
-    store<usize>(above + (d << 2), spread + <usize>load<i32>(above + (d << 2)) * rowBytes);
-    store<usize>(below + (d << 2), spread + <usize>load<i32>(below + (d << 2)) * rowBytes);
+    store<usize>(above + (d << 2), spread + <usize>slotOf(y - d) * rowBytes);
+    store<usize>(below + (d << 2), spread + <usize>slotOf(y + d) * rowBytes);
   }
 }
 

@@ -33,7 +33,7 @@ export let slots: i32 = 0;
 export let rowBytes: i32 = 0;
 export let spread: usize = 0;
 export let spreadFlags: usize = 0;
-/** groups of the present row that hear something */
+/** groups that hear something, of the present row and those below that a spread row reaches; all 0 between steps */
 export let heardFlags: usize = 0;
 /** cell 0 of one row of cover with room for its boundary on both sides; 0 between uses, but for the boundary */
 export let padded: usize = 0;
@@ -113,7 +113,7 @@ export function layOut(
   alive = room(<usize>height * flagStride);
   spread = room(<usize>(slots + 1) * rowBytes);
   spreadFlags = room(<usize>(slots + 1) * flagStride);
-  heardFlags = room(flagStride);
+  heardFlags = room(<usize>slots * flagStride);
   const side = (radius + 3) & ~3;
   padded = room(<usize>((side << 1) << 2) + rowBytes) + (side << 2);
   taps = room((radius + 1) << 2);
