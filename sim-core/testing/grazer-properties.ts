@@ -65,6 +65,14 @@ export function describeGrazerProperties(name: string, createKernel: CreateKerne
       expect(sumOf(moved('bare'))).toBeLessThan(80);
     });
 
+    test('those that do not spread stay where they are', () => {
+      const rates = { ...still, initialGrazers: 3 };
+      const { grazers } = run({ width: 7, height: 5, grazers: { rates, variance: 1e-9 } }, 0, 4, (kernel) => {
+        kernel.grazers![17] = 9;
+      });
+      expect([...grazers]).toEqual(Array.from({ length: 35 }, (_, i) => (i === 17 ? 9 : 3)));
+    });
+
     test('without plants as many stay as come in: ι Δt / (1 − e^(−Δt (m + p)))', () => {
       const input: SetupInput = { width: 9, height: 9, stepsPerYear: 4, grazers: {} };
       const { grazerMortality: m, predation: p, grazerImmigration: arrivals } = grazerParameters;

@@ -37,9 +37,6 @@ let ring: usize = 0;
 let padded: usize = 0;
 /** Δt f φ₁ of each cell of the present row */
 let plenty: usize = 0;
-/** the spread rows above and below at each distance */
-let aboves: usize = 0;
-let belows: usize = 0;
 let spread: i32 = 0;
 
 /** α/255, and the limits of G, four like floats each, as in `vectors.ts` */
@@ -69,8 +66,6 @@ export function layOutGrazers(radius: i32): bool {
   calmRow = room(rowBytes);
   plenty = room(rowBytes);
   grazerTaps = room((reach + 1) << 2);
-  aboves = room((reach + 1) << 2);
-  belows = room((reach + 1) << 2);
   lostToGrazers = room(16);
   return claim();
 }
@@ -129,25 +124,17 @@ export function feed(from: i32, to: i32): void {
 
 /** After the plants of row y: G' = min(G_max, (T_G * G) e^(Δt (f φ₁ − m − p (1 − D) − p_M M)) + ι Δt), in place. */
 export function moveOn(y: i32): void {
-  for (let d = 0; d <= reach; d++) {
-    store<usize>(aboves + (d << 2), rowAt(y - d));
-    store<usize>(belows + (d << 2), rowAt(y + d));
-  }
+  // The hazards of this row are reckoned with: their room serves for the sums.
+  const sums = calmRow;
+  startSums(sums, rowAt(y));
+  for (let d = 1; d <= reach; d++) addPair(sums, rowAt(y - d), rowAt(y + d), d);
   const row = <usize>y * <usize>width;
   const bytes = refuge + row;
   const cells = grazers + (row << 2);
   const last = groups - 1;
   for (let g = 0; g < groups; g++) {
     const at = (<usize>g) << 4;
-    let sum = f32x4.mul(v128.load32_splat(grazerTaps), v128.load(load<usize>(aboves) + at));
-    for (let i = 4; i <= reach << 2; i += 4)
-      sum = f32x4.add(
-        sum,
-        f32x4.mul(
-          v128.load32_splat(grazerTaps + i),
-          f32x4.add(v128.load(load<usize>(aboves + i) + at), v128.load(load<usize>(belows + i) + at)),
-        ),
-      );
+    const sum = v128.load(sums + at);
     const refugeLoss = f32x4.mul(v128.load(refugeLossPerByte), floats(bytes + (at >> 2)));
     const change = exp(f32x4.sub(f32x4.add(v128.load(plenty + at), v128.load(decline)), refugeLoss));
     const next = f32x4.pmin(v128.load(limit), f32x4.add(f32x4.mul(sum, change), v128.load(arrivals)));
@@ -169,20 +156,27 @@ function spreadRow(y: i32): void {
       mirror ? load<f32>(cells + (mirrored(width + d, width) << 2)) : 0,
     );
   }
-  for (let g = 0; g < groups; g++) {
-    const at = padded + (g << 4);
-    let left = at;
-    let right = at;
-    let sum = f32x4.mul(v128.load32_splat(grazerTaps), v128.load(at));
-    for (let i = 4; i <= reach << 2; i += 4) {
-      left -= 4;
-      right += 4;
-      sum = f32x4.add(
-        sum,
-        f32x4.mul(v128.load32_splat(grazerTaps + i), f32x4.add(v128.load(left), v128.load(right))),
-      );
-    }
-    v128.store(out + (g << 4), sum);
+  startSums(out, padded);
+  for (let d = 1; d <= reach; d++) addPair(out, padded - (d << 2), padded + (d << 2), d);
+}
+
+/** Starts the sums of a row with what it weighs itself. */
+function startSums(sums: usize, row: usize): void {
+  const tap = v128.load32_splat(grazerTaps);
+  const end = (<usize>groups) << 4;
+  for (let at: usize = 0; at < end; at += 16) v128.store(sums + at, f32x4.mul(tap, v128.load(row + at)));
+}
+
+/**
+ * Adds what the two rows at distance d weigh. A distance at a time, not a cell: sums of many cells do not wait for one
+ * another, and the rows lie in the nearest cache.
+ */
+function addPair(sums: usize, one: usize, other: usize, d: i32): void {
+  const tap = v128.load32_splat(grazerTaps + (d << 2));
+  const end = (<usize>groups) << 4;
+  for (let at: usize = 0; at < end; at += 16) {
+    const both = f32x4.add(v128.load(one + at), v128.load(other + at));
+    v128.store(sums + at, f32x4.add(v128.load(sums + at), f32x4.mul(tap, both)));
   }
 }
 
