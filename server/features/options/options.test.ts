@@ -12,6 +12,9 @@ let path: string;
 
 const mound = { kind: 'mound', year: 2027, x: 412_203, y: 5_301_897, radius: 2, strength: 1, halo: 0 };
 
+const fence = { kind: 'fence', year: 2027, strength: 1 };
+const offSite = [[412_200, 5_301_891], [412_212, 5_301_891], [412_206, 5_301_880]]; // prettier-ignore
+
 beforeAll(async () => {
   server = await testServer();
   team = await makeTeam(server, 'Option team');
@@ -175,6 +178,8 @@ describe('options', () => {
     ['works.0.strength', [{ ...mound, strength: 1.2 }]],
     ['works.0.kind', [{ ...mound, kind: 'dam' }]],
     ['works.0.colour', [{ ...mound, colour: 'coral' }]],
+    ['works.0.area', [{ ...fence, area: { shape: 'disc', x: 412_190, y: 5_301_895, radius: 9.9 } }]],
+    ['works.0.area', [{ ...fence, area: { shape: 'polygon', ring: offSite } }]],
     ['works.0.set', [{ ...mound, set: 'gone' }]],
     [
       'works.1.id',
@@ -199,6 +204,10 @@ describe('options', () => {
   ])('with works that cannot be are refused at %s', async (field, works) => {
     const reply = await team.agents.manager.post(path).send({ name: 'Off', works }).expect(400);
     expect(reply.body.fields).toMatchObject([{ field }]);
+  });
+
+  it('take an area that reaches beyond the site', async () => {
+    await make('Overhang', [{ ...fence, area: { shape: 'disc', x: 412_190, y: 5_301_895, radius: 10.1 } }]);
   });
 
   it.each([

@@ -1,7 +1,6 @@
 import type { WorksPreview } from '#contract/option-files.ts';
-import { newWorkId, runActions, workSchema, type Work, type WorkSet } from '#contract/works.ts';
+import { newWorkId, workSchema, type Work, type WorkSet } from '#contract/works.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
-import { prepareWorks } from '#sim-core/process/works.ts';
 import { fieldProblems } from '#sim-core/spec/problems.ts';
 import { checkWorksOnGrid } from '../works-on-grid.ts';
 
@@ -55,9 +54,7 @@ export class FoundWorks {
       );
       return this.problem(row, said.slice(0, 3).join('; '));
     }
-    const wrong =
-      checkWorksOnGrid([data], this.grid)?.message ??
-      prepareWorks(runActions([data]), this.grid).problems[0]?.message;
+    const wrong = checkWorksOnGrid([data], this.grid)?.message;
     if (wrong !== undefined) return this.problem(row, wrong);
     for (const words of filled.assumed) this.assumed.set(words, (this.assumed.get(words) ?? 0) + 1);
     const id = this.ids.has(data.id) ? newWorkId() : data.id;

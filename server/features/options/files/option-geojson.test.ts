@@ -95,7 +95,7 @@ describe('GeoJSON of others', () => {
     [feature({ type: 'Point', coordinates: [lon, lat] }, { kind: 'dam' }), /kind/],
     [feature({ type: 'Point', coordinates: [lon, lat] }, { radius: -1 }), /radius/],
     [feature({ type: 'Point', coordinates: [lon, lat] }, { depth: 1 }), /depth: There is no such field/],
-    [feature({ type: 'Polygon', coordinates: [[[0, 0], [1, 0], [0, 1], [0, 0]]] }, { kind: 'loss', share: 1 }), /reaches no cell/],
+    [feature({ type: 'Polygon', coordinates: [[[0, 0], [1, 0], [0, 1], [0, 0]]] }, { kind: 'loss', share: 1 }), /This loss lies off the site/],
     [{ type: 'Feature', geometry: null }, /no geometry/],
     ['nonsense', /object/],
   ])('is refused feature by feature, and the others are kept', (bad, message) => {
