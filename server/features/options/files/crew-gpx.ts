@@ -1,5 +1,5 @@
 import type { CrewPoint } from './crew-stops.ts';
-import type { Point } from './place-projection.ts';
+import type { Point } from '#server/files/place-projection.ts';
 
 /** A crew point with its place in WGS 84. */
 export type DegreePoint = CrewPoint & { readonly degrees: Point };

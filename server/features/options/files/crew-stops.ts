@@ -1,7 +1,7 @@
 import { mostCrewPoints } from '#contract/option-files.ts';
 import type { Work } from '#contract/works.ts';
 import { ProblemError } from '#server/middleware/problem-error.ts';
-import type { Point } from './place-projection.ts';
+import type { Point } from '#server/files/place-projection.ts';
 import { shortRound } from './short-round.ts';
 
 /** A place for a crew, in the order of visit. */

@@ -15,7 +15,7 @@ import { findOption, findSite } from '../option.repository.ts';
 import { crewCsv } from './crew-csv.ts';
 import { crewGpx, type DegreePoint } from './crew-gpx.ts';
 import { crewPoints } from './crew-stops.ts';
-import { projectionBetween, wgs84 } from './place-projection.ts';
+import { projectionBetween, wgs84 } from '#server/files/place-projection.ts';
 import { pointsCsv } from './points-csv.ts';
 import { readGeoJson } from './read-geojson.ts';
 import { readPointsCsv } from './read-points-csv.ts';

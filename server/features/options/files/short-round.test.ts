@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import type { Point } from './place-projection.ts';
+import type { Point } from '#server/files/place-projection.ts';
 import { shortRound, wayLength } from './short-round.ts';
 
 const orders = (n: number): number[][] =>

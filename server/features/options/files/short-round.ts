@@ -1,4 +1,4 @@
-import type { Point } from './place-projection.ts';
+import type { Point } from '#server/files/place-projection.ts';
 
 /** How far ahead a stretch of the round is tried the other way about; rounds up to this length are tried throughout. */
 const reach = 300;

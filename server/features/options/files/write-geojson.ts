@@ -2,7 +2,7 @@ import type { Option } from '#contract/options.ts';
 import type { Work } from '#contract/works.ts';
 import type { Area } from '#sim-core/spec/run-spec.ts';
 import type { OptionFeature, OptionGeoJson } from './geojson-format.ts';
-import { inDegrees, projectionBetween, wgs84, type Point } from './place-projection.ts';
+import { inDegrees, projectionBetween, wgs84, type Point } from '#server/files/place-projection.ts';
 
 /**
  * An option as GeoJSON, in WGS 84 with nine decimals (a tenth of a millimetre), or in the site's own CRS with all digits.
