@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { maximumYears } from '#sim-core/spec/limits.ts';
 import { boundarySchema, ratesSchema, stepsPerYearSchema } from '#sim-core/spec/run-spec.ts';
 import { processesSchema } from '#sim-core/spec/processes.ts';
+import { drawnWeatherSchema } from '#sim-core/spec/weather-source.ts';
 import { endpoint, id, instant, text } from './endpoint.ts';
 import { featureSchema } from './features.ts';
 import { gridSchema } from './grid.ts';
@@ -24,6 +25,8 @@ export const outlookSchema = z
     boundary: boundarySchema,
     /** one value a year, Palmer scale, from the year after the survey */
     droughtIndex: z.array(z.number().min(-15, 'Between −15 and 15').max(15, 'Between −15 and 15')),
+    /** weather that each replicate of an ensemble draws for itself; null: the values above in all of them */
+    drawn: drawnWeatherSchema.nullable().default(null),
   })
   .refine((o) => o.droughtIndex.length === o.years, {
     path: ['droughtIndex'],

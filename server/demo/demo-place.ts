@@ -37,4 +37,13 @@ export const demoOutlook: Outlook = {
   stepsPerYear: 1,
   boundary: 'mirror',
   droughtIndex,
+  drawn: {
+    kind: 'renewal',
+    returnInterval: { law: 'exponential', mean: 14 },
+    sinceLatest: 2,
+    depth: -4,
+    depthSpread: 0.4,
+    length: { law: 'fixed', years: 2 },
+    between: 0,
+  },
 };

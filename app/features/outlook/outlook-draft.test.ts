@@ -8,6 +8,7 @@ const outlook: Outlook = {
   stepsPerYear: 1,
   boundary: 'mirror',
   droughtIndex: [-1, -2, -3],
+  drawn: null,
 };
 const start = startDraft(outlook);
 

@@ -2,6 +2,7 @@ import { outlookSchema, type Outlook } from '#contract/sites.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
 import { maximumYears } from '#sim-core/spec/limits.ts';
 import type { Boundary, StepsPerYear } from '#sim-core/spec/run-spec.ts';
+import { drawnWeather, startDrawn, type DrawnDraft } from './drawn-draft.ts';
 import type { SeriesEntry } from './parse-series.ts';
 
 /**
@@ -15,6 +16,7 @@ export interface OutlookDraft {
   readonly stepsPerYear: StepsPerYear;
   readonly boundary: Boundary;
   readonly values: ReadonlyMap<number, number>;
+  readonly drawn: DrawnDraft;
   /** survey year and horizon as they last made sense: what the drawing shows while somebody types */
   readonly span: { readonly surveyYear: number; readonly years: number };
 }
@@ -26,16 +28,18 @@ export type OutlookEvent =
   | { type: 'value'; year: number; value: number }
   | { type: 'constant'; value: number }
   | { type: 'laid'; values: ReadonlyMap<number, number> }
+  | { type: 'drawn'; change: Partial<DrawnDraft> }
   | { type: 'reset'; outlook: Outlook };
 
 export function startDraft(outlook: Outlook): OutlookDraft {
-  const { surveyYear, years, stepsPerYear, boundary, droughtIndex } = outlook;
+  const { surveyYear, years, stepsPerYear, boundary, droughtIndex, drawn } = outlook;
   return {
     surveyYear: String(surveyYear),
     years: String(years),
     stepsPerYear,
     boundary,
     values: new Map(droughtIndex.map((value, i) => [surveyYear + 1 + i, value])),
+    drawn: startDrawn(drawn),
     span: { surveyYear, years },
   };
 }
@@ -59,6 +63,8 @@ export function outlookDraft(draft: OutlookDraft, event: OutlookEvent): OutlookD
       return { ...draft, values: new Map(simulatedYears(draft).map((year) => [year, tidy(event.value)])) };
     case 'laid':
       return { ...draft, values: new Map([...draft.values, ...event.values]) };
+    case 'drawn':
+      return { ...draft, drawn: { ...draft.drawn, ...event.change } };
     case 'reset':
       return startDraft(event.outlook);
   }
@@ -101,11 +107,15 @@ export function draftErrors(draft: OutlookDraft): { surveyYear?: string; years?:
 export function draftOutlook(draft: OutlookDraft): Outlook | undefined {
   if (Object.keys(draftErrors(draft)).length > 0) return undefined;
   const { stepsPerYear, boundary, span } = draft;
+  const listed = simulatedYears(draft).map((year) => ({ year, value: indexOf(draft, year) }));
+  const drawn = drawnWeather(draft.drawn, listed);
+  if (drawn === undefined) return undefined;
   const outlook = outlookSchema.safeParse({
     ...span,
     stepsPerYear,
     boundary,
-    droughtIndex: simulatedYears(draft).map((year) => indexOf(draft, year)),
+    droughtIndex: listed.map(({ value }) => value),
+    drawn,
   });
   return outlook.data;
 }

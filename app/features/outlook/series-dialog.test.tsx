@@ -11,6 +11,7 @@ const draft = startDraft({
   stepsPerYear: 1,
   boundary: 'mirror',
   droughtIndex: [0, 0, 0],
+  drawn: null,
 });
 
 function open() {

@@ -1,5 +1,5 @@
 import { formatCounted, formatNumber, formatShare } from '#app/lib/formats.ts';
-import { ReadAsTable } from './read-as-table.tsx';
+import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { fillFrom, yearsToReach, type Implications } from './implied.ts';
 
 const width = 312;

@@ -1,6 +1,6 @@
 import type { Rates } from '#sim-core/spec/parameters.ts';
 import { formatNumber, formatShare } from '#app/lib/formats.ts';
-import { ReadAsTable } from './read-as-table.tsx';
+import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { yearlyLoss, type Implications } from './implied.ts';
 
 const width = 312;

@@ -20,6 +20,7 @@ const site = (change: Partial<Site> = {}) =>
       stepsPerYear: 1,
       boundary: 'mirror',
       droughtIndex: [0, -2.3, -2.4],
+      drawn: null,
     },
     outlookSet: false,
     options: 1,
@@ -65,13 +66,14 @@ describe('siteSteps', () => {
       stepsPerYear: 1,
       boundary: 'mirror',
       droughtIndex: [-3, -4],
+      drawn: null,
     } as const;
-    expect(step('outlook', { outlookSet: true, outlook: { ...two, droughtIndex: [-3, -4] } }).state).toBe(
-      '2 years, 2 of drought',
-    );
-    expect(step('outlook', { outlookSet: true, outlook: { ...two, droughtIndex: [0, 1] } }).state).toBe(
-      '2 years, no drought',
-    );
+    expect(
+      step('outlook', { outlookSet: true, outlook: { ...two, droughtIndex: [-3, -4], drawn: null } }).state,
+    ).toBe('2 years, 2 of drought');
+    expect(
+      step('outlook', { outlookSet: true, outlook: { ...two, droughtIndex: [0, 1], drawn: null } }).state,
+    ).toBe('2 years, no drought');
   });
 
   it('counts options beside Wait, and runs that are under way', () => {

@@ -5,6 +5,7 @@ import { LinkButton } from '#app/components/link-button.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { SaveBar } from '#app/components/save-bar.tsx';
 import { sayDone } from '#app/components/toast.tsx';
+import { DrawnWeatherSection } from '#app/features/outlook/drawn-weather.tsx';
 import { DroughtChart } from '#app/features/outlook/drought-chart.tsx';
 import {
   draftOutlook,
@@ -83,6 +84,13 @@ export function Page() {
                 : ' Modellers and admins of the team change the outlook.'}
             </p>
           </div>
+          <DrawnWeatherSection
+            draft={draft.drawn}
+            onChange={(change) => tell({ type: 'drawn', change })}
+            editable={mayKeepGround}
+            outlook={outlook}
+            tolerance={tolerance}
+          />
           <YearTable {...reading} />
           {save.error && <ProblemNotice error={save.error} title="Not saved." className="mt-3" />}
           {pasting && (
@@ -103,7 +111,7 @@ export function Page() {
             busy={save.isPending}
             words={
               outlook === undefined
-                ? 'Mend the sentence above the drawing first.'
+                ? 'Mend the blanks that are marked first.'
                 : edited !== undefined
                   ? 'Changed and not saved.'
                   : 'Starting values, not yet looked at.'

@@ -14,6 +14,7 @@ const defaultOutlook = (thisYear: number): Outlook => ({
   stepsPerYear: 1,
   boundary: 'mirror',
   droughtIndex: Array.from({ length: defaultHorizon }, () => 0),
+  drawn: null,
 });
 
 const defaultPlant: Plant = { name: 'Plant', rates: defaultRates };

@@ -80,6 +80,7 @@ export const siteFixture = (more: Partial<Site> = {}): Site => ({
     stepsPerYear: 1,
     boundary: 'mirror',
     droughtIndex: [0, -1, -4, 0],
+    drawn: null,
   },
   outlookSet: true,
   ...more,
