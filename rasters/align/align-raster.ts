@@ -10,7 +10,7 @@ import type { AlignmentPlan } from './alignment-plan.ts';
 import { cellMaps, onLattice } from './cell-map.ts';
 import { copyCells } from './copy-cells.ts';
 import { outputCells } from './output-cells.ts';
-import { pause, type Progress } from './progress.ts';
+import type { Progress } from './progress.ts';
 import { resampleTiles } from './resample-tiles.ts';
 import { sourceWindow } from './source-window.ts';
 import { wholeCells } from './plan-alignment.ts';
@@ -49,7 +49,7 @@ export async function alignRaster(
   });
   const band = description.bands[plan.band - 1];
   const blocks = openBand(source, layout, plan.band);
-  await pause(progress);
+  progress.signal?.throwIfAborted();
   const made = await (isPlainCopy(plan, blocks)
     ? copyPlain(blocks, description, plan, band, progress)
     : resample(blocks, description, plan, band, { ...progress, keptBytes }));

@@ -1,7 +1,7 @@
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { BandBlocks } from '#rasters/read/band-blocks.ts';
 import { outputCells } from './output-cells.ts';
-import { pause, type Progress } from './progress.ts';
+import { pacer, type Progress } from './progress.ts';
 import type { Raster } from '#rasters/read/raster.ts';
 import type { RasterDataType } from '#rasters/read/tiff-layout.ts';
 
@@ -28,6 +28,7 @@ export async function copyCells(
   const out = outputCells(target.width * target.height, dataType, noData);
   markMissing(out.miss, target, shift, layout);
   const { values } = out.result;
+  const tell = pacer(progress);
   const [left, right] = [Math.max(0, shift.columns), Math.min(width, shift.columns + target.width)];
   const fileTop = southUp ? height - shift.rows - target.height : shift.rows;
   const [top, bottom] = [Math.max(0, fileTop), Math.min(height, fileTop + target.height)];
@@ -48,8 +49,7 @@ export async function copyCells(
         else values.fill(noData ?? 0, at, at + to - from);
       }
     }
-    progress.onProgress?.((Math.min(bottom, (blockRow + 1) * blockHeight) - top) / (bottom - top));
-    await pause(progress);
+    await tell((Math.min(bottom, (blockRow + 1) * blockHeight) - top) / (bottom - top));
   }
   return out.result;
 }

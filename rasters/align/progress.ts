@@ -5,8 +5,20 @@ export interface Progress {
   readonly signal?: AbortSignal;
 }
 
-/** Lets whatever waits for this thread have its turn, so that it can be told to stop. @throws the signal's reason */
-export async function pause({ signal }: Progress): Promise<void> {
-  await new Promise((resolve) => setTimeout(resolve));
-  signal?.throwIfAborted();
+const longestMs = 25;
+
+/**
+ * Gives the way to say how far work is. Each call tells the share, throws the signal's reason when it is aborted, and,
+ * now and then, lets whatever waits for this thread have its turn, so that it can be told to stop.
+ */
+export function pacer({ onProgress, signal }: Progress): (share: number) => Promise<void> {
+  let last = performance.now();
+  return async (share) => {
+    onProgress?.(share);
+    if (performance.now() - last > longestMs) {
+      await new Promise((resolve) => setTimeout(resolve));
+      last = performance.now();
+    }
+    signal?.throwIfAborted();
+  };
 }

@@ -1,7 +1,7 @@
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { ResamplingMethod } from './alignment-plan.ts';
 import type { CellMap } from './cell-map.ts';
-import { pause, type Progress } from './progress.ts';
+import { pacer, type Progress } from './progress.ts';
 import { resamplers, type SourceCells } from './resample.ts';
 import type { SourceWindow } from './source-window.ts';
 
@@ -34,6 +34,7 @@ export async function resampleTiles(
   const valueOf = make();
   const count = points === 'centre' ? 1 : 4;
   const [xs, ys] = [new Float64Array(count), new Float64Array(count)];
+  const tell = pacer(progress);
   const locate = placer(toRaster, points === 'centre', side);
 
   for (let top = 0; top < target.height; top += side) {
@@ -52,8 +53,7 @@ export async function resampleTiles(
           else put(index, NaN);
         }
     }
-    progress.onProgress?.(Math.min(1, (top + side) / target.height));
-    await pause(progress);
+    await tell(Math.min(1, (top + side) / target.height));
   }
 }
 
