@@ -115,11 +115,10 @@ function interpolated(exact: CellMap, step: number, width: number, height: numbe
       nodes[at + 1] = point[1];
     }
   return (column, row, out) => {
-    const [i, j] = [
-      Math.min(across - 2, Math.floor(column / step)),
-      Math.min(down - 2, Math.floor(row / step)),
-    ];
-    const [u, v] = [column / step - i, row / step - j];
+    const i = Math.min(across - 2, Math.floor(column / step));
+    const j = Math.min(down - 2, Math.floor(row / step));
+    const u = column / step - i;
+    const v = row / step - j;
     const at = 2 * (j * across + i);
     const below = at + 2 * across;
     for (let axis = 0; axis < 2; axis++) {

@@ -56,12 +56,18 @@ export function cover(x: Float64Array, y: Float64Array, out: Coverage): void {
 
 function addEdge(x0: number, y0: number, x1: number, y1: number, { shares, width }: Coverage): void {
   if (y0 === y1) return;
-  const sign = y0 < y1 ? 1 : -1;
-  const [topX, topY, bottomX, bottomY] = y0 < y1 ? [x0, y0, x1, y1] : [x1, y1, x0, y0];
+  const down = y0 < y1;
+  const sign = down ? 1 : -1;
+  const topX = down ? x0 : x1;
+  const topY = down ? y0 : y1;
+  const bottomX = down ? x1 : x0;
+  const bottomY = down ? y1 : y0;
   const slope = (bottomX - topX) / (bottomY - topY);
   for (let row = Math.floor(topY); row < bottomY; row++) {
-    const [from, to] = [Math.max(row, topY), Math.min(row + 1, bottomY)];
-    const [a, b] = [topX + slope * (from - topY), topX + slope * (to - topY)];
+    const from = Math.max(row, topY);
+    const to = Math.min(row + 1, bottomY);
+    const a = topX + slope * (from - topY);
+    const b = topX + slope * (to - topY);
     addStretch(Math.min(a, b), Math.max(a, b), sign * (to - from), row * width, width, shares);
   }
 }
@@ -88,7 +94,8 @@ function addStretch(
   let given = 0;
   for (let column = first; column <= last; column++) {
     // Height of the edge within this column, and what lies to its east, with all columns before it wholly so.
-    const [from, to] = [Math.max(column, west), Math.min(column + 1, east)];
+    const from = Math.max(column, west);
+    const to = Math.min(column + 1, east);
     const here = perColumn * (to - from);
     const before = perColumn * (from - west);
     const total = before + here * (column + 1 - (from + to) / 2);

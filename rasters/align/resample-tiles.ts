@@ -86,7 +86,8 @@ function placer(toRaster: CellMap, centres: boolean, side: number) {
     for (let row = 0; row < rows + more; row++)
       for (let column = 0; column < columns + more; column++) {
         toRaster(left + column + shift, top + row + shift, point);
-        const [x, y] = point;
+        const x = point[0];
+        const y = point[1];
         xs[row * across + column] = x;
         ys[row * across + column] = y;
         if (x < box.west) box.west = x;

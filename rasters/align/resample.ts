@@ -31,17 +31,19 @@ export const resamplers: Record<
 const inside = (x: number, y: number, { width, height }: Size): boolean =>
   x >= 0 && y >= 0 && x < width && y < height;
 
-const nearest: Resampler = ([x], [y], { values, left, top, width }, raster) =>
-  inside(x, y, raster) ? values[(Math.floor(y) - top) * width + Math.floor(x) - left] : NaN;
+const nearest: Resampler = (xs, ys, { values, left, top, width }, raster) =>
+  inside(xs[0], ys[0], raster) ? values[(Math.floor(ys[0]) - top) * width + Math.floor(xs[0]) - left] : NaN;
 
 /**
  * Between the four cell centres around the point; beyond the outermost centres these count alone. Cells without data are
  * left out, as long as the others have at least half the weight.
  */
-const bilinear: Resampler = ([x], [y], { values, left, top, width }, raster) => {
-  if (!inside(x, y, raster)) return NaN;
-  const [column, row] = [Math.floor(x - 0.5), Math.floor(y - 0.5)];
-  const [u, v] = [x - 0.5 - column, y - 0.5 - row];
+const bilinear: Resampler = (xs, ys, { values, left, top, width }, raster) => {
+  if (!inside(xs[0], ys[0], raster)) return NaN;
+  const column = Math.floor(xs[0] - 0.5);
+  const row = Math.floor(ys[0] - 0.5);
+  const u = xs[0] - 0.5 - column;
+  const v = ys[0] - 0.5 - row;
   let sum = 0;
   let weight = 0;
   for (let j = 0; j < 2; j++)

@@ -1,60 +1,41 @@
-import { readdirSync, readFileSync } from 'node:fs';
 import { zlibSync } from 'fflate';
 import { describe, expect, it } from 'vitest';
-import { hash } from '#rasters/demo/noise.ts';
+import { damage } from '#rasters/testing/damage.ts';
+import { fixtureNames, loadFixture } from '#rasters/testing/fixtures.ts';
+import { tryFile } from '#rasters/testing/try-file.ts';
 import { encodeGeoTiff } from '#rasters/write/geotiff.ts';
-import { RasterError } from './raster-error.ts';
+import type { RasterError } from './raster-error.ts';
 import { readRaster } from './read-raster.ts';
-import { summarise } from './summary.ts';
 
-const folder = new URL('../fixtures/', import.meta.url);
-const names = readdirSync(folder).filter((name) => name.endsWith('.tif') && name !== 'bad-png.tif');
-const limits = { cells: 250_000, blockBytes: 1_000_000 };
-
-/** Damage number `k` to a file, the same each time: flipped bytes, a cut, or huge and zero numbers in the header. */
-function damage(bytes: Uint8Array, seed: number, k: number): Uint8Array {
-  const u = (i: number) => hash(seed, k, i);
-  const pick = (i: number, below: number) => Math.floor(u(i) * below);
-  const kind = pick(0, 5);
-  if (kind === 0) return bytes.slice(0, pick(1, bytes.length));
-  const copy = bytes.slice();
-  const view = new DataView(copy.buffer);
-  if (kind === 1) for (let i = 0; i <= pick(1, 6); i++) copy[pick(10 + i, copy.length)] = pick(30 + i, 256);
-  else if (kind === 2) copy[pick(2, copy.length)] ^= 1 << pick(3, 8);
-  else {
-    const numbers = kind === 3 ? [0xffffffff, 0x7fffffff, 0x80000000, 0xfffffff0] : [0, 1, 2, 65_535];
-    const at = 4 + pick(2, Math.min(copy.length, 400) - 8);
-    view.setUint32(at, numbers[pick(4, 4)], pick(5, 2) === 0);
-  }
-  return copy;
-}
+const names = ['good-', 'mend-', 'bad-'].flatMap(fixtureNames);
+const files = names.map(loadFixture);
+/** Of the ten thousand that `npm run fuzz:rasters` goes through, in a process that is watched. */
+const sample = 8;
 
 describe('a damaged file', () => {
-  it.each(names)('%s: is refused or read, and nothing else', async (name) => {
-    const bytes = new Uint8Array(readFileSync(new URL(name, folder)));
-    const outcomes = { read: 0, refused: 0 };
-    for (let k = 0; k < 60; k++) {
-      try {
-        const raster = await readRaster(damage(bytes, names.indexOf(name), k), limits);
-        expect(raster.values.length).toBe(raster.grid.width * raster.grid.height);
-        expect(raster.values.length).toBeLessThanOrEqual(limits.cells);
-        expect(raster.grid.cellSize).toBeGreaterThan(0);
-        const { histogram, noDataShare } = summarise(raster);
-        const counted = histogram.reduce((sum, n) => sum + n, 0);
-        expect(counted).toBe(Math.round((1 - noDataShare) * raster.values.length));
-        outcomes.read++;
-      } catch (error) {
-        if (!(error instanceof RasterError))
-          throw new Error(`damage ${k} got past the checks`, { cause: error });
-        outcomes.refused++;
-      }
+  it.each(names)('%s: is refused with its reasons or read, described, planned and aligned', async (name) => {
+    const which = names.indexOf(name);
+    for (let k = 0; k < sample; k++) {
+      const other = files[(which + 1 + k) % files.length];
+      await tryFile(damage(files[which], other, which, k), k).catch((error: unknown) => {
+        throw new Error(`damage ${k} got past the checks`, { cause: error });
+      });
     }
-    expect(outcomes.refused).toBeGreaterThan(5);
-    if (name.startsWith('good-')) expect(outcomes.read).toBeGreaterThan(5);
+  });
+
+  it('does not always come to the same', async () => {
+    const outcomes = new Map<string, number>();
+    for (const [which, file] of files.entries()) {
+      const outcome = await tryFile(damage(file, files[0], 77, which), which);
+      outcomes.set(outcome, (outcomes.get(outcome) ?? 0) + 1);
+    }
+    expect(outcomes.get('read')).toBeGreaterThan(files.length / 10);
+    expect(outcomes.get('raster-truncated')).toBeGreaterThan(files.length / 10);
+    expect(outcomes.size).toBeGreaterThan(4);
   });
 
   it('cut at any byte is refused as cut short, or as no GeoTIFF when even the header is gone', async () => {
-    const bytes = new Uint8Array(readFileSync(new URL('good-tiles-many.tif', folder)));
+    const bytes = loadFixture('good-tiles-many.tif');
     for (let length = 0; length < bytes.length; length++) {
       const error: unknown = await readRaster(bytes.slice(0, length)).catch((e: unknown) => e);
       expect((error as RasterError).code, `${length} bytes`).toBe(
@@ -86,7 +67,7 @@ describe('what would take too much memory', () => {
 
   it('a strip that inflates beyond its size is stopped', async () => {
     expect((await readRaster(withStrip(zlibSync(new Uint8Array(400 * 163).fill(9))))).values[0]).toBe(9);
-    await expect(readRaster(withStrip(zlibSync(new Uint8Array(50_000_000))))).rejects.toMatchObject({
+    await expect(readRaster(withStrip(zlibSync(new Uint8Array(5_000_000))))).rejects.toMatchObject({
       code: 'raster-truncated',
       found: expect.stringContaining('more than the 65200 bytes') as string,
     });
@@ -105,11 +86,11 @@ describe('what would take too much memory', () => {
   });
 
   it('nothing is read of a file that claims 100,000 × 100,000 cells but its header', async () => {
-    const bytes = readFileSync(new URL('bad-huge.tif', folder));
+    const bytes = loadFixture('bad-huge.tif');
     let asked = 0;
     const read = (offset: number, length: number) => {
       asked += length;
-      return Promise.resolve(new Uint8Array(bytes.subarray(offset, offset + length)));
+      return Promise.resolve(bytes.slice(offset, offset + length));
     };
     await expect(readRaster({ size: bytes.length, read })).rejects.toMatchObject({
       code: 'raster-too-large',
