@@ -2,8 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { inspectRaster } from '#rasters/describe/inspect-raster.ts';
 import { expected, loadFixture } from '#rasters/testing/fixtures.ts';
 import { fileOf, gridOf } from '#rasters/testing/rasters.ts';
-import type { WritableValues } from '#rasters/write/geotiff.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
+import type { CellValues } from '#sim-core/grid/ground.ts';
 import { alignRaster } from './align-raster.ts';
 import type { RasterContent, ResamplingMethod } from './alignment-plan.ts';
 import { planAlignment } from './plan-alignment.ts';
@@ -174,7 +174,7 @@ describe('cells that lie on the grid’s lattice are copied', () => {
 describe('what the values become', () => {
   const grid = gridOf(4, 4);
   const far = { ...grid, width: 6 };
-  const ones = (type: { new (n: number): WritableValues }) => fileOf(grid, new type(16).fill(1));
+  const ones = (type: { new (n: number): CellValues }) => fileOf(grid, new type(16).fill(1));
 
   it.each([
     ['classes', 'majority', 'uint8'],

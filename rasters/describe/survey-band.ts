@@ -1,5 +1,5 @@
 import type { CellValues } from '#sim-core/grid/ground.ts';
-import { pause, type Progress } from '#rasters/align/progress.ts';
+import { pacer, type Progress } from '#rasters/align/progress.ts';
 import { openBand } from '#rasters/read/band-blocks.ts';
 import { infiniteValue } from '#rasters/read/check-values.ts';
 import { RasterError } from '#rasters/read/raster-error.ts';
@@ -47,8 +47,11 @@ export async function surveyBand(
   const { width, height, blockWidth, blockHeight, blocksAcross } = layout;
   const blocks = openBand(source, layout, band.index);
   const step = Math.ceil(Math.max(width, height) / largestSide);
-  const thumbnail = emptyThumbnail(description, band, step);
+  // Where a band beside it hides cells, they come as NaN.
+  const dataType = layout.alphaBand === null ? band.dataType : 'float64';
+  const thumbnail = emptyThumbnail(description, { ...band, dataType }, step);
   const tally = newTally(band);
+  const tell = pacer(progress);
   for (let top = 0; top < height; top += blockHeight) {
     for (let column = 0; column < blocksAcross; column++) {
       const left = column * blockWidth;
@@ -68,8 +71,7 @@ export async function surveyBand(
             thumbnail.values[(y / step) * thumbnail.width + x] = line[x * step - left];
       }
     }
-    progress.onProgress?.(Math.min(1, (top + blockHeight) / height));
-    await pause(progress);
+    await tell(Math.min(1, (top + blockHeight) / height));
   }
   return { description, band, summary: tally.summary(width * height, thumbnail), thumbnail };
 }

@@ -1,5 +1,6 @@
-import { encodeGeoTiff, type WritableValues } from '#rasters/write/geotiff.ts';
+import { encodeGeoTiff } from '#rasters/write/geotiff.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
+import type { CellValues } from '#sim-core/grid/ground.ts';
 
 /** A small grid in UTM 17 N, its corner on round numbers. */
 export const gridOf = (width: number, height: number, more: Partial<Grid> = {}): Grid => ({
@@ -13,5 +14,5 @@ export const gridOf = (width: number, height: number, more: Partial<Grid> = {}):
 });
 
 /** A GeoTIFF of values on a grid; NaN means no data in floats. */
-export const fileOf = (grid: Grid, values: WritableValues, noData?: number): Uint8Array =>
+export const fileOf = (grid: Grid, values: CellValues, noData?: number): Uint8Array =>
   encodeGeoTiff({ grid, values, noData }, { blocks: grid.width > 300 ? 'tiles' : 'strips' });
