@@ -1,7 +1,7 @@
 import { cellAt, type Grid } from '#sim-core/grid/grid.ts';
 import { occupiedFrom } from '#sim-core/measure/cover-measures.ts';
 import type { Point } from './extent.ts';
-import { insideRing } from './inside-ring.ts';
+import { ringRows } from './ring-rows.ts';
 
 export interface OpenGroundInput {
   readonly grid: Grid;
@@ -39,8 +39,10 @@ const probes = 8;
 export function openGround(input: OpenGroundInput): OpenGround {
   const { grid, ring, capacity, allowed, cover, bareOnly = false } = input;
   const { cellSize, originX, originY, width, height } = grid;
-  const xs = ring?.map(([x]) => (x - originX) / cellSize) ?? [0, width];
-  const ys = ring?.map(([, y]) => (originY - y) / cellSize) ?? [0, height];
+  const toColumn = (x: number) => (x - originX) / cellSize;
+  const toRow = (y: number) => (originY - y) / cellSize;
+  const xs = ring?.map(([x]) => toColumn(x)) ?? [0, width];
+  const ys = ring?.map(([, y]) => toRow(y)) ?? [0, height];
   const least = (values: number[]) => values.reduce((a, b) => Math.min(a, b));
   const most = (values: number[]) => values.reduce((a, b) => Math.max(a, b));
   const left = Math.max(0, Math.floor(least(xs)));
@@ -48,37 +50,44 @@ export function openGround(input: OpenGroundInput): OpenGround {
   const columns = Math.max(0, Math.min(width, Math.ceil(most(xs))) - left);
   const rows = Math.max(0, Math.min(height, Math.ceil(most(ys))) - top);
 
+  const outline = ringRows(
+    xs.map((x, i): Point => [x, ys[i]]),
+    top,
+    rows,
+  );
   const lies = new Uint8Array(columns * rows);
   if (ring) {
     markInside();
     markCut();
   } else lies.fill(inside);
   const cells: number[] = [];
+  let whole = 0;
   let area = 0;
-  for (let i = 0; i < lies.length; i++) {
-    if (lies[i] === closed) continue;
-    const cell = (top + Math.floor(i / columns)) * width + left + (i % columns);
-    const may =
-      capacity[cell] > 0 &&
-      (allowed === undefined || allowed[cell] !== 0) &&
-      !(bareOnly && cover !== undefined && cover[cell] >= occupiedFrom);
-    if (!may) lies[i] = closed;
-    else {
-      const share = lies[i] === inside ? 1 : shareInside(i);
-      area += share * cellSize * cellSize;
-      cells.push(i);
+  for (let row = 0; row < rows; row++) {
+    const cutHere: number[] = [];
+    for (let column = 0; column < columns; column++) {
+      const i = row * columns + column;
+      if (lies[i] === closed) continue;
+      const cell = (top + row) * width + left + column;
+      const may =
+        capacity[cell] > 0 &&
+        (allowed === undefined || allowed[cell] !== 0) &&
+        !(bareOnly && cover !== undefined && cover[cell] >= occupiedFrom);
+      if (!may) lies[i] = closed;
+      else {
+        cells.push(i);
+        if (lies[i] === inside) whole++;
+        else cutHere.push(column);
+      }
     }
+    if (cutHere.length > 0) area += shareInside(row, cutHere) * cellSize * cellSize;
   }
+  area += whole * cellSize * cellSize;
 
-  /** Even-odd rule along the middle line of each row. */
+  /** Along the middle line of each row, between each pair of crossings. */
   function markInside(): void {
     for (let row = 0; row < rows; row++) {
-      const y = top + row + 0.5;
-      const crossings: number[] = [];
-      for (let i = 0, j = xs.length - 1; i < xs.length; j = i++)
-        if (ys[i] > y !== ys[j] > y)
-          crossings.push(xs[i] + ((y - ys[i]) / (ys[j] - ys[i])) * (xs[j] - xs[i]));
-      crossings.sort((a, b) => a - b);
+      const crossings = outline.crossings(top + row + 0.5);
       for (let pair = 0; pair + 1 < crossings.length; pair += 2) {
         const from = Math.max(0, Math.ceil(crossings[pair] - 0.5) - left);
         const to = Math.min(columns, Math.ceil(crossings[pair + 1] - 0.5) - left);
@@ -106,13 +115,17 @@ export function openGround(input: OpenGroundInput): OpenGround {
       originY - (top + Math.floor(i / columns)) * cellSize,
     ];
   }
-  function shareInside(i: number): number {
-    const [west, north] = corner(i);
+  /** How much of cut cells in a row lies inside, in cells, by rows of probes. */
+  function shareInside(row: number, cut: readonly number[]): number {
     let hits = 0;
-    for (let p = 0; p < probes * probes; p++) {
-      const x = west + (((p % probes) + 0.5) / probes) * cellSize;
-      const y = north - ((Math.floor(p / probes) + 0.5) / probes) * cellSize;
-      if (insideRing(x, y, ring!)) hits++;
+    for (let p = 0; p < probes; p++) {
+      const crossings = outline.crossings(top + row + (p + 0.5) / probes);
+      let passed = 0;
+      for (const column of cut)
+        for (let q = 0; q < probes; q++) {
+          while (crossings[passed] <= left + column + (q + 0.5) / probes) passed++;
+          if (passed % 2 === 1) hits++;
+        }
     }
     return hits / (probes * probes);
   }
@@ -122,7 +135,7 @@ export function openGround(input: OpenGroundInput): OpenGround {
     const [column, row] = [at.column - left, at.row - top];
     if (column < 0 || row < 0 || column >= columns || row >= rows) return false;
     const how = lies[row * columns + column];
-    return how === inside || (how === cut && insideRing(x, y, ring!));
+    return how === inside || (how === cut && outline.isInside(toColumn(x), toRow(y)));
   }
   function placeIn(i: number, random: () => number): Point | undefined {
     const [west, north] = corner(i);

@@ -1,7 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { gridOf } from '#sim-core/testing/setups.ts';
 import type { Point } from './extent.ts';
-import { insideRing } from './inside-ring.ts';
 import { layPattern, type Pattern, type PatternInput } from './pattern.ts';
 
 const side = 100;
@@ -16,6 +15,14 @@ const everywhere = new Uint8Array(cells).fill(255);
 const lay = (pattern: Pattern, more: Partial<PatternInput> = {}) =>
   layPattern({ pattern, ring: square, grid, capacity: everywhere, seed: 'a', ...more });
 
+/** By the even-odd rule, edge by edge. */
+const insideRing = (x: number, y: number, ring: readonly Point[]) =>
+  ring.filter(([xi, yi], i) => {
+    const [xj, yj] = ring[(i + 1) % ring.length];
+    return yi > y !== yj > y && x < xi + ((y - yi) / (yj - yi)) * (xj - xi);
+  }).length %
+    2 ===
+  1;
 const distance = ([x, y]: Point, [ox, oy]: Point) => Math.hypot(x - ox, y - oy);
 const nearest = (points: readonly Point[]) =>
   points.map((point, i) =>
@@ -212,6 +219,20 @@ describe('how many', () => {
     expect(shut).toMatchObject({ points: [], short: expect.stringContaining('works are allowed') as string });
     const poor = lay({ kind: 'scattered', amount: { by: 'budget', budget: 10, each: 30 } });
     expect(poor.short).toContain('a larger budget');
+  });
+
+  test('any polygon, such as a star off the edge of the map: points inside it, and its area told', () => {
+    const star = Array.from({ length: 10 }, (_, i) => {
+      const reach = i % 2 === 0 ? 90 : 35;
+      const turn = (i * Math.PI) / 5 + 0.2;
+      return place(150 + reach * Math.cos(turn), 100 + reach * Math.sin(turn));
+    });
+    const { points, openArea } = lay({ kind: 'apart', distance: 3 }, { ring: star });
+    expect(points.every(([x, y]) => insideRing(x, y, star) && x < grid.originX + 200)).toBe(true);
+    let inside = 0;
+    for (let x = 0.25; x < 200; x += 0.5)
+      for (let y = 0.25; y < 200; y += 0.5) if (insideRing(...place(x, y), star)) inside++;
+    expect(Math.abs(openArea / (inside / 4) - 1)).toBeLessThan(0.003);
   });
 
   test('a polygon smaller than a cell still takes points', () => {
