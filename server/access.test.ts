@@ -10,6 +10,7 @@ import * as people from '#contract/people.ts';
 import * as runs from '#contract/runs.ts';
 import * as sites from '#contract/sites.ts';
 import * as uploads from '#contract/uploads.ts';
+import * as workingGrid from '#contract/working-grid.ts';
 import { allRoutes } from '#server/routes.ts';
 import { makeAccessFixture, type AccessFixture } from '#server/testing/access-fixture.ts';
 import { testServer, type TestServer } from '#server/testing/test-server.ts';
@@ -72,6 +73,11 @@ const expected: Record<string, string> = {
   'PUT /api/sites/:siteId/layers/:layerId/classes': modellers,
   'DELETE /api/sites/:siteId/layers/:layerId': modellers,
   'GET /api/sites/:siteId/layers/:layerId/dependents': everyRole,
+  'POST /api/sites/:siteId/layers/:layerId/put-back': modellers,
+  'GET /api/sites/:siteId/cell-sizes': everyRole,
+  'GET /api/sites/:siteId/grid-change': everyRole,
+  'POST /api/sites/:siteId/grid-change': modellers,
+  'DELETE /api/sites/:siteId/grid-change': modellers,
   'GET /api/sites/:siteId/layer-history': everyRole,
   'GET /api/sites/:siteId/layer-values/:hash': everyRole,
   'GET /api/sites/:siteId/layer-files/:hash': everyRole,
@@ -144,8 +150,8 @@ function refusal(rule: string, caller: Caller): number | undefined {
 const isEndpoint = (value: unknown): value is Endpoint =>
   typeof value === 'object' && value !== null && 'method' in value && 'path' in value && 'reply' in value;
 /** Endpoints that the contract announces and no route answers yet. */
-const announced = /put-back|feature/;
-const contract = [people, sites, ground, uploads, options, optionFiles, costs, runs, comparisons]
+const announced = /feature/;
+const contract = [people, sites, ground, workingGrid, uploads, options, optionFiles, costs, runs, comparisons]
   .flatMap((module) => Object.values<unknown>({ ...module }))
   .filter(isEndpoint)
   .filter(({ path }) => !announced.test(path));

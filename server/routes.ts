@@ -10,6 +10,7 @@ import { teamInviteRoutes } from './features/team/invites.routes.ts';
 import { optionFileRoutes } from './features/options/files/option-files.routes.ts';
 import { optionRoutes } from './features/options/option.routes.ts';
 import { runRoutes } from './features/runs/run.routes.ts';
+import { workingGridRoutes } from './features/sites/working-grid/working-grid.routes.ts';
 import { uploadRoutes } from './features/sites/uploads/upload.routes.ts';
 import { layerRoutes } from './features/sites/layer.routes.ts';
 import { siteRoutes } from './features/sites/site.routes.ts';
@@ -32,6 +33,7 @@ export const allRoutes = (services: Services): Route[] => [
   ...siteRoutes(services),
   ...layerRoutes(services),
   ...uploadRoutes(services),
+  ...workingGridRoutes(services),
   ...optionRoutes(services),
   ...optionFileRoutes(services),
   ...costsRoutes(services),

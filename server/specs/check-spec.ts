@@ -35,7 +35,7 @@ export async function checkLayers(manager: Manager, siteId: string, spec: RunSpe
     if (foreign.has(hash))
       problems.push({
         field: `${field}.layer`,
-        message: `No layer of this site has the SHA-256 ${hash.slice(0, 12)}…; it was replaced or never uploaded. Load the site again`,
+        message: `No layer of this site has the SHA-256 ${hash.slice(0, 12)}… on the cells that it has now; it was replaced or never uploaded. Load the site again`,
       });
     if (band !== undefined && band !== 1)
       problems.push({ field: `${field}.band`, message: `Found band ${band}; uploaded layers have one band` });

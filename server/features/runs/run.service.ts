@@ -23,14 +23,12 @@ export async function startRun(
   { name, optionId, spec }: { name: string; optionId: string; spec: RunSpec },
   by: string,
 ): Promise<Run> {
-  const site = await findSite(services.dataSource.manager, siteId);
-  if (!site) throw notFound();
-  // A site's grid never changes, so this needs no turn in the queue.
-  const onGrid = checkOnGrid(spec, site);
   return services.write(async (manager) => {
+    const site = await findSite(manager, siteId);
+    if (!site) throw notFound();
     const option = await findOption(manager, siteId, optionId);
     if (!option) throw fieldProblem('optionId', 'This site has no such option; it may have been deleted');
-    const problems = [...(await checkLayers(manager, siteId, spec)), ...onGrid];
+    const problems = [...(await checkLayers(manager, siteId, spec)), ...checkOnGrid(spec, site)];
     if (problems.length > 0)
       throw new ProblemError(
         'invalid-request',

@@ -9,6 +9,7 @@ import { keepers } from './keepers.ts';
 import { deleteLayer, layerDependents, layerHistory } from './layer-history.service.ts';
 import { findLayerByHash, findLayerBySource } from './layer.repository.ts';
 import { addLayer, changeLayer, setLayerClasses } from './layer.service.ts';
+import { putLayerBack } from './put-layer-back.ts';
 import { setElevationCurves } from './site.service.ts';
 
 /** The layers of a site. */
@@ -38,6 +39,9 @@ export function layerRoutes(services: Services): Route[] {
     route(contract.getLayerHistory, { site: roles }, async ({ params, query }) => ({
       entries: await layerHistory(manager, params.siteId, query.part),
     })),
+    route(contract.putLayerBack, { site: keepers }, ({ params }) =>
+      putLayerBack(services, params.siteId, params.layerId),
+    ),
     route(contract.getLayerValues, { site: roles }, async ({ params }) => {
       const layer = await findLayerByHash(manager, params.siteId, params.hash);
       if (!layer) throw notFound();

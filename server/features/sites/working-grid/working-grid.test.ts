@@ -1,0 +1,137 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import type { LayerHistoryEntry } from '#contract/layers.ts';
+import type { Site } from '#contract/sites.ts';
+import type { CellSize, GridChange } from '#contract/working-grid.ts';
+import { withOtherWorker } from '#server/testing/other-worker.ts';
+import { makeTeam, type TestTeam } from '#server/testing/people.ts';
+import { openRun, specFor } from '#server/testing/runs.ts';
+import { makeSite, smallGrid, storedFiles } from '#server/testing/sites.ts';
+import { testServer, type TestServer } from '#server/testing/test-server.ts';
+
+let server: TestServer;
+let team: TestTeam;
+beforeAll(async () => {
+  server = await testServer();
+  team = await makeTeam(server);
+});
+afterAll(() => server.close());
+
+const of = (siteId: string, rest: string) => `/api/sites/${siteId}/${rest}`;
+const siteNow = async (id: string) =>
+  (await team.agents.modeller.get(`/api/sites/${id}`).expect(200)).body as Site;
+const coarsen = async (id: string, factor: number) => {
+  await team.agents.modeller.post(of(id, 'grid-change')).send({ factor }).expect(200);
+  await server.services.background.idle();
+  return siteNow(id);
+};
+const history = async (id: string, part: string) => {
+  const { body } = await team.agents.modeller.get(of(id, `layer-history?part=${part}`)).expect(200);
+  return (body as { entries: LayerHistoryEntry[] }).entries;
+};
+
+describe('the cells that a site may have', () => {
+  it('are said with what they do to the front, to memory and to time', async () => {
+    const { modeller, manager } = team.agents;
+    const { id } = await makeSite(modeller, team.teamId);
+    const { body } = await manager.get(of(id, 'cell-sizes')).expect(200);
+    const [fine, double, third] = (body as { cellSizes: CellSize[] }).cellSizes;
+    expect(fine).toMatchObject({ factor: 1, grid: smallGrid, cells: 24 });
+    expect(double).toMatchObject({ factor: 2, grid: { width: 3, height: 2, cellSize: 4 }, cells: 6 });
+    expect(fine.memoryBytes / double.memoryBytes).toBeCloseTo(4, 9);
+    expect(fine.secondsPerYear / double.secondsPerYear).toBeCloseTo(4, 9);
+    // The default plant's front is slow for such cells: the coarser, the more the lattice shows.
+    expect(fine.frontRatio).toBeLessThan(1);
+    expect(double.frontRatio ?? 0).toBeLessThan(fine.frontRatio!);
+    expect([...double.warnings, ...(third?.warnings ?? [])].join()).toMatch(/cell/i);
+  });
+});
+
+describe('a site that gets coarser cells', () => {
+  it('aligns its layers anew at once, keeps its class table, and leaves runs their own', async () => {
+    const { modeller } = team.agents;
+    const before = await makeSite(modeller, team.teamId);
+    const run = await openRun(modeller, before, specFor(before));
+    const after = await coarsen(before.id, 2);
+    expect(after).toMatchObject({ grid: { cellSize: 4, width: 3, height: 2 }, finestGrid: smallGrid });
+    const [habitat, cover] = after.layers;
+    expect(habitat).toMatchObject({ part: 'habitat', dataType: 'uint8', alignment: { method: 'majority' } });
+    expect(habitat.classes).toEqual(before.layers[0].classes);
+    expect(cover).toMatchObject({
+      part: 'cover',
+      grid: after.grid,
+      alignment: { method: 'area-weighted' },
+      unit: 'share',
+    });
+    expect(cover.source).toEqual(before.layers[1].source);
+    // Shares 0, 0.04 … 0.92 in 6 columns: the first four cells are 0, 1, 6 and 7 times 0.04.
+    expect(cover.minimum).toBeCloseTo((0 + 1 + 6 + 7) * 0.01, 6);
+    // The run keeps its grid and rasters; a new one must name those of the new cells.
+    const kept = (await modeller.get(`/api/runs/${run.id}`).expect(200)).body as {
+      grid: unknown;
+      layers: { hash: string }[];
+    };
+    expect(kept.grid).toEqual(smallGrid);
+    for (const { hash } of kept.layers) await modeller.get(of(before.id, `layer-values/${hash}`)).expect(200);
+    const { body: options } = await modeller.get(of(before.id, 'options')).expect(200);
+    const stale = await modeller
+      .post(of(before.id, 'runs'))
+      .send({
+        name: 'stale',
+        optionId: (options as { options: { id: string }[] }).options[0].id,
+        spec: specFor(before),
+      })
+      .expect(400);
+    expect(stale.body.fields[0]).toMatchObject({ field: 'spec.layers.capacity.layer' });
+    await openRun(modeller, after, specFor(after));
+    await modeller.post(of(before.id, 'grid-change')).send({ factor: 2 }).expect(409);
+  });
+
+  it('gets its finest cells back byte for byte', async () => {
+    const { modeller } = team.agents;
+    const before = await makeSite(modeller, team.teamId);
+    const files = storedFiles(server);
+    await coarsen(before.id, 3);
+    const after = await coarsen(before.id, 1);
+    expect(after.grid).toEqual(smallGrid);
+    expect(after.layers.map(({ hash }) => hash)).toEqual(before.layers.map(({ hash }) => hash));
+    // No run stood on the coarser ones, so they are forgotten.
+    expect(storedFiles(server)).toEqual(files);
+    expect(await history(before.id, 'cover')).toHaveLength(1);
+  });
+
+  it('puts back a layer of its earlier cells by aligning its file anew', async () => {
+    const { modeller } = team.agents;
+    const before = await makeSite(modeller, team.teamId);
+    await openRun(modeller, before, specFor(before));
+    await coarsen(before.id, 2);
+    const [now, old] = await history(before.id, 'habitat');
+    expect([now.replacedAt, now.runs, old.runs]).toEqual([null, 0, 1]);
+    await modeller.post(of(before.id, `layers/${old.layer.id}/put-back`)).expect(200);
+    await server.services.background.idle();
+    const habitat = (await siteNow(before.id)).layers.find(({ part }) => part === 'habitat')!;
+    expect(habitat.id).not.toBe(now.layer.id);
+    expect(habitat).toMatchObject({
+      grid: { cellSize: 4 },
+      classes: old.layer.classes,
+      source: old.layer.source,
+    });
+  });
+
+  it('stays as it was when the work breaks off, and can be asked again', async () => {
+    const { modeller } = team.agents;
+    const before = await makeSite(modeller, team.teamId);
+    const files = storedFiles(server);
+    await withOtherWorker(server, 'dies', async () => {
+      await modeller.post(of(before.id, 'grid-change')).send({ factor: 2 }).expect(200);
+      await server.services.background.idle();
+    });
+    const { body } = await modeller.get(of(before.id, 'grid-change')).expect(200);
+    expect((body as { gridChange: GridChange }).gridChange).toMatchObject({
+      state: 'failed',
+      problem: expect.stringContaining('Ask again') as string,
+    });
+    expect(await siteNow(before.id)).toEqual(before);
+    expect(storedFiles(server)).toEqual(files);
+    expect((await coarsen(before.id, 2)).grid.cellSize).toBe(4);
+  });
+});
