@@ -7,8 +7,6 @@ export interface MapArea {
   readonly ring: Ring;
   /** not there in the year shown: drawn faint */
   readonly faint?: boolean;
-  /** what it is called, such as `Fence 3` */
-  readonly name?: string;
 }
 
 /** Reach of a pointer to either side of an outline, px. */

@@ -15,8 +15,6 @@ export interface MapFoothold {
   readonly faint?: boolean;
   /** radius of the refuge, m: drawn around the selected one */
   readonly radius?: number;
-  /** what it is called, such as `Mound 17` */
-  readonly name?: string;
 }
 
 /** Where the middle of a symbol stands from its point on the ground, px at full size. */

@@ -1,10 +1,10 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useEffect, useReducer } from 'react';
+import { useReducer } from 'react';
 import type { Option } from '#contract/options.ts';
 import { ProblemError } from '#app/lib/api-client.ts';
 import { useWarnBeforeClosing } from '#app/lib/use-warn-before-closing.ts';
 import { createOptionMutation, saveOptionMutation } from './change-option.ts';
-import { keepDraft, restoreDraft } from './draft-storage.ts';
+import { restoreDraft } from './draft-storage.ts';
 import { optionsQuery } from './list-options.ts';
 import {
   isUnsaved,
@@ -14,6 +14,7 @@ import {
   type DraftState,
   type OptionDraft,
 } from './option-draft.ts';
+import { useKeptDraft } from './use-kept-draft.ts';
 
 /** What an option is called, what is noted of it, and whether it is put away. */
 export type OptionWords = { name?: string; note?: string; archived?: boolean };
@@ -52,9 +53,7 @@ export function useOptionDrawing(option: Option): OptionDrawing {
   // Where nothing is drawn, what others saved is simply what there is now.
   if (behind && !unsaved && !saveOption.isPending) draw({ type: 'take', option });
 
-  useEffect(() => {
-    keepDraft(option.id, draft);
-  }, [option.id, draft]);
+  useKeptDraft(option.id, draft);
   useWarnBeforeClosing(unsaved);
 
   const isConflict = saveOption.error instanceof ProblemError && saveOption.error.code === 'conflict';

@@ -1,13 +1,13 @@
 import { useMemo } from 'react';
 import type { Run } from '#contract/runs.ts';
+import { worksOf } from '#contract/works.ts';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { FlagSymbol } from '#app/components/symbols.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
-import { placeOf } from '#app/features/options/works-words.ts';
+import { worksOnMap } from '#app/features/options/board/works-on-map.ts';
 import type { useFrame } from '#app/features/runs/use-frame.ts';
 import { formatArea, formatShare } from '#app/lib/formats.ts';
 import type { MapRaster } from '#app/map/map-raster.ts';
-import type { MapFoothold } from '#app/map/map-symbols.ts';
 import { SiteMap } from '#app/map/SiteMap.tsx';
 import type { YearRecord } from '#app/yearline/year-records.ts';
 import { useRunCapacity } from './run-ground.ts';
@@ -32,19 +32,9 @@ export function RunMap(props: {
       return closing && { kind: 'closing', values: closing, surveyYear, lastYear: surveyYear + years };
     return cover && { kind: 'cover', values: cover };
   }, [show, closing, cover, surveyYear, years]);
-  const footholds = useMemo(
-    () =>
-      run.spec.actions.map((action, i): MapFoothold => ({
-        id: `w${i}`,
-        ...placeOf(action),
-        kind: 'planned',
-        year: action.year,
-        faint: show === 'cover' && action.year > year,
-        radius: action.kind === 'mound' ? action.radius + action.halo : undefined,
-        name: `${action.kind} ${i + 1}`,
-      })),
-    [run.spec.actions, show, year],
-  );
+  const works = useMemo(() => worksOf(run.spec.actions), [run.spec.actions]);
+  const shownYear = show === 'cover' ? year : surveyYear + years;
+  const { footholds, areas } = useMemo(() => worksOnMap(works, shownYear), [works, shownYear]);
   const error = show === 'closing' ? props.closingError : frame.error;
   const waiting = show === 'cover' ? frame.year !== year : !closing;
   return (
@@ -55,6 +45,7 @@ export function RunMap(props: {
         raster={raster}
         ground={capacity}
         footholds={footholds}
+        areas={areas}
         onHover={props.onHover}
         label={show === 'cover' ? `${run.name}, cover in ${year}` : `${run.name}, closing years`}
         summary={
@@ -63,7 +54,7 @@ export function RunMap(props: {
         }
         legendTitle={show === 'cover' ? `Cover in ${frame.year ?? year}` : undefined}
         legend={
-          footholds.length > 0 ? (
+          works.length > 0 ? (
             <span className="flex items-center gap-1.5">
               <FlagSymbol /> works
             </span>

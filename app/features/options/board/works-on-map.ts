@@ -17,18 +17,32 @@ export const isFaint = (work: Work, year: number): boolean =>
 export const ringOf = (area: Area): Ring =>
   area.shape === 'disc' ? discRing(area.x, area.y, area.radius) : area.ring;
 
+const looks = { there: new WeakMap<Work, DrawnWorks>(), faint: new WeakMap<Work, DrawnWorks>() };
+
+/** One of the works as it is drawn, made once for each of them: of thousands, few change at a time. */
+function workOnMap(work: Work, faint: boolean): DrawnWorks {
+  const known = looks[faint ? 'faint' : 'there'];
+  const found = known.get(work);
+  if (found) return found;
+  const look = { id: work.id, year: work.year, faint };
+  const drawn: DrawnWorks = { footholds: [], areas: [] };
+  if (work.kind === 'mound')
+    drawn.footholds.push({ ...look, x: work.x, y: work.y, kind: 'planned', radius: work.radius + work.halo });
+  else if (work.kind === 'clumps')
+    for (const [x, y] of work.points) drawn.footholds.push({ ...look, x, y, kind: 'clump' });
+  else drawn.areas.push({ ...look, kind: work.kind, ring: ringOf(work.area) });
+  known.set(work, drawn);
+  return drawn;
+}
+
 /** What is to be drawn for works in a year; `faint` draws all of them faint, as works that are not placed yet. */
 export function worksOnMap(works: readonly Work[], year: number, faint = false): DrawnWorks {
   const footholds: MapFoothold[] = [];
   const areas: MapArea[] = [];
-  works.forEach((work, i) => {
-    const common = { id: work.id, year: work.year, name: work.name ?? `${work.kind} ${i + 1}` };
-    const look = faint || isFaint(work, year) ? { ...common, faint: true } : common;
-    if (work.kind === 'mound')
-      footholds.push({ ...look, x: work.x, y: work.y, kind: 'planned', radius: work.radius + work.halo });
-    else if (work.kind === 'clumps')
-      for (const [x, y] of work.points) footholds.push({ ...look, x, y, kind: 'clump' });
-    else areas.push({ ...look, kind: work.kind, ring: ringOf(work.area) });
-  });
+  for (const work of works) {
+    const drawn = workOnMap(work, faint || isFaint(work, year));
+    for (const foothold of drawn.footholds) footholds.push(foothold);
+    for (const area of drawn.areas) areas.push(area);
+  }
   return { footholds, areas };
 }
