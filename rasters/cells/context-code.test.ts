@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto';
 import fc from 'fast-check';
 import { zlibSync } from 'fflate';
 import { describe, expect, it } from 'vitest';
@@ -71,6 +72,13 @@ describe('coding by context', () => {
   it('takes well under the room of a zlib stream', () => {
     const values = frame(320, 200);
     expect(roundTrip(values, 320).length).toBeLessThan(0.75 * zlibSync(values, { level: 9 }).length);
+  });
+
+  it('still packs to the same bytes: another way would not read what is stored', () => {
+    const body = contextCode(frame(60, 40), 60)!;
+    expect(createHash('sha256').update(body).digest('hex')).toBe(
+      '4a7cbd896925fa67919757f35b16519bd19d4d6f4f3db063015f05d0ffea6409',
+    );
   });
 
   it('still reads what was stored by this version', () => {

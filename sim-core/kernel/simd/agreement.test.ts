@@ -167,11 +167,12 @@ describe('skipping on a map of many stretches', () => {
   });
 
   test('what others planted or took is heard of', () => {
-    const cover = new Float32Array(200 * 9);
+    // Higher than the kernel reaches, so that rows at its very end are heard or not.
+    const cover = new Float32Array(200 * 49);
     const grown = [true, false].map((skip) => {
-      const kernel = createSimdKernel(kernelSetup({ width: 200, height: 9, cover, skip }));
+      const kernel = createSimdKernel(kernelSetup({ width: 200, height: 49, cover, skip }));
       kernel.step(0, 0);
-      kernel.cover[4 * 200 + 150] = 0.5;
+      kernel.cover[24 * 200 + 150] = 0.5;
       kernel.changed();
       kernel.step(1, 0);
       return kernel.cover.slice();
