@@ -1,30 +1,13 @@
 import type { Mode } from '#sim-core/spec/run-spec.ts';
 import { createSimdKernel } from '#sim-core/kernel/simd/simd-kernel.ts';
 import { benchCase, type BenchCase } from './cases.ts';
+import { printLine } from './line.ts';
 import { arrayScript, benchFolder, compileYardstick, type Timing } from './yardstick.ts';
 
 /**
- * `npm run bench [-- --json]`: how fast a step is, beside the same step in C and in NumPy in the same run. With --json a
- * JSON object a line; `ratio` above 1 means that we are faster. Times are those of the processor, which other work on the
- * machine disturbs least; ours and theirs take turns.
+ * How fast a step is, beside the same step in C and in NumPy in the same run (`npm run bench`). Times are those of the
+ * processor, which other work on the machine disturbs least; ours and theirs take turns.
  */
-interface Line {
-  readonly name: 'kernel' | 'memory';
-  readonly mode: Mode;
-  readonly map: string;
-  readonly size: number;
-  readonly against: string;
-  /** cells stepped in our fastest round */
-  readonly work: number;
-  /** processor time of that round */
-  readonly seconds: number;
-  /** cells a second; of memory, bytes a cell */
-  readonly rate: number;
-  /** null where there is nothing to hold it against, and `reason` says why */
-  readonly ratio: number | null;
-  readonly reason?: string;
-}
-
 const sizes = [500, 2000, 4000];
 const modes = ['mean-field', 'counts'] as const;
 /** The array script takes some 100 bytes a cell and as many times longer: this size shows enough. */
@@ -53,34 +36,18 @@ function timeKernel({ setup, steps, rounds, droughtIndex }: BenchCase): Timing &
 
 /** Both must have done the same work: single against double precision, or other draws, leave a thousandth at most. */
 function refuseOtherWork(bench: BenchCase, ours: Timing, theirs: Timing, against: string): void {
-  if (Math.abs(ours.cover / theirs.cover - 1) > (against === 'scipy' ? 1e-2 : 1e-3))
+  if (Math.abs(ours.cover / theirs.cover - 1) > (against.startsWith('scipy') ? 1e-2 : 1e-3))
     throw new Error(
       `${bench.mode}, ${bench.map}, ${bench.size}: the kernel ends with ΣC = ${ours.cover}, ${against} with ${theirs.cover}`,
     );
 }
 
-const json = process.argv.includes('--json');
-const print = (line: Line) => {
-  if (json) console.log(JSON.stringify(line));
-  else {
-    const { name, mode, map, size, against, rate, ratio, reason } = line;
-    const figure =
-      name === 'memory' ? `${rate.toFixed(1)} bytes a cell` : `${(rate / 1e6).toFixed(1)} M cells/s`;
-    console.log(
-      [name.padEnd(7), mode.padEnd(11), map.padEnd(7), String(size).padStart(5), figure.padStart(22)].join(
-        ' ',
-      ),
-      against.padStart(10),
-      ratio?.toFixed(2).padStart(8) ?? `skipped: ${reason}`,
-    );
-  }
-};
-
 const folder = benchFolder();
 const yardsticks = [
   ['c-128', compileYardstick('128', folder.path('yardstick-128'))],
   ['c-native', compileYardstick('native', folder.path('yardstick-native'))],
-  ['scipy', arrayScript()],
+  ['scipy', arrayScript('float64')],
+  ['scipy-tuned', arrayScript('float32')],
 ] as const;
 /** Seconds of our fastest round a cell and step, by mode, map and size. */
 const costs = new Map<string, number>();
@@ -101,7 +68,7 @@ for (const size of sizes)
       for (let turn = 0; turn < turns; turn++) {
         for (const [against, yardstick] of yardsticks) {
           if ('reason' in yardstick) continue;
-          if (against === 'scipy' && (size !== scriptSize || map !== 'full' || turn > 0)) continue;
+          if (against.startsWith('scipy') && (size !== scriptSize || map !== 'full' || turn > 0)) continue;
           const timed = yardstick.time(file);
           refuseOtherWork(bench, ours, timed, against);
           if (timed.seconds < (theirs.get(against)?.seconds ?? Infinity)) theirs.set(against, timed);
@@ -114,16 +81,21 @@ for (const size of sizes)
       const line = { name: 'kernel', mode, map, size, work, seconds, rate: work / seconds } as const;
       for (const [against, yardstick] of yardsticks) {
         const timed = theirs.get(against);
-        if (timed) print({ ...line, against, ratio: timed.seconds / ours.seconds });
-        else if ('reason' in yardstick) print({ ...line, against, ratio: null, reason: yardstick.reason });
+        if (timed) printLine({ ...line, against, ratio: timed.seconds / ours.seconds });
+        else if ('reason' in yardstick)
+          printLine({ ...line, against, ratio: null, reason: yardstick.reason });
       }
       if (map === 'sparse')
-        print({ ...line, against: 'full-map', ratio: costOf(mode, 'full', size) / costOf(mode, map, size) });
+        printLine({
+          ...line,
+          against: 'full-map',
+          ratio: costOf(mode, 'full', size) / costOf(mode, map, size),
+        });
       if (size > 500)
-        print({ ...line, against: 'size-500', ratio: costOf(mode, map, 500) / costOf(mode, map, size) });
+        printLine({ ...line, against: 'size-500', ratio: costOf(mode, map, 500) / costOf(mode, map, size) });
       if (size === 4000 && map === 'full') {
         const bytes = ours.bytes / (size * size) + besideKernel;
-        print({ ...line, name: 'memory', rate: bytes, against: '24-bytes', ratio: 24 / bytes });
+        printLine({ ...line, name: 'memory', rate: bytes, against: '24-bytes', ratio: 24 / bytes });
       }
     }
 folder.close();

@@ -1,0 +1,5 @@
+import { benchFrames } from './frames.ts';
+import { benchWorkers } from './workers.ts';
+
+await benchFrames();
+await benchWorkers();
