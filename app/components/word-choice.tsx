@@ -5,7 +5,8 @@ import { classNames } from '#app/lib/class-names.ts';
 export function WordChoice<Key extends string>(props: {
   label: string;
   options: readonly { key: Key; label: string; disabled?: boolean }[];
-  value: Key;
+  /** undefined: none of them is in use */
+  value: Key | undefined;
   onChange: (key: Key) => void;
   /** whether the label shows before the words, or is only read out */
   showLabel?: boolean;

@@ -42,7 +42,7 @@ test('from a GeoTIFF to a run that is replayed, repeated and exported', async ({
   await test.step('make a site by dropping a GeoTIFF', async () => {
     await page.getByRole('link', { name: 'New site' }).click();
     await page.getByLabel('Name of the site').fill('Journey Marsh');
-    await page.locator('input[type=file]').setInputFiles(rasters.habitat);
+    await page.getByLabel(/Drop a GeoTIFF here/).setInputFiles(rasters.habitat);
     await page.getByRole('button', { name: 'Make the site' }).click();
     await expect(page).toHaveURL(/\/sites\/[\w-]+\/ground/);
     await expect(page.getByText('640 × 372 cells of 1 m')).toBeVisible();
@@ -65,8 +65,8 @@ test('from a GeoTIFF to a run that is replayed, repeated and exported', async ({
   });
 
   await test.step('add cover and refuge', async () => {
-    await page.locator('input[type=file]').setInputFiles([rasters.cover, rasters.refuge]);
-    await page.getByRole('button', { name: 'Upload 2 files' }).click();
+    await page.getByLabel(/Drop GeoTIFFs here/).setInputFiles([rasters.cover, rasters.refuge]);
+    await page.getByRole('button', { name: 'Place 2 files' }).click();
     await expect(step(page, 'Ground')).toContainText('3 layers');
   });
 
@@ -90,7 +90,7 @@ test('from a GeoTIFF to a run that is replayed, repeated and exported', async ({
     await page.getByRole('button', { name: 'Add it' }).click();
     await page.getByRole('radio', { name: 'Mounds: one by one' }).check();
     const map = page.getByRole('application');
-    await expect(page.locator('canvas')).toBeVisible();
+    await expect(page.locator('[data-painted=true]')).toBeVisible();
     const box = (await map.boundingBox())!;
     // Bare ground in the west, the north and the east of the invented site, as fractions of the map.
     for (const [x, y] of [

@@ -106,8 +106,10 @@ function requestBody(endpoint: Endpoint, input: RawInput): { body?: BodyInit; co
     if (input.file === undefined) throw new Error(`${endpoint.path} needs a file`);
     const form = new FormData();
     // Fields first: the server then knows what the file is for before its first byte comes.
-    for (const [name, value] of Object.entries((input.body ?? {}) as Record<string, string>)) {
-      form.set(name, value);
+    const fields = (input.body ?? {}) as Record<string, string | number | undefined>;
+    for (const [name, value] of Object.entries(fields)) {
+      // What is left out is no field: a form would write the word `undefined` for it.
+      if (value !== undefined) form.set(name, String(value));
     }
     form.set('file', input.file, input.file.name);
     return { body: form };

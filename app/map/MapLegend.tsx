@@ -97,8 +97,13 @@ function Ramp({ raster, title, width }: RampProps) {
   if (!raster || raster.kind === 'classes') return null;
   const closing = raster.kind === 'closing';
   const stops = Array.from({ length: 9 }, (_, i) => `var(--color-${closing ? 'closing' : 'cover'}-${i})`);
-  const [from, half, to] = closing ? [raster.surveyYear + 1, '', raster.lastYear] : ['0', '50', '100 %'];
-  const usual = closing ? 'Year the ground closes' : raster.kind === 'cover' ? 'Cover' : raster.name;
+  const [from, half, to] = endsOf(raster);
+  const usual = {
+    closing: 'Year the ground closes',
+    cover: 'Cover',
+    height: 'Height',
+    share: raster.kind === 'share' ? raster.name : '',
+  }[raster.kind];
   return (
     <div style={{ width }}>
       <div className="font-semibold">{title ?? usual}</div>
@@ -114,6 +119,12 @@ function Ramp({ raster, title, width }: RampProps) {
       </div>
     </div>
   );
+}
+
+function endsOf(raster: Exclude<MapRaster, { kind: 'classes' }>): (string | number)[] {
+  if (raster.kind === 'closing') return [raster.surveyYear + 1, '', raster.lastYear];
+  if (raster.kind === 'height') return [raster.lowest.toFixed(2), '', `${raster.highest.toFixed(2)} m`];
+  return ['0', '50', '100 %'];
 }
 
 function ScaleRule({ metresPerPixel, room }: { metresPerPixel: number; room: number }) {

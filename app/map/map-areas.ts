@@ -1,9 +1,9 @@
 import { distanceToLine, isInside, ringArea, type Ring } from './rings.ts';
 
-/** Works that take up ground, as the map outlines them. */
+/** Works and surveyed areas that take up ground, as the map outlines them. */
 export interface MapArea {
   readonly id: string;
-  readonly kind: 'planting' | 'clumps' | 'fence' | 'loss';
+  readonly kind: 'planting' | 'clumps' | 'fence' | 'loss' | 'refuge' | 'allowed';
   readonly ring: Ring;
   /** not there in the year shown: drawn faint */
   readonly faint?: boolean;

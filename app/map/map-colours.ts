@@ -85,6 +85,7 @@ export function paletteOf(
       break;
     case 'cover':
     case 'share':
+    case 'height':
       for (let code = 0; code < 256; code++) set(code, rampColour(colours.cover, code / 255));
       break;
     case 'closing': {

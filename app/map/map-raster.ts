@@ -18,6 +18,13 @@ export type MapRaster =
   | { readonly kind: 'cover'; readonly values: Uint8Array }
   /** round(255·share) of something else, such as capacity or refuge */
   | { readonly kind: 'share'; readonly values: Uint8Array; readonly name: string }
+  /** heights in equal steps: 1 to 255 from the lowest to the highest, m; 0 no data */
+  | {
+      readonly kind: 'height';
+      readonly values: Uint8Array;
+      readonly lowest: number;
+      readonly highest: number;
+    }
   /** closing years: 0 still open at the horizon, -32768 cannot hold the plant; the survey year: stood at the survey */
   | {
       readonly kind: 'closing';
@@ -53,7 +60,7 @@ export function closingTexel(year: number, surveyYear: number, lastYear: number)
  * @throws RangeError when a class table has more rows than a byte can tell apart
  */
 export function toTexels(raster: MapRaster): Uint8Array {
-  if (raster.kind === 'cover' || raster.kind === 'share') return raster.values;
+  if (raster.kind === 'cover' || raster.kind === 'share' || raster.kind === 'height') return raster.values;
   const texels = new Uint8Array(raster.values.length);
   if (raster.kind === 'closing') {
     const { values, surveyYear, lastYear } = raster;
@@ -81,6 +88,10 @@ export function sameTexels(a: MapRaster, b: MapRaster): boolean {
   return a.kind !== 'classes' && b.kind !== 'classes';
 }
 
+/** To the centimetre: steps are finer than that on a site of less than 2.5 m from lowest to highest. */
+const heightOf = ({ lowest, highest }: { lowest: number; highest: number }, byte: number) =>
+  (lowest + ((byte - 1) / 254) * (highest - lowest)).toFixed(2);
+
 const percent = (byte: number) => `${Math.round((byte / 255) * 100)} %`;
 
 /** One cell in words. `capacity` is the ground's, where it is known: 0 cannot hold the plant. */
@@ -89,7 +100,8 @@ export function describeCell(
   capacity: Uint8Array | undefined,
   cell: number,
 ): string {
-  if (capacity?.[cell] === 0 && raster?.kind !== 'classes') return 'cannot hold the plant';
+  if (capacity?.[cell] === 0 && raster?.kind !== 'classes' && raster?.kind !== 'height')
+    return 'cannot hold the plant';
   if (!raster) return '';
   const value = raster.values[cell];
   switch (raster.kind) {
@@ -97,6 +109,8 @@ export function describeCell(
       return `cover ${percent(value)}`;
     case 'share':
       return `${raster.name} ${percent(value)}`;
+    case 'height':
+      return value === 0 ? 'no data' : `about ${heightOf(raster, value)} m`;
     case 'closing':
       if (value === noClosing) return 'cannot hold the plant';
       if (value === 0) return `still open in ${raster.lastYear}`;

@@ -21,8 +21,13 @@ export interface Overlay {
 
 type Pen = CanvasRenderingContext2D;
 const faintness = 0.45;
-const fenceDash = [5, 3];
-const lossDash = [2, 2.5];
+/** What is surveyed or taken away is drawn in ink; what people plant, in coral. */
+const inkDashes: Partial<Record<MapArea['kind'], readonly number[]>> = {
+  fence: [5, 3],
+  loss: [2, 2.5],
+  refuge: [],
+  allowed: [9, 3, 2, 3],
+};
 
 /** Paints contours, outlines and the rings of a selection; px of the screen from the map's top left corner. */
 export function paintOverlay(
@@ -72,7 +77,7 @@ function outline(pen: Pen, colour: string, width: number): void {
   pen.stroke();
 }
 
-/** A fence is dashed in ink, a loss dotted with a cross, plants a line of coral between lines of ink, like their flags. */
+/** A fence is dashed in ink, a loss dotted with a cross, a surveyed refuge drawn through, plants a line of coral between lines of ink, like their flags. */
 function paintArea(
   pen: Pen,
   { kind, ring }: MapArea,
@@ -86,15 +91,16 @@ function paintArea(
   trace(pen, ring, place, true);
   pen.setLineDash([]);
   outline(pen, colours.halo, 4.4 + more);
-  if (kind === 'fence' || kind === 'loss') {
-    pen.setLineDash(kind === 'fence' ? fenceDash : lossDash);
+  const dash = inkDashes[kind];
+  if (dash) {
+    pen.setLineDash([...dash]);
     outline(pen, colours.ink, 1.8 + more);
     pen.setLineDash([]);
   } else {
     outline(pen, colours.ink, 3.2 + more);
     outline(pen, colours.flag, 1.7);
   }
-  if (kind === 'clumps' || kind === 'fence' || width < 24) return;
+  if ((kind !== 'planting' && kind !== 'loss') || width < 24) return;
   const { left, top } = place(pointInside(ring));
   pen.beginPath();
   if (kind === 'loss') {

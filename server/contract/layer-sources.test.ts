@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { layerSourcesSchema } from '#sim-core/spec/run-spec.ts';
 import type { Feature } from './features.ts';
-import { layerSources } from './layer-sources.ts';
+import { allowedSource, layerSources } from './layer-sources.ts';
 import type { Layer } from './layers.ts';
 
 const layer = (part: Layer['part'], hash: string, more: Partial<Layer> = {}) =>
@@ -57,6 +57,18 @@ describe('layerSources', () => {
     expect(sources.exposure).toEqual({ highest: [{ layer: 'd'.repeat(64), scale: 1 / 255 }, byHeight] });
     expect(layerSourcesSchema.parse(sources)).toEqual(sources);
     expect(layerSources({ layers: [habitat, cover], features: [], elevationCurves }).exposure).toBe(0);
+  });
+
+  it('lets works go where the layer or an area allows, or anywhere', () => {
+    const polygon = { shape: 'polygon' as const, ring };
+    const areas = { areas: [{ area: polygon, strength: 1 }] };
+    const layers = [layer('allowed', 'f', { unit: 'presence' })];
+    const features = [feature('allowed', polygon, 0.3), feature('fence', polygon)];
+    expect(allowedSource({ layers: [], features: [feature('fence', polygon)] })).toBeUndefined();
+    expect(allowedSource({ layers: [], features })).toEqual(areas);
+    expect(allowedSource({ layers, features })).toEqual({
+      highest: [{ layer: 'f'.repeat(64), scale: 1 }, areas],
+    });
   });
 
   it('shelters by raster, surveyed mounds and areas, and fences; allowed ground is none of the engine’s business', () => {

@@ -50,6 +50,14 @@ export function layerSources(
   };
 }
 
+/** Where works may go: in the layer `allowed` or an allowed area; undefined where neither says, so that they may go anywhere. */
+export function allowedSource(site: Pick<Site, 'layers' | 'features'>): LayerSource | undefined {
+  const layer = layerOf(site, 'allowed');
+  const shares: MaySource = layer && { layer: layer.hash, scale: valueUnitScale[layer.unit] };
+  const areas = areasOf(site.features, 'allowed');
+  return shares || areas ? highest(shares, areas) : undefined;
+}
+
 type MaySource = LayerSource | undefined;
 const given = (sources: MaySource[]) => sources.filter((source) => source !== undefined);
 
@@ -74,9 +82,11 @@ function moundsOf(features: readonly Feature[]): MaySource {
 }
 
 /** Areas of a kind; of refuges, those that are no mounds. */
-function areasOf(features: readonly Feature[], of: 'refuge' | 'fence'): MaySource {
+function areasOf(features: readonly Feature[], of: Feature['kind']): MaySource {
   const areas = features.flatMap(({ kind, shape, strength }) =>
-    kind === of && (of === 'fence' || shape.shape === 'polygon') ? [{ area: shape, strength }] : [],
+    kind === of && (of !== 'refuge' || shape.shape === 'polygon')
+      ? [{ area: shape, strength: of === 'allowed' ? 1 : strength }]
+      : [],
   );
   return areas.length > 0 ? { areas } : undefined;
 }

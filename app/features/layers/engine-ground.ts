@@ -1,4 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
+import type { Site } from '#contract/sites.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { rasterSources, type LayerSource, type LayerSources } from '#sim-core/spec/run-spec.ts';
 import { cells } from '#app/workers/cells-client.ts';
@@ -17,6 +18,13 @@ export interface GroundOrigin {
   readonly grid: Grid;
   readonly rasters: readonly NamedRaster[];
 }
+
+/** The ground of a site as it stands. */
+export const siteOrigin = ({ id, grid, layers }: Pick<Site, 'id' | 'grid' | 'layers'>): GroundOrigin => ({
+  siteId: id,
+  grid,
+  rasters: layers.map(({ hash, noData }) => ({ hash, noData })),
+});
 
 /**
  * The rasters that sources name, as they are stored.
@@ -40,7 +48,7 @@ export async function fetchLayers(
 }
 
 /** Worked out from bytes that never change, so once; large, so let go soon. */
-const held = { staleTime: Infinity, gcTime: 60_000, structuralSharing: false } as const;
+const held = { staleTime: Infinity, gcTime: 20_000, structuralSharing: false } as const;
 
 /** round(255 × share) of every cell, from one source. */
 export const sourceBytesQuery = (origin: GroundOrigin, source: LayerSource) =>

@@ -1,10 +1,10 @@
-import type { Layer } from '#contract/layers.ts';
+import type { LayerFacts } from '#contract/layers.ts';
 import { formatNumber } from '#app/lib/formats.ts';
 
 const height = 34;
 
 /** How often each value stands in a layer, in equal bins. Bars rise with the root of the count, so that rare ones show. */
-export function Histogram({ layer }: { layer: Pick<Layer, 'histogram' | 'minimum' | 'maximum'> }) {
+export function Histogram({ layer }: { layer: Pick<LayerFacts, 'histogram' | 'minimum' | 'maximum'> }) {
   const { histogram, minimum, maximum } = layer;
   const most = Math.max(...histogram, 1);
   const peak = histogram.indexOf(most);

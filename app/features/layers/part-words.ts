@@ -1,4 +1,4 @@
-import type { LayerPart, ValueUnit } from '#contract/layers.ts';
+import type { HeightUnit, LayerPart, ValueUnit } from '#contract/layers.ts';
 
 export const partLabels: Record<LayerPart, string> = {
   habitat: 'Habitat',
@@ -9,15 +9,17 @@ export const partLabels: Record<LayerPart, string> = {
   allowed: 'Allowed',
 };
 
+/** Parts that a run cannot do without. */
+export const neededParts: readonly LayerPart[] = ['habitat', 'cover'];
+
 /** Why a part is needed, where there is no layer for it yet. */
 export const partReasons: Record<LayerPart, string> = {
   habitat: 'Where the plant can grow: a raster of classes such as creek, mud and marsh. A run needs it.',
-  elevation: 'How high the ground lies. Optional; curves say what it does to capacity, vigour and exposure.',
+  elevation: 'Heights, from which curves derive capacity, vigour and exposure. Optional.',
   cover: 'Where the plant stands now: the share of each cell that it covers. A run starts from it.',
-  exposure:
-    'Where waves and currents wear at the plant. Optional; without it the ground counts as sheltered.',
+  exposure: 'Chronic physical stress of each cell, such as waves. Optional; without it there is none.',
   refuge: 'Where survivors are sheltered: surveyed mounds and the like. Optional; without it there are none.',
-  allowed: 'Where works may go. Optional; without it they may go anywhere.',
+  allowed: 'Where works may go, by permit or by access. Optional; without it they may go anywhere.',
 };
 
 /** What a file for the part holds, in a few words. */
@@ -25,7 +27,7 @@ export const partHolds: Record<LayerPart, string> = {
   habitat: 'classes of ground',
   elevation: 'heights',
   cover: 'share covered now',
-  exposure: 'strength of physical stress',
+  exposure: 'strength of stress',
   refuge: 'strength of shelter',
   allowed: 'where works may go',
 };
@@ -36,3 +38,12 @@ export const unitLabels: Record<ValueUnit, string> = {
   byte: '8 bits, 0 to 255',
   presence: 'present or absent, 1 or 0',
 };
+
+export const heightUnitLabels: Record<HeightUnit, string> = {
+  metre: 'metres',
+  foot: 'feet (0.3048 m)',
+  'us-foot': 'US survey feet',
+};
+
+/** Parts whose values are shares, so that somebody must say in what they are counted. */
+export const hasUnit = (part: LayerPart): boolean => part !== 'habitat' && part !== 'elevation';

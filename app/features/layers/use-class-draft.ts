@@ -1,6 +1,6 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
-import type { Layer } from '#contract/layers.ts';
+import type { HabitatClass, Layer } from '#contract/layers.ts';
 import { sayDone } from '#app/components/toast.tsx';
 import { formatCounted } from '#app/lib/formats.ts';
 import { setClassesMutation } from './change-layer.ts';
@@ -18,6 +18,8 @@ export interface ClassDraft {
   /** null while nothing went wrong */
   error: Error | null;
   change: (value: number, change: Partial<ClassRow>) => void;
+  /** fills in rows by class number; answers how many were taken, and which the raster does not hold */
+  fill: (classes: readonly HabitatClass[]) => { taken: number; unknown: number[] };
   save: () => void;
   revert: () => void;
 }
@@ -42,6 +44,16 @@ export function useClassDraft(siteId: string, layer: Layer | undefined): ClassDr
         layerId: layer.id,
         rows: rows.map((row) => (row.value === value ? { ...row, ...change } : row)),
       });
+    },
+    fill: (classes) => {
+      const known = new Set(rows.map((row) => row.value));
+      const filled = rows.map((row) => {
+        const given = classes.find(({ value }) => value === row.value);
+        return given ? { ...given, capacity: String(given.capacity), vigour: String(given.vigour) } : row;
+      });
+      if (layer) setEdited({ layerId: layer.id, rows: filled });
+      const unknown = classes.map(({ value }) => value).filter((value) => !known.has(value));
+      return { taken: classes.length - unknown.length, unknown };
     },
     save: () => {
       const classes = readRows(rows);

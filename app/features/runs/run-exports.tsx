@@ -1,6 +1,7 @@
 import { exportClosing, exportFrame, exportSeries, type Run } from '#contract/runs.ts';
 import { WordAnchor, WordButton } from '#app/components/word-button.tsx';
 import { endpointUrl } from '#app/lib/api-client.ts';
+import { saveFile } from '#app/lib/save-file.ts';
 import { fileNames, specForFiles } from './spec-for-files.ts';
 
 /** What can be taken away from a run. */
@@ -43,10 +44,8 @@ export function RunExports({ run, year }: { run: Run; year: number | undefined }
 /** The spec is at hand already, so it is written to a file without asking the server. */
 function downloadSpec(run: Run): void {
   const json = JSON.stringify(specForFiles(run.spec, run.layers), null, 2);
-  const address = URL.createObjectURL(new Blob([json], { type: 'application/json' }));
-  const link = document.createElement('a');
-  link.href = address;
-  link.download = `${run.name.replace(/[^\p{L}\p{N}]+/gu, '-').toLowerCase()}-spec.json`;
-  link.click();
-  setTimeout(() => URL.revokeObjectURL(address), 10_000);
+  saveFile(
+    `${run.name.replace(/[^\p{L}\p{N}]+/gu, '-').toLowerCase()}-spec.json`,
+    new Blob([json], { type: 'application/json' }),
+  );
 }

@@ -1,85 +1,101 @@
-import { useMemo } from 'react';
-import { layerParts, type LayerPart } from '#contract/layers.ts';
+import { useState } from 'react';
+import { layerParts, type HabitatClass, type Layer, type LayerPart } from '#contract/layers.ts';
 import { FileDrop } from '#app/components/file-drop.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
-import { classesForMap } from '#app/features/layers/class-draft.ts';
+import { WordButton } from '#app/components/word-button.tsx';
+import { ElevationCurvesEditor } from '#app/features/elevation/elevation-curves.tsx';
+import type { ElevationDrafting } from '#app/features/elevation/use-elevation-draft.ts';
+import { readRows } from '#app/features/layers/class-draft.ts';
+import { ClassFiles } from '#app/features/layers/class-files.tsx';
 import { ClassList, ClassTable } from '#app/features/layers/class-table.tsx';
-import { plantableArea } from '#app/features/layers/ground-facts.ts';
 import { LayerEntry } from '#app/features/layers/layer-entry.tsx';
-import { partLabels, partReasons } from '#app/features/layers/part-words.ts';
-import { UnitChoice } from '#app/features/layers/unit-choice.tsx';
-import { UploadList } from '#app/features/layers/upload-list.tsx';
-import type { UploadStore } from '#app/features/layers/upload-store.ts';
+import { hasUnit, neededParts, partLabels, partReasons } from '#app/features/layers/part-words.ts';
+import { HeightChoice, UnitChoice } from '#app/features/layers/unit-choice.tsx';
+import type { SendingStore } from '#app/features/layers/uploads/sending-store.ts';
+import { UploadPanel } from '#app/features/layers/uploads/upload-panel.tsx';
 import type { ClassDraft } from '#app/features/layers/use-class-draft.ts';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
-import { formatArea, formatCount, formatLength, formatShare } from '#app/lib/formats.ts';
+import { FeatureSection } from '#app/features/site-features/feature-section.tsx';
+import { CellSizeDialog } from '#app/features/working-cell/cell-size-dialog.tsx';
+import { GridChangeProgress } from '#app/features/working-cell/grid-change-progress.tsx';
+import { formatArea, formatCount, formatLength } from '#app/lib/formats.ts';
 import { formatCoordinate } from '#app/map/map-ticks.ts';
+import { EngineView } from './engine-view.tsx';
+import type { GroundView } from './ground-view.ts';
 import { SiteSettings } from './site-settings.tsx';
 import { useSite } from './use-site.ts';
 
 interface GroundMarginProps {
-  rasters: GroundRasters;
+  ground: GroundRasters;
   classes: ClassDraft;
-  shown: LayerPart | undefined;
-  onShow: (part: LayerPart) => void;
-  uploads: UploadStore;
-  taken: readonly LayerPart[];
-  /** the class table waits to be saved, so that is the action that matters now */
+  elevation: ElevationDrafting;
+  view: GroundView | undefined;
+  onShow: (view: GroundView) => void;
+  sending: SendingStore;
+  /** something waits to be saved, so that is the action that matters now */
   unsaved: boolean;
-  onFiles: (files: File[]) => void;
+  /** `part` where the file is to replace the layer of one */
+  onFiles: (files: File[], part?: LayerPart) => void;
 }
 
 /** What stands on the site and what is missing, in words. */
 export function GroundMargin(props: GroundMarginProps) {
   const { site, mayKeepGround } = useSite();
-  const { grid, layers } = site;
+  const { view, onShow, onFiles } = props;
+  const layers = layerParts.flatMap((part) => site.layers.find((layer) => layer.part === part) ?? []);
+  const missing = layerParts.filter((part) => layers.every((layer) => layer.part !== part));
   return (
     <>
       <h1 className="text-lead">Ground</h1>
-      <p className="mt-0.5 mb-2 text-note text-ink-2">
-        The working grid: {site.crsName} (EPSG:{grid.epsg}), {formatCount(grid.width)} ×{' '}
-        {formatCount(grid.height)} cells of {formatLength(grid.cellSize)},{' '}
-        {formatArea(grid.width * grid.height * grid.cellSize ** 2)}. North-west corner{' '}
-        <span className="font-mono text-axis whitespace-nowrap">
-          E {formatCoordinate(grid.originX)} N {formatCoordinate(grid.originY)}
-        </span>
-        .
-      </p>
-      {layerParts.map((part) => {
-        const layer = layers.find((each) => each.part === part);
-        if (!layer) return <MissingPart key={part} part={part} />;
-        return (
-          <LayerEntry
-            key={part}
+      <WorkingGrid />
+      {mayKeepGround && (
+        <section aria-label="Add layers" className="border-t border-ink pt-2.5 pb-3">
+          <UploadPanel
+            teamId={site.teamId}
             siteId={site.id}
-            layer={layer}
-            shown={props.shown === part}
-            onShow={() => props.onShow(part)}
-            editable={mayKeepGround}
-          >
-            {part === 'habitat' ? (
-              <Classes {...props} />
-            ) : part === 'elevation' ? undefined : (
-              <UnitChoice siteId={site.id} layer={layer} editable={mayKeepGround} />
-            )}
-          </LayerEntry>
-        );
-      })}
-      <EngineView rasters={props.rasters} classes={props.classes} />
-      {mayKeepGround ? (
-        <section aria-label="Add layers" className="border-t border-ink pt-3">
-          <h2 className="mb-2 text-body">Add or replace a layer</h2>
-          <UploadList store={props.uploads} taken={props.taken} primary={!props.unsaved} />
+            grid={site.grid}
+            layers={site.layers}
+            store={props.sending}
+            primary={!props.unsaved}
+          />
           <FileDrop
             label="Drop GeoTIFFs here"
-            hint="One band each, on the same cells as the working grid. A layer of the same part is replaced; runs keep the old one."
+            hint="Any number, of any CRS and cell size, anywhere on the page: each is read, and you decide about it before it is placed."
             accept=".tif,.tiff,image/tiff"
-            onFiles={props.onFiles}
+            onFiles={onFiles}
           />
         </section>
-      ) : (
+      )}
+      {layers.map((layer) => (
+        <LayerEntry
+          key={layer.part}
+          siteId={site.id}
+          layer={layer}
+          shown={view?.of === 'layer' && view.part === layer.part}
+          onShow={() => onShow({ of: 'layer', part: layer.part })}
+          editable={mayKeepGround}
+          onFile={(file) => onFiles([file], layer.part)}
+        >
+          {layer.part === 'habitat' && <Classes {...props} layer={layer} />}
+          {layer.part === 'elevation' && (
+            <>
+              <HeightChoice siteId={site.id} layer={layer} editable={mayKeepGround} />
+              <ElevationCurvesEditor layer={layer} drafting={props.elevation} editable={mayKeepGround} />
+            </>
+          )}
+          {hasUnit(layer.part) && <UnitChoice siteId={site.id} layer={layer} editable={mayKeepGround} />}
+        </LayerEntry>
+      ))}
+      {missing.length > 0 && <Missing parts={missing} />}
+      <FeatureSection siteId={site.id} features={site.features} editable={mayKeepGround} />
+      <EngineView
+        ground={props.ground}
+        shown={view?.of === 'engine' ? view.map : undefined}
+        onShow={(map) => onShow({ of: 'engine', map })}
+      />
+      {!mayKeepGround && (
         <p className="border-t border-ink pt-2 text-note text-ink-2">
-          Layers, units and classes are changed by modellers and admins of the team.
+          Layers, classes, curves, points and areas are changed by modellers and admins of the team.
         </p>
       )}
       <SiteSettings />
@@ -87,30 +103,73 @@ export function GroundMargin(props: GroundMarginProps) {
   );
 }
 
-function MissingPart({ part }: { part: LayerPart }) {
+/** The cells that everything lies on, and the way to coarser ones. */
+function WorkingGrid() {
+  const { site, mayKeepGround } = useSite();
+  const { grid } = site;
+  const [choosing, setChoosing] = useState(false);
   return (
-    <section className="border-t border-rule py-2.5" aria-label={partLabels[part]}>
-      <h2 className="text-body text-ink-2">
-        {partLabels[part]}{' '}
-        <span className="text-note font-normal">
-          {part === 'habitat' || part === 'cover' ? 'is missing' : 'none'}
+    <>
+      <p className="mt-0.5 mb-2 text-note text-ink-2">
+        The working grid: {site.crsName} (EPSG:{grid.epsg}), {formatCount(grid.width)} ×{' '}
+        {formatCount(grid.height)} cells of {formatLength(grid.cellSize)},{' '}
+        {formatArea(grid.width * grid.height * grid.cellSize ** 2)}. North-west corner{' '}
+        <span className="font-mono text-axis whitespace-nowrap">
+          E {formatCoordinate(grid.originX)} N {formatCoordinate(grid.originY)}
         </span>
-      </h2>
-      <p className="text-note text-ink-2">{partReasons[part]}</p>
+        .{' '}
+        {mayKeepGround && (
+          <WordButton lined onClick={() => setChoosing(true)}>
+            Another cell size
+          </WordButton>
+        )}
+      </p>
+      <GridChangeProgress siteId={site.id} editable={mayKeepGround} />
+      {choosing && <CellSizeDialog site={site} onClose={() => setChoosing(false)} />}
+    </>
+  );
+}
+
+function Missing({ parts }: { parts: readonly LayerPart[] }) {
+  return (
+    <section className="border-t border-rule py-2.5" aria-label="Layers that are not there">
+      <h2 className="text-body text-ink-2">Not there yet</h2>
+      <dl className="text-note text-ink-2">
+        {parts.map((part) => (
+          <div key={part} className="mt-0.5">
+            <dt className="inline font-semibold">
+              {partLabels[part]}
+              {neededParts.includes(part) && ' is missing'}.
+            </dt>{' '}
+            <dd className="inline">{partReasons[part]}</dd>
+          </div>
+        ))}
+      </dl>
     </section>
   );
 }
 
-function Classes({ classes }: GroundMarginProps) {
+function Classes({ classes, layer }: Pick<GroundMarginProps, 'classes'> & { layer: Layer }) {
   const { site, mayKeepGround } = useSite();
-  const layer = site.layers.find(({ part }) => part === 'habitat');
-  if (!layer) return null;
   const table = { layer, rows: classes.rows, cellSize: site.grid.cellSize };
+  const saved: readonly HabitatClass[] | undefined = mayKeepGround
+    ? readRows(classes.rows)
+    : (layer.classes ?? undefined);
+  const files = (
+    <ClassFiles
+      classes={saved}
+      fileName={`${site.name.replace(/[^\p{L}\p{N}]+/gu, '-').toLowerCase()}-classes.csv`}
+      onImport={mayKeepGround ? classes.fill : undefined}
+    />
+  );
   if (!mayKeepGround)
     return classes.suggested ? (
       <p>No class table yet: a modeller or admin says what each class can hold.</p>
     ) : (
-      <ClassList {...table} />
+      <>
+        <ClassList {...table} />
+        {files}
+      </>
     );
   return (
     <>
@@ -120,63 +179,8 @@ function Classes({ classes }: GroundMarginProps) {
         a share of growth on good ground.
       </p>
       <ClassTable {...table} onChange={classes.change} />
+      {files}
       {classes.error !== null && <ProblemNotice error={classes.error} className="mt-2" />}
     </>
-  );
-}
-
-/** The ground as a run would take it, in words. Follows the class table while it is edited. */
-function EngineView({ rasters, classes }: Pick<GroundMarginProps, 'rasters' | 'classes'>) {
-  const { site } = useSite();
-  const { grid, layers } = site;
-  const has = (part: LayerPart) => layers.some((layer) => layer.part === part);
-  const habitat = layers.find(({ part }) => part === 'habitat');
-  const whole = grid.width * grid.height * grid.cellSize ** 2;
-  const plantable = useMemo(
-    () => habitat && plantableArea(habitat, classesForMap(classes.rows), grid.cellSize),
-    [habitat, classes.rows, grid.cellSize],
-  );
-  const pending = 'being counted';
-  const { facts } = rasters;
-  const covered = facts && facts.covered * grid.cellSize ** 2;
-  return (
-    <section className="border-t border-ink py-3" aria-label="What the engine will see">
-      <h2 className="mb-1 text-body">What the engine will see</h2>
-      <dl className="grid grid-cols-[1fr_auto] gap-x-3 text-[13px] [&_dd]:text-right [&_dd]:font-semibold [&>div]:contents">
-        <div>
-          <dt>can hold the plant</dt>
-          <dd>
-            {plantable === undefined
-              ? 'needs habitat'
-              : `${formatArea(plantable)}, ${formatShare(plantable / whole)}`}
-          </dd>
-        </div>
-        <div>
-          <dt>covered at the survey</dt>
-          <dd>
-            {!has('cover')
-              ? 'needs cover'
-              : covered === undefined
-                ? pending
-                : `${formatArea(covered)}${plantable ? `, ${formatShare(covered / plantable)} of that` : ''}`}
-          </dd>
-        </div>
-        <div>
-          <dt>with surveyed refuge</dt>
-          <dd>
-            {!has('refuge')
-              ? 'none'
-              : facts === undefined
-                ? pending
-                : formatArea(facts.sheltered * grid.cellSize ** 2)}
-          </dd>
-        </div>
-      </dl>
-      {classes.dirty && (
-        <p className="mt-1 text-note text-ink-2">
-          The first line follows the table above as typed; the others follow once it is saved.
-        </p>
-      )}
-    </section>
   );
 }

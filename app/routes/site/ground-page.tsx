@@ -1,98 +1,95 @@
 import { useDeferredValue, useMemo, useState } from 'react';
 import { useQueryClient } from '@tanstack/react-query';
 import { useSearchParams } from 'react-router-dom';
-import type { LayerPart } from '#contract/layers.ts';
-import { layerParts } from '#contract/layers.ts';
+import { allowedSource, layerOf } from '#contract/layer-sources.ts';
+import { layerParts, type LayerPart } from '#contract/layers.ts';
 import { useSearchPatch } from '#app/lib/use-search-patch.ts';
 import { LeaveGuard } from '#app/components/leave-guard.tsx';
 import { LinkButton } from '#app/components/link-button.tsx';
-import { SaveBar } from '#app/components/save-bar.tsx';
-import { WordChoice } from '#app/components/word-choice.tsx';
+import { useElevationDraft } from '#app/features/elevation/use-elevation-draft.ts';
 import { classesForMap } from '#app/features/layers/class-draft.ts';
 import { guessPart } from '#app/features/layers/guess-part.ts';
-import { partLabels } from '#app/features/layers/part-words.ts';
-import { createUploadStore } from '#app/features/layers/upload-store.ts';
-import { sendLayer } from '#app/features/layers/upload-layer.ts';
+import { createSendingStore } from '#app/features/layers/uploads/sending-store.ts';
+import { sendUpload } from '#app/features/layers/uploads/send-upload.ts';
 import { useClassDraft } from '#app/features/layers/use-class-draft.ts';
 import { useDropAnywhere } from '#app/features/layers/use-drop-anywhere.ts';
 import { useGroundRasters } from '#app/features/layers/use-ground-rasters.ts';
 import { missingGround } from '#app/features/sites/site-steps.ts';
-import { formatCounted } from '#app/lib/formats.ts';
+import { useSettled } from '#app/lib/use-settled.ts';
 import { GroundMap } from './ground-map.tsx';
 import { GroundMargin } from './ground-margin.tsx';
+import { GroundSaveBar } from './ground-save-bar.tsx';
+import { GroundTools } from './ground-tools.tsx';
+import { readView, viewKey } from './ground-view.ts';
 import { SitePage } from './site-page.tsx';
 import { useSite } from './use-site.ts';
 
-/** The rasters of a site: each on the map, in words, and with what its values mean. */
+/** How long a draft must rest before the engine's ground is worked out anew, ms. */
+const rest = 350;
+
+/** The ground of a site: its layers, what they mean, and what the engine will see of them. */
 export function Page() {
   const { site, mayKeepGround } = useSite();
   const queryClient = useQueryClient();
-  const rasters = useGroundRasters(site);
-  const habitat = site.layers.find((layer) => layer.part === 'habitat');
+  const habitat = layerOf(site, 'habitat');
   const classes = useClassDraft(site.id, habitat);
-  const [uploads] = useState(() => createUploadStore((upload) => sendLayer(queryClient, site.id, upload)));
-  const taken = useMemo(() => site.layers.map((layer) => layer.part), [site.layers]);
-  const addFiles = (files: File[]) =>
-    uploads.tell({ type: 'dropped', files, guess: (file) => guessPart(file.name, taken) });
+  const elevation = useElevationDraft(site);
+  const [sending] = useState(() =>
+    createSendingStore((file) => sendUpload(queryClient, site.teamId, { siteId: site.id, ...file })),
+  );
+  const taken = layerParts.filter((part) => layerOf(site, part) !== undefined);
+  const present = layerParts.filter(
+    (part) => taken.includes(part) || (part === 'allowed' && allowedSource(site) !== undefined),
+  );
+  const addFiles = (files: File[], part?: LayerPart) =>
+    sending.drop(files, (file) => part ?? guessPart(file.name, taken));
   useDropAnywhere(mayKeepGround ? addFiles : undefined);
 
   const [search] = useSearchParams();
   const patchSearch = useSearchPatch();
-  const asked = search.get('layer');
-  const present = layerParts.filter((part) => taken.includes(part));
-  const shown = present.find((part) => part === asked) ?? present.at(0);
-  const show = (part: LayerPart) => patchSearch({ layer: part });
+  const view = readView(search.get('layer'), present);
+  const show = (next: NonNullable<typeof view>) => patchSearch({ layer: viewKey(next) });
 
   // The map follows while somebody types; on a large site it must not hold the typing up.
   const rows = useDeferredValue(classes.rows);
   const shownClasses = useMemo(() => classesForMap(rows), [rows]);
-  const unsaved = mayKeepGround && habitat !== undefined && (classes.dirty || classes.suggested);
+  const draft = useMemo(() => {
+    const changed = classes.dirty || habitat?.classes;
+    return {
+      ...site,
+      elevationCurves: elevation.draft.elevationCurves,
+      layers: site.layers.map((layer) =>
+        layer.part === 'habitat' && changed ? { ...layer, classes: shownClasses } : layer,
+      ),
+    };
+  }, [site, habitat, classes.dirty, shownClasses, elevation.draft.elevationCurves]);
+  const settled = useSettled(draft, rest);
+  // What was saved is shown at once; a draft waits until the hand rests.
+  const ground = useGroundRasters(classes.dirty || elevation.dirty ? settled : site);
 
+  const unsaved =
+    mayKeepGround && (elevation.dirty || (habitat !== undefined && (classes.dirty || classes.suggested)));
   return (
     <SitePage
       step="ground"
-      tools={
-        <div className="flex min-h-8 flex-wrap items-center gap-x-6">
-          {shown === undefined ? (
-            <span className="text-[13.5px] text-ink-2">No layer to show yet</span>
-          ) : (
-            <WordChoice
-              label="The map shows"
-              showLabel
-              options={present.map((key) => ({ key, label: partLabels[key].toLowerCase() }))}
-              value={shown}
-              onChange={show}
-            />
-          )}
-        </div>
-      }
-      map={<GroundMap shown={shown} rasters={rasters} classes={shownClasses} />}
+      tools={<GroundTools {...{ present, view }} onShow={show} />}
+      map={<GroundMap view={view} ground={ground} classes={shownClasses} />}
       margin={
         <>
           <GroundMargin
-            {...{ rasters, classes, shown, uploads, taken, unsaved }}
+            {...{ ground, classes, elevation, view, sending, unsaved }}
             onShow={show}
             onFiles={addFiles}
           />
-          <LeaveGuard when={mayKeepGround && classes.dirty} what="The class table" />
+          <LeaveGuard
+            when={mayKeepGround && (classes.dirty || elevation.dirty)}
+            what={classes.dirty ? 'The class table' : 'The elevation curves'}
+          />
         </>
       }
       action={
         unsaved ? (
-          <SaveBar
-            label="Save the class table"
-            dirty={classes.dirty}
-            busy={classes.saving}
-            words={
-              classes.wrong > 0
-                ? `${formatCounted(classes.wrong, 'class', 'classes')} to mend first.`
-                : classes.dirty
-                  ? 'Changed and not saved.'
-                  : 'Suggested; not saved yet.'
-            }
-            onSave={classes.save}
-            onRevert={classes.revert}
-          />
+          <GroundSaveBar {...{ classes, elevation }} />
         ) : missingGround(site.layers).length === 0 ? (
           <LinkButton to={`/sites/${site.id}/plant`}>On to Plant</LinkButton>
         ) : undefined

@@ -7,7 +7,7 @@ import { useSite } from './use-site.ts';
 export function GroundState({ ground }: { ground: GroundRasters }) {
   const { site } = useSite();
   const has = (part: 'habitat' | 'cover') => site.layers.some((layer) => layer.part === part);
-  const error = ground.errors.ground ?? ground.errors.habitat;
+  const { error } = ground;
   const box = 'absolute top-10 left-4 max-w-[420px] bg-ground px-3 py-1.5 text-note lg:left-6';
   if (error)
     return (

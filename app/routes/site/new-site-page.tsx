@@ -1,26 +1,27 @@
-import { useQuery, useQueryClient } from '@tanstack/react-query';
-import { useRef, useState, type FormEvent } from 'react';
+import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
+import { useState, useSyncExternalStore, type FormEvent } from 'react';
 import { Navigate, useParams } from 'react-router-dom';
-import { layerParts, type LayerPart } from '#contract/layers.ts';
 import { Button } from '#app/components/button.tsx';
 import { FileDrop } from '#app/components/file-drop.tsx';
 import { TextField } from '#app/components/inputs.tsx';
 import { LeaveGuard } from '#app/components/leave-guard.tsx';
 import { MessagePage, NotFound } from '#app/components/message-page.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
-import { Progress } from '#app/components/progress.tsx';
-import { WordButton } from '#app/components/word-button.tsx';
-import { WordChoice } from '#app/components/word-choice.tsx';
 import { guessPart } from '#app/features/layers/guess-part.ts';
-import { partHolds, partLabels } from '#app/features/layers/part-words.ts';
+import { createSendingStore } from '#app/features/layers/uploads/sending-store.ts';
+import { sendUpload } from '#app/features/layers/uploads/send-upload.ts';
+import { SendingRow } from '#app/features/layers/uploads/upload-panel.tsx';
+import { isReady } from '#app/features/layers/uploads/plan-words.ts';
+import { UploadRow } from '#app/features/layers/uploads/upload-row.tsx';
+import { dismiss, uploadsQuery } from '#app/features/layers/uploads/uploads-query.ts';
+import { WorkingGridChoice } from '#app/features/layers/uploads/working-grid-choice.tsx';
 import { useDropAnywhere } from '#app/features/layers/use-drop-anywhere.ts';
 import { roleIn, sessionQuery } from '#app/features/session/session.ts';
-import { sendSite } from '#app/features/sites/create-site.ts';
-import { ProblemError, type Progress as Sent } from '#app/lib/api-client.ts';
-import { formatBytes } from '#app/lib/formats.ts';
+import { makeSiteMutation } from '#app/features/sites/create-site.ts';
+import { ProblemError } from '#app/lib/api-client.ts';
 import { PageTop, PaperPage } from '../shell/paper-page.tsx';
 
-/** Makes a site of one GeoTIFF. */
+/** Makes a site of one raster. */
 export function Page() {
   const teamId = useParams().teamId ?? '';
   const session = useQuery(sessionQuery).data;
@@ -34,55 +35,41 @@ export function Page() {
         see it in your list.
       </MessagePage>
     );
-  return <NewSite teamId={teamId} teamName={team.teamName} />;
+  return <NewSite teamId={teamId} teamName={team.teamName} me={session?.person?.name ?? ''} />;
 }
 
-type Sending =
-  | { kind: 'idle' }
-  | { kind: 'sending'; sent: Sent }
-  | { kind: 'refused'; error: unknown }
-  | { kind: 'made'; siteId: string };
-
-function NewSite({ teamId, teamName }: { teamId: string; teamName: string }) {
+function NewSite({ teamId, teamName, me }: { teamId: string; teamName: string; me: string }) {
   const [name, setName] = useState('');
-  const [file, setFile] = useState<File>();
-  const [part, setPart] = useState<LayerPart>('habitat');
   const [tried, setTried] = useState(false);
-  const [sending, setSending] = useState<Sending>({ kind: 'idle' });
-  const abort = useRef<AbortController>(undefined);
   const queryClient = useQueryClient();
-  const busy = sending.kind === 'sending';
-  const choose = (chosen: File) => {
-    setFile(chosen);
-    setPart(guessPart(chosen.name, []) ?? part);
-    setSending({ kind: 'idle' });
+  const [store] = useState(() =>
+    createSendingStore((file) => sendUpload(queryClient, teamId, { siteId: undefined, ...file })),
+  );
+  const sendings = useSyncExternalStore(store.subscribe, store.snapshot);
+  const uploads = useQuery(uploadsQuery(teamId, undefined));
+  // Others of the team may be at the same; the latest of one's own is the one that is worked on.
+  const mine = uploads.data?.filter(({ uploadedBy }) => uploadedBy === me) ?? [];
+  const upload = mine.at(-1);
+  const make = useMutation(makeSiteMutation(queryClient, teamId));
+  const sending = sendings.some(({ state }) => state.kind !== 'refused');
+  const choose = (file: File) => {
+    for (const { key } of sendings) store.remove(key);
+    for (const old of mine) dismiss(queryClient, old).catch(() => undefined);
+    make.reset();
+    store.drop([file], ({ name: fileName }) => guessPart(fileName, []));
   };
-  useDropAnywhere(busy ? undefined : (files) => choose(files[0]));
+  useDropAnywhere(make.isPending ? undefined : (files) => choose(files[0]));
+  const ready = upload !== undefined && isReady(upload) && !sending;
 
-  const submit = async (event: FormEvent) => {
+  const submit = (event: FormEvent) => {
     event.preventDefault();
     setTried(true);
-    if (busy || name.trim() === '' || file === undefined) return;
-    const controller = new AbortController();
-    abort.current = controller;
-    setSending({ kind: 'sending', sent: { sent: 0, total: file.size } });
-    try {
-      const site = await sendSite(queryClient, teamId, {
-        name,
-        part,
-        file,
-        onProgress: (sent) => setSending({ kind: 'sending', sent }),
-        signal: controller.signal,
-      });
-      setSending({ kind: 'made', siteId: site.id });
-    } catch (error) {
-      setSending(controller.signal.aborted ? { kind: 'idle' } : { kind: 'refused', error });
-    }
+    if (!ready || name.trim() === '' || make.isPending) return;
+    make.mutate({ uploadId: upload.id, name: name.trim() });
   };
   // By rendering, so that the guard against leaving is gone first.
-  if (sending.kind === 'made') return <Navigate to={`/sites/${sending.siteId}/ground`} replace />;
-  const refusal = sending.kind === 'refused' ? sending.error : undefined;
-  const nameRefusal = refusal instanceof ProblemError ? refusal.fields.name : undefined;
+  if (make.data) return <Navigate to={`/sites/${make.data.id}/ground`} replace />;
+  const nameRefusal = make.error instanceof ProblemError ? make.error.fields.name : undefined;
 
   return (
     <PaperPage
@@ -90,77 +77,57 @@ function NewSite({ teamId, teamName }: { teamId: string; teamName: string }) {
       lead={`A place that ${teamName} works on. Its first raster sets the working grid: CRS, cell size and extent.`}
       aside={<Notes />}
     >
-      <form
-        onSubmit={(event) => void submit(event)}
-        noValidate
-        className="grid max-w-[640px] gap-6 border-t border-ink pt-4"
-      >
+      <form onSubmit={submit} noValidate className="grid max-w-[640px] gap-6 border-t border-ink pt-4">
         <TextField
           label="Name of the site"
           value={name}
           maxLength={100}
           autoComplete="off"
-          disabled={busy}
+          disabled={make.isPending}
           error={nameRefusal ?? (tried && name.trim() === '' ? 'Give the site a name' : undefined)}
           onChange={(event) => setName(event.target.value)}
         />
         <FileDrop
           label="Drop a GeoTIFF here"
-          hint="One band, square cells, in a projected CRS in metres."
+          hint="Any CRS: one in degrees, in feet or with several bands is read, and you see what would be made of it."
           accept=".tif,.tiff,image/tiff"
-          fileName={file && `${file.name}, ${formatBytes(file.size)}`}
-          disabled={busy}
-          error={tried && file === undefined ? 'Choose a raster of the site' : undefined}
+          fileName={sendings.at(0)?.file.name ?? upload?.fileName}
+          disabled={make.isPending}
+          error={tried && !sending && upload === undefined ? 'Choose a raster of the site' : undefined}
           onFile={choose}
         />
-        <div>
-          <WordChoice
-            label="It holds"
-            showLabel
-            options={layerParts.map((key) => ({ key, label: partLabels[key].toLowerCase(), disabled: busy }))}
-            value={part}
-            onChange={setPart}
-          />
-          <p className="mt-0.5 text-note text-ink-2">
-            {partHolds[part]}; the other layers are added afterwards, on the same cells.
-          </p>
-        </div>
-        {refusal !== undefined && nameRefusal === undefined && (
-          <ProblemNotice error={refusal} title={`${file?.name ?? 'The file'} was refused.`} />
+        {sendings.map((each) => (
+          <SendingRow key={each.key} sending={each} onRemove={() => store.remove(each.key)} />
+        ))}
+        {uploads.error && <ProblemNotice error={uploads.error} title="The file cannot be followed." />}
+        {upload && !sending && (
+          <div className="grid gap-3 text-[13.5px]">
+            <UploadRow upload={upload} grid={undefined} />
+            {upload.state === 'choices' && <WorkingGridChoice upload={upload} />}
+          </div>
         )}
-        {sending.kind === 'sending' && <Sends sent={sending.sent} file={file} />}
+        {make.error && nameRefusal === undefined && <ProblemNotice error={make.error} />}
         <div className="flex flex-wrap items-center gap-4">
-          <Button kind="primary" type="submit" busy={busy} busyLabel="Making the site">
+          <Button
+            kind="primary"
+            type="submit"
+            busy={make.isPending}
+            busyLabel="Making the site"
+            disabled={upload !== undefined && !ready}
+          >
             Make the site
           </Button>
-          {busy && (
-            <WordButton lined onClick={() => abort.current?.abort()}>
-              Cancel the upload
-            </WordButton>
+          {upload && !ready && upload.state === 'choices' && (
+            <p className="text-note text-ink-2">Say which part it plays, and from which band, first.</p>
           )}
         </div>
       </form>
       <LeaveGuard
-        when={busy}
-        what="The site"
+        when={sending}
+        what="The file"
         description="The upload stops when you leave this page, and leaves nothing behind."
       />
     </PaperPage>
-  );
-}
-
-function Sends({ sent, file }: { sent: Sent; file: File | undefined }) {
-  const total = sent.total ?? file?.size ?? 0;
-  const checking = sent.sent >= total;
-  return (
-    <Progress
-      label={checking ? 'Reading and checking the raster' : `Sending ${file?.name ?? ''}`}
-      done={sent.sent}
-      of={total}
-      note={
-        checking ? undefined : `${formatBytes(sent.sent)} of ${formatBytes(total)}; cancelling leaves nothing`
-      }
-    />
   );
 }
 
@@ -175,11 +142,12 @@ function Notes() {
         <b className="text-ink">cover</b>, the share of each cell that stands now.
       </p>
       <p className="mt-2">
-        <b className="text-ink">refuge</b>, where survivors are sheltered. Optional.
+        <b className="text-ink">elevation, exposure, refuge, allowed</b> are optional; all layers are added
+        afterwards, brought onto the same cells.
       </p>
       <p className="mt-4">
-        A file in degrees, with several bands or on oblong cells is refused with what would mend it. Nothing
-        of a refused file is kept.
+        A raster in degrees or feet is brought to the UTM zone that fits. A file that cannot be used is
+        refused with what would mend it.
       </p>
     </>
   );

@@ -68,9 +68,9 @@ function show(more: { works?: Work[]; on?: Site; year?: string; justMade?: boole
       options={[option]}
       option={option}
       ground={{
-        habitat: undefined,
         refuge,
-        errors: {},
+        error: null,
+        outdated: false,
         retry: () => undefined,
       }}
       pens={{ ...startingPens(on.outlook.surveyYear), ...(more.year !== undefined && { year: more.year }) }}

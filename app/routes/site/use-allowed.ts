@@ -1,8 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
-import { layerOf } from '#contract/layer-sources.ts';
-import { valueUnitScale } from '#contract/layers.ts';
+import { allowedSource } from '#contract/layer-sources.ts';
 import type { Site } from '#contract/sites.ts';
-import { sourceBytesQuery } from '#app/features/layers/engine-ground.ts';
+import { siteOrigin, sourceBytesQuery } from '#app/features/layers/engine-ground.ts';
 
 export interface AllowedGround {
   /** not 0 where works may go, one byte a cell; undefined where the site says nothing, or while it is fetched */
@@ -11,16 +10,15 @@ export interface AllowedGround {
   readonly known: boolean;
 }
 
-/** Where works may go on a site: where its `allowed` layer says so, or everywhere without one. */
+/** Where works may go on a site: where its `allowed` layer or an allowed area says so, or everywhere without either. */
 export function useAllowed(site: Site): AllowedGround {
-  const layer = layerOf(site, 'allowed');
-  const rasters = layer ? [{ hash: layer.hash, noData: layer.noData }] : [];
+  const source = allowedSource(site);
   const fetched = useQuery({
-    ...sourceBytesQuery(
-      { siteId: site.id, grid: site.grid, rasters },
-      layer ? { layer: layer.hash, scale: valueUnitScale[layer.unit] } : 1,
-    ),
-    enabled: layer !== undefined,
+    ...sourceBytesQuery(siteOrigin(site), source ?? 1),
+    enabled: source !== undefined,
   });
-  return { cells: layer && fetched.data, known: layer === undefined || fetched.data !== undefined };
+  return {
+    cells: source === undefined ? undefined : fetched.data,
+    known: source === undefined || fetched.data !== undefined,
+  };
 }

@@ -1,39 +1,39 @@
 import type { LayerPart } from '#contract/layers.ts';
 import type { Progress } from '#app/lib/api-client.ts';
-import { nextUpload, uploadQueue, type Upload, type UploadEvent } from './upload-queue.ts';
+import { nextToSend, sendingQueue, type Sending, type SendingEvent } from './sending-queue.ts';
 
 /** How one file is sent: settles when the server has it, rejects with what it said. */
-export type SendUpload = (upload: {
+export type SendFile = (sending: {
   file: File;
-  part: LayerPart;
+  part: LayerPart | undefined;
   onProgress: (progress: Progress) => void;
   signal: AbortSignal;
 }) => Promise<unknown>;
 
-/** The uploads of one page: sends confirmed files one after the other, whatever is drawn meanwhile. */
-export interface UploadStore {
+/** The files of one page on their way: sent one after the other, whatever is drawn meanwhile. */
+export interface SendingStore {
   subscribe: (listener: () => void) => () => void;
-  snapshot: () => readonly Upload[];
-  tell: (event: Extract<UploadEvent, { type: 'dropped' | 'chose' | 'confirmed' }>) => void;
+  snapshot: () => readonly Sending[];
+  drop: (files: readonly File[], guess: (file: File) => LayerPart | undefined) => void;
   /** takes a file off the list; one that is being sent is cancelled and leaves nothing behind */
   remove: (key: number) => void;
 }
 
-export function createUploadStore(send: SendUpload): UploadStore {
-  let uploads: readonly Upload[] = [];
-  let sending: { key: number; abort: AbortController } | undefined;
+export function createSendingStore(send: SendFile): SendingStore {
+  let sendings: readonly Sending[] = [];
+  let current: { key: number; abort: AbortController } | undefined;
   const listeners = new Set<() => void>();
-  const apply = (event: UploadEvent) => {
-    uploads = uploadQueue(uploads, event);
+  const apply = (event: SendingEvent) => {
+    sendings = sendingQueue(sendings, event);
     listeners.forEach((listener) => listener());
   };
 
   async function pump(): Promise<void> {
-    const next = nextUpload(uploads);
-    if (next?.part === undefined || sending !== undefined) return;
+    const next = nextToSend(sendings);
+    if (next === undefined || current !== undefined) return;
     const { key, file, part } = next;
     const abort = new AbortController();
-    sending = { key, abort };
+    current = { key, abort };
     apply({ type: 'sending', key, progress: { sent: 0, total: file.size } });
     try {
       await send({
@@ -46,7 +46,7 @@ export function createUploadStore(send: SendUpload): UploadStore {
     } catch (error) {
       if (!abort.signal.aborted) apply({ type: 'refused', key, error });
     } finally {
-      sending = undefined;
+      current = undefined;
     }
     await pump();
   }
@@ -56,13 +56,13 @@ export function createUploadStore(send: SendUpload): UploadStore {
       listeners.add(listener);
       return () => listeners.delete(listener);
     },
-    snapshot: () => uploads,
-    tell: (event) => {
-      apply(event);
+    snapshot: () => sendings,
+    drop: (files, guess) => {
+      apply({ type: 'dropped', files, guess });
       void pump();
     },
     remove: (key) => {
-      if (sending?.key === key) sending.abort.abort();
+      if (current?.key === key) current.abort.abort();
       apply({ type: 'removed', key });
     },
   };

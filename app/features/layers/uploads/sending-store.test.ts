@@ -1,32 +1,35 @@
 import { describe, expect, it, vi } from 'vitest';
 import type { LayerPart } from '#contract/layers.ts';
-import { createUploadStore, type SendUpload } from './upload-store.ts';
+import { createSendingStore, type SendFile } from './sending-store.ts';
 
 const files = (...names: string[]) => names.map((name) => new File(['abc'], name));
 const parts: LayerPart[] = ['habitat', 'cover', 'refuge'];
 const partOf = (file: File) => parts.find((part) => file.name.startsWith(part));
 
-function started(send: SendUpload, ...names: string[]) {
-  const store = createUploadStore(send);
-  store.tell({ type: 'dropped', files: files(...names), guess: partOf });
-  store.tell({ type: 'confirmed', keys: store.snapshot().map((u) => u.key) });
+function started(send: SendFile, ...names: string[]) {
+  const store = createSendingStore(send);
+  store.drop(files(...names), partOf);
   return store;
 }
 
-describe('createUploadStore', () => {
-  it('sends one after the other and takes what arrived off the list', async () => {
+describe('createSendingStore', () => {
+  it('sends one after the other, each with the part that it most likely plays, and lets go of what arrived', async () => {
     const order: string[] = [];
     const store = started(
       async ({ file, part }) => {
-        order.push(`${part} starts`);
+        order.push(`${part ?? 'no part'} starts`);
         await Promise.resolve();
         order.push(`${file.name} there`);
       },
       'habitat.tif',
-      'cover.tif',
+      'survey.tif',
     );
+    expect(store.snapshot().map(({ key, state }) => [key, state.kind])).toEqual([
+      [1, 'sending'],
+      [2, 'waiting'],
+    ]);
     await vi.waitFor(() => expect(store.snapshot()).toEqual([]));
-    expect(order).toEqual(['habitat starts', 'habitat.tif there', 'cover starts', 'cover.tif there']);
+    expect(order).toEqual(['habitat starts', 'habitat.tif there', 'no part starts', 'survey.tif there']);
   });
 
   it('keeps a refused file with what the server said, and goes on with the next', async () => {
@@ -34,22 +37,24 @@ describe('createUploadStore', () => {
     const store = started(
       ({ file }) => {
         sent.push(file.name);
-        return file.name === 'cover.tif' ? Promise.reject(new Error('five bands')) : Promise.resolve();
+        return file.name === 'cover.tif' ? Promise.reject(new Error('too large')) : Promise.resolve();
       },
       'cover.tif',
       'refuge.tif',
     );
     await vi.waitFor(() => expect(sent).toHaveLength(2));
     await vi.waitFor(() => expect(store.snapshot()).toHaveLength(1));
-    expect(store.snapshot()[0].state).toMatchObject({ kind: 'refused', error: { message: 'five bands' } });
+    expect(store.snapshot()[0].state).toMatchObject({ kind: 'refused', error: { message: 'too large' } });
+    store.drop(files('habitat.tif'), partOf);
+    expect(store.snapshot().map(({ key }) => key)).toEqual([1, 2]);
   });
 
   it('cancels the file that is being sent and says nothing of it afterwards', async () => {
     let signal: AbortSignal | undefined;
-    const store = started((upload) => {
-      signal = upload.signal;
+    const store = started((sending) => {
+      signal = sending.signal;
       return new Promise((_, reject) =>
-        upload.signal.addEventListener('abort', () => reject(new DOMException('cancelled', 'AbortError'))),
+        sending.signal.addEventListener('abort', () => reject(new DOMException('cancelled', 'AbortError'))),
       );
     }, 'habitat.tif');
     await vi.waitFor(() => expect(signal).toBeDefined());
