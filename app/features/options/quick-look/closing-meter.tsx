@@ -21,19 +21,21 @@ export function ClosingMeter(props: {
         <span className="text-note text-ink-2">bare today; one future</span>
       </div>
       {summary ? (
-        <dl className="mt-0.5 grid grid-cols-3 gap-x-3" role="status">
-          {summary.years.map(({ share, year }, i) => (
-            <div key={share} className="flex flex-col-reverse justify-end">
-              <dt className="text-note">
-                {share === 0.5 ? 'half' : formatShare(share)}
-                <span className="block text-ink-2">{wait && againstWait(year, wait.years[i].year)}</span>
-              </dt>
-              <dd className="-ml-px text-[28px] leading-[1.1] font-light tracking-[-0.02em]">
-                {year ?? <span className="text-body">after {lastYear}</span>}
-              </dd>
-            </div>
-          ))}
-        </dl>
+        <div role="status">
+          <dl className="mt-0.5 grid grid-cols-3 gap-x-3">
+            {summary.years.map(({ share, year }, i) => (
+              <div key={share} className="flex flex-col-reverse justify-end">
+                <dt className="text-note">
+                  {share === 0.5 ? 'half' : formatShare(share)}
+                  <span className="block text-ink-2">{wait && againstWait(year, wait.years[i].year)}</span>
+                </dt>
+                <dd className="-ml-px text-[28px] leading-[1.1] font-light tracking-[-0.02em]">
+                  {year ?? <span className="text-body">after {lastYear}</span>}
+                </dd>
+              </div>
+            ))}
+          </dl>
+        </div>
       ) : (
         <p role="status" className="busy-ticks py-2 text-note text-ink-2">
           Working out when growth arrives
