@@ -2,7 +2,6 @@ import type { Feature } from '#contract/features.ts';
 import type { MapArea } from '#app/map/map-areas.ts';
 import type { MapFoothold } from '#app/map/map-symbols.ts';
 import { discRing } from '#app/map/rings.ts';
-import { featureName } from './feature-words.ts';
 
 /** Surveyed points and areas as the map draws them: refuges that are points as diamonds, all else as outlines. */
 export function placesOnMap(features: readonly Feature[]): {
@@ -11,9 +10,8 @@ export function placesOnMap(features: readonly Feature[]): {
 } {
   const footholds: MapFoothold[] = [];
   const areas: MapArea[] = [];
-  for (const { id, kind, shape, halo, name, source } of features) {
-    const called = featureName({ name, kind, row: source.row });
-    if (shape.shape === 'polygon') areas.push({ id, kind, ring: shape.ring, name: called });
+  for (const { id, kind, shape, halo } of features) {
+    if (shape.shape === 'polygon') areas.push({ id, kind, ring: shape.ring });
     else if (kind === 'refuge')
       footholds.push({
         id,
@@ -21,9 +19,8 @@ export function placesOnMap(features: readonly Feature[]): {
         y: shape.y,
         kind: 'surveyed',
         radius: shape.radius + halo,
-        name: called,
       });
-    else areas.push({ id, kind, ring: discRing(shape.x, shape.y, shape.radius), name: called });
+    else areas.push({ id, kind, ring: discRing(shape.x, shape.y, shape.radius) });
   }
   return { footholds, areas };
 }
