@@ -186,6 +186,37 @@ describe('by its parts', () => {
   });
 });
 
+test('what stands fills sooner when it is added to or sheltered, though growth arrives no sooner', () => {
+  const cell = 2 * width + 40;
+  const cover = Float32Array.from({ length: cells }, (_, i) => (i === cell ? 0.06 : 0));
+  const good = localGrowth(defaultRates, 1, 1);
+  const look = lookAt({ cover });
+  expect(look.closing(cell)).toBeCloseTo(good(255, 0).fill(0.06), 5);
+  const [slow, fast] = [good(255, 0).fill(0.06), good(255, 255).fill(0.06)];
+  expect([fast > 1, slow > 2]).toEqual([true, true]);
+  const mound = (year: number, strength = 1): Action => ({
+    kind: 'mound',
+    year,
+    ...place(40, 2),
+    radius: 2,
+    strength,
+    halo: 0,
+  });
+  const sheltered = (...works: Action[]) => lookAt({ cover }, works).closing(cell);
+  expect(sheltered(mound(2025 + 1))).toBeCloseTo(fast, 5);
+  expect(sheltered(mound(2025 + Math.ceil(slow) - 1))).toBe(Math.ceil(slow) - 1);
+  expect(sheltered(mound(2025 + Math.ceil(slow)))).toBeCloseTo(slow, 5);
+  // Of two, the stronger counts, from the year of the first.
+  for (const pair of [
+    [mound(2026, 0.2), mound(2026, 1)],
+    [mound(2026, 1), mound(2026, 0.2)],
+  ])
+    expect(sheltered(...pair)).toBeCloseTo(fast, 5);
+  look.change({ removed: [], added: [[1, { kind: 'clumps', year: 2026, points: [point(40, 2)], each: 4 }]] });
+  expect([look.closing(cell), look.years[cell]]).toEqual([1, 2026]);
+  expect(look.summary().closedBy[1].area).toBeGreaterThan(0);
+});
+
 test('works that come and go leave no trace, and a gain that is asked for leaves none', () => {
   const mound: Action = { kind: 'mound', year: 2027, ...place(30, 1), radius: 3, strength: 1, halo: 2 };
   const clumps: Action = { kind: 'clumps', year: 2027, points: [point(30, 1), point(30, 1)], each: 2 };
