@@ -1,13 +1,17 @@
 // npm run bench [-- --json] [NAME …]: what takes how long or how much, beside a yardstick in the same run; `ratio` above 1
-// means that we are better. With --json a JSON object a line. A NAME (kernel, product) runs that part alone.
+// means that we are better. With --json a JSON object a line. A NAME (kernel, arrival, product) runs that part alone.
 import { ensureInstalled, ensureKernel, giveUp, run } from './lib/shell.mjs';
 
-const parts = { kernel: 'sim-core/bench/main.ts', product: 'server/bench/main.ts' };
+const parts = {
+  kernel: 'sim-core/bench/main.ts',
+  arrival: 'sim-core/bench/arrival.ts',
+  product: 'server/bench/main.ts',
+};
 
 const options = process.argv.slice(2).filter((word) => word.startsWith('--'));
 const asked = process.argv.slice(2).filter((word) => !word.startsWith('--'));
 const unknown = asked.find((name) => !(name in parts));
-if (unknown) giveUp(`Found "${unknown}"; the parts of the bench are ${Object.keys(parts).join(' and ')}.`);
+if (unknown) giveUp(`Found "${unknown}"; the parts of the bench are ${Object.keys(parts).join(', ')}.`);
 ensureInstalled();
 ensureKernel();
 for (const name of asked.length > 0 ? asked : Object.keys(parts)) {

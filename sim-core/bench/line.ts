@@ -1,12 +1,12 @@
 /** One figure of the bench, beside what it is held against in the same run. */
 export interface Line {
-  readonly name: 'kernel' | 'memory' | 'frames' | 'ensemble';
+  readonly name: 'kernel' | 'memory' | 'frames' | 'ensemble' | 'arrival';
   readonly mode: string;
   readonly map: string;
   /** cells on a side, or width × height */
   readonly size: number | string;
   readonly against: string;
-  /** what was done: cells stepped in the fastest round; of frames, their cells; of an ensemble, its steps */
+  /** what was done: cells stepped in the fastest round; of frames and arrival, their cells; of an ensemble, its steps */
   readonly work: number;
   /** time of the processor; of an ensemble, by the clock */
   readonly seconds: number;
