@@ -11,6 +11,7 @@ import { optionFileRoutes } from './features/options/files/option-files.routes.t
 import { optionRoutes } from './features/options/option.routes.ts';
 import { runRoutes } from './features/runs/run.routes.ts';
 import { workingGridRoutes } from './features/sites/working-grid/working-grid.routes.ts';
+import { featureRoutes } from './features/sites/features/feature.routes.ts';
 import { uploadRoutes } from './features/sites/uploads/upload.routes.ts';
 import { layerRoutes } from './features/sites/layer.routes.ts';
 import { siteRoutes } from './features/sites/site.routes.ts';
@@ -32,6 +33,7 @@ export const allRoutes = (services: Services): Route[] => [
   ...outboxRoutes(services),
   ...siteRoutes(services),
   ...layerRoutes(services),
+  ...featureRoutes(services),
   ...uploadRoutes(services),
   ...workingGridRoutes(services),
   ...optionRoutes(services),

@@ -21,8 +21,7 @@ export const featureAttributesSchema = z.strictObject({
 export type FeatureAttributes = z.infer<typeof featureAttributesSchema>;
 
 /**
- * A surveyed point or area on a site. Points are discs with a radius. Coordinates are in the site's CRS, m. Holes of a
- * polygon are joined to its ring by a seam that is walked there and back, so that the even-odd rule leaves them out.
+ * A surveyed point or area on a site. Points are discs with a radius. Coordinates are in the site's CRS, m.
  */
 export const featureSchema = z.object({
   id,
@@ -49,14 +48,12 @@ export const mostFeatures = 5000;
 export const mostCorners = 20_000;
 
 /**
- * Text fields of a form, beside one `file`. GeoJSON (RFC 7946, or with the `crs` member of its forerunner) or CSV with a
- * header row; columns and properties `x`, `y` or `lon`, `lat` (and their usual synonyms), `name`, `radius`, `strength`,
- * `halo` are found by name.
+ * Text fields of a form, beside one `file`. GeoJSON (RFC 7946, or with the `crs` member of its forerunner) with Point, MultiPoint
+ * and Polygon without holes, or CSV with a header row: `x` and `y` in the site's CRS or `lon` and `lat`, under these and
+ * their usual names. Columns and properties `name`, `radius`, `strength` and `halo` are found by name.
  */
 export const featureImportFormSchema = z.strictObject({
   kind: featureKindSchema,
-  /** what the coordinates of a CSV are in: found by the header unless said. GeoJSON says it itself. */
-  crs: z.enum(['found', 'site', 'wgs84']).default('found'),
   /** where the file does not say, m */
   radius: z.coerce.number().positive().max(1000).default(2),
   strength: z.coerce.number().min(0).max(1).default(1),

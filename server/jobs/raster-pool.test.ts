@@ -83,6 +83,23 @@ it('destroys a worker that takes longer than the size of the raster explains, le
   expect((await readdir(folder)).sort()).toEqual(['cover.tif', 'large.tif', 'values']);
 });
 
+it('says how far a task is, and drops one whose signal comes before its worker has it', async () => {
+  pool = createRasterPool();
+  const shares: number[] = [];
+  const survey = { kind: 'survey', path: join(folder, 'cover.tif'), band: null } as const;
+  const seen = pool.run(
+    { ...survey, thumbnailPath: join(folder, 'small') },
+    { onProgress: (share) => shares.push(share) },
+  );
+  await expect(seen).resolves.toMatchObject({ band: 1, facts: { dataType: 'float32' } });
+  expect(shares.at(-1)).toBe(1);
+  const stop = new AbortController();
+  const dropped = pool.run({ ...survey, thumbnailPath: join(folder, 'never') }, { signal: stop.signal });
+  stop.abort(new Error('enough'));
+  await expect(dropped).rejects.toThrow('enough');
+  expect(await readdir(folder)).not.toContain('never');
+});
+
 /** A pool whose worker is other code than ours. */
 async function poolOf(code: string, longestMs = 60_000): Promise<RasterPool> {
   const filename = join(folder, 'worker.mjs');

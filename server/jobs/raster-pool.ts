@@ -67,6 +67,8 @@ export function createRasterPool(settings: Partial<RasterPoolSettings> = {}): Ra
     const timer = setTimeout(() => breakOff?.(tooLong()), limit);
     const cancelled = () => breakOff?.(signal?.reason);
     signal?.addEventListener('abort', cancelled);
+    // It may have come while the header was read, before anybody listened.
+    if (signal?.aborted) cancelled();
     const { port1: here, port2: there } = new MessageChannel();
     here.on('message', (share: number) => onProgress?.(share));
     try {

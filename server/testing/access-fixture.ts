@@ -1,5 +1,6 @@
 import type { Role } from '#contract/people.ts';
 import type { Option } from '#contract/options.ts';
+import type { Site } from '#contract/sites.ts';
 import { encodeCellValues } from '#rasters/cells/cell-values.ts';
 import { makePerson, makeTeam, testPassword, type TestPerson } from './people.ts';
 import { startTestComparison } from './comparisons.ts';
@@ -98,6 +99,14 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
   const upload = await sendUpload(agents.admin, teamId, cover());
   await server.services.background.idle();
 
+  await agents.admin
+    .post(`/api/sites/${site.id}/feature-imports`)
+    .field('kind', 'refuge')
+    .field('take', 'all')
+    .attach('file', Buffer.from('x,y\n412203,5301895\n'), 'mounds.csv')
+    .expect(200);
+  const { features } = (await agents.admin.get(`/api/sites/${site.id}`).expect(200)).body as Site;
+
   const callers = { ...people, outsider: other.people.admin };
   const cookies: AccessFixture['cookies'] = {};
   const sessionIds: AccessFixture['sessionIds'] = {};
@@ -116,6 +125,8 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     layerId: site.layers[0].id,
     hash: site.layers[0].hash,
     uploadId: upload.id,
+    featureId: features[0].id,
+    importId: features[0].source.importId,
     optionId: (options.body as { options: Option[] }).options.find((option) => !option.wait)!.id,
     revision: 1,
     runId,

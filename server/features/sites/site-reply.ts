@@ -11,7 +11,7 @@ import type { SiteRow } from '#server/database/entities/site.ts';
 import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { notFound } from '#server/middleware/problem-error.ts';
-import { featuresOfSite } from './feature-reply.ts';
+import { featuresOfSite } from './features/feature-reply.ts';
 import { layerReply } from './layer-reply.ts';
 import { currentLayers } from './layer.repository.ts';
 import { countsOfSites, findSite, gridOf, sitesOfTeam, type SiteCounts } from './site.repository.ts';
