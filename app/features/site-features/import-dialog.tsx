@@ -21,7 +21,6 @@ export function ImportDialog(props: { siteId: string; onClose: () => void }) {
   const [file, setFile] = useState<File>();
   const [settings, setSettings] = useState<Settings>({
     kind: 'refuge',
-    crs: 'found',
     radius: 2,
     strength: 1,
     halo: 0,
@@ -78,16 +77,6 @@ export function ImportDialog(props: { siteId: string; onClose: () => void }) {
               {kindLabels[kind]}
             </option>
           ))}
-        </BlankSelect>
-        , their coordinates{' '}
-        <BlankSelect
-          label="What the coordinates of a CSV are"
-          value={settings.crs}
-          onChange={(event) => change({ crs: event.target.value as Settings['crs'] })}
-        >
-          <option value="found">as the file says</option>
-          <option value="site">in the site’s CRS</option>
-          <option value="wgs84">lon, lat (WGS 84)</option>
         </BlankSelect>
         . Where the file does not say, a point has a radius of{' '}
         {blank('Radius where the file does not say, m', 'radius', 0.01, 1000)} m
