@@ -58,6 +58,11 @@ export function OptionListPanel(props: OptionListPanelProps) {
     const place = `${listed.find((one) => one.id === id)?.name ?? ''} is now number ${next.indexOf(id) + 1} of ${next.length}`;
     order.mutate([...next, ...archived.map((one) => one.id)], { onSuccess: () => sayDone(place) });
   };
+  const budget = costs && costs.changedAt !== null ? costs.costs.budget : null;
+  const told =
+    costs && budget !== null
+      ? `line on each bar: budget of ${formatMoney(budget, costs.costs.currency)}`
+      : `${formatCounted(listed.length - 1, 'option')} beside Wait`;
   const place = listed.findIndex((one) => one.id === option.id) - 1;
   return (
     <>
@@ -82,7 +87,7 @@ export function OptionListPanel(props: OptionListPanelProps) {
       {order.error ? <ProblemNotice error={order.error} title="Not moved." className="my-2" /> : null}
       <div className="flex flex-wrap items-baseline justify-between gap-x-3 pb-1.5">
         <h1 className="text-lead font-bold">Options</h1>
-        <span className="text-note text-ink-2">{formatCounted(listed.length - 1, 'option')} beside Wait</span>
+        <span className="text-note text-ink-2">{told}</span>
       </div>
       <OptionGrid
         options={listed}
@@ -92,11 +97,6 @@ export function OptionListPanel(props: OptionListPanelProps) {
         onChoose={(id) => onChoose(id)}
         onMove={mayDraw ? move : undefined}
       />
-      {costs && costs.changedAt !== null && costs.costs.budget !== null && (
-        <p className="mt-1.5 text-note text-ink-2">
-          The line across each bar is the budget, {formatMoney(costs.costs.budget, costs.costs.currency)}.
-        </p>
-      )}
       {option.note !== '' && (
         <p className="mt-2 border-l-[3px] border-rule pl-2.5 text-note whitespace-pre-line">{option.note}</p>
       )}
@@ -108,7 +108,7 @@ export function OptionListPanel(props: OptionListPanelProps) {
           places={listed.length - 1}
           onMove={(to) => move(option.id, to)}
         />
-        {mayDraw && costs && <WordButton onClick={() => setCosting(true)}>Costs and budget</WordButton>}
+        {mayDraw && costs && <WordButton onClick={() => setCosting(true)}>Costs</WordButton>}
       </div>
       <ArchiveList options={archived} chosen={option.id} onChoose={(id) => onChoose(id)} />
       {costing && costs && <CostsDialog siteId={site.id} set={costs} onClose={() => setCosting(false)} />}

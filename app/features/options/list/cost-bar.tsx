@@ -27,7 +27,7 @@ export function CostBar({ cost, scale }: { cost: OptionCost; scale: number }) {
         )}
       </svg>
       <span className="tabular-nums">{money(total)}</span>
-      {over && <span className="font-semibold text-danger">, {money(total - budget)} over the budget</span>}
+      {over && <span className="font-semibold text-danger">, {money(total - budget)} over</span>}
     </span>
   );
 }

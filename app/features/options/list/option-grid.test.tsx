@@ -50,7 +50,7 @@ it('says of each what it holds and costs, of the chosen one as it is drawn', () 
   expect(show().map((entry) => entry.textContent)).toEqual([
     'Option waitno works€0',
     'Option a1 mound€1,000',
-    'Option b3 mounds; changes not saved€3,000, €500 over the budget',
+    'Option b3 mounds; changes not saved€3,000, €500 over',
     'Option cno works€0',
   ]);
   expect(screen.getByRole('button', { current: true }).textContent).toContain('Option b');
