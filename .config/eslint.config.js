@@ -66,7 +66,7 @@ const folderRules = [
       ['#sim-core/grid', '#rasters', 'geotiff', 'proj4', 'fflate'],
       'rasters imports sim-core/grid, geotiff, proj4 and fflate; only geo/epsg-register.ts reads epsg-index.',
     ),
-    except: ['rasters/geo/epsg-register.ts'],
+    except: ['rasters/geo/epsg-register.ts', 'rasters/ensemble/**'],
   },
   {
     top: 'server/contract',
@@ -87,6 +87,13 @@ const folderRules = [
       message:
         'The app speaks to the server through #contract alone, and the EPSG register stays off the browser.',
     },
+  },
+  {
+    top: 'rasters/ensemble',
+    pattern: only(
+      ['#sim-core/grid', '#sim-core/ensemble', '#rasters', 'fflate', 'zod'],
+      'rasters/ensemble imports sim-core/grid, sim-core/ensemble, rasters, fflate and zod.',
+    ),
   },
 ];
 

@@ -1,6 +1,6 @@
 import { releaseProxy, transfer, wrap } from 'comlink';
 import type { EnsembleMapsFace } from './ensemble-maps-worker.ts';
-import type { MapsInput } from './ensemble-maps.ts';
+import type { MapsInput } from '#rasters/ensemble/ensemble-maps.ts';
 
 /** Maps of several ensembles, kept in a worker of their own. */
 export interface EnsembleMapsDesk {

@@ -1,6 +1,6 @@
 import { expose, transfer } from 'comlink';
 import { encodeCellValues } from '#rasters/cells/cell-values.ts';
-import { createEnsembleMaps, type EnsembleMaps, type MapsInput } from './ensemble-maps.ts';
+import { createEnsembleMaps, type EnsembleMaps, type MapsInput } from '#rasters/ensemble/ensemble-maps.ts';
 
 const ensembles = new Map<string, { readonly maps: EnsembleMaps; readonly input: MapsInput }>();
 const find = (key: string) => {

@@ -5,7 +5,7 @@ import type { Runner, RunnerJob, RunnerProgress } from '#sim-core/ensemble/runne
 import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import { errorText, type ProblemError } from '#app/lib/api-client.ts';
 import { saveWithRetry } from '#app/lib/save-with-retry.ts';
-import { mapNames } from '#app/workers/ensemble-maps.ts';
+import { mapNames } from '#rasters/ensemble/ensemble-maps.ts';
 import type { EnsembleMapsDesk } from '#app/workers/ensemble-maps-client.ts';
 import type { PackedLayers, RunInput } from '#app/workers/run-loop.ts';
 import type { ComparisonServer } from './comparison-server.ts';

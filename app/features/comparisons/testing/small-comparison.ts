@@ -4,7 +4,7 @@ import { runReplicate } from '#sim-core/ensemble/replicate.ts';
 import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Ground } from '#sim-core/grid/ground.ts';
-import { createEnsembleMaps, type EnsembleMaps } from '#app/workers/ensemble-maps.ts';
+import { createEnsembleMaps, type EnsembleMaps } from '#rasters/ensemble/ensemble-maps.ts';
 import type { EnsembleMapsDesk } from '#app/workers/ensemble-maps-client.ts';
 import type { ComparisonServer } from '../comparison-server.ts';
 

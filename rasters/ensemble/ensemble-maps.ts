@@ -1,7 +1,7 @@
 import { strFromU8, strToU8, unzipSync, zipSync, type Zippable } from 'fflate';
 import { z } from 'zod';
 import { decodeCellValues, encodeCellValues } from '#rasters/cells/cell-values.ts';
-import { closingMaps } from '#sim-core/index.ts';
+import { closingMaps } from '#sim-core/ensemble/closing-maps.ts';
 
 /** The maps of one ensemble, as replicates stream in: memory follows the map and the kept years, not their number. */
 export interface EnsembleMaps {

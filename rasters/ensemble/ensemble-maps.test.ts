@@ -1,0 +1,54 @@
+import { describe, expect, it } from 'vitest';
+import { createEnsembleMaps, mapNames } from './ensemble-maps.ts';
+
+const input = { width: 4, height: 1, years: [2030, 2040] };
+/** Closes early, late, never, and a cell that cannot hold the plant. */
+const replicates = [
+  { closing: [2028, 2040, 0, -32768], covers: [0.2, 1] },
+  { closing: [2030, 0, 0, -32768], covers: [0.4, 0.8] },
+  { closing: [2035, 2033, 0, -32768], covers: [0.6, 0.4] },
+];
+type Maps = ReturnType<typeof createEnsembleMaps>;
+const add = (maps: Maps, number: number) => {
+  const { closing, covers } = replicates[number];
+  maps.add(
+    number,
+    Int16Array.from(closing),
+    new Map(input.years.map((year, y) => [year, new Float32Array(4).fill(covers[y])])),
+  );
+};
+const allMaps = (maps: Maps) => mapNames(input.years).map((name) => maps.map(name));
+
+describe('the maps of an ensemble', () => {
+  it('are the median closing year, the chance of having closed and the mean cover', () => {
+    const maps = createEnsembleMaps(input);
+    for (const number of [0, 1, 2]) add(maps, number);
+    expect([...maps.map('closing')]).toEqual([2030, 2040, 0, -32768]);
+    // Two of three by 2030, all by 2040; where nothing can grow there is no chance.
+    expect([...maps.map('chance-2030')]).toEqual([170, 0, 0, 0]);
+    expect([...maps.map('chance-2040')]).toEqual([255, 170, 0, 0]);
+    expect(maps.map('cover-2030')[0]).toBe(102);
+    expect(maps.map('cover-2040')[0]).toBe(187);
+    expect(() => maps.map('cover-2031')).toThrow('No map of 2031');
+  });
+
+  it('are the same in any order, with a replicate that comes twice, and when they go on from a stored state', () => {
+    const straight = createEnsembleMaps(input);
+    for (const number of [0, 1, 2]) add(straight, number);
+    const begun = createEnsembleMaps(input);
+    for (const number of [2, 0, 2]) add(begun, number);
+    const resumed = createEnsembleMaps(input, begun.state());
+    expect(resumed.replicates()).toEqual([0, 2]);
+    for (const number of [0, 1]) add(resumed, number);
+    expect(resumed.replicates()).toEqual([0, 1, 2]);
+    expect(allMaps(resumed)).toEqual(allMaps(straight));
+  });
+
+  it('refuse the state of another map, and a damaged one', () => {
+    const state = createEnsembleMaps(input).state();
+    expect(() => createEnsembleMaps({ ...input, years: [2030, 2041] }, state)).toThrow(
+      /years 2030, 2040; expected .* 2030, 2041/,
+    );
+    expect(() => createEnsembleMaps(input, state.slice(0, 40))).toThrow();
+  });
+});
