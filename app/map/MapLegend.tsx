@@ -95,14 +95,15 @@ interface RampProps {
 
 function Ramp({ raster, title, width }: RampProps) {
   if (!raster || raster.kind === 'classes') return null;
-  const closing = raster.kind === 'closing';
-  const stops = Array.from({ length: 9 }, (_, i) => `var(--color-${closing ? 'closing' : 'cover'}-${i})`);
+  const ramp = raster.kind === 'closing' ? 'closing' : raster.kind === 'difference' ? 'diff' : 'cover';
+  const stops = Array.from({ length: 9 }, (_, i) => `var(--color-${ramp}-${i})`);
   const [from, half, to] = endsOf(raster);
   const usual = {
     closing: 'Year the ground closes',
     cover: 'Cover',
     height: 'Height',
-    share: raster.kind === 'share' ? raster.name : '',
+    share: 'name' in raster ? raster.name : '',
+    difference: 'name' in raster ? raster.name : '',
   }[raster.kind];
   return (
     <div style={{ width }}>
@@ -124,7 +125,7 @@ function Ramp({ raster, title, width }: RampProps) {
 function endsOf(raster: Exclude<MapRaster, { kind: 'classes' }>): (string | number)[] {
   if (raster.kind === 'closing') return [raster.surveyYear + 1, '', raster.lastYear];
   if (raster.kind === 'height') return [raster.lowest.toFixed(2), '', `${raster.highest.toFixed(2)} m`];
-  return ['0', '50', '100 %'];
+  return raster.kind === 'difference' ? ['−100', 'alike', '+100'] : ['0', '50', '100 %'];
 }
 
 function ScaleRule({ metresPerPixel, room }: { metresPerPixel: number; room: number }) {

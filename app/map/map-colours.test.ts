@@ -23,6 +23,7 @@ function ramp(name: string, dark: boolean): Rgb[] {
 const colours = (dark: boolean): MapColours => ({
   cover: ramp('cover', dark),
   closing: ramp('closing', dark),
+  difference: ramp('diff', dark),
   water: [1, 2, 3],
   shore: [4, 5, 6],
   standing: [7, 8, 9],

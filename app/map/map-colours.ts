@@ -6,6 +6,7 @@ export type Rgb = readonly [number, number, number];
 export interface MapColours {
   readonly cover: readonly Rgb[];
   readonly closing: readonly Rgb[];
+  readonly difference: readonly Rgb[];
   readonly water: Rgb;
   readonly shore: Rgb;
   readonly standing: Rgb;
@@ -32,6 +33,7 @@ export function readMapColours(element: Element): MapColours {
   return {
     cover: ramp('cover'),
     closing: ramp('closing'),
+    difference: ramp('diff'),
     water: colour('water'),
     shore: colour('shore'),
     standing: colour('standing'),
@@ -87,6 +89,9 @@ export function paletteOf(
     case 'share':
     case 'height':
       for (let code = 0; code < 256; code++) set(code, rampColour(colours.cover, code / 255));
+      break;
+    case 'difference':
+      for (let code = 0; code < 256; code++) set(code, rampColour(colours.difference, (code - 1) / 254));
       break;
     case 'closing': {
       const years = lastYear - surveyYear;

@@ -111,3 +111,20 @@ describe('describeCell', () => {
     expect(describeCell(classes, undefined, 2)).toBe('no data');
   });
 });
+
+describe('a difference', () => {
+  const raster = {
+    kind: 'difference',
+    values: Uint8Array.of(1, 128, 255, 140),
+    name: 'cover against Wait',
+  } as const;
+  it('is read with its sign, and goes to the card as it is', () => {
+    expect(toTexels(raster)).toBe(raster.values);
+    expect([0, 1, 2, 3].map((cell) => describeCell(raster, undefined, cell))).toEqual([
+      'cover against Wait −100 points',
+      'cover against Wait alike',
+      'cover against Wait +100 points',
+      'cover against Wait +9 points',
+    ]);
+  });
+});

@@ -25,6 +25,8 @@ export type MapRaster =
       readonly lowest: number;
       readonly highest: number;
     }
+  /** shares less those of something else: 128 alike, 1 all less, 255 all more */
+  | { readonly kind: 'difference'; readonly values: Uint8Array; readonly name: string }
   /** closing years: 0 still open at the horizon, -32768 cannot hold the plant; the survey year: stood at the survey */
   | {
       readonly kind: 'closing';
@@ -60,7 +62,7 @@ export function closingTexel(year: number, surveyYear: number, lastYear: number)
  * @throws RangeError when a class table has more rows than a byte can tell apart
  */
 export function toTexels(raster: MapRaster): Uint8Array {
-  if (raster.kind === 'cover' || raster.kind === 'share' || raster.kind === 'height') return raster.values;
+  if (raster.kind !== 'closing' && raster.kind !== 'classes') return raster.values;
   const texels = new Uint8Array(raster.values.length);
   if (raster.kind === 'closing') {
     const { values, surveyYear, lastYear } = raster;
@@ -94,6 +96,12 @@ const heightOf = ({ lowest, highest }: { lowest: number; highest: number }, byte
 
 const percent = (byte: number) => `${Math.round((byte / 255) * 100)} %`;
 
+/** Percentage points of a difference, with its sign. */
+function points(byte: number): string {
+  const difference = Math.round((byte - 128) / 1.27);
+  return difference === 0 ? 'alike' : `${difference > 0 ? '+' : '−'}${Math.abs(difference)} points`;
+}
+
 /** One cell in words. `capacity` is the ground's, where it is known: 0 cannot hold the plant. */
 export function describeCell(
   raster: MapRaster | undefined,
@@ -111,6 +119,8 @@ export function describeCell(
       return `${raster.name} ${percent(value)}`;
     case 'height':
       return value === 0 ? 'no data' : `about ${heightOf(raster, value)} m`;
+    case 'difference':
+      return `${raster.name} ${points(value)}`;
     case 'closing':
       if (value === noClosing) return 'cannot hold the plant';
       if (value === 0) return `still open in ${raster.lastYear}`;

@@ -38,6 +38,8 @@ const sitePages: RouteObject[] = [
       { path: 'outlook', ...page(() => import('./site/outlook-page.tsx')) },
       { path: 'options', ...page(() => import('./site/options-page.tsx')) },
       { path: 'runs', ...page(() => import('./site/runs-page.tsx')) },
+      { path: 'compare', ...page(() => import('./site/compare-page.tsx')) },
+      { path: 'compare/:comparisonId', ...page(() => import('./site/comparison-page.tsx')) },
       { path: 'runs/:runId', ...page(() => import('./site/run-page.tsx')) },
     ],
   },

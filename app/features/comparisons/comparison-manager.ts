@@ -71,7 +71,7 @@ export interface ComparisonManager {
 }
 
 const atWork: readonly ComparisonPhase[] = ['loading', 'running', 'saving'];
-export const isWorking = (live: LiveComparison | undefined): live is LiveComparison =>
+export const isWorking = (live: LiveComparison | undefined): boolean =>
   live !== undefined && atWork.includes(live.phase);
 
 /** Replicates of an ensemble that go to the server together, and how long one waits for company, ms. */

@@ -4,11 +4,12 @@ import type { Site } from '#contract/sites.ts';
 import { Blank, BlankSelect } from '#app/components/blank.tsx';
 import { Button } from '#app/components/button.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
-import { WordButton, WordLink } from '#app/components/word-button.tsx';
+import { WordButton } from '#app/components/word-button.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
 import { formatCount, formatDuration } from '#app/lib/formats.ts';
 import type { Mode, RunSpec } from '#sim-core/spec/run-spec.ts';
-import { composeRunSpec, type CompositionProblem, type MendingPlace } from './compose-run-spec.ts';
+import { composeRunSpec } from './compose-run-spec.ts';
+import { CompositionProblems } from './composition-problems.tsx';
 import { randomSeed } from './random-seed.ts';
 import { estimateSeconds } from './run-pace.ts';
 import { modeWords } from './run-words.ts';
@@ -130,7 +131,7 @@ export function StartForm(props: {
             : `The seed is that of “${waitRun.name}”, but that run was without chance, so they do not share their luck.`}
         </p>
       )}
-      <Problems problems={problems} nameProblem={nameProblem} site={site} optionId={option.id} />
+      <CompositionProblems problems={problems} nameProblem={nameProblem} site={site} optionId={option.id} />
       {props.error ? (
         <ProblemNotice error={props.error} title="The run was not started." className="mt-3" />
       ) : null}
@@ -151,46 +152,6 @@ export function StartForm(props: {
         </span>
       </div>
     </form>
-  );
-}
-
-const places: Record<Exclude<MendingPlace, 'form'>, string> = {
-  ground: 'Mend it on Ground',
-  plant: 'Mend it on Plant',
-  outlook: 'Mend it on Outlook',
-  options: 'Mend it on Options',
-};
-
-function Problems(props: {
-  problems: readonly CompositionProblem[];
-  nameProblem: string | undefined;
-  site: Site;
-  optionId: string;
-}) {
-  const { problems, nameProblem, site } = props;
-  if (problems.length === 0 && nameProblem === undefined) return null;
-  return (
-    <ul role="alert" className="mt-3 border-l-[6px] border-danger">
-      {nameProblem !== undefined && <li className="py-1 pl-3.5 text-[13.5px]">{nameProblem}</li>}
-      {problems.slice(0, 8).map(({ field, message, mend }) => (
-        <li
-          key={field}
-          className="flex flex-wrap items-baseline gap-x-4 border-t border-rule-2 py-1 pl-3.5 text-[13.5px] first:border-0"
-        >
-          <span>{message}</span>
-          {mend !== 'form' && (
-            <WordLink
-              to={`/sites/${site.id}/${mend}${mend === 'options' ? `?option=${props.optionId}` : ''}`}
-            >
-              {places[mend]}
-            </WordLink>
-          )}
-        </li>
-      ))}
-      {problems.length > 8 && (
-        <li className="py-1 pl-3.5 text-note text-ink-2">and {problems.length - 8} more</li>
-      )}
-    </ul>
   );
 }
 

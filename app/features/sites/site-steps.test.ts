@@ -95,11 +95,35 @@ describe('siteSteps', () => {
       '/sites/a/outlook',
       '/sites/a/options',
       '/sites/a/runs',
-      undefined,
+      '/sites/a/compare',
       undefined,
     ]);
-    for (const key of ['compare', 'brief'])
-      expect(step(key)).toMatchObject({ state: 'not built yet', share: 0 });
+    expect(step('brief')).toMatchObject({ state: 'not built yet', share: 0 });
+  });
+
+  it('says which comparisons wait for a decision', () => {
+    const state = (...decided: boolean[]) =>
+      siteSteps(
+        site(),
+        [],
+        decided.map((taken) => ({
+          status: 'finished' as const,
+          decision: taken
+            ? {
+                optionId: '1',
+                optionName: 'Wait',
+                reason: 'r',
+                reservations: '',
+                decidedAt: '',
+                decidedBy: 'm',
+              }
+            : null,
+        })),
+      ).find(({ key }) => key === 'compare')?.state;
+    expect(state()).toBe('none yet');
+    expect(state(false)).toBe('decision still open');
+    expect(state(false, false, true)).toBe('2 decisions open');
+    expect(state(true)).toBe('decided');
   });
 });
 

@@ -1,3 +1,4 @@
+import type { ComparisonSummary } from '#contract/comparisons.ts';
 import type { RunSummary } from '#contract/runs.ts';
 import type { Layer } from '#contract/layers.ts';
 import type { Outlook, Site } from '#contract/sites.ts';
@@ -21,20 +22,27 @@ type StatedSite = Pick<
   'id' | 'grid' | 'layers' | 'plant' | 'plantSet' | 'outlook' | 'outlookSet' | 'options' | 'runs'
 >;
 
-/** The seven steps of a site with the true state of each in words. `runs` are the newest ones, where they are known. */
-export function siteSteps(site: StatedSite, runs: readonly Pick<RunSummary, 'status'>[] = []): SiteStep[] {
+/**
+ * The seven steps of a site with the true state of each in words. `runs` and `comparisons` are the newest
+ * ones, where they are known.
+ */
+export function siteSteps(
+  site: StatedSite,
+  runs: readonly Pick<RunSummary, 'status'>[] = [],
+  comparisons: readonly Pick<ComparisonSummary, 'status' | 'decision'>[] = [],
+): SiteStep[] {
   const states: Record<StepKey, [label: string, state: string, share: number]> = {
     ground: ['Ground', ...groundState(site)],
     plant: ['Plant', ...plantState(site)],
     outlook: ['Outlook', ...outlookState(site)],
     options: ['Options', ...optionsState(site.options)],
     runs: ['Runs', ...runsState(site.runs, runs)],
-    compare: ['Compare', 'not built yet', 0],
+    compare: ['Compare', ...compareState(comparisons)],
     brief: ['Brief', 'not built yet', 0],
   };
   return stepKeys.map((key) => {
     const [label, state, share] = states[key];
-    const built = key !== 'compare' && key !== 'brief';
+    const built = key !== 'brief';
     return { key, label, state, share, ...(built && { to: `/sites/${site.id}/${key}` }) };
   });
 }
@@ -95,4 +103,11 @@ function runsState(count: number, known: readonly Pick<RunSummary, 'status'>[]):
     running > 0 ? `${formatCounted(total, 'run')}, ${running} running` : formatCounted(total, 'run'),
     finished ? 1 : 0.5,
   ];
+}
+
+function compareState(known: readonly Pick<ComparisonSummary, 'status' | 'decision'>[]): State {
+  if (known.length === 0) return ['none yet', 0];
+  const open = known.filter(({ decision }) => decision === null).length;
+  if (open < known.length && open === 0) return [known.length === 1 ? 'decided' : 'all decided', 1];
+  return [open === 1 ? 'decision still open' : `${open} decisions open`, 0.5];
 }

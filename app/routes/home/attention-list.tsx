@@ -3,6 +3,7 @@ import { Section } from '#app/components/paper-layout.tsx';
 import { WordLink } from '#app/components/word-button.tsx';
 import { formatDateTime } from '#app/lib/formats.ts';
 import type { Role } from '#contract/people.ts';
+import type { ComparisonSummary } from '#contract/comparisons.ts';
 import type { RunSummary } from '#contract/runs.ts';
 import type { SiteSummary } from '#contract/sites.ts';
 import { nextStep } from './next-step.ts';
@@ -19,6 +20,8 @@ interface Item {
 export function AttentionList(props: {
   sites: readonly { site: SiteSummary; role: Role }[];
   unfinished: readonly { site: SiteSummary; run: RunSummary }[];
+  /** comparisons that are done and not decided */
+  undecided: readonly { site: SiteSummary; role: Role; comparison: ComparisonSummary }[];
 }) {
   const items: Item[] = [
     ...props.unfinished.map(({ site, run }) => ({
@@ -28,6 +31,16 @@ export function AttentionList(props: {
       to: `/sites/${site.id}/runs/${run.id}`,
       action: 'Open the run',
     })),
+    ...props.undecided.map(({ site, role, comparison }) => {
+      const decides = role === 'manager' || role === 'admin';
+      return {
+        key: comparison.id,
+        name: `${comparison.name}, ${site.name}`,
+        words: `${comparison.done} futures of each of ${comparison.options.length} options${decides ? ', waits for your decision' : ', waits for a manager’s decision'}`,
+        to: `/sites/${site.id}/compare/${comparison.id}`,
+        action: decides ? 'Compare and decide' : 'Open the comparison',
+      };
+    }),
     ...props.sites.flatMap(({ site, role }) => {
       const next = nextStep(site);
       return next?.roles.includes(role) ? [{ key: site.id, name: site.name, ...next }] : [];

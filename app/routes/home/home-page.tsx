@@ -5,6 +5,7 @@ import { LinkButton } from '#app/components/link-button.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { Section } from '#app/components/paper-layout.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
+import { comparisonsQuery } from '#app/features/comparisons/get-comparison.ts';
 import { runsQuery } from '#app/features/runs/list-runs.ts';
 import { sessionQuery } from '#app/features/session/session.ts';
 import { sitesQuery } from '#app/features/sites/list-sites.ts';
@@ -29,9 +30,18 @@ export function Page() {
     (runLists[i].data?.runs ?? []).filter((run) => run.status === 'running').map((run) => ({ site, run })),
   );
 
+  const comparisonLists = useQueries({
+    queries: withRuns.map(({ site }) => comparisonsQuery(site.id, { limit: 20 })),
+  });
+  const undecided = withRuns.flatMap(({ site, role }, i) =>
+    (comparisonLists[i].data?.comparisons ?? [])
+      .filter(({ decision, status, done }) => decision === null && status !== 'running' && done > 1)
+      .map((comparison) => ({ site, role, comparison })),
+  );
+
   return (
     <PaperPage title="Sites">
-      <AttentionList sites={mine} unfinished={unfinished} />
+      <AttentionList sites={mine} unfinished={unfinished} undecided={undecided} />
       {teams.map(({ teamId, teamName, role, list }) => (
         <Section key={teamId} title={teamName} note={`You are ${role} here`}>
           {list.isPending && <LoadingLines label="Fetching the team’s sites" />}

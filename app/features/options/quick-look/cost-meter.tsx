@@ -3,7 +3,7 @@ import { costPerHectare } from '#sim-core/plan/costs.ts';
 import { formatArea } from '#app/lib/formats.ts';
 import { Table } from '#app/components/table.tsx';
 import { BudgetRule } from './budget-rule.tsx';
-import { formatMoney } from './format-money.ts';
+import { formatMoney } from '#app/lib/format-money.ts';
 
 /** What the works cost: in all against the budget, by year, and for each hectare that they bring back. */
 export function CostMeter(props: {

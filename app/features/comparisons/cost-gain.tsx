@@ -1,0 +1,109 @@
+import { ReadAsTable } from '#app/components/read-as-table.tsx';
+import { formatMoney } from '#app/lib/format-money.ts';
+import { formatNumber } from '#app/lib/formats.ts';
+import type { OutlookFigures } from './comparison-figures.ts';
+
+const [width, height] = [420, 230];
+const [left, right, top, bottom] = [44, 14, 14, 30];
+
+/** Cost against the years that an option recovers sooner than Wait, the efficient ones joined, and the budget line. */
+export function CostGain(props: { figures: OutlookFigures; currency: string; budget: number | null }) {
+  const { figures, currency, budget } = props;
+  const { options, efficient, pairs } = figures;
+  const costs = options.map((option) => option.cost ?? 0);
+  const mostCost = Math.max(1, ...costs, budget ?? 0) * 1.08;
+  const gains = options.map((option) => option.yearsSooner);
+  const intervals = options.map(
+    (_, i) => pairs.find((pair) => pair.first === i && options[pair.second].wait)?.sooner,
+  );
+  const least = Math.min(0, ...gains, ...intervals.map((each) => each?.low ?? 0));
+  const most = Math.max(1, ...gains, ...intervals.map((each) => each?.high ?? 0));
+  const x = (cost: number) => left + ((width - left - right) * cost) / mostCost;
+  const y = (gain: number) => top + ((height - top - bottom) * (most - gain)) / (most - least);
+  return (
+    <figure>
+      <figcaption className="flex flex-wrap justify-between gap-x-4">
+        <b>Cost against gain</b>
+        <span className="text-note text-ink-2">years sooner than Wait; efficient ones joined</span>
+      </figcaption>
+      <svg viewBox={`0 0 ${width} ${height}`} className="mt-1 block w-full" aria-hidden="true">
+        {[least, 0, most].map((gain) => (
+          <g key={gain}>
+            <path
+              d={`M${left} ${y(gain)}H${width - right}`}
+              className={gain === 0 ? 'stroke-ink' : 'stroke-rule'}
+            />
+            <text x={left - 6} y={y(gain) + 4} textAnchor="end" className="fill-ink-2 text-axis">
+              {formatNumber(gain, 1)}
+            </text>
+          </g>
+        ))}
+        <text x={width - right} y={height - 6} textAnchor="end" className="fill-ink-2 text-axis">
+          {formatMoney(mostCost, currency)}
+        </text>
+        <text x={left} y={height - 6} className="fill-ink-2 text-axis">
+          {formatMoney(0, currency)}
+        </text>
+        {budget !== null && (
+          <>
+            <path d={`M${x(budget)} ${top}V${height - bottom}`} className="stroke-ink" strokeWidth={2.5} />
+            <text
+              x={x(budget) - 5}
+              y={height - bottom - 6}
+              textAnchor="end"
+              className="fill-ink text-axis font-semibold"
+            >
+              budget
+            </text>
+          </>
+        )}
+        <path
+          d={`M${efficient.map((i) => `${x(costs[i]).toFixed(1)} ${y(gains[i]).toFixed(1)}`).join('L')}`}
+          fill="none"
+          className="stroke-ink"
+          strokeWidth={1.6}
+        />
+        {options.map((option, i) => {
+          const interval = intervals[i];
+          const labelLeft = x(costs[i]) > width * 0.6;
+          return (
+            <g key={option.name}>
+              {interval && (
+                <path
+                  d={`M${x(costs[i])} ${y(interval.low)}V${y(interval.high)}m-4 0h8M${x(costs[i]) - 4} ${y(interval.low)}h8`}
+                  className="stroke-ink"
+                  fill="none"
+                />
+              )}
+              <circle
+                cx={x(costs[i])}
+                cy={y(gains[i])}
+                r={5}
+                className={option.wait ? 'fill-ground stroke-ink' : 'fill-flag stroke-ink'}
+                strokeWidth={1.5}
+              />
+              <text
+                x={x(costs[i]) + (labelLeft ? -9 : 9)}
+                y={y(gains[i]) - 7}
+                textAnchor={labelLeft ? 'end' : 'start'}
+                className={`fill-ink text-axis ${efficient.includes(i) ? 'font-semibold' : ''}`}
+              >
+                {option.name.length > 26 ? `${option.name.slice(0, 25)}…` : option.name}
+              </text>
+            </g>
+          );
+        })}
+      </svg>
+      <ReadAsTable
+        caption="Cost, and years that an option recovers sooner than Wait"
+        heads={['Option', 'Cost', 'Years sooner', 'Efficient']}
+        rows={options.map((option, i) => [
+          option.name,
+          formatMoney(costs[i], currency),
+          formatNumber(gains[i], 1),
+          efficient.includes(i) ? 'yes' : 'no',
+        ])}
+      />
+    </figure>
+  );
+}

@@ -1,0 +1,124 @@
+import { useState } from 'react';
+import type { ComparisonPlan } from '#contract/comparisons.ts';
+import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
+import { WordButton } from '#app/components/word-button.tsx';
+
+const [rowWidth, height, middle] = [4, 84, 42];
+
+/** What became of one future, in words. */
+export function futureWords(record: ReplicateRecord, horizon: number): string {
+  const { recoveredYear, droughtYear, lostYear } = record;
+  const drought = droughtYear === null ? `no drought by ${horizon}` : `drought in ${droughtYear}`;
+  if (recoveredYear === null) return `still open in ${horizon}, ${drought}`;
+  const lost = lostYear === null ? '' : `, lost again in ${lostYear}`;
+  return `recovered in ${Math.ceil(recoveredYear)}, ${drought}${lost}`;
+}
+
+/**
+ * A line a future, in the order of how long before (above) or after (below) the next drought it recovered; dots where it
+ * is open at the horizon. A future can be picked and run again alone.
+ */
+export function FuturesLines(props: {
+  plan: ComparisonPlan;
+  name: string;
+  records: readonly ReplicateRecord[];
+  onRunAlone?: (replicate: number) => void;
+}) {
+  const { records, plan } = props;
+  const { surveyYear, years } = plan.common;
+  const horizon = surveyYear + years;
+  const [picked, setPicked] = useState<number>();
+  const lead = ({ recoveredYear, droughtYear }: ReplicateRecord) =>
+    recoveredYear === null ? -Infinity : (droughtYear ?? horizon + 1) - recoveredYear;
+  const sorted = [...records].sort((a, b) => lead(b) - lead(a) || a.replicate - b.replicate);
+  const at = picked === undefined ? undefined : sorted[Math.min(picked, sorted.length - 1)];
+  const scale = (middle - 4) / years;
+  const choose = (to: number) => setPicked(Math.min(sorted.length - 1, Math.max(0, to)));
+  return (
+    <div>
+      <div
+        role="slider"
+        tabIndex={0}
+        aria-label={`Futures of ${props.name}, from the one that closes longest before the next drought`}
+        aria-valuemin={1}
+        aria-valuemax={sorted.length}
+        aria-valuenow={(picked ?? 0) + 1}
+        aria-valuetext={at ? `Future ${at.replicate + 1}: ${futureWords(at, horizon)}` : 'none picked'}
+        className="cursor-pointer outline-offset-2"
+        onKeyDown={(event) => {
+          const moves: Record<string, number> = {
+            ArrowLeft: -1,
+            ArrowDown: -1,
+            ArrowRight: 1,
+            ArrowUp: 1,
+            PageUp: 10,
+            PageDown: -10,
+          };
+          if (event.key in moves) choose((picked ?? (moves[event.key] > 0 ? -1 : 0)) + moves[event.key]);
+          else if (event.key === 'Home') choose(0);
+          else if (event.key === 'End') choose(sorted.length - 1);
+          else return;
+          event.preventDefault();
+        }}
+        onPointerDown={(event) => {
+          const box = event.currentTarget.getBoundingClientRect();
+          choose(Math.floor(((event.clientX - box.left) / box.width) * sorted.length));
+        }}
+      >
+        <svg
+          viewBox={`0 0 ${sorted.length * rowWidth} ${height}`}
+          preserveAspectRatio="none"
+          className="block h-[84px] w-full"
+          aria-hidden="true"
+        >
+          <path
+            d={`M0 ${middle}H${sorted.length * rowWidth}`}
+            className="stroke-ink"
+            vectorEffect="non-scaling-stroke"
+          />
+          {sorted.map((record, i) => {
+            const years = lead(record);
+            const x = i * rowWidth + 0.5;
+            const chosen = at === record;
+            if (years === -Infinity)
+              return (
+                <rect
+                  key={record.replicate}
+                  x={x}
+                  y={middle + 6}
+                  width={3}
+                  height={3}
+                  className={chosen ? 'fill-flag' : 'fill-ink-2'}
+                />
+              );
+            const size = Math.max(1, Math.abs(years) * scale);
+            return (
+              <rect
+                key={record.replicate}
+                x={x}
+                y={years > 0 ? middle - size : middle}
+                width={3}
+                height={size}
+                className={chosen ? 'fill-flag' : years > 0 ? 'fill-ink' : 'fill-shore'}
+              />
+            );
+          })}
+        </svg>
+      </div>
+      <p className="min-h-9 text-note text-ink-2" aria-live="polite">
+        {at ? (
+          <>
+            Future {at.replicate + 1}: {futureWords(at, horizon)}.{' '}
+            {props.onRunAlone && (
+              <WordButton lined onClick={() => props.onRunAlone?.(at.replicate)}>
+                Run it alone and watch
+              </WordButton>
+            )}
+          </>
+        ) : (
+          'Above the line: closed before the next drought. Below: after it. Dots: still open. Press one to read it.'
+        )}
+      </p>
+    </div>
+  );
+}

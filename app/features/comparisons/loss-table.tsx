@@ -1,0 +1,45 @@
+import { Table } from '#app/components/table.tsx';
+import { formatArea } from '#app/lib/formats.ts';
+import type { LossCause, OutlookFigures } from './comparison-figures.ts';
+
+const causes: Record<LossCause, string> = {
+  drought: 'to drought',
+  background: 'background',
+  grazing: 'to grazing',
+  events: 'to events',
+};
+
+/** What was lost in an average future, by cause, and how often what had recovered was lost again. */
+export function LossTable({ figures: { options, replicates } }: { figures: OutlookFigures }) {
+  const told = (Object.keys(causes) as LossCause[]).filter((cause) =>
+    options.some(({ lost }) => lost[cause] > 0),
+  );
+  return (
+    <section aria-label="Losses">
+      <div className="flex flex-wrap justify-between gap-x-4 pb-1">
+        <b>Losses</b>
+        <span className="text-note text-ink-2">covered area in an average future</span>
+      </div>
+      <Table
+        caption="Covered area lost in an average future, by cause, and futures in which what had recovered was lost again"
+        rows={options}
+        rowKey={({ name }) => name}
+        columns={[
+          { key: 'option', head: 'option', cell: ({ name }) => <b>{name}</b> },
+          ...told.map((cause) => ({
+            key: cause,
+            head: causes[cause],
+            number: true,
+            cell: ({ lost }: (typeof options)[number]) => formatArea(lost[cause]),
+          })),
+          {
+            key: 'again',
+            head: 'lost again',
+            number: true,
+            cell: ({ lostAgain }) => `${lostAgain} of ${replicates}`,
+          },
+        ]}
+      />
+    </section>
+  );
+}

@@ -1,0 +1,69 @@
+import type { ReactNode } from 'react';
+import { FlagSymbol } from '#app/components/symbols.tsx';
+import { formatMoney } from '#app/lib/format-money.ts';
+import { formatNumber } from '#app/lib/formats.ts';
+import { chanceSentence, of100 } from './chance-words.ts';
+import type { OutlookFigures } from './comparison-figures.ts';
+import { HundredRule } from './hundred-rule.tsx';
+
+/** What each option comes to: the chance as a sentence and a rule of 100 futures, time, and how often it is best. */
+export function OptionAnswers(props: {
+  figures: OutlookFigures;
+  currency: string | null;
+  /** more of an option, by its place */
+  children: (option: number) => ReactNode;
+}) {
+  const { options } = props.figures;
+  const most = Math.max(...options.map(({ summary }) => summary.beforeDrought.share?.estimate ?? 0));
+  return (
+    <div className="grid gap-x-8 gap-y-6 py-4 md:grid-cols-2 xl:grid-cols-3">
+      {options.map((option, i) => {
+        const { share } = option.summary.beforeDrought;
+        if (!share) return null;
+        const { medianTime, restrictedMean } = option.summary;
+        return (
+          <section key={option.name} aria-label={option.name} className="min-w-0">
+            <div className="flex items-baseline justify-between gap-3">
+              <h2 className="flex min-w-0 items-baseline gap-2 text-lead font-bold">
+                {!option.wait && <FlagSymbol />}
+                <span className="truncate">{option.name}</span>
+              </h2>
+              {option.cost !== null && props.currency && (
+                <span className="tabular-nums">{formatMoney(option.cost, props.currency)}</span>
+              )}
+            </div>
+            <p className="sr-only">{chanceSentence(option.summary.beforeDrought)}</p>
+            <p aria-hidden="true" className="flex items-center gap-2">
+              <span>In</span>
+              <span
+                className={`text-answer tabular-nums ${share.estimate === most ? 'font-bold' : 'font-light'}`}
+              >
+                {of100(share.estimate)}
+              </span>
+              <span className="leading-snug">
+                of 100 futures this closes before the next drought{' '}
+                <span className="text-ink-2">
+                  ({of100(share.low)} to {of100(share.high)})
+                </span>
+              </span>
+            </p>
+            <HundredRule chance={share} />
+            <p className="mt-1.5 text-note text-ink-2">
+              {medianTime === undefined
+                ? 'More than half of the futures are still open at the horizon'
+                : `Half recover within ${formatNumber(medianTime, 0)} years`}
+              {restrictedMean &&
+                `; ${formatNumber(restrictedMean.estimate, 1)} years on average, cut at the horizon`}
+              . Best of these options in {of100(option.best.estimate)} of 100 ({of100(option.best.low)} to{' '}
+              {of100(option.best.high)}). {option.summary.replicates} futures run
+              {option.summary.beforeDrought.neither > 0 &&
+                `; in ${option.summary.beforeDrought.neither} neither came by the horizon, counted as not in time`}
+              .
+            </p>
+            <div className="mt-2">{props.children(i)}</div>
+          </section>
+        );
+      })}
+    </div>
+  );
+}

@@ -1,0 +1,82 @@
+import { Table } from '#app/components/table.tsx';
+import { formatNumber } from '#app/lib/formats.ts';
+import { of100 } from './chance-words.ts';
+import type { OutlookFigures, Pair } from './comparison-figures.ts';
+
+const [width, height] = [120, 16];
+
+/** Differences of pairs that share their luck, with their intervals, and how much sharper that makes them. */
+export function PairTable({ figures: { pairs, options, replicates } }: { figures: OutlookFigures }) {
+  const least = Math.min(0, ...pairs.map(({ sooner }) => sooner.low));
+  const most = Math.max(1, ...pairs.map(({ sooner }) => sooner.high));
+  const x = (years: number) => 4 + ((width - 8) * (years - least)) / (most - least);
+  const sharper = pairs
+    .map(({ sooner }) => sooner.sharperBy)
+    .filter((times) => Number.isFinite(times))
+    .sort((a, b) => a - b);
+  const typical = sharper[Math.floor(sharper.length / 2)];
+  const drawing = ({ sooner }: Pair) => (
+    <svg width={width} height={height} aria-hidden="true" className="block">
+      <path d={`M${x(0)} 0V${height}`} className="stroke-rule" />
+      <path d={`M${x(sooner.low)} 8H${x(sooner.high)}`} className="stroke-ink" strokeWidth={3} />
+      <circle
+        cx={x(sooner.estimate)}
+        cy={8}
+        r={4.5}
+        className={sooner.low > 0 || sooner.high < 0 ? 'fill-ink' : 'fill-ground stroke-ink'}
+        strokeWidth={1.5}
+      />
+    </svg>
+  );
+  return (
+    <section aria-label="Paired differences">
+      <div className="flex flex-wrap justify-between gap-x-4 pb-1">
+        <b>Paired differences</b>
+        <span className="text-note text-ink-2">same luck, {replicates} pairs</span>
+      </div>
+      <Table
+        caption="Years that the first option recovers sooner than the second, with a 95 % interval, and how many more of 100 futures it closes in time"
+        rows={pairs}
+        rowKey={({ first, second }) => `${first} ${second}`}
+        columns={[
+          {
+            key: 'pair',
+            head: 'recovers sooner by',
+            cell: ({ first, second }) => (
+              <>
+                <b>{options[first].name}</b> than {options[second].name}
+              </>
+            ),
+          },
+          { key: 'drawn', head: <span className="sr-only">drawn</span>, wide: true, cell: drawing },
+          {
+            key: 'years',
+            head: 'years',
+            number: true,
+            cell: ({ sooner }) => (
+              <>
+                <b>{formatNumber(sooner.estimate, 1)}</b>{' '}
+                <span className="text-note whitespace-nowrap text-ink-2">
+                  {formatNumber(sooner.low, 1)} to {formatNumber(sooner.high, 1)}
+                </span>
+              </>
+            ),
+          },
+          {
+            key: 'chance',
+            head: 'in time',
+            number: true,
+            cell: ({ chanceGained }) => `${chanceGained >= 0 ? '+' : '−'}${Math.abs(of100(chanceGained))}`,
+          },
+        ]}
+      />
+      {typical !== undefined && (
+        <p className="mt-1.5 text-note text-ink-2">
+          Years are cut at the horizon, so futures still open there count as recovering then, never as lost.
+          As options share their luck, {formatNumber(Math.max(1, typical), typical < 10 ? 1 : 0)} times as
+          many futures would be needed to say this as sharply with luck of their own.
+        </p>
+      )}
+    </section>
+  );
+}
