@@ -5,6 +5,7 @@ export const pagesOf = ({ teamId, siteId, runId }: { teamId: string; siteId: str
   account: '/account',
   'new-site': `/teams/${teamId}/new-site`,
   ground: `/sites/${siteId}/ground`,
+  'ground-engine': `/sites/${siteId}/ground?layer=engine-capacity`,
   plant: `/sites/${siteId}/plant`,
   outlook: `/sites/${siteId}/outlook`,
   options: `/sites/${siteId}/options`,
