@@ -4,7 +4,7 @@ import type { Site } from '#contract/sites.ts';
 import { siteOrigin, sourceBytesQuery } from '#app/features/layers/engine-ground.ts';
 
 export interface AllowedGround {
-  /** not 0 where works may go, one byte a cell; undefined where the site says nothing, or while it is fetched */
+  /** not 0 where works may go, one byte a cell; undefined where the site says nothing, or while it is worked out */
   readonly cells: Uint8Array | undefined;
   /** what the site says about it is here, or it says nothing */
   readonly known: boolean;
@@ -13,12 +13,12 @@ export interface AllowedGround {
 /** Where works may go on a site: where its `allowed` layer or an allowed area says so, or everywhere without either. */
 export function useAllowed(site: Site): AllowedGround {
   const source = allowedSource(site);
-  const fetched = useQuery({
+  const worked = useQuery({
     ...sourceBytesQuery(siteOrigin(site), source ?? 1),
     enabled: source !== undefined,
   });
   return {
-    cells: source === undefined ? undefined : fetched.data,
-    known: source === undefined || fetched.data !== undefined,
+    cells: source === undefined ? undefined : worked.data,
+    known: source === undefined || worked.data !== undefined,
   };
 }
