@@ -43,12 +43,12 @@ const clumps = (column: number, row: number): Action => ({
 });
 const listen = () => ({
   onLook: vi.fn<QuickLookListener['onLook']>(),
+  onLines: vi.fn<QuickLookListener['onLines']>(),
   onFailure: vi.fn<(error: unknown) => void>(),
 });
 const lookOf = (year: number): Look => ({
   years: Int16Array.of(year),
   summary: { closable: 1, closedBy: [], half: undefined, eighty: undefined, ninety: undefined },
-  lines: [],
 });
 
 describe('startQuickLook', () => {
@@ -66,7 +66,9 @@ describe('startQuickLook', () => {
     expect(of).toBe(works);
     expect(planted.years[5 * side + 5]).toBeGreaterThan(2025);
     expect(planted.summary.closedBy.at(-1)!.area).toBeGreaterThan(0);
-    expect(planted.lines.flatMap(({ lines }) => lines).length).toBeGreaterThan(0);
+    await vi.waitFor(() =>
+      expect(heard.onLines.mock.lastCall?.[0].flatMap(({ lines }) => lines).length).toBeGreaterThan(0),
+    );
     handle.setWorks([]);
     await vi.waitFor(() => expect(heard.onLook).toHaveBeenCalledTimes(3));
     expect(heard.onLook.mock.calls[2][0]).toEqual(bare);
@@ -79,6 +81,7 @@ describe('startQuickLook', () => {
     const changes: { removed: unknown; added: unknown; reply: (look: Look) => void }[] = [];
     const { worker } = portWorker({
       open: () => open,
+      lines: () => [],
       change: ({ removed, added }: { removed: unknown; added: unknown }) =>
         new Promise<Look>((reply) => changes.push({ removed, added, reply })),
     });

@@ -1,5 +1,6 @@
 import { releaseProxy, wrap } from 'comlink';
 import type { LaidPoints } from '#sim-core/plan/pattern.ts';
+import type { YearLine } from '#sim-core/plan/year-lines.ts';
 import type { Action } from '#sim-core/spec/run-spec.ts';
 import type { Look, PatternRequest, QuickLookStart } from './quick-look-desk.ts';
 import type { QuickLookFace } from './quick-look-worker.ts';
@@ -13,6 +14,8 @@ export class QuickLookDied extends Error {
 export interface QuickLookListener {
   /** A look at the works that were set last but for those that came while it was being made. */
   onLook(look: Look, works: readonly Action[]): void;
+  /** Lines of closing years of the look that came last, once nothing newer is asked for. */
+  onLines(lines: readonly YearLine[]): void;
   /** Nothing comes any more. RunProblem, CellValuesError, QuickLookDied */
   onFailure(error: unknown): void;
 }
@@ -77,6 +80,10 @@ export function startQuickLook(
       waiting = undefined;
       if (next) lookAt(next);
       listener.onLook(look, works);
+      if (next) return;
+      remote.lines().then((lines) => {
+        if (!over && !busy) listener.onLines(lines);
+      }, fail);
     }, fail);
   }
   const lookAt = (works: readonly Action[]) => {

@@ -18,7 +18,6 @@ export interface Look {
   /** as a run reports them: 0 not by the horizon, −32768 cannot hold the plant, the survey year stood; Int16, row-major */
   readonly years: Int16Array;
   readonly summary: ClosingSummary;
-  readonly lines: readonly YearLine[];
 }
 
 /** A pattern to be laid on the ground that the desk holds. */
@@ -29,6 +28,8 @@ export interface QuickLookDesk {
   /** Takes a ground, without works. @throws RunProblem, CellValuesError */
   open(start: QuickLookStart): Promise<Look>;
   change(change: WorksChange): Look;
+  /** Lines of closing years with the works as they are: they take longer than the years, so they are asked for apart. */
+  lines(): YearLine[];
   /** @throws RangeError where the pattern makes no sense */
   lay(request: PatternRequest): LaidPoints;
 }
@@ -47,18 +48,9 @@ export function createQuickLookDesk(): QuickLookDesk {
     return held;
   };
   function shown(): Look {
-    const { look, grid, ground, start } = opened();
-    const { surveyYear, years } = start.spec;
-    const lines = yearLines({
-      grid,
-      closing: (cell) => look.closing(cell),
-      holds: (cell) => ground.capacity[cell] > 0,
-      surveyYear,
-      horizon: years,
-      years: lineYears(surveyYear, years),
-    });
+    const { look } = opened();
     // A copy, since it is handed over.
-    return { years: look.years.slice(), summary: look.summary(), lines };
+    return { years: look.years.slice(), summary: look.summary() };
   }
   return {
     async open(start) {
@@ -72,6 +64,18 @@ export function createQuickLookDesk(): QuickLookDesk {
     change(change) {
       opened().look.change(change);
       return shown();
+    },
+    lines() {
+      const { look, grid, ground, start } = opened();
+      const { surveyYear, years } = start.spec;
+      return yearLines({
+        grid,
+        closing: (cell) => look.closing(cell),
+        holds: (cell) => ground.capacity[cell] > 0,
+        surveyYear,
+        horizon: years,
+        years: lineYears(surveyYear, years),
+      });
     },
     lay(request) {
       const { grid, ground, start } = opened();

@@ -14,6 +14,7 @@ const handOver = (look: Look) => transfer(look, [look.years.buffer as ArrayBuffe
 const face = {
   open: async (start: QuickLookStart) => handOver(await desk.open(start)),
   change: (change: WorksChange) => handOver(desk.change(change)),
+  lines: () => desk.lines(),
   lay: (request: PatternRequest) => desk.lay(request),
 };
 export type QuickLookFace = typeof face;

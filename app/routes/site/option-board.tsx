@@ -148,6 +148,7 @@ export function OptionBoard(props: {
           <OptionMap
             {...{ ground, draft, board, surveyed, preview, year, asTable, editable, show }}
             look={view.look}
+            lines={view.lines}
             gain={suggesting.gain.result}
             title={`${site.name}, ${option.name}, ${year}`}
             onRemove={(id) => draw({ type: 'remove', ids: new Set([id]) })}

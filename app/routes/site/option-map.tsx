@@ -1,6 +1,7 @@
 import { useMemo } from 'react';
 import type { Work } from '#contract/works.ts';
 import type { GainMap } from '#sim-core/plan/gain-map.ts';
+import type { YearLine } from '#sim-core/plan/year-lines.ts';
 import { EmptyState } from '#app/components/empty-state.tsx';
 import { FlagSymbol, SurvivorSymbol } from '#app/components/symbols.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
@@ -41,6 +42,7 @@ export function OptionMap(props: {
   preview: readonly Work[];
   show: MapShow;
   look: Look | undefined;
+  lines: readonly YearLine[] | undefined;
   gain: GainMap | undefined;
   /** works that come later stand faint */
   year: number;
@@ -50,7 +52,7 @@ export function OptionMap(props: {
   onRemove: (id: string) => void;
   onMove: () => void;
 }) {
-  const { ground, draft, board, year, editable, surveyed, preview, show, look, gain } = props;
+  const { ground, draft, board, year, editable, surveyed, preview, show, look, lines, gain } = props;
   const { tool, refused } = board;
   const { site } = useSite();
   const { grid, outlook } = site;
@@ -67,8 +69,8 @@ export function OptionMap(props: {
     return ground.cover ? { kind: 'cover', values: ground.cover } : undefined;
   }, [show, gain, look, ground.cover, surveyYear, years]);
   const contours = useMemo(
-    () => (show === 'closing' && look ? yearContours(look.lines) : undefined),
-    [show, look],
+    () => (show === 'closing' && lines ? yearContours(lines) : undefined),
+    [show, lines],
   );
   const chosen = draft.selected.size <= 2 ? board.works.filter(({ id }) => draft.selected.has(id)) : [];
   const [only, ...others] = withoutPlanted(chosen);

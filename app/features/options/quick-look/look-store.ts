@@ -1,4 +1,5 @@
 import type { ClosingSummary } from '#sim-core/plan/closing-tally.ts';
+import type { YearLine } from '#sim-core/plan/year-lines.ts';
 import type { Action } from '#sim-core/spec/run-spec.ts';
 import { startQuickLook, type QuickLookHandle } from '#app/workers/quick-look-client.ts';
 import type { Look, QuickLookStart } from '#app/workers/quick-look-desk.ts';
@@ -8,6 +9,8 @@ import type { PatternLayer } from '../board/use-pattern.ts';
 export interface LookState {
   /** with the works that were drawn last, as far as it has come */
   readonly look: Look | undefined;
+  /** lines of closing years, of the look or of one shortly before it */
+  readonly lines: readonly YearLine[] | undefined;
   /** without any works */
   readonly wait: ClosingSummary | undefined;
   readonly error: unknown;
@@ -22,7 +25,7 @@ export interface LookStore {
 }
 
 let opened = 0;
-const nothing: LookState = { look: undefined, wait: undefined, error: undefined };
+const nothing: LookState = { look: undefined, lines: undefined, wait: undefined, error: undefined };
 
 export function createLookStore(
   start: QuickLookStart,
@@ -43,6 +46,7 @@ export function createLookStore(
         if (performance.getEntriesByName(asked).length > 0) performance.measure('quick look', asked);
         become({ look, ...(of.length === 0 && { wait: look.summary }) });
       },
+      onLines: (lines) => become({ lines }),
       onFailure(error) {
         handle = undefined;
         become({ error });

@@ -10,7 +10,7 @@ export interface QuickLookView extends LookState {
   readonly setWorks: (works: readonly Action[]) => void;
 }
 
-const nothing: LookState = { look: undefined, wait: undefined, error: undefined };
+const nothing: LookState = { look: undefined, lines: undefined, wait: undefined, error: undefined };
 const noStore = {
   subscribe: () => () => undefined,
   read: () => nothing,
