@@ -7,7 +7,7 @@ import { dashOf, widthOf } from './line-styles.ts';
 import { Key } from './recovery-curves.tsx';
 
 const [width, height] = [1120, 170];
-const [left, right, top, bottom] = [64, 12, 22, 26];
+const [left, right, top, bottom] = [64, 24, 22, 26];
 
 /**
  * The yearline of a comparison: median cover of every option over the years, with the band of the middle half of its

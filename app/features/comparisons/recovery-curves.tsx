@@ -4,7 +4,7 @@ import { formatNumber } from '#app/lib/formats.ts';
 import { dashOf, widthOf } from './line-styles.ts';
 
 const [width, height] = [560, 230];
-const [left, right, top, bottom] = [44, 8, 8, 46];
+const [left, right, top, bottom] = [52, 26, 8, 46];
 
 export interface Curve {
   readonly name: string;
@@ -45,7 +45,9 @@ export function RecoveryCurves(props: { curves: readonly Curve[]; surveyYear: nu
     <figure>
       <figcaption className="flex flex-wrap justify-between gap-x-4">
         <b>Recovery</b>
-        <span className="text-note text-ink-2">share of futures recovered by then; bands 95 %</span>
+        <span className="text-note text-ink-2">
+          share of futures recovered by then; bands 95 %; below, how many are still open
+        </span>
       </figcaption>
       <svg viewBox={`0 0 ${width} ${height}`} className="mt-1 block w-full" aria-hidden="true">
         {[0, 0.5, 1].map((share) => (
@@ -82,9 +84,6 @@ export function RecoveryCurves(props: { curves: readonly Curve[]; surveyYear: nu
             </text>
           </g>
         ))}
-        <text x={left - 6} y={height - 8} textAnchor="end" className="fill-ink-2 text-axis">
-          open
-        </text>
         {ticks.map((time) => (
           <text key={time} x={x(time)} y={height - 8} textAnchor="middle" className="fill-ink-2 text-axis">
             {curves.map(({ curve }) => Math.round((curve[0]?.atRisk ?? 0) * openAt(curve, time))).join(' / ')}

@@ -41,10 +41,11 @@ export function ComparisonMaps(props: {
   const asked = search.get('show') as Show | null;
   const show: Show = asked && asked in shows && (asked !== 'difference' || wait >= 0) ? asked : 'cover';
   const years = plan.mapYears;
-  const askedYear = Number(search.get('year'));
+  const middle = years[Math.floor(years.length / 2)];
+  const askedYear = Number(search.get('year') ?? middle);
   const year = years.reduce(
     (best, each) => (Math.abs(each - askedYear) < Math.abs(best - askedYear) ? each : best),
-    years[Math.floor(years.length / 2)],
+    middle,
   );
   const [view, setView] = useState<MapView>();
   const [chosen, setChosen] = useState<readonly number[]>(() => plan.options.map((_, i) => i).slice(0, 3));
