@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { inspectRaster } from '#rasters/describe/inspect-raster.ts';
-import { expected, loadFixture } from '#rasters/testing/fixtures.ts';
+import { expected, loadFixture, northUp } from '#rasters/testing/fixtures.ts';
 import { fileOf, gridOf } from '#rasters/testing/rasters.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { CellValues } from '#sim-core/grid/ground.ts';
@@ -73,6 +73,14 @@ describe('by hand', () => {
     ]);
   });
 
+  it('nearest takes the eastern and southern of two that are as near, whatever the decimals', async () => {
+    const tenths = gridOf(60, 3, { cellSize: 0.1 });
+    const columns = Uint8Array.from({ length: 180 }, (_, i) => i % 60);
+    const aside = { ...tenths, width: 59, originX: 473_000.05 };
+    const raster = await align(fileOf(tenths, columns), aside, { method: 'nearest' });
+    expect(lists(raster)[1]).toEqual(Array.from({ length: 59 }, (_, i) => i + 1));
+  });
+
   it('majority', async () => {
     const classes = Uint8Array.of(1, 1, 2, 2, 1, 3, 2, 2, 0, 0, 5, 5, 0, 4, 5, 6);
     const raster = await align(fileOf(fine, classes), coarsenGrid(fine, 2), { content: 'classes' });
@@ -93,11 +101,11 @@ describe('by hand', () => {
   });
 
   it('of classes with as much ground the one at the centre wins', async () => {
-    const classes = Uint8Array.of(7, 7, 2, 2);
+    const classes = Uint8Array.of(2, 2, 7, 7);
     const raster = await align(fileOf(gridOf(2, 2), classes), coarsenGrid(gridOf(2, 2), 2), {
       content: 'classes',
     });
-    expect(lists(raster)).toEqual([[2]]);
+    expect(lists(raster)).toEqual([[7]]);
   });
 });
 
@@ -170,6 +178,40 @@ describe('cells that lie on the grid’s lattice are copied', () => {
         }
   });
 });
+
+it.each(['good-south-up.tif', 'good-south-up-strips.tif'])(
+  '%s: windows are copied from where they lie',
+  async (name) => {
+    const file = loadFixture(name);
+    const values = northUp(expected[name].values, expected[name]);
+    for (const [dx, dy, width, height] of [
+      [0, 0, 4, 3],
+      [3, 2, 4, 3],
+      [5, 4, 4, 3],
+      [2, 3, 9, 7],
+      [-2, -3, 9, 7],
+    ]) {
+      const { originX, originY, epsg } = ownGrid(await inspectRaster(file));
+      const grid = {
+        width,
+        height,
+        cellSize: 0.5,
+        originX: originX + dx / 2,
+        originY: originY - dy / 2,
+        epsg,
+      };
+      const raster = await align(file, grid);
+      expect(lists(raster)).toEqual(
+        Array.from({ length: height }, (_, row) =>
+          Array.from({ length: width }, (_, column) => {
+            const [x, y] = [column + dx, row + dy];
+            return x < 0 || y < 0 || x >= 9 || y >= 7 ? raster.noData : values[y * 9 + x];
+          }),
+        ),
+      );
+    }
+  },
+);
 
 describe('what the values become', () => {
   const grid = gridOf(4, 4);
