@@ -48,7 +48,7 @@ export async function alignRaster(
     blockBytes: limits.blockBytes ?? defaultRasterLimits.blockBytes,
   });
   const band = description.bands[plan.band - 1];
-  const blocks = openBand(source, layout, plan.band);
+  const blocks = openBand(source, layout, band);
   progress.signal?.throwIfAborted();
   const made = await (isPlainCopy(plan, blocks)
     ? copyPlain(blocks, description, plan, band, progress)

@@ -42,7 +42,7 @@ const piece = fc
   .map(({ angle, width, height, x, y, bend }) => {
     const [c, s] = [Math.cos(angle), Math.sin(angle)];
     const at = (u: number, v: number) => [
-      x + c * u * width - s * v * height * (1 + bend * u),
+      x + c * u * width - s * v * (height + bend * u * Math.min(width, height)),
       y + s * u * width + c * v * height,
     ];
     const points = [at(0, 0), at(1, 0), at(1, 1), at(0, 1)];

@@ -10,7 +10,7 @@ async function counted(most: number) {
   const values = Uint16Array.from({ length: 200_000 }, (_, i) => i % 65_521);
   const source = toSource(fileOf(gridOf(500, 400), values));
   const { layout } = await openRaster(source);
-  const blocks = openBand(source, layout, 1);
+  const blocks = openBand(source, layout, { index: 1, noData: null });
   const reads = [0, 0, 0, 0];
   const counting: BandBlocks = {
     layout,

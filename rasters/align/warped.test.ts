@@ -27,7 +27,11 @@ async function cellsOf(bytes: Uint8Array) {
   const source = toSource(bytes);
   const { description, layout } = await openRaster(source);
   const { noData } = description.bands[0];
-  const window = sourceWindow(openBand(source, layout, 1), { noData, southUp: false, most: 1e6 });
+  const window = sourceWindow(openBand(source, layout, { index: 1, noData }), {
+    noData,
+    southUp: false,
+    most: 1e6,
+  });
   const { width, height } = description;
   return { width, height, values: await window.load({ left: 0, top: 0, width, height }) };
 }

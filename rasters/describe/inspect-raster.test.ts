@@ -48,7 +48,7 @@ describe.each(Object.keys(expected))('%s', (name) => {
         expected[name],
       );
       // Memory for one block: each piece decodes what it needs anew.
-      const window = sourceWindow(openBand(source, layout, i + 1), {
+      const window = sourceWindow(openBand(source, layout, description.bands[i]), {
         noData,
         southUp: description.southUp,
         most: 1,

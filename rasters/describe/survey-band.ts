@@ -45,7 +45,7 @@ export async function surveyBand(
   const band = description.bands.find(({ index, role }) => role === 'data' && index === (wanted ?? index));
   if (!band) throw noSuchBand(description, wanted);
   const { width, height, blockWidth, blockHeight, blocksAcross } = layout;
-  const blocks = openBand(source, layout, band.index);
+  const blocks = openBand(source, layout, band);
   const step = Math.ceil(Math.max(width, height) / largestSide);
   // Where a band beside it hides cells, they come as NaN.
   const dataType = layout.alphaBand === null ? band.dataType : 'float64';

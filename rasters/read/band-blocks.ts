@@ -19,23 +19,36 @@ export interface BandBlocks {
  * Opens a band, counted from 1. Where the file has an alpha band, cells where it is 0 come as NaN among 64-bit floats.
  * Nothing is kept between two reads but some bytes read ahead.
  */
-export function openBand(input: RasterSource, layout: TiffLayout, band: number): BandBlocks {
+export function openBand(
+  input: RasterSource,
+  layout: TiffLayout,
+  { index: band, noData }: { readonly index: number; readonly noData: number | null },
+): BandBlocks {
   const source = readAhead(input);
-  const { alphaBand } = layout;
+  const { alphaBand, samples } = layout;
   const alpha = alphaBand === null || alphaBand === band ? undefined : alphaBand;
   return {
     layout,
     async read(index) {
-      const decoded = layout.samples > 1 ? await readBlock(source, layout, index) : undefined;
+      const together = samples > 1 ? await readBlock(source, layout, index) : undefined;
       const take = async (which: number) =>
-        layout.samples > 1
-          ? decoded && pick(decoded, layout.samples, which - 1)
+        samples > 1
+          ? together && pick(together, samples, which - 1)
           : readBlock(source, layout, (which - 1) * layout.blocks + index);
       const values = await take(band);
-      if (!values || alpha === undefined) return values ?? null;
-      return masked(values, await take(alpha));
+      if (alpha === undefined) return values ?? null;
+      const seen = values
+        ? Float64Array.from(values)
+        : new Float64Array(layout.blockWidth * rowsOf(layout, index)).fill(noData ?? 0);
+      return hide(seen, await take(alpha));
     },
   };
+}
+
+/** Rows of a block: tiles are whole also at the lower edge, strips end with the raster. */
+function rowsOf({ tiled, height, blockHeight, blocks, blocksAcross }: TiffLayout, index: number): number {
+  const top = Math.floor((index % blocks) / blocksAcross) * blockHeight;
+  return tiled ? blockHeight : Math.min(blockHeight, height - top);
 }
 
 async function readBlock(
@@ -43,12 +56,10 @@ async function readBlock(
   layout: TiffLayout,
   index: number,
 ): Promise<CellValues | undefined> {
-  const { offsets, byteCounts, tiled, height, blockHeight, blocks, blocksAcross, dataType } = layout;
+  const { offsets, byteCounts, dataType } = layout;
   if (byteCounts[index] === 0) return undefined;
   const packed = await readBytes(source, offsets[index], byteCounts[index], 'a strip or tile');
-  const top = Math.floor((index % blocks) / blocksAcross) * blockHeight;
-  const rows = tiled ? blockHeight : Math.min(blockHeight, height - top);
-  return new arrayTypes[dataType]((await decodeBlock(packed, rows, layout)).buffer);
+  return new arrayTypes[dataType]((await decodeBlock(packed, rowsOf(layout, index), layout)).buffer);
 }
 
 function pick(values: CellValues, samples: number, which: number): CellValues {
@@ -57,8 +68,7 @@ function pick(values: CellValues, samples: number, which: number): CellValues {
   return picked;
 }
 
-function masked(values: CellValues, alpha: CellValues | undefined): Float64Array {
-  const seen = Float64Array.from(values);
+function hide(seen: Float64Array, alpha: CellValues | undefined): Float64Array {
   // A block of alpha that is left out is all zero.
   for (let i = 0; i < seen.length; i++) if (!alpha || alpha[i] === 0) seen[i] = NaN;
   return seen;

@@ -16,6 +16,16 @@ it('undoes differences row by row, in arithmetic of the cell’s width', () => {
   expect([...longs]).toEqual([2n ** 63n, 0n, 1n, 7n, 7n, 8n]);
 });
 
+it('undoes differences between cells of two samples, each of its own', () => {
+  const two = { ...shape, rows: 1, samples: 2 };
+  const bytes = Uint8Array.of(10, 200, 1, 100, 2, 3);
+  undoDifferences(bytes, { ...two, bytesPerCell: 1 });
+  expect([...bytes]).toEqual([10, 200, 11, 44, 13, 47]);
+  const longs = BigUint64Array.of(1n, 2n ** 63n, 1n, 2n ** 63n, 1n, 5n);
+  undoDifferences(new Uint8Array(longs.buffer), { ...two, bytesPerCell: 8 });
+  expect([...longs]).toEqual([1n, 2n ** 63n, 2n, 0n, 3n, 5n]);
+});
+
 it('undoes floating-point differences: planes of bytes, most significant first', () => {
   // 1.0 = 3f 80 00 00 and 2.0 = 40 00 00 00: planes 3f 40 | 80 00 | 00 00 | 00 00, then byte differences.
   const bytes = Uint8Array.of(0x3f, 0x01, 0x40, 0x80, 0, 0, 0, 0);
