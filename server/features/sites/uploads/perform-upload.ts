@@ -6,7 +6,6 @@ import { closing } from '#server/jobs/background.ts';
 import type { TaskProgress } from '#server/jobs/raster-pool.ts';
 import { classifyError } from '#server/middleware/classify-error.ts';
 import type { Services } from '#server/services.ts';
-import { gridDifferences } from '#sim-core/grid/grid.ts';
 import { findLayer } from '../layer.repository.ts';
 import { installLayer } from '../layer.service.ts';
 import { alignToGrid, type AlignedRaster } from '../align-to-grid.ts';
@@ -137,25 +136,15 @@ async function place(services: Services, row: UploadRow, progress: Required<Task
     { source: row, part: part!, band: upload.band, grid, method, unit: upload.choices.unit },
     progress,
   );
-  const moved = await storeWithRows(services, aligned.files, async (manager) => {
+  // The grid is still the same: it changes only by work that waits behind this.
+  await storeWithRows(services, aligned.files, async (manager) => {
     const now = await findUpload(manager, row.id);
     if (now?.state !== 'aligning' || now.choices !== row.choices) throw new Overtaken();
-    const siteNow = await findSite(manager, row.siteId!);
-    if (!siteNow) throw new Overtaken();
-    // The site got other cells meanwhile: what was made lies beside them.
-    if (gridDifferences(gridOf(siteNow), grid).length > 0) return true;
     const old = row.putBackOf === null ? null : await findLayer(manager, row.siteId!, row.putBackOf);
     const layer = layerOf(row, upload, aligned, old);
     await installLayer(manager, layer, services.clock().toISOString());
     await updateUpload(manager, row.id, { state: 'done', layerId: layer.id, problem: null, attempts: 0 });
-    return false;
   });
-  if (!moved) return;
-  await releaseBlobs(
-    services,
-    aligned.files.map(({ hash }) => hash),
-  );
-  await place(services, row, progress);
 }
 
 /** The row of the layer that an upload becomes; one that is put back keeps what was said about it. */

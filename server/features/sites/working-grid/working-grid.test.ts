@@ -5,7 +5,7 @@ import type { CellSize, GridChange } from '#contract/working-grid.ts';
 import { withOtherWorker } from '#server/testing/other-worker.ts';
 import { makeTeam, type TestTeam } from '#server/testing/people.ts';
 import { openRun, specFor } from '#server/testing/runs.ts';
-import { makeSite, smallGrid, storedFiles } from '#server/testing/sites.ts';
+import { geoTiff, makeSite, smallGrid, storedFiles, uploadLayer } from '#server/testing/sites.ts';
 import { testServer, type TestServer } from '#server/testing/test-server.ts';
 
 let server: TestServer;
@@ -115,6 +115,27 @@ describe('a site that gets coarser cells', () => {
       classes: old.layer.classes,
       source: old.layer.source,
     });
+  });
+
+  it('does it again when a layer is replaced meanwhile', async () => {
+    const { modeller } = team.agents;
+    const { services } = server;
+    const { id } = await makeSite(modeller, team.teamId);
+    const newer = geoTiff(Float32Array.from({ length: 24 }, (_, i) => i / 77));
+    const ours = services.backgroundRasters;
+    let replaced = false;
+    services.backgroundRasters = {
+      ...ours,
+      run: async (task, progress) => {
+        if (!replaced) await uploadLayer(modeller, id, 'cover', newer, 'newer.tif').expect(200);
+        replaced = true;
+        return ours.run(task, progress);
+      },
+    };
+    const after = await coarsen(id, 2);
+    services.backgroundRasters = ours;
+    expect(after.layers.map(({ grid }) => grid.cellSize)).toEqual([4, 4]);
+    expect(after.layers.find(({ part }) => part === 'cover')?.source.fileName).toBe('newer.tif');
   });
 
   it('stays as it was when the work breaks off, and can be asked again', async () => {
