@@ -95,6 +95,8 @@ it('says how far a task is, and drops one whose signal comes before its worker h
   expect(shares.at(-1)).toBe(1);
   const stop = new AbortController();
   const dropped = pool.run({ ...survey, thumbnailPath: join(folder, 'never') }, { signal: stop.signal });
+  // By now its header is being read, and no worker has it yet.
+  for (let i = 0; i < 5; i++) await Promise.resolve();
   stop.abort(new Error('enough'));
   await expect(dropped).rejects.toThrow('enough');
   expect(await readdir(folder)).not.toContain('never');

@@ -94,6 +94,13 @@ describe('a raster on the cells of the site', () => {
     expect((await modeller.post(path(sent.id, '/place')).expect(400)).body.fields).toMatchObject([
       { field: 'part' },
     ]);
+    const said = (await choose(read, { part: 'refuge' }).expect(200)).body as Upload;
+    expect(said).toMatchObject({ state: 'choices', decisions: [] });
+    const again = await settled(
+      await sendUpload(modeller, team.teamId, cover(), { siteId: site.id, part: 'refuge' }),
+    );
+    expect(again).toMatchObject({ state: 'choices', decisions: [] });
+    await modeller.delete(path(again.id)).expect(204);
     await modeller.delete(path(sent.id)).expect(204);
     expect(storedFiles(server)).toEqual(before);
   });

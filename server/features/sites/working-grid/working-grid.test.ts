@@ -71,6 +71,7 @@ describe('a site that gets coarser cells', () => {
       layers: { hash: string }[];
     };
     expect(kept.grid).toEqual(smallGrid);
+    expect(kept.layers).toHaveLength(2);
     for (const { hash } of kept.layers) await modeller.get(of(before.id, `layer-values/${hash}`)).expect(200);
     const { body: options } = await modeller.get(of(before.id, 'options')).expect(200);
     const stale = await modeller
