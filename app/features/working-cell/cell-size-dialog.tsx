@@ -76,7 +76,12 @@ export function CellSizeDialog(props: { site: Site; onClose: () => void }) {
                 number: true,
                 cell: (size) => yearTime(size.secondsPerYear),
               },
-              { key: 'memory', head: 'memory', number: true, cell: (size) => formatBytes(size.memoryBytes) },
+              {
+                key: 'memory',
+                head: 'memory',
+                number: true,
+                cell: (size) => <span className="whitespace-nowrap">{formatBytes(size.memoryBytes)}</span>,
+              },
             ]}
           />
           <p className="mt-1 text-note text-ink-2">
@@ -113,8 +118,10 @@ export function CellSizeDialog(props: { site: Site; onClose: () => void }) {
 }
 
 const yearTime = (seconds: number) =>
-  seconds < 1
-    ? `${formatNumber(seconds * 1000, 0)} ms`
-    : seconds < 10
-      ? `${formatNumber(seconds, 1)} s`
-      : formatDuration(seconds);
+  seconds < 0.001
+    ? 'under 1 ms'
+    : seconds < 1
+      ? `${formatNumber(seconds * 1000, 0)} ms`
+      : seconds < 10
+        ? `${formatNumber(seconds, 1)} s`
+        : formatDuration(seconds);

@@ -63,7 +63,7 @@ export function GroundMap(props: {
         label={`${site.name}, ${name}`}
         summary={part ? layerSummary(part) : engineSummary(map ?? 'capacity')}
       />
-      {raster === undefined && !error && (
+      {(raster === undefined || (!part && ground.outdated)) && !error && (
         <p
           role="status"
           className="busy-ticks absolute top-4 left-6 border-b border-transparent bg-ground px-2 py-1 text-note"
