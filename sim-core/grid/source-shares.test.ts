@@ -56,7 +56,7 @@ describe('surveyed places', () => {
   it('shelter as mounds do, the stronger where they overlap, and what a raster says elsewhere', () => {
     const mound = { x: 103, y: 197, radius: 1, strength: 1, halo: 4 };
     const refuge: LayerSource = {
-      highest: [{ mounds: [{ ...mound, strength: 0.2 }, mound] }, 0.25],
+      highest: [{ mounds: [mound, { ...mound, strength: 0.2 }] }, 0.25],
     };
     const bytes = sourceBytes(refuge, grid, rasterOf);
     expect(bytes[1 * 5 + 1]).toBe(255);
