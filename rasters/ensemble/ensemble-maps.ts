@@ -47,10 +47,17 @@ export function createEnsembleMaps({ width, height, years }: MapsInput, from?: U
   const sums = held?.sums ?? years.map(() => new Uint32Array(cells));
   const mean = (year: number) => {
     const sum = sums[years.indexOf(year)];
-    return Uint8Array.from(sum, (total) => Math.round(total / taken.size));
+    const means = new Uint8Array(cells);
+    for (let i = 0; i < cells; i++) means[i] = Math.round(sum[i] / taken.size);
+    return means;
   };
-  const chance = (year: number) =>
-    Uint8Array.from(closing.chanceBy(year), (share) => Math.round(255 * share));
+  const chance = (year: number) => {
+    const shares = closing.chanceBy(year);
+    const bytes = new Uint8Array(cells);
+    // NaN, where the plant cannot be held, becomes 0.
+    for (let i = 0; i < cells; i++) bytes[i] = Math.round(255 * shares[i]);
+    return bytes;
+  };
 
   return {
     add(replicate, closingYears, covers) {

@@ -29,7 +29,14 @@ export interface RunPoolInput {
 export function createRunPool(input: RunPoolInput): RunPool {
   const { grid, workers = availableParallelism(), worker = workerFile('run-worker') } = input;
   const workerData: RunWorkerData = { grid, ground: sharedGround(input.ground) };
-  const pool = new Piscina({ ...worker, workerData, minThreads: 0, maxThreads: workers });
+  // A worker waits for its next run while this thread is busy with the last one; starting one anew takes longer.
+  const pool = new Piscina({
+    ...worker,
+    workerData,
+    minThreads: 0,
+    maxThreads: workers,
+    idleTimeout: 30_000,
+  });
   /** runs that no worker has taken up yet */
   const waiting = new Set<(why: unknown) => void>();
   // A worker that fails to start tells the pool alone, and the runs that it was started for would wait for ever.

@@ -63,10 +63,17 @@ export function closingMaps(cells: number, years: readonly number[], from?: Clos
 
   /** Calls `then` with how many replicates closed each cell in each kept year up to `until`, where any did. */
   function each(until: number, then: (closings: number, cell: number, year: number) => void): void {
-    for (let slot = 0; slot <= until; slot++)
-      planes[slot]?.forEach((n, cell) => n && then(n, cell, years[slot]));
+    for (let slot = 0; slot <= until; slot++) {
+      const plane = planes[slot];
+      if (plane)
+        for (let cell = 0; cell < cells; cell++) if (plane[cell]) then(plane[cell], cell, years[slot]);
+    }
   }
-  const blank = () => Float32Array.from(canClose, (can) => (can ? 0 : NaN));
+  function blank(): Float32Array {
+    const values = new Float32Array(cells);
+    for (let cell = 0; cell < cells; cell++) if (!canClose[cell]) values[cell] = NaN;
+    return values;
+  }
 
   return {
     add(closing) {
@@ -97,10 +104,12 @@ export function closingMaps(cells: number, years: readonly number[], from?: Clos
       if (until < 0) throw new RangeError(`${year} is not kept; the years are ${years.join(', ')}`);
       const closed = blank();
       each(until, (n, cell) => (closed[cell] += n));
-      return closed.map((n) => n / count);
+      for (let cell = 0; cell < cells; cell++) closed[cell] /= count;
+      return closed;
     },
     medianYear() {
-      const median = Int16Array.from(canClose, (can) => (can ? stillOpen : cannotClose));
+      const median = new Int16Array(cells);
+      for (let cell = 0; cell < cells; cell++) median[cell] = canClose[cell] ? stillOpen : cannotClose;
       const closed = new Uint16Array(cells);
       each(last, (n, cell, year) => {
         closed[cell] += n;
@@ -112,7 +121,8 @@ export function closingMaps(cells: number, years: readonly number[], from?: Clos
       // Summed as years before the last one: small numbers, of which a 32-bit float loses next to nothing.
       const early = blank();
       each(last, (n, cell, year) => (early[cell] += n * (years[last] - year)));
-      return early.map((sum) => years[last] - sum / count);
+      for (let cell = 0; cell < cells; cell++) early[cell] = years[last] - early[cell] / count;
+      return early;
     },
   };
 }
