@@ -12,7 +12,11 @@ rmSync(outdir, { recursive: true, force: true });
 await buildServer({
   absWorkingDir: root,
   // Workers are entries of their own: they are loaded by file name.
-  entryPoints: { main: 'server/main.ts', 'raster-worker': 'server/jobs/raster-worker.ts' },
+  entryPoints: {
+    main: 'server/main.ts',
+    'raster-worker': 'server/jobs/raster-worker.ts',
+    'run-worker': 'server/jobs/run-worker.ts',
+  },
   outdir,
   bundle: true,
   splitting: true,

@@ -46,7 +46,8 @@ export default defineConfig({
     command: 'node .config/start.mjs',
     cwd: root,
     url: `http://localhost:${port}/api/health`,
-    timeout: 180_000,
+    // The demo's comparison is computed first.
+    timeout: 300_000,
     env: { PORT: String(port), DATA_DIR: dataDir, LOG_LEVEL: 'warn' },
     stdout: 'ignore',
     stderr: 'pipe',

@@ -6,8 +6,29 @@ import { prepareFirstStart } from './first-start.ts';
 import { openDemoAccounts } from './people/session-view.repository.ts';
 import { resumeWork } from './resume-work.ts';
 import { createServices, type Services } from './services.ts';
+import { showProgress } from './show-progress.ts';
+import type { RunnerProgress } from '#sim-core/ensemble/runner.ts';
 
 const say = (text: string) => process.stdout.write(`${text}\n`);
+
+/** Says how far the demo is. Nothing is said by a start that finds it made. */
+function sayDemo(): (progress: RunnerProgress) => void {
+  const { stdout } = process;
+  const tell = showProgress({
+    write: (text) => stdout.write(text),
+    isTerminal: stdout.isTTY,
+    now: () => performance.now(),
+  });
+  let begun = false;
+  return ({ stepsDone, steps, runsDone, runs }) => {
+    if (!begun)
+      say(`Making the invented demo, once: ${runs} runs for its comparison. This can take a minute.`);
+    begun = true;
+    // Time left would be a guess before the first run; the last step may be done before the last run is handed over.
+    if (runsDone > 0 && (stepsDone < steps || runsDone === runs))
+      tell(stepsDone, steps, `${runsDone} of ${runs} runs`);
+  };
+}
 
 /** Prints how to get in: the demo's sign-ins while it is on, or the one-time set-up link. */
 async function greet({ config, dataSource }: Services, setupLink: string | undefined): Promise<void> {
@@ -27,7 +48,7 @@ async function main(): Promise<void> {
   const config = readConfig(process.env);
   const services = await createServices(config);
   const { demo, setupLink } = await prepareFirstStart(services);
-  if (demo) await loadDemo(services);
+  if (demo) await loadDemo(services, { onProgress: sayDemo() });
   await resumeWork(services);
   const server = createApp(services).listen(config.port, config.host);
   await new Promise<void>((resolve, reject) => {

@@ -111,6 +111,8 @@ test('two people draw on one option and lose nothing; options are ordered, archi
   await test.step('costs show beside each option', async () => {
     await page.getByRole('button', { name: 'Costs', exact: true }).click();
     await page.getByLabel('Cost of a mound').fill('1000');
+    for (const free of ['Cost of a planted clump', 'Cost of a visit', 'Fixed cost of every year'])
+      await page.getByLabel(free).fill('0');
     await page.getByLabel('Budget, empty where there is none').fill('30000');
     await page.getByRole('button', { name: 'Save the costs' }).click();
     await expect(entry(page, 'Contested').first()).toContainText('€40,000, €10,000 over');

@@ -3,6 +3,7 @@ import type { Outlook, Plant } from '#contract/sites.ts';
 import { demoClasses } from '#rasters/demo/classes.ts';
 import { demoSurveyYear } from '#rasters/demo/sallow-reach.ts';
 import { defaultRates } from '#sim-core/spec/parameters.ts';
+import type { UnitCosts } from '#sim-core/spec/unit-costs.ts';
 
 /** Everything here is invented. */
 export const demoTeamName = 'Northmarsh Restoration Trust';
@@ -47,3 +48,28 @@ export const demoOutlook: Outlook = {
     between: 0,
   },
 };
+
+/** Invented: what works cost, such that the mounds take most of the budget. */
+export const demoCosts: UnitCosts = {
+  currency: 'EUR',
+  mound: 260,
+  clump: 3,
+  fenceMetre: 12,
+  visit: 450,
+  visitsPerYear: 3,
+  perYear: 150,
+  discountRate: 0,
+  budget: 25_000,
+};
+
+/** What the finished comparison of the options asks. */
+export const demoComparison = {
+  name: 'Wait, mounds or clumps',
+  /** of all ground that can hold the plant: by the horizon some futures come that far, and some do not */
+  target: 0.75,
+  /** by how much the index lies lower in the drier outlook */
+  drier: 0.5,
+  /** closer where growth still differs between options */
+  mapYears: [2029, 2032, 2036, 2040, 2045, 2050, 2055, 2060],
+  replicates: 24,
+} as const;

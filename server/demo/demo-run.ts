@@ -3,21 +3,14 @@ import { layerSources } from '#contract/layer-sources.ts';
 import type { Option } from '#contract/options.ts';
 import { runActions } from '#contract/works.ts';
 import type { Site } from '#contract/sites.ts';
-import { decodeCellValues, encodeCellValues } from '#rasters/cells/cell-values.ts';
+import { encodeCellValues } from '#rasters/cells/cell-values.ts';
 import type { CellValues } from '#sim-core/grid/ground.ts';
-import { buildGround, createRun } from '#sim-core/index.ts';
+import { createRun } from '#sim-core/index.ts';
 import { runSpecSchema, runSpecVersion, type RunSpec } from '#sim-core/spec/run-spec.ts';
-import { findLayerByHash } from '../features/sites/layer.repository.ts';
 import { putClosing, putFrame } from '../features/runs/run-maps.service.ts';
 import { finishRun, startRun } from '../features/runs/run.service.ts';
 import type { Services } from '../services.ts';
-
-/** The decoded values of a site's layer. */
-export async function layerValues(services: Services, siteId: string, hash: string): Promise<CellValues> {
-  const layer = await findLayerByHash(services.dataSource.manager, siteId, hash);
-  if (!layer) throw new Error(`The demo has lost its layer ${hash}.`);
-  return decodeCellValues(await services.blobs.read(layer.valuesHash)).values;
-}
+import { demoGround } from './demo-ground.ts';
 
 function specOf(site: Site, option: Option, seed: string): RunSpec {
   const { surveyYear, years, stepsPerYear, boundary, droughtIndex } = site.outlook;
@@ -46,13 +39,7 @@ export async function runDemoOption(
   const spec = specOf(site, option, seed);
   const { grid } = site;
   const { width, height } = grid;
-  const rasters = new Map<string, { values: CellValues; noData: number | null }>();
-  for (const { hash, noData } of site.layers)
-    rasters.set(hash, { values: await layerValues(services, site.id, hash), noData });
-  const ground = buildGround(spec.layers, grid, (source) => {
-    if (!('layer' in source)) throw new Error('The demo runs on uploaded layers alone.');
-    return rasters.get(source.layer)!;
-  });
+  const ground = await demoGround(services, site, spec.layers);
   const { id } = await startRun(services, site.id, { name, optionId: option.id, spec }, by);
   const packed = (values: CellValues) => Readable.from([encodeCellValues({ width, height, values })]);
   const run = createRun({ spec, grid, ground });

@@ -1,13 +1,23 @@
 import { Readable } from 'node:stream';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { replicateSpec, type Comparison, type ComparisonSummary } from '#contract/comparisons.ts';
+import type { SiteCosts } from '#contract/costs.ts';
 import type { Run, RunSummary } from '#contract/runs.ts';
 import type { Option } from '#contract/options.ts';
 import type { Site, SiteSummary } from '#contract/sites.ts';
+import { decodeCellValues } from '#rasters/cells/cell-values.ts';
+import { demoGrid } from '#rasters/demo/sallow-reach.ts';
+import { createEnsembleMaps, mapNames } from '#rasters/ensemble/ensemble-maps.ts';
+import { createRun, recordReplicate } from '#sim-core/index.ts';
+import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
+import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import { addTeam } from '#server/people/people.repository.ts';
 import { createSite } from '#server/features/sites/site.service.ts';
+import { binaryReply } from '#server/testing/binary-reply.ts';
 import { habitat, storedFiles } from '#server/testing/sites.ts';
 import { testServer, type TestServer } from '#server/testing/test-server.ts';
 import { demoAccounts } from './demo-accounts.ts';
+import { demoGround } from './demo-ground.ts';
 import { demoTeamName } from './demo-place.ts';
 import { loadDemo } from './load-demo.ts';
 
@@ -15,6 +25,10 @@ let server: TestServer;
 let leftOver: string;
 let agent: ReturnType<TestServer['agent']>;
 let site: Site;
+/** runs of the comparison that were done each time that progress was told */
+const told: number[] = [];
+/** fewer than at a start, for these tests' sake */
+const replicates = 2;
 
 beforeAll(async () => {
   server = await testServer({ demo: 'on' });
@@ -24,7 +38,7 @@ beforeAll(async () => {
   const file = await server.services.blobs.receive(Readable.from([habitat()]), 1e6);
   const raster = { part: 'habitat', file, fileName: 'habitat.tif', by: 'nobody' } as const;
   await createSite(server.services, { teamId: leftOver, name: 'half made', ...raster });
-  await loadDemo(server.services);
+  await loadDemo(server.services, { replicates, onProgress: ({ runsDone }) => told.push(runsDone) });
   agent = server.agent();
   const { email, password } = demoAccounts[0];
   const { body } = await agent.post('/api/session').send({ email, password }).expect(200);
@@ -99,5 +113,108 @@ describe('the demo', () => {
   });
 });
 
+describe('the comparison of the demo', () => {
+  let path: string;
+  let comparison: Comparison;
+  beforeAll(async () => {
+    const { body } = await agent.get(`/api/sites/${site.id}/comparisons`).expect(200);
+    const [summary] = (body as { comparisons: ComparisonSummary[] }).comparisons;
+    path = `/api/sites/${site.id}/comparisons/${summary.id}`;
+    comparison = (await agent.get(path).expect(200)).body as Comparison;
+  });
+  const recordsOf = async (option: number, outlook: number) =>
+    (await agent.get(`${path}/ensembles/${option}/${outlook}/replicates`).expect(200)).body
+      .replicates as ReplicateRecord[];
+  const bytesAt = async (rest: string) =>
+    (await binaryReply(agent.get(`${path}/ensembles/${rest}`)).expect(200)).body as Buffer;
+
+  it('is finished, of all options under two outlooks, and waits for a decision', () => {
+    expect(comparison).toMatchObject({
+      status: 'finished',
+      ending: 'all replicates',
+      replicates,
+      done: replicates,
+      decision: null,
+      grid: site.grid,
+    });
+    expect(comparison.plan.options.map(({ name }) => name)).toEqual([
+      'Wait',
+      '40 mounds, scattered',
+      '40 mounds, along the edge',
+      'Clumped planting',
+    ]);
+    expect(comparison.plan.outlooks.map(({ name }) => name)).toEqual(['The outlook', 'Drier']);
+    expect(comparison.plan.outlooks[0].droughtIndex).toEqual(site.outlook.drawn);
+    expect(comparison.events.map(({ what }) => what)).toEqual(['started', 'ended: all replicates']);
+    expect([told.at(-1), told.toSorted((a, b) => a - b)]).toEqual([8 * replicates, told]);
+  });
+
+  it('knows what each option costs, all within the budget', async () => {
+    const { costs, changedBy } = (await agent.get(`/api/sites/${site.id}/costs`).expect(200))
+      .body as SiteCosts;
+    expect([changedBy, comparison.plan.currency]).toEqual(['Ines Marlow', costs.currency]);
+    // By hand: 40 mounds at 260, 920 clumps at 3, three visits in two years at 450, 34 years at 150.
+    const [wait, scattered, edge, clumps] = comparison.plan.options.map(({ cost }) => cost!);
+    expect([wait, scattered, edge]).toEqual([0, 20_960, 20_960]);
+    expect(clumps).toBeGreaterThan(0);
+    expect(clumps).toBeLessThan(scattered);
+    expect(costs.budget).toBeGreaterThan(scattered);
+  });
+
+  it('has all replicates, maps of the size of the grid, and the counts that they are made of', async () => {
+    const { width, height } = demoGrid;
+    expect(comparison.ensembles).toHaveLength(8);
+    const names = mapNames(comparison.plan.mapYears);
+    for (const { option, outlook, done, maps, mapsState } of comparison.ensembles) {
+      expect([done, mapsState, Object.keys(maps).toSorted()]).toEqual([
+        replicates,
+        replicates,
+        names.toSorted(),
+      ]);
+      expect(new Set(Object.values(maps))).toEqual(new Set([replicates]));
+      expect((await recordsOf(option, outlook)).map(({ replicate }) => replicate)).toEqual([0, 1]);
+      const state = await bytesAt(`${option}/${outlook}/maps-state`);
+      const held = createEnsembleMaps({ width, height, years: comparison.plan.mapYears }, state);
+      expect(held.replicates()).toEqual([0, 1]);
+      for (const name of names) {
+        const stored = decodeCellValues(await bytesAt(`${option}/${outlook}/maps/${name}`));
+        expect([stored.width, stored.height]).toEqual([width, height]);
+        expect(Buffer.compare(bytes(stored.values), bytes(held.map(name)))).toBe(0);
+      }
+    }
+  }, 120_000);
+
+  it('has replicates that come to the same record wherever they are run, with the weather of their outlook', async () => {
+    const [option, outlook, replicate] = [1, 1, 1];
+    const spec = runSpecSchema.parse(replicateSpec(comparison.plan, option, outlook, replicate));
+    const ground = await demoGround(server.services, site, spec.layers);
+    const run = createRun({ spec, grid: site.grid, ground });
+    while (run.nextYear());
+    const records = await recordsOf(option, outlook);
+    expect(records[replicate]).toEqual(recordReplicate(run.result(), spec, comparison.plan.droughtThreshold));
+    // Options share their luck, outlooks and replicates do not.
+    const [other] = await recordsOf(0, outlook);
+    expect(records[0].droughtIndex).toEqual(other.droughtIndex);
+    expect(records[0].droughtIndex).not.toEqual(records[1].droughtIndex);
+    const mean = (values: number[]) => values.reduce((sum, value) => sum + value, 0) / values.length;
+    const [milder] = await recordsOf(0, 0);
+    expect(mean(other.droughtIndex)).toBeCloseTo(mean(milder.droughtIndex) - 0.5, 6);
+  }, 60_000);
+
+  it('can be copied, and the copy resumed for more replicates', async () => {
+    const copy = (await agent.post(`${path}/copies`).send({ name: 'More of it', replicates: 4 }).expect(200))
+      .body as Comparison;
+    expect(copy.ensembles).toEqual(comparison.ensembles);
+    const resumed = await agent
+      .post(`/api/sites/${site.id}/comparisons/${copy.id}/resume`)
+      .send({ replicates: 4 })
+      .expect(200);
+    expect(resumed.body).toMatchObject({ status: 'running', done: replicates });
+  });
+});
+
 const firstRun = async () =>
   ((await agent.get(`/api/sites/${site.id}/runs`).expect(200)).body as { runs: RunSummary[] }).runs[0];
+
+const bytes = ({ buffer, byteOffset, byteLength }: ArrayBufferView) =>
+  Buffer.from(buffer as ArrayBuffer, byteOffset, byteLength);

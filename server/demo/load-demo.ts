@@ -4,6 +4,8 @@ import { worksOf } from '#contract/works.ts';
 import type { LayerPart } from '#contract/layers.ts';
 import type { Site } from '#contract/sites.ts';
 import { demoRasters } from '#rasters/demo/sallow-reach.ts';
+import type { RunnerProgress } from '#sim-core/ensemble/runner.ts';
+import { keepCosts } from '../features/costs/costs.service.ts';
 import { createOption, listOptions } from '../features/options/option.service.ts';
 import { addLayer, setLayerClasses } from '../features/sites/layer.service.ts';
 import { listSitesOf } from '../features/sites/site-reply.ts';
@@ -11,20 +13,42 @@ import { createSite, deleteSite, setOutlook, setPlant } from '../features/sites/
 import { addMember, addPerson, addTeam } from '../people/people.repository.ts';
 import type { Services } from '../services.ts';
 import { demoAccounts } from './demo-accounts.ts';
+import { compareDemoOptions } from './demo-comparison.ts';
+import { layerValues } from './demo-ground.ts';
 import { demoOptions } from './demo-options.ts';
-import { demoHabitatClasses, demoOutlook, demoPlant, demoSiteName, demoTeamName } from './demo-place.ts';
-import { layerValues, runDemoOption } from './demo-run.ts';
+import {
+  demoComparison,
+  demoCosts,
+  demoHabitatClasses,
+  demoOutlook,
+  demoPlant,
+  demoSiteName,
+  demoTeamName,
+} from './demo-place.ts';
+import { runDemoOption } from './demo-run.ts';
 import { anyoneAt, deleteTeam, renameTeam, teamIdsNamed } from './demo.repository.ts';
 
 /** The team's name until everything of it is there: a start that finds it knows that an earlier one was broken off. */
 const unfinishedName = `${demoTeamName} (being made)`;
 const nameOf = (role: string) => demoAccounts.find((account) => account.role === role)!.name;
 
+const seed = 'sallow-reach';
+
+export interface LoadDemoInput {
+  /** of each option in the comparison, under each outlook; the demo's own unless said */
+  replicates?: number;
+  /** told how far the runs of the comparison are, which take up nearly all the time */
+  onProgress?: (progress: RunnerProgress) => void;
+}
+
 /**
- * Loads the invented team, place and runs through the same functions that serve uploads and runs. Its people come last:
- * once they are there nothing is done any more, and what a start left half made is wiped and made again.
+ * Loads the invented team, place, runs and comparison through the same functions that serve uploads and runs. Its people
+ * come last: once they are there nothing is done any more, and what a start left half made is wiped and made again.
  */
-export async function loadDemo(services: Services): Promise<void> {
+export async function loadDemo(
+  services: Services,
+  { replicates = demoComparison.replicates, onProgress }: LoadDemoInput = {},
+): Promise<void> {
   const { dataSource, write, clock, passwords, log } = services;
   const emails = demoAccounts.map((account) => account.email);
   if (await anyoneAt(dataSource.manager, emails)) return;
@@ -38,9 +62,11 @@ export async function loadDemo(services: Services): Promise<void> {
   for (const option of options.slice(0, 2))
     await runDemoOption(services, site, option, {
       name: `${option.name}, demo`,
-      seed: 'sallow-reach',
+      seed,
       by: nameOf('modeller'),
     });
+  const by = nameOf('modeller');
+  await compareDemoOptions(services, site, options, { replicates, seed, by, onProgress });
 
   const passwordHashes = await Promise.all(demoAccounts.map(({ password }) => passwords.hash(password)));
   await write(async (manager) => {
@@ -73,6 +99,7 @@ async function makeSite(services: Services, teamId: string): Promise<Site> {
   const habitat = layers.find((layer) => layer.part === 'habitat')!;
   await setLayerClasses(services, id, habitat.id, demoHabitatClasses);
   await setPlant(services, id, demoPlant);
+  await keepCosts(services, id, demoCosts, nameOf('manager'));
   return setOutlook(services, id, demoOutlook);
 }
 

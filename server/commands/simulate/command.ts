@@ -1,7 +1,7 @@
 import { join } from 'node:path';
 import { help, parseTask } from './arguments.ts';
 import { exampleSpec } from './example.ts';
-import { showProgress, type ProgressTarget } from './progress.ts';
+import { showProgress, type ProgressTarget } from '#server/show-progress.ts';
 import { openResultFolder, refuseOccupied, type ResultFolder } from './result-folder.ts';
 import { runSpecFile } from './run-spec-file.ts';
 import { SimulateError } from './simulate-error.ts';

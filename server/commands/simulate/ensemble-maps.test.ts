@@ -1,6 +1,5 @@
 import { expect, test } from 'vitest';
 import { ensembleMaps } from './ensemble-maps.ts';
-import { duration, showProgress } from './progress.ts';
 
 test('mean cover and the year by which at least half have closed', () => {
   const maps = ensembleMaps(5, [2020], 4);
@@ -21,24 +20,4 @@ test('maps that do not fit are refused before they are made', () => {
   expect(() => ensembleMaps(16_000_000, [2020, 2030], 200)).toThrow(
     /need 7 GB .* at most 2 GB .*"reportYears"/,
   );
-});
-
-test('progress tells the time left by the pace so far, and seldom where lines add up', () => {
-  let now = 0;
-  let text = '';
-  const tell = showProgress({ write: (t) => (text += t), isTerminal: false, now: () => now });
-  for (const [at, done] of [
-    [1000, 1],
-    [2000, 2],
-    [90_000, 3],
-    [120_000, 4],
-  ]) {
-    now = at;
-    tell(done, 4, 'replicate 1 of 2');
-  }
-  expect(text).toBe(
-    '1 of 4 steps, replicate 1 of 2, 3 s left\n3 of 4 steps, replicate 1 of 2, 30 s left\n' +
-      '4 of 4 steps, replicate 1 of 2, took 2 min\n',
-  );
-  expect(duration(5_400_000)).toBe('1 h 30 min');
 });
