@@ -24,7 +24,7 @@ const standsStill = (manager: ReturnType<typeof managerOf>) =>
     },
     { timeout: 20_000 },
   );
-const work = (comparison: Comparison, onRecord = () => undefined) => ({
+const work = (comparison: Comparison, onRecord: (now: Comparison) => void = () => undefined) => ({
   comparison,
   loadLayers: () => Promise.resolve(new Map()),
   onRecord,
@@ -98,6 +98,29 @@ describe('a comparison', () => {
     expect(rerun).toHaveLength(16 - saved);
     expect(digestsOf(server)).toEqual(digestsOf(whole));
     expect(await bytesOf(server)).toEqual(await bytesOf(whole));
+  });
+
+  it('asks the server what is saved, whatever the page knows of it', async () => {
+    const server = smallServer(smallComparison(8));
+    const before = server.stored();
+    const heard: Comparison[] = [];
+    const begun: number[] = [];
+    const manager = managerOf(server, { createPool: () => smallPool(2, (r) => void begun.push(r)) });
+    const stop = manager.subscribe(() => {
+      if (manager.get('comparison')!.version > 4) manager.pause('comparison');
+    });
+    const start = () => manager.start({ ...work(before), onRecord: (now) => void heard.push(now) });
+    start();
+    await standsStill(manager);
+    stop();
+    const saved = server.records[0].size + server.records[1].size;
+    expect(saved).toBeGreaterThan(3);
+    expect(heard.map(({ ensembles }) => ensembles[0].done + ensembles[1].done)).toEqual([saved]);
+    begun.length = 0;
+    start();
+    await standsStill(manager);
+    expect(manager.get('comparison')).toMatchObject({ phase: 'done', again: 0 });
+    expect(begun).toHaveLength(16 - saved);
   });
 
   it('runs again what is recorded but not in the maps, and stores no record twice', async () => {

@@ -47,7 +47,7 @@ export interface ComparisonManagerParts {
 export interface WorkOn {
   readonly comparison: Comparison;
   readonly loadLayers: () => Promise<PackedLayers>;
-  /** what the server now knows of it */
+  /** Hears what the server knows of it when the work stands still. */
   readonly onRecord: (comparison: Comparison) => void;
 }
 
@@ -134,10 +134,12 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
   }
 
   async function run(job: Job): Promise<void> {
-    const { comparison, loadLayers, onRecord } = job.work;
-    const { id, siteId, plan, grid } = comparison;
+    const { loadLayers, onRecord } = job.work;
+    const { id, siteId } = job.work.comparison;
     const { signal } = job.abort;
     const save = saver(job);
+    const comparison = await save(() => server.comparison(siteId, id, signal));
+    const { plan, grid } = comparison;
     const addressOf = (option: number, outlook: number): EnsembleAddress => ({
       siteId,
       comparisonId: id,
@@ -258,7 +260,7 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
     await saveStates();
     await saveMaps();
     const why = ending;
-    if (why) onRecord(await save(() => server.end(siteId, id, why)));
+    onRecord(await save(() => (why ? server.end(siteId, id, why) : server.comparison(siteId, id, signal))));
     change(id, { phase: why ? 'done' : 'paused' });
   }
 

@@ -1,5 +1,6 @@
 import {
   endComparison,
+  getComparison,
   getMapsState,
   putEnsembleMap,
   putMapsState,
@@ -12,6 +13,8 @@ import { fetchReplicates, type EnsembleAddress } from './get-comparison.ts';
 
 /** What a comparison that is being worked on tells the server, and asks of it. */
 export interface ComparisonServer {
+  /** as it stands now: what a page has read of it may be older */
+  comparison(siteId: string, comparisonId: string, signal: AbortSignal): Promise<Comparison>;
   replicates(address: EnsembleAddress, signal: AbortSignal): Promise<ReplicateRecord[]>;
   putReplicates(address: EnsembleAddress, replicates: ReplicateRecord[], signal: AbortSignal): Promise<void>;
   mapsState(address: EnsembleAddress, signal: AbortSignal): Promise<Blob>;
@@ -27,6 +30,8 @@ export interface ComparisonServer {
 }
 
 export const comparisonServer: ComparisonServer = {
+  comparison: (siteId, comparisonId, signal) =>
+    callEndpoint(getComparison, { params: { siteId, comparisonId }, signal }),
   replicates: fetchReplicates,
   putReplicates: async (params, replicates, signal) => {
     await callEndpoint(putReplicates, { params: { ...params }, body: { replicates }, signal });

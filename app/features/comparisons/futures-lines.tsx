@@ -1,7 +1,6 @@
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import type { ComparisonPlan } from '#contract/comparisons.ts';
 import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
-import { WordButton } from '#app/components/word-button.tsx';
 
 const [rowWidth, height, middle] = [4, 84, 42];
 
@@ -16,24 +15,27 @@ export function futureWords(record: ReplicateRecord, horizon: number): string {
 
 /**
  * A line a future, in the order of how long before (above) or after (below) the next drought it recovered; dots where it
- * is open at the horizon. A future can be picked and run again alone.
+ * is open at the horizon. A future can be picked and read.
  */
 export function FuturesLines(props: {
   plan: ComparisonPlan;
   name: string;
   records: readonly ReplicateRecord[];
-  onRunAlone?: (replicate: number) => void;
+  /** what can be done with the future that is picked */
+  children?: (record: ReplicateRecord) => ReactNode;
 }) {
   const { records, plan } = props;
   const { surveyYear, years } = plan.common;
   const horizon = surveyYear + years;
+  /** number of the future, which stays picked when others come between */
   const [picked, setPicked] = useState<number>();
   const lead = ({ recoveredYear, droughtYear }: ReplicateRecord) =>
     recoveredYear === null ? -Infinity : (droughtYear ?? horizon + 1) - recoveredYear;
   const sorted = [...records].sort((a, b) => lead(b) - lead(a) || a.replicate - b.replicate);
-  const at = picked === undefined ? undefined : sorted[Math.min(picked, sorted.length - 1)];
+  const place = sorted.findIndex(({ replicate }) => replicate === picked);
+  const at = place < 0 ? undefined : sorted[place];
   const scale = (middle - 4) / years;
-  const choose = (to: number) => setPicked(Math.min(sorted.length - 1, Math.max(0, to)));
+  const choose = (to: number) => setPicked(sorted[Math.min(sorted.length - 1, Math.max(0, to))]?.replicate);
   return (
     <div>
       <div
@@ -42,7 +44,7 @@ export function FuturesLines(props: {
         aria-label={`Futures of ${props.name}, from the one that closes longest before the next drought`}
         aria-valuemin={1}
         aria-valuemax={sorted.length}
-        aria-valuenow={(picked ?? 0) + 1}
+        aria-valuenow={Math.max(0, place) + 1}
         aria-valuetext={at ? `Future ${at.replicate + 1}: ${futureWords(at, horizon)}` : 'none picked'}
         className="cursor-pointer outline-offset-2"
         onKeyDown={(event) => {
@@ -54,7 +56,7 @@ export function FuturesLines(props: {
             PageUp: 10,
             PageDown: -10,
           };
-          if (event.key in moves) choose((picked ?? (moves[event.key] > 0 ? -1 : 0)) + moves[event.key]);
+          if (event.key in moves) choose(at || moves[event.key] < 0 ? place + moves[event.key] : 0);
           else if (event.key === 'Home') choose(0);
           else if (event.key === 'End') choose(sorted.length - 1);
           else return;
@@ -108,12 +110,7 @@ export function FuturesLines(props: {
       <p className="min-h-9 text-note text-ink-2" aria-live="polite">
         {at ? (
           <>
-            Future {at.replicate + 1}: {futureWords(at, horizon)}.{' '}
-            {props.onRunAlone && (
-              <WordButton lined onClick={() => props.onRunAlone?.(at.replicate)}>
-                Run it alone and watch
-              </WordButton>
-            )}
+            Future {at.replicate + 1}: {futureWords(at, horizon)}. {props.children?.(at)}
           </>
         ) : (
           'Above the line: closed before the next drought. Below: after it. Dots: still open. Press one to read it.'

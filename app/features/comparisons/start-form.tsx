@@ -86,14 +86,27 @@ export function ComparisonStartForm(props: {
     return { optionId: option.id, cost: cost?.total ?? null, spec: props.compose(option, mode, seed) };
   });
   const ready = composed.flatMap(({ spec, ...rest }) => (spec ? [{ ...rest, spec }] : []));
-  const blocked = composed.findIndex(({ spec }) => !spec);
-  const runs = chosen.length * outlooks.length * (replicates ?? 0);
+  // An empty seed is said beside the sentence, not as a fault of the site.
+  const blocked = seed.trim() === '' ? -1 : composed.findIndex(({ spec }) => !spec);
+  const runs = chosen.length * outlooks.length * (replicatesFit ? replicates : 0);
   const workers = navigator.hardwareConcurrency || 2;
   const seconds = (runs * props.secondsOf(mode)) / workers;
   const { surveyYear, years } = site.outlook;
   const cells = site.grid.width * site.grid.height;
   const kept = mapYears(surveyYear, years, cells, Math.max(1, chosen.length * outlooks.length)).length;
-  const fits = chosen.length >= 2 && replicatesFit && thresholdFits && blocked < 0 && name.trim() !== '';
+  const wrong = {
+    options: chosen.length < 2 ? 'Choose at least two options; Wait is one of them.' : undefined,
+    replicates: replicatesFit
+      ? undefined
+      : `Found “${typed}” futures; a whole number from 2 to 2000 is expected.`,
+    seed: seed.trim() === '' ? 'There is no seed; type one, or take another.' : undefined,
+    threshold: thresholdFits
+      ? undefined
+      : `Found “${typedThreshold}” as the index of a drought; a number from −15 to 15 is expected.`,
+    name: name.trim() === '' ? 'Give the comparison a name.' : undefined,
+  };
+  const said = Object.values(wrong).filter((words) => words !== undefined);
+  const fits = replicatesFit && thresholdFits && said.length === 0 && blocked < 0;
   const toggle = (set: ReadonlySet<string>, key: string) => {
     const next = new Set(set);
     if (!next.delete(key)) next.add(key);
@@ -151,7 +164,7 @@ export function ComparisonStartForm(props: {
           inputMode="numeric"
           characters={5}
           value={typed}
-          error={replicatesFit ? undefined : 'A whole number from 2 to 2000 is expected'}
+          error={wrong.replicates}
           onChange={(event) => setTyped(event.target.value)}
         />
         <span>futures each,</span>
@@ -168,7 +181,7 @@ export function ComparisonStartForm(props: {
           characters={Math.max(8, seed.length)}
           maxLength={200}
           value={seed}
-          error={seed.trim() === '' ? 'Type a seed' : undefined}
+          error={wrong.seed}
           onChange={(event) => setSeed(event.target.value)}
         />
         <WordButton lined onClick={() => setSeed(props.drawSeed())}>
@@ -180,7 +193,7 @@ export function ComparisonStartForm(props: {
           inputMode="decimal"
           characters={5}
           value={typedThreshold}
-          error={thresholdFits ? undefined : 'A number from −15 to 15 is expected'}
+          error={wrong.threshold}
           onChange={(event) => setThreshold(event.target.value)}
         />
         <span>counts as the next drought. Stop</span>
@@ -202,13 +215,13 @@ export function ComparisonStartForm(props: {
           characters={Math.min(44, Math.max(14, name.length))}
           maxLength={120}
           value={name}
-          error={name.trim() === '' ? 'Give the comparison a name' : undefined}
+          error={wrong.name}
           onChange={(event) => setName(event.target.value)}
         />
       </p>
-      {chosen.length < 2 && (
+      {said.length > 0 && (
         <p role="alert" className="text-note text-danger">
-          Choose at least two options; Wait is one of them.
+          {said.join(' ')}
         </p>
       )}
       {blocked >= 0 && props.problems(chosen[blocked], mode, seed)}

@@ -1,7 +1,7 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useMemo, useRef, useState } from 'react';
 import { useNavigate } from 'react-router-dom';
-import { replicateSpec, type Comparison } from '#contract/comparisons.ts';
+import type { Comparison } from '#contract/comparisons.ts';
 import { Button } from '#app/components/button.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { Progress } from '#app/components/progress.tsx';
@@ -26,13 +26,11 @@ import { PairTable } from '#app/features/comparisons/pair-table.tsx';
 import { RecoveryCurves } from '#app/features/comparisons/recovery-curves.tsx';
 import { WeightsBox } from '#app/features/comparisons/weights-box.tsx';
 import { costsQuery } from '#app/features/options/costs/site-costs.ts';
-import { registerRunMutation } from '#app/features/runs/change-run.ts';
-import { runManager } from '#app/features/runs/live-runs.ts';
 import { formatDuration } from '#app/lib/formats.ts';
 import { useThrottled } from '#app/lib/use-throttled.ts';
 import { ComparisonMaps } from './comparison-maps.tsx';
 import { useWorkOnComparison, wasAtWork } from './comparison-ground.ts';
-import { useStartParts } from './run-ground.ts';
+import { FutureAlone } from './future-alone.tsx';
 import { SitePage } from './site-page.tsx';
 import { useSite } from './use-site.ts';
 
@@ -50,7 +48,7 @@ export function ComparisonView({
   const navigate = useNavigate();
   const workOn = useWorkOnComparison();
   const [outlook, setOutlook] = useState(0);
-  const stored = useQuery({ ...replicatesQuery(comparison), enabled: !live });
+  const stored = useQuery({ ...replicatesQuery(comparison), enabled: !live || live.phase === 'loading' });
   const costs = useQuery(costsQuery(site.id)).data;
 
   // A tab that was at work when it was loaded anew goes on by itself, once.
@@ -61,13 +59,15 @@ export function ComparisonView({
     if (wasAtWork(comparison.id)) workOn(comparison);
   }, [comparison, live, mayDraw, workOn]);
 
+  // While this tab fetches what is stored, the page keeps showing it.
+  const atHand = live && live.phase !== 'loading' ? live.records : undefined;
   const known: KnownRecords | undefined = useMemo(
     () =>
-      live?.records ??
+      atHand ??
       stored.data?.map((option) =>
         option.map((records) => new Map(records.map((record) => [record.replicate, record]))),
       ),
-    [live?.records, stored.data],
+    [atHand, stored.data],
   );
   const version = useThrottled(live?.version ?? 0, 1500);
   const figures = useMemo(
@@ -76,6 +76,7 @@ export function ComparisonView({
     // eslint-disable-next-line react-hooks/exhaustive-deps
     [plan, known, comparison.id, version],
   );
+  const counted = { ...comparison, done: Math.max(comparison.done, figures?.outlooks[0]?.replicates ?? 0) };
   const shown = figures?.outlooks[Math.min(outlook, plan.outlooks.length - 1)];
 
   const onSaved = (saved: Comparison) => keepComparison(queryClient, saved);
@@ -101,25 +102,6 @@ export function ComparisonView({
       void navigate(`/sites/${site.id}/compare/${saved.id}`);
     },
   });
-  const register = useMutation(registerRunMutation(queryClient, site.id));
-  const partsOf = useStartParts();
-  const runAlone = (option: number, replicate: number) => {
-    const { optionId, name } = plan.options[option];
-    register.mutate(
-      {
-        name: `${name}, future ${replicate + 1} of “${comparison.name}”`.slice(0, 120),
-        optionId,
-        spec: replicateSpec(plan, option, outlook, replicate),
-      },
-      {
-        onSuccess: (run) => {
-          runManager.start(partsOf(run));
-          void navigate(`/sites/${site.id}/runs/${run.id}`);
-        },
-      },
-    );
-  };
-
   const working = isWorking(live);
   const left = live?.progress?.secondsLeft;
   return (
@@ -131,7 +113,7 @@ export function ComparisonView({
           </WordLink>
           <h1 className="text-title font-bold">{comparison.name}</h1>
         </div>
-        <p className="text-note text-ink-2">{standingWords(comparison, live)}</p>
+        <p className="text-note text-ink-2">{standingWords(counted, live)}</p>
       </div>
       {live && working && live.phase !== 'saving' && (
         <div className="border-b border-rule py-3">
@@ -171,7 +153,7 @@ export function ComparisonView({
       )}
       {!working && mayDraw && comparison.decision === null && (
         <GoOn
-          comparison={comparison}
+          comparison={counted}
           paused={live?.phase === 'paused' || live?.phase === 'failed'}
           busy={reopen.isPending}
           error={reopen.error}
@@ -206,7 +188,6 @@ export function ComparisonView({
           </WordButton>
         </ProblemNotice>
       ) : null}
-      {register.error ? <ProblemNotice error={register.error} title="The future was not started." /> : null}
       {shown && figures && known ? (
         <>
           <OptionAnswers figures={shown} currency={plan.currency}>
@@ -215,8 +196,9 @@ export function ComparisonView({
                 plan={plan}
                 name={plan.options[option].name}
                 records={[...known[option][outlook].values()]}
-                onRunAlone={mayDraw ? (replicate) => runAlone(option, replicate) : undefined}
-              />
+              >
+                {(record) => <FutureAlone {...{ comparison, option, outlook, record }} />}
+              </FuturesLines>
             )}
           </OptionAnswers>
           <div className="grid gap-x-10 gap-y-8 border-t border-ink pt-4 lg:grid-cols-2">
@@ -244,7 +226,7 @@ export function ComparisonView({
             <WeightsBox figures={figures} />
             <div className="grid content-start gap-6">
               <DecisionBox
-                comparison={{ ...comparison, done: Math.max(comparison.done, shown.replicates) }}
+                comparison={counted}
                 mayDecide={(role === 'manager' || role === 'admin') && !working}
                 busy={decide.isPending}
                 error={decide.error}

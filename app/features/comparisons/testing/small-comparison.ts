@@ -133,6 +133,7 @@ export function smallServer(comparison: Comparison) {
   const pieces: number[] = [];
   let ended: string | undefined;
   const server: ComparisonServer = {
+    comparison: () => Promise.resolve(stored()),
     replicates: ({ option }) => Promise.resolve([...records[option].values()]),
     putReplicates: ({ option }, sent) => {
       pieces.push(sent.length);
