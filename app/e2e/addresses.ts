@@ -1,10 +1,11 @@
 import type { Page } from '@playwright/test';
+import { listComparisons } from '#contract/comparisons.ts';
 import { fillPath } from '#contract/endpoint.ts';
 import { getSession } from '#contract/people.ts';
 import { listRuns } from '#contract/runs.ts';
 import { listSites } from '#contract/sites.ts';
 
-/** Team, demo site and one of its finished runs, as the signed-in person sees them. */
+/** Team, demo site, one of its finished runs and its finished comparison, as the signed-in person sees them. */
 export async function demoAddresses(page: Page) {
   const ask = async (path: string): Promise<unknown> => (await page.request.get(path)).json();
   const session = getSession.reply.parse(await ask(getSession.path));
@@ -15,5 +16,10 @@ export async function demoAddresses(page: Page) {
   const { runs } = listRuns.reply.parse(await ask(fillPath(listRuns.path, { siteId: site.id })));
   const run = runs.find(({ status, name }) => status === 'finished' && /mounds/.test(name));
   if (!run) throw new Error('The demo run is missing');
-  return { teamId, siteId: site.id, runId: run.id };
+  const { comparisons } = listComparisons.reply.parse(
+    await ask(fillPath(listComparisons.path, { siteId: site.id })),
+  );
+  const comparison = comparisons.find(({ status }) => status === 'finished');
+  if (!comparison) throw new Error('The demo comparison is missing');
+  return { teamId, siteId: site.id, runId: run.id, comparisonId: comparison.id };
 }

@@ -1,5 +1,10 @@
 /** Every page behind the door, by name. */
-export const pagesOf = ({ teamId, siteId, runId }: { teamId: string; siteId: string; runId: string }) => ({
+export const pagesOf = ({
+  teamId,
+  siteId,
+  runId,
+  comparisonId,
+}: Record<'teamId' | 'siteId' | 'runId' | 'comparisonId', string>) => ({
   home: '/',
   team: `/team/${teamId}`,
   account: '/account',
@@ -11,4 +16,6 @@ export const pagesOf = ({ teamId, siteId, runId }: { teamId: string; siteId: str
   options: `/sites/${siteId}/options`,
   runs: `/sites/${siteId}/runs`,
   run: `/sites/${siteId}/runs/${runId}?year=2043`,
+  compare: `/sites/${siteId}/compare`,
+  comparison: `/sites/${siteId}/compare/${comparisonId}`,
 });

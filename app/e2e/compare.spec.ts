@@ -65,7 +65,9 @@ test('a manager compares two options, comes back to it in the middle, and decide
     await page.goto(`/sites/${siteId}/compare`);
     await expect(page.getByText('No comparisons yet.')).toBeVisible();
     await page.getByLabel('Futures of each option').fill('1');
-    await expect(page.getByText('Found “1” futures; a whole number from 2 to 2000 is expected.')).toBeVisible();
+    await expect(
+      page.getByText('Found “1” futures; a whole number from 2 to 2000 is expected.'),
+    ).toBeVisible();
     await expect(button(page, 'Start the comparison')).toBeDisabled();
     await page.getByLabel('Futures of each option').fill(String(futures));
     await page.getByLabel('Name of the comparison').fill('Wait or clumps');
@@ -114,7 +116,7 @@ test('a manager compares two options, comes back to it in the middle, and decide
       ['cover against Wait', 'cover against Wait in 2037'],
       ['mean cover', 'mean cover in 2037'],
     ]) {
-      await page.getByRole('radio', { name: mode }).check({ force: true });
+      await page.getByText(mode, { exact: true }).click();
       await expect(maps).toHaveCount(2);
       await expect(page.getByRole('application', { name: `Clumps: ${words}` })).toBeVisible();
       await expect(page.locator('[data-painted=true]')).toHaveCount(2);
