@@ -54,7 +54,7 @@ export const comparedOptionSchema = z.object({
   wait: z.boolean(),
   revision: z.number().int(),
   actions: runSpecFields.actions,
-  /** present value of its works, null where no costs are set */
+  /** what its works cost to the horizon, null where no costs are set */
   cost: money.nullable(),
 });
 export type ComparedOption = z.infer<typeof comparedOptionSchema>;
