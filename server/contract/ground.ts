@@ -63,6 +63,8 @@ export const layerDependentsSchema = z.object({
   runs: z.number().int(),
   runNames: z.array(z.string()),
   /** what it is to the site, in words, a sentence each: a run cannot start without it, a class table goes with it … */
+  /** how many comparisons stand on it */
+  comparisons: z.number().int(),
   consequences: z.array(z.string()),
 });
 export type LayerDependents = z.infer<typeof layerDependentsSchema>;

@@ -33,9 +33,12 @@ it('says what depends on a layer, and that it keeps it', () => {
   expect(dependentsInWords(undefined, false)).toMatch(/Looking/);
   expect(dependentsInWords(undefined, true)).toMatch(/could not be asked/);
   expect(
-    dependentsInWords({ runs: 0, runNames: [], consequences: ['No run can start without it.'] }, false),
-  ).toBe('No run can start without it. No run stands on it.');
-  expect(dependentsInWords({ runs: 5, runNames: ['A', 'B', 'C', 'D'], consequences: [] }, false)).toBe(
-    '5 runs stand on it (A, B, C and others) and keep it.',
-  );
+    dependentsInWords(
+      { runs: 0, runNames: [], comparisons: 2, consequences: ['No run can start without it.'] },
+      false,
+    ),
+  ).toBe('No run can start without it. No run stands on it. 2 comparisons stand on it too.');
+  expect(
+    dependentsInWords({ runs: 5, runNames: ['A', 'B', 'C', 'D'], comparisons: 0, consequences: [] }, false),
+  ).toBe('5 runs stand on it (A, B, C and others) and keep it.');
 });

@@ -43,12 +43,16 @@ export function RemoveLayer({ siteId, layer }: { siteId: string; layer: Layer })
 export function dependentsInWords(dependents: LayerDependents | undefined, unknown: boolean): string {
   if (unknown) return 'What depends on it could not be asked.';
   if (!dependents) return 'Looking for what depends on it …';
-  const { runs, runNames, consequences } = dependents;
+  const { runs, runNames, comparisons, consequences } = dependents;
   const named = runNames.slice(0, 3).join(', ');
   const more = runs > runNames.slice(0, 3).length ? ' and others' : '';
   const stand =
     runs === 0
       ? 'No run stands on it.'
       : `${formatCounted(runs, 'run')} ${runs === 1 ? 'stands' : 'stand'} on it (${named}${more}) and ${runs === 1 ? 'keeps' : 'keep'} it.`;
-  return [...consequences, stand].join(' ');
+  const compared =
+    comparisons === 0
+      ? []
+      : [`${formatCounted(comparisons, 'comparison')} ${comparisons === 1 ? 'stands' : 'stand'} on it too.`];
+  return [...consequences, stand, ...compared].join(' ');
 }

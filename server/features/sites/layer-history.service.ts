@@ -12,6 +12,7 @@ import {
   findLayer,
   hasTwin,
   layersOfPart,
+  comparisonsOnRaster,
   runsOnRaster,
   updateLayer,
 } from './layer.repository.ts';
@@ -52,6 +53,7 @@ export async function layerDependents(
   const row = await findLayer(manager, siteId, layerId);
   if (!row) throw notFound();
   const { runs, runNames } = await runsOnRaster(manager, siteId, row.hash);
+  const comparisons = await comparisonsOnRaster(manager, siteId, row.hash);
   const consequences: string[] = [];
   if (row.replacedAt === null) {
     const { part, classes } = layerReply(row);
@@ -59,12 +61,12 @@ export async function layerDependents(
     if (classes) consequences.push(`Its class table of ${classes.length} classes goes with it.`);
     consequences.push('It stays in the history of its part and can be put back.');
   } else consequences.push('It goes for good, and so does its file unless another layer was made from it.');
-  return { runs, runNames, consequences };
+  return { runs, runNames, comparisons, consequences };
 }
 
 /**
  * Takes a layer off a site, which leaves it in its part's history; or, one of the history, out of that.
- * @throws ProblemError `not-found`; `conflict` while runs stand on one of the history
+ * @throws ProblemError `not-found`; `conflict` while runs or comparisons stand on one of the history
  */
 export async function deleteLayer(services: Services, siteId: string, layerId: string): Promise<Site> {
   const { site, freed } = await services.write(async (manager) => {
@@ -83,9 +85,17 @@ export async function deleteLayer(services: Services, siteId: string, layerId: s
 }
 
 async function forgetLayer(manager: Manager, row: LayerRow): Promise<void> {
+  // The same raster may be there twice; then nothing is lost.
+  if (await hasTwin(manager, row)) return deleteLayerRow(manager, row.id);
+  const comparisons = await comparisonsOnRaster(manager, row.siteId, row.hash);
+  if (comparisons > 0)
+    throw new ProblemError(
+      'conflict',
+      `Found ${comparisons} ${comparisons === 1 ? 'comparison that stands' : 'comparisons that stand'} on this layer; ` +
+        'they could not be resumed or run again without it. Keep the layer, or delete the comparisons on which nothing was decided first.',
+    );
   const { runs, runNames } = await runsOnRaster(manager, row.siteId, row.hash);
-  // The same raster may be there twice; then runs lose nothing.
-  if (runs > 0 && !(await hasTwin(manager, row)))
+  if (runs > 0)
     throw new ProblemError(
       'conflict',
       `Found ${runs} ${runs === 1 ? 'run that stands' : 'runs that stand'} on this layer (“${runNames[0]}”${runs > 1 ? ' and others' : ''}); ` +

@@ -2,6 +2,7 @@ import { afterAll, beforeAll, expect, it } from 'vitest';
 import type { LayerDependents } from '#contract/ground.ts';
 import type { ElevationCurves, LayerHistoryEntry } from '#contract/layers.ts';
 import type { Site } from '#contract/sites.ts';
+import { startTestComparison } from '#server/testing/comparisons.ts';
 import { makeTeam, type TestTeam } from '#server/testing/people.ts';
 import { openRun, specFor } from '#server/testing/runs.ts';
 import { geoTiff, makeSite, uploadLayer } from '#server/testing/sites.ts';
@@ -93,4 +94,19 @@ it('keeps curves of elevation whose points rise, and the levels of the tide', as
     { field: 'elevationCurves.vigour', message: expect.stringContaining('higher') as string },
   ]);
   await put({ ...none, vigour: [capacity[0]] }).expect(400);
+});
+
+it('keeps a replaced layer for the comparisons that stand on it', async () => {
+  const { modeller } = team.agents;
+  const first = await makeSite(modeller, team.teamId);
+  const comparison = await startTestComparison(modeller, first);
+  const cover = layerOf(first, 'cover');
+  await uploadLayer(modeller, first.id, 'cover', geoTiff(new Float32Array(24).fill(0.2))).expect(200);
+  const dependents = await modeller.get(`/api/sites/${first.id}/layers/${cover.id}/dependents`).expect(200);
+  expect(dependents.body).toMatchObject({ runs: 0, comparisons: 1 });
+  const refused = await modeller.delete(`/api/sites/${first.id}/layers/${cover.id}`).expect(409);
+  expect((refused.body as { detail: string }).detail).toMatch(/1 comparison that stands on this layer/);
+  await modeller.get(`/api/sites/${first.id}/layer-values/${cover.hash}`).expect(200);
+  await modeller.delete(`/api/sites/${first.id}/comparisons/${comparison.id}`).expect(204);
+  await modeller.delete(`/api/sites/${first.id}/layers/${cover.id}`).expect(200);
 });

@@ -1,5 +1,7 @@
 import { IsNull, Not } from 'typeorm';
 import type { Manager } from '#server/database/manager.ts';
+import { ComparisonLayerEntity } from '#server/database/entities/comparison-parts.ts';
+import { ComparisonEntity } from '#server/database/entities/comparison.ts';
 import { LayerEntity, type LayerRow } from '#server/database/entities/layer.ts';
 import { RunLayerEntity } from '#server/database/entities/run-layer.ts';
 import { RunEntity } from '#server/database/entities/run.ts';
@@ -49,6 +51,14 @@ export async function runsOnRaster(
   const [rows, runs] = await query.getManyAndCount();
   return { runs, runNames: rows.map((run) => run.name) };
 }
+
+/** How many comparisons of a site stand on a raster. */
+export const comparisonsOnRaster = (manager: Manager, siteId: string, hash: string): Promise<number> =>
+  manager
+    .createQueryBuilder(ComparisonEntity, 'comparison')
+    .innerJoin(ComparisonLayerEntity.options.name, 'used', 'used.comparisonId = comparison.id')
+    .where('comparison.siteId = :siteId AND used.hash = :hash', { siteId, hash })
+    .getCount();
 
 export const findLayerOfPart = (manager: Manager, siteId: string, part: string): Promise<LayerRow | null> =>
   manager.findOneBy(LayerEntity, { siteId, part, replacedAt: IsNull() });

@@ -18,6 +18,7 @@ import {
   deleteLayerRow,
   hasTwin,
   insertLayer,
+  comparisonsOnRaster,
   runsOnRaster,
   updateLayer,
 } from '../layer.repository.ts';
@@ -132,7 +133,7 @@ async function takeGrid(manager: Manager, siteId: string, grid: Grid): Promise<v
 }
 
 /**
- * Lets the new rasters take the place of the layers that they are. What no run stands on is forgotten: it can be made
+ * Lets the new rasters take the place of the layers that they are. What no run or comparison stands on is forgotten: it can be made
  * again from its file. Returns the hashes of the blobs that its rows referred to.
  */
 async function replaceAll(
@@ -144,7 +145,8 @@ async function replaceAll(
   const freed: string[] = [];
   for (const [i, layer] of layers.entries()) {
     const { runs } = await runsOnRaster(manager, layer.siteId, layer.hash);
-    if (runs > 0 && !(await hasTwin(manager, layer)))
+    const comparisons = await comparisonsOnRaster(manager, layer.siteId, layer.hash);
+    if (runs + comparisons > 0 && !(await hasTwin(manager, layer)))
       await updateLayer(manager, layer.id, { replacedAt: now });
     else {
       await deleteLayerRow(manager, layer.id);
