@@ -11,3 +11,6 @@ export function useMediaQuery(query: string): boolean {
     () => typeof window.matchMedia === 'function' && window.matchMedia(query).matches,
   );
 }
+
+/** Whether the window is as narrow as a phone: pictures then have fewer ticks and words of the same size. */
+export const useNarrow = (): boolean => useMediaQuery('(width < 48rem)');

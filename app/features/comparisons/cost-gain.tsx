@@ -4,7 +4,11 @@ import { formatNumber } from '#app/lib/formats.ts';
 import type { OutlookFigures } from './comparison-figures.ts';
 
 const [width, height] = [420, 230];
-const [left, right, top, bottom] = [44, 14, 14, 30];
+const [left, right, top, bottom] = [34, 14, 22, 30];
+/** room between the axis and what costs nothing */
+const inset = 16;
+/** so that words can be read across lines */
+const halo = 'stroke-ground [paint-order:stroke] [stroke-linejoin:round] [stroke-width:4px]';
 
 /** Cost against the years that an option recovers sooner than Wait, the efficient ones joined, and the budget line. */
 export function CostGain(props: { figures: OutlookFigures; currency: string; budget: number | null }) {
@@ -18,7 +22,7 @@ export function CostGain(props: { figures: OutlookFigures; currency: string; bud
   );
   const least = Math.min(0, ...gains, ...intervals.map((each) => each?.low ?? 0));
   const most = Math.max(1, ...gains, ...intervals.map((each) => each?.high ?? 0));
-  const x = (cost: number) => left + ((width - left - right) * cost) / mostCost;
+  const x = (cost: number) => left + inset + ((width - left - inset - right) * cost) / mostCost;
   const y = (gain: number) => top + ((height - top - bottom) * (most - gain)) / (most - least);
   return (
     <figure>
@@ -41,18 +45,13 @@ export function CostGain(props: { figures: OutlookFigures; currency: string; bud
         <text x={width - right} y={height - 6} textAnchor="end" className="fill-ink-2 text-axis">
           {formatMoney(mostCost, currency)}
         </text>
-        <text x={left} y={height - 6} className="fill-ink-2 text-axis">
+        <text x={left + inset} y={height - 6} textAnchor="middle" className="fill-ink-2 text-axis">
           {formatMoney(0, currency)}
         </text>
         {budget !== null && (
           <>
             <path d={`M${x(budget)} ${top}V${height - bottom}`} className="stroke-ink" strokeWidth={2.5} />
-            <text
-              x={x(budget) - 5}
-              y={height - bottom - 6}
-              textAnchor="end"
-              className="fill-ink text-axis font-semibold"
-            >
+            <text x={x(budget)} y={top - 6} textAnchor="middle" className="fill-ink text-axis font-semibold">
               budget
             </text>
           </>
@@ -86,7 +85,7 @@ export function CostGain(props: { figures: OutlookFigures; currency: string; bud
                 x={x(costs[i]) + (labelLeft ? -9 : 9)}
                 y={y(gains[i]) - 7}
                 textAnchor={labelLeft ? 'end' : 'start'}
-                className={`fill-ink text-axis ${efficient.includes(i) ? 'font-semibold' : ''}`}
+                className={`fill-ink text-axis ${halo} ${efficient.includes(i) ? 'font-semibold' : ''}`}
               >
                 {option.name.length > 26 ? `${option.name.slice(0, 25)}…` : option.name}
               </text>

@@ -2,11 +2,12 @@ import { useRef, type KeyboardEvent, type PointerEvent } from 'react';
 import type { ComparisonPlan } from '#contract/comparisons.ts';
 import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { formatArea } from '#app/lib/formats.ts';
+import { useNarrow } from '#app/lib/use-media-query.ts';
 import type { OutlookFigures } from './comparison-figures.ts';
 import { dashOf, widthOf } from './line-styles.ts';
 import { Key } from './recovery-curves.tsx';
 
-const [width, height] = [1120, 170];
+const height = 170;
 const [left, right, top, bottom] = [64, 24, 22, 26];
 
 /**
@@ -25,6 +26,8 @@ export function CoverLines(props: {
   const { plan, figures, year, onYear } = props;
   const { surveyYear, years } = plan.common;
   const kept = plan.mapYears;
+  const narrow = useNarrow();
+  const width = narrow ? 420 : 1120;
   const box = useRef<SVGSVGElement>(null);
   const options = figures?.options ?? [];
   const most = Math.max(1, ...options.flatMap(({ summary }) => [...(summary.fan[4] ?? [])]));
@@ -55,7 +58,8 @@ export function CoverLines(props: {
     event.preventDefault();
   };
   const pins = [...new Set(plan.options.flatMap(({ actions }) => actions.map((action) => action.year)))];
-  const ticks = Array.from({ length: 7 }, (_, i) => surveyYear + Math.round((i * years) / 6));
+  const between = narrow ? 3 : 6;
+  const ticks = Array.from({ length: between + 1 }, (_, i) => surveyYear + Math.round((i * years) / between));
   return (
     <figure className="pt-2">
       <div
@@ -82,7 +86,7 @@ export function CoverLines(props: {
             {formatArea(most)}
           </text>
           <text x={left - 8} y={y(0)} textAnchor="end" className="fill-ink-2 text-axis">
-            covered
+            0
           </text>
           {options.map(({ name, summary: { fan } }) =>
             fan.length === 5 ? (
@@ -132,7 +136,12 @@ export function CoverLines(props: {
             <>
               <path d={`M${x(year)} 8V${y(0) + 4}`} className="stroke-ink" strokeWidth={1.6} />
               <path d={`M${x(year) - 7} 3h14v7l-7 7-7-7z`} className="fill-ink" />
-              <text x={x(year) + 11} y={13} className="fill-ink text-axis font-semibold">
+              <text
+                x={x(year) + (x(year) > width - 60 ? -11 : 11)}
+                y={13}
+                textAnchor={x(year) > width - 60 ? 'end' : 'start'}
+                className="fill-ink text-axis font-semibold"
+              >
                 {year}
               </text>
             </>

@@ -14,9 +14,10 @@ export function OptionAnswers(props: {
   children: (option: number) => ReactNode;
 }) {
   const { options } = props.figures;
+  const columns = options.length === 3 ? 'xl:grid-cols-3' : options.length === 4 ? 'xl:grid-cols-4' : '';
   const most = Math.max(...options.map(({ summary }) => summary.beforeDrought.share?.estimate ?? 0));
   return (
-    <div className="grid gap-x-8 gap-y-6 py-4 md:grid-cols-2 xl:grid-cols-3">
+    <div className={`grid gap-x-8 gap-y-6 py-4 md:grid-cols-2 ${columns}`}>
       {options.map((option, i) => {
         const { share } = option.summary.beforeDrought;
         if (!share) return null;
@@ -26,7 +27,7 @@ export function OptionAnswers(props: {
             <div className="flex items-baseline justify-between gap-3">
               <h2 className="flex min-w-0 items-baseline gap-2 text-lead font-bold">
                 {!option.wait && <FlagSymbol />}
-                <span className="truncate">{option.name}</span>
+                <span className="min-w-0 break-words">{option.name}</span>
               </h2>
               {option.cost !== null && props.currency && (
                 <span className="tabular-nums">{formatMoney(option.cost, props.currency)}</span>

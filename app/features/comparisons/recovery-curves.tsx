@@ -1,10 +1,12 @@
 import type { CurvePoint } from '#sim-core/index.ts';
 import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { formatNumber } from '#app/lib/formats.ts';
+import { useNarrow } from '#app/lib/use-media-query.ts';
 import { dashOf, widthOf } from './line-styles.ts';
 
-const [width, height] = [560, 230];
-const [left, right, top, bottom] = [52, 26, 8, 46];
+const [left, right, top, plot, foot] = [52, 26, 8, 176, 30];
+/** height of a line of the numbers still open */
+const openRow = 14;
 
 export interface Curve {
   readonly name: string;
@@ -19,8 +21,10 @@ export interface Curve {
  */
 export function RecoveryCurves(props: { curves: readonly Curve[]; surveyYear: number; years: number }) {
   const { curves, surveyYear, years } = props;
+  const width = useNarrow() ? 400 : 560;
+  const height = top + plot + foot + openRow * curves.length;
   const x = (time: number) => left + ((width - left - right) * time) / years;
-  const y = (share: number) => top + (height - top - bottom) * (1 - share);
+  const y = (share: number) => top + plot * (1 - share);
   const steps = (curve: readonly CurvePoint[], of: (point: CurvePoint) => number) => {
     let d = `M${x(0)} ${y(0)}`;
     for (const point of curve) d += `H${x(point.time).toFixed(1)}V${y(1 - of(point)).toFixed(1)}`;
@@ -84,11 +88,24 @@ export function RecoveryCurves(props: { curves: readonly Curve[]; surveyYear: nu
             </text>
           </g>
         ))}
-        {ticks.map((time) => (
-          <text key={time} x={x(time)} y={height - 8} textAnchor="middle" className="fill-ink-2 text-axis">
-            {curves.map(({ curve }) => Math.round((curve[0]?.atRisk ?? 0) * openAt(curve, time))).join(' / ')}
-          </text>
-        ))}
+        {curves.map(({ name, curve, wait }, i) => {
+          const at = y(0) + foot + openRow * (i + 0.7);
+          return (
+            <g key={name}>
+              <path
+                d={`M4 ${at - 4}H34`}
+                className="stroke-ink"
+                strokeWidth={widthOf(wait)}
+                strokeDasharray={dashOf(i)}
+              />
+              {ticks.map((time) => (
+                <text key={time} x={x(time)} y={at} textAnchor="middle" className="fill-ink-2 text-axis">
+                  {Math.round((curve[0]?.atRisk ?? 0) * openAt(curve, time))}
+                </text>
+              ))}
+            </g>
+          );
+        })}
       </svg>
       <Key entries={curves} />
       <ReadAsTable

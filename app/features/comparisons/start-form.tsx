@@ -138,7 +138,7 @@ export function ComparisonStartForm(props: {
       }}
     >
       <fieldset>
-        <legend className="text-lead">Compare</legend>
+        <legend className="text-lead">Compare these options</legend>
         <Ticks
           entries={options.map(({ id, name: words }) => ({ key: id, label: words, on: !left.has(id) }))}
           onToggle={(id) => setLeft(toggle(left, id))}
@@ -175,7 +175,7 @@ export function ComparisonStartForm(props: {
             </option>
           ))}
         </BlankSelect>
-        <span>, from the seed</span>
+        <span>from the seed</span>
         <Blank
           label="Seed, from which the luck that all options share follows"
           characters={Math.max(8, seed.length)}
@@ -187,7 +187,7 @@ export function ComparisonStartForm(props: {
         <WordButton lined onClick={() => setSeed(props.drawSeed())}>
           another seed
         </WordButton>
-        <span>; a year at or below</span>
+        <span>A year at or below</span>
         <Blank
           label="Index at or below which a year counts as the next drought"
           inputMode="decimal"

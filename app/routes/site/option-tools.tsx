@@ -3,11 +3,8 @@ import type { Option } from '#contract/options.ts';
 import { WordButton } from '#app/components/word-button.tsx';
 import type { BoardTool } from '#app/features/options/board/board-tools.ts';
 import { ToolChoice, ToolList } from '#app/features/options/board/tool-choice.tsx';
-import { useMediaQuery } from '#app/lib/use-media-query.ts';
+import { useNarrow } from '#app/lib/use-media-query.ts';
 import type { DraftAction, OptionDraft } from '#app/features/options/option-draft.ts';
-
-/** Whether the page is as narrow as a phone. */
-const useNarrow = () => useMediaQuery('(width < 48rem)');
 
 /** Tools in words, and the sentence that says what the one in use does. */
 export function OptionTools(props: {
