@@ -70,6 +70,6 @@ export const demoComparison = {
   /** by how much the index lies lower in the drier outlook */
   drier: 0.5,
   /** closer where growth still differs between options */
-  mapYears: [2029, 2032, 2036, 2040, 2045, 2050, 2055, 2060],
+  mapYears: [2026, 2029, 2032, 2036, 2040, 2045, 2050, 2055, 2060],
   replicates: 24,
 } as const;

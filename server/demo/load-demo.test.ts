@@ -145,7 +145,7 @@ describe('the comparison of the demo', () => {
     ]);
     expect(comparison.plan.outlooks.map(({ name }) => name)).toEqual(['The outlook', 'Drier']);
     expect(comparison.plan.outlooks[0].droughtIndex).toEqual(site.outlook.drawn);
-    expect(comparison.events.map(({ what }) => what)).toEqual(['started', 'ended: all replicates']);
+    expect(comparison.events.map(({ what }) => what)).toEqual(['started', 'ended, as all futures were run']);
     expect([told.at(-1), told.toSorted((a, b) => a - b)]).toEqual([8 * replicates, told]);
   });
 

@@ -10,13 +10,16 @@ const bytesOfCell = 6;
 const mostMapYears = 60;
 
 /**
- * Years of which maps are kept: all after the survey if they fit into memory, else as many as do, evenly spread, the last
- * one among them.
+ * Years of which maps are kept: the survey's, so that what stood then is told from what closed later, and all after it if
+ * they fit into memory, else as many as do, evenly spread, the last one among them.
  */
 export function mapYears(surveyYear: number, years: number, cells: number, ensembles: number): number[] {
   const fit = Math.floor(mapBudget / (cells * bytesOfCell * ensembles));
-  const count = Math.max(1, Math.min(years, mostMapYears, fit));
-  return Array.from({ length: count }, (_, i) => surveyYear + Math.round(((i + 1) * years) / count));
+  const count = Math.max(1, Math.min(years, mostMapYears - 1, fit - 1));
+  return [
+    surveyYear,
+    ...Array.from({ length: count }, (_, i) => surveyYear + Math.round(((i + 1) * years) / count)),
+  ];
 }
 
 const held = (index: number) => Math.round(Math.min(wettest, Math.max(driest, index)) * 100) / 100;

@@ -149,7 +149,10 @@ export function CoverLines(props: {
         </svg>
       </div>
       <figcaption className="flex flex-wrap items-center gap-x-6 text-note text-ink-2">
-        <span>Covered area: median of the futures; bands hold the middle half</span>
+        <span>
+          Covered area: median of the futures; bands hold the middle half. Maps are kept of{' '}
+          {kept.length > years ? 'every year' : `${kept.length} of ${years + 1} years`}.
+        </span>
         <Key entries={options} />
       </figcaption>
       {options.length > 0 && (

@@ -13,6 +13,7 @@ function show(changes: Partial<Comparison> = {}, props: { mayDecide?: boolean; e
     <DecisionBox
       comparison={{ ...smallComparison(8), done: 8, ...changes }}
       mayDecide
+      working={false}
       busy={false}
       error={undefined}
       onDecide={onDecide}

@@ -15,6 +15,8 @@ export interface DecisionDraft {
 export function DecisionBox(props: {
   comparison: Comparison;
   mayDecide: boolean;
+  /** futures are being run, so deciding waits */
+  working: boolean;
   busy: boolean;
   error: unknown;
   onDecide: (draft: DecisionDraft) => void;
@@ -50,7 +52,11 @@ export function DecisionBox(props: {
         <span className="text-note text-ink-2">for the brief; it freezes this comparison</span>
       </div>
       {!mayDecide ? (
-        <p className="mt-1 text-ink-2">Still open. Managers and admins of the team decide.</p>
+        <p className="mt-1 text-ink-2">
+          {props.working
+            ? 'Still open. Pause or stop the comparison to decide on what is done.'
+            : 'Still open. Managers and admins of the team decide.'}
+        </p>
       ) : (
         <form
           aria-label="Record a decision"

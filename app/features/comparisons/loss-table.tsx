@@ -18,10 +18,10 @@ export function LossTable({ figures: { options, replicates } }: { figures: Outlo
     <section aria-label="Losses">
       <div className="flex flex-wrap justify-between gap-x-4 pb-1">
         <b>Losses</b>
-        <span className="text-note text-ink-2">covered area in an average future</span>
+        <span className="text-note text-ink-2">summed over all years of an average future</span>
       </div>
       <Table
-        caption="Covered area lost in an average future, by cause, and futures in which what had recovered was lost again"
+        caption="Covered area lost over all years of an average future, by cause, and futures in which what had recovered was lost again"
         rows={options}
         rowKey={({ name }) => name}
         columns={[

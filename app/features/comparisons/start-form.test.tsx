@@ -76,7 +76,7 @@ describe('the form that starts a comparison', () => {
       options: ids.map((optionId) => ({ optionId, cost: null })),
       replicates: 40,
       stop: { atLeast: 20, halfWidth: 0.05 },
-      mapYears: [2027, 2028, 2029, 2030, 2031],
+      mapYears: [2026, 2027, 2028, 2029, 2030, 2031],
       common: { seed: 'a seed', mode: 'counts', surveyYear: 2026, years: 5 },
     });
     expect(body.outlooks).toEqual([

@@ -236,7 +236,7 @@ export function ComparisonStartForm(props: {
           {formatCount(runs)} runs on {formatNumber(workers, 0)} cores:{' '}
           {seconds < 10 ? 'some seconds' : `about ${formatDuration(seconds)}`} on this browser. Options share
           weather and luck, so their difference is what the works do. Maps of{' '}
-          {kept === years ? 'every year' : `${kept} of ${years} years`} are kept.
+          {kept === years + 1 ? 'every year' : `${kept} of ${years} years`} are kept.
         </span>
       </div>
     </form>

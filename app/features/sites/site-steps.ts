@@ -109,5 +109,6 @@ function compareState(known: readonly Pick<ComparisonSummary, 'status' | 'decisi
   if (known.length === 0) return ['none yet', 0];
   const open = known.filter(({ decision }) => decision === null).length;
   if (open < known.length && open === 0) return [known.length === 1 ? 'decided' : 'all decided', 1];
-  return [open === 1 ? 'decision still open' : `${open} decisions open`, 0.5];
+  if (open === 1) return [known.length === 1 ? 'decision still open' : `1 of ${known.length} undecided`, 0.5];
+  return [`${open} decisions open`, 0.5];
 }

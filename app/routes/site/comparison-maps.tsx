@@ -48,7 +48,7 @@ export function ComparisonMaps(props: {
     middle,
   );
   const [view, setView] = useState<MapView>();
-  const [chosen, setChosen] = useState<readonly number[]>(() => plan.options.map((_, i) => i).slice(0, 3));
+  const [chosen, setChosen] = useState<readonly number[]>(() => plan.options.map((_, i) => i).slice(0, 4));
   const [swipe, setSwipe] = useState<number>();
   const capacity = useComparisonCapacity(comparison);
   const panels = chosen.length > 0 ? chosen : [0];
@@ -105,6 +105,10 @@ export function ComparisonMaps(props: {
       </div>
       {swipe !== undefined && panels.length > 1 ? (
         <div>
+          <p className="flex justify-between gap-4 pb-1 text-[13px] font-semibold">
+            <span>{plan.options[panels[0]].name}</span>
+            <span className="text-right">{plan.options[panels[1]].name}</span>
+          </p>
           <div className="relative h-[44dvh] min-h-[280px] overflow-hidden">
             <div className="absolute inset-0">{map(panels[0], false)}</div>
             <div className="absolute inset-0" style={{ clipPath: `inset(0 0 0 ${swipe}%)` }}>

@@ -9,7 +9,7 @@ import { sayDone } from '#app/components/toast.tsx';
 import { WordButton, WordLink } from '#app/components/word-button.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
 import { goOnInCopy, recordDecision, reopenComparison } from '#app/features/comparisons/change-comparison.ts';
-import { comparisonFigures } from '#app/features/comparisons/comparison-figures.ts';
+import { useComparisonFigures } from '#app/features/comparisons/use-comparison-figures.ts';
 import { isWorking, type LiveComparison } from '#app/features/comparisons/comparison-manager.ts';
 import { standingWords } from '#app/features/comparisons/comparison-words.ts';
 import { CostGain } from '#app/features/comparisons/cost-gain.tsx';
@@ -29,7 +29,7 @@ import { costsQuery } from '#app/features/options/costs/site-costs.ts';
 import { formatDuration } from '#app/lib/formats.ts';
 import { useThrottled } from '#app/lib/use-throttled.ts';
 import { ComparisonMaps } from './comparison-maps.tsx';
-import { useWorkOnComparison, wasAtWork } from './comparison-ground.ts';
+import { forgetWork, useWorkOnComparison, wasAtWork } from './comparison-ground.ts';
 import { FutureAlone } from './future-alone.tsx';
 import { SitePage } from './site-page.tsx';
 import { useSite } from './use-site.ts';
@@ -70,12 +70,7 @@ export function ComparisonView({
     [atHand, stored.data],
   );
   const version = useThrottled(live?.version ?? 0, 1500);
-  const figures = useMemo(
-    () => known && comparisonFigures(plan, known, comparison.id),
-    // The maps of records are filled in place: the version says when.
-    // eslint-disable-next-line react-hooks/exhaustive-deps
-    [plan, known, comparison.id, version],
-  );
+  const figures = useComparisonFigures(plan, known, comparison.id, version);
   const counted = { ...comparison, done: Math.max(comparison.done, figures?.outlooks[0]?.replicates ?? 0) };
   const shown = figures?.outlooks[Math.min(outlook, plan.outlooks.length - 1)];
 
@@ -128,7 +123,14 @@ export function ComparisonView({
             secondsLeft={left}
           />
           <div className="mt-2 flex flex-wrap items-center gap-x-5 gap-y-1">
-            <WordButton lined onClick={() => comparisonManager.pause(comparison.id)}>
+            <WordButton
+              lined
+              onClick={() => {
+                // A pause is meant: a reload must not go on by itself.
+                forgetWork(comparison.id);
+                comparisonManager.pause(comparison.id);
+              }}
+            >
               Pause
             </WordButton>
             <WordButton lined onClick={() => comparisonManager.stop(comparison.id)}>
@@ -228,6 +230,7 @@ export function ComparisonView({
               <DecisionBox
                 comparison={counted}
                 mayDecide={(role === 'manager' || role === 'admin') && !working}
+                working={working && (role === 'manager' || role === 'admin')}
                 busy={decide.isPending}
                 error={decide.error}
                 onDecide={(draft) => decide.mutate(draft)}

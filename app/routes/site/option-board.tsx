@@ -185,7 +185,7 @@ export function OptionBoard(props: {
           }
           meters={
             <>
-              <OptionMeters works={all} view={view} possible={start !== undefined} />
+              <OptionMeters works={all} faint={preview.length} view={view} possible={start !== undefined} />
               {editable && (
                 <SuggestPanel
                   {...{ suggesting }}

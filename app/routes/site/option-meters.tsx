@@ -4,6 +4,7 @@ import type { SiteCosts } from '#contract/costs.ts';
 import type { Work } from '#contract/works.ts';
 import { costsOf } from '#sim-core/plan/costs.ts';
 import type { ClosingSummary } from '#sim-core/plan/closing-tally.ts';
+import { formatCounted } from '#app/lib/formats.ts';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { costsQuery } from '#app/features/options/costs/site-costs.ts';
 import { ClosingMeter } from '#app/features/options/quick-look/closing-meter.tsx';
@@ -22,6 +23,8 @@ const closedBy = (summary: ClosingSummary | undefined) => summary?.closedBy.at(-
 /** What an option would cost and when the ground would close with it, while it is drawn. */
 export function OptionMeters(props: {
   works: readonly Work[];
+  /** how many of the works are only shown faint, not placed yet */
+  faint: number;
   view: QuickLookView;
   /** the ground is complete, so that a look comes */
   possible: boolean;
@@ -38,6 +41,12 @@ export function OptionMeters(props: {
   const [withWorks, wait] = [closedBy(view.look?.summary), closedBy(view.wait)];
   return (
     <>
+      {props.faint > 0 && (
+        <p role="status" className="text-note font-semibold">
+          With the {formatCounted(props.faint, 'faint work')} that {props.faint === 1 ? 'is' : 'are'} not
+          placed yet:
+        </p>
+      )}
       {sums && costs && (
         <CostMeter
           costs={sums}

@@ -39,6 +39,13 @@ type StartInput = z.output<typeof contract.startComparison.body>;
 type DecisionInput = z.output<typeof contract.decide.body>;
 type Ending = Comparison['ending'];
 
+const endingWords: Record<NonNullable<Ending>, string> = {
+  'all replicates': 'ended, as all futures were run',
+  'chances known': 'ended early, as every chance was known closely enough',
+  'rank settled': 'ended early, as the best led for sure',
+  'stopped by hand': 'stopped by hand',
+};
+
 /**
  * Registers a comparison on the grid and with the works that the site has now.
  * @throws ProblemError at each field that makes one of its runs impossible
@@ -196,7 +203,7 @@ export const endComparison = (
 ): Promise<Comparison> =>
   change(services, address, by, () => ({
     set: { status: ending === 'stopped by hand' ? 'stopped' : 'finished', ending },
-    what: `ended: ${ending}`,
+    what: endingWords[ending],
   }));
 
 export const resumeComparison = (
@@ -252,8 +259,8 @@ export const copyComparison = (
       id: randomUUID(),
       name,
       replicates,
-      status: 'stopped',
-      ending: 'stopped by hand',
+      status: original.status === 'finished' ? 'finished' : 'stopped',
+      ending: original.ending ?? 'stopped by hand',
       decision: null,
       startedAt: at,
       startedBy: by,

@@ -162,7 +162,7 @@ describe('a comparison', () => {
     await put(comparison, 0, [replicateOf(19)]);
     expect((await get(comparison)).events.map(({ what }) => what)).toEqual([
       'started',
-      'ended: all replicates',
+      'ended, as all futures were run',
       'resumed, for 20 replicates of each option',
     ]);
   });

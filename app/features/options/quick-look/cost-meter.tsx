@@ -5,6 +5,9 @@ import { Table } from '#app/components/table.tsx';
 import { BudgetRule } from './budget-rule.tsx';
 import { formatMoney } from '#app/lib/format-money.ts';
 
+/** m² below which a cost per hectare would say nothing. */
+const leastArea = 100;
+
 /** What the works cost: in all against the budget, by year, and for each hectare that they bring back. */
 export function CostMeter(props: {
   costs: Costs;
@@ -22,11 +25,13 @@ export function CostMeter(props: {
       <BudgetRule total={costs.total} budget={budget} currency={costs.currency} />
       <p className="mt-1 text-note text-ink-2">
         {costs.presentValue !== costs.total && `Worth ${money(costs.presentValue)} in today’s money. `}
-        {each !== undefined && closed
-          ? `${money(each)} a hectare: ${formatArea(closed.works - closed.wait)} close by ${lastYear} that would not under Wait.`
-          : closed && costs.total > 0
-            ? `By ${lastYear} no more ground closes than under Wait, so there is no cost per hectare.`
-            : ''}
+        {each !== undefined && closed && closed.works - closed.wait < leastArea
+          ? `By ${lastYear} hardly more ground closes than under Wait: too little to price by the hectare.`
+          : each !== undefined && closed
+            ? `${money(each)} a hectare: ${formatArea(closed.works - closed.wait)} close by ${lastYear} that would not under Wait.`
+            : closed && costs.total > 0
+              ? `By ${lastYear} no more ground closes than under Wait, so there is no cost per hectare.`
+              : ''}
       </p>
       {years.length > 0 && (
         <details className="mt-1 text-note">

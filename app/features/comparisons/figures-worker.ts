@@ -1,0 +1,8 @@
+import { expose } from 'comlink';
+import { comparisonFigures } from './comparison-figures.ts';
+
+/** Bootstraps take long where there are many futures, so the page has them worked out here. */
+const face = { figures: comparisonFigures };
+export type FiguresFace = typeof face;
+
+expose(face);
