@@ -1,4 +1,5 @@
 // npm test: type-check, lint, unit and API tests, browser journeys. All parts run even when one fails.
+import { spawn } from 'node:child_process';
 import { mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { ensureBuilt, ensureInstalled, ensureKernel, ensureTestTools, root, run, say } from './lib/shell.mjs';
@@ -12,12 +13,34 @@ rmSync(reports, { recursive: true, force: true });
 mkdirSync(reports, { recursive: true });
 const bin = (name) => join(root, 'node_modules/.bin', name);
 
-/** A command that passes or fails as one. */
-const check = (name, command, args) => {
-  say(`\n── ${name}`);
-  const passed = run(bin(command), args) === 0;
-  return { name, passed: passed ? 1 : 0, failed: passed ? 0 : 1, skipped: 0 };
-};
+/** A command that passes or fails as one; what it says is kept until its turn, as others run beside it. */
+const check = (name, command, args) =>
+  new Promise((done) => {
+    const child = spawn(bin(command), args, { cwd: root, stdio: ['ignore', 'pipe', 'pipe'] });
+    let said = '';
+    for (const stream of [child.stdout, child.stderr])
+      stream.on('data', (piece) => {
+        said += piece;
+      });
+    const end = (passed) => done({ name, said, passed: passed ? 1 : 0, failed: passed ? 0 : 1, skipped: 0 });
+    child.on('error', (error) => {
+      said += `${command}: ${error.message}`;
+      end(false);
+    });
+    child.on('close', (code) => end(code === 0));
+  });
+
+/** Checks that know nothing of each other, side by side; each is reported as a whole. */
+async function checks(...started) {
+  const results = [];
+  for (const each of started) {
+    const { said, ...result } = await each;
+    say(`\n── ${result.name}`);
+    if (said.trim()) say(said.trimEnd());
+    results.push(result);
+  }
+  return results;
+}
 
 /** A test runner that leaves a JSON report; a run without a report, or without a test, counts as one failure. */
 const suite = (name, command, args, env, count) => {
@@ -33,10 +56,12 @@ const suite = (name, command, args, env, count) => {
   return { name, ...counts };
 };
 
-const results = [
+const results = await checks(
   check('types', 'tsc', ['-b']),
   check('lint', 'eslint', ['-c', '.config/eslint.config.js', '--max-warnings', '0', '.']),
   check('format', 'prettier', ['--config', '.config/prettier.json', '--check', '--log-level', 'warn', '.']),
+);
+results.push(
   suite(
     'unit',
     'vitest',
@@ -48,7 +73,7 @@ const results = [
       skipped: report.numPendingTests,
     }),
   ),
-];
+);
 ensureBuilt();
 results.push(
   suite(
