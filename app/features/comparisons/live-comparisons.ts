@@ -1,4 +1,5 @@
 import { useSyncExternalStore } from 'react';
+import { askBeforeClosing } from '#app/lib/ask-before-closing.ts';
 import { waitByClock } from '#app/lib/save-with-retry.ts';
 import { createMapsDesk } from '#app/workers/ensemble-maps-client.ts';
 import { createReplicatePool } from '#app/workers/replicate-pool.ts';
@@ -12,17 +13,10 @@ export const comparisonManager = createComparisonManager({
   createDesk: createMapsDesk,
   wait: waitByClock,
   now: () => performance.now(),
-  onChange: warnBeforeClosing,
+  onChange: (active) => {
+    askBeforeClosing('comparisons', active);
+  },
 });
-
-/** Closing the tab would pause the work: the browser asks first, as long as there is any. */
-function warnBeforeClosing(active: number): void {
-  if (active > 0) window.addEventListener('beforeunload', ask);
-  else window.removeEventListener('beforeunload', ask);
-}
-const ask = (event: BeforeUnloadEvent) => {
-  event.preventDefault();
-};
 
 /** A comparison that this tab works on, as it proceeds; undefined for all others. */
 export const useLiveComparison = (comparisonId: string): LiveComparison | undefined =>

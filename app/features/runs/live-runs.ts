@@ -8,6 +8,7 @@ import { createFrameCache } from './frame-cache.ts';
 import { keepPace } from './run-pace.ts';
 import { createRunManager, type LiveRun } from './run-manager.ts';
 import { runServer } from './run-server.ts';
+import { askBeforeClosing } from '#app/lib/ask-before-closing.ts';
 import { waitByClock } from '#app/lib/save-with-retry.ts';
 
 /** Bytes of frames that are kept at hand: all of a small site's run, a handful at 4,000 × 4,000 cells. */
@@ -37,17 +38,10 @@ export const runManager = createRunManager({
   onFrame: (runId, year, frame) => {
     runFrames.put(runId, year, frame);
   },
-  onChange: warnBeforeClosing,
+  onChange: (active) => {
+    askBeforeClosing('runs', active);
+  },
 });
-
-/** Closing the tab would end the work: the browser asks first, as long as there is any. */
-function warnBeforeClosing(active: number): void {
-  if (active > 0) window.addEventListener('beforeunload', ask);
-  else window.removeEventListener('beforeunload', ask);
-}
-const ask = (event: BeforeUnloadEvent) => {
-  event.preventDefault();
-};
 
 /** A run that this tab works on, as it proceeds; undefined for all others. */
 export const useLiveRun = (runId: string): LiveRun | undefined =>
