@@ -21,15 +21,6 @@ export function SurvivorSymbol() {
   );
 }
 
-/** Wait: an option without works. */
-export function WaitSymbol() {
-  return (
-    <svg width="14" height="16" aria-hidden="true" className={inLine}>
-      <circle cx="7" cy="8.5" r="4.2" strokeWidth="1.5" className="fill-none stroke-ink" />
-    </svg>
-  );
-}
-
 /** A planting: one tick is one clump of plants. */
 export function PlantingSymbol() {
   return (

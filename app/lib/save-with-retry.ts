@@ -53,3 +53,11 @@ export function waitByClock(milliseconds: number, signal: AbortSignal): Promise<
     else signal.addEventListener('abort', stop, { once: true });
   });
 }
+
+/** Why saving waits, for people. @param work what waits: `the run` */
+export function troubleWords(error: ProblemError, work: string): string {
+  if (error.status === 0)
+    return `The server cannot be reached; ${work} waits and saves on as soon as it can.`;
+  if (error.status === 401) return `You are signed out; sign in again and ${work} saves on.`;
+  return `${error.message} ${work[0].toUpperCase()}${work.slice(1)} waits and tries again.`;
+}

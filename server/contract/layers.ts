@@ -128,7 +128,6 @@ export const layerSourceFileSchema = storedSourceSchema.extend({
   uploadedAt: instant,
   uploadedBy: z.string(),
 });
-export type LayerSourceFile = z.infer<typeof layerSourceFileSchema>;
 
 /** What was done to bring the file onto the working grid. */
 export const alignmentSchema = z.object({

@@ -56,7 +56,6 @@ export const laidSchema = z.strictObject({
     .record(z.string().min(1).max(40), z.union([z.number(), z.string().max(200), z.boolean()]))
     .refine((values) => Object.keys(values).length <= 40, 'At most 40 parameters'),
 });
-export type Laid = z.infer<typeof laidSchema>;
 
 /** Works that were laid together; each of them names it by `set`. */
 export const workSetSchema = z.strictObject({

@@ -16,9 +16,15 @@ export class ProblemError extends Error {
   }
 }
 
-/** A refusal at one field of the body, named as in the schema: `works.3.x`. */
+/** A refusal at fields of the body, named as in the schema: `works.3.x`. */
+export const refuseFields = (fields: NonNullable<ProblemExtra['fields']>): ProblemError =>
+  new ProblemError('invalid-request', fields.map(({ field, message }) => `${field}: ${message}`).join('. '), {
+    fields,
+  });
+
+/** A refusal at one field of the body. */
 export const fieldProblem = (field: string, message: string): ProblemError =>
-  new ProblemError('invalid-request', `${field}: ${message}`, { fields: [{ field, message }] });
+  refuseFields([{ field, message }]);
 
 /** What is missing and what another team owns look alike. */
 export const notFound = (): ProblemError =>

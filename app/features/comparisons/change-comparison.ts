@@ -1,8 +1,6 @@
 import {
   copyComparison,
   decide,
-  deleteComparison,
-  renameComparison,
   resumeComparison,
   startComparison,
   type Comparison,
@@ -18,9 +16,6 @@ export type StartBody = z.input<typeof startComparison.body>;
 export const registerComparison = (siteId: string, body: StartBody): Promise<Comparison> =>
   callEndpoint(startComparison, { params: { siteId }, body });
 
-export const giveComparisonName = (address: Address, name: string): Promise<Comparison> =>
-  callEndpoint(renameComparison, { params: paramsOf(address), body: { name } });
-
 export const reopenComparison = (address: Address, replicates: number): Promise<Comparison> =>
   callEndpoint(resumeComparison, { params: paramsOf(address), body: { replicates } });
 
@@ -31,7 +26,3 @@ export const recordDecision = (
   address: Address,
   decision: { optionId: string; reason: string; reservations: string },
 ): Promise<Comparison> => callEndpoint(decide, { params: paramsOf(address), body: decision });
-
-export async function removeComparison(address: Address): Promise<void> {
-  await callEndpoint(deleteComparison, { params: paramsOf(address) });
-}

@@ -3,8 +3,9 @@ import { recordReplicate, RunProblem } from '#sim-core/index.ts';
 import type { Keep, ReplicateOutcome } from '#sim-core/ensemble/replicate.ts';
 import type { Runner, RunnerJob, RunnerProgress } from '#sim-core/ensemble/runner.ts';
 import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
-import { errorText, type ProblemError } from '#app/lib/api-client.ts';
-import { saveWithRetry } from '#app/lib/save-with-retry.ts';
+import { errorText } from '#app/lib/api-client.ts';
+import { createLiveList } from '#app/lib/live-list.ts';
+import { saveWithRetry, troubleWords } from '#app/lib/save-with-retry.ts';
 import { mapNames } from '#rasters/ensemble/ensemble-maps.ts';
 import type { EnsembleMapsDesk } from '#app/workers/ensemble-maps-client.ts';
 import type { PackedLayers, RunInput } from '#app/workers/run-loop.ts';
@@ -96,18 +97,12 @@ interface Job {
 export function createComparisonManager(parts: ComparisonManagerParts): ComparisonManager {
   const { server, createPool, createDesk, wait, now } = parts;
   const jobs = new Map<string, Job>();
-  const listeners = new Set<() => void>();
-  let lives: readonly LiveComparison[] = [];
-
-  const publish = (next: readonly LiveComparison[]) => {
-    lives = next;
-    parts.onChange?.(lives.filter(isWorking).length);
-    listeners.forEach((listener) => listener());
-  };
-  const get = (id: string) => lives.find((live) => live.comparisonId === id);
-  const change = (id: string, patch: Partial<LiveComparison>) => {
-    publish(lives.map((live) => (live.comparisonId === id ? { ...live, ...patch } : live)));
-  };
+  const lives = createLiveList<LiveComparison>({
+    idOf: (live) => live.comparisonId,
+    isAtWork: isWorking,
+    onChange: parts.onChange,
+  });
+  const { get, change } = lives;
 
   function start(work: WorkOn): void {
     const { id, siteId, name, plan } = work.comparison;
@@ -127,7 +122,7 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
       trouble: undefined,
       error: undefined,
     };
-    publish([...lives.filter((other) => other.comparisonId !== id), live]);
+    lives.put(live);
     run(job).catch((error: unknown) => {
       fail(job, error);
     });
@@ -194,7 +189,7 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
       change(id, { version: get(id)!.version + 1 });
       if (now() - stateAt > stateEvery) {
         stateAt = now();
-        await saveStates();
+        await saveCounts([]);
       }
       if (plan.stop && now() - lookedAt > lookEvery) {
         lookedAt = now();
@@ -208,25 +203,21 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
     /** what is being taken in; it is seen through even when the runs are cancelled meanwhile */
     let takingIn = Promise.resolve();
     const onResult = (outcome: ReplicateOutcome, index: number) => (takingIn = takeIn(outcome, index));
-    const saveStates = async () => {
+    /** Stores the counts behind the maps of every ensemble, and the maps themselves where `names` are given. */
+    const saveCounts = async (names: readonly string[]) => {
       for (const { option, outlook } of comparison.ensembles) {
-        const { state, replicates } = await desk.state(ensembleKey(option, outlook));
-        if (replicates > 0)
-          await save(() => server.putMapsState(addressOf(option, outlook), state, replicates, signal));
-      }
-    };
-    const saveMaps = async () => {
-      for (const { option, outlook } of comparison.ensembles) {
-        const key = ensembleKey(option, outlook);
-        const { replicates } = await desk.state(key);
+        const [key, address] = [ensembleKey(option, outlook), addressOf(option, outlook)];
+        const { state, replicates } = await desk.state(key);
         if (replicates === 0) continue;
-        for (const name of mapNames(plan.mapYears)) {
+        await save(() => server.putMapsState(address, state, replicates, signal));
+        for (const name of names) {
           const packed = await desk.packedMap(key, name);
-          await save(() => server.putMap(addressOf(option, outlook), name, packed, replicates, signal));
+          await save(() => server.putMap(address, name, packed, replicates, signal));
         }
       }
     };
 
+    let cancelled = false;
     if (tasks.length > 0 && job.asked === undefined) {
       const pool = createPool({ spec: specOf(comparison, tasks[0]), grid, ground });
       try {
@@ -248,17 +239,19 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
       } catch (error) {
         // Stopped on purpose: by hand, or because enough is known.
         if (!(error instanceof Error && error.name === 'RunsCancelled')) throw error;
-        if (job.asked) ending = job.asked === 'stop' ? 'stopped by hand' : undefined;
+        cancelled = true;
       } finally {
         pool.close();
       }
-    } else if (job.asked) ending = job.asked === 'stop' ? 'stopped by hand' : undefined;
+    }
+    // Who asked for an end when all was done already gets the end that it came to.
+    if (job.asked && (cancelled || job.running === undefined))
+      ending = job.asked === 'stop' ? 'stopped by hand' : undefined;
 
     await takingIn;
     change(id, { phase: 'saving' });
     await pieces.flush();
-    await saveStates();
-    await saveMaps();
+    await saveCounts(mapNames(plan.mapYears));
     const why = ending;
     onRecord(await save(() => (why ? server.end(siteId, id, why) : server.comparison(siteId, id, signal))));
     change(id, { phase: why ? 'done' : 'paused' });
@@ -271,7 +264,7 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
         wait,
         signal: job.abort.signal,
         onTrouble: (error) => {
-          change(job.work.comparison.id, { trouble: error && troubleWords(error) });
+          change(job.work.comparison.id, { trouble: error && troubleWords(error, 'the comparison') });
         },
       });
 
@@ -291,11 +284,8 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
   };
 
   return {
-    subscribe: (listener) => {
-      listeners.add(listener);
-      return () => listeners.delete(listener);
-    },
-    list: () => lives,
+    subscribe: lives.subscribe,
+    list: lives.list,
     get,
     start,
     pause: (id) => {
@@ -334,11 +324,4 @@ function createPieces(
       for (const key of [...waiting.keys()]) await hand(key);
     },
   };
-}
-
-function troubleWords(error: ProblemError): string {
-  if (error.status === 0)
-    return 'The server cannot be reached; the comparison waits and saves on as soon as it can.';
-  if (error.status === 401) return 'You are signed out; sign in again and the comparison saves on.';
-  return `${error.message} The comparison waits and tries again.`;
 }

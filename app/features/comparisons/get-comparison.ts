@@ -100,11 +100,3 @@ export function keepComparison(queryClient: QueryClient, comparison: Comparison)
   queryClient.setQueryData<Comparison>(comparisonKey(comparison.siteId, comparison.id), comparison);
   void queryClient.invalidateQueries({ queryKey: [...siteKey(comparison.siteId), 'comparisons'] });
 }
-
-export function forgetComparison(
-  queryClient: QueryClient,
-  { siteId, id }: Pick<Comparison, 'siteId' | 'id'>,
-): void {
-  queryClient.removeQueries({ queryKey: comparisonKey(siteId, id) });
-  void queryClient.invalidateQueries({ queryKey: [...siteKey(siteId), 'comparisons'] });
-}

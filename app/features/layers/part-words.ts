@@ -22,16 +22,6 @@ export const partReasons: Record<LayerPart, string> = {
   allowed: 'Where works may go, by permit or by access. Optional; without it they may go anywhere.',
 };
 
-/** What a file for the part holds, in a few words. */
-export const partHolds: Record<LayerPart, string> = {
-  habitat: 'classes of ground',
-  elevation: 'heights',
-  cover: 'share covered now',
-  exposure: 'strength of stress',
-  refuge: 'strength of shelter',
-  allowed: 'where works may go',
-};
-
 export const unitLabels: Record<ValueUnit, string> = {
   share: 'shares, 0 to 1',
   percent: 'per cent, 0 to 100',

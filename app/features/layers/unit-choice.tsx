@@ -1,9 +1,9 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { heightUnits, valueUnits, type HeightUnit, type Layer, type ValueUnit } from '#contract/layers.ts';
+import { valueUnits, type Layer, type ValueUnit } from '#contract/layers.ts';
 import { BlankSelect } from '#app/components/blank.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { changeLayerMutation } from './change-layer.ts';
-import { DatumBlank } from './datum-blank.tsx';
+import { HeightBlanks } from './height-blanks.tsx';
 import { heightUnitLabels, unitLabels } from './part-words.ts';
 
 /** What the values of a layer of shares are, as a blank in a sentence. The server guessed it from the values. */
@@ -52,26 +52,10 @@ export function HeightChoice(props: { siteId: string; layer: Layer; editable: bo
     <>
       <p className="leading-7">
         Heights in{' '}
-        <BlankSelect
-          label="Unit of the heights"
-          value={vertical.unit}
+        <HeightBlanks
+          vertical={vertical}
           disabled={change.isPending}
-          onChange={(event) =>
-            change.mutate({ vertical: { ...vertical, unit: event.target.value as HeightUnit } })
-          }
-        >
-          {heightUnits.map((unit) => (
-            <option key={unit} value={unit}>
-              {heightUnitLabels[unit]}
-            </option>
-          ))}
-        </BlankSelect>{' '}
-        above{' '}
-        <DatumBlank
-          key={vertical.datum}
-          label="Vertical datum"
-          datum={vertical.datum}
-          onDatum={(datum) => change.mutate({ vertical: { ...vertical, datum } })}
+          onChange={(next) => change.mutate({ vertical: next })}
         />
         .
       </p>

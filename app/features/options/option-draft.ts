@@ -1,9 +1,6 @@
 import type { Option } from '#contract/options.ts';
 import { sameWork } from '#contract/work-changes.ts';
-import type { Marks, Work, WorkSet } from '#contract/works.ts';
-import type { Mound } from '#sim-core/spec/run-spec.ts';
-
-export type MoundWork = Mound & Marks;
+import type { Work, WorkSet } from '#contract/works.ts';
 
 /** What is drawn at one time: the works, and how those were laid that a pattern laid. */
 export interface DraftState {
@@ -42,8 +39,6 @@ export type DraftAction =
 /** Steps that can be taken back. */
 const longestPast = 200;
 export const noneSelected: ReadonlySet<string> = new Set();
-
-export const isMound = (work: Work): work is MoundWork => work.kind === 'mound';
 
 /** A draft of what the server has. */
 export function draftOf({ works, sets, revision }: Pick<Option, 'works' | 'sets' | 'revision'>): OptionDraft {

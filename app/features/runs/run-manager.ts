@@ -3,7 +3,8 @@ import type { SeriesRow } from '#sim-core/spec/run-result.ts';
 import { errorText, type ProblemError } from '#app/lib/api-client.ts';
 import type { RunHandle } from '#app/workers/run-client.ts';
 import type { PackedLayers, RunInput, RunListener, RunProgress } from '#app/workers/run-loop.ts';
-import { saveWithRetry } from '#app/lib/save-with-retry.ts';
+import { createLiveList } from '#app/lib/live-list.ts';
+import { saveWithRetry, troubleWords } from '#app/lib/save-with-retry.ts';
 import type { RunServer } from './run-server.ts';
 
 /**
@@ -89,18 +90,12 @@ export const isAtWork = (live: LiveRun | undefined): live is LiveRun =>
 export function createRunManager(manager: RunManagerParts): RunManager {
   const { server, startWorker, wait, onFrame } = manager;
   const jobs = new Map<string, Job>();
-  const listeners = new Set<() => void>();
-  let lives: readonly LiveRun[] = [];
-
-  const publish = (next: readonly LiveRun[]) => {
-    lives = next;
-    manager.onChange?.(lives.filter(isAtWork).length);
-    listeners.forEach((listener) => listener());
-  };
-  const get = (runId: string) => lives.find((live) => live.runId === runId);
-  const change = (runId: string, patch: Partial<LiveRun>) => {
-    publish(lives.map((live) => (live.runId === runId ? { ...live, ...patch } : live)));
-  };
+  const lives = createLiveList<LiveRun>({
+    idOf: (live) => live.runId,
+    isAtWork,
+    onChange: manager.onChange,
+  });
+  const { get, change } = lives;
 
   function begin(parts: StartParts, repeat: boolean): void {
     const { run } = parts;
@@ -123,7 +118,7 @@ export function createRunManager(manager: RunManagerParts): RunManager {
       ...{ rows: [], progress: undefined, trouble: undefined, error: undefined },
       ...{ closing: undefined, digest: undefined },
     };
-    publish([...lives.filter((live) => live.runId !== runId), fresh]);
+    lives.put(fresh);
     work(job, repeat).catch((error: unknown) => over(job, repeat, error));
   }
 
@@ -177,7 +172,7 @@ export function createRunManager(manager: RunManagerParts): RunManager {
         wait,
         signal: job.abort.signal,
         onTrouble: (error: ProblemError | undefined) => {
-          change(job.parts.run.id, { trouble: error && troubleWords(error) });
+          change(job.parts.run.id, { trouble: error && troubleWords(error, 'the run') });
         },
       });
 
@@ -205,11 +200,8 @@ export function createRunManager(manager: RunManagerParts): RunManager {
   }
 
   return {
-    subscribe: (listener) => {
-      listeners.add(listener);
-      return () => listeners.delete(listener);
-    },
-    list: () => lives,
+    subscribe: lives.subscribe,
+    list: lives.list,
     get,
     start: (parts) => begin(parts, false),
     repeat: (parts) => begin(parts, true),
@@ -234,14 +226,7 @@ export function createRunManager(manager: RunManagerParts): RunManager {
     },
     cancel,
     dismiss: (runId) => {
-      if (!isAtWork(get(runId))) publish(lives.filter((live) => live.runId !== runId));
+      if (!isAtWork(get(runId))) lives.remove(runId);
     },
   };
-}
-
-function troubleWords(error: ProblemError): string {
-  if (error.status === 0)
-    return 'The server cannot be reached; the run waits and saves on as soon as it can.';
-  if (error.status === 401) return 'You are signed out; sign in again and the run saves on.';
-  return `${error.message} The run waits and tries again.`;
 }

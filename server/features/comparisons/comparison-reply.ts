@@ -15,13 +15,13 @@ import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { layerFactsSchema } from '#contract/layers.ts';
 import { notFound } from '#server/middleware/problem-error.ts';
+import { layersByHash } from '#server/specs/site-layers.repository.ts';
 import {
   comparisonsOfSite,
   countReplicates,
   eventsOf,
   findComparison,
   layerHashesOf,
-  layersOf,
   mapsOf,
 } from './comparison.repository.ts';
 
@@ -98,7 +98,7 @@ export async function comparisonReply(manager: Manager, siteId: string, id: stri
   const plan = { ...readJson(comparisonPlanSchema, row.plan), replicates: row.replicates };
   const counts = await countReplicates(manager, [id]);
   const maps = await mapsOf(manager, id);
-  const layers = await layersOf(manager, siteId, await layerHashesOf(manager, id));
+  const layers = await layersByHash(manager, siteId, await layerHashesOf(manager, id));
   return {
     ...factsOf(row, plan, counts),
     plan,

@@ -10,7 +10,6 @@ import {
   type EnsembleMapRow,
   type ReplicateRow,
 } from '#server/database/entities/comparison-parts.ts';
-import { LayerEntity, type LayerRow } from '#server/database/entities/layer.ts';
 import { OptionEntity, type OptionRow } from '#server/database/entities/option.ts';
 import { SiteEntity, type SiteRow } from '#server/database/entities/site.ts';
 import type { Manager } from '#server/database/manager.ts';
@@ -65,19 +64,6 @@ export const comparisonsOfSite = (
 /** Hashes of the rasters that a comparison stands on. */
 export const layerHashesOf = async (manager: Manager, comparisonId: string): Promise<string[]> =>
   (await manager.findBy(ComparisonLayerEntity, { comparisonId })).map(({ hash }) => hash);
-
-/** Of two layers with the same bytes, the later. */
-export async function layersOf(
-  manager: Manager,
-  siteId: string,
-  hashes: readonly string[],
-): Promise<LayerRow[]> {
-  const layers = await manager.find(LayerEntity, {
-    where: { siteId, hash: In([...hashes]) },
-    order: { uploadedAt: 'ASC' },
-  });
-  return [...new Map(layers.map((layer) => [layer.hash, layer])).values()];
-}
 
 /** Replicates that are stored, by ensemble that has any. */
 export async function countReplicates(

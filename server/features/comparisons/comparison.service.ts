@@ -13,10 +13,11 @@ import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import type { ComparisonRow } from '#server/database/entities/comparison.ts';
 import { readJson } from '#server/database/json-column.ts';
+import { gridOf } from '#server/database/site-grid.ts';
 import type { Manager } from '#server/database/manager.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import { releaseBlobs } from '#server/files/stored-files.ts';
-import { fieldProblem, notFound, ProblemError } from '#server/middleware/problem-error.ts';
+import { fieldProblem, notFound, ProblemError, refuseFields } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
 import { checkLayers, checkOnGrid, layerHashes } from '#server/specs/check-spec.ts';
 import { comparisonReply, requireComparison } from './comparison-reply.ts';
@@ -61,13 +62,7 @@ export async function startComparison(
     if (!site) throw notFound();
     const full: ComparisonPlan = { ...plan, options: await comparedOptions(manager, siteId, options) };
     const problems = await planProblems(manager, site, full);
-    if (problems.length > 0)
-      throw new ProblemError(
-        'invalid-request',
-        problems.map(({ field, message }) => `${field}: ${message}`).join('. '),
-        { fields: problems },
-      );
-    const { width, height, cellSize, originX, originY, epsg } = site;
+    if (problems.length > 0) throw refuseFields(problems);
     const row: ComparisonRow = {
       id: randomUUID(),
       siteId,
@@ -76,7 +71,7 @@ export async function startComparison(
       ending: null,
       plan: JSON.stringify(full),
       replicates: plan.replicates,
-      grid: JSON.stringify({ width, height, cellSize, originX, originY, epsg }),
+      grid: JSON.stringify(gridOf(site)),
       crsName: site.crsName,
       decision: null,
       startedAt: services.clock().toISOString(),

@@ -25,7 +25,6 @@ interface OptionAddress {
   siteId: string;
   optionId: string;
 }
-export type OptionInput = z.input<typeof contract.createOption.body>;
 type NewOption = z.output<typeof contract.createOption.body>;
 type OptionChange = z.output<typeof contract.changeOption.body>;
 

@@ -1,9 +1,9 @@
-import { In } from 'typeorm';
 import type { Manager } from '#server/database/manager.ts';
-import { LayerEntity, type LayerRow } from '#server/database/entities/layer.ts';
+import type { LayerRow } from '#server/database/entities/layer.ts';
 import { OptionEntity, type OptionRow } from '#server/database/entities/option.ts';
 import { RunFrameEntity, type RunFrameRow } from '#server/database/entities/run-frame.ts';
 import { RunLayerEntity } from '#server/database/entities/run-layer.ts';
+import { layersByHash } from '#server/specs/site-layers.repository.ts';
 import { RunEntity, type RunRow } from '#server/database/entities/run.ts';
 import { SiteEntity, type SiteRow } from '#server/database/entities/site.ts';
 
@@ -19,11 +19,11 @@ export const findOption = (manager: Manager, siteId: string, id: string): Promis
 /** The layers that a run stands on, in the order of their upload; of two with the same bytes, the later. */
 export async function layersOfRun(manager: Manager, run: Pick<RunRow, 'id' | 'siteId'>): Promise<LayerRow[]> {
   const used = await manager.findBy(RunLayerEntity, { runId: run.id });
-  const layers = await manager.find(LayerEntity, {
-    where: { siteId: run.siteId, hash: In(used.map(({ hash }) => hash)) },
-    order: { uploadedAt: 'ASC' },
-  });
-  return [...new Map(layers.map((layer) => [layer.hash, layer])).values()];
+  return layersByHash(
+    manager,
+    run.siteId,
+    used.map(({ hash }) => hash),
+  );
 }
 
 export async function insertRun(manager: Manager, run: RunRow, layers: readonly string[]): Promise<void> {

@@ -6,9 +6,10 @@ import { maximumCells } from '#sim-core/spec/limits.ts';
 import { frameYears, runSpecSchema, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { RunRow } from '#server/database/entities/run.ts';
 import { readJson } from '#server/database/json-column.ts';
+import { gridOf } from '#server/database/site-grid.ts';
 import { checkLayers, checkOnGrid, layerHashes } from '#server/specs/check-spec.ts';
 import { releaseBlobs } from '#server/files/stored-files.ts';
-import { fieldProblem, notFound, ProblemError } from '#server/middleware/problem-error.ts';
+import { fieldProblem, notFound, ProblemError, refuseFields } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
 import { requireRun, runReply } from './run-reply.ts';
 import { deleteRunRows, findOption, findSite, framesOfRun, insertRun, updateRun } from './run.repository.ts';
@@ -29,13 +30,7 @@ export async function startRun(
     const option = await findOption(manager, siteId, optionId);
     if (!option) throw fieldProblem('optionId', 'This site has no such option; it may have been deleted');
     const problems = [...(await checkLayers(manager, siteId, spec)), ...checkOnGrid(spec, site)];
-    if (problems.length > 0)
-      throw new ProblemError(
-        'invalid-request',
-        problems.map(({ field, message }) => `${field}: ${message}`).join('. '),
-        { fields: problems },
-      );
-    const { width, height, cellSize, originX, originY, epsg } = site;
+    if (problems.length > 0) throw refuseFields(problems);
     const run: RunRow = {
       id: randomUUID(),
       siteId,
@@ -44,7 +39,7 @@ export async function startRun(
       name,
       status: 'running',
       spec: JSON.stringify(spec),
-      grid: JSON.stringify({ width, height, cellSize, originX, originY, epsg }),
+      grid: JSON.stringify(gridOf(site)),
       crsName: site.crsName,
       seed: spec.seed,
       mode: spec.mode,

@@ -7,6 +7,7 @@ import {
   type ElevationCurves,
 } from '#contract/layers.ts';
 import { outlookSchema, plantSchema, type Site, type SiteSummary } from '#contract/sites.ts';
+import { gridOf } from '#server/database/site-grid.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
@@ -14,7 +15,7 @@ import { notFound } from '#server/middleware/problem-error.ts';
 import { featuresOfSite } from './features/feature-reply.ts';
 import { layerReply } from './layer-reply.ts';
 import { currentLayers } from './layer.repository.ts';
-import { countsOfSites, findSite, gridOf, sitesOfTeam, type SiteCounts } from './site.repository.ts';
+import { countsOfSites, findSite, sitesOfTeam, type SiteCounts } from './site.repository.ts';
 
 const partsSchema = z.array(layerPartSchema);
 

@@ -1,5 +1,4 @@
 import { In, IsNull } from 'typeorm';
-import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { EnsembleMapEntity } from '#server/database/entities/comparison-parts.ts';
 import { LayerEntity } from '#server/database/entities/layer.ts';
@@ -12,16 +11,6 @@ import { SiteEntity, type SiteRow } from '#server/database/entities/site.ts';
 
 export const findSite = (manager: Manager, id: string): Promise<SiteRow | null> =>
   manager.findOneBy(SiteEntity, { id });
-
-/** The working grid of a site. */
-export const gridOf = ({ width, height, cellSize, originX, originY, epsg }: SiteRow): Grid => ({
-  width,
-  height,
-  cellSize,
-  originX,
-  originY,
-  epsg,
-});
 
 /** Oldest first, so that a list keeps its order. */
 export const sitesOfTeam = (manager: Manager, teamId: string): Promise<SiteRow[]> =>

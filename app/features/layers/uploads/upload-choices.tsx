@@ -1,12 +1,10 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import type { ReactNode } from 'react';
 import {
-  heightUnits,
   layerParts,
   resamplingMethods,
   valueUnits,
   type Layer,
-  type HeightUnit,
   type LayerPart,
   type ResamplingMethod,
   type ValueUnit,
@@ -17,9 +15,9 @@ import { BlankSelect } from '#app/components/blank.tsx';
 import { Button } from '#app/components/button.tsx';
 import { Notice, ProblemNotice } from '#app/components/notice.tsx';
 import { formatShare } from '#app/lib/formats.ts';
-import { DatumBlank } from '../datum-blank.tsx';
+import { HeightBlanks } from '../height-blanks.tsx';
 import { Histogram } from '../histogram.tsx';
-import { hasUnit, heightUnitLabels, unitLabels } from '../part-words.ts';
+import { hasUnit, unitLabels } from '../part-words.ts';
 import { OutlineFigure } from './outline-figure.tsx';
 import { fileInWords, isReady, methodLabels, planInWords } from './plan-words.ts';
 import { UploadPicture } from './upload-picture.tsx';
@@ -193,26 +191,11 @@ function Sentence(props: {
       {shown.part === 'elevation' && (
         <>
           , in{' '}
-          <BlankSelect
-            label={`Unit of the heights of ${fileName}`}
-            value={vertical.unit}
+          <HeightBlanks
+            vertical={vertical}
+            of={` of ${fileName}`}
             disabled={disabled}
-            onChange={(event) =>
-              onChange({ vertical: { ...vertical, unit: event.target.value as HeightUnit } })
-            }
-          >
-            {heightUnits.map((unit) => (
-              <option key={unit} value={unit}>
-                {heightUnitLabels[unit]}
-              </option>
-            ))}
-          </BlankSelect>{' '}
-          above{' '}
-          <DatumBlank
-            key={vertical.datum}
-            label={`Vertical datum of ${fileName}`}
-            datum={vertical.datum}
-            onDatum={(datum) => onChange({ vertical: { ...vertical, datum } })}
+            onChange={(next) => onChange({ vertical: next })}
           />
         </>
       )}

@@ -85,12 +85,6 @@ export const toolGroups: readonly ToolGroup[] = [
   },
 ];
 
-export const toolWords = (tool: BoardTool): ToolWords => {
-  const found = toolGroups.flatMap((group) => group.tools).find((words) => words.tool === tool);
-  if (!found) throw new Error(`Found no words for the tool “${tool}”`);
-  return found;
-};
-
 /** The tool that a letter chooses. */
 export const toolOfLetter = (letter: string): BoardTool | undefined =>
   toolGroups.flatMap((group) => group.tools).find((words) => words.letter === letter.toLowerCase())?.tool;

@@ -1,4 +1,5 @@
 import { randomUUID } from 'node:crypto';
+import { gridOf } from '#server/database/site-grid.ts';
 import type { LayerRow } from '#server/database/entities/layer.ts';
 import type { UploadRow } from '#server/database/entities/upload.ts';
 import { releaseBlobs, storeWithRows } from '#server/files/stored-files.ts';
@@ -9,7 +10,7 @@ import type { Services } from '#server/services.ts';
 import { findLayer } from '../layer.repository.ts';
 import { installLayer } from '../layer.service.ts';
 import { alignToGrid, type AlignedRaster } from '../align-to-grid.ts';
-import { findSite, gridOf } from '../site.repository.ts';
+import { findSite } from '../site.repository.ts';
 import { verticalOf, type SurveyedUpload } from './plan-upload.ts';
 import { planOf, surveyed } from './upload-reply.ts';
 import { findUpload, updateUpload } from './upload.repository.ts';

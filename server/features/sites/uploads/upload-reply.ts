@@ -7,11 +7,12 @@ import {
   type Upload,
 } from '#contract/uploads.ts';
 import { z } from 'zod';
+import { gridOf } from '#server/database/site-grid.ts';
 import type { UploadRow } from '#server/database/entities/upload.ts';
 import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
 import type { Services } from '#server/services.ts';
-import { findSite, gridOf } from '../site.repository.ts';
+import { findSite } from '../site.repository.ts';
 import { planUpload, type SurveyedUpload, type UploadPlan } from './plan-upload.ts';
 
 const statesSchema = z.enum(uploadStates);

@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { gridSchema } from '#contract/grid.ts';
 import { layerPartSchema, storedSourceSchema, valueUnitSchema } from '#contract/layers.ts';
+import { gridOf } from '#server/database/site-grid.ts';
 import type { GridChangeRow } from '#server/database/entities/grid-change.ts';
 import type { LayerRow } from '#server/database/entities/layer.ts';
 import { readJson } from '#server/database/json-column.ts';
@@ -22,7 +23,7 @@ import {
   runsOnRaster,
   updateLayer,
 } from '../layer.repository.ts';
-import { findSite, gridOf, updateSite } from '../site.repository.ts';
+import { findSite, updateSite } from '../site.repository.ts';
 import { deleteGridChange, findGridChange, updateGridChange } from './grid-change.repository.ts';
 
 const mostAttempts = 3;

@@ -29,7 +29,7 @@ function shareOf(k: v128): v128 {
 }
 
 /** e^((X − X^c)/ω); a call would cost a twentieth of the step */
-// @ts-ignore: decorator
+// @ts-ignore: AssemblyScript's decorator; TypeScript knows none on functions
 @inline
 function wetnessOf(phi: v128, E: v128, M: v128): v128 {
   return exp(
