@@ -11,7 +11,8 @@ import type { EnsembleMapsDesk } from '#app/workers/ensemble-maps-client.ts';
 import type { PackedLayers, RunInput } from '#app/workers/run-loop.ts';
 import type { ComparisonServer } from './comparison-server.ts';
 import type { EnsembleAddress } from './get-comparison.ts';
-import { ensembleKey, specOf, tasksLeft, type KnownRecords, type Task } from './ensemble-work.ts';
+import type { KnownRecords } from '#sim-core/compare/known-records.ts';
+import { ensembleKey, specOf, tasksLeft, type Task } from './ensemble-work.ts';
 import { mayStop } from './may-stop.ts';
 
 /** `saving`: the replicates stand still and the maps are on their way to the server. */

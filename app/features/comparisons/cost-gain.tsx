@@ -1,7 +1,7 @@
 import { ReadAsTable } from '#app/components/read-as-table.tsx';
-import { formatMoney } from '#app/lib/format-money.ts';
+import { formatMoney } from '#contract/format-money.ts';
 import { formatNumber } from '#app/lib/formats.ts';
-import type { OutlookFigures } from './comparison-figures.ts';
+import type { OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
 
 const [width, height] = [420, 230];
 const [left, right, top, bottom] = [34, 14, 22, 30];

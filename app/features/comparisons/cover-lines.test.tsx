@@ -1,6 +1,6 @@
 import { cleanup, fireEvent, render, screen } from '@testing-library/react';
 import { afterEach, describe, expect, it, vi } from 'vitest';
-import type { OutlookFigures } from './comparison-figures.ts';
+import type { OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
 import { CoverLines } from './cover-lines.tsx';
 import { smallComparison } from './testing/small-comparison.ts';
 

@@ -3,7 +3,7 @@ import type { ComparisonPlan } from '#contract/comparisons.ts';
 import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { formatArea } from '#app/lib/formats.ts';
 import { useNarrow } from '#app/lib/use-media-query.ts';
-import type { OutlookFigures } from './comparison-figures.ts';
+import type { OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
 import { dashOf, widthOf } from './line-styles.ts';
 import { Key } from './recovery-curves.tsx';
 

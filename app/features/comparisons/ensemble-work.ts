@@ -1,6 +1,6 @@
 import { mostOutlooks, replicateSpec, type Comparison, type ComparisonPlan } from '#contract/comparisons.ts';
+import type { KnownRecords } from '#sim-core/compare/known-records.ts';
 import type { RunSpec } from '#sim-core/spec/run-spec.ts';
-import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 
 /** One replicate that is to be run. */
 export interface Task {
@@ -8,9 +8,6 @@ export interface Task {
   readonly outlook: number;
   readonly replicate: number;
 }
-
-/** Replicates that are known of each ensemble, `[option][outlook]`, each by its number. */
-export type KnownRecords = readonly (readonly ReadonlyMap<number, ReplicateRecord>[])[];
 
 /** Key of an ensemble among those of its comparison. */
 export const ensembleKey = (option: number, outlook: number): string =>
@@ -41,11 +38,3 @@ export function tasksLeft(
 /** The run of a task. */
 export const specOf = ({ plan }: Pick<Comparison, 'plan'>, task: Task): RunSpec =>
   replicateSpec(plan, task.option, task.outlook, task.replicate);
-
-/** Numbers of the replicates that every ensemble has: those that make pairs. Ascending. */
-export function sharedReplicates(known: KnownRecords): number[] {
-  const [first, ...others] = known.flat();
-  return [...(first?.keys() ?? [])]
-    .filter((replicate) => others.every((records) => records.has(replicate)))
-    .sort((a, b) => a - b);
-}

@@ -1,5 +1,5 @@
 import { expose } from 'comlink';
-import { comparisonFigures } from './comparison-figures.ts';
+import { comparisonFigures } from '#sim-core/compare/comparison-figures.ts';
 
 /** Bootstraps take long where there are many futures, so the page has them worked out here. */
 const face = { figures: comparisonFigures };

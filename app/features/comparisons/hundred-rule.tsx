@@ -1,5 +1,5 @@
 import type { Interval } from '#sim-core/index.ts';
-import { of100 } from './chance-words.ts';
+import { of100 } from '#sim-core/compare/chance-words.ts';
 
 /** A chance as a rule of 100 futures that can be counted, with its interval above it. The sentence beside it says it too. */
 export function HundredRule({ chance }: { chance: Interval }) {

@@ -1,6 +1,6 @@
 import { Table } from '#app/components/table.tsx';
 import { formatArea } from '#app/lib/formats.ts';
-import type { LossCause, OutlookFigures } from './comparison-figures.ts';
+import type { LossCause, OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
 
 const causes: Record<LossCause, string> = {
   drought: 'to drought',

@@ -1,8 +1,8 @@
 import type { Comparison } from '#contract/comparisons.ts';
 import { beforeDrought, firstToCome } from '#sim-core/ensemble/next-drought.ts';
 import { levelOfLooks, pairedDifference, sureEnough } from '#sim-core/index.ts';
-import { sharedReplicates, type KnownRecords } from './ensemble-work.ts';
-import { recoveryTimes } from './recovery-times.ts';
+import { sharedReplicates, type KnownRecords } from '#sim-core/compare/known-records.ts';
+import { recoveryTimes } from '#sim-core/compare/recovery-times.ts';
 
 /**
  * Why a comparison may stop before all replicates are done, or undefined where it must go on: under every outlook each

@@ -1,6 +1,6 @@
 import { Table } from '#app/components/table.tsx';
-import { of100 } from './chance-words.ts';
-import { nearChance, type ComparisonFigures } from './comparison-figures.ts';
+import { of100 } from '#sim-core/compare/chance-words.ts';
+import { nearChance, type ComparisonFigures } from '#sim-core/compare/comparison-figures.ts';
 
 /** Chances to close in time by outlook, what each option may be regretted by, and which is never far from the best. */
 export function OutlookTable({ figures }: { figures: ComparisonFigures }) {

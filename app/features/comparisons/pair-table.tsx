@@ -1,7 +1,7 @@
 import { Table } from '#app/components/table.tsx';
 import { formatNumber } from '#app/lib/formats.ts';
-import { of100 } from './chance-words.ts';
-import type { OutlookFigures, Pair } from './comparison-figures.ts';
+import { of100 } from '#sim-core/compare/chance-words.ts';
+import type { OutlookFigures, Pair } from '#sim-core/compare/comparison-figures.ts';
 
 const [width, height] = [120, 16];
 

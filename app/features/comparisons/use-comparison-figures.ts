@@ -1,8 +1,8 @@
 import { releaseProxy, wrap } from 'comlink';
 import { useEffect, useRef, useState } from 'react';
 import type { ComparisonPlan } from '#contract/comparisons.ts';
-import type { ComparisonFigures } from './comparison-figures.ts';
-import type { KnownRecords } from './ensemble-work.ts';
+import type { ComparisonFigures } from '#sim-core/compare/comparison-figures.ts';
+import type { KnownRecords } from '#sim-core/compare/known-records.ts';
 import type { FiguresFace } from './figures-worker.ts';
 
 /**

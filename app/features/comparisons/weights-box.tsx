@@ -1,7 +1,7 @@
 import { useId, useState } from 'react';
 import { weighOptions, type Criterion } from '#sim-core/index.ts';
 import { formatNumber } from '#app/lib/formats.ts';
-import type { ComparisonFigures } from './comparison-figures.ts';
+import type { ComparisonFigures } from '#sim-core/compare/comparison-figures.ts';
 
 interface Named extends Criterion {
   readonly name: string;

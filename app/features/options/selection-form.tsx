@@ -4,7 +4,7 @@ import type { Span } from './board/area-pen.ts';
 import { withoutPlanted } from './board/planted-mounds.ts';
 import { EditedBlank } from './edited-blank.tsx';
 import { fieldText, withField, type WorkField } from './work-fields.ts';
-import { placeInWords, placeOf, titleOf, worksInWords } from './works-words.ts';
+import { placeInWords, placeOf, titleOf, worksInWords } from '#contract/works-words.ts';
 
 /** A blank of the sentence that says what the works are, with the words around it. */
 interface Piece {

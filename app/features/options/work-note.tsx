@@ -1,6 +1,6 @@
 import type { Work } from '#contract/works.ts';
 import { WordButton } from '#app/components/word-button.tsx';
-import { placeInWords, placeOf, titleOf, workInWords } from './works-words.ts';
+import { placeInWords, placeOf, titleOf, workInWords } from '#contract/works-words.ts';
 
 /** What one of the works is, at the end of a leader line on the map. */
 export function WorkNote(props: {

@@ -5,7 +5,7 @@ import { Table, type Column } from '#app/components/table.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { EditedBlank } from './edited-blank.tsx';
 import { fieldText, type WorkField } from './work-fields.ts';
-import { placeInWords, placeOf, titleOf, workInWords } from './works-words.ts';
+import { placeInWords, placeOf, titleOf, workInWords } from '#contract/works-words.ts';
 
 interface NumberedWork {
   readonly number: number;

@@ -4,7 +4,7 @@ import type { Comparison } from '#contract/comparisons.ts';
 import { worksOf } from '#contract/works.ts';
 import { WordButton } from '#app/components/word-button.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
-import type { OutlookFigures } from '#app/features/comparisons/comparison-figures.ts';
+import type { OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
 import type { LiveComparison } from '#app/features/comparisons/comparison-manager.ts';
 import { CoverLines } from '#app/features/comparisons/cover-lines.tsx';
 import { ensembleMapQuery } from '#app/features/comparisons/get-comparison.ts';

@@ -15,7 +15,7 @@ import { standingWords } from '#app/features/comparisons/comparison-words.ts';
 import { CostGain } from '#app/features/comparisons/cost-gain.tsx';
 import { DecisionBox } from '#app/features/comparisons/decision-box.tsx';
 import { EventList } from '#app/features/comparisons/event-list.tsx';
-import type { KnownRecords } from '#app/features/comparisons/ensemble-work.ts';
+import type { KnownRecords } from '#sim-core/compare/known-records.ts';
 import { FuturesLines } from '#app/features/comparisons/futures-lines.tsx';
 import { keepComparison, replicatesQuery } from '#app/features/comparisons/get-comparison.ts';
 import { comparisonManager } from '#app/features/comparisons/live-comparisons.ts';

@@ -16,7 +16,7 @@ import { SuggestPanel } from '#app/features/options/suggest/suggest-panel.tsx';
 import { useSuggest } from '#app/features/options/suggest/use-suggest.ts';
 import { useOptionDrawing } from '#app/features/options/use-option-drawing.ts';
 import { useUndoKeys } from '#app/features/options/use-undo-keys.ts';
-import { countOf, worksByYear } from '#app/features/options/works-words.ts';
+import { countOf, worksByYear } from '#contract/works-words.ts';
 import type { MapFoothold } from '#app/map/map-symbols.ts';
 import { Yearline } from '#app/yearline/Yearline.tsx';
 import { OptionAction } from './option-action.tsx';

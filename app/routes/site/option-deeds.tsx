@@ -14,7 +14,7 @@ import { HistoryDialog } from '#app/features/options/history/history-dialog.tsx'
 import { NoteDialog } from '#app/features/options/list/note-dialog.tsx';
 import type { PictureBase } from '#app/features/options/list/option-picture.tsx';
 import type { OptionDrawing, OptionWords } from '#app/features/options/use-option-drawing.ts';
-import { worksInWords } from '#app/features/options/works-words.ts';
+import { worksInWords } from '#contract/works-words.ts';
 
 type Deed = 'add' | 'copy' | 'import' | 'rename' | 'note' | 'history' | 'files' | 'delete';
 

@@ -16,7 +16,7 @@ import { usePictureBase } from '#app/features/options/list/option-picture.tsx';
 import { optionCost } from '#app/features/options/list/option-costs.ts';
 import { movedTo, orderMutation } from '#app/features/options/list/order.ts';
 import { isUnsaved } from '#app/features/options/option-draft.ts';
-import { formatMoney } from '#app/lib/format-money.ts';
+import { formatMoney } from '#contract/format-money.ts';
 import type { OptionDrawing } from '#app/features/options/use-option-drawing.ts';
 import { formatCounted } from '#app/lib/formats.ts';
 import { OptionDeeds } from './option-deeds.tsx';

@@ -15,7 +15,7 @@ import { yearContours } from '#app/features/options/quick-look/year-contours.ts'
 import type { OptionDraft } from '#app/features/options/option-draft.ts';
 import { WorkNote } from '#app/features/options/work-note.tsx';
 import { WorksTable } from '#app/features/options/works-table.tsx';
-import { placeInWords, placeOf, worksInWords } from '#app/features/options/works-words.ts';
+import { placeInWords, placeOf, worksInWords } from '#contract/works-words.ts';
 import { formatCounted } from '#app/lib/formats.ts';
 import { MapNote } from '#app/map/MapNote.tsx';
 import type { MapRaster } from '#app/map/map-raster.ts';

@@ -4,7 +4,7 @@ import { Table } from '#app/components/table.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
 import type { OptionDrawing } from '#app/features/options/use-option-drawing.ts';
 import { WorkSymbol } from '#app/features/options/works-table.tsx';
-import { countOf, worksByYear } from '#app/features/options/works-words.ts';
+import { countOf, worksByYear } from '#contract/works-words.ts';
 import { OptionListPanel } from './option-list-panel.tsx';
 
 /** The options, what the chosen one holds, and what to mind. */

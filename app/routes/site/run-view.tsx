@@ -6,7 +6,7 @@ import { useSearchPatch } from '#app/lib/use-search-patch.ts';
 import { WordButton, WordLink } from '#app/components/word-button.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
 import { optionsQuery } from '#app/features/options/list-options.ts';
-import { countOf, worksByYear } from '#app/features/options/works-words.ts';
+import { countOf, worksByYear } from '#contract/works-words.ts';
 import { closingQuery } from '#app/features/runs/closing-years.ts';
 import { runQuery } from '#app/features/runs/get-run.ts';
 import { runsQuery } from '#app/features/runs/list-runs.ts';

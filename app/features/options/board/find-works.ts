@@ -1,7 +1,7 @@
 import type { Work } from '#contract/works.ts';
 import type { MapFoothold } from '#app/map/map-symbols.ts';
 import type { GroundPoint } from '#app/map/rings.ts';
-import { placeOf } from '../works-words.ts';
+import { placeOf } from '#contract/works-words.ts';
 
 export interface Found {
   readonly id: string;

@@ -5,7 +5,7 @@ import { arrowMove } from '#app/map/map-keys.ts';
 import type { MapFoothold } from '#app/map/map-symbols.ts';
 import type { MapPoint, MapSight, MapTool } from '#app/map/map-tool.ts';
 import type { GroundPoint } from '#app/map/rings.ts';
-import { placeOf } from '../works-words.ts';
+import { placeOf } from '#contract/works-words.ts';
 import { holdAt, pulled, withoutCorner, type Hold } from './corners.ts';
 import { movedWork, snappedToCorner, snappedToMiddle } from './move-works.ts';
 import { nextOnMap } from './find-works.ts';

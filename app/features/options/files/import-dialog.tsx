@@ -10,7 +10,7 @@ import { ProblemNotice } from '#app/components/notice.tsx';
 import { formatCounted } from '#app/lib/formats.ts';
 import { createOptionMutation } from '../change-option.ts';
 import { OptionPicture, type PictureBase } from '../list/option-picture.tsx';
-import { worksInWords } from '../works-words.ts';
+import { worksInWords } from '#contract/works-words.ts';
 import { readWorksMutation } from './read-works-file.ts';
 
 /** Works from a file, looked at before they become an option. */

@@ -9,7 +9,7 @@ import { sayDone } from '#app/components/toast.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { formatDateTime } from '#app/lib/formats.ts';
 import { OptionPicture, type PictureBase } from '../list/option-picture.tsx';
-import { worksInWords } from '../works-words.ts';
+import { worksInWords } from '#contract/works-words.ts';
 import { bringBackMutation, revisionQuery, revisionsQuery } from './revisions.ts';
 
 /** Who changed an option, when and how; what it was can be looked at, and brought back as the newest. */

@@ -1,7 +1,7 @@
 import type { Option } from '#contract/options.ts';
 import { WordButton } from '#app/components/word-button.tsx';
 import { formatCounted, formatDate } from '#app/lib/formats.ts';
-import { worksInWords } from '../works-words.ts';
+import { worksInWords } from '#contract/works-words.ts';
 
 /** Options that were put away: to be looked at, and brought back. Open while one of them is chosen. */
 export function ArchiveList(props: {

@@ -1,4 +1,4 @@
-import { formatMoney } from '#app/lib/format-money.ts';
+import { formatMoney } from '#contract/format-money.ts';
 import type { OptionCost } from './option-costs.ts';
 
 /** What an option costs, in words and as a bar on the scale that all share, with the budget as a line across it. */

@@ -1,4 +1,4 @@
-import { formatMoney } from '#app/lib/format-money.ts';
+import { formatMoney } from '#contract/format-money.ts';
 import { niceStep } from '#app/map/map-ticks.ts';
 
 const width = 308;

@@ -3,7 +3,7 @@ import { costPerHectare } from '#sim-core/plan/costs.ts';
 import { formatArea } from '#app/lib/formats.ts';
 import { Table } from '#app/components/table.tsx';
 import { BudgetRule } from './budget-rule.tsx';
-import { formatMoney } from '#app/lib/format-money.ts';
+import { formatMoney } from '#contract/format-money.ts';
 
 /** m² below which a cost per hectare would say nothing. */
 const leastArea = 100;

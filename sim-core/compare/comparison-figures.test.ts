@@ -1,11 +1,16 @@
-// @vitest-environment node
 import { describe, expect, it } from 'vitest';
 import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import { chanceSentence } from './chance-words.ts';
 import { comparisonFigures } from './comparison-figures.ts';
-import { smallComparison } from './testing/small-comparison.ts';
 
-const { plan } = smallComparison(8);
+const plan = {
+  common: { surveyYear: 2020, years: 12 },
+  options: [
+    { name: 'Wait', wait: true, cost: 0 },
+    { name: 'Clumps', wait: false, cost: 500 },
+  ],
+  outlooks: [{ name: 'As drawn' }],
+};
 const record = (replicate: number, recovers: number | null, drought: number | null): ReplicateRecord => ({
   replicate,
   digest: '0'.repeat(64),

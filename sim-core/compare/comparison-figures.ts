@@ -1,17 +1,21 @@
-import type { ComparisonPlan } from '#contract/comparisons.ts';
-import {
-  bestShares,
-  efficientLine,
-  ensembleTally,
-  pairedDifference,
-  regretTable,
-  type BestShare,
-  type EnsembleSummary,
-  type PairedDifference,
-  type RegretTable,
-} from '#sim-core/index.ts';
-import { sharedReplicates, type KnownRecords } from './ensemble-work.ts';
-import { recoveryTimes } from './recovery-times.ts';
+import { ensembleTally, type EnsembleSummary } from '#sim-core/ensemble/ensemble-tally.ts';
+import { bestShares, type BestShare } from './best-option.ts';
+import { efficientLine } from './efficient-options.ts';
+import { sharedReplicates, type KnownRecords } from './known-records.ts';
+import { pairedDifference, type PairedDifference } from './paired-difference.ts';
+import { recoveryTimes, type ComparedYears } from './recovery-times.ts';
+import { regretTable, type RegretTable } from './regret.ts';
+
+/** What the figures need of a comparison's plan. */
+export interface ComparedPlan extends ComparedYears {
+  readonly options: readonly {
+    readonly name: string;
+    readonly wait: boolean;
+    /** null where no costs are set */
+    readonly cost: number | null;
+  }[];
+  readonly outlooks: readonly { readonly name: string }[];
+}
 
 export type LossCause = 'drought' | 'background' | 'grazing' | 'events';
 
@@ -63,11 +67,7 @@ export interface ComparisonFigures {
 export const nearChance = 0.05;
 
 /** All figures of a comparison from what is known of its replicates. */
-export function comparisonFigures(
-  plan: ComparisonPlan,
-  known: KnownRecords,
-  seed: string,
-): ComparisonFigures {
+export function comparisonFigures(plan: ComparedPlan, known: KnownRecords, seed: string): ComparisonFigures {
   const shared = sharedReplicates(known);
   if (shared.length === 0) return { outlooks: [], regret: undefined };
   const outlooks = plan.outlooks.map((_, outlook) => outlookFigures(plan, known, outlook, shared, seed));
@@ -78,7 +78,7 @@ export function comparisonFigures(
 }
 
 function outlookFigures(
-  plan: ComparisonPlan,
+  plan: ComparedPlan,
   known: KnownRecords,
   outlook: number,
   shared: readonly number[],
@@ -119,7 +119,7 @@ function outlookFigures(
 }
 
 function ensembleFigures(
-  { common: { surveyYear, years } }: ComparisonPlan,
+  { common: { surveyYear, years } }: ComparedPlan,
   records: KnownRecords[number][number],
   shared: readonly number[],
 ) {

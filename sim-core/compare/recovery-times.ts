@@ -1,9 +1,13 @@
-import type { ComparisonPlan } from '#contract/comparisons.ts';
 import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
+
+/** The years that a comparison spans. */
+export interface ComparedYears {
+  readonly common: { readonly surveyYear: number; readonly years: number };
+}
 
 /** Years from the survey to recovery of these replicates, in their order, cut at the horizon where it does not come. */
 export const recoveryTimes = (
-  { common: { surveyYear, years } }: Pick<ComparisonPlan, 'common'>,
+  { common: { surveyYear, years } }: ComparedYears,
   records: ReadonlyMap<number, ReplicateRecord>,
   replicates: readonly number[],
 ): Float64Array =>

@@ -1,5 +1,5 @@
 import type { Action, Area, Clumps, Mound } from '#sim-core/spec/run-spec.ts';
-import { formatCounted, formatLength, formatShare } from '#app/lib/formats.ts';
+import { formatCounted, formatLength, formatShare } from './formats.ts';
 
 const kinds: Record<Action['kind'], [one: string, many: string]> = {
   mound: ['mound', 'mounds'],

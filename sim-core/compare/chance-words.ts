@@ -1,4 +1,4 @@
-import type { BeforeDrought } from '#sim-core/index.ts';
+import type { BeforeDrought } from '#sim-core/ensemble/next-drought.ts';
 
 /** Whole futures of 100, for people who decide. */
 export const of100 = (share: number): number => Math.round(100 * share);

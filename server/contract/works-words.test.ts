@@ -1,4 +1,3 @@
-// @vitest-environment node
 import { expect, it } from 'vitest';
 import type { Action, Clumps } from '#sim-core/spec/run-spec.ts';
 import { placeOf, worksByYear, worksInWords, workInWords } from './works-words.ts';
