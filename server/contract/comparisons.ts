@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { driest, wettest } from '#sim-core/spec/limits.ts';
 import { runSpecFields, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import { replicateRecordSchema } from '#sim-core/spec/replicate-record.ts';
+import { expectedLossesSchema, trendSchema } from '#sim-core/spec/outlook-changes.ts';
 import { weatherSourceSchema } from '#sim-core/spec/weather-source.ts';
 import { endpoint, id, instant, sha256, text } from './endpoint.ts';
 import { gridSchema } from './grid.ts';
@@ -14,9 +15,18 @@ export const mostReplicates = 2000;
 /** What all runs of a comparison share: a RunSpec without what an option, an outlook or a replicate decides. */
 export const commonSchema = z
   .strictObject(runSpecFields)
-  .omit({ replicate: true, droughtIndex: true, actions: true, reportYears: true });
+  .omit({ replicate: true, droughtIndex: true, trend: true, losses: true, actions: true, reportYears: true });
 
-const outlookSchema = z.strictObject({ name: text(100), droughtIndex: weatherSourceSchema });
+const outlookSchema = z.strictObject({
+  name: text(100),
+  droughtIndex: weatherSourceSchema,
+  trend: trendSchema.optional(),
+  /** losses that come under every option */
+  losses: expectedLossesSchema.optional(),
+  /** false: the grazers that the plant names stay away */
+  grazing: z.boolean().optional(),
+});
+export type ComparedOutlook = z.infer<typeof outlookSchema>;
 const money = z.number().min(0).max(1e12);
 
 const stopRuleSchema = z.strictObject({
@@ -69,10 +79,14 @@ export function replicateSpec(
   outlook: number,
   replicate: number,
 ): RunSpec {
+  const { droughtIndex, trend, losses, grazing = true } = outlooks[outlook];
   return {
     ...common,
+    processes: grazing ? common.processes : { ...common.processes, grazers: undefined },
     replicate,
-    droughtIndex: outlooks[outlook].droughtIndex,
+    droughtIndex,
+    ...(trend && { trend }),
+    ...(losses && { losses }),
     actions: options[option].actions,
   };
 }

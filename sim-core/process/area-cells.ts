@@ -25,6 +25,12 @@ export function areaCells(area: Area, grid: Grid): AreaCells {
   return { cells: Uint32Array.from(cells), share: 1 };
 }
 
+/** Every cell of a grid. */
+export const wholeGrid = ({ width, height }: Pick<Grid, 'width' | 'height'>): AreaCells => ({
+  cells: Uint32Array.from({ length: width * height }, (_, cell) => cell),
+  share: 1,
+});
+
 /** Share of a cell that a disc smaller than it takes. */
 export const discShare = (radius: number, grid: Grid): number =>
   Math.min(1, (Math.PI * radius * radius) / (grid.cellSize * grid.cellSize));

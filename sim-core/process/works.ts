@@ -3,7 +3,8 @@ import { binomialQuantile } from '#sim-core/random/binomial.ts';
 import { cellLuck, processes } from '#sim-core/random/cell-luck.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
 import type { Action, Clumps, Mound } from '#sim-core/spec/run-spec.ts';
-import { areaCells, type AreaCells } from './area-cells.ts';
+import { areaCells, wholeGrid, type AreaCells } from './area-cells.ts';
+import type { DatedLoss } from './expected-losses.ts';
 import { standingFences, type Fence } from './fences.ts';
 import { moundStrengths, type MoundStrengths } from './mound-strengths.ts';
 import { plantedClumps, setPlantedClumps, type PlantedClumps } from './planted-clumps.ts';
@@ -34,14 +35,33 @@ export interface Works {
 /**
  * @param capacity K of each cell, where it is known: clumps on ground that cannot hold the plant are then among the
  *   problems
+ * @param losses of the outlook, which come before those of the option, so that options share their luck in them
  */
-export function prepareWorks(actions: readonly Action[], grid: Grid, capacity?: Uint8Array): Works {
+export function prepareWorks(
+  actions: readonly Action[],
+  grid: Grid,
+  capacity?: Uint8Array,
+  losses: readonly DatedLoss[] = [],
+): Works {
   const years = new Map<number, YearWorks>();
   const fences: Fence[] = [];
   const problems: FieldProblem[] = [];
+  const worksOf = (year: number): YearWorks => {
+    const works = years.get(year) ?? { plantings: [], clumps: [], mounds: [], losses: [] };
+    years.set(year, works);
+    return works;
+  };
+  losses.forEach(({ years: met, share, area }, i) => {
+    const cells = area ? areaCells(area, grid) : wholeGrid(grid);
+    if (cells.cells.length === 0)
+      problems.push({
+        field: `losses.${i}.area`,
+        message: 'This loss reaches no cell of the grid: move it onto the site',
+      });
+    for (const year of met) worksOf(year).losses.push({ ...cells, loss: share });
+  });
   actions.forEach((action, i) => {
-    const works = years.get(action.year) ?? { plantings: [], clumps: [], mounds: [], losses: [] };
-    years.set(action.year, works);
+    const works = worksOf(action.year);
     if (action.kind === 'clumps') {
       const planted = plantedClumps(action, grid, capacity);
       works.clumps.push(planted);

@@ -6,6 +6,7 @@ export type Purpose =
   | `events/${number}`
   | `fragments/${number}`
   | `weather/${number}`
+  | `losses/${number}/${number}`
   | `parameters`
   | `survey`
   | `screening`

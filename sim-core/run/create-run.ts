@@ -7,6 +7,7 @@ import { closingYears, referenceSum } from '#sim-core/measure/closing.ts';
 import { measureCover } from '#sim-core/measure/cover-measures.ts';
 import { recoveredYear } from '#sim-core/measure/recovery.ts';
 import { scatterFragments, type FragmentMap } from '#sim-core/process/fragments.ts';
+import { datedLosses } from '#sim-core/process/expected-losses.ts';
 import { grazerTaps } from '#sim-core/process/grazers.ts';
 import { prepareWorks } from '#sim-core/process/works.ts';
 import { philoxKey } from '#sim-core/random/streams.ts';
@@ -70,7 +71,7 @@ export function createRun(
   const { width, height, cellSize } = grid;
   const { capacity, vigour, exposure, refuge, fence } = ground;
   const { seed, replicate, mode, boundary, rates, surveyYear, stepsPerYear } = spec;
-  const works = prepareWorks(spec.actions, grid, capacity);
+  const works = prepareWorks(spec.actions, grid, capacity, datedLosses(spec));
   if (works.problems.length > 0) throw new RunProblem(works.problems);
   const { grazers, fragments } = spec.processes;
   const fitted = fitKernel(rates, cellSize, stepsPerYear);

@@ -1,5 +1,6 @@
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { grazerTaps } from '#sim-core/process/grazers.ts';
+import { datedLosses } from '#sim-core/process/expected-losses.ts';
 import { prepareWorks } from '#sim-core/process/works.ts';
 import type { FieldProblem } from '#sim-core/spec/problems.ts';
 import type { RunSpec } from '#sim-core/spec/run-spec.ts';
@@ -8,7 +9,7 @@ import { RunProblem } from './run-problem.ts';
 
 /** What makes a spec impossible on a grid, whatever its layers hold; empty when nothing does. */
 export const gridProblems = (spec: RunSpec, grid: Grid): FieldProblem[] => [
-  ...prepareWorks(spec.actions, grid).problems,
+  ...prepareWorks(spec.actions, grid, undefined, datedLosses(spec)).problems,
   ...rateProblems(spec, grid.cellSize),
 ];
 

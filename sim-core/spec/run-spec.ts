@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { weatherProblems } from '#sim-core/weather/weather-problems.ts';
 import { layerSourcesSchema } from './layer-source.ts';
 import { maximumYears } from './limits.ts';
+import { expectedLossesSchema, trendSchema } from './outlook-changes.ts';
 import { parameters, type Rates } from './parameters.ts';
 import { areaSchema, coordinate, maximumPlaces, moundFields, share } from './places.ts';
 import { processesSchema } from './processes.ts';
@@ -86,6 +87,10 @@ export const runSpecFields = {
   processes: processesSchema.default({}),
   /** a list, or a source from which each replicate draws its own */
   droughtIndex: weatherSourceSchema.default(0),
+  /** what makes the weather drier or wetter as time goes on; none unless given */
+  trend: trendSchema.optional(),
+  /** losses that come under every option; none unless given */
+  losses: expectedLossesSchema.optional(),
   actions: z.array(actionSchema).max(maximumPlaces).default([]),
   /** share of the reference cover that counts as recovered */
   target: z.number().gt(0).max(1).default(0.9),
@@ -103,6 +108,21 @@ export const runSpecSchema = z.strictObject(runSpecFields).superRefine((spec, co
     context.addIssue({ code: 'custom', path, message });
   for (const { field, message } of weatherProblems(spec.droughtIndex, spec))
     say(['droughtIndex', ...field.split('.').filter(Boolean)], message);
+  const source = spec.droughtIndex;
+  const frequency = spec.trend?.frequencyPerDecade ?? 1;
+  const renews = typeof source === 'object' && 'kind' in source && source.kind === 'renewal';
+  if (frequency !== 1 && !renews)
+    say(
+      ['trend', 'frequencyPerDecade'],
+      `Found ${frequency}; only droughts that come back (kind renewal) can come more often. Use shiftPerDecade`,
+    );
+  spec.losses?.forEach((loss, i) => {
+    const [from, until] = 'year' in loss ? [loss.year, loss.year] : [loss.from ?? first, loss.until ?? last];
+    const field = 'year' in loss ? 'year' : until < from ? 'until' : 'from';
+    if (until < from) say(['losses', i, field], `Found ${until}, before it may first come in ${from}`);
+    else if (until < first || from > last)
+      say(['losses', i, field], `Falls outside the simulated years ${first} to ${last}`);
+  });
   spec.actions.forEach((action, i) => {
     if (action.year < first || action.year > last)
       say(

@@ -47,6 +47,8 @@ const palmerType = z.strictObject({
   mean: index.optional(),
   /** long-run standard deviation of the index */
   standardDeviation: z.number().min(0).max(10),
+  /** share of the index that a year hands on to the next, Palmer's 0.897^12 = 0.271 unless said */
+  memory: z.number().min(0).max(0.999).optional(),
   /** index at the end of the survey year; drawn from the long-run law unless said */
   start: index.optional(),
 });

@@ -1,5 +1,6 @@
 import { normalQuantile } from '#sim-core/numeric/normal.ts';
 import type { DroughtRenewal } from '#sim-core/spec/weather-source.ts';
+import { droughtClock, type DroughtClock } from './trend.ts';
 import { remainingWait, waitExceededWith } from './waiting-law.ts';
 
 /**
@@ -10,6 +11,7 @@ import { remainingWait, waitExceededWith } from './waiting-law.ts';
  * horizon begins with the same years.
  *
  * @param uniform draws strictly between 0 and 1
+ * @param clock by which droughts come back where a trend makes them more or less frequent; lengths stay as they are
  * @returns Float64, one value a step
  */
 export function drawRenewal(
@@ -17,22 +19,26 @@ export function drawRenewal(
   steps: number,
   stepsPerYear: number,
   uniform: () => number,
+  clock: DroughtClock = droughtClock({}),
 ): Float64Array {
   const { returnInterval, sinceLatest, depth, depthSpread = 0, length, between = 0 } = renewal;
   const indices = new Float64Array(steps).fill(between);
   /** first step whose middle comes at or after a time in years from the end of the survey year */
   const stepFrom = (time: number) => Math.max(0, Math.ceil(time * stepsPerYear - 0.5));
   let begins = -sinceLatest;
+  /** the same on the clock of droughts */
+  let time = -sinceLatest;
   let waited = sinceLatest;
   while (stepFrom(begins) < steps) {
     const index = Math.min(between, depth + depthSpread * normalQuantile(uniform()));
     const ends = begins + waitExceededWith(length, uniform());
     const wait = uniform();
-    const next =
+    time =
       waited > 0
         ? remainingWait(returnInterval, waited, wait)
-        : begins + waitExceededWith(returnInterval, wait);
+        : time + waitExceededWith(returnInterval, wait);
     waited = 0;
+    const next = clock.yearsAt(time);
     indices.fill(index, stepFrom(begins), stepFrom(Math.min(ends, next)));
     begins = next;
   }

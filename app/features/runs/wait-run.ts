@@ -11,10 +11,16 @@ export function sameOutlook(a: RunSpec, b: RunSpec): boolean {
     years,
     stepsPerYear,
     droughtIndex,
+    trend,
+    losses,
+    processes,
     rates,
     layers,
   }: RunSpec) =>
-    JSON.stringify([mode, seed, replicate, surveyYear, years, stepsPerYear, droughtIndex, rates, layers]);
+    JSON.stringify([
+      ...[mode, seed, replicate, surveyYear, years, stepsPerYear],
+      ...[droughtIndex, trend, losses, processes, rates, layers],
+    ]);
   return part(a) === part(b);
 }
 

@@ -109,6 +109,9 @@ async function comparedOptions(
   });
 }
 
+/** Fields of a run that its outlook decides. */
+const ofOutlook = /^(droughtIndex|trend|losses)/;
+
 async function planProblems(manager: Manager, site: SiteRow, plan: ComparisonPlan): Promise<FieldProblem[]> {
   const problems: FieldProblem[] = [];
   const { surveyYear, years } = plan.common;
@@ -120,14 +123,19 @@ async function planProblems(manager: Manager, site: SiteRow, plan: ComparisonPla
       });
   });
   for (const [o] of plan.outlooks.entries()) {
-    const parsed = runSpecSchema.safeParse({ ...replicateSpec(plan, 0, o, 0), actions: [] });
-    if (!parsed.success)
-      problems.push(
-        ...fieldProblems(parsed.error).map(({ field, message }) => ({
-          field: field.startsWith('droughtIndex') ? `outlooks.${o}.${field}` : `common.${field}`,
-          message,
-        })),
-      );
+    const spec = { ...replicateSpec(plan, 0, o, 0), actions: [] };
+    const parsed = runSpecSchema.safeParse(spec);
+    const found = parsed.success
+      ? checkOnGrid(spec, site)
+          .map(({ field, message }) => ({ field: field.slice('spec.'.length), message }))
+          .filter(({ field }) => ofOutlook.test(field))
+      : fieldProblems(parsed.error);
+    problems.push(
+      ...found.map(({ field, message }) => ({
+        field: ofOutlook.test(field) ? `outlooks.${o}.${field}` : `common.${field}`,
+        message,
+      })),
+    );
   }
   for (const [i, option] of plan.options.entries()) {
     const spec = replicateSpec(plan, i, 0, 0);
@@ -147,7 +155,7 @@ async function planProblems(manager: Manager, site: SiteRow, plan: ComparisonPla
   const first = replicateSpec(plan, 0, 0, 0);
   const common = [
     ...(await checkLayers(manager, site.id, first)),
-    ...checkOnGrid({ ...first, actions: [] }, site),
+    ...checkOnGrid({ ...first, actions: [], losses: [] }, site),
   ];
   problems.push(
     ...common.map(({ field, message }) => ({ field: field.replace(/^spec/, 'common'), message })),

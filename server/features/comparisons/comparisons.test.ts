@@ -5,6 +5,7 @@ import type { Option } from '#contract/options.ts';
 import type { Problem } from '#contract/problem.ts';
 import type { Site } from '#contract/sites.ts';
 import { decodeCellValues } from '#rasters/cells/cell-values.ts';
+import { processesSchema } from '#sim-core/spec/processes.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import { binaryReply } from '#server/testing/binary-reply.ts';
 import { optionsOf, planFor, replicateOf, startTestComparison } from '#server/testing/comparisons.ts';
@@ -72,6 +73,42 @@ describe('a comparison', () => {
       total: 1,
       comparisons: [{ options: ['Wait', 'Mounds'], outlooks: ['As drawn'], replicates: 8, done: 0 }],
     });
+  });
+
+  it('carries what each outlook changes into its runs, and nothing where it changes nothing', () => {
+    const processes = { grazers: processesSchema.parse({ grazers: {} }).grazers, fragments: undefined };
+    const plan = {
+      common: { seed: 'low tide', processes } as unknown as Comparison['plan']['common'],
+      options: [{ actions: [] } as unknown as Comparison['plan']['options'][number]],
+      outlooks: [
+        { name: 'As recorded', droughtIndex: -1 },
+        {
+          ...{ name: 'Drier, no snails', droughtIndex: -1, grazing: false },
+          ...{ trend: { shiftPerDecade: -0.3 }, losses: [{ year: 2030, share: 0.2 }] },
+        },
+      ],
+    };
+    const [plain, changed] = [replicateSpec(plan, 0, 0, 0), replicateSpec(plan, 0, 1, 0)];
+    expect(Object.keys(plain)).toEqual(['seed', 'processes', 'replicate', 'droughtIndex', 'actions']);
+    expect(plain.processes.grazers).toBeDefined();
+    expect(changed).toMatchObject({
+      trend: { shiftPerDecade: -0.3 },
+      losses: [{ year: 2030, share: 0.2 }],
+      processes: { grazers: undefined },
+    });
+  });
+
+  it('refuses a loss that lies off the site at its outlook', async () => {
+    const plan = planFor(site, await optionsOf(team.agents.manager, site.id));
+    const area = { shape: 'disc', x: 1e7, y: 1e7, radius: 3 };
+    const outlooks = [
+      { ...plan.outlooks[0], losses: [{ year: site.outlook.surveyYear + 1, share: 0.5, area }] },
+    ];
+    const { body } = await team.agents.manager
+      .post(`/api/sites/${site.id}/comparisons`)
+      .send({ ...plan, outlooks })
+      .expect(400);
+    expect((body as Problem).fields?.map(({ field }) => field)).toEqual(['outlooks.0.losses.0.area']);
   });
 
   it('takes replicates piece by piece, and a repeated piece once', async () => {
