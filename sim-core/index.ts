@@ -27,6 +27,10 @@ export { coverFan, fanShares, type CoverFan } from './ensemble/cover-fan.ts';
 export { closingMaps, type ClosingCounts, type ClosingMaps } from './ensemble/closing-maps.ts';
 export { recordReplicate } from './ensemble/replicate-record.ts';
 export { nextDroughtYear, type BeforeDrought } from './ensemble/next-drought.ts';
+export { beliefQuantile, centralValue, cutShare } from './belief/belief-quantile.ts';
+export { ratesOfRun, uncertainNames, withRates, type RatesOfRun } from './belief/rates-of-run.ts';
+export type { Belief, BeliefLaw } from './spec/belief.ts';
+export type { Beliefs, DrawnRates, Uncertain } from './spec/uncertain.ts';
 export { latinHypercube } from './ensemble/latin-hypercube.ts';
 export { rankCorrelation } from './ensemble/rank-correlation.ts';
 export {

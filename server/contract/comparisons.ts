@@ -3,6 +3,7 @@ import { driest, wettest } from '#sim-core/spec/limits.ts';
 import { runSpecFields, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import { replicateRecordSchema } from '#sim-core/spec/replicate-record.ts';
 import { expectedLossesSchema, trendSchema } from '#sim-core/spec/outlook-changes.ts';
+import { beliefsThatApply } from '#sim-core/spec/uncertain.ts';
 import { weatherSourceSchema } from '#sim-core/spec/weather-source.ts';
 import { endpoint, id, instant, sha256, text } from './endpoint.ts';
 import { gridSchema } from './grid.ts';
@@ -80,9 +81,13 @@ export function replicateSpec(
   replicate: number,
 ): RunSpec {
   const { droughtIndex, trend, losses, grazing = true } = outlooks[outlook];
+  const { uncertain, ...fixed } = common;
+  const processes = grazing ? common.processes : { ...common.processes, grazers: undefined };
+  const beliefs = uncertain && beliefsThatApply(uncertain, processes);
   return {
-    ...common,
-    processes: grazing ? common.processes : { ...common.processes, grazers: undefined },
+    ...fixed,
+    processes,
+    ...(beliefs && { uncertain: beliefs }),
     replicate,
     droughtIndex,
     ...(trend && { trend }),

@@ -55,6 +55,22 @@ const runAll = async (specs: ReturnType<typeof specOf>[], inOrder = true) => {
   return { outcomes, failures, order };
 };
 
+test('what replicates draw does not hang on how many workers there are', async () => {
+  const uncertain = {
+    draws: 6,
+    rates: { lateralSpread: { law: 'uniform', low: 0.4, high: 1.5 } },
+  } as const;
+  const specs = Array.from({ length: 6 }, (_, r) => specOf({ replicate: r, uncertain }));
+  const digests: string[][] = [];
+  for (const workers of [1, 2]) {
+    pool = createRunPool({ grid, ground, workers });
+    digests.push((await runAll(specs)).outcomes.map(({ result }) => result.digest));
+    await pool.close();
+  }
+  expect(digests[0]).toHaveLength(6);
+  expect(digests[1]).toEqual(digests[0]);
+});
+
 test.each([1, 2, 4])('%d workers come to the same as this thread', async (workers) => {
   pool = createRunPool({ grid, ground, workers });
   const specs = Array.from({ length: 6 }, (_, r) => replicate(r));

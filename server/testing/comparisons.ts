@@ -51,5 +51,6 @@ export const replicateOf = (replicate: number, changes: Partial<ReplicateRecord>
   coveredArea: [1, 2, 3, 4, 5],
   droughtIndex: [0.5, -1, -2, 0],
   lost: { drought: 1, background: 0, grazing: 0, events: 0 },
+  drawn: {},
   ...changes,
 });

@@ -20,6 +20,7 @@ const record = (replicate: number, recovers: number | null, drought: number | nu
   coveredArea: Array.from({ length: 13 }, (_, i) => i + replicate),
   droughtIndex: new Array<number>(12).fill(0),
   lost: { drought: 10, background: 2, grazing: 0, events: replicate },
+  drawn: {},
 });
 const ensemble = (...times: [recovers: number | null, drought: number | null][]) =>
   new Map(times.map(([recovers, drought], i) => [i, record(i, recovers, drought)] as const));

@@ -1,3 +1,4 @@
+import { ratesOfRun, type RatesInput } from '#sim-core/belief/rates-of-run.ts';
 import { lostYear } from '#sim-core/measure/recovery.ts';
 import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import type { RunResult, SeriesRow } from '#sim-core/spec/run-result.ts';
@@ -11,7 +12,7 @@ import { nextDroughtYear } from './next-drought.ts';
  */
 export function recordReplicate(
   { series, recoveredYear, digest }: Pick<RunResult, 'series' | 'recoveredYear' | 'digest'>,
-  spec: Pick<RunSpec, 'replicate' | 'surveyYear' | 'years' | 'stepsPerYear' | 'target'>,
+  spec: Pick<RunSpec, 'surveyYear' | 'years' | 'stepsPerYear' | 'target'> & RatesInput,
   droughtThreshold: number,
 ): ReplicateRecord {
   const { replicate, years, stepsPerYear, target } = spec;
@@ -33,5 +34,6 @@ export function recordReplicate(
       grazing: total((row) => row.lostToGrazing),
       events: total((row) => row.lostToEvents),
     },
+    drawn: ratesOfRun(spec).drawn,
   };
 }

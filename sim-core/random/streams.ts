@@ -8,6 +8,7 @@ export type Purpose =
   | `weather/${number}`
   | `losses/${number}/${number}`
   | `parameters`
+  | `parameters/${number}/${string}`
   | `survey`
   | `screening`
   | `indices`

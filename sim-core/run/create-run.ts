@@ -1,3 +1,4 @@
+import { ratesOfRun } from '#sim-core/belief/rates-of-run.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { groundLayers, type Ground } from '#sim-core/grid/ground.ts';
 import { clumpSites } from '#sim-core/kernel/clump-sites.ts';
@@ -70,10 +71,11 @@ export function createRun(
   refuseOtherSizes(grid, ground);
   const { width, height, cellSize } = grid;
   const { capacity, vigour, exposure, refuge, fence } = ground;
-  const { seed, replicate, mode, boundary, rates, surveyYear, stepsPerYear } = spec;
+  const { seed, replicate, mode, boundary, surveyYear, stepsPerYear } = spec;
+  const { rates, processes } = ratesOfRun(spec);
   const works = prepareWorks(spec.actions, grid, capacity, datedLosses(spec));
   if (works.problems.length > 0) throw new RunProblem(works.problems);
-  const { grazers, fragments } = spec.processes;
+  const { grazers, fragments } = processes;
   const fitted = fitKernel(rates, cellSize, stepsPerYear);
   const step = stepRates(rates, stepsPerYear);
   const counts = mode === 'counts';

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { drawnRatesSchema } from './uncertain.ts';
 
 const area = z.number().min(0);
 
@@ -19,5 +20,7 @@ export const replicateRecordSchema = z.strictObject({
   droughtIndex: z.array(z.number()).max(500),
   /** covered area lost over all years, by cause */
   lost: z.strictObject({ drought: area, background: area, grazing: area, events: area }),
+  /** the rates that it drew, in their units; none where all rates are fixed, as they were in the first records */
+  drawn: drawnRatesSchema.default({}),
 });
 export type ReplicateRecord = z.infer<typeof replicateRecordSchema>;

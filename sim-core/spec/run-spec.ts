@@ -7,6 +7,7 @@ import { parameters, type Rates } from './parameters.ts';
 import { areaSchema, coordinate, maximumPlaces, moundFields, share } from './places.ts';
 import { processesSchema } from './processes.ts';
 import { rateSchema } from './rate-schema.ts';
+import { uncertainProblems, uncertainSchema } from './uncertain.ts';
 import { weatherSourceSchema } from './weather-source.ts';
 
 // A spec's parts are had from here, wherever they are written.
@@ -85,6 +86,8 @@ export const runSpecFields = {
   boundary: boundarySchema.default('mirror'),
   rates: ratesSchema,
   processes: processesSchema.default({}),
+  /** rates that each replicate draws for itself; the values above are then those of no replicate */
+  uncertain: uncertainSchema.optional(),
   /** a list, or a source from which each replicate draws its own */
   droughtIndex: weatherSourceSchema.default(0),
   /** what makes the weather drier or wetter as time goes on; none unless given */
@@ -123,6 +126,8 @@ export const runSpecSchema = z.strictObject(runSpecFields).superRefine((spec, co
     else if (until < first || from > last)
       say(['losses', i, field], `Falls outside the simulated years ${first} to ${last}`);
   });
+  for (const { field, message } of spec.uncertain ? uncertainProblems(spec.uncertain, spec.processes) : [])
+    say(['uncertain', ...field.split('.')], message);
   spec.actions.forEach((action, i) => {
     if (action.year < first || action.year > last)
       say(

@@ -2,6 +2,7 @@ import { exp } from '#sim-core/numeric/exp.ts';
 import { log } from '#sim-core/numeric/log.ts';
 import { RunProblem } from '#sim-core/run/run-problem.ts';
 import type { Rates } from '#sim-core/spec/parameters.ts';
+import type { FieldProblem } from '#sim-core/spec/problems.ts';
 import type { StepsPerYear } from '#sim-core/spec/run-spec.ts';
 import { latticeSpeed } from './lattice-speed.ts';
 import {
@@ -59,27 +60,28 @@ export function frontSpeed(
 }
 
 /**
- * The spread kernel that gives a straight front the speed `lateralSpread`, by bisection on ln t: the speed rises with t.
+ * What keeps any kernel from giving a straight front the speed `lateralSpread` on such cells and steps, at
+ * `rates.<name>`, with the cell size or rate that would; empty where one does.
  *
  * @param cellSize Δx, m
- * @throws RunProblem at `rates.lateralSpread` where no kernel gives that speed on such cells and steps, with the cell
- * size or rate that would
  */
-export function fitKernel(rates: SpreadRates, cellSize: number, stepsPerYear: StepsPerYear): FittedKernel {
+export function spreadProblems(
+  rates: SpreadRates,
+  cellSize: number,
+  stepsPerYear: StepsPerYear,
+): FieldProblem[] {
   const wanted = rates.lateralSpread;
   const speed = (variance: number) => frontSpeed(rates, cellSize, stepsPerYear, variance);
   if (!(wanted > 0) || !(rates.fillRate > 0))
-    throw new RunProblem(
-      (['lateralSpread', 'fillRate'] as const)
-        .filter((name) => !(rates[name] > 0))
-        .map((name) => ({
-          field: `rates.${name}`,
-          message: `Found ${rates[name]}; a front advances only where this is above 0`,
-        })),
-    );
+    return (['lateralSpread', 'fillRate'] as const)
+      .filter((name) => !(rates[name] > 0))
+      .map((name) => ({
+        field: `rates.${name}`,
+        message: `Found ${rates[name]}; a front advances only where this is above 0`,
+      }));
   const slowest = speed(smallestVariance);
   if (wanted < slowest)
-    throw new RunProblem([
+    return [
       {
         field: 'rates.lateralSpread',
         message:
@@ -88,10 +90,10 @@ export function fitKernel(rates: SpreadRates, cellSize: number, stepsPerYear: St
           `a year no kernel is that slow. Use cells of ${figure(roundDown((cellSize * wanted) / slowest))} m or ` +
           `less, or a lateral spread of ${figure(roundUp(slowest))} m/yr or more`,
       },
-    ]);
+    ];
   const fastest = speed(largestVariance);
   if (wanted > fastest)
-    throw new RunProblem([
+    return [
       {
         field: 'rates.lateralSpread',
         message:
@@ -99,8 +101,20 @@ export function fitKernel(rates: SpreadRates, cellSize: number, stepsPerYear: St
           `wider than ${widestRadius} cells. Use cells of ${figure(roundUp((cellSize * wanted) / fastest))} m or more, ` +
           `or a lateral spread of ${figure(roundDown(fastest))} m/yr or less`,
       },
-    ]);
-  const variance = varianceFor(wanted, speed);
+    ];
+  return [];
+}
+
+/**
+ * The spread kernel that gives a straight front the speed `lateralSpread`, by bisection on ln t: the speed rises with t.
+ *
+ * @param cellSize Δx, m
+ * @throws RunProblem with the `spreadProblems` where there are any
+ */
+export function fitKernel(rates: SpreadRates, cellSize: number, stepsPerYear: StepsPerYear): FittedKernel {
+  const problems = spreadProblems(rates, cellSize, stepsPerYear);
+  if (problems.length > 0) throw new RunProblem(problems);
+  const variance = varianceFor(rates.lateralSpread, (t) => frontSpeed(rates, cellSize, stepsPerYear, t));
   const taps = discreteGaussian(variance);
   const { carryOver, recruits } = stepRates({ ...rates, seedlingRate: 0 }, stepsPerYear);
   const cut = (cosine: number, sine: number) =>

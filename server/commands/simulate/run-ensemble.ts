@@ -1,8 +1,10 @@
 import { csv } from '#server/files/csv.ts';
 import { seriesColumns } from '#server/files/series-csv.ts';
 import { createRunPool } from '#server/jobs/run-pool.ts';
+import { ratesOfRun, uncertainNames } from '#sim-core/belief/rates-of-run.ts';
 import { attemptsOfRun, WorkerDied } from '#sim-core/ensemble/runner.ts';
-import type { RunResult } from '#sim-core/index.ts';
+import { RunProblem, type RunResult } from '#sim-core/index.ts';
+import { drawProblems } from '#sim-core/run/draw-problems.ts';
 import { frameYears, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import { ensembleMaps } from './ensemble-maps.ts';
 import type { GroundOnFile } from './read-ground.ts';
@@ -22,6 +24,8 @@ export async function runEnsemble(
   { open, tell, workers }: SpecFileWork,
 ): Promise<void> {
   const { grid, ground } = onFile;
+  const problems = drawProblems(spec, grid.cellSize, replicates);
+  if (problems.length > 0) throw new RunProblem(problems);
   const years = frameYears(spec);
   const maps = ensembleMaps(grid.width * grid.height, years, replicates);
   const results: RunResult[] = [];
@@ -60,6 +64,7 @@ export async function runEnsemble(
   const closingName = 'year by which half of the replicates have closed, 0 still open';
   await folder.write('closing.tif', closingMap(onFile, closingName, maps.medianClosing()));
   await folder.write('series.csv', seriesOfAll(results));
+  if (spec.uncertain) await folder.write('draws.csv', drawsOfAll(spec, results));
   const said = { ...spec, replicate: undefined, replicates };
   await folder.write('summary.json', summaryText(outcomeOf(results), results[0], onFile, said));
   await folder.finish();
@@ -79,6 +84,18 @@ const seriesOfAll = (results: readonly RunResult[]): string =>
       series.map((row) => [replicate, ...seriesColumns.map(([key]) => row[key])]),
     ),
   );
+
+/** The rates that each replicate drew and when it recovered, a row a replicate. */
+function drawsOfAll(spec: RunSpec, results: readonly RunResult[]): string {
+  const names = uncertainNames(spec.uncertain!);
+  return csv(
+    ['replicate', ...names, 'recovered_year'],
+    results.map(({ recoveredYear }, replicate) => {
+      const { drawn } = ratesOfRun({ ...spec, replicate });
+      return [replicate, ...names.map((name) => drawn[name]!), recoveredYear];
+    }),
+  );
+}
 
 const outcomeOf = (results: readonly RunResult[]) => ({
   replicates: results.map(({ digest, recoveredYear }, replicate) => ({ replicate, digest, recoveredYear })),

@@ -1,6 +1,7 @@
 import { readFile } from 'node:fs/promises';
 import { setImmediate as nextTurn } from 'node:timers/promises';
 import { seriesCsv } from '#server/files/series-csv.ts';
+import { ratesOfRun } from '#sim-core/belief/rates-of-run.ts';
 import { createRun, RunProblem } from '#sim-core/index.ts';
 import { frameYears, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import { parseHeadlessSpec } from './headless-spec.ts';
@@ -50,6 +51,7 @@ async function runOnce(spec: RunSpec, onFile: GroundOnFile, { open, tell }: Spec
   await folder.write('closing.tif', closingMap(onFile, 'closing year, 0 still open', run.closing()));
   await folder.write('series.csv', seriesCsv(result.series));
   const { digest, recoveredYear } = result;
-  await folder.write('summary.json', summaryText({ digest, recoveredYear }, result, onFile, spec));
+  const drawn = spec.uncertain && ratesOfRun(spec).drawn;
+  await folder.write('summary.json', summaryText({ digest, recoveredYear, drawn }, result, onFile, spec));
   await folder.finish();
 }

@@ -183,6 +183,42 @@ describe('a run on files', () => {
     expect(lines.slice(1).map((line) => line.split(',')[0])).toEqual([...'000001111122222']);
   });
 
+  test('uncertain rates: a table of draws, and replicates that are the engine’s own', async () => {
+    const uncertain = {
+      draws: 3,
+      rates: {
+        lateralSpread: { law: 'uniform', low: 0.3, high: 1.2 },
+        tolerance: { law: 'normal', mean: -2.3, standardDeviation: 0.5 },
+      },
+    };
+    await writeSpec({ ...plain, uncertain, replicates: 3 });
+    expect(await run('spec.json', '--out', 'out')).toBe(0);
+    const lines = (await readText('out', 'draws.csv')).trim().split('\r\n');
+    expect(lines[0]).toBe('replicate,lateralSpread,tolerance,recovered_year');
+    const spreads = lines.slice(1).map((line) => Number(line.split(',')[1]));
+    expect(spreads.map((x) => Math.floor(((x - 0.3) / 0.9) * 3)).sort()).toEqual([0, 1, 2]);
+    const summary = await summaryOf('out');
+    for (const replicate of [0, 1, 2]) {
+      const [, lateralSpread, tolerance] = lines[replicate + 1].split(',').map(Number);
+      const alone = engine({ replicate, rates: { ...plain.rates, lateralSpread, tolerance } }).result;
+      expect(summary.replicates[replicate].digest).toBe(alone.digest);
+    }
+    await writeSpec({ ...plain, uncertain, replicate: 1 });
+    expect(await run('spec.json', '--out', 'one')).toBe(0);
+    expect(await summaryOf('one')).toMatchObject({
+      digest: summary.replicates[1].digest,
+      drawn: { lateralSpread: spreads[1] },
+    });
+  });
+
+  test('draws that cannot be run are refused before anything is written', async () => {
+    const lateralSpread = { law: 'uniform', low: 0.005, high: 0.5 };
+    await writeSpec({ ...plain, uncertain: { draws: 8, rates: { lateralSpread } }, replicates: 8 });
+    expect(await run('spec.json', '--out', 'out')).toBe(1);
+    expect(said).toMatch(/uncertain\.rates\.lateralSpread: \d of 8 futures draw rates that cannot be run/);
+    await expect(readdir(join(folder, 'out'))).rejects.toThrow(/ENOENT/);
+  });
+
   test('results do not hang on how many replicates run at once', async () => {
     await writeSpec({ ...plain, replicates: 5 });
     expect(await run('spec.json', '--out', 'one', '--workers', '1')).toBe(0);

@@ -8,8 +8,10 @@ import {
   type Comparison,
   type ComparisonPlan,
 } from '#contract/comparisons.ts';
+import { gridSchema } from '#contract/grid.ts';
 import { runActions, worksSchema } from '#contract/works.ts';
 import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
+import { drawProblems } from '#sim-core/run/draw-problems.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import type { ComparisonRow } from '#server/database/entities/comparison.ts';
 import { readJson } from '#server/database/json-column.ts';
@@ -160,7 +162,24 @@ async function planProblems(manager: Manager, site: SiteRow, plan: ComparisonPla
   problems.push(
     ...common.map(({ field, message }) => ({ field: field.replace(/^spec/, 'common'), message })),
   );
+  // Draws are drawn only from beliefs that make sense.
+  if (problems.length === 0) problems.push(...problemsOfDraws(plan, site.cellSize, plan.replicates));
   return problems;
+}
+
+/** What makes any of a plan's futures impossible for the rates that it draws. */
+const problemsOfDraws = ({ common }: ComparisonPlan, cellSize: number, replicates: number): FieldProblem[] =>
+  drawProblems(common, cellSize, replicates).map(({ field, message }) => ({
+    field: `common.${field}`,
+    message,
+  }));
+
+/** @throws ProblemError where a comparison of so many replicates would come to draws that cannot be run */
+function refuseDraws(row: ComparisonRow, replicates: number): void {
+  if (replicates <= row.replicates) return;
+  const { cellSize } = readJson(gridSchema, row.grid);
+  const problems = problemsOfDraws(readJson(comparisonPlanSchema, row.plan), cellSize, replicates);
+  if (problems.length > 0) throw refuseFields(problems);
 }
 
 /** Changes a comparison on which nothing was decided. @throws ProblemError `not-found`, `conflict` */
@@ -215,10 +234,14 @@ export const resumeComparison = (
   replicates: number,
   by: string,
 ): Promise<Comparison> =>
-  change(services, address, by, (row) => ({
-    set: { status: 'running', ending: null, replicates },
-    what: replicates === row.replicates ? 'resumed' : `resumed, for ${replicates} replicates of each option`,
-  }));
+  change(services, address, by, (row) => {
+    refuseDraws(row, replicates);
+    return {
+      set: { status: 'running', ending: null, replicates },
+      what:
+        replicates === row.replicates ? 'resumed' : `resumed, for ${replicates} replicates of each option`,
+    };
+  });
 
 /** @throws ProblemError at `optionId` when the comparison has no such option; `conflict` while it has no replicates */
 export const decide = (
@@ -256,6 +279,7 @@ export const copyComparison = (
 ): Promise<Comparison> =>
   services.write(async (manager) => {
     const original = await requireComparison(manager, siteId, comparisonId);
+    refuseDraws(original, replicates);
     const at = services.clock().toISOString();
     const copy: ComparisonRow = {
       ...original,

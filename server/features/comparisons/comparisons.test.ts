@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { replicateSpec, type Comparison } from '#contract/comparisons.ts';
+import { ratesOfRun } from '#sim-core/belief/rates-of-run.ts';
 import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import type { Option } from '#contract/options.ts';
 import type { Problem } from '#contract/problem.ts';
@@ -154,6 +155,56 @@ describe('a comparison', () => {
       expect((refused.body as Problem).fields?.[0].field).toBe(field);
     }
     await put(comparison, 2, [replicateOf(0)], 404);
+  });
+
+  it('knows what its replicates draw, and refuses other draws and draws that cannot be run', async () => {
+    const { modeller } = team.agents;
+    const { common } = planFor(site, []);
+    const withBelief = (low: number) => ({
+      common: {
+        ...common,
+        uncertain: { draws: 8, rates: { lateralSpread: { law: 'uniform', low, high: 1.5 } } },
+      },
+    });
+    const comparison = await startTestComparison(modeller, site, withBelief(0.8));
+    const drawn = (replicate: number) => ratesOfRun(replicateSpec(comparison.plan, 1, 0, replicate)).drawn;
+    expect(drawn(0).lateralSpread).toBeGreaterThan(0.8);
+    await put(comparison, 1, [replicateOf(0, { drawn: drawn(0) })]);
+    const page = await modeller.get(pathOf(comparison, '/ensembles/1/0/replicates')).expect(200);
+    expect((page.body as { replicates: ReplicateRecord[] }).replicates[0].drawn).toEqual(drawn(0));
+    for (const wrong of [{}, drawn(2)]) {
+      const refused = await put(comparison, 1, [replicateOf(1, { drawn: wrong })], 400);
+      expect((refused.body as Problem).fields?.[0].field).toBe('replicates.0.drawn.lateralSpread');
+    }
+    const clash = await modeller
+      .post(`/api/sites/${site.id}/comparisons`)
+      .send(planFor(site, await optionsOf(modeller, site.id), withBelief(0.005)))
+      .expect(400);
+    expect((clash.body as Problem).fields?.[0]).toMatchObject({
+      field: 'common.uncertain.rates.lateralSpread',
+      message: expect.stringMatching(/of 8 futures draw rates that cannot be run/) as string,
+    });
+    const grazed = await startTestComparison(modeller, site, {
+      ...{ replicates: 2, outlooks: [{ name: 'Ungrazed', droughtIndex: 0, grazing: false }] },
+      common: {
+        ...common,
+        processes: { grazers: {} },
+        uncertain: {
+          draws: 2,
+          rates: {
+            tolerance: { law: 'uniform', low: -3, high: -2 },
+            grazingRate: { law: 'uniform', low: 0, high: 1 },
+          },
+        },
+      },
+    });
+    const ungrazed = ratesOfRun(replicateSpec(grazed.plan, 0, 0, 0)).drawn;
+    expect(Object.keys(ungrazed)).toEqual(['tolerance']);
+    // The first two futures are fine, a later one is not; nobody may go on into that.
+    const some = await startTestComparison(modeller, site, { ...withBelief(0.05), replicates: 2 });
+    const more = await modeller.post(pathOf(some, '/resume')).send({ replicates: 2000 });
+    const all = await modeller.post(pathOf(some, '/copies')).send({ name: 'More', replicates: 2000 });
+    expect([more.status, all.status]).toEqual([400, 400]);
   });
 
   it('stores maps and the counts behind them, each in the place of the one before', async () => {

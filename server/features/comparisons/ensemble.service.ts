@@ -1,6 +1,8 @@
 import type { Readable } from 'node:stream';
-import { comparisonPlanSchema } from '#contract/comparisons.ts';
+import { comparisonPlanSchema, replicateSpec } from '#contract/comparisons.ts';
 import { gridSchema } from '#contract/grid.ts';
+import { ratesOfRun } from '#sim-core/belief/rates-of-run.ts';
+import { anyRateNames } from '#sim-core/spec/all-parameters.ts';
 import { replicateRecordSchema, type ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import type { ComparisonRow } from '#server/database/entities/comparison.ts';
 import type { EnsembleAddress } from '#server/database/entities/comparison-parts.ts';
@@ -50,6 +52,7 @@ export function putReplicates(
     const { row, plan, address } = await requireEnsemble(manager, params);
     requireRunning(row);
     const { surveyYear, years } = plan.common;
+    const { option, outlook } = address;
     replicates.forEach((found, i) => {
       const at = `replicates.${i}`;
       if (found.replicate >= row.replicates)
@@ -67,6 +70,13 @@ export function putReplicates(
           `${at}.droughtIndex`,
           `Found ${found.droughtIndex.length} values; expected ${years}`,
         );
+      const { drawn } = ratesOfRun(replicateSpec(plan, option, outlook, found.replicate));
+      for (const name of anyRateNames)
+        if (found.drawn[name] !== drawn[name])
+          throw fieldProblem(
+            `${at}.drawn.${name}`,
+            `Found ${found.drawn[name] ?? 'nothing'}; replicate ${found.replicate} draws ${drawn[name] ?? 'none'}. Load the page again, so that all use the same engine`,
+          );
       for (const name of ['recoveredYear', 'lostYear', 'droughtYear'] as const) {
         const year = found[name];
         if (year !== null && !(year >= surveyYear && year <= surveyYear + years))
