@@ -1,6 +1,6 @@
 import { spawn, spawnSync } from 'node:child_process';
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { existsSync, lstatSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { dirname, join, resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
@@ -61,7 +61,10 @@ export function ensureInstalled() {
   const [major] = process.versions.node.split('.').map(Number);
   if (major !== 20)
     giveUp(`Foothold runs on Node 20; this is Node ${process.versions.node}. Install Node 20 and try again.`);
-  unlessDone(join(root, 'node_modules/.foothold-installed'), ['package-lock.json'], () => {
+  const packages = join(root, 'node_modules');
+  // A link leads to the packages of another working tree: `npm ci` would empty them for everybody who shares them.
+  if (lstatSync(packages, { throwIfNoEntry: false })?.isSymbolicLink()) return;
+  unlessDone(join(packages, '.foothold-installed'), ['package-lock.json'], () => {
     say('Installing packages (some minutes the first time: the database driver is compiled) …');
     if (run('npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error']) !== 0)
       giveUp(
