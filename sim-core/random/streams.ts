@@ -13,6 +13,9 @@ export type Purpose =
   | `screening`
   | `indices`
   | `bootstrap`
+  | `fit/prior`
+  | `fit/${number}/${number}`
+  | `fit-errors/${number}/${number}`
   | `pattern/${string}`;
 
 /**
