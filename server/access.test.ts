@@ -6,6 +6,7 @@ import * as costs from '#contract/costs.ts';
 import * as ground from '#contract/ground.ts';
 import * as optionFiles from '#contract/option-files.ts';
 import * as options from '#contract/options.ts';
+import * as outlooks from '#contract/outlook-endpoints.ts';
 import * as people from '#contract/people.ts';
 import * as runs from '#contract/runs.ts';
 import * as sites from '#contract/sites.ts';
@@ -88,6 +89,13 @@ const expected: Record<string, string> = {
   'DELETE /api/sites/:siteId/features/:featureId': modellers,
   'PUT /api/sites/:siteId/plant': modellers,
   'PUT /api/sites/:siteId/outlook': modellers,
+  'POST /api/sites/:siteId/outlooks': modellers,
+  'PUT /api/sites/:siteId/outlooks/:outlookId': modellers,
+  'DELETE /api/sites/:siteId/outlooks/:outlookId': modellers,
+  'POST /api/sites/:siteId/outlooks/:outlookId/main': modellers,
+  'GET /api/sites/:siteId/drought-records': everyRole,
+  'POST /api/sites/:siteId/drought-records': modellers,
+  'DELETE /api/sites/:siteId/drought-records/:recordId': modellers,
 
   'GET /api/sites/:siteId/options': everyRole,
   'POST /api/sites/:siteId/options': planners,
@@ -153,7 +161,19 @@ function refusal(rule: string, caller: Caller): number | undefined {
 
 const isEndpoint = (value: unknown): value is Endpoint =>
   typeof value === 'object' && value !== null && 'method' in value && 'path' in value && 'reply' in value;
-const contract = [people, sites, ground, workingGrid, uploads, options, optionFiles, costs, runs, comparisons]
+const contract = [
+  people,
+  sites,
+  outlooks,
+  ground,
+  workingGrid,
+  uploads,
+  options,
+  optionFiles,
+  costs,
+  runs,
+  comparisons,
+]
   .flatMap((module) => Object.values<unknown>({ ...module }))
   .filter(isEndpoint);
 const nameOf = ({ method, path }: Endpoint) => `${method} ${path}`;

@@ -14,6 +14,7 @@ import { workingGridRoutes } from './features/sites/working-grid/working-grid.ro
 import { featureRoutes } from './features/sites/features/feature.routes.ts';
 import { uploadRoutes } from './features/sites/uploads/upload.routes.ts';
 import { layerRoutes } from './features/sites/layer.routes.ts';
+import { outlookRoutes } from './features/sites/outlooks/outlook.routes.ts';
 import { siteRoutes } from './features/sites/site.routes.ts';
 import { memberRoutes } from './features/team/members.routes.ts';
 import { outboxRoutes } from './features/team/outbox.routes.ts';
@@ -32,6 +33,7 @@ export const allRoutes = (services: Services): Route[] => [
   ...teamInviteRoutes(services),
   ...outboxRoutes(services),
   ...siteRoutes(services),
+  ...outlookRoutes(services),
   ...layerRoutes(services),
   ...featureRoutes(services),
   ...uploadRoutes(services),

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { comparisonCautionSchema } from '#sim-core/spec/caution.ts';
 import { driest, wettest } from '#sim-core/spec/limits.ts';
 import { runSpecFields, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import { replicateRecordSchema } from '#sim-core/spec/replicate-record.ts';
@@ -151,6 +152,8 @@ export const comparisonSchema = comparisonSummarySchema.omit({ options: true, ou
   grid: gridSchema,
   crsName: z.string(),
   layers: z.array(z.object({ hash: sha256, noData: z.number().nullable() })),
+  /** where belief outran data when it was started */
+  cautions: z.array(comparisonCautionSchema),
   ensembles: z.array(ensembleSchema),
   /** what happened to it, oldest first */
   events: z.array(z.object({ at: instant, by: z.string(), what: z.string() })),

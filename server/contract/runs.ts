@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { cautionSchema } from '#sim-core/spec/caution.ts';
 import { runResultSchema } from '#sim-core/spec/run-result.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import { endpoint, id, instant, sha256, text } from './endpoint.ts';
@@ -48,6 +49,8 @@ export const runSchema = runSummarySchema.extend({
   ),
   /** years that have a stored frame, ascending */
   storedYears: z.array(z.number().int()),
+  /** where belief outran data when it was started */
+  cautions: z.array(cautionSchema),
   hasClosing: z.boolean(),
   result: runResultSchema.nullable(),
 });

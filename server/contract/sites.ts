@@ -1,12 +1,12 @@
 import { z } from 'zod';
-import { maximumYears } from '#sim-core/spec/limits.ts';
-import { boundarySchema, ratesSchema, stepsPerYearSchema } from '#sim-core/spec/run-spec.ts';
+import { ratesSchema } from '#sim-core/spec/run-spec.ts';
 import { processesSchema } from '#sim-core/spec/processes.ts';
-import { drawnWeatherSchema } from '#sim-core/spec/weather-source.ts';
+import { siteRecordSchema } from './drought-records.ts';
 import { endpoint, id, instant, text } from './endpoint.ts';
 import { featureSchema } from './features.ts';
 import { gridSchema } from './grid.ts';
 import { elevationCurvesSchema, layerPartSchema, layerSchema, tidalDatumsSchema } from './layers.ts';
+import { otherOutlookSchema, outlookSchema } from './outlooks.ts';
 
 export const plantSchema = z.strictObject({
   name: text(100),
@@ -15,24 +15,6 @@ export const plantSchema = z.strictObject({
   processes: processesSchema.optional(),
 });
 export type Plant = z.infer<typeof plantSchema>;
-
-export const outlookSchema = z
-  .strictObject({
-    /** year of the survey; the first simulated year is the next one */
-    surveyYear: z.number().int().min(1000).max(9000),
-    years: z.number().int().min(1).max(maximumYears),
-    stepsPerYear: stepsPerYearSchema,
-    boundary: boundarySchema,
-    /** one value a year, Palmer scale, from the year after the survey */
-    droughtIndex: z.array(z.number().min(-15, 'Between −15 and 15').max(15, 'Between −15 and 15')),
-    /** weather that each replicate of an ensemble draws for itself; null: the values above in all of them */
-    drawn: drawnWeatherSchema.nullable().default(null),
-  })
-  .refine((o) => o.droughtIndex.length === o.years, {
-    path: ['droughtIndex'],
-    message: 'One value for each year is expected',
-  });
-export type Outlook = z.infer<typeof outlookSchema>;
 
 export const siteSummarySchema = z.object({
   id,
@@ -60,6 +42,10 @@ export const siteSchema = siteSummarySchema.extend({
   plantSet: z.boolean(),
   outlook: outlookSchema,
   outlookSet: z.boolean(),
+  /** further outlooks, oldest first */
+  otherOutlooks: z.array(otherOutlookSchema),
+  /** the drought record that fits are made to; null while there is none */
+  droughtRecord: siteRecordSchema.nullable(),
 });
 export type Site = z.infer<typeof siteSchema>;
 
@@ -110,13 +96,5 @@ export const setPlant = endpoint({
   summary: 'Set the rates of the plant',
   params: siteParams,
   body: plantSchema,
-  reply: siteSchema,
-});
-export const setOutlook = endpoint({
-  method: 'PUT',
-  path: '/api/sites/:siteId/outlook',
-  summary: 'Set the weather to come',
-  params: siteParams,
-  body: outlookSchema,
   reply: siteSchema,
 });

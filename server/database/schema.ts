@@ -5,6 +5,7 @@ import { OutboxMessageEntity } from './entities/outbox-message.ts';
 import { PersonEntity } from './entities/person.ts';
 import { SessionEntity } from './entities/session.ts';
 import { TeamEntity } from './entities/team.ts';
+import { DroughtRecordEntity } from './entities/drought-record.ts';
 import { FeatureImportEntity } from './entities/feature-import.ts';
 import { FeatureEntity } from './entities/feature.ts';
 import { GridChangeEntity } from './entities/grid-change.ts';
@@ -36,6 +37,7 @@ export const entities = [
   OutboxMessageEntity,
   SiteEntity,
   SiteCostsEntity,
+  DroughtRecordEntity,
   LayerEntity,
   UploadEntity,
   GridChangeEntity,

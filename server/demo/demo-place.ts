@@ -1,5 +1,6 @@
 import type { HabitatClass } from '#contract/layers.ts';
-import type { Outlook, Plant } from '#contract/sites.ts';
+import { unchangedOutlook, type Outlook } from '#contract/outlooks.ts';
+import type { Plant } from '#contract/sites.ts';
 import { demoClasses } from '#rasters/demo/classes.ts';
 import { demoSurveyYear } from '#rasters/demo/sallow-reach.ts';
 import { defaultRates } from '#sim-core/spec/parameters.ts';
@@ -33,6 +34,7 @@ const droughtIndex = [
 
 /** 34 years that are mild but for 2049 and 2050, which kill what nothing shelters. */
 export const demoOutlook: Outlook = {
+  ...unchangedOutlook,
   surveyYear: demoSurveyYear,
   years: droughtIndex.length,
   stepsPerYear: 1,

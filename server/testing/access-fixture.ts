@@ -105,7 +105,19 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     .field('take', 'all')
     .attach('file', Buffer.from('x,y\n412203,5301895\n'), 'mounds.csv')
     .expect(200);
-  const { features } = (await agents.admin.get(`/api/sites/${site.id}`).expect(200)).body as Site;
+  const outlookPath = `/api/sites/${site.id}/outlooks`;
+  await agents.admin
+    .post(outlookPath)
+    .send({ ...site.outlook, name: 'Drier' })
+    .expect(200);
+  const record = { name: 'Record', kind: 'palmer', factor: 1, values: [{ year: 2020, value: -1 }] };
+  await agents.admin
+    .post(`/api/sites/${site.id}/drought-records`)
+    .send({ record, fileName: 'record.csv' })
+    .expect(200);
+  const { features, otherOutlooks, droughtRecord } = (
+    await agents.admin.get(`/api/sites/${site.id}`).expect(200)
+  ).body as Site;
 
   const callers = { ...people, outsider: other.people.admin };
   const cookies: AccessFixture['cookies'] = {};
@@ -127,6 +139,8 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     uploadId: upload.id,
     featureId: features[0].id,
     importId: features[0].source.importId,
+    outlookId: otherOutlooks[0].id,
+    recordId: droughtRecord!.id,
     optionId: (options.body as { options: Option[] }).options.find((option) => !option.wait)!.id,
     revision: 1,
     runId,

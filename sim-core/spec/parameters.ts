@@ -17,6 +17,13 @@ export interface Parameter {
 
 const parameter = (p: Parameter): Parameter => p;
 
+/** Speeds of a front, m/yr, beyond which a run says that its belief outruns what is published. */
+export const publishedFrontSpeed = {
+  least: 0.2,
+  most: 1.5,
+  source: 'Spartina alterniflora on open mud, from memory',
+} as const;
+
 export const parameters = {
   lateralSpread: parameter({
     label: 'Lateral spread',

@@ -1,5 +1,5 @@
 import { useMemo } from 'react';
-import type { Outlook } from '#contract/sites.ts';
+import type { Outlook } from '#contract/outlooks.ts';
 import { Blank, BlankSelect } from '#app/components/blank.tsx';
 import { formatNumber } from '#app/lib/formats.ts';
 import { drawnErrors, type DrawnDraft, type DrawnKind } from './drawn-draft.ts';

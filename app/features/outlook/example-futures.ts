@@ -1,5 +1,5 @@
 import { drawWeather } from '#sim-core/index.ts';
-import type { Outlook } from '#contract/sites.ts';
+import type { Outlook } from '#contract/outlooks.ts';
 
 /** What drawn weather looks like: some futures, and how often each year is dry enough to kill. */
 export interface ExampleFutures {

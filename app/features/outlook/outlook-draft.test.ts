@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest';
-import type { Outlook } from '#contract/sites.ts';
+import { unchangedOutlook, type Outlook } from '#contract/outlooks.ts';
 import { draftErrors, draftOutlook, layOver, outlookDraft, startDraft } from './outlook-draft.ts';
 
 const outlook: Outlook = {
+  ...unchangedOutlook,
   surveyYear: 2026,
   years: 3,
   stepsPerYear: 1,

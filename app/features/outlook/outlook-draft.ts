@@ -1,4 +1,4 @@
-import { outlookSchema, type Outlook } from '#contract/sites.ts';
+import { outlookSchema, type Outlook } from '#contract/outlooks.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
 import { maximumYears } from '#sim-core/spec/limits.ts';
 import type { Boundary, StepsPerYear } from '#sim-core/spec/run-spec.ts';

@@ -1,11 +1,13 @@
 import { cleanup, fireEvent, render, screen } from '@testing-library/react';
 import { afterEach, expect, it, vi } from 'vitest';
+import { unchangedOutlook } from '#contract/outlooks.ts';
 import { startDraft } from './outlook-draft.ts';
 import { SeriesDialog } from './series-dialog.tsx';
 
 afterEach(cleanup);
 
 const draft = startDraft({
+  ...unchangedOutlook,
   surveyYear: 2026,
   years: 3,
   stepsPerYear: 1,

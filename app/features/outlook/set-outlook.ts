@@ -1,5 +1,6 @@
 import { mutationOptions, type QueryClient } from '@tanstack/react-query';
-import { setOutlook, type Outlook } from '#contract/sites.ts';
+import { setOutlook } from '#contract/outlook-endpoints.ts';
+import type { Outlook } from '#contract/outlooks.ts';
 import { callEndpoint } from '#app/lib/api-client.ts';
 import { keepSite } from '#app/lib/site-cache.ts';
 

@@ -1,3 +1,4 @@
+import { unchangedOutlook } from '#contract/outlooks.ts';
 import { describe, expect, it } from 'vitest';
 import type { Layer } from '#contract/layers.ts';
 import type { Site } from '#contract/sites.ts';
@@ -61,6 +62,7 @@ describe('siteSteps', () => {
   it('names the year that kills open marsh, or counts them', () => {
     expect(step('outlook', { outlookSet: true })).toMatchObject({ state: '3 years, drought 2029', share: 1 });
     const two = {
+      ...unchangedOutlook,
       surveyYear: 2026,
       years: 2,
       stepsPerYear: 1,

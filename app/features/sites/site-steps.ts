@@ -1,7 +1,8 @@
 import type { ComparisonSummary } from '#contract/comparisons.ts';
 import type { RunSummary } from '#contract/runs.ts';
 import type { Layer } from '#contract/layers.ts';
-import type { Outlook, Site } from '#contract/sites.ts';
+import type { Outlook } from '#contract/outlooks.ts';
+import type { Site } from '#contract/sites.ts';
 import { formatCounted, formatNumber } from '#app/lib/formats.ts';
 
 export const stepKeys = ['ground', 'plant', 'outlook', 'options', 'runs', 'compare', 'brief'] as const;

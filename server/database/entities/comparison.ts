@@ -17,6 +17,8 @@ export interface ComparisonRow {
   decision: string | null;
   startedAt: string;
   startedBy: string;
+  /** JSON: where belief outran data when it was started */
+  cautions: string;
 }
 
 export const ComparisonEntity = new EntitySchema<ComparisonRow>({
@@ -35,6 +37,7 @@ export const ComparisonEntity = new EntitySchema<ComparisonRow>({
     decision: { type: 'text', nullable: true },
     startedAt: { type: 'text' },
     startedBy: { type: 'text' },
+    cautions: { type: 'text', default: '[]' },
   },
   indices: [{ name: 'comparison_by_site', columns: ['siteId', 'startedAt'] }],
   foreignKeys: [

@@ -28,6 +28,8 @@ export interface RunRow {
   startedAt: string;
   startedBy: string;
   check: string | null;
+  /** JSON: where belief outran data when it was started */
+  cautions: string;
 }
 
 export const RunEntity = new EntitySchema<RunRow>({
@@ -56,6 +58,7 @@ export const RunEntity = new EntitySchema<RunRow>({
     startedAt: { type: 'text' },
     startedBy: { type: 'text' },
     check: { type: 'text', nullable: true },
+    cautions: { type: 'text', default: '[]' },
   },
   indices: [
     { name: 'run_by_site', columns: ['siteId', 'startedAt'] },

@@ -25,6 +25,8 @@ export interface SiteRow {
   plantSet: boolean;
   outlook: string;
   outlookSet: boolean;
+  /** JSON: further outlooks with their ids; null while there are none */
+  otherOutlooks: string | null;
   createdAt: string;
 }
 
@@ -50,6 +52,7 @@ export const SiteEntity = new EntitySchema<SiteRow>({
     plantSet: { type: 'boolean' },
     outlook: { type: 'text' },
     outlookSet: { type: 'boolean' },
+    otherOutlooks: { type: 'text', nullable: true },
     createdAt: { type: 'text' },
   },
   indices: [{ name: 'site_by_team', columns: ['teamId'] }],

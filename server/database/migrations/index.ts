@@ -4,6 +4,7 @@ import { LostYear1764576000000 } from './1764576000000-lost-year.ts';
 import { OptionHistory1764580000000 } from './1764580000000-option-history.ts';
 import { Ground1796119200000 } from './1796119200000-ground.ts';
 import { Comparisons1796121000000 } from './1796121000000-comparisons.ts';
+import { Outlooks1796140000000 } from './1796140000000-outlooks.ts';
 
 /** Every change of the schema, oldest first. One that has been released is never edited. */
 export const migrations = [
@@ -13,4 +14,5 @@ export const migrations = [
   OptionHistory1764580000000,
   Ground1796119200000,
   Comparisons1796121000000,
+  Outlooks1796140000000,
 ];

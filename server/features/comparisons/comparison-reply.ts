@@ -9,6 +9,7 @@ import {
   type ComparisonSummary,
 } from '#contract/comparisons.ts';
 import { gridSchema } from '#contract/grid.ts';
+import { comparisonCautionSchema } from '#sim-core/spec/caution.ts';
 import type { ComparisonRow } from '#server/database/entities/comparison.ts';
 import type { EnsembleAddress } from '#server/database/entities/comparison-parts.ts';
 import { readJson } from '#server/database/json-column.ts';
@@ -105,6 +106,7 @@ export async function comparisonReply(manager: Manager, siteId: string, id: stri
     grid: readJson(gridSchema, row.grid),
     crsName: row.crsName,
     layers: layers.map(({ hash, facts }) => ({ hash, noData: readJson(layerFactsSchema, facts).noData })),
+    cautions: readJson(z.array(comparisonCautionSchema), row.cautions),
     ensembles: plan.options.flatMap((_, option) =>
       plan.outlooks.map((__, outlook) => {
         const here = <T extends EnsembleAddress>(rows: readonly T[]) =>

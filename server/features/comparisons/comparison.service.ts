@@ -10,6 +10,7 @@ import {
 } from '#contract/comparisons.ts';
 import { gridSchema } from '#contract/grid.ts';
 import { runActions, worksSchema } from '#contract/works.ts';
+import { findCautions, gatherCautions } from '#sim-core/cautions/find-cautions.ts';
 import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
 import { drawProblems } from '#sim-core/run/draw-problems.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
@@ -22,6 +23,7 @@ import { releaseBlobs } from '#server/files/stored-files.ts';
 import { fieldProblem, notFound, ProblemError, refuseFields } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
 import { checkLayers, checkOnGrid, layerHashes } from '#server/specs/check-spec.ts';
+import { recordYears } from '#server/specs/drought-record.ts';
 import { comparisonReply, requireComparison } from './comparison-reply.ts';
 import {
   addEvent,
@@ -65,6 +67,7 @@ export async function startComparison(
     const full: ComparisonPlan = { ...plan, options: await comparedOptions(manager, siteId, options) };
     const problems = await planProblems(manager, site, full);
     if (problems.length > 0) throw refuseFields(problems);
+    const record = await recordYears(manager, siteId);
     const row: ComparisonRow = {
       id: randomUUID(),
       siteId,
@@ -78,6 +81,14 @@ export async function startComparison(
       decision: null,
       startedAt: services.clock().toISOString(),
       startedBy: by,
+      cautions: JSON.stringify(
+        gatherCautions(
+          full.outlooks.map(({ name: outlook }, o) => ({
+            name: outlook,
+            cautions: findCautions({ spec: replicateSpec(full, 0, o, 0), cellSize: site.cellSize, record }),
+          })),
+        ),
+      ),
     };
     const spec = replicateSpec(full, 0, 0, 0);
     await insertComparison(

@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { runStatuses, runSummarySchema, type Run, type RunSummary } from '#contract/runs.ts';
 import { gridSchema } from '#contract/grid.ts';
 import { layerFactsSchema, layerPartSchema } from '#contract/layers.ts';
+import { cautionSchema } from '#sim-core/spec/caution.ts';
 import { runResultSchema } from '#sim-core/spec/run-result.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import type { RunRow } from '#server/database/entities/run.ts';
@@ -69,6 +70,7 @@ export async function runReply(manager: Manager, runId: string): Promise<Run> {
       current: replacedAt === null,
     })),
     storedYears: frames.map((frame) => frame.year),
+    cautions: readJson(z.array(cautionSchema), run.cautions),
     hasClosing: run.closingHash !== null,
     result: run.result === null ? null : readJson(runResultSchema, run.result),
   };

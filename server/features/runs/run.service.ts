@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import type { Run } from '#contract/runs.ts';
+import { findCautions } from '#sim-core/cautions/find-cautions.ts';
 import { lostYear } from '#sim-core/measure/recovery.ts';
 import type { RunResult } from '#sim-core/spec/run-result.ts';
 import { maximumCells } from '#sim-core/spec/limits.ts';
@@ -8,6 +9,7 @@ import type { RunRow } from '#server/database/entities/run.ts';
 import { readJson } from '#server/database/json-column.ts';
 import { gridOf } from '#server/database/site-grid.ts';
 import { checkLayers, checkOnGrid, layerHashes } from '#server/specs/check-spec.ts';
+import { recordYears } from '#server/specs/drought-record.ts';
 import { releaseBlobs } from '#server/files/stored-files.ts';
 import { fieldProblem, notFound, ProblemError, refuseFields } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
@@ -54,6 +56,9 @@ export async function startRun(
       startedAt: services.clock().toISOString(),
       startedBy: by,
       check: null,
+      cautions: JSON.stringify(
+        findCautions({ spec, cellSize: site.cellSize, record: await recordYears(manager, siteId) }),
+      ),
     };
     await insertRun(
       manager,

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
-import type { Outlook, Plant } from '#contract/sites.ts';
+import { unchangedOutlook, type Outlook } from '#contract/outlooks.ts';
+import type { Plant } from '#contract/sites.ts';
 import type { OptionRow } from '#server/database/entities/option.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
@@ -9,6 +10,7 @@ const defaultHorizon = 34;
 
 /** An outlook to start from: the survey is this year's, and no year is dry. */
 const defaultOutlook = (thisYear: number): Outlook => ({
+  ...unchangedOutlook,
   surveyYear: thisYear,
   years: defaultHorizon,
   stepsPerYear: 1,
@@ -53,6 +55,7 @@ export function newSiteRows({
     plantSet: false,
     outlook: JSON.stringify(defaultOutlook(now.getUTCFullYear())),
     outlookSet: false,
+    otherOutlooks: null,
     createdAt,
   };
   const wait: OptionRow = {

@@ -6,12 +6,14 @@ import {
   tidalDatumsSchema,
   type ElevationCurves,
 } from '#contract/layers.ts';
-import { outlookSchema, plantSchema, type Site, type SiteSummary } from '#contract/sites.ts';
+import { otherOutlookSchema, outlookSchema } from '#contract/outlooks.ts';
+import { plantSchema, type Site, type SiteSummary } from '#contract/sites.ts';
 import { gridOf } from '#server/database/site-grid.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { notFound } from '#server/middleware/problem-error.ts';
+import { siteRecord } from '#server/specs/drought-record.ts';
 import { featuresOfSite } from './features/feature-reply.ts';
 import { layerReply } from './layer-reply.ts';
 import { currentLayers } from './layer.repository.ts';
@@ -55,7 +57,7 @@ export async function siteReply(manager: Manager, siteId: string): Promise<Site>
   if (!site) throw notFound();
   const counts = await countsOfSites(manager, [siteId]);
   const summary = summaryOf(site, counts.get(siteId)!);
-  const { finestGrid, elevationCurves, tidalDatums } = site;
+  const { finestGrid, elevationCurves, tidalDatums, otherOutlooks } = site;
   return {
     ...summary,
     crsName: site.crsName,
@@ -68,5 +70,7 @@ export async function siteReply(manager: Manager, siteId: string): Promise<Site>
     plantSet: site.plantSet,
     outlook: readJson(outlookSchema, site.outlook),
     outlookSet: site.outlookSet,
+    otherOutlooks: otherOutlooks === null ? [] : readJson(z.array(otherOutlookSchema), otherOutlooks),
+    droughtRecord: await siteRecord(manager, siteId),
   };
 }

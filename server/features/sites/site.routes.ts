@@ -5,9 +5,9 @@ import { route, type Route } from '#server/middleware/route.ts';
 import type { Services } from '#server/services.ts';
 import { keepers } from './keepers.ts';
 import { listSitesOf, siteReply } from './site-reply.ts';
-import { createSite, deleteSite, renameSite, setOutlook, setPlant } from './site.service.ts';
+import { createSite, deleteSite, renameSite, setPlant } from './site.service.ts';
 
-/** Sites with their plant and outlook. */
+/** Sites with their plant. */
 export function siteRoutes(services: Services): Route[] {
   const manager = services.dataSource.manager;
   const form = rasterForm(services.blobs, services.config.uploadLimitBytes);
@@ -35,9 +35,6 @@ export function siteRoutes(services: Services): Route[] {
     route(contract.deleteSite, { site: keepers }, ({ params }) => deleteSite(services, params.siteId)),
     route(contract.setPlant, { site: keepers }, ({ params, body }) =>
       setPlant(services, params.siteId, body),
-    ),
-    route(contract.setOutlook, { site: keepers }, ({ params, body }) =>
-      setOutlook(services, params.siteId, body),
     ),
   ];
 }

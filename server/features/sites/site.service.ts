@@ -1,5 +1,5 @@
 import type { ElevationCurves, TidalDatum } from '#contract/layers.ts';
-import type { Outlook, Plant, Site } from '#contract/sites.ts';
+import type { Plant, Site } from '#contract/sites.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import { releaseBlobs, storeWithRows } from '#server/files/stored-files.ts';
 import type { Services } from '#server/services.ts';
@@ -47,9 +47,6 @@ export const renameSite = (services: Services, siteId: string, name: string): Pr
 
 export const setPlant = (services: Services, siteId: string, plant: Plant): Promise<Site> =>
   changeSite(services, siteId, { plant: JSON.stringify(plant), plantSet: true });
-
-export const setOutlook = (services: Services, siteId: string, outlook: Outlook): Promise<Site> =>
-  changeSite(services, siteId, { outlook: JSON.stringify(outlook), outlookSet: true });
 
 /** Says what elevation does on a site, and which levels of the tide are drawn beside it. */
 export const setElevationCurves = (

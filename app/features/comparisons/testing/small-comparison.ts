@@ -72,6 +72,7 @@ export function smallComparison(replicates: number, changes: Partial<Comparison[
     ending: null,
     startedAt: '2026-12-01T00:00:00.000Z',
     startedBy: 'Someone',
+    cautions: [],
     replicates,
     done: 0,
     decision: null,

@@ -1,4 +1,5 @@
 import type { Layer } from '#contract/layers.ts';
+import { unchangedOutlook } from '#contract/outlooks.ts';
 import type { Site } from '#contract/sites.ts';
 import { defaultRates } from '#sim-core/spec/parameters.ts';
 
@@ -75,6 +76,7 @@ export const siteFixture = (more: Partial<Site> = {}): Site => ({
   plant: { name: 'Invented grass', rates: defaultRates },
   plantSet: true,
   outlook: {
+    ...unchangedOutlook,
     surveyYear: 2026,
     years: 4,
     stepsPerYear: 1,
@@ -83,5 +85,7 @@ export const siteFixture = (more: Partial<Site> = {}): Site => ({
     drawn: null,
   },
   outlookSet: true,
+  otherOutlooks: [],
+  droughtRecord: null,
   ...more,
 });

@@ -1,7 +1,7 @@
 import type { z } from 'zod';
 import type * as contract from '#contract/option-files.ts';
 import type { WorksPreview } from '#contract/option-files.ts';
-import { outlookSchema } from '#contract/sites.ts';
+import { outlookSchema } from '#contract/outlooks.ts';
 import { mostWorks } from '#contract/works.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import { readJson } from '#server/database/json-column.ts';

@@ -1,5 +1,6 @@
 import type { CellSize } from '#contract/working-grid.ts';
-import type { Outlook, Plant } from '#contract/sites.ts';
+import type { Outlook } from '#contract/outlooks.ts';
+import type { Plant } from '#contract/sites.ts';
 import { coarsenGrid } from '#rasters/align/suggest-grid.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { fitKernel, RunProblem } from '#sim-core/index.ts';
