@@ -10,11 +10,15 @@ export function SiteLayout(props: {
   staff: ReactNode;
   /** words and blanks above the map */
   tools?: ReactNode;
+  /** more of these words: below them on a wide screen, below the map on a phone, where the map comes first */
+  sentence?: ReactNode;
   /** fills its place; the page without a map gives `sheet` or `children` instead */
   map?: ReactNode;
   /** words where the map would be: as wide, scrolling, with the same margin beside it */
   sheet?: ReactNode;
   margin?: ReactNode;
+  /** what of the margin stays in view while the rest of it scrolls; on a phone it comes right after the map */
+  dock?: ReactNode;
   yearline?: ReactNode;
   /** the one action that matters now, and what it will take */
   action?: ReactNode;
@@ -25,13 +29,13 @@ export function SiteLayout(props: {
     <div className={classNames('flex min-h-dvh flex-col', hasMap && 'lg:h-dvh lg:overflow-hidden')}>
       <SkipLink />
       {props.staff}
-      <main id="main" tabIndex={-1} className="flex min-h-0 flex-1 flex-col pb-20 lg:pb-0">
+      <main id="main" tabIndex={-1} className="flex min-h-0 flex-1 flex-col lg:pb-0">
         {hasMap ? (
           <MapPage {...props} />
         ) : (
-          <div className="mx-auto w-full max-w-[1180px] flex-1 px-4 pt-6 pb-12 lg:px-6">
+          <div className="mx-auto w-full max-w-[1180px] flex-1 px-4 pt-6 lg:px-6 lg:pb-12">
             {props.children}
-            {props.action !== undefined && <ActionBar>{props.action}</ActionBar>}
+            {props.action !== undefined && <ActionBar className="max-lg:-mx-4">{props.action}</ActionBar>}
           </div>
         )}
       </main>
@@ -39,13 +43,29 @@ export function SiteLayout(props: {
   );
 }
 
-/** On a phone time belongs to the map, so the yearline stands right under it; on a wide screen it spans the foot. */
+/**
+ * On a phone time belongs to the map, so the yearline stands right under it; on a wide screen it spans the foot. There
+ * the margin is a column of its own; on a phone its parts follow each other, and the action sticks to the screen's foot.
+ */
 function MapPage(props: Parameters<typeof SiteLayout>[0]) {
+  const { tools, sentence, dock } = props;
   return (
-    <div className="grid min-h-0 flex-1 grid-cols-[minmax(0,1fr)] lg:grid-cols-[minmax(0,1fr)_360px] lg:grid-rows-[minmax(0,1fr)_auto]">
+    <div className="flex min-h-0 flex-1 flex-col lg:grid lg:grid-cols-[minmax(0,1fr)_360px] lg:grid-rows-[minmax(0,1fr)_auto]">
       <div className="flex min-h-0 min-w-0 flex-col">
-        {props.tools !== undefined && (
-          <div className="no-print border-b border-ink px-4 py-1.5 lg:pl-6">{props.tools}</div>
+        {tools !== undefined && (
+          <div
+            className={classNames(
+              'no-print border-ink px-4 pt-1.5 max-lg:border-b max-lg:pb-1.5 lg:pl-6',
+              sentence === undefined && 'lg:border-b lg:pb-1.5',
+            )}
+          >
+            {tools}
+          </div>
+        )}
+        {sentence !== undefined && (
+          <div className="no-print border-ink px-4 py-1.5 max-lg:order-last max-lg:border-t lg:border-b lg:pt-1 lg:pl-6">
+            {sentence}
+          </div>
         )}
         {props.map === undefined ? (
           <div className="min-h-0 px-4 pt-5 pb-10 lg:flex-1 lg:overflow-y-auto lg:px-6">{props.sheet}</div>
@@ -60,19 +80,31 @@ function MapPage(props: Parameters<typeof SiteLayout>[0]) {
       )}
       <aside
         aria-label="Notes on the map"
-        className="flex min-h-0 flex-col border-t border-ink lg:border-t-0 lg:border-l"
+        className="flex min-h-0 flex-col border-ink max-lg:contents lg:border-l"
       >
-        <div className="min-h-0 flex-1 px-4 py-3 lg:overflow-y-auto lg:pr-7 lg:pl-6">{props.margin}</div>
-        {props.action !== undefined && <ActionBar>{props.action}</ActionBar>}
+        {dock !== undefined && (
+          <div className="border-ink px-4 py-2 max-lg:border-t lg:order-1 lg:max-h-[45%] lg:shrink-0 lg:overflow-y-auto lg:border-t lg:border-rule lg:pr-7 lg:pl-6">
+            {dock}
+          </div>
+        )}
+        <div className="min-h-0 flex-1 border-ink px-4 py-3 max-lg:border-t lg:overflow-y-auto lg:pr-7 lg:pl-6">
+          {props.margin}
+        </div>
+        {props.action !== undefined && <ActionBar className="lg:order-2">{props.action}</ActionBar>}
       </aside>
     </div>
   );
 }
 
-/** Stands at the foot of the margin; on a phone at the foot of the screen. */
-function ActionBar(props: { children: ReactNode }) {
+/** Stands at the foot of the margin; on a phone it sticks to the foot of the screen, and covers nothing that is last. */
+function ActionBar(props: { children: ReactNode; className?: string }) {
   return (
-    <div className="no-print flex flex-wrap items-center gap-x-3 gap-y-1 bg-ground px-4 py-2.5 max-lg:fixed max-lg:inset-x-0 max-lg:bottom-0 max-lg:z-30 max-lg:border-t max-lg:border-ink lg:pr-7 lg:pb-4 lg:pl-6">
+    <div
+      className={classNames(
+        'no-print flex flex-wrap items-center gap-x-3 gap-y-1 bg-ground px-4 py-2.5 max-lg:sticky max-lg:bottom-0 max-lg:z-30 max-lg:border-t max-lg:border-ink lg:pr-7 lg:pb-4 lg:pl-6',
+        props.className,
+      )}
+    >
       {props.children}
     </div>
   );

@@ -1,5 +1,6 @@
 import type { Locator, Page } from '@playwright/test';
 import { demoPeople } from './people.ts';
+import { expectOnMap, expectPassable } from './notes.ts';
 import { expect, signIn, test } from './test.ts';
 
 const step = (page: Page, name: string) =>
@@ -25,6 +26,13 @@ async function addOption(page: Page, name: string): Promise<void> {
   await page.getByRole('button', { name: 'Add it' }).click();
   await expect(page.getByRole('heading', { name: `Works in ${name}` })).toBeVisible();
   await expect(page.locator('[data-painted="true"]')).toBeVisible();
+}
+
+/** By the bar of the map's scale. */
+async function pixelsPerMetre(page: Page): Promise<number> {
+  const bar = page.getByRole('img', { name: /^This bar is \d+ m long$/ });
+  const metres = Number(/\d+/.exec((await bar.getAttribute('aria-label'))!)![0]);
+  return (Number(await bar.getAttribute('width')) - 40) / metres;
 }
 
 /** The painted map alone, as bytes that change with it. */
@@ -63,6 +71,11 @@ test('a plan is drawn by mouse, looked at, suggested for, saved and run', async 
 
     await tool(page, 'Mounds: scattered').check();
     await page.getByLabel('Number of mounds', { exact: true }).fill('12');
+    await expect(page.getByRole('button', { name: 'Place 12 mounds' })).toBeVisible();
+    // A tool is not left at the cost of what it shows.
+    await tool(page, 'select').check();
+    await expect(page.getByText('Still shown faint; not placed yet.')).toBeVisible();
+    await expect(works(page, '12 mounds')).toBeHidden();
     await page.getByRole('button', { name: 'Place 12 mounds' }).click();
     await expect(works(page, '12 mounds')).toBeVisible();
   });
@@ -99,8 +112,9 @@ test('a plan is drawn by mouse, looked at, suggested for, saved and run', async 
 
   await test.step('water is refused on the spot, with the reason', async () => {
     await press(page, 0.64, 0.85);
-    await expect(page.getByText(/Not here\..*cannot grow there/)).toBeVisible();
-    await page.getByRole('button', { name: 'Understood' }).click();
+    const note = page.getByRole('alert').filter({ hasText: /Not here\..*cannot grow there/ });
+    await expectOnMap(page, note);
+    await expectPassable(note);
     await expect(works(page, '13 mounds')).toBeVisible();
   });
 
@@ -128,6 +142,27 @@ test('a plan is drawn by mouse, looked at, suggested for, saved and run', async 
     await page.getByRole('button', { name: 'Start the run' }).click();
     await expect(page).toHaveURL(/\/runs\/[\w-]+/);
     await expect(page.getByText(/[1-9]\d* of 35 years stored/)).toBeVisible();
+  });
+});
+
+test('five mounds are placed 6 m apart without closing anything in between', async ({ page }) => {
+  await signIn(page, demoPeople.manager);
+  await addOption(page, 'Five in a row');
+  const box = (await map(page).boundingBox())!;
+  const step = 6 * (await pixelsPerMetre(page));
+  for (let i = 0; i < 5; i++) await page.mouse.click(box.x + box.width * 0.3 + i * step, box.y + 250);
+  await expect(works(page, '5 mounds')).toBeVisible();
+  // What was placed last is told in the margin.
+  await expect(page.getByRole('region', { name: 'What is selected' })).toContainText('Mound 5');
+
+  await test.step('map, meters, list and save bar are in view together', async () => {
+    for (const part of [
+      map(page),
+      page.getByText('Expected closing'),
+      page.getByRole('heading', { name: 'Options', exact: true }),
+      page.getByRole('button', { name: 'Save', exact: true }),
+    ])
+      await expect(part).toBeInViewport({ ratio: 1 });
   });
 });
 
@@ -163,8 +198,14 @@ test('a plan is drawn by keys alone', async ({ page }) => {
   await keys('n', ...again('Shift+ArrowUp', 30));
   await expect(page.getByText(/Not here\..*off the site/)).toBeVisible();
 
+  // Escape drops what a pattern shows, Enter places it.
   await keys('t');
-  await page.getByRole('button', { name: /^Place 40 mounds/ }).press('Enter');
+  await expect(page.getByRole('button', { name: 'Place 40 mounds' })).toBeVisible();
+  await keys('Escape');
+  await expect(page.getByRole('button', { name: 'Place 40 mounds' })).toBeHidden();
+  await keys('t');
+  await expect(page.getByRole('button', { name: 'Place 40 mounds' })).toBeEnabled();
+  await keys('Enter');
   await expect(works(page, '42 mounds')).toBeVisible();
   await page.getByRole('button', { name: 'Save', exact: true }).press('Enter');
   await expect(page.getByText('Saved.', { exact: true })).toBeVisible();

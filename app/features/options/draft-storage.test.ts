@@ -25,7 +25,7 @@ const option = (revision: number, works: Work[] = []) =>
     sets: works.length > 0 ? [set] : [],
     revision,
   }) as unknown as Option;
-const add = { type: 'add', works: [mound], set } as const;
+const add = { type: 'add', works: [mound], sets: [set] } as const;
 
 beforeEach(() => {
   sessionStorage.clear();

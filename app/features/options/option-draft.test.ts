@@ -74,7 +74,7 @@ describe('optionDraft', () => {
     const laid = after(start, {
       type: 'add',
       works: [mound('b', 2, { set: 's' }), mound('c', 3, { set: 's' })],
-      set,
+      sets: [set],
     });
     expect(laid.sets).toEqual([set]);
     const one = after(laid, { type: 'remove', ids: new Set(['b']) });

@@ -22,8 +22,13 @@ export interface OptionDraft extends DraftState {
 }
 
 export type DraftAction =
-  /** new works, selected from now on; `instead` takes others away in the same step, `set` says how they were laid */
-  | { type: 'add'; works: readonly Work[]; set?: WorkSet; instead?: ReadonlySet<string> }
+  /** new works, selected from now on; `instead` takes others away in the same step, `sets` say how they were laid */
+  | {
+      type: 'add';
+      works: readonly Work[];
+      sets?: readonly WorkSet[];
+      instead?: ReadonlySet<string> | undefined;
+    }
   /** these in place of those with their ids; the same `step` again is one step back */
   | { type: 'change'; works: readonly Work[]; step?: string }
   | { type: 'remove'; ids: ReadonlySet<string> }
@@ -65,9 +70,8 @@ export function optionDraft(draft: OptionDraft, action: DraftAction): OptionDraf
     case 'add': {
       if (action.works.length === 0) return draft;
       const kept = action.instead ? draft.works.filter((work) => !action.instead?.has(work.id)) : draft.works;
-      const sets = action.set
-        ? [...draft.sets.filter(({ id }) => id !== action.set?.id), action.set]
-        : draft.sets;
+      const { sets: laid = [] } = action;
+      const sets = laid.length > 0 ? withSets(draft.sets, laid) : draft.sets;
       return {
         ...drawn(draft, usedSets({ works: [...kept, ...action.works], sets })),
         selected: new Set(action.works.map((work) => work.id)),
@@ -119,6 +123,11 @@ export function optionDraft(draft: OptionDraft, action: DraftAction): OptionDraf
 }
 
 export const stateOf = ({ works, sets }: DraftState): DraftState => ({ works, sets });
+
+const withSets = (sets: readonly WorkSet[], more: readonly WorkSet[]): WorkSet[] => [
+  ...sets.filter(({ id }) => more.every((set) => set.id !== id)),
+  ...more,
+];
 
 /** A set goes with the last of its works. */
 function usedSets({ works, sets }: DraftState): DraftState {

@@ -49,6 +49,8 @@ export function SelectionForm(props: {
   /** number of the only one selected in the table of works, from 1 */
   number: number;
   span: Span;
+  /** some of it stands on marsh already */
+  standing: boolean;
   /** absent for those who only read */
   edit?: {
     /** why the works cannot be taken, or undefined when they were */
@@ -126,6 +128,11 @@ export function SelectionForm(props: {
         </p>
       )}
       {alone && <p className="font-mono text-axis text-ink-2">{placeInWords(placeOf(first))}</p>}
+      {props.standing && (
+        <p className="text-note text-ink-2">
+          {alone ? 'Stands' : 'Some of it stands'} on marsh already: the plant was there at the survey.
+        </p>
+      )}
       {edit && (
         <p className="mt-0.5 flex flex-wrap gap-x-4">
           <WordButton lined onClick={edit.onCopy}>

@@ -18,6 +18,8 @@ const atOnce = 200;
 export function WorksTable(props: {
   works: readonly Work[];
   selected: ReadonlySet<string>;
+  /** those that stand on marsh already */
+  standing: ReadonlySet<string>;
   onSelect: (ids: readonly string[]) => void;
   /** absent for those who only read; returns what is wrong, or undefined when the value was taken */
   onEdit?: (id: string, field: WorkField, text: string) => string | undefined;
@@ -64,6 +66,7 @@ export function WorksTable(props: {
         <WordButton className="text-left whitespace-normal" onClick={() => props.onSelect([work.id])}>
           <WorkSymbol work={work} />
           {titleOf(work, number)}: {workInWords(work)}
+          {props.standing.has(work.id) && <span className="text-ink-2">; on marsh already</span>}
         </WordButton>
       ),
     },

@@ -14,7 +14,13 @@ const missingWords = {
 } as const;
 
 /** What can be done with a drawing: save it, and go on to a run of it once the ground can bear one. */
-export function OptionAction({ option, drawing }: { option: Option; drawing: OptionDrawing }) {
+export function OptionAction(props: {
+  option: Option;
+  drawing: OptionDrawing;
+  /** something is shown that is to be placed first: that is the action that matters now */
+  waits: boolean;
+}) {
+  const { option, drawing, waits } = props;
   const { site } = useSite();
   const navigate = useNavigate();
   const { conflict, saving } = drawing;
@@ -28,12 +34,17 @@ export function OptionAction({ option, drawing }: { option: Option; drawing: Opt
   return (
     <>
       {complete && toSave && (
-        <Button kind="primary" busy={saving} busyLabel="Saving" onClick={() => void saveAndSetUp()}>
+        <Button
+          kind={waits ? 'quiet' : 'primary'}
+          busy={saving}
+          busyLabel="Saving"
+          onClick={() => void saveAndSetUp()}
+        >
           Save and set up a run
         </Button>
       )}
       {complete && !toSave && (
-        <LinkButton kind={conflict ? 'quiet' : 'primary'} to={runAddress}>
+        <LinkButton kind={conflict || waits ? 'quiet' : 'primary'} to={runAddress}>
           Set up a run
         </LinkButton>
       )}
@@ -51,7 +62,7 @@ export function OptionAction({ option, drawing }: { option: Option; drawing: Opt
           <WordLink to={`/sites/${site.id}/ground`}>See Ground</WordLink>
         </p>
       )}
-      <p role="status" className="w-full text-note text-ink-2">
+      <p role="status" className="text-note text-ink-2 lg:w-full">
         {statusWords({ option, drawing, complete })}
       </p>
     </>
@@ -64,7 +75,7 @@ function statusWords(state: { option: Option; drawing: OptionDrawing; complete: 
     return complete
       ? 'A run takes what was saved last, not your drawing.'
       : 'Somebody else saved this option; your drawing is kept in this tab.';
-  if (drawing.unsaved) return 'Changes are kept in this tab, and not saved for the team yet.';
+  if (drawing.unsaved) return 'Kept in this tab; not saved for the team yet.';
   if (option.wait) return 'Wait is run like any option, so that there is something to compare with.';
   return 'Saved.';
 }

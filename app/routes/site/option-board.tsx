@@ -5,6 +5,7 @@ import type { Work } from '#contract/works.ts';
 import { sayDone } from '#app/components/toast.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
 import type { BoardPens } from '#app/features/options/board/board-pens.ts';
+import { isShown } from '#app/features/options/board/place-bar.tsx';
 import { useBoard } from '#app/features/options/board/use-board.ts';
 import { createOptionMutation } from '#app/features/options/change-option.ts';
 import { useLookOf, useQuickLook } from '#app/features/options/quick-look/use-quick-look.ts';
@@ -12,6 +13,7 @@ import { SelectionForm } from '#app/features/options/selection-form.tsx';
 import { surveyedMounds } from '#app/features/options/surveyed-mounds.ts';
 import { readMound } from '#app/features/options/mound-pen.ts';
 import { readYear } from '#app/features/options/board/area-pen.ts';
+import { standingWorks } from '#app/features/options/standing-works.ts';
 import { SuggestPanel } from '#app/features/options/suggest/suggest-panel.tsx';
 import { useSuggest } from '#app/features/options/suggest/use-suggest.ts';
 import { useOptionDrawing } from '#app/features/options/use-option-drawing.ts';
@@ -22,9 +24,10 @@ import { Yearline } from '#app/yearline/Yearline.tsx';
 import { OptionAction } from './option-action.tsx';
 import { OptionMap } from './option-map.tsx';
 import { OptionMargin } from './option-margin.tsx';
-import { OptionMeters, useSetCosts } from './option-meters.tsx';
+import { OptionCosts, OptionMeters, useSetCosts } from './option-meters.tsx';
 import type { MapShow } from './option-raster.ts';
 import { OptionSentence } from './option-sentence.tsx';
+import { PlaceFirst } from './option-strip.tsx';
 import { OptionTools } from './option-tools.tsx';
 import { SitePage } from './site-page.tsx';
 import { tolerancesOf } from './tolerances.ts';
@@ -110,14 +113,19 @@ export function OptionBoard(props: {
     each: costs && mound && costs.mound + mound.clumps * costs.clump,
   });
   const preview = useMemo(
-    () => [...board.laying.works, ...suggesting.works],
-    [board.laying.works, suggesting.works],
+    () => [...board.laying.parked, ...board.laying.works, ...suggesting.works],
+    [board.laying.parked, board.laying.works, suggesting.works],
   );
   const all = useMemo(
     () => (preview.length > 0 ? [...board.works, ...preview] : board.works),
     [board.works, preview],
   );
   useLookOf(view, all);
+  // Not of what is being dragged: where it comes to stand is told when it is let go.
+  const standing = useMemo(
+    () => standingWorks([...draft.works, ...preview], grid, ground.cover),
+    [draft.works, preview, grid, ground.cover],
+  );
   useUndoKeys(editable, (type) => {
     board.forget();
     draw({ type });
@@ -135,7 +143,6 @@ export function OptionBoard(props: {
           {...{ option, editable, mayDraw, draft, draw, asTable }}
           tool={board.tool}
           snap={pens.snap}
-          sentence={<OptionSentence {...{ pens, board }} currency={costs?.currency} />}
           quickLook={start && show !== 'gain' ? show === 'closing' : undefined}
           onQuickLook={(shown) => setShow(shown ? 'closing' : 'cover')}
           onTool={board.setTool}
@@ -143,10 +150,14 @@ export function OptionBoard(props: {
           onTable={setAsTable}
         />
       }
+      sentence={
+        editable && !asTable ? <OptionSentence {...{ pens, board }} currency={costs?.currency} /> : undefined
+      }
       map={
         <div ref={page} className="size-full">
           <OptionMap
             {...{ ground, draft, board, surveyed, preview, year, asTable, editable, show }}
+            standing={standing.ids}
             look={view.look}
             lines={view.lines}
             gain={suggesting.gain.result}
@@ -169,6 +180,7 @@ export function OptionBoard(props: {
               <SelectionForm
                 works={chosen}
                 number={draft.works.indexOf(chosen[0]) + 1}
+                standing={chosen.some((work) => standing.ids.has(work.id))}
                 span={outlook}
                 edit={
                   editable
@@ -183,36 +195,40 @@ export function OptionBoard(props: {
               />
             )
           }
-          meters={
-            <>
-              <OptionMeters works={all} faint={preview.length} view={view} possible={start !== undefined} />
-              {editable && (
-                <SuggestPanel
-                  {...{ suggesting }}
-                  currency={costs?.currency}
-                  moundWords={`Each as the sentence of “one by one” says, in ${pens.year}.`}
-                  gainShown={show === 'gain'}
-                  onShowGain={(shown) => setShow(shown ? 'gain' : 'closing')}
-                  busy={create.isPending}
-                  onAdd={() => {
-                    draw({ type: 'add', works: suggesting.works });
-                    suggesting.forget();
-                    sayDone('Added to this option; not saved yet');
-                  }}
-                  onNewOption={() =>
-                    create.mutate(
-                      {
-                        name: `${option.name}, with ${suggesting.taken} suggested`.slice(0, 100),
-                        works: [...draft.works, ...suggesting.works],
-                        sets: [...draft.sets],
-                      },
-                      { onSuccess: (made) => onChoose(made.id, true) },
-                    )
-                  }
-                />
-              )}
-            </>
+          costs={<OptionCosts works={all} view={view} />}
+          suggest={
+            editable && (
+              <SuggestPanel
+                {...{ suggesting }}
+                currency={costs?.currency}
+                moundWords={`Each as the sentence of “one by one” says, in ${pens.year}.`}
+                gainShown={show === 'gain'}
+                onShowGain={(shown) => setShow(shown ? 'gain' : 'closing')}
+                busy={create.isPending}
+                onAdd={() => {
+                  draw({ type: 'add', works: suggesting.works });
+                  suggesting.forget();
+                  sayDone('Added to this option; not saved yet');
+                }}
+                onNewOption={() =>
+                  create.mutate(
+                    {
+                      name: `${option.name}, with ${suggesting.taken} suggested`.slice(0, 100),
+                      works: [...draft.works, ...suggesting.works],
+                      sets: [...draft.sets],
+                    },
+                    { onSuccess: (made) => onChoose(made.id, true) },
+                  )
+                }
+              />
+            )
           }
+        />
+      }
+      dock={
+        <OptionMeters
+          {...{ view, works: all, faint: preview.length, standing: standing.words }}
+          possible={start !== undefined}
         />
       }
       yearline={
@@ -225,7 +241,13 @@ export function OptionBoard(props: {
           label="Year that the map shows"
         />
       }
-      action={mayDraw && <OptionAction {...{ option, drawing }} />}
+      action={
+        mayDraw && (
+          <PlaceFirst board={board}>
+            <OptionAction {...{ option, drawing }} waits={isShown(board.laying)} />
+          </PlaceFirst>
+        )
+      }
     />
   );
 }

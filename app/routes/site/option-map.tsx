@@ -4,12 +4,12 @@ import type { GainMap } from '#sim-core/plan/gain-map.ts';
 import type { YearLine } from '#sim-core/plan/year-lines.ts';
 import { EmptyState } from '#app/components/empty-state.tsx';
 import { FlagSymbol, SurvivorSymbol } from '#app/components/symbols.tsx';
-import { WordButton } from '#app/components/word-button.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
 import { withoutPlanted } from '#app/features/options/board/planted-mounds.ts';
+import { RefusedNote } from '#app/features/options/board/refused-note.tsx';
+import { drawsOutline } from '#app/features/options/board/sketch.ts';
 import { SketchMarks } from '#app/features/options/board/sketch-marks.tsx';
 import type { DrawingBoard } from '#app/features/options/board/use-board.ts';
-import { drawsOutline } from '#app/features/options/board/use-board-tool.ts';
 import { worksOnMap } from '#app/features/options/board/works-on-map.ts';
 import { yearContours } from '#app/features/options/quick-look/year-contours.ts';
 import type { OptionDraft } from '#app/features/options/option-draft.ts';
@@ -24,6 +24,7 @@ import { SiteMap } from '#app/map/SiteMap.tsx';
 import type { Look } from '#app/workers/quick-look-desk.ts';
 import { closingRaster, gainRaster, type MapShow } from './option-raster.ts';
 import { GroundState } from './ground-state.tsx';
+import { OptionStrip } from './option-strip.tsx';
 import { useSite } from './use-site.ts';
 
 const shownWords: Record<MapShow, string> = {
@@ -48,12 +49,15 @@ export function OptionMap(props: {
   year: number;
   asTable: boolean;
   editable: boolean;
+  /** ids of works that stand on marsh already */
+  standing: ReadonlySet<string>;
   title: string;
   onRemove: (id: string) => void;
   onMove: () => void;
 }) {
   const { ground, draft, board, year, editable, surveyed, preview, show, look, lines, gain } = props;
   const { tool, refused } = board;
+  const placing = editable && tool !== 'select' && tool !== 'box';
   const { site } = useSite();
   const { grid, outlook } = site;
   const drawn = useMemo(() => worksOnMap(board.works, year), [board.works, year]);
@@ -93,6 +97,7 @@ export function OptionMap(props: {
           <WorksTable
             works={draft.works}
             selected={draft.selected}
+            standing={props.standing}
             onSelect={board.select}
             onEdit={editable ? board.edit : undefined}
             onRemove={editable ? props.onRemove : undefined}
@@ -143,7 +148,8 @@ export function OptionMap(props: {
           corner={board.corner}
           box={board.box}
         />
-        {only && others.length === 0 && !refused && (
+        {/* While something is placed nothing may stand under the next press: the margin says what was placed last. */}
+        {only && others.length === 0 && !refused && !placing && (
           <MapNote {...placeOf(only)}>
             <WorkNote
               work={only}
@@ -153,7 +159,7 @@ export function OptionMap(props: {
           </MapNote>
         )}
         {surveyedOne && !refused && (
-          <MapNote x={surveyedOne.x} y={surveyedOne.y}>
+          <MapNote x={surveyedOne.x} y={surveyedOne.y} passing>
             <b className="block text-body leading-tight">Surveyed mound</b>
             <span className="block font-mono text-axis text-ink-2">{placeInWords(surveyedOne)}</span>
             {board.found?.kept && (
@@ -163,17 +169,9 @@ export function OptionMap(props: {
             )}
           </MapNote>
         )}
-        {refused && (
-          <MapNote x={refused.x} y={refused.y} offset={{ left: 40, top: 24 }} always>
-            <span role="alert" className="block border-l-[5px] border-danger pl-2">
-              <b className="text-danger">Not here.</b> {refused.problem}
-            </span>
-            <WordButton lined onClick={board.forget}>
-              Understood
-            </WordButton>
-          </MapNote>
-        )}
+        {refused && <RefusedNote refused={refused} onGone={board.forget} />}
       </SiteMap>
+      {editable && <OptionStrip board={board} />}
       <GroundState ground={ground} />
     </>
   );

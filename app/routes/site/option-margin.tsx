@@ -16,8 +16,10 @@ export function OptionMargin(props: {
   mayDraw: boolean;
   /** what is selected, above all else */
   selection: ReactNode;
-  /** what the drawing would cost and bring, and what could be added to it */
-  meters: ReactNode;
+  /** more of what it costs */
+  costs: ReactNode;
+  /** what could be added to it */
+  suggest: ReactNode;
   /** `isNew`: it was made this moment */
   onChoose: (optionId: string, isNew?: boolean) => void;
 }) {
@@ -55,7 +57,8 @@ export function OptionMargin(props: {
           rowKey={({ kind, year }) => `${kind}${year}`}
         />
       )}
-      {props.meters}
+      {props.costs}
+      {props.suggest}
       <p className="mt-4 text-note text-ink-2">
         Moving bivalves between water bodies can need a permit and a biosecurity check. Work between the tides
         needs tide, weather and mud precautions. Follow local codes and licensed practice.

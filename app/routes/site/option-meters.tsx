@@ -7,8 +7,9 @@ import type { ClosingSummary } from '#sim-core/plan/closing-tally.ts';
 import { formatCounted } from '#app/lib/formats.ts';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { costsQuery } from '#app/features/options/costs/site-costs.ts';
+import { BudgetRule } from '#app/features/options/quick-look/budget-rule.tsx';
 import { ClosingMeter } from '#app/features/options/quick-look/closing-meter.tsx';
-import { CostMeter } from '#app/features/options/quick-look/cost-meter.tsx';
+import { CostDetails } from '#app/features/options/quick-look/cost-details.tsx';
 import type { QuickLookView } from '#app/features/options/quick-look/use-quick-look.ts';
 import { useSite } from './use-site.ts';
 
@@ -20,16 +21,12 @@ export function useSetCosts(siteId: string): SiteCosts['costs'] | undefined {
 
 const closedBy = (summary: ClosingSummary | undefined) => summary?.closedBy.at(-1)?.area;
 
-/** What an option would cost and when the ground would close with it, while it is drawn. */
-export function OptionMeters(props: {
-  works: readonly Work[];
-  /** how many of the works are only shown faint, not placed yet */
-  faint: number;
-  view: QuickLookView;
-  /** the ground is complete, so that a look comes */
-  possible: boolean;
-}) {
-  const { works, view, possible } = props;
+interface MetersProps {
+  readonly works: readonly Work[];
+  readonly view: QuickLookView;
+}
+
+function useCostSums({ works, view }: MetersProps) {
   const { site } = useSite();
   const { surveyYear, years } = site.outlook;
   const costs = useSetCosts(site.id);
@@ -39,6 +36,25 @@ export function OptionMeters(props: {
     [costs, works, surveyYear, years, clumpsPerSquareMetre],
   );
   const [withWorks, wait] = [closedBy(view.look?.summary), closedBy(view.wait)];
+  return {
+    ...{ costs, sums, lastYear: surveyYear + years },
+    closed: withWorks !== undefined && wait !== undefined ? { works: withWorks, wait } : undefined,
+  };
+}
+
+/** What an option would cost and when the ground would close with it, while it is drawn; always in view. */
+export function OptionMeters(
+  props: MetersProps & {
+    /** how many of the works are only shown faint, not placed yet */
+    faint: number;
+    /** the ground is complete, so that a look comes */
+    possible: boolean;
+    /** works that stand on marsh already, in words; empty for none */
+    standing: string;
+  },
+) {
+  const { view, standing } = props;
+  const { costs, sums, lastYear } = useCostSums(props);
   return (
     <>
       {props.faint > 0 && (
@@ -47,21 +63,21 @@ export function OptionMeters(props: {
           placed yet:
         </p>
       )}
-      {sums && costs && (
-        <CostMeter
-          costs={sums}
-          budget={costs.budget}
-          closed={withWorks !== undefined && wait !== undefined ? { works: withWorks, wait } : undefined}
-          lastYear={surveyYear + years}
-        />
-      )}
+      {sums && costs && <BudgetRule total={sums.total} budget={costs.budget} currency={sums.currency} />}
       {view.error ? (
         <ProblemNotice error={view.error} title="There is no quick look." className="mt-3" />
       ) : (
-        possible && (
-          <ClosingMeter summary={view.look?.summary} wait={view.wait} lastYear={surveyYear + years} />
-        )
+        props.possible && <ClosingMeter summary={view.look?.summary} wait={view.wait} lastYear={lastYear} />
       )}
+      <p role="status" className="text-note text-ink-2 empty:hidden">
+        {standing !== '' && `On marsh that stands already: ${standing}.`}
+      </p>
     </>
   );
+}
+
+/** More of what it costs: by year, and by the hectare. */
+export function OptionCosts(props: MetersProps) {
+  const { sums, closed, lastYear } = useCostSums(props);
+  return sums && sums.total > 0 ? <CostDetails costs={sums} {...{ closed, lastYear }} /> : null;
 }

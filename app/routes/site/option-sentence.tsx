@@ -4,9 +4,7 @@ import type { BoardPens } from '#app/features/options/board/board-pens.ts';
 import { isAreaTool, isPattern, type PatternTool } from '#app/features/options/board/board-tools.ts';
 import { MoundBlanks } from '#app/features/options/board/mound-blanks.tsx';
 import { PatternBlanks } from '#app/features/options/board/pattern-sentence.tsx';
-import { PatternWords } from '#app/features/options/board/pattern-words.tsx';
 import { NumberBlank, Sentence } from '#app/features/options/board/sentence.tsx';
-import { SketchWords } from '#app/features/options/board/sketch-words.tsx';
 import type { DrawingBoard } from '#app/features/options/board/use-board.ts';
 
 interface OptionSentenceProps {
@@ -22,16 +20,13 @@ export function OptionSentence(props: OptionSentenceProps) {
   const { tool, errors, missed, onPens } = board;
   if (isAreaTool(tool))
     return (
-      <>
-        <AreaSentence
-          {...{ tool, errors, missed }}
-          pen={pens.area}
-          year={pens.year}
-          onPen={(area) => onPens({ ...pens, area })}
-          onYear={(year) => onPens({ ...pens, year })}
-        />
-        <SketchWords sketch={board.sketch} closed send={board.send} />
-      </>
+      <AreaSentence
+        {...{ tool, errors, missed }}
+        pen={pens.area}
+        year={pens.year}
+        onPen={(area) => onPens({ ...pens, area })}
+        onYear={(year) => onPens({ ...pens, year })}
+      />
     );
   if (isPattern(tool)) return <PatternSentence {...props} tool={tool} />;
   if (tool === 'mound')
@@ -84,25 +79,13 @@ function PatternSentence(props: OptionSentenceProps & { readonly tool: PatternTo
           </>
         )}
       </Sentence>
-      {(tool === 'line' || pen.region === 'outline') && (
-        <SketchWords sketch={board.sketch} closed={tool !== 'line'} send={board.send} />
-      )}
       {laying.error && !laying.busy ? (
         <ProblemNotice error={laying.error} title="The pattern could not be laid." />
-      ) : !laying.ready ? (
-        <p className="text-note text-ink-2">Patterns need the ground: habitat with its classes, and cover.</p>
       ) : (
-        !laying.needsSketch &&
-        Object.keys(errors).length === 0 && (
-          <PatternWords
-            laid={laying.laid}
-            thing={laying.ofMounds ? 'mound' : 'clump'}
-            busy={laying.busy}
-            chance={laying.chance}
-            again={laying.again}
-            onPlace={laying.place}
-            onLayAgain={laying.layAgain}
-          />
+        !laying.ready && (
+          <p className="text-note text-ink-2">
+            Patterns need the ground: habitat with its classes, and cover.
+          </p>
         )
       )}
     </>

@@ -18,7 +18,9 @@ export interface SketchContext {
   readonly send: (event: SketchEvent) => void;
   /** a point off the site was asked for */
   readonly onOffSite: (at: GroundPoint) => void;
-  /** Enter on a sketch that is done; whether it was taken */
+  /** a pattern that fills the whole site needs no sketch to be placed */
+  readonly wholeSite: boolean;
+  /** Enter on a sketch that is done, or with nothing drawn on what is shown; whether it was taken */
   readonly onEnter: () => boolean;
   /** Escape with nothing drawn */
   readonly onLeave: () => void;
@@ -26,14 +28,14 @@ export interface SketchContext {
 
 /** Draws an outline or a line point by point; points can be moved as long as it is not placed. */
 export function sketchTool(context: SketchContext): MapTool {
-  const { grid, sketch, closed, snap, send } = context;
+  const { grid, sketch, closed, snap, send, wholeSite } = context;
   const pointAt = (at: MapPoint): GroundPoint => (snap ? snappedToCorner(grid, [at.x, at.y]) : [at.x, at.y]);
   const what = closed ? 'outline' : 'line';
   return {
     cursor: 'crosshair',
     help: sketch.done
       ? `The ${what} is drawn. Enter places what is shown, Backspace opens the ${what} again, Escape takes it away.`
-      : `Space adds a point at the crosshair, Enter ${closed ? 'closes the outline' : 'ends the line'}, Backspace takes the last point back, Escape leaves it.`,
+      : `${wholeSite && sketch.points.length === 0 ? 'Enter places the pattern that is shown, Escape drops it. ' : ''}Space adds a point at the crosshair, Enter ${closed ? 'closes the outline' : 'ends the line'}, Backspace takes the last point back, Escape leaves it.`,
     press: (at) => {
       if (sketch.done) return;
       const [x, y] = pointAt(at);
@@ -57,7 +59,7 @@ export function sketchTool(context: SketchContext): MapTool {
     key: (event) => {
       if (event.altKey || event.ctrlKey || event.metaKey) return false;
       if (event.key === 'Enter') {
-        if (sketch.done) return context.onEnter();
+        if (sketch.done || (wholeSite && sketch.points.length === 0)) return context.onEnter();
         if (sketch.points.length < fewestPoints(closed)) return false;
         send({ type: 'finish' });
         return true;

@@ -1,4 +1,5 @@
 import type { GroundPoint } from '#app/map/rings.ts';
+import type { BoardTool } from './board-tools.ts';
 import { pulled, type Hold } from './corners.ts';
 
 /** An outline, or a line, while it is drawn. */
@@ -29,6 +30,9 @@ export const noSketch: Sketch = { points: [], over: undefined, done: false };
 
 const near = ([ax, ay]: GroundPoint, [bx, by]: GroundPoint, reach: number) =>
   Math.hypot(ax - bx, ay - by) <= reach;
+
+/** Whether a tool's sketch is an outline, and not a line. */
+export const drawsOutline = (tool: BoardTool): boolean => tool !== 'line';
 
 /** Fewest points that make a whole: three of an outline, two of a line. */
 export const fewestPoints = (closed: boolean): number => (closed ? 3 : 2);

@@ -11,7 +11,8 @@ import { worksInBox } from './find-works.ts';
 import { withPartners } from './planted-mounds.ts';
 import { copiedWorks, movedWork, snappedToMiddle } from './move-works.ts';
 import { reshapable, selectTool, withRing, type Grip } from './select-tool.ts';
-import { noSketch, sketchStep, type Sketch, type SketchEvent } from './sketch.ts';
+import { placeOf } from '../works-words.ts';
+import { drawsOutline, noSketch, sketchStep, type Sketch, type SketchEvent } from './sketch.ts';
 import { sketchTool } from './sketch-tool.ts';
 
 export interface BoardInput {
@@ -34,8 +35,12 @@ export interface BoardInput {
   readonly workOf: (ring: Ring) => Work | undefined;
   /** the first point of an outline or a line was drawn */
   readonly onSketch: () => void;
-  /** Enter on a finished outline or line; whether something was placed. */
+  /** the tool fills the whole site unless an outline is drawn */
+  readonly wholeSite: boolean;
+  /** Enter on a finished outline or line, or on a pattern over the whole site; whether something was placed. */
   readonly onPlace: () => boolean;
+  /** Escape with nothing drawn: the tool is left, and what it shows goes */
+  readonly onLeave: () => void;
   /** Where things that were added stand in time, so that they can be shown. */
   readonly onAdded: (works: readonly Work[]) => void;
 }
@@ -55,8 +60,6 @@ export interface Board {
   readonly remove: () => void;
 }
 
-/** Whether a tool's sketch is an outline, and not a line. */
-export const drawsOutline = (tool: BoardTool): boolean => tool !== 'line';
 const copySteps = [3, 6, 12, 24];
 
 /** Puts the tools together: what the map tells goes to the one in use, what that decides goes into the drawing. */
@@ -153,15 +156,17 @@ export function useBoardTool(input: BoardInput): Board {
       input.onRefused({ x, y, problem: 'A corner must lie on the site.' });
     },
     onEnter: input.onPlace,
-    onLeave: () => input.onTool('select'),
+    wholeSite: input.wholeSite,
+    onLeave: input.onLeave,
   });
 
   const placing: MapTool = {
     ...selecting,
     cursor: 'crosshair',
     help: `Space or Enter places a mound at the crosshair. ${selecting.help}`,
+    grab: (at) => selecting.grab?.(rightOn(works, at)) === true,
     press: (at: MapPoint) => {
-      if (at.id !== undefined) return selecting.press?.(at);
+      if (rightOn(works, at).id !== undefined) return selecting.press?.(at);
       const [x, y] = snap ? snappedToMiddle(grid, [at.x, at.y]) : [at.x, at.y];
       const mound = input.moundAt(x, y);
       if (mound) add(mound);
@@ -205,6 +210,20 @@ const shownRing = (ring: Ring, grip: Grip | undefined): Ring =>
     : grip?.kind === 'works'
       ? ring.map(([x, y]): GroundPoint => [x + grip.by[0], y + grip.by[1]])
       : ring;
+
+/** px around the point of one of the works that count as that point while others are placed beside it */
+const onPoint = 4;
+
+/**
+ * A place as a tool that places hears it: on one of the works only right where that stands, so that the symbols of what
+ * is there, larger on the screen than on the ground, keep nothing from being placed beside them.
+ */
+function rightOn(works: readonly Work[], at: MapPoint): MapPoint {
+  const work = works.find(({ id }) => id === at.id);
+  const { x, y } = work ? placeOf(work) : at;
+  const reach = Math.max(work?.kind === 'mound' ? work.radius : 0, onPoint * at.metresPerPixel);
+  return work && Math.hypot(at.x - x, at.y - y) <= reach ? at : { ...at, id: undefined };
+}
 
 /** The works, with those that are dragged where they are dragged to. */
 function shownWorks(

@@ -11,7 +11,8 @@ import { isAreaTool, isPattern, type BoardTool } from './board-tools.ts';
 import { worksProblem, type RefusedPlace, type WorksGround } from './check-works.ts';
 import type { PatternErrors } from './pattern-pen.ts';
 import { plantedMound } from './planted-mounds.ts';
-import { drawsOutline, useBoardTool, type Board } from './use-board-tool.ts';
+import { drawsOutline } from './sketch.ts';
+import { useBoardTool, type Board } from './use-board-tool.ts';
 import { useLaying, type Laying } from './use-laying.ts';
 import type { PatternLayer } from './use-pattern.ts';
 
@@ -47,6 +48,8 @@ export interface DrawingBoard extends Board {
   readonly onPens: (pens: BoardPens) => void;
   readonly refused: RefusedPlace | undefined;
   readonly forget: () => void;
+  /** Leaves the tool for selecting, and drops what it shows. */
+  readonly leave: () => void;
   readonly found: FoundSurveyed | undefined;
   readonly laying: Laying;
   /** Takes changed works, or says why not. */
@@ -72,6 +75,11 @@ export function useBoard(setting: BoardSetting): DrawingBoard {
     return undefined;
   };
   const choose = (next: BoardTool) => {
+    if (isPattern(tool) && !isPattern(next)) laying.park();
+    turnTo(next);
+    if (!isPattern(tool) && isPattern(next)) laying.resume(next);
+  };
+  const turnTo = (next: BoardTool) => {
     setRefused(undefined);
     setMissed(0);
     setTool(next);
@@ -104,8 +112,10 @@ export function useBoard(setting: BoardSetting): DrawingBoard {
       const pen = { ...pens.patterns[tool], region: 'outline' } as const;
       setting.onPens({ ...pens, patterns: { ...pens.patterns, [tool]: pen } });
     },
+    wholeSite: isPattern(tool) && tool !== 'line' && pens.patterns[tool].region === 'site',
     // Called by a key, when all below is there.
     onPlace: () => laying.place(),
+    onLeave: () => turnTo('select'),
     onAdded: setting.onAdded,
   });
   const laying = useLaying({
@@ -119,7 +129,9 @@ export function useBoard(setting: BoardSetting): DrawingBoard {
     onPlaced: (works) => {
       board.clearSketch();
       setting.onAdded(works);
+      turnTo('select');
     },
+    onAdded: setting.onAdded,
     onTool: choose,
     onPens: setting.onPens,
     onSketch: board.send,
@@ -146,6 +158,7 @@ export function useBoard(setting: BoardSetting): DrawingBoard {
       setting.onPens(next);
     },
     forget: () => setRefused(undefined),
+    leave: () => turnTo('select'),
     edit: (id, field, text) => {
       const work = draft.works.find((other) => other.id === id);
       const next = work && withField(work, field, text, span);

@@ -7,6 +7,7 @@ import type { DraftAction, OptionDraft } from '../option-draft.ts';
 import type { BoardPens } from './board-pens.ts';
 import { isClumpPattern, isPattern, type BoardTool } from './board-tools.ts';
 import { laidWorks } from './laid-works.ts';
+import { useParked } from './use-parked.ts';
 import { penOf, readPattern, type PatternErrors } from './pattern-pen.ts';
 import type { Sketch, SketchEvent } from './sketch.ts';
 import { usePattern, type PatternLayer } from './use-pattern.ts';
@@ -23,7 +24,10 @@ export interface LayingInput {
   readonly layer: PatternLayer | undefined;
   readonly unitCosts: { readonly mound: number; readonly clump: number } | undefined;
   readonly onMissed: () => void;
+  /** it was placed: else the next pattern would show at once, as if nothing had been placed */
   readonly onPlaced: (works: readonly Work[]) => void;
+  /** What waited was placed, beside the tool in use. */
+  readonly onAdded: (works: readonly Work[]) => void;
   readonly onTool: (tool: BoardTool) => void;
   readonly onPens: (pens: BoardPens) => void;
   readonly onSketch: (event: SketchEvent) => void;
@@ -40,8 +44,16 @@ export interface Laying {
   readonly busy: boolean;
   readonly error: unknown;
   readonly laid: LaidPoints | undefined;
-  /** works as they would be placed */
+  /** works as they would be placed, of the tool in use */
   readonly works: readonly Work[];
+  /** works of patterns that wait to be placed while another tool is in use */
+  readonly parked: readonly Work[];
+  readonly placeParked: () => void;
+  readonly dropParked: () => void;
+  /** The tool is about to be left: what it shows is kept until it is placed or dropped. */
+  readonly park: () => void;
+  /** A pattern's tool is taken up: what waited last comes back to it, with its outline. */
+  readonly resume: (tool: BoardTool) => void;
   /** chance plays a part */
   readonly chance: boolean;
   /** it takes the place of works that were laid before */
@@ -99,22 +111,41 @@ export function useLaying(input: LayingInput): Laying {
     return laidWorks(laid.points, { ...setting, mound: mound ?? nothing }, newWorkId);
   }, [laid, pattern, pen, read, year, ofMounds, mound, seed, drawn]);
 
+  const parking = useParked();
   const again = takenUp !== undefined && takenUp.tool === tool && hasSet(draft, takenUp.set);
+  const instead = again ? takenUp.set : undefined;
+  const standing = made && made.works.length > 0 && !asked.isPlaceholderData ? made : undefined;
   const place = (): boolean => {
-    if (!made || made.works.length === 0 || asked.isPlaceholderData) {
+    if (!standing) {
       input.onMissed();
       return false;
     }
-    const instead = again
-      ? new Set(draft.works.filter((work) => work.set === takenUp.set).map((work) => work.id))
-      : undefined;
-    input.draw({ type: 'add', works: made.works, set: made.set, instead });
+    const { works, set } = standing;
+    input.draw({ type: 'add', works, sets: [set], instead: worksOfSets(draft, [instead]) });
     setTakenUp(undefined);
     setSeed(newSeed());
-    input.onPlaced(made.works);
-    // Else the next pattern would show at once, as if nothing had been placed.
-    input.onTool('select');
+    input.onPlaced(works);
     return true;
+  };
+  const park = () => {
+    if (!standing || !pattern) return;
+    parking.park({ ...standing, tool: pattern, instead });
+    setTakenUp(undefined);
+    setSeed(newSeed());
+  };
+  const resume = (next: BoardTool) => {
+    const last = parking.take(next);
+    if (!last) return;
+    const how = last.set.laid;
+    input.onSketch({ type: 'put', points: how.outline ?? [] });
+    setSeed(how.seed);
+    setTakenUp(last.instead === undefined ? undefined : { set: last.instead, tool: next });
+  };
+  const placeParked = () => {
+    const { works, sets, instead: others } = parking;
+    input.draw({ type: 'add', works, sets, instead: worksOfSets(draft, others) });
+    parking.drop();
+    input.onAdded(works);
   };
   const takeUp = (setId: string) => {
     const set = draft.sets.find(({ id }) => id === setId);
@@ -135,6 +166,9 @@ export function useLaying(input: LayingInput): Laying {
     error: asked.error,
     laid,
     works: made?.works ?? noWorks,
+    parked: parking.works,
+    ...{ park, resume, placeParked },
+    dropParked: parking.drop,
     chance: read?.pattern !== undefined && byChance.has(read.pattern.kind),
     again,
     place,
@@ -143,4 +177,8 @@ export function useLaying(input: LayingInput): Laying {
   };
 }
 
+function worksOfSets(draft: OptionDraft, sets: readonly (string | undefined)[]) {
+  const found = draft.works.filter(({ set }) => set !== undefined && sets.includes(set));
+  return found.length > 0 ? new Set(found.map(({ id }) => id)) : undefined;
+}
 const hasSet = (draft: OptionDraft, id: string) => draft.sets.some((set) => set.id === id);

@@ -13,12 +13,12 @@ export function ClosingMeter(props: {
   const summary = props.summary && bareClosing(props.summary);
   const wait = props.wait && bareClosing(props.wait);
   return (
-    <section aria-label="Quick look" className="mt-3">
+    <section aria-label="Quick look" className="mt-1">
       <div className="flex items-baseline justify-between gap-x-3">
         <h2 className="text-body font-bold">
           Expected closing{summary ? ` of ${formatArea(summary.bare)}` : ''}
         </h2>
-        <span className="text-note text-ink-2">bare today; one future</span>
+        <span className="text-note text-ink-2">bare today; growth alone</span>
       </div>
       {summary ? (
         <div role="status">
@@ -41,7 +41,7 @@ export function ClosingMeter(props: {
           Working out when growth arrives
         </p>
       )}
-      <p className="mt-1.5 text-note text-ink-2">{quickLookLeavesOut}</p>
+      <p className="mt-1 text-note text-ink-2">{quickLookLeavesOut}</p>
     </section>
   );
 }

@@ -2,28 +2,26 @@ import type { Costs } from '#sim-core/plan/costs.ts';
 import { costPerHectare } from '#sim-core/plan/costs.ts';
 import { formatArea } from '#app/lib/formats.ts';
 import { Table } from '#app/components/table.tsx';
-import { BudgetRule } from './budget-rule.tsx';
 import { formatMoney } from '#contract/format-money.ts';
 
 /** m² below which a cost per hectare would say nothing. */
 const leastArea = 100;
 
-/** What the works cost: in all against the budget, by year, and for each hectare that they bring back. */
-export function CostMeter(props: {
+/** What the works cost by year, and for each hectare that they bring back. */
+export function CostDetails(props: {
   costs: Costs;
-  budget: number | null;
   /** m² closed by the horizon with the works and without; undefined while not known */
   closed: { works: number; wait: number } | undefined;
   lastYear: number;
 }) {
-  const { costs, budget, closed, lastYear } = props;
+  const { costs, closed, lastYear } = props;
   const money = (amount: number) => formatMoney(amount, costs.currency);
   const years = costs.byYear.filter((year) => year.total > 0);
   const each = closed && costPerHectare(costs.total, closed.works, closed.wait);
   return (
-    <section aria-label="Costs" className="mt-3">
-      <BudgetRule total={costs.total} budget={budget} currency={costs.currency} />
-      <p className="mt-1 text-note text-ink-2">
+    <section aria-label="Costs" className="mt-4 border-t border-rule pt-2">
+      <h2 className="text-body font-bold">Costs</h2>
+      <p className="mt-0.5 text-note text-ink-2">
         {costs.presentValue !== costs.total && `Worth ${money(costs.presentValue)} in today’s money. `}
         {each !== undefined && closed && closed.works - closed.wait < leastArea
           ? `By ${lastYear} hardly more ground closes than under Wait: too little to price by the hectare.`
