@@ -1,6 +1,6 @@
 import type { ReactNode } from 'react';
 import { scaleBar } from './map-ticks.ts';
-import type { MapRaster } from './map-raster.ts';
+import { shareOf, type MapRaster } from './map-raster.ts';
 
 export interface MapLegendProps {
   readonly raster?: MapRaster;
@@ -125,6 +125,7 @@ function Ramp({ raster, title, width }: RampProps) {
 function endsOf(raster: Exclude<MapRaster, { kind: 'classes' }>): (string | number)[] {
   if (raster.kind === 'closing') return [raster.surveyYear + 1, '', raster.lastYear];
   if (raster.kind === 'height') return [raster.lowest.toFixed(2), '', `${raster.highest.toFixed(2)} m`];
+  if (raster.kind === 'share' && raster.most) return ['0', '', shareOf(raster, 255)];
   return raster.kind === 'difference' ? ['−100', 'alike', '+100'] : ['0', '50', '100 %'];
 }
 

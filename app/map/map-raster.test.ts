@@ -128,3 +128,17 @@ describe('a difference', () => {
     ]);
   });
 });
+
+it('says of a share what all of it is, where that is no share of 1', () => {
+  const gain: MapRaster = {
+    kind: 'share',
+    values: Uint8Array.of(0, 51, 255),
+    name: 'growth sooner by',
+    most: { value: 0.031, unit: 'years' },
+  };
+  expect([0, 1, 2].map((cell) => describeCell(gain, undefined, cell))).toEqual([
+    'growth sooner by 0 years',
+    'growth sooner by 0.0062 years',
+    'growth sooner by 0.031 years',
+  ]);
+});

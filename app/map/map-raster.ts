@@ -16,8 +16,13 @@ export interface MapClass {
 export type MapRaster =
   /** round(255·C) */
   | { readonly kind: 'cover'; readonly values: Uint8Array }
-  /** round(255·share) of something else, such as capacity or refuge */
-  | { readonly kind: 'share'; readonly values: Uint8Array; readonly name: string }
+  /** round(255·share) of something else, such as capacity or refuge; `most`: what 255 stands for, where that is no share of 1 */
+  | {
+      readonly kind: 'share';
+      readonly values: Uint8Array;
+      readonly name: string;
+      readonly most?: { readonly value: number; readonly unit: string };
+    }
   /** heights in equal steps: 1 to 255 from the lowest to the highest, m; 0 no data */
   | {
       readonly kind: 'height';
@@ -96,6 +101,12 @@ const heightOf = ({ lowest, highest }: { lowest: number; highest: number }, byte
 
 const percent = (byte: number) => `${Math.round((byte / 255) * 100)} %`;
 
+/** A share in per cent, or in the unit of what it is a share of. */
+export const shareOf = (
+  { most }: Pick<Extract<MapRaster, { kind: 'share' }>, 'most'>,
+  byte: number,
+): string => (most ? `${Number(((most.value * byte) / 255).toPrecision(2))} ${most.unit}` : percent(byte));
+
 /** Percentage points of a difference, with its sign. */
 function points(byte: number): string {
   const difference = Math.round((byte - 128) / 1.27);
@@ -116,7 +127,7 @@ export function describeCell(
     case 'cover':
       return `cover ${percent(value)}`;
     case 'share':
-      return `${raster.name} ${percent(value)}`;
+      return `${raster.name} ${shareOf(raster, value)}`;
     case 'height':
       return value === 0 ? 'no data' : `about ${heightOf(raster, value)} m`;
     case 'difference':

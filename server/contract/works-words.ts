@@ -16,11 +16,11 @@ const clumpsIn = ({ points, each }: Clumps): number => points.length * each;
 const titles: Record<Action['kind'], string> = {
   mound: 'Mound',
   planting: 'Planting',
-  clumps: 'Planting of clumps',
+  clumps: 'Clumps',
   fence: 'Fence',
   loss: 'Loss',
 };
-/** What one of the works is called: its name, or what it is with its number in the table. */
+/** What one of the works is called: its name, or what it is with its number (`workTitles`). */
 export const titleOf = (work: Action & { name?: string | undefined }, number: number): string =>
   work.name ?? `${titles[work.kind]} ${number}`;
 

@@ -1,10 +1,10 @@
+import { withoutPlanted } from '#contract/work-titles.ts';
 import type { Work } from '#contract/works.ts';
 import { WordButton } from '#app/components/word-button.tsx';
 import type { Span } from './board/area-pen.ts';
-import { withoutPlanted } from './board/planted-mounds.ts';
 import { EditedBlank } from './edited-blank.tsx';
 import { fieldText, withField, type WorkField } from './work-fields.ts';
-import { placeInWords, placeOf, titleOf, worksInWords } from '#contract/works-words.ts';
+import { placeInWords, placeOf, worksInWords } from '#contract/works-words.ts';
 
 /** A blank of the sentence that says what the works are, with the words around it. */
 interface Piece {
@@ -46,8 +46,8 @@ const pieces: Record<Work['kind'], readonly Piece[]> = {
 /** What is selected, as blanks that change all of it at once. */
 export function SelectionForm(props: {
   works: readonly Work[];
-  /** number of the only one selected in the table of works, from 1 */
-  number: number;
+  /** what the first of them is called */
+  title: string;
   span: Span;
   /** some of it stands on marsh already */
   standing: boolean;
@@ -100,7 +100,7 @@ export function SelectionForm(props: {
   return (
     <section aria-label="What is selected" className="mb-3 border-b border-rule pb-2 text-[13.5px]">
       <h2 className="text-body leading-tight font-bold">
-        {alone ? titleOf(first, props.number) : `${things.length} selected`}
+        {alone ? props.title : `${things.length} selected`}
       </h2>
       {!alone && <p className="text-note text-ink-2">{worksInWords(works)}</p>}
       <p className="mt-0.5 flex flex-wrap items-baseline gap-x-1.5 gap-y-1">

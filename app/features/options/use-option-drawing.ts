@@ -1,6 +1,7 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useReducer } from 'react';
 import type { Option } from '#contract/options.ts';
+import { copyName } from '#contract/work-titles.ts';
 import { ProblemError } from '#app/lib/api-client.ts';
 import { useWarnBeforeClosing } from '#app/lib/use-warn-before-closing.ts';
 import { createOptionMutation, saveOptionMutation } from './change-option.ts';
@@ -85,9 +86,11 @@ export function useOptionDrawing(option: Option): OptionDrawing {
       ),
     describe: (words) => send(draft.saved, words),
     keepAsCopy: async () => {
+      const listed = queryClient.getQueryData(optionsQuery(option.siteId).queryKey) ?? [];
+      const others = listed.map(({ name }) => name);
       try {
         const copy = await copyOption.mutateAsync({
-          name: `${option.name}, my copy`.slice(0, 100),
+          name: copyName(option.name, others),
           ...bodyOf(draft),
         });
         draw({ type: 'take', option });

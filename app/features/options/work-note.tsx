@@ -1,19 +1,18 @@
 import type { Work } from '#contract/works.ts';
 import { WordButton } from '#app/components/word-button.tsx';
-import { placeInWords, placeOf, titleOf, workInWords } from '#contract/works-words.ts';
+import { placeInWords, placeOf, workInWords } from '#contract/works-words.ts';
 
 /** What one of the works is, at the end of a leader line on the map. */
 export function WorkNote(props: {
   work: Work;
-  /** its number in the table of works, from 1 */
-  number: number;
+  title: string;
   /** absent for those who only read */
   edit?: { onMove: () => void; onRemove: () => void };
 }) {
   const { work, edit } = props;
   return (
     <>
-      <b className="block text-body leading-tight">{titleOf(work, props.number)}</b>
+      <b className="block text-body leading-tight">{props.title}</b>
       <span className="block">
         {work.kind === 'loss' ? 'expected' : 'placed'} in {work.year}
       </span>

@@ -1,11 +1,12 @@
-import { useState } from 'react';
+import { useMemo, useState } from 'react';
+import { workTitles } from '#contract/work-titles.ts';
 import type { Work } from '#contract/works.ts';
 import { FenceSymbol, FlagSymbol, LossSymbol, PlantingSymbol } from '#app/components/symbols.tsx';
 import { Table, type Column } from '#app/components/table.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { EditedBlank } from './edited-blank.tsx';
 import { fieldText, type WorkField } from './work-fields.ts';
-import { placeInWords, placeOf, titleOf, workInWords } from '#contract/works-words.ts';
+import { placeInWords, placeOf, workInWords } from '#contract/works-words.ts';
 
 interface NumberedWork {
   readonly number: number;
@@ -27,6 +28,7 @@ export function WorksTable(props: {
 }) {
   const [most, setMost] = useState(atOnce);
   const { onEdit, onRemove, selected } = props;
+  const titles = useMemo(() => workTitles(props.works), [props.works]);
   const rows = props.works.map((work, i): NumberedWork => ({ number: i + 1, work }));
   const field = ({ work, number }: NumberedWork, name: WorkField, label: string) => {
     const text = fieldText(work, name);
@@ -62,10 +64,10 @@ export function WorksTable(props: {
     {
       key: 'what',
       head: 'works',
-      cell: ({ work, number }) => (
+      cell: ({ work }) => (
         <WordButton className="text-left whitespace-normal" onClick={() => props.onSelect([work.id])}>
           <WorkSymbol work={work} />
-          {titleOf(work, number)}: {workInWords(work)}
+          {titles.get(work.id)}: {workInWords(work)}
           {props.standing.has(work.id) && <span className="text-ink-2">; on marsh already</span>}
         </WordButton>
       ),

@@ -1,6 +1,7 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useMemo, useRef, useState } from 'react';
 import type { Option } from '#contract/options.ts';
+import { withoutPlanted, workTitles } from '#contract/work-titles.ts';
 import type { Work } from '#contract/works.ts';
 import { sayDone } from '#app/components/toast.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
@@ -121,6 +122,7 @@ export function OptionBoard(props: {
     [board.works, preview],
   );
   useLookOf(view, all);
+  const titles = useMemo(() => workTitles(draft.works), [draft.works]);
   // Not of what is being dragged: where it comes to stand is told when it is let go.
   const standing = useMemo(
     () => standingWorks([...draft.works, ...preview], grid, ground.cover),
@@ -158,6 +160,7 @@ export function OptionBoard(props: {
           <OptionMap
             {...{ ground, draft, board, surveyed, preview, year, asTable, editable, show }}
             standing={standing.ids}
+            titles={titles}
             look={view.look}
             lines={view.lines}
             gain={suggesting.gain.result}
@@ -179,7 +182,7 @@ export function OptionBoard(props: {
             chosen.length > 0 && (
               <SelectionForm
                 works={chosen}
-                number={draft.works.indexOf(chosen[0]) + 1}
+                title={titles.get(withoutPlanted(chosen)[0].id) ?? ''}
                 standing={chosen.some((work) => standing.ids.has(work.id))}
                 span={outlook}
                 edit={

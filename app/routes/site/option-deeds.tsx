@@ -1,6 +1,7 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { Option } from '#contract/options.ts';
+import { copyName, freeName } from '#contract/work-titles.ts';
 import { ConfirmDialog } from '#app/components/confirm-dialog.tsx';
 import { Menu, MenuItem, MenuRule } from '#app/components/menu.tsx';
 import { NameDialog } from '#app/components/name-dialog.tsx';
@@ -64,6 +65,7 @@ export function OptionDeeds(props: {
     );
   };
   const own = mayDraw && !option.wait;
+  const names = options.map(({ name }) => name);
   return (
     <>
       {mayDraw && <WordButton onClick={() => setAsked('add')}>Add an option</WordButton>}
@@ -112,7 +114,7 @@ export function OptionDeeds(props: {
         <NameDialog
           title={asked === 'add' ? 'Add an option' : `Copy ${option.name}`}
           label="Name of the option"
-          start={asked === 'add' ? `Option ${options.length}` : `${option.name.slice(0, 90)}, copy`}
+          start={asked === 'add' ? freeName('Option', names) : copyName(option.name, names)}
           longest={100}
           action={asked === 'add' ? 'Add it' : 'Copy it'}
           busy={create.isPending}

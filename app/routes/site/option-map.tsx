@@ -1,11 +1,11 @@
 import { useMemo } from 'react';
+import { withoutPlanted } from '#contract/work-titles.ts';
 import type { Work } from '#contract/works.ts';
 import type { GainMap } from '#sim-core/plan/gain-map.ts';
 import type { YearLine } from '#sim-core/plan/year-lines.ts';
 import { EmptyState } from '#app/components/empty-state.tsx';
 import { FlagSymbol, SurvivorSymbol } from '#app/components/symbols.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
-import { withoutPlanted } from '#app/features/options/board/planted-mounds.ts';
 import { RefusedNote } from '#app/features/options/board/refused-note.tsx';
 import { drawsOutline } from '#app/features/options/board/sketch.ts';
 import { SketchMarks } from '#app/features/options/board/sketch-marks.tsx';
@@ -49,6 +49,7 @@ export function OptionMap(props: {
   year: number;
   asTable: boolean;
   editable: boolean;
+  titles: ReadonlyMap<string, string>;
   /** ids of works that stand on marsh already */
   standing: ReadonlySet<string>;
   title: string;
@@ -125,7 +126,7 @@ export function OptionMap(props: {
           raster?.kind === 'closing'
             ? 'Year it closes, quick look'
             : raster?.kind === 'share'
-              ? 'Gain of one more mound'
+              ? 'Mean arrival sooner by one more mound'
               : `Cover in ${surveyYear}, the survey`
         }
         legend={
@@ -153,7 +154,7 @@ export function OptionMap(props: {
           <MapNote {...placeOf(only)}>
             <WorkNote
               work={only}
-              number={draft.works.findIndex((work) => work.id === only.id) + 1}
+              title={props.titles.get(only.id) ?? ''}
               edit={editable ? { onMove: props.onMove, onRemove: () => props.onRemove(only.id) } : undefined}
             />
           </MapNote>

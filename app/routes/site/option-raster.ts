@@ -10,7 +10,7 @@ export function gainRaster({ gains, most }: GainMap): MapRaster {
   const values = Uint8Array.from(gains, (gain) =>
     gain > 0 && most > 0 ? Math.round((Math.min(gain, most) / most) * 255) : 0,
   );
-  return { kind: 'share', values, name: 'of the most gained' };
+  return { kind: 'share', values, name: 'growth sooner by', most: { value: most, unit: 'years' } };
 }
 
 export const closingRaster = (look: Look, surveyYear: number, years: number): MapRaster => ({

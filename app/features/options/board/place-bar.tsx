@@ -1,8 +1,8 @@
+import { withoutPlanted } from '#contract/work-titles.ts';
 import type { Work } from '#contract/works.ts';
 import { Button } from '#app/components/button.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { formatArea, formatCounted } from '#app/lib/formats.ts';
-import { withoutPlanted } from './planted-mounds.ts';
 import type { Laying } from './use-laying.ts';
 
 /** What a pattern's works are: `40 mounds`, `200 clumps`. */

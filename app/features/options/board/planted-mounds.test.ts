@@ -1,7 +1,8 @@
 // @vitest-environment node
 import { expect, it } from 'vitest';
+import { withoutPlanted } from '#contract/work-titles.ts';
 import type { Work } from '#contract/works.ts';
-import { plantedMound, withoutPlanted, withPartners } from './planted-mounds.ts';
+import { plantedMound, withPartners } from './planted-mounds.ts';
 
 const pen = { radius: 1.5, strength: 1, halo: 1, clumps: 9 };
 const at = { x: 10, y: 20, year: 2027, set: 's' };

@@ -1,4 +1,5 @@
 import type { KeyboardEvent } from 'react';
+import { withoutPlanted } from '#contract/work-titles.ts';
 import type { Work } from '#contract/works.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { arrowMove } from '#app/map/map-keys.ts';
@@ -9,7 +10,7 @@ import { placeOf } from '#contract/works-words.ts';
 import { holdAt, pulled, withoutCorner, type Hold } from './corners.ts';
 import { movedWork, snappedToCorner, snappedToMiddle } from './move-works.ts';
 import { nextOnMap } from './find-works.ts';
-import { withoutPlanted, withPartners } from './planted-mounds.ts';
+import { withPartners } from './planted-mounds.ts';
 
 /** What is held while it is dragged: works, a corner of an outline, or the far corner of a box. */
 export type Grip =

@@ -1,5 +1,6 @@
 import { useMemo, useReducer, useState } from 'react';
 import { newWorkId, type Work } from '#contract/works.ts';
+import { placeOf } from '#contract/works-words.ts';
 import type { MapFoothold } from '#app/map/map-symbols.ts';
 import type { MapPoint, MapTool } from '#app/map/map-tool.ts';
 import type { GroundPoint, Ring } from '#app/map/rings.ts';
@@ -11,7 +12,6 @@ import { worksInBox } from './find-works.ts';
 import { withPartners } from './planted-mounds.ts';
 import { copiedWorks, movedWork, snappedToMiddle } from './move-works.ts';
 import { reshapable, selectTool, withRing, type Grip } from './select-tool.ts';
-import { placeOf } from '../works-words.ts';
 import { drawsOutline, noSketch, sketchStep, type Sketch, type SketchEvent } from './sketch.ts';
 import { sketchTool } from './sketch-tool.ts';
 

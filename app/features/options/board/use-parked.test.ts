@@ -5,9 +5,7 @@ import { useParked } from './use-parked.ts';
 
 const pattern = (tool: ParkedPattern['tool'], id: string): ParkedPattern => ({
   tool,
-  works: [
-    { kind: 'mound', id: `${id}m`, set: id, year: 2027, x: 1, y: 2, radius: 1, strength: 1, halo: 0 },
-  ],
+  works: [{ kind: 'mound', id: `${id}m`, set: id, year: 2027, x: 1, y: 2, radius: 1, strength: 1, halo: 0 }],
   set: { id, laid: { pattern: 'grid', seed: id, parameters: {} } },
   instead: undefined,
 });

@@ -8,13 +8,14 @@ import {
 } from '#contract/option-files.ts';
 import type { Option } from '#contract/options.ts';
 import type { Work } from '#contract/works.ts';
+import { workTitles } from '#contract/work-titles.ts';
 import { Blank, BlankSelect } from '#app/components/blank.tsx';
 import { Button } from '#app/components/button.tsx';
 import { Dialog, DialogActions } from '#app/components/dialog.tsx';
 import { Notice } from '#app/components/notice.tsx';
 import { WordAnchor } from '#app/components/word-button.tsx';
 import { endpointUrl } from '#app/lib/api-client.ts';
-import { formatCount, formatCounted } from '#app/lib/formats.ts';
+import { formatCount } from '#app/lib/formats.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
 
 /** An option as files: for other programs, and for the crew that builds it. */
@@ -26,7 +27,10 @@ export function ExportDialog(props: {
 }) {
   const { option } = props;
   const params = { siteId: option.siteId, optionId: option.id };
-  const outlines = option.works.filter((work) => 'area' in work && work.area.shape === 'polygon').length;
+  const titles = workTitles(option.works);
+  const outlines = option.works
+    .filter((work) => 'area' in work && work.area.shape === 'polygon')
+    .map((work) => titles.get(work.id) ?? '');
   return (
     <Dialog
       open
@@ -53,8 +57,8 @@ export function ExportDialog(props: {
       </p>
       <p className="mt-1 text-note text-ink-2">
         GeoJSON holds everything and can be read in again.
-        {outlines > 0 &&
-          ` ${formatCounted(outlines, 'outline is', 'outlines are')} no points, so the CSV leaves ${outlines === 1 ? 'it' : 'them'} out.`}
+        {outlines.length > 0 &&
+          ` The CSV holds points alone and leaves out ${outlinesInWords(outlines)}, drawn as ${outlines.length === 1 ? 'an outline' : 'outlines'}: take the GeoJSON for ${outlines.length === 1 ? 'it' : 'them'}.`}
       </p>
       <CrewFiles option={option} />
       <DialogActions>
@@ -62,6 +66,12 @@ export function ExportDialog(props: {
       </DialogActions>
     </Dialog>
   );
+}
+
+/** `Fence 1`, `Fence 1 and Loss 1`, `Fence 1, Fence 2, Loss 1 and 4 more` */
+function outlinesInWords(names: readonly string[]): string {
+  const shown = names.length > 4 ? [...names.slice(0, 3), `${names.length - 3} more`] : names;
+  return shown.length === 1 ? shown[0] : `${shown.slice(0, -1).join(', ')} and ${shown[shown.length - 1]}`;
 }
 
 /** Places that a crew goes to for one of the works. */

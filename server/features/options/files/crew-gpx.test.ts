@@ -21,16 +21,16 @@ const inDegrees = (points: ReturnType<typeof crewPoints>): DegreePoint[] =>
 it('lists what a crew goes to in the order of a short round; the corners of an outline stay together', () => {
   expect(crewPoints(works, undefined, undefined).map(({ name, task }) => `${name}: ${task}`)).toEqual([
     '001 =Lee & <Co>: mound of 1.5 m radius',
-    '002 Fence 3, corner 1 of 3: fence inside the outline, until 2031',
-    '003 Fence 3, corner 2 of 3: fence inside the outline, until 2031',
-    '004 Fence 3, corner 3 of 3: fence inside the outline, until 2031',
-    '005 Clumps 4, point 1: set 5 clumps',
-    '006 Clumps 4, point 2: set 5 clumps',
+    '002 Fence 1, corner 1 of 3: fence inside the outline, until 2031',
+    '003 Fence 1, corner 2 of 3: fence inside the outline, until 2031',
+    '004 Fence 1, corner 3 of 3: fence inside the outline, until 2031',
+    '005 Clumps 1, point 1: set 5 clumps',
+    '006 Clumps 1, point 2: set 5 clumps',
     '007 Mound 1: mound of 1.5 m radius',
   ]);
   expect(crewPoints(works, 2028, [100, 0]).map(({ name }) => name)).toEqual([
-    '001 Clumps 4, point 2',
-    '002 Clumps 4, point 1',
+    '001 Clumps 1, point 2',
+    '002 Clumps 1, point 1',
   ]);
   const points = Array(mostCrewPoints + 1).fill([0, 0]) as [number, number][];
   const many: Work = { id: 'm', kind: 'clumps', year: 2027, points, each: 1 };
@@ -128,6 +128,6 @@ it('gives the crew the same points as a table that no spreadsheet computes', () 
   expect(lines[0]).toBe('order,name,task,kind,year,longitude,latitude,x_m,y_m');
   expect(lines[1]).toBe('1,001 =Lee & <Co>,mound of 1.5 m radius,mound,2027,0.01,0,10,0');
   expect(lines[4]).toBe(
-    '4,"004 Fence 3, corner 3 of 3","fence inside the outline, until 2031",fence,2027,0.04,-0.01,40,10',
+    '4,"004 Fence 1, corner 3 of 3","fence inside the outline, until 2031",fence,2027,0.04,-0.01,40,10',
   );
 });

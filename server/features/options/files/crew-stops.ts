@@ -1,4 +1,5 @@
 import { mostCrewPoints } from '#contract/option-files.ts';
+import { workTitles } from '#contract/work-titles.ts';
 import type { Work } from '#contract/works.ts';
 import { ProblemError } from '#server/middleware/problem-error.ts';
 import type { Point } from '#server/files/place-projection.ts';
@@ -28,7 +29,7 @@ interface Stop {
  * The points that a crew goes to: mounds, clumps point by point, the middle of discs, the corners of outlines; losses are
  * nobody's work. In the order of a short round over the stops; the corners of an outline stay together.
  *
- * @param works in the order of the option: their numbers in the names are those of the page's table
+ * @param works in the order of the option: they are called as on the page
  * @throws ProblemError `too-large` for more points than a crew can use
  */
 export function crewPoints(
@@ -36,8 +37,11 @@ export function crewPoints(
   year: number | undefined,
   start: Point | undefined,
 ): CrewPoint[] {
-  const stops = works.flatMap((work, i) =>
-    work.kind === 'loss' || (year !== undefined && work.year !== year) ? [] : stopsOf(work, i + 1),
+  const titles = workTitles(works);
+  const stops = works.flatMap((work) =>
+    work.kind === 'loss' || (year !== undefined && work.year !== year)
+      ? []
+      : stopsOf(work, titles.get(work.id) ?? ''),
   );
   const count = stops.reduce((sum, stop) => sum + stop.corners.length, 0);
   if (count > mostCrewPoints)
@@ -66,16 +70,7 @@ export function crewPoints(
   });
 }
 
-const kindNames: Record<Work['kind'], string> = {
-  mound: 'Mound',
-  planting: 'Planting',
-  clumps: 'Clumps',
-  fence: 'Fence',
-  loss: 'Loss',
-};
-
-function stopsOf(work: Work, number: number): Stop[] {
-  const title = work.name ?? `${kindNames[work.kind]} ${number}`;
+function stopsOf(work: Work, title: string): Stop[] {
   const task = taskOf(work);
   if (work.kind === 'mound') return [{ title, task, work, corners: [[work.x, work.y]] }];
   if (work.kind === 'clumps')
