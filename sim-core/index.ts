@@ -6,7 +6,7 @@ export { frameDigest, toFrame } from './run/frame.ts';
 export { fitKernel, frontSpeed, type FittedKernel, type SpreadRates } from './theory/fit-kernel.ts';
 export { referenceShare } from './theory/reference-cover.ts';
 export { stepRates, type StepRates } from './theory/step-rates.ts';
-export { cannotClose, stillOpen } from './measure/closing.ts';
+export { cannotClose, closingBandName, stillOpen } from './measure/closing.ts';
 export { buildGround, type RasterValues } from './grid/build-ground.ts';
 export type { RunResult, SeriesRow } from './spec/run-result.ts';
 export { fillTime } from './theory/fill-time.ts';

@@ -1,16 +1,19 @@
 import type { ReactNode } from 'react';
 import { classNames } from '#app/lib/class-names.ts';
+import { useNarrow } from '#app/lib/use-media-query.ts';
 
 /**
  * A page of a site: the staff on top, the map to the edges, notes in the margin, the yearline below. On a wide screen
- * the whole fits the window and only the margin scrolls; on a phone it is one column with the action at hand.
+ * the whole fits the window and one area scrolls: the margin beside a map, or a sheet of words together with its margin.
+ * On a phone it is one column with the action at hand. Whatever scrolls is positioned, so that what is placed inside
+ * it, words for the ear above all, scrolls with it and never stretches the page.
  */
 export function SiteLayout(props: {
   /** the TideStaff */
   staff: ReactNode;
-  /** words and blanks above the map */
+  /** words and blanks above the map, on a phone below it */
   tools?: ReactNode;
-  /** more of these words: below them on a wide screen, below the map on a phone, where the map comes first */
+  /** more of these words, below them */
   sentence?: ReactNode;
   /** fills its place; the page without a map gives `sheet` or `children` instead */
   map?: ReactNode;
@@ -44,36 +47,23 @@ export function SiteLayout(props: {
 }
 
 /**
- * On a phone time belongs to the map, so the yearline stands right under it; on a wide screen it spans the foot. There
- * the margin is a column of its own; on a phone its parts follow each other, and the action sticks to the screen's foot.
+ * On a phone the map comes first, then its tools and the yearline, and the parts of the margin follow each other, with the
+ * action at the screen’s foot. On a wide screen tools stand above the map, the yearline spans the foot, and the margin is
+ * a column of its own.
  */
 function MapPage(props: Parameters<typeof SiteLayout>[0]) {
-  const { tools, sentence, dock } = props;
+  const { dock } = props;
+  const narrow = useNarrow();
+  if (props.map === undefined) return <SheetPage {...props} />;
+  const tools = <Tools {...props} below={narrow} />;
   return (
     <div className="flex min-h-0 flex-1 flex-col lg:grid lg:grid-cols-[minmax(0,1fr)_360px] lg:grid-rows-[minmax(0,1fr)_auto]">
       <div className="flex min-h-0 min-w-0 flex-col">
-        {tools !== undefined && (
-          <div
-            className={classNames(
-              'no-print border-ink px-4 pt-1.5 max-lg:border-b max-lg:pb-1.5 lg:pl-6',
-              sentence === undefined && 'lg:border-b lg:pb-1.5',
-            )}
-          >
-            {tools}
-          </div>
-        )}
-        {sentence !== undefined && (
-          <div className="no-print border-ink px-4 py-1.5 max-lg:order-last max-lg:border-t lg:border-b lg:pt-1 lg:pl-6">
-            {sentence}
-          </div>
-        )}
-        {props.map === undefined ? (
-          <div className="min-h-0 px-4 pt-5 pb-10 lg:flex-1 lg:overflow-y-auto lg:px-6">{props.sheet}</div>
-        ) : (
-          <div className="relative h-[48dvh] min-h-[300px] overflow-hidden bg-standing lg:h-auto lg:min-h-0 lg:flex-1">
-            {props.map}
-          </div>
-        )}
+        {!narrow && tools}
+        <div className="relative h-[48dvh] min-h-[300px] overflow-hidden bg-ground lg:h-auto lg:min-h-0 lg:flex-1">
+          {props.map}
+        </div>
+        {narrow && tools}
       </div>
       {props.yearline !== undefined && (
         <div className="border-t border-ink lg:order-last lg:col-span-2">{props.yearline}</div>
@@ -83,15 +73,55 @@ function MapPage(props: Parameters<typeof SiteLayout>[0]) {
         className="flex min-h-0 flex-col border-ink max-lg:contents lg:border-l"
       >
         {dock !== undefined && (
-          <div className="border-ink px-4 py-2 max-lg:border-t lg:order-1 lg:max-h-[45%] lg:shrink-0 lg:overflow-y-auto lg:border-t lg:border-rule lg:pr-7 lg:pl-6">
+          <div className="relative border-ink px-4 py-2 max-lg:border-t lg:order-1 lg:max-h-[45%] lg:shrink-0 lg:overflow-y-auto lg:border-t lg:border-rule lg:pr-7 lg:pl-6">
             {dock}
           </div>
         )}
-        <div className="min-h-0 flex-1 border-ink px-4 py-3 max-lg:border-t lg:overflow-y-auto lg:pr-7 lg:pl-6">
+        <div className="relative min-h-0 flex-1 border-ink px-4 py-3 max-lg:border-t lg:overflow-y-auto lg:pr-7 lg:pl-6">
           {props.margin}
         </div>
         {props.action !== undefined && <ActionBar className="lg:order-2">{props.action}</ActionBar>}
       </aside>
+    </div>
+  );
+}
+
+/** Words in the place of the map. They scroll together with their margin, which stays in sight from its end on. */
+function SheetPage(props: Parameters<typeof SiteLayout>[0]) {
+  return (
+    <div className="relative flex min-h-0 flex-1 flex-col lg:grid lg:grid-cols-[minmax(0,1fr)_360px] lg:overflow-y-auto lg:[container-type:size]">
+      <div className="min-w-0">
+        <Tools {...props} below={false} />
+        <div className="px-4 pt-5 pb-10 lg:px-6">{props.sheet}</div>
+      </div>
+      <aside
+        aria-label="Notes beside the sheet"
+        className="flex flex-col border-ink max-lg:contents lg:sticky lg:bottom-0 lg:min-h-[100cqh] lg:self-end lg:border-l"
+      >
+        <div className="flex-1 border-ink px-4 py-3 max-lg:border-t lg:pr-7 lg:pl-6">{props.margin}</div>
+        {props.action !== undefined && (
+          <ActionBar className="lg:sticky lg:bottom-0">{props.action}</ActionBar>
+        )}
+      </aside>
+    </div>
+  );
+}
+
+function Tools({
+  tools,
+  sentence,
+  below,
+}: Pick<Parameters<typeof SiteLayout>[0], 'tools' | 'sentence'> & { below: boolean }) {
+  if (tools === undefined && sentence === undefined) return null;
+  return (
+    <div
+      className={classNames(
+        'no-print grid gap-y-1 border-ink px-4 py-1.5 lg:pl-6',
+        below ? 'border-t' : 'border-b',
+      )}
+    >
+      {tools}
+      {sentence}
     </div>
   );
 }

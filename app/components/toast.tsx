@@ -30,14 +30,17 @@ function subscribe(listener: () => void): () => void {
   return () => listeners.delete(listener);
 }
 
-/** Where passing messages stand. Once, at the root of the app: a live region must be there before it speaks. */
+/**
+ * Where passing messages stand: over the head of the page, where neither map, legend, yearline nor action lies below.
+ * Once, at the root of the app: a live region must be there before it speaks.
+ */
 export function ToastRegion() {
   const shown = useSyncExternalStore(subscribe, () => messages);
   return (
     <div
       role="status"
       aria-live="polite"
-      className="no-print pointer-events-none fixed bottom-5 left-5 z-50 grid max-w-[calc(100vw-40px)] gap-2"
+      className="no-print pointer-events-none fixed top-2 left-1/2 z-50 grid w-max max-w-[calc(100vw-40px)] -translate-x-1/2 justify-items-center gap-2"
     >
       {shown.map(({ id, words }) => (
         <p

@@ -22,9 +22,33 @@ for (const [width, theme] of [
       ).toEqual([]);
       const overflow = await page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth);
       expect(overflow, `${name} scrolls sideways`).toBeLessThanOrEqual(0);
+      const upright = await page.evaluate(verticalScroll);
+      expect(upright.areas.length, `${name} scrolls in ${upright.areas.join(', ')}`).toBeLessThanOrEqual(1);
+      // Where the whole fits the window, nothing may stretch the page: not even words for the ear alone.
+      if (width > 500 && upright.fitsWindow)
+        expect(upright.pageHeight, `${name} scrolls into a blank`).toBe(upright.windowHeight);
     };
     await check('sign-in', '/sign-in');
     await check('forgot', '/forgot');
     await signIn(page, demoPeople.admin);
     for (const [name, path] of Object.entries(pagesOf(await demoAddresses(page)))) await check(name, path);
   });
+
+/** What of a page scrolls up and down, the page itself included; runs in the browser. */
+function verticalScroll() {
+  const { scrollHeight, clientHeight } = document.documentElement;
+  const scrolls = (element: Element) =>
+    /auto|scroll/.test(getComputedStyle(element).overflowY) &&
+    element.scrollHeight > element.clientHeight + 1;
+  const areas = [...document.body.querySelectorAll('*')]
+    .filter((element) => element.tagName !== 'TEXTAREA' && scrolls(element))
+    .map((element) => `${element.tagName.toLowerCase()} “${element.textContent.trim().slice(0, 24)}”`);
+  if (scrollHeight > clientHeight) areas.unshift('the page');
+  return {
+    areas,
+    pageHeight: scrollHeight,
+    windowHeight: clientHeight,
+    /** a map, or a sheet beside its margin: such a page is as high as the window */
+    fitsWindow: document.querySelector('main aside') !== null,
+  };
+}

@@ -22,7 +22,9 @@ interface MapEdgeProps {
 
 /** Eastings ticked along the top and northings down the left, as on a survey sheet. */
 export function MapEdge({ grid, view, size, compact }: MapEdgeProps) {
-  const { width, height } = size;
+  const { width, height, clear } = size;
+  // The legend stands in the south-west corner.
+  const foot = Math.max(12, clear?.bottom ?? 0);
   const from = toGround(view, grid, size, { left: 0, top: 0 });
   const to = toGround(view, grid, size, { left: width, top: height });
   const labels = 'fill-ink font-mono text-axis font-semibold';
@@ -41,7 +43,7 @@ export function MapEdge({ grid, view, size, compact }: MapEdgeProps) {
       {edgeTicks(from.y, to.y, height, room).map(({ value, at, labelled }) => (
         <g key={value} transform={`translate(0 ${at.toFixed(1)})`}>
           <path d={`M0 0.500h${labelled ? 9 : 5}`} stroke={ink} />
-          {labelled && !compact && at > 60 && at < height - 12 && (
+          {labelled && !compact && at > 60 && at < height - foot && (
             <text transform="translate(13 -5) rotate(-90)" className={labels} style={halo}>
               {value}
             </text>

@@ -1,4 +1,4 @@
-import type { ReactNode } from 'react';
+import type { ReactNode, Ref } from 'react';
 import { scaleBar } from './map-ticks.ts';
 import { shareOf, type MapRaster } from './map-raster.ts';
 
@@ -9,6 +9,8 @@ export interface MapLegendProps {
   readonly metresPerPixel: number;
   /** a small map: only what cannot be left out */
   readonly compact: boolean;
+  /** the part that is always there, for whoever keeps clear of it */
+  readonly standing?: Ref<HTMLDivElement>;
   /** words above the ramp, instead of the usual ones */
   readonly title?: string;
   readonly children?: ReactNode;
@@ -17,7 +19,8 @@ export interface MapLegendProps {
 const mostClasses = 8;
 
 /** What the colours mean, how long a stretch of ground is, and where north is. */
-export function MapLegend({ raster, water, metresPerPixel, compact, title, children }: MapLegendProps) {
+export function MapLegend(props: MapLegendProps) {
+  const { raster, water, metresPerPixel, compact, title, standing, children } = props;
   const swatches = (
     <>
       {raster?.kind === 'closing' && (
@@ -32,26 +35,33 @@ export function MapLegend({ raster, water, metresPerPixel, compact, title, child
     </>
   );
   const ramp = <Ramp raster={raster} title={title} width={compact ? 136 : 170} />;
-  const rule = <ScaleRule metresPerPixel={metresPerPixel} room={compact ? 90 : 150} />;
+  const rule = <ScaleRule metresPerPixel={metresPerPixel} room={compact ? 90 : 110} />;
   if (compact)
     return (
-      <details className="pointer-events-auto text-note text-ink">
-        <summary className="flex list-none items-end gap-4 [&::-webkit-details-marker]:hidden">
-          {ramp}
-          {rule}
-          <span className="border-b border-ink">key</span>
+      <details className="group pointer-events-auto text-note text-ink">
+        <summary className="list-none [&::-webkit-details-marker]:hidden">
+          <div ref={standing} className="flex min-h-11 items-end gap-4 px-3 py-1.5">
+            {ramp}
+            <span className="border-b border-ink">
+              <span className="group-open:hidden">Legend</span>
+              <span className="hidden group-open:inline">Close</span>
+            </span>
+          </div>
         </summary>
-        <div className="grid gap-y-0.5 pt-2">{swatches}</div>
+        <div className="grid gap-y-0.5 border-t border-rule px-3 py-2">
+          {swatches}
+          {rule}
+        </div>
       </details>
     );
   return (
-    <div className="flex items-end gap-4 text-note text-ink">
+    <div ref={standing} className="flex items-end gap-4 px-4 py-2 text-note text-ink">
       <svg width={12} height={26} aria-label="North is up" role="img" className="shrink-0">
         <path d="M6 26V9M6 1l4.500 9h-9z" stroke="currentColor" fill="currentColor" strokeWidth={1.2} />
       </svg>
-      <div className="flex flex-wrap items-end gap-x-5 gap-y-1.5">
+      <div className="flex flex-wrap items-end gap-x-5 gap-y-1">
         {ramp}
-        <div className="grid gap-x-4 leading-[1.35]">{swatches}</div>
+        <div className="grid grid-flow-col grid-rows-2 gap-x-4 leading-[1.35]">{swatches}</div>
         {rule}
       </div>
     </div>
@@ -76,14 +86,14 @@ function Swatch({ colour, children }: { colour: string; children: ReactNode }) {
 function ClassSwatches({ classes }: { classes: Extract<MapRaster, { kind: 'classes' }>['classes'] }) {
   const more = classes.length - mostClasses;
   return (
-    <span className="grid grid-cols-2 gap-x-4">
+    <>
       {classes.slice(0, mostClasses).map((c) => (
         <Swatch key={c.value} colour={c.colour}>
-          {c.name}
+          <span className="max-w-[20ch] truncate">{c.name}</span>
         </Swatch>
       ))}
       {more > 0 && <span className="text-ink-2">and {more} more</span>}
-    </span>
+    </>
   );
 }
 
@@ -107,7 +117,7 @@ function Ramp({ raster, title, width }: RampProps) {
   }[raster.kind];
   return (
     <div style={{ width }}>
-      <div className="font-semibold">{title ?? usual}</div>
+      <div className="font-semibold whitespace-nowrap">{title ?? usual}</div>
       <div
         aria-hidden="true"
         className="my-0.5 h-[9px]"
@@ -134,7 +144,8 @@ function ScaleRule({ metresPerPixel, room }: { metresPerPixel: number; room: num
   const ink = 'var(--color-ink)';
   return (
     <svg
-      width={pixels + 40}
+      // As wide as its longest, so that the legend never wraps anew while the map is zoomed.
+      width={room + 40}
       height={24}
       role="img"
       aria-label={`This bar is ${metres} m long`}

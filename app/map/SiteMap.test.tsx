@@ -47,6 +47,7 @@ function show(props: Partial<SiteMapProps> = {}, more: Partial<MapTool> = {}) {
       label="Sallow Reach, cover in 2043"
       summary="A fifth of the ground is covered."
       tool={tool}
+      clear={{ left: 0, top: 0, right: 0, bottom: 0 }}
       {...props}
     />,
   );

@@ -1,6 +1,6 @@
-import { lazy, Suspense, useId, useMemo, useRef, useState } from 'react';
+import { lazy, Suspense, useEffect, useId, useMemo, useRef, useState } from 'react';
 import { classNames } from '#app/lib/class-names.ts';
-import { cellAt, cellCentre, cellIndex } from '#sim-core/grid/grid.ts';
+import { cellAt, cellCentre, cellIndex, type Grid } from '#sim-core/grid/grid.ts';
 import { MapControls, MapReading, MapUnavailable } from './MapFurniture.tsx';
 import { MapEdge } from './MapEdge.tsx';
 import { MapFrameContext } from './map-context.ts';
@@ -10,10 +10,11 @@ import { MapOverlay } from './MapOverlay.tsx';
 import type { MapArea } from './map-areas.ts';
 import { describeCell } from './map-raster.ts';
 import type { MapFoothold } from './map-symbols.ts';
-import { clampView, startView, toScreen, wholeView, zoomAt, type MapSize, type MapView } from './map-view.ts';
+import { clampView, toScreen, wholeView, zoomAt, type MapSize, type MapView } from './map-view.ts';
 import type { MapContour } from './paint-overlay.ts';
 import type { SiteMapProps } from './site-map-props.ts';
 import { useBoxSize } from './use-box-size.ts';
+import { useClearRoom } from './use-clear-room.ts';
 import { useGraphics } from './use-graphics.ts';
 import { useMapActions } from './use-map-actions.ts';
 
@@ -38,16 +39,22 @@ export function SiteMap(props: SiteMapProps) {
   const { areas = noAreas, contours = noContours, selected = noneSelected } = props;
   const box = useRef<HTMLDivElement>(null);
   const surface = useRef<HTMLDivElement>(null);
+  const [legend, setLegend] = useState<HTMLDivElement | null>(null);
   const room = useBoxSize(box);
   const graphics = useGraphics();
   const [own, setOwn] = useState<MapView>();
   const [painting, setPainting] = useState<Painting>();
   const help = useId();
 
-  const size = room?.size ?? noRoom;
+  const compact = (room?.size.width ?? 0) < compactBelow;
+  const ownClear = useClearRoom(legend, furniture, compact);
+  const clear = props.clear ?? ownClear;
+  const { onClear } = props;
+  useEffect(() => onClear?.(ownClear), [onClear, ownClear]);
+  const size = useMemo((): MapSize => (room ? { ...room.size, clear } : noRoom), [room, clear]);
   const view = useMemo(
-    () => room && clampView(props.view ?? own ?? startView(grid, room.size), grid, room.size),
-    [props.view, own, grid, room],
+    () => room && clampView(props.view ?? own ?? wholeView(grid, size), grid, size),
+    [props.view, own, grid, room, size],
   );
   const show = (next: MapView) => {
     setOwn(next);
@@ -75,7 +82,6 @@ export function SiteMap(props: SiteMapProps) {
     [view, grid, size],
   );
   const summary = props.summary ?? props.label;
-  const compact = size.width < compactBelow;
   const { generation } = graphics;
   const painted = painting?.generation === generation && (painting.withRaster || raster === undefined);
   const onPainted = (withRaster: boolean) => {
@@ -87,8 +93,9 @@ export function SiteMap(props: SiteMapProps) {
     <div
       ref={box}
       data-painted={painted}
-      className={classNames('relative overflow-hidden bg-standing', props.className)}
+      className={classNames('relative overflow-hidden bg-ground', props.className)}
     >
+      {view && <SiteSheet {...{ grid, view, size }} />}
       {room && view && graphics.ready && (
         <Suspense>
           <MapScene
@@ -130,8 +137,9 @@ export function SiteMap(props: SiteMapProps) {
           <div className="pointer-events-none absolute inset-0 overflow-hidden">{props.children}</div>
           {furniture && (
             <>
-              <div className="pointer-events-none absolute bottom-0 left-0 max-w-full border-t border-r border-ink bg-ground px-3 py-1.5 sm:px-4 sm:py-2">
+              <div className="pointer-events-none absolute bottom-0 left-0 max-w-full border-t border-r border-ink bg-ground">
                 <MapLegend
+                  standing={setLegend}
                   raster={raster}
                   water={ground !== undefined}
                   metresPerPixel={grid.cellSize / view.scale}
@@ -163,5 +171,18 @@ export function SiteMap(props: SiteMapProps) {
         <MapUnavailable problem={graphics.problem} summary={summary} onAgain={graphics.again} />
       )}
     </div>
+  );
+}
+
+/** The site's extent below what is painted: where it ends is seen even where nothing is painted. */
+function SiteSheet({ grid, view, size }: { grid: Grid; view: MapView; size: MapSize }) {
+  const { left, top } = toScreen(view, grid, size, grid.originX, grid.originY);
+  return (
+    <div
+      aria-hidden="true"
+      data-site-sheet
+      className="absolute bg-standing outline outline-ink/70"
+      style={{ left, top, width: grid.width * view.scale, height: grid.height * view.scale }}
+    />
   );
 }

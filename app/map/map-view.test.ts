@@ -8,7 +8,6 @@ import {
   fitScale,
   largestScale,
   panBy,
-  startView,
   toGround,
   toScreen,
   wholeView,
@@ -37,9 +36,44 @@ describe('a map’s view', () => {
     expect(se.left - nw.left).toBeCloseTo(640 * view.scale);
   });
 
-  it('starts filled to the edges where that hides little, and whole where it hides much', () => {
-    expect(startView(grid, size).scale).toBeCloseTo(1080 / 640);
-    expect(startView(grid, { width: 390, height: 1200 }).scale).toBeCloseTo(390 / 640);
+  it('keeps the whole grid clear of the furniture, in the middle of what is left, on any screen', () => {
+    const edge = fc.integer({ min: 0, max: 90 });
+    fc.assert(
+      fc.property(
+        fc.integer({ min: 400, max: 2000 }),
+        fc.integer({ min: 400, max: 2000 }),
+        fc.record({ left: edge, top: edge, right: edge, bottom: edge }),
+        (width, height, clear) => {
+          const room = { width, height, clear };
+          const view = wholeView(grid, room);
+          const nw = toScreen(view, grid, room, grid.originX, grid.originY);
+          const se = toScreen(view, grid, room, grid.originX + 1280, grid.originY - 744);
+          expect(nw.left).toBeGreaterThanOrEqual(clear.left - 1e-6);
+          expect(nw.top).toBeGreaterThanOrEqual(clear.top - 1e-6);
+          expect(se.left).toBeLessThanOrEqual(width - clear.right + 1e-6);
+          expect(se.top).toBeLessThanOrEqual(height - clear.bottom + 1e-6);
+          expect(nw.left - clear.left).toBeCloseTo(width - clear.right - se.left, 6);
+          expect(nw.top - clear.top).toBeCloseTo(height - clear.bottom - se.top, 6);
+          const kept = clampView(view, grid, room);
+          expect(kept.x).toBeCloseTo(view.x, 6);
+          expect(kept.y).toBeCloseTo(view.y, 6);
+        },
+      ),
+    );
+  });
+
+  it('lets every corner of the ground come clear of the furniture, and no further than a hand’s breadth', () => {
+    const room = { ...size, clear: { left: 24, top: 20, right: 44, bottom: 70 } };
+    const view = { x: 412_840, y: 5_301_628, scale: 4 };
+    const far = panBy(view, grid, room, 1e6, -1e6);
+    const sw = toScreen(far, grid, room, grid.originX, grid.originY - 744);
+    expect(sw.left).toBeCloseTo(24 + 40);
+    expect(sw.top).toBeCloseTo(608 - 70 - 40);
+  });
+
+  it('still shows ground where the furniture would take the whole map', () => {
+    const clear = { left: 200, top: 200, right: 200, bottom: 200 };
+    expect(fitScale(grid, { width: 240, height: 240, clear })).toBeCloseTo(120 / 640);
   });
 
   it('finds the point of the ground that a place on the screen shows', () => {
@@ -73,7 +107,7 @@ describe('a map’s view', () => {
   });
 
   it('never leaves the limits of zoom', () => {
-    const far = zoomAt(startView(grid, size), grid, size, { left: 0, top: 0 }, 1e-6);
+    const far = zoomAt(wholeView(grid, size), grid, size, { left: 0, top: 0 }, 1e-6);
     expect(far.scale).toBeCloseTo(fitScale(grid, size));
     expect(zoomAt(far, grid, size, { left: 0, top: 0 }, 1e9).scale).toBe(largestScale);
   });

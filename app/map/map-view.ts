@@ -6,10 +6,19 @@ export interface MapView {
   readonly y: number;
   readonly scale: number;
 }
+/** Room along the edges that words and buttons take, CSS px. */
+export interface MapClear {
+  readonly left: number;
+  readonly top: number;
+  readonly right: number;
+  readonly bottom: number;
+}
 /** Room for the map, CSS px. */
 export interface MapSize {
   readonly width: number;
   readonly height: number;
+  /** what the whole site keeps clear of; nothing unless said */
+  readonly clear?: MapClear;
 }
 /** A place on the screen, CSS px from the map's top left corner. */
 export interface ScreenPoint {
@@ -21,44 +30,59 @@ export interface ScreenPoint {
 export const largestScale = 64;
 /** How far the ground may be pulled in from the edge, so that what stands on the border can be read. */
 const slack = 40;
-/** The map starts filled to its edges unless that hides more than this. */
-const mostHidden = 1.7;
+const noClear: MapClear = { left: 0, top: 0, right: 0, bottom: 0 };
+/** A map too small for its own furniture gives at most this share of itself to it. */
+const mostClear = 0.5;
 
-/** Scale at which the whole grid is seen. */
-export const fitScale = (grid: Grid, size: MapSize): number =>
-  Math.min(largestScale, size.width / grid.width, size.height / grid.height);
+/** What is left between the furniture: its size, and how far its middle lies right of and below the map's, px. */
+function openRoom({ width, height, clear = noClear }: MapSize) {
+  const { left, top, right, bottom } = clear;
+  const across = Math.min(1, (mostClear * width) / Math.max(1, left + right));
+  const down = Math.min(1, (mostClear * height) / Math.max(1, top + bottom));
+  return {
+    width: width - across * (left + right),
+    height: height - down * (top + bottom),
+    right: (across * (left - right)) / 2,
+    down: (down * (top - bottom)) / 2,
+  };
+}
 
-const middle = (grid: Grid) => ({
-  x: grid.originX + (grid.width * grid.cellSize) / 2,
-  y: grid.originY - (grid.height * grid.cellSize) / 2,
-});
+/** Scale at which the whole grid is seen, clear of the furniture. */
+export const fitScale = (grid: Grid, size: MapSize): number => {
+  const room = openRoom(size);
+  return Math.min(largestScale, room.width / grid.width, room.height / grid.height);
+};
 
-/** The whole grid. */
-export const wholeView = (grid: Grid, size: MapSize): MapView => ({
-  ...middle(grid),
-  scale: fitScale(grid, size),
-});
+/** The point that stands in the map's middle when the grid's own middle stands in that of the open room. */
+function middle(grid: Grid, size: MapSize, scale: number) {
+  const { right, down } = openRoom(size);
+  const perPixel = grid.cellSize / scale;
+  return {
+    x: grid.originX + (grid.width * grid.cellSize) / 2 - right * perPixel,
+    y: grid.originY - (grid.height * grid.cellSize) / 2 + down * perPixel,
+  };
+}
 
-/** What a map starts with: ground to its edges where that hides little of it, else the whole grid. */
-export function startView(grid: Grid, size: MapSize): MapView {
-  const whole = fitScale(grid, size);
-  const full = Math.min(largestScale, Math.max(size.width / grid.width, size.height / grid.height));
-  return { ...middle(grid), scale: full / whole <= mostHidden ? full : whole };
+/** The whole grid, clear of the furniture: what a map starts with. */
+export function wholeView(grid: Grid, size: MapSize): MapView {
+  const scale = fitScale(grid, size);
+  return { ...middle(grid, size, scale), scale };
 }
 
 /** The same view kept within what makes sense: not smaller than the whole, not beyond the ground. */
 export function clampView(view: MapView, grid: Grid, size: MapSize): MapView {
   const scale = Math.min(largestScale, Math.max(fitScale(grid, size), view.scale));
   const perPixel = grid.cellSize / scale;
+  const open = openRoom(size);
   const inside = (value: number, centre: number, cells: number, pixels: number) => {
     const room = Math.max(0, (cells * scale - pixels) / 2);
     const reach = (room > 0.5 ? room + slack : 0) * perPixel;
     return Math.min(centre + reach, Math.max(centre - reach, value));
   };
-  const centre = middle(grid);
+  const centre = middle(grid, size, scale);
   return {
-    x: inside(view.x, centre.x, grid.width, size.width),
-    y: inside(view.y, centre.y, grid.height, size.height),
+    x: inside(view.x, centre.x, grid.width, open.width),
+    y: inside(view.y, centre.y, grid.height, open.height),
     scale,
   };
 }

@@ -5,7 +5,7 @@ import type { MapCell } from './map-keys.ts';
 import type { MapRaster } from './map-raster.ts';
 import type { MapFoothold } from './map-symbols.ts';
 import type { MapTool } from './map-tool.ts';
-import type { MapView } from './map-view.ts';
+import type { MapClear, MapView } from './map-view.ts';
 import type { MapContour } from './paint-overlay.ts';
 
 export interface SiteMapProps {
@@ -27,6 +27,10 @@ export interface SiteMapProps {
   /** Controlled view, for maps that move together; without it the map keeps its own. */
   readonly view?: MapView;
   readonly onView?: (view: MapView) => void;
+  /** Room that the whole site keeps free, for maps that move together; without it each keeps clear of its own furniture. */
+  readonly clear?: MapClear;
+  /** What this map's own furniture takes, as it changes. */
+  readonly onClear?: (clear: MapClear) => void;
   /** name of the map for those who hear it, such as `Sallow Reach, cover in 2043` */
   readonly label: string;
   /** what the map shows, in a sentence or two; also stands in for it where it cannot be drawn */

@@ -119,17 +119,18 @@ describe('Yearline', () => {
     expect(screen.getByRole('button', { name: 'Pause' })).toBeTruthy();
   });
 
-  it('turns a year to ink past tolerance only', () => {
+  it('hangs a bar for each dry year alone, and turns it to ink past tolerance', () => {
     const { container } = render(<Harness />);
     const bars = [...container.querySelectorAll('rect')].filter((r) => r.getAttribute('y') === '105');
-    expect(bars.map((b) => b.getAttribute('fill'))).toEqual([
-      'var(--color-shore)',
-      'var(--color-shore)',
-      'var(--color-ink)',
-      'var(--color-shore)',
-      'var(--color-shore)',
-    ]);
-    expect(Number(bars[2].getAttribute('height'))).toBeGreaterThan(Number(bars[1].getAttribute('height')));
+    expect(bars.map((b) => b.getAttribute('fill'))).toEqual(['var(--color-shore)', 'var(--color-ink)']);
+    expect(Number(bars[1].getAttribute('height'))).toBeGreaterThan(Number(bars[0].getAttribute('height')));
+  });
+
+  it.each([1440, 390])('writes its scales beside the plot at %i px', (wide) => {
+    vi.spyOn(HTMLElement.prototype, 'clientWidth', 'get').mockReturnValue(wide);
+    const { container } = render(<Harness />);
+    const words = [...container.querySelectorAll('text')].map((text) => text.textContent);
+    expect(words).toEqual(expect.arrayContaining(['100 %', '50', '0', '−2', '−4']));
   });
 
   it('stands without a run: weather and works alone', () => {

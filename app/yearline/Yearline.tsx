@@ -1,4 +1,5 @@
 import { useRef, type KeyboardEvent, type PointerEvent, type ReactNode } from 'react';
+import { formatArea } from '#app/lib/formats.ts';
 import { useWidth } from './use-width.ts';
 import { usePlayback } from './use-playback.ts';
 import { yearForKey } from './playback.ts';
@@ -139,9 +140,7 @@ export function Yearline(props: YearlineProps) {
           <YearlinePlot
             {...{ scale, surveyYear, lastYear, year, availableUntil, droughtIndex, tolerances }}
             {...{ records, compare, pins, marks }}
-            heading={
-              props.heading ?? (records.length ? 'Columns: area closing that year, in the map’s colours' : '')
-            }
+            heading={props.heading ?? headingOf(records, scale.compact)}
           />
         )}
       </div>
@@ -160,6 +159,13 @@ export function Yearline(props: YearlineProps) {
       )}
     </section>
   );
+}
+
+/** What is drawn, with the size of the tallest column, as columns have no scale of their own. */
+function headingOf(records: readonly YearRecord[], compact: boolean): string {
+  const most = Math.max(0, ...records.map((r) => r.closingArea));
+  if (compact) return records.length > 0 ? 'Cover, and drought index below' : 'Drought index, down from 0';
+  return most > 0 ? `Columns: area closing that year, ${formatArea(most)} at most, in the map’s colours` : '';
 }
 
 function Icon({ d, bar }: { d: string; bar?: number }) {

@@ -1,4 +1,5 @@
 import { Fragment, type ReactNode } from 'react';
+import { formatNumber } from '#app/lib/formats.ts';
 import { closingColour } from './closing-colour.ts';
 import type { YearRecord } from './year-records.ts';
 import { labelledYears, labelsThatFit, type YearlineScale } from './yearline-scale.ts';
@@ -41,7 +42,7 @@ export function YearlinePlot(props: YearlinePlotProps) {
   return (
     <svg width={scale.width} height={scale.height} className="block overflow-visible" aria-hidden="true">
       <DroughtBars {...props} />
-      <CoverAxis scale={scale} />
+      <Axes scale={scale} />
       <ClosingColumns {...props} />
       {compare && <CoverLine scale={scale} records={compare.records} dashed />}
       <CoverLine scale={scale} records={records} />
@@ -59,26 +60,30 @@ export function YearlinePlot(props: YearlinePlotProps) {
 
 function DroughtBars({ scale, surveyYear, droughtIndex, tolerances, availableUntil }: YearlinePlotProps) {
   const { datum, barWidth, left, right, compact } = scale;
-  const tolerance = (index: number, dashes: string, words: string, dy: number): ReactNode => {
+  const tolerance = (index: number, dashes: string, words: string, row: number): ReactNode => {
     const y = datum + scale.length(index) + 0.5;
+    const written = datum + 13 * (row + 1);
     return (
       <>
         <path d={`M${left} ${y}H${right}`} stroke={ink} strokeDasharray={dashes} strokeOpacity={0.85} />
         {!compact && (
-          <text x={right + 12} y={Math.min(y + dy, scale.labels - 18)} className={note}>
-            {words}
-          </text>
+          <>
+            <path d={`M${right + 12} ${written - 4}h10`} stroke={ink} strokeDasharray={dashes} />
+            <text x={right + 26} y={written} className={note}>
+              {words}
+            </text>
+          </>
         )}
       </>
     );
   };
   const near = tolerances?.nearMound;
-  const apart = tolerances && near !== undefined && scale.length(near) - scale.length(tolerances.open) > 13;
   return (
     <>
       {droughtIndex.map((index, i) => {
         const year = surveyYear + 1 + i;
         const dry = tolerances !== undefined && index < tolerances.open;
+        if (scale.length(index) === 0) return null;
         return (
           <rect
             key={year}
@@ -91,10 +96,10 @@ function DroughtBars({ scale, surveyYear, droughtIndex, tolerances, availableUnt
           />
         );
       })}
-      {tolerances && tolerance(tolerances.open, '1 3', 'open ground', apart ? 0 : -3)}
-      {near !== undefined && tolerance(near, '5 4', 'near a mound', apart ? 4 : 10)}
+      {tolerances && tolerance(tolerances.open, '1 3', 'open ground', 1)}
+      {near !== undefined && tolerance(near, '4 2', 'near a mound', 2)}
       {tolerances && !compact && (
-        <text x={right + 12} y={datum + scale.length(tolerances.open) - (apart ? 14 : 16)} className={note}>
+        <text x={right + 12} y={datum + 13} className={note}>
           dies beyond:
         </text>
       )}
@@ -102,27 +107,42 @@ function DroughtBars({ scale, surveyYear, droughtIndex, tolerances, availableUnt
   );
 }
 
-function CoverAxis({ scale }: { scale: YearlineScale }) {
+/** Cover in per cent up from the datum, the drought index down from it. */
+function Axes({ scale }: { scale: YearlineScale }) {
   const { left, right, datum, compact } = scale;
   const axis = 'fill-ink-2 font-mono text-axis';
+  const edge = left - (compact ? 6 : 8);
   return (
     <>
       {[0.5, 1].map((v) => (
         <path key={v} d={`M${left} ${scale.y(v)}H${right}`} stroke="var(--color-rule)" />
       ))}
+      {scale.indexTicks.map((index) => (
+        <path key={index} d={`M${left - 4} ${datum + scale.length(index) + 0.5}h4`} stroke={ink} />
+      ))}
+      <g textAnchor="end" className={axis}>
+        <text x={edge} y={scale.y(1) + 4}>
+          100 %
+        </text>
+        <text x={edge} y={scale.y(0.5) + 4}>
+          50
+        </text>
+        {scale.indexTicks.map((index) => (
+          <text key={index} x={edge} y={datum + scale.length(index) + (index === 0 ? -3 : 4)}>
+            {formatNumber(index)}
+          </text>
+        ))}
+      </g>
       {!compact && (
         <g textAnchor="end">
-          <text x={left - 8} y={scale.y(1) + 4} className={axis}>
-            100 %
-          </text>
-          <text x={left - 8} y={scale.y(0.5) + 4} className={axis}>
-            50
-          </text>
-          <text x={left - 8} y={datum - 4} className={strong}>
+          <text x={edge - 28} y={datum - 4} className={strong}>
             cover
           </text>
-          <text x={left - 8} y={datum + 14} className={strong}>
-            dryness
+          <text x={edge - 28} y={datum + 15} className={strong}>
+            drought
+          </text>
+          <text x={edge - 28} y={datum + 29} className={strong}>
+            index
           </text>
         </g>
       )}
@@ -233,12 +253,15 @@ function Notes({ scale, pins, marks, heading, year: shown }: YearlinePlotProps) 
   const pinWords = compact ? [] : labelsThatFit(clear, 0, right);
   // The heading makes way for the playhead; marks matter more than it, as the legend says it too.
   const long = heading.length * 6.2;
-  const begins = scale.x(shown) < left + long + 8 ? scale.x(shown) + 14 : left;
+  const behind = scale.x(shown) < left + long + 8;
+  // A playhead in the middle of a narrow yearline leaves room before it only.
+  const before = behind && scale.x(shown) + 14 + long > scale.width;
+  const begins = before ? 2 : behind ? scale.x(shown) + 14 : left;
   const crowded = ticks.some((t) => t.x < begins + long);
   return (
     <>
-      {!compact && !crowded && (
-        <text x={begins} y={top - 6} className={note}>
+      {(compact || !crowded) && (
+        <text x={begins} y={top - (compact ? 8 : 6)} className={note} style={compact ? halo : undefined}>
           {heading}
         </text>
       )}

@@ -45,7 +45,7 @@ export function YearlineTable(props: YearlineTableProps) {
             closing that year
           </th>
           <th scope="col" className={head}>
-            closed by then
+            ever closed by then
           </th>
           <th scope="col" className={`${head} text-left`}>
             works and marks

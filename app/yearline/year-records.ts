@@ -9,7 +9,7 @@ export interface YearRecord {
   readonly coverShare: number;
   /** area that closed in this year, m² */
   readonly closingArea: number;
-  /** area closed by the end of this year, m² */
+  /** area that had closed at some time by the end of this year, m²; it never falls */
   readonly closedArea: number;
   /** covered area at the end of the year, m² */
   readonly coveredArea: number;

@@ -22,11 +22,25 @@ describe('yearlineScale', () => {
   });
   it('hangs drought further down the drier it is, and never past the room for it', () => {
     const s = scale(1440, [-6, 2]);
-    expect(s.length(3)).toBe(0);
-    expect(s.length(5)).toBe(0);
     expect(s.length(-1)).toBeLessThan(s.length(-2));
+    expect(s.length(-3)).toBeCloseTo(s.hang / 2);
     expect(s.length(-6)).toBeCloseTo(s.hang);
-    expect(scale(1440).length(-3)).toBeCloseTo(s.hang);
+    expect(scale(1440).length(-4)).toBeCloseTo(s.hang);
+  });
+  it('hangs nothing where there is no drought: at 0 and above', () => {
+    for (const index of [0, 0.5, 3, 5]) expect(scale(1440, [-6, 2]).length(index)).toBe(0);
+  });
+  it('writes indices as far down as the bars reach, and in longer steps where they would touch', () => {
+    expect(scale(1440).indexTicks).toEqual([0, -2, -4]);
+    expect(scale(390, [-6.4]).indexTicks).toEqual([0, -4]);
+    expect(scale(1440, [-6.4]).indexTicks).toEqual([0, -2, -4, -6]);
+    expect(scale(1440, [-12]).indexTicks).toEqual([0, -4, -8, -12]);
+    for (const driest of [-4, -5, -7.3, -10, -20, -70]) {
+      const s = scale(390, [driest]);
+      const [, first] = s.indexTicks;
+      if (first !== undefined) expect(s.length(first)).toBeGreaterThanOrEqual(11);
+      expect(s.length(s.indexTicks[s.indexTicks.length - 1])).toBeLessThanOrEqual(s.hang + 1e-9);
+    }
   });
   it('raises cover from the datum to the top', () => {
     const s = scale(1440);

@@ -19,8 +19,10 @@ export interface YearlineScale {
   x(year: number): number;
   /** y of a share of the reference cover */
   y(share: number): number;
-  /** how far down a drought index hangs: the drier, the further */
+  /** how far down a drought index hangs: the drier below 0, the further; from 0 on it is no drought and 0 */
   length(index: number): number;
+  /** indices to write beside the bars: 0, −2, −4 …, as many as there is room for */
+  readonly indexTicks: readonly number[];
   /** nearest year to an x, inside the yearline */
   yearAt(x: number): number;
 }
@@ -34,7 +36,8 @@ interface ScaleInput {
   readonly highestShare: number;
 }
 
-const wettest = 3;
+/** The scale reaches at least this far, so that a mild record does not look like a drought. */
+const leastDriest = -4;
 /** Width below which the yearline is drawn as on a phone. */
 export const compactBelow = 720;
 
@@ -47,12 +50,12 @@ export function yearlineScale({
 }: ScaleInput): YearlineScale {
   const compact = width < compactBelow;
   const shape = compact
-    ? { left: 18, right: width - 24, top: 16, datum: 72, hang: 34, labels: 122, height: 128 }
+    ? { left: 46, right: width - 24, top: 30, datum: 86, hang: 36, labels: 138, height: 144 }
     : { left: 196, right: width - 104, top: 30, datum: 104, hang: 44, labels: 165, height: 172 };
   const { left, right, top, datum, hang } = shape;
   const years = Math.max(1, lastYear - surveyYear);
   const yearWidth = (right - left) / years;
-  const driest = Math.min(-3, ...indices);
+  const driest = Math.min(leastDriest, ...indices);
   const fullShare = Math.max(1, highestShare);
   return {
     width,
@@ -62,9 +65,19 @@ export function yearlineScale({
     barWidth: Math.min(yearWidth, 44),
     x: (year) => left + (year - surveyYear) * yearWidth,
     y: (share) => datum - (share / fullShare) * (datum - top),
-    length: (index) => ((wettest - Math.min(index, wettest)) / (wettest - driest)) * hang,
+    length: (index) => (Math.max(0, -index) / -driest) * hang,
+    indexTicks: indexTicks(driest, hang),
     yearAt: (x) => Math.min(lastYear, Math.max(surveyYear, Math.round(surveyYear + (x - left) / yearWidth))),
   };
+}
+
+/** Room that a written index needs below the one before, px. */
+const indexRoom = 13;
+
+/** 0, −2, −4 … down to the driest index; in steps of 4, 10 or 20 where these would touch. */
+function indexTicks(driest: number, hang: number): number[] {
+  const step = [2, 4, 10, 20].find((by) => (by / -driest) * hang >= indexRoom) ?? 100;
+  return Array.from({ length: Math.floor(-driest / step) + 1 }, (_, i) => (i === 0 ? 0 : -i * step));
 }
 
 /** Years to label: multiples of 1, 5, 10, 20 … that leave each label `room` px; the survey year where there is room. */

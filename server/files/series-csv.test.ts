@@ -21,7 +21,7 @@ const row: SeriesRow = {
 
 test('a series has one line a row, CRLF after each, full precision and an empty field for null', () => {
   expect(seriesCsv([row, { ...row, time: 2027, droughtIndex: -2.5 }]).split('\r\n')).toEqual([
-    'time_year,drought_index,covered_area_m2,recovered_share,occupied_area_m2,closed_area_m2,closing_area_m2,' +
+    'time_year,drought_index,covered_area_m2,recovered_share,occupied_area_m2,ever_closed_area_m2,closing_area_m2,' +
       'edge_length_m,patches,largest_patch_area_m2,lost_to_drought_m2,lost_to_background_m2,lost_to_grazing_m2,lost_to_events_m2',
     '2026,,0.30000000000000004,0.25,3,4,5,6,7,8,9,10,11,12',
     '2027,-2.5,0.30000000000000004,0.25,3,4,5,6,7,8,9,10,11,12',

@@ -8,7 +8,7 @@ export const seriesColumns: readonly (readonly [key: keyof SeriesRow, header: st
   ['coveredArea', 'covered_area_m2'],
   ['recoveredShare', 'recovered_share'],
   ['occupiedArea', 'occupied_area_m2'],
-  ['closedArea', 'closed_area_m2'],
+  ['closedArea', 'ever_closed_area_m2'],
   ['closingArea', 'closing_area_m2'],
   ['edgeLength', 'edge_length_m'],
   ['patches', 'patches'],

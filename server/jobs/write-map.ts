@@ -2,6 +2,7 @@ import { readFile } from 'node:fs/promises';
 import { decodeCellValues } from '#rasters/cells/cell-values.ts';
 import { encodeGeoTiff } from '#rasters/write/geotiff.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
+import { closingBandName } from '#sim-core/measure/closing.ts';
 import type { WriteMapTask, WrittenFile } from './raster-tasks.ts';
 import { writeHashed } from './read-layer.ts';
 
@@ -12,7 +13,7 @@ const noCover = -9999;
 
 /**
  * Writes a map of a run as GeoTIFF to `outPath`. Cover is Float32, the stored k/255 as a share 0..1; closing years are
- * Int16, with 0 for cells that are still open at the horizon. Where the plant cannot grow there is no data.
+ * Int16, with 0 for cells that are open at the horizon. Where the plant cannot grow there is no data.
  */
 export async function writeMap(task: WriteMapTask): Promise<WrittenFile> {
   const { grid, title, note } = task;
@@ -25,7 +26,7 @@ export async function writeMap(task: WriteMapTask): Promise<WrittenFile> {
         grid,
         values: stored,
         noData: cannotGrow,
-        bandName: 'closing year, 0 = open at the horizon',
+        bandName: closingBandName,
         unit: 'year',
         facts,
       }),

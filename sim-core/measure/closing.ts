@@ -1,6 +1,8 @@
 /** Cells that cannot hold the plant, and cells that are still open at the horizon. */
 export const cannotClose = -32768;
 export const stillOpen = 0;
+/** What a GeoTIFF of closing years says of its band, wherever it is written. */
+export const closingBandName = 'closing year, 0 = open at the horizon';
 
 export interface Closing {
   /** year of first C ≥ half its reference, 0 still open, −32768 cannot hold the plant; Int16, row-major */

@@ -72,6 +72,39 @@ describe('CurveChart', () => {
     expect(tell.mock.calls[0][0]).toMatchObject({ type: 'added', curve: 'capacity' });
   });
 
+  it('keeps the names of tide levels apart from each other and above the plot, however many there are', () => {
+    const tidalDatums = [
+      'low water',
+      'mean low water neaps',
+      'mean sea level',
+      'mean high water',
+      'springs',
+    ].map((name, i) => ({ name, height: 1.4 + i * 0.12 }));
+    const { container } = render(
+      <CurveChart
+        {...{ heights }}
+        draft={{ ...draft, tidalDatums }}
+        tell={vi.fn()}
+        chosen="capacity"
+        editable
+      />,
+    );
+    const names = [...container.querySelectorAll('text')]
+      .filter((text) => tidalDatums.some(({ name }) => name === text.textContent))
+      .map((text) => ({
+        row: Number(text.getAttribute('y')),
+        from: Number(text.getAttribute('x')),
+        to: Number(text.getAttribute('x')) + text.textContent.length * 6,
+      }));
+    expect(names).toHaveLength(5);
+    for (const one of names)
+      for (const other of names)
+        if (one !== other && Math.abs(one.row - other.row) < 11)
+          expect(one.to <= other.from || other.to <= one.from).toBe(true);
+    const full = [...container.querySelectorAll('text')].find((text) => text.textContent === '100 %')!;
+    expect(Number(full.getAttribute('y'))).toBeGreaterThan(Math.max(...names.map(({ row }) => row)) + 11);
+  });
+
   it('has no handles for those who may not change it, nor for a curve that is not there', () => {
     show({ editable: false });
     expect(screen.queryAllByRole('slider')).toHaveLength(0);

@@ -8,10 +8,12 @@ import { chartSpan, type SiteHeights } from './elevation-facts.ts';
 import { niceTicks, stagger } from './chart-ticks.ts';
 
 const width = 312;
-const top = 34;
 const height = 150;
-const foot = top + height;
 const handleReach = 13;
+/** Of the names of tide levels, above the plot: a row's height, and what a letter takes at the most. */
+const [nameRow, nameLetter] = [12, 6.3];
+/** A longer name is cut in the picture; the list of levels has it whole. */
+const longestName = 26;
 
 /**
  * The curves over the site's own heights. Points of the chosen curve are dragged, or moved by arrow keys (Shift for ten
@@ -36,6 +38,9 @@ export function CurveChart(props: {
   const span = dragged?.span ?? chartSpan(heights, elevationCurves, tidalDatums);
   const x = (z: number) => ((z - span.from) / (span.to - span.from)) * width;
   const y = (share: number) => foot - share * height;
+  const levels = placeLevels(tidalDatums, x);
+  const top = 22 + nameRow * (1 + Math.max(-1, ...levels.map(({ row }) => row)));
+  const foot = top + height;
   const curve = elevationCurves[chosen];
 
   const placeOf = (event: PointerEvent) => {
@@ -105,7 +110,7 @@ export function CurveChart(props: {
         return <rect key={i} x={left} y={foot - rise} width={wide} height={rise} className="fill-rule-2" />;
       })}
       <path d={`M0 ${y(1)}H${width}M0 ${y(0.5)}H${width}`} className="stroke-rule" strokeWidth={0.7} />
-      <DatumLines datums={tidalDatums} x={x} />
+      <DatumLines levels={levels} foot={foot} />
       {curveNames.map((name) => (
         <path
           key={name}
@@ -173,27 +178,52 @@ export function CurveChart(props: {
   );
 }
 
-/** Levels of the tide as guides, their names at the top in rows that do not run into one another. */
-function DatumLines({ datums, x }: { datums: readonly TidalDatum[]; x: (height: number) => number }) {
-  const sorted = [...datums].sort((a, b) => a.height - b.height);
+interface PlacedLevel extends TidalDatum {
+  /** px: of its line, and where its name begins */
+  readonly at: number;
+  readonly from: number;
+  readonly row: number;
+  readonly shown: string;
+}
+
+/** Levels of the tide with their names in rows, so that none runs into another. */
+function placeLevels(datums: readonly TidalDatum[], x: (height: number) => number): PlacedLevel[] {
+  const sorted = [...datums]
+    .sort((a, b) => a.height - b.height)
+    .map((datum) => ({
+      ...datum,
+      at: x(datum.height),
+      shown: datum.name.length > longestName ? `${datum.name.slice(0, longestName - 1)}…` : datum.name,
+    }));
   const rows = stagger(
-    sorted.map(({ name, height: z }) => ({ at: x(z), length: name.length * 5.6 + 6 })),
+    sorted.map(({ at, shown }) => ({ at, length: shown.length * nameLetter + 6 })),
     width,
   );
+  return sorted.map((level, i) => ({ ...level, ...rows[i] }));
+}
+
+/** The levels as guides, lines below all names. */
+function DatumLines({ levels, foot }: { levels: readonly PlacedLevel[]; foot: number }) {
   return (
     <g aria-hidden="true">
-      {sorted.map(({ name, height: z }, i) => (
-        <g key={`${name} ${z}`}>
-          <path
-            d={`M${x(z)} ${4 + rows[i].row * 11}V${foot}`}
-            className="stroke-ink-2"
-            strokeWidth={0.8}
-            strokeDasharray="4 2"
-          />
-          <text x={rows[i].from} y={9 + rows[i].row * 11} className="fill-ink-2 text-[10.5px]">
-            {name}
-          </text>
-        </g>
+      {levels.map(({ name, height: z, at, row }) => (
+        <path
+          key={`${name} ${z}`}
+          d={`M${at} ${4 + row * nameRow}V${foot}`}
+          className="stroke-ink-2"
+          strokeWidth={0.8}
+          strokeDasharray="4 2"
+        />
+      ))}
+      {levels.map(({ name, height: z, from, row, shown }) => (
+        <text
+          key={`${name} ${z}`}
+          x={from}
+          y={9 + row * nameRow}
+          className="fill-ink-2 stroke-ground text-[10.5px] [paint-order:stroke] [stroke-linejoin:round] [stroke-width:4px]"
+        >
+          {shown}
+        </text>
       ))}
     </g>
   );

@@ -1,3 +1,4 @@
+import { useSyncExternalStore } from 'react';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { cellIndex } from '#sim-core/grid/grid.ts';
 import { formatShare } from '#app/lib/formats.ts';
@@ -11,8 +12,12 @@ export function CellHistory(props: {
   surveyYear: number;
   lastYear: number;
   year: number;
+  /** how many years have a frame */
+  stored: number;
 }) {
-  const { runId, grid, cell, surveyYear, lastYear, year } = props;
+  const { runId, grid, cell, surveyYear, lastYear, year, stored } = props;
+  // Frames come in while a pointer rests.
+  useSyncExternalStore(runFrames.subscribe, runFrames.version);
   const points = cell
     ? runFrames.history(runId, surveyYear, lastYear, cellIndex(grid, cell.column, cell.row))
     : [];
@@ -40,10 +45,18 @@ export function CellHistory(props: {
       <p className="min-h-[2.8em] text-note text-ink-2">
         {first && last
           ? `Cover here: ${formatShare(first.byte / 255)} in ${first.year}, ${formatShare(last.byte / 255)} in ${last.year}${
-              points.length < lastYear - surveyYear + 1 ? ` (${points.length} years at hand)` : ''
+              points.length < stored ? ` (${restWords(points.length, stored, grid)})` : ''
             }.`
           : 'Point at the map, or move its crosshair by the arrow keys, to read a cell through the years.'}
       </p>
     </section>
   );
+}
+
+/** Why not all stored years are read: the others are on their way, or do not fit into memory together. */
+function restWords(read: number, stored: number, { width, height }: Grid): string {
+  const words = `${read} of ${stored} stored years read`;
+  return stored <= runFrames.capacity(width * height)
+    ? `${words} so far`
+    : `${words}; too large to hold them all, so play or step to read others`;
 }

@@ -75,6 +75,20 @@ describe('createFrameCache', () => {
     ]);
   });
 
+  it('tells when a frame has come in', async () => {
+    const cache = createFrameCache(() => Promise.resolve(frame(1)), 1000);
+    const heard = vi.fn();
+    const end = cache.subscribe(heard);
+    const before = cache.version();
+    await cache.load('r', 2026);
+    cache.put('r', 2027, frame(2));
+    expect(heard).toHaveBeenCalledTimes(2);
+    expect(cache.version()).toBe(before + 2);
+    end();
+    cache.put('r', 2028, frame(3));
+    expect(heard).toHaveBeenCalledTimes(2);
+  });
+
   it('forgets a run that was deleted', () => {
     const cache = createFrameCache(() => Promise.reject(new Error('not asked for')), 1000);
     cache.put('r', 1, frame(1));
@@ -87,7 +101,7 @@ describe('createFrameCache', () => {
 describe('yearsAround', () => {
   const stored = Array.from({ length: 35 }, (_, i) => 2026 + i);
   it('looks forward first, then back', () => {
-    expect(yearsAround(stored, 2040, 100)).toEqual([
+    expect(yearsAround(stored, 2040, 34)).toEqual([
       ...Array.from({ length: 12 }, (_, i) => 2041 + i),
       2039,
       2038,
@@ -96,6 +110,11 @@ describe('yearsAround', () => {
       2035,
       2034,
     ]);
+  });
+  it('asks for all of a run that the cache holds, so that a cell can be read through all its years', () => {
+    const all = yearsAround(stored, 2040, 35);
+    expect([...all, 2040].sort()).toEqual(stored);
+    expect(all.slice(0, 2)).toEqual([2041, 2042]);
   });
   it('asks for no more than what the cache can hold beside the year shown', () => {
     expect(yearsAround(stored, 2040, 4)).toEqual([2041, 2042]);

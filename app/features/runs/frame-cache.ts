@@ -13,6 +13,10 @@ export interface FrameCache {
   /** one cell through the years whose frames are at hand, ascending; none of them counts as shown by this */
   history(runId: string, first: number, last: number, cell: number): { year: number; byte: number }[];
   drop(runId: string): void;
+  /** Calls back whenever a frame has come in; returns how to end that. */
+  readonly subscribe: (listener: () => void) => () => void;
+  /** how many frames have come in so far, so that a change is seen */
+  readonly version: () => number;
 }
 
 export type FetchFrame = (runId: string, year: number) => Promise<Uint8Array>;
@@ -25,7 +29,10 @@ export function createFrameCache(fetchFrame: FetchFrame, budget: number): FrameC
   // A Map keeps the order of insertion, so the first key is the one that was shown longest ago.
   const kept = new Map<string, Uint8Array>();
   const coming = new Map<string, Promise<Uint8Array>>();
+  const listeners = new Set<() => void>();
   let bytes = 0;
+  /** counts what has come in */
+  let held = 0;
   let wave = 0;
 
   const keyOf = (runId: string, year: number) => `${runId}/${year}`;
@@ -34,6 +41,7 @@ export function createFrameCache(fetchFrame: FetchFrame, budget: number): FrameC
     kept.delete(key);
   };
   const keep = (key: string, frame: Uint8Array) => {
+    held++;
     forget(key);
     kept.set(key, frame);
     bytes += frame.byteLength;
@@ -41,6 +49,7 @@ export function createFrameCache(fetchFrame: FetchFrame, budget: number): FrameC
       if (bytes <= budget || kept.size <= fewest) break;
       forget(oldest);
     }
+    listeners.forEach((listener) => listener());
   };
 
   function peek(runId: string, year: number): Uint8Array | undefined {
@@ -96,6 +105,11 @@ export function createFrameCache(fetchFrame: FetchFrame, budget: number): FrameC
       }
       return found;
     },
+    subscribe: (listener) => {
+      listeners.add(listener);
+      return () => listeners.delete(listener);
+    },
+    version: () => held,
     drop: (runId) => {
       for (const key of [...kept.keys()]) if (key.startsWith(`${runId}/`)) forget(key);
     },
@@ -103,12 +117,14 @@ export function createFrameCache(fetchFrame: FetchFrame, budget: number): FrameC
 }
 
 /**
- * Stored years worth fetching ahead of a playhead: the next ones in the direction of play first, then a few behind.
+ * Stored years worth fetching ahead of a playhead, the next ones in the direction of play first, then those behind: all
+ * of them where the cache holds a whole run, so that a cell can be read through it; else a few.
  * @param room frames that the cache holds
  */
 export function yearsAround(stored: readonly number[], year: number, room: number): number[] {
   const after = stored.filter((y) => y > year);
   const before = stored.filter((y) => y < year).reverse();
+  if (stored.length <= room) return [...after, ...before];
   const ahead = Math.max(1, Math.min(12, Math.floor((room - 1) * 0.7)));
   const behind = Math.max(0, Math.min(6, room - 2 - ahead));
   return [...after.slice(0, ahead), ...before.slice(0, behind)];

@@ -28,7 +28,7 @@ export function YearFacts(props: {
         <Figure value={formatShare(record.coverShare)} words="of what the ground can carry is covered" />
         <Figure
           value={formatArea(record.closedArea)}
-          words="closed: reached half of what the ground can carry at some time by then"
+          words="ever closed: reached half of what the ground can carry at some time by then"
         />
       </div>
       <p className="mt-1 text-note text-ink-2">

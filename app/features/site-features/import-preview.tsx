@@ -17,7 +17,11 @@ export function ImportPreview({ preview }: { preview: FeatureImportReply }) {
         {bad > 0 && `, ${bad} with a problem`}. <span className="text-ink-2">{read}</span>
       </p>
       {problems.length > 0 && (
-        <Notice kind="problem" title="Not taken as they are:" className="mt-2 max-h-40 overflow-y-auto">
+        <Notice
+          kind="problem"
+          title="Not taken as they are:"
+          className="relative mt-2 max-h-40 overflow-y-auto"
+        >
           <ul className="mt-1">
             {problems.map(({ row, message }) => (
               <li key={`${row} ${message}`}>
@@ -31,7 +35,12 @@ export function ImportPreview({ preview }: { preview: FeatureImportReply }) {
       )}
       {shown.length > 0 && (
         // Scrolls by itself, so keys must be able to get into it.
-        <div tabIndex={0} role="region" aria-label="What was read" className="mt-2 max-h-56 overflow-y-auto">
+        <div
+          tabIndex={0}
+          role="region"
+          aria-label="What was read"
+          className="relative mt-2 max-h-56 overflow-y-auto"
+        >
           <Table
             caption="What was read"
             rows={shown}

@@ -33,7 +33,7 @@ export function CellSizeDialog(props: { site: Site; onClose: () => void }) {
       {sizes.isPending && <LoadingLines label="Reckoning what each cell would mean" lines={4} />}
       {sizes.error && <ProblemNotice error={sizes.error} className="mt-3" />}
       {sizes.data && (
-        <div className="mt-3 overflow-x-auto">
+        <div className="relative mt-3 overflow-x-auto">
           <Table
             caption="Working cells that this site may have"
             rows={sizes.data}

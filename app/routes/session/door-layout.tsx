@@ -15,7 +15,7 @@ export function DoorLayout(props: {
       <main
         id="main"
         tabIndex={-1}
-        className="flex flex-col border-ink px-4 pt-8 pb-6 lg:order-last lg:w-[460px] lg:shrink-0 lg:overflow-y-auto lg:border-l lg:pt-11 lg:pr-14 lg:pl-11"
+        className="relative flex flex-col border-ink px-4 pt-8 pb-6 lg:order-last lg:w-[460px] lg:shrink-0 lg:overflow-y-auto lg:border-l lg:pt-11 lg:pr-14 lg:pl-11"
       >
         <h1 className="text-answer font-heavy tracking-[-.03em]">{props.title}</h1>
         {props.lead !== undefined && <div className="mt-1.5 text-title text-ink-2">{props.lead}</div>}

@@ -13,7 +13,7 @@ import { worksOnMap } from '#app/features/options/board/works-on-map.ts';
 import { useSearchPatch } from '#app/lib/use-search-patch.ts';
 import { useThrottled } from '#app/lib/use-throttled.ts';
 import type { MapRaster } from '#app/map/map-raster.ts';
-import type { MapView } from '#app/map/map-view.ts';
+import type { MapClear, MapView } from '#app/map/map-view.ts';
 import { SiteMap } from '#app/map/SiteMap.tsx';
 import { useSearchParams } from 'react-router-dom';
 import { useComparisonCapacity } from './comparison-ground.ts';
@@ -48,6 +48,8 @@ export function ComparisonMaps(props: {
     middle,
   );
   const [view, setView] = useState<MapView>();
+  // The first map has the legend; all keep clear of it, so that the ground lies alike in each.
+  const [clear, setClear] = useState<MapClear>();
   const [chosen, setChosen] = useState<readonly number[]>(() => plan.options.map((_, i) => i).slice(0, 4));
   const [swipe, setSwipe] = useState<number>();
   const capacity = useComparisonCapacity(comparison);
@@ -55,7 +57,21 @@ export function ComparisonMaps(props: {
   const map = (option: number, small: boolean) => (
     <EnsembleMap
       key={option}
-      {...{ comparison, live, option, outlook, show, year, wait, capacity, view, onView: setView, small }}
+      {...{
+        comparison,
+        live,
+        option,
+        outlook,
+        show,
+        year,
+        wait,
+        capacity,
+        view,
+        onView: setView,
+        small,
+        clear,
+        onClear: setClear,
+      }}
     />
   );
   return (
@@ -164,6 +180,8 @@ function EnsembleMap(props: {
   view: MapView | undefined;
   onView: (view: MapView) => void;
   small: boolean;
+  clear: MapClear | undefined;
+  onClear: (clear: MapClear) => void;
 }) {
   const { comparison, live, option, outlook, show, year, wait, small } = props;
   const { plan, grid } = comparison;
@@ -205,6 +223,8 @@ function EnsembleMap(props: {
         view={props.view}
         onView={props.onView}
         furniture={!small}
+        clear={small ? props.clear : undefined}
+        onClear={small ? undefined : props.onClear}
         legendTitle={title}
         label={`${plan.options[option].name}: ${shows[show]}${show === 'closing' ? '' : ` in ${year}`}`}
         summary={`${plan.options[option].name}, ${shows[show]} over all futures. All maps move together.`}

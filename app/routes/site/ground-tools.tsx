@@ -1,7 +1,9 @@
 import type { LayerPart } from '#contract/layers.ts';
+import { BlankSelect } from '#app/components/blank.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
 import { partLabels } from '#app/features/layers/part-words.ts';
-import { engineLabels, engineMaps, type GroundView } from './ground-view.ts';
+import { useNarrow } from '#app/lib/use-media-query.ts';
+import { engineLabels, engineMaps, readView, viewKey, type GroundView } from './ground-view.ts';
 
 /** What the map shows: a layer as it came, or what the engine will see. */
 export function GroundTools(props: {
@@ -10,8 +12,41 @@ export function GroundTools(props: {
   onShow: (view: GroundView) => void;
 }) {
   const { present, view, onShow } = props;
+  const narrow = useNarrow();
   if (view === undefined)
     return <span className="flex min-h-8 items-center text-[13.5px] text-ink-2">No layer to show yet</span>;
+  if (narrow)
+    return (
+      <div className="flex items-center gap-x-2 text-[13.5px]">
+        <span aria-hidden="true" className="text-ink-2">
+          Map shows
+        </span>
+        <BlankSelect
+          label="Map shows"
+          className="min-w-0 text-[15px]"
+          value={viewKey(view)}
+          onChange={(event) => {
+            const chosen = readView(event.target.value, present);
+            if (chosen) onShow(chosen);
+          }}
+        >
+          <optgroup label="Layers">
+            {present.map((part) => (
+              <option key={part} value={viewKey({ of: 'layer', part })}>
+                {partLabels[part].toLowerCase()}
+              </option>
+            ))}
+          </optgroup>
+          <optgroup label="The engine will see">
+            {engineMaps.map((map) => (
+              <option key={map} value={viewKey({ of: 'engine', map })}>
+                {engineLabels[map]}, to the engine
+              </option>
+            ))}
+          </optgroup>
+        </BlankSelect>
+      </div>
+    );
   return (
     <div className="flex min-h-8 flex-wrap items-center gap-x-8">
       <WordChoice

@@ -87,7 +87,7 @@ export function OptionMap(props: {
 
   if (props.asTable)
     return (
-      <div className="size-full overflow-auto bg-ground px-4 py-3 lg:px-6">
+      <div className="relative size-full overflow-auto bg-ground px-4 py-3 lg:px-6">
         {draft.works.length === 0 ? (
           <EmptyState title="No works in this option.">
             {editable

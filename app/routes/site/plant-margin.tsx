@@ -9,7 +9,14 @@ import type { Rates } from '#sim-core/spec/parameters.ts';
 import { useSite } from './use-site.ts';
 
 /** What the rates imply on the cells of this site, drawn and in words. */
-export function PlantMargin({ implied, rates }: { implied: Implications; rates: Rates }) {
+export function PlantMargin(props: {
+  implied: Implications;
+  rates: Rates;
+  /** processes that are on: none of the pictures knows of them */
+  grazing: boolean;
+  fragments: boolean;
+}) {
+  const { implied, rates } = props;
   const { site } = useSite();
   const { cellSize } = site.grid;
   const { kernel } = implied;
@@ -19,6 +26,7 @@ export function PlantMargin({ implied, rates }: { implied: Implications; rates: 
       <p className="mb-2.5 text-note text-ink-2">
         on cells of {formatNumber(cellSize)} m, {formatCounted(site.outlook.stepsPerYear, 'step')} a year
       </p>
+      <LeftOut {...props} />
       <Part title="A straight edge moves">
         {kernel === undefined ? (
           <Notice kind="problem" title="No front.">
@@ -57,6 +65,24 @@ export function PlantMargin({ implied, rates }: { implied: Implications; rates: 
       <Part title="What drought takes in a year">
         <LossCurves rates={rates} halfLoss={implied.halfLoss} />
       </Part>
+    </div>
+  );
+}
+
+/** What is turned on and yet changes nothing here, so that nobody reads it into the pictures. */
+function LeftOut({ grazing, fragments }: { grazing: boolean; fragments: boolean }) {
+  const words = [
+    grazing &&
+      'Grazing is on and left out below: it hangs on how many grazers gather where, which only a run works out. What they come to in a year stands below their rates.',
+    fragments && 'Fragments are on and left out below: they jump ahead of the edge by chance.',
+  ].filter((line) => line !== false);
+  return (
+    <div role="status">
+      {words.map((line) => (
+        <p key={line} className="mb-2.5 border-l-[5px] border-rule pl-2.5 text-note">
+          {line}
+        </p>
+      ))}
     </div>
   );
 }

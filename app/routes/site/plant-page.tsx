@@ -119,7 +119,12 @@ export function Page() {
       }
       margin={
         <>
-          <PlantMargin implied={implied} rates={rates} />
+          <PlantMargin
+            implied={implied}
+            rates={rates}
+            grazing={draft.grazers.on}
+            fragments={draft.fragments.on}
+          />
           {save.error && <ProblemNotice error={save.error} title="Not saved." className="mt-3" />}
           <LeaveGuard when={mayKeepGround && edited !== undefined} what="The plant" />
         </>

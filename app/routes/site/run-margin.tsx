@@ -24,6 +24,8 @@ export function RunMargin(props: {
   rows: readonly SeriesRow[];
   compare: { label: string; records: readonly YearRecord[]; recovery: string | undefined } | undefined;
   cell: { column: number; row: number } | undefined;
+  /** how many years have a frame */
+  stored: number;
   onDeed: (deed: AskedDeed['deed']) => void;
 }) {
   const { run, live, year, records, compare } = props;
@@ -70,6 +72,7 @@ export function RunMargin(props: {
         surveyYear={run.surveyYear}
         lastYear={props.lastYear}
         year={year}
+        stored={props.stored}
       />
       <RunFacts run={run} result={result} />
       <RunExports run={run} year={props.frameYear} />

@@ -112,11 +112,11 @@ export function RunView({ run, live }: { run: Run; live: LiveRun | undefined }) 
       }
       map={
         asTable ? (
-          <div className="size-full overflow-auto bg-ground px-4 py-3 lg:px-6">
+          <div className="relative size-full overflow-auto bg-ground px-4 py-3 lg:px-6">
             <YearlineTable
               {...yearline}
               notes={[...pins, ...marks]}
-              caption={`${run.name}, year by year. Cover is the share of what the ground can carry; closed is what reached half of it at some time by then.`}
+              caption={`${run.name}, year by year. Cover is the share of what the ground can carry; ever closed is what reached half of it at some time by then, so it never falls.`}
             />
           </div>
         ) : (
@@ -133,6 +133,7 @@ export function RunView({ run, live }: { run: Run; live: LiveRun | undefined }) 
         <>
           <RunMargin
             {...{ run, live, year, records, rows, compare, cell }}
+            stored={storedYears.length}
             frameYear={storedYears.includes(year) ? year : undefined}
             lastYear={lastYear}
             onDeed={(deed) => setAsked({ deed, run })}

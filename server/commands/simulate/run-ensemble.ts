@@ -3,7 +3,7 @@ import { seriesColumns } from '#server/files/series-csv.ts';
 import { createRunPool } from '#server/jobs/run-pool.ts';
 import { ratesOfRun, uncertainNames } from '#sim-core/belief/rates-of-run.ts';
 import { attemptsOfRun, WorkerDied } from '#sim-core/ensemble/runner.ts';
-import { RunProblem, type RunResult } from '#sim-core/index.ts';
+import { closingBandName, RunProblem, type RunResult } from '#sim-core/index.ts';
 import { drawProblems } from '#sim-core/run/draw-problems.ts';
 import { frameYears, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import { ensembleMaps } from './ensemble-maps.ts';
@@ -61,7 +61,7 @@ export async function runEnsemble(
   folder ??= await open();
   for (const year of years)
     await folder.write(`cover-${year}.tif`, coverMap(onFile, `mean cover ${year}`, maps.meanCover(year)));
-  const closingName = 'year by which half of the replicates have closed, 0 still open';
+  const closingName = `median ${closingBandName}`;
   await folder.write('closing.tif', closingMap(onFile, closingName, maps.medianClosing()));
   await folder.write('series.csv', seriesOfAll(results));
   if (spec.uncertain) await folder.write('draws.csv', drawsOfAll(spec, results));

@@ -2,7 +2,7 @@ import { readFile } from 'node:fs/promises';
 import { setImmediate as nextTurn } from 'node:timers/promises';
 import { seriesCsv } from '#server/files/series-csv.ts';
 import { ratesOfRun } from '#sim-core/belief/rates-of-run.ts';
-import { createRun, RunProblem } from '#sim-core/index.ts';
+import { closingBandName, createRun, RunProblem } from '#sim-core/index.ts';
 import { frameYears, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import { parseHeadlessSpec } from './headless-spec.ts';
 import { readGround, type GroundOnFile } from './read-ground.ts';
@@ -48,7 +48,7 @@ async function runOnce(spec: RunSpec, onFile: GroundOnFile, { open, tell }: Spec
     year = next;
   }
   const result = run.result();
-  await folder.write('closing.tif', closingMap(onFile, 'closing year, 0 still open', run.closing()));
+  await folder.write('closing.tif', closingMap(onFile, closingBandName, run.closing()));
   await folder.write('series.csv', seriesCsv(result.series));
   const { digest, recoveredYear } = result;
   const drawn = spec.uncertain && ratesOfRun(spec).drawn;

@@ -127,6 +127,9 @@ describe('a run on files', () => {
     }
     const closing = await readTif('out', 'closing.tif');
     expect(closing).toMatchObject({ dataType: 'int16', noData: -32768, values: expected.closing });
+    expect(await readFile(join(folder, 'out', 'closing.tif'), 'latin1')).toContain(
+      'closing year, 0 = open at the horizon',
+    );
 
     const summary = await summaryOf('out');
     const { series, ...facts } = expected.result;

@@ -72,7 +72,9 @@ describe('exports', () => {
   });
 
   it('the closing years, 0 for what is still open', async () => {
-    const raster = await readRaster((await download('closing.tif')).body as Buffer);
+    const file = (await download('closing.tif')).body as Buffer;
+    expect(file.toString('latin1')).toContain('closing year, 0 = open at the horizon');
+    const raster = await readRaster(file);
     expect(raster).toMatchObject({ grid: site.grid, dataType: 'int16', noData: -32_768 });
     expect(raster.values).toEqual(computed.closing);
     expect(computed.closing[5]).toBe(-32_768);

@@ -122,7 +122,7 @@ function Found({ preview, base }: { preview: WorksPreview; base: PictureBase }) 
             {formatCounted(problems.length + moreProblems, 'thing was', 'things were')} left out:
           </b>
           <ul
-            className="mt-1 max-h-48 overflow-y-auto border-l-[6px] border-danger text-note"
+            className="relative mt-1 max-h-48 overflow-y-auto border-l-[6px] border-danger text-note"
             tabIndex={0}
             aria-label="What was left out"
           >

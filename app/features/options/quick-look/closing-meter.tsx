@@ -20,6 +20,12 @@ export function ClosingMeter(props: {
         </h2>
         <span className="text-note text-ink-2">bare today; growth alone</span>
       </div>
+      {summary && (
+        <p className="text-note text-ink-2">
+          Hectares of plants: bare ground counts by the share of it that the plant can cover there, so they
+          are fewer than those of the ground.
+        </p>
+      )}
       {summary ? (
         <div role="status">
           <dl className="mt-0.5 grid grid-cols-3 gap-x-3">
