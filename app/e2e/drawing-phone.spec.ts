@@ -1,6 +1,7 @@
 import { demoAddresses } from './addresses.ts';
 import { expectOnMap, expectPassable } from './notes.ts';
 import { demoPeople } from './people.ts';
+import { siteBox } from './site-box.ts';
 import { expect, signIn, test } from './test.ts';
 
 test.use({ viewport: { width: 390, height: 844 }, hasTouch: true, isMobile: true });
@@ -19,18 +20,23 @@ test('a plan is drawn by finger on a phone', async ({ page }) => {
   const works = (words: string) =>
     page.getByRole('table', { name: /^Works in .*, by year$/ }).getByText(words, { exact: true });
   const tap = async (x: number, y: number) => {
-    const box = (await map.boundingBox())!;
+    const box = await siteBox(page);
     await page.touchscreen.tap(box.x + box.width * x, box.y + box.height * y);
   };
 
-  await test.step('the map comes first', async () => {
+  await test.step('the map comes first, and shows the whole site clear of its legend', async () => {
     await expect(map).toBeInViewport({ ratio: 1 });
+    const [site, all] = [await siteBox(page), (await map.boundingBox())!];
+    expect(site.x).toBeGreaterThan(all.x);
+    expect(site.x + site.width).toBeLessThan(all.x + all.width);
+    const legend = (await page.locator('summary').filter({ hasText: 'Legend' }).boundingBox())!;
+    expect(site.y + site.height).toBeLessThanOrEqual(legend.y);
   });
 
   await test.step('a creek is refused where it was pressed', async () => {
     await page.getByRole('button', { name: 'Show the whole site' }).tap();
     // The creek leaves the site in the east.
-    await tap(0.9, 0.52);
+    await tap(0.97, 0.52);
     const note = page.getByRole('alert').filter({ hasText: /Not here\..*cannot grow there/ });
     await expectOnMap(page, note);
     await expectPassable(note);

@@ -1,6 +1,7 @@
 import type { Locator, Page } from '@playwright/test';
 import { demoPeople } from './people.ts';
 import { expectOnMap, expectPassable } from './notes.ts';
+import { pressSite, siteBox } from './site-box.ts';
 import { expect, signIn, test } from './test.ts';
 
 const step = (page: Page, name: string) =>
@@ -10,13 +11,6 @@ const map = (page: Page) => page.getByRole('application');
 /** A line of the works by year in the margin, such as `12 mounds`. */
 const works = (page: Page, words: string) =>
   page.getByRole('table', { name: /^Works in .*, by year$/ }).getByText(words, { exact: true });
-
-/** A place of the map as fractions of it, wherever the tools above leave it. */
-async function press(page: Page, x: number, y: number, twice = false): Promise<void> {
-  const box = (await map(page).boundingBox())!;
-  const position = { x: box.width * x, y: box.height * y };
-  await (twice ? map(page).dblclick({ position }) : map(page).click({ position }));
-}
 
 async function addOption(page: Page, name: string): Promise<void> {
   await page.getByRole('link', { name: 'Sallow Reach' }).first().click();
@@ -54,8 +48,8 @@ test('a plan is drawn by mouse, looked at, suggested for, saved and run', async 
       [0.2, 0.4],
       [0.2, 0.7],
     ])
-      await press(page, x, y);
-    await press(page, 0.03, 0.7, true);
+      await pressSite(page, x, y);
+    await pressSite(page, 0.03, 0.7, true);
     await page.getByRole('button', { name: /^Place \d+ clumps/ }).click();
     await expect(works(page, '200 clumps')).toBeVisible();
 
@@ -66,7 +60,7 @@ test('a plan is drawn by mouse, looked at, suggested for, saved and run', async 
       [0.15, 0.65],
       [0.05, 0.45],
     ])
-      await press(page, x, y);
+      await pressSite(page, x, y);
     await expect(works(page, '1 fence')).toBeVisible();
 
     await tool(page, 'Mounds: scattered').check();
@@ -91,14 +85,14 @@ test('a plan is drawn by mouse, looked at, suggested for, saved and run', async 
 
   await test.step('move one, copy it, delete the copy and take that back', async () => {
     await tool(page, 'Mounds: one by one').check();
-    await press(page, 0.5, 0.5);
+    await pressSite(page, 0.5, 0.5);
     await expect(works(page, '13 mounds')).toBeVisible();
     const selected = page.getByRole('region', { name: 'What is selected' });
     const before = await selected.textContent();
-    const box = (await map(page).boundingBox())!;
+    const box = await siteBox(page);
     await page.mouse.move(box.x + box.width * 0.5, box.y + box.height * 0.5);
     await page.mouse.down();
-    await page.mouse.move(box.x + box.width * 0.52, box.y + box.height * 0.45, { steps: 4 });
+    await page.mouse.move(box.x + box.width * 0.47, box.y + box.height * 0.45, { steps: 4 });
     await page.mouse.up();
     await expect.poll(() => selected.textContent()).not.toBe(before);
     await selected.getByRole('button', { name: 'Copy' }).click();
@@ -111,7 +105,7 @@ test('a plan is drawn by mouse, looked at, suggested for, saved and run', async 
   });
 
   await test.step('water is refused on the spot, with the reason', async () => {
-    await press(page, 0.64, 0.85);
+    await pressSite(page, 0.64, 0.85);
     const note = page.getByRole('alert').filter({ hasText: /Not here\..*cannot grow there/ });
     await expectOnMap(page, note);
     await expectPassable(note);

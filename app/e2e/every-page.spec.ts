@@ -49,6 +49,6 @@ function verticalScroll() {
     pageHeight: scrollHeight,
     windowHeight: clientHeight,
     /** a map, or a sheet beside its margin: such a page is as high as the window */
-    fitsWindow: document.querySelector('main aside') !== null,
+    fitsWindow: document.querySelector('main aside[aria-label^="Notes"]') !== null,
   };
 }

@@ -4,6 +4,7 @@ import type { Page } from '@playwright/test';
 import { demoGrid } from '#rasters/demo/sallow-reach.ts';
 import { readRaster } from '#rasters/read/read-raster.ts';
 import { demoPeople } from './people.ts';
+import { pressSite } from './site-box.ts';
 import { writeRasters } from './raster-files.ts';
 import { expect, signIn, test } from './test.ts';
 
@@ -89,16 +90,14 @@ test('from a GeoTIFF to a run that is replayed, repeated and exported', async ({
     await page.getByLabel('Name of the option').fill('Three mounds');
     await page.getByRole('button', { name: 'Add it' }).click();
     await page.getByRole('radio', { name: 'Mounds: one by one' }).check();
-    const map = page.getByRole('application');
     await expect(page.locator('[data-painted=true]')).toBeVisible();
-    const box = (await map.boundingBox())!;
-    // Bare ground in the west, the north and the east of the invented site, as fractions of the map.
+    // Bare ground in the west and the east of the invented site.
     for (const [x, y] of [
       [0.1, 0.6],
       [0.12, 0.75],
       [0.85, 0.2],
     ])
-      await map.click({ position: { x: box.width * x, y: box.height * y } });
+      await pressSite(page, x, y);
     await expect(
       page
         .getByRole('complementary')
