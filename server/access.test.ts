@@ -127,6 +127,8 @@ const expected: Record<string, string> = {
   'POST /api/runs/:runId/stop': planners,
   'POST /api/runs/:runId/checks': everyRole,
   'GET /api/runs/:runId/series.csv': everyRole,
+  'GET /api/runs/:runId/spec.json': everyRole,
+  'GET /api/runs/:runId/files.zip': everyRole,
   'GET /api/runs/:runId/cover/:year': everyRole,
   'GET /api/runs/:runId/closing.tif': everyRole,
 

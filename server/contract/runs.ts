@@ -38,9 +38,12 @@ export const runSchema = runSummarySchema.extend({
   /** the rasters that the spec names; those that were replaced since are kept for their runs */
   layers: z.array(
     z.object({
+      /** SHA-256 of the raster on the working grid, which the spec names */
       hash: sha256,
       part: layerPartSchema,
+      /** the file that it was made from, as it came, and its SHA-256: `hash` where the file itself is the raster */
       fileName: z.string(),
+      sourceHash: sha256,
       /** raster value that means no data */
       noData: z.number().nullable(),
       /** whether it still is the site's layer of its part */
@@ -157,6 +160,20 @@ export const exportSeries = endpoint({
   method: 'GET',
   path: '/api/runs/:runId/series.csv',
   summary: 'The series as CSV (RFC 4180)',
+  params: runParams,
+  replyKind: 'bytes',
+});
+export const exportSpec = endpoint({
+  method: 'GET',
+  path: '/api/runs/:runId/spec.json',
+  summary: 'The RunSpec for the command line: each raster by file name and SHA-256',
+  params: runParams,
+  replyKind: 'bytes',
+});
+export const exportPackage = endpoint({
+  method: 'GET',
+  path: '/api/runs/:runId/files.zip',
+  summary: 'The RunSpec with the rasters that it stood on, ready to be run from the command line',
   params: runParams,
   replyKind: 'bytes',
 });

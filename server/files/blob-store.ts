@@ -32,6 +32,8 @@ export interface BlobStore {
   discard(file: { readonly path: string }): Promise<void>;
   /** Where a blob stands, for a worker that reads it itself. */
   locate(hash: string): string;
+  /** Bytes of a blob. @throws BlobMissing */
+  size(hash: string): Promise<number>;
   /** @throws BlobMissing */
   open(hash: string): Promise<{ stream: Readable; bytes: number }>;
   /** @throws BlobMissing */
@@ -75,6 +77,7 @@ export async function openBlobStore(dataDir: string): Promise<BlobStore> {
     if ((error as NodeJS.ErrnoException).code === 'ENOENT') throw new BlobMissing(`No blob ${hash}`);
     throw error;
   };
+  const size = async (hash: string) => (await stat(pathOf(hash)).catch(missing(hash))).size;
   const reserve = () => join(arrivals, randomUUID());
 
   return {
@@ -101,11 +104,8 @@ export async function openBlobStore(dataDir: string): Promise<BlobStore> {
     },
     discard: (file) => rm(file.path, { force: true }),
     locate: pathOf,
-    async open(hash) {
-      const path = pathOf(hash);
-      const { size } = await stat(path).catch(missing(hash));
-      return { stream: createReadStream(path), bytes: size };
-    },
+    size,
+    open: async (hash) => ({ bytes: await size(hash), stream: createReadStream(pathOf(hash)) }),
     read: async (hash) => readFile(pathOf(hash)).catch(missing(hash)),
     delete: (hash) => rm(pathOf(hash), { force: true }),
     async hashes() {

@@ -23,7 +23,9 @@ export async function checkLayers(manager: Manager, siteId: string, spec: RunSpe
     if ('file' in raster)
       problems.push({
         field: `${field}.file`,
-        message: 'Found a file; runs of a site take its uploaded layers, named by their SHA-256 in `layer`',
+        message:
+          'Found a file; runs of a site take its uploaded layers, named by the SHA-256 of their raster on the grid in `layer`' +
+          (raster.sha256 ? `: "layer": "${raster.sha256}"` : ''),
       });
   const used = layerHashes(spec);
   const foreign = await foreignHashes(

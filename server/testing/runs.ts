@@ -34,12 +34,17 @@ export interface ComputedRun {
   result: RunResult;
 }
 
-/** What the engine makes of a spec on the layers of `makeSite`. */
-export async function computeRun(site: Site, spec: RunSpec): Promise<ComputedRun> {
+/**
+ * What the engine makes of a spec on the layers of `makeSite`.
+ * @param files the rasters of the site's layers on its grid, in their order
+ */
+export async function computeRun(
+  site: Site,
+  spec: RunSpec,
+  files: readonly Buffer[] = [habitat(), cover()],
+): Promise<ComputedRun> {
   const rasters = new Map(
-    await Promise.all(
-      [habitat(), cover()].map(async (file, i) => [site.layers[i].hash, await readRaster(file)] as const),
-    ),
+    await Promise.all(files.map(async (file, i) => [site.layers[i].hash, await readRaster(file)] as const)),
   );
   const ground = buildGround(spec.layers, site.grid, (source) =>
     rasters.get('layer' in source ? source.layer : '')!,

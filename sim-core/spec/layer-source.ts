@@ -26,6 +26,7 @@ export const curveSchema = z
   });
 export type Curve = z.infer<typeof curveSchema>;
 
+const sha256 = z.string().regex(/^[0-9a-f]{64}$/, 'a SHA-256 of 64 hexadecimal digits, small letters');
 const rasterMapping = {
   band: z.number().int().min(1).optional(),
   scale: z.number().optional(),
@@ -49,12 +50,14 @@ const rasterSourceSchemas = [
   z
     .strictObject({
       /** path of a GeoTIFF, relative to the spec */ file: z.string().min(1),
+      /** SHA-256 of its bytes, where the spec must run on no other file */
+      sha256: sha256.optional(),
       ...rasterMapping,
     })
     .refine(oneMapping, oneMappingOnly),
   z
     .strictObject({
-      /** SHA-256 of an uploaded raster */ layer: z.string().regex(/^[0-9a-f]{64}$/),
+      /** SHA-256 of an uploaded raster */ layer: sha256,
       ...rasterMapping,
     })
     .refine(oneMapping, oneMappingOnly),

@@ -1,12 +1,13 @@
 import { useState, type ReactNode } from 'react';
 import { getLayerFile } from '#contract/ground.ts';
 import type { Layer } from '#contract/layers.ts';
+import { RasterHashes } from '#app/components/raster-hashes.tsx';
 import { WordAnchor, WordButton } from '#app/components/word-button.tsx';
 import { endpointUrl } from '#app/lib/api-client.ts';
 import { Histogram } from './histogram.tsx';
 import { LayerHistory } from './layer-history.tsx';
 import { LayerNote } from './layer-note.tsx';
-import { alignmentInWords, noDataInWords, shortHash, sourceInWords } from './layer-words.ts';
+import { alignmentInWords, noDataInWords, sourceInWords } from './layer-words.ts';
 import { hasUnit, partLabels } from './part-words.ts';
 import { RemoveLayer } from './remove-layer.tsx';
 import { ReplaceLayer } from './replace-layer.tsx';
@@ -38,10 +39,8 @@ export function LayerEntry(props: {
         </WordButton>
       </div>
       <p className="text-note wrap-anywhere text-ink-2">
-        <span className="font-mono text-ink">{source.fileName}</span>, {sourceInWords(layer)},{' '}
-        <span title={`SHA-256 of the file: ${source.hash}`}>
-          hash <span className="font-mono">{shortHash(source.hash)}</span>
-        </span>
+        <span className="font-mono text-ink">{source.fileName}</span>, {sourceInWords(layer)}
+        <RasterHashes hash={layer.hash} sourceHash={source.hash} />
       </p>
       {hasUnit(part) && <Histogram layer={layer} />}
       <p className="text-note text-ink-2">

@@ -3,11 +3,12 @@ import type { LayerHistoryEntry, LayerPart } from '#contract/layers.ts';
 import { Dialog } from '#app/components/dialog.tsx';
 import { LoadingLines } from '#app/components/loading-lines.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
+import { RasterHashes } from '#app/components/raster-hashes.tsx';
 import { sayDone } from '#app/components/toast.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { formatCounted, formatDateTime } from '#app/lib/formats.ts';
 import { deleteLayerMutation, layerHistoryQuery, putBackMutation } from './change-layer.ts';
-import { alignmentInWords, shortHash, sourceInWords } from './layer-words.ts';
+import { alignmentInWords, sourceInWords } from './layer-words.ts';
 
 /** The layers that play or have played a part: who brought them, when, and a way back. */
 export function LayerHistory(props: {
@@ -56,9 +57,9 @@ function Entry(props: { siteId: string; entry: LayerHistoryEntry; editable: bool
   return (
     <>
       <p className="wrap-anywhere">
-        <b className="font-mono">{name}</b>, {sourceInWords(layer)}, hash{' '}
-        <span className="font-mono">{shortHash(layer.source.hash)}</span>.{' '}
+        <b className="font-mono">{name}</b>, {sourceInWords(layer)}.{' '}
         <b>{replacedAt === null ? 'Stands now.' : `Stood until ${formatDateTime(replacedAt)}.`}</b>
+        <RasterHashes hash={layer.hash} sourceHash={layer.source.hash} />
       </p>
       <p className="text-ink-2">
         {alignmentInWords(layer)}{' '}

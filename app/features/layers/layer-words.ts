@@ -1,9 +1,6 @@
 import type { Layer, ResamplingMethod } from '#contract/layers.ts';
 import { formatBytes, formatCounted, formatDateTime, formatShare } from '#app/lib/formats.ts';
 
-/** A hash as people compare it. */
-export const shortHash = (hash: string): string => hash.slice(0, 12);
-
 /** Where a layer comes from: file, size, who, when. */
 export const sourceInWords = ({ source }: Pick<Layer, 'source'>): string =>
   `${formatBytes(source.bytes)}, ${source.uploadedBy}, ${formatDateTime(source.uploadedAt)}`;

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import type { Run } from '#contract/runs.ts';
 import type { RunResult, SeriesRow } from '#sim-core/spec/run-result.ts';
+import { RasterHashes } from '#app/components/raster-hashes.tsx';
 import { formatArea, formatDateTime, formatNumber, formatShare } from '#app/lib/formats.ts';
 import type { YearRecord } from '#app/yearline/year-records.ts';
 import { lossesIn, type YearLosses } from './run-series.ts';
@@ -104,9 +105,7 @@ export function RunFacts({ run, result }: { run: Run; result: RunResult | undefi
           <Fact key={layer.hash} name={layer.part}>
             <span className="break-all">{layer.fileName}</span>
             {!layer.current && ', replaced on the site since'}
-            <span className="block font-mono text-axis text-ink-2" title={layer.hash}>
-              SHA-256 {layer.hash.slice(0, 16)}…
-            </span>
+            <RasterHashes hash={layer.hash} sourceHash={layer.sourceHash} />
           </Fact>
         ))}
         <Fact name="started">

@@ -26,7 +26,7 @@ export interface GroundOnFile {
  * Reads every GeoTIFF that the layers name, once each; the first gives the grid and the others must have its cells.
  *
  * @param specPath file that relative paths start from
- * @throws SimulateError naming each layer whose file cannot be used
+ * @throws SimulateError naming each layer whose file cannot be used, or is not the one of the spec's `sha256`
  */
 export async function readGround(layers: LayerSources, specPath: string): Promise<GroundOnFile> {
   const rasters = new Map<string, Raster>();
@@ -41,12 +41,17 @@ export async function readGround(layers: LayerSources, specPath: string): Promis
     if (!('file' in source)) continue;
     const path = resolve(dirname(specPath), source.file);
     try {
+      const sha256 = hashes.get(path) ?? (await sha256Of(path));
+      hashes.set(path, sha256);
+      if (source.sha256 !== undefined && source.sha256 !== sha256) {
+        problems.push({ field: `layers.${field}.sha256`, message: otherFile(path, sha256, source.sha256) });
+        continue;
+      }
       const raster = rasters.get(path) ?? (await withFileSource(path, (bytes) => readRaster(bytes)));
       first ??= raster;
       validateOnGrid(raster, first.grid);
       rasters.set(path, raster);
-      if (!hashes.has(path)) hashes.set(path, await sha256Of(path));
-      files[field] = { file: source.file, sha256: hashes.get(path) ?? '' };
+      files[field] = { file: source.file, sha256 };
     } catch (error) {
       problems.push({ field: `layers.${field}`, message: `${path}: ${whyNot(error)}` });
     }
@@ -60,6 +65,11 @@ export async function readGround(layers: LayerSources, specPath: string): Promis
   });
   return { grid, crsName, ground, files };
 }
+
+const otherFile = (path: string, found: string, expected: string) =>
+  `${path}: found a file with the SHA-256 ${found}; expected ${expected}, the raster that the spec was written for. ` +
+  'A file as it was uploaded is not the raster that was made of it on the grid: take the rasters from "Spec with rasters" ' +
+  'on the page of the run, or leave out `sha256` to run on this file, which may come to another digest';
 
 /** The reason why a file cannot be used, in words; what is no fault of the file is thrown on. */
 function whyNot(error: unknown): string {

@@ -62,13 +62,16 @@ export async function runReply(manager: Manager, runId: string): Promise<Run> {
     spec: readJson(runSpecSchema, run.spec),
     grid: readJson(gridSchema, run.grid),
     crsName: run.crsName,
-    layers: (await layersOfRun(manager, run)).map(({ hash, part, fileName, facts, replacedAt }) => ({
-      hash,
-      part: layerPartSchema.parse(part),
-      fileName,
-      noData: readJson(layerFactsSchema, facts).noData,
-      current: replacedAt === null,
-    })),
+    layers: (await layersOfRun(manager, run)).map(
+      ({ hash, part, fileName, sourceHash, facts, replacedAt }) => ({
+        hash,
+        part: layerPartSchema.parse(part),
+        fileName,
+        sourceHash,
+        noData: readJson(layerFactsSchema, facts).noData,
+        current: replacedAt === null,
+      }),
+    ),
     storedYears: frames.map((frame) => frame.year),
     cautions: readJson(z.array(cautionSchema), run.cautions),
     hasClosing: run.closingHash !== null,

@@ -4,6 +4,7 @@ import { notFound } from '#server/middleware/problem-error.ts';
 import { route, type BytesReply, type Route } from '#server/middleware/route.ts';
 import type { Services } from '#server/services.ts';
 import { exportClosing, exportFrame, exportSeries } from './run-exports.service.ts';
+import { exportPackage, exportSpec } from './run-package.service.ts';
 import { putClosing, putFrame } from './run-maps.service.ts';
 import { listRuns, requireRun, runReply } from './run-reply.ts';
 import { findFrame } from './run.repository.ts';
@@ -66,6 +67,8 @@ export function runRoutes(services: Services): Route[] {
       checkRun(services, params.runId, body, person.name),
     ),
     route(contract.exportSeries, { run: roles }, ({ params }) => exportSeries(services, params.runId)),
+    route(contract.exportSpec, { run: roles }, ({ params }) => exportSpec(services, params.runId)),
+    route(contract.exportPackage, { run: roles }, ({ params }) => exportPackage(services, params.runId)),
     route(contract.exportFrame, { run: roles }, ({ params }) =>
       exportFrame(services, params.runId, params.year),
     ),
