@@ -1,3 +1,5 @@
+export { ringArea } from '#sim-core/plan/extent.ts';
+
 /** A point in the grid's CRS: easting and northing, m. */
 export type GroundPoint = readonly [x: number, y: number];
 /** An outline; its last point joins its first. */
@@ -25,18 +27,6 @@ export function distanceToLine(line: Ring, x: number, y: number, closed: boolean
     least = Math.min(least, Math.hypot(x - x0 - t * dx, y - y0 - t * dy));
   }
   return least;
-}
-
-/** Area inside a ring that does not cross itself, m². */
-export function ringArea(ring: Ring): number {
-  const [x0, y0] = ring[0];
-  let twice = 0;
-  ring.forEach(([x, y], i) => {
-    const [nx, ny] = ring[(i + 1) % ring.length];
-    // From its first point on, so that coordinates of millions of metres cost no digits.
-    twice += (x - x0) * (ny - y0) - (nx - x0) * (y - y0);
-  });
-  return Math.abs(twice) / 2;
 }
 
 /** Length of a line, or of a ring all round, m. */

@@ -21,6 +21,12 @@ export const featureAttributesSchema = z.strictObject({
 export type FeatureAttributes = z.infer<typeof featureAttributesSchema>;
 
 /**
+ * What a cell on the edge of a feature gets: `shared`, the share of its ground that the feature takes; `centre`, all or
+ * nothing by its centre. Allowed ground goes by the centre always: a permit ends at its line.
+ */
+export const featureEdgesSchema = z.enum(['centre', 'shared']);
+
+/**
  * A surveyed point or area on a site. Points are discs with a radius. Coordinates are in the site's CRS, m.
  */
 export const featureSchema = z.object({
@@ -30,6 +36,7 @@ export const featureSchema = z.object({
   shape: areaSchema,
   strength: z.number(),
   halo: z.number(),
+  edges: featureEdgesSchema,
   /** the file that it came with, and the row or feature in it, from 1 */
   source: z.object({
     importId: id,
@@ -48,8 +55,8 @@ export const mostFeatures = 5000;
 export const mostCorners = 20_000;
 
 /**
- * Text fields of a form, beside one `file`. GeoJSON (RFC 7946, or with the `crs` member of its forerunner) with Point, MultiPoint
- * and Polygon without holes, or CSV with a header row: `x` and `y` in the site's CRS or `lon` and `lat`, under these and
+ * Text fields of a form, beside one `file`. GeoJSON (RFC 7946, or with the `crs` member of its forerunner) with Point, MultiPoint,
+ * Polygon and MultiPolygon, or CSV with a header row: `x` and `y` in the site's CRS or `lon` and `lat`, under these and
  * their usual names. Columns and properties `name`, `radius`, `strength` and `halo` are found by name.
  */
 export const featureImportFormSchema = z.strictObject({
@@ -77,6 +84,8 @@ export const featureImportReplySchema = z.object({
   /** rows or features that cannot be taken, from 1 (the header of a CSV is row 1), with the reason; at most the first 200 */
   problems: z.array(z.object({ row: z.number().int(), message: z.string() })),
   bad: z.number().int(),
+  /** what the cells of the site make of the good ones, in whole sentences; may be empty */
+  cautions: z.array(z.string()),
   /** null for a preview */
   importId: id.nullable(),
 });

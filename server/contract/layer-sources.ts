@@ -1,5 +1,5 @@
 import type { Curve, LayerSource, LayerSources } from '#sim-core/spec/run-spec.ts';
-import type { Feature } from './features.ts';
+import { featureEdgesSchema, type Feature } from './features.ts';
 import { heightUnitScale, valueUnitScale, type Layer, type LayerPart } from './layers.ts';
 import type { Site } from './sites.ts';
 
@@ -44,8 +44,8 @@ export function layerSources(
     capacity: product(ofClass('capacity'), byHeight(capacity)),
     vigour: product(ofClass('vigour'), byHeight(vigour)),
     exposure: highest(shares('exposure'), byHeight(exposure)),
-    refuge: highest(shares('refuge'), moundsOf(site.features), areasOf(site.features, 'refuge')),
-    fence: highest(areasOf(site.features, 'fence')),
+    refuge: highest(shares('refuge'), ...moundsOf(site.features), ...areasOf(site.features, 'refuge')),
+    fence: highest(...areasOf(site.features, 'fence')),
     cover: highest(shares('cover')),
   };
 }
@@ -54,8 +54,8 @@ export function layerSources(
 export function allowedSource(site: Pick<Site, 'layers' | 'features'>): LayerSource | undefined {
   const layer = layerOf(site, 'allowed');
   const shares: MaySource = layer && { layer: layer.hash, scale: valueUnitScale[layer.unit] };
-  const areas = areasOf(site.features, 'allowed');
-  return shares || areas ? highest(shares, areas) : undefined;
+  const sources = given([shares, ...areasOf(site.features, 'allowed')]);
+  return sources.length > 0 ? highest(...sources) : undefined;
 }
 
 type MaySource = LayerSource | undefined;
@@ -71,22 +71,29 @@ function highest(...sources: MaySource[]): LayerSource {
   return others.length > 0 ? { highest: [first, ...others] } : (first ?? 0);
 }
 
-/** Surveyed points that shelter, as mounds of an option would. */
-function moundsOf(features: readonly Feature[]): MaySource {
-  const mounds = features.flatMap(({ kind, shape, strength, halo }) =>
-    kind === 'refuge' && shape.shape === 'disc'
-      ? [{ x: shape.x, y: shape.y, radius: shape.radius, strength, halo }]
-      : [],
-  );
-  return mounds.length > 0 ? { mounds } : undefined;
+/** Surveyed points that shelter, as mounds of an option would; a source for each rule that edges go by. */
+function moundsOf(features: readonly Feature[]): MaySource[] {
+  return edgeRules.map((rule) => {
+    const mounds = features.flatMap(({ kind, shape, strength, halo, edges }) =>
+      kind === 'refuge' && shape.shape === 'disc' && edges === rule
+        ? [{ x: shape.x, y: shape.y, radius: shape.radius, strength, halo }]
+        : [],
+    );
+    return mounds.length > 0 ? { mounds, ...sharing(rule) } : undefined;
+  });
 }
 
 /** Areas of a kind; of refuges, those that are no mounds. */
-function areasOf(features: readonly Feature[], of: Feature['kind']): MaySource {
-  const areas = features.flatMap(({ kind, shape, strength }) =>
-    kind === of && (of !== 'refuge' || shape.shape === 'polygon')
-      ? [{ area: shape, strength: of === 'allowed' ? 1 : strength }]
-      : [],
-  );
-  return areas.length > 0 ? { areas } : undefined;
+function areasOf(features: readonly Feature[], of: Feature['kind']): MaySource[] {
+  return edgeRules.map((rule) => {
+    const areas = features.flatMap(({ kind, shape, strength, edges }) =>
+      kind === of && edges === rule && (of !== 'refuge' || shape.shape === 'polygon')
+        ? [{ area: shape, strength: of === 'allowed' ? 1 : strength }]
+        : [],
+    );
+    return areas.length > 0 ? { areas, ...sharing(rule) } : undefined;
+  });
 }
+
+const edgeRules = featureEdgesSchema.options;
+const sharing = (rule: Feature['edges']) => (rule === 'shared' ? { edges: rule } : {});

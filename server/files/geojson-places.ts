@@ -1,12 +1,32 @@
 import { z } from 'zod';
+import type { Area } from '#sim-core/spec/run-spec.ts';
 import { fieldProblem } from '#server/middleware/problem-error.ts';
 import { projectionBetween, wgs84, type PlaceProjection, type Point } from './place-projection.ts';
 
-/** A geometry in the CRS of the site, m; a ring is not closed by its first corner again. */
+/**
+ * A geometry in the CRS of the site, m; a ring is not closed by its first corner again. A MultiPolygon is a Polygon of several
+ * parts.
+ */
 export type Place =
   | { readonly type: 'Point'; readonly point: Point }
   | { readonly type: 'MultiPoint'; readonly points: readonly Point[] }
-  | { readonly type: 'Polygon'; readonly ring: readonly Point[] };
+  | { readonly type: 'Polygon'; readonly polygons: readonly PolygonPlace[] };
+
+/** One outline, and what is cut out of it. */
+export interface PolygonPlace {
+  readonly ring: readonly Point[];
+  readonly holes: readonly (readonly Point[])[];
+}
+
+/** A polygon as an area of a RunSpec. */
+export const polygonArea = ({ ring, holes }: PolygonPlace): Area => {
+  const corners = (line: readonly Point[]) => line.map(([x, y]): [number, number] => [x, y]);
+  return {
+    shape: 'polygon',
+    ring: corners(ring),
+    ...(holes.length > 0 && { holes: holes.map(corners) }),
+  };
+};
 
 export interface GeoJsonFeature {
   /** number of the feature in the file, from 1 */
@@ -115,23 +135,31 @@ function placeOf(
     if (!Array.isArray(value)) throw new Unreadable('Its coordinates are no list.');
     return value as unknown[];
   };
+  const ringOf = (value: unknown): Point[] => {
+    const ring = list(value).map(at);
+    const [first, last] = [ring[0], ring.at(-1)];
+    const closed = last !== undefined && ring.length > 1 && first[0] === last[0] && first[1] === last[1];
+    return closed ? ring.slice(0, -1) : ring;
+  };
+  const polygon = (value: unknown): PolygonPlace => {
+    const [ring, ...holes] = list(value).map(ringOf);
+    if (ring === undefined) throw new Unreadable('It has no outline.');
+    const thin = [ring, ...holes].find((line) => line.length < 3);
+    if (thin) throw new Unreadable(`Found ${thin.length} corners; an outline and a hole need at least 3 each.`);
+    return { ring, holes };
+  };
   switch (type) {
     case 'Point':
       return { type, point: at(coordinates) };
     case 'MultiPoint':
       return { type, points: list(coordinates).map(at) };
-    case 'Polygon': {
-      const rings = list(coordinates);
-      if (rings.length !== 1)
-        throw new Unreadable('It has holes; expected one ring. Draw the area without holes, or as several.');
-      const ring = list(rings[0]).map(at);
-      const [first, last] = [ring[0], ring.at(-1)];
-      const closed = last !== undefined && ring.length > 1 && first[0] === last[0] && first[1] === last[1];
-      return { type, ring: closed ? ring.slice(0, -1) : ring };
-    }
+    case 'Polygon':
+      return { type, polygons: [polygon(coordinates)] };
+    case 'MultiPolygon':
+      return { type: 'Polygon', polygons: list(coordinates).map(polygon) };
     default:
       throw new Unreadable(
-        `Found the geometry ${type}; expected Point, MultiPoint or Polygon. Split it into single parts.`,
+        `Found the geometry ${type}; expected Point, MultiPoint, Polygon or MultiPolygon.`,
       );
   }
 }

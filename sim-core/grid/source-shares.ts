@@ -1,4 +1,5 @@
 import { areaCells } from '#sim-core/process/area-cells.ts';
+import { areaShares, moundShares, type CellShares } from '#sim-core/process/area-shares.ts';
 import { moundStrengths } from '#sim-core/process/mound-strengths.ts';
 import type { LayerSource, RasterSource } from '#sim-core/spec/layer-source.ts';
 import type { Grid } from './grid.ts';
@@ -28,11 +29,19 @@ export function shareReader(
   if (typeof source === 'number') return (_, out) => out.fill(source);
   if ('product' in source) return combined(source.product, (a, b) => a * b);
   if ('highest' in source) return combined(source.highest, (a, b) => (b > a ? b : a));
-  if ('mounds' in source)
-    return ofBytes(placesBytes(grid, 'Mound', source.mounds, (mound) => moundStrengths(mound, grid)));
-  if ('areas' in source)
+  if ('mounds' in source) {
+    const shared = source.edges === 'shared';
+    return ofBytes(
+      placesBytes(grid, 'Mound', source.mounds, (mound) =>
+        shared ? inBytes(moundShares(mound, grid), mound.strength) : moundStrengths(mound, grid),
+      ),
+    );
+  }
+  if ('areas' in source) {
+    const shared = source.edges === 'shared';
     return ofBytes(
       placesBytes(grid, 'Area', source.areas, ({ area, strength }) => {
+        if (shared) return inBytes(areaShares(area, grid), strength);
         const { cells, share } = areaCells(area, grid);
         return {
           cells,
@@ -40,6 +49,7 @@ export function shareReader(
         };
       }),
     );
+  }
   const { values, noData } = rasterOf(source);
   return (first, out) =>
     void toShares(values.subarray(first, first + out.length), { ...source, noData }, out, first);
@@ -57,6 +67,11 @@ export function shareReader(
     };
   }
 }
+
+const inBytes = ({ cells, shares }: CellShares, strength: number) => ({
+  cells,
+  strengths: Uint8Array.from(shares, (share) => Math.round(255 * strength * share)),
+});
 
 const ofBytes =
   (bytes: Uint8Array): ShareReader =>

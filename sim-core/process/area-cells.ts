@@ -60,22 +60,41 @@ function discCells(x: number, y: number, radius: number, grid: Grid): number[] {
   return cells;
 }
 
-/** Even-odd rule, row by row: the columns between each pair of crossings of the row's middle line. */
-function polygonCells({ ring }: Extract<Area, { shape: 'polygon' }>, grid: Grid): number[] {
-  const cells: number[] = [];
-  const ys = ring.map(([, y]) => y);
-  const highest = ys.reduce((a, b) => Math.max(a, b));
-  const lowest = ys.reduce((a, b) => Math.min(a, b));
-  const top = Math.max(0, Math.ceil((grid.originY - highest) / grid.cellSize - 0.5));
-  const bottom = Math.min(grid.height - 1, Math.floor((grid.originY - lowest) / grid.cellSize - 0.5));
-  for (let row = top; row <= bottom; row++) {
-    const { y } = cellCentre(grid, 0, row);
-    const crossings: number[] = [];
+type Ring = readonly (readonly [x: number, y: number])[];
+
+/** The outline of a polygon and those of its holes. */
+export const ringsOf = ({ ring, holes = [] }: Extract<Area, { shape: 'polygon' }>): readonly Ring[] => [
+  ring,
+  ...holes,
+];
+
+/** Rows of the cells that outlines may touch; none where `bottom` is less than `top`. */
+export function outlineRows(rings: readonly Ring[], grid: Grid): { top: number; bottom: number } {
+  let [highest, lowest] = [-Infinity, Infinity];
+  for (const ring of rings)
+    for (const [, y] of ring) [highest, lowest] = [Math.max(highest, y), Math.min(lowest, y)];
+  const row = (y: number) => Math.floor((grid.originY - y) / grid.cellSize);
+  return { top: Math.max(0, row(highest)), bottom: Math.min(grid.height - 1, row(lowest)) };
+}
+
+/** Where outlines cross a line from west to east, ascending; the inside lies between each pair, by the even-odd rule. */
+export function crossingsAt(rings: readonly Ring[], y: number): number[] {
+  const crossings: number[] = [];
+  for (const ring of rings)
     ring.forEach(([x0, y0], i) => {
       const [x1, y1] = ring[(i + 1) % ring.length];
       if (y0 > y !== y1 > y) crossings.push(x0 + ((y - y0) / (y1 - y0)) * (x1 - x0));
     });
-    crossings.sort((a, b) => a - b);
+  return crossings.sort((a, b) => a - b);
+}
+
+/** Row by row: the columns whose centre lies between each pair of crossings of the row's middle line. */
+function polygonCells(area: Extract<Area, { shape: 'polygon' }>, grid: Grid): number[] {
+  const cells: number[] = [];
+  const rings = ringsOf(area);
+  const { top, bottom } = outlineRows(rings, grid);
+  for (let row = top; row <= bottom; row++) {
+    const crossings = crossingsAt(rings, cellCentre(grid, 0, row).y);
     for (let pair = 0; pair + 1 < crossings.length; pair += 2) {
       const from = Math.max(0, Math.ceil((crossings[pair] - grid.originX) / grid.cellSize - 0.5));
       const to = Math.min(grid.width, Math.ceil((crossings[pair + 1] - grid.originX) / grid.cellSize - 0.5));

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import {
   areaStrengthsSchema,
+  edgesSchema,
   moundPlacesSchema,
   share,
   type AreaStrength,
@@ -64,6 +65,8 @@ const rasterSourceSchemas = [
 ] as const;
 export type RasterSource = z.infer<(typeof rasterSourceSchemas)[number]>;
 
+export type Edges = z.infer<typeof edgesSchema>;
+
 /** Where one layer of the ground comes from. */
 export type LayerSource =
   | /** one share for all cells */ number
@@ -73,9 +76,9 @@ export type LayerSource =
   /** the highest of the sources, cell by cell */
   | { highest: LayerSource[] }
   /** 0 but where surveyed mounds shelter; where they overlap, the stronger counts */
-  | { mounds: MoundPlace[] }
+  | { mounds: MoundPlace[]; edges?: Edges }
   /** 0 but for the strength of each area in its cells; where they overlap, the stronger counts */
-  | { areas: AreaStrength[] };
+  | { areas: AreaStrength[]; edges?: Edges };
 
 /** How deep products and highests may stand in one another: enough for a product of class table and curve in a highest. */
 const deepest = 3;
@@ -84,8 +87,8 @@ const mostParts = 10;
 const simpleSources = [
   share,
   ...rasterSourceSchemas,
-  z.strictObject({ mounds: moundPlacesSchema }),
-  z.strictObject({ areas: areaStrengthsSchema }),
+  z.strictObject({ mounds: moundPlacesSchema, edges: edgesSchema }),
+  z.strictObject({ areas: areaStrengthsSchema, edges: edgesSchema }),
 ] as const;
 const said =
   'Expected a share from 0 to 1, or an object with one of `file`, `layer`, `product`, `highest`, `mounds`, `areas`' +

@@ -4,15 +4,21 @@ export const share = z.number().min(0).max(1);
 export const coordinate = z.number();
 const metres = z.number().positive();
 
-/** Places on the ground, in the site's CRS, m. A cell belongs to an area when its centre does. */
+const ringSchema = z
+  .array(z.tuple([coordinate, coordinate]))
+  .min(3)
+  .max(10_000);
+
+/**
+ * Places on the ground, in the site's CRS, m. A cell belongs to an area when its centre does, unless the source that the
+ * area stands in says otherwise (`edges`). What holes hold is outside.
+ */
 export const areaSchema = z.discriminatedUnion('shape', [
   z.strictObject({ shape: z.literal('disc'), x: coordinate, y: coordinate, radius: metres }),
   z.strictObject({
     shape: z.literal('polygon'),
-    ring: z
-      .array(z.tuple([coordinate, coordinate]))
-      .min(3)
-      .max(10_000),
+    ring: ringSchema,
+    holes: z.array(ringSchema).min(1).max(1000).optional(),
   }),
 ]);
 export type Area = z.infer<typeof areaSchema>;
@@ -27,6 +33,12 @@ export const moundFields = {
 };
 const moundPlaceSchema = z.strictObject(moundFields);
 export type MoundPlace = z.infer<typeof moundPlaceSchema>;
+
+/**
+ * What a cell on the edge of a place gets: left out, all of it or nothing, by its centre; `shared`, the share of its ground
+ * that the place takes, so that the area of small places does not hang on the cells.
+ */
+export const edgesSchema = z.literal('shared').optional();
 
 /** Most mounds or areas that one list may hold. */
 export const maximumPlaces = 20_000;

@@ -10,6 +10,8 @@ export interface FeatureImportRow {
   hash: string;
   /** what its coordinates were in */
   crsName: string;
+  /** `shared` or `centre`: what cells on the edge of its features get; `centre` for files that came before there was a choice */
+  edges: string;
   importedAt: string;
   importedBy: string;
 }
@@ -23,6 +25,7 @@ export const FeatureImportEntity = new EntitySchema<FeatureImportRow>({
     fileName: { type: 'text' },
     hash: { type: 'text' },
     crsName: { type: 'text' },
+    edges: { type: 'text', default: "'centre'" },
     importedAt: { type: 'text' },
     importedBy: { type: 'text' },
   },

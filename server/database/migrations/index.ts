@@ -5,6 +5,7 @@ import { OptionHistory1764580000000 } from './1764580000000-option-history.ts';
 import { Ground1796119200000 } from './1796119200000-ground.ts';
 import { Comparisons1796121000000 } from './1796121000000-comparisons.ts';
 import { Outlooks1796140000000 } from './1796140000000-outlooks.ts';
+import { FeatureEdges1796145000000 } from './1796145000000-feature-edges.ts';
 
 /** Every change of the schema, oldest first. One that has been released is never edited. */
 export const migrations = [
@@ -15,4 +16,5 @@ export const migrations = [
   Ground1796119200000,
   Comparisons1796121000000,
   Outlooks1796140000000,
+  FeatureEdges1796145000000,
 ];

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { workIdSchema, workSetsSchema } from '#contract/works.ts';
-import { firstIssue, readGeoJsonPlaces, type GeoJsonFeature } from '#server/files/geojson-places.ts';
+import { firstIssue, polygonArea, readGeoJsonPlaces, type GeoJsonFeature } from '#server/files/geojson-places.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { FoundWorks, type FoundFile } from './found-works.ts';
 
@@ -30,28 +30,39 @@ export function readGeoJson(content: string, site: Grid, firstYear: number): Fou
     );
   const known = new Set(sets.data?.map((set) => set.id));
   for (const feature of features) {
-    const work = 'problem' in feature ? feature.problem : rawWork(feature);
-    if (typeof work === 'string') found.problem(feature.row, work);
-    else {
-      if (typeof work.set === 'string' && !known.has(work.set)) delete work.set;
-      found.add(feature.row, work);
-    }
+    const works = 'problem' in feature ? feature.problem : rawWorks(feature);
+    if (typeof works === 'string') found.problem(feature.row, works);
+    else
+      for (const work of works) {
+        if (typeof work.set === 'string' && !known.has(work.set)) delete work.set;
+        found.add(feature.row, work);
+      }
   }
   return { format: 'geojson', crsName, name, note, sets: sets.data ?? [], found };
 }
 
-/** A feature as one of the works, or why it is none; what its fields hold is checked later. */
-function rawWork({ place, properties, id }: GeoJsonFeature): Record<string, unknown> | string {
+/**
+ * A feature as works, one for each outline of a MultiPolygon, or why it is none; what their fields hold is checked later.
+ * Only the first of several keeps the id.
+ */
+function rawWorks({ place, properties, id }: GeoJsonFeature): Record<string, unknown>[] | string {
   const { kind, radius, ...rest } = properties;
-  const shared = { ...rest, ...(workIdSchema.safeParse(id).success && { id }) };
-  if (place.type === 'MultiPoint') return { ...shared, kind: kind ?? 'clumps', points: place.points };
+  const shared: Record<string, unknown> = {
+    ...rest,
+    ...(workIdSchema.safeParse(id).success && { id }),
+  };
+  if (place.type === 'MultiPoint') return [{ ...shared, kind: kind ?? 'clumps', points: place.points }];
   if (place.type === 'Polygon')
     return kind === undefined
       ? 'An outline needs a property `kind`: planting, fence or loss.'
-      : { ...shared, kind, area: { shape: 'polygon', ring: place.ring } };
+      : place.polygons.map((polygon, i) => ({
+          ...(i === 0 ? shared : rest),
+          kind,
+          area: polygonArea(polygon),
+        }));
   const [x, y] = place.point;
   if (kind === undefined || kind === 'mound')
-    return { ...shared, kind: 'mound', x, y, ...(radius !== undefined && { radius }) };
-  if (kind === 'clumps') return { ...shared, kind, points: [[x, y]] };
-  return { ...shared, kind, area: { shape: 'disc', x, y, radius } };
+    return [{ ...shared, kind: 'mound', x, y, ...(radius !== undefined && { radius }) }];
+  if (kind === 'clumps') return [{ ...shared, kind, points: [[x, y]] }];
+  return [{ ...shared, kind, area: { shape: 'disc', x, y, radius } }];
 }

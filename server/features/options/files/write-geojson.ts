@@ -73,10 +73,14 @@ const radiusOf = (area: Area) => (area.shape === 'disc' ? { radius: area.radius 
 
 function geometryOf(area: Area, place: Place) {
   if (area.shape === 'disc') return pointAt(place([area.x, area.y]));
-  const ring = area.ring.map(place);
-  // RFC 7946, section 3.1.6: an outer ring runs anticlockwise. It keeps its first corner.
-  const anticlockwise = signedArea(ring) < 0 ? [ring[0], ...ring.slice(1).reverse()] : ring;
-  return { type: 'Polygon' as const, coordinates: [[...anticlockwise, ring[0]]] };
+  // RFC 7946, section 3.1.6: an outer ring runs anticlockwise, a hole clockwise. Each keeps its first corner.
+  const turned = (corners: readonly [number, number][], way: 1 | -1) => {
+    const ring = corners.map(place);
+    const right = signedArea(ring) * way < 0 ? [ring[0], ...ring.slice(1).reverse()] : ring;
+    return [...right, ring[0]];
+  };
+  const holes = (area.holes ?? []).map((hole) => turned(hole, -1));
+  return { type: 'Polygon' as const, coordinates: [turned(area.ring, 1), ...holes] };
 }
 
 const signedArea = (ring: readonly (readonly [number, number])[]): number =>

@@ -1,4 +1,4 @@
-import { featureKindSchema, type Feature } from '#contract/features.ts';
+import { featureEdgesSchema, featureKindSchema, type Feature } from '#contract/features.ts';
 import { areaSchema } from '#sim-core/spec/run-spec.ts';
 import type { FeatureImportRow } from '#server/database/entities/feature-import.ts';
 import type { FeatureRow } from '#server/database/entities/feature.ts';
@@ -13,6 +13,7 @@ const featureOf = (row: FeatureRow, file: FeatureImportRow): Feature => ({
   shape: readJson(areaSchema, row.shape),
   strength: row.strength,
   halo: row.halo,
+  edges: row.kind === 'allowed' ? 'centre' : featureEdgesSchema.parse(file.edges),
   source: {
     importId: row.importId,
     fileName: file.fileName,

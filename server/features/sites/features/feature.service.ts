@@ -18,6 +18,7 @@ import { releaseBlobs, storeWithRows } from '#server/files/stored-files.ts';
 import { fieldProblem, notFound, ProblemError } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
+import { ringsOf } from '#sim-core/process/area-cells.ts';
 import { areaSchema, type Area } from '#sim-core/spec/run-spec.ts';
 import { siteReply } from '../site-reply.ts';
 import {
@@ -57,6 +58,7 @@ export async function importFeatures(
     fileName: shownFileName(fileName),
     hash: file.hash,
     crsName: found.crsName,
+    edges: 'shared',
     importedAt: services.clock().toISOString(),
     importedBy: by,
   };
@@ -113,7 +115,8 @@ function refusal({ problems }: FoundFeatures): ProblemError {
   );
 }
 
-const corners = (shape: Area) => (shape.shape === 'polygon' ? shape.ring.length : 1);
+const corners = (shape: Area) =>
+  shape.shape === 'polygon' ? ringsOf(shape).reduce((sum, ring) => sum + ring.length, 0) : 1;
 
 async function requireRoom(manager: Manager, siteId: string, { features }: FoundFeatures): Promise<void> {
   const present = await featureRows(manager, siteId);

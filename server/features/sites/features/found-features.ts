@@ -1,5 +1,5 @@
 import { featureAttributesSchema, type FeatureImportForm, type FeatureKind } from '#contract/features.ts';
-import { readGeoJsonPlaces, type Place } from '#server/files/geojson-places.ts';
+import { polygonArea, readGeoJsonPlaces, type Place, type PolygonPlace } from '#server/files/geojson-places.ts';
 import { readPointTable } from '#server/files/point-table.ts';
 import type { Point } from '#server/files/place-projection.ts';
 import { cellAt, type Grid } from '#sim-core/grid/grid.ts';
@@ -51,9 +51,13 @@ function fromGeoJson(content: string, grid: Grid, defaults: Defaults): FoundFeat
   return { crsName, read: `GeoJSON with ${features.length} features, in ${crsName}`, ...found.result };
 }
 
-/** Several points are as many features of one row. */
-const partsOf = (place: Place): (Point | readonly Point[])[] =>
-  place.type === 'Polygon' ? [place.ring] : place.type === 'Point' ? [place.point] : [...place.points];
+/** Several points or outlines are as many features of one row. */
+const partsOf = (place: Place): (Point | PolygonPlace)[] =>
+  place.type === 'Polygon'
+    ? [...place.polygons]
+    : place.type === 'Point'
+      ? [place.point]
+      : [...place.points];
 
 function fromTable(content: string, grid: Grid, defaults: Defaults): FoundFeatures {
   const { rows, crsName, unknown } = readPointTable<keyof typeof columnNames>(
@@ -76,8 +80,6 @@ function fromTable(content: string, grid: Grid, defaults: Defaults): FoundFeatur
   return { crsName, read: `a table of ${rows.length} points, in ${crsName}${left}`, ...found.result };
 }
 
-const isRing = (place: Point | readonly Point[]): place is readonly Point[] => Array.isArray(place[0]);
-
 function collector(grid: Grid, defaults: Defaults) {
   const features: FoundFeature[] = [];
   const problems: FoundFeatures['problems'] = [];
@@ -85,17 +87,18 @@ function collector(grid: Grid, defaults: Defaults) {
   return {
     problems,
     result: { features, problems },
-    add(row: number, place: Point | readonly Point[], written: Written) {
+    add(row: number, place: Point | PolygonPlace, written: Written) {
       const message =
-        attributeProblem(written) ?? (isRing(place) ? ringProblem(place, grid) : pointProblem(place, grid));
+        attributeProblem(written) ??
+        ('ring' in place ? polygonProblem(place, grid) : pointProblem(place, grid));
       if (message !== undefined) {
         problems.push({ row, message });
         return;
       }
       const of = (name: 'radius' | 'strength' | 'halo') =>
         typeof written[name] === 'number' ? written[name] : defaults[name];
-      const shape: Area = isRing(place)
-        ? { shape: 'polygon', ring: place.map(([x, y]) => [x, y]) }
+      const shape: Area = 'ring' in place
+        ? polygonArea(place)
         : { shape: 'disc', x: place[0], y: place[1], radius: of('radius') };
       features.push({
         row,
@@ -136,10 +139,10 @@ function pointProblem([x, y]: Point, grid: Grid): string | undefined {
   return `Found ${x}, ${y} in the CRS of the site; expected a place on the site, ${extentOf(grid)}.`;
 }
 
-function ringProblem(ring: readonly Point[], grid: Grid): string | undefined {
-  if (ring.length < 3) return `Found ${ring.length} corners; an area needs at least 3.`;
-  if (ring.length > mostRingCorners)
-    return `Found ${ring.length} corners; expected at most ${mostRingCorners}. Simplify the outline.`;
+function polygonProblem({ ring, holes }: PolygonPlace, grid: Grid): string | undefined {
+  const most = Math.max(ring.length, ...holes.map((hole) => hole.length));
+  if (most > mostRingCorners)
+    return `Found ${most} corners; expected at most ${mostRingCorners} an outline. Simplify the outline.`;
   const [west, north] = [grid.originX, grid.originY];
   const [east, south] = [west + grid.width * grid.cellSize, north - grid.height * grid.cellSize];
   const [xs, ys] = [ring.map(([x]) => x), ring.map(([, y]) => y)];
