@@ -5,6 +5,8 @@ export interface MapArea {
   readonly id: string;
   readonly kind: 'planting' | 'clumps' | 'fence' | 'loss' | 'refuge' | 'allowed';
   readonly ring: Ring;
+  /** what is cut out of it */
+  readonly holes?: readonly Ring[];
   /** not there in the year shown: drawn faint */
   readonly faint?: boolean;
 }
@@ -49,9 +51,11 @@ export function areaAt(
   for (const area of areas) {
     const { west, east, south, north } = boxOf(area);
     if (x < west - near || x > east + near || y < south - near || y > north + near) continue;
-    const away = distanceToLine(area.ring, x, y, true);
+    const outlines = [area.ring, ...(area.holes ?? [])];
+    const away = Math.min(...outlines.map((outline) => distanceToLine(outline, x, y, true)));
+    const holds = outlines.filter((outline) => isInside(outline, x, y)).length % 2 === 1;
     // An outline's own rank lies below 0, so that it wins over whatever merely holds the place.
-    const rank = away <= near ? away - near : isInside(area.ring, x, y) ? ringArea(area.ring) : Infinity;
+    const rank = away <= near ? away - near : holds ? ringArea(area.ring) : Infinity;
     if (rank < least) {
       found = area;
       least = rank;

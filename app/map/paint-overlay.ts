@@ -80,7 +80,7 @@ function outline(pen: Pen, colour: string, width: number): void {
 /** A fence is dashed in ink, a loss dotted with a cross, a surveyed refuge drawn through, plants a line of coral between lines of ink, like their flags. */
 function paintArea(
   pen: Pen,
-  { kind, ring }: MapArea,
+  { kind, ring, holes = [] }: MapArea,
   place: (point: GroundPoint) => ScreenPoint,
   width: number,
   selected: boolean,
@@ -88,7 +88,7 @@ function paintArea(
 ): void {
   const more = selected ? 1.4 : 0;
   pen.beginPath();
-  trace(pen, ring, place, true);
+  for (const outline of [ring, ...holes]) trace(pen, outline, place, true);
   pen.setLineDash([]);
   outline(pen, colours.halo, 4.4 + more);
   const dash = inkDashes[kind];

@@ -25,17 +25,25 @@ it('is the ground of a run, with what its maps say in numbers', () => {
       ],
     },
     exposure: { layer: heights, curve },
-    refuge: { mounds: [{ x: 3, y: -1, radius: 1 }] },
+    refuge: {
+      mounds: [
+        { x: 3, y: -1, radius: 1 },
+        { x: 9, y: -1, radius: 1, strength: 0.4 },
+      ],
+    },
     cover: { layer: cover },
   });
   const ground = engineGround(sources, grid, rasterOf);
   expect([...ground.capacity]).toEqual([0, 204, 102, 0, 0, 0]);
   expect([...ground.cover]).toEqual([0, 77, 102, 0, 0, 0]);
-  expect([...ground.refuge]).toEqual([0, 255, 0, 0, 0, 0]);
+  expect([...ground.refuge]).toEqual([0, 255, 0, 0, 102, 0]);
   expect(ground.facts).toMatchObject({
     plantable: 2,
     meanVigour: 1,
     sheltered: 1,
+    shelter: 1,
+    barren: 1,
+    barrenShelter: 0.4,
     fenced: 0,
     stranded: 2,
     overfull: 1,

@@ -20,7 +20,12 @@ export interface GroundFacts {
   readonly meanCapacity: number;
   readonly meanVigour: number;
   readonly meanExposure: number;
+  /** cells with surveyed refuge that can hold the plant, and the sum of its strength in them */
   readonly sheltered: number;
+  readonly shelter: number;
+  /** cells with surveyed refuge on ground that cannot hold the plant, where it does nothing, and the sum of its strength */
+  readonly barren: number;
+  readonly barrenShelter: number;
   readonly fenced: number;
   /** sum of the shares that stand */
   readonly covered: number;
@@ -42,13 +47,22 @@ export function engineGround(
   const { capacity, vigour, exposure, refuge, fence } = ground;
   const cover = new Uint8Array(surveyed.length);
   const sums = { capacity: 0, vigour: 0, exposure: 0 };
+  let [shelter, barren, barrenShelter] = [0, 0, 0];
   let [plantable, sheltered, fenced, covered, stranded, overfull] = [0, 0, 0, 0, 0, 0];
   for (let i = 0; i < cover.length; i++) {
     const k = capacity[i] / 255;
     const held = Math.min(surveyed[i], k);
     cover[i] = Math.round(held * 255);
     covered += held;
-    if (refuge[i] > 0) sheltered++;
+    if (refuge[i] > 0) {
+      if (k > 0) {
+        sheltered++;
+        shelter += refuge[i] / 255;
+      } else {
+        barren++;
+        barrenShelter += refuge[i] / 255;
+      }
+    }
     if (fence[i] > 0) fenced++;
     if (surveyed[i] > 0 && k === 0) stranded++;
     // A survey in whole per cent may stand half a step above a capacity held in 8 bits.
@@ -66,6 +80,9 @@ export function engineGround(
     meanVigour: mean(sums.vigour),
     meanExposure: mean(sums.exposure),
     sheltered,
+    shelter,
+    barren,
+    barrenShelter,
     fenced,
     covered,
     stranded,

@@ -25,7 +25,7 @@ const ring: [number, number][] = [
   [2, 2],
 ];
 const feature = (kind: Feature['kind'], shape: Feature['shape'], strength = 1) =>
-  ({ kind, shape, strength, halo: 3 }) as Feature;
+  ({ kind, shape, strength, halo: 3, edges: 'centre' }) as Feature;
 
 const a = 'a'.repeat(64);
 const e = 'e'.repeat(64);
@@ -57,6 +57,26 @@ describe('layerSources', () => {
     expect(sources.exposure).toEqual({ highest: [{ layer: 'd'.repeat(64), scale: 1 / 255 }, byHeight] });
     expect(layerSourcesSchema.parse(sources)).toEqual(sources);
     expect(layerSources({ layers: [habitat, cover], features: [], elevationCurves }).exposure).toBe(0);
+  });
+
+  it('keeps places of either rule for their edges apart', () => {
+    const disc = { shape: 'disc' as const, x: 1, y: 2, radius: 4 };
+    const polygon = { shape: 'polygon' as const, ring };
+    const shared = (one: Feature): Feature => ({ ...one, edges: 'shared' });
+    const features = [
+      feature('refuge', disc, 0.5),
+      shared(feature('refuge', disc, 0.9)),
+      shared(feature('refuge', polygon, 0.7)),
+    ];
+    const sources = layerSources({ layers: [], features, elevationCurves: none });
+    expect(sources.refuge).toEqual({
+      highest: [
+        { mounds: [{ x: 1, y: 2, radius: 4, strength: 0.5, halo: 3 }] },
+        { mounds: [{ x: 1, y: 2, radius: 4, strength: 0.9, halo: 3 }], edges: 'shared' },
+        { areas: [{ area: polygon, strength: 0.7 }], edges: 'shared' },
+      ],
+    });
+    expect(layerSourcesSchema.parse(sources)).toEqual(sources);
   });
 
   it('lets works go where the layer or an area allows, or anywhere', () => {

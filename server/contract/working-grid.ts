@@ -10,9 +10,11 @@ export const cellSizeSchema = z.object({
   factor: z.number().int(),
   grid: gridSchema,
   cells: z.number().int(),
-  /** speed of a front along the diagonal over that along the rows; null where no kernel gives the plant's rates */
+  /** why no run could start on such cells, and what would mend it, in whole sentences; null where one can */
+  problem: z.string().nullable(),
+  /** speed of a front along the diagonal over that along the rows; null where there is a problem */
   frontRatio: z.number().nullable(),
-  /** what the plant's rates say of such cells, in words */
+  /** what the plant's rates and the surveyed points and areas say of such cells, in whole sentences */
   warnings: z.array(z.string()),
   /** what a run of the engine holds in memory, and how long a year of it takes, both estimated */
   memoryBytes: z.number(),

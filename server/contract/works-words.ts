@@ -81,7 +81,13 @@ export function workInWords(action: Action): string {
 }
 
 const areaInWords = (area: Area): string =>
-  area.shape === 'disc' ? `${formatLength(2 * area.radius)} across` : `outline of ${area.ring.length} points`;
+  area.shape === 'disc'
+    ? `${formatLength(2 * area.radius)} across`
+    : `outline of ${area.ring.length} points${holesInWords(area)}`;
+
+/** ` with 2 holes`, or nothing. */
+export const holesInWords = (area: Area): string =>
+  area.shape === 'polygon' && area.holes ? ` with ${formatCounted(area.holes.length, 'hole')}` : '';
 
 /** Where one of the works stands: its centre, or the middle of its outline or points, m. */
 export function placeOf(action: Action): { x: number; y: number } {

@@ -144,8 +144,6 @@ function placeOf(
   const polygon = (value: unknown): PolygonPlace => {
     const [ring, ...holes] = list(value).map(ringOf);
     if (ring === undefined) throw new Unreadable('It has no outline.');
-    const thin = [ring, ...holes].find((line) => line.length < 3);
-    if (thin) throw new Unreadable(`Found ${thin.length} corners; an outline and a hole need at least 3 each.`);
     return { ring, holes };
   };
   switch (type) {

@@ -139,3 +139,13 @@ export function mapRasters(source: LayerSource, other: (raster: RasterSource) =>
   if ('highest' in source) return { highest: source.highest.map((part) => mapRasters(part, other)) };
   return source;
 }
+
+/** The surveyed mounds and areas that a source holds, in order. */
+export function placesIn(source: LayerSource): { mounds: MoundPlace[]; areas: AreaStrength[] } {
+  if (typeof source === 'number') return { mounds: [], areas: [] };
+  if ('mounds' in source) return { mounds: source.mounds, areas: [] };
+  if ('areas' in source) return { mounds: [], areas: source.areas };
+  const parts = 'product' in source ? source.product : 'highest' in source ? source.highest : [];
+  const found = parts.map(placesIn);
+  return { mounds: found.flatMap(({ mounds }) => mounds), areas: found.flatMap(({ areas }) => areas) };
+}

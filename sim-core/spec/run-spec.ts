@@ -16,6 +16,7 @@ export {
   layerSourceSchema,
   layerSourcesSchema,
   mapRasters,
+  placesIn,
   rasterSources,
   type Curve,
   type LayerSource,

@@ -18,8 +18,10 @@ export const partReasons: Record<LayerPart, string> = {
   elevation: 'Heights, from which curves derive capacity, vigour and exposure. Optional.',
   cover: 'Where the plant stands now: the share of each cell that it covers. A run starts from it.',
   exposure: 'Chronic physical stress of each cell, such as waves. Optional; without it there is none.',
-  refuge: 'Where survivors are sheltered: surveyed mounds and the like. Optional; without it there are none.',
-  allowed: 'Where works may go, by permit or by access. Optional; without it they may go anywhere.',
+  refuge:
+    'Where survivors are sheltered: surveyed mounds and the like. Optional; points and areas can say it too.',
+  allowed:
+    'Where works may go, by permit or by access. Optional; areas can say it too, and without either they may go anywhere.',
 };
 
 export const unitLabels: Record<ValueUnit, string> = {

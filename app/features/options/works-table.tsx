@@ -1,6 +1,9 @@
 import { useMemo, useState } from 'react';
+import { moundCaution } from '#contract/grid-cautions.ts';
 import { workTitles } from '#contract/work-titles.ts';
 import type { Work } from '#contract/works.ts';
+import type { Grid } from '#sim-core/grid/grid.ts';
+import type { Mound } from '#sim-core/spec/run-spec.ts';
 import { FenceSymbol, FlagSymbol, LossSymbol, PlantingSymbol } from '#app/components/symbols.tsx';
 import { Table, type Column } from '#app/components/table.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
@@ -18,6 +21,8 @@ const atOnce = 200;
 /** The works read as a table: the words for the picture, with the same selection, and a way to draw with keys alone. */
 export function WorksTable(props: {
   works: readonly Work[];
+  /** the cells that they come to lie on */
+  grid: Grid;
   selected: ReadonlySet<string>;
   /** those that stand on marsh already */
   standing: ReadonlySet<string>;
@@ -27,7 +32,7 @@ export function WorksTable(props: {
   onRemove?: (id: string) => void;
 }) {
   const [most, setMost] = useState(atOnce);
-  const { onEdit, onRemove, selected } = props;
+  const { grid, onEdit, onRemove, selected } = props;
   const titles = useMemo(() => workTitles(props.works), [props.works]);
   const rows = props.works.map((work, i): NumberedWork => ({ number: i + 1, work }));
   const field = ({ work, number }: NumberedWork, name: WorkField, label: string) => {
@@ -65,11 +70,14 @@ export function WorksTable(props: {
       key: 'what',
       head: 'works',
       cell: ({ work }) => (
-        <WordButton className="text-left whitespace-normal" onClick={() => props.onSelect([work.id])}>
-          <WorkSymbol work={work} />
-          {titles.get(work.id)}: {workInWords(work)}
-          {props.standing.has(work.id) && <span className="text-ink-2">; on marsh already</span>}
-        </WordButton>
+        <>
+          <WordButton className="text-left whitespace-normal" onClick={() => props.onSelect([work.id])}>
+            <WorkSymbol work={work} />
+            {titles.get(work.id)}: {workInWords(work)}
+            {props.standing.has(work.id) && <span className="text-ink-2">; on marsh already</span>}
+          </WordButton>
+          {work.kind === 'mound' && <MoundNote mound={work} grid={grid} />}
+        </>
       ),
     },
     { key: 'year', head: 'year', number: true, cell: (row) => field(row, 'year', 'Year') },
@@ -122,6 +130,12 @@ export function WorksTable(props: {
       )}
     </>
   );
+}
+
+/** What the cells make of a mound where it stands, where they do not hold its shape. */
+function MoundNote({ mound, grid }: { mound: Mound; grid: Grid }) {
+  const caution = moundCaution(mound, grid);
+  return caution === undefined ? null : <span className="block text-note text-ink-2">{caution}</span>;
 }
 
 /** The mark of one of the works, small enough for a line of text. */

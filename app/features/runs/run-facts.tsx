@@ -6,6 +6,7 @@ import { formatArea, formatDateTime, formatNumber, formatShare } from '#app/lib/
 import type { YearRecord } from '#app/yearline/year-records.ts';
 import { lossesIn, type YearLosses } from './run-series.ts';
 import { modeWords } from './run-words.ts';
+import { surveyedInWords } from './surveyed-places.ts';
 
 /** What the playhead's year holds, in figures and words. */
 export function YearFacts(props: {
@@ -70,6 +71,7 @@ function Figure({ value, words }: { value: string; words: string }) {
 export function RunFacts({ run, result }: { run: Run; result: RunResult | undefined }) {
   const { spec } = run;
   const mode = modeWords[spec.mode];
+  const surveyed = surveyedInWords(spec.layers);
   return (
     <section aria-label="What decided it" className="border-t border-rule py-2">
       <h2 className="mb-1 text-body font-bold">What decided it</h2>
@@ -108,6 +110,7 @@ export function RunFacts({ run, result }: { run: Run; result: RunResult | undefi
             <RasterHashes hash={layer.hash} sourceHash={layer.sourceHash} />
           </Fact>
         ))}
+        {surveyed.length > 0 && <Fact name="points and areas">{surveyed.join(', ')}</Fact>}
         <Fact name="started">
           {formatDateTime(run.startedAt)}, {run.startedBy}
         </Fact>

@@ -1,4 +1,5 @@
 import type { Feature, FeatureKind } from '#contract/features.ts';
+import { holesInWords } from '#contract/works-words.ts';
 import { formatLength, formatShare } from '#app/lib/formats.ts';
 
 export const kindLabels: Record<FeatureKind, string> = {
@@ -27,7 +28,7 @@ export function featureInWords({
   const form =
     shape.shape === 'disc'
       ? `disc of ${formatLength(shape.radius)} radius`
-      : `area of ${shape.ring.length} corners`;
+      : `area of ${shape.ring.length} corners${holesInWords(shape)}`;
   if (kind === 'allowed') return form;
   const fading = kind === 'refuge' && halo > 0 ? `, fading over ${formatLength(halo)}` : '';
   return `${form}, strength ${formatShare(strength)}${fading}`;

@@ -8,7 +8,7 @@ const mostShown = 100;
 
 /** What a file was read as, row by row, before anything is kept. */
 export function ImportPreview({ preview }: { preview: FeatureImportReply }) {
-  const { read, good, bad, features, problems } = preview;
+  const { read, good, bad, features, problems, cautions } = preview;
   const shown = features.slice(0, mostShown);
   return (
     <>
@@ -31,6 +31,15 @@ export function ImportPreview({ preview }: { preview: FeatureImportReply }) {
             ))}
           </ul>
           {bad > problems.length && <p>And {bad - problems.length} more.</p>}
+        </Notice>
+      )}
+      {cautions.length > 0 && (
+        <Notice title="Look again:" className="mt-2">
+          <ul>
+            {cautions.map((words) => (
+              <li key={words}>{words}</li>
+            ))}
+          </ul>
         </Notice>
       )}
       {shown.length > 0 && (

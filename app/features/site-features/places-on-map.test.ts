@@ -31,4 +31,7 @@ it('says what they are', () => {
   expect(featureInWords(feature('refuge', disc))).toBe('disc of 3 m radius, strength 50 %, fading over 2 m');
   expect(featureInWords(feature('fence', polygon))).toBe('area of 3 corners, strength 50 %');
   expect(featureInWords(feature('allowed', polygon))).toBe('area of 3 corners');
+  const holed = { ...polygon, holes: [polygon.ring] };
+  expect(featureInWords(feature('allowed', holed))).toBe('area of 3 corners with 1 hole');
+  expect(placesOnMap([feature('allowed', holed)]).areas[0].holes).toEqual([polygon.ring]);
 });

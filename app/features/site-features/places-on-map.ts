@@ -11,7 +11,7 @@ export function placesOnMap(features: readonly Feature[]): {
   const footholds: MapFoothold[] = [];
   const areas: MapArea[] = [];
   for (const { id, kind, shape, halo } of features) {
-    if (shape.shape === 'polygon') areas.push({ id, kind, ring: shape.ring });
+    if (shape.shape === 'polygon') areas.push({ id, kind, ring: shape.ring, holes: shape.holes });
     else if (kind === 'refuge')
       footholds.push({
         id,

@@ -7,6 +7,7 @@ import { Dialog, DialogActions } from '#app/components/dialog.tsx';
 import { LoadingLines } from '#app/components/loading-lines.tsx';
 import { Notice, ProblemNotice } from '#app/components/notice.tsx';
 import { Table } from '#app/components/table.tsx';
+import { classNames } from '#app/lib/class-names.ts';
 import { formatBytes, formatCount, formatDuration, formatLength, formatNumber } from '#app/lib/formats.ts';
 import { cellSizesQuery, startGridChangeMutation } from './cell-size-query.ts';
 
@@ -22,6 +23,7 @@ export function CellSizeDialog(props: { site: Site; onClose: () => void }) {
   const queryClient = useQueryClient();
   const start = useMutation(startGridChangeMutation(queryClient, site.id));
   const shown = chosen ?? now;
+  const impossible = sizes.data?.filter(({ problem }) => problem !== null) ?? [];
   return (
     <Dialog
       open
@@ -44,12 +46,19 @@ export function CellSizeDialog(props: { site: Site; onClose: () => void }) {
                 key: 'cell',
                 head: 'cell',
                 cell: (size) => (
-                  <label className="inline-flex min-h-7 touch:min-h-11 cursor-pointer items-center gap-2 whitespace-nowrap">
+                  <label
+                    className={classNames(
+                      'inline-flex min-h-7 touch:min-h-11 items-center gap-2 whitespace-nowrap',
+                      size.problem === null ? 'cursor-pointer' : 'text-ink-2',
+                    )}
+                  >
                     <input
                       type="radio"
                       name="working-cell"
                       className="accent-ink"
                       checked={size.factor === shown?.factor}
+                      disabled={size.problem !== null && size !== now}
+                      aria-describedby={size.problem === null ? undefined : whyNotId(size)}
                       onChange={() => setChosen(size)}
                     />
                     {formatLength(size.grid.cellSize)}
@@ -68,7 +77,8 @@ export function CellSizeDialog(props: { site: Site; onClose: () => void }) {
                 key: 'front',
                 head: 'diagonal front',
                 number: true,
-                cell: ({ frontRatio }) => (frontRatio === null ? 'no kernel' : formatNumber(frontRatio, 3)),
+                cell: ({ frontRatio }) =>
+                  frontRatio === null ? 'no run can start' : formatNumber(frontRatio, 3),
               },
               {
                 key: 'time',
@@ -89,6 +99,18 @@ export function CellSizeDialog(props: { site: Site; onClose: () => void }) {
             {fairFront} on it is fair. Time and memory are estimates for one run.
           </p>
         </div>
+      )}
+      {impossible.length > 0 && (
+        <dl className="mt-2 text-note text-ink-2">
+          {impossible.map((size) => (
+            <div key={size.factor} id={whyNotId(size)} className="mt-0.5">
+              <dt className="inline font-semibold">
+                On cells of {formatLength(size.grid.cellSize)} no run can start.
+              </dt>{' '}
+              <dd className="inline">{size.problem}</dd>
+            </div>
+          ))}
+        </dl>
       )}
       {shown && shown.warnings.length > 0 && (
         <Notice className="mt-2">
@@ -116,6 +138,8 @@ export function CellSizeDialog(props: { site: Site; onClose: () => void }) {
     </Dialog>
   );
 }
+
+const whyNotId = ({ factor }: CellSize) => `no-run-on-${factor}`;
 
 const yearTime = (seconds: number) =>
   seconds < 0.001

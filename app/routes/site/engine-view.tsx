@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react';
 import { layerOf } from '#contract/layer-sources.ts';
+import { featureCautions } from '#contract/grid-cautions.ts';
 import { Notice, ProblemNotice } from '#app/components/notice.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
@@ -70,7 +71,17 @@ export function EngineView(props: {
           )}
           {row('vigour', 'vigour there, on average', formatShare(facts.meanVigour))}
           {row('exposure', 'exposure there, on average', formatShare(facts.meanExposure))}
-          {row('refuge', 'with surveyed refuge', facts.sheltered === 0 ? 'none' : area(facts.sheltered))}
+          {row(
+            'refuge',
+            'surveyed refuge there',
+            facts.sheltered === 0 ? 'none' : `${area(facts.shelter)} in full`,
+          )}
+          {facts.sheltered > 0 && (
+            <div>
+              <dt className="pl-0.5 text-ink-2">cells with some of it</dt>
+              <dd>{area(facts.sheltered)}</dd>
+            </div>
+          )}
           {row('fence', 'fenced', facts.fenced === 0 ? 'none' : area(facts.fenced))}
           {row(
             'cover',
@@ -81,22 +92,33 @@ export function EngineView(props: {
           )}
         </dl>
       )}
-      {facts && <Warnings facts={facts} area={area} />}
+      {facts && <Warnings facts={facts} area={area} more={featureCautions(site.features, site.grid)} />}
     </section>
   );
 }
 
-/** What the engine will leave out or cut, so that nobody wonders later. */
-export function Warnings({ facts, area }: { facts: GroundFacts; area: (cells: number) => string }) {
+/** What the engine will leave out, cut or hold otherwise than it was drawn, so that nobody wonders later. */
+export function Warnings(props: {
+  facts: GroundFacts;
+  area: (cells: number) => string;
+  /** what is said besides, in whole sentences */
+  more?: readonly string[];
+}) {
+  const { facts, area, more = [] } = props;
   const cells = (n: number) => `${formatCounted(n, 'cell')}, ${area(n)}`;
   const words = [
     facts.plantable === 0 && 'No cell can hold the plant, so no run can start.',
+    facts.barren > 0 &&
+      `Surveyed refuge lies on ground that cannot hold the plant (${cells(facts.barren)}, ${formatShare(
+        facts.barrenShelter / (facts.shelter + facts.barrenShelter),
+      )} of all refuge); it shelters nothing and is not counted.`,
     facts.stranded > 0 &&
       `Cover stands on ground that cannot hold the plant (${cells(facts.stranded)}); a run starts without it.`,
     facts.overfull > 0 &&
       `Cover stands above what the ground can hold (${cells(facts.overfull)}); a run starts at capacity there.`,
     facts.withoutElevation > 0 &&
       `Elevation is missing where the class could hold the plant (${cells(facts.withoutElevation)}); nothing grows there.`,
+    ...more,
   ].filter((line) => line !== false);
   if (words.length === 0) return null;
   return (

@@ -116,7 +116,7 @@ export function GroundMap(props: {
       case 'exposure':
         return `Where the plant can grow, exposure is ${formatShare(facts.meanExposure)} on average.`;
       case 'refuge':
-        return `Some refuge on ${share(facts.sheltered)}.`;
+        return `Some refuge on ${share(facts.sheltered)}, where the plant can grow${facts.barren > 0 ? '; none of it counts elsewhere' : ''}.`;
       case 'fence':
         return `Fenced: ${share(facts.fenced)}.`;
       case 'cover':

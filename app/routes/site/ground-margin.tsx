@@ -43,7 +43,10 @@ export function GroundMargin(props: GroundMarginProps) {
   const { site, mayKeepGround } = useSite();
   const { view, onShow, onFiles } = props;
   const layers = layerParts.flatMap((part) => site.layers.find((layer) => layer.part === part) ?? []);
-  const missing = layerParts.filter((part) => layers.every((layer) => layer.part !== part));
+  const missing = layerParts.filter(
+    (part) =>
+      layers.every((layer) => layer.part !== part) && site.features.every(({ kind }) => kind !== part),
+  );
   return (
     <>
       <h1 className="text-lead">Ground</h1>

@@ -97,6 +97,7 @@ export function OptionMap(props: {
         ) : (
           <WorksTable
             works={draft.works}
+            grid={grid}
             selected={draft.selected}
             standing={props.standing}
             onSelect={board.select}

@@ -1,3 +1,4 @@
+import { moundCaution } from '#contract/grid-cautions.ts';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { AreaSentence } from '#app/features/options/board/area-sentence.tsx';
 import type { BoardPens } from '#app/features/options/board/board-pens.ts';
@@ -6,6 +7,8 @@ import { MoundBlanks } from '#app/features/options/board/mound-blanks.tsx';
 import { PatternBlanks } from '#app/features/options/board/pattern-sentence.tsx';
 import { NumberBlank, Sentence } from '#app/features/options/board/sentence.tsx';
 import type { DrawingBoard } from '#app/features/options/board/use-board.ts';
+import { readMound } from '#app/features/options/mound-pen.ts';
+import { useSite } from './use-site.ts';
 
 interface OptionSentenceProps {
   readonly pens: BoardPens;
@@ -31,17 +34,32 @@ export function OptionSentence(props: OptionSentenceProps) {
   if (isPattern(tool)) return <PatternSentence {...props} tool={tool} />;
   if (tool === 'mound')
     return (
-      <Sentence errors={errors} missed={missed}>
-        <span>A press places a mound</span>
-        <MoundBlanks pen={pens.mound} errors={errors} onChange={(mound) => onPens({ ...pens, mound })} />
-        <YearBlank {...props} />
-      </Sentence>
+      <>
+        <Sentence errors={errors} missed={missed}>
+          <span>A press places a mound</span>
+          <MoundBlanks pen={pens.mound} errors={errors} onChange={(mound) => onPens({ ...pens, mound })} />
+          <YearBlank {...props} />
+        </Sentence>
+        <MoundOnCells {...props} />
+      </>
     );
   return (
     <p className="flex min-h-6 items-center text-[13.5px] text-ink-2">
       {tool === 'box'
         ? 'Drag a box around works, or press two of its corners.'
         : 'Press works to select them, with Shift several; drag them, or use the arrow keys; Delete removes them.'}
+    </p>
+  );
+}
+
+/** What the cells make of the mound that the sentence describes, where they do not hold its shape. */
+function MoundOnCells({ pens }: OptionSentenceProps) {
+  const { site } = useSite();
+  const { mound } = readMound(pens.mound);
+  const caution = mound && moundCaution({ radius: mound.radius }, site.grid);
+  return caution === undefined ? null : (
+    <p role="status" className="mt-0.5 text-note text-ink-2">
+      {caution}
     </p>
   );
 }
@@ -79,6 +97,7 @@ function PatternSentence(props: OptionSentenceProps & { readonly tool: PatternTo
           </>
         )}
       </Sentence>
+      {laying.ofMounds && <MoundOnCells {...props} />}
       {laying.error && !laying.busy ? (
         <ProblemNotice error={laying.error} title="The pattern could not be laid." />
       ) : (

@@ -2,9 +2,10 @@ import { useMemo } from 'react';
 import type { Run } from '#contract/runs.ts';
 import { worksOf } from '#contract/works.ts';
 import { ProblemNotice } from '#app/components/notice.tsx';
-import { FlagSymbol } from '#app/components/symbols.tsx';
+import { FlagSymbol, SurvivorSymbol } from '#app/components/symbols.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { worksOnMap } from '#app/features/options/board/works-on-map.ts';
+import { surveyedOnMap } from '#app/features/runs/surveyed-places.ts';
 import type { useFrame } from '#app/features/runs/use-frame.ts';
 import { formatArea, formatShare } from '#app/lib/formats.ts';
 import type { MapRaster } from '#app/map/map-raster.ts';
@@ -34,7 +35,15 @@ export function RunMap(props: {
   }, [show, closing, cover, surveyYear, years]);
   const works = useMemo(() => worksOf(run.spec.actions), [run.spec.actions]);
   const shownYear = show === 'cover' ? year : surveyYear + years;
-  const { footholds, areas } = useMemo(() => worksOnMap(works, shownYear), [works, shownYear]);
+  const surveyed = useMemo(() => surveyedOnMap(run.spec.layers), [run.spec.layers]);
+  const { footholds, areas } = useMemo(() => {
+    const drawn = worksOnMap(works, shownYear);
+    return {
+      footholds: [...surveyed.footholds, ...drawn.footholds],
+      areas: [...surveyed.areas, ...drawn.areas],
+    };
+  }, [works, shownYear, surveyed]);
+  const anySurveyed = surveyed.footholds.length + surveyed.areas.length > 0;
   const error = show === 'closing' ? props.closingError : frame.error;
   const waiting = show === 'cover' ? frame.year !== year : !closing;
   return (
@@ -54,10 +63,19 @@ export function RunMap(props: {
         }
         legendTitle={show === 'cover' ? `Cover in ${frame.year ?? year}` : undefined}
         legend={
-          works.length > 0 ? (
-            <span className="flex items-center gap-1.5">
-              <FlagSymbol /> works
-            </span>
+          works.length > 0 || anySurveyed ? (
+            <>
+              {works.length > 0 && (
+                <span className="flex items-center gap-1.5">
+                  <FlagSymbol /> works
+                </span>
+              )}
+              {anySurveyed && (
+                <span className="flex items-center gap-1.5">
+                  <SurvivorSymbol /> surveyed
+                </span>
+              )}
+            </>
           ) : undefined
         }
       />

@@ -25,7 +25,7 @@ export const FeatureImportEntity = new EntitySchema<FeatureImportRow>({
     fileName: { type: 'text' },
     hash: { type: 'text' },
     crsName: { type: 'text' },
-    edges: { type: 'text', default: "'centre'" },
+    edges: { type: 'text', default: 'centre' },
     importedAt: { type: 'text' },
     importedBy: { type: 'text' },
   },

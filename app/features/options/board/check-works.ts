@@ -1,5 +1,5 @@
 import type { Action, Area } from '#sim-core/spec/run-spec.ts';
-import { areaCells } from '#sim-core/process/area-cells.ts';
+import { areaCells, ringsOf } from '#sim-core/process/area-cells.ts';
 import { cellAt, cellCentre, cellIndex, type Grid } from '#sim-core/grid/grid.ts';
 import { formatArea, formatNumber } from '#app/lib/formats.ts';
 import { crossesItself, type Ring } from '#app/map/rings.ts';
@@ -91,7 +91,7 @@ function areaProblem(ground: WorksGround, area: Area, works: boolean): RefusedPl
   const ring: Ring = area.shape === 'disc' ? [[area.x, area.y]] : area.ring;
   for (const [x, y] of ring) if (!isOnSite(grid, x, y)) return { x, y, problem: offSite(grid) };
   const [x, y] = ring[ring.length - 1];
-  if (area.shape === 'polygon' && crossesItself(area.ring))
+  if (area.shape === 'polygon' && ringsOf(area).some(crossesItself))
     return { x, y, problem: 'Two sides of the outline cross, so its inside cannot be told. Move a corner.' };
   const { cells } = areaCells(area, grid);
   if (cells.length === 0)

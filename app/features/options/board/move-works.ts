@@ -14,7 +14,11 @@ export function movedWork(work: Work, dx: number, dy: number): Work {
   const moved: Area =
     area.shape === 'disc'
       ? { ...area, x: toCentimetre(area.x + dx), y: toCentimetre(area.y + dy) }
-      : { ...area, ring: area.ring.map(shift) };
+      : {
+          ...area,
+          ring: area.ring.map(shift),
+          ...(area.holes && { holes: area.holes.map((hole) => hole.map(shift)) }),
+        };
   return { ...work, area: moved };
 }
 

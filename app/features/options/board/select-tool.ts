@@ -57,8 +57,11 @@ export function reshapable(works: readonly Work[], selected: ReadonlySet<string>
     : undefined;
 }
 
-export const withRing = (work: Work, ring: readonly GroundPoint[]): Work =>
-  ({ ...work, area: { shape: 'polygon', ring: ring.map(([x, y]) => [x, y]) } }) as Work;
+/** One of the works with another outline; its holes stay where they are. */
+export const withRing = (work: Work, ring: readonly GroundPoint[]): Work => {
+  const area = 'area' in work && work.area.shape === 'polygon' ? work.area : { shape: 'polygon' };
+  return { ...work, area: { ...area, ring: ring.map(([x, y]) => [x, y]) } } as Work;
+};
 
 /** Selects by press, Shift and box; moves what is selected; reshapes an outline by its corners. */
 export function selectTool(context: SelectContext): MapTool {

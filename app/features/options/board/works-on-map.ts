@@ -30,7 +30,13 @@ function workOnMap(work: Work, faint: boolean): DrawnWorks {
     drawn.footholds.push({ ...look, x: work.x, y: work.y, kind: 'planned', radius: work.radius + work.halo });
   else if (work.kind === 'clumps')
     for (const [x, y] of work.points) drawn.footholds.push({ ...look, x, y, kind: 'clump' });
-  else drawn.areas.push({ ...look, kind: work.kind, ring: ringOf(work.area) });
+  else
+    drawn.areas.push({
+      ...look,
+      kind: work.kind,
+      ring: ringOf(work.area),
+      ...(work.area.shape === 'polygon' && work.area.holes && { holes: work.area.holes }),
+    });
   known.set(work, drawn);
   return drawn;
 }

@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import { ringsOf } from '#sim-core/process/area-cells.ts';
 import {
   exportCrewCsv,
   exportCrewGpx,
@@ -77,7 +78,9 @@ function outlinesInWords(names: readonly string[]): string {
 /** Places that a crew goes to for one of the works. */
 function pointsOf(work: Work): number {
   if (work.kind === 'clumps') return work.points.length;
-  return 'area' in work && work.area.shape === 'polygon' ? work.area.ring.length : 1;
+  return 'area' in work && work.area.shape === 'polygon'
+    ? ringsOf(work.area).reduce((sum, ring) => sum + ring.length, 0)
+    : 1;
 }
 
 function CrewFiles({ option }: { option: Option }) {

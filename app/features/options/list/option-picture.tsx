@@ -1,6 +1,7 @@
 import { useEffect, useMemo, useRef } from 'react';
 import type { Work } from '#contract/works.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
+import { ringsOf } from '#sim-core/process/area-cells.ts';
 import { toPixels } from '#app/components/raster-pixels.ts';
 import { classNames } from '#app/lib/class-names.ts';
 import { useTheme } from '#app/lib/use-theme.ts';
@@ -94,10 +95,13 @@ function paintWorks(
       if (work.area.shape === 'disc') {
         const [left, top] = at(work.area.x, work.area.y);
         context.arc(left, top, Math.max(3, work.area.radius * scale), 0, 2 * Math.PI);
-      } else work.area.ring.forEach(([x, y]) => context.lineTo(...at(x, y)));
-      context.closePath();
+      } else
+        for (const ring of ringsOf(work.area)) {
+          ring.forEach(([x, y], i) => (i === 0 ? context.moveTo(...at(x, y)) : context.lineTo(...at(x, y))));
+          context.closePath();
+        }
       if (planting) {
-        context.fill();
+        context.fill('evenodd');
         context.stroke();
         continue;
       }

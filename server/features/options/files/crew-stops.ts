@@ -81,7 +81,14 @@ function stopsOf(work: Work, title: string): Stop[] {
       corners: [point],
     }));
   const { area } = work;
-  return [{ title, task, work, corners: area.shape === 'disc' ? [[area.x, area.y]] : area.ring }];
+  if (area.shape === 'disc') return [{ title, task, work, corners: [[area.x, area.y]] }];
+  const holes = (area.holes ?? []).map((corners, i) => ({
+    title: `${title}, hole ${i + 1}`,
+    task: 'leave out what this outline holds',
+    work,
+    corners,
+  }));
+  return [{ title, task, work, corners: area.ring }, ...holes];
 }
 
 function taskOf(work: Work): string {

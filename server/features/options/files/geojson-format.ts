@@ -12,8 +12,10 @@ const outline = z.object({
   type: z.literal('Polygon'),
   coordinates: z
     .array(z.array(position).min(4))
-    .length(1)
-    .describe('one ring, anticlockwise, its first position repeated at the end; no holes'),
+    .min(1)
+    .describe(
+      'an outline, anticlockwise, then its holes, clockwise; the first position of each repeated at the end',
+    ),
 });
 
 const share = z.number().min(0).max(1);

@@ -65,6 +65,22 @@ describe('an option as GeoJSON', () => {
     expect(optionGeoJson(option, site.epsg, 'wgs84')).not.toHaveProperty('crs');
   });
 
+  it('keeps holes, clockwise as RFC 7946 has them', () => {
+    const [x, y] = ring[0];
+    const hole: [number, number][] = [
+      [x + 0.5, y + 0.5],
+      [x + 1, y + 0.5],
+      [x + 1, y + 1],
+    ];
+    const holed = { ...works[1], area: { shape: 'polygon', ring, holes: [hole] } } as Work;
+    const file = optionGeoJson({ ...option, works: [...works.slice(2), holed] }, site.epsg, 'site');
+    expect(optionGeoJsonSchema.parse(file)).toEqual(file);
+    const [, inner] = file.features.at(-1)!.geometry.coordinates as [number, number][][];
+    expect(inner).toEqual([hole[0], hole[2], hole[1], hole[0]]);
+    const [back] = read(file).found.works.filter(({ id }) => id === holed.id);
+    expect(back).toMatchObject({ area: { holes: [[hole[0], hole[2], hole[1]]] } });
+  });
+
   it('is told to others by docs/option-geojson.schema.json; vitest --update writes it anew', async () => {
     const schema = z.toJSONSchema(optionGeoJsonSchema, { io: 'input' });
     const file = fileURLToPath(new URL('../../../../docs/option-geojson.schema.json', import.meta.url));
@@ -87,10 +103,32 @@ describe('GeoJSON of others', () => {
     expect(crsName).toBe('WGS 84, EPSG:4326');
   });
 
+  it('may hold several outlines in one feature: as many works, of which the first keeps the id', () => {
+    const triangle = (x: number) => [[x, 5_301_895], [x + 3, 5_301_895], [x, 5_301_898], [x, 5_301_895]]; // prettier-ignore
+    const file = {
+      ...collection({
+        id: 'west',
+        ...feature(
+          { type: 'MultiPolygon', coordinates: [[triangle(412_201)], [triangle(412_206)]] },
+          { kind: 'planting', cover: 0.5, year: 2028 },
+        ),
+      }),
+      crs: { type: 'name', properties: { name: `urn:ogc:def:crs:EPSG::${site.epsg}` } },
+    };
+    const { found } = read(file);
+    expect(found.problems).toEqual([]);
+    expect(found.works).toMatchObject([
+      { kind: 'planting', cover: 0.5, area: { ring: triangle(412_201).slice(0, 3) } },
+      { kind: 'planting', cover: 0.5, area: { ring: triangle(412_206).slice(0, 3) } },
+    ]);
+    expect(new Set(found.works.map(({ id }) => id)).size).toBe(2);
+  });
+
   it.each([
     [feature({ type: 'LineString', coordinates: [[lon, lat]] }), /Found the geometry LineString/],
     [feature({ type: 'Polygon', coordinates: [[[lon, lat]]] }), /needs a property `kind`/],
-    [feature({ type: 'Polygon', coordinates: [[[lon, lat]], []] }, { kind: 'fence' }), /It has holes/],
+    [feature({ type: 'Polygon', coordinates: [[[lon, lat]], []] }, { kind: 'fence' }), /area\.ring/],
+    [feature({ type: 'Polygon', coordinates: [] }, { kind: 'fence' }), /no outline/],
     [feature({ type: 'Point', coordinates: ['3', lat] }), /needs two numbers/],
     [feature({ type: 'Point', coordinates: [lon + 1, lat] }), /Easting .* lies off the site; expected 412200 to/],
     [feature({ type: 'Point', coordinates: [lon, lat] }, { kind: 'dam' }), /kind/],

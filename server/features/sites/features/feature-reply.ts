@@ -6,6 +6,10 @@ import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { featureRows, importRows } from './feature.repository.ts';
 
+/** The rule that the edges of a feature go by: that of its file, but for allowed ground. */
+export const edgesOf = (kind: string, edges: string): Feature['edges'] =>
+  kind === 'allowed' ? 'centre' : featureEdgesSchema.parse(edges);
+
 const featureOf = (row: FeatureRow, file: FeatureImportRow): Feature => ({
   id: row.id,
   kind: featureKindSchema.parse(row.kind),
@@ -13,7 +17,7 @@ const featureOf = (row: FeatureRow, file: FeatureImportRow): Feature => ({
   shape: readJson(areaSchema, row.shape),
   strength: row.strength,
   halo: row.halo,
-  edges: row.kind === 'allowed' ? 'centre' : featureEdgesSchema.parse(file.edges),
+  edges: edgesOf(row.kind, file.edges),
   source: {
     importId: row.importId,
     fileName: file.fileName,

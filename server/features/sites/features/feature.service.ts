@@ -7,6 +7,7 @@ import {
   type FeatureImportForm,
   type FeatureImportReply,
 } from '#contract/features.ts';
+import { featureCautions } from '#contract/grid-cautions.ts';
 import type { Site } from '#contract/sites.ts';
 import type { FeatureImportRow } from '#server/database/entities/feature-import.ts';
 import type { FeatureRow } from '#server/database/entities/feature.ts';
@@ -20,6 +21,7 @@ import type { Services } from '#server/services.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { ringsOf } from '#sim-core/process/area-cells.ts';
 import { areaSchema, type Area } from '#sim-core/spec/run-spec.ts';
+import { edgesOf } from './feature-reply.ts';
 import { siteReply } from '../site-reply.ts';
 import {
   deleteFeatureRow,
@@ -31,6 +33,9 @@ import {
   updateFeature,
 } from './feature.repository.ts';
 import { findFeatures, type FoundFeatures } from './found-features.ts';
+
+/** What cells on the edge of new features get. */
+const importEdges = 'shared';
 
 /** What is listed of a file; the rest is only counted. */
 const listed = { features: 500, problems: 200 };
@@ -48,7 +53,8 @@ export async function importFeatures(
 ): Promise<FeatureImportReply> {
   const { grid } = await siteReply(services.dataSource.manager, siteId);
   const found = readFound(await readFile(file.path, 'utf8'), grid, defaults);
-  if (take === 'preview') return replyOf(found, null);
+  const replyOf = (importId: string | null) => replyFor(found, grid, importId);
+  if (take === 'preview') return replyOf(null);
   if (take === 'all' && found.problems.length > 0) throw refusal(found);
   if (found.features.length === 0)
     throw fieldProblem('file', 'Found no point or area that can be taken; expected at least one');
@@ -58,7 +64,7 @@ export async function importFeatures(
     fileName: shownFileName(fileName),
     hash: file.hash,
     crsName: found.crsName,
-    edges: 'shared',
+    edges: importEdges,
     importedAt: services.clock().toISOString(),
     importedBy: by,
   };
@@ -76,7 +82,7 @@ export async function importFeatures(
       })),
     );
   });
-  return replyOf(found, row.id);
+  return replyOf(row.id);
 }
 
 /** The shared readers name the text that they are given `content`; here it came as a file. */
@@ -89,8 +95,9 @@ function readFound(content: string, grid: Grid, defaults: Parameters<typeof find
   }
 }
 
-const replyOf = (
+const replyFor = (
   { read, crsName, features, problems }: FoundFeatures,
+  grid: Grid,
   importId: string | null,
 ): FeatureImportReply => ({
   read,
@@ -99,6 +106,10 @@ const replyOf = (
   good: features.length,
   problems: problems.slice(0, listed.problems),
   bad: problems.length,
+  cautions: featureCautions(
+    features.map(({ kind, shape }) => ({ kind, shape, edges: edgesOf(kind, importEdges) })),
+    grid,
+  ),
   importId,
 });
 

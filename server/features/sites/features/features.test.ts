@@ -1,6 +1,8 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { FeatureImportReply } from '#contract/features.ts';
+import { layerSources } from '#contract/layer-sources.ts';
 import type { Site } from '#contract/sites.ts';
+import { sourceBytes } from '#sim-core/grid/build-ground.ts';
 import { makeTeam, type TestTeam } from '#server/testing/people.ts';
 import { makeSite, storedFiles } from '#server/testing/sites.ts';
 import { testServer, type TestServer } from '#server/testing/test-server.ts';
@@ -152,6 +154,54 @@ describe('areas from GeoJSON', () => {
     expect(y).toBeCloseTo(5_301_896, 2);
     expect(reply.problems.map(({ message }) => message).join(' ')).toMatch(/radius "wide".*LineString/);
     await team.agents.modeller.delete(`/api/sites/${site.id}/feature-imports/${kept.importId}`).expect(200);
+  });
+
+  it('may have holes, and several outlines in one feature: as many areas of one row, as large as they are', async () => {
+    const box = (west: number, south: number, east: number, north: number) => [
+      [west, south],
+      [east, south],
+      [east, north],
+      [west, north],
+      [west, south],
+    ];
+    const [x, y] = [412_200, 5_301_892];
+    const file = collection(
+      [
+        {
+          type: 'Feature',
+          properties: { name: 'Pans' },
+          geometry: {
+            type: 'MultiPolygon',
+            coordinates: [
+              [box(x, y, x + 6, y + 6), box(x + 1, y + 1, x + 4, y + 3)],
+              [box(x + 8, y + 1, x + 11, y + 4)],
+            ],
+          },
+        },
+        {
+          type: 'Feature',
+          properties: {},
+          geometry: { type: 'Polygon', coordinates: [box(x, y, x + 6, y + 6), [[x, y]]] },
+        },
+      ],
+      'EPSG:32631',
+    );
+    const reply = replyOf(await send(file, { kind: 'refuge', take: 'good' }).expect(200));
+    expect(reply).toMatchObject({ good: 2, bad: 1, problems: [{ row: 2 }] });
+    expect(reply.problems[0].message).toContain('Found 1 corners');
+    const features = await featuresNow();
+    expect(features.map(({ name, source, edges }) => [name, source.row, edges])).toEqual([
+      ['Pans', 1, 'shared'],
+      ['Pans', 1, 'shared'],
+    ]);
+    const now = (await team.agents.trainer.get(`/api/sites/${site.id}`).expect(200)).body as Site;
+    const refuge = sourceBytes(layerSources(now).refuge, now.grid, () => {
+      throw new Error('no raster');
+    });
+    const squareMetres = refuge.reduce((sum, byte) => sum + (byte / 255) * 4, 0);
+    // 36 − 6 and 9 m², each cell held to 1/255.
+    expect(Math.abs(squareMetres - 39)).toBeLessThan(0.2);
+    await team.agents.modeller.delete(`/api/sites/${site.id}/feature-imports/${reply.importId}`).expect(200);
   });
 
   it('that are no such file are refused at the file', async () => {

@@ -1,5 +1,10 @@
 import { featureAttributesSchema, type FeatureImportForm, type FeatureKind } from '#contract/features.ts';
-import { polygonArea, readGeoJsonPlaces, type Place, type PolygonPlace } from '#server/files/geojson-places.ts';
+import {
+  polygonArea,
+  readGeoJsonPlaces,
+  type Place,
+  type PolygonPlace,
+} from '#server/files/geojson-places.ts';
 import { readPointTable } from '#server/files/point-table.ts';
 import type { Point } from '#server/files/place-projection.ts';
 import { cellAt, type Grid } from '#sim-core/grid/grid.ts';
@@ -53,11 +58,7 @@ function fromGeoJson(content: string, grid: Grid, defaults: Defaults): FoundFeat
 
 /** Several points or outlines are as many features of one row. */
 const partsOf = (place: Place): (Point | PolygonPlace)[] =>
-  place.type === 'Polygon'
-    ? [...place.polygons]
-    : place.type === 'Point'
-      ? [place.point]
-      : [...place.points];
+  place.type === 'Polygon' ? [...place.polygons] : place.type === 'Point' ? [place.point] : [...place.points];
 
 function fromTable(content: string, grid: Grid, defaults: Defaults): FoundFeatures {
   const { rows, crsName, unknown } = readPointTable<keyof typeof columnNames>(
@@ -97,9 +98,10 @@ function collector(grid: Grid, defaults: Defaults) {
       }
       const of = (name: 'radius' | 'strength' | 'halo') =>
         typeof written[name] === 'number' ? written[name] : defaults[name];
-      const shape: Area = 'ring' in place
-        ? polygonArea(place)
-        : { shape: 'disc', x: place[0], y: place[1], radius: of('radius') };
+      const shape: Area =
+        'ring' in place
+          ? polygonArea(place)
+          : { shape: 'disc', x: place[0], y: place[1], radius: of('radius') };
       features.push({
         row,
         kind,
@@ -140,6 +142,8 @@ function pointProblem([x, y]: Point, grid: Grid): string | undefined {
 }
 
 function polygonProblem({ ring, holes }: PolygonPlace, grid: Grid): string | undefined {
+  const least = Math.min(ring.length, ...holes.map((hole) => hole.length));
+  if (least < 3) return `Found ${least} corners; an outline and a hole need at least 3 each.`;
   const most = Math.max(ring.length, ...holes.map((hole) => hole.length));
   if (most > mostRingCorners)
     return `Found ${most} corners; expected at most ${mostRingCorners} an outline. Simplify the outline.`;

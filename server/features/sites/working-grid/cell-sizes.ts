@@ -1,10 +1,13 @@
 import type { CellSize } from '#contract/working-grid.ts';
-import type { Outlook } from '#contract/outlooks.ts';
-import type { Plant } from '#contract/sites.ts';
+import { featureCautions } from '#contract/grid-cautions.ts';
+import type { Plant, Site } from '#contract/sites.ts';
 import { coarsenGrid } from '#rasters/align/suggest-grid.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
-import { fitKernel, RunProblem } from '#sim-core/index.ts';
+import { fitKernel } from '#sim-core/index.ts';
+import { rateProblems } from '#sim-core/run/grid-problems.ts';
+import type { StepsPerYear } from '#sim-core/spec/run-spec.ts';
 
+const stepsPerYearOptions: readonly StepsPerYear[] = [1, 2, 4, 12];
 /** Times the side of the finest cell. */
 const factors = [1, 2, 3, 4, 5, 6, 8, 10] as const;
 
@@ -19,39 +22,49 @@ export const cost = { secondsPerCellStep: 75e-9, bytesPerCell: 40 } as const;
 export const gridOfFactor = (finest: Grid, factor: number): Grid =>
   coarsenGrid(finest, finest.cellSize * factor);
 
-/** The working cells that a site may have, and what each would mean for its plant. */
-export function cellSizesOf(
-  finest: Grid,
-  plant: Plant,
-  { stepsPerYear }: Pick<Outlook, 'stepsPerYear'>,
-): CellSize[] {
+/** The working cells that a site may have, and what each would mean for its plant and its surveyed points and areas. */
+export function cellSizesOf({
+  finestGrid,
+  plant,
+  outlook: { stepsPerYear },
+  features,
+}: Pick<Site, 'finestGrid' | 'plant' | 'outlook' | 'features'>): CellSize[] {
   return factors
-    .map((factor) => ({ factor, grid: gridOfFactor(finest, factor) }))
+    .map((factor) => ({ factor, grid: gridOfFactor(finestGrid, factor) }))
     .filter(({ factor, grid }) => factor === 1 || (grid.width > 1 && grid.height > 1))
     .map(({ factor, grid }) => {
       const cells = grid.width * grid.height;
+      const { warnings, ...front } = frontOn(grid, plant, stepsPerYear);
       return {
         factor,
         grid,
         cells,
-        ...frontOn(grid, plant, stepsPerYear),
+        ...front,
+        warnings: [...warnings, ...featureCautions(features, grid)],
         memoryBytes: cells * cost.bytesPerCell,
         secondsPerYear: cells * stepsPerYear * cost.secondsPerCellStep,
       };
     });
 }
 
-/** v(π/4)/v(0) of the kernel that the plant would have on such cells. */
+/** v(π/4)/v(0) of the kernel that the plant would have on such cells, or why there would be none. */
 function frontOn(
   { cellSize }: Grid,
-  { rates }: Plant,
-  stepsPerYear: Outlook['stepsPerYear'],
-): Pick<CellSize, 'frontRatio' | 'warnings'> {
-  try {
-    const { frontSpeed, diagonalFrontSpeed, warnings } = fitKernel(rates, cellSize, stepsPerYear);
-    return { frontRatio: frontSpeed > 0 ? diagonalFrontSpeed / frontSpeed : null, warnings: [...warnings] };
-  } catch (error) {
-    if (!(error instanceof RunProblem)) throw error;
-    return { frontRatio: null, warnings: error.problems.map(({ message }) => `${message}.`) };
+  { rates, processes = {} }: Plant,
+  stepsPerYear: StepsPerYear,
+): Pick<CellSize, 'problem' | 'frontRatio' | 'warnings'> {
+  const problemsAt = (steps: StepsPerYear) =>
+    rateProblems({ rates, processes, stepsPerYear: steps }, cellSize);
+  const problems = problemsAt(stepsPerYear);
+  if (problems.length > 0) {
+    const mends = stepsPerYearOptions.filter((steps) => problemsAt(steps).length === 0);
+    const words = problems.map(({ message }) => `${message}.`);
+    if (mends.length > 0)
+      words.push(
+        `With ${mends.join(' or ')} ${mends.at(-1) === 1 ? 'step' : 'steps'} a year one could start.`,
+      );
+    return { problem: words.join(' '), frontRatio: null, warnings: [] };
   }
+  const { frontSpeed, diagonalFrontSpeed, warnings } = fitKernel(rates, cellSize, stepsPerYear);
+  return { problem: null, frontRatio: diagonalFrontSpeed / frontSpeed, warnings: [...warnings] };
 }

@@ -11,10 +11,9 @@ import { cancelGridChange, gridChangeReply, startGridChange } from './grid-chang
 export function workingGridRoutes(services: Services): Route[] {
   const manager = services.dataSource.manager;
   return [
-    route(contract.listCellSizes, { site: roles }, async ({ params }) => {
-      const { finestGrid, plant, outlook } = await siteReply(manager, params.siteId);
-      return { cellSizes: cellSizesOf(finestGrid, plant, outlook) };
-    }),
+    route(contract.listCellSizes, { site: roles }, async ({ params }) => ({
+      cellSizes: cellSizesOf(await siteReply(manager, params.siteId)),
+    })),
     route(contract.getGridChange, { site: roles }, async ({ params }) => ({
       gridChange: await gridChangeReply(services, manager, params.siteId),
     })),

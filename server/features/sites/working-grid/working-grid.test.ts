@@ -42,7 +42,52 @@ describe('the cells that a site may have', () => {
     // The default plant's front is slow for such cells: the coarser, the more the lattice shows.
     expect(fine.frontRatio).toBeLessThan(1);
     expect(double.frontRatio ?? 0).toBeLessThan(fine.frontRatio!);
+    expect(double).toMatchObject({ problem: null });
     expect([...double.warnings, ...(third?.warnings ?? [])].join()).toMatch(/cell/i);
+  });
+
+  it('says on which no run could start, and what would mend it', async () => {
+    const { modeller } = team.agents;
+    const site = await makeSite(modeller, team.teamId);
+    const sizesWith = async (rates: object, stepsPerYear = 1, more: object = {}) => {
+      const plant = { name: 'slow', rates: { ...site.plant.rates, ...rates }, ...more };
+      await modeller.put(of(site.id, 'plant')).send(plant).expect(200);
+      const outlook = { ...site.outlook, stepsPerYear };
+      await modeller.put(of(site.id, 'outlook')).send(outlook).expect(200);
+      const { body } = await modeller.get(of(site.id, 'cell-sizes')).expect(200);
+      return (body as { cellSizes: CellSize[] }).cellSizes;
+    };
+    const [fine, double] = await sizesWith({ lateralSpread: 0.05 });
+    expect(fine.problem === null).toBe(fine.frontRatio !== null);
+    expect(double).toMatchObject({ frontRatio: null, warnings: [] });
+    expect(double.problem).toMatch(
+      /Use cells of [\d.]+ m or less, or a lateral spread of [\d.]+ m\/yr or more/,
+    );
+    // What the sentence names must do.
+    const spread = Number(/lateral spread of ([\d.]+)/.exec(double.problem!)![1]);
+    expect((await sizesWith({ lateralSpread: spread }))[1].problem).toBeNull();
+    const herd = { processes: { grazers: { grazerSpread: 150 } } };
+    const [far] = await sizesWith({}, 1, herd);
+    expect(far.problem).toMatch(/Grazers that move 150 m .* With .*steps a year one could start\.$/);
+    const steps = Number(/With (\d+)/.exec(far.problem!)![1]);
+    expect((await sizesWith({}, steps, herd))[0].problem).toBeNull();
+  });
+
+  it('say what they make of small surveyed places', async () => {
+    const { modeller } = team.agents;
+    const site = await makeSite(modeller, team.teamId);
+    const reply = await modeller
+      .post(of(site.id, 'feature-imports'))
+      .field('kind', 'refuge')
+      .field('radius', '2')
+      .field('take', 'all')
+      .attach('file', Buffer.from('x,y\n412205,5301896\n'), 'reefs.csv')
+      .expect(200);
+    expect((reply.body as { cautions: string[] }).cautions).toEqual([]);
+    const { body } = await modeller.get(of(site.id, 'cell-sizes')).expect(200);
+    const [fine, double] = (body as { cellSizes: CellSize[] }).cellSizes;
+    expect(fine.warnings.join()).not.toContain('refuge');
+    expect(double.warnings.join()).toContain('1 of 1 surveyed refuges is narrower than two cells of 4 m');
   });
 });
 

@@ -1,9 +1,9 @@
-import type { Grid } from '#sim-core/grid/grid.ts';
+import type { Grid } from './grid.ts';
 import { areaCells } from '#sim-core/process/area-cells.ts';
 import { areaShares } from '#sim-core/process/area-shares.ts';
 import type { Edges } from '#sim-core/spec/layer-source.ts';
 import type { Area } from '#sim-core/spec/run-spec.ts';
-import { areaExtent } from './extent.ts';
+import { areaExtent } from '#sim-core/plan/extent.ts';
 
 /** How far the area on the cells may be from the drawn one before people are told. */
 const fairShare = 0.1;
