@@ -6,6 +6,8 @@ export interface Line {
   /** cells on a side, or width × height */
   readonly size: number | string;
   readonly against: string;
+  /** whose figure this is, where it is not ours: a yardstick that is held against another */
+  readonly engine?: string;
   /** what was done: cells stepped in the fastest round; of frames and arrival, their cells; of an ensemble, its steps */
   readonly work: number;
   /** time of the processor; of an ensemble, by the clock */
@@ -34,7 +36,7 @@ export function printLine(line: Line): void {
     console.log(JSON.stringify(line));
     return;
   }
-  const { name, mode, map, size, against, ratio, reason, load } = line;
+  const { name, mode, map, size, against, engine, ratio, reason, load } = line;
   console.log(
     [
       name.padEnd(8),
@@ -45,6 +47,7 @@ export function printLine(line: Line): void {
     ].join(' '),
     against.padStart(12),
     ratio?.toFixed(2).padStart(8) ?? `skipped: ${reason}`,
+    engine === undefined ? '' : `(not ours: ${engine})`,
     load === undefined ? '' : `(load ${load.toFixed(1)})`,
   );
 }

@@ -85,6 +85,14 @@ for (const size of sizes)
         else if ('reason' in yardstick)
           printLine({ ...line, against, ratio: null, reason: yardstick.reason });
       }
+      // How far C at the machine's full width is ahead of the array script, in one thread like ours.
+      const native = theirs.get('c-native');
+      for (const against of ['scipy', 'scipy-tuned'] as const) {
+        const script = theirs.get(against);
+        if (!native || !script) continue;
+        const ofC = { engine: 'c-native', seconds: native.seconds, rate: work / native.seconds } as const;
+        printLine({ ...line, ...ofC, against, ratio: script.seconds / native.seconds });
+      }
       if (map === 'sparse')
         printLine({
           ...line,
