@@ -64,10 +64,12 @@ export interface StepLosses {
 export interface Kernel {
   readonly cover: Float32Array;
   readonly clumps: Uint16Array | Uint32Array | undefined;
-  readonly refuge: Uint8Array;
   /** where there are grazers: how many, 1/m², and F, k/255 */
   readonly grazers: Float32Array | undefined;
   readonly fence: Uint8Array | undefined;
+  /** M of a cell, k/255 */
+  refugeAt(cell: number): number;
+  setRefuge(cell: number, refuge: number): void;
   /** Says that others wrote to the arrays, so that the kernel looks anew at where anything lives. */
   changed(): void;
   /**

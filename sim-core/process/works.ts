@@ -99,15 +99,15 @@ export function prepareWorks(
         standingFences(fences, year, map.fence, map.kernel.fence);
       const works = years.get(year);
       if (!works) return 0;
-      const { refuge } = map.kernel;
+      const { kernel } = map;
       for (const planting of works.plantings) plant(planting, index, map);
       for (const clumps of works.clumps) setPlantedClumps(clumps, grid, map);
       for (const { cells, strengths } of works.mounds)
         cells.forEach((cell, j) => {
-          if (strengths[j] > refuge[cell]) refuge[cell] = strengths[j];
+          if (strengths[j] > kernel.refugeAt(cell)) kernel.setRefuge(cell, strengths[j]);
         });
       const lost = works.losses.reduce((sum, loss, order) => sum + remove(loss, order, index, map), 0);
-      map.kernel.changed();
+      kernel.changed();
       return lost;
     },
   };

@@ -39,9 +39,12 @@ export const createReferenceKernel: CreateKernel = (setup) => {
   return {
     cover,
     clumps,
-    refuge,
     grazers: herd?.grazers,
     fence,
+    refugeAt: (cell) => refuge[cell],
+    setRefuge(cell, value) {
+      refuge[cell] = value;
+    },
     changed() {
       // It looks at every cell of C in every step.
     },

@@ -182,6 +182,33 @@ describe('skipping on a map of many stretches', () => {
   });
 });
 
+test.each([
+  [37, 10],
+  [64, 3],
+  [1, 9],
+])('refuge that is set later is as if it had been there, cell by cell: %d × %d', (width, height) => {
+  const cells = width * height;
+  const refuge = Uint8Array.from({ length: cells }, (_, i) => (i * 89) % 256);
+  const input: SetupInput = {
+    width,
+    height,
+    cover: new Float32Array(cells).fill(0.3),
+    grazers: { rates: { initialGrazers: 40, refugePredation: 1 }, variance: 2 },
+  };
+  const there = createSimdKernel(kernelSetup({ ...input, refuge }));
+  const later = createSimdKernel(kernelSetup({ ...input, refuge: new Uint8Array(cells).fill(7) }));
+  refuge.forEach((byte, cell) => {
+    later.setRefuge(cell, byte);
+  });
+  later.changed();
+  expect(Array.from(refuge, (_, cell) => later.refugeAt(cell))).toEqual([...refuge]);
+  const losses = [there, later].map((kernel) => kernel.step(0, -2));
+  expect(later.cover).toEqual(there.cover);
+  expect(later.grazers).toEqual(there.grazers);
+  expect(losses[1]).toEqual(losses[0]);
+  expect(new Set(later.cover).size).toBeGreaterThan(Math.min(cells, 256) / 2);
+});
+
 test('a map of one cell, and one narrower than its kernel, are stepped too', () => {
   for (const [width, height] of [
     [1, 1],

@@ -27,6 +27,10 @@ export interface KernelExports {
     neighbourShift: number,
   ): void;
   setLuck(key0: number, key1: number, replicate: number): void;
+  /** takes part 0 to 3 (K, g, E, M) of row y from `groundRow` */
+  layGround(part: number, y: number): void;
+  refugeAt(cell: number): number;
+  setRefuge(cell: number, value: number): void;
   setSkip(skip: boolean): void;
   look(): void;
   /** after `layOut`, where there are grazers */
@@ -38,10 +42,7 @@ export interface KernelExports {
   philox(out: number, counter: number, step: number, replicate: number, key0: number, key1: number): void;
   readonly cover: Address;
   readonly clumps: Address;
-  readonly capacity: Address;
-  readonly vigour: Address;
-  readonly exposure: Address;
-  readonly refuge: Address;
+  readonly groundRow: Address;
   readonly grazers: Address;
   readonly fence: Address;
   readonly taps: Address;

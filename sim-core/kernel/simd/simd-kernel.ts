@@ -1,12 +1,12 @@
 import { RunProblem } from '#sim-core/run/run-problem.ts';
 import { grazerDecline, type Grazing } from '#sim-core/process/grazers.ts';
 import type { StepRates } from '#sim-core/theory/step-rates.ts';
-import { coverOfClumps, type CreateKernel, type StepLosses } from '../kernel.ts';
+import { coverOfClumps, type CreateKernel, type KernelSetup, type StepLosses } from '../kernel.ts';
 import { instantiateKernel, type KernelExports } from './kernel-module.ts';
 
 /**
  * The kernel that ships: the step of the model four cells at a time, in single precision, in WebAssembly (`assembly/`).
- * It keeps the whole map in one memory, 8.3 bytes a cell in mean-field and 10.3 in counts (12.3 above 65,535 sites), 5
+ * It keeps the whole map in one memory, 8.1 bytes a cell in mean-field and 10.1 in counts (12.1 above 65,535 sites), 5
  * more where there are grazers, and a few rows.
  *
  * @throws RunProblem where the machine does not give that much memory
@@ -28,18 +28,13 @@ export const createSimdKernel: CreateKernel = (setup) => {
       },
     ]);
   const { buffer } = wasm.memory;
-  const bytes = (at: { value: number }) => new Uint8Array(buffer, at.value, cells);
   const cover = new Float32Array(buffer, wasm.cover.value, cells);
   const clumps = !counts
     ? undefined
     : wide
       ? new Uint32Array(buffer, wasm.clumps.value, cells)
       : new Uint16Array(buffer, wasm.clumps.value, cells);
-  const refuge = bytes(wasm.refuge);
-  refuge.set(setup.refuge);
-  bytes(wasm.capacity).set(setup.capacity);
-  bytes(wasm.vigour).set(setup.vigour);
-  bytes(wasm.exposure).set(setup.exposure);
+  layGround(wasm, setup);
   new Float32Array(buffer, wasm.taps.value, taps.length).set(taps);
   wasm.setSpread(step.carryOver, step.recruits, step.seedlings, rates.refugeGrowth, rates.crowding);
   wasm.setLoss(
@@ -68,7 +63,10 @@ export const createSimdKernel: CreateKernel = (setup) => {
   return {
     cover,
     clumps,
-    refuge,
+    refugeAt: (cell) => wasm.refugeAt(cell),
+    setRefuge(cell, refuge) {
+      wasm.setRefuge(cell, refuge);
+    },
     grazers: herd?.grazers,
     fence: herd?.fence,
     changed() {
@@ -84,6 +82,18 @@ export const createSimdKernel: CreateKernel = (setup) => {
     },
   };
 };
+
+/** The kernel holds the ground in an order of its own (`assembly/state.ts`). */
+function layGround(wasm: KernelExports, setup: KernelSetup): void {
+  const { width, height } = setup;
+  const row = new Uint8Array(wasm.memory.buffer, wasm.groundRow.value, width);
+  [setup.capacity, setup.vigour, setup.exposure, setup.refuge].forEach((cells, part) => {
+    for (let y = 0; y < height; y++) {
+      row.set(cells.subarray(y * width, (y + 1) * width));
+      wasm.layGround(part, y);
+    }
+  });
+}
 
 function setGrazers(
   wasm: KernelExports,

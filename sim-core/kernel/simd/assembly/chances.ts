@@ -1,18 +1,11 @@
 import { exp, partOf, rest, scaleOf, shifted } from './exp';
 import {
-  capacity,
-  cover,
   crowding,
-  exposure,
   groups,
   lastLanes,
-  refuge,
-  skipsBare,
   skipsBarren,
-  vigour,
-  width,
 } from './state';
-import { held, records, recruitment, wetness } from './stretch';
+import { held, pieceCount, pieceTo, records, recruitment, wetness } from './stretch';
 import * as vectors from './vectors';
 
 /** The first four of eight 16-bit numbers as floats, and the last four. */
@@ -75,53 +68,36 @@ function recruitmentOf(pressure: v128, phi: v128): v128 {
  * one another than a processor looks ahead. Two groups at a time, so that each constant is fetched half as often; an odd
  * last one has a companion whose record nobody reads.
  */
-export function weigh(y: i32, from: i32, to: i32): void {
+export function weigh(many: i32): void {
   const crowded = crowding > 0;
-  const mayBeBare = skipsBare;
   const mayBeBarren = skipsBarren;
-  const row = <usize>y * <usize>width + ((<usize>from) << 2);
-  let coverAt = cover + (row << 2);
-  let capacityAt = capacity + row;
-  let vigourAt = vigour + row;
-  let exposureAt = exposure + row;
-  let refugeAt = refuge + row;
-  const end = records + ((<usize>(to - from)) << 6);
-
-  for (
-    let record = records;
-    record < end;
-    record += 128, coverAt += 32, capacityAt += 8, vigourAt += 8, exposureAt += 8, refugeAt += 8
-  ) {
+  for (let i = 0, record = records; i < many; i += 2, record += 128) {
     const around1 = v128.load(record);
     const around2 = v128.load(record, 64);
-    if (
-      mayBeBare
-        ? !v128.any_true(
-            v128.or(v128.or(v128.load(coverAt), v128.load(coverAt, 16)), v128.or(around1, around2)),
-          )
-        : mayBeBarren && load<u64>(capacityAt) == 0
-    ) {
+    const ground1 = v128.load(record, held);
+    const ground2 = v128.load(record, held + 64);
+    if (mayBeBarren && i32x4.extract_lane(v128.or(ground1, ground2), 0) == 0) {
       v128.store(record, i64x2.splat(0), held);
       v128.store(record, i64x2.splat(0), held + 64);
       continue;
     }
-    const k = v128.load_ext<u8>(capacityAt);
-    const M = v128.load_ext<u8>(refugeAt);
-    const E = v128.load_ext<u8>(exposureAt);
-    const g = v128.load_ext<u8>(vigourAt);
-    const K1 = shareOf(lowFloats(k));
-    const K2 = shareOf(highFloats(k));
-    const M1 = lowFloats(M);
-    const M2 = highFloats(M);
-    const E1 = lowFloats(E);
-    const E2 = highFloats(E);
+    const growth1 = i16x8.extend_low_i8x16_u(ground1);
+    const growth2 = i16x8.extend_low_i8x16_u(ground2);
+    const strain1 = i16x8.extend_high_i8x16_u(ground1);
+    const strain2 = i16x8.extend_high_i8x16_u(ground2);
+    const K1 = shareOf(lowFloats(growth1));
+    const K2 = shareOf(lowFloats(growth2));
+    const M1 = highFloats(strain1);
+    const M2 = highFloats(strain2);
+    const E1 = lowFloats(strain1);
+    const E2 = lowFloats(strain2);
     // Where K = 0 all that follows is no number; `outcomes.ts` masks it.
     const phi1 = f32x4.div(around1, K1);
     const phi2 = f32x4.div(around2, K2);
     const wet1 = wetnessOf(phi1, E1, M1);
     const wet2 = wetnessOf(phi2, E2, M2);
-    let pressure1 = pressureOf(lowFloats(g), M1);
-    let pressure2 = pressureOf(highFloats(g), M2);
+    let pressure1 = pressureOf(highFloats(growth1), M1);
+    let pressure2 = pressureOf(highFloats(growth2), M2);
     if (crowded) {
       pressure1 = f32x4.mul(pressure1, crowdingOf(phi1, E1));
       pressure2 = f32x4.mul(pressure2, crowdingOf(phi2, E2));
@@ -136,5 +112,8 @@ export function weigh(y: i32, from: i32, to: i32): void {
     v128.store(record, q2, recruitment + 64);
   }
   // What lies behind the end of a row is the next one.
-  if (to == groups) v128.store(end - 64, v128.and(v128.load(end - 64, held), lastLanes), held);
+  if (pieceTo(pieceCount - 1) == groups) {
+    const last = records + ((<usize>(many - 1)) << 6);
+    v128.store(last, v128.and(v128.load(last, held), lastLanes), held);
+  }
 }

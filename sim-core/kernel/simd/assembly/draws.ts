@@ -1,11 +1,12 @@
 import { binomialQuantile, drawPair, fewSites } from './binomial';
+import { groundOf } from './ground';
 import { philox } from './philox';
+import { markWhere } from './runs';
 import {
   alive,
-  capacity,
+  bitStride,
   clumps,
   cover,
-  flagStride,
   key0,
   key1,
   replicate,
@@ -15,7 +16,7 @@ import {
   wide,
   width,
 } from './state';
-import { free, records, standing } from './stretch';
+import { free, pieceCount, pieceFrom, pieceTo, records, standing } from './stretch';
 
 /** the random words of one stretch: two a cell, from the first cell of a counter on */
 export const words: usize = memory.data((64 << 5) + 128, 16);
@@ -25,8 +26,19 @@ function uniform(word: usize): f64 {
   return (<f64>load<u32>(word) + 0.5) * 2.3283064365386963e-10;
 }
 
-/** Draws the next state of groups `from` up to `to` of row y from the chances that `weigh` left. */
-export function draw(y: i32, from: i32, to: i32, step: u32): void {
+/** Draws the next state of the groups of the stretch, in row y, from the chances that `comeThrough` left. */
+export function draw(y: i32, step: u32): void {
+  let record = records;
+  for (let piece = 0; piece < pieceCount; piece++) {
+    const from = pieceFrom(piece);
+    const to = pieceTo(piece);
+    drawPiece(y, from, to, record, step);
+    record += (<usize>(to - from)) << 6;
+  }
+}
+
+/** The same for groups `from` up to `to`; `record` is that of the first. */
+function drawPiece(y: i32, from: i32, to: i32, record: usize, step: u32): void {
   const row = <usize>y * <usize>width;
   const first = row + ((<usize>from) << 2);
   const end = row + <usize>min(to << 2, width);
@@ -36,11 +48,14 @@ export function draw(y: i32, from: i32, to: i32, step: u32): void {
     philox(out, at, step, replicate, key0, key1);
   const luck = words - ((<usize>pair) << 4);
 
+  const ground = groundOf(y);
   let living = false;
+  /** bit i: something stands in group `from` + i */
+  let found: u64 = 0;
   for (let cell = first; cell < end; cell++) {
     const column = cell - row;
-    const lane = records + (((column >> 2) - from) << 6) + ((column & 3) << 2);
-    const byte = <usize>load<u8>(capacity + cell);
+    const lane = record + (((column >> 2) - from) << 6) + ((column & 3) << 2);
+    const byte = <usize>load<u8>(ground + ((column >> 2) << 6) + (column & 3));
     const N = load<i32>(sites + (byte << 2));
     if (N > 0) {
       const n = wide ? load<i32>(clumps + (cell << 2)) : <i32>load<u16>(clumps + (cell << 1));
@@ -61,8 +76,9 @@ export function draw(y: i32, from: i32, to: i32, step: u32): void {
       }
     }
     if ((column & 3) == 3 || cell + 1 == end) {
-      if (skipsBare) store<u8>(alive + <usize>y * flagStride + (column >> 2), <u8>living);
+      if (living) found |= (<u64>1) << ((column >> 2) - from);
       living = false;
     }
   }
+  if (skipsBare) markWhere(alive + <usize>y * bitStride, from, found);
 }

@@ -1,4 +1,5 @@
 import { exp } from './exp';
+import { groundOf } from './ground';
 import { mirrored } from './neighbourhood';
 import { clear, copy } from './runs';
 import {
@@ -9,12 +10,11 @@ import {
   lastLanes,
   lostRow,
   mirror,
-  refuge,
   room,
   rowBytes,
   width,
 } from './state';
-import { held, records } from './stretch';
+import { held, pieceCount, pieceFrom, pieceTo, records } from './stretch';
 import * as vectors from './vectors';
 
 /** Grazers: their map, and what they do to a row of plants. Where there are none, nothing here is laid out or called. */
@@ -110,16 +110,18 @@ export function visit(y: i32): void {
   }
 }
 
-/** Keeps how well groups `from` up to `to` (one stretch, after `weigh`) feed grazers: Δt f φ₁. */
-export function feed(from: i32, to: i32): void {
+/** Keeps how well the groups of the stretch feed grazers, after `weigh`: Δt f φ₁. */
+export function feed(): void {
   const full = v128.load(vectors.one);
   const masses = v128.load(growth);
-  for (let g = from, record = records; g < to; g++, record += 64) {
-    const K = v128.load(record, held);
-    const phi1 = f32x4.pmin(full, f32x4.div(v128.load(record), K));
-    const holds = f32x4.gt(K, i64x2.splat(0));
-    v128.store(plenty + ((<usize>g) << 4), v128.and(f32x4.mul(masses, phi1), holds));
-  }
+  let record = records;
+  for (let piece = 0; piece < pieceCount; piece++)
+    for (let g = pieceFrom(piece), to = pieceTo(piece); g < to; g++, record += 64) {
+      const K = v128.load(record, held);
+      const phi1 = f32x4.pmin(full, f32x4.div(v128.load(record), K));
+      const holds = f32x4.gt(K, i64x2.splat(0));
+      v128.store(plenty + ((<usize>g) << 4), v128.and(f32x4.mul(masses, phi1), holds));
+    }
 }
 
 /** After the plants of row y: G' = min(G_max, (T_G * G) e^(Δt (f φ₁ − m − p (1 − D) − p_M M)) + ι Δt), in place. */
@@ -129,13 +131,13 @@ export function moveOn(y: i32): void {
   startSums(sums, rowAt(y));
   for (let d = 1; d <= reach; d++) addPair(sums, rowAt(y - d), rowAt(y + d), d);
   const row = <usize>y * <usize>width;
-  const bytes = refuge + row;
+  const refuges = groundOf(y) + 12;
   const cells = grazers + (row << 2);
   const last = groups - 1;
   for (let g = 0; g < groups; g++) {
     const at = (<usize>g) << 4;
     const sum = v128.load(sums + at);
-    const refugeLoss = f32x4.mul(v128.load(refugeLossPerByte), floats(bytes + (at >> 2)));
+    const refugeLoss = f32x4.mul(v128.load(refugeLossPerByte), floats(refuges + (at << 2)));
     const change = exp(f32x4.sub(f32x4.add(v128.load(plenty + at), v128.load(decline)), refugeLoss));
     const next = f32x4.pmin(v128.load(limit), f32x4.add(f32x4.mul(sum, change), v128.load(arrivals)));
     // What lies behind the end of a row is the next one, and stays.

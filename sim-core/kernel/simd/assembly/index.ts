@@ -1,16 +1,17 @@
 import { draw } from './draws';
+import { ahead, gather, startRow } from './gather';
 import { feed, grazed, lostToGrazers, moveOn, startGrazers, visit } from './grazers';
-import { hear, heardBy, lookAround, spreadRow } from './neighbourhood';
-import { clear, nextRun, runEnd } from './runs';
+import { hear, lookAround, spreadRow } from './neighbourhood';
+import { clear, mark, markWhere } from './runs';
 import { weigh } from './chances';
 import { comeThrough } from './outcomes';
 import {
   alive,
   backgroundLoss,
+  bitStride,
   counts,
   cover,
   droughtLoss,
-  flagStride,
   groups,
   height,
   lastLanes,
@@ -21,28 +22,14 @@ import {
   tolerance,
   width,
 } from './state';
-import { stretch } from './stretch';
 import * as vectors from './vectors';
 
 export { binomialQuantile, drawPair } from './binomial';
 export { fence, grazers, grazerTaps, layOutGrazers, setGrazers } from './grazers';
+export { layGround, refugeAt, setRefuge } from './ground';
 export { words } from './draws';
 export { philox } from './philox';
-export {
-  capacity,
-  clumps,
-  cover,
-  exposure,
-  layOut,
-  refuge,
-  setLoss,
-  setLuck,
-  setSkip,
-  setSpread,
-  sites,
-  taps,
-  vigour,
-} from './state';
+export { clumps, cover, groundRow, layOut, setLoss, setLuck, setSkip, setSpread, sites, taps } from './state';
 
 /** ΣC that the last step lost, in cells. */
 export let lostToDrought: f64 = 0;
@@ -52,11 +39,20 @@ export let lostToGrazing: f64 = 0;
 /** Marks what is alive from the cover itself: before the first step, and after others wrote to it. */
 export function look(): void {
   for (let y = 0; y < height; y++) {
-    const flags = alive + <usize>y * flagStride;
+    const living = alive + <usize>y * bitStride;
+    clear(living, bitStride);
+    if (!skipsBare) {
+      mark(living, 0, groups);
+      continue;
+    }
     const cells = cover + ((<usize>y * <usize>width) << 2);
-    for (let g = 0; g < groups; g++) {
-      const c = v128.load(cells + ((<usize>g) << 4));
-      store<u8>(flags + g, !skipsBare || v128.any_true(g + 1 == groups ? v128.and(c, lastLanes) : c) ? 1 : 0);
+    for (let from = 0; from < groups; from += 64) {
+      let word: u64 = 0;
+      for (let g = from; g < min(from + 64, groups); g++) {
+        const c = v128.load(cells + ((<usize>g) << 4));
+        word |= (<u64>v128.any_true(g + 1 == groups ? v128.and(c, lastLanes) : c)) << (g - from);
+      }
+      markWhere(living, from, word);
     }
   }
 }
@@ -75,20 +71,17 @@ function advance(y: i32, index: u32): void {
   v128.store(lostRow, i64x2.splat(0));
   v128.store(lostRow, i64x2.splat(0), 16);
   if (grazed) visit(y);
-  const heard = heardBy(y);
-  for (let g = nextRun(heard, 0, groups); g >= 0; g = nextRun(heard, runEnd, groups)) {
-    const end = runEnd;
-    for (let from = g; from < end; from += stretch) {
-      const to = min(from + stretch, end);
-      hear(from, to);
-      weigh(y, from, to);
-      if (grazed) feed(from, to);
-      comeThrough(y, from, to);
-      if (counts) draw(y, from, to, index);
-    }
+  // What hears nothing is bare; what lives at the end of the step is marked anew.
+  if (skipsBare) clear(alive + <usize>y * bitStride, bitStride);
+  startRow();
+  while (ahead >= 0) {
+    const many = gather(y);
+    hear();
+    weigh(many);
+    if (grazed) feed();
+    comeThrough(y);
+    if (counts) draw(y, index);
   }
-  // The row that comes to stand here later starts from nothing.
-  clear(heard, flagStride);
   reckonLosses();
   if (grazed) moveOn(y);
 }

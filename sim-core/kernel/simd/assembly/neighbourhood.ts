@@ -3,27 +3,30 @@ import {
   above,
   alive,
   below,
+  bitStride,
   cover,
-  flagStride,
   groups,
-  heardFlags,
+  heardBits,
   height,
   mirror,
   padded,
+  lastLanes,
   radius,
   rowBytes,
+  skipsBare,
   slots,
   spread,
-  spreadFlags,
+  spreadBits,
   taps,
   width,
 } from './state';
-import { records } from './stretch';
+import { pieceCount, pieceFrom, pieceTo, records } from './stretch';
 
 /** Index that a half-sample symmetric boundary puts in the place of i: … 1 0 | 0 1 … n−1 | n−1 n−2 … */
 export function mirrored(i: i32, n: i32): i32 {
-  const within = ((i % (2 * n)) + 2 * n) % (2 * n);
-  return within < n ? within : 2 * n - 1 - within;
+  // Remainders are slow, and few maps are narrower than their kernel.
+  const within = i >= -n && i < 2 * n ? i : ((i % (2 * n)) + 2 * n) % (2 * n);
+  return within < 0 ? -1 - within : within < n ? within : 2 * n - 1 - within;
 }
 
 /** Weighs one row along itself, groups `from` up to `to`. Weights of equal distance are summed before they are weighed. */
@@ -70,28 +73,36 @@ function along(out: usize, from: i32, to: i32): void {
   }
 }
 
-/** Flags of the groups of row y that hear something. */
-export function heardBy(y: i32): usize {
-  return heardFlags + <usize>(y % slots) * flagStride;
+/** Bit i: cell i of a group of a row of cover is not 0. */
+function lanesOf(cells: usize, group: i32): i32 {
+  const c = v128.load(cells + ((<usize>group) << 4));
+  return i32x4.bitmask(i32x4.ne(group + 1 == groups ? v128.and(c, lastLanes) : c, i64x2.splat(0)));
 }
 
-/** Spreads row y along itself into its slot of the ring, and marks who hears it. */
+/** Marks the groups that hear groups `from` up to `to` of a row of cover, both ends of which hold something. */
+function markReach(bits: usize, cells: usize, from: i32, to: i32): void {
+  const first = (from << 2) + ctz(lanesOf(cells, from)) - radius;
+  const last = (to << 2) - 4 + (31 - clz(lanesOf(cells, to - 1))) + radius;
+  mark(bits, max(0, first >> 2), min(groups, (last >> 2) + 1));
+}
+
+/** Spreads row y along itself into its slot of the ring, and marks how far. */
 export function spreadRow(y: i32): void {
   const slot = y % slots;
   const out = spread + <usize>slot * rowBytes;
-  const flags = spreadFlags + <usize>slot * flagStride;
-  for (let g = nextRun(flags, 0, groups); g >= 0; g = nextRun(flags, runEnd, groups))
+  const bits = spreadBits + <usize>slot * bitStride;
+  for (let g = nextRun(bits, 0, groups); g >= 0; g = nextRun(bits, runEnd, groups))
     clear(out + (g << 4), (runEnd - g) << 4);
-  clear(flags, flagStride);
+  clear(bits, bitStride);
 
-  const source = alive + <usize>y * flagStride;
+  const source = alive + <usize>y * bitStride;
   const cells = cover + ((<usize>y * <usize>width) << 2);
-  const reach = (radius + 3) >> 2;
   let any = false;
   for (let g = nextRun(source, 0, groups); g >= 0; g = nextRun(source, runEnd, groups)) {
     any = true;
     copy(padded + (g << 4), cells + (g << 4), (runEnd - g) << 4);
-    mark(flags, max(0, g - reach), min(groups, runEnd + reach));
+    if (skipsBare) markReach(bits, cells, g, runEnd);
+    else mark(bits, 0, groups);
   }
   if (!any) return;
   for (let d = 0; d < radius; d++) {
@@ -101,37 +112,51 @@ export function spreadRow(y: i32): void {
       mirror ? load<f32>(cells + (mirrored(width + d, width) << 2)) : 0,
     );
   }
-  const first = max(0, y - radius);
-  const last = min(height - 1, y + radius);
-  for (let g = nextRun(flags, 0, groups); g >= 0; g = nextRun(flags, runEnd, groups)) {
-    along(out, g, runEnd);
-    // A row that is heard by way of the mirror is heard from no farther than this.
-    for (let at = first; at <= last; at++) mark(heardBy(at), g, runEnd);
-  }
+  for (let g = nextRun(bits, 0, groups); g >= 0; g = nextRun(bits, runEnd, groups)) along(out, g, runEnd);
   for (let g = nextRun(source, 0, groups); g >= 0; g = nextRun(source, runEnd, groups))
     clear(padded + (g << 4), (runEnd - g) << 4);
 }
 
-function slotOf(y: i32): i32 {
-  if (y >= 0 && y < height) return y % slots;
-  return mirror ? mirrored(y, height) % slots : slots;
+/** Slot of a row that may lie beyond the edge; `within` is that of a row of the map, but for one turn of the ring. */
+function slotOf(row: i32, within: i32): i32 {
+  if (row < 0 || row >= height) return mirror ? mirrored(row, height) % slots : slots;
+  return within < 0 ? within + slots : within < slots ? within : within - slots;
 }
 
-/** Finds the spread rows around row y. */
+function hearFrom(slot: i32): usize {
+  const bits = spreadBits + <usize>slot * bitStride;
+  for (let at: usize = 0; at < <usize>bitStride; at += 16)
+    v128.store(heardBits + at, v128.or(v128.load(heardBits + at), v128.load(bits + at)));
+  return spread + <usize>slot * rowBytes;
+}
+
+/** Finds the spread rows around row y, and marks in `heardBits` the groups of the row that hear something of them. */
 export function lookAround(y: i32): void {
+  const slot = y % slots;
+  clear(heardBits, bitStride);
   for (let d = 0; d <= radius; d++) {
-    store<usize>(above + (d << 2), spread + <usize>slotOf(y - d) * rowBytes);
-    store<usize>(below + (d << 2), spread + <usize>slotOf(y + d) * rowBytes);
+    store<usize>(above + (d << 2), hearFrom(slotOf(y - d, slot - d)));
+    store<usize>(below + (d << 2), hearFrom(slotOf(y + d, slot + d)));
   }
 }
 
-/** Weighs the spread rows around the present one, groups `from` up to `to`: one stretch. */
-export function hear(from: i32, to: i32): void {
+/** Weighs the spread rows around the present one, at the groups of the stretch. */
+export function hear(): void {
+  let record = records;
+  for (let piece = 0; piece < pieceCount; piece++) {
+    const from = pieceFrom(piece);
+    const to = pieceTo(piece);
+    hearPiece(from, to, record);
+    record += (<usize>(to - from)) << 6;
+  }
+}
+
+/** The same for groups `from` up to `to`, into records from `out` on. */
+function hearPiece(from: i32, to: i32, out: usize): void {
   const weights = taps;
   const up0 = load<usize>(above);
   const aboves = above;
   const belows = below;
-  let out = records;
   const last = radius << 2;
   let g = from;
   for (; g + 4 <= to; g += 4) {

@@ -1,50 +1,63 @@
+/**
+ * Rows of bits, one a group, in words of 64: runs of them are found and marked many at a time. Behind the last group of a
+ * row stands at least one bit that is 0.
+ */
+
 /** End of the run that `nextRun` found: the first group behind it. */
 export let runEnd: i32 = 0;
 
-/** Bit i: flag i of the sixteen from `flags` on is set. */
-function setBits(flags: usize): i32 {
-  return i8x16.bitmask(i8x16.ne(v128.load(flags), i64x2.splat(0)));
+/** Address of the word that holds the bit of a group. */
+function wordOf(bits: usize, group: i32): usize {
+  return bits + ((<usize>(group >> 6)) << 3);
 }
 
-function noneOf64(flags: usize): bool {
-  const first = v128.or(v128.load(flags), v128.load(flags, 16));
-  return !v128.any_true(v128.or(first, v128.or(v128.load(flags, 32), v128.load(flags, 48))));
-}
-
-/** First group, from `from` on, of the next run of flags that are set; −1 where there is none. Behind the last stand 16 zeros. */
-export function nextRun(flags: usize, from: i32, groups: i32): i32 {
-  let g = from;
-  let bits = 0;
-  while (g + 64 <= groups && noneOf64(flags + g)) g += 64;
-  while (g < groups) {
-    bits = setBits(flags + g);
-    if (bits != 0) break;
-    g += 16;
+/** First group, from `from` on, of the next run of bits that are set; −1 where there is none. */
+export function nextRun(bits: usize, from: i32, groups: i32): i32 {
+  let word = wordOf(bits, from);
+  const last = wordOf(bits, groups);
+  let set = load<u64>(word) & ((<u64>-1) << (from & 63));
+  while (set == 0) {
+    word += 8;
+    if (word > last) return -1;
+    set = load<u64>(word);
   }
-  if (g >= groups) return -1;
-  g += ctz(bits);
-  const start = g;
-  bits = setBits(flags + g);
-  while (bits == 0xffff) {
-    g += 16;
-    bits = setBits(flags + g);
+  const first = <i32>ctz(set);
+  const start = ((<i32>(word - bits)) << 3) + first;
+  let unset = ~load<u64>(word) & ((<u64>-1) << first);
+  while (unset == 0) {
+    word += 8;
+    unset = ~load<u64>(word);
   }
-  runEnd = g + ctz(~bits);
+  runEnd = ((<i32>(word - bits)) << 3) + <i32>ctz(unset);
   return start;
+}
+
+/** Sets the bits of groups `from` up to `to`. */
+export function mark(bits: usize, from: i32, to: i32): void {
+  for (let g = from; g < to;) {
+    const word = wordOf(bits, g);
+    const end = min(to, (g | 63) + 1);
+    store<u64>(word, load<u64>(word) | (((<u64>-1) >> (64 - (end - g))) << (g & 63)));
+    g = end;
+  }
+}
+
+/** Sets the bits of groups `from` up to `from` + 63 that are set in `those`, and leaves the others. */
+export function markWhere(bits: usize, from: i32, those: u64): void {
+  const word = wordOf(bits, from);
+  const shift = from & 63;
+  store<u64>(word, load<u64>(word) | (those << shift));
+  const beyond = (those >> 1) >> (63 - shift);
+  if (beyond != 0) store<u64>(word + 8, load<u64>(word + 8) | beyond);
 }
 
 /** Below this a loop is faster than a call. */
 const few: usize = 512;
 
+/** Clears so many bytes, up to the next 16. */
 export function clear(at: usize, bytes: usize): void {
   if (bytes > few) memory.fill(at, 0, bytes);
   else for (const end = at + bytes; at < end; at += 16) v128.store(at, i64x2.splat(0));
-}
-
-/** Sets the flags of groups `from` up to `to`. */
-export function mark(flags: usize, from: i32, to: i32): void {
-  if (to - from > 64) memory.fill(flags + from, 1, to - from);
-  else for (let g = from; g < to; g++) store<u8>(flags + g, 1);
 }
 
 export function copy(to: usize, from: usize, bytes: usize): void {

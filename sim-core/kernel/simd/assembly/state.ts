@@ -19,22 +19,25 @@ export let skipsBare: bool = false;
 
 export let cover: usize = 0;
 export let clumps: usize = 0;
-export let capacity: usize = 0;
-export let vigour: usize = 0;
-export let exposure: usize = 0;
-export let refuge: usize = 0;
+/**
+ * K, g, E and M, a byte each, in blocks of four rows by one group: 64 bytes, one line of the cache, so that a small patch
+ * of what lives waits for few lines. In a block a row after the other, in a row four bytes each of K, g, E and M.
+ */
+export let ground: usize = 0;
+/** one part of a row, bytes in the order of its cells, on its way to `ground` */
+export let groundRow: usize = 0;
 
-/** a byte a group: may it hold cover; rows are `flagStride` apart, with zeros behind the last group */
+/** a bit a group (`runs.ts`): may it hold cover; rows are `bitStride` bytes apart */
 export let alive: usize = 0;
-export let flagStride: i32 = 0;
+export let bitStride: i32 = 0;
 /** rows that the ring of spread rows holds; one more behind them is never written and stays 0 */
 export let slots: i32 = 0;
 /** bytes of a row of floats */
 export let rowBytes: i32 = 0;
 export let spread: usize = 0;
-export let spreadFlags: usize = 0;
-/** groups that hear something, of the present row and those below that a spread row reaches; all 0 between steps */
-export let heardFlags: usize = 0;
+/** of each row of the ring, the groups that are not 0; and those of the present row that hear something */
+export let spreadBits: usize = 0;
+export let heardBits: usize = 0;
 /** cell 0 of one row of cover with room for its boundary on both sides; 0 between uses, but for the boundary */
 export let padded: usize = 0;
 /** f32 weight of each distance, and the spread rows above and below at each distance */
@@ -71,6 +74,12 @@ export function room(bytes: usize): usize {
   return start;
 }
 
+/** A stretch of so many lines of the cache, with one more that may be read behind it. */
+function blocks(lines: usize): usize {
+  top = (top + 63) & ~63;
+  return room((lines + 1) << 6);
+}
+
 /** Takes the memory that was given room to; false where the machine does not give that much. */
 export function claim(): bool {
   const missing = <i32>((top + 65535) >> 16) - memory.size();
@@ -95,7 +104,7 @@ export function layOut(
   groups = (width + 3) >> 2;
   const rest = width & 3;
   lastLanes = rest == 0 ? i32x4.splat(-1) : i32x4.lt_s(i32x4(0, 1, 2, 3), i32x4.splat(rest));
-  flagStride = (groups + 31) & ~15;
+  bitStride = ((groups >> 7) + 1) << 4;
   rowBytes = groups << 4;
   slots = <i32>Math.min(height, 2 * radius + 1);
   const cells = <usize>width * <usize>height;
@@ -105,15 +114,13 @@ export function layOut(
   vectors.setConstants();
   top = (__heap_base + 15) & ~15;
   cover = room(cells << 2);
-  capacity = room(cells);
-  vigour = room(cells);
-  exposure = room(cells);
-  refuge = room(cells);
+  ground = blocks(<usize>((height + 3) >> 2) * <usize>groups);
+  groundRow = room(groups << 2);
   if (counts) clumps = room(wide ? cells << 2 : cells << 1);
-  alive = room(<usize>height * flagStride);
+  alive = room(<usize>height * bitStride);
   spread = room(<usize>(slots + 1) * rowBytes);
-  spreadFlags = room(<usize>(slots + 1) * flagStride);
-  heardFlags = room(<usize>slots * flagStride);
+  spreadBits = room(<usize>(slots + 1) * bitStride);
+  heardBits = room(bitStride);
   const side = (radius + 3) & ~3;
   padded = room(<usize>((side << 1) << 2) + rowBytes) + (side << 2);
   taps = room((radius + 1) << 2);
