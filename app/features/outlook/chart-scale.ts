@@ -18,17 +18,22 @@ export interface ChartScale {
   indexAt(y: number): number;
 }
 
-/** A chart on which every value, both tolerances and the classes down to extreme drought have room. */
+/**
+ * A chart on which every value, both tolerances and the classes down to extreme drought have room.
+ *
+ * @param strip px kept free between the bars and the years
+ */
 export function chartScale(
   { width, height }: MapSize,
   first: number,
   years: number,
   indices: readonly number[],
   compact: boolean,
+  strip = 0,
 ): ChartScale {
   const shape = compact
-    ? { left: 30, right: width - 12, top: 46, bottom: height - 26 }
-    : { left: 156, right: width - 120, top: 52, bottom: height - 34 };
+    ? { left: 30, right: width - 12, top: 46, bottom: height - 26 - strip }
+    : { left: 156, right: width - 120, top: 52, bottom: height - 34 - strip };
   const { left, right, top, bottom } = shape;
   const wettest = Math.min(15, Math.ceil(Math.max(3, ...indices) + 0.2));
   const driest = Math.max(-15, Math.floor(Math.min(-5, ...indices) - 0.2));

@@ -2,8 +2,9 @@ import { useRef, type KeyboardEvent, type PointerEvent } from 'react';
 import { formatNumber } from '#app/lib/formats.ts';
 import { useBoxSize } from '#app/map/use-box-size.ts';
 import { chartScale } from './chart-scale.ts';
-import { DroughtPlot } from './drought-plot.tsx';
-import { yearEffect, type Tolerances, type YearIndex } from './outlook-words.ts';
+import type { DrawnFutures } from '#sim-core/weather/drawn-futures.ts';
+import { DroughtPlot, stripHeight } from './drought-plot.tsx';
+import { yearEffect, type Tolerances, type ListedYear } from './outlook-words.ts';
 import { palmerClass } from './palmer-classes.ts';
 
 const compactBelow = 620;
@@ -12,7 +13,7 @@ const drawingFrom = 4;
 
 /** What drawing and table of the drought record are told, and tell. */
 export interface DroughtRecordProps {
-  series: readonly YearIndex[];
+  series: readonly ListedYear[];
   tolerances: Tolerances;
   /** year that is read */
   year: number;
@@ -22,14 +23,15 @@ export interface DroughtRecordProps {
 }
 
 /** The drought record as a drawing: bars are dragged by pointer or finger, or moved by the arrow keys. */
-export function DroughtChart(props: DroughtRecordProps) {
+export function DroughtChart(props: DroughtRecordProps & { futures: DrawnFutures | undefined }) {
+  const { futures } = props;
   const { series, tolerances, year, onYear, onChange } = props;
   const box = useRef<HTMLDivElement>(null);
   const room = useBoxSize(box);
   const press = useRef<{ top: number; left: number; drawing: boolean }>(undefined);
   const first = series[0].year;
   const last = series[series.length - 1].year;
-  const index = series[year - first].index;
+  const { index, acting } = series[year - first];
   const compact = room !== undefined && room.size.width < compactBelow;
   const scale =
     room &&
@@ -37,8 +39,13 @@ export function DroughtChart(props: DroughtRecordProps) {
       room.size,
       first,
       series.length,
-      [...series.map((each) => each.index), tolerances.open, tolerances.mound],
+      [
+        ...series.flatMap((each) => [each.index, each.acting]),
+        ...(futures ? futures.band.flatMap((band) => [band[0], band[4]]) : []),
+        ...[tolerances.open, tolerances.mound],
+      ],
       compact,
+      futures ? stripHeight : 0,
     );
 
   const at = (event: PointerEvent<HTMLDivElement>) => {
@@ -80,7 +87,11 @@ export function DroughtChart(props: DroughtRecordProps) {
     event.preventDefault();
   };
 
-  const reading = `${formatNumber(index)}, ${palmerClass(index)}; ${yearEffect(index, tolerances)}`;
+  const reading =
+    (acting === index
+      ? formatNumber(index)
+      : `${formatNumber(index)}, with the trend ${formatNumber(acting)}`) +
+    `, ${palmerClass(acting)}; ${yearEffect(acting, tolerances)}`;
   return (
     <div
       ref={box}
@@ -102,7 +113,10 @@ export function DroughtChart(props: DroughtRecordProps) {
       onKeyDown={key}
     >
       {room && scale && (
-        <DroughtPlot {...{ series, tolerances, year, scale, compact, first, last }} size={room.size} />
+        <DroughtPlot
+          {...{ series, tolerances, year, scale, compact, first, last, futures }}
+          size={room.size}
+        />
       )}
       <p className="pointer-events-none absolute top-2.5 left-4 flex max-w-[calc(100%-32px)] items-baseline gap-2.5 lg:left-6">
         <span className="text-figure leading-none font-light tracking-tight">{year}</span>

@@ -2,8 +2,10 @@ import { outlookSchema, type Outlook } from '#contract/outlooks.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
 import { maximumYears } from '#sim-core/spec/limits.ts';
 import type { Boundary, StepsPerYear } from '#sim-core/spec/run-spec.ts';
+import { shiftAfter } from '#sim-core/weather/trend.ts';
 import { drawnWeather, startDrawn, type DrawnDraft } from './drawn-draft.ts';
-import type { SeriesEntry } from './parse-series.ts';
+import { outlookChanges, startChanges, type ChangesDraft } from './changes-draft.ts';
+import type { SeriesEntry } from './read-series.ts';
 
 /**
  * An outlook while it is edited. Values belong to calendar years and are kept beyond the horizon, so that a shorter
@@ -17,6 +19,8 @@ export interface OutlookDraft {
   readonly boundary: Boundary;
   readonly values: ReadonlyMap<number, number>;
   readonly drawn: DrawnDraft;
+  readonly changes: ChangesDraft;
+  readonly name: string;
   /** survey year and horizon as they last made sense: what the drawing shows while somebody types */
   readonly span: { readonly surveyYear: number; readonly years: number };
 }
@@ -29,17 +33,24 @@ export type OutlookEvent =
   | { type: 'constant'; value: number }
   | { type: 'laid'; values: ReadonlyMap<number, number> }
   | { type: 'drawn'; change: Partial<DrawnDraft> }
+  | { type: 'changes'; change: Partial<ChangesDraft> }
+  | { type: 'name'; name: string }
   | { type: 'reset'; outlook: Outlook };
 
 export function startDraft(outlook: Outlook): OutlookDraft {
-  const { surveyYear, years, stepsPerYear, boundary, droughtIndex, drawn } = outlook;
+  const { surveyYear, years, stepsPerYear, boundary, droughtIndex, drawn, name } = outlook;
   return {
     surveyYear: String(surveyYear),
     years: String(years),
     stepsPerYear,
     boundary,
     values: new Map(droughtIndex.map((value, i) => [surveyYear + 1 + i, value])),
-    drawn: startDrawn(drawn),
+    drawn: startDrawn(
+      drawn,
+      droughtIndex.map((value, i) => ({ year: surveyYear + 1 + i, value })),
+    ),
+    changes: startChanges(outlook),
+    name,
     span: { surveyYear, years },
   };
 }
@@ -65,6 +76,10 @@ export function outlookDraft(draft: OutlookDraft, event: OutlookEvent): OutlookD
       return { ...draft, values: new Map([...draft.values, ...event.values]) };
     case 'drawn':
       return { ...draft, drawn: { ...draft.drawn, ...event.change } };
+    case 'changes':
+      return { ...draft, changes: { ...draft.changes, ...event.change } };
+    case 'name':
+      return { ...draft, name: event.name };
     case 'reset':
       return startDraft(event.outlook);
   }
@@ -91,6 +106,12 @@ export const simulatedYears = ({ span }: Pick<OutlookDraft, 'span'>): number[] =
 /** The index of a year; years that nobody has said anything about are near normal. */
 export const indexOf = (draft: OutlookDraft, year: number): number => draft.values.get(year) ?? 0;
 
+/** The index that acts in a year of the list: as listed, with what the trend has added by its end. */
+export function actingIndex(draft: OutlookDraft, year: number): number {
+  const shift = parseNumber(draft.changes.shiftPerDecade) ?? 0;
+  return tidy(indexOf(draft, year) + shiftAfter({ shiftPerDecade: shift }, year - draft.span.surveyYear));
+}
+
 /** What is wrong, by field; empty when the draft can be saved. */
 export function draftErrors(draft: OutlookDraft): { surveyYear?: string; years?: string } {
   const errors: { surveyYear?: string; years?: string } = {};
@@ -109,13 +130,16 @@ export function draftOutlook(draft: OutlookDraft): Outlook | undefined {
   const { stepsPerYear, boundary, span } = draft;
   const listed = simulatedYears(draft).map((year) => ({ year, value: indexOf(draft, year) }));
   const drawn = drawnWeather(draft.drawn, listed);
-  if (drawn === undefined) return undefined;
+  const changes = outlookChanges(draft.changes);
+  if (drawn === undefined || changes === undefined) return undefined;
   const outlook = outlookSchema.safeParse({
     ...span,
     stepsPerYear,
     boundary,
     droughtIndex: listed.map(({ value }) => value),
     drawn,
+    ...changes,
+    name: draft.name,
   });
   return outlook.data;
 }

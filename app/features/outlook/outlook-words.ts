@@ -11,6 +11,11 @@ export interface YearIndex {
   readonly index: number;
 }
 
+/** A listed year: what was typed, and what acts once the trend is added. */
+export interface ListedYear extends YearIndex {
+  readonly acting: number;
+}
+
 /** `2049`, `2049 and 2050`, `2031, 2049 to 2051`; from eight stretches on the rest is counted. */
 export function listYears(years: readonly number[]): string {
   const stretches: [number, number][] = [];

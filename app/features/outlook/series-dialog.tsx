@@ -7,7 +7,8 @@ import { Notice } from '#app/components/notice.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
 import { formatCounted } from '#app/lib/formats.ts';
 import { layOver, type LaidSeries, type Laying, type OutlookDraft } from './outlook-draft.ts';
-import { parseSeries, type SeriesEntry } from './parse-series.ts';
+import { readSeries, type SeriesEntry } from './read-series.ts';
+import { likelyColumns, seriesTable } from './series-table.ts';
 
 const longestFile = 2_000_000;
 
@@ -137,4 +138,9 @@ function layingWords({ set, kept, unused }: LaidSeries, draft: OutlookDraft): st
     words.push(`${kept} ${kept === 1 ? 'keeps' : 'keep'} what ${kept === 1 ? 'it has' : 'they have'}`);
   if (unused > 0) words.push(`${formatCounted(unused, 'value')} ${unused === 1 ? 'is' : 'are'} not used`);
   return `${words.join('; ')}.`;
+}
+
+function parseSeries(text: string) {
+  const table = seriesTable(text);
+  return readSeries(table, likelyColumns(table));
 }

@@ -1,6 +1,7 @@
 import type { DroughtRecordProps } from './drought-chart.tsx';
 import { useState } from 'react';
 import { classNames } from '#app/lib/class-names.ts';
+import { formatNumber } from '#app/lib/formats.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
 import { palmerClass } from './palmer-classes.ts';
 
@@ -24,13 +25,13 @@ export function YearTable(props: DroughtRecordProps) {
         </tr>
       </thead>
       <tbody>
-        {series.map(({ year: each, index }) => (
+        {series.map(({ year: each, index, acting }) => (
           <tr
             key={each}
             className={classNames(
               'border-t border-rule-2',
               each === year && 'bg-sheet [&>th]:border-l-[5px] [&>th]:border-ink',
-              index < tolerances.open && 'font-bold',
+              acting < tolerances.open && 'font-bold',
             )}
           >
             <th scope="row" className="py-0.5 pl-2.5 text-left font-mono font-semibold">
@@ -61,10 +62,15 @@ export function YearTable(props: DroughtRecordProps) {
               )}
             </td>
             <td className="py-0.5 leading-tight">
-              {palmerClass(index)}
-              {index < tolerances.open && (
+              {palmerClass(acting)}
+              {acting !== index && (
                 <span className="block text-note font-normal text-ink-2">
-                  {index < tolerances.mound ? 'kills near a mound too' : 'kills open marsh'}
+                  {formatNumber(acting)} with the trend
+                </span>
+              )}
+              {acting < tolerances.open && (
+                <span className="block text-note font-normal text-ink-2">
+                  {acting < tolerances.mound ? 'kills near a mound too' : 'kills open marsh'}
                 </span>
               )}
             </td>

@@ -1,6 +1,7 @@
 import { layerOf, layerSources } from '#contract/layer-sources.ts';
 import { runActions, type WorkInput } from '#contract/works.ts';
 import { valueUnitScale } from '#contract/layers.ts';
+import { outlookWeather } from '#contract/outlooks.ts';
 import type { Site } from '#contract/sites.ts';
 import { gridProblems } from '#sim-core/run/grid-problems.ts';
 import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
@@ -34,7 +35,8 @@ export function composeRunSpec(
 ): Composition {
   const missing = missingGround(site);
   if (missing.length > 0) return { problems: missing };
-  const { surveyYear, years, stepsPerYear, boundary, droughtIndex } = site.outlook;
+  const { surveyYear, years, stepsPerYear, boundary } = site.outlook;
+  const { droughtIndex, trend, losses, grazing } = outlookWeather(site.outlook, 'single run');
   const parsed = runSpecSchema.safeParse({
     version: runSpecVersion,
     mode,
@@ -44,8 +46,10 @@ export function composeRunSpec(
     stepsPerYear,
     boundary,
     rates: site.plant.rates,
-    processes: site.plant.processes,
+    processes: grazing === false ? { ...site.plant.processes, grazers: undefined } : site.plant.processes,
     droughtIndex,
+    trend,
+    losses,
     actions: runActions(option.works),
     layers: layerSources(site),
   });

@@ -1,13 +1,19 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useReducer, useState } from 'react';
+import { useSearchParams } from 'react-router-dom';
+import { outlookWeather } from '#contract/outlooks.ts';
 import { LeaveGuard } from '#app/components/leave-guard.tsx';
 import { LinkButton } from '#app/components/link-button.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { SaveBar } from '#app/components/save-bar.tsx';
 import { sayDone } from '#app/components/toast.tsx';
+import { mainKey, outlookMutation, type OutlookKey } from '#app/features/outlook/change-outlook.ts';
+import { ChangesSection } from '#app/features/outlook/changes-section.tsx';
 import { DrawnWeatherSection } from '#app/features/outlook/drawn-weather.tsx';
 import { DroughtChart } from '#app/features/outlook/drought-chart.tsx';
+import { OutlookChoice } from '#app/features/outlook/outlook-choice.tsx';
 import {
+  actingIndex,
   draftOutlook,
   indexOf,
   outlookDraft,
@@ -19,9 +25,11 @@ import {
 import { OutlookSentence } from '#app/features/outlook/outlook-sentence.tsx';
 import { outlookWords, type Tolerances } from '#app/features/outlook/outlook-words.ts';
 import { SeriesDialog } from '#app/features/outlook/series-dialog.tsx';
-import { setOutlookMutation } from '#app/features/outlook/set-outlook.ts';
+import { useWeatherWork } from '#app/features/outlook/use-weather-work.ts';
 import { YearTable } from '#app/features/outlook/year-table.tsx';
 import { formatCounted, formatNumber } from '#app/lib/formats.ts';
+import { useSearchPatch } from '#app/lib/use-search-patch.ts';
+import { OutlookRecord } from './outlook-record.tsx';
 import { SitePage } from './site-page.tsx';
 import { useSite } from './use-site.ts';
 
@@ -31,46 +39,126 @@ type EditEvent = { from: OutlookDraft; event: OutlookEvent } | 'revert';
 /** Weather and losses to come: the drought record against what the plant bears. */
 export function Page() {
   const { site, mayKeepGround } = useSite();
+  const [search] = useSearchParams();
+  const patch = useSearchPatch();
+  const other = site.otherOutlooks.find(({ id }) => id === search.get('outlook'));
+  const shown: OutlookKey = other?.id ?? mainKey;
   const [edited, edit] = useReducer(
     (state: Edited, act: EditEvent): Edited =>
       act === 'revert' ? undefined : outlookDraft(state ?? act.from, act.event),
     undefined,
   );
-  const draft = edited ?? startDraft(site.outlook);
+  const draft = edited ?? startDraft(other ?? site.outlook);
   const tell = (event: OutlookEvent) => edit({ from: draft, event });
   const [pasting, setPasting] = useState(false);
   const [asked, setYear] = useState<number>();
-  const save = useMutation(setOutlookMutation(useQueryClient(), site.id));
+  const change = useMutation(outlookMutation(useQueryClient(), site.id));
 
   const years = simulatedYears(draft);
-  const series = years.map((year) => ({ year, index: indexOf(draft, year) }));
+  const series = years.map((year) => ({
+    year,
+    index: indexOf(draft, year),
+    acting: actingIndex(draft, year),
+  }));
+  const acting = series.map(({ year, acting: index }) => ({ year, index }));
   const { tolerance, refugeShift } = site.plant.rates;
   const tolerances: Tolerances = { open: tolerance, mound: tolerance - refugeShift };
-  const driest = series.reduce((least, each) => (each.index < least.index ? each : least));
+  const driest = series.reduce((least, each) => (each.acting < least.acting ? each : least));
   const year = asked !== undefined && years.includes(asked) ? asked : driest.year;
   const outlook = draftOutlook(draft);
-  const change = mayKeepGround
+  const weather = outlook?.drawn ? outlookWeather(outlook, 'ensemble') : undefined;
+  const drawn = useWeatherWork(
+    'drawnFutures',
+    outlook &&
+      weather && [
+        {
+          surveyYear: outlook.surveyYear,
+          years: outlook.years,
+          stepsPerYear: outlook.stepsPerYear,
+          droughtIndex: weather.droughtIndex,
+          trend: weather.trend,
+        },
+        [tolerances.open, tolerances.mound],
+      ],
+  );
+  // Futures of another horizon would be drawn at the wrong years.
+  const futures = drawn && drawn.made.band.length === years.length ? drawn.made : undefined;
+  const changeValue = mayKeepGround
     ? (of: number, value: number) => tell({ type: 'value', year: of, value })
     : undefined;
-  const reading = { series, tolerances, year, onYear: setYear, onChange: change };
+  const reading = { series, tolerances, year, onYear: setYear, onChange: changeValue };
+  const unsaved = edited !== undefined;
 
   return (
     <SitePage
       step="outlook"
       tools={
-        <OutlookSentence
-          draft={draft}
-          tell={tell}
-          editable={mayKeepGround}
-          onSeries={() => setPasting(true)}
-        />
+        <>
+          <OutlookChoice
+            site={site}
+            shown={shown}
+            name={draft.name}
+            onShow={(key) => patch({ outlook: key === mainKey ? undefined : key })}
+            editable={mayKeepGround}
+            dirty={unsaved}
+            busy={change.isPending}
+            error={change.error}
+            onRename={(name) => tell({ type: 'name', name })}
+            onCopy={(name, done) =>
+              outlook &&
+              change.mutate(
+                { do: 'add', outlook: { ...outlook, name } },
+                {
+                  onSuccess: ({ otherOutlooks }) => {
+                    done();
+                    patch({ outlook: otherOutlooks.at(-1)?.id });
+                    sayDone(`“${name}” kept beside the others`);
+                  },
+                },
+              )
+            }
+            onMakeMain={() =>
+              change.mutate(
+                { do: 'make main', key: shown },
+                {
+                  onSuccess: ({ outlook: { name } }) => {
+                    patch({ outlook: undefined });
+                    sayDone(`“${name}” is the main outlook now`);
+                  },
+                },
+              )
+            }
+            onDelete={(done) =>
+              change.mutate(
+                { do: 'delete', key: shown },
+                {
+                  onSuccess: () => {
+                    done();
+                    patch({ outlook: undefined });
+                  },
+                },
+              )
+            }
+          />
+          <OutlookSentence
+            draft={draft}
+            tell={tell}
+            editable={mayKeepGround}
+            onSeries={() => setPasting(true)}
+          />
+          {site.otherOutlooks.length > 0 && mayKeepGround && (
+            <p className="text-note text-ink-2">
+              Survey, horizon, steps and edge hold for every outlook of the site.
+            </p>
+          )}
+        </>
       }
-      map={<DroughtChart {...reading} />}
+      map={<DroughtChart {...reading} futures={futures} />}
       margin={
         <>
           <h1 className="text-lead">Outlook</h1>
           <div className="mb-3 text-[13.5px]">
-            {outlookWords(series, tolerances).map((sentence) => (
+            {outlookWords(acting, tolerances).map((sentence) => (
               <p key={sentence} className="mt-1">
                 {sentence}
               </p>
@@ -84,15 +172,31 @@ export function Page() {
                 : ' Modellers and admins of the team change the outlook.'}
             </p>
           </div>
+          <OutlookRecord
+            surveyYear={draft.span.surveyYear}
+            onWeather={(part) => tell({ type: 'drawn', change: part })}
+          />
           <DrawnWeatherSection
             draft={draft.drawn}
-            onChange={(change) => tell({ type: 'drawn', change })}
+            onChange={(part) => tell({ type: 'drawn', change: part })}
             editable={mayKeepGround}
             outlook={outlook}
+            futures={futures}
             tolerance={tolerance}
           />
+          <ChangesSection
+            draft={draft.changes}
+            onChange={(part) => tell({ type: 'changes', change: part })}
+            editable={mayKeepGround}
+            renews={draft.drawn.kind === 'renewal'}
+            firstYear={draft.span.surveyYear + 1}
+            years={draft.span.years}
+            plantGrazed={site.plant.processes?.grazers !== undefined}
+          />
           <YearTable {...reading} />
-          {save.error && <ProblemNotice error={save.error} title="Not saved." className="mt-3" />}
+          {change.error && unsaved ? (
+            <ProblemNotice error={change.error} title="Not saved." className="mt-3" />
+          ) : null}
           {pasting && (
             <SeriesDialog
               draft={draft}
@@ -100,34 +204,37 @@ export function Page() {
               onLay={(values) => tell({ type: 'laid', values })}
             />
           )}
-          <LeaveGuard when={mayKeepGround && edited !== undefined} what="The outlook" />
+          <LeaveGuard when={mayKeepGround && unsaved} what="The outlook" />
         </>
       }
       action={
-        mayKeepGround && (edited !== undefined || !site.outlookSet) ? (
+        mayKeepGround && (unsaved || !site.outlookSet) ? (
           <SaveBar
-            label={edited === undefined ? 'Keep this outlook' : 'Save the outlook'}
-            dirty={edited !== undefined}
-            busy={save.isPending}
+            label={unsaved ? 'Save the outlook' : 'Keep this outlook'}
+            dirty={unsaved}
+            busy={change.isPending}
             words={
               outlook === undefined
                 ? 'Mend the blanks that are marked first.'
-                : edited !== undefined
+                : unsaved
                   ? 'Changed and not saved.'
                   : 'Starting values, not yet looked at.'
             }
             onSave={() => {
               if (!outlook) return;
-              save.mutate(outlook, {
-                onSuccess: () => {
-                  edit('revert');
-                  sayDone(`Outlook saved, ${formatCounted(outlook.years, 'year')}`);
+              change.mutate(
+                { do: 'save', key: shown, outlook },
+                {
+                  onSuccess: () => {
+                    edit('revert');
+                    sayDone(`Outlook saved, ${formatCounted(outlook.years, 'year')}`);
+                  },
                 },
-              });
+              );
             }}
             onRevert={() => {
               edit('revert');
-              save.reset();
+              change.reset();
             }}
           />
         ) : (
