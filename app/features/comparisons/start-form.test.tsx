@@ -2,6 +2,7 @@ import { cleanup, fireEvent, render, screen } from '@testing-library/react';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import type { Option } from '#contract/options.ts';
 import { startComparison } from '#contract/comparisons.ts';
+import { unchangedOutlook } from '#contract/outlooks.ts';
 import type { Site } from '#contract/sites.ts';
 import { defaultRates } from '#sim-core/spec/parameters.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
@@ -15,6 +16,7 @@ const site = {
   grid: { width: 10, height: 10, cellSize: 1, originX: 0, originY: 0, epsg: 32617 },
   plant: { name: 'Grass', rates: defaultRates },
   outlook: {
+    ...unchangedOutlook,
     surveyYear: 2026,
     years: 5,
     stepsPerYear: 1,
@@ -22,6 +24,8 @@ const site = {
     droughtIndex: [0, 0, -3, 0, 0],
     drawn: null,
   },
+  otherOutlooks: [],
+  droughtRecord: null,
 } as unknown as Site;
 const options = ['Wait', 'Clumps', 'Mounds'].map(
   (name, i) => ({ id: ids[i], name, works: [] }) as unknown as Option,

@@ -1,15 +1,19 @@
 import { useState, type ReactNode } from 'react';
+import { mostOutlooks } from '#contract/comparisons.ts';
 import type { Option } from '#contract/options.ts';
 import type { Site } from '#contract/sites.ts';
 import { Blank, BlankSelect } from '#app/components/blank.tsx';
 import { Button } from '#app/components/button.tsx';
+import { CautionList } from '#app/components/caution-list.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { formatCount, formatDuration, formatNumber } from '#app/lib/formats.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
+import { findCautions, gatherCautions } from '#sim-core/cautions/find-cautions.ts';
 import type { Mode, RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { StartBody } from './change-comparison.ts';
-import { mapYears, shiftedWeather, startBody } from './compose-plan.ts';
+import { mapYears, startBody } from './compose-plan.ts';
+import { mainOutlookKey, offeredOutlooks } from './offered-outlooks.ts';
 
 /** What an option costs on this site, and in what; null where no costs are set. */
 export interface KnownCost {
@@ -27,10 +31,6 @@ const modes: Record<Mode, string> = {
   counts: 'with chance, clump by clump',
   'mean-field': 'without chance in growth',
 };
-const variants = [
-  { key: 'drier', by: -0.5, label: 'a drier one (index 0.5 lower)' },
-  { key: 'wetter', by: 0.5, label: 'a wetter one (index 0.5 higher)' },
-] as const;
 
 /** A comparison as a sentence with blanks: which options, under which weather, how many futures of each. */
 export function ComparisonStartForm(props: {
@@ -52,7 +52,7 @@ export function ComparisonStartForm(props: {
 }) {
   const { site, options } = props;
   const [left, setLeft] = useState<ReadonlySet<string>>(new Set());
-  const [extra, setExtra] = useState<ReadonlySet<string>>(new Set());
+  const [under, setUnder] = useState<ReadonlySet<string>>(new Set([mainOutlookKey]));
   const [mode, setMode] = useState<Mode>('counts');
   const [seed, setSeed] = useState(() => props.drawSeed());
   const [typed, setTyped] = useState('60');
@@ -71,20 +71,25 @@ export function ComparisonStartForm(props: {
       chosen.map((option) => option.name),
       props.names,
     );
-  const weather = site.outlook.drawn ?? site.outlook.droughtIndex;
-  const outlooks = [
-    { name: 'The outlook', droughtIndex: weather },
-    ...variants
-      .filter(({ key }) => extra.has(key))
-      .map(({ key, by }) => ({
-        name: key === 'drier' ? 'Drier' : 'Wetter',
-        droughtIndex: shiftedWeather(weather, by),
-      })),
-  ];
+  const offered = offeredOutlooks(site);
+  const outlooks = offered.filter(({ key }) => under.has(key)).map(({ outlook }) => outlook);
   const composed = chosen.map((option) => {
     const cost = props.costOf(option);
     return { optionId: option.id, cost: cost?.total ?? null, spec: props.compose(option, mode, seed) };
   });
+  const [first] = composed;
+  const cautions = first?.spec
+    ? gatherCautions(
+        outlooks.map(({ name: outlook, droughtIndex, trend }) => ({
+          name: outlook,
+          cautions: findCautions({
+            spec: { ...first.spec!, droughtIndex, trend },
+            cellSize: site.grid.cellSize,
+            record: site.droughtRecord?.years,
+          }),
+        })),
+      )
+    : [];
   const ready = composed.flatMap(({ spec, ...rest }) => (spec ? [{ ...rest, spec }] : []));
   // An empty seed is said beside the sentence, not as a fault of the site.
   const blocked = seed.trim() === '' ? -1 : composed.findIndex(({ spec }) => !spec);
@@ -95,6 +100,12 @@ export function ComparisonStartForm(props: {
   const cells = site.grid.width * site.grid.height;
   const kept = mapYears(surveyYear, years, cells, Math.max(1, chosen.length * outlooks.length)).length;
   const wrong = {
+    outlooks:
+      outlooks.length === 0
+        ? 'Choose at least one outlook.'
+        : outlooks.length > mostOutlooks
+          ? `Found ${outlooks.length} outlooks; up to ${mostOutlooks} can be compared at once.`
+          : undefined,
     options: chosen.length < 2 ? 'Choose at least two options; Wait is one of them.' : undefined,
     replicates: replicatesFit
       ? undefined
@@ -146,15 +157,11 @@ export function ComparisonStartForm(props: {
       </fieldset>
       <fieldset className="mt-2">
         <legend className="text-[13.5px] text-ink-2">
-          under the outlook
-          {site.outlook.drawn
-            ? ', whose weather each future draws for itself'
-            : ' as it is drawn, the same in every future'}
-          , and
+          under {outlooks.length === 1 ? 'this outlook' : 'each of these outlooks'}
         </legend>
         <Ticks
-          entries={variants.map(({ key, label }) => ({ key, label, on: extra.has(key) }))}
-          onToggle={(key) => setExtra(toggle(extra, key))}
+          entries={offered.map(({ key, label }) => ({ key, label, on: under.has(key) }))}
+          onToggle={(key) => setUnder(toggle(under, key))}
         />
       </fieldset>
       <p className="mt-2 flex flex-wrap items-baseline gap-x-1.5 gap-y-2 text-[14.5px] leading-loose">
@@ -224,6 +231,7 @@ export function ComparisonStartForm(props: {
           {said.join(' ')}
         </p>
       )}
+      <CautionList cautions={cautions} />
       {blocked >= 0 && props.problems(chosen[blocked], mode, seed)}
       {props.error ? (
         <ProblemNotice error={props.error} title="The comparison was not started." className="mt-3" />

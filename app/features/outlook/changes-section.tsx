@@ -104,6 +104,8 @@ export function ChangesSection(props: {
   );
 }
 
+type LossBlank = 'from' | 'until' | 'chance' | 'share' | 'x' | 'y' | 'radius';
+
 function LossRow(props: {
   loss: LossDraft;
   number: number;
@@ -112,12 +114,12 @@ function LossRow(props: {
   onRemove: () => void;
 }) {
   const { loss, number, editable, onChange } = props;
-  const blank = (name: keyof LossDraft, label: string, characters = 5): ReactNode => (
+  const blank = (name: LossBlank, label: string, characters = 5): ReactNode => (
     <Blank
       label={`${label} of loss ${number}`}
       inputMode="decimal"
       characters={characters}
-      value={String(loss[name] ?? '')}
+      value={loss[name]}
       disabled={!editable}
       onChange={(event) => onChange({ [name]: event.target.value })}
     />

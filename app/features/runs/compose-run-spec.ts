@@ -11,6 +11,8 @@ import { runSpecSchema, runSpecVersion, type Mode, type RunSpec } from '#sim-cor
 export interface RunChoices {
   readonly mode: Mode;
   readonly seed: string;
+  /** outlooks of a comparison say each for itself whether the plant's grazers come; then they are kept */
+  readonly keepGrazers?: boolean;
 }
 
 /** Where a problem is mended: a page of the site, or the form itself. */
@@ -31,7 +33,7 @@ export type Composition =
 export function composeRunSpec(
   site: Site,
   option: { readonly works: readonly WorkInput[] },
-  { mode, seed }: RunChoices,
+  { mode, seed, keepGrazers = false }: RunChoices,
 ): Composition {
   const missing = missingGround(site);
   if (missing.length > 0) return { problems: missing };
@@ -46,7 +48,10 @@ export function composeRunSpec(
     stepsPerYear,
     boundary,
     rates: site.plant.rates,
-    processes: grazing === false ? { ...site.plant.processes, grazers: undefined } : site.plant.processes,
+    processes:
+      grazing === false && !keepGrazers
+        ? { ...site.plant.processes, grazers: undefined }
+        : site.plant.processes,
     droughtIndex,
     trend,
     losses,

@@ -3,10 +3,12 @@ import type { Option } from '#contract/options.ts';
 import type { Site } from '#contract/sites.ts';
 import { Blank, BlankSelect } from '#app/components/blank.tsx';
 import { Button } from '#app/components/button.tsx';
+import { CautionList } from '#app/components/caution-list.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
 import { formatCount, formatDuration } from '#app/lib/formats.ts';
+import { findCautions } from '#sim-core/cautions/find-cautions.ts';
 import type { Mode, RunSpec } from '#sim-core/spec/run-spec.ts';
 import { composeRunSpec } from './compose-run-spec.ts';
 import { CompositionProblems } from './composition-problems.tsx';
@@ -132,6 +134,17 @@ export function StartForm(props: {
         </p>
       )}
       <CompositionProblems problems={problems} nameProblem={nameProblem} site={site} optionId={option.id} />
+      {composed.spec && (
+        <div className="mt-2">
+          <CautionList
+            cautions={findCautions({
+              spec: composed.spec,
+              cellSize: site.grid.cellSize,
+              record: site.droughtRecord?.years,
+            })}
+          />
+        </div>
+      )}
       {props.error ? (
         <ProblemNotice error={props.error} title="The run was not started." className="mt-3" />
       ) : null}

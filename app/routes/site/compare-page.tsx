@@ -60,10 +60,12 @@ export function Page() {
           <ComparisonStartForm
             site={site}
             options={options.data.filter(({ archived }) => !archived)}
-            compose={(option, mode, seed) => composeRunSpec(site, option, { mode, seed }).spec}
+            compose={(option, mode, seed) =>
+              composeRunSpec(site, option, { mode, seed, keepGrazers: true }).spec
+            }
             problems={(option, mode, seed) => (
               <CompositionProblems
-                problems={composeRunSpec(site, option, { mode, seed }).problems ?? []}
+                problems={composeRunSpec(site, option, { mode, seed, keepGrazers: true }).problems ?? []}
                 site={site}
                 optionId={option.id}
               />

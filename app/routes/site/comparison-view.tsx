@@ -2,6 +2,7 @@ import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useMemo, useRef, useState } from 'react';
 import { useNavigate } from 'react-router-dom';
 import type { Comparison } from '#contract/comparisons.ts';
+import { CautionList } from '#app/components/caution-list.tsx';
 import { Button } from '#app/components/button.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { Progress } from '#app/components/progress.tsx';
@@ -171,6 +172,9 @@ export function ComparisonView({
           {copy.error ? <ProblemNotice error={copy.error} title="Not copied." className="mt-2" /> : null}
         </div>
       )}
+      <div className="pt-3">
+        <CautionList cautions={comparison.cautions} found="found when it was started" />
+      </div>
       {plan.outlooks.length > 1 && (
         <div className="pt-3">
           <WordChoice

@@ -1,5 +1,6 @@
 import type { Run } from '#contract/runs.ts';
 import type { SeriesRow } from '#sim-core/spec/run-result.ts';
+import { CautionList } from '#app/components/caution-list.tsx';
 import { Notice } from '#app/components/notice.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { CellHistory } from '#app/features/runs/cell-history.tsx';
@@ -53,11 +54,16 @@ export function RunMargin(props: {
       )}
       <RunState run={run} live={live} />
       <RunCheck run={run} live={live} />
-      {result?.warnings.map((warning) => (
-        <Notice key={warning} title="Mind:" className="my-2">
-          {warning}
-        </Notice>
-      ))}
+      {result?.warnings
+        .filter((warning) => !run.cautions.some(({ message }) => message === warning))
+        .map((warning) => (
+          <Notice key={warning} title="Mind:" className="my-2">
+            {warning}
+          </Notice>
+        ))}
+      <div className="my-2">
+        <CautionList cautions={run.cautions} found="found when it was started" />
+      </div>
       <YearFacts
         year={year}
         record={at(records)}
