@@ -136,7 +136,10 @@ export function DrawnWeatherSection(props: {
             tolerance={tolerance}
             firstYear={outlook.surveyYear + 1}
           />
-          <p className="text-note text-ink-2">Options that are compared share the same futures.</p>
+          <p className="text-note text-ink-2">
+            On the drawing, nine of ten futures run in the shaded band, and the dotted line is their median.
+            Options that are compared share the same futures.
+          </p>
         </>
       )}
       {draft.kind !== 'listed' && outlook && !futures && (

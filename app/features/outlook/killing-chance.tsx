@@ -26,14 +26,14 @@ export function KillingChanceFigure(props: { futures: DrawnFutures; firstYear: n
           className="flex w-9 flex-col justify-between text-right text-note text-ink-2 tabular-nums"
           aria-hidden
         >
-          <span>100 %</span>
+          <span>100</span>
           <span>50</span>
           <span>0</span>
         </div>
         <svg
           viewBox={`0 0 ${width} ${height}`}
           preserveAspectRatio="none"
-          className="block h-24 w-full overflow-visible border-b border-rule"
+          className="block h-24 min-w-0 flex-1 overflow-visible border-b border-rule"
           aria-hidden
         >
           {[0, 0.5].map((share) => (
@@ -63,7 +63,7 @@ export function KillingChanceFigure(props: { futures: DrawnFutures; firstYear: n
       </div>
       <div className="flex justify-between pl-11 text-note text-ink-2 tabular-nums">
         <span>{firstYear}</span>
-        <span aria-hidden>open marsh —, near a mound – –</span>
+        <span aria-hidden>% by then: — open marsh, – – near a mound</span>
         <span>{last}</span>
       </div>
       <ReadAsTable

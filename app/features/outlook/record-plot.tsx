@@ -30,7 +30,7 @@ export function RecordPlot(props: {
         <svg
           viewBox={`0 0 ${span} ${height}`}
           preserveAspectRatio="none"
-          className="block h-[120px] w-full border-y border-rule-2"
+          className="block h-[120px] min-w-0 flex-1 border-y border-rule-2"
           aria-hidden
         >
           {years.map(({ year, index }) => (

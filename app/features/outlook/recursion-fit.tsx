@@ -103,7 +103,8 @@ function Autocorrelation({ fit, memory }: { fit: RecursionFit; memory: number })
   return (
     <figure>
       <figcaption className="text-note text-ink-2">
-        Correlation with earlier years: bars on record, dots as fitted; between the lines chance alone
+        Correlation with earlier years: bars on record, short lines as fitted; between the dotted lines chance
+        alone
       </figcaption>
       <svg
         viewBox={`0 0 ${lags * 10} 100`}
@@ -197,6 +198,13 @@ function RecordInBand(props: { years: readonly YearIndex[]; band: readonly (read
         <span>{years[0].year}</span>
         <span>{years[years.length - 1].year}</span>
       </div>
+      <ReadAsTable
+        caption="The record beside nine of ten drawn futures"
+        heads={['Year', 'on record', 'from', 'to']}
+        rows={years
+          .slice(0, band.length)
+          .map(({ year, index }, i) => [String(year), ...[index, band[i][0], band[i][4]].map(signed)])}
+      />
     </figure>
   );
 }
