@@ -65,9 +65,9 @@ test('a drought record is mended, kept, fitted and drawn from; a run is cautione
   });
 
   await test.step('a further outlook is kept, without grazers, and offered to comparisons', async () => {
-    await page.getByRole('button', { name: 'Keep a further one' }).click();
-    await page.getByLabel('Name').fill('No grazers');
-    await page.getByRole('button', { name: 'Keep it' }).click();
+    await page.getByRole('button', { name: 'Add another' }).click();
+    await page.getByLabel('Name', { exact: true }).fill('No grazers');
+    await page.getByRole('button', { name: 'Add it' }).click();
     await expect(page.getByRole('radio', { name: 'No grazers' })).toBeChecked();
     await page.getByLabel('Grazers come, as the plant says').uncheck();
     await page.getByRole('button', { name: 'Save the outlook' }).click();

@@ -59,7 +59,7 @@ export function OutlookChoice(props: {
             Rename
           </WordButton>
           <WordButton lined disabled={dirty} onClick={() => ask('copy')}>
-            Keep a further one
+            Add another
           </WordButton>
           {!main && (
             <WordButton lined disabled={dirty} busy={busy} onClick={props.onMakeMain}>
@@ -79,11 +79,11 @@ export function OutlookChoice(props: {
       {(asking === 'name' || asking === 'copy') && (
         <NameDialog
           onClose={close}
-          title={asking === 'name' ? 'Rename this outlook' : 'Keep a further outlook'}
+          title={asking === 'name' ? 'Rename this outlook' : 'Add another outlook'}
           label="Name"
           start={asking === 'name' ? props.name : 'Drier'}
           longest={100}
-          action={asking === 'name' ? 'Rename it' : 'Keep it'}
+          action={asking === 'name' ? 'Rename it' : 'Add it'}
           busy={busy}
           error={asking === 'copy' ? props.error : undefined}
           onName={(name) => {
