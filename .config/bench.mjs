@@ -1,11 +1,12 @@
 // npm run bench [-- --json] [NAME …]: what takes how long or how much, beside a yardstick in the same run; `ratio` above 1
-// means that we are better. With --json a JSON object a line. A NAME (kernel, arrival, product) runs that part alone.
-import { ensureInstalled, ensureKernel, giveUp, run } from './lib/shell.mjs';
+// means that we are better. With --json a JSON object a line. A NAME (kernel, arrival, product, comparison) runs that part alone.
+import { chromiumPath, ensureInstalled, ensureKernel, ensureTestTools, giveUp, run } from './lib/shell.mjs';
 
 const parts = {
   kernel: 'sim-core/bench/main.ts',
   arrival: 'sim-core/bench/arrival.ts',
   product: 'server/bench/main.ts',
+  comparison: 'app/bench/comparison.ts',
 };
 
 const options = process.argv.slice(2).filter((word) => word.startsWith('--'));
@@ -15,6 +16,10 @@ if (unknown) giveUp(`Found "${unknown}"; the parts of the bench are ${Object.key
 ensureInstalled();
 ensureKernel();
 for (const name of asked.length > 0 ? asked : Object.keys(parts)) {
-  const code = run(process.execPath, ['--import', 'tsx', parts[name], ...options], { stdio: 'inherit' });
+  if (name === 'comparison') ensureTestTools();
+  const code = run(process.execPath, ['--import', 'tsx', parts[name], ...options], {
+    stdio: 'inherit',
+    env: { ...process.env, CHROMIUM_PATH: chromiumPath() },
+  });
   if (code !== 0) process.exit(code);
 }

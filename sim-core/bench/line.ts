@@ -1,6 +1,6 @@
 /** One figure of the bench, beside what it is held against in the same run. */
 export interface Line {
-  readonly name: 'kernel' | 'memory' | 'frames' | 'ensemble' | 'arrival';
+  readonly name: 'kernel' | 'memory' | 'frames' | 'ensemble' | 'arrival' | 'comparison' | 'waiting' | 'page-memory';
   readonly mode: string;
   readonly map: string;
   /** cells on a side, or width × height */
@@ -10,9 +10,9 @@ export interface Line {
   readonly engine?: string;
   /** what was done: cells stepped in the fastest round; of frames and arrival, their cells; of an ensemble, its steps */
   readonly work: number;
-  /** time of the processor; of an ensemble, by the clock */
+  /** time of the processor; of an ensemble and beside a clock, by the clock */
   readonly seconds: number;
-  /** work a second; of memory, bytes a cell; of frames, bytes a cell and year */
+  /** work a second; of memory, bytes a cell; of frames, bytes a cell and year; of waiting, ms */
   readonly rate: number;
   /** above 1: we are faster, or smaller. null where there is nothing to hold it against, and `reason` says why */
   readonly ratio: number | null;
@@ -26,7 +26,9 @@ const json = process.argv.includes('--json');
 const figure = ({ name, rate }: Line): string => {
   if (name === 'memory') return `${rate.toFixed(1)} bytes a cell`;
   if (name === 'frames') return `${rate.toFixed(3)} bytes a cell, year`;
-  if (name === 'ensemble') return `${rate.toFixed(0)} steps/s`;
+  if (name === 'waiting') return `${rate.toFixed(0)} ms`;
+  if (name === 'page-memory') return `${(rate / 1e6).toFixed(0)} MB`;
+  if (name === 'ensemble' || name === 'comparison') return `${rate.toFixed(0)} steps/s`;
   return `${(rate / 1e6).toFixed(1)} M cells/s`;
 };
 
@@ -39,7 +41,7 @@ export function printLine(line: Line): void {
   const { name, mode, map, size, against, engine, ratio, reason, load } = line;
   console.log(
     [
-      name.padEnd(8),
+      name.padEnd(11),
       mode.padEnd(11),
       map.padEnd(7),
       String(size).padStart(9),
