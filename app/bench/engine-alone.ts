@@ -15,7 +15,7 @@ export function engineAlone(
   for (const replicate of replicates)
     plan.options.forEach((_, option) => {
       const spec = replicateSpec(plan, option, 0, replicate);
-      runReplicate({ spec, grid, ground }, { closing: true, coverYears: [] });
+      runReplicate({ spec, grid, ground }, { closing: true });
     });
   const { user, system } = process.cpuUsage(before);
   return { seconds: (user + system) / 1e6, runs: replicates.length * plan.options.length };

@@ -1,8 +1,8 @@
-import { releaseProxy, transfer, wrap } from 'comlink';
+import { releaseProxy, transfer, wrap, type Remote } from 'comlink';
 import type { EnsembleMapsFace } from './ensemble-maps-worker.ts';
 import type { MapsInput } from '#rasters/ensemble/ensemble-maps.ts';
 
-/** Maps of several ensembles, kept in a worker of their own. */
+/** Maps of several ensembles, kept in workers of their own. */
 export interface EnsembleMapsDesk {
   /** @returns replicates that are in from the state of an earlier sitting */
   begin(key: string, input: MapsInput, state: Blob | undefined): Promise<number[]>;
@@ -11,7 +11,7 @@ export interface EnsembleMapsDesk {
     key: string,
     replicate: number,
     closing: Int16Array,
-    covers: ReadonlyMap<number, Float32Array>,
+    frames: ReadonlyMap<number, Uint8Array>,
   ): Promise<void>;
   map(key: string, name: string): Promise<Uint8Array | Int16Array>;
   packedMap(key: string, name: string): Promise<Blob>;
@@ -19,31 +19,58 @@ export interface EnsembleMapsDesk {
   close(): void;
 }
 
-export function createMapsDesk(): EnsembleMapsDesk {
-  const worker = new Worker(new URL('./ensemble-maps-worker.ts', import.meta.url), {
-    type: 'module',
-    name: 'ensemble-maps',
-  });
-  const remote = wrap<EnsembleMapsFace>(worker);
+export interface MapsDeskParts {
+  readonly createWorker?: () => Worker;
+  /** as many as there are cores, unless said */
+  readonly workers?: number;
+}
+
+const startWorker = () =>
+  new Worker(new URL('./ensemble-maps-worker.ts', import.meta.url), { type: 'module', name: 'ensemble-maps' });
+
+/**
+ * Each ensemble stays with one worker; further ones are started as ensembles are begun, up to `workers`, and then share.
+ * So packing what is to be saved takes all cores.
+ */
+export function createMapsDesk(parts: MapsDeskParts = {}): EnsembleMapsDesk {
+  const { createWorker = startWorker, workers = navigator.hardwareConcurrency || 2 } = parts;
+  const hands: { worker: Worker; remote: Remote<EnsembleMapsFace> }[] = [];
+  const keeperOf = new Map<string, Remote<EnsembleMapsFace>>();
   let fail!: (why: Error) => void;
   const death = new Promise<never>((_, reject) => (fail = reject));
   death.catch(() => undefined);
-  worker.addEventListener('error', (event) => {
-    fail(new Error(`The worker that keeps the maps stopped: ${event.message}`));
-  });
   const ask = <T>(reply: Promise<T>): Promise<T> => Promise.race([reply, death]);
+
+  function keeper(key: string): Remote<EnsembleMapsFace> {
+    const known = keeperOf.get(key);
+    if (known) return known;
+    const turn = keeperOf.size % workers;
+    if (hands.length === turn) {
+      const worker = createWorker();
+      worker.addEventListener('error', (event) => {
+        fail(new Error(`A worker that keeps the maps stopped: ${event.message}`));
+      });
+      hands.push({ worker, remote: wrap<EnsembleMapsFace>(worker) });
+    }
+    const { remote } = hands[turn];
+    keeperOf.set(key, remote);
+    return remote;
+  }
+
   return {
-    begin: (key, input, state) => ask(remote.begin(key, input, state)),
-    add: (key, replicate, closing, covers) => {
-      const buffers = [closing, ...covers.values()].map((map) => map.buffer as ArrayBuffer);
-      return ask(remote.add(key, replicate, closing, transfer(covers, buffers)));
+    begin: (key, input, state) => ask(keeper(key).begin(key, input, state)),
+    add: (key, replicate, closing, frames) => {
+      const buffers = [closing, ...frames.values()].map((map) => map.buffer as ArrayBuffer);
+      return ask(keeper(key).add(key, replicate, closing, transfer(frames, buffers)));
     },
-    map: (key, name) => ask(remote.map(key, name) as Promise<Uint8Array | Int16Array>),
-    packedMap: (key, name) => ask(remote.packedMap(key, name)),
-    state: (key) => ask(remote.state(key)),
+    map: (key, name) => ask(keeper(key).map(key, name) as Promise<Uint8Array | Int16Array>),
+    packedMap: (key, name) => ask(keeper(key).packedMap(key, name)),
+    state: (key) => ask(keeper(key).state(key)),
     close: () => {
-      remote[releaseProxy]();
-      worker.terminate();
+      for (const { worker, remote } of hands) {
+        remote[releaseProxy]();
+        worker.terminate();
+      }
       fail(new Error('The maps were closed'));
     },
   };

@@ -24,8 +24,8 @@ const face = {
     ensembles.set(key, { maps, input });
     return maps.replicates();
   },
-  add: (key: string, replicate: number, closing: Int16Array, covers: ReadonlyMap<number, Float32Array>) => {
-    find(key).maps.add(replicate, closing, covers);
+  add: (key: string, replicate: number, closing: Int16Array, frames: ReadonlyMap<number, Uint8Array>) => {
+    find(key).maps.add(replicate, closing, frames);
   },
   /** A map's values, handed over. */
   map: (key: string, name: string) => {
@@ -35,7 +35,8 @@ const face = {
   /** A map in the binary of `rasters/cells/cell-values.ts`, ready to be stored. */
   packedMap: (key: string, name: string): Blob => {
     const { maps, input } = find(key);
-    return blob(encodeCellValues({ width: input.width, height: input.height, values: maps.map(name) }));
+    const { width, height } = input;
+    return blob(encodeCellValues({ width, height, values: maps.map(name) }, 'quick'));
   },
   state: (key: string): { state: Blob; replicates: number } => {
     const { maps } = find(key);

@@ -1,5 +1,5 @@
 import { expose, transfer, type ProxyMarked, type Remote } from 'comlink';
-import { runReplicate, type Keep } from '#sim-core/ensemble/replicate.ts';
+import { buffersOf, runReplicate, type Keep } from '#sim-core/ensemble/replicate.ts';
 import type { Ground } from '#sim-core/grid/ground.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { RunProblem } from '#sim-core/run/run-problem.ts';
@@ -26,9 +26,7 @@ const face = {
         saidAt = now;
         void onStep(done);
       });
-      const { closing, covers } = outcome;
-      const maps = [closing, ...covers.values()].flatMap((map) => (map ? [map.buffer as ArrayBuffer] : []));
-      return transfer({ outcome }, maps);
+      return transfer({ outcome }, buffersOf(outcome));
     } catch (error) {
       // As plain data: the class of a thrown error does not cross.
       if (error instanceof RunProblem) return { refused: error.problems };

@@ -112,7 +112,8 @@ const isSize = (n: number): boolean => Number.isInteger(n) && n > 0 && n <= 0xff
 export const damagedCells = (found: string): CellValuesError =>
   new CellValuesError(`The cell values are damaged: found ${found}. Fetch the file again.`);
 
-const littleEndianHost = new Uint8Array(Uint16Array.of(1).buffer)[0] === 1;
+/** whether this machine keeps the lowest byte of a number first, as nearly all do */
+export const littleEndianHost = new Uint8Array(Uint16Array.of(1).buffer)[0] === 1;
 
 /** Bytes of a body as this machine's numbers; `bytes` must stand alone in their buffer. */
 export function cellsOf({ width, height, type }: CellHeader, bytes: Uint8Array<ArrayBuffer>): CellArray {

@@ -4,17 +4,17 @@ import { createEnsembleMaps, mapNames } from './ensemble-maps.ts';
 const input = { width: 4, height: 1, years: [2030, 2040] };
 /** Closes early, late, never, and a cell that cannot hold the plant. */
 const replicates = [
-  { closing: [2028, 2040, 0, -32768], covers: [0.2, 1] },
-  { closing: [2030, 0, 0, -32768], covers: [0.4, 0.8] },
-  { closing: [2035, 2033, 0, -32768], covers: [0.6, 0.4] },
+  { closing: [2028, 2040, 0, -32768], frames: [51, 255] },
+  { closing: [2030, 0, 0, -32768], frames: [102, 204] },
+  { closing: [2035, 2033, 0, -32768], frames: [153, 102] },
 ];
 type Maps = ReturnType<typeof createEnsembleMaps>;
 const add = (maps: Maps, number: number) => {
-  const { closing, covers } = replicates[number];
+  const { closing, frames } = replicates[number];
   maps.add(
     number,
     Int16Array.from(closing),
-    new Map(input.years.map((year, y) => [year, new Float32Array(4).fill(covers[y])])),
+    new Map(input.years.map((year, y) => [year, new Uint8Array(4).fill(frames[y])])),
   );
 };
 const allMaps = (maps: Maps) => mapNames(input.years).map((name) => maps.map(name));

@@ -2,11 +2,15 @@ import { strFromU8, strToU8, unzipSync, zipSync, type Zippable } from 'fflate';
 import { z } from 'zod';
 import { decodeCellValues, encodeCellValues } from '#rasters/cells/cell-values.ts';
 import { closingMaps } from '#sim-core/ensemble/closing-maps.ts';
+import { byteSums } from './byte-sums.ts';
 
 /** The maps of one ensemble, as replicates stream in: memory follows the map and the kept years, not their number. */
 export interface EnsembleMaps {
-  /** Takes in a replicate, once: a second time changes nothing. */
-  add(replicate: number, closing: Int16Array, covers: ReadonlyMap<number, Float32Array>): void;
+  /**
+   * Takes in a replicate, once: a second time changes nothing.
+   * @param frames cover of the kept years, round(255·C)
+   */
+  add(replicate: number, closing: Int16Array, frames: ReadonlyMap<number, Uint8Array>): void;
   /** replicates that are in, ascending */
   replicates(): number[];
   /**
@@ -27,7 +31,7 @@ export interface MapsInput {
 
 const stateSchema = z.object({
   format: z.literal('foothold-ensemble-maps'),
-  version: z.literal(1),
+  version: z.union([z.literal(1), z.literal(2)]),
   width: z.number().int(),
   height: z.number().int(),
   years: z.array(z.number().int()),
@@ -44,9 +48,9 @@ export function createEnsembleMaps({ width, height, years }: MapsInput, from?: U
   const taken = new Set(held?.replicates);
   const closing = closingMaps(cells, years, held?.counts);
   /** Σ round(255 · C) of each kept year: whole numbers, so the order of replicates changes nothing */
-  const sums = held?.sums ?? years.map(() => new Uint32Array(cells));
+  const sums = years.map((_, y) => byteSums(cells, held?.sums[y]));
   const mean = (year: number) => {
-    const sum = sums[years.indexOf(year)];
+    const sum = sums[years.indexOf(year)].values();
     const means = new Uint8Array(cells);
     for (let i = 0; i < cells; i++) means[i] = Math.round(sum[i] / taken.size);
     return means;
@@ -60,15 +64,12 @@ export function createEnsembleMaps({ width, height, years }: MapsInput, from?: U
   };
 
   return {
-    add(replicate, closingYears, covers) {
+    add(replicate, closingYears, frames) {
       if (taken.has(replicate)) return;
+      const missing = years.find((year) => !frames.has(year));
+      if (missing !== undefined) throw new Error(`The cover of ${missing} was not kept.`);
       closing.add(closingYears);
-      years.forEach((year, y) => {
-        const cover = covers.get(year);
-        if (!cover) throw new Error(`The cover of ${year} was not kept.`);
-        const sum = sums[y];
-        for (let i = 0; i < cells; i++) sum[i] += Math.round(255 * cover[i]);
-      });
+      years.forEach((year, y) => sums[y].add(frames.get(year)!));
       taken.add(replicate);
     },
     replicates: () => [...taken].sort((a, b) => a - b),
@@ -81,12 +82,12 @@ export function createEnsembleMaps({ width, height, years }: MapsInput, from?: U
     state() {
       const { canClose, planes } = closing.counts();
       const packed = (values: Uint8Array | Uint16Array | Uint32Array) =>
-        encodeCellValues({ width, height, values });
+        encodeCellValues({ width, height, values }, 'quick');
       const files: Zippable = {
         'state.json': strToU8(
           JSON.stringify({
             format: 'foothold-ensemble-maps',
-            version: 1,
+            version: 2,
             width,
             height,
             years: [...years],
@@ -98,7 +99,7 @@ export function createEnsembleMaps({ width, height, years }: MapsInput, from?: U
       years.forEach((year, y) => {
         const plane = planes[y];
         if (plane) files[`closed-${year}`] = packed(plane);
-        files[`cover-${year}`] = packed(sums[y]);
+        files[`cover-${year}`] = packed(sums[y].values());
       });
       // What is in it is packed already.
       return zipSync(files, { level: 0 });
@@ -113,10 +114,11 @@ function readState(bytes: Uint8Array, { width, height, years }: MapsInput) {
     throw new Error(
       `The stored counts are of ${state.width} × ${state.height} cells and the years ${state.years.join(', ')}; expected ${width} × ${height} and ${years.join(', ')}.`,
     );
-  const unpack = <T>(name: string, type: abstract new (...args: never[]) => T): T => {
+  const unpack = <T>(name: string, ...types: (abstract new (...args: never[]) => T)[]): T => {
     const { values } = decodeCellValues(files[name], { cells: width * height });
-    if (!(values instanceof type)) throw new Error(`The stored counts hold other numbers in ${name}.`);
-    return values;
+    const type = types.find((each) => values instanceof each);
+    if (!type) throw new Error(`The stored counts hold other numbers in ${name}.`);
+    return values as T;
   };
   const planes = years.map((year) => {
     const name = `closed-${year}`;
@@ -126,7 +128,8 @@ function readState(bytes: Uint8Array, { width, height, years }: MapsInput) {
   return {
     replicates: state.replicates,
     counts: { count: state.replicates.length, canClose: unpack('can-close', Uint8Array), planes },
-    sums: years.map((year) => unpack(`cover-${year}`, Uint32Array)),
+    // Of 32 bits throughout in version 1.
+    sums: years.map((year) => unpack<Uint16Array | Uint32Array>(`cover-${year}`, Uint16Array, Uint32Array)),
   };
 }
 

@@ -60,9 +60,9 @@ export async function compareDemoOptions(
     await pool.start(
       specs,
       {
-        onResult: async ({ result, closing, covers }, index) => {
+        onResult: async ({ result, closing, frames }, index) => {
           const { option, outlook, replicate } = tasks[index];
-          present.maps.add(replicate, closing!, covers);
+          present.maps.add(replicate, closing!, frames);
           present.records.push(recordReplicate(result, specs[index], plan.droughtThreshold));
           if (present.records.length < replicates) return;
           await store(services, { ...address, option, outlook }, comparison, present);
@@ -73,7 +73,7 @@ export async function compareDemoOptions(
         },
         onProgress,
       },
-      { keep: { closing: true, coverYears: plan.mapYears }, inOrder: true },
+      { keep: { closing: true, frameYears: plan.mapYears }, inOrder: true },
     ).finished;
   } finally {
     await pool.close();

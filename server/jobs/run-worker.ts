@@ -1,6 +1,6 @@
 import { workerData, type MessagePort } from 'node:worker_threads';
 import { move, transferableSymbol, valueSymbol } from 'piscina';
-import { runReplicate, type Keep, type ReplicateOutcome } from '#sim-core/ensemble/replicate.ts';
+import { buffersOf, runReplicate, type Keep, type ReplicateOutcome } from '#sim-core/ensemble/replicate.ts';
 import { RunProblem } from '#sim-core/run/run-problem.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { Ground } from '#sim-core/grid/ground.ts';
@@ -47,7 +47,6 @@ export default function work({ spec, keep, port }: RunTask): unknown {
 }
 
 /** `answer` with the maps in it transferred, not copied. */
-function handed(answer: RunAnswer, { covers, closing }: ReplicateOutcome): unknown {
-  const maps = [...covers.values(), closing].flatMap((map) => (map ? [map.buffer as ArrayBuffer] : []));
-  return move({ [transferableSymbol]: maps, [valueSymbol]: answer });
+function handed(answer: RunAnswer, outcome: ReplicateOutcome): unknown {
+  return move({ [transferableSymbol]: buffersOf(outcome), [valueSymbol]: answer });
 }

@@ -61,9 +61,16 @@ export function closingMaps(cells: number, years: readonly number[], from?: Clos
   )
     throw new RangeError('The counts to go on from are of other years or of another map');
 
-  /** Calls `then` with how many replicates closed each cell in each kept year up to `until`, where any did. */
-  function each(until: number, then: (closings: number, cell: number, year: number) => void): void {
-    for (let slot = 0; slot <= until; slot++) {
+  /** closings up to a kept year, so that whoever asks year after year does not sum from the first one each time */
+  let summed: { readonly count: number; slot: number; readonly closed: Uint16Array } | undefined;
+
+  /** Calls `then` with how many replicates closed each cell in each kept year from `from` to `until`, where any did. */
+  function each(
+    until: number,
+    then: (closings: number, cell: number, year: number) => void,
+    from = 0,
+  ): void {
+    for (let slot = from; slot <= until; slot++) {
       const plane = planes[slot];
       if (plane)
         for (let cell = 0; cell < cells; cell++) if (plane[cell]) then(plane[cell], cell, years[slot]);
@@ -102,10 +109,14 @@ export function closingMaps(cells: number, years: readonly number[], from?: Clos
     chanceBy(year) {
       const until = years.indexOf(year);
       if (until < 0) throw new RangeError(`${year} is not kept; the years are ${years.join(', ')}`);
-      const closed = blank();
-      each(until, (n, cell) => (closed[cell] += n));
-      for (let cell = 0; cell < cells; cell++) closed[cell] /= count;
-      return closed;
+      if (summed?.count !== count || summed.slot > until)
+        summed = { count, slot: -1, closed: new Uint16Array(cells) };
+      const { closed } = summed;
+      each(until, (n, cell) => (closed[cell] += n), summed.slot + 1);
+      summed.slot = until;
+      const chance = blank();
+      for (let cell = 0; cell < cells; cell++) chance[cell] += closed[cell] / count;
+      return chance;
     },
     medianYear() {
       const median = new Int16Array(cells);

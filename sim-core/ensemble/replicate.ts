@@ -1,11 +1,14 @@
-import { createRun, type RunInput } from '#sim-core/run/create-run.ts';
+import { createRun, type RunInput, type YearOutcome } from '#sim-core/run/create-run.ts';
+import { toFrame } from '#sim-core/run/frame.ts';
 import type { RunResult } from '#sim-core/spec/run-result.ts';
 
 /** What is kept of a run beside its result. */
 export interface Keep {
   readonly closing: boolean;
   /** years whose cover is kept, the survey's included */
-  readonly coverYears: readonly number[];
+  readonly coverYears?: readonly number[];
+  /** years whose cover is kept in 8 bits, the survey's included: next to free where the run reports the year */
+  readonly frameYears?: readonly number[];
 }
 
 /** What a run of an ensemble came to. */
@@ -15,6 +18,8 @@ export interface ReplicateOutcome {
   readonly closing: Int16Array | undefined;
   /** C of the kept years, Float32, row-major */
   readonly covers: ReadonlyMap<number, Float32Array>;
+  /** round(255·C) of the kept years, row-major */
+  readonly frames: ReadonlyMap<number, Uint8Array>;
 }
 
 /**
@@ -25,9 +30,17 @@ export interface ReplicateOutcome {
  */
 export function runReplicate(input: RunInput, keep: Keep, onStep?: (done: number) => void): ReplicateOutcome {
   const run = createRun(input);
-  const wanted = new Set(keep.coverYears);
+  const ofCover = new Set(keep.coverYears);
+  const ofFrame = new Set(keep.frameYears);
   const covers = new Map<number, Float32Array>();
-  for (let year: { year: number } | undefined = run.survey; year; year = run.nextYear(onStep))
-    if (wanted.has(year.year)) covers.set(year.year, run.cover());
-  return { result: run.result(), closing: keep.closing ? run.closing() : undefined, covers };
+  const frames = new Map<number, Uint8Array>();
+  for (let at: YearOutcome | undefined = run.survey; at; at = run.nextYear(onStep)) {
+    if (ofCover.has(at.year)) covers.set(at.year, run.cover());
+    if (ofFrame.has(at.year)) frames.set(at.year, at.frame ?? toFrame(run.cover()));
+  }
+  return { result: run.result(), closing: keep.closing ? run.closing() : undefined, covers, frames };
 }
+
+/** Buffers of the maps of an outcome, to be handed over from one thread to the next. */
+export const buffersOf = ({ closing, covers, frames }: ReplicateOutcome): ArrayBuffer[] =>
+  [closing, ...covers.values(), ...frames.values()].flatMap((map) => (map ? [map.buffer as ArrayBuffer] : []));

@@ -3,6 +3,7 @@ import { describe, expect, it, vi } from 'vitest';
 import type { Comparison } from '#contract/comparisons.ts';
 import { ProblemError } from '#app/lib/api-client.ts';
 import { createComparisonManager, isWorking, type ComparisonManagerParts } from './comparison-manager.ts';
+import { mayStop } from './may-stop.ts';
 import { smallComparison, smallDesk, smallPool, smallServer } from './testing/small-comparison.ts';
 
 type Server = ReturnType<typeof smallServer>;
@@ -12,6 +13,7 @@ function managerOf(server: Server, parts: Partial<ComparisonManagerParts> = {}) 
     server: server.server,
     createPool: () => smallPool(2),
     createDesk: smallDesk,
+    mayStop: (comparison, known) => Promise.resolve(mayStop(comparison, known)),
     wait: () => Promise.resolve(),
     now: () => 0,
     ...parts,

@@ -12,8 +12,8 @@ import type { PackedLayers, RunInput } from '#app/workers/run-loop.ts';
 import type { ComparisonServer } from './comparison-server.ts';
 import type { EnsembleAddress } from './get-comparison.ts';
 import type { KnownRecords } from '#sim-core/compare/known-records.ts';
+import type { Enough } from './may-stop.ts';
 import { ensembleKey, specOf, tasksLeft, type Task } from './ensemble-work.ts';
-import { mayStop } from './may-stop.ts';
 
 /** `saving`: the replicates stand still and the maps are on their way to the server. */
 export type ComparisonPhase = 'loading' | 'running' | 'saving' | 'paused' | 'done' | 'failed';
@@ -40,6 +40,8 @@ export interface ComparisonManagerParts {
   readonly server: ComparisonServer;
   readonly createPool: (input: RunInput) => Runner & { close(): void };
   readonly createDesk: () => EnsembleMapsDesk;
+  /** looks whether enough is known, off the page's thread */
+  readonly mayStop: (comparison: Comparison, known: KnownRecords) => Promise<Enough | undefined>;
   readonly wait: (milliseconds: number, signal: AbortSignal) => Promise<void>;
   /** milliseconds */
   readonly now: () => number;
@@ -79,8 +81,9 @@ export const isWorking = (live: LiveComparison | undefined): boolean =>
 /** Replicates of an ensemble that go to the server together, and how long one waits for company, ms. */
 const pieceSize = 8;
 const pieceWait = 2000;
-/** How often the counts behind the maps are stored, ms. */
+/** How often the counts behind the maps are stored, ms; and how many times as long as storing them takes, at least. */
 const stateEvery = 120_000;
+const stateTimes = 30;
 /** How often it is asked whether the comparison may stop, ms. */
 const lookEvery = 4000;
 
@@ -163,7 +166,8 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
     const pieces = createPieces(addressOf, (address, replicates) =>
       save(() => server.putReplicates(address, replicates, signal)),
     );
-    let stateAt = now();
+    let stateDue = now() + stateEvery;
+    let storing = Promise.resolve();
     let lookedAt = now();
     let ending: NonNullable<Comparison['ending']> | undefined = 'all replicates';
 
@@ -181,20 +185,26 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
         ensembleKey(task.option, task.outlook),
         task.replicate,
         outcome.closing!,
-        outcome.covers,
+        outcome.frames,
       );
       if (!before) {
         held.set(task.replicate, record);
         await pieces.add(task, record, now());
       }
       change(id, { version: get(id)!.version + 1 });
-      if (now() - stateAt > stateEvery) {
-        stateAt = now();
-        await saveCounts([]);
+      if (now() > stateDue) {
+        // The runs go on meanwhile.
+        stateDue = Infinity;
+        const from = now();
+        storing = saveCounts([]).then(() => {
+          stateDue = now() + Math.max(stateEvery, stateTimes * (now() - from));
+        });
+        // What went wrong is thrown where `storing` is waited for.
+        storing.catch(() => job.running?.cancel());
       }
       if (plan.stop && now() - lookedAt > lookEvery) {
         lookedAt = now();
-        const why = mayStop(comparison, records);
+        const why = await parts.mayStop(comparison, records);
         if (why) {
           ending = why;
           job.running?.cancel();
@@ -205,24 +215,28 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
     let takingIn = Promise.resolve();
     const onResult = (outcome: ReplicateOutcome, index: number) => (takingIn = takeIn(outcome, index));
     /** Stores the counts behind the maps of every ensemble, and the maps themselves where `names` are given. */
-    const saveCounts = async (names: readonly string[]) => {
-      for (const { option, outlook } of comparison.ensembles) {
-        const [key, address] = [ensembleKey(option, outlook), addressOf(option, outlook)];
-        const { state, replicates } = await desk.state(key);
-        if (replicates === 0) continue;
-        await save(() => server.putMapsState(address, state, replicates, signal));
-        for (const name of names) {
-          const packed = await desk.packedMap(key, name);
-          await save(() => server.putMap(address, name, packed, replicates, signal));
-        }
+    const saveCountsOf = async (option: number, outlook: number, names: readonly string[]) => {
+      const [key, address] = [ensembleKey(option, outlook), addressOf(option, outlook)];
+      const { state, replicates } = await desk.state(key);
+      if (replicates === 0) return;
+      await save(() => server.putMapsState(address, state, replicates, signal));
+      for (const name of names) {
+        const packed = await desk.packedMap(key, name);
+        await save(() => server.putMap(address, name, packed, replicates, signal));
       }
+    };
+    // One is packed while another is on its way.
+    const saveCounts = async (names: readonly string[]) => {
+      await Promise.all(
+        comparison.ensembles.map(({ option, outlook }) => saveCountsOf(option, outlook, names)),
+      );
     };
 
     let cancelled = false;
     if (tasks.length > 0 && job.asked === undefined) {
       const pool = createPool({ spec: specOf(comparison, tasks[0]), grid, ground });
       try {
-        const keep: Keep = { closing: true, coverYears: plan.mapYears };
+        const keep: Keep = { closing: true, frameYears: plan.mapYears };
         job.running = pool.start(
           tasks.map((task) => specOf(comparison, task)),
           {
@@ -250,6 +264,7 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
       ending = job.asked === 'stop' ? 'stopped by hand' : undefined;
 
     await takingIn;
+    await storing;
     change(id, { phase: 'saving' });
     await pieces.flush();
     await saveCounts(mapNames(plan.mapYears));

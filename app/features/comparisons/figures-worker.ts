@@ -1,8 +1,5 @@
 import { expose } from 'comlink';
-import { comparisonFigures } from '#sim-core/compare/comparison-figures.ts';
+import { figuresBook } from './figures-book.ts';
 
-/** Bootstraps take long where there are many futures, so the page has them worked out here. */
-const face = { figures: comparisonFigures };
-export type FiguresFace = typeof face;
-
-expose(face);
+/** Bootstraps take long where there are many futures, so they are drawn here. */
+expose(figuresBook());

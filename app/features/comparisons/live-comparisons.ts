@@ -5,6 +5,10 @@ import { createMapsDesk } from '#app/workers/ensemble-maps-client.ts';
 import { createReplicatePool } from '#app/workers/replicate-pool.ts';
 import { createComparisonManager, type LiveComparison } from './comparison-manager.ts';
 import { comparisonServer } from './comparison-server.ts';
+import { createFiguresDesk, type FiguresDesk } from './figures-desk.ts';
+
+/** Looks at all comparisons of the tab; begun by the first that may stop early. */
+let looks: FiguresDesk | undefined;
 
 /** The comparisons that this tab works on, whatever page it shows. */
 export const comparisonManager = createComparisonManager({
@@ -12,6 +16,7 @@ export const comparisonManager = createComparisonManager({
   createPool: createReplicatePool,
   createDesk: createMapsDesk,
   wait: waitByClock,
+  mayStop: (comparison, known) => (looks ??= createFiguresDesk()).mayStop(comparison, known),
   now: () => performance.now(),
   onChange: (active) => {
     askBeforeClosing('comparisons', active);

@@ -4,6 +4,9 @@ import { levelOfLooks, pairedDifference, sureEnough } from '#sim-core/index.ts';
 import { sharedReplicates, type KnownRecords } from '#sim-core/compare/known-records.ts';
 import { recoveryTimes } from '#sim-core/compare/recovery-times.ts';
 
+/** Why a comparison stops before all replicates are done. */
+export type Enough = 'chances known' | 'rank settled';
+
 /**
  * Why a comparison may stop before all replicates are done, or undefined where it must go on: under every outlook each
  * chance is known closely enough, or the best option leads the second.
@@ -11,7 +14,7 @@ import { recoveryTimes } from '#sim-core/compare/recovery-times.ts';
 export function mayStop(
   { plan, id }: Pick<Comparison, 'plan' | 'id'>,
   known: KnownRecords,
-): 'chances known' | 'rank settled' | undefined {
+): Enough | undefined {
   const { stop, outlooks, options } = plan;
   if (!stop) return undefined;
   const shared = sharedReplicates(known);

@@ -1,9 +1,11 @@
-import { releaseProxy, wrap } from 'comlink';
 import { useEffect, useRef, useState } from 'react';
-import type { ComparisonPlan } from '#contract/comparisons.ts';
+import type { Comparison } from '#contract/comparisons.ts';
 import type { ComparisonFigures } from '#sim-core/compare/comparison-figures.ts';
 import type { KnownRecords } from '#sim-core/compare/known-records.ts';
-import type { FiguresFace } from './figures-worker.ts';
+import { createFiguresDesk, type FiguresDesk } from './figures-desk.ts';
+
+/** How many times as long as they took the figures rest before they are worked out again, so that futures get the cores. */
+const rest = 20;
 
 /**
  * The figures of a comparison, worked out off the page's thread: those of the latest records as soon as they are there,
@@ -12,32 +14,21 @@ import type { FiguresFace } from './figures-worker.ts';
  * @param version rises when `known` was filled further in place
  */
 export function useComparisonFigures(
-  plan: ComparisonPlan,
+  comparison: Pick<Comparison, 'plan' | 'id'>,
   known: KnownRecords | undefined,
-  seed: string,
   version: number,
 ): ComparisonFigures | undefined {
   const [figures, setFigures] = useState<ComparisonFigures>();
-  const desk = useRef<{ ask: FiguresFace['figures']; busy: boolean; again: (() => void) | undefined }>(
-    undefined,
-  );
+  const desk = useRef<{ ask: FiguresDesk; busy: boolean; again: (() => void) | undefined }>(undefined);
   useEffect(() => {
-    const worker = new Worker(new URL('./figures-worker.ts', import.meta.url), {
-      type: 'module',
-      name: 'figures',
-    });
-    const remote = wrap<FiguresFace>(worker);
-    desk.current = {
-      ask: remote.figures as unknown as FiguresFace['figures'],
-      busy: false,
-      again: undefined,
-    };
+    const ask = createFiguresDesk();
+    desk.current = { ask, busy: false, again: undefined };
     return () => {
       desk.current = undefined;
-      remote[releaseProxy]();
-      worker.terminate();
+      ask.close();
     };
   }, []);
+  const { plan, id } = comparison;
   useEffect(() => {
     if (!known) return;
     const work = () => {
@@ -49,22 +40,25 @@ export function useComparisonFigures(
         return;
       }
       at.busy = true;
-      Promise.resolve(at.ask(plan, known, seed))
+      const begun = performance.now();
+      const next = () => {
+        at.busy = false;
+        const { again } = at;
+        at.again = undefined;
+        again?.();
+      };
+      at.ask
+        .figures({ plan, id }, known)
         .then((made) => {
           if (desk.current === at) setFigures(made);
         })
         .catch((error: unknown) => {
           // As an error of the page, where the browser's own tools and the tests look for it.
-          reportError(error);
+          if (desk.current === at) reportError(error);
         })
-        .finally(() => {
-          at.busy = false;
-          const next = at.again;
-          at.again = undefined;
-          next?.();
-        });
+        .finally(() => setTimeout(next, rest * (performance.now() - begun)));
     };
     work();
-  }, [plan, known, seed, version]);
+  }, [plan, id, known, version]);
   return figures;
 }

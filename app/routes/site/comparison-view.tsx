@@ -71,7 +71,7 @@ export function ComparisonView({
     [atHand, stored.data],
   );
   const version = useThrottled(live?.version ?? 0, 1500);
-  const figures = useComparisonFigures(plan, known, comparison.id, version);
+  const figures = useComparisonFigures(comparison, known, version);
   const counted = { ...comparison, done: Math.max(comparison.done, figures?.outlooks[0]?.replicates ?? 0) };
   const shown = figures?.outlooks[Math.min(outlook, plan.outlooks.length - 1)];
 

@@ -117,7 +117,7 @@ export function smallDesk(): EnsembleMapsDesk {
       all.set(key, createEnsembleMaps(input, from));
       return of(key).replicates();
     },
-    add: (key, replicate, closing, covers) => Promise.resolve(of(key).add(replicate, closing, covers)),
+    add: (key, replicate, closing, frames) => Promise.resolve(of(key).add(replicate, closing, frames)),
     map: (key, name) => Promise.resolve(of(key).map(name)),
     packedMap: (key, name) => Promise.resolve(blob(of(key).map(name))),
     state: (key) =>
