@@ -1,54 +1,18 @@
-import { spawn } from 'node:child_process';
 import { mkdtempSync, rmSync, statSync } from 'node:fs';
-import { createServer, type AddressInfo } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, describe, expect, it } from 'vitest';
-import { projectRoot } from './project.ts';
+import { freePort, startServer } from './testing/started-server.ts';
 
 const dataDir = mkdtempSync(join(tmpdir(), 'foothold-main-'));
 afterAll(() => rmSync(dataDir, { recursive: true, force: true }));
-
-async function freePort(): Promise<number> {
-  const server = createServer();
-  await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
-  const { port } = server.address() as AddressInfo;
-  await new Promise((resolve) => server.close(resolve));
-  return port;
-}
-
-/** Starts the server as its users do; `said` resolves once its output holds a text, `ended` with its exit code. */
-function start(environment: Record<string, string>) {
-  const child = spawn(process.execPath, ['--import', 'tsx', 'server/main.ts'], {
-    cwd: projectRoot,
-    env: { PATH: process.env.PATH, DATA_DIR: dataDir, DEMO: 'off', LOG_LEVEL: 'silent', ...environment },
-  });
-  let output = '';
-  const waiting: { pattern: RegExp; found: (match: RegExpExecArray) => void }[] = [];
-  const listen = (chunk: Buffer) => {
-    output += chunk.toString();
-    for (const { pattern, found } of waiting) {
-      const match = pattern.exec(output);
-      if (match) found(match);
-    }
-  };
-  child.stdout.on('data', listen);
-  child.stderr.on('data', listen);
-  const ended = new Promise<number | null>((resolve) => child.on('close', resolve));
-  const said = (pattern: RegExp) =>
-    Promise.race([
-      new Promise<RegExpExecArray>((found) => waiting.push({ pattern, found })),
-      ended.then(() => Promise.reject(new Error(`The server ended early:\n${output}`))),
-    ]);
-  return { child, said, ended, output: () => output };
-}
 
 describe('the server', () => {
   it('starts, says how to get in, answers, and ends on SIGTERM; the next start has a new link', async () => {
     const port = String(await freePort());
     const links: string[] = [];
     for (let i = 0; i < 2; i++) {
-      const { child, said, ended } = start({ PORT: port });
+      const { child, said, ended } = startServer(dataDir, { PORT: port });
       const [, address, token] = await said(/(http:\/\/localhost:\d+)\/setup\/([\w-]{43})\n/);
       links.push(token);
       const health = await fetch(`http://127.0.0.1:${port}/api/health`);
@@ -67,7 +31,7 @@ describe('the server', () => {
   });
 
   it('refuses a wrong setting by name, without a stack', async () => {
-    const { ended, output } = start({ PORT: 'eighty' });
+    const { ended, output } = startServer(dataDir, { PORT: 'eighty' });
     expect(await ended).toBe(1);
     expect(output()).toBe('Foothold cannot start.\nPORT: found "eighty", expected a port from 0 to 65535.\n');
   });

@@ -12,7 +12,7 @@ import { account, startProduct } from './product.ts';
 import { watchPage } from './watch-page.ts';
 
 /** `--full` runs as many futures as the target names. */
-const replicates = process.argv.includes('--full') ? 200 : 16;
+const replicates = process.argv.includes('--full') ? 200 : 40;
 const runs = replicates * (1 + optionsBesideWait);
 /** Futures of each option that the engine alone is measured on, half before the browser's turn and half after it. */
 const measured = Math.min(replicates, 16);
@@ -89,7 +89,9 @@ async function atWork(page: Page, memory: () => Promise<number>): Promise<number
   let early = 0;
   await progress.waitFor();
   for (;;) {
-    const done = Number(/\d+/.exec((await progress.textContent({ timeout: 2000 }).catch(() => '')) ?? '')?.[0]);
+    const done = Number(
+      /\d+/.exec((await progress.textContent({ timeout: 2000 }).catch(() => '')) ?? '')?.[0],
+    );
     if (Number.isNaN(done)) return early || memory();
     if (!early && done >= runs / 5) early = await memory();
     await slider.press('ArrowRight').catch(() => undefined);

@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { strFromU8, strToU8, unzipSync, zipSync } from 'fflate';
+import { decodeCellValues, encodeCellValues } from '../cells/cell-values.ts';
 import { createEnsembleMaps, mapNames } from './ensemble-maps.ts';
 
 const input = { width: 4, height: 1, years: [2030, 2040] };
@@ -42,6 +44,33 @@ describe('the maps of an ensemble', () => {
     for (const number of [0, 1]) add(resumed, number);
     expect(resumed.replicates()).toEqual([0, 1, 2]);
     expect(allMaps(resumed)).toEqual(allMaps(straight));
+  });
+
+  it('go on from a state of version 1, whose sums are of 32 bits', () => {
+    const begun = createEnsembleMaps(input);
+    for (const number of [0, 1]) add(begun, number);
+    const files = unzipSync(begun.state());
+    for (const year of input.years) {
+      const { values, ...size } = decodeCellValues(files[`cover-${year}`]);
+      expect(values).toBeInstanceOf(Uint16Array);
+      files[`cover-${year}`] = new Uint8Array(
+        encodeCellValues({ ...size, values: Uint32Array.from(values) }),
+      );
+    }
+    files['state.json'] = strToU8(strFromU8(files['state.json']).replace('"version":2', '"version":1'));
+    const resumed = createEnsembleMaps(input, zipSync(files));
+    add(resumed, 2);
+    const straight = createEnsembleMaps(input);
+    for (const number of [0, 1, 2]) add(straight, number);
+    expect(allMaps(resumed)).toEqual(allMaps(straight));
+  });
+
+  it('take in nothing of a replicate that lacks a kept year', () => {
+    const maps = createEnsembleMaps(input);
+    const frames = new Map([[2030, new Uint8Array(4)]]);
+    expect(() => maps.add(0, new Int16Array(4), frames)).toThrow('The cover of 2040 was not kept.');
+    for (const number of [0, 1, 2]) add(maps, number);
+    expect(maps.map('chance-2040')[0]).toBe(255);
   });
 
   it('refuse the state of another map, and a damaged one', () => {

@@ -120,7 +120,7 @@ export const comparisonSummarySchema = z.object({
   siteId: id,
   name: z.string(),
   status: z.enum(comparisonStatuses),
-  /** why it ended, null while it runs */
+  /** why it ended; null while it runs, and of a copy that nobody has gone on with */
   ending: z.enum(endings).nullable(),
   startedAt: instant,
   startedBy: z.string(),

@@ -1,5 +1,5 @@
 import Papa from 'papaparse';
-import { plainCell } from './csv.ts';
+import { plainCell } from '#contract/csv.ts';
 
 /** One row of a table read from text, with the line where it begins in the file, from 1. */
 export interface TableRow {

@@ -1,5 +1,5 @@
 import type { SeriesRow } from '#sim-core/spec/run-result.ts';
-import { csv } from './csv.ts';
+import { csv } from '#contract/csv.ts';
 
 /** The columns of a series in a CSV file, in order; the unit stands at the end of each name. */
 export const seriesColumns: readonly (readonly [key: keyof SeriesRow, header: string])[] = [

@@ -18,7 +18,8 @@ export const listed = (words: readonly string[]): string =>
  */
 export function summaryWords({ options, pairs, replicates }: OutlookFigures): string | undefined {
   if (pairs.length === 0) return undefined;
-  const names = (places: readonly number[]) => listed(places.map((i) => options[i].name));
+  const name = (i: number) => `“${options[i].name}”`;
+  const names = (places: readonly number[]) => listed(places.map(name));
   const places = options.map((_, i) => i);
   const best = places.reduce((lead, i) => (options[i].yearsSooner > options[lead].yearsSooner ? i : lead), 0);
   const pairOf = (a: number, b: number) =>
@@ -30,25 +31,24 @@ export function summaryWords({ options, pairs, replicates }: OutlookFigures): st
   const level = places.filter((i) => i !== best && !apart(i, best));
   const lead =
     level.length === 0
-      ? `${options[best].name} clearly recovers sooner than ${options.length > 2 ? 'every other option' : options[1 - best].name}.`
+      ? `${name(best)} clearly recovers sooner than ${options.length > 2 ? 'every other option' : name(1 - best)}.`
       : level.length === options.length - 1
         ? `No option can be told from the others by ${replicates} futures: whichever recovers soonest may be so by chance.`
         : `${names([best, ...level])} recover soonest, and ${replicates} futures cannot tell ${level.length > 1 ? 'them' : 'the two'} apart.`;
   const wait = options.findIndex((option) => option.wait);
   const acting = places.filter((i) => i !== wait);
   if (wait < 0 || level.length === options.length - 1) return lead;
-  const sooner = acting.filter((i) => apart(i, wait) && options[i].yearsSooner > 0);
-  const later = acting.filter((i) => apart(i, wait) && options[i].yearsSooner < 0);
+  // Of one that leads for sure, and of all where Wait does, it is said already.
+  const said = (i: number) => level.length === 0 && (i === best || best === wait);
+  const sooner = acting.filter((i) => apart(i, wait) && options[i].yearsSooner > 0 && !said(i));
+  const later = acting.filter((i) => apart(i, wait) && options[i].yearsSooner < 0 && !said(i));
   const like = acting.filter((i) => !apart(i, wait));
   const beside = [
-    // Said already where the one best option is all that there is beside Wait.
     sooner.length > 0 &&
-      !(level.length === 0 && acting.length === 1) &&
-      `${names(sooner)} clearly recover${sooner.length === 1 ? 's' : ''} sooner than Wait`,
+      `${names(sooner)} clearly recover${sooner.length === 1 ? 's' : ''} sooner than ${name(wait)}`,
     later.length > 0 &&
-      !(level.length === 0 && acting.length === 1) &&
-      `${names(later)} clearly recover${later.length === 1 ? 's' : ''} later than Wait`,
-    like.length > 0 && `${names(like)} cannot be told from Wait`,
+      `${names(later)} clearly recover${later.length === 1 ? 's' : ''} later than ${name(wait)}`,
+    like.length > 0 && `${names(like)} cannot be told from ${name(wait)}`,
   ].filter((words) => words !== false);
   return beside.length === 0 ? lead : `${lead} ${beside.join('; ')}.`;
 }

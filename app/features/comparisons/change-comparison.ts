@@ -1,6 +1,8 @@
 import {
   copyComparison,
   decide,
+  deleteComparison,
+  renameComparison,
   resumeComparison,
   startComparison,
   type Comparison,
@@ -26,3 +28,10 @@ export const recordDecision = (
   address: Address,
   decision: { optionId: string; reason: string; reservations: string },
 ): Promise<Comparison> => callEndpoint(decide, { params: paramsOf(address), body: decision });
+
+export const nameComparison = (address: Address, name: string): Promise<Comparison> =>
+  callEndpoint(renameComparison, { params: paramsOf(address), body: { name } });
+
+export const discardComparison = async (address: Address): Promise<void> => {
+  await callEndpoint(deleteComparison, { params: paramsOf(address) });
+};

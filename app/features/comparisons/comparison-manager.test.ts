@@ -22,7 +22,7 @@ function managerOf(server: Server, parts: Partial<ComparisonManagerParts> = {}) 
 const standsStill = (manager: ReturnType<typeof managerOf>) =>
   vi.waitFor(
     () => {
-      expect(isWorking(manager.get('comparison'))).toBe(false);
+      expect(isWorking(manager.get('comparison')?.phase)).toBe(false);
     },
     { timeout: 20_000 },
   );
@@ -157,6 +157,56 @@ describe('a comparison', () => {
       phase: 'failed',
       error: expect.stringMatching(/another digest/) as string,
     });
+  });
+
+  it('stores the counts of its maps now and then, while the runs go on', async () => {
+    const server = smallServer(smallComparison(8));
+    let clock = 0;
+    let versionThen = 0;
+    let release!: () => void;
+    const held = new Promise<void>((go) => (release = go));
+    const putMapsState: typeof server.server.putMapsState = async (...given) => {
+      await held;
+      return server.server.putMapsState(...given);
+    };
+    const manager = managerOf(server, {
+      server: { ...server.server, putMapsState },
+      // Two minutes have passed once half of the runs are in.
+      now: () => clock,
+    });
+    manager.subscribe(() => {
+      const { version, phase } = manager.get('comparison')!;
+      if (version > 8) clock = 200_000;
+      if (version > 14 && phase === 'running' && versionThen === 0) {
+        versionThen = version;
+        release();
+      }
+    });
+    manager.start(work(server.stored()));
+    await standsStill(manager);
+    expect(versionThen).toBe(15);
+    expect(manager.get('comparison')?.phase).toBe('done');
+    expect(server.states.get(0)?.replicates).toBe(8);
+  });
+
+  it('fails where the server refuses the counts for good', async () => {
+    const refused = new ProblemError(413, 'too-large', 'Too large.');
+    const server = smallServer(smallComparison(8));
+    let clock = 0;
+    const manager = managerOf(server, {
+      server: {
+        ...server.server,
+        putMapsState: () => Promise.reject(refused),
+      },
+      now: () => clock,
+    });
+    manager.subscribe(() => {
+      if (manager.get('comparison')!.version > 4) clock = 200_000;
+    });
+    manager.start(work(server.stored()));
+    await standsStill(manager);
+    expect(manager.get('comparison')).toMatchObject({ phase: 'failed', error: 'Too large.' });
+    expect(server.ended()).toBeUndefined();
   });
 
   it('waits for a server that is away and loses nothing', async () => {

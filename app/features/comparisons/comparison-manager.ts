@@ -75,8 +75,8 @@ export interface ComparisonManager {
 }
 
 const atWork: readonly ComparisonPhase[] = ['loading', 'running', 'saving'];
-export const isWorking = (live: LiveComparison | undefined): boolean =>
-  live !== undefined && atWork.includes(live.phase);
+export const isWorking = (phase: ComparisonPhase | undefined): boolean =>
+  phase !== undefined && atWork.includes(phase);
 
 /** Replicates of an ensemble that go to the server together, and how long one waits for company, ms. */
 const pieceSize = 8;
@@ -103,14 +103,14 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
   const jobs = new Map<string, Job>();
   const lives = createLiveList<LiveComparison>({
     idOf: (live) => live.comparisonId,
-    isAtWork: isWorking,
+    isAtWork: ({ phase }) => isWorking(phase),
     onChange: parts.onChange,
   });
   const { get, change } = lives;
 
   function start(work: WorkOn): void {
     const { id, siteId, name, plan } = work.comparison;
-    if (isWorking(get(id))) return;
+    if (isWorking(get(id)?.phase)) return;
     jobs.get(id)?.desk?.close();
     const job: Job = { work, abort: new AbortController(), asked: undefined };
     jobs.set(id, job);
@@ -294,7 +294,7 @@ export function createComparisonManager(parts: ComparisonManagerParts): Comparis
 
   const ask = (id: string, asked: NonNullable<End>) => {
     const job = jobs.get(id);
-    if (!job || !isWorking(get(id)) || job.asked) return;
+    if (!job || !isWorking(get(id)?.phase) || job.asked) return;
     job.asked = asked;
     job.running?.cancel();
   };

@@ -1,5 +1,5 @@
 import type { ComparisonSummary } from '#contract/comparisons.ts';
-import type { LiveComparison } from './comparison-manager.ts';
+import type { ComparisonPhase } from './comparison-manager.ts';
 
 const endingWords: Record<NonNullable<ComparisonSummary['ending']>, string> = {
   'all replicates': 'finished',
@@ -17,14 +17,15 @@ export function standingWords(
     replicates,
     decision,
   }: Pick<ComparisonSummary, 'status' | 'ending' | 'done' | 'replicates' | 'decision'>,
-  live: LiveComparison | undefined,
+  phase: ComparisonPhase | undefined,
 ): string {
   if (decision) return `decided: ${decision.optionName}`;
   const of = `${done} of ${replicates} futures`;
-  if (live?.phase === 'running') return 'at work in this tab';
-  if (live?.phase === 'saving') return 'saving its maps';
-  if (live?.phase === 'paused') return `paused, ${of}`;
-  if (live?.phase === 'failed') return `failed, ${of} are saved`;
+  if (phase === 'running') return 'at work in this tab';
+  if (phase === 'saving') return 'saving its maps';
+  if (phase === 'paused') return `paused, ${of}`;
+  if (phase === 'failed') return `failed, ${of} are saved`;
   if (status === 'running') return `not at work in this tab, ${of} are saved`;
-  return `${ending ? endingWords[ending] : status}, ${of}`;
+  // A copy stands still as it was made until somebody goes on with it.
+  return `${ending ? endingWords[ending] : 'a copy, not gone on with'}, ${of}`;
 }

@@ -2,16 +2,21 @@ import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { formatMoney } from '#contract/format-money.ts';
 import { formatNumber } from '#app/lib/formats.ts';
 import type { OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
+import { halo } from './option-line.tsx';
+import { spreadLabels } from './spread-labels.ts';
 
 const [width, height] = [420, 230];
 const [left, right, top, bottom] = [34, 14, 22, 30];
 /** room between the axis and what costs nothing */
 const inset = 16;
-/** so that words can be read across lines */
-const halo = 'stroke-ground [paint-order:stroke] [stroke-linejoin:round] [stroke-width:4px]';
-
 /** Cost against the years that an option recovers sooner than Wait, the efficient ones joined, and the budget line. */
-export function CostGain(props: { figures: OutlookFigures; currency: string; budget: number | null }) {
+export function CostGain(props: {
+  figures: OutlookFigures;
+  currency: string;
+  budget: number | null;
+  /** place of the option that was decided for */
+  chosen: number | undefined;
+}) {
   const { figures, currency, budget } = props;
   const { options, efficient, pairs } = figures;
   const costs = options.map((option) => option.cost ?? 0);
@@ -24,6 +29,18 @@ export function CostGain(props: { figures: OutlookFigures; currency: string; bud
   const most = Math.max(1, ...gains, ...intervals.map((each) => each?.high ?? 0));
   const x = (cost: number) => left + inset + ((width - left - inset - right) * cost) / mostCost;
   const y = (gain: number) => top + ((height - top - bottom) * (most - gain)) / (most - least);
+  // Names of points that stand close together are parted, each side by itself.
+  const sides = costs.map((cost) => x(cost) > width * 0.55);
+  const labels = options.map((_, i) => ({ left: sides[i], y: 0 }));
+  for (const side of [true, false]) {
+    const here = options.map((_, i) => i).filter((i) => sides[i] === side);
+    spreadLabels(
+      here.map((i) => y(gains[i]) - 7),
+      14,
+      top + 8,
+      height - bottom - 4,
+    ).forEach((at, n) => (labels[here[n]].y = at));
+  }
   return (
     <figure>
       <figcaption className="flex flex-wrap justify-between gap-x-4">
@@ -64,7 +81,6 @@ export function CostGain(props: { figures: OutlookFigures; currency: string; bud
         />
         {options.map((option, i) => {
           const interval = intervals[i];
-          const labelLeft = x(costs[i]) > width * 0.6;
           return (
             <g key={option.name}>
               {interval && (
@@ -81,23 +97,28 @@ export function CostGain(props: { figures: OutlookFigures; currency: string; bud
                 className={option.wait ? 'fill-ground stroke-ink' : 'fill-flag stroke-ink'}
                 strokeWidth={1.5}
               />
-              <text
-                x={x(costs[i]) + (labelLeft ? -9 : 9)}
-                y={y(gains[i]) - 7}
-                textAnchor={labelLeft ? 'end' : 'start'}
-                className={`fill-ink text-axis ${halo} ${efficient.includes(i) ? 'font-semibold' : ''}`}
-              >
-                {option.name.length > 26 ? `${option.name.slice(0, 25)}…` : option.name}
-              </text>
             </g>
           );
         })}
+        {/* After all lines, so that none runs over a name. */}
+        {options.map((option, i) => (
+          <text
+            key={option.name}
+            x={x(costs[i]) + (labels[i].left ? -10 : 10)}
+            y={labels[i].y}
+            textAnchor={labels[i].left ? 'end' : 'start'}
+            className={`fill-ink text-axis ${halo} ${efficient.includes(i) ? 'font-semibold' : ''}`}
+          >
+            {option.name.length > 26 ? `${option.name.slice(0, 25)}…` : option.name}
+            {props.chosen === i && ', chosen'}
+          </text>
+        ))}
       </svg>
       <ReadAsTable
         caption="Cost, and years that an option recovers sooner than Wait"
         heads={['Option', 'Cost', 'Years sooner', 'Efficient']}
         rows={options.map((option, i) => [
-          option.name,
+          `${option.name}${props.chosen === i ? ' (chosen)' : ''}`,
           formatMoney(costs[i], currency),
           formatNumber(gains[i], 1),
           efficient.includes(i) ? 'yes' : 'no',

@@ -1,14 +1,17 @@
-import { useRef, type KeyboardEvent, type PointerEvent } from 'react';
+import { useRef, useState, type KeyboardEvent, type PointerEvent } from 'react';
 import type { ComparisonPlan } from '#contract/comparisons.ts';
 import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { formatArea } from '#app/lib/formats.ts';
 import { useNarrow } from '#app/lib/use-media-query.ts';
 import type { OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
-import { dashOf, widthOf } from './line-styles.ts';
-import { Key } from './recovery-curves.tsx';
+import { LineKey } from './line-key.tsx';
+import { EndLabels, OptionLine } from './option-line.tsx';
+import { spreadLabels } from './spread-labels.ts';
 
 const height = 170;
-const [left, right, top, bottom] = [64, 24, 22, 26];
+const [left, top, bottom] = [64, 22, 26];
+/** years between the marks of a line; those of the next option stand a little later */
+const marksEvery = 8;
 
 /**
  * The yearline of a comparison: median cover of every option over the years, with the band of the middle half of its
@@ -22,12 +25,16 @@ export function CoverLines(props: {
   onYear: (year: number) => void;
   /** the maps show closing years, so the playhead moves nothing */
   closing: boolean;
+  /** place of the option that was decided for */
+  chosen?: number | undefined;
 }) {
   const { plan, figures, year, onYear } = props;
   const { surveyYear, years } = plan.common;
   const kept = plan.mapYears;
   const narrow = useNarrow();
   const width = narrow ? 420 : 1120;
+  const right = narrow ? 24 : 176;
+  const [lit, setLit] = useState<number>();
   const box = useRef<SVGSVGElement>(null);
   const options = figures?.options ?? [];
   const most = Math.max(1, ...options.flatMap(({ summary }) => [...(summary.fan[4] ?? [])]));
@@ -57,6 +64,8 @@ export function CoverLines(props: {
     onYear(kept[Math.min(kept.length - 1, Math.max(0, moves[event.key]))]);
     event.preventDefault();
   };
+  const ends = options.map(({ summary: { fan } }) => y(fan[2]?.[years] ?? 0));
+  const places = spreadLabels(ends, 14, top, height - bottom - 4);
   const pins = [...new Set(plan.options.flatMap(({ actions }) => actions.map((action) => action.year)))];
   const between = narrow ? 3 : 6;
   const ticks = Array.from({ length: between + 1 }, (_, i) => surveyYear + Math.round((i * years) / between));
@@ -88,30 +97,34 @@ export function CoverLines(props: {
           <text x={left - 8} y={y(0)} textAnchor="end" className="fill-ink-2 text-axis">
             0
           </text>
-          {options.map(({ name, summary: { fan } }) =>
+          {options.map(({ name, wait, summary: { fan } }, i) =>
             fan.length === 5 ? (
-              <path
+              <OptionLine
                 key={name}
-                d={`${line(fan[3])}L${[...fan[1]]
-                  .map((v, i) => `${x(surveyYear + i).toFixed(1)} ${y(v).toFixed(1)}`)
+                place={i}
+                {...{ wait, lit }}
+                line={line(fan[2])}
+                band={`${line(fan[3])}L${[...fan[1]]
+                  .map((v, at) => `${x(surveyYear + at).toFixed(1)} ${y(v).toFixed(1)}`)
                   .reverse()
                   .join('L')}Z`}
-                className="fill-shore"
-                opacity={0.2}
+                marked={markedYears(years, i, options.length).map(
+                  (at) => [x(surveyYear + at), y(fan[2][at])] as const,
+                )}
               />
             ) : null,
           )}
-          {options.map(({ name, wait, summary: { fan } }, i) =>
-            fan.length === 5 ? (
-              <path
-                key={name}
-                d={line(fan[2])}
-                fill="none"
-                className="stroke-ink"
-                strokeWidth={widthOf(wait)}
-                strokeDasharray={dashOf(i)}
-              />
-            ) : null,
+          {!narrow && (
+            <EndLabels
+              lit={lit}
+              longest={24}
+              labels={ends.map((at, i) => ({
+                x: width - right + 26,
+                y: places[i] + 4,
+                text: `${options[i].name}${props.chosen === i ? ', chosen' : ''}`,
+                from: [width - right, at] as const,
+              }))}
+            />
           )}
           {pins.map((at) => (
             <g key={at}>
@@ -153,7 +166,7 @@ export function CoverLines(props: {
           Covered area: median of the futures; bands hold the middle half. Maps are kept of{' '}
           {kept.length > years ? 'every year' : `${kept.length} of ${years + 1} years`}.
         </span>
-        <Key entries={options} />
+        <LineKey entries={options} chosen={props.chosen} lit={lit} onLit={setLit} />
       </figcaption>
       {options.length > 0 && (
         <ReadAsTable
@@ -172,3 +185,9 @@ export function CoverLines(props: {
     </figure>
   );
 }
+
+/** Years after the survey in which an option's line carries its mark, apart from those of the others. */
+const markedYears = (years: number, place: number, of: number): number[] =>
+  Array.from({ length: Math.ceil(years / marksEvery) }, (_, i) =>
+    Math.round(marksEvery * (i + (place + 0.5) / of)),
+  ).filter((at) => at < years);

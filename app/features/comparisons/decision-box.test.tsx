@@ -17,6 +17,7 @@ function show(changes: Partial<Comparison> = {}, props: { mayDecide?: boolean; e
       busy={false}
       error={undefined}
       onDecide={onDecide}
+      onFiles={vi.fn()}
       {...props}
     />,
   );

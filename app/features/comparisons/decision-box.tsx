@@ -3,6 +3,7 @@ import type { Comparison } from '#contract/comparisons.ts';
 import { Button } from '#app/components/button.tsx';
 import { TextAreaField } from '#app/components/inputs.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
+import { WordButton } from '#app/components/word-button.tsx';
 import { formatDateTime } from '#app/lib/formats.ts';
 
 export interface DecisionDraft {
@@ -20,6 +21,8 @@ export function DecisionBox(props: {
   busy: boolean;
   error: unknown;
   onDecide: (draft: DecisionDraft) => void;
+  /** shows the decision as a text with its figures as files */
+  onFiles: () => void;
 }) {
   const { comparison, mayDecide } = props;
   const { decision, plan, done } = comparison;
@@ -41,6 +44,11 @@ export function DecisionBox(props: {
         <p className="mt-2 text-note text-ink-2">
           {decision.decidedBy}, {formatDateTime(decision.decidedAt)}. The comparison is frozen; a copy may go
           on.
+        </p>
+        <p className="mt-1">
+          <WordButton lined onClick={props.onFiles}>
+            Text and figures of this decision
+          </WordButton>
         </p>
       </section>
     );

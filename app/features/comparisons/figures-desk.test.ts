@@ -17,6 +17,7 @@ const record = (replicate: number, recoveredYear: number | null): ReplicateRecor
   coveredArea: Array.from({ length: 13 }, (_, i) => i),
   droughtIndex: new Array<number>(12).fill(0),
   lost: { drought: 1, background: 0, grazing: 0, events: 0 },
+  drawn: {},
 });
 
 it('tells the worker each record once, and figures are those of all records', async () => {
@@ -32,7 +33,9 @@ it('tells the worker each record once, and figures are those of all records', as
   const desk = createFiguresDesk(() => portWorker(face).worker);
   const known = comparison.plan.options.map(() => [new Map<number, ReplicateRecord>()]);
   const fill = (replicate: number) =>
-    known.forEach(([records], option) => records.set(replicate, record(replicate, 2024 + replicate - option)));
+    known.forEach(([records], option) =>
+      records.set(replicate, record(replicate, 2024 + replicate - option)),
+    );
   const same = async () =>
     expect(await desk.figures(comparison, known)).toEqual(
       comparisonFigures(comparison.plan, known, comparison.id),
@@ -44,7 +47,12 @@ it('tells the worker each record once, and figures are those of all records', as
   await same();
   expect(taken.toSorted()).toEqual([0, 0, 1, 1, 2, 2]);
   // Other records, as when a page reads what is stored: nothing of the old ones is left.
-  const other = comparison.plan.options.map(() => [new Map([[3, record(3, null)], [4, record(4, 2025)]])]);
+  const other = comparison.plan.options.map(() => [
+    new Map([
+      [3, record(3, null)],
+      [4, record(4, 2025)],
+    ]),
+  ]);
   expect(await desk.figures(comparison, other)).toEqual(
     comparisonFigures(comparison.plan, other, comparison.id),
   );

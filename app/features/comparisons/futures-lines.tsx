@@ -4,6 +4,12 @@ import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 
 const [rowWidth, height, middle] = [4, 84, 42];
 
+/** Years that a future recovers before the drought, and where it stands in the strip. */
+interface Lead {
+  readonly years: number;
+  readonly x: number;
+}
+
 /** What became of one future, in words. */
 export function futureWords(record: ReplicateRecord, horizon: number): string {
   const { recoveredYear, droughtYear, lostYear } = record;
@@ -35,6 +41,16 @@ export function FuturesLines(props: {
   const place = sorted.findIndex(({ replicate }) => replicate === picked);
   const at = place < 0 ? undefined : sorted[place];
   const scale = (middle - 4) / years;
+  const leads = sorted.map((record, i): Lead => ({ years: lead(record), x: i * rowWidth + 0.5 }));
+  const bars = (some: readonly Lead[]) =>
+    some
+      .filter((each) => each.years !== -Infinity)
+      .map((each) => {
+        const size = Math.max(1, Math.abs(each.years) * scale);
+        return `M${each.x} ${middle}h3v${(each.years > 0 ? -size : size).toFixed(1)}h-3z`;
+      })
+      .join('');
+  const dots = (some: readonly Lead[]) => some.map(({ x }) => `M${x + 1.5} ${middle + 9}h0`).join('');
   const choose = (to: number) => setPicked(sorted[Math.min(sorted.length - 1, Math.max(0, to))]?.replicate);
   return (
     <div>
@@ -46,7 +62,7 @@ export function FuturesLines(props: {
         aria-valuemax={sorted.length}
         aria-valuenow={Math.max(0, place) + 1}
         aria-valuetext={at ? `Future ${at.replicate + 1}: ${futureWords(at, horizon)}` : 'none picked'}
-        className="cursor-pointer outline-offset-2"
+        className="mb-2 cursor-pointer outline-offset-2"
         onKeyDown={(event) => {
           const moves: Record<string, number> = {
             ArrowLeft: -1,
@@ -78,33 +94,27 @@ export function FuturesLines(props: {
             className="stroke-ink"
             vectorEffect="non-scaling-stroke"
           />
-          {sorted.map((record, i) => {
-            const years = lead(record);
-            const x = i * rowWidth + 0.5;
-            const chosen = at === record;
-            if (years === -Infinity)
-              return (
-                <rect
-                  key={record.replicate}
-                  x={x}
-                  y={middle + 6}
-                  width={3}
-                  height={3}
-                  className={chosen ? 'fill-flag' : 'fill-ink-2'}
-                />
-              );
-            const size = Math.max(1, Math.abs(years) * scale);
-            return (
-              <rect
-                key={record.replicate}
-                x={x}
-                y={years > 0 ? middle - size : middle}
-                width={3}
-                height={size}
-                className={chosen ? 'fill-flag' : years > 0 ? 'fill-ink' : 'fill-shore'}
-              />
-            );
-          })}
+          <path d={bars(leads.filter((each) => each.years > 0))} className="fill-ink" />
+          <path d={bars(leads.filter((each) => each.years <= 0))} className="fill-shore" />
+          {/* A line of no length with round ends stays a dot, however wide a future is drawn. */}
+          <path
+            d={dots(leads.filter(({ years }) => years === -Infinity))}
+            className="stroke-ink-2"
+            strokeWidth={4}
+            strokeLinecap="round"
+            vectorEffect="non-scaling-stroke"
+          />
+          {at && leads[place].years === -Infinity ? (
+            <path
+              d={dots([leads[place]])}
+              className="stroke-flag"
+              strokeWidth={8}
+              strokeLinecap="round"
+              vectorEffect="non-scaling-stroke"
+            />
+          ) : (
+            at && <path d={bars([leads[place]])} className="fill-flag" />
+          )}
         </svg>
       </div>
       <p className="min-h-9 text-note text-ink-2" aria-live="polite">

@@ -100,3 +100,12 @@ export function keepComparison(queryClient: QueryClient, comparison: Comparison)
   queryClient.setQueryData<Comparison>(comparisonKey(comparison.siteId, comparison.id), comparison);
   void queryClient.invalidateQueries({ queryKey: [...siteKey(comparison.siteId), 'comparisons'] });
 }
+
+/** After one is deleted. */
+export function dropComparison(
+  queryClient: QueryClient,
+  { siteId, id }: Pick<Comparison, 'siteId' | 'id'>,
+): void {
+  queryClient.removeQueries({ queryKey: comparisonKey(siteId, id) });
+  void queryClient.invalidateQueries({ queryKey: [...siteKey(siteId), 'comparisons'] });
+}

@@ -1,6 +1,7 @@
 import { Table } from '#app/components/table.tsx';
 import { formatArea } from '#app/lib/formats.ts';
 import type { LossCause, OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
+import { OptionName } from './chosen.tsx';
 
 const causes: Record<LossCause, string> = {
   drought: 'to drought',
@@ -10,7 +11,8 @@ const causes: Record<LossCause, string> = {
 };
 
 /** What was lost in an average future, by cause, and how often what had recovered was lost again. */
-export function LossTable({ figures: { options, replicates } }: { figures: OutlookFigures }) {
+export function LossTable(props: { figures: OutlookFigures; chosen: number | undefined }) {
+  const { options, replicates } = props.figures;
   const told = (Object.keys(causes) as LossCause[]).filter((cause) =>
     options.some(({ lost }) => lost[cause] > 0),
   );
@@ -25,7 +27,13 @@ export function LossTable({ figures: { options, replicates } }: { figures: Outlo
         rows={options}
         rowKey={({ name }) => name}
         columns={[
-          { key: 'option', head: 'option', cell: ({ name }) => <b>{name}</b> },
+          {
+            key: 'option',
+            head: 'option',
+            cell: (option) => (
+              <OptionName name={option.name} chosen={options[props.chosen ?? -1] === option} />
+            ),
+          },
           ...told.map((cause) => ({
             key: cause,
             head: causes[cause],

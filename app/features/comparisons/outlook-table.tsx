@@ -1,10 +1,11 @@
 import { Table } from '#app/components/table.tsx';
 import { of100 } from '#sim-core/compare/chance-words.ts';
 import { nearChance, type ComparisonFigures } from '#sim-core/compare/comparison-figures.ts';
+import { OptionName } from './chosen.tsx';
 
 /** Chances to close in time by outlook, what each option may be regretted by, and which is never far from the best. */
-export function OutlookTable({ figures }: { figures: ComparisonFigures }) {
-  const { outlooks, regret } = figures;
+export function OutlookTable(props: { figures: ComparisonFigures; chosen: number | undefined }) {
+  const { outlooks, regret } = props.figures;
   if (!regret) return null;
   const options = outlooks[0].options;
   const rows = options.map((option, i) => ({ option, i, ...regret.rows[i] }));
@@ -21,7 +22,11 @@ export function OutlookTable({ figures }: { figures: ComparisonFigures }) {
         rows={rows}
         rowKey={({ i }) => String(i)}
         columns={[
-          { key: 'option', head: 'option', cell: ({ option }) => <b>{option.name}</b> },
+          {
+            key: 'option',
+            head: 'option',
+            cell: ({ option, i }) => <OptionName name={option.name} chosen={i === props.chosen} />,
+          },
           ...outlooks.map((outlook, o) => ({
             key: `o${o}`,
             head: outlook.name,

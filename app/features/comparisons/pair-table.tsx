@@ -2,11 +2,14 @@ import { Table } from '#app/components/table.tsx';
 import { formatNumber } from '#app/lib/formats.ts';
 import { of100 } from '#sim-core/compare/chance-words.ts';
 import type { OutlookFigures, Pair } from '#sim-core/compare/comparison-figures.ts';
+import { toldApart } from '#sim-core/compare/summary-words.ts';
+import { Chosen, OptionName } from './chosen.tsx';
 
 const [width, height] = [120, 16];
 
 /** Differences of pairs that share their luck, with their intervals, and how much sharper that makes them. */
-export function PairTable({ figures: { pairs, options, replicates } }: { figures: OutlookFigures }) {
+export function PairTable(props: { figures: OutlookFigures; chosen: number | undefined }) {
+  const { pairs, options, replicates } = props.figures;
   const least = Math.min(0, ...pairs.map(({ sooner }) => sooner.low));
   const most = Math.max(1, ...pairs.map(({ sooner }) => sooner.high));
   const x = (years: number) => 4 + ((width - 8) * (years - least)) / (most - least);
@@ -15,15 +18,15 @@ export function PairTable({ figures: { pairs, options, replicates } }: { figures
     .filter((times) => Number.isFinite(times))
     .sort((a, b) => a - b);
   const typical = sharper[Math.floor(sharper.length / 2)];
-  const drawing = ({ sooner }: Pair) => (
+  const drawing = (pair: Pair) => (
     <svg width={width} height={height} aria-hidden="true" className="block">
       <path d={`M${x(0)} 0V${height}`} className="stroke-rule" />
-      <path d={`M${x(sooner.low)} 8H${x(sooner.high)}`} className="stroke-ink" strokeWidth={3} />
+      <path d={`M${x(pair.sooner.low)} 8H${x(pair.sooner.high)}`} className="stroke-ink" strokeWidth={3} />
       <circle
-        cx={x(sooner.estimate)}
+        cx={x(pair.sooner.estimate)}
         cy={8}
         r={4.5}
-        className={sooner.low > 0 || sooner.high < 0 ? 'fill-ink' : 'fill-ground stroke-ink'}
+        className={toldApart(pair) ? 'fill-ink' : 'fill-ground stroke-ink'}
         strokeWidth={1.5}
       />
     </svg>
@@ -44,7 +47,9 @@ export function PairTable({ figures: { pairs, options, replicates } }: { figures
             head: 'recovers sooner by',
             cell: ({ first, second }) => (
               <>
-                <b>{options[first].name}</b> than {options[second].name}
+                <OptionName name={options[first].name} chosen={first === props.chosen} /> than{' '}
+                {options[second].name}
+                {second === props.chosen && <Chosen />}
               </>
             ),
           },

@@ -1,10 +1,14 @@
+import { useState } from 'react';
 import type { CurvePoint } from '#sim-core/index.ts';
 import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { formatNumber } from '#app/lib/formats.ts';
 import { useNarrow } from '#app/lib/use-media-query.ts';
-import { dashOf, widthOf } from './line-styles.ts';
+import { LineKey } from './line-key.tsx';
+import { dashOf, marksAt, widthOf } from './line-styles.ts';
+import { EndLabels, OptionLine } from './option-line.tsx';
+import { spreadLabels } from './spread-labels.ts';
 
-const [left, right, top, plot, foot] = [52, 26, 8, 176, 30];
+const [left, top, plot, foot] = [52, 8, 176, 30];
 /** height of a line of the numbers still open */
 const openRow = 14;
 
@@ -19,9 +23,18 @@ export interface Curve {
  * Share of futures that have recovered by each year (one less Kaplan and Meier's), with 95 % bands, and below it how many
  * were still open.
  */
-export function RecoveryCurves(props: { curves: readonly Curve[]; surveyYear: number; years: number }) {
+export function RecoveryCurves(props: {
+  curves: readonly Curve[];
+  surveyYear: number;
+  years: number;
+  /** place of the option that was decided for */
+  chosen: number | undefined;
+}) {
   const { curves, surveyYear, years } = props;
-  const width = useNarrow() ? 400 : 560;
+  const narrow = useNarrow();
+  const width = narrow ? 400 : 600;
+  const right = narrow ? 28 : 150;
+  const [lit, setLit] = useState<number>();
   const height = top + plot + foot + openRow * curves.length;
   const x = (time: number) => left + ((width - left - right) * time) / years;
   const y = (share: number) => top + plot * (1 - share);
@@ -44,6 +57,8 @@ export function RecoveryCurves(props: { curves: readonly Curve[]; surveyYear: nu
   };
   const openAt = (curve: readonly CurvePoint[], time: number) =>
     [...curve].reverse().find((point) => point.time <= time)?.open ?? 1;
+  const ends = curves.map(({ curve }) => y(1 - openAt(curve, years)));
+  const places = spreadLabels(ends, 14, top, top + plot - 4);
   const ticks = Array.from({ length: 5 }, (_, i) => Math.round((i * years) / 4));
   return (
     <figure>
@@ -62,19 +77,31 @@ export function RecoveryCurves(props: { curves: readonly Curve[]; surveyYear: nu
             </text>
           </g>
         ))}
-        {curves.map(({ name, curve }) =>
-          curve.length > 0 ? <path key={name} d={band(curve)} className="fill-shore" opacity={0.22} /> : null,
-        )}
         {curves.map(({ name, curve, wait }, i) => (
-          <path
+          <OptionLine
             key={name}
-            d={steps(curve, (p) => p.open)}
-            fill="none"
-            className="stroke-ink"
-            strokeWidth={widthOf(wait)}
-            strokeDasharray={dashOf(i)}
+            place={i}
+            {...{ wait, lit }}
+            line={steps(curve, (p) => p.open)}
+            band={curve.length > 0 ? band(curve) : undefined}
+            marked={[0.3, 0.55, 0.8].map((share) => {
+              const time = years * (share + (i / curves.length) * 0.2);
+              return [x(time), y(1 - openAt(curve, time))] as const;
+            })}
           />
         ))}
+        {!narrow && (
+          <EndLabels
+            lit={lit}
+            longest={20}
+            labels={ends.map((at, i) => ({
+              x: width - right + 24,
+              y: places[i] + 4,
+              text: `${curves[i].name}${props.chosen === i ? ', chosen' : ''}`,
+              from: [width - right, at] as const,
+            }))}
+          />
+        )}
         {ticks.map((time) => (
           <g key={time}>
             <path d={`M${x(time)} ${y(0)}v5`} className="stroke-ink" />
@@ -93,10 +120,14 @@ export function RecoveryCurves(props: { curves: readonly Curve[]; surveyYear: nu
           return (
             <g key={name}>
               <path
-                d={`M4 ${at - 4}H34`}
+                d={`M2 ${at - 4}H30`}
                 className="stroke-ink"
                 strokeWidth={widthOf(wait)}
                 strokeDasharray={dashOf(i)}
+              />
+              <path
+                d={marksAt(i, [[16, at - 4]])}
+                className={wait ? 'fill-ground stroke-ink' : 'fill-ink stroke-ground'}
               />
               {ticks.map((time) => (
                 <text key={time} x={x(time)} y={at} textAnchor="middle" className="fill-ink-2 text-axis">
@@ -107,7 +138,7 @@ export function RecoveryCurves(props: { curves: readonly Curve[]; surveyYear: nu
           );
         })}
       </svg>
-      <Key entries={curves} />
+      <LineKey entries={curves} chosen={props.chosen} lit={lit} onLit={setLit} />
       <ReadAsTable
         caption="Share of futures recovered by the end of the year, with its 95 % band"
         heads={['Year', ...curves.map(({ name }) => name)]}
@@ -122,26 +153,5 @@ export function RecoveryCurves(props: { curves: readonly Curve[]; surveyYear: nu
         ])}
       />
     </figure>
-  );
-}
-
-/** Which line is whose. */
-export function Key({ entries }: { entries: readonly { name: string; wait: boolean }[] }) {
-  return (
-    <ul className="flex flex-wrap gap-x-5 text-note">
-      {entries.map(({ name, wait }, i) => (
-        <li key={name} className="flex items-center gap-2">
-          <svg width={34} height={8} aria-hidden="true">
-            <path
-              d="M0 4H34"
-              className="stroke-ink"
-              strokeWidth={widthOf(wait)}
-              strokeDasharray={dashOf(i)}
-            />
-          </svg>
-          {name}
-        </li>
-      ))}
-    </ul>
   );
 }

@@ -31,11 +31,12 @@ export function Page() {
   );
 
   const comparisonLists = useQueries({
-    queries: withRuns.map(({ site }) => comparisonsQuery(site.id, { limit: 20 })),
+    queries: mine.map(({ site }) => comparisonsQuery(site.id, { limit: 20 })),
   });
-  const undecided = withRuns.flatMap(({ site, role }, i) =>
+  const undecided = mine.flatMap(({ site, role }, i) =>
     (comparisonLists[i].data?.comparisons ?? [])
-      .filter(({ decision, status, done }) => decision === null && status !== 'running' && done > 1)
+      // A copy waits for somebody to go on with it, not for a decision.
+      .filter(({ decision, ending, done }) => decision === null && ending !== null && done > 1)
       .map((comparison) => ({ site, role, comparison })),
   );
 

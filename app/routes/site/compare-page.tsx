@@ -6,6 +6,7 @@ import { ProblemNotice } from '#app/components/notice.tsx';
 import { Table } from '#app/components/table.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { registerComparison, type StartBody } from '#app/features/comparisons/change-comparison.ts';
+import { isWorking } from '#app/features/comparisons/comparison-manager.ts';
 import { standingWords } from '#app/features/comparisons/comparison-words.ts';
 import { comparisonsQuery, keepComparison } from '#app/features/comparisons/get-comparison.ts';
 import { useLiveComparisons } from '#app/features/comparisons/live-comparisons.ts';
@@ -18,6 +19,7 @@ import { CompositionProblems } from '#app/features/runs/composition-problems.tsx
 import { randomSeed } from '#app/features/runs/random-seed.ts';
 import { estimateSeconds } from '#app/features/runs/run-pace.ts';
 import { formatDateTime } from '#app/lib/formats.ts';
+import { ComparisonDeeds } from './comparison-deeds.tsx';
 import { useWorkOnComparison } from './comparison-ground.ts';
 import { SitePage } from './site-page.tsx';
 import { useSite } from './use-site.ts';
@@ -129,9 +131,23 @@ export function Page() {
                   <b className="text-body font-semibold">
                     {standingWords(
                       comparison,
-                      live.find(({ comparisonId }) => comparisonId === comparison.id),
+                      live.find(({ comparisonId }) => comparisonId === comparison.id)?.phase,
                     )}
                   </b>
+                ),
+              },
+              {
+                key: 'deeds',
+                head: <span className="sr-only">deeds</span>,
+                cell: (comparison) => (
+                  <ComparisonDeeds
+                    comparison={comparison}
+                    trigger={<WordButton aria-label={`More for ${comparison.name}`}>More</WordButton>}
+                    working={live.some(
+                      ({ comparisonId, phase }) => comparisonId === comparison.id && isWorking(phase),
+                    )}
+                    onDeleted={() => undefined}
+                  />
                 ),
               },
               {

@@ -2,15 +2,17 @@ import { useQuery } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import type { Comparison } from '#contract/comparisons.ts';
 import { worksOf } from '#contract/works.ts';
+import { BlankSelect } from '#app/components/blank.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
 import type { OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
-import type { LiveComparison } from '#app/features/comparisons/comparison-manager.ts';
+import { Chosen } from '#app/features/comparisons/chosen.tsx';
 import { CoverLines } from '#app/features/comparisons/cover-lines.tsx';
 import { ensembleMapQuery } from '#app/features/comparisons/get-comparison.ts';
 import { comparisonManager } from '#app/features/comparisons/live-comparisons.ts';
 import { worksOnMap } from '#app/features/options/board/works-on-map.ts';
 import { useSearchPatch } from '#app/lib/use-search-patch.ts';
+import { useNarrow } from '#app/lib/use-media-query.ts';
 import { useThrottled } from '#app/lib/use-throttled.ts';
 import type { MapRaster } from '#app/map/map-raster.ts';
 import type { MapClear, MapView } from '#app/map/map-view.ts';
@@ -29,11 +31,16 @@ type Show = keyof typeof shows;
 /** Two to four maps that move together in place and time, with the lines of all options below them. */
 export function ComparisonMaps(props: {
   comparison: Comparison;
-  live: LiveComparison | undefined;
+  /** this tab works on it, so its maps are at hand as they grow */
+  live: boolean;
+  /** rises as records come */
+  version: number;
   outlook: number;
   figures: OutlookFigures | undefined;
+  /** place of the option that was decided for */
+  chosen: number | undefined;
 }) {
-  const { comparison, live, outlook, figures } = props;
+  const { comparison, live, version, outlook, figures } = props;
   const { plan } = comparison;
   const [search] = useSearchParams();
   const patchSearch = useSearchPatch();
@@ -50,80 +57,105 @@ export function ComparisonMaps(props: {
   const [view, setView] = useState<MapView>();
   // The first map has the legend; all keep clear of it, so that the ground lies alike in each.
   const [clear, setClear] = useState<MapClear>();
-  const [chosen, setChosen] = useState<readonly number[]>(() => plan.options.map((_, i) => i).slice(0, 4));
+  const narrow = useNarrow();
+  const [picked, setPicked] = useState<readonly number[]>(() => plan.options.map((_, i) => i).slice(0, 4));
   const [swipe, setSwipe] = useState<number>();
   const capacity = useComparisonCapacity(comparison);
-  const panels = chosen.length > 0 ? chosen : [0];
+  // Wait against itself would show nothing.
+  const able = picked.filter((option) => show !== 'difference' || option !== wait);
+  const panels = able.length > 0 ? able : [show === 'difference' && wait === 0 ? 1 : 0];
+  const swiped = swipe !== undefined && panels.length > 1;
   const map = (option: number, small: boolean) => (
     <EnsembleMap
       key={option}
-      {...{
-        comparison,
-        live,
-        option,
-        outlook,
-        show,
-        year,
-        wait,
-        capacity,
-        view,
-        onView: setView,
-        small,
-        clear,
-        onClear: setClear,
-      }}
+      {...{ comparison, live, version, option, outlook, show, year, wait, capacity, view, small, clear }}
+      onView={setView}
+      onClear={setClear}
     />
+  );
+  const choices = (Object.keys(shows) as Show[]).map((key) => ({
+    key,
+    label: shows[key],
+    disabled: key === 'difference' && wait < 0,
+  }));
+  const onShow = (key: Show) => patchSearch({ show: key === 'cover' ? undefined : key });
+  const nameOf = (option: number) => plan.options[option].name;
+  const arrangement = (
+    <>
+      {panels.length > 1 && (
+        <WordButton lined onClick={() => setSwipe(swiped ? undefined : 50)}>
+          {swiped ? 'Side by side' : `Swipe ${nameOf(panels[0])} and ${nameOf(panels[1])}`}
+        </WordButton>
+      )}
+      {plan.options.length > 2 && (
+        <fieldset className="flex flex-wrap gap-x-4">
+          <legend className="sr-only">Options on maps, four at most</legend>
+          {plan.options.map(({ name }, i) => (
+            <label
+              key={name}
+              className="inline-flex min-h-7 cursor-pointer items-center gap-1.5 text-[13px] has-disabled:cursor-not-allowed has-disabled:text-ink-3 touch:min-h-11"
+            >
+              <input
+                type="checkbox"
+                className="size-4 accent-ink"
+                checked={panels.includes(i)}
+                disabled={
+                  (show === 'difference' && i === wait) ||
+                  (!picked.includes(i) && picked.length >= 4) ||
+                  (panels.length === 1 && panels[0] === i)
+                }
+                onChange={() =>
+                  setPicked(
+                    picked.includes(i)
+                      ? picked.filter((each) => each !== i)
+                      : [...picked, i].sort((a, b) => a - b),
+                  )
+                }
+              />
+              {name}
+            </label>
+          ))}
+        </fieldset>
+      )}
+    </>
   );
   return (
     <section aria-label="Maps" className="border-b border-ink pt-3 pb-2">
       <div className="flex flex-wrap items-center gap-x-6 gap-y-1 pb-2">
-        <WordChoice
-          label="Maps show"
-          showLabel
-          options={(Object.keys(shows) as Show[]).map((key) => ({
-            key,
-            label: shows[key],
-            disabled: key === 'difference' && wait < 0,
-          }))}
-          value={show}
-          onChange={(key) => patchSearch({ show: key === 'cover' ? undefined : key })}
-        />
-        {plan.options.length > 1 && (
-          <WordButton lined onClick={() => setSwipe(swipe === undefined ? 50 : undefined)}>
-            {swipe === undefined ? 'Swipe the first two' : 'Side by side'}
-          </WordButton>
+        {narrow ? (
+          <p className="flex items-baseline gap-x-1.5 text-[14.5px]">
+            <span>Maps show</span>
+            <BlankSelect
+              label="Maps show"
+              value={show}
+              onChange={(event) => onShow(event.target.value as Show)}
+            >
+              {choices.map(({ key, label, disabled }) => (
+                <option key={key} value={key} disabled={disabled}>
+                  {label}
+                </option>
+              ))}
+            </BlankSelect>
+          </p>
+        ) : (
+          <WordChoice label="Maps show" showLabel options={choices} value={show} onChange={onShow} />
         )}
-        {plan.options.length > 2 && (
-          <span className="flex flex-wrap gap-x-4">
-            {plan.options.map(({ name }, i) => (
-              <label
-                key={name}
-                className="inline-flex min-h-7 cursor-pointer items-center gap-1.5 text-[13px] touch:min-h-11"
-              >
-                <input
-                  type="checkbox"
-                  className="size-4 accent-ink"
-                  checked={chosen.includes(i)}
-                  disabled={!chosen.includes(i) && chosen.length >= 4}
-                  onChange={() =>
-                    setChosen(
-                      chosen.includes(i)
-                        ? chosen.filter((each) => each !== i)
-                        : [...chosen, i].sort((a, b) => a - b),
-                    )
-                  }
-                />
-                {name}
-              </label>
-            ))}
-          </span>
+        {narrow ? (
+          <details className="w-full text-note">
+            <summary className="inline-block min-h-7 border-b-2 border-rule leading-7 touch:min-h-11 touch:leading-[44px]">
+              Which options, and how they stand
+            </summary>
+            <div className="flex flex-wrap items-center gap-x-5">{arrangement}</div>
+          </details>
+        ) : (
+          arrangement
         )}
       </div>
-      {swipe !== undefined && panels.length > 1 ? (
+      {swiped ? (
         <div>
           <p className="flex justify-between gap-4 pb-1 text-[13px] font-semibold">
-            <span>{plan.options[panels[0]].name}</span>
-            <span className="text-right">{plan.options[panels[1]].name}</span>
+            <span>{nameOf(panels[0])}</span>
+            <span className="text-right">{nameOf(panels[1])}</span>
           </p>
           <div className="relative h-[44dvh] min-h-[280px] overflow-hidden">
             <div className="absolute inset-0">{map(panels[0], false)}</div>
@@ -140,7 +172,7 @@ export function ComparisonMaps(props: {
             min={0}
             max={100}
             value={swipe}
-            aria-label={`Share of the map that shows ${plan.options[panels[0]].name}; the rest shows ${plan.options[panels[1]].name}`}
+            aria-label={`Share of the map that shows ${nameOf(panels[0])}; the rest shows ${nameOf(panels[1])}`}
             className="h-7 w-full accent-ink touch:h-11"
             onChange={(event) => setSwipe(Number(event.target.value))}
           />
@@ -153,7 +185,8 @@ export function ComparisonMaps(props: {
             <div key={option} className="bg-ground">
               <div className="relative h-[38dvh] min-h-[240px]">{map(option, i > 0)}</div>
               <p className="border-t border-ink px-3 py-1 text-[13px] font-semibold">
-                {plan.options[option].name}
+                {nameOf(option)}
+                {option === props.chosen && <Chosen />}
               </p>
             </div>
           ))}
@@ -161,6 +194,7 @@ export function ComparisonMaps(props: {
       )}
       <CoverLines
         {...{ plan, figures, year }}
+        chosen={props.chosen}
         onYear={(to) => patchSearch({ year: String(to) })}
         closing={show === 'closing'}
       />
@@ -170,7 +204,8 @@ export function ComparisonMaps(props: {
 
 function EnsembleMap(props: {
   comparison: Comparison;
-  live: LiveComparison | undefined;
+  live: boolean;
+  version: number;
   option: number;
   outlook: number;
   show: Show;
@@ -183,12 +218,12 @@ function EnsembleMap(props: {
   clear: MapClear | undefined;
   onClear: (clear: MapClear) => void;
 }) {
-  const { comparison, live, option, outlook, show, year, wait, small } = props;
+  const { comparison, live, version, option, outlook, show, year, wait, small } = props;
   const { plan, grid } = comparison;
   const { surveyYear, years } = plan.common;
   const name = show === 'closing' ? 'closing' : `${show === 'chance' ? 'chance' : 'cover'}-${year}`;
-  const own = useEnsembleMap(comparison, live, option, outlook, name);
-  const ofWait = useEnsembleMap(comparison, live, Math.max(0, wait), outlook, name);
+  const own = useEnsembleMap(comparison, live, version, option, outlook, name);
+  const ofWait = useEnsembleMap(comparison, live, version, Math.max(0, wait), outlook, name);
   const raster = useMemo((): MapRaster | undefined => {
     if (!own) return undefined;
     if (show === 'closing')
@@ -241,16 +276,17 @@ function EnsembleMap(props: {
 /** A map as this tab has it while it works, else as it is stored. */
 function useEnsembleMap(
   comparison: Comparison,
-  live: LiveComparison | undefined,
+  live: boolean,
+  upTo: number,
   option: number,
   outlook: number,
   name: string,
 ): Uint8Array | Int16Array | undefined {
-  const version = useThrottled(live && live.phase !== 'loading' ? live.version : 0, 4000);
+  const version = useThrottled(live ? upTo : 0, 4000);
   const fromTab = useQuery({
     queryKey: ['live-map', comparison.id, option, outlook, name, version],
     queryFn: async () => (await comparisonManager.map(comparison.id, option, outlook, name)) ?? null,
-    enabled: live !== undefined && version > 0,
+    enabled: live && version > 0,
     placeholderData: (before, query) =>
       query?.queryKey[4] === name && query.queryKey[2] === option ? before : undefined,
     structuralSharing: false,

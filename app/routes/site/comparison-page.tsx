@@ -5,7 +5,7 @@ import { NotFound } from '#app/components/message-page.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { comparisonQuery } from '#app/features/comparisons/get-comparison.ts';
-import { useLiveComparison } from '#app/features/comparisons/live-comparisons.ts';
+import { useLivePart } from '#app/features/comparisons/live-comparisons.ts';
 import { ProblemError } from '#app/lib/api-client.ts';
 import { PageTop } from '../shell/paper-page.tsx';
 import { ComparisonView } from './comparison-view.tsx';
@@ -16,13 +16,13 @@ import { useSite } from './use-site.ts';
 export function Page() {
   const { site } = useSite();
   const comparisonId = useParams().comparisonId ?? '';
-  const live = useLiveComparison(comparisonId);
+  const phase = useLivePart(comparisonId, 'phase');
   const comparison = useQuery({
     ...comparisonQuery(site.id, comparisonId),
     // Another tab may be at work on it.
-    refetchInterval: (query) => (query.state.data?.status === 'running' && !live ? 5000 : false),
+    refetchInterval: (query) => (query.state.data?.status === 'running' && !phase ? 5000 : false),
   });
-  if (comparison.data) return <ComparisonView key={comparisonId} comparison={comparison.data} live={live} />;
+  if (comparison.data) return <ComparisonView key={comparisonId} comparison={comparison.data} />;
   const status = comparison.error instanceof ProblemError ? comparison.error.status : undefined;
   if (status !== undefined && [400, 403, 404].includes(status))
     return <NotFound top={<PageTop />} what="comparison" />;

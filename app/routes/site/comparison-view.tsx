@@ -3,77 +3,71 @@ import { useEffect, useMemo, useRef, useState } from 'react';
 import { useNavigate } from 'react-router-dom';
 import type { Comparison } from '#contract/comparisons.ts';
 import { CautionList } from '#app/components/caution-list.tsx';
-import { Button } from '#app/components/button.tsx';
+import { MenuItem } from '#app/components/menu.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
-import { Progress } from '#app/components/progress.tsx';
 import { sayDone } from '#app/components/toast.tsx';
 import { WordButton, WordLink } from '#app/components/word-button.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
 import { goOnInCopy, recordDecision, reopenComparison } from '#app/features/comparisons/change-comparison.ts';
-import { useComparisonFigures } from '#app/features/comparisons/use-comparison-figures.ts';
-import { isWorking, type LiveComparison } from '#app/features/comparisons/comparison-manager.ts';
+import { isWorking } from '#app/features/comparisons/comparison-manager.ts';
 import { standingWords } from '#app/features/comparisons/comparison-words.ts';
-import { CostGain } from '#app/features/comparisons/cost-gain.tsx';
 import { DecisionBox } from '#app/features/comparisons/decision-box.tsx';
 import { EventList } from '#app/features/comparisons/event-list.tsx';
-import type { KnownRecords } from '#sim-core/compare/known-records.ts';
-import { FuturesLines } from '#app/features/comparisons/futures-lines.tsx';
 import { keepComparison, replicatesQuery } from '#app/features/comparisons/get-comparison.ts';
-import { comparisonManager } from '#app/features/comparisons/live-comparisons.ts';
-import { LossTable } from '#app/features/comparisons/loss-table.tsx';
-import { OptionAnswers } from '#app/features/comparisons/option-answers.tsx';
-import { OutlookTable } from '#app/features/comparisons/outlook-table.tsx';
-import { PairTable } from '#app/features/comparisons/pair-table.tsx';
-import { RecoveryCurves } from '#app/features/comparisons/recovery-curves.tsx';
-import { WeightsBox } from '#app/features/comparisons/weights-box.tsx';
+import { useLivePart, useLiveVersion } from '#app/features/comparisons/live-comparisons.ts';
+import { SummaryLine } from '#app/features/comparisons/summary-line.tsx';
+import { useComparisonFigures } from '#app/features/comparisons/use-comparison-figures.ts';
 import { costsQuery } from '#app/features/options/costs/site-costs.ts';
-import { formatDuration } from '#app/lib/formats.ts';
-import { useThrottled } from '#app/lib/use-throttled.ts';
+import type { KnownRecords } from '#sim-core/compare/known-records.ts';
+import { ComparisonDeeds } from './comparison-deeds.tsx';
+import { ComparisonFiles } from './comparison-files.tsx';
+import { GoOn } from './comparison-go-on.tsx';
+import { useWorkOnComparison, wasAtWork } from './comparison-ground.ts';
 import { ComparisonMaps } from './comparison-maps.tsx';
-import { forgetWork, useWorkOnComparison, wasAtWork } from './comparison-ground.ts';
-import { FutureAlone } from './future-alone.tsx';
+import { ComparisonProgress } from './comparison-progress.tsx';
+import { ComparisonAnswers, ComparisonCharts } from './comparison-results.tsx';
 import { SitePage } from './site-page.tsx';
 import { useSite } from './use-site.ts';
 
-/** A comparison: maps locked together, what each option comes to, how sure that is, and the decision. */
-export function ComparisonView({
-  comparison,
-  live,
-}: {
-  comparison: Comparison;
-  live: LiveComparison | undefined;
-}) {
+/** A comparison: what it says in a sentence, maps locked together, each option's answer, and the decision. */
+export function ComparisonView({ comparison }: { comparison: Comparison }) {
   const { site, mayDraw, role } = useSite();
-  const { plan } = comparison;
+  const { plan, id, decision } = comparison;
   const queryClient = useQueryClient();
   const navigate = useNavigate();
   const workOn = useWorkOnComparison();
   const [outlook, setOutlook] = useState(0);
-  const stored = useQuery({ ...replicatesQuery(comparison), enabled: !live || live.phase === 'loading' });
+  const [filing, setFiling] = useState(false);
+  const phase = useLivePart(id, 'phase');
+  const records = useLivePart(id, 'records');
+  const version = useLiveVersion(id, 1500);
+  const working = isWorking(phase);
+  const stored = useQuery({ ...replicatesQuery(comparison), enabled: !phase || phase === 'loading' });
   const costs = useQuery(costsQuery(site.id)).data;
 
   // A tab that was at work when it was loaded anew goes on by itself, once.
   const tried = useRef(false);
   useEffect(() => {
-    if (tried.current || live || comparison.status !== 'running' || !mayDraw) return;
+    if (tried.current || phase || comparison.status !== 'running' || !mayDraw) return;
     tried.current = true;
-    if (wasAtWork(comparison.id)) workOn(comparison);
-  }, [comparison, live, mayDraw, workOn]);
+    if (wasAtWork(id)) workOn(comparison);
+  }, [comparison, id, phase, mayDraw, workOn]);
 
   // While this tab fetches what is stored, the page keeps showing it.
-  const atHand = live && live.phase !== 'loading' ? live.records : undefined;
+  const atHand = phase && phase !== 'loading' ? records : undefined;
   const known: KnownRecords | undefined = useMemo(
     () =>
       atHand ??
       stored.data?.map((option) =>
-        option.map((records) => new Map(records.map((record) => [record.replicate, record]))),
+        option.map((all) => new Map(all.map((record) => [record.replicate, record]))),
       ),
     [atHand, stored.data],
   );
-  const version = useThrottled(live?.version ?? 0, 1500);
   const figures = useComparisonFigures(comparison, known, version);
   const counted = { ...comparison, done: Math.max(comparison.done, figures?.outlooks[0]?.replicates ?? 0) };
   const shown = figures?.outlooks[Math.min(outlook, plan.outlooks.length - 1)];
+  const place = plan.options.findIndex(({ optionId }) => optionId === decision?.optionId);
+  const chosen = place < 0 ? undefined : place;
 
   const onSaved = (saved: Comparison) => keepComparison(queryClient, saved);
   const reopen = useMutation({
@@ -98,73 +92,40 @@ export function ComparisonView({
       void navigate(`/sites/${site.id}/compare/${saved.id}`);
     },
   });
-  const working = isWorking(live);
-  const left = live?.progress?.secondsLeft;
+  const decides = role === 'manager' || role === 'admin';
   return (
     <SitePage step="compare" title={comparison.name}>
-      <div className="flex flex-wrap items-baseline justify-between gap-x-6 gap-y-1 border-b border-ink pb-2">
-        <div>
+      <div className="flex flex-wrap items-end justify-between gap-x-6 gap-y-1 border-b border-ink pb-2">
+        <div className="min-w-0">
           <WordLink to={`/sites/${site.id}/compare`} plain>
             All comparisons
           </WordLink>
-          <h1 className="text-title font-bold">{comparison.name}</h1>
+          <h1 className="text-title font-bold break-words">{comparison.name}</h1>
         </div>
-        <p className="text-note text-ink-2">{standingWords(counted, live)}</p>
+        <p className="flex flex-wrap items-baseline gap-x-5">
+          <span className="text-note text-ink-2">{standingWords(counted, phase)}</span>
+          <ComparisonDeeds
+            comparison={counted}
+            trigger={<WordButton lined>More</WordButton>}
+            working={working}
+            onDeleted={() => void navigate(`/sites/${site.id}/compare`)}
+          >
+            {figures && shown && <MenuItem onSelect={() => setFiling(true)}>Text and figures</MenuItem>}
+          </ComparisonDeeds>
+        </p>
       </div>
-      {live && working && live.phase !== 'saving' && (
-        <div className="border-b border-rule py-3">
-          <Progress
-            label={
-              live.phase === 'loading'
-                ? 'Fetching what is stored'
-                : `run ${live.progress?.runsDone ?? 0} of ${live.progress?.runs ?? '…'}${live.again > 0 ? `, of which ${live.again} are run again for their maps` : ''}`
-            }
-            done={live.progress?.stepsDone ?? 0}
-            of={live.progress?.steps ?? 1}
-            secondsLeft={left}
-          />
-          <div className="mt-2 flex flex-wrap items-center gap-x-5 gap-y-1">
-            <WordButton
-              lined
-              onClick={() => {
-                // A pause is meant: a reload must not go on by itself.
-                forgetWork(comparison.id);
-                comparisonManager.pause(comparison.id);
-              }}
-            >
-              Pause
-            </WordButton>
-            <WordButton lined onClick={() => comparisonManager.stop(comparison.id)}>
-              Stop here and keep what is done
-            </WordButton>
-            <span className="text-note text-ink-2">
-              {left === undefined ? 'The time left shows soon. ' : `About ${formatDuration(left)} left. `}
-              You can leave the page, but not close the tab; what is done is saved as it comes.
-            </span>
-          </div>
-        </div>
-      )}
-      {live?.trouble && (
-        <p role="status" className="border-l-[6px] border-flag py-1 pl-3">
-          {live.trouble}
-        </p>
-      )}
-      {live?.phase === 'failed' && (
-        <p role="alert" className="border-l-[6px] border-danger py-1 pl-3">
-          {live.error}
-        </p>
-      )}
-      {!working && mayDraw && comparison.decision === null && (
+      <ComparisonProgress comparisonId={id} />
+      {!working && mayDraw && decision === null && (
         <GoOn
           comparison={counted}
-          paused={live?.phase === 'paused' || live?.phase === 'failed'}
+          paused={phase === 'paused' || phase === 'failed'}
           busy={reopen.isPending}
           error={reopen.error}
           onResume={() => workOn(comparison)}
           onMore={(replicates) => reopen.mutate(replicates)}
         />
       )}
-      {comparison.decision !== null && mayDraw && (
+      {decision !== null && mayDraw && (
         <div className="border-b border-rule py-2">
           <WordButton lined onClick={() => copy.mutate()}>
             Go on in a copy
@@ -186,8 +147,13 @@ export function ComparisonView({
           />
         </div>
       )}
-      <ComparisonMaps {...{ comparison, live, outlook }} figures={shown} />
-      {stored.error && !live ? (
+      {shown && <SummaryLine figures={shown} />}
+      <ComparisonMaps
+        {...{ comparison, outlook, chosen, version }}
+        live={phase !== undefined && phase !== 'loading'}
+        figures={shown}
+      />
+      {stored.error && !phase ? (
         <ProblemNotice error={stored.error} title="The futures could not be fetched.">
           <WordButton lined onClick={() => void stored.refetch()}>
             Try again
@@ -196,48 +162,21 @@ export function ComparisonView({
       ) : null}
       {shown && figures && known ? (
         <>
-          <OptionAnswers figures={shown} currency={plan.currency}>
-            {(option) => (
-              <FuturesLines
-                plan={plan}
-                name={plan.options[option].name}
-                records={[...known[option][outlook].values()]}
-              >
-                {(record) => <FutureAlone {...{ comparison, option, outlook, record }} />}
-              </FuturesLines>
-            )}
-          </OptionAnswers>
+          <ComparisonAnswers {...{ comparison, outlook, known, chosen }} figures={shown} />
           <div className="grid gap-x-10 gap-y-8 border-t border-ink pt-4 lg:grid-cols-2">
-            <RecoveryCurves
-              curves={shown.options.map(({ name, wait, summary }) => ({
-                name,
-                wait,
-                curve: summary.recovery,
-              }))}
-              surveyYear={plan.common.surveyYear}
-              years={plan.common.years}
+            <ComparisonCharts
+              {...{ comparison, figures, shown, chosen }}
+              budget={costs?.costs.budget ?? null}
             />
-            {plan.currency !== null && shown.options.every(({ cost }) => cost !== null) ? (
-              <CostGain figures={shown} currency={plan.currency} budget={costs?.costs.budget ?? null} />
-            ) : (
-              <p className="text-note text-ink-2">
-                Cost against gain needs unit costs: set them on Options, then start a comparison anew.
-              </p>
-            )}
-            <PairTable figures={shown} />
-            <div className="grid content-start gap-8">
-              <OutlookTable figures={figures} />
-              <LossTable figures={shown} />
-            </div>
-            <WeightsBox figures={figures} />
             <div className="grid content-start gap-6">
               <DecisionBox
                 comparison={counted}
-                mayDecide={(role === 'manager' || role === 'admin') && !working}
-                working={working && (role === 'manager' || role === 'admin')}
+                mayDecide={decides && !working}
+                working={working && decides}
                 busy={decide.isPending}
                 error={decide.error}
                 onDecide={(draft) => decide.mutate(draft)}
+                onFiles={() => setFiling(true)}
               />
               <EventList events={comparison.events} />
             </div>
@@ -250,42 +189,9 @@ export function ComparisonView({
             : 'The figures show with the first future of every option.'}
         </p>
       )}
-    </SitePage>
-  );
-}
-
-/** What can be done with a comparison that stands still. */
-function GoOn(props: {
-  comparison: Comparison;
-  paused: boolean;
-  busy: boolean;
-  error: unknown;
-  onResume: () => void;
-  onMore: (replicates: number) => void;
-}) {
-  const { comparison, paused } = props;
-  const { plan, done, status } = comparison;
-  const open = status === 'running' || paused;
-  const next = Math.min(2000, done < plan.replicates ? plan.replicates : plan.replicates * 2);
-  return (
-    <div className="flex flex-wrap items-center gap-x-4 gap-y-1 border-b border-rule py-2">
-      {open ? (
-        <Button kind={done === 0 ? 'primary' : 'quiet'} onClick={props.onResume}>
-          Go on from what is saved
-        </Button>
-      ) : (
-        <Button busy={props.busy} busyLabel="Resuming" onClick={() => props.onMore(next)}>
-          {done < plan.replicates
-            ? `Run the remaining ${plan.replicates - done} futures`
-            : `Run on to ${next} futures`}
-        </Button>
+      {filing && figures && (
+        <ComparisonFiles {...{ comparison, figures }} siteName={site.name} onClose={() => setFiling(false)} />
       )}
-      <span className="text-note text-ink-2">
-        {open && !paused
-          ? 'This comparison is not at work in this tab. If another tab works on it, leave it there.'
-          : 'What is saved stays; the same futures come to the same digests.'}
-      </span>
-      {props.error ? <ProblemNotice error={props.error} title="Not resumed." /> : null}
-    </div>
+    </SitePage>
   );
 }

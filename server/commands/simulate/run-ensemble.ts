@@ -1,4 +1,4 @@
-import { csv } from '#server/files/csv.ts';
+import { csv } from '#contract/csv.ts';
 import { seriesColumns } from '#server/files/series-csv.ts';
 import { createRunPool } from '#server/jobs/run-pool.ts';
 import { ratesOfRun, uncertainNames } from '#sim-core/belief/rates-of-run.ts';

@@ -50,8 +50,11 @@ export function comparisonRoutes(services: Services): Route[] {
     route(contract.getComparison, { site: roles }, ({ params }) =>
       comparisonReply(manager, params.siteId, params.comparisonId),
     ),
-    route(contract.renameComparison, { site: runners }, ({ params, body, person }) =>
-      renameComparison(services, params, body.name, person.name),
+    route(contract.renameComparison, { site: runners }, ({ params, body, person, membership }) =>
+      renameComparison(services, params, body.name, {
+        by: person.name,
+        decides: deciders.includes(membership.role),
+      }),
     ),
     route(contract.deleteComparison, { site: runners }, ({ params }) => deleteComparison(services, params)),
     route(contract.copyComparison, { site: runners }, ({ params, body, person }) =>

@@ -219,13 +219,26 @@ export function requireOpen({ decision }: Pick<ComparisonRow, 'decision'>): void
     );
 }
 
+/**
+ * A name is no finding, so those who decide may change it after the decision too; what it was stays in the events.
+ * @throws ProblemError `not-found`, `conflict` of a decided one for everybody else
+ */
 export const renameComparison = (
   services: Services,
-  address: ComparisonAddress,
+  { siteId, comparisonId }: ComparisonAddress,
   name: string,
-  by: string,
+  { by, decides }: { by: string; decides: boolean },
 ): Promise<Comparison> =>
-  change(services, address, by, (row) => ({ set: { name }, what: `renamed from “${row.name}”` }));
+  services.write(async (manager) => {
+    const row = await requireComparison(manager, siteId, comparisonId);
+    if (!decides) requireOpen(row);
+    if (row.name !== name) {
+      await updateComparison(manager, comparisonId, { name });
+      const what = `renamed from “${row.name}”`;
+      await addEvent(manager, comparisonId, { at: services.clock().toISOString(), by, what });
+    }
+    return comparisonReply(manager, siteId, comparisonId);
+  });
 
 /** Closes it; a second end changes nothing but why. */
 export const endComparison = (
@@ -297,8 +310,9 @@ export const copyComparison = (
       id: randomUUID(),
       name,
       replicates,
-      status: original.status === 'finished' ? 'finished' : 'stopped',
-      ending: original.ending ?? 'stopped by hand',
+      // Until somebody goes on with it: the decision was taken on the original.
+      status: 'stopped',
+      ending: null,
       decision: null,
       startedAt: at,
       startedBy: by,

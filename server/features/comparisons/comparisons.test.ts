@@ -322,6 +322,41 @@ describe('a decision', () => {
   });
 });
 
+describe('a name', () => {
+  it('is changed by whoever runs it, after a decision by those who decide; nothing decided is deleted', async () => {
+    const { modeller, manager, trainer } = team.agents;
+    const comparison = await startTestComparison(modeller, site);
+    const rename = (agent: typeof modeller, name: string, status = 200) =>
+      agent.patch(pathOf(comparison)).send({ name }).expect(status);
+    expect((await rename(modeller, 'Second name')).body).toMatchObject({ name: 'Second name' });
+    await rename(trainer, 'Trained', 403);
+    for (const option of [0, 1]) await put(comparison, option, [replicateOf(0), replicateOf(1)]);
+    await manager
+      .post(pathOf(comparison, '/decision'))
+      .send({ optionId: comparison.plan.options[1].optionId, reason: 'Sooner.' })
+      .expect(200);
+    await rename(modeller, 'Mine', 409);
+    await rename(manager, 'Board paper 7');
+    await rename(manager, 'Board paper 7');
+    const now = await get(comparison);
+    expect([now.name, now.decision?.reason]).toEqual(['Board paper 7', 'Sooner.']);
+    expect(now.events.map(({ what }) => what).filter((what) => what.startsWith('renamed'))).toEqual([
+      'renamed from “A comparison”',
+      'renamed from “Second name”',
+    ]);
+    await manager.delete(pathOf(comparison)).expect(409);
+    const copied = await manager
+      .post(pathOf(comparison, '/copies'))
+      .send({ name: 'Copy', replicates: 8 })
+      .expect(200);
+    // It waits for somebody to go on with it, not for a decision.
+    expect(copied.body).toMatchObject({ status: 'stopped', ending: null, done: 2, decision: null });
+    await manager.delete(pathOf(copied.body as Comparison)).expect(204);
+    await manager.get(pathOf(copied.body as Comparison)).expect(404);
+    expect((await get(comparison)).done).toBe(2);
+  });
+});
+
 describe('a start is refused', () => {
   const start = async (changes: object) => {
     const plan = planFor(site, await optionsOf(team.agents.modeller, site.id), changes);

@@ -1,4 +1,4 @@
-import { csv } from '#server/files/csv.ts';
+import { csv } from '#contract/csv.ts';
 import type { DegreePoint } from './crew-gpx.ts';
 
 /** The points for a crew, in the order of visit: WGS 84 in degrees, and the CRS of the site in metres. */

@@ -1,5 +1,5 @@
 import type { Work } from '#contract/works.ts';
-import { csv } from '#server/files/csv.ts';
+import { csv } from '#contract/csv.ts';
 
 /** Columns of the CSV of points, in order; units stand in the names. */
 const columns = [
