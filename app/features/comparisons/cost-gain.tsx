@@ -2,10 +2,11 @@ import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { formatMoney } from '#contract/format-money.ts';
 import { formatNumber } from '#app/lib/formats.ts';
 import type { OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
+import { useNarrow } from '#app/lib/use-media-query.ts';
 import { halo } from './option-line.tsx';
 import { spreadLabels } from './spread-labels.ts';
 
-const [width, height] = [420, 230];
+const height = 230;
 const [left, right, top, bottom] = [34, 14, 22, 30];
 /** room between the axis and what costs nothing */
 const inset = 16;
@@ -19,6 +20,7 @@ export function CostGain(props: {
 }) {
   const { figures, currency, budget } = props;
   const { options, efficient, pairs } = figures;
+  const width = useNarrow() ? 400 : 560;
   const costs = options.map((option) => option.cost ?? 0);
   const mostCost = Math.max(1, ...costs, budget ?? 0) * 1.08;
   const gains = options.map((option) => option.yearsSooner);
@@ -29,16 +31,17 @@ export function CostGain(props: {
   const most = Math.max(1, ...gains, ...intervals.map((each) => each?.high ?? 0));
   const x = (cost: number) => left + inset + ((width - left - inset - right) * cost) / mostCost;
   const y = (gain: number) => top + ((height - top - bottom) * (most - gain)) / (most - least);
-  // Names of points that stand close together are parted, each side by itself.
+  // The joining line rises: names stand above it on the left of their points and below it on the right. Those of points
+  // that stand close together are parted, each side by itself.
   const sides = costs.map((cost) => x(cost) > width * 0.55);
   const labels = options.map((_, i) => ({ left: sides[i], y: 0 }));
   for (const side of [true, false]) {
     const here = options.map((_, i) => i).filter((i) => sides[i] === side);
     spreadLabels(
-      here.map((i) => y(gains[i]) - 7),
+      here.map((i) => y(gains[i]) + (side ? -7 : 15)),
       14,
       top + 8,
-      height - bottom - 4,
+      height - bottom + 15,
     ).forEach((at, n) => (labels[here[n]].y = at));
   }
   return (

@@ -5,6 +5,8 @@ import {
   getReplicates,
   listComparisons,
   type Comparison,
+  type ComparisonSummary,
+  type Decision,
 } from '#contract/comparisons.ts';
 import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import { callEndpoint, fetchBlob } from '#app/lib/api-client.ts';
@@ -20,6 +22,12 @@ export const comparisonsQuery = (siteId: string, page: { offset?: number; limit?
     queryKey: [...siteKey(siteId), 'comparisons', page],
     queryFn: ({ signal }) => callEndpoint(listComparisons, { params: { siteId }, query: page, signal }),
   });
+
+/** What was decided last on a site. */
+export const latestDecision = (comparisons: readonly ComparisonSummary[] = []): Decision | undefined =>
+  comparisons
+    .flatMap(({ decision }) => decision ?? [])
+    .sort((a, b) => b.decidedAt.localeCompare(a.decidedAt))[0];
 
 /** A comparison with its plan and what is stored of it. */
 export const comparisonQuery = (siteId: string, comparisonId: string) =>

@@ -23,7 +23,7 @@ export function OptionLine(props: {
   const away = lit !== undefined && lit !== place;
   return (
     <g opacity={away ? 0.25 : 1}>
-      {band && !away && <path d={band} className="fill-shore" opacity={lit === place ? 0.45 : 0.18} />}
+      {band && !away && <path d={band} className="fill-shore" opacity={lit === place ? 0.5 : 0.14} />}
       <path
         d={line}
         fill="none"

@@ -1,6 +1,7 @@
 import { Table } from '#app/components/table.tsx';
 import { of100 } from '#sim-core/compare/chance-words.ts';
 import { nearChance, type ComparisonFigures } from '#sim-core/compare/comparison-figures.ts';
+import { listed } from '#sim-core/compare/summary-words.ts';
 import { OptionName } from './chosen.tsx';
 
 /** Chances to close in time by outlook, what each option may be regretted by, and which is never far from the best. */
@@ -9,8 +10,8 @@ export function OutlookTable(props: { figures: ComparisonFigures; chosen: number
   if (!regret) return null;
   const options = outlooks[0].options;
   const rows = options.map((option, i) => ({ option, i, ...regret.rows[i] }));
-  const never = rows.filter((row) => row.neverFar).map((row) => row.option.name);
-  const least = regret.leastRegret.map((i) => options[i].name).join(' and ');
+  const never = rows.filter((row) => row.neverFar).map((row) => `“${row.option.name}”`);
+  const least = listed(regret.leastRegret.map((i) => `“${options[i].name}”`));
   return (
     <section aria-label="Across outlooks">
       <div className="flex flex-wrap justify-between gap-x-4 pb-1">
@@ -44,7 +45,7 @@ export function OutlookTable(props: { figures: ComparisonFigures; chosen: number
       />
       <p className="mt-1.5 text-note text-ink-2">
         {never.length > 0
-          ? `${never.join(' and ')} ${never.length > 1 ? 'are' : 'is'} never more than ${of100(nearChance)} of 100 from the best.`
+          ? `${listed(never)} ${never.length > 1 ? 'are' : 'is'} never more than ${of100(nearChance)} of 100 from the best.`
           : `No option is within ${of100(nearChance)} of 100 of the best under every outlook.`}{' '}
         The most that can be regretted is least with {least}.
       </p>

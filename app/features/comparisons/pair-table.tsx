@@ -71,7 +71,7 @@ export function PairTable(props: { figures: OutlookFigures; chosen: number | und
             key: 'chance',
             head: 'in time',
             number: true,
-            cell: ({ chanceGained }) => `${chanceGained >= 0 ? '+' : '−'}${Math.abs(of100(chanceGained))}`,
+            cell: ({ chanceGained }) => signed(of100(chanceGained)),
           },
         ]}
       />
@@ -85,3 +85,5 @@ export function PairTable(props: { figures: OutlookFigures; chosen: number | und
     </section>
   );
 }
+
+const signed = (n: number) => (n === 0 ? '0' : `${n > 0 ? '+' : '−'}${Math.abs(n)}`);

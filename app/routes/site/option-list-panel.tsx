@@ -8,6 +8,7 @@ import { WordButton } from '#app/components/word-button.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
 import { ConflictNotice } from '#app/features/options/conflict/conflict-notice.tsx';
 import { CostsDialog } from '#app/features/options/costs/costs-dialog.tsx';
+import { comparisonsQuery, latestDecision } from '#app/features/comparisons/get-comparison.ts';
 import { costsQuery } from '#app/features/options/costs/site-costs.ts';
 import { restoreDraft } from '#app/features/options/draft-storage.ts';
 import { ArchiveList } from '#app/features/options/list/archive-list.tsx';
@@ -39,6 +40,7 @@ export function OptionListPanel(props: OptionListPanelProps) {
   const queryClient = useQueryClient();
   const base = usePictureBase(site.grid, ground.cover, ground.capacity);
   const costs = useQuery(costsQuery(site.id)).data;
+  const decided = latestDecision(useQuery(comparisonsQuery(site.id)).data?.comparisons)?.optionId;
   const order = useMutation(orderMutation(queryClient, site.id));
   const [costing, setCosting] = useState(false);
   const [listed, archived] = [false, true].map((away) => options.filter((one) => one.archived === away));
@@ -93,7 +95,7 @@ export function OptionListPanel(props: OptionListPanelProps) {
         options={listed}
         chosen={option.id}
         drawn={drawing.draft.works}
-        {...{ base, costOf, unsaved }}
+        {...{ base, costOf, unsaved, decided }}
         onChoose={(id) => onChoose(id)}
         onMove={mayDraw ? move : undefined}
       />

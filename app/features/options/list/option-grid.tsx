@@ -18,6 +18,8 @@ export interface OptionGridProps {
   costOf: ((works: readonly Work[]) => OptionCost) | undefined;
   /** those with a drawing in this tab that is not saved */
   unsaved: (option: Option) => boolean;
+  /** the option that the newest decision on this site chose */
+  decided?: string | undefined;
   onChoose: (optionId: string) => void;
   /** moves an option to a place among those beside Wait; absent for those who only read */
   onMove?: (optionId: string, to: number) => void;
@@ -74,6 +76,7 @@ export function OptionGrid(props: OptionGridProps) {
               cost={costs?.[i]}
               scale={scale ?? 1}
               chosen={id === chosen}
+              decided={id === props.decided}
               unsaved={props.unsaved(option)}
               onChoose={() => props.onChoose(id)}
               onStep={movable ? (step) => onMove(id, places.indexOf(id) + step) : undefined}
@@ -94,6 +97,7 @@ function OptionEntry(props: {
   cost: OptionCost | undefined;
   scale: number;
   chosen: boolean;
+  decided: boolean;
   unsaved: boolean;
   onChoose: () => void;
   onStep: ((step: number) => void) | undefined;
@@ -127,6 +131,11 @@ function OptionEntry(props: {
         )}
       >
         {option.name}
+        {props.decided && (
+          <span className="ml-1.5 inline-block border-[1.5px] border-ink px-1 text-note font-semibold">
+            decided for
+          </span>
+        )}
       </span>
       <span className="block text-note leading-snug text-ink-2">
         {words}
