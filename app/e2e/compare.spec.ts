@@ -1,3 +1,4 @@
+import { readFile } from 'node:fs/promises';
 import type { Locator, Page } from '@playwright/test';
 import { decide, getComparison, getReplicates } from '#contract/comparisons.ts';
 import { fillPath } from '#contract/endpoint.ts';
@@ -86,6 +87,25 @@ test('a manager compares two options, comes back to it in the middle, and decide
     await expect(button(page, 'Go on from what is saved')).toBeVisible();
     await expect(standing(/^paused, \d+ of 24 futures$/)).toBeVisible();
   });
+
+  await test.step('another tab goes on and is killed; what was acknowledged stays', async () => {
+    const before = await stored();
+    const other = await page.context().newPage();
+    const held = (await holdPieces(other)).after(1);
+    await other.goto(`/sites/${siteId}/compare/${comparisonId}`);
+    await button(other, 'Go on from what is saved').click();
+    await held;
+    const acknowledged = await stored();
+    expect(count(acknowledged)).toBeGreaterThan(count(before));
+    const session = await page.context().newCDPSession(other);
+    const crashed = other.waitForEvent('crash');
+    session.send('Page.crash').catch(() => undefined);
+    await crashed;
+    await other.close();
+    expect(await stored()).toEqual(acknowledged);
+    await page.reload();
+    await expect(standing(/^not at work in this tab, \d+ of 24 futures are saved$/)).toBeVisible();
+  });
   const paused = await stored();
   expect(count(paused)).toBeGreaterThanOrEqual(16);
   expect(count(paused)).toBeLessThan(2 * futures);
@@ -117,9 +137,11 @@ test('a manager compares two options, comes back to it in the middle, and decide
       ['mean cover', 'mean cover in 2036'],
     ]) {
       await page.getByText(mode, { exact: true }).click();
-      await expect(maps).toHaveCount(2);
+      // Wait against itself would show nothing.
+      const shown = mode === 'cover against Wait' ? 1 : 2;
+      await expect(maps).toHaveCount(shown);
       await expect(page.getByRole('application', { name: `Clumps: ${words}` })).toBeVisible();
-      await expect(page.locator('[data-painted=true]')).toHaveCount(2);
+      await expect(page.locator('[data-painted=true]')).toHaveCount(shown);
     }
     const years = page.getByRole('slider', { name: 'Year that the maps show' });
     await years.press('ArrowRight');
@@ -127,7 +149,7 @@ test('a manager compares two options, comes back to it in the middle, and decide
     await years.press('End');
     await expect(page).toHaveURL(/year=2046/);
     await expect(page.getByRole('application', { name: 'Clumps: mean cover in 2046' })).toBeVisible();
-    await button(page, 'Swipe the first two').click();
+    await button(page, 'Swipe Wait and Clumps').click();
     const share = page.getByRole('slider', { name: /^Share of the map that shows Wait/ });
     await share.press('ArrowRight');
     await expect(share).toHaveValue('51');
@@ -174,8 +196,29 @@ test('a manager compares two options, comes back to it in the middle, and decide
     await expect(box.getByText('Survey again before planting.')).toBeVisible();
     await expect(standing('decided: Clumps')).toBeVisible();
     await expect(button(page, /^Run on to/)).toHaveCount(0);
+    await expect(page.getByRole('heading', { name: 'Clumps chosen' })).toBeVisible();
+    await button(page, 'Text and figures of this decision').click();
+    const files = page.getByRole('dialog', { name: 'Text and figures' });
+    await expect(files.getByText(/Decided: Clumps/)).toBeVisible();
+    const download = page.waitForEvent('download');
+    await button(page, 'Answers').click();
+    const text = await readFile(await (await download).path(), 'utf8');
+    expect(text.split('\r\n').map((line) => line.split(',').slice(1, 4))).toEqual([
+      ['option', 'chosen', 'futures'],
+      ['Wait', 'no', '24'],
+      ['Clumps', 'yes', '24'],
+      [],
+    ]);
+    await files.getByRole('button', { name: 'Close' }).click();
+    await button(page, 'More').click();
+    await expect(page.getByRole('menuitem', { name: 'Delete (decided: it stays)' })).toBeDisabled();
+    await page.getByRole('menuitem', { name: 'Rename' }).click();
+    await page.getByLabel('Name of the comparison').fill('Board paper');
+    await button(page, 'Rename it').click();
+    await expect(page.getByRole('heading', { name: 'Board paper', exact: true })).toBeVisible();
     await button(page, 'Go on in a copy').click();
-    await expect(page.getByRole('heading', { name: 'Wait or clumps, copy' })).toBeVisible();
+    await expect(page.getByRole('heading', { name: 'Board paper, copy' })).toBeVisible();
+    await expect(standing('a copy, not gone on with, 24 of 24 futures')).toBeVisible();
     await button(page, 'Run on to 48 futures').click();
     await expect(standing('finished, 48 of 48 futures')).toBeVisible();
     const first = await stored();
@@ -183,5 +226,16 @@ test('a manager compares two options, comes back to it in the middle, and decide
     const more = await stored();
     expect(more.map((records) => records.length)).toEqual([48, 48]);
     expect(more.map((records) => records.slice(0, futures))).toEqual(first);
+  });
+
+  await test.step('the copy is deleted from the list, with a question first', async () => {
+    await page.goto(`/sites/${siteId}/compare`);
+    await button(page, 'More for Board paper, copy').click();
+    await page.getByRole('menuitem', { name: 'Delete' }).click();
+    const ask = page.getByRole('alertdialog', { name: 'Delete Board paper, copy?' });
+    await expect(ask.getByText(/48 futures of each option and its maps go for good/)).toBeVisible();
+    await ask.getByRole('button', { name: 'Delete the comparison' }).click();
+    await expect(page.getByRole('link', { name: 'Board paper, copy' })).toHaveCount(0);
+    await expect(page.getByRole('link', { name: 'Board paper' })).toBeVisible();
   });
 });

@@ -17,7 +17,10 @@ export interface InventedSite {
   /** cover of a cell at the survey */
   readonly cover: (column: number, row: number) => number;
   /** beside Wait */
-  readonly options: readonly { readonly name: string; readonly works: (grid: Grid) => readonly WorkInput[] }[];
+  readonly options: readonly {
+    readonly name: string;
+    readonly works: (grid: Grid) => readonly WorkInput[];
+  }[];
 }
 
 /** An invented site on even ground, made through the API, under droughts that each future draws for itself. */

@@ -26,7 +26,10 @@ export interface MapsDeskParts {
 }
 
 const startWorker = () =>
-  new Worker(new URL('./ensemble-maps-worker.ts', import.meta.url), { type: 'module', name: 'ensemble-maps' });
+  new Worker(new URL('./ensemble-maps-worker.ts', import.meta.url), {
+    type: 'module',
+    name: 'ensemble-maps',
+  });
 
 /**
  * Each ensemble stays with one worker; further ones are started as ensembles are begun, up to `workers`, and then share.

@@ -1,6 +1,7 @@
 /** One figure of the bench, beside what it is held against in the same run. */
 export interface Line {
-  readonly name: 'kernel' | 'memory' | 'frames' | 'ensemble' | 'arrival' | 'comparison' | 'waiting' | 'page-memory';
+  readonly name:
+    'kernel' | 'memory' | 'frames' | 'ensemble' | 'arrival' | 'comparison' | 'waiting' | 'page-memory';
   readonly mode: string;
   readonly map: string;
   /** cells on a side, or width × height */

@@ -65,11 +65,7 @@ export function closingMaps(cells: number, years: readonly number[], from?: Clos
   let summed: { readonly count: number; slot: number; readonly closed: Uint16Array } | undefined;
 
   /** Calls `then` with how many replicates closed each cell in each kept year from `from` to `until`, where any did. */
-  function each(
-    until: number,
-    then: (closings: number, cell: number, year: number) => void,
-    from = 0,
-  ): void {
+  function each(until: number, then: (closings: number, cell: number, year: number) => void, from = 0): void {
     for (let slot = from; slot <= until; slot++) {
       const plane = planes[slot];
       if (plane)

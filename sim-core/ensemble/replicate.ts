@@ -43,4 +43,6 @@ export function runReplicate(input: RunInput, keep: Keep, onStep?: (done: number
 
 /** Buffers of the maps of an outcome, to be handed over from one thread to the next. */
 export const buffersOf = ({ closing, covers, frames }: ReplicateOutcome): ArrayBuffer[] =>
-  [closing, ...covers.values(), ...frames.values()].flatMap((map) => (map ? [map.buffer as ArrayBuffer] : []));
+  [closing, ...covers.values(), ...frames.values()].flatMap((map) =>
+    map ? [map.buffer as ArrayBuffer] : [],
+  );
