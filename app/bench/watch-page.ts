@@ -1,21 +1,14 @@
 import { readFileSync } from 'node:fs';
 import type { Browser, Page } from '@playwright/test';
 
-interface ProcessInfo {
-  readonly id: number;
-  readonly type: string;
-  /** seconds of the processor since it began */
-  readonly cpuTime: number;
-}
-
 /** What a page takes while it works, seen from outside of it. */
 export interface PageWatch {
   /** seconds of the processor that the page with its workers has taken since its process began */
-  processorSeconds(): Promise<number>;
+  readonly processorSeconds: () => Promise<number>;
   /** bytes that the page's process holds in memory now */
-  memory(): Promise<number>;
+  readonly memory: () => Promise<number>;
   /** milliseconds since the page was loaded: the longest task, and the longest wait from a press to the next picture */
-  waits(): Promise<{ task: number; press: number; presses: number }>;
+  readonly waits: () => Promise<{ task: number; press: number; presses: number }>;
 }
 
 declare global {
@@ -41,10 +34,8 @@ export async function watchPage(browser: Browser, page: Page): Promise<PageWatch
   });
   const session = await browser.newBrowserCDPSession();
   /** The busiest of the renderers: the browser keeps a spare one that does nothing. */
-  const renderer = async (): Promise<ProcessInfo> => {
-    const { processInfo } = (await session.send('SystemInfo.getProcessInfo')) as {
-      processInfo: ProcessInfo[];
-    };
+  const renderer = async () => {
+    const { processInfo } = await session.send('SystemInfo.getProcessInfo');
     return processInfo.filter(({ type }) => type === 'renderer').sort((a, b) => b.cpuTime - a.cpuTime)[0];
   };
   return {

@@ -23,9 +23,13 @@ export function ComparisonFiles(props: {
   const save = (name: string, content: string, type: string) =>
     saveFile(`${stem}-${name}`, new Blob([content], { type: `${type};charset=utf-8` }));
   const copy = () => {
-    // Missing on plain http beyond this machine.
-    const written = (navigator.clipboard as Clipboard | undefined)?.writeText(text) ?? Promise.reject();
-    written.then(
+    // There is no clipboard on plain http beyond this machine.
+    const clipboard = navigator.clipboard as Clipboard | undefined;
+    if (!clipboard) {
+      setRefused(true);
+      return;
+    }
+    clipboard.writeText(text).then(
       () => sayDone('Copied'),
       () => setRefused(true),
     );
