@@ -5,6 +5,7 @@ import { callEndpoint } from '#app/lib/api-client.ts';
 import { siteKey } from '#app/lib/site-cache.ts';
 import { forgetDraft } from './draft-storage.ts';
 import { optionsQuery } from './list-options.ts';
+import { keepSuggestion } from './suggest/suggest-storage.ts';
 
 /** Puts an option into the list that was fetched, at the end when it is new; the site's count is asked for again. */
 export function keepOption(queryClient: QueryClient, option: Option): void {
@@ -46,6 +47,7 @@ export const deleteOptionMutation = (queryClient: QueryClient, siteId: string) =
     mutationFn: (optionId: string) => callEndpoint(deleteOption, { params: { siteId, optionId } }),
     onSuccess: (_, optionId) => {
       forgetDraft(optionId);
+      keepSuggestion(optionId, undefined);
       queryClient.setQueryData(optionsQuery(siteId).queryKey, (options: Option[] | undefined) =>
         options?.filter(({ id }) => id !== optionId),
       );

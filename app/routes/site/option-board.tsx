@@ -108,7 +108,7 @@ export function OptionBoard(props: {
   const mound = useMemo(() => readMound(pens.mound).mound, [pens.mound]);
   const workYear = readYear(pens.year, outlook);
   const suggesting = useSuggest({
-    ...{ start, mound },
+    ...{ start, mound, optionId: option.id },
     drawn: draft.works,
     year: typeof workYear === 'number' ? workYear : undefined,
     each: costs && mound && costs.mound + mound.clumps * costs.clump,
@@ -220,7 +220,12 @@ export function OptionBoard(props: {
                       works: [...draft.works, ...suggesting.works],
                       sets: [...draft.sets],
                     },
-                    { onSuccess: (made) => onChoose(made.id, true) },
+                    {
+                      onSuccess: (made) => {
+                        suggesting.forget();
+                        onChoose(made.id, true);
+                      },
+                    },
                   )
                 }
               />

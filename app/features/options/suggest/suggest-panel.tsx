@@ -51,7 +51,7 @@ export function SuggestPanel(props: {
       </p>
       {problem !== undefined && <p className="text-note text-danger">{problem}</p>}
       {job.running || gain.running ? (
-        <Working suggesting={suggesting} />
+        <Working suggesting={suggesting} onShowGain={props.onShowGain} />
       ) : (
         <p className="mt-1 flex flex-wrap items-center gap-x-3 gap-y-1">
           <Button disabled={problem !== undefined} onClick={suggesting.suggest}>
@@ -127,15 +127,25 @@ export function SuggestPanel(props: {
   );
 }
 
-function Working({ suggesting }: { suggesting: Suggesting }) {
-  const { job, gain } = suggesting;
-  const { progress, cancel } = job.running ? job : gain;
+function Working(props: { suggesting: Suggesting; onShowGain: (shown: boolean) => void }) {
+  const { job, gain, again } = props.suggesting;
+  const { progress } = job.running ? job : gain;
+  const cancel = () => {
+    if (job.running) return job.cancel();
+    gain.cancel();
+    props.onShowGain(false);
+  };
   const label =
     progress?.stage === 'placing'
       ? `${progress.done} of ${progress.of} placed`
       : `${progress?.done ?? 0} of ${progress?.of ?? '…'} places weighed`;
   return (
     <div className="mt-2">
+      {again && job.running && (
+        <p role="status" className="text-note text-ink-2">
+          The page was left while this was at work: it began again by itself.
+        </p>
+      )}
       <Progress
         label={label}
         done={progress?.done ?? 0}
