@@ -1,4 +1,4 @@
-import { useLayoutEffect, useRef, useState, type CSSProperties, type ReactNode } from 'react';
+import { useEffect, useRef, useState, type CSSProperties, type ReactNode } from 'react';
 import { classNames } from '#app/lib/class-names.ts';
 import { useMapFrame } from './map-context.ts';
 import type { MapSize, ScreenPoint } from './map-view.ts';
@@ -28,15 +28,22 @@ const ring = 22;
 /** Words on the map, tied to their place by a thin leader line. Near an edge they go where there is room. */
 export function MapNote({ x, y, offset = { left: 84, top: 0 }, always, passing, children }: MapNoteProps) {
   const { project, size } = useMapFrame();
+  const exact = project(x, y);
   const box = useRef<HTMLDivElement>(null);
   const [height, setHeight] = useState(0);
-  useLayoutEffect(() => setHeight(box.current?.offsetHeight ?? 0), [children]);
-  const exact = project(x, y);
+  // Told by the browser after its own layout: asking at every step of a drag would make it lay out the page each time.
+  const shown = always === true || isInside(exact, size);
+  useEffect(() => {
+    if (!box.current) return;
+    const observer = new ResizeObserver(([{ borderBoxSize }]) => setHeight(borderBoxSize[0].blockSize));
+    observer.observe(box.current);
+    return () => observer.disconnect();
+  }, [shown]);
   const at = {
     left: Math.min(size.width, Math.max(0, exact.left)),
     top: Math.min(size.height, Math.max(0, exact.top)),
   };
-  if (!always && (at.left !== exact.left || at.top !== exact.top)) return null;
+  if (!shown) return null;
   const { d, style } = layNote(at, size, offset, height);
   return (
     <>
@@ -60,6 +67,9 @@ export function MapNote({ x, y, offset = { left: 84, top: 0 }, always, passing, 
     </>
   );
 }
+
+const isInside = ({ left, top }: ScreenPoint, { width, height }: MapSize) =>
+  left >= 0 && top >= 0 && left <= width && top <= height;
 
 /**
  * The leader's path and the note's place: beside the point, on the other side, or where neither fits below or above;

@@ -38,6 +38,8 @@ export type MapRaster =
       readonly values: Int16Array;
       readonly surveyYear: number;
       readonly lastYear: number;
+      /** the same as they go to the graphics card (`toTexels`), where a worker made them */
+      readonly texels?: Uint8Array;
     }
   | {
       readonly kind: 'classes';
@@ -68,6 +70,7 @@ export function closingTexel(year: number, surveyYear: number, lastYear: number)
  */
 export function toTexels(raster: MapRaster): Uint8Array {
   if (raster.kind !== 'closing' && raster.kind !== 'classes') return raster.values;
+  if (raster.kind === 'closing' && raster.texels) return raster.texels;
   const texels = new Uint8Array(raster.values.length);
   if (raster.kind === 'closing') {
     const { values, surveyYear, lastYear } = raster;

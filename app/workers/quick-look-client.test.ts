@@ -48,6 +48,7 @@ const listen = () => ({
 });
 const lookOf = (year: number): Look => ({
   years: Int16Array.of(year),
+  texels: Uint8Array.of(0),
   summary: { closable: 1, closedBy: [], half: undefined, eighty: undefined, ninety: undefined },
 });
 

@@ -31,6 +31,9 @@ export interface QuickLookHandle {
   close(): void;
 }
 
+/** How long nothing newer is asked for, ms, before lines are drawn. */
+const rest = 150;
+
 const startWorker = () =>
   new Worker(new URL('./quick-look-worker.ts', import.meta.url), { type: 'module', name: 'quick look' });
 
@@ -46,6 +49,7 @@ export function startQuickLook(
   let over = false;
   let busy = true;
   let waiting: readonly Action[] | undefined;
+  let resting: ReturnType<typeof setTimeout> | undefined;
   let fail!: (reason: unknown) => void;
   const failed = new Promise<never>((_, reject) => (fail = reject));
   const died = (event: Event) => {
@@ -60,6 +64,7 @@ export function startQuickLook(
   function close(): void {
     if (over) return;
     over = true;
+    clearTimeout(resting);
     remote[releaseProxy]();
     worker.terminate();
     // Whoever still waits for points must not wait for ever.
@@ -80,10 +85,13 @@ export function startQuickLook(
       waiting = undefined;
       if (next) lookAt(next);
       listener.onLook(look, works);
-      if (next) return;
-      remote.lines().then((lines) => {
-        if (!over && !busy) listener.onLines(lines);
-      }, fail);
+      if (!next) resting = setTimeout(drawLines, rest);
+    }, fail);
+  }
+  // The worker does one thing at a time: while a hand moves, the next look must not stand behind lines.
+  function drawLines(): void {
+    remote.lines().then((lines) => {
+      if (!over && !busy) listener.onLines(lines);
     }, fail);
   }
   const lookAt = (works: readonly Action[]) => {
@@ -95,6 +103,7 @@ export function startQuickLook(
   return {
     setWorks(works) {
       if (over) return;
+      clearTimeout(resting);
       if (busy) waiting = works;
       else lookAt(works);
     },

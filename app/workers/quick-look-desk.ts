@@ -4,6 +4,7 @@ import type { ClosingSummary } from '#sim-core/plan/closing-tally.ts';
 import { lineYears, yearLines, type YearLine } from '#sim-core/plan/year-lines.ts';
 import { layPattern, type LaidPoints, type PatternInput } from '#sim-core/plan/pattern.ts';
 import { createQuickLook, type QuickLook, type WorksChange } from '#sim-core/plan/quick-look.ts';
+import { toTexels } from '#app/map/map-raster.ts';
 import { groundOf } from './run-ground.ts';
 import type { RunInput } from './run-loop.ts';
 
@@ -17,6 +18,8 @@ export interface QuickLookStart extends RunInput {
 export interface Look {
   /** as a run reports them: 0 not by the horizon, −32768 cannot hold the plant, the survey year stood; Int16, row-major */
   readonly years: Int16Array;
+  /** the same as a map paints them (`toTexels`) */
+  readonly texels: Uint8Array;
   readonly summary: ClosingSummary;
 }
 
@@ -48,9 +51,12 @@ export function createQuickLookDesk(): QuickLookDesk {
     return held;
   };
   function shown(): Look {
-    const { look } = opened();
+    const { look, start } = opened();
+    const { surveyYear, years: horizon } = start.spec;
     // A copy, since it is handed over.
-    return { years: look.years.slice(), summary: look.summary() };
+    const years = look.years.slice();
+    const texels = toTexels({ kind: 'closing', values: years, surveyYear, lastYear: surveyYear + horizon });
+    return { years, texels, summary: look.summary() };
   }
   return {
     async open(start) {

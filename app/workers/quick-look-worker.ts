@@ -8,9 +8,10 @@ import {
 } from './quick-look-desk.ts';
 
 const desk = createQuickLookDesk();
-const handOver = (look: Look) => transfer(look, [look.years.buffer as ArrayBuffer]);
+const handOver = (look: Look) =>
+  transfer(look, [look.years.buffer as ArrayBuffer, look.texels.buffer as ArrayBuffer]);
 
-/** What the client calls; the years are handed to it, never copied twice. */
+/** What the client calls; years and texels are handed to it, never copied twice. */
 const face = {
   open: async (start: QuickLookStart) => handOver(await desk.open(start)),
   change: (change: WorksChange) => handOver(desk.change(change)),

@@ -1,6 +1,13 @@
 /** Numbers as people read them: a thin space before units is left out on purpose, so that copied text stays plain. */
 const locale = 'en-GB';
 const whole = new Intl.NumberFormat(locale, { maximumFractionDigits: 0 });
+/** Made once each: making one takes as long as hundreds of numbers written with it. */
+const formats = new Map<number, Intl.NumberFormat>();
+function formatOf(decimals: number): Intl.NumberFormat {
+  const made = formats.get(decimals) ?? new Intl.NumberFormat(locale, { maximumFractionDigits: decimals });
+  formats.set(decimals, made);
+  return made;
+}
 const oneDecimal = new Intl.NumberFormat(locale, { maximumFractionDigits: 1 });
 const date = new Intl.DateTimeFormat(locale, { day: 'numeric', month: 'short', year: 'numeric' });
 const dateTime = new Intl.DateTimeFormat(locale, {
@@ -24,9 +31,7 @@ export function formatCounted(n: number, one: string, many = `${one}s`): string 
 export function formatNumber(value: number, decimals = 2): string {
   const size = Math.abs(value);
   const wanted = size >= 100 ? 0 : size >= 10 ? 1 : decimals;
-  return new Intl.NumberFormat(locale, { maximumFractionDigits: Math.min(wanted, decimals) })
-    .format(value)
-    .replace('-', '−');
+  return formatOf(Math.min(wanted, decimals)).format(value).replace('-', '−');
 }
 
 /** Area from m²: below one hectare in m², else in ha. */

@@ -1,7 +1,15 @@
 /** One figure of the bench, beside what it is held against in the same run. */
 export interface Line {
   readonly name:
-    'kernel' | 'memory' | 'frames' | 'ensemble' | 'arrival' | 'comparison' | 'waiting' | 'page-memory';
+    | 'kernel'
+    | 'memory'
+    | 'frames'
+    | 'ensemble'
+    | 'arrival'
+    | 'comparison'
+    | 'waiting'
+    | 'page-memory'
+    | 'page';
   readonly mode: string;
   readonly map: string;
   /** cells on a side, or width × height */
@@ -11,7 +19,7 @@ export interface Line {
   readonly engine?: string;
   /** what was done: cells stepped in the fastest round; of frames and arrival, their cells; of an ensemble, its steps */
   readonly work: number;
-  /** time of the processor; of an ensemble and beside a clock, by the clock */
+  /** time of the processor; of an ensemble, of a page and beside a clock, by the clock */
   readonly seconds: number;
   /** work a second; of memory, bytes a cell; of frames, bytes a cell and year; of waiting, ms */
   readonly rate: number;
@@ -24,12 +32,13 @@ export interface Line {
 
 const json = process.argv.includes('--json');
 
-const figure = ({ name, rate }: Line): string => {
+const figure = ({ name, rate, seconds }: Line): string => {
   if (name === 'memory') return `${rate.toFixed(1)} bytes a cell`;
   if (name === 'frames') return `${rate.toFixed(3)} bytes a cell, year`;
   if (name === 'waiting') return `${rate.toFixed(0)} ms`;
   if (name === 'page-memory') return `${(rate / 1e6).toFixed(0)} MB`;
   if (name === 'ensemble' || name === 'comparison') return `${rate.toFixed(0)} steps/s`;
+  if (name === 'page') return `${(seconds * 1000).toFixed(0)} ms`;
   return `${(rate / 1e6).toFixed(1)} M cells/s`;
 };
 

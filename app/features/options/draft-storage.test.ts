@@ -32,26 +32,26 @@ beforeEach(() => {
 });
 
 describe('an unsaved drawing', () => {
-  it('survives a reload on the revision that it was made on, with how it was laid and the way back', () => {
-    keepDraft('o-1', optionDraft(draftOf(option(3)), add));
+  it('survives a reload on the revision that it was made on, with how it was laid and the way back', async () => {
+    await keepDraft('o-1', optionDraft(draftOf(option(3)), add));
     const restored = restoreDraft(option(4));
     expect([restored.works, restored.sets]).toEqual([[mound], [set]]);
     expect([restored.revision, isUnsaved(restored)]).toEqual([3, true]);
     expect(optionDraft(restored, { type: 'undo' }).works).toEqual([]);
   });
 
-  it('is forgotten once it is saved, or when it is what the server has anyway', () => {
+  it('is forgotten once it is saved, or when it is what the server has anyway', async () => {
     const drawn = optionDraft(draftOf(option(3)), add);
-    keepDraft('o-1', drawn);
+    await keepDraft('o-1', drawn);
     expect(restoreDraft(option(4, [mound])).revision).toBe(4);
-    keepDraft('o-1', optionDraft(drawn, { type: 'saved', revision: 4, state: drawn }));
+    await keepDraft('o-1', optionDraft(drawn, { type: 'saved', revision: 4, state: drawn }));
     expect(sessionStorage.length).toBe(0);
-    keepDraft('o-1', drawn);
+    await keepDraft('o-1', drawn);
     forgetDraft('o-1');
     expect(restoreDraft(option(4)).works).toEqual([]);
   });
 
-  it('gives way to what the server has when it cannot be read', () => {
+  it('gives way to what the server has when it cannot be read', async () => {
     sessionStorage.setItem('foothold.draft.o-1', '{"revision":3,"works":[{"kind":"tower"}]}');
     expect(restoreDraft(option(4, [mound])).works).toHaveLength(1);
     sessionStorage.setItem('foothold.draft.o-1', 'not JSON');

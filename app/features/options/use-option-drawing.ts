@@ -24,6 +24,8 @@ export interface OptionDrawing {
   readonly draft: OptionDraft;
   readonly draw: (action: DraftAction) => void;
   readonly unsaved: boolean;
+  /** a reload would lose nothing of it; false where the browser cannot keep it */
+  readonly kept: boolean;
   /** somebody saved this option after the drawing was begun */
   readonly conflict: boolean;
   readonly saving: boolean;
@@ -54,7 +56,7 @@ export function useOptionDrawing(option: Option): OptionDrawing {
   // Where nothing is drawn, what others saved is simply what there is now.
   if (behind && !unsaved && !saveOption.isPending) draw({ type: 'take', option });
 
-  useKeptDraft(option.id, draft);
+  const kept = useKeptDraft(option.id, draft);
   useWarnBeforeClosing(unsaved);
 
   const isConflict = saveOption.error instanceof ProblemError && saveOption.error.code === 'conflict';
@@ -76,6 +78,7 @@ export function useOptionDrawing(option: Option): OptionDrawing {
     draft,
     draw,
     unsaved,
+    kept,
     conflict: behind && unsaved && !saveOption.isPending,
     saving: saveOption.isPending || copyOption.isPending,
     error: isConflict ? copyOption.error : (saveOption.error ?? copyOption.error),

@@ -1,5 +1,6 @@
 import { useNavigate } from 'react-router-dom';
 import type { Option } from '#contract/options.ts';
+import { classNames } from '#app/lib/class-names.ts';
 import { Button } from '#app/components/button.tsx';
 import { LinkButton } from '#app/components/link-button.tsx';
 import { WordButton, WordLink } from '#app/components/word-button.tsx';
@@ -62,7 +63,13 @@ export function OptionAction(props: {
           <WordLink to={`/sites/${site.id}/ground`}>See Ground</WordLink>
         </p>
       )}
-      <p role="status" className="text-note text-ink-2 lg:w-full">
+      <p
+        role="status"
+        className={classNames(
+          'text-note lg:w-full',
+          drawing.kept ? 'text-ink-2' : 'font-semibold text-danger',
+        )}
+      >
         {statusWords({ option, drawing, complete })}
       </p>
     </>
@@ -75,6 +82,8 @@ function statusWords(state: { option: Option; drawing: OptionDrawing; complete: 
     return complete
       ? 'A run takes what was saved last, not your drawing.'
       : 'Somebody else saved this option; your drawing is kept in this tab.';
+  if (drawing.unsaved && !drawing.kept)
+    return 'This browser cannot keep so large a drawing: save it before you leave or reload the page.';
   if (drawing.unsaved) return 'Kept in this tab; not saved for the team yet.';
   if (option.wait) return 'Wait is run like any option, so that there is something to compare with.';
   return 'Saved.';

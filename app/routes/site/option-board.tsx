@@ -177,6 +177,7 @@ export function OptionBoard(props: {
       margin={
         <OptionMargin
           {...{ drawing, option, ground, mayDraw, onChoose }}
+          onAdd={board.addFound}
           options={props.options}
           selection={
             chosen.length > 0 && (

@@ -11,6 +11,7 @@ import { WordButton } from '#app/components/word-button.tsx';
 import { createOptionMutation, deleteOptionMutation } from '#app/features/options/change-option.ts';
 import { ExportDialog } from '#app/features/options/files/export-dialog.tsx';
 import { ImportDialog } from '#app/features/options/files/import-dialog.tsx';
+import type { FoundWorks } from '#app/features/options/files/works-to-add.ts';
 import { HistoryDialog } from '#app/features/options/history/history-dialog.tsx';
 import { NoteDialog } from '#app/features/options/list/note-dialog.tsx';
 import type { PictureBase } from '#app/features/options/list/option-picture.tsx';
@@ -30,6 +31,8 @@ export function OptionDeeds(props: {
   place: number;
   places: number;
   onMove: (to: number) => void;
+  /** Adds works from a file to the drawing; returns why they cannot be taken. */
+  onAdd: (found: FoundWorks) => string | undefined;
   /** `isNew`: it was made this moment */
   onChoose: (optionId: string, isNew?: boolean) => void;
 }) {
@@ -162,7 +165,28 @@ export function OptionDeeds(props: {
       )}
       {asked === 'files' && <ExportDialog option={option} unsaved={drawing.unsaved} onClose={close} />}
       {asked === 'import' && (
-        <ImportDialog siteId={option.siteId} base={props.base} onMade={made} onClose={close} />
+        <ImportDialog
+          siteId={option.siteId}
+          base={props.base}
+          onMade={made}
+          addTo={
+            own && !option.archived
+              ? {
+                  name: option.name,
+                  works: drawing.draft.works,
+                  onAdd: (found) => {
+                    const problem = props.onAdd(found);
+                    if (problem === undefined) {
+                      close();
+                      sayDone('Added to this option; not saved yet. Undo takes it back in one step');
+                    }
+                    return problem;
+                  },
+                }
+              : undefined
+          }
+          onClose={close}
+        />
       )}
       <ConfirmDialog
         open={asked === 'delete'}

@@ -10,6 +10,7 @@ import { ConflictNotice } from '#app/features/options/conflict/conflict-notice.t
 import { CostsDialog } from '#app/features/options/costs/costs-dialog.tsx';
 import { comparisonsQuery, latestDecision } from '#app/features/comparisons/get-comparison.ts';
 import { costsQuery } from '#app/features/options/costs/site-costs.ts';
+import type { FoundWorks } from '#app/features/options/files/works-to-add.ts';
 import { restoreDraft } from '#app/features/options/draft-storage.ts';
 import { ArchiveList } from '#app/features/options/list/archive-list.tsx';
 import { OptionGrid } from '#app/features/options/list/option-grid.tsx';
@@ -29,6 +30,7 @@ export interface OptionListPanelProps {
   drawing: OptionDrawing;
   ground: GroundRasters;
   mayDraw: boolean;
+  onAdd: (found: FoundWorks) => string | undefined;
   /** `isNew`: it was made this moment */
   onChoose: (optionId: string, isNew?: boolean) => void;
 }

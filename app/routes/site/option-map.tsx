@@ -17,6 +17,7 @@ import { WorkNote } from '#app/features/options/work-note.tsx';
 import { WorksTable } from '#app/features/options/works-table.tsx';
 import { placeInWords, placeOf, worksInWords } from '#contract/works-words.ts';
 import { formatCounted } from '#app/lib/formats.ts';
+import { useSameList } from '#app/lib/use-same-list.ts';
 import { MapNote } from '#app/map/MapNote.tsx';
 import type { MapRaster } from '#app/map/map-raster.ts';
 import type { MapFoothold } from '#app/map/map-symbols.ts';
@@ -67,6 +68,8 @@ export function OptionMap(props: {
     () => [...surveyed, ...drawn.footholds, ...faint.footholds],
     [surveyed, drawn, faint],
   );
+  // What is painted with the outlines, thousands of contours, is painted anew only when they change.
+  const areas = useSameList(drawn.areas);
   const { surveyYear, years } = outlook;
   const raster = useMemo((): MapRaster | undefined => {
     if (show === 'gain' && gain) return gainRaster(gain);
@@ -115,7 +118,7 @@ export function OptionMap(props: {
         raster={raster}
         ground={ground.capacity}
         footholds={footholds}
-        areas={drawn.areas}
+        areas={areas}
         contours={contours}
         selected={selected}
         tool={board.mapTool}

@@ -2,6 +2,7 @@ import type { ReactNode } from 'react';
 import type { Option } from '#contract/options.ts';
 import { Table } from '#app/components/table.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
+import type { FoundWorks } from '#app/features/options/files/works-to-add.ts';
 import type { OptionDrawing } from '#app/features/options/use-option-drawing.ts';
 import { WorkSymbol } from '#app/features/options/works-table.tsx';
 import { countOf, worksByYear } from '#contract/works-words.ts';
@@ -14,6 +15,8 @@ export function OptionMargin(props: {
   drawing: OptionDrawing;
   ground: GroundRasters;
   mayDraw: boolean;
+  /** Adds works from a file to the drawing; returns why they cannot be taken. */
+  onAdd: (found: FoundWorks) => string | undefined;
   /** what is selected, above all else */
   selection: ReactNode;
   /** more of what it costs */

@@ -16,6 +16,7 @@ export function gainRaster({ gains, most }: GainMap): MapRaster {
 export const closingRaster = (look: Look, surveyYear: number, years: number): MapRaster => ({
   kind: 'closing',
   values: look.years,
+  texels: look.texels,
   surveyYear,
   lastYear: surveyYear + years,
 });

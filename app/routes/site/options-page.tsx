@@ -6,6 +6,7 @@ import { LoadingLines } from '#app/components/loading-lines.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import { useGroundRasters } from '#app/features/layers/use-ground-rasters.ts';
+import { loadLargeDrafts } from '#app/features/options/draft-storage.ts';
 import { optionsQuery } from '#app/features/options/list-options.ts';
 import { startingPens } from '#app/features/options/board/board-pens.ts';
 import { OptionBoard } from './option-board.tsx';
@@ -22,7 +23,9 @@ export function Page() {
   const [pens, setPens] = useState(() => startingPens(site.outlook.surveyYear));
   const [made, setMade] = useState<string>();
 
-  if (options.data === undefined)
+  // Before the first drawing is asked for, so that none comes up as the server has it.
+  const drafts = useQuery({ queryKey: ['large-drafts'], queryFn: loadLargeDrafts, staleTime: Infinity });
+  if (options.data === undefined || drafts.data === undefined)
     return (
       <SitePage step="options" map={<div className="size-full" />} margin={<Waiting options={options} />} />
     );

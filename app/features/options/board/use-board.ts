@@ -1,5 +1,7 @@
 import { useMemo, useState } from 'react';
-import { newWorkId, type Work } from '#contract/works.ts';
+import { mostWorks, newWorkId, type Work, type WorkSet } from '#contract/works.ts';
+import { formatCount } from '#contract/formats.ts';
+import { placeInWords, titleOf } from '#contract/works-words.ts';
 import type { MapFoothold } from '#app/map/map-symbols.ts';
 import type { Ring } from '#app/map/rings.ts';
 import { readMound, type MoundErrors } from '../mound-pen.ts';
@@ -52,6 +54,11 @@ export interface DrawingBoard extends Board {
   readonly leave: () => void;
   readonly found: FoundSurveyed | undefined;
   readonly laying: Laying;
+  /** Takes works from elsewhere in one step, or says why not. */
+  readonly addFound: (found: {
+    readonly works: readonly Work[];
+    readonly sets: readonly WorkSet[];
+  }) => string | undefined;
   /** Takes changed works, or says why not. */
   readonly change: (works: readonly Work[]) => string | undefined;
   readonly edit: (id: string, field: WorkField, text: string) => string | undefined;
@@ -149,8 +156,24 @@ export function useBoard(setting: BoardSetting): DrawingBoard {
     if (problem === undefined) draw({ type: 'change', works });
     return problem;
   };
+  const addFound: DrawingBoard['addFound'] = ({ works, sets }) => {
+    const sum = draft.works.length + works.length;
+    if (sum > mostWorks)
+      return `That would make ${formatCount(sum)} works; an option holds at most ${formatCount(mostWorks)}. Save them as an option of their own.`;
+    for (const work of works) {
+      const read = readYear(String(work.year), span);
+      if (typeof read === 'string') return `${titleOf(work, works.indexOf(work) + 1)} of the file: ${read}`;
+    }
+    const problem = worksProblem(ground, works);
+    if (problem)
+      return `At ${placeInWords(problem)}: ${problem.problem} Mend the file, or save it as an option and mend it there.`;
+    draw({ type: 'add', works, sets });
+    setting.onAdded(works);
+    return undefined;
+  };
   return {
     ...board,
+    addFound,
     ...{ tool, errors, missed, refused, found, laying, change },
     setTool: choose,
     onPens: (next) => {

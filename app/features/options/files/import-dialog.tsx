@@ -1,16 +1,18 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useMemo, useState } from 'react';
 import type { WorksPreview } from '#contract/option-files.ts';
 import type { Option } from '#contract/options.ts';
+import type { Work } from '#contract/works.ts';
 import { Button } from '#app/components/button.tsx';
 import { Dialog, DialogActions } from '#app/components/dialog.tsx';
 import { FileDrop } from '#app/components/file-drop.tsx';
 import { TextField } from '#app/components/inputs.tsx';
-import { ProblemNotice } from '#app/components/notice.tsx';
+import { Notice, ProblemNotice } from '#app/components/notice.tsx';
 import { formatCounted } from '#app/lib/formats.ts';
 import { createOptionMutation } from '../change-option.ts';
 import { OptionPicture, type PictureBase } from '../list/option-picture.tsx';
 import { worksInWords } from '#contract/works-words.ts';
+import { worksToAdd, type FoundWorks } from './works-to-add.ts';
 import { readWorksMutation } from './read-works-file.ts';
 
 /** Works from a file, looked at before they become an option. */
@@ -18,6 +20,8 @@ export function ImportDialog(props: {
   siteId: string;
   base: PictureBase;
   onMade: (option: Option) => void;
+  /** the option that is drawn on; absent where it cannot be added to. Returns why the works cannot be taken */
+  addTo?: { name: string; works: readonly Work[]; onAdd: (found: FoundWorks) => string | undefined };
   onClose: () => void;
 }) {
   const queryClient = useQueryClient();
@@ -26,10 +30,14 @@ export function ImportDialog(props: {
   const [fileName, setFileName] = useState<string>();
   const [typed, setName] = useState<string>();
   const preview = reading.data;
+  const { addTo } = props;
+  const [refused, setRefused] = useState<string>();
+  const toAdd = useMemo(() => preview && addTo && worksToAdd(preview, addTo.works), [preview, addTo]);
   const name = typed ?? (preview?.name || fileName?.replace(/\.[^.]*$/, '').slice(0, 100) || 'From a file');
   const take = (file: File) => {
     setFileName(file.name);
     setName(undefined);
+    setRefused(undefined);
     create.reset();
     reading.mutate(file);
   };
@@ -66,6 +74,17 @@ export function ImportDialog(props: {
       ) : null}
       {preview && <Found preview={preview} base={props.base} />}
       {create.error ? <ProblemNotice error={create.error} title="Not saved." className="mt-3" /> : null}
+      {addTo && toAdd && toAdd.alike > 0 && (
+        <p className="mt-2 text-note text-ink-2">
+          {formatCounted(toAdd.alike, 'of them stands', 'of them stand')} in {addTo.name} already, just alike:
+          adding to it leaves {toAdd.alike === 1 ? 'it' : 'them'} out.
+        </p>
+      )}
+      {refused !== undefined && (
+        <Notice kind="problem" title="Not added." className="mt-3">
+          {refused}
+        </Notice>
+      )}
       {preview && preview.works.length > 0 && (
         <TextField
           className="mt-3 max-w-sm"
@@ -83,6 +102,11 @@ export function ImportDialog(props: {
             {preview.problems.some(({ row }) => row !== null)
               ? 'Save the rest as an option'
               : 'Save as an option'}
+          </Button>
+        )}
+        {addTo && toAdd && toAdd.works.length > 0 && (
+          <Button onClick={() => setRefused(addTo.onAdd(toAdd))}>
+            Add {formatCounted(toAdd.works.length, 'work')} to {addTo.name}
           </Button>
         )}
         <Button onClick={props.onClose}>Cancel</Button>

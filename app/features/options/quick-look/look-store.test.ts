@@ -7,6 +7,7 @@ import { createLookStore } from './look-store.ts';
 
 const look = (closable: number): Look => ({
   years: Int16Array.of(2030),
+  texels: new Uint8Array(1),
   summary: { closable, closedBy: [], half: undefined, eighty: undefined, ninety: undefined },
 });
 const works: Action[] = [{ kind: 'mound', year: 2027, x: 1, y: 1, radius: 1, strength: 1, halo: 0 }];
