@@ -2,8 +2,7 @@ import { useMemo, useState } from 'react';
 import { Blank, BlankSelect } from '#app/components/blank.tsx';
 import { Button } from '#app/components/button.tsx';
 import { Dialog, DialogActions } from '#app/components/dialog.tsx';
-import { FileDrop } from '#app/components/file-drop.tsx';
-import { TextAreaField, TextField } from '#app/components/inputs.tsx';
+import { TextField } from '#app/components/inputs.tsx';
 import { Notice, ProblemNotice } from '#app/components/notice.tsx';
 import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
@@ -15,9 +14,9 @@ import { listYears } from './outlook-words.ts';
 import { palmerRange, readSeries, standardisedRange } from './read-series.ts';
 import { RecordPlot } from './record-plot.tsx';
 import { factorNote, kindWords, monthNames, usualFactor } from './record-words.ts';
+import { LineProblems, SeriesIntake } from './series-intake.tsx';
 import { likelyColumns, seriesTable, type SeriesColumns } from './series-table.ts';
 
-const longestFile = 5_000_000;
 const none = -1;
 
 /** Takes a drought record as text or file, shows what it would be, and stores it once nothing is wrong. */
@@ -31,7 +30,6 @@ export function RecordDialog(props: {
 }) {
   const [text, setText] = useState('');
   const [fileName, setFileName] = useState<string>();
-  const [fileError, setFileError] = useState<string>();
   const [name, setName] = useState<string>();
   const [source, setSource] = useState('');
   const [kind, setKind] = useState<IndexKind>('palmer');
@@ -59,17 +57,11 @@ export function RecordDialog(props: {
   const shownName = name ?? fileName?.replace(/\.\w+$/, '').slice(0, 100) ?? 'Drought record';
   const ready = yearly !== undefined && yearly.years.length > 0 && shownName.trim() !== '';
 
-  const take = async (file: File) => {
-    setFileName(file.name);
-    if (file.size > longestFile) {
-      setFileError(
-        `Found a file of ${Math.round(file.size / 1e6)} MB; a record has a line a year or a month. Is it the right file?`,
-      );
-      return;
-    }
-    setFileError(undefined);
+  const take = (next: string, from?: string) => {
+    setText(next);
+    if (from === undefined) return;
+    setFileName(from);
     setChosen({});
-    setText(await file.text());
   };
   const pick = (part: keyof SeriesColumns, label: string, optional: boolean) =>
     table &&
@@ -99,27 +91,7 @@ export function RecordDialog(props: {
       title="Take a drought record"
       description="What the weather was: a year or a month a line with its index, negative is dry. Fits and cautions rest on it; nothing of the outlook changes yet."
     >
-      <div className="mt-3 grid gap-4 md:grid-cols-2">
-        <TextAreaField
-          label="Paste it here"
-          rows={8}
-          value={text}
-          spellCheck={false}
-          placeholder={'year,pdsi\n1996,-0.4\n1997,1.2'}
-          onChange={(event) => setText(event.target.value)}
-        />
-        <div>
-          <p className="mb-1 text-[13px] font-semibold">or take it from a file</p>
-          <FileDrop
-            label="Drop a CSV here"
-            hint="Comma, semicolon or tab; decimal point or comma. It fills the lines beside, where you can mend them."
-            accept=".csv,.txt,.tsv,text/csv,text/plain"
-            fileName={fileName}
-            error={fileError}
-            onFile={(file) => void take(file)}
-          />
-        </div>
-      </div>
+      <SeriesIntake text={text} placeholder={'year,pdsi\n1996,-0.4\n1997,1.2'} onText={take} />
       {table && table.columns.length > 1 && (
         <p className="mt-2 text-[13.5px] leading-[2.2]">
           Years or dates are in {pick('date', 'Column of years or dates', false)}, months in{' '}
@@ -181,16 +153,7 @@ export function RecordDialog(props: {
       {kind === 'standardised' && <p className="text-note text-ink-2">{factorNote}</p>}
       <div className="mt-3 min-h-12" aria-live="polite">
         {read?.ok === false && (
-          <Notice kind="problem" title="This cannot be read yet; nothing is taken.">
-            <ul className="mt-1">
-              {read.problems.map(({ line, message }) => (
-                <li key={`${line} ${message}`}>
-                  {line > 0 && <b>Line {line}: </b>}
-                  {message}
-                </li>
-              ))}
-            </ul>
-          </Notice>
+          <LineProblems title="This cannot be read yet; nothing is taken." problems={read.problems} />
         )}
         {undated && (
           <Notice kind="problem" title="No line names a year.">

@@ -1,16 +1,12 @@
 import { useMemo, useState } from 'react';
 import { Button } from '#app/components/button.tsx';
 import { Dialog, DialogActions } from '#app/components/dialog.tsx';
-import { FileDrop } from '#app/components/file-drop.tsx';
-import { TextAreaField } from '#app/components/inputs.tsx';
-import { Notice } from '#app/components/notice.tsx';
 import { WordChoice } from '#app/components/word-choice.tsx';
 import { formatCounted } from '#app/lib/formats.ts';
 import { layOver, type LaidSeries, type Laying, type OutlookDraft } from './outlook-draft.ts';
 import { readSeries, type SeriesEntry } from './read-series.ts';
+import { LineProblems, SeriesIntake } from './series-intake.tsx';
 import { likelyColumns, seriesTable } from './series-table.ts';
-
-const longestFile = 2_000_000;
 
 /** Takes a drought series as text or file, says what it found, and lays it over the years to come. */
 export function SeriesDialog(props: {
@@ -20,8 +16,6 @@ export function SeriesDialog(props: {
 }) {
   const { draft, onLay, onOpenChange } = props;
   const [text, setText] = useState('');
-  const [fileName, setFileName] = useState<string>();
-  const [fileError, setFileError] = useState<string>();
   const [chosen, setChosen] = useState<Laying>();
   const parsed = useMemo(() => (text.trim() === '' ? undefined : parseSeries(text)), [text]);
   const entries = parsed?.ok ? parsed.entries : undefined;
@@ -31,18 +25,6 @@ export function SeriesDialog(props: {
   const how = dated ? (chosen ?? usual) : 'in-order';
   const laid = entries && layOver(draft, entries, how);
 
-  const read = async (file: File) => {
-    setFileName(file.name);
-    if (file.size > longestFile) {
-      setFileError(
-        `Found a file of ${Math.round(file.size / 1e6)} MB; a series has a line a year. Is it the right file?`,
-      );
-      return;
-    }
-    setFileError(undefined);
-    setText(await file.text());
-  };
-
   return (
     <Dialog
       open
@@ -51,40 +33,9 @@ export function SeriesDialog(props: {
       title="Lay a drought series over the years"
       description="Palmer scale, negative is dry. One line a year: year and value, or the value alone; comma, semicolon or tab, decimal point or comma."
     >
-      <div className="mt-3 grid gap-4 md:grid-cols-2">
-        <TextAreaField
-          label="Paste it here"
-          rows={9}
-          value={text}
-          spellCheck={false}
-          placeholder={'2027,-0.4\n2028,1.2'}
-          onChange={(event) => setText(event.target.value)}
-        />
-        <div>
-          <p className="mb-1 text-[13px] font-semibold">or take it from a file</p>
-          <FileDrop
-            label="Drop a CSV here"
-            hint="It fills the lines beside, where you can still change them."
-            accept=".csv,.txt,text/csv,text/plain"
-            fileName={fileName}
-            error={fileError}
-            onFile={(file) => void read(file)}
-          />
-        </div>
-      </div>
+      <SeriesIntake text={text} placeholder={'2027,-0.4\n2028,1.2'} onText={setText} />
       <div className="mt-3 min-h-16" aria-live="polite">
-        {parsed?.ok === false && (
-          <Notice kind="problem" title="This cannot be read yet.">
-            <ul className="mt-1">
-              {parsed.problems.map(({ line, message }) => (
-                <li key={`${line} ${message}`}>
-                  {line > 0 && <b>Line {line}: </b>}
-                  {message}
-                </li>
-              ))}
-            </ul>
-          </Notice>
-        )}
+        {parsed?.ok === false && <LineProblems title="This cannot be read yet." problems={parsed.problems} />}
         {entries && laid && (
           <>
             <p className="text-[13.5px]">

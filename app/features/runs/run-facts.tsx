@@ -4,6 +4,7 @@ import type { RunResult, SeriesRow } from '#sim-core/spec/run-result.ts';
 import { RasterHashes } from '#app/components/raster-hashes.tsx';
 import { formatArea, formatDateTime, formatNumber, formatShare } from '#app/lib/formats.ts';
 import type { YearRecord } from '#app/yearline/year-records.ts';
+import { lossWords, trendWords } from './outlook-in-words.ts';
 import { lossesIn, type YearLosses } from './run-series.ts';
 import { modeWords } from './run-words.ts';
 import { surveyedInWords } from './surveyed-places.ts';
@@ -90,6 +91,10 @@ export function RunFacts({ run, result }: { run: Run; result: RunResult | undefi
         </Fact>
         {Object.keys(spec.processes).length > 0 && (
           <Fact name="processes">{Object.keys(spec.processes).join(' and ')}</Fact>
+        )}
+        {spec.trend && <Fact name="trend">{trendWords(spec.trend)}</Fact>}
+        {spec.losses && spec.losses.length > 0 && (
+          <Fact name="losses to come">{spec.losses.map(lossWords).join('; ')}</Fact>
         )}
         {result && (
           <Fact name="front">
