@@ -14,6 +14,7 @@ import {
 import { describeCrs } from './describe-crs.ts';
 import { readGdalMetadata } from './gdal-metadata.ts';
 import { groundSize } from './ground-size.ts';
+import { heightUnitOf } from './height-unit.ts';
 import type { BandDescription, RasterDescription } from './raster-description.ts';
 
 const tags = { metadata: 42112, noData: 42113 } as const;
@@ -50,6 +51,7 @@ export async function openRaster(
     ...rectangle,
     bands: await describeBands(directory, layout),
     crs,
+    heightUnit: heightUnitOf(keys),
     ...groundSize(rectangle, crs),
     southUp,
     pixelIsPoint,

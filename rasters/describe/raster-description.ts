@@ -1,3 +1,4 @@
+import type { HeightUnitFound } from './height-unit.ts';
 import type { CompressionName, RasterDataType } from '#rasters/read/tiff-layout.ts';
 
 /** What a CRS is called and how long its unit is. */
@@ -40,6 +41,8 @@ export interface RasterDescription {
   readonly height: number;
   readonly bands: readonly BandDescription[];
   readonly crs: CrsDescription;
+  /** what the file's vertical system counts heights in; null where it names none that is known */
+  readonly heightUnit: HeightUnitFound | null;
   /** outer corner of the north-western cell, in units of the CRS */
   readonly originX: number;
   readonly originY: number;

@@ -15,6 +15,8 @@ export const geoKeys = {
   linearUnit: 3076,
   linearUnitSize: 3077,
   centralMeridian: 3080,
+  vertical: 4096,
+  verticalUnit: 4099,
 } as const;
 /** Says that other keys spell out what has no code. */
 export const userDefined = 32767;

@@ -3,6 +3,7 @@ import { endpoint, id, instant, sha256 } from './endpoint.ts';
 import { gridSchema } from './grid.ts';
 import {
   dataTypeSchema,
+  heightUnitSchema,
   layerFactsSchema,
   layerPartSchema,
   resamplingMethodSchema,
@@ -41,6 +42,8 @@ export const rasterDescriptionSchema = z.object({
     }),
   ),
   crs: crsSchema,
+  /** what the file's vertical system counts heights in; null where it names none that is known */
+  heightUnit: heightUnitSchema.nullable().default(null),
   /** outer corner of the north-western cell and sides of a cell, in units of the CRS */
   originX: z.number(),
   originY: z.number(),
@@ -122,13 +125,15 @@ export const uploadChoicesSchema = z.strictObject({
 export type UploadChoices = z.infer<typeof uploadChoicesSchema>;
 
 /**
- * What a person should look at before the raster is placed: `part` and `band` must be chosen; `reprojection`,
+ * What a person should look at before the raster is placed: `part` and `band` must be chosen, and so must the unit of `heights`
+ * where the file suggests feet (see `heights` beside it); `reprojection`,
  * `resampling`, `crop` and `pad` are agreed to by placing it; `values` are wrong for the part and forbid it (see
  * `complaint`).
  */
 export const uploadDecisions = [
   'part',
   'band',
+  'heights',
   'reprojection',
   'resampling',
   'crop',
@@ -176,6 +181,8 @@ export const uploadSchema = z.object({
   /** for a raster that a site is yet to be made from: the grid that it leads to unless `choices.grid` says another */
   suggestedGrid: suggestedGridSchema.nullable(),
   decisions: z.array(z.enum(uploadDecisions)),
+  /** what heights of the chosen band are most likely in, and what of the file says so; null where nothing does */
+  heights: z.object({ unit: heightUnitSchema, because: z.string() }).nullable(),
   /** why it was refused, failed or cannot be placed as chosen */
   problem: problemSchema
     .pick({ code: true, detail: true, found: true, expected: true, remedy: true })

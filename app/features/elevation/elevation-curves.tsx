@@ -90,6 +90,14 @@ export function ElevationCurvesEditor(props: {
   );
 }
 
+const levelNames = 'mean low water, mean sea level and mean high water';
+const tenths = 'the lowest, middle and highest tenths of this site';
+const hungOn = {
+  given: levelNames,
+  missing: `${tenths}, as ${levelNames} are not all given`,
+  'out of order': `${tenths}, as ${levelNames} are out of order: each must stand above the one before. Check their heights`,
+} as const;
+
 function StartingCurves(props: { heights: ReturnType<typeof siteHeights>; drafting: ElevationDrafting }) {
   const { heights, drafting } = props;
   const anchors = anchorsOf(heights, drafting.draft.tidalDatums);
@@ -108,11 +116,8 @@ function StartingCurves(props: { heights: ReturnType<typeof siteHeights>; drafti
         ))}
       </div>
       <p>
-        Hung on{' '}
-        {anchors.tidal
-          ? 'mean low water, mean sea level and mean high water'
-          : 'the lowest, middle and highest tenths of this site, as mean low water, mean sea level and mean high water are not all given'}
-        . A starting point only (common practice, no source): check it against the plants on your site.
+        Hung on {hungOn[anchors.levels]}. A starting point only (common practice, no source): check it against
+        the plants on your site.
       </p>
     </div>
   );

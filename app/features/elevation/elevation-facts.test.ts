@@ -2,7 +2,7 @@ import { expect, it } from 'vitest';
 import { elevationCurveSchema } from '#contract/layers.ts';
 import { curveInWords } from './curve-words.ts';
 import { chartSpan, heightAt, siteHeights } from './elevation-facts.ts';
-import { anchorsOf, startingCurves, startingPoint } from './starting-curves.ts';
+import { anchorsOf, nextLevel, startingCurves, startingPoint } from './starting-curves.ts';
 
 const flat = { minimum: 0, maximum: 4, histogram: [10, 10, 10, 10] };
 const none = { capacity: null, vigour: null, exposure: null };
@@ -45,13 +45,18 @@ it('starts from the levels of the tide where all are named in order, else from t
     { name: 'mean sea level', height: 0 },
     { name: 'mean high water', height: 1.1 },
   ];
-  expect(anchorsOf(flat, datums)).toEqual({ low: -1.2, middle: 0, high: 1.1, tidal: true });
-  expect(anchorsOf(flat, datums.slice(1))).toEqual({ low: 0.4, middle: 2, high: 3.6, tidal: false });
-  expect(anchorsOf(flat, [{ ...datums[0], height: 3 }, ...datums.slice(1)]).tidal).toBe(false);
+  expect(anchorsOf(flat, datums)).toEqual({ low: -1.2, middle: 0, high: 1.1, levels: 'given' });
+  expect(anchorsOf(flat, datums.slice(1))).toEqual({ low: 0.4, middle: 2, high: 3.6, levels: 'missing' });
+  expect(anchorsOf(flat, [{ ...datums[0], height: 3 }, ...datums.slice(1)])).toMatchObject({
+    middle: 2,
+    levels: 'out of order',
+  });
+  expect(nextLevel([], 0.4)).toBe(0.4);
+  expect(nextLevel(datums, 0.4)).toBe(1.6);
 });
 
 it('gives curves that can be saved, also on flat ground', () => {
-  const level = { low: 1, middle: 1, high: 1, tidal: false };
+  const level = { low: 1, middle: 1, high: 1, levels: 'missing' as const };
   for (const anchors of [anchorsOf(flat, []), level])
     for (const of of startingCurves)
       for (const curve of Object.values(startingPoint(of, anchors)))

@@ -14,23 +14,29 @@ export interface Anchors {
   readonly low: number;
   readonly middle: number;
   readonly high: number;
-  /** whether all three are levels of the tide */
-  readonly tidal: boolean;
+  /** whether all three are levels of the tide: else why not */
+  readonly levels: 'given' | 'missing' | 'out of order';
 }
 
-/** Mean low water, mean sea level and mean high water; where one is not given, the 10, 50 and 90 % of the site's cells. */
+/** Mean low water, mean sea level and mean high water; where one is not given or they are out of order, the 10, 50 and 90 % of the site's cells. */
 export function anchorsOf(heights: SiteHeights, datums: readonly TidalDatum[]): Anchors {
   const level = (name: string) => datums.find((datum) => datum.name.trim().toLowerCase() === name)?.height;
   const [low, middle, high] = [level(usualDatums[0]), level(usualDatums[1]), level(usualDatums[2])];
-  if (low !== undefined && middle !== undefined && high !== undefined && low < middle && middle < high)
-    return { low, middle, high, tidal: true };
+  const given = low !== undefined && middle !== undefined && high !== undefined;
+  if (given && low < middle && middle < high) return { low, middle, high, levels: 'given' };
   return {
     low: heightAt(heights, 0.1),
     middle: heightAt(heights, 0.5),
     high: heightAt(heights, 0.9),
-    tidal: false,
+    levels: given ? 'out of order' : 'missing',
   };
 }
+
+/** Where a new level of the tide stands until somebody says: above all that are there, so that none is taken for another, m. */
+export const nextLevel = (datums: readonly TidalDatum[], startAt: number): number =>
+  datums.length === 0
+    ? startAt
+    : Math.min(100, Math.round(100 * (Math.max(...datums.map(({ height }) => height)) + 0.5)) / 100);
 
 export const startingCurves = ['salt-marsh grass', 'seagrass'] as const;
 export type StartingCurve = (typeof startingCurves)[number];

@@ -3,7 +3,7 @@ import { NumberBlank } from '#app/components/number-blank.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
 import type { ElevationEvent } from './curve-draft.ts';
 import { metres } from './curve-words.ts';
-import { usualDatums } from './starting-curves.ts';
+import { nextLevel, usualDatums } from './starting-curves.ts';
 
 const mostDatums = 12;
 
@@ -68,7 +68,12 @@ export function TideLevels(props: {
       {editable && datums.length < mostDatums && (
         <WordButton
           lined
-          onClick={() => tell({ type: 'datums', datums: [...datums, { name: next, height: props.startAt }] })}
+          onClick={() =>
+            tell({
+              type: 'datums',
+              datums: [...datums, { name: next, height: nextLevel(datums, props.startAt) }],
+            })
+          }
         >
           Add a level
         </WordButton>

@@ -53,7 +53,12 @@ describe('a file in words', () => {
 
 describe('a plan in words', () => {
   it('says that nothing is done to what lies on the site’s cells', () => {
-    expect(planInWords({ ...plan, sameCells: true })).toEqual([expect.stringMatching(/bit for bit/)]);
+    const same = { ...plan, sameCells: true };
+    expect(planInWords(same)).toEqual([expect.stringMatching(/taken as it is, bit for bit/)]);
+    expect(planInWords(same, 'metre')).toEqual(planInWords(same));
+    expect(planInWords(same, 'us-foot')).toEqual([
+      expect.stringMatching(/kept bit for bit, and its heights are read as US survey feet/),
+    ]);
   });
 
   it('says what is done and what is lost', () => {
@@ -93,6 +98,7 @@ describe('what is ready', () => {
     for (const more of [
       { plan: null },
       { decisions: ['band'] },
+      { decisions: ['heights'] },
       { decisions: ['values'] },
       { state: 'aligning' },
       { problem: { code: 'unusable-raster', detail: 'no' } },

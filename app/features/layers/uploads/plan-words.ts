@@ -1,5 +1,6 @@
-import type { ResamplingMethod } from '#contract/layers.ts';
+import type { HeightUnit, ResamplingMethod } from '#contract/layers.ts';
 import type { Upload } from '#contract/uploads.ts';
+import { heightUnitLabels } from '../part-words.ts';
 import { formatCount, formatCounted, formatLength, formatNumber, formatShare } from '#app/lib/formats.ts';
 
 type Description = NonNullable<Upload['description']>;
@@ -40,9 +41,17 @@ export function fileInWords({
 /** `under 1 %` begins a sentence with a capital. */
 const atStart = (words: string) => words[0].toUpperCase() + words.slice(1);
 
-/** What will be done to bring the file onto the grid, and what is lost by it, a sentence each. */
-export function planInWords(plan: Plan): string[] {
-  if (plan.sameCells) return ['It lies on the cells of the site and is taken as it is, bit for bit.'];
+/**
+ * What will be done to bring the file onto the grid, and what is lost by it, a sentence each.
+ * @param heights what its values are heights in, where they are heights
+ */
+export function planInWords(plan: Plan, heights?: HeightUnit): string[] {
+  if (plan.sameCells)
+    return [
+      heights === undefined || heights === 'metre'
+        ? 'It lies on the cells of the site and is taken as it is, bit for bit.'
+        : `It lies on the cells of the site: the file is kept bit for bit, and its heights are read as ${heightUnitLabels[heights]} and counted in metres wherever they are used.`,
+    ];
   const { reprojection, cropped, padded, scaling, cautions } = plan;
   const words: string[] = [];
   if (reprojection)
@@ -71,7 +80,7 @@ export const isReady = ({ state, plan, choices, problem, decisions }: Stated): b
   plan !== null &&
   problem === null &&
   choices.part !== null &&
-  !(['part', 'band', 'values'] as const).some((open) => decisions.includes(open));
+  !(['part', 'band', 'heights', 'values'] as const).some((open) => decisions.includes(open));
 
 /** Of the uploads, those that nobody has to look at again before they are placed, each with a part of its own. */
 export function clearUploads<T extends Stated>(uploads: readonly T[]): T[] {

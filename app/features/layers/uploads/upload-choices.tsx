@@ -14,10 +14,11 @@ import type { Grid } from '#sim-core/grid/grid.ts';
 import { BlankSelect } from '#app/components/blank.tsx';
 import { Button } from '#app/components/button.tsx';
 import { Notice, ProblemNotice } from '#app/components/notice.tsx';
+import { WordButton } from '#app/components/word-button.tsx';
 import { formatShare } from '#app/lib/formats.ts';
 import { HeightBlanks } from '../height-blanks.tsx';
 import { Histogram } from '../histogram.tsx';
-import { hasUnit, unitLabels } from '../part-words.ts';
+import { hasUnit, heightUnitLabels, unitLabels } from '../part-words.ts';
 import { OutlineFigure } from './outline-figure.tsx';
 import { fileInWords, isReady, methodLabels, planInWords } from './plan-words.ts';
 import { UploadPicture } from './upload-picture.tsx';
@@ -45,6 +46,7 @@ export function UploadChoices(props: {
   if (!description || !facts) return null;
   const shown = choose.isPending ? { ...choices, ...choose.variables } : choices;
   const target = plan?.target ?? grid;
+  const heightUnit = shown.vertical?.unit ?? upload.heights?.unit ?? 'metre';
   const replaced = props.layers?.find(({ part }) => part === shown.part);
   return (
     <div aria-busy={choose.isPending || undefined}>
@@ -75,9 +77,38 @@ export function UploadChoices(props: {
         disabled={choose.isPending}
         onChange={(change) => choose.mutate(change)}
       />
+      {shown.part === 'elevation' && upload.heights && upload.heights.unit !== 'metre' && (
+        <Notice
+          title={`Its heights seem to be in ${heightUnitLabels[upload.heights.unit]}:`}
+          className="my-1.5"
+        >
+          {upload.heights.because}.{' '}
+          {shown.vertical === null ? (
+            <>
+              Choose what they are in before it is placed.{' '}
+              <WordButton
+                lined
+                disabled={choose.isPending}
+                onClick={() => choose.mutate({ vertical: { datum: '', unit: upload.heights!.unit } })}
+              >
+                They are in {heightUnitLabels[upload.heights.unit]}
+              </WordButton>{' '}
+              <WordButton
+                lined
+                disabled={choose.isPending}
+                onClick={() => choose.mutate({ vertical: { datum: '', unit: 'metre' } })}
+              >
+                They are in metres
+              </WordButton>
+            </>
+          ) : (
+            `You have chosen ${heightUnitLabels[shown.vertical.unit]}.`
+          )}
+        </Notice>
+      )}
       {plan && (
         <ul className="my-1">
-          {planInWords(plan).map((words) => (
+          {planInWords(plan, shown.part === 'elevation' ? heightUnit : undefined).map((words) => (
             <li key={words}>{words}</li>
           ))}
         </ul>
@@ -122,7 +153,7 @@ function Sentence(props: {
   const { upload, shown, disabled, onChange } = props;
   const { description, plan, fileName } = upload;
   const bands = description?.bands ?? [];
-  const vertical = shown.vertical ?? { datum: '', unit: 'metre' };
+  const vertical = shown.vertical ?? { datum: '', unit: upload.heights?.unit ?? 'metre' };
   // Classes have no mean.
   const methods = resamplingMethods.filter(
     (method) =>

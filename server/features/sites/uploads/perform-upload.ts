@@ -122,7 +122,8 @@ async function read(services: Services, row: UploadRow, progress: Required<TaskP
 
 /** Whether an upload becomes a layer by itself. */
 function mayPlace(place: string, decisions: readonly string[]): boolean {
-  if (place === 'when-asked' || decisions.includes('part') || decisions.includes('band')) return false;
+  const open = ['part', 'band', 'heights'].some((decision) => decisions.includes(decision));
+  if (place === 'when-asked' || open) return false;
   return place === 'always' || decisions.length === 0;
 }
 

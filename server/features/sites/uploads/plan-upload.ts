@@ -11,7 +11,10 @@ import { maximumCells } from '#sim-core/spec/limits.ts';
 import { contentOf, valueComplaint } from '#server/jobs/layer-facts.ts';
 
 /** What an upload comes to with its present choices. */
-export type UploadPlan = Pick<Upload, 'plan' | 'suggestedGrid' | 'outline' | 'decisions' | 'problem'>;
+export type UploadPlan = Pick<
+  Upload,
+  'plan' | 'suggestedGrid' | 'outline' | 'decisions' | 'heights' | 'problem'
+>;
 
 /** What is known of an upload whose band has been read. */
 export interface SurveyedUpload {
@@ -33,6 +36,9 @@ export function planUpload(upload: SurveyedUpload, siteGrid: Grid | null): Uploa
   if (choices.part === null) decisions.push('part');
   if (choices.band === null && description.bands.filter(({ role }) => role === 'data').length > 1)
     decisions.push('band');
+  const heights = heightsOf(upload);
+  if (choices.part === 'elevation' && !choices.vertical && heights && heights.unit !== 'metre')
+    decisions.push('heights');
   const complaint = choices.part && valueComplaint(choices.part, facts, unitOf(upload));
   if (complaint) decisions.push('values');
   try {
@@ -51,12 +57,12 @@ export function planUpload(upload: SurveyedUpload, siteGrid: Grid | null): Uploa
     const problem = complaint
       ? { code: 'raster-values' as const, detail: sentence(complaint), ...complaint }
       : null;
-    return { plan, suggestedGrid, outline: outlineOn(description, grid), decisions, problem };
+    return { plan, suggestedGrid, outline: outlineOn(description, grid), decisions, heights, problem };
   } catch (error) {
     if (!(error instanceof RasterError)) throw error;
     const { code, message, found, expected, remedy } = error;
     const problem = { code, detail: message, found, expected, remedy };
-    return { plan: null, suggestedGrid, outline: null, decisions, problem };
+    return { plan: null, suggestedGrid, outline: null, decisions, heights, problem };
   }
 }
 
@@ -88,10 +94,33 @@ function chosenGrid(description: RasterDescription, { grid: chosen }: UploadChoi
   return grid;
 }
 
-/** What heights are most likely in, by the name of the unit that the band carries. */
-export function verticalOf({ choices, description, band }: SurveyedUpload): Vertical {
-  if (choices.vertical) return choices.vertical;
-  const named = description.bands[band - 1].unit?.trim().toLowerCase() ?? '';
-  const feet = /^(ft|foot|feet)\b|\bf(oo|ee)t\b|^ft/.test(named);
-  return { datum: '', unit: feet ? (/us|survey/.test(named) ? 'us-foot' : 'foot') : 'metre' };
+/**
+ * What heights are most likely in, and what of the file says so: the unit that the band carries, the vertical system, or, as
+ * the weakest, coordinates in feet. Null where nothing does.
+ */
+export function heightsOf({
+  description,
+  band,
+}: {
+  description: Pick<RasterDescription, 'heightUnit'> & {
+    bands: readonly Pick<RasterDescription['bands'][number], 'unit'>[];
+    crs: Pick<RasterDescription['crs'], 'unit'>;
+  };
+  /** from 1 */
+  band: number;
+}): Upload['heights'] {
+  const written = description.bands[band - 1].unit?.trim() ?? '';
+  const named = written.toLowerCase();
+  if (/^(ft|foot|feet)\b|\bf(oo|ee)t\b|^ft/.test(named))
+    return { unit: /us|survey/.test(named) ? 'us-foot' : 'foot', because: `its unit is “${written}”` };
+  if (/^(m|metres?|meters?)$/.test(named)) return { unit: 'metre', because: `its unit is “${written}”` };
+  const { heightUnit, crs } = description;
+  if (heightUnit) return { unit: heightUnit, because: 'its vertical system says so' };
+  if (crs.unit === 'foot' || crs.unit === 'us-foot')
+    return { unit: crs.unit, because: 'its coordinates are in feet' };
+  return null;
 }
+
+/** How heights are read: as was chosen, else as the file says, else in metres. Feet are asked about before they are placed. */
+export const verticalOf = (upload: SurveyedUpload): Vertical =>
+  upload.choices.vertical ?? { datum: '', unit: heightsOf(upload)?.unit ?? 'metre' };

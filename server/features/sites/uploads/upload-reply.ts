@@ -30,7 +30,14 @@ export function surveyed(row: UploadRow): SurveyedUpload | null {
   };
 }
 
-const unknown: UploadPlan = { plan: null, suggestedGrid: null, outline: null, decisions: [], problem: null };
+const unknown: UploadPlan = {
+  plan: null,
+  suggestedGrid: null,
+  outline: null,
+  decisions: [],
+  heights: null,
+  problem: null,
+};
 
 /** What an upload comes to on the grid that its site has now; null until it is read. */
 export async function planOf(manager: Manager, row: UploadRow): Promise<UploadPlan | null> {

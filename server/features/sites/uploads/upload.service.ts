@@ -221,6 +221,8 @@ async function requireClear(manager: Manager, row: UploadRow) {
   const { decisions, problem } = plan;
   if (decisions.includes('part')) throw fieldProblem('part', 'Say which part the raster plays');
   if (decisions.includes('band')) throw fieldProblem('band', 'Say which band holds the layer');
+  if (decisions.includes('heights'))
+    throw fieldProblem('vertical', `Say what the heights are in: ${plan.heights!.because}`);
   if (problem) {
     const { code, detail, ...parts } = problem;
     throw new ProblemError(code, detail, parts);

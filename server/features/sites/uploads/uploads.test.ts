@@ -6,7 +6,15 @@ import { decodeCellValues } from '#rasters/cells/cell-values.ts';
 import { readRaster } from '#rasters/read/read-raster.ts';
 import { makeTeam, type TestTeam } from '#server/testing/people.ts';
 import { binaryReply } from '#server/testing/binary-reply.ts';
-import { cover, geoTiff, makeSite, sendUpload, smallGrid, storedFiles } from '#server/testing/sites.ts';
+import {
+  cover,
+  geoTiff,
+  makeSite,
+  sendUpload,
+  smallGrid,
+  storedFiles,
+  uploadLayer,
+} from '#server/testing/sites.ts';
 import { testServer, type TestServer } from '#server/testing/test-server.ts';
 
 let server: TestServer;
@@ -132,6 +140,59 @@ describe('a raster on the cells of the site', () => {
       vertical,
       note: 'lidar',
     });
+  });
+});
+
+describe('heights that seem to be in feet', () => {
+  const inFeet = (unit: string) =>
+    geoTiff(
+      Float32Array.from({ length: 24 }, (_, i) => i / 4 - 1.5),
+      { unit },
+    );
+
+  it('are asked about before they are placed, whatever was agreed to beforehand', async () => {
+    const { modeller } = team.agents;
+    const site = await makeSite(modeller, team.teamId);
+    const sent = await sendUpload(modeller, team.teamId, inFeet('US survey foot'), {
+      siteId: site.id,
+      part: 'elevation',
+      place: 'when-clear',
+    });
+    const read = await settled(sent);
+    expect(read).toMatchObject({
+      state: 'choices',
+      decisions: ['heights'],
+      heights: { unit: 'us-foot', because: 'its unit is “US survey foot”' },
+    });
+    expect((await modeller.post(path(sent.id, '/place')).expect(400)).body.fields).toMatchObject([
+      { field: 'vertical' },
+    ]);
+    expect((await choose(read, { part: 'exposure' }).expect(200)).body.decisions).not.toContain('heights');
+    const vertical = { datum: '', unit: 'foot' } as const;
+    const said = (await choose(read, { vertical }).expect(200)).body as Upload;
+    expect(said.decisions).toEqual([]);
+    await modeller.post(path(sent.id, '/place')).expect(200);
+    await settled(sent);
+    expect((await siteOf(site.id)).layers.find(({ part }) => part === 'elevation')).toMatchObject({
+      vertical,
+    });
+  });
+
+  it('are not asked about in metres, and are refused where one call leaves no place to say it', async () => {
+    const { modeller } = team.agents;
+    const site = await makeSite(modeller, team.teamId);
+    const sent = await sendUpload(modeller, team.teamId, inFeet('m'), {
+      siteId: site.id,
+      part: 'elevation',
+      place: 'when-clear',
+    });
+    expect(await settled(sent)).toMatchObject({ state: 'done' });
+    const before = storedFiles(server);
+    const { body } = await uploadLayer(modeller, site.id, 'elevation', inFeet('ft')).expect(400);
+    expect(body.fields).toMatchObject([
+      { field: 'file', message: expect.stringContaining('seem to be in feet') as string },
+    ]);
+    await expect.poll(() => storedFiles(server)).toEqual(before);
   });
 });
 
