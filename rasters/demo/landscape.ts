@@ -1,5 +1,6 @@
 import { demoClasses, habitatValue } from './classes.ts';
 import { drawCreeks, farAway, type CreekField } from './creeks.ts';
+import { heightField } from './heights.ts';
 import { refugeField, scatterSurveyedMounds, type SurveyedMound } from './mounds.ts';
 import { hash, randomStream, rough } from './noise.ts';
 
@@ -13,6 +14,8 @@ export interface Landscape {
   readonly cover: Float32Array;
   /** strength of the refuge, 0..1 */
   readonly refuge: Float32Array;
+  /** m above an invented datum */
+  readonly elevation: Float32Array;
   readonly mounds: readonly SurveyedMound[];
   /** whether the ground at a point was laid bare by the die-off */
   readonly bareAt: (x: number, y: number) => boolean;
@@ -54,7 +57,8 @@ export function makeLandscape(width: number, height: number, seed: number): Land
   });
   const refuge = refugeField(width, height, mounds, seed + 32);
   const cover = growCover(width, height, { creeks, dieOff, habitat, mounds, seed });
-  return { habitat, cover, refuge, mounds, bareAt };
+  const elevation = heightField(width, height, creeks, habitat, seed + 81);
+  return { habitat, cover, refuge, elevation, mounds, bareAt };
 }
 
 /** Above 0 where plants died; about 0.1 deeper every 6 m. Creeks drained their surroundings, and plants there lived. */

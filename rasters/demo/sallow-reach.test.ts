@@ -18,7 +18,12 @@ describe('the rasters of the invented site', () => {
       expect(raster.grid).toEqual(demoGrid);
       expect(raster.crsName).toBe('WGS 84 / UTM zone 31N');
     }
-    expect(rasters.map((r) => r.fileName)).toEqual(['habitat.tif', 'cover.tif', 'refuge.tif']);
+    expect(rasters.map((r) => r.fileName)).toEqual([
+      'habitat.tif',
+      'cover.tif',
+      'refuge.tif',
+      'elevation.tif',
+    ]);
   });
 
   it('say that they are invented', () => {
@@ -34,6 +39,18 @@ describe('the rasters of the invented site', () => {
     expect(summary.classCounts?.map((c) => c.value)).toEqual(demoClasses.map((c) => c.value));
     expect(summary.noDataShare).toBe(0);
     for (const { cells } of summary.classCounts ?? []) expect(cells).toBeGreaterThan(2000);
+  });
+
+  it('elevation lies as its classes do: creeks lowest, then banks, platforms, levees highest', async () => {
+    const [habitat, elevation] = [await read('habitat'), await read('elevation')];
+    const { creek, bank, low, high, levee } = habitatValue;
+    const means = [creek, bank, low, high, levee].map((of) => {
+      const heights = Array.from(elevation.values).filter((_, i) => habitat.values[i] === of);
+      return heights.reduce((sum, z) => sum + z, 0) / heights.length;
+    });
+    expect(means).toEqual([...means].sort((a, b) => a - b));
+    expect(means[0]).toBeLessThan(0);
+    expect(elevation.values.every((z) => z > -2 && z < 1.2)).toBe(true);
   });
 
   it('cover is a share below the capacity of its class, unseen over water alone', async () => {

@@ -19,15 +19,15 @@ export const demoSurveyYear = 2026;
 const seed = 2026;
 
 export interface DemoRaster {
-  readonly name: 'habitat' | 'cover' | 'refuge';
+  readonly name: 'habitat' | 'cover' | 'refuge' | 'elevation';
   readonly fileName: string;
   /** a GeoTIFF */
   readonly bytes: Uint8Array;
 }
 
-/** The three rasters of the invented site, the same bytes each time and everywhere. */
+/** The four rasters of the invented site, the same bytes each time and everywhere. */
 export function demoRasters(): DemoRaster[] {
-  const { habitat, cover, refuge } = makeLandscape(demoGrid.width, demoGrid.height, seed);
+  const { habitat, cover, refuge, elevation } = makeLandscape(demoGrid.width, demoGrid.height, seed);
   const shared = { grid: demoGrid, crsName: demoCrsName };
   const facts = (what: string) => ({
     DATA_ORIGIN: 'invented demo data',
@@ -70,6 +70,17 @@ export function demoRasters(): DemoRaster[] {
         bandName: 'refuge strength',
         unit: 'share',
         facts: facts('Strength of refuges on mounds'),
+      }),
+    },
+    {
+      name: 'elevation',
+      fileName: 'elevation.tif',
+      bytes: encodeGeoTiff({
+        ...shared,
+        values: elevation,
+        bandName: 'height above an invented datum',
+        unit: 'm',
+        facts: facts('Elevation in metres above an invented datum'),
       }),
     },
   ];

@@ -59,7 +59,12 @@ describe('the demo', () => {
 
   it('is an invented place with classed ground, a plant and an outlook', () => {
     expect(site).toMatchObject({ name: 'Sallow Reach', invented: true, plantSet: true, outlookSet: true });
-    expect(site.layers.map((layer) => layer.part).sort()).toEqual(['cover', 'habitat', 'refuge']);
+    expect(site.layers.map((layer) => layer.part).sort()).toEqual([
+      'cover',
+      'elevation',
+      'habitat',
+      'refuge',
+    ]);
     expect(site.layers.find((layer) => layer.part === 'habitat')?.classes).not.toBeNull();
     expect(site.outlook.droughtIndex.filter((x) => x < -2.5)).toHaveLength(2);
   });

@@ -7,7 +7,7 @@ import { demoRasters } from '#rasters/demo/sallow-reach.ts';
 import type { RunnerProgress } from '#sim-core/ensemble/runner.ts';
 import { keepCosts } from '../features/costs/costs.service.ts';
 import { createOption, listOptions } from '../features/options/option.service.ts';
-import { addLayer, setLayerClasses } from '../features/sites/layer.service.ts';
+import { addLayer, changeLayer, setLayerClasses } from '../features/sites/layer.service.ts';
 import { listSitesOf } from '../features/sites/site-reply.ts';
 import { setOutlook } from '../features/sites/outlooks/outlook.service.ts';
 import { createSite, deleteSite, setPlant } from '../features/sites/site.service.ts';
@@ -97,8 +97,11 @@ async function makeSite(services: Services, teamId: string): Promise<Site> {
       : await createSite(services, { teamId, name: demoSiteName, invented: true, ...raster });
   }
   const { id, layers } = site!;
-  const habitat = layers.find((layer) => layer.part === 'habitat')!;
-  await setLayerClasses(services, id, habitat.id, demoHabitatClasses);
+  const ofPart = (part: LayerPart) => layers.find((layer) => layer.part === part)!;
+  await setLayerClasses(services, id, ofPart('habitat').id, demoHabitatClasses);
+  // No curve hangs on it, so it changes no run: it is there to try curves on.
+  const vertical = { datum: 'an invented datum', unit: 'metre' } as const;
+  await changeLayer(services, id, ofPart('elevation').id, { vertical });
   await setPlant(services, id, demoPlant);
   await keepCosts(services, id, demoCosts, nameOf('manager'));
   return setOutlook(services, id, demoOutlook);
