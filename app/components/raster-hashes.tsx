@@ -15,6 +15,9 @@ export function RasterHashes({ hash, sourceHash }: { hash: string; sourceHash: s
 /** Enough of a hash to compare by eye. */
 const Hash = ({ of, hash }: { of: string; hash: string }) => (
   <span className="block text-axis text-ink-2" title={`SHA-256 ${hash}`}>
-    {of}: SHA-256 <span className="font-mono">{hash.slice(0, 12)}…</span>
+    {of}:{' '}
+    <span className="whitespace-nowrap">
+      SHA-256 <span className="font-mono">{hash.slice(0, 12)}…</span>
+    </span>
   </span>
 );
