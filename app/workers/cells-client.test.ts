@@ -42,6 +42,29 @@ describe('createCellsClient', () => {
     worker.terminate();
   });
 
+  it('leaves ground that nobody waits for any more, and gives the next draft a picture all the same', async () => {
+    const { worker } = portWorker(cellsFace);
+    const client = createCellsClient(() => worker);
+    const grid = { width: 3, height: 1, cellSize: 1, originX: 0, originY: 0, epsg: 32631 };
+    const hash = 'b'.repeat(64);
+    const layers = new Map([[hash, { packed: blobOf(Float32Array.of(50, 100, -1)), noData: -1 }]]);
+    const sources = layerSourcesSchema.parse({ cover: { layer: hash, scale: 0.01 } });
+    const told: number[] = [];
+    const onProgress = (share: number) => void told.push(share);
+    const left = new AbortController();
+    left.abort();
+    await expect(
+      client.engineGround(layers, sources, grid, { onProgress, signal: left.signal }),
+    ).rejects.toMatchObject({ name: 'GroundLeft' });
+    expect(told).toEqual([]);
+    expect(await client.coarseGround(layers, sources, grid, ['cover'])).toEqual({
+      cover: Uint8Array.of(128, 255, 0),
+    });
+    await client.engineGround(layers, sources, grid, { onProgress });
+    expect(told[0]).toBe(0);
+    worker.terminate();
+  });
+
   it('fails what waits when its worker dies, and starts another for the next', async () => {
     const dead = portWorker({ unpack: () => new Promise(() => undefined) });
     const alive = portWorker(cellsFace);

@@ -1,4 +1,4 @@
-import { releaseProxy, wrap, type Remote } from 'comlink';
+import { proxy, releaseProxy, wrap, type Remote } from 'comlink';
 import type { CellArray, CellLimits } from '#rasters/cells/cell-header.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { LayerSource, LayerSources } from '#sim-core/spec/run-spec.ts';
@@ -19,8 +19,20 @@ export interface CellsClient {
   unpack(packed: Blob, limits: CellLimits): Promise<CellArray>;
   /** round(255 × share) of every cell, from one source of the ground */
   sourceBytes(layers: PackedLayers, source: LayerSource, grid: Grid): Promise<Uint8Array>;
-  /** the whole ground, as a run would start from it */
-  engineGround(layers: PackedLayers, sources: LayerSources, grid: Grid): Promise<EngineGround>;
+  /** the whole ground, as a run would start from it; it is left (GroundLeft) where the signal says so */
+  engineGround(
+    layers: PackedLayers,
+    sources: LayerSources,
+    grid: Grid,
+    watch?: { readonly onProgress?: (share: number) => void; readonly signal?: AbortSignal },
+  ): Promise<EngineGround>;
+  /** the same from afar and soon: maps of the whole grid in which one cell stands for its neighbours */
+  coarseGround(
+    layers: PackedLayers,
+    sources: LayerSources,
+    grid: Grid,
+    parts: readonly (keyof LayerSources)[],
+  ): Promise<Partial<Record<keyof LayerSources, Uint8Array>>>;
 }
 
 const startWorker = () =>
@@ -59,7 +71,20 @@ export function createCellsClient(createWorker: () => Worker = startWorker): Cel
   return {
     unpack: (...input) => ask((remote) => remote.unpack(...input)),
     sourceBytes: (...input) => ask((remote) => remote.sourceBytes(...input)),
-    engineGround: (...input) => ask((remote) => remote.engineGround(...input)),
+    engineGround: (layers, sources, grid, { onProgress, signal } = {}) =>
+      ask((remote) =>
+        remote.engineGround(
+          layers,
+          sources,
+          grid,
+          proxy((share: number) => {
+            const wanted = !signal?.aborted;
+            if (wanted) onProgress?.(share);
+            return wanted;
+          }),
+        ),
+      ),
+    coarseGround: (...input) => ask((remote) => remote.coarseGround(...input)),
   };
 }
 

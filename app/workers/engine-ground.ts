@@ -1,5 +1,8 @@
-import { buildGround, sourceBytes, type RasterValues } from '#sim-core/grid/build-ground.ts';
+import { shareReader, type RasterValues, type ShareReader } from '#sim-core/grid/source-shares.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
+import { groundLayers, ShareError, type GroundLayer } from '#sim-core/grid/ground.ts';
+import { RunProblem } from '#sim-core/run/run-problem.ts';
+import type { FieldProblem } from '#sim-core/spec/problems.ts';
 import type { LayerSources, RasterSource } from '#sim-core/spec/run-spec.ts';
 
 /** The ground as a run would start from it, one byte a cell: round(255 × share). */
@@ -37,42 +40,87 @@ export interface GroundFacts {
   readonly withoutElevation: number;
 }
 
-/** @throws RunProblem at each layer whose numbers do not become shares */
-export function engineGround(
+/** Cells that are put together in one go. */
+const stretch = 262_144;
+
+/**
+ * The ground as `buildGround` makes it, byte for byte, with its facts in the same pass. It goes stretch by stretch over
+ * all layers at once, so that it needs no array of numbers beside the bytes, can say how far it is, and can be left.
+ *
+ * @param between called after each stretch with the cells done; what it throws ends the work
+ * @throws RunProblem at each layer whose numbers do not become shares
+ */
+export async function engineGround(
   sources: LayerSources,
   grid: Grid,
   rasterOf: (source: RasterSource) => RasterValues,
-): EngineGround {
-  const { cover: surveyed, ...ground } = buildGround(sources, grid, rasterOf);
-  const { capacity, vigour, exposure, refuge, fence } = ground;
-  const cover = new Uint8Array(surveyed.length);
+  between: (done: number, cells: number) => void | Promise<void> = () => undefined,
+): Promise<EngineGround> {
+  const cells = grid.width * grid.height;
+  const problems = new Map<GroundLayer, FieldProblem>();
+  const guarded = <T>(layer: GroundLayer, work: () => T): T | undefined => {
+    if (problems.has(layer)) return undefined;
+    try {
+      return work();
+    } catch (error) {
+      if (!(error instanceof ShareError)) throw error;
+      problems.set(layer, { field: `layers.${layer}`, message: error.message });
+      return undefined;
+    }
+  };
+  const parts = groundLayers.map((layer) => ({
+    layer,
+    read: guarded(layer, () => shareReader(sources[layer], grid, rasterOf)),
+    bytes: new Uint8Array(cells),
+  }));
+  const [capacity, vigour, exposure, refuge, fence, cover] = parts.map(({ bytes }) => bytes);
+  const missing = elevationGaps(sources.capacity, grid, rasterOf);
+  const shares = new Float32Array(Math.min(stretch, cells));
   const sums = { capacity: 0, vigour: 0, exposure: 0 };
   let [shelter, barren, barrenShelter] = [0, 0, 0];
-  let [plantable, sheltered, fenced, covered, stranded, overfull] = [0, 0, 0, 0, 0, 0];
-  for (let i = 0; i < cover.length; i++) {
-    const k = capacity[i] / 255;
-    const held = Math.min(surveyed[i], k);
-    cover[i] = Math.round(held * 255);
-    covered += held;
-    if (refuge[i] > 0) {
-      if (k > 0) {
-        sheltered++;
-        shelter += refuge[i] / 255;
-      } else {
-        barren++;
-        barrenShelter += refuge[i] / 255;
+  let [plantable, sheltered, fenced, covered, stranded, overfull, withoutElevation] = [0, 0, 0, 0, 0, 0, 0];
+
+  for (let first = 0; first < cells; first += stretch) {
+    const some = shares.subarray(0, Math.min(stretch, cells - first));
+    for (const { layer, read, bytes } of parts)
+      guarded(layer, () => {
+        read?.(first, some);
+        // What stands is held back by capacity below; everything else is rounded as it is.
+        if (layer !== 'cover')
+          for (let i = 0; i < some.length; i++) bytes[first + i] = Math.round(some[i] * 255);
+      });
+    if (problems.size === 0) {
+      // Cover was read last, so `some` holds it.
+      for (let i = 0; i < some.length; i++) {
+        const cell = first + i;
+        const k = capacity[cell] / 255;
+        const held = Math.min(some[i], k);
+        cover[cell] = Math.round(held * 255);
+        covered += held;
+        if (refuge[cell] > 0) {
+          if (k > 0) {
+            sheltered++;
+            shelter += refuge[cell] / 255;
+          } else {
+            barren++;
+            barrenShelter += refuge[cell] / 255;
+          }
+        }
+        if (fence[cell] > 0) fenced++;
+        if (some[i] > 0 && k === 0) stranded++;
+        // A survey in whole per cent may stand half a step above a capacity held in 8 bits.
+        else if (some[i] > k + 1 / 255) overfull++;
+        if (k === 0) continue;
+        plantable++;
+        sums.capacity += k;
+        sums.vigour += vigour[cell] / 255;
+        sums.exposure += exposure[cell] / 255;
       }
+      withoutElevation += missing?.(first, some) ?? 0;
     }
-    if (fence[i] > 0) fenced++;
-    if (surveyed[i] > 0 && k === 0) stranded++;
-    // A survey in whole per cent may stand half a step above a capacity held in 8 bits.
-    else if (surveyed[i] > k + 1 / 255) overfull++;
-    if (k === 0) continue;
-    plantable++;
-    sums.capacity += k;
-    sums.vigour += vigour[i] / 255;
-    sums.exposure += exposure[i] / 255;
+    await between(first + some.length, cells);
   }
+  if (problems.size > 0) throw new RunProblem([...problems.values()]);
   const mean = (sum: number) => (plantable === 0 ? 0 : sum / plantable);
   const facts: GroundFacts = {
     plantable,
@@ -87,24 +135,29 @@ export function engineGround(
     covered,
     stranded,
     overfull,
-    withoutElevation: withoutElevation(sources.capacity, grid, rasterOf),
+    withoutElevation,
   };
-  return { ...ground, cover, facts };
+  return { capacity, vigour, exposure, refuge, fence, cover, facts };
 }
 
-/** Of a capacity that is a product of class and elevation: cells that only the missing elevation bars. */
-function withoutElevation(
+/** Of a capacity that is a product of class and elevation: counts the cells of a stretch that only the missing elevation bars. */
+function elevationGaps(
   capacity: LayerSources['capacity'],
   grid: Grid,
   rasterOf: (source: RasterSource) => RasterValues,
-): number {
-  if (typeof capacity !== 'object' || !('product' in capacity)) return 0;
+): ((first: number, scratch: Float32Array) => number) | undefined {
+  if (typeof capacity !== 'object' || !('product' in capacity)) return undefined;
   const [ofClass, ofElevation] = capacity.product;
-  if (typeof ofElevation !== 'object' || !('layer' in ofElevation)) return 0;
+  if (typeof ofElevation !== 'object' || !('layer' in ofElevation)) return undefined;
   const { values, noData } = rasterOf(ofElevation);
-  const classes = sourceBytes(ofClass, grid, rasterOf);
-  let missing = 0;
-  for (let i = 0; i < classes.length; i++)
-    if (classes[i] > 0 && (Number.isNaN(values[i]) || values[i] === noData)) missing++;
-  return missing;
+  const readClass: ShareReader = shareReader(ofClass, grid, rasterOf);
+  return (first, scratch) => {
+    readClass(first, scratch);
+    let gaps = 0;
+    for (let i = 0; i < scratch.length; i++) {
+      const height = values[first + i];
+      if (Math.round(scratch[i] * 255) > 0 && (Number.isNaN(height) || height === noData)) gaps++;
+    }
+    return gaps;
+  };
 }

@@ -1,4 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
+import { useSyncExternalStore } from 'react';
 import type { Site } from '#contract/sites.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { rasterSources, type LayerSource, type LayerSources } from '#sim-core/spec/run-spec.ts';
@@ -59,11 +60,54 @@ export const sourceBytesQuery = (origin: GroundOrigin, source: LayerSource) =>
     ...held,
   });
 
+/** How far the ground that is being worked out is, 0..1; undefined while none is. */
+let progress: number | undefined;
+const listeners = new Set<() => void>();
+const tellProgress = (share: number | undefined) => {
+  progress = share;
+  listeners.forEach((listener) => listener());
+};
+export const useGroundProgress = (): number | undefined =>
+  useSyncExternalStore(
+    (listener) => {
+      listeners.add(listener);
+      return () => listeners.delete(listener);
+    },
+    () => progress,
+  );
+
 /** The ground as a run would start from it, with what its maps say in numbers. */
 export const engineGroundQuery = (origin: GroundOrigin, sources: LayerSources) =>
   queryOptions({
     queryKey: ['engine-ground', origin, sources],
-    queryFn: async ({ signal }) =>
-      cells.engineGround(await fetchLayers(origin, Object.values(sources), signal), sources, origin.grid),
+    queryFn: async ({ signal }) => {
+      const layers = await fetchLayers(origin, Object.values(sources), signal);
+      try {
+        return await cells.engineGround(layers, sources, origin.grid, { onProgress: tellProgress, signal });
+      } finally {
+        if (!signal.aborted) tellProgress(undefined);
+      }
+    },
     ...held,
+  });
+
+/** Maps of it from afar, for as long as the exact ones are on their way. */
+export const coarseGroundQuery = (
+  origin: GroundOrigin,
+  sources: LayerSources,
+  parts: readonly (keyof LayerSources)[],
+) =>
+  queryOptions({
+    queryKey: ['coarse-ground', origin, sources, parts],
+    queryFn: async ({ signal }) =>
+      cells.coarseGround(
+        await fetchLayers(origin, Object.values(sources), signal),
+        sources,
+        origin.grid,
+        parts,
+      ),
+    ...held,
+    gcTime: 0,
+    // What it cannot make, the exact work says better.
+    retry: false,
   });

@@ -23,6 +23,7 @@ import { ComparisonDeeds } from './comparison-deeds.tsx';
 import { useWorkOnComparison } from './comparison-ground.ts';
 import { SitePage } from './site-page.tsx';
 import { useSite } from './use-site.ts';
+import { WatchStep } from './watch-step.tsx';
 
 /** The comparisons of a site: start one, see how they stand, open one. */
 export function Page() {
@@ -55,9 +56,14 @@ export function Page() {
       </div>
       <section className="border-b border-ink py-4">
         {!mayDraw ? (
-          <p className="text-ink-2">
-            Modellers, managers and admins start comparisons; you can open each below.
-          </p>
+          <>
+            <p className="mb-2.5 text-ink-2">
+              Modellers, managers and admins start comparisons. Open one, or watch a single future of it.
+            </p>
+            <div className="flex flex-wrap gap-3">
+              <WatchStep first="comparison" />
+            </div>
+          </>
         ) : options.data ? (
           <ComparisonStartForm
             site={site}

@@ -39,7 +39,7 @@ export function EngineView(props: {
     <section
       className="border-t border-ink py-3"
       aria-label="What the engine will see"
-      aria-busy={ground.outdated || undefined}
+      aria-busy={ground.outdated || ground.coarse || undefined}
     >
       <h2 className="mb-1 text-body">What the engine will see</h2>
       {ground.error && (
@@ -52,6 +52,12 @@ export function EngineView(props: {
       {!facts && !ground.error && (
         <p role="status" className="text-note text-ink-2">
           {site.layers.length === 0 ? 'Nothing yet: it follows from the layers.' : 'Being worked out …'}
+        </p>
+      )}
+      {facts && (ground.outdated || ground.coarse) && (
+        <p role="status" className="mb-1 text-note text-ink-2">
+          Figures of before; the new ones are being worked out
+          {ground.progress !== undefined && `, ${formatShare(ground.progress)} done`}.
         </p>
       )}
       {facts && (

@@ -63,12 +63,12 @@ export function GroundMap(props: {
         label={`${site.name}, ${name}`}
         summary={part ? layerSummary(part) : engineSummary(map ?? 'capacity')}
       />
-      {(raster === undefined || (!part && ground.outdated)) && !error && (
+      {(raster === undefined || (!part && (ground.outdated || ground.coarse))) && !error && (
         <p
           role="status"
           className="busy-ticks absolute top-4 left-6 border-b border-transparent bg-ground px-2 py-1 text-note"
         >
-          {part ? `Fetching ${name}` : 'Working out what the engine will see'}
+          {part ? `Fetching ${name}` : workingWords(ground)}
         </p>
       )}
       {error && (
@@ -123,4 +123,12 @@ export function GroundMap(props: {
         return `Covered at the start: ${share(facts.covered)}.`;
     }
   }
+}
+
+/** What stands on the map while the engine's ground is worked out, and how far that is. */
+function workingWords({ coarse, progress }: GroundRasters): string {
+  const share = progress === undefined ? '' : `, ${formatShare(progress)} done`;
+  return coarse
+    ? `Seen from afar; the exact ground is being worked out${share}`
+    : `Working out what the engine will see${share}`;
 }

@@ -65,7 +65,9 @@ export function Page() {
   }, [site, habitat, classes.dirty, shownClasses, elevation.draft.elevationCurves]);
   const settled = useSettled(draft, rest);
   // What was saved is shown at once; a draft waits until the hand rests.
-  const ground = useGroundRasters(classes.dirty || elevation.dirty ? settled : site);
+  const shownMap = view?.of === 'engine' ? view.map : undefined;
+  const first = useMemo(() => (shownMap ? [...new Set(['capacity', shownMap] as const)] : []), [shownMap]);
+  const ground = useGroundRasters(classes.dirty || elevation.dirty ? settled : site, first);
 
   const unsaved =
     mayKeepGround && (elevation.dirty || (habitat !== undefined && (classes.dirty || classes.suggested)));

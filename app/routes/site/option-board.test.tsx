@@ -71,6 +71,8 @@ function show(more: { works?: Work[]; on?: Site; year?: string; justMade?: boole
         refuge,
         error: null,
         outdated: false,
+        coarse: false,
+        progress: undefined,
         retry: () => undefined,
       }}
       pens={{ ...startingPens(on.outlook.surveyYear), ...(more.year !== undefined && { year: more.year }) }}

@@ -36,6 +36,7 @@ import { useAllowed } from './use-allowed.ts';
 import { useLookStart } from './use-look-start.ts';
 import { useSite } from './use-site.ts';
 import { useYearParam } from './use-year-param.ts';
+import { WatchStep } from './watch-step.tsx';
 
 /** One option on the drawing board. Keyed by the option: each has its own drawing. */
 export function OptionBoard(props: {
@@ -251,10 +252,12 @@ export function OptionBoard(props: {
         />
       }
       action={
-        mayDraw && (
+        mayDraw ? (
           <PlaceFirst board={board}>
             <OptionAction {...{ option, drawing }} waits={isShown(board.laying)} />
           </PlaceFirst>
+        ) : (
+          <WatchStep first="run" optionId={option.id} />
         )
       }
     />

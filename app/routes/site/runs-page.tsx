@@ -17,6 +17,7 @@ import { RunDeed, type AskedDeed } from './run-deed.tsx';
 import { useStartParts } from './run-ground.ts';
 import { SitePage } from './site-page.tsx';
 import { useSite } from './use-site.ts';
+import { WatchStep } from './watch-step.tsx';
 
 const pageLength = 50;
 
@@ -57,9 +58,14 @@ export function Page() {
       </div>
       <section className="border-b border-ink py-4">
         {!mayDraw ? (
-          <p className="text-ink-2">
-            Modellers, managers and admins start runs; you can open each and run it again to check it.
-          </p>
+          <>
+            <p className="mb-2.5 text-ink-2">
+              Modellers, managers and admins start runs. Watch one year by year, or run it again to check it.
+            </p>
+            <div className="flex flex-wrap gap-3">
+              <WatchStep first="run" />
+            </div>
+          </>
         ) : options.data ? (
           <StartForm
             key={startId ?? 'first'}
