@@ -18,8 +18,8 @@ const run = (id: string, status: string, optionId: string) => ({
 
 function show(props: Parameters<typeof WatchStep>[0], runs: unknown[], comparisons: unknown[]) {
   const client = new QueryClient({ defaultOptions: { queries: { staleTime: Infinity } } });
-  client.setQueryData(runsQuery('s').queryKey, { runs });
-  client.setQueryData(comparisonsQuery('s').queryKey, { comparisons });
+  client.setQueryData(runsQuery('s').queryKey, { runs } as never);
+  client.setQueryData(comparisonsQuery('s').queryKey, { comparisons } as never);
   const routes = [
     {
       element: <Outlet context={{ site: { id: 's' } }} />,
