@@ -71,8 +71,8 @@ const folderRules = [
   {
     top: 'server/contract',
     pattern: only(
-      ['zod', '#contract', '#sim-core/spec', '#sim-core/grid'],
-      'The contract imports zod and sim-core/spec: it runs in browsers.',
+      ['zod', '#contract', '#sim-core/spec', '#sim-core/belief', '#sim-core/grid'],
+      'The contract imports zod, sim-core/spec and sim-core/belief: it runs in browsers.',
     ),
   },
   {

@@ -7,6 +7,7 @@ import * as ground from '#contract/ground.ts';
 import * as optionFiles from '#contract/option-files.ts';
 import * as options from '#contract/options.ts';
 import * as outlooks from '#contract/outlook-endpoints.ts';
+import * as plants from '#contract/plants.ts';
 import * as people from '#contract/people.ts';
 import * as runs from '#contract/runs.ts';
 import * as sites from '#contract/sites.ts';
@@ -63,6 +64,13 @@ const expected: Record<string, string> = {
   'POST /api/teams/:teamId/uploads/:uploadId/cancel': modellers,
   'POST /api/teams/:teamId/uploads/:uploadId/retry': modellers,
   'DELETE /api/teams/:teamId/uploads/:uploadId': modellers,
+
+  'GET /api/teams/:teamId/plants': everyRole,
+  'POST /api/teams/:teamId/plants': modellers,
+  'PATCH /api/teams/:teamId/plants/:plantId': modellers,
+  'POST /api/teams/:teamId/plants/:plantId/copies': modellers,
+  'POST /api/teams/:teamId/plants/:plantId/versions': modellers,
+  'GET /api/teams/:teamId/plants/:plantId/versions/:version': everyRole,
 
   'GET /api/teams/:teamId/sites': everyRole,
   'POST /api/teams/:teamId/sites': modellers,
@@ -165,6 +173,7 @@ const isEndpoint = (value: unknown): value is Endpoint =>
   typeof value === 'object' && value !== null && 'method' in value && 'path' in value && 'reply' in value;
 const contract = [
   people,
+  plants,
   sites,
   outlooks,
   ground,

@@ -14,6 +14,7 @@ import { workingGridRoutes } from './features/sites/working-grid/working-grid.ro
 import { featureRoutes } from './features/sites/features/feature.routes.ts';
 import { uploadRoutes } from './features/sites/uploads/upload.routes.ts';
 import { layerRoutes } from './features/sites/layer.routes.ts';
+import { plantRoutes } from './features/plants/plant.routes.ts';
 import { outlookRoutes } from './features/sites/outlooks/outlook.routes.ts';
 import { siteRoutes } from './features/sites/site.routes.ts';
 import { memberRoutes } from './features/team/members.routes.ts';
@@ -32,6 +33,7 @@ export const allRoutes = (services: Services): Route[] => [
   ...memberRoutes(services),
   ...teamInviteRoutes(services),
   ...outboxRoutes(services),
+  ...plantRoutes(services),
   ...siteRoutes(services),
   ...outlookRoutes(services),
   ...layerRoutes(services),

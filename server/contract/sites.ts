@@ -1,20 +1,12 @@
 import { z } from 'zod';
-import { ratesSchema } from '#sim-core/spec/run-spec.ts';
-import { processesSchema } from '#sim-core/spec/processes.ts';
 import { siteRecordSchema } from './drought-records.ts';
 import { endpoint, id, instant, text } from './endpoint.ts';
 import { featureSchema } from './features.ts';
 import { gridSchema } from './grid.ts';
+import { knownOriginSchema, plantSchema, sitePlantSchema } from './plants.ts';
 import { elevationCurvesSchema, layerPartSchema, layerSchema, tidalDatumsSchema } from './layers.ts';
 import { otherOutlookSchema, outlookSchema } from './outlooks.ts';
 
-export const plantSchema = z.strictObject({
-  name: text(100),
-  rates: ratesSchema,
-  /** what goes on beside spread and loss; nothing unless named */
-  processes: processesSchema.optional(),
-});
-export type Plant = z.infer<typeof plantSchema>;
 
 export const siteSummarySchema = z.object({
   id,
@@ -40,6 +32,8 @@ export const siteSchema = siteSummarySchema.extend({
   tidalDatums: tidalDatumsSchema,
   plant: plantSchema,
   plantSet: z.boolean(),
+  /** null: typed in on this site */
+  plantOrigin: knownOriginSchema.nullable(),
   outlook: outlookSchema,
   outlookSet: z.boolean(),
   /** further outlooks, oldest first */
@@ -95,6 +89,6 @@ export const setPlant = endpoint({
   path: '/api/sites/:siteId/plant',
   summary: 'Set the rates of the plant',
   params: siteParams,
-  body: plantSchema,
+  body: sitePlantSchema,
   reply: siteSchema,
 });

@@ -4,10 +4,13 @@ import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { gridSchema } from '#contract/grid.ts';
 import { alignmentSchema, storedSourceSchema } from '#contract/layers.ts';
+import { plantSchema } from '#contract/plants.ts';
+import { defaultRates } from '#sim-core/spec/parameters.ts';
 import { TeamEntity } from './entities/team.ts';
 import { LostYear1764576000000 } from './migrations/1764576000000-lost-year.ts';
 import { OptionHistory1764580000000 } from './migrations/1764580000000-option-history.ts';
 import { Ground1796119200000 } from './migrations/1796119200000-ground.ts';
+import { Plants1796150000000 } from './migrations/1796150000000-plants.ts';
 import { migrations } from './migrations/index.ts';
 import { openDatabase, openWriter, type Database } from './open-database.ts';
 
@@ -155,6 +158,30 @@ describe('the schema', () => {
       { id: 'kept', lostYear: null },
       { id: 'lost', lostYear: 2026 },
     ]);
+  });
+
+  it('gives plants that are kept empty beliefs and sources, and takes them back', async () => {
+    const writer = await openWriter(file);
+    await undo(writer, Plants1796150000000);
+    await writer.query('PRAGMA foreign_keys = OFF');
+    const before = { name: 'Grass', rates: defaultRates };
+    await writer.query(
+      `INSERT INTO "site" ("id", "teamId", "name", "invented", "width", "height", "cellSize", "originX", "originY", "epsg",
+        "crsName", "plant", "plantSet", "outlook", "outlookSet", "createdAt")
+       VALUES ('s', 't', '', 0, 1, 1, 1, 0, 0, 32631, '', ?, 1, '{}', 1, '')`,
+      [JSON.stringify(before)],
+    );
+    await writer.runMigrations();
+    const read = async () =>
+      (await writer.query<{ plant: string }[]>(`SELECT "plant" FROM "site"`)).map(
+        ({ plant }) => JSON.parse(plant) as unknown,
+      );
+    const [migrated] = await read();
+    expect(plantSchema.parse(migrated)).toEqual(migrated);
+    expect(migrated).toEqual({ ...before, beliefs: {}, sources: {}, fieldNumbers: {} });
+    await undo(writer, Plants1796150000000);
+    expect(await read()).toEqual([before]);
+    await writer.destroy();
   });
 
   it('gives the works that are kept ids and the options their order, Wait first', async () => {

@@ -22,6 +22,7 @@ import {
   EnsembleMapEntity,
   ReplicateEntity,
 } from './entities/comparison-parts.ts';
+import { LibraryPlantEntity, PlantVersionEntity } from './entities/library-plant.ts';
 import { SiteEntity } from './entities/site.ts';
 import { SiteCostsEntity } from './entities/site-costs.ts';
 import { UploadEntity } from './entities/upload.ts';
@@ -35,6 +36,8 @@ export const entities = [
   InviteEntity,
   OneTimeLinkEntity,
   OutboxMessageEntity,
+  LibraryPlantEntity,
+  PlantVersionEntity,
   SiteEntity,
   SiteCostsEntity,
   DroughtRecordEntity,

@@ -1,6 +1,6 @@
 import type { HabitatClass } from '#contract/layers.ts';
 import { unchangedOutlook, type Outlook } from '#contract/outlooks.ts';
-import type { Plant } from '#contract/sites.ts';
+import type { Plant } from '#contract/plants.ts';
 import { demoClasses } from '#rasters/demo/classes.ts';
 import { demoSurveyYear } from '#rasters/demo/sallow-reach.ts';
 import { defaultRates } from '#sim-core/spec/parameters.ts';
@@ -25,6 +25,21 @@ export const demoPlant: Plant = {
     refugeShift: 2.2,
     refugeGrowth: 2,
   },
+  beliefs: {
+    lateralSpread: { law: 'triangular', low: 0.8, mode: 1.2, high: 1.8 },
+    fillRate: { law: 'log-normal', median: 1.2, factor: 1.3 },
+    tolerance: { law: 'normal', mean: -1, standardDeviation: 0.3 },
+  },
+  sources: {
+    lateralSpread: {
+      sure: 'measured here',
+      source: 'Invented: three edges, staked and measured again after a year',
+      range: { low: 0.8, high: 1.8 },
+    },
+    fillRate: { sure: 'published for a relative', source: 'Invented: a paper that does not exist' },
+    tolerance: { sure: 'expert guess', source: 'Invented: what stood after the latest drought' },
+  },
+  fieldNumbers: { frontSpeed: { value: 1.1, plusMinus: 0.3 } },
 };
 
 const droughtIndex = [

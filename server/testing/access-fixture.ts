@@ -119,6 +119,11 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     await agents.admin.get(`/api/sites/${site.id}`).expect(200)
   ).body as Site;
 
+  const plant = await agents.admin
+    .post(`/api/teams/${teamId}/plants`)
+    .send({ plant: site.plant })
+    .expect(200);
+
   const callers = { ...people, outsider: other.people.admin };
   const cookies: AccessFixture['cookies'] = {};
   const sessionIds: AccessFixture['sessionIds'] = {};
@@ -134,6 +139,8 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     inviteId: (invited.body as { id: string }).id,
     messageId: (outbox.body as { messages: { id: string }[] }).messages[0].id,
     siteId: site.id,
+    plantId: (plant.body as { id: string }).id,
+    version: 1,
     layerId: site.layers[0].id,
     hash: site.layers[0].hash,
     uploadId: upload.id,

@@ -3,7 +3,7 @@ import { stream } from '#sim-core/random/streams.ts';
 import { allParameters, anyRateNames, processOf, type AnyRateName } from '#sim-core/spec/all-parameters.ts';
 import type { Rates } from '#sim-core/spec/parameters.ts';
 import type { Processes } from '#sim-core/spec/processes.ts';
-import type { DrawnRates, Uncertain } from '#sim-core/spec/uncertain.ts';
+import type { Beliefs, DrawnRates, Uncertain } from '#sim-core/spec/uncertain.ts';
 import { beliefQuantile } from './belief-quantile.ts';
 
 /** What decides the rates of a run: fields of its RunSpec. */
@@ -33,15 +33,23 @@ export interface RatesOfRun {
  */
 export function ratesOfRun({ seed, replicate, rates, processes, uncertain }: RatesInput): RatesOfRun {
   if (!uncertain) return { rates, processes, drawn: {} };
-  const { draws } = uncertain;
+  const drawn = drawnBy(seed, uncertain, replicate);
+  return { ...withRates({ rates, processes }, drawn), drawn };
+}
+
+/** What the first replicates of an ensemble of so many draws would draw, without a run: a Latin hypercube. */
+export const latinDraws = (seed: string, draws: number, rates: Beliefs): DrawnRates[] =>
+  Array.from({ length: draws }, (_, replicate) => drawnBy(seed, { draws, rates }, replicate));
+
+function drawnBy(seed: string, { draws, rates }: Uncertain, replicate: number): DrawnRates {
   const block = Math.floor(replicate / draws);
   const drawn: DrawnRates = {};
-  for (const name of uncertainNames(uncertain))
+  for (const name of uncertainNames({ rates }))
     drawn[name] = beliefQuantile(
-      uncertain.rates[name]!,
+      rates[name]!,
       allParameters[name],
     )(marginOf(seed, block, name, draws)[replicate % draws]);
-  return { ...withRates({ rates, processes }, drawn), drawn };
+  return drawn;
 }
 
 /** Names of the rates that are uncertain, in the order of the tables. */

@@ -1,5 +1,6 @@
 import type { Comparison } from '#contract/comparisons.ts';
 import { driest, wettest } from '#sim-core/spec/limits.ts';
+import type { Beliefs } from '#sim-core/spec/uncertain.ts';
 import type { RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { WeatherSource } from '#sim-core/spec/weather-source.ts';
 import type { StartBody } from './change-comparison.ts';
@@ -61,11 +62,14 @@ export interface PlanChoices {
   readonly droughtThreshold: number;
   readonly currency: string | null;
   readonly cells: number;
+  /** what is believed of rates that are not known; none: every future takes the rates of a single run */
+  readonly beliefs?: Beliefs | undefined;
 }
 
 /** What starts a comparison: the options' runs have all in common but their works. */
 export function startBody(choices: PlanChoices): StartBody {
-  const { options, outlooks, cells, ...rest } = choices;
+  const { options, outlooks, cells, beliefs = {}, ...rest } = choices;
+  const uncertain = Object.keys(beliefs).length > 0 && { draws: choices.replicates, rates: beliefs };
   const [{ spec }] = options;
   const { version, mode, seed, surveyYear, years, stepsPerYear, boundary, rates, target, layers, processes } =
     spec;
@@ -74,6 +78,7 @@ export function startBody(choices: PlanChoices): StartBody {
     common: {
       ...{ version, mode, seed, surveyYear, years, stepsPerYear, boundary, rates, target, layers },
       ...(processes && { processes }),
+      ...(uncertain && { uncertain }),
     },
     options: options.map(({ optionId, cost }) => ({ optionId, cost })),
     outlooks: [...outlooks],

@@ -14,7 +14,7 @@ const ids = ['1', '2', '3'].map((n) => `00000000-0000-4000-8000-00000000000${n}`
 const site = {
   id: ids[0],
   grid: { width: 10, height: 10, cellSize: 1, originX: 0, originY: 0, epsg: 32617 },
-  plant: { name: 'Grass', rates: defaultRates },
+  plant: { name: 'Grass', rates: defaultRates, beliefs: {} },
   outlook: {
     ...unchangedOutlook,
     surveyYear: 2026,

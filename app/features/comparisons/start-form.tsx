@@ -10,6 +10,7 @@ import { WordButton } from '#app/components/word-button.tsx';
 import { formatCount, formatDuration, formatNumber } from '#app/lib/formats.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
 import { findCautions, gatherCautions } from '#sim-core/cautions/find-cautions.ts';
+import { allParameters, anyRateNames } from '#sim-core/spec/all-parameters.ts';
 import type { Mode, RunSpec } from '#sim-core/spec/run-spec.ts';
 import type { StartBody } from './change-comparison.ts';
 import { mapYears, startBody } from './compose-plan.ts';
@@ -53,6 +54,8 @@ export function ComparisonStartForm(props: {
   const { site, options } = props;
   const [left, setLeft] = useState<ReadonlySet<string>>(new Set());
   const [under, setUnder] = useState<ReadonlySet<string>>(new Set([mainOutlookKey]));
+  const believed = anyRateNames.filter((name) => site.plant.beliefs[name] !== undefined);
+  const [asBelieved, setAsBelieved] = useState(true);
   const [mode, setMode] = useState<Mode>('counts');
   const [seed, setSeed] = useState(() => props.drawSeed());
   const [typed, setTyped] = useState('60');
@@ -144,6 +147,7 @@ export function ComparisonStartForm(props: {
             droughtThreshold: threshold,
             currency: props.costOf(chosen[0])?.currency ?? null,
             cells,
+            beliefs: asBelieved ? site.plant.beliefs : undefined,
           }),
         );
       }}
@@ -182,6 +186,19 @@ export function ComparisonStartForm(props: {
             </option>
           ))}
         </BlankSelect>
+        {believed.length > 0 && (
+          <>
+            <span>with rates</span>
+            <BlankSelect
+              label="Rates that are not known exactly"
+              value={asBelieved ? 'believed' : 'fixed'}
+              onChange={(event) => setAsBelieved(event.target.value === 'believed')}
+            >
+              <option value="believed">as believed, drawn by each future</option>
+              <option value="fixed">fixed, as in a single run</option>
+            </BlankSelect>
+          </>
+        )}
         <span>from the seed</span>
         <Blank
           label="Seed, from which the luck that all options share follows"
@@ -243,8 +260,11 @@ export function ComparisonStartForm(props: {
         <span className="text-note text-ink-2">
           {formatCount(runs)} runs on {formatNumber(workers, 0)} cores:{' '}
           {seconds < 10 ? 'some seconds' : `about ${formatDuration(seconds)}`} on this browser. Options share
-          weather and luck, so their difference is what the works do. Maps of{' '}
-          {kept === years + 1 ? 'every year' : `${kept} of ${years} years`} are kept.
+          weather and luck, so their difference is what the works do.{' '}
+          {believed.length > 0 &&
+            asBelieved &&
+            `Each future draws ${believed.map((name) => allParameters[name].label.toLowerCase()).join(', ')} anew, the same for every option. `}
+          Maps of {kept === years + 1 ? 'every year' : `${kept} of ${years} years`} are kept.
         </span>
       </div>
     </form>

@@ -1,12 +1,21 @@
 import { formatCounted, formatNumber, formatShare } from '#app/lib/formats.ts';
 import { ReadAsTable } from '#app/components/read-as-table.tsx';
+import type { Band } from './implied-draws.ts';
 import { fillFrom, yearsToReach, type Implications } from './implied.ts';
 
 const width = 312;
 const height = 84;
 
 /** How ground fills from very little, in years at index 0. */
-export function FillCurve({ fill, settles, doublingYears }: Implications) {
+export function FillCurve({
+  fill,
+  settles,
+  doublingYears,
+  band,
+}: Pick<Implications, 'fill' | 'settles' | 'doublingYears'> & {
+  /** quantiles over draws of what is believed, by year; none where every rate is fixed */
+  band: readonly Band[] | undefined;
+}) {
   const ceiling = fill.at(-1) ?? 0;
   const near = yearsToReach(fill, ceiling * 0.98) ?? fill.length - 1;
   const shown = Math.min(fill.length - 1, Math.max(5, Math.ceil((near * 1.3) / 5) * 5));
@@ -24,6 +33,20 @@ export function FillCurve({ fill, settles, doublingYears }: Implications) {
     <figure>
       <svg viewBox={`0 -4 ${width} ${height + 20}`} role="img" aria-label={words} className="block w-full">
         <path d={`M0 ${y(1)}H${width}M0 ${y(0.5)}H${width}`} className="stroke-rule-2" />
+        {band && (
+          <path
+            d={`M${[
+              ...band.slice(0, shown + 1).map(({ high }, year) => [year, high]),
+              ...band
+                .slice(0, shown + 1)
+                .map(({ low }, year) => [year, low])
+                .reverse(),
+            ]
+              .map(([year, share]) => `${x(year).toFixed(1)} ${y(share).toFixed(1)}`)
+              .join('L')}Z`}
+            className="fill-shore opacity-60"
+          />
+        )}
         <path
           d={fill
             .slice(0, shown + 1)
@@ -50,11 +73,18 @@ export function FillCurve({ fill, settles, doublingYears }: Implications) {
       </svg>
       <figcaption className="text-note text-ink-2">
         {words} From little, cover doubles every {formatNumber(doublingYears)} years, losses aside.
+        {band && ' The band holds nine tenths of the draws of what is believed.'}
       </figcaption>
       <ReadAsTable
         caption="Cover of good ground at the end of each year"
-        heads={['year', 'cover']}
-        rows={fill.slice(0, shown + 1).map((share, year) => [String(year), formatShare(share)])}
+        heads={band ? ['year', 'cover', '5 %', '95 %'] : ['year', 'cover']}
+        rows={fill
+          .slice(0, shown + 1)
+          .map((share, year) => [
+            String(year),
+            formatShare(share),
+            ...(band ? [formatShare(band[year].low), formatShare(band[year].high)] : []),
+          ])}
       />
     </figure>
   );

@@ -1,6 +1,7 @@
 import {
   createRun,
   fitKernel,
+  frontSpeed,
   referenceShare,
   RunProblem,
   stepRates,
@@ -52,7 +53,7 @@ export function implications(rates: Rates, cellSize: number, stepsPerYear: Steps
       ...rest,
       kernel: fitKernel(rates, cellSize, stepsPerYear),
       problems: [],
-      fill: fillCurve(rates, cellSize, stepsPerYear),
+      fill: fillCurve(rates, stepsPerYear),
     };
   } catch (error) {
     if (!(error instanceof RunProblem)) throw error;
@@ -60,8 +61,13 @@ export function implications(rates: Rates, cellSize: number, stepsPerYear: Steps
   }
 }
 
-/** One cell that stands for ground without end: with a mirrored border its neighbours are itself. */
-function fillCurve(rates: Rates, cellSize: number, stepsPerYear: StepsPerYear): number[] {
+/**
+ * Cover of good ground at the end of each year from `fillFrom` on, at an index of 0. One cell stands for ground without
+ * end: with a mirrored border its neighbours are itself, so neither its size nor the spread matters.
+ */
+export function fillCurve(rates: Rates, stepsPerYear: StepsPerYear): number[] {
+  // A cell whose kernel has a variance of 1, which there is for any rates.
+  const cellSize = rates.lateralSpread / frontSpeed(rates, 1, stepsPerYear, 1);
   const run = createRun({
     spec: runSpecSchema.parse({
       version: 1,
@@ -95,6 +101,13 @@ function fillCurve(rates: Rates, cellSize: number, stepsPerYear: StepsPerYear): 
 export function yearsToReach(fill: readonly number[], share: number): number | undefined {
   const year = fill.findIndex((cover) => cover >= share);
   return year < 0 ? undefined : year;
+}
+
+/** Years until a fill curve comes to `share`, straight between the ends of years; Infinity where it does not. */
+export function yearsToFill(fill: readonly number[], share: number): number {
+  const year = yearsToReach(fill, share);
+  if (year === undefined || year === 0) return year ?? Infinity;
+  return year - (fill[year] - share) / (fill[year] - fill[year - 1]);
 }
 
 /**

@@ -1,6 +1,7 @@
 import type { Rates } from '#sim-core/spec/parameters.ts';
 import { formatNumber, formatShare } from '#app/lib/formats.ts';
 import { ReadAsTable } from '#app/components/read-as-table.tsx';
+import type { ImpliedDraws } from './implied-draws.ts';
 import { yearlyLoss, type Implications } from './implied.ts';
 
 const width = 312;
@@ -8,7 +9,15 @@ const height = 96;
 const samples = 156;
 
 /** Share lost in one year by drought index, on open marsh and on a full refuge. */
-export function LossCurves({ rates, halfLoss }: Pick<Implications, 'halfLoss'> & { rates: Rates }) {
+export function LossCurves({
+  rates,
+  halfLoss,
+  bands,
+}: Pick<Implications, 'halfLoss'> & {
+  rates: Rates;
+  /** of the two half-loss indices over draws of what is believed; none where every rate is fixed */
+  bands: ImpliedDraws['halfLoss'] | undefined;
+}) {
   const { open, refuge } = halfLoss;
   const driest = Math.floor(Math.min(-4, open, refuge) - 2.5);
   const wettest = Math.ceil(Math.max(1, open + 1));
@@ -33,6 +42,17 @@ export function LossCurves({ rates, halfLoss }: Pick<Implications, 'halfLoss'> &
       </div>
       <svg viewBox={`0 -4 ${width} ${height + 20}`} role="img" aria-label={words} className="block w-full">
         <path d={`M0 ${y(1)}H${width}M0 ${y(0.5)}H${width}`} className="stroke-rule-2" />
+        {bands &&
+          [bands.open, bands.refuge].map(({ low, high }, i) => (
+            <rect
+              key={i}
+              x={Math.max(0, x(high))}
+              y={height - (i === 0 ? 10 : 5)}
+              width={Math.max(1, Math.min(width, x(low)) - Math.max(0, x(high)))}
+              height={4}
+              className="fill-shore"
+            />
+          ))}
         {[open, refuge].map((place) => (
           <path
             key={place}
@@ -61,6 +81,10 @@ export function LossCurves({ rates, halfLoss }: Pick<Implications, 'halfLoss'> &
       <figcaption className="text-note text-ink-2">
         {words} Half of the drought loss acts at {formatNumber(halfLoss.neighbours)} among full neighbours and
         at {formatNumber(halfLoss.exposed)} on fully exposed ground.
+        {bands &&
+          ` Bars: nine tenths of the draws put the index of half the drought loss between ${formatNumber(bands.open.low)} and ` +
+            `${formatNumber(bands.open.high)} on open marsh, between ${formatNumber(bands.refuge.low)} and ` +
+            `${formatNumber(bands.refuge.high)} on a full refuge.`}
       </figcaption>
       <ReadAsTable
         caption="Share lost in a year, by drought index"

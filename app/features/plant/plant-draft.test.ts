@@ -1,12 +1,13 @@
 import { expect, it } from 'vitest';
+import { plantSchema } from '#contract/plants.ts';
 import { defaultRates, parameters, rateNames } from '#sim-core/spec/parameters.ts';
 import { grazerParameters } from '#sim-core/spec/process-parameters.ts';
 import { plantErrors, plantOf, rateGroups, startPlant, wrongFields } from './plant-draft.ts';
 import { typeRate } from './rate-sheet.ts';
 
-const plant = { name: 'Cordgrass', rates: defaultRates };
+const plant = plantSchema.parse({ name: 'Cordgrass', rates: defaultRates });
 const start = startPlant(plant);
-const none = { rates: {}, grazers: {}, fragments: {} };
+const none = { rates: {}, grazers: {}, fragments: {}, beliefs: {}, fieldNumbers: {} };
 
 it('asks for every rate once', () => {
   expect(rateGroups.flatMap((group) => group.names).sort()).toEqual([...rateNames].sort());

@@ -1,19 +1,21 @@
 import type { ReactNode } from 'react';
 import { WordChoice } from '#app/components/word-choice.tsx';
+import type { AnyRateName } from '#sim-core/spec/all-parameters.ts';
 import type { Parameter } from '#sim-core/spec/parameters.ts';
 import type { ProcessSheet } from './plant-draft.ts';
-import { RateRows } from './rate-row.tsx';
+import { RateRows, type RateKnowledge } from './rate-row.tsx';
 import { RateSection } from './rate-section.tsx';
 import type { SheetErrors } from './rate-sheet.ts';
 
 /** A process that is off until somebody turns it on, with its rates while it is on. */
-export function ProcessSection<Name extends string>(props: {
+export function ProcessSection<Name extends AnyRateName>(props: {
   title: string;
   note: string;
   table: Readonly<Record<Name, Parameter>>;
   sheet: ProcessSheet<Name>;
   errors: SheetErrors<Name>;
   editable: boolean;
+  knowledge: RateKnowledge;
   /** whether it is on in the plant as saved */
   saved: boolean;
   onChange: (sheet: ProcessSheet<Name>) => void;
@@ -49,6 +51,7 @@ export function ProcessSection<Name extends string>(props: {
             sheet={sheet}
             errors={props.errors}
             editable={editable}
+            knowledge={props.knowledge}
             onChange={(rates) => props.onChange({ ...rates, on: true })}
           />
           {props.children}

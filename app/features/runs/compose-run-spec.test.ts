@@ -107,7 +107,7 @@ describe('composeRunSpec', () => {
     const off = composeRunSpec(siteFixture(), { works: [mound(), mound({ x: 5000 })] }, choices);
     expect(off.problems).toMatchObject([{ field: 'actions.1', mend: 'options' }]);
     const rates = { ...defaultRates, lateralSpread: 20, fillRate: 0.01 };
-    const steep = composeRunSpec(siteFixture({ plant: { name: 'x', rates } }), wait, choices);
+    const steep = composeRunSpec(siteFixture({ plant: { ...siteFixture().plant, rates } }), wait, choices);
     expect(steep.problems).toMatchObject([{ field: 'rates.lateralSpread', mend: 'plant' }]);
   });
 });

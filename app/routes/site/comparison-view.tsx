@@ -16,6 +16,7 @@ import { EventList } from '#app/features/comparisons/event-list.tsx';
 import { keepComparison, replicatesQuery } from '#app/features/comparisons/get-comparison.ts';
 import { useLivePart, useLiveVersion } from '#app/features/comparisons/live-comparisons.ts';
 import { SummaryLine } from '#app/features/comparisons/summary-line.tsx';
+import { UncertainRates } from '#app/features/comparisons/uncertain-rates.tsx';
 import { useComparisonFigures } from '#app/features/comparisons/use-comparison-figures.ts';
 import { costsQuery } from '#app/features/options/costs/site-costs.ts';
 import type { KnownRecords } from '#sim-core/compare/known-records.ts';
@@ -136,6 +137,7 @@ export function ComparisonView({ comparison }: { comparison: Comparison }) {
       <div className="pt-3">
         <CautionList cautions={comparison.cautions} found="found when it was started" />
       </div>
+      <UncertainRates uncertain={plan.common.uncertain} />
       {plan.outlooks.length > 1 && (
         <div className="pt-3">
           <WordChoice

@@ -1,5 +1,6 @@
 import { useMutation, useQueries, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useNavigate } from 'react-router-dom';
+import { drawnWords } from '#contract/belief-words.ts';
 import { replicateSpec, type Comparison } from '#contract/comparisons.ts';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { WordButton, WordLink } from '#app/components/word-button.tsx';
@@ -39,9 +40,12 @@ export function FutureAlone(props: {
   const spec = replicateSpec(plan, option, outlook, record.replicate);
   const wanted = inOneOrder(spec);
   const run = runs.map(({ data }) => data).find((data) => data && inOneOrder(data.spec) === wanted);
+  const drew = drawnWords(record.drawn);
+  const draws = drew && `It drew ${drew}. `;
   if (run)
     return (
       <>
+        {draws}
         <WordLink to={`/sites/${siteId}/runs/${run.id}`}>Run alone</WordLink>
         {run.digest === null
           ? ' (not at its end)'
@@ -50,7 +54,7 @@ export function FutureAlone(props: {
             : ', it came to another digest than this future: another engine computed one of them.'}
       </>
     );
-  if (!mayDraw || runs.some(({ isPending }) => isPending)) return null;
+  if (!mayDraw || runs.some(({ isPending }) => isPending)) return draws || null;
   const start = () =>
     register.mutate(
       {
@@ -67,6 +71,7 @@ export function FutureAlone(props: {
     );
   return (
     <>
+      {draws}
       <WordButton lined onClick={start}>
         Run it alone and watch
       </WordButton>

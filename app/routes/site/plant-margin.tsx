@@ -1,6 +1,11 @@
 import type { ReactNode } from 'react';
 import { Notice } from '#app/components/notice.tsx';
+import { LoadingLines } from '#app/components/loading-lines.tsx';
+import { FieldNumbers } from '#app/features/plant/field-numbers.tsx';
+import type { FieldNumbersDraft } from '#app/features/plant/field-numbers-draft.ts';
 import { FillCurve } from '#app/features/plant/fill-curve.tsx';
+import { FrontPolar } from '#app/features/plant/front-polar.tsx';
+import type { ImpliedDraws } from '#app/features/plant/implied-draws.ts';
 import type { Implications } from '#app/features/plant/implied.ts';
 import { KernelBars } from '#app/features/plant/kernel-bars.tsx';
 import { LossCurves } from '#app/features/plant/loss-curves.tsx';
@@ -11,12 +16,18 @@ import { useSite } from './use-site.ts';
 /** What the rates imply on the cells of this site, drawn and in words. */
 export function PlantMargin(props: {
   implied: Implications;
+  /** the same over draws of what is believed; undefined before they are there */
+  drawn: ImpliedDraws | undefined;
+  uncertain: boolean;
   rates: Rates;
   /** processes that are on: none of the pictures knows of them */
   grazing: boolean;
   fragments: boolean;
+  fieldNumbers: FieldNumbersDraft;
+  editable: boolean;
+  onFieldNumbers: (draft: FieldNumbersDraft) => void;
 }) {
-  const { implied, rates } = props;
+  const { implied, rates, drawn, uncertain } = props;
   const { site } = useSite();
   const { cellSize } = site.grid;
   const { kernel } = implied;
@@ -34,10 +45,18 @@ export function PlantMargin(props: {
           </Notice>
         ) : (
           <>
-            <dl className="flex gap-x-8">
-              <Speed speed={kernel.frontSpeed} words="along rows" />
-              <Speed speed={kernel.diagonalFrontSpeed} words="along the diagonal" />
-            </dl>
+            {drawn?.speeds ? (
+              <FrontPolar speeds={drawn.speeds} uncertain={uncertain} />
+            ) : (
+              <LoadingLines label="Drawing the front" lines={2} />
+            )}
+            {drawn && drawn.refused > 0 && (
+              <Notice className="mt-2" title="Some draws cannot be run here.">
+                {formatShare(drawn.refused / drawn.draws)} of what is believed comes to rates that no kernel
+                can show on these cells; a comparison with them would be refused. Narrow what is believed of
+                lateral spread, fill-in rate or carry-over.
+              </Notice>
+            )}
             {kernel.warnings.length > 0 ? (
               <Notice className="mt-2" title="The cell is coarse.">
                 {kernel.warnings.join(' ')}
@@ -58,12 +77,24 @@ export function PlantMargin(props: {
             <KernelBars kernel={kernel} cellSize={cellSize} />
           </Part>
           <Part title="Ground fills in">
-            <FillCurve {...implied} />
+            <FillCurve {...implied} band={uncertain ? drawn?.fill : undefined} />
           </Part>
         </>
       )}
+      <Part title="Against what was measured here">
+        <FieldNumbers
+          draft={props.fieldNumbers}
+          implied={drawn}
+          editable={props.editable}
+          onChange={props.onFieldNumbers}
+        />
+      </Part>
       <Part title="What drought takes in a year">
-        <LossCurves rates={rates} halfLoss={implied.halfLoss} />
+        <LossCurves
+          rates={rates}
+          halfLoss={implied.halfLoss}
+          bands={uncertain ? drawn?.halfLoss : undefined}
+        />
       </Part>
     </div>
   );
@@ -93,16 +124,5 @@ function Part(props: { title: string; children: ReactNode }) {
       <h3 className="mb-1 text-note font-semibold">{props.title}</h3>
       {props.children}
     </section>
-  );
-}
-
-function Speed({ speed, words }: { speed: number; words: string }) {
-  return (
-    <div className="flex flex-col-reverse">
-      <dt className="text-note text-ink-2">{words}</dt>
-      <dd className="text-figure font-light tracking-tight">
-        {formatNumber(speed, 3)} <span className="text-body">m/yr</span>
-      </dd>
-    </div>
   );
 }

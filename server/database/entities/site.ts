@@ -23,6 +23,8 @@ export interface SiteRow {
   plant: string;
   /** false while the plant is the default that nobody has looked at */
   plantSet: boolean;
+  /** JSON: the profile that the plant was taken from; null: typed in on the site */
+  plantOrigin: string | null;
   outlook: string;
   outlookSet: boolean;
   /** JSON: further outlooks with their ids; null while there are none */
@@ -50,6 +52,7 @@ export const SiteEntity = new EntitySchema<SiteRow>({
     tidalDatums: { type: 'text', nullable: true },
     plant: { type: 'text' },
     plantSet: { type: 'boolean' },
+    plantOrigin: { type: 'text', nullable: true },
     outlook: { type: 'text' },
     outlookSet: { type: 'boolean' },
     otherOutlooks: { type: 'text', nullable: true },

@@ -6,6 +6,7 @@ import { Ground1796119200000 } from './1796119200000-ground.ts';
 import { Comparisons1796121000000 } from './1796121000000-comparisons.ts';
 import { Outlooks1796140000000 } from './1796140000000-outlooks.ts';
 import { FeatureEdges1796145000000 } from './1796145000000-feature-edges.ts';
+import { Plants1796150000000 } from './1796150000000-plants.ts';
 
 /** Every change of the schema, oldest first. One that has been released is never edited. */
 export const migrations = [
@@ -17,4 +18,5 @@ export const migrations = [
   Comparisons1796121000000,
   Outlooks1796140000000,
   FeatureEdges1796145000000,
+  Plants1796150000000,
 ];

@@ -1,6 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { unchangedOutlook, type Outlook } from '#contract/outlooks.ts';
-import type { Plant } from '#contract/sites.ts';
+import type { Plant } from '#contract/plants.ts';
 import type { OptionRow } from '#server/database/entities/option.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
@@ -19,7 +19,13 @@ const defaultOutlook = (thisYear: number): Outlook => ({
   drawn: null,
 });
 
-const defaultPlant: Plant = { name: 'Plant', rates: defaultRates };
+const defaultPlant: Plant = {
+  name: 'Plant',
+  rates: defaultRates,
+  beliefs: {},
+  sources: {},
+  fieldNumbers: {},
+};
 
 /** The rows of a new site: a default plant, a default outlook, and the option that does nothing. */
 export function newSiteRows({
@@ -53,6 +59,7 @@ export function newSiteRows({
     tidalDatums: null,
     plant: JSON.stringify(defaultPlant),
     plantSet: false,
+    plantOrigin: null,
     outlook: JSON.stringify(defaultOutlook(now.getUTCFullYear())),
     outlookSet: false,
     otherOutlooks: null,

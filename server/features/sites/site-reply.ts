@@ -7,13 +7,15 @@ import {
   type ElevationCurves,
 } from '#contract/layers.ts';
 import { otherOutlookSchema, outlookSchema } from '#contract/outlooks.ts';
-import { plantSchema, type Site, type SiteSummary } from '#contract/sites.ts';
+import { plantSchema } from '#contract/plants.ts';
+import { type Site, type SiteSummary } from '#contract/sites.ts';
 import { gridOf } from '#server/database/site-grid.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import { readJson } from '#server/database/json-column.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { notFound } from '#server/middleware/problem-error.ts';
 import { siteRecord } from '#server/specs/drought-record.ts';
+import { knownOrigin } from '#server/plants/plant-origin.ts';
 import { featuresOfSite } from './features/feature-reply.ts';
 import { layerReply } from './layer-reply.ts';
 import { currentLayers } from './layer.repository.ts';
@@ -57,6 +59,7 @@ export async function siteReply(manager: Manager, siteId: string): Promise<Site>
   if (!site) throw notFound();
   const counts = await countsOfSites(manager, [siteId]);
   const summary = summaryOf(site, counts.get(siteId)!);
+  const plant = readJson(plantSchema, site.plant);
   const { finestGrid, elevationCurves, tidalDatums, otherOutlooks } = site;
   return {
     ...summary,
@@ -66,8 +69,9 @@ export async function siteReply(manager: Manager, siteId: string): Promise<Site>
     features: await featuresOfSite(manager, siteId),
     elevationCurves: elevationCurves === null ? noCurves : readJson(elevationCurvesSchema, elevationCurves),
     tidalDatums: tidalDatums === null ? [] : readJson(tidalDatumsSchema, tidalDatums),
-    plant: readJson(plantSchema, site.plant),
+    plant,
     plantSet: site.plantSet,
+    plantOrigin: await knownOrigin(manager, site, plant),
     outlook: readJson(outlookSchema, site.outlook),
     outlookSet: site.outlookSet,
     otherOutlooks: otherOutlooks === null ? [] : readJson(z.array(otherOutlookSchema), otherOutlooks),

@@ -1,14 +1,17 @@
 import type { ElevationCurves, TidalDatum } from '#contract/layers.ts';
-import type { Plant, Site } from '#contract/sites.ts';
+import type { SitePlant } from '#contract/plants.ts';
+import type { Site } from '#contract/sites.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import { releaseBlobs, storeWithRows } from '#server/files/stored-files.ts';
+import { fieldProblem, notFound } from '#server/middleware/problem-error.ts';
+import { profileOf } from '#server/plants/plant-origin.ts';
 import type { Services } from '#server/services.ts';
 import { insertLayer } from './layer.repository.ts';
 import { layerRowOf } from './layer.service.ts';
 import { newSiteRows } from './new-site.ts';
 import { readRasterFile, type ArrivedRaster } from './read-raster-file.ts';
 import { siteReply } from './site-reply.ts';
-import { deleteSiteRows, insertSite, updateSite } from './site.repository.ts';
+import { deleteSiteRows, findSite, insertSite, updateSite } from './site.repository.ts';
 
 /**
  * Makes a site whose working grid is the raster's, with the option `Wait`, a default plant and a default outlook. A
@@ -45,8 +48,27 @@ const changeSite = (services: Services, siteId: string, change: Partial<SiteRow>
 export const renameSite = (services: Services, siteId: string, name: string): Promise<Site> =>
   changeSite(services, siteId, { name });
 
-export const setPlant = (services: Services, siteId: string, plant: Plant): Promise<Site> =>
-  changeSite(services, siteId, { plant: JSON.stringify(plant), plantSet: true });
+/**
+ * Sets the plant of a site, and the profile that it was taken from where that is told.
+ * @throws ProblemError at `origin` where the team has no such profile
+ */
+export const setPlant = (
+  services: Services,
+  siteId: string,
+  { origin, ...plant }: SitePlant,
+): Promise<Site> =>
+  services.write(async (manager) => {
+    const site = await findSite(manager, siteId);
+    if (!site) throw notFound();
+    if (origin && !(await profileOf(manager, site.teamId, origin)))
+      throw fieldProblem('origin', 'There is no such profile in this team, or no such version of it');
+    await updateSite(manager, siteId, {
+      plant: JSON.stringify(plant),
+      plantSet: true,
+      ...(origin !== undefined && { plantOrigin: origin && JSON.stringify(origin) }),
+    });
+    return siteReply(manager, siteId);
+  });
 
 /** Says what elevation does on a site, and which levels of the tide are drawn beside it. */
 export const setElevationCurves = (

@@ -73,8 +73,9 @@ export const siteFixture = (more: Partial<Site> = {}): Site => ({
   features: [],
   elevationCurves: { capacity: null, vigour: null, exposure: null },
   tidalDatums: [],
-  plant: { name: 'Invented grass', rates: defaultRates },
+  plant: { name: 'Invented grass', rates: defaultRates, beliefs: {}, sources: {}, fieldNumbers: {} },
   plantSet: true,
+  plantOrigin: null,
   outlook: {
     ...unchangedOutlook,
     surveyYear: 2026,

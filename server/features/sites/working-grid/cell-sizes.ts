@@ -1,6 +1,7 @@
 import type { CellSize } from '#contract/working-grid.ts';
 import { featureCautions } from '#contract/grid-cautions.ts';
-import type { Plant, Site } from '#contract/sites.ts';
+import type { Plant } from '#contract/plants.ts';
+import type { Site } from '#contract/sites.ts';
 import { coarsenGrid } from '#rasters/align/suggest-grid.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { fitKernel } from '#sim-core/index.ts';
