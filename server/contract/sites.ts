@@ -7,7 +7,6 @@ import { knownOriginSchema, plantSchema, sitePlantSchema } from './plants.ts';
 import { elevationCurvesSchema, layerPartSchema, layerSchema, tidalDatumsSchema } from './layers.ts';
 import { otherOutlookSchema, outlookSchema } from './outlooks.ts';
 
-
 export const siteSummarySchema = z.object({
   id,
   teamId: id,

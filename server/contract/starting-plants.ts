@@ -54,7 +54,8 @@ function starting(
   const sources: Plant['sources'] = {};
   for (const rate of rateNames) {
     const { belief, value, ...source } = said[rate] ?? guesses[rate as keyof typeof guesses];
-    rates[rate] = belief ? centralValue(belief, parameters[rate]) : value!;
+    // To four digits, as the plant page sets it.
+    rates[rate] = belief ? Number(centralValue(belief, parameters[rate]).toPrecision(4)) : value!;
     if (belief) beliefs[rate] = belief;
     sources[rate] = source;
   }

@@ -38,6 +38,13 @@ describe('cautions', () => {
     expect(codes(more as Partial<RunSpecInput>, given)).toContain(code);
     expect(codes()).not.toContain(code);
   });
+  test('the range that the plant’s own profile gives comes first', () => {
+    const published = { least: 0.01, most: 0.06, source: 'an invented survey' };
+    expect(codes({ rates: { lateralSpread: 0.5 } }, { published })).toContain(
+      'front-speed-outside-published',
+    );
+    expect(codes({ rates: { lateralSpread: 0.05 } }, { published, cellSize: 0.05 })).toEqual([]);
+  });
   test('words carry the figures', () => {
     const [caution] = findCautions({
       spec: spec({ trend: { shiftPerDecade: -0.2 } }),

@@ -22,12 +22,20 @@ export interface CautionInput {
   readonly cellSize: number;
   /** the site's drought record by year, Palmer scale, ascending; undefined where it has none */
   readonly record: readonly YearIndex[] | undefined;
+  /** what is published of the front speed of this very plant, m/yr; the product's own range unless said */
+  readonly published?: PublishedSpeed | undefined;
+}
+
+export interface PublishedSpeed {
+  readonly least: number;
+  readonly most: number;
+  readonly source: string;
 }
 
 /** Where a run believes more than its data say. Empty where nothing is to be said. */
-export function findCautions({ spec, cellSize, record }: CautionInput): Caution[] {
+export function findCautions({ spec, cellSize, record, published }: CautionInput): Caution[] {
   return [
-    ...frontSpeedCautions(spec),
+    ...frontSpeedCautions(spec, published),
     ...coarseCautions(spec, cellSize),
     ...recordCautions(spec, record),
     ...trendCautions(spec),
@@ -53,8 +61,10 @@ export function gatherCautions(
 
 const figure = (x: number) => String(Number(x.toPrecision(3))).replace('-', '−');
 
-function frontSpeedCautions({ rates: { lateralSpread } }: CautionedSpec): Caution[] {
-  const { least, most, source } = publishedFrontSpeed;
+function frontSpeedCautions(
+  { rates: { lateralSpread } }: CautionedSpec,
+  { least, most, source }: PublishedSpeed = publishedFrontSpeed,
+): Caution[] {
   if (lateralSpread >= least && lateralSpread <= most) return [];
   return [
     {

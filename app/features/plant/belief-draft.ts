@@ -111,7 +111,11 @@ export function proposeBelief(law: BeliefLaw, value: number, { min, max }: Param
     case 'normal':
       return startBelief({ law, mean: value, standardDeviation: rounded(width / 2) });
     case 'log-normal':
-      return startBelief({ law, median: value > 0 ? value : rounded(high / 2), factor: 1.5 });
+      return startBelief({
+        law,
+        median: value > 0 ? value : rounded(Math.max(high, max / 10) / 2),
+        factor: 1.5,
+      });
     case 'beta':
       return startBelief({ law, alpha: 2, beta: 2, low, high });
     case 'values':

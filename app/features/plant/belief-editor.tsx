@@ -35,11 +35,14 @@ export function BeliefEditor(props: {
           }
         >
           <option value="fixed">one value</option>
-          {Object.entries(beliefForms).map(([law, { label }]) => (
-            <option key={law} value={law}>
-              {label}
-            </option>
-          ))}
+          {Object.entries(beliefForms)
+            // A rate that may be negative has no logarithm.
+            .filter(([law]) => law !== 'log-normal' || rate.min >= 0)
+            .map(([law, { label }]) => (
+              <option key={law} value={law}>
+                {label}
+              </option>
+            ))}
         </BlankSelect>
         {belief &&
           belief.law !== 'values' &&

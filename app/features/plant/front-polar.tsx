@@ -2,7 +2,7 @@ import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { formatNumber, formatShare } from '#app/lib/formats.ts';
 import type { ImpliedDraws } from './implied-draws.ts';
 
-const [size, middle, reach] = [190, 95, 78];
+const [size, middle, reach] = [190, 84, 78];
 
 type Speeds = NonNullable<ImpliedDraws['speeds']>;
 
@@ -34,14 +34,19 @@ export function FrontPolar({ speeds, uncertain }: { speeds: Speeds; uncertain: b
       .join('')}Z`;
   const [straight, diagonal] = [speeds[0].speed, speeds[speeds.length - 1].speed];
   const words =
-    `An edge that faces along rows moves ${formatNumber(straight.middle, 3)} m a year, one that faces the diagonal ` +
+    `${uncertain ? 'In the middle of the draws, an' : 'An'} edge that faces along rows moves ${formatNumber(straight.middle, 3)} m a year, one that faces the diagonal ` +
     `${formatNumber(diagonal.middle, 3)} (${formatShare(diagonal.middle / straight.middle)})` +
     (uncertain
       ? `; nine tenths of the draws lie between ${formatNumber(straight.low, 3)} and ${formatNumber(straight.high, 3)} along rows.`
       : '.');
   return (
     <figure>
-      <svg viewBox={`0 0 ${size} ${size}`} role="img" aria-label={words} className="mx-auto block w-[190px]">
+      <svg
+        viewBox={`0 0 ${2 * middle} ${size}`}
+        role="img"
+        aria-label={words}
+        className="mx-auto block w-[176px]"
+      >
         <path
           d={`M${middle - reach} ${middle}H${middle + reach}M${middle} ${middle - reach}V${middle + reach}`}
           className="stroke-rule-2"
@@ -52,8 +57,8 @@ export function FrontPolar({ speeds, uncertain }: { speeds: Speeds; uncertain: b
         <path d={path('middle')} strokeWidth={2} className="fill-none stroke-ink" />
         <circle cx={middle} cy={middle} r={2} className="fill-ink" />
         <g className="fill-ink-2 font-mono text-axis">
-          <text x={middle + reach} y={middle - 4} textAnchor="end">
-            {formatNumber(fastest, 3)} m/yr
+          <text x={middle} y={size - 10} textAnchor="middle">
+            outermost: {formatNumber(fastest, 2)} m/yr
           </text>
         </g>
       </svg>

@@ -114,7 +114,7 @@ function SourceWords({ parameter, source }: { parameter: Parameter; source: Rate
     );
   const { sure, range } = source;
   return (
-    <p className="text-note text-ink-2">
+    <p className="mt-1 text-note text-ink-2">
       <b className="font-semibold text-ink">{sure[0].toUpperCase() + sure.slice(1)}</b>
       {source.source && `: ${source.source}`}
       {range && (

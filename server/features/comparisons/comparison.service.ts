@@ -9,6 +9,7 @@ import {
   type ComparisonPlan,
 } from '#contract/comparisons.ts';
 import { gridSchema } from '#contract/grid.ts';
+import { plantSchema } from '#contract/plants.ts';
 import { runActions, worksSchema } from '#contract/works.ts';
 import { findCautions, gatherCautions } from '#sim-core/cautions/find-cautions.ts';
 import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
@@ -21,6 +22,7 @@ import type { Manager } from '#server/database/manager.ts';
 import type { SiteRow } from '#server/database/entities/site.ts';
 import { releaseBlobs } from '#server/files/stored-files.ts';
 import { fieldProblem, notFound, ProblemError, refuseFields } from '#server/middleware/problem-error.ts';
+import { publishedSpeed } from '#server/plants/published-speed.ts';
 import type { Services } from '#server/services.ts';
 import { checkLayers, checkOnGrid, layerHashes } from '#server/specs/check-spec.ts';
 import { recordYears } from '#server/specs/drought-record.ts';
@@ -85,7 +87,12 @@ export async function startComparison(
         gatherCautions(
           full.outlooks.map(({ name: outlook }, o) => ({
             name: outlook,
-            cautions: findCautions({ spec: replicateSpec(full, 0, o, 0), cellSize: site.cellSize, record }),
+            cautions: findCautions({
+              spec: replicateSpec(full, 0, o, 0),
+              cellSize: site.cellSize,
+              record,
+              published: publishedSpeed(readJson(plantSchema, site.plant)),
+            }),
           })),
         ),
       ),

@@ -1,4 +1,5 @@
 import { randomUUID } from 'node:crypto';
+import { plantSchema } from '#contract/plants.ts';
 import type { Run } from '#contract/runs.ts';
 import { findCautions } from '#sim-core/cautions/find-cautions.ts';
 import { lostYear } from '#sim-core/measure/recovery.ts';
@@ -8,6 +9,7 @@ import { frameYears, runSpecSchema, type RunSpec } from '#sim-core/spec/run-spec
 import type { RunRow } from '#server/database/entities/run.ts';
 import { readJson } from '#server/database/json-column.ts';
 import { gridOf } from '#server/database/site-grid.ts';
+import { publishedSpeed } from '#server/plants/published-speed.ts';
 import { checkLayers, checkOnGrid, layerHashes } from '#server/specs/check-spec.ts';
 import { recordYears } from '#server/specs/drought-record.ts';
 import { releaseBlobs } from '#server/files/stored-files.ts';
@@ -57,7 +59,12 @@ export async function startRun(
       startedBy: by,
       check: null,
       cautions: JSON.stringify(
-        findCautions({ spec, cellSize: site.cellSize, record: await recordYears(manager, siteId) }),
+        findCautions({
+          spec,
+          cellSize: site.cellSize,
+          record: await recordYears(manager, siteId),
+          published: publishedSpeed(readJson(plantSchema, site.plant)),
+        }),
       ),
     };
     await insertRun(
