@@ -1,6 +1,7 @@
 import { rmSync } from 'node:fs';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { fillPath, type Endpoint } from '#contract/endpoint.ts';
+import * as api from '#contract/api.ts';
 import * as comparisons from '#contract/comparisons.ts';
 import * as costs from '#contract/costs.ts';
 import * as ground from '#contract/ground.ts';
@@ -26,6 +27,8 @@ const planners = 'modeller manager admin';
 const modellers = 'modeller admin';
 const expected: Record<string, string> = {
   'GET /api/health': 'anyone',
+  'GET /api/openapi.json': 'anyone',
+  'GET /api/docs': 'anyone',
   'GET /api/session': 'anyone',
   'POST /api/session': 'anyone',
   'DELETE /api/session': 'anyone',
@@ -184,6 +187,7 @@ const contract = [
   costs,
   runs,
   comparisons,
+  api,
 ]
   .flatMap((module) => Object.values<unknown>({ ...module }))
   .filter(isEndpoint);

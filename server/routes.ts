@@ -1,3 +1,4 @@
+import { apiRoutes } from './features/api/api.routes.ts';
 import { accountRoutes } from './features/account/account.routes.ts';
 import { inviteRoutes } from './features/auth/invite.routes.ts';
 import { passwordResetRoutes } from './features/auth/password-reset.routes.ts';
@@ -23,26 +24,29 @@ import type { Route } from './middleware/route.ts';
 import type { Services } from './services.ts';
 
 /** Every route of the product. */
-export const allRoutes = (services: Services): Route[] => [
-  ...healthRoutes(services),
-  ...sessionRoutes(services),
-  ...setupRoutes(services),
-  ...inviteRoutes(services),
-  ...passwordResetRoutes(services),
-  ...accountRoutes(services),
-  ...memberRoutes(services),
-  ...teamInviteRoutes(services),
-  ...outboxRoutes(services),
-  ...plantRoutes(services),
-  ...siteRoutes(services),
-  ...outlookRoutes(services),
-  ...layerRoutes(services),
-  ...featureRoutes(services),
-  ...uploadRoutes(services),
-  ...workingGridRoutes(services),
-  ...optionRoutes(services),
-  ...optionFileRoutes(services),
-  ...costsRoutes(services),
-  ...runRoutes(services),
-  ...comparisonRoutes(services),
-];
+export function allRoutes(services: Services): Route[] {
+  const routes = [
+    ...healthRoutes(services),
+    ...sessionRoutes(services),
+    ...setupRoutes(services),
+    ...inviteRoutes(services),
+    ...passwordResetRoutes(services),
+    ...accountRoutes(services),
+    ...memberRoutes(services),
+    ...teamInviteRoutes(services),
+    ...outboxRoutes(services),
+    ...plantRoutes(services),
+    ...siteRoutes(services),
+    ...outlookRoutes(services),
+    ...layerRoutes(services),
+    ...featureRoutes(services),
+    ...uploadRoutes(services),
+    ...workingGridRoutes(services),
+    ...optionRoutes(services),
+    ...optionFileRoutes(services),
+    ...costsRoutes(services),
+    ...runRoutes(services),
+    ...comparisonRoutes(services),
+  ];
+  return [...routes, ...apiRoutes(routes)];
+}

@@ -23,6 +23,8 @@ export interface Endpoint<
   /** JSON reply; absent when `replyKind` is `bytes` or `none` */
   readonly reply: Reply;
   readonly replyKind: 'json' | 'bytes' | 'none';
+  /** media type of a `bytes` reply; bare bytes of our own unless said */
+  readonly replyType: string;
   /** what it is for, in one line */
   readonly summary: string;
 }
@@ -40,6 +42,7 @@ interface EndpointInput<P extends z.ZodType, Q extends z.ZodType, B extends z.Zo
   bodyKind?: BodyKind;
   reply?: R;
   replyKind?: Endpoint['replyKind'];
+  replyType?: string;
 }
 
 /** Fills in what an endpoint does not say: no parameters, no body, no reply. */
@@ -56,6 +59,7 @@ export function endpoint<
     reply: nothing as unknown as R,
     bodyKind: 'json',
     replyKind: input.reply ? 'json' : 'none',
+    replyType: 'application/octet-stream',
     ...input,
   };
 }

@@ -98,6 +98,7 @@ export const getLayerFile = endpoint({
   summary: 'A layer as GeoTIFF: as it came, or on the working grid',
   params: z.object({ siteId: id, hash: sha256 }),
   replyKind: 'bytes',
+  replyType: 'image/tiff',
 });
 /** Decoded values in the binary of `rasters/cells/cell-values.ts`; addressed by hash so that a run's layers outlive a replaced one. */
 export const getLayerValues = endpoint({

@@ -20,6 +20,7 @@ export const exportGeoJson = endpoint({
   params: optionParams,
   query: z.object({ crs: z.enum(['wgs84', 'site']).default('wgs84') }),
   replyKind: 'bytes',
+  replyType: 'application/geo+json',
 });
 export const exportPoints = endpoint({
   method: 'GET',
@@ -27,6 +28,7 @@ export const exportPoints = endpoint({
   summary: 'The works of an option that are points, as CSV in the CRS of the site',
   params: optionParams,
   replyKind: 'bytes',
+  replyType: 'text/csv',
 });
 
 /** Which points go to the crew: those of one year, or all; and where the round starts, or at its western end. */
@@ -42,6 +44,7 @@ export const exportCrewGpx = endpoint({
   params: optionParams,
   query: roundQuery,
   replyKind: 'bytes',
+  replyType: 'application/gpx+xml',
 });
 export const exportCrewCsv = endpoint({
   method: 'GET',
@@ -50,6 +53,7 @@ export const exportCrewCsv = endpoint({
   params: optionParams,
   query: roundQuery,
   replyKind: 'bytes',
+  replyType: 'text/csv',
 });
 
 /** What a file with works holds, before anything is saved. */

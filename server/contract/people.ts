@@ -255,4 +255,5 @@ export const downloadOutboxMessage = endpoint({
   summary: 'One message as an .eml file',
   params: z.object({ teamId: id, messageId: id }),
   replyKind: 'bytes',
+  replyType: 'message/rfc822',
 });

@@ -162,6 +162,7 @@ export const exportSeries = endpoint({
   summary: 'The series as CSV (RFC 4180)',
   params: runParams,
   replyKind: 'bytes',
+  replyType: 'text/csv',
 });
 export const exportSpec = endpoint({
   method: 'GET',
@@ -169,6 +170,7 @@ export const exportSpec = endpoint({
   summary: 'The RunSpec for the command line: each raster by file name and SHA-256',
   params: runParams,
   replyKind: 'bytes',
+  replyType: 'application/json',
 });
 export const exportPackage = endpoint({
   method: 'GET',
@@ -176,6 +178,7 @@ export const exportPackage = endpoint({
   summary: 'The RunSpec with the rasters that it stood on, ready to be run from the command line',
   params: runParams,
   replyKind: 'bytes',
+  replyType: 'application/zip',
 });
 export const exportFrame = endpoint({
   method: 'GET',
@@ -183,6 +186,7 @@ export const exportFrame = endpoint({
   summary: 'The frame of a year as GeoTIFF',
   params: frameParams,
   replyKind: 'bytes',
+  replyType: 'image/tiff',
 });
 export const exportClosing = endpoint({
   method: 'GET',
@@ -190,4 +194,5 @@ export const exportClosing = endpoint({
   summary: 'The closing years as GeoTIFF',
   params: runParams,
   replyKind: 'bytes',
+  replyType: 'image/tiff',
 });

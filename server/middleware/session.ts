@@ -17,7 +17,7 @@ declare module 'express-session' {
   }
 }
 
-const cookieName = 'foothold.sid';
+export const cookieName = 'foothold.sid';
 
 const cookieOptions = (publicUrl: string) => ({
   path: '/',

@@ -1,12 +1,14 @@
 import { copyFileSync, cpSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import express from 'express';
 import supertest from 'supertest';
 import { createApp } from '#server/app.ts';
 import { readConfig, type Config } from '#server/config.ts';
 import { openDatabase } from '#server/database/open-database.ts';
 import { resumeWork } from '#server/resume-work.ts';
 import { createServices, type Services } from '#server/services.ts';
+import { checkReplies } from './check-replies.ts';
 
 const makeFolder = () => mkdtempSync(join(tmpdir(), 'foothold-test-'));
 
@@ -36,7 +38,8 @@ export interface TestServer {
 }
 
 /**
- * The real app on a real SQLite file in a folder of its own. Close it when the test is done.
+ * The real app on a real SQLite file in a folder of its own; every reply is held to the API's description. Close it when
+ * the test is done.
  * @param frozen a data folder to start on a copy of; an empty database unless given
  */
 export async function testServer(changes: Partial<Config> = {}, frozen?: string): Promise<TestServer> {
@@ -56,7 +59,9 @@ export async function testServer(changes: Partial<Config> = {}, frozen?: string)
   let passed = 0;
   const services = await createServices(config, () => new Date(Date.now() + passed));
   await resumeWork(services);
-  const app = createApp(services);
+  const app = express();
+  app.use(checkReplies(services));
+  app.use(createApp(services));
   return {
     services,
     app,
