@@ -78,8 +78,8 @@ export function PairTable(props: { figures: OutlookFigures; chosen: number | und
       {typical !== undefined && (
         <p className="mt-1.5 text-note text-ink-2">
           Years are cut at the horizon, so futures still open there count as recovering then, never as lost.
-          As options share their luck, {formatNumber(Math.max(1, typical), typical < 10 ? 1 : 0)} times as
-          many futures would be needed to say this as sharply with luck of their own.
+          {typical >= 1.05 &&
+            `As options share their luck, ${formatNumber(typical, typical < 10 ? 1 : 0)} times as many futures would be needed to say this as sharply with luck of their own.`}
         </p>
       )}
     </section>

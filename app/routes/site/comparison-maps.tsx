@@ -282,7 +282,7 @@ function useEnsembleMap(
   outlook: number,
   name: string,
 ): Uint8Array | Int16Array | undefined {
-  const version = useThrottled(live ? upTo : 0, 4000);
+  const version = useThrottled(live ? upTo : 0, 10_000);
   const fromTab = useQuery({
     queryKey: ['live-map', comparison.id, option, outlook, name, version],
     queryFn: async () => (await comparisonManager.map(comparison.id, option, outlook, name)) ?? null,

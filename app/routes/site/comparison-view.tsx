@@ -41,7 +41,7 @@ export function ComparisonView({ comparison }: { comparison: Comparison }) {
   const [filing, setFiling] = useState(false);
   const phase = useLivePart(id, 'phase');
   const records = useLivePart(id, 'records');
-  const version = useLiveVersion(id, 1500);
+  const version = useLiveVersion(id, 3000);
   const working = isWorking(phase);
   const stored = useQuery({ ...replicatesQuery(comparison), enabled: !phase || phase === 'loading' });
   const costs = useQuery(costsQuery(site.id)).data;
