@@ -17,7 +17,7 @@ export { CellValuesError, type CellArray, type CellLimits } from './cell-header.
 /**
  * Packs width × height values of any number type.
  *
- * @param effort `quick` takes a third of the time, for some ten per cent more room
+ * @param effort `quick` takes half the time, for up to a fifth more room
  * @throws CellValuesError when the number of values is not width × height
  */
 export function encodeCellValues(cells: CellArray, effort: 'small' | 'quick' = 'small'): Uint8Array {
