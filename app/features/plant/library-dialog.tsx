@@ -79,7 +79,7 @@ export function LibraryDialog(props: {
             {editable && (
               <WordButton
                 lined
-                aria-label={`Take ${plant.name}`}
+                aria-label={`Take starting values of ${plant.name}`}
                 onClick={() => props.onTake(plant, { kind: 'starting', key })}
               >
                 Take
