@@ -48,37 +48,39 @@ function drawPiece(y: i32, from: i32, to: i32, record: usize, step: u32): void {
     philox(out, at, step, replicate, key0, key1);
   const luck = words - ((<usize>pair) << 4);
 
-  const ground = groundOf(y);
-  let living = false;
+  let ground = groundOf(y) + ((<usize>from) << 6);
   /** bit i: something stands in group `from` + i */
   let found: u64 = 0;
-  for (let cell = first; cell < end; cell++) {
-    const column = cell - row;
-    const lane = record + (((column >> 2) - from) << 6) + ((column & 3) << 2);
-    const byte = <usize>load<u8>(ground + ((column >> 2) << 6) + (column & 3));
-    const N = load<i32>(sites + (byte << 2));
-    if (N > 0) {
+  let mark: u64 = 1;
+  for (let group = first; group < end; group += 4) {
+    let living = 0;
+    const beyond = min(group + 4, end);
+    let byteAt = ground;
+    let lane = record;
+    for (let cell = group; cell < beyond; cell++, byteAt++, lane += 4) {
+      const byte = <usize>load<u8>(byteAt);
+      const N = load<i32>(sites + (byte << 2));
+      if (N <= 0) continue;
       const n = wide ? load<i32>(clumps + (cell << 2)) : <i32>load<u16>(clumps + (cell << 1));
       const chance = load<f32>(lane, free);
-      if (n != 0 || chance > 0) {
-        const word = luck + (cell << 3);
-        const next =
-          N <= fewSites
-            ? drawPair(word, n, N, lane + standing)
-            : binomialQuantile(uniform(word), n, <f64>load<f32>(lane, standing)) +
-              binomialQuantile(uniform(word + 4), N - n, <f64>chance);
-        if (next != n) {
-          if (wide) store<i32>(clumps + (cell << 2), next);
-          else store<u16>(clumps + (cell << 1), <u16>next);
-          store<f32>(cover + (cell << 2), <f32>(load<f64>(shares + (byte << 3)) * (<f64>next / <f64>N)));
-        }
-        if (next != 0) living = true;
+      if (n == 0 && !(chance > 0)) continue;
+      const word = luck + (cell << 3);
+      const next =
+        N <= fewSites
+          ? drawPair(word, n, N, lane + standing)
+          : binomialQuantile(uniform(word), n, <f64>load<f32>(lane, standing)) +
+            binomialQuantile(uniform(word + 4), N - n, <f64>chance);
+      if (next != n) {
+        if (wide) store<i32>(clumps + (cell << 2), next);
+        else store<u16>(clumps + (cell << 1), <u16>next);
+        store<f32>(cover + (cell << 2), <f32>(load<f64>(shares + (byte << 3)) * (<f64>next / <f64>N)));
       }
+      living |= next;
     }
-    if ((column & 3) == 3 || cell + 1 == end) {
-      if (living) found |= (<u64>1) << ((column >> 2) - from);
-      living = false;
-    }
+    if (living != 0) found |= mark;
+    mark <<= 1;
+    ground += 64;
+    record += 64;
   }
   if (skipsBare) markWhere(alive + <usize>y * bitStride, from, found);
 }
