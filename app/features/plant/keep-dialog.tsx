@@ -36,7 +36,7 @@ export function KeepDialog(props: {
       title="Keep in the library"
       description="The site’s plant is saved, too. A version never changes once it is kept."
     >
-      <form onSubmit={submit} className="mt-3 grid gap-3">
+      <form onSubmit={submit} className="mt-3 grid grid-cols-[minmax(0,1fr)] gap-3">
         <SelectField
           label="Keep it as"
           value={of?.id ?? ''}
