@@ -35,7 +35,7 @@ export function installProbe(size: number): void {
   let uploaded = false;
   const gl = WebGL2RenderingContext.prototype;
   for (const name of ['texImage2D', 'texSubImage2D'] as const) {
-    const upload = gl[name] as (...words: unknown[]) => void;
+    const upload = Reflect.get(gl, name) as (...words: unknown[]) => void;
     Object.assign(gl, {
       [name](this: WebGL2RenderingContext, ...words: unknown[]) {
         if (words.slice(3, 6).includes(size)) {
@@ -46,7 +46,7 @@ export function installProbe(size: number): void {
       },
     });
   }
-  const draw = gl.drawElements;
+  const draw = Reflect.get(gl, 'drawElements');
   gl.drawElements = function (...words) {
     draw.apply(this, words);
     if (!uploaded) return;

@@ -32,7 +32,10 @@ test('holes are holes by the even-odd rule, in cells by their centre and in shar
   expect(cells).toContain(5 * 30 + 5);
   const { shares } = areaShares(ringed, grid);
   expect(sum(shares)).toBeCloseTo(52, 6);
-  expect(areaExtent({ ...ringed, holes: [box(4, 4, 8, 8)] })).toEqual({ area: 48 * 4, outline: 32 * 2 + 16 * 2 });
+  expect(areaExtent({ ...ringed, holes: [box(4, 4, 8, 8)] })).toEqual({
+    area: 48 * 4,
+    outline: 32 * 2 + 16 * 2,
+  });
 });
 
 test('cells on an edge take the share of their ground that lies within, exactly along the rows', () => {

@@ -51,7 +51,7 @@ describe('an unsaved drawing', () => {
     expect(restoreDraft(option(4)).works).toEqual([]);
   });
 
-  it('gives way to what the server has when it cannot be read', async () => {
+  it('gives way to what the server has when it cannot be read', () => {
     sessionStorage.setItem('foothold.draft.o-1', '{"revision":3,"works":[{"kind":"tower"}]}');
     expect(restoreDraft(option(4, [mound])).works).toHaveLength(1);
     sessionStorage.setItem('foothold.draft.o-1', 'not JSON');

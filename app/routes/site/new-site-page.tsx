@@ -113,7 +113,7 @@ function NewSite({ teamId, teamName, me }: { teamId: string; teamName: string; m
             type="submit"
             busy={make.isPending}
             busyLabel="Making the site"
-            disabled={upload !== undefined && !ready}
+            disabled={sending || (upload !== undefined && !ready)}
           >
             Make the site
           </Button>

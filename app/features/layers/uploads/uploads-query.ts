@@ -28,11 +28,22 @@ export const uploadsQuery = (teamId: string, siteId: string | undefined) =>
 
 /** Puts what the server says of an upload into the list. */
 export function keepUpload(queryClient: QueryClient, upload: Upload): void {
-  queryClient.setQueryData<Upload[]>(uploadsKey(upload.teamId, upload.siteId ?? undefined), (known = []) =>
+  changeList(queryClient, upload, (known) =>
     known.some(({ id }) => id === upload.id)
       ? known.map((each) => (each.id === upload.id ? upload : each))
       : [...known, upload],
   );
+}
+
+/** Changes the list at once; a list that was asked for before must not undo that, so it is asked for anew. */
+function changeList(
+  queryClient: QueryClient,
+  { teamId, siteId }: Upload,
+  change: (known: readonly Upload[]) => Upload[],
+): void {
+  const queryKey = uploadsKey(teamId, siteId ?? undefined);
+  queryClient.setQueryData<Upload[]>(queryKey, (known = []) => change(known));
+  void queryClient.invalidateQueries({ queryKey });
 }
 
 const paramsOf = ({ teamId, id: uploadId }: Upload) => ({ teamId, uploadId });
@@ -49,7 +60,5 @@ export const uploadDeeds = {
 /** Takes an upload off the list; the layer that it became stays. */
 export async function dismiss(queryClient: QueryClient, upload: Upload): Promise<void> {
   await callEndpoint(dismissUpload, { params: paramsOf(upload) });
-  queryClient.setQueryData<Upload[]>(uploadsKey(upload.teamId, upload.siteId ?? undefined), (known = []) =>
-    known.filter(({ id }) => id !== upload.id),
-  );
+  changeList(queryClient, upload, (known) => known.filter(({ id }) => id !== upload.id));
 }

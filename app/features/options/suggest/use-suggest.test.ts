@@ -37,13 +37,13 @@ it('comes back with the page once it is finished, with as many as were taken, un
   expect([later.current.works, sessionStorage.length]).toEqual([[], 0]);
 });
 
-it('begins again by itself with the same inputs when the page was left while it was at work', () => {
+it('begins again by itself with the same inputs when the page was left while it was at work', async () => {
   const { result, unmount } = show();
   act(() => result.current.setPen({ by: 'count', count: '7', budget: '' }));
   act(() => result.current.suggest());
   unmount();
   const { result: later } = show({ mound: { ...mound, radius: 9 }, year: 2040 });
-  expect([later.current.job.running, later.current.again]).toEqual([true, true]);
+  await waitFor(() => expect([later.current.job.running, later.current.again]).toEqual([true, true]));
   const [before, after] = vi.mocked(startSuggest).mock.calls.map(([request]) => request);
   expect(after).toEqual(before);
   expect(after).toMatchObject({ foothold: { radius: 1.5, year: 2027 }, amount: { count: 7 } });

@@ -94,7 +94,10 @@ export function useSuggest(input: {
     begin(asked, from);
   });
   useEffect(() => {
-    if (start) beginAgain(start);
+    if (!start) return;
+    // In a turn of its own: it sets state, and a page that is gone at once must not begin anything.
+    const turn = setTimeout(() => beginAgain(start));
+    return () => clearTimeout(turn);
   }, [start]);
   const { running, result } = job;
   useEffect(() => {

@@ -1,6 +1,11 @@
 import { z } from 'zod';
 import { workIdSchema, workSetsSchema } from '#contract/works.ts';
-import { firstIssue, polygonArea, readGeoJsonPlaces, type GeoJsonFeature } from '#server/files/geojson-places.ts';
+import {
+  firstIssue,
+  polygonArea,
+  readGeoJsonPlaces,
+  type GeoJsonFeature,
+} from '#server/files/geojson-places.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import { FoundWorks, type FoundFile } from './found-works.ts';
 
