@@ -4,6 +4,7 @@ import { fillPath, type Endpoint } from '#contract/endpoint.ts';
 import * as api from '#contract/api.ts';
 import * as comparisons from '#contract/comparisons.ts';
 import * as costs from '#contract/costs.ts';
+import * as fits from '#contract/fits.ts';
 import * as ground from '#contract/ground.ts';
 import * as optionFiles from '#contract/option-files.ts';
 import * as options from '#contract/options.ts';
@@ -158,6 +159,15 @@ const expected: Record<string, string> = {
   'POST /api/sites/:siteId/comparisons/:comparisonId/end': planners,
   'POST /api/sites/:siteId/comparisons/:comparisonId/resume': planners,
   'POST /api/sites/:siteId/comparisons/:comparisonId/decision': 'manager admin',
+
+  'GET /api/sites/:siteId/fits': everyRole,
+  'POST /api/sites/:siteId/fits': modellers,
+  'GET /api/sites/:siteId/fits/:fitId': everyRole,
+  'PUT /api/sites/:siteId/fits/:fitId/state': modellers,
+  'POST /api/sites/:siteId/fits/:fitId/stop': modellers,
+  'POST /api/sites/:siteId/fits/:fitId/resume': modellers,
+  'POST /api/sites/:siteId/fits/:fitId/accept': modellers,
+  'DELETE /api/sites/:siteId/fits/:fitId': modellers,
 };
 
 const callers = ['nobody', 'modeller', 'manager', 'trainer', 'admin', 'outsider'] as const;
@@ -188,6 +198,7 @@ const contract = [
   runs,
   comparisons,
   api,
+  fits,
 ]
   .flatMap((module) => Object.values<unknown>({ ...module }))
   .filter(isEndpoint);

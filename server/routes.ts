@@ -6,6 +6,7 @@ import { sessionRoutes } from './features/auth/session.routes.ts';
 import { setupRoutes } from './features/auth/setup.routes.ts';
 import { comparisonRoutes } from './features/comparisons/comparison.routes.ts';
 import { costsRoutes } from './features/costs/costs.routes.ts';
+import { fitRoutes } from './features/fits/fit.routes.ts';
 import { healthRoutes } from './features/health/health.routes.ts';
 import { teamInviteRoutes } from './features/team/invites.routes.ts';
 import { optionFileRoutes } from './features/options/files/option-files.routes.ts';
@@ -47,6 +48,7 @@ export function allRoutes(services: Services): Route[] {
     ...costsRoutes(services),
     ...runRoutes(services),
     ...comparisonRoutes(services),
+    ...fitRoutes(services),
   ];
   return [...routes, ...apiRoutes(routes)];
 }

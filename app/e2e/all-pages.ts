@@ -12,6 +12,7 @@ export const pagesOf = ({
   ground: `/sites/${siteId}/ground`,
   'ground-engine': `/sites/${siteId}/ground?layer=engine-capacity`,
   plant: `/sites/${siteId}/plant`,
+  fit: `/sites/${siteId}/fit`,
   outlook: `/sites/${siteId}/outlook`,
   options: `/sites/${siteId}/options`,
   runs: `/sites/${siteId}/runs`,

@@ -6,6 +6,7 @@ import {
   habitatClassesSchema,
   layerHistoryEntrySchema,
   layerPartSchema,
+  layerYearSchema,
   tidalDatumsSchema,
   valueUnitSchema,
   verticalSchema,
@@ -24,7 +25,11 @@ export const uploadLayer = endpoint({
   summary: 'Add or replace a layer',
   params: siteParams,
   bodyKind: 'form',
-  body: z.strictObject({ part: layerPartSchema }),
+  body: z.strictObject({
+    part: layerPartSchema,
+    /** of a `resurvey`, as text */
+    year: z.coerce.number().pipe(layerYearSchema).optional(),
+  }),
   reply: siteSchema,
 });
 const layerParams = z.object({ siteId: id, layerId: id });
@@ -36,6 +41,8 @@ export const changeLayer = endpoint({
   body: z.strictObject({
     unit: valueUnitSchema.optional(),
     vertical: verticalSchema.optional(),
+    /** of a `resurvey` */
+    year: layerYearSchema.optional(),
     note: z.string().trim().max(1000, 'At most 1000 characters').optional(),
   }),
   reply: siteSchema,

@@ -3,9 +3,17 @@ import { featureEdgesSchema, type Feature } from './features.ts';
 import { heightUnitScale, valueUnitScale, type Layer, type LayerPart } from './layers.ts';
 import type { Site } from './sites.ts';
 
-/** The layer that plays a part on a site. */
-export const layerOf = (site: Pick<Site, 'layers'>, part: LayerPart): Layer | undefined =>
-  site.layers.find((layer) => layer.part === part);
+/** The layer that plays a part on a site; of resurveys that of a year. */
+export const layerOf = (site: Pick<Site, 'layers'>, part: LayerPart, year?: number): Layer | undefined =>
+  site.layers.find((layer) => layer.part === part && (year === undefined || layer.year === year));
+
+/** The resurveys of a site, by year. */
+export const resurveysOf = (site: Pick<Site, 'layers'>): (Layer & { year: number })[] =>
+  site.layers
+    .flatMap((layer) =>
+      layer.part === 'resurvey' && layer.year !== null ? [{ ...layer, year: layer.year }] : [],
+    )
+    .toSorted((a, b) => a.year - b.year);
 
 /**
  * What a site's ground is to the engine; each raster is named by its hash.

@@ -2,10 +2,17 @@ import { z } from 'zod';
 import { id, instant, sha256, text } from './endpoint.ts';
 import { gridSchema } from './grid.ts';
 
-/** The parts that a layer can play. */
-export const layerParts = ['habitat', 'cover', 'refuge', 'elevation', 'exposure', 'allowed'] as const;
+/** The parts that a layer can play. All but `resurvey` are played by one layer at a time; of it there is one a year. */
+export const layerParts = ['habitat', 'cover', 'resurvey', 'refuge', 'elevation', 'exposure', 'allowed'] as const;
 export const layerPartSchema = z.enum(layerParts);
 export type LayerPart = z.infer<typeof layerPartSchema>;
+
+/** Year of a survey. */
+export const layerYearSchema = z
+  .number('A year such as 2030')
+  .int('A whole year')
+  .min(1000, 'A year of four digits')
+  .max(9999, 'A year of four digits');
 
 const colour = z.string().regex(/^#[0-9a-f]{6}$/i, 'a colour such as #5b825a');
 export const shareSchema = z
@@ -32,7 +39,7 @@ export const habitatClassesSchema = z
   );
 
 /**
- * What the values of `cover`, `exposure`, `refuge` and `allowed` are: shares 0..1, per cent, 8 bits, or present / absent.
+ * What the values of `cover`, `resurvey`, `exposure`, `refuge` and `allowed` are: shares 0..1, per cent, 8 bits, or present / absent.
  * It means nothing for `habitat` (classes) and `elevation` (heights).
  */
 export const valueUnits = ['share', 'percent', 'byte', 'presence'] as const;
@@ -145,6 +152,8 @@ export type Alignment = z.infer<typeof alignmentSchema>;
 export const layerSchema = layerFactsSchema.extend({
   id,
   part: layerPartSchema,
+  /** year that a `resurvey` was flown or mapped in; null of any other part */
+  year: layerYearSchema.nullable(),
   /** SHA-256 of the raster on the working grid, which runs name: the file itself where nothing had to be changed */
   hash: sha256,
   /** size of that raster, bytes */

@@ -6,6 +6,7 @@ import {
   heightUnitSchema,
   layerFactsSchema,
   layerPartSchema,
+  layerYearSchema,
   resamplingMethodSchema,
   valueUnitSchema,
   verticalSchema,
@@ -118,15 +119,17 @@ export const uploadChoicesSchema = z.strictObject({
   unit: valueUnitSchema.nullable(),
   /** for `elevation` */
   vertical: verticalSchema.nullable(),
+  /** for `resurvey`: the year that it was flown or mapped in */
+  year: layerYearSchema.nullable().default(null),
   /** the working grid that follows from the raster: only for one that makes a site */
   grid: z.strictObject({ epsg: z.number().int(), cellSize: z.number().positive() }).nullable(),
   note: z.string().trim().max(1000),
 });
-export type UploadChoices = z.infer<typeof uploadChoicesSchema>;
+export type UploadChoices = z.output<typeof uploadChoicesSchema>;
 
 /**
- * What a person should look at before the raster is placed: `part` and `band` must be chosen, and so must the unit of `heights`
- * where the file suggests feet (see `heights` beside it); `reprojection`,
+ * What a person should look at before the raster is placed: `part`, `band` and, of a resurvey, `year` must be chosen, and so
+ * must the unit of `heights` where the file suggests feet (see `heights` beside it); `reprojection`,
  * `resampling`, `crop` and `pad` are agreed to by placing it; `values` are wrong for the part and forbid it (see
  * `complaint`).
  */
@@ -134,6 +137,7 @@ export const uploadDecisions = [
   'part',
   'band',
   'heights',
+  'year',
   'reprojection',
   'resampling',
   'crop',

@@ -8,6 +8,7 @@ import { TeamEntity } from './entities/team.ts';
 import { DroughtRecordEntity } from './entities/drought-record.ts';
 import { FeatureImportEntity } from './entities/feature-import.ts';
 import { FeatureEntity } from './entities/feature.ts';
+import { FitEntity, FitLayerEntity } from './entities/fit.ts';
 import { GridChangeEntity } from './entities/grid-change.ts';
 import { LayerEntity } from './entities/layer.ts';
 import { OptionEntity } from './entities/option.ts';
@@ -57,4 +58,6 @@ export const entities = [
   EnsembleMapEntity,
   ComparisonLayerEntity,
   ComparisonEventEntity,
+  FitEntity,
+  FitLayerEntity,
 ];

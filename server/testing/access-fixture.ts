@@ -4,6 +4,7 @@ import type { Site } from '#contract/sites.ts';
 import { encodeCellValues } from '#rasters/cells/cell-values.ts';
 import { makePerson, makeTeam, testPassword, type TestPerson } from './people.ts';
 import { startTestComparison } from './comparisons.ts';
+import { addResurvey, startTestFit } from './fits.ts';
 import { packed, sendBytes } from './runs.ts';
 import { cover, makeSite, sendUpload } from './sites.ts';
 import { testServer, type TestServer } from './test-server.ts';
@@ -91,6 +92,7 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
   const runId = await addRun(agents.admin, site.id);
   const options = await agents.admin.get(`/api/sites/${site.id}/options`).expect(200);
   const comparison = await startTestComparison(agents.admin, site);
+  const fit = await startTestFit(agents.admin, await addResurvey(agents.admin, site.id, 2026));
   const ensemble = `/api/sites/${site.id}/comparisons/${comparison.id}/ensembles/0/0`;
   const noCells = packed(new Int16Array(24));
   await sendBytes(agents.admin, `${ensemble}/maps/closing?replicates=1`, noCells).expect(204);
@@ -153,6 +155,7 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     runId,
     year: surveyYear,
     comparisonId: comparison.id,
+    fitId: fit.id,
     option: 0,
     outlook: 0,
     map: 'closing',

@@ -1,3 +1,5 @@
+import { checkOfRun, type CheckedYear } from '#sim-core/fit/fit-check.ts';
+import { figuresOfRun, yearsOfTarget, type FitTarget } from '#sim-core/fit/fit-target.ts';
 import { createRun, type RunInput, type YearOutcome } from '#sim-core/run/create-run.ts';
 import { toFrame } from '#sim-core/run/frame.ts';
 import type { RunResult } from '#sim-core/spec/run-result.ts';
@@ -9,6 +11,8 @@ export interface Keep {
   readonly coverYears?: readonly number[];
   /** years whose cover is kept in 8 bits, the survey's included: next to free where the run reports the year */
   readonly frameYears?: readonly number[];
+  /** what the run is compared with where it stands; the covers that this needs are not kept by it */
+  readonly fit?: { readonly target: FitTarget; readonly want: 'figures' | 'check' };
 }
 
 /** What a run of an ensemble came to. */
@@ -20,6 +24,10 @@ export interface ReplicateOutcome {
   readonly covers: ReadonlyMap<number, Float32Array>;
   /** round(255·C) of the kept years, row-major */
   readonly frames: ReadonlyMap<number, Uint8Array>;
+  /** in the order of `observedFigures`, where they were wanted */
+  readonly figures?: readonly number[];
+  /** a map each, where the run was to be checked */
+  readonly checked?: readonly CheckedYear[];
 }
 
 /**
@@ -30,19 +38,33 @@ export interface ReplicateOutcome {
  */
 export function runReplicate(input: RunInput, keep: Keep, onStep?: (done: number) => void): ReplicateOutcome {
   const run = createRun(input);
+  const compared = new Set(keep.fit ? yearsOfTarget(keep.fit.target) : []);
   const ofCover = new Set(keep.coverYears);
   const ofFrame = new Set(keep.frameYears);
   const covers = new Map<number, Float32Array>();
   const frames = new Map<number, Uint8Array>();
   for (let at: YearOutcome | undefined = run.survey; at; at = run.nextYear(onStep)) {
-    if (ofCover.has(at.year)) covers.set(at.year, run.cover());
+    if (ofCover.has(at.year) || compared.has(at.year)) covers.set(at.year, run.cover());
     if (ofFrame.has(at.year)) frames.set(at.year, at.frame ?? toFrame(run.cover()));
   }
-  return { result: run.result(), closing: keep.closing ? run.closing() : undefined, covers, frames };
+  const told = keep.fit && compare(keep.fit, covers, input.ground.capacity);
+  for (const year of compared) if (!ofCover.has(year)) covers.delete(year);
+  return { result: run.result(), closing: keep.closing ? run.closing() : undefined, covers, frames, ...told };
+}
+
+function compare(
+  { target, want }: NonNullable<Keep['fit']>,
+  covers: ReadonlyMap<number, Float32Array>,
+  capacity: Uint8Array,
+): Pick<ReplicateOutcome, 'figures' | 'checked'> {
+  const coverOf = (year: number) => covers.get(year)!;
+  return want === 'figures'
+    ? { figures: figuresOfRun(target, coverOf, capacity) }
+    : { checked: checkOfRun(target, coverOf, capacity) };
 }
 
 /** Buffers of the maps of an outcome, to be handed over from one thread to the next. */
-export const buffersOf = ({ closing, covers, frames }: ReplicateOutcome): ArrayBuffer[] =>
-  [closing, ...covers.values(), ...frames.values()].flatMap((map) =>
+export const buffersOf = ({ closing, covers, frames, checked = [] }: ReplicateOutcome): ArrayBuffer[] =>
+  [closing, ...covers.values(), ...frames.values(), ...checked.map(({ stands }) => stands)].flatMap((map) =>
     map ? [map.buffer as ArrayBuffer] : [],
   );

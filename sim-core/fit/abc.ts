@@ -54,6 +54,10 @@ export interface AbcState {
   readonly kept: readonly Particle[];
   readonly tried: number;
   readonly runs: number;
+  /** runs that could not be, whose rates the fit therefore does not know */
+  readonly refused: number;
+  /** all that ran of the first generation: what the prior alone foresees. Empty until it is complete. */
+  readonly prior: readonly Pick<Particle, 'point' | 'summaries'>[];
   readonly ending: AbcEnding | null;
 }
 
@@ -75,6 +79,8 @@ export const startAbc = (): AbcState => ({
   kept: [],
   tried: 0,
   runs: 0,
+  refused: 0,
+  prior: [],
   ending: null,
 });
 
@@ -119,13 +125,19 @@ export function takeRun(
   summaries: readonly number[] | null,
 ): AbcState {
   if (state.ending) return state;
-  if (generation < state.generations.length) return { ...state, runs: state.runs + 1 };
+  // Asked for before its generation was complete: nothing may hang on how many were asked for at once.
+  if (generation < state.generations.length) return state;
   if (generation > state.generations.length || number !== state.tried)
     throw new RangeError(
       `Found run ${number} of generation ${generation}; expected run ${state.tried} of generation ${state.generations.length}`,
     );
   const noisy = summaries && withErrors(plan, generation, number, summaries);
-  const next = { ...state, tried: state.tried + 1, runs: state.runs + 1 };
+  const next = {
+    ...state,
+    tried: state.tried + 1,
+    runs: state.runs + 1,
+    refused: state.refused + (summaries ? 0 : 1),
+  };
   if (generation === 0) {
     const kept = noisy ? [...state.kept, { point, summaries: noisy, distance: 0, weight: 0 }] : state.kept;
     return next.tried < plan.priorRuns ? { ...next, kept } : endOfPrior(plan, { ...next, kept });
@@ -159,7 +171,8 @@ function withErrors(
   return summaries.map((value, i) => value + plan.errors[i] * normalQuantile(uniform(random.int32() >>> 0)));
 }
 
-function distanceOf(
+/** Root mean square of differences over their scales; figures of scale 0 are left out. */
+export function distanceOf(
   observed: readonly number[],
   summaries: readonly number[],
   scales: readonly number[],
@@ -189,9 +202,10 @@ function endOfPrior(plan: AbcPlan, state: AbcState): AbcState {
     .map((particle) => ({ ...particle, distance: distanceOf(plan.observed, particle.summaries, scales) }))
     .sort((a, b) => a.distance - b.distance)
     .slice(0, plan.population);
+  const prior = state.kept.map(({ point, summaries }) => ({ point, summaries }));
   return endOfGeneration(
     plan,
-    { ...state, scales, kept: nearest.map((particle) => ({ ...particle, weight: 1 })) },
+    { ...state, scales, prior, kept: nearest.map((particle) => ({ ...particle, weight: 1 })) },
     nearest[nearest.length - 1].distance,
   );
 }

@@ -1,6 +1,6 @@
 import { measureCover } from '#sim-core/measure/cover-measures.ts';
 import { edgeDisplacement, type EdgeDisplacement } from './edge-displacement.ts';
-import { agreementMeasures, agreementOf, bare, standing, unknown, type Agreement } from './map-agreement.ts';
+import { agreementOf, bare, standing, unknown, type Agreement } from './map-agreement.ts';
 
 /** Share of a cell's capacity from which it counts as standing when two maps are compared. */
 export const standingFrom = 0.5;
@@ -46,7 +46,7 @@ export function resurveyOf(
     known[i] = held;
     values[i] = held >= (standingFrom * capacity[i]) / 255 ? standing : bare;
   }
-  return { year, cells: values, ...amounts(values, known, values, cells) };
+  return { year, cells: values, ...amountsOf(values, known, values, cells) };
 }
 
 /** The cells where plants stand in a run, told as in a survey: 1 or 0, row-major. */
@@ -57,7 +57,7 @@ export function standingCells(cover: Float32Array, capacity: Uint8Array): Uint8A
 }
 
 /** Covered area and the border between standing and bare cells, where a survey says anything. */
-function amounts(
+export function amountsOf(
   survey: Uint8Array,
   cover: Float32Array,
   isStanding: Uint8Array,
@@ -93,21 +93,8 @@ export function fitOfYear(
   const simulated = standingCells(cover, capacity);
   return {
     year: survey.year,
-    ...amounts(survey.cells, cover, simulated, cells),
+    ...amountsOf(survey.cells, cover, simulated, cells),
     agreement: agreementOf(survey.cells, simulated),
     edge: edgeDisplacement(survey.cells, simulated, cells),
   };
 }
-
-/** Figures of one year that a fit brings close to those of its survey. */
-export const yearFigures = ['coveredArea', 'edgeLength', 'wrongPlace'] as const;
-
-/** The figures of a run's year, in the order of `yearFigures`; 0 is best of the share of cells in the wrong place. */
-export const figuresOfRun = (fit: YearFit): number[] => [
-  fit.coveredArea,
-  fit.edgeLength,
-  agreementMeasures(fit.agreement).placeDisagreement,
-];
-
-/** What they are in the survey. */
-export const figuresOfSurvey = (survey: Resurvey): number[] => [survey.coveredArea, survey.edgeLength, 0];

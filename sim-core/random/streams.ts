@@ -14,6 +14,7 @@ export type Purpose =
   | `indices`
   | `bootstrap`
   | `fit/prior`
+  | `fit/check`
   | `fit/${number}/${number}`
   | `fit-errors/${number}/${number}`
   | `pattern/${string}`;

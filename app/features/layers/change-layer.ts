@@ -44,7 +44,10 @@ const kept = (queryClient: QueryClient) => ({
 export const changeLayerMutation = (queryClient: QueryClient, siteId: string, layerId: string) =>
   mutationOptions({
     mutationFn: (
-      change: Partial<Pick<Layer, 'unit' | 'note'>> & { vertical?: NonNullable<Layer['vertical']> },
+      change: Partial<Pick<Layer, 'unit' | 'note'>> & {
+        vertical?: NonNullable<Layer['vertical']>;
+        year?: number;
+      },
     ) => callEndpoint(changeLayer, { params: { siteId, layerId }, body: change }),
     ...kept(queryClient),
   });

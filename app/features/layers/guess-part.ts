@@ -4,6 +4,7 @@ import type { LayerPart } from '#contract/layers.ts';
 const hints: readonly [LayerPart, RegExp][] = [
   ['habitat', /habitat|class|landcover|land-cover|zones?/i],
   ['elevation', /elevation|heights?|dem\b|dtm|dsm|lidar|bathy|topo/i],
+  ['resurvey', /resurvey|repeat/i],
   ['cover', /cover|vegetation|canopy/i],
   ['exposure', /exposure|waves?|fetch|stress/i],
   ['refuge', /refuge|mound|shelter/i],

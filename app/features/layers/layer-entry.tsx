@@ -28,11 +28,12 @@ export function LayerEntry(props: {
   const { siteId, layer, editable } = props;
   const { part, source } = layer;
   const [history, setHistory] = useState(false);
-  const word = partLabels[part].toLowerCase();
+  const title = layer.year === null ? partLabels[part] : `${partLabels[part]} of ${layer.year}`;
+  const word = title.toLowerCase();
   return (
-    <section className="border-t border-rule py-2.5" aria-label={partLabels[part]}>
+    <section className="border-t border-rule py-2.5" aria-label={title}>
       <div className="flex items-baseline justify-between gap-3">
-        <h2 className="text-body">{partLabels[part]}</h2>
+        <h2 className="text-body">{title}</h2>
         <WordButton pressed={props.shown} onClick={props.onShow}>
           {props.shown ? 'on the map' : 'show'}
           <span className="sr-only"> {word}</span>

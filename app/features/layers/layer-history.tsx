@@ -57,6 +57,7 @@ function Entry(props: { siteId: string; entry: LayerHistoryEntry; editable: bool
   return (
     <>
       <p className="wrap-anywhere">
+        {layer.year !== null && <b>{layer.year}: </b>}
         <b className="font-mono">{name}</b>, {sourceInWords(layer)}.{' '}
         <b>{replacedAt === null ? 'Stands now.' : `Stood until ${formatDateTime(replacedAt)}.`}</b>
         <RasterHashes hash={layer.hash} sourceHash={layer.source.hash} />

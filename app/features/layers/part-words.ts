@@ -4,6 +4,7 @@ export const partLabels: Record<LayerPart, string> = {
   habitat: 'Habitat',
   elevation: 'Elevation',
   cover: 'Cover',
+  resurvey: 'Resurvey',
   exposure: 'Exposure',
   refuge: 'Refuge',
   allowed: 'Allowed',
@@ -17,6 +18,8 @@ export const partReasons: Record<LayerPart, string> = {
   habitat: 'Where the plant can grow: a raster of classes such as creek, mud and marsh. A run needs it.',
   elevation: 'Heights, from which curves derive capacity, vigour and exposure. Optional.',
   cover: 'Where the plant stands now: the share of each cell that it covers. A run starts from it.',
+  resurvey:
+    'Where the plant stood in a later year: cover again, once a year at most. Optional; rates are fitted to it, and works held against it.',
   exposure: 'Chronic physical stress of each cell, such as waves. Optional; without it there is none.',
   refuge:
     'Where survivors are sheltered: surveyed mounds and the like. Optional; points and areas can say it too.',

@@ -31,8 +31,10 @@ export function useLayerRaster(
   site: Site,
   part: LayerPart | undefined,
   classes: readonly HabitatClass[],
+  /** of a resurvey */
+  year?: number,
 ): LayerRaster {
-  const layer = part && layerOf(site, part);
+  const layer = part && layerOf(site, part, year);
   const source = part === 'allowed' ? allowedSource(site) : layer && sourceOf(layer);
   const isHabitat = part === 'habitat';
   const values = useQuery({
@@ -49,7 +51,7 @@ export function useLayerRaster(
     if (part === 'habitat')
       return cells && { kind: 'classes', values: cells, classes, noData: layer?.noData };
     if (!part || !shares) return undefined;
-    if (part === 'cover') return { kind: 'cover', values: shares };
+    if (part === 'cover' || part === 'resurvey') return { kind: 'cover', values: shares };
     if (part === 'elevation' && layer) return { kind: 'height', values: shares, ...heightsOf(layer) };
     return { kind: 'share', values: shares, name: partLabels[part].toLowerCase() };
   }, [part, layer, cells, shares, classes]);

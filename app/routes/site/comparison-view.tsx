@@ -24,6 +24,7 @@ import { ComparisonDeeds } from './comparison-deeds.tsx';
 import { ComparisonFiles } from './comparison-files.tsx';
 import { GoOn } from './comparison-go-on.tsx';
 import { useWorkOnComparison, wasAtWork } from './comparison-ground.ts';
+import { OnTrack } from './comparison-on-track.tsx';
 import { ComparisonMaps } from './comparison-maps.tsx';
 import { ComparisonProgress } from './comparison-progress.tsx';
 import { ComparisonAnswers, ComparisonCharts } from './comparison-results.tsx';
@@ -165,6 +166,12 @@ export function ComparisonView({ comparison }: { comparison: Comparison }) {
       {shown && figures && known ? (
         <>
           <ComparisonAnswers {...{ comparison, outlook, known, chosen }} figures={shown} />
+          {!working && (
+            <OnTrack
+              {...{ comparison, known, chosen }}
+              outlook={Math.min(outlook, plan.outlooks.length - 1)}
+            />
+          )}
           <div className="grid gap-x-10 gap-y-8 border-t border-ink pt-4 lg:grid-cols-2">
             <ComparisonCharts
               {...{ comparison, figures, shown, chosen }}

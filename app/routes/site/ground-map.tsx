@@ -23,7 +23,8 @@ export function GroundMap(props: {
   const { site } = useSite();
   const { view, ground, classes } = props;
   const part = view?.of === 'layer' ? view.part : undefined;
-  const layer = useLayerRaster(site, part, classes);
+  const year = view?.of === 'layer' ? view.year : undefined;
+  const layer = useLayerRaster(site, part, classes, year);
   const map = view?.of === 'engine' ? view.map : undefined;
   const values = map && ground[map];
   const seen = useMemo(
@@ -46,7 +47,7 @@ export function GroundMap(props: {
   const raster = part ? layer.raster : seen;
   const error = part ? layer.error : ground.error;
   const name = part
-    ? partLabels[part].toLowerCase()
+    ? `${partLabels[part].toLowerCase()}${year === undefined ? '' : ` of ${year}`}`
     : `${engineLabels[map ?? 'capacity']}, as the engine will see it`;
   return (
     <>
@@ -84,7 +85,7 @@ export function GroundMap(props: {
   );
 
   function layerSummary(of: NonNullable<typeof part>): string {
-    const found = layerOf(site, of);
+    const found = layerOf(site, of, year);
     if (of === 'allowed') return 'Where works may go.';
     if (!found) return '';
     const area = site.grid.cellSize ** 2;

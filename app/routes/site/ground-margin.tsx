@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import { layerOf, resurveysOf } from '#contract/layer-sources.ts';
 import { layerParts, type HabitatClass, type Layer, type LayerPart } from '#contract/layers.ts';
 import { FileDrop } from '#app/components/file-drop.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
@@ -11,6 +12,7 @@ import { ClassList, ClassTable } from '#app/features/layers/class-table.tsx';
 import { LayerEntry } from '#app/features/layers/layer-entry.tsx';
 import { hasUnit, neededParts, partLabels, partReasons } from '#app/features/layers/part-words.ts';
 import { HeightChoice, UnitChoice } from '#app/features/layers/unit-choice.tsx';
+import { YearChoice } from '#app/features/layers/year-choice.tsx';
 import type { SendingStore } from '#app/features/layers/uploads/sending-store.ts';
 import { UploadPanel } from '#app/features/layers/uploads/upload-panel.tsx';
 import type { ClassDraft } from '#app/features/layers/use-class-draft.ts';
@@ -42,7 +44,9 @@ interface GroundMarginProps {
 export function GroundMargin(props: GroundMarginProps) {
   const { site, mayKeepGround } = useSite();
   const { view, onShow, onFiles } = props;
-  const layers = layerParts.flatMap((part) => site.layers.find((layer) => layer.part === part) ?? []);
+  const layers = layerParts.flatMap((part) =>
+    part === 'resurvey' ? resurveysOf(site) : (layerOf(site, part) ?? []),
+  );
   const missing = layerParts.filter(
     (part) =>
       layers.every((layer) => layer.part !== part) && site.features.every(({ kind }) => kind !== part),
@@ -71,11 +75,13 @@ export function GroundMargin(props: GroundMarginProps) {
       )}
       {layers.map((layer) => (
         <LayerEntry
-          key={layer.part}
+          key={layer.year ?? layer.part}
           siteId={site.id}
           layer={layer}
-          shown={view?.of === 'layer' && view.part === layer.part}
-          onShow={() => onShow({ of: 'layer', part: layer.part })}
+          shown={view?.of === 'layer' && view.part === layer.part && (view.year ?? null) === layer.year}
+          onShow={() =>
+            onShow({ of: 'layer', part: layer.part, ...(layer.year !== null && { year: layer.year }) })
+          }
           editable={mayKeepGround}
           onFile={(file) => onFiles([file], layer.part)}
         >
@@ -86,6 +92,7 @@ export function GroundMargin(props: GroundMarginProps) {
               <ElevationCurvesEditor layer={layer} drafting={props.elevation} editable={mayKeepGround} />
             </>
           )}
+          {layer.year !== null && <YearChoice siteId={site.id} layer={layer} editable={mayKeepGround} />}
           {hasUnit(layer.part) && <UnitChoice siteId={site.id} layer={layer} editable={mayKeepGround} />}
         </LayerEntry>
       ))}

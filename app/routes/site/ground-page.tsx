@@ -1,7 +1,7 @@
 import { useDeferredValue, useMemo, useState } from 'react';
 import { useQueryClient } from '@tanstack/react-query';
 import { useSearchParams } from 'react-router-dom';
-import { allowedSource, layerOf } from '#contract/layer-sources.ts';
+import { allowedSource, layerOf, resurveysOf } from '#contract/layer-sources.ts';
 import { layerParts, type LayerPart } from '#contract/layers.ts';
 import { useSearchPatch } from '#app/lib/use-search-patch.ts';
 import { LeaveGuard } from '#app/components/leave-guard.tsx';
@@ -39,15 +39,18 @@ export function Page() {
   );
   const taken = layerParts.filter((part) => layerOf(site, part) !== undefined);
   const present = layerParts.filter(
-    (part) => taken.includes(part) || (part === 'allowed' && allowedSource(site) !== undefined),
+    (part) =>
+      (part !== 'resurvey' && taken.includes(part)) ||
+      (part === 'allowed' && allowedSource(site) !== undefined),
   );
+  const years = resurveysOf(site).map(({ year }) => year);
   const addFiles = (files: File[], part?: LayerPart) =>
     sending.drop(files, (file) => part ?? guessPart(file.name, taken));
   useDropAnywhere(mayKeepGround ? addFiles : undefined);
 
   const [search] = useSearchParams();
   const patchSearch = useSearchPatch();
-  const view = readView(search.get('layer'), present);
+  const view = readView(search.get('layer'), present, years);
   const show = (next: NonNullable<typeof view>) => patchSearch({ layer: viewKey(next) });
 
   // The map follows while somebody types; on a large site it must not hold the typing up.
@@ -74,7 +77,7 @@ export function Page() {
   return (
     <SitePage
       step="ground"
-      tools={<GroundTools {...{ present, view }} onShow={show} />}
+      tools={<GroundTools {...{ present, years, view }} onShow={show} />}
       map={<GroundMap view={view} ground={ground} classes={shownClasses} />}
       margin={
         <>

@@ -8,10 +8,20 @@ import { engineLabels, engineMaps, readView, viewKey, type GroundView } from './
 /** What the map shows: a layer as it came, or what the engine will see. */
 export function GroundTools(props: {
   present: readonly LayerPart[];
+  /** of resurveys */
+  years: readonly number[];
   view: GroundView | undefined;
   onShow: (view: GroundView) => void;
 }) {
-  const { present, view, onShow } = props;
+  const { present, years, view, onShow } = props;
+  const resurveys = years.map((year) => ({
+    view: { of: 'layer', part: 'resurvey', year } as const,
+    label: `resurvey ${year}`,
+  }));
+  const show = (key: string) => {
+    const chosen = readView(key, present, years);
+    if (chosen) onShow(chosen);
+  };
   const narrow = useNarrow();
   if (view === undefined)
     return <span className="flex min-h-8 items-center text-[13.5px] text-ink-2">No layer to show yet</span>;
@@ -25,15 +35,17 @@ export function GroundTools(props: {
           label="Map shows"
           className="min-w-0 text-[15px]"
           value={viewKey(view)}
-          onChange={(event) => {
-            const chosen = readView(event.target.value, present);
-            if (chosen) onShow(chosen);
-          }}
+          onChange={(event) => show(event.target.value)}
         >
           <optgroup label="Layers">
             {present.map((part) => (
               <option key={part} value={viewKey({ of: 'layer', part })}>
                 {partLabels[part].toLowerCase()}
+              </option>
+            ))}
+            {resurveys.map((resurvey) => (
+              <option key={resurvey.label} value={viewKey(resurvey.view)}>
+                {resurvey.label}
               </option>
             ))}
           </optgroup>
@@ -52,9 +64,15 @@ export function GroundTools(props: {
       <WordChoice
         label="Layers"
         showLabel
-        options={present.map((key) => ({ key, label: partLabels[key].toLowerCase() }))}
-        value={view.of === 'layer' ? view.part : undefined}
-        onChange={(part) => onShow({ of: 'layer', part })}
+        options={[
+          ...present.map((part) => ({
+            key: viewKey({ of: 'layer', part }),
+            label: partLabels[part].toLowerCase(),
+          })),
+          ...resurveys.map((resurvey) => ({ key: viewKey(resurvey.view), label: resurvey.label })),
+        ]}
+        value={view.of === 'layer' ? viewKey(view) : undefined}
+        onChange={show}
       />
       <WordChoice
         label="The engine will see"

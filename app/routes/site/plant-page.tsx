@@ -1,7 +1,7 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useDeferredValue, useMemo, useState } from 'react';
 import { TextField } from '#app/components/inputs.tsx';
-import { WordButton } from '#app/components/word-button.tsx';
+import { WordButton, WordLink } from '#app/components/word-button.tsx';
 import { KeepDialog } from '#app/features/plant/keep-dialog.tsx';
 import { LibraryDialog } from '#app/features/plant/library-dialog.tsx';
 import { keepInLibrary, refetchLibrary, type KeepAs } from '#app/features/plant/library.ts';
@@ -128,6 +128,7 @@ export function Page() {
                 Keep in the library
               </WordButton>
             )}
+            <WordLink to={`/sites/${site.id}/fit`}>Fit to a resurvey</WordLink>
           </p>
           {dialog === 'profiles' && (
             <LibraryDialog

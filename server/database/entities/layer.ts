@@ -6,6 +6,8 @@ export interface LayerRow {
   id: string;
   siteId: string;
   part: string;
+  /** of a resurvey; 0 of any other part, so that a part is played once a year at most */
+  year: number;
   /** JSON: the grid that it lies on, the site's while it stands */
   grid: string;
   /** SHA-256 of the raster on that grid, the name of its blob and what runs name */
@@ -43,6 +45,7 @@ export const LayerEntity = new EntitySchema<LayerRow>({
     id: { type: 'text', primary: true },
     siteId: { type: 'text' },
     part: { type: 'text' },
+    year: { type: 'integer', default: 0 },
     grid: { type: 'text' },
     hash: { type: 'text' },
     bytes: { type: 'integer' },
@@ -65,7 +68,7 @@ export const LayerEntity = new EntitySchema<LayerRow>({
   indices: [
     { name: 'layer_by_site', columns: ['siteId'] },
     { name: 'layer_by_hash', columns: ['hash'] },
-    { name: 'layer_current', columns: ['siteId', 'part'], unique: true, where: '"replacedAt" IS NULL' },
+    { name: 'layer_current', columns: ['siteId', 'part', 'year'], unique: true, where: '"replacedAt" IS NULL' },
     { name: 'layer_by_values', columns: ['valuesHash'] },
     { name: 'layer_by_source', columns: ['sourceHash'] },
   ],

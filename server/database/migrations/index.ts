@@ -7,6 +7,7 @@ import { Comparisons1796121000000 } from './1796121000000-comparisons.ts';
 import { Outlooks1796140000000 } from './1796140000000-outlooks.ts';
 import { FeatureEdges1796145000000 } from './1796145000000-feature-edges.ts';
 import { Plants1796150000000 } from './1796150000000-plants.ts';
+import { Fits1796156000000 } from './1796156000000-fits.ts';
 
 /** Every change of the schema, oldest first. One that has been released is never edited. */
 export const migrations = [
@@ -19,4 +20,5 @@ export const migrations = [
   Outlooks1796140000000,
   FeatureEdges1796145000000,
   Plants1796150000000,
+  Fits1796156000000,
 ];

@@ -13,6 +13,7 @@ import {
   hasTwin,
   layersOfPart,
   comparisonsOnRaster,
+  fitsOnRaster,
   runsOnRaster,
   updateLayer,
 } from './layer.repository.ts';
@@ -38,6 +39,7 @@ export async function layerHistory(
 const without: Record<LayerPart, string> = {
   habitat: 'Without habitat nothing says where the plant can grow: no run can start.',
   cover: 'Without cover nothing says what stands now: no run can start.',
+  resurvey: 'Fits that were made to it keep what they came to; it can no longer be chosen for a new one.',
   elevation: 'Curves of elevation have nothing to act on without it; they stay as they are.',
   exposure: 'Without exposure the ground counts as sheltered, or as the curve of elevation says.',
   refuge: 'Without refuge only the surveyed points and areas and the works of an option shelter survivors.',
@@ -93,6 +95,12 @@ async function forgetLayer(manager: Manager, row: LayerRow): Promise<void> {
       'conflict',
       `Found ${comparisons} ${comparisons === 1 ? 'comparison that stands' : 'comparisons that stand'} on this layer; ` +
         'they could not be resumed or run again without it. Keep the layer, or delete the comparisons on which nothing was decided first.',
+    );
+  const fits = await fitsOnRaster(manager, row.siteId, row.hash);
+  if (fits > 0)
+    throw new ProblemError(
+      'conflict',
+      `Found ${fits} ${fits === 1 ? 'fit that stands' : 'fits that stand'} on this layer; what they came to could not be looked at without it. Keep the layer, or delete the fits first.`,
     );
   const { runs, runNames } = await runsOnRaster(manager, row.siteId, row.hash);
   if (runs > 0)

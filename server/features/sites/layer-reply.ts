@@ -18,6 +18,7 @@ export function layerReply(row: LayerRow): Layer {
   return {
     id,
     part: layerPartSchema.parse(row.part),
+    year: row.year === 0 ? null : row.year,
     hash,
     bytes,
     grid: readJson(gridSchema, row.grid),

@@ -3,6 +3,7 @@ import type { Manager } from '#server/database/manager.ts';
 import { ComparisonLayerEntity } from '#server/database/entities/comparison-parts.ts';
 import { ComparisonEntity } from '#server/database/entities/comparison.ts';
 import { LayerEntity, type LayerRow } from '#server/database/entities/layer.ts';
+import { FitEntity, FitLayerEntity } from '#server/database/entities/fit.ts';
 import { RunLayerEntity } from '#server/database/entities/run-layer.ts';
 import { RunEntity } from '#server/database/entities/run.ts';
 
@@ -60,8 +61,20 @@ export const comparisonsOnRaster = (manager: Manager, siteId: string, hash: stri
     .where('comparison.siteId = :siteId AND used.hash = :hash', { siteId, hash })
     .getCount();
 
-export const findLayerOfPart = (manager: Manager, siteId: string, part: string): Promise<LayerRow | null> =>
-  manager.findOneBy(LayerEntity, { siteId, part, replacedAt: IsNull() });
+/** How many fits of a site stand on a raster. */
+export const fitsOnRaster = (manager: Manager, siteId: string, hash: string): Promise<number> =>
+  manager
+    .createQueryBuilder(FitEntity, 'fit')
+    .innerJoin(FitLayerEntity.options.name, 'used', 'used.fitId = fit.id')
+    .where('fit.siteId = :siteId AND used.hash = :hash', { siteId, hash })
+    .getCount();
+
+/** The layer that plays a part now; of resurveys that of the year. */
+export const findLayerOfPart = (
+  manager: Manager,
+  { siteId, part, year }: Pick<LayerRow, 'siteId' | 'part' | 'year'>,
+): Promise<LayerRow | null> =>
+  manager.findOneBy(LayerEntity, { siteId, part, year, replacedAt: IsNull() });
 
 export async function insertLayer(manager: Manager, layer: LayerRow): Promise<void> {
   await manager.insert(LayerEntity, layer);

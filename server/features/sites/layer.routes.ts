@@ -21,7 +21,7 @@ export function layerRoutes(services: Services): Route[] {
       contract.uploadLayer,
       { site: keepers },
       ({ params, body, person, request }) =>
-        addLayer(services, params.siteId, { part: body.part, by: person.name, ...receivedRaster(request) }),
+        addLayer(services, params.siteId, { ...body, by: person.name, ...receivedRaster(request) }),
       { form },
     ),
     route(contract.changeLayer, { site: keepers }, ({ params, body }) =>

@@ -16,13 +16,14 @@ import { siteReply } from './site-reply.ts';
 /** The row of a layer that was read from a file on the site's own cells. */
 export const layerRowOf = (
   siteId: string,
-  { part, file, fileName, by }: ArrivedRaster,
+  { part, year, file, fileName, by }: ArrivedRaster,
   { grid, facts, unit, values }: ReadRaster,
   uploadedAt: string,
 ): LayerRow => ({
   id: randomUUID(),
   siteId,
   part,
+  year: year ?? 0,
   grid: JSON.stringify(grid),
   hash: file.hash,
   bytes: file.bytes,
@@ -56,7 +57,7 @@ export const layerRowOf = (
 
 /** Puts a layer's row in the place of the one that plays its part now, which stays as history. */
 export async function installLayer(manager: Manager, row: LayerRow, now: string): Promise<void> {
-  const present = await findLayerOfPart(manager, row.siteId, row.part);
+  const present = await findLayerOfPart(manager, row);
   if (present) await updateLayer(manager, present.id, { replacedAt: now });
   await insertLayer(manager, row);
 }
@@ -67,6 +68,7 @@ export async function installLayer(manager: Manager, row: LayerRow, now: string)
  * @throws ProblemError what is wrong with the raster, `grid-mismatch` when it lies on other cells than the site's
  */
 export async function addLayer(services: Services, siteId: string, raster: ArrivedRaster): Promise<Site> {
+  refuseYear(raster);
   const { grid } = await siteReply(services.dataSource.manager, siteId);
   const read = await readRasterFile(services, raster.file, raster.part, grid);
   const now = services.clock().toISOString();
@@ -76,22 +78,32 @@ export async function addLayer(services: Services, siteId: string, raster: Arriv
   });
 }
 
+/** Resurveys are told apart by their year; nothing else has one. @throws ProblemError at `year` */
+function refuseYear({ part, year }: Pick<ArrivedRaster, 'part' | 'year'>): void {
+  if (part === 'resurvey' && year === undefined)
+    throw fieldProblem('year', 'Say in which year the resurvey was made');
+  if (part !== 'resurvey' && year !== undefined)
+    throw fieldProblem('year', `A year belongs to a resurvey; this layer is ${part}`);
+}
+
 /** What may be said about a layer. */
 export interface LayerChange {
   unit?: ValueUnit;
   vertical?: Vertical;
   note?: string;
+  year?: number;
 }
 
 /**
  * Says what the values of a layer mean and what people should know about it.
- * @throws ProblemError at `unit` when the values cannot be read so, at `vertical` when they are no heights
+ * @throws ProblemError at `unit` when the values cannot be read so, at `vertical` when they are no heights, at `year` when
+ * it is no resurvey or the site has another of that year
  */
 export function changeLayer(
   services: Services,
   siteId: string,
   layerId: string,
-  { unit, vertical, note }: LayerChange,
+  { unit, vertical, note, year }: LayerChange,
 ): Promise<Site> {
   return services.write(async (manager) => {
     const layer = await requireLayer(manager, siteId, layerId);
@@ -104,6 +116,13 @@ export function changeLayer(
       if (layer.part !== 'elevation')
         throw fieldProblem('vertical', `Heights belong to elevation; this layer is ${layer.part}`);
       change.vertical = JSON.stringify(vertical);
+    }
+    if (year !== undefined && year !== layer.year) {
+      if (layer.part !== 'resurvey')
+        throw fieldProblem('year', `A year belongs to a resurvey; this layer is ${layer.part}`);
+      if (await findLayerOfPart(manager, { ...layer, year }))
+        throw fieldProblem('year', `There is a resurvey of ${year} already; take it off the site first`);
+      change.year = year;
     }
     if (note !== undefined) change.note = note;
     if (Object.keys(change).length > 0) await updateLayer(manager, layerId, change);

@@ -25,7 +25,7 @@ export async function putLayerBack(services: Services, siteId: string, layerId: 
     const { teamId, grid } = await siteReply(manager, siteId);
     if (gridDifferences(layerReply(row).grid, grid).length > 0)
       return { upload: await alignAnew(manager, teamId, row), site: await siteReply(manager, siteId) };
-    const present = await findLayerOfPart(manager, siteId, row.part);
+    const present = await findLayerOfPart(manager, row);
     if (present) await updateLayer(manager, present.id, { replacedAt: now });
     await updateLayer(manager, layerId, { replacedAt: null });
     return { upload: undefined, site: await siteReply(manager, siteId) };
@@ -36,7 +36,7 @@ export async function putLayerBack(services: Services, siteId: string, layerId: 
 
 /** Asks for the layer's file to be placed as it was; returns the id of the upload. */
 async function alignAnew(manager: Manager, teamId: string, row: LayerRow): Promise<string> {
-  const { part, unit, vertical, note, source } = layerReply(row);
+  const { part, year, unit, vertical, note, source } = layerReply(row);
   const upload = uploadRowOf(
     {
       teamId,
@@ -48,7 +48,7 @@ async function alignAnew(manager: Manager, teamId: string, row: LayerRow): Promi
       uploadedBy: row.uploadedBy,
       place: 'always',
     },
-    { part, band: source.band, method: null, unit, vertical, grid: null, note },
+    { part, band: source.band, method: null, unit, vertical, year, grid: null, note },
     row.id,
   );
   await insertUpload(manager, upload);

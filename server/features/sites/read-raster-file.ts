@@ -11,6 +11,8 @@ import { heightsOf } from './uploads/plan-upload.ts';
 /** A raster as it came in: the file, its name for show, and who sent it. */
 export interface ArrivedRaster {
   part: LayerPart;
+  /** of a resurvey */
+  year?: number | undefined;
   file: ReceivedFile;
   fileName: string;
   /** the name of whoever sent it */

@@ -27,6 +27,8 @@ export async function createSite(
     ...raster
   }: ArrivedRaster & { teamId: string; name: string; invented?: boolean },
 ): Promise<Site> {
+  if (raster.part === 'resurvey')
+    throw fieldProblem('part', 'A resurvey comes later: make the site from its habitat or cover first');
   const read = await readRasterFile(services, raster.file, raster.part);
   const { grid, facts } = read;
   const now = services.clock();

@@ -80,7 +80,7 @@ export const isReady = ({ state, plan, choices, problem, decisions }: Stated): b
   plan !== null &&
   problem === null &&
   choices.part !== null &&
-  !(['part', 'band', 'heights', 'values'] as const).some((open) => decisions.includes(open));
+  !(['part', 'band', 'heights', 'year', 'values'] as const).some((open) => decisions.includes(open));
 
 /** Of the uploads, those that nobody has to look at again before they are placed, each with a part of its own. */
 export function clearUploads<T extends Stated>(uploads: readonly T[]): T[] {

@@ -19,6 +19,7 @@ import { formatShare } from '#app/lib/formats.ts';
 import { HeightBlanks } from '../height-blanks.tsx';
 import { Histogram } from '../histogram.tsx';
 import { hasUnit, heightUnitLabels, unitLabels } from '../part-words.ts';
+import { YearBlank } from '../year-choice.tsx';
 import { OutlineFigure } from './outline-figure.tsx';
 import { fileInWords, isReady, methodLabels, planInWords } from './plan-words.ts';
 import { UploadPicture } from './upload-picture.tsx';
@@ -47,7 +48,9 @@ export function UploadChoices(props: {
   const shown = choose.isPending ? { ...choices, ...choose.variables } : choices;
   const target = plan?.target ?? grid;
   const heightUnit = shown.vertical?.unit ?? upload.heights?.unit ?? 'metre';
-  const replaced = props.layers?.find(({ part }) => part === shown.part);
+  const replaced = props.layers?.find(
+    ({ part, year }) => part === shown.part && (part !== 'resurvey' || year === shown.year),
+  );
   return (
     <div aria-busy={choose.isPending || undefined}>
       <p className="text-ink-2">{fileInWords(description)}</p>
@@ -199,6 +202,18 @@ function Sentence(props: {
               </option>
             ))}
           </BlankSelect>
+        </>
+      )}
+      {shown.part === 'resurvey' && (
+        <>
+          {' '}
+          of{' '}
+          <YearBlank
+            label={`Year that ${fileName} was surveyed in`}
+            year={shown.year}
+            disabled={disabled}
+            onYear={(year) => onChange({ year })}
+          />
         </>
       )}
       {shown.part !== null && hasUnit(shown.part) && (

@@ -10,6 +10,7 @@ const gridFixture = { width: 6, height: 4, cellSize: 1, originX: 1000, originY: 
 export const layerFixture = (part: Layer['part'], more: Partial<Layer> = {}): Layer => ({
   id: id(10 + part.length),
   part,
+  year: null,
   hash: part === 'habitat' ? 'a'.repeat(64) : part === 'cover' ? 'b'.repeat(64) : 'c'.repeat(64),
   bytes: 1000,
   grid: gridFixture,

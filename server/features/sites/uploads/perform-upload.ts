@@ -120,10 +120,11 @@ async function read(services: Services, row: UploadRow, progress: Required<TaskP
   }
 }
 
+const needsChoice = ['part', 'band', 'heights', 'year'];
+
 /** Whether an upload becomes a layer by itself. */
 function mayPlace(place: string, decisions: readonly string[]): boolean {
-  const open = ['part', 'band', 'heights'].some((decision) => decisions.includes(decision));
-  if (place === 'when-asked' || open) return false;
+  if (place === 'when-asked' || needsChoice.some((need) => decisions.includes(need))) return false;
   return place === 'always' || decisions.length === 0;
 }
 
@@ -156,11 +157,12 @@ function layerOf(
   { stored }: AlignedRaster,
   old: LayerRow | null,
 ): LayerRow {
-  const { part, note } = upload.choices;
+  const { part, year, note } = upload.choices;
   return {
     id: randomUUID(),
     siteId: row.siteId!,
     part: part!,
+    year: part === 'resurvey' ? year! : 0,
     ...stored,
     fileName: row.fileName,
     sourceHash: row.hash,

@@ -34,6 +34,7 @@ export function planUpload(upload: SurveyedUpload, siteGrid: Grid | null): Uploa
   let suggestedGrid: Upload['suggestedGrid'] = null;
   const decisions: Upload['decisions'] = [];
   if (choices.part === null) decisions.push('part');
+  if (choices.part === 'resurvey' && choices.year === null) decisions.push('year');
   if (choices.band === null && description.bands.filter(({ role }) => role === 'data').length > 1)
     decisions.push('band');
   const heights = heightsOf(upload);

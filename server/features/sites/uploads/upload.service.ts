@@ -34,6 +34,7 @@ export const noChoices: UploadChoices = {
   method: null,
   unit: null,
   vertical: null,
+  year: null,
   grid: null,
   note: '',
 };
@@ -220,6 +221,7 @@ async function requireClear(manager: Manager, row: UploadRow) {
   const plan = (await planOf(manager, row))!;
   const { decisions, problem } = plan;
   if (decisions.includes('part')) throw fieldProblem('part', 'Say which part the raster plays');
+  if (decisions.includes('year')) throw fieldProblem('year', 'Say in which year the resurvey was made');
   if (decisions.includes('band')) throw fieldProblem('band', 'Say which band holds the layer');
   if (decisions.includes('heights'))
     throw fieldProblem('vertical', `Say what the heights are in: ${plan.heights!.because}`);

@@ -16,6 +16,7 @@ import { alignToGrid, type AlignedRaster } from '../align-to-grid.ts';
 import { blobsOfLayer } from '../layer-history.service.ts';
 import {
   currentLayers,
+  fitsOnRaster,
   deleteLayerRow,
   hasTwin,
   insertLayer,
@@ -147,7 +148,8 @@ async function replaceAll(
   for (const [i, layer] of layers.entries()) {
     const { runs } = await runsOnRaster(manager, layer.siteId, layer.hash);
     const comparisons = await comparisonsOnRaster(manager, layer.siteId, layer.hash);
-    if (runs + comparisons > 0 && !(await hasTwin(manager, layer)))
+    const fits = await fitsOnRaster(manager, layer.siteId, layer.hash);
+    if (runs + comparisons + fits > 0 && !(await hasTwin(manager, layer)))
       await updateLayer(manager, layer.id, { replacedAt: now });
     else {
       await deleteLayerRow(manager, layer.id);

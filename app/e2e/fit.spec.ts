@@ -1,0 +1,54 @@
+import { getSite } from '#contract/sites.ts';
+import { fillPath } from '#contract/endpoint.ts';
+import { demoAddresses } from './addresses.ts';
+import { inventedSite } from './invented-site.ts';
+import { laterSurveys } from './later-surveys.ts';
+import { demoPeople } from './people.ts';
+import { expect, signIn, test } from './test.ts';
+
+test('a modeller fits two rates to two resurveys, goes on after a reload, looks at the maps and takes the rates over', async ({
+  page,
+}) => {
+  await signIn(page, demoPeople.modeller);
+  const { teamId } = await demoAddresses(page);
+  const { siteId, site, cover } = await inventedSite(page.request, teamId, {
+    name: 'Fitted Marsh',
+    side: 40,
+    years: 10,
+    cover: (column) => (column < 10 ? 0.8 : 0),
+    options: [],
+  });
+  const truth = { lateralSpread: 1, fillRate: 1.4 };
+  await laterSurveys(page.request, site, cover, [2029, 2032], truth);
+
+  await page.goto(`/sites/${siteId}/plant`);
+  await page.getByRole('link', { name: 'Fit to a resurvey' }).click();
+  await expect(page.getByLabel('2029')).toBeChecked();
+  await page.getByLabel('Highest lateral spread').fill('3');
+  await page.getByLabel('How much the fit takes').selectOption('quick');
+  await page.getByRole('button', { name: 'Start the fit' }).click();
+
+  // The tab is loaded anew in the middle; it goes on by itself.
+  await expect(page.getByRole('progressbar')).toHaveAccessibleName(/run \d+ of the first 200/);
+  page.once('dialog', (dialog) => void dialog.accept());
+  await page.reload();
+  await expect(page.getByRole('heading', { name: 'Into the plant' })).toBeVisible({ timeout: 120_000 });
+  await expect(page.getByText(/finished: \d generations?/)).toBeVisible({ timeout: 120_000 });
+  await expect(page.getByRole('heading', { name: 'Leaving one year out' })).toBeVisible();
+
+  await page.getByRole('button', { name: 'Compare map by map' }).click();
+  await expect(page.getByRole('row', { name: /^κ \d/ })).toBeVisible({ timeout: 60_000 });
+  await expect(page.getByRole('row', { name: /^Hits / })).toContainText('m²');
+
+  await page.getByRole('button', { name: 'Take these rates over' }).click();
+  await expect(page.getByText(/Taken over by .*plant of the site/)).toBeVisible();
+  const reply = await page.request.get(fillPath(getSite.path, { siteId }));
+  const { plant } = getSite.reply.parse(await reply.json());
+  const law = plant.beliefs.lateralSpread;
+  if (law?.law !== 'values') throw new Error('Expected a law of values');
+  const sorted = law.values.toSorted((a, b) => a - b);
+  expect(sorted[5]).toBeLessThan(truth.lateralSpread);
+  expect(sorted[94]).toBeGreaterThan(truth.lateralSpread);
+  // The belief before reached from 0.53 to 3.
+  expect(sorted[94] - sorted[5]).toBeLessThan(1.4);
+});
