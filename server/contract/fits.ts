@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import { allParameters, anyRateNames } from '#sim-core/spec/all-parameters.ts';
 import { figureKinds } from '#sim-core/spec/fit-figure.ts';
-import { beliefWithin } from '#sim-core/spec/belief.ts';
+import { beliefSchema, beliefWithin } from '#sim-core/spec/belief.ts';
 import { runSpecFields, runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import { endpoint, id, instant, sha256, text } from './endpoint.ts';
 import { gridSchema } from './grid.ts';
@@ -41,14 +41,12 @@ export const fitDataSchema = z.strictObject({
 });
 export type FitData = z.infer<typeof fitDataSchema>;
 
-const fittedRateSchema = z
-  .strictObject({ name: z.enum(anyRateNames), belief: z.unknown() })
-  .transform(({ name, belief }, context) => {
-    const parsed = beliefWithin(allParameters[name]).safeParse(belief);
-    if (parsed.success) return { name, belief: parsed.data };
-    for (const { path, message } of parsed.error.issues)
+/** A rate that is fitted, and what is believed of it before. */
+export const fittedRateSchema = z
+  .strictObject({ name: z.enum(anyRateNames), belief: beliefSchema })
+  .superRefine(({ name, belief }, context) => {
+    for (const { path, message } of beliefWithin(allParameters[name]).safeParse(belief).error?.issues ?? [])
       context.addIssue({ code: 'custom', path: ['belief', ...path], message });
-    return z.NEVER;
   });
 
 /** What the runs of a fit share: a RunSpec without what each run has of its own. */

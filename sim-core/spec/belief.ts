@@ -12,7 +12,7 @@ const shape = z.number().min(0.1).max(1000);
  * What is believed of a rate that is not known exactly, as a law of its values in the rate's unit. Where a law would
  * reach beyond the rate's range (normal and log-normal always would), it is cut there and scaled to sum to 1 again.
  */
-const laws = z.discriminatedUnion('law', [
+export const beliefSchema = z.discriminatedUnion('law', [
   z.strictObject({ law: z.literal('uniform'), low: number, high: number }),
   z.strictObject({ law: z.literal('triangular'), low: number, mode: number, high: number }),
   z.strictObject({ law: z.literal('normal'), mean: number, standardDeviation: z.number().gt(0).max(1e9) }),
@@ -27,7 +27,7 @@ const laws = z.discriminatedUnion('law', [
   /** measured or fitted values, in any order; what lies between two neighbours is as likely as they are close */
   z.strictObject({ law: z.literal('values'), values: z.array(number).min(2).max(mostBeliefValues) }),
 ]);
-export type Belief = z.infer<typeof laws>;
+export type Belief = z.infer<typeof beliefSchema>;
 export type BeliefLaw = Belief['law'];
 export const beliefLaws = ['uniform', 'triangular', 'normal', 'log-normal', 'beta', 'values'] as const;
 
@@ -35,7 +35,7 @@ export const beliefLaws = ['uniform', 'triangular', 'normal', 'log-normal', 'bet
 export const beliefWithin = (
   rate: Pick<Parameter, 'label' | 'min' | 'max' | 'unit'>,
 ): z.ZodType<Belief, Belief> =>
-  laws.superRefine((belief, context) => {
+  beliefSchema.superRefine((belief, context) => {
     for (const { field, message } of beliefProblems(belief, rate))
       context.addIssue({ code: 'custom', path: field === '' ? [] : field.split('.'), message });
   });

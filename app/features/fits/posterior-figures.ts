@@ -64,7 +64,7 @@ export function posteriorFigures(
       const values = members.map((member) => member.values[i]);
       const after = weightedQuantiles(values, weights, middle);
       const bins = binsOf(laws[i](0.005), laws[i](0.995));
-      const draws = Array.from({ length: 400 }, (_, k) => laws[i]((k + 0.5) / 400));
+      const draws = Array.from({ length: 2000 }, (_, k) => laws[i]((k + 0.5) / 2000));
       return {
         ...{ name, label, unit, bins, before, after },
         prior: sharesIn(

@@ -2,7 +2,7 @@ import { ReadAsTable } from '#app/components/read-as-table.tsx';
 import { formatNumber, formatShare } from '#app/lib/formats.ts';
 import type { PosteriorFigures, RateFigures } from './posterior-figures.ts';
 
-const [width, height, bottom] = [300, 120, 26];
+const [width, height, bottom] = [400, 140, 26];
 
 /** Each fitted rate before (outline) and after (filled): what the surveys told about it. */
 export function RateDensities({ posterior }: { posterior: PosteriorFigures }) {
@@ -43,7 +43,7 @@ function Density({ rate }: { rate: RateFigures }) {
     .map((share, i) => `${i === 0 ? 'M' : 'L'}${i * step} ${y(share)}H${(i + 1) * step}`)
     .join('');
   return (
-    <figure>
+    <figure className="max-w-[420px]">
       <figcaption className="flex flex-wrap justify-between gap-x-3">
         <b>{unitOf(rate)}</b>
         <span className="text-note text-ink-2">

@@ -29,8 +29,8 @@ import { useSite } from './use-site.ts';
 
 const classes: readonly MapClass[] = [
   { value: aheadThere, name: 'ahead: stands, hardly foreseen', colour: '#2f5d3a' },
-  { value: behindThere, name: 'behind: bare, though foreseen', colour: '#c4452f' },
-  { value: asExpected, name: 'as foreseen', colour: '#e9e6dc' },
+  { value: behindThere, name: 'behind: bare, though foreseen', colour: '#b5331f' },
+  { value: asExpected, name: 'as foreseen', colour: '#c9c4b2' },
   { value: notSurveyed, name: 'not compared', colour: '#9fb0b8' },
 ];
 /** Share of the ground that may lack data before areas cannot be compared fairly (common practice, no source). */

@@ -20,9 +20,9 @@ import { originOfFit, targetOfFit } from './fit-ground.ts';
 /** Dark to light in this order, so that they are told apart without their hue. */
 const classes: readonly MapClass[] = [
   { value: hit, name: 'standing in both', colour: '#2f5d3a' },
-  { value: missed, name: 'survey alone', colour: '#c4452f' },
-  { value: falseAlarm, name: 'runs alone', colour: '#e8b04a' },
-  { value: bareInBoth, name: 'bare in both', colour: '#e9e6dc' },
+  { value: missed, name: 'survey alone', colour: '#b5331f' },
+  { value: falseAlarm, name: 'runs alone', colour: '#f0c04c' },
+  { value: bareInBoth, name: 'bare in both', colour: '#c9c4b2' },
   { value: unknown, name: 'not compared', colour: '#9fb0b8' },
 ];
 

@@ -3,6 +3,7 @@ import * as api from '#contract/api.ts';
 import * as comparisons from '#contract/comparisons.ts';
 import * as costs from '#contract/costs.ts';
 import * as features from '#contract/features.ts';
+import * as fits from '#contract/fits.ts';
 import * as grid from '#contract/grid.ts';
 import * as ground from '#contract/ground.ts';
 import * as layers from '#contract/layers.ts';
@@ -40,6 +41,7 @@ const headings: Record<string, object> = {
   Costs: costs,
   Runs: runs,
   Comparisons: comparisons,
+  Fits: fits,
   'About the API': api,
 };
 const parts = [features, grid, layers, problem, works, runSpec, runResult, replicateRecord];
