@@ -13,6 +13,7 @@ import {
 const parts = {
   kernel: 'sim-core/bench/main.ts',
   arrival: 'sim-core/bench/arrival.ts',
+  fit: 'sim-core/bench/fit.ts',
   product: 'server/bench/main.ts',
   comparison: 'app/bench/comparison.ts',
   page: 'app/bench/page.ts',

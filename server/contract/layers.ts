@@ -3,7 +3,15 @@ import { id, instant, sha256, text } from './endpoint.ts';
 import { gridSchema } from './grid.ts';
 
 /** The parts that a layer can play. All but `resurvey` are played by one layer at a time; of it there is one a year. */
-export const layerParts = ['habitat', 'cover', 'resurvey', 'refuge', 'elevation', 'exposure', 'allowed'] as const;
+export const layerParts = [
+  'habitat',
+  'cover',
+  'resurvey',
+  'refuge',
+  'elevation',
+  'exposure',
+  'allowed',
+] as const;
 export const layerPartSchema = z.enum(layerParts);
 export type LayerPart = z.infer<typeof layerPartSchema>;
 

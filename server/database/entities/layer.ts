@@ -68,7 +68,12 @@ export const LayerEntity = new EntitySchema<LayerRow>({
   indices: [
     { name: 'layer_by_site', columns: ['siteId'] },
     { name: 'layer_by_hash', columns: ['hash'] },
-    { name: 'layer_current', columns: ['siteId', 'part', 'year'], unique: true, where: '"replacedAt" IS NULL' },
+    {
+      name: 'layer_current',
+      columns: ['siteId', 'part', 'year'],
+      unique: true,
+      where: '"replacedAt" IS NULL',
+    },
     { name: 'layer_by_values', columns: ['valuesHash'] },
     { name: 'layer_by_source', columns: ['sourceHash'] },
   ],

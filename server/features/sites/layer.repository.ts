@@ -73,8 +73,7 @@ export const fitsOnRaster = (manager: Manager, siteId: string, hash: string): Pr
 export const findLayerOfPart = (
   manager: Manager,
   { siteId, part, year }: Pick<LayerRow, 'siteId' | 'part' | 'year'>,
-): Promise<LayerRow | null> =>
-  manager.findOneBy(LayerEntity, { siteId, part, year, replacedAt: IsNull() });
+): Promise<LayerRow | null> => manager.findOneBy(LayerEntity, { siteId, part, year, replacedAt: IsNull() });
 
 export async function insertLayer(manager: Manager, layer: LayerRow): Promise<void> {
   await manager.insert(LayerEntity, layer);

@@ -1,11 +1,10 @@
-import { createRun } from '#sim-core/run/create-run.ts';
 import { stream } from '#sim-core/random/streams.ts';
 import { uniform } from '#sim-core/random/philox.ts';
 import { runReplicate } from '#sim-core/ensemble/replicate.ts';
 import { gridOf, groundOf, specOf } from '#sim-core/testing/setups.ts';
 import { nextProposals, startAbc, takeRun, type AbcPlan, type AbcState } from '../abc.ts';
 import { ratesAt, runOfProposal, type FittedRate } from '../fit-run.ts';
-import { figuresOfRun, fitTarget, observedFigures, yearsOfTarget, type FitTarget } from '../fit-target.ts';
+import { fitTarget, observedFigures, type FitTarget } from '../fit-target.ts';
 import { resurveyOf } from '../resurvey.ts';
 import { weightedQuantiles } from '../posterior.ts';
 
@@ -29,8 +28,7 @@ const ground = (() => {
     [26, 12],
     [15, 27],
   ])
-    for (let dy = -2; dy <= 2; dy++)
-      for (let dx = -2; dx <= 2; dx++) cover[(y + dy) * width + x + dx] = 0.9;
+    for (let dy = -2; dy <= 2; dy++) for (let dx = -2; dx <= 2; dx++) cover[(y + dy) * width + x + dx] = 0.9;
   return groundOf(width * height, { cover });
 })();
 
@@ -52,7 +50,10 @@ export interface TrialSize {
 /** The surveys of 2023 and 2026 that a run with the true rates leads to. */
 function surveyed(seed: string, point: readonly number[]): FitTarget {
   const truth = runOfProposal(baseOf(`${seed}/truth`), fitted, { generation: 0, number: 1, point });
-  const { covers } = runReplicate({ spec: truth, grid, ground }, { closing: false, coverYears: [2023, 2026] });
+  const { covers } = runReplicate(
+    { spec: truth, grid, ground },
+    { closing: false, coverYears: [2023, 2026] },
+  );
   const maps = [...covers].map(([year, cover]) => ({
     ...resurveyOf(year, cover, ground.capacity, cells),
     areaError: 0,
@@ -81,7 +82,10 @@ export function runTrial(seed: string, size: TrialSize): Trial {
     if (proposals.length === 0) break;
     for (const proposal of proposals) {
       const keep = { closing: false, coverYears: [], fit: { target, want: 'figures' } } as const;
-      const { figures: got } = runReplicate({ spec: runOfProposal(base, fitted, proposal), grid, ground }, keep);
+      const { figures: got } = runReplicate(
+        { spec: runOfProposal(base, fitted, proposal), grid, ground },
+        keep,
+      );
       state = takeRun(plan, state, proposal, [...got!]);
     }
   }
@@ -103,4 +107,3 @@ export function runTrial(seed: string, size: TrialSize): Trial {
     state,
   };
 }
-void createRun; void figuresOfRun; void yearsOfTarget;
