@@ -1,5 +1,5 @@
 // npm run bench [-- --json] [NAME …]: what takes how long or how much, beside a yardstick in the same run; `ratio` above 1
-// means that we are better. With --json a JSON object a line. A NAME (kernel, arrival, product, comparison, page) runs that part alone.
+// means that we are better. With --json a JSON object a line. A NAME (kernel, arrival, fit, product, comparison, page) runs that part alone.
 import {
   chromiumPath,
   ensureBuilt,
