@@ -5,13 +5,13 @@ import { withoutPlanted, workTitles } from '#contract/work-titles.ts';
 import type { Work } from '#contract/works.ts';
 import { sayDone } from '#app/components/toast.tsx';
 import type { GroundRasters } from '#app/features/layers/use-ground-rasters.ts';
+import { useLayerRaster } from '#app/features/layers/use-layer-raster.ts';
 import type { BoardPens } from '#app/features/options/board/board-pens.ts';
 import { isShown } from '#app/features/options/board/place-bar.tsx';
 import { useBoard } from '#app/features/options/board/use-board.ts';
 import { createOptionMutation } from '#app/features/options/change-option.ts';
 import { useLookOf, useQuickLook } from '#app/features/options/quick-look/use-quick-look.ts';
 import { SelectionForm } from '#app/features/options/selection-form.tsx';
-import { surveyedMounds } from '#app/features/options/surveyed-mounds.ts';
 import { readMound } from '#app/features/options/mound-pen.ts';
 import { readYear } from '#app/features/options/board/area-pen.ts';
 import { standingWorks } from '#app/features/options/standing-works.ts';
@@ -20,7 +20,6 @@ import { useSuggest } from '#app/features/options/suggest/use-suggest.ts';
 import { useOptionDrawing } from '#app/features/options/use-option-drawing.ts';
 import { useUndoKeys } from '#app/features/options/use-undo-keys.ts';
 import { countOf, worksByYear } from '#contract/works-words.ts';
-import type { MapFoothold } from '#app/map/map-symbols.ts';
 import { Yearline } from '#app/yearline/Yearline.tsx';
 import { OptionAction } from './option-action.tsx';
 import { OptionMap } from './option-map.tsx';
@@ -31,12 +30,16 @@ import { OptionSentence } from './option-sentence.tsx';
 import { PlaceFirst } from './option-strip.tsx';
 import { OptionTools } from './option-tools.tsx';
 import { SitePage } from './site-page.tsx';
+import { surveyedOnOption } from './surveyed-on-option.ts';
 import { tolerancesOf } from './tolerances.ts';
 import { useAllowed } from './use-allowed.ts';
 import { useLookStart } from './use-look-start.ts';
 import { useSite } from './use-site.ts';
 import { useYearParam } from './use-year-param.ts';
 import { WatchStep } from './watch-step.tsx';
+
+/** Only a habitat has classes. */
+const noClasses: readonly never[] = [];
 
 /** One option on the drawing board. Keyed by the option: each has its own drawing. */
 export function OptionBoard(props: {
@@ -72,18 +75,10 @@ export function OptionBoard(props: {
     () => ({ grid, capacity: ground.capacity, allowed: allowed.cells }),
     [grid, ground.capacity, allowed.cells],
   );
+  const refuge = useLayerRaster(site, 'refuge', noClasses).raster;
   const surveyed = useMemo(
-    (): MapFoothold[] =>
-      ground.refuge
-        ? surveyedMounds(grid, ground.refuge).map(({ x, y }, i) => ({
-            id: `s${i}`,
-            x,
-            y,
-            kind: 'surveyed',
-            name: 'Surveyed mound',
-          }))
-        : [],
-    [ground.refuge, grid],
+    () => surveyedOnOption(site.features, grid, refuge?.kind === 'share' ? refuge.values : undefined),
+    [site.features, grid, refuge],
   );
   const pins = useMemo(
     () =>
@@ -95,7 +90,7 @@ export function OptionBoard(props: {
   const start = useLookStart(site, allowed);
   const view = useQuickLook(start);
   const board = useBoard({
-    ...{ ground: worksGround, draft, draw, editable, pens, surveyed },
+    ...{ ground: worksGround, draft, draw, editable, pens, surveyed: surveyed.footholds },
     span: outlook,
     unitCosts: costs,
     layer: view.layer,

@@ -16,16 +16,15 @@ import type { OptionDraft } from '#app/features/options/option-draft.ts';
 import { WorkNote } from '#app/features/options/work-note.tsx';
 import { WorksTable } from '#app/features/options/works-table.tsx';
 import { placeInWords, placeOf, worksInWords } from '#contract/works-words.ts';
-import { formatCounted } from '#app/lib/formats.ts';
 import { useSameList } from '#app/lib/use-same-list.ts';
 import { MapNote } from '#app/map/MapNote.tsx';
 import type { MapRaster } from '#app/map/map-raster.ts';
-import type { MapFoothold } from '#app/map/map-symbols.ts';
 import { SiteMap } from '#app/map/SiteMap.tsx';
 import type { Look } from '#app/workers/quick-look-desk.ts';
 import { closingRaster, gainRaster, type MapShow } from './option-raster.ts';
 import { GroundState } from './ground-state.tsx';
 import { OptionStrip } from './option-strip.tsx';
+import { surveyedOnOptionInWords, type SurveyedOnOption } from './surveyed-on-option.ts';
 import { useSite } from './use-site.ts';
 
 const shownWords: Record<MapShow, string> = {
@@ -39,7 +38,7 @@ export function OptionMap(props: {
   ground: GroundRasters;
   draft: OptionDraft;
   board: DrawingBoard;
-  surveyed: readonly MapFoothold[];
+  surveyed: SurveyedOnOption;
   /** works that are shown before they are placed */
   preview: readonly Work[];
   show: MapShow;
@@ -65,11 +64,13 @@ export function OptionMap(props: {
   const drawn = useMemo(() => worksOnMap(board.works, year), [board.works, year]);
   const faint = useMemo(() => worksOnMap(preview, year, true), [preview, year]);
   const footholds = useMemo(
-    () => [...surveyed, ...drawn.footholds, ...faint.footholds],
-    [surveyed, drawn, faint],
+    () => [...surveyed.footholds, ...drawn.footholds, ...faint.footholds],
+    [surveyed.footholds, drawn, faint],
   );
   // What is painted with the outlines, thousands of contours, is painted anew only when they change.
-  const areas = useSameList(drawn.areas);
+  const areas = useSameList(
+    useMemo(() => [...surveyed.areas, ...drawn.areas], [surveyed.areas, drawn.areas]),
+  );
   const { surveyYear, years } = outlook;
   const raster = useMemo((): MapRaster | undefined => {
     if (show === 'gain' && gain) return gainRaster(gain);
@@ -82,11 +83,14 @@ export function OptionMap(props: {
   );
   const chosen = draft.selected.size <= 2 ? board.works.filter(({ id }) => draft.selected.has(id)) : [];
   const [only, ...others] = withoutPlanted(chosen);
-  const surveyedOne = draft.selected.size === 0 ? surveyed.find((f) => f.id === board.found?.id) : undefined;
+  const surveyedOne =
+    draft.selected.size === 0 ? surveyed.footholds.find((f) => f.id === board.found?.id) : undefined;
   const selected = useMemo(
     () => (surveyedOne ? new Set([surveyedOne.id]) : draft.selected),
     [surveyedOne, draft.selected],
   );
+
+  const surveyedWords = surveyedOnOptionInWords(surveyed);
 
   if (props.asTable)
     return (
@@ -124,7 +128,7 @@ export function OptionMap(props: {
         tool={board.mapTool}
         label={props.title}
         summary={`${raster ? shownWords[raster.kind === 'closing' ? 'closing' : raster.kind === 'share' ? 'gain' : 'cover'] : 'The site'}, with ${worksInWords(draft.works)}${
-          surveyed.length > 0 ? ` and ${formatCounted(surveyed.length, 'surveyed mound')}` : ''
+          surveyedWords ? ` and ${surveyedWords}` : ''
         }.`}
         legendTitle={
           raster?.kind === 'closing'
@@ -138,9 +142,9 @@ export function OptionMap(props: {
             <span className="flex items-center gap-1.5">
               <FlagSymbol /> planned
             </span>
-            {surveyed.length > 0 && (
+            {surveyedWords && (
               <span className="flex items-center gap-1.5">
-                <SurvivorSymbol /> surveyed mound
+                <SurvivorSymbol /> surveyed
               </span>
             )}
           </>
