@@ -6,7 +6,7 @@ import { laterSurveys } from './later-surveys.ts';
 import { demoPeople } from './people.ts';
 import { expect, signIn, test } from './test.ts';
 
-test('a modeller fits two rates to two resurveys, goes on after a reload, looks at the maps and takes the rates over', async ({
+test('a modeller fits two rates to two resurveys, goes on after a reload, looks at the maps and takes the rates over; a comparison says whether the site is on track', async ({
   page,
 }) => {
   await signIn(page, demoPeople.modeller);
@@ -16,7 +16,15 @@ test('a modeller fits two rates to two resurveys, goes on after a reload, looks 
     side: 40,
     years: 10,
     cover: (column) => (column < 10 ? 0.8 : 0),
-    options: [],
+    // What is compared later needs an option beside Wait.
+    options: [
+      {
+        name: 'Clumps',
+        works: ({ originX, originY }) => [
+          { kind: 'clumps', year: 2027, points: [[originX + 30, originY - 20]], each: 6 },
+        ],
+      },
+    ],
   });
   const truth = { lateralSpread: 1, fillRate: 1.4 };
   await laterSurveys(page.request, site, cover, [2029, 2032], truth);
@@ -38,7 +46,7 @@ test('a modeller fits two rates to two resurveys, goes on after a reload, looks 
 
   await page.getByRole('button', { name: 'Compare map by map' }).click();
   await expect(page.getByRole('row', { name: /^κ \d/ })).toBeVisible({ timeout: 60_000 });
-  await expect(page.getByRole('row', { name: /^Hits / })).toContainText('m²');
+  await expect(page.getByRole('row', { name: /^Hits \d/ })).toContainText('m²');
 
   await page.getByRole('button', { name: 'Take these rates over' }).click();
   await expect(page.getByText(/Taken over by .*plant of the site/)).toBeVisible();
@@ -51,4 +59,18 @@ test('a modeller fits two rates to two resurveys, goes on after a reload, looks 
   expect(sorted[94]).toBeGreaterThan(truth.lateralSpread);
   // The belief before reached from 0.53 to 3.
   expect(sorted[94] - sorted[5]).toBeLessThan(1.4);
+
+  // The same resurveys against the futures of a comparison.
+  await page.goto(`/sites/${siteId}/compare`);
+  await page
+    .getByLabel(/futures/i)
+    .first()
+    .fill('20');
+  await page.getByRole('button', { name: /^Start/ }).click();
+  const onTrack = page.getByRole('region', { name: 'On track' });
+  await expect(onTrack.getByText(/is (ahead|behind|on track): .* m² are covered/)).toBeVisible({
+    timeout: 120_000,
+  });
+  await onTrack.getByLabel('Survey').selectOption('2029');
+  await expect(onTrack.getByRole('row', { name: /^Behind/ })).toContainText('m²');
 });

@@ -20,17 +20,20 @@ import {
   placesOffTrack,
   standingAmong,
 } from '#sim-core/compare/on-track.ts';
-import { unknown } from '#sim-core/fit/map-agreement.ts';
+import { standing, unknown } from '#sim-core/fit/map-agreement.ts';
 import type { Resurvey } from '#sim-core/fit/resurvey.ts';
 import { gridDifferences } from '#sim-core/grid/grid.ts';
 import { useComparisonCapacity } from './comparison-ground.ts';
 import { loadTarget } from './fit-ground.ts';
 import { useSite } from './use-site.ts';
 
+/** Beside the codes of `placesOffTrack`: what stands as foreseen, so that the map shows where plants are. */
+const standsAsExpected = 4;
 const classes: readonly MapClass[] = [
   { value: aheadThere, name: 'ahead: stands, hardly foreseen', colour: '#2f5d3a' },
   { value: behindThere, name: 'behind: bare, though foreseen', colour: '#b5331f' },
-  { value: asExpected, name: 'as foreseen', colour: '#c9c4b2' },
+  { value: standsAsExpected, name: 'stands as foreseen', colour: '#8d9a7a' },
+  { value: asExpected, name: 'bare as foreseen', colour: '#c9c4b2' },
   { value: notSurveyed, name: 'not compared', colour: '#9fb0b8' },
 ];
 /** Share of the ground that may lack data before areas cannot be compared fairly (common practice, no source). */
@@ -190,10 +193,13 @@ function PlacesOffTrack(props: {
   const chance = useQuery(ensembleMapQuery(comparison, option, outlook, `chance-${year}`));
   const map = chance.data instanceof Uint8Array ? chance.data : undefined;
   const places = useMemo(() => map && placesOffTrack(survey.cells, map), [survey, map]);
-  const raster = useMemo(
-    (): MapRaster | undefined => places && { kind: 'classes', values: places.cells, classes },
-    [places],
-  );
+  const raster = useMemo((): MapRaster | undefined => {
+    if (!places) return undefined;
+    const values = places.cells.map((value, i) =>
+      value === asExpected && survey.cells[i] === standing ? standsAsExpected : value,
+    );
+    return { kind: 'classes', values, classes };
+  }, [places, survey]);
   if (!comparison.plan.mapYears.includes(year))
     return (
       <p className="text-ink-2">

@@ -124,6 +124,7 @@ export function Page() {
       budgets[budget].mostRuns) /
     Math.max(1, navigator.hardwareConcurrency || 2);
   const missing = [
+    surveys.areas.includes('%') && !capacity && 'Reading the ground that per cent are of.',
     last === surveyYear && 'Choose or type at least one later survey.',
     choices.rates.length === 0 && 'Choose at least one rate.',
     choices.rates.some(({ belief }) => belief.law === 'uniform' && belief.low >= belief.high) &&

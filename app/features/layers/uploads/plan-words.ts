@@ -84,11 +84,12 @@ export const isReady = ({ state, plan, choices, problem, decisions }: Stated): b
 
 /** Of the uploads, those that nobody has to look at again before they are placed, each with a part of its own. */
 export function clearUploads<T extends Stated>(uploads: readonly T[]): T[] {
-  const asked = uploads.filter(({ state }) => state === 'choices').map(({ choices }) => choices.part);
+  const roleOf = ({ choices }: T) => `${choices.part} ${choices.part === 'resurvey' ? choices.year : ''}`;
+  const asked = uploads.filter(({ state }) => state === 'choices').map(roleOf);
   return uploads.filter(
     (upload) =>
       isReady(upload) &&
       upload.decisions.length === 0 &&
-      asked.filter((part) => part === upload.choices.part).length === 1,
+      asked.filter((role) => role === roleOf(upload)).length === 1,
   );
 }
