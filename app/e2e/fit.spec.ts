@@ -71,6 +71,6 @@ test('a modeller fits two rates to two resurveys, goes on after a reload, looks 
   await expect(onTrack.getByText(/is (ahead|behind|on track): .* m² are covered/)).toBeVisible({
     timeout: 120_000,
   });
-  await onTrack.getByLabel('Survey').selectOption('2029');
+  await onTrack.getByLabel('Survey', { exact: true }).selectOption('2029');
   await expect(onTrack.getByRole('row', { name: /^Behind/ })).toContainText('m²');
 });
