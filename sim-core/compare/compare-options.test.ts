@@ -94,6 +94,7 @@ describe('weights', () => {
   test('a criterion in which all are alike sets none back', () => {
     const alike: Criterion = { values: [5, 5, 5], better: 'less', weight: 2 };
     expect(weighOptions([chance, alike]).ranking).toEqual([1, 2, 0]);
+    expect(weighOptions([{ ...chance, values: [83, 83, 55] }, alike]).places).toEqual([1, 1, 3]);
     expect(() => weighOptions([{ ...chance, weight: 0 }])).toThrow(/above 0/);
     expect(() => weighOptions([chance, { ...cost, values: [1] }])).toThrow(RangeError);
   });

@@ -1,8 +1,9 @@
 import { ensembleTally, type EnsembleSummary } from '#sim-core/ensemble/ensemble-tally.ts';
+import { firstToCome } from '#sim-core/ensemble/next-drought.ts';
 import { bestShares, type BestShare } from './best-option.ts';
 import { efficientLine } from './efficient-options.ts';
 import { sharedReplicates, type KnownRecords } from './known-records.ts';
-import { pairedDifference, type PairedDifference } from './paired-difference.ts';
+import { meanDifference, pairedDifference, type PairedDifference } from './paired-difference.ts';
 import { recoveryTimes, type ComparedYears } from './recovery-times.ts';
 import { regretTable, type RegretTable } from './regret.ts';
 
@@ -44,7 +45,7 @@ export interface Pair {
   /** years that the first recovers sooner than the second, cut at the horizon */
   readonly sooner: PairedDifference;
   /** what the first's chance to close before the next drought is above the second's, share of all replicates */
-  readonly chanceGained: number;
+  readonly chanceGained: PairedDifference;
 }
 
 export interface OutlookFigures {
@@ -85,8 +86,8 @@ function outlookFigures(
   seed: string,
 ): OutlookFigures {
   const times = plan.options.map((_, option) => recoveryTimes(plan, known[option][outlook], shared));
+  const inTime = plan.options.map((_, option) => closedInTime(known[option][outlook], shared));
   const best = bestShares(times);
-  const mean = (values: Float64Array) => values.reduce((sum, v) => sum + v, 0) / values.length;
   const wait = plan.options.findIndex((option) => option.wait);
   const options = plan.options.map((option, i): OptionFigures => ({
     name: option.name,
@@ -94,9 +95,8 @@ function outlookFigures(
     cost: option.cost,
     ...ensembleFigures(plan, known[i][outlook], shared),
     best: best[i],
-    yearsSooner: wait < 0 ? 0 : mean(times[wait]) - mean(times[i]),
+    yearsSooner: wait < 0 ? 0 : meanDifference(times[wait], times[i]),
   }));
-  const chance = (i: number) => options[i].summary.beforeDrought.share?.estimate ?? 0;
   const order = plan.options.map((_, i) => i).sort((a, b) => Number(b === wait) - Number(a === wait));
   const pairs = order.flatMap((second, place) => order.slice(place + 1).map((first) => ({ first, second })));
   return {
@@ -110,13 +110,20 @@ function outlookFigures(
             first,
             second,
             sooner: pairedDifference(times[second], times[first], `${seed}/${outlook}`),
-            chanceGained: chance(first) - chance(second),
+            chanceGained: pairedDifference(inTime[first], inTime[second], `${seed}/${outlook}/in time`),
           })),
     efficient: options.some((option) => option.cost === null)
       ? []
       : efficientLine(options.map(({ cost, yearsSooner }) => ({ cost: cost ?? 0, gain: yearsSooner }))),
   };
 }
+
+/** 1 for each replicate that closes before the next drought, 0 for the others, in their order. */
+const closedInTime = (records: KnownRecords[number][number], replicates: readonly number[]): Float64Array =>
+  Float64Array.from(replicates, (replicate) => {
+    const { recoveredYear, droughtYear } = records.get(replicate)!;
+    return firstToCome(recoveredYear, droughtYear) === 'recovery' ? 1 : 0;
+  });
 
 function ensembleFigures(
   { common: { surveyYear, years } }: ComparedPlan,

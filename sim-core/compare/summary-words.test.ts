@@ -2,8 +2,15 @@ import { describe, expect, it } from 'vitest';
 import type { OutlookFigures } from './comparison-figures.ts';
 import { fewFuturesWords, listed, summaryWords } from './summary-words.ts';
 
+const none = { estimate: 0, low: 0, high: 0 };
+
 /** Figures of options by years sooner than Wait; pairs of those named `first second` differ for sure. */
-function figures(years: Record<string, number>, apart: readonly string[], replicates = 60): OutlookFigures {
+function figures(
+  years: Record<string, number>,
+  apart: readonly string[],
+  replicates = 60,
+  inTime = none,
+): OutlookFigures {
   const names = Object.keys(years);
   const pairs = names.flatMap((_, second) =>
     names.slice(second + 1).map((__, after) => {
@@ -14,7 +21,7 @@ function figures(years: Record<string, number>, apart: readonly string[], replic
         first,
         second,
         sooner: { estimate, low: estimate - half, high: estimate + half },
-        chanceGained: 0,
+        chanceGained: inTime,
       };
     }),
   );
@@ -33,8 +40,8 @@ function figures(years: Record<string, number>, apart: readonly string[], replic
 
 describe('what can be told apart, in words', () => {
   it.each([
-    [{ Wait: 0, Clumps: 4 }, ['Clumps Wait'], '“Clumps” clearly recovers sooner than “Wait”.'],
-    [{ Wait: 0, Fences: -4 }, ['Fences Wait'], '“Wait” clearly recovers sooner than “Fences”.'],
+    [{ Wait: 0, Clumps: 4 }, ['Clumps Wait'], '“Clumps” recovers sooner than “Wait”, by 4 years (2 to 6).'],
+    [{ Wait: 0, Fences: -4 }, ['Fences Wait'], '“Wait” recovers sooner than “Fences”, by 4 years (2 to 6).'],
     [
       { Wait: 0, Clumps: 4 },
       [],
@@ -43,15 +50,23 @@ describe('what can be told apart, in words', () => {
     [
       { Wait: 0, Mounds: 4, Clumps: 5 },
       ['Mounds Wait', 'Clumps Wait'],
-      '“Clumps” and “Mounds” recover soonest, and 60 futures cannot tell the two apart. “Mounds” and “Clumps” clearly recover sooner than “Wait”.',
+      '“Clumps” and “Mounds” recover soonest, and 60 futures cannot tell the two apart. “Mounds” recovers sooner than “Wait”, by 4 years (2 to 6); “Clumps” recovers sooner than “Wait”, by 5 years (2.5 to 7.5).',
     ],
     [
       { Wait: 0, Mounds: 1, Clumps: 5 },
       ['Clumps Wait', 'Clumps Mounds'],
-      '“Clumps” clearly recovers sooner than every other option. “Mounds” cannot be told from “Wait”.',
+      '“Clumps” recovers sooner than “Wait”, by 5 years (2.5 to 7.5) and “Mounds”, by 4 years (2 to 6). “Mounds” cannot be told from “Wait”.',
     ],
   ])('%j', (years, apart, words) => {
-    expect(summaryWords(figures(years as Record<string, number>, apart))).toBe(words);
+    expect(summaryWords(figures(years as Record<string, number>, apart))).toBe(
+      `${words} No difference from “Wait” in closing before the next drought can be told.`,
+    );
+  });
+  it('says what a gain in years does to closing in time', () => {
+    const inTime = { estimate: 0.22, low: 0.1, high: 0.34 };
+    expect(summaryWords(figures({ Wait: 0, Clumps: 0.2 }, ['Clumps Wait'], 60, inTime))).toBe(
+      '“Clumps” recovers sooner than “Wait”, by 0.2 years (0.1 to 0.3). Before the next drought closes “Clumps” in 22 more of 100 futures (10 to 34) than “Wait”.',
+    );
   });
   it('says nothing before there are pairs', () => {
     expect(summaryWords({ ...figures({ Wait: 0 }, []), pairs: [] })).toBeUndefined();

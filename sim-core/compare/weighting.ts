@@ -12,6 +12,8 @@ export interface Weighting {
   readonly scores: number[];
   /** options, best first; ties in the order given */
   readonly ranking: number[];
+  /** by option: 1 for the best; alike scores share a place, and the places after them stay empty */
+  readonly places: number[];
   /**
    * by criterion: shares of all weight, 0 to 1, between which the first option stays first while the others keep their
    * ratios. `share` is the present one.
@@ -38,11 +40,13 @@ export function weighOptions(criteria: readonly Criterion[]): Weighting {
     (_, option) => criteria.reduce((sum, { weight }, c) => sum + weight * scaled[c][option], 0) / total,
   );
   const ranking = scores.map((_, option) => option).sort((a, b) => scores[b] - scores[a] || a - b);
+  // Sums of shares differ in their last digits where the scores are alike.
+  const places = scores.map((score) => 1 + scores.filter((other) => other > score + 1e-9).length);
   const room = criteria.map(({ weight }, c) => ({
     share: weight / total,
     ...roomOf(ranking[0], scaled[c], restScores(criteria, scaled, c), weight / total),
   }));
-  return { scores, ranking, room };
+  return { scores, ranking, places, room };
 }
 
 /** 0 for the worst option, 1 for the best; 1 for all where they are alike, so that none is set back. */

@@ -31,7 +31,11 @@ export function decisionText(
         [
           `- ${option}${option === decision?.optionName ? ' (chosen)' : ''}${cost !== null && plan.currency ? `, ${formatMoney(cost, plan.currency)}` : ''}:`,
           chanceSentence(summary.beforeDrought),
-          ...(wait ? [] : [`On average ${formatNumber(yearsSooner, 1)} years sooner than Wait.`]),
+          ...(wait
+            ? []
+            : [
+                `On average ${formatNumber(Math.abs(yearsSooner), 1)} years ${yearsSooner < 0 ? 'later' : 'sooner'} than Wait.`,
+              ]),
         ].join(' '),
       ),
     ];

@@ -52,12 +52,13 @@ export const pairsCsv = ({ outlooks }: ComparisonFigures): string =>
   csv(
     [
       ...['outlook', 'option', 'than', 'pairs', 'years_sooner', 'low', 'high'],
-      ...['chance_gained', 'sharper_by'],
+      ...['chance_gained', 'chance_gained_low', 'chance_gained_high', 'sharper_by'],
     ],
     outlooks.flatMap((outlook) =>
       outlook.pairs.map(({ first, second, sooner, chanceGained }) => [
         ...[outlook.name, outlook.options[first].name, outlook.options[second].name, sooner.pairs],
-        ...[places(sooner.estimate), places(sooner.low), places(sooner.high), places(chanceGained)],
+        ...[places(sooner.estimate), places(sooner.low), places(sooner.high), places(chanceGained.estimate)],
+        ...[places(chanceGained.low), places(chanceGained.high)],
         Number.isFinite(sooner.sharperBy) ? places(sooner.sharperBy) : null,
       ]),
     ),

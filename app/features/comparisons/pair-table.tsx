@@ -2,7 +2,7 @@ import { Table } from '#app/components/table.tsx';
 import { formatNumber } from '#app/lib/formats.ts';
 import { of100 } from '#sim-core/compare/chance-words.ts';
 import type { OutlookFigures, Pair } from '#sim-core/compare/comparison-figures.ts';
-import { toldApart } from '#sim-core/compare/summary-words.ts';
+import { toldApart } from '#sim-core/compare/told-apart.ts';
 import { Chosen, OptionName } from './chosen.tsx';
 
 const [width, height] = [120, 16];
@@ -71,7 +71,7 @@ export function PairTable(props: { figures: OutlookFigures; chosen: number | und
             key: 'chance',
             head: 'in time',
             number: true,
-            cell: ({ chanceGained }) => signed(of100(chanceGained)),
+            cell: ({ chanceGained }) => signed(of100(chanceGained.estimate)),
           },
         ]}
       />
@@ -79,7 +79,7 @@ export function PairTable(props: { figures: OutlookFigures; chosen: number | und
         <p className="mt-1.5 text-note text-ink-2">
           Years are cut at the horizon, so futures still open there count as recovering then, never as lost.
           {typical >= 1.05 &&
-            `As options share their luck, ${formatNumber(typical, typical < 10 ? 1 : 0)} times as many futures would be needed to say this as sharply with luck of their own.`}
+            ` All options meet the same weather and luck, future by future. With luck of its own for each option, the same intervals would take ${formatNumber(typical, typical < 10 ? 1 : 0)} times as many futures.`}
         </p>
       )}
     </section>

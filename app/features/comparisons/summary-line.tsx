@@ -11,8 +11,8 @@ export function SummaryLine({ figures }: { figures: OutlookFigures }) {
       {said && <p className="max-w-[76ch] text-lead leading-snug">{said}</p>}
       {said && (
         <p className="mt-1 max-w-[92ch] text-note text-ink-2">
-          “Clearly” and “can be told”: the 95 % interval of the difference in years, future by future, leaves
-          out no difference.
+          In brackets the 95 % interval of the difference, future by future; a difference can be told where
+          the interval leaves out none. A difference that can be told may still be small.
         </p>
       )}
       {few && <p className="mt-2 max-w-[92ch] border-l-[6px] border-flag pl-3">{few}</p>}
