@@ -13,6 +13,7 @@ import * as plants from '#contract/plants.ts';
 import * as people from '#contract/people.ts';
 import * as runs from '#contract/runs.ts';
 import * as sites from '#contract/sites.ts';
+import * as studies from '#contract/studies.ts';
 import * as uploads from '#contract/uploads.ts';
 import * as workingGrid from '#contract/working-grid.ts';
 import { allRoutes } from '#server/routes.ts';
@@ -152,6 +153,8 @@ const expected: Record<string, string> = {
   'POST /api/sites/:siteId/comparisons/:comparisonId/copies': planners,
   'PUT /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/replicates': planners,
   'GET /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/replicates': everyRole,
+  'PUT /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/study-runs': planners,
+  'GET /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/study-runs': everyRole,
   'PUT /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/maps/:map': planners,
   'GET /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/maps/:map': everyRole,
   'PUT /api/sites/:siteId/comparisons/:comparisonId/ensembles/:option/:outlook/maps-state': planners,
@@ -197,6 +200,7 @@ const contract = [
   costs,
   runs,
   comparisons,
+  studies,
   api,
   fits,
 ]

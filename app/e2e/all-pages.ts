@@ -19,4 +19,5 @@ export const pagesOf = ({
   run: `/sites/${siteId}/runs/${runId}?year=2043`,
   compare: `/sites/${siteId}/compare`,
   comparison: `/sites/${siteId}/compare/${comparisonId}`,
+  matters: `/sites/${siteId}/compare/${comparisonId}/matters`,
 });

@@ -42,6 +42,7 @@ const sitePages: RouteObject[] = [
       { path: 'runs', ...page(() => import('./site/runs-page.tsx')) },
       { path: 'compare', ...page(() => import('./site/compare-page.tsx')) },
       { path: 'compare/:comparisonId', ...page(() => import('./site/comparison-page.tsx')) },
+      { path: 'compare/:comparisonId/matters', ...page(() => import('./site/matters-page.tsx')) },
       { path: 'runs/:runId', ...page(() => import('./site/run-page.tsx')) },
     ],
   },

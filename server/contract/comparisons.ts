@@ -162,7 +162,7 @@ export type Comparison = z.infer<typeof comparisonSchema>;
 
 const siteParams = z.object({ siteId: id });
 const params = z.object({ siteId: id, comparisonId: id });
-const ensembleParams = params.extend({
+export const ensembleParams = params.extend({
   option: z.coerce
     .number()
     .int()
@@ -175,7 +175,7 @@ const ensembleParams = params.extend({
     .max(mostOutlooks - 1),
 });
 const one = '/api/sites/:siteId/comparisons/:comparisonId';
-const ensemble = `${one}/ensembles/:option/:outlook`;
+export const ensemblePath = `${one}/ensembles/:option/:outlook`;
 
 export const listComparisons = endpoint({
   method: 'GET',
@@ -241,7 +241,7 @@ export const copyComparison = endpoint({
 });
 export const putReplicates = endpoint({
   method: 'PUT',
-  path: `${ensemble}/replicates`,
+  path: `${ensemblePath}/replicates`,
   summary: 'Store replicates of one ensemble; repeating it is harmless',
   params: ensembleParams,
   body: z.strictObject({ replicates: z.array(replicateRecordSchema).min(1).max(64) }),
@@ -249,7 +249,7 @@ export const putReplicates = endpoint({
 });
 export const getReplicates = endpoint({
   method: 'GET',
-  path: `${ensemble}/replicates`,
+  path: `${ensemblePath}/replicates`,
   summary: 'The stored replicates of one ensemble, ascending',
   params: ensembleParams,
   query: z.object({
@@ -262,7 +262,7 @@ const shownReplicates = z.object({ replicates: z.coerce.number().int().min(1).ma
 /** Body: a map in the binary of `rasters/cells/cell-values.ts`. */
 export const putEnsembleMap = endpoint({
   method: 'PUT',
-  path: `${ensemble}/maps/:map`,
+  path: `${ensemblePath}/maps/:map`,
   summary: 'Store a map of an ensemble and how many replicates it shows',
   params: ensembleParams.extend({ map: mapNameSchema }),
   query: shownReplicates,
@@ -270,7 +270,7 @@ export const putEnsembleMap = endpoint({
 });
 export const getEnsembleMap = endpoint({
   method: 'GET',
-  path: `${ensemble}/maps/:map`,
+  path: `${ensemblePath}/maps/:map`,
   summary: 'A map of an ensemble',
   params: ensembleParams.extend({ map: mapNameSchema }),
   replyKind: 'bytes',
@@ -278,7 +278,7 @@ export const getEnsembleMap = endpoint({
 /** Body and reply: what the browser needs to go on with the maps of an ensemble; the server does not look into it. */
 export const putMapsState = endpoint({
   method: 'PUT',
-  path: `${ensemble}/maps-state`,
+  path: `${ensemblePath}/maps-state`,
   summary: 'Store the counts behind the maps of an ensemble',
   params: ensembleParams,
   query: shownReplicates,
@@ -286,7 +286,7 @@ export const putMapsState = endpoint({
 });
 export const getMapsState = endpoint({
   method: 'GET',
-  path: `${ensemble}/maps-state`,
+  path: `${ensemblePath}/maps-state`,
   summary: 'The stored counts behind the maps of an ensemble',
   params: ensembleParams,
   replyKind: 'bytes',

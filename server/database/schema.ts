@@ -22,6 +22,7 @@ import {
   ComparisonLayerEntity,
   EnsembleMapEntity,
   ReplicateEntity,
+  StudyRunEntity,
 } from './entities/comparison-parts.ts';
 import { LibraryPlantEntity, PlantVersionEntity } from './entities/library-plant.ts';
 import { SiteEntity } from './entities/site.ts';
@@ -60,4 +61,5 @@ export const entities = [
   ComparisonEventEntity,
   FitEntity,
   FitLayerEntity,
+  StudyRunEntity,
 ];

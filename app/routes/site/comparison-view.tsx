@@ -106,6 +106,7 @@ export function ComparisonView({ comparison }: { comparison: Comparison }) {
         </div>
         <p className="flex flex-wrap items-baseline gap-x-5">
           <span className="text-note text-ink-2">{standingWords(counted, phase)}</span>
+          <WordLink to={`/sites/${site.id}/compare/${id}/matters`}>What matters</WordLink>
           <ComparisonDeeds
             comparison={counted}
             trigger={<WordButton lined>More</WordButton>}

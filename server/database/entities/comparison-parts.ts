@@ -97,3 +97,27 @@ export const ComparisonEventEntity = new EntitySchema<ComparisonEventRow>({
   },
   foreignKeys: [ofComparison('comparison_event_comparison')],
 });
+
+/** A run of a study of what matters; `run` is JSON of the contract's schema. */
+export interface StudyRunRow extends EnsembleAddress {
+  /** SHA-256 of all that decides the run */
+  key: string;
+  /** order in which it came, within its option and outlook */
+  place: number;
+  digest: string;
+  run: string;
+}
+export const StudyRunEntity = new EntitySchema<StudyRunRow>({
+  name: 'StudyRun',
+  tableName: 'study_run',
+  columns: {
+    comparisonId: { type: 'text', primary: true },
+    option: { type: 'integer', primary: true },
+    outlook: { type: 'integer', primary: true },
+    key: { type: 'text', primary: true },
+    place: { type: 'integer' },
+    digest: { type: 'text' },
+    run: { type: 'text' },
+  },
+  foreignKeys: [ofComparison('study_run_comparison')],
+});

@@ -8,6 +8,7 @@ import { Outlooks1796140000000 } from './1796140000000-outlooks.ts';
 import { FeatureEdges1796145000000 } from './1796145000000-feature-edges.ts';
 import { Plants1796150000000 } from './1796150000000-plants.ts';
 import { Fits1796156000000 } from './1796156000000-fits.ts';
+import { StudyRuns1796161000000 } from './1796161000000-study-runs.ts';
 
 /** Every change of the schema, oldest first. One that has been released is never edited. */
 export const migrations = [
@@ -21,4 +22,5 @@ export const migrations = [
   FeatureEdges1796145000000,
   Plants1796150000000,
   Fits1796156000000,
+  StudyRuns1796161000000,
 ];

@@ -15,6 +15,7 @@ import * as plants from '#contract/plants.ts';
 import * as problem from '#contract/problem.ts';
 import * as runs from '#contract/runs.ts';
 import * as sites from '#contract/sites.ts';
+import * as studies from '#contract/studies.ts';
 import * as uploads from '#contract/uploads.ts';
 import * as workingGrid from '#contract/working-grid.ts';
 import * as works from '#contract/works.ts';
@@ -25,6 +26,7 @@ import * as processes from '#sim-core/spec/processes.ts';
 import * as replicateRecord from '#sim-core/spec/replicate-record.ts';
 import * as runResult from '#sim-core/spec/run-result.ts';
 import * as runSpec from '#sim-core/spec/run-spec.ts';
+import * as studyRun from '#sim-core/spec/study-run.ts';
 import * as weatherSource from '#sim-core/spec/weather-source.ts';
 
 /** Modules of the contract by the heading under which their endpoints are described. */
@@ -42,9 +44,10 @@ const headings: Record<string, object> = {
   Runs: runs,
   Comparisons: comparisons,
   Fits: fits,
+  'What matters': studies,
   'About the API': api,
 };
-const parts = [features, grid, layers, problem, works, runSpec, runResult, replicateRecord];
+const parts = [features, grid, layers, problem, works, runSpec, runResult, replicateRecord, studyRun];
 const smallParts = [layerSource, places, processes, weatherSource];
 
 /** What an endpoint is called in the contract, and under which heading it stands. */

@@ -126,6 +126,7 @@ export async function copyParts(manager: Manager, from: string, to: string): Pro
   for (const [table, columns] of [
     ['replicate', '"option", "outlook", "replicate", "digest", "record"'],
     ['ensemble_map', '"option", "outlook", "map", "hash", "bytes", "replicates"'],
+    ['study_run', '"option", "outlook", "key", "place", "digest", "run"'],
   ])
     await manager.query(
       `INSERT INTO "${table}" ("comparisonId", ${columns}) SELECT ?, ${columns} FROM "${table}" WHERE "comparisonId" = ?`,

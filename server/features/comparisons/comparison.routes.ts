@@ -1,5 +1,6 @@
 import * as contract from '#contract/comparisons.ts';
 import { roles, type Role } from '#contract/people.ts';
+import * as studies from '#contract/studies.ts';
 import { route, type BytesReply, type Route } from '#server/middleware/route.ts';
 import type { Services } from '#server/services.ts';
 import { comparisonReply, listComparisons, mapsState } from './comparison-reply.ts';
@@ -20,6 +21,7 @@ import {
   putReplicates,
   type EnsembleParams,
 } from './ensemble.service.ts';
+import { getStudyRuns, putStudyRuns } from './study-run.service.ts';
 
 /** Whoever plans the works may see what comes of them. */
 const runners: readonly Role[] = ['modeller', 'manager', 'admin'];
@@ -69,6 +71,13 @@ export function comparisonRoutes(services: Services): Route[] {
     route(contract.getReplicates, { site: roles }, ({ params, query }) =>
       getReplicates(manager, params, query),
     ),
+    route(
+      studies.putStudyRuns,
+      { site: runners },
+      ({ params, body }) => putStudyRuns(services, params, body.runs),
+      { bodyLimit },
+    ),
+    route(studies.getStudyRuns, { site: roles }, ({ params, query }) => getStudyRuns(manager, params, query)),
     route(contract.putEnsembleMap, { site: runners }, ({ params, query, request }) =>
       putEnsembleMap(services, params, query.replicates, request),
     ),

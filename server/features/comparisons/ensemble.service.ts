@@ -29,7 +29,10 @@ export interface EnsembleParams extends EnsembleAddress {
 }
 
 /** @throws ProblemError `not-found` where the plan has no such ensemble */
-async function requireEnsemble(manager: Manager, { siteId, comparisonId, option, outlook }: EnsembleParams) {
+export async function requireEnsemble(
+  manager: Manager,
+  { siteId, comparisonId, option, outlook }: EnsembleParams,
+) {
   const row = await requireComparison(manager, siteId, comparisonId);
   const plan = readJson(comparisonPlanSchema, row.plan);
   if (option >= plan.options.length || outlook >= plan.outlooks.length) throw notFound();
