@@ -1,5 +1,5 @@
-import { fireEvent, render, screen, within } from '@testing-library/react';
-import { expect, it, vi } from 'vitest';
+import { cleanup, fireEvent, render, screen, within } from '@testing-library/react';
+import { afterEach, expect, it, vi } from 'vitest';
 import type { ComparisonPlan } from '#contract/comparisons.ts';
 import { studyDesign } from '#sim-core/matters/study-design.ts';
 import { studyFigures } from '#sim-core/matters/study-figures.ts';
@@ -8,6 +8,8 @@ import { studyCsv } from './matters-files.ts';
 import { StudyCharts } from './study-charts.tsx';
 import { StudyForm } from './study-form.tsx';
 import { measuredWords, readSettings } from './study-settings.ts';
+
+afterEach(cleanup);
 
 const rates: Beliefs = {
   lateralSpread: { law: 'uniform', low: 1, high: 2 },
@@ -93,7 +95,7 @@ it('says what is wrong with a size, and tells only sizes that fit', async () => 
   render(<StudyForm settings={settingsOf('method=indices')} disabled={false} onChange={onChange} />);
   const blank = screen.getByLabelText('Number of rows');
   fireEvent.change(blank, { target: { value: '8' } });
-  expect(screen.getByRole('alert')).toHaveTextContent(
+  expect(screen.getByRole('alert').textContent).toBe(
     'Found “8” rows; a whole number from 16 to 2048 is expected.',
   );
   expect(onChange).not.toHaveBeenCalled();
