@@ -47,11 +47,7 @@ export function FactorBars(props: {
     (_, i, all = narrow ? 3 : 5) => least + ((most - least) * i) / (all - 1),
   );
   return (
-    <svg
-      viewBox={`0 0 ${width} ${height + foot}`}
-      className="mt-1 block w-full max-w-[760px]"
-      aria-hidden="true"
-    >
+    <svg viewBox={`0 0 ${width} ${height + foot}`} className="mt-1 block w-full" aria-hidden="true">
       {ticks.map((tick) => (
         <g key={tick}>
           <path d={`M${x(tick)} ${top - 4}V${height}`} className="stroke-rule" />

@@ -14,7 +14,7 @@ export function IndexChart({ figures }: { figures: Indices }) {
   const indices = figures.indices.toSorted((a, b) => b.total.estimate - a.total.estimate);
   const most = Math.max(1, ...indices.map(({ total }) => total.high));
   return (
-    <figure>
+    <figure className="max-w-[760px]">
       <figcaption className="flex flex-wrap justify-between gap-x-4">
         <b>Shares of the variance</b>
         <span className="text-note text-ink-2">filled: alone; open: alone and with others; lines 95 %</span>

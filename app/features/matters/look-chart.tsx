@@ -8,7 +8,7 @@ import { FactorBars } from './factor-bars.tsx';
 export function LookChart({ look }: { look: FirstLook }) {
   const rates = look.rates.toSorted((a, b) => Math.abs(b.partial.estimate) - Math.abs(a.partial.estimate));
   return (
-    <figure>
+    <figure className="max-w-[760px]">
       <figcaption className="flex flex-wrap justify-between gap-x-4">
         <b>Partial rank correlation</b>
         <span className="text-note text-ink-2">

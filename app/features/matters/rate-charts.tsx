@@ -35,7 +35,7 @@ export function Tornado({ figures, unit, digits }: ChartProps) {
   const [least, most] = [Math.min(...values), Math.max(...values)];
   const room = (most - least) * 0.06;
   return (
-    <figure>
+    <figure className="max-w-[760px]">
       <figcaption className="flex flex-wrap justify-between gap-x-4">
         <b>One rate at a time</b>
         <span className="text-note text-ink-2">
@@ -77,7 +77,7 @@ export function RateCurves({ figures, unit, digits }: ChartProps) {
   const all = figures.curves.flatMap(({ outputs }) => outputs);
   const [least, most] = [Math.min(...all), Math.max(...all)];
   return (
-    <figure>
+    <figure className="max-w-[760px]">
       <figcaption className="flex flex-wrap justify-between gap-x-4">
         <b>Curves</b>
         <span className="text-note text-ink-2">{unit} along each rate, all on one scale</span>

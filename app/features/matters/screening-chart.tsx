@@ -26,14 +26,14 @@ export function ScreeningChart({
   const y = (value: number) => height - bottom - ((height - top - bottom) * value) / most;
   const labels = parted(effects.map(({ deviation }) => y(deviation)));
   return (
-    <figure>
+    <figure className="max-w-[760px]">
       <figcaption className="flex flex-wrap justify-between gap-x-4">
         <b>Effects</b>
         <span className="text-note text-ink-2">
           further right: matters more; above the line: bends, or hangs on others
         </span>
       </figcaption>
-      <svg viewBox={`0 0 ${width} ${height}`} className="mt-1 block w-full max-w-[760px]" aria-hidden="true">
+      <svg viewBox={`0 0 ${width} ${height}`} className="mt-1 block w-full" aria-hidden="true">
         <path d={`M${x(0)} ${y(0)}L${x(most)} ${y(most)}`} className="stroke-ink-2" strokeDasharray="4 4" />
         <path d={`M${x(0)} ${top}V${y(0)}H${width - right}`} className="stroke-ink" fill="none" />
         {[0, most / 2.2, most / 1.1].map((tick) => (

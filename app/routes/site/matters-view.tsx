@@ -30,7 +30,7 @@ export function MattersView({ comparison }: { comparison: Comparison }) {
         </WordLink>
         <h1 className="text-title font-bold">What matters</h1>
       </div>
-      <div className="pt-3">
+      <div className="py-3">
         <QuestionLine {...{ plan, settings }} onChange={patch} />
       </div>
       {rates === undefined ? (
