@@ -2,6 +2,7 @@ import { rmSync } from 'node:fs';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { fillPath, type Endpoint } from '#contract/endpoint.ts';
 import * as api from '#contract/api.ts';
+import * as briefs from '#contract/briefs.ts';
 import * as comparisons from '#contract/comparisons.ts';
 import * as costs from '#contract/costs.ts';
 import * as fits from '#contract/fits.ts';
@@ -171,6 +172,18 @@ const expected: Record<string, string> = {
   'POST /api/sites/:siteId/fits/:fitId/resume': modellers,
   'POST /api/sites/:siteId/fits/:fitId/accept': modellers,
   'DELETE /api/sites/:siteId/fits/:fitId': modellers,
+
+  'GET /api/sites/:siteId/briefs': everyRole,
+  'POST /api/sites/:siteId/briefs': planners,
+  'GET /api/sites/:siteId/briefs/:briefId': everyRole,
+  'DELETE /api/sites/:siteId/briefs/:briefId': planners,
+  'POST /api/sites/:siteId/briefs/:briefId/copies': planners,
+  'POST /api/sites/:siteId/briefs/:briefId/versions': planners,
+  'GET /api/sites/:siteId/briefs/:briefId/versions/:version': everyRole,
+  'GET /api/sites/:siteId/briefs/:briefId/versions/:version/brief.pdf': everyRole,
+  'GET /api/sites/:siteId/briefs/:briefId/versions/:version/maps/:option': everyRole,
+  'GET /api/sites/:siteId/briefs/:briefId/messages': planners,
+  'POST /api/sites/:siteId/briefs/:briefId/messages': planners,
 };
 
 const callers = ['nobody', 'modeller', 'manager', 'trainer', 'admin', 'outsider'] as const;
@@ -203,6 +216,7 @@ const contract = [
   studies,
   api,
   fits,
+  briefs,
 ]
   .flatMap((module) => Object.values<unknown>({ ...module }))
   .filter(isEndpoint);
@@ -213,7 +227,7 @@ let shared: TestServer;
 beforeAll(async () => {
   fixture = await makeAccessFixture();
   shared = await testServer({}, fixture.folder);
-});
+}, 180_000);
 afterAll(async () => {
   await shared.close();
   rmSync(fixture.folder, { recursive: true, force: true });

@@ -4,6 +4,7 @@ import { inviteRoutes } from './features/auth/invite.routes.ts';
 import { passwordResetRoutes } from './features/auth/password-reset.routes.ts';
 import { sessionRoutes } from './features/auth/session.routes.ts';
 import { setupRoutes } from './features/auth/setup.routes.ts';
+import { briefRoutes } from './features/briefs/brief.routes.ts';
 import { comparisonRoutes } from './features/comparisons/comparison.routes.ts';
 import { costsRoutes } from './features/costs/costs.routes.ts';
 import { fitRoutes } from './features/fits/fit.routes.ts';
@@ -49,6 +50,7 @@ export function allRoutes(services: Services): Route[] {
     ...runRoutes(services),
     ...comparisonRoutes(services),
     ...fitRoutes(services),
+    ...briefRoutes(services),
   ];
   return [...routes, ...apiRoutes(routes)];
 }

@@ -108,9 +108,13 @@ const onPath = (command) =>
 export const chromiumPath = () =>
   process.env.CHROMIUM_PATH || onPath('chromium') || onPath('chromium-browser');
 
-/** Installs what the tests need from Debian (Chromium; GDAL as an independent reader), or says what to install. */
+/** Installs what the tests need from Debian (Chromium; GDAL and Poppler as independent readers), or says what to install. */
 export function ensureTestTools() {
-  const missing = [chromiumPath() ? [] : ['chromium'], onPath('gdalinfo') ? [] : ['gdal-bin']].flat();
+  const missing = [
+    chromiumPath() ? [] : ['chromium'],
+    onPath('gdalinfo') ? [] : ['gdal-bin'],
+    onPath('pdftotext') ? [] : ['poppler-utils'],
+  ].flat();
   if (missing.length === 0) return;
   const install = `apt-get install ${missing.join(' ')}`;
   if (process.getuid?.() === 0 && onPath('apt-get')) {
@@ -126,4 +130,6 @@ export function ensureTestTools() {
     );
   if (!onPath('gdalinfo'))
     say(`GDAL is not installed: the checks against it are skipped (as root: ${install}).`);
+  if (!onPath('pdftotext'))
+    say(`Poppler is not installed: the checks of PDFs are skipped (as root: ${install}).`);
 }

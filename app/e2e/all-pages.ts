@@ -4,7 +4,8 @@ export const pagesOf = ({
   siteId,
   runId,
   comparisonId,
-}: Record<'teamId' | 'siteId' | 'runId' | 'comparisonId', string>) => ({
+  briefId,
+}: Record<'teamId' | 'siteId' | 'runId' | 'comparisonId' | 'briefId', string>) => ({
   home: '/',
   team: `/team/${teamId}`,
   account: '/account',
@@ -20,4 +21,6 @@ export const pagesOf = ({
   compare: `/sites/${siteId}/compare`,
   comparison: `/sites/${siteId}/compare/${comparisonId}`,
   matters: `/sites/${siteId}/compare/${comparisonId}/matters`,
+  briefs: `/sites/${siteId}/brief`,
+  brief: `/sites/${siteId}/briefs/${briefId}`,
 });

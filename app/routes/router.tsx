@@ -43,6 +43,8 @@ const sitePages: RouteObject[] = [
       { path: 'compare', ...page(() => import('./site/compare-page.tsx')) },
       { path: 'compare/:comparisonId', ...page(() => import('./site/comparison-page.tsx')) },
       { path: 'compare/:comparisonId/matters', ...page(() => import('./site/matters-page.tsx')) },
+      { path: 'brief', ...page(() => import('./site/briefs-page.tsx')) },
+      { path: 'briefs/:briefId', ...page(() => import('./site/brief-page.tsx')) },
       { path: 'runs/:runId', ...page(() => import('./site/run-page.tsx')) },
     ],
   },

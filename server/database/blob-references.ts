@@ -11,6 +11,8 @@ const references = [
   ['run_frame', 'hash'],
   ['run', 'closingHash'],
   ['ensemble_map', 'hash'],
+  ['brief_version', 'pdfHash'],
+  ['brief_map', 'hash'],
 ] as const;
 
 const anyReference = references

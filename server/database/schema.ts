@@ -25,6 +25,7 @@ import {
   StudyRunEntity,
 } from './entities/comparison-parts.ts';
 import { LibraryPlantEntity, PlantVersionEntity } from './entities/library-plant.ts';
+import { BriefEntity, BriefMapEntity, BriefMessageEntity, BriefVersionEntity } from './entities/brief.ts';
 import { SiteEntity } from './entities/site.ts';
 import { SiteCostsEntity } from './entities/site-costs.ts';
 import { UploadEntity } from './entities/upload.ts';
@@ -62,4 +63,8 @@ export const entities = [
   FitEntity,
   FitLayerEntity,
   StudyRunEntity,
+  BriefEntity,
+  BriefVersionEntity,
+  BriefMapEntity,
+  BriefMessageEntity,
 ];

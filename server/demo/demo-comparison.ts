@@ -32,14 +32,14 @@ export interface DemoComparisonInput {
 
 /**
  * Compares options under the site's drawn weather and a drier one on all cores, and stores what comes of it as a browser
- * does: replicates, maps and the counts behind them. Nothing is decided on it.
+ * does: replicates, maps and the counts behind them. Nothing is decided on it. Returns its id.
  */
 export async function compareDemoOptions(
   services: Services,
   site: Site,
   options: readonly Option[],
   { replicates, seed, by, onProgress }: DemoComparisonInput,
-): Promise<void> {
+): Promise<string> {
   const comparison = await start(services, site, options, { replicates, seed, by });
   const { plan, grid, id: comparisonId } = comparison;
   const address = { siteId: site.id, comparisonId };
@@ -79,6 +79,7 @@ export async function compareDemoOptions(
     await pool.close();
   }
   await endComparison(services, address, 'all replicates', by);
+  return comparisonId;
 }
 
 function start(

@@ -1,5 +1,6 @@
 import { Readable } from 'node:stream';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import type { Brief, BriefSummary } from '#contract/briefs.ts';
 import { replicateSpec, type Comparison, type ComparisonSummary } from '#contract/comparisons.ts';
 import type { SiteCosts } from '#contract/costs.ts';
 import type { Run, RunSummary } from '#contract/runs.ts';
@@ -116,6 +117,22 @@ describe('the demo', () => {
     expect(storedFiles(server)).toEqual(before);
     expect((await agent.get(`/api/sites/${site.id}/runs`).expect(200)).body.total).toBe(1);
   });
+});
+
+it('has a brief of its comparison, of one page with an annex', async () => {
+  const { body } = await agent.get(`/api/sites/${site.id}/briefs`).expect(200);
+  const [summary] = (body as { briefs: BriefSummary[] }).briefs;
+  expect(summary).toMatchObject({
+    comparisonName: 'Wait, mounds or clumps',
+    version: 1,
+    decided: false,
+    sent: 0,
+  });
+  const brief = (await agent.get(`/api/sites/${site.id}/briefs/${summary.id}`).expect(200)).body as Brief;
+  expect(brief.versions[0]).toMatchObject({ briefPages: 1 });
+  expect(brief.facts.teamName).toBe(demoTeamName);
+  expect(brief.versions[0].bytes).toBeLessThan(5e6);
+  expect(brief.facts.options.map(({ mapFutures }) => mapFutures)).toEqual([2, 2, 2, 2]);
 });
 
 describe('the comparison of the demo', () => {

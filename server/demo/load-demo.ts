@@ -5,6 +5,7 @@ import type { LayerPart } from '#contract/layers.ts';
 import type { Site } from '#contract/sites.ts';
 import { demoRasters } from '#rasters/demo/sallow-reach.ts';
 import type { RunnerProgress } from '#sim-core/ensemble/runner.ts';
+import { makeBrief } from '../features/briefs/brief.service.ts';
 import { keepCosts } from '../features/costs/costs.service.ts';
 import { createOption, listOptions } from '../features/options/option.service.ts';
 import { addLayer, changeLayer, setLayerClasses } from '../features/sites/layer.service.ts';
@@ -43,7 +44,7 @@ export interface LoadDemoInput {
 }
 
 /**
- * Loads the invented team, place, runs and comparison through the same functions that serve uploads and runs. Its people
+ * Loads the invented team, place, runs, comparison and brief through the same functions that serve people. Its people
  * come last: once they are there nothing is done any more, and what a start left half made is wiped and made again.
  */
 export async function loadDemo(
@@ -67,7 +68,13 @@ export async function loadDemo(
       by: nameOf('modeller'),
     });
   const by = nameOf('modeller');
-  await compareDemoOptions(services, site, options, { replicates, seed, by, onProgress });
+  const comparisonId = await compareDemoOptions(services, site, options, {
+    replicates,
+    seed,
+    by,
+    onProgress,
+  });
+  await makeBrief(services, site.id, comparisonId, nameOf('manager'), demoTeamName);
 
   const passwordHashes = await Promise.all(demoAccounts.map(({ password }) => passwords.hash(password)));
   await write(async (manager) => {

@@ -1,3 +1,4 @@
+import type { BriefFacts } from '#contract/brief-content.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
 import type { ProblemCode } from '#contract/problem.ts';
 import type {
@@ -9,9 +10,13 @@ import type {
   ValueUnit,
 } from '#contract/layers.ts';
 import type { RasterDescription } from '#rasters/describe/raster-description.ts';
+import type { BriefSource } from '#server/printing/brief-facts.ts';
+import type { BriefPage } from '#server/printing/pdf/brief-page.ts';
+import type { PdfPages } from '#server/printing/pdf/write-pdf.ts';
 
 /** What the raster worker is asked to do. Files are named by paths that the server made; nothing large is copied. */
-export type RasterTask = ReadLayerTask | SurveyTask | PlaceTask | WriteMapTask | DigestTask;
+export type RasterTask =
+  ReadLayerTask | SurveyTask | PlaceTask | WriteMapTask | DigestTask | BriefFactsTask | WriteBriefTask;
 
 /** Read and check an uploaded GeoTIFF and write its values as a cell-values binary. */
 export interface ReadLayerTask {
@@ -83,6 +88,21 @@ export interface DigestTask {
   cells: number;
 }
 
+/** Work out the figures of a brief, which takes long where there are many futures, and draw its maps. */
+export interface BriefFactsTask {
+  kind: 'brief-facts';
+  source: BriefSource;
+  /** the stored closing maps, by option, and where their pictures go; null where there is none */
+  maps: ({ path: string; outPath: string } | null)[];
+}
+
+/** Write a version of a brief as PDF. */
+export interface WriteBriefTask {
+  kind: 'write-brief';
+  brief: BriefPage;
+  outPath: string;
+}
+
 export interface WrittenFile {
   hash: string;
   bytes: number;
@@ -94,6 +114,8 @@ export interface TaskResults {
   place: Placed;
   'write-map': WrittenFile;
   digest: string;
+  'brief-facts': { facts: BriefFacts; maps: (WrittenFile | null)[] };
+  'write-brief': WrittenFile & PdfPages;
 }
 
 /** A refusal as it crosses from the worker, where an error would lose its fields. */

@@ -2,6 +2,7 @@ import type { MessagePort } from 'node:worker_threads';
 import { digestFrames } from './digest-frames.ts';
 import { placeRaster } from './place-raster.ts';
 import type { RasterTask, Refusal } from './raster-tasks.ts';
+import { makeBriefFacts, writeBrief } from './print-brief.ts';
 import { readLayer } from './read-layer.ts';
 import { surveyUpload } from './survey-upload.ts';
 import { writeMap } from './write-map.ts';
@@ -21,6 +22,10 @@ const perform = (task: RasterTask, onProgress: (share: number) => void) => {
       return writeMap(task);
     case 'digest':
       return digestFrames(task);
+    case 'brief-facts':
+      return makeBriefFacts(task);
+    case 'write-brief':
+      return writeBrief(task);
   }
 };
 

@@ -1,6 +1,7 @@
 import { readTiffDirectory } from '#rasters/read/tiff-directory.ts';
 import { claimedCells, largestSource } from '#rasters/read/tiff-layout.ts';
 import { withFileSource } from '../files/file-source.ts';
+import { resamples } from '#sim-core/compare/paired-difference.ts';
 import type { RasterTask } from './raster-tasks.ts';
 
 /** Cells as the header claims them; what has none is refused by the worker at once. */
@@ -23,5 +24,14 @@ export async function taskCells(task: RasterTask): Promise<number> {
       return task.grid.width * task.grid.height;
     case 'digest':
       return task.paths.length * task.cells;
+    case 'brief-facts': {
+      // Bootstraps of pairs take most of it: their resamples are counted as if they were cells.
+      const { plan, records, grid } = task.source;
+      const pairs = (plan.options.length * (plan.options.length - 1) * plan.outlooks.length) / 2;
+      const futures = Math.max(...records.flat().map((stored) => stored.length));
+      return task.maps.length * grid.width * grid.height + pairs * resamples * futures;
+    }
+    case 'write-brief':
+      return 0;
   }
 }

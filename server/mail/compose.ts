@@ -8,6 +8,9 @@ export interface PlainMessage {
   date: Date;
   /** makes the Message-ID */
   id: string;
+  /** to whom answers go, where that is not the sender */
+  replyTo?: string;
+  attachments?: { filename: string; content: Buffer; contentType: string }[];
 }
 
 const composer = createTransport({ streamTransport: true, buffer: true, newline: 'windows' });

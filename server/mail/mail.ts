@@ -2,7 +2,8 @@ import { randomUUID } from 'node:crypto';
 import type { Logger } from 'pino';
 import type { Config } from '../config.ts';
 import type { Write } from '../database/write-queue.ts';
-import { createDelivery } from './deliver.ts';
+import type { PlainMessage } from './compose.ts';
+import { createDelivery, type Delivery } from './deliver.ts';
 import type { Letter } from './letters.ts';
 import { addMessages } from './outbox.repository.ts';
 
@@ -22,9 +23,22 @@ export interface Addressed {
   showLink: 'never' | 'unless-sent';
 }
 
+/** A message that somebody wrote, with what goes with it. */
+export interface Written {
+  to: string;
+  replyTo: string;
+  subject: string;
+  text: string;
+  attachments: NonNullable<PlainMessage['attachments']>;
+  /** the team in whose outbox it is kept */
+  teamId: string;
+}
+
 export interface Mail {
   /** Delivers a message and keeps it in the outbox. A failed delivery is kept as such; it does not throw. */
   send(message: Addressed): Promise<void>;
+  /** Delivers what somebody wrote, keeps its words in the outbox, and says what became of it; it does not throw. */
+  post(message: Written): Promise<Delivery>;
   /** Does something after the answer is out, so that its duration tells the asker nothing. Errors are logged. */
   later(work: () => Promise<void>): void;
   /** resolves when nothing is left of `later` */
@@ -57,6 +71,17 @@ export function createMail({ config, write, clock, log }: Parts): Mail {
           teamIds.map((teamId) => ({ id: randomUUID(), teamId, ...kept })),
         ),
       );
+    },
+    async post({ teamId, ...message }) {
+      const date = clock();
+      const delivery = await deliver({ id: randomUUID(), from: config.mailFrom, date, ...message });
+      if (delivery.status === 'failed')
+        log.warn({ reason: delivery.error }, 'an e-mail could not be delivered');
+      const { to, subject, text, attachments } = message;
+      const files = attachments.map(({ filename }) => `\n(Attached: ${filename})\n`).join('');
+      const kept = { recipient: to, subject, text: `${text}${files}`, sentAt: date.toISOString() };
+      await write((manager) => addMessages(manager, [{ id: randomUUID(), teamId, ...kept, ...delivery }]));
+      return delivery;
     },
     later(work) {
       const done = work()

@@ -3,8 +3,8 @@ import type { Option } from '#contract/options.ts';
 import type { Site } from '#contract/sites.ts';
 import { encodeCellValues } from '#rasters/cells/cell-values.ts';
 import { makePerson, makeTeam, testPassword, type TestPerson } from './people.ts';
-import { startTestComparison } from './comparisons.ts';
 import { addResurvey, startTestFit } from './fits.ts';
+import { makeTestBrief, startTestComparison } from './comparisons.ts';
 import { packed, sendBytes } from './runs.ts';
 import { cover, makeSite, sendUpload } from './sites.ts';
 import { testServer, type TestServer } from './test-server.ts';
@@ -98,6 +98,8 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
   await sendBytes(agents.admin, `${ensemble}/maps/closing?replicates=1`, noCells).expect(204);
   await sendBytes(agents.admin, `${ensemble}/maps-state?replicates=1`, noCells).expect(204);
 
+  const brief = await makeTestBrief(agents.admin, site, comparison);
+
   const upload = await sendUpload(agents.admin, teamId, cover());
   await server.services.background.idle();
 
@@ -159,6 +161,7 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     option: 0,
     outlook: 0,
     map: 'closing',
+    briefId: brief.id,
   };
   return { folder: await server.freeze(), params, cookies, sessionIds };
 }

@@ -1,3 +1,4 @@
+import type { Brief } from '#contract/briefs.ts';
 import type { Comparison } from '#contract/comparisons.ts';
 import type { ReplicateRecord } from '#sim-core/spec/replicate-record.ts';
 import type { Option } from '#contract/options.ts';
@@ -54,3 +55,36 @@ export const replicateOf = (replicate: number, changes: Partial<ReplicateRecord>
   drawn: {},
   ...changes,
 });
+
+/** Gives every ensemble so many futures, which recover in the order of the options, and the option's closing map. */
+export async function fillComparison(
+  agent: Agent,
+  { siteId, id, plan }: Comparison,
+  replicates = 4,
+): Promise<void> {
+  const ensembles = plan.options.flatMap((_, option) =>
+    plan.outlooks.map((__, outlook) => ({ option, outlook })),
+  );
+  for (const { option, outlook } of ensembles) {
+    const records = Array.from({ length: replicates }, (_, replicate) =>
+      replicateOf(replicate, {
+        recoveredYear: option > 0 || replicate % 4 === 0 ? 2028 - (option > 0 ? 2 : 0) : null,
+        droughtYear: replicate % 2 === 0 ? null : 2025 + option,
+      }),
+    );
+    await agent
+      .put(`/api/sites/${siteId}/comparisons/${id}/ensembles/${option}/${outlook}/replicates`)
+      .send({ replicates: records })
+      .expect(200);
+  }
+}
+
+/** A brief of a comparison that has futures. */
+export async function makeTestBrief(agent: Agent, site: Site, comparison: Comparison): Promise<Brief> {
+  await fillComparison(agent, comparison);
+  const { body } = await agent
+    .post(`/api/sites/${site.id}/briefs`)
+    .send({ comparisonId: comparison.id })
+    .expect(200);
+  return body as Brief;
+}

@@ -17,7 +17,8 @@ export interface PairedDifference extends Interval {
   readonly sharperBy: number;
 }
 
-const resamples = 4000;
+/** of whole pairs, behind each interval */
+export const resamples = 4000;
 
 /**
  * Mean of first − second over replicates that share their luck, with the bias-corrected and accelerated bootstrap

@@ -1,11 +1,11 @@
 import type { ReactNode } from 'react';
 import { FlagSymbol } from '#app/components/symbols.tsx';
+import { HundredRule } from '#app/components/hundred-rule.tsx';
 import { formatMoney } from '#contract/format-money.ts';
 import { formatNumber } from '#app/lib/formats.ts';
 import { chanceSentence, of100 } from '#sim-core/compare/chance-words.ts';
 import type { OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
 import { Chosen } from './chosen.tsx';
-import { HundredRule } from './hundred-rule.tsx';
 
 /** What each option comes to: the chance as a sentence and a rule of 100 futures, time, and how often it is best. */
 export function OptionAnswers(props: {

@@ -98,9 +98,19 @@ describe('siteSteps', () => {
       '/sites/a/options',
       '/sites/a/runs',
       '/sites/a/compare',
-      undefined,
+      '/sites/a/brief',
     ]);
-    expect(step('brief')).toMatchObject({ state: 'not built yet', share: 0 });
+    expect(step('brief')).toMatchObject({ state: 'none yet', share: 0, to: '/sites/a/brief' });
+    const brief = (...sent: number[]) =>
+      siteSteps(
+        site(),
+        [],
+        [],
+        sent.map((people) => ({ sent: people })),
+      ).find(({ key }) => key === 'brief');
+    expect(brief(0)).toMatchObject({ state: 'ready to send', share: 0.5 });
+    expect(brief(3)).toMatchObject({ state: 'sent', share: 1 });
+    expect(brief(0, 2)).toMatchObject({ state: '1 of 2 sent', share: 1 });
   });
 
   it('says which comparisons wait for a decision', () => {

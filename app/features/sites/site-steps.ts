@@ -1,3 +1,4 @@
+import type { BriefSummary } from '#contract/briefs.ts';
 import type { ComparisonSummary } from '#contract/comparisons.ts';
 import type { RunSummary } from '#contract/runs.ts';
 import type { Layer } from '#contract/layers.ts';
@@ -12,7 +13,7 @@ export type StepKey = (typeof stepKeys)[number];
 export interface SiteStep {
   key: StepKey;
   label: string;
-  to?: string;
+  to: string;
   state: string;
   /** 0..1, how much of it is done */
   share: number;
@@ -24,13 +25,14 @@ type StatedSite = Pick<
 >;
 
 /**
- * The seven steps of a site with the true state of each in words. `runs` and `comparisons` are the newest
+ * The seven steps of a site with the true state of each in words. `runs`, `comparisons` and `briefs` are the newest
  * ones, where they are known.
  */
 export function siteSteps(
   site: StatedSite,
   runs: readonly Pick<RunSummary, 'status'>[] = [],
   comparisons: readonly Pick<ComparisonSummary, 'status' | 'decision'>[] = [],
+  briefs: readonly Pick<BriefSummary, 'sent'>[] = [],
 ): SiteStep[] {
   const states: Record<StepKey, [label: string, state: string, share: number]> = {
     ground: ['Ground', ...groundState(site)],
@@ -39,12 +41,11 @@ export function siteSteps(
     options: ['Options', ...optionsState(site.options)],
     runs: ['Runs', ...runsState(site.runs, runs)],
     compare: ['Compare', ...compareState(comparisons)],
-    brief: ['Brief', 'not built yet', 0],
+    brief: ['Brief', ...briefState(briefs)],
   };
   return stepKeys.map((key) => {
     const [label, state, share] = states[key];
-    const built = key !== 'brief';
-    return { key, label, state, share, ...(built && { to: `/sites/${site.id}/${key}` }) };
+    return { key, label, state, share, to: `/sites/${site.id}/${key}` };
   });
 }
 
@@ -112,4 +113,11 @@ function compareState(known: readonly Pick<ComparisonSummary, 'status' | 'decisi
   if (open < known.length && open === 0) return [known.length === 1 ? 'decided' : 'all decided', 1];
   if (open === 1) return [known.length === 1 ? 'decision still open' : `1 of ${known.length} undecided`, 0.5];
   return [`${open} decisions open`, 0.5];
+}
+
+function briefState(known: readonly Pick<BriefSummary, 'sent'>[]): State {
+  if (known.length === 0) return ['none yet', 0];
+  const sent = known.filter((brief) => brief.sent > 0).length;
+  if (sent === 0) return [known.length === 1 ? 'ready to send' : `${known.length}, none sent`, 0.5];
+  return [known.length === 1 ? 'sent' : `${sent} of ${known.length} sent`, 1];
 }

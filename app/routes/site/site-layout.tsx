@@ -3,6 +3,7 @@ import { Outlet, useParams } from 'react-router-dom';
 import { Button } from '#app/components/button.tsx';
 import { LoadingLines } from '#app/components/loading-lines.tsx';
 import { MessagePage, NotFound } from '#app/components/message-page.tsx';
+import { briefsQuery } from '#app/features/briefs/briefs-query.ts';
 import { comparisonsQuery } from '#app/features/comparisons/get-comparison.ts';
 import { runsQuery } from '#app/features/runs/list-runs.ts';
 import { roleIn, sessionQuery } from '#app/features/session/session.ts';
@@ -18,6 +19,7 @@ export function Page() {
   const site = useQuery(siteQuery(siteId));
   const runs = useQuery(runsQuery(siteId));
   const comparisons = useQuery(comparisonsQuery(siteId));
+  const briefs = useQuery(briefsQuery(siteId));
   const session = useQuery(sessionQuery).data;
   // An address whose id is no id at all is refused as an invalid request; to a reader it is the same.
   const status = site.error instanceof ProblemError ? site.error.status : 0;
@@ -32,7 +34,7 @@ export function Page() {
       site: site.data,
       teamName: membership.teamName,
       role,
-      steps: siteSteps(site.data, runs.data?.runs, comparisons.data?.comparisons),
+      steps: siteSteps(site.data, runs.data?.runs, comparisons.data?.comparisons, briefs.data),
       mayKeepGround,
       mayDraw: mayKeepGround || role === 'manager',
     };

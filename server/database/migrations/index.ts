@@ -9,6 +9,7 @@ import { FeatureEdges1796145000000 } from './1796145000000-feature-edges.ts';
 import { Plants1796150000000 } from './1796150000000-plants.ts';
 import { Fits1796156000000 } from './1796156000000-fits.ts';
 import { StudyRuns1796161000000 } from './1796161000000-study-runs.ts';
+import { Briefs1796170000000 } from './1796170000000-briefs.ts';
 
 /** Every change of the schema, oldest first. One that has been released is never edited. */
 export const migrations = [
@@ -23,4 +24,5 @@ export const migrations = [
   Plants1796150000000,
   Fits1796156000000,
   StudyRuns1796161000000,
+  Briefs1796170000000,
 ];

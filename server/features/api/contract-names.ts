@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import * as api from '#contract/api.ts';
+import * as briefs from '#contract/briefs.ts';
 import * as comparisons from '#contract/comparisons.ts';
 import * as costs from '#contract/costs.ts';
 import * as features from '#contract/features.ts';
@@ -45,6 +46,7 @@ const headings: Record<string, object> = {
   Comparisons: comparisons,
   Fits: fits,
   'What matters': studies,
+  Briefs: briefs,
   'About the API': api,
 };
 const parts = [features, grid, layers, problem, works, runSpec, runResult, replicateRecord, studyRun];
