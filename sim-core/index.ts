@@ -12,7 +12,7 @@ export type { RunResult, SeriesRow } from './spec/run-result.ts';
 export { fillTime } from './theory/fill-time.ts';
 export { drawWeather, type WeatherOfRun } from './weather/draw-weather.ts';
 export type { WaitingLaw, WeatherSource } from './spec/weather-source.ts';
-export { palmerClass, palmerClasses, type PalmerClass } from './weather/palmer-classes.ts';
+export { palmerClass, palmerClasses } from './weather/palmer-classes.ts';
 export { chanceOfLonger, meanWait } from './weather/waiting-law.ts';
 export {
   ensembleTally,

@@ -1,25 +1,23 @@
-/** Classes of Palmer's index, driest first, each with the lowest |index| (dry) or index (wet) that belongs to it. */
-export const palmerClasses = [
-  'extreme drought',
-  'severe drought',
-  'moderate drought',
-  'mild drought',
-  'incipient dry spell',
-  'near normal',
-  'incipient wet spell',
-  'slightly wet',
-  'moderately wet',
-  'very wet',
-  'extremely wet',
-] as const;
-export type PalmerClass = (typeof palmerClasses)[number];
-
 /**
- * Class of an index: ≤ −4 extreme, ≤ −3 severe, ≤ −2 moderate, ≤ −1 mild, ≤ −0.5 incipient, within ±0.5 near normal,
- * and the mirror image on the wet side (Palmer 1965, US Weather Bureau Research Paper 45; the names from memory).
+ * Classes of the Palmer drought index (Palmer 1965, US Weather Bureau Research Paper 45; the inner bounds from memory),
+ * from the driest; `below` is where the next wetter one begins.
  */
-export function palmerClass(index: number): PalmerClass {
-  const size = Math.abs(index);
-  const steps = size >= 4 ? 5 : size >= 3 ? 4 : size >= 2 ? 3 : size >= 1 ? 2 : size >= 0.5 ? 1 : 0;
-  return palmerClasses[index < 0 ? 5 - steps : 5 + steps];
+export const palmerClasses = [
+  { name: 'extreme drought', below: -4 },
+  { name: 'severe drought', below: -3 },
+  { name: 'moderate drought', below: -2 },
+  { name: 'mild drought', below: -1 },
+  { name: 'incipient dry spell', below: -0.5 },
+  { name: 'near normal', below: 0.5 },
+  { name: 'incipient wet spell', below: 1 },
+  { name: 'slightly wet', below: 2 },
+  { name: 'moderately wet', below: 3 },
+  { name: 'very wet', below: 4 },
+  { name: 'extremely wet', below: Infinity },
+] as const;
+
+/** The class of an index. A bound belongs to the class that is further from normal: −2 is moderate, 2 moderately wet. */
+export function palmerClass(index: number): string {
+  const found = palmerClasses.find(({ below }) => (below <= -0.5 ? index <= below : index < below));
+  return (found ?? palmerClasses[palmerClasses.length - 1]).name;
 }

@@ -5,7 +5,7 @@ import { chartScale } from './chart-scale.ts';
 import type { DrawnFutures } from '#sim-core/weather/drawn-futures.ts';
 import { DroughtPlot, stripHeight } from './drought-plot.tsx';
 import { yearEffect, type Tolerances, type ListedYear } from './outlook-words.ts';
-import { palmerClass } from './palmer-classes.ts';
+import { palmerClass } from '#sim-core/weather/palmer-classes.ts';
 
 const compactBelow = 620;
 /** How far a press must move before it counts as drawing: a plain press only selects. */

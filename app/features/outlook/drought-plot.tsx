@@ -4,7 +4,7 @@ import type { MapSize } from '#app/map/map-view.ts';
 import { labelledYears } from '#app/yearline/yearline-scale.ts';
 import type { ChartScale } from './chart-scale.ts';
 import type { ListedYear, Tolerances } from './outlook-words.ts';
-import { palmerClasses } from './palmer-classes.ts';
+import { palmerClasses } from '#sim-core/weather/palmer-classes.ts';
 
 interface PlotProps {
   series: readonly ListedYear[];

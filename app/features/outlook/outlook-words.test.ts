@@ -1,6 +1,5 @@
 import { describe, expect, it } from 'vitest';
 import { listYears, outlookWords, yearEffect } from './outlook-words.ts';
-import { palmerClass } from './palmer-classes.ts';
 
 const tolerances = { open: -2.3, mound: -4.2 };
 const series = (...values: number[]) => values.map((index, i) => ({ year: 2027 + i, index }));
@@ -45,20 +44,4 @@ it('says what one year does', () => {
   expect(yearEffect(-2, tolerances)).toBe('open marsh bears it');
   expect(yearEffect(-3, tolerances)).toBe('kills open marsh, not near a mound');
   expect(yearEffect(-5, tolerances)).toBe('kills marsh, also near a mound');
-});
-
-it.each([
-  [-4, 'extreme drought'],
-  [-3.99, 'severe drought'],
-  [-2, 'moderate drought'],
-  [-1.5, 'mild drought'],
-  [-0.5, 'incipient dry spell'],
-  [-0.49, 'near normal'],
-  [0, 'near normal'],
-  [0.5, 'incipient wet spell'],
-  [1, 'slightly wet'],
-  [3.99, 'very wet'],
-  [4, 'extremely wet'],
-])('calls %f %s', (index, name) => {
-  expect(palmerClass(index)).toBe(name);
 });

@@ -42,7 +42,7 @@ export function RecursionFitView(props: {
       </p>
     );
   const [low, high] = fit.memoryInterval;
-  const futures = drawn?.made;
+  const futures = drawn?.answer;
   return (
     <div className="mt-3 text-[13.5px]">
       <p>

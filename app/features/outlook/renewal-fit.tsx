@@ -30,8 +30,8 @@ export function RenewalFitView(props: {
   const fits = threshold !== undefined && Math.abs(threshold) <= 15;
   const asked: [readonly YearIndex[], number] | undefined = fits ? [years, threshold] : undefined;
   const done = useWeatherWork('fitRenewal', asked);
-  const current = done && asked && done.of === JSON.stringify(asked);
-  const fit = done?.made;
+  const current = done && asked && done.question === JSON.stringify(asked);
+  const fit = done?.answer;
   return (
     <div className="mt-3 text-[13.5px]">
       <p className="leading-[2.2]">

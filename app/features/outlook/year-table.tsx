@@ -3,7 +3,7 @@ import { useState } from 'react';
 import { classNames } from '#app/lib/class-names.ts';
 import { formatNumber } from '#app/lib/formats.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
-import { palmerClass } from './palmer-classes.ts';
+import { palmerClass } from '#sim-core/weather/palmer-classes.ts';
 
 /** The drought record as a table, in which single years are typed. */
 export function YearTable(props: DroughtRecordProps) {

@@ -82,7 +82,7 @@ export function Page() {
       ],
   );
   // Futures of another horizon would be drawn at the wrong years.
-  const futures = drawn && drawn.made.band.length === years.length ? drawn.made : undefined;
+  const futures = drawn && drawn.answer.band.length === years.length ? drawn.answer : undefined;
   const changeValue = mayKeepGround
     ? (of: number, value: number) => tell({ type: 'value', year: of, value })
     : undefined;
