@@ -73,9 +73,9 @@ test('from a GeoTIFF to a run that is replayed, repeated and exported', async ({
 
   await test.step('look at the rates, and set an outlook of 12 years', async () => {
     await step(page, 'Plant').click();
-    await page.getByLabel('Lateral spread').fill('0');
+    await page.getByRole('textbox', { name: /^Lateral spread/ }).fill('0');
     await expect(page.getByText(/must lie between 0.005 and 20/).first()).toBeVisible();
-    await page.getByLabel('Lateral spread').fill('1.5');
+    await page.getByRole('textbox', { name: /^Lateral spread/ }).fill('1.5');
     await page.getByRole('button', { name: /^(Save|Keep)/ }).click();
     await expect(page.getByRole('link', { name: 'On to Outlook' })).toBeVisible();
     await step(page, 'Outlook').click();

@@ -113,8 +113,8 @@ test('a team’s own rasters, whatever they look like, become the ground of runs
     expect(await violations(page)).toEqual([]);
     await page.getByRole('button', { name: 'Keep the 1 good one' }).click();
     await expect(section(page, 'Points and areas')).toContainText('Old reef, disc of 6 m radius');
-    await expect(engine.getByRole('button', { name: 'with surveyed refuge' })).toBeVisible();
-    await expect(engine).not.toContainText('with surveyed refugenone');
+    await expect(engine.getByRole('button', { name: 'surveyed refuge there' })).toBeVisible();
+    await expect(engine).not.toContainText('surveyed refuge therenone');
   });
 
   await test.step('a replaced layer stays in the history and can be put back; removing warns', async () => {

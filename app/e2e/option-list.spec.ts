@@ -77,8 +77,8 @@ test('two people draw on one option and lose nothing; options are ordered, archi
     await page.getByRole('button', { name: 'Remove number 3', exact: true }).click();
     await save(page);
     await page.getByRole('button', { name: 'Keep mine as a copy' }).click();
-    await expect(entry(page, 'Contested, my copy')).toHaveAttribute('aria-current', 'true');
-    const copy = (await named('Contested, my copy'))!;
+    await expect(entry(page, 'Contested (copy)')).toHaveAttribute('aria-current', 'true');
+    const copy = (await named('Contested (copy)'))!;
     expect([copy.works.length, copy.works.some(({ id }) => id === second.id)]).toEqual([
       contested.works.length - 2,
       true,

@@ -19,7 +19,7 @@ test('a modeller says what is not known of a rate, keeps the plant as a version 
     await button('Take a profile').click();
     await button('Take starting values of Smooth cordgrass (Spartina alterniflora)').click();
     await expect(page.getByText(/Feist & Simenstad 2000/)).toBeVisible();
-    await button('Change what is known of lateral spread').click();
+    await button(/(Say so|source) for lateral spread$/).click();
     await page.getByLabel('Lateral spread: known as').selectOption('uniform');
     await page.getByLabel('Lateral spread: highest').fill('99');
     await expect(page.getByText(/Found 99; Lateral spread must lie between 0.005 and 20/)).toBeVisible();
@@ -30,7 +30,7 @@ test('a modeller says what is not known of a rate, keeps the plant as a version 
     await expect(page.getByText(/between 1.2 and 2.2, most likely 1.7 m\/yr/)).toBeVisible();
     await expect(page.getByText(/nine tenths of the draws lie between 1\.\d+ and 2/)).toBeVisible();
     // Too fast a fill-in beside a slow front would be refused; this one is known.
-    await button('Change what is known of fill-in rate').click();
+    await button(/(Say so|source) for fill-in rate$/).click();
     await page.getByLabel('Fill-in rate: known as').selectOption('fixed');
   });
 

@@ -33,6 +33,9 @@ export function useComparisonFigures(
 }
 
 function openFigures() {
-  const { figures, close } = createFiguresDesk();
-  return { ask: ({ compared, known }: Question) => figures(compared, known), close };
+  const desk = createFiguresDesk();
+  return {
+    ask: ({ compared, known }: Question) => desk.figures(compared, known),
+    close: () => desk.close(),
+  };
 }

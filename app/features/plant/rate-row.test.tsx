@@ -40,7 +40,7 @@ const type = (label: string, value: string) =>
 
 it('a rate becomes a triangular law; single runs take its mode, and back to one value forgets it', () => {
   const saved = show();
-  fireEvent.click(screen.getByRole('button', { name: 'Change what is known of lateral spread' }));
+  fireEvent.click(screen.getByRole('button', { name: 'Not sure? Say so for lateral spread' }));
   type('Lateral spread: known as', 'triangular');
   type('Lateral spread: lowest', '0,2');
   type('Lateral spread: most likely', '0.6');
@@ -56,7 +56,7 @@ it('a rate becomes a triangular law; single runs take its mode, and back to one 
 
 it('says what is wrong with a law, and keeps the value that made sense', () => {
   const saved = show();
-  fireEvent.click(screen.getByRole('button', { name: /Change what is known/ }));
+  fireEvent.click(screen.getByRole('button', { name: /Say so|belief or source/ }));
   type('Lateral spread: known as', 'uniform');
   type('Lateral spread: highest', '99');
   expect(screen.getByRole('alert').textContent).toMatch(/Found 99; Lateral spread must lie between/);
@@ -66,7 +66,7 @@ it('says what is wrong with a law, and keeps the value that made sense', () => {
 
 it('keeps how sure a rate is and where it comes from; a reader sees both and changes neither', () => {
   const saved = show();
-  fireEvent.click(screen.getByRole('button', { name: /Change what is known/ }));
+  fireEvent.click(screen.getByRole('button', { name: /Say so|belief or source/ }));
   type('How sure', 'measured here');
   type('Where it comes from', ' Staked edges, 2025 ');
   expect(saved().sources.lateralSpread).toEqual({ sure: 'measured here', source: 'Staked edges, 2025' });

@@ -72,14 +72,9 @@ function RateRow(props: {
             middle={belief && middleOf(belief, parameter)}
           />
           {editable && (
-            <WordButton
-              lined
-              aria-expanded={open}
-              aria-controls={id}
-              aria-label={`${open ? 'Close' : 'Change'} what is known of ${label.toLowerCase()}`}
-              onClick={() => setOpened(!open)}
-            >
+            <WordButton lined aria-expanded={open} aria-controls={id} onClick={() => setOpened(!open)}>
               {open ? 'Close' : draft ? 'Change belief or source' : 'Not sure? Say so'}
+              <span className="sr-only"> for {label.toLowerCase()}</span>
             </WordButton>
           )}
         </div>
