@@ -1,6 +1,7 @@
 import { rmSync } from 'node:fs';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { fillPath, type Endpoint } from '#contract/endpoint.ts';
+import * as accessTokens from '#contract/access-tokens.ts';
 import * as api from '#contract/api.ts';
 import * as briefs from '#contract/briefs.ts';
 import * as comparisons from '#contract/comparisons.ts';
@@ -20,6 +21,7 @@ import * as workingGrid from '#contract/working-grid.ts';
 import { allRoutes } from '#server/routes.ts';
 import { makeAccessFixture, type AccessFixture } from '#server/testing/access-fixture.ts';
 import { testServer, type TestServer } from '#server/testing/test-server.ts';
+import { tokenCallers, type TokenCaller } from '#server/testing/tokens.ts';
 
 /**
  * Who may use what, written down a second time and by hand: a rule that is loosened in a route fails here. `anyone` needs no
@@ -47,6 +49,10 @@ const expected: Record<string, string> = {
   'DELETE /api/account/sessions/:sessionId': 'signed-in',
   'PATCH /api/account': 'signed-in',
   'POST /api/account/password': 'signed-in',
+  'GET /api/account/tokens': 'signed-in',
+  'POST /api/account/tokens': 'signed-in',
+  'DELETE /api/account/tokens/:tokenId': 'signed-in',
+  'GET /api/teams': 'signed-in',
   'POST /api/teams': 'signed-in',
 
   'GET /api/teams/:teamId/members': everyRole,
@@ -186,6 +192,38 @@ const expected: Record<string, string> = {
   'POST /api/sites/:siteId/briefs/:briefId/messages': planners,
 };
 
+/** Where no access token may go, whatever its scope: accounts, sessions, passwords, and whatever makes members. */
+const closedToTokens = new Set([
+  'GET /api/session',
+  'POST /api/session',
+  'DELETE /api/session',
+  'GET /api/demo-accounts',
+  'GET /api/setup/:token',
+  'POST /api/setup/:token',
+  'GET /api/invites/:token',
+  'POST /api/invites/:token',
+  'POST /api/password-resets',
+  'POST /api/password-resets/:token',
+  'GET /api/account/sessions',
+  'DELETE /api/account/sessions/:sessionId',
+  'PATCH /api/account',
+  'POST /api/account/password',
+  'GET /api/account/tokens',
+  'POST /api/account/tokens',
+  'DELETE /api/account/tokens/:tokenId',
+  'POST /api/teams',
+  'GET /api/teams/:teamId/members',
+  'PATCH /api/teams/:teamId/members/:personId',
+  'DELETE /api/teams/:teamId/members/:personId',
+  'DELETE /api/teams/:teamId/members/:personId/sessions',
+  'GET /api/teams/:teamId/invites',
+  'POST /api/teams/:teamId/invites',
+  'DELETE /api/teams/:teamId/invites/:inviteId',
+  'GET /api/teams/:teamId/outbox',
+  'GET /api/teams/:teamId/outbox/:messageId',
+  'GET /api/teams/:teamId/outbox/:messageId/message.eml',
+]);
+
 const callers = ['nobody', 'modeller', 'manager', 'trainer', 'admin', 'outsider'] as const;
 type Caller = (typeof callers)[number];
 
@@ -198,10 +236,22 @@ function refusal(rule: string, caller: Caller): number | undefined {
   return rule.split(' ').includes(caller) ? undefined : 403;
 }
 
+/** The same for whoever comes with an access token. */
+function tokenRefusal(name: string, caller: TokenCaller): number | undefined {
+  if (caller === 'unknown token' || caller === 'expired token' || caller === 'revoked token') return 401;
+  if (closedToTokens.has(name)) return 403;
+  if (caller === 'read token' && !name.startsWith('GET ')) return 403;
+  const rule = expected[name];
+  const scoped = rule !== 'anyone' && rule !== 'signed-in';
+  if (caller === 'other team’s token') return scoped ? 404 : undefined;
+  return refusal(rule, caller === 'trainer’s token' ? 'trainer' : 'admin');
+}
+
 const isEndpoint = (value: unknown): value is Endpoint =>
   typeof value === 'object' && value !== null && 'method' in value && 'path' in value && 'reply' in value;
 const contract = [
   people,
+  accessTokens,
   plants,
   sites,
   outlooks,
@@ -233,15 +283,25 @@ afterAll(async () => {
   rmSync(fixture.folder, { recursive: true, force: true });
 });
 
-async function ask(server: TestServer, endpoint: Endpoint, caller: Caller): Promise<number> {
-  const cookie = fixture.cookies[caller] ?? '';
-  const params = { ...fixture.params, sessionId: fixture.sessionIds[caller] ?? 'none' };
+const isToken = (caller: Caller | TokenCaller): caller is TokenCaller => caller.endsWith('token');
+
+async function ask(server: TestServer, endpoint: Endpoint, caller: Caller | TokenCaller): Promise<number> {
+  const owner = isToken(caller) ? 'admin' : caller;
+  const params = {
+    ...fixture.params,
+    sessionId: fixture.sessionIds[owner] ?? 'none',
+    tokenId: fixture.tokenIds[owner] ?? 'none',
+  };
   const method = endpoint.method.toLowerCase() as Lowercase<Endpoint['method']>;
-  return (await server.request[method](fillPath(endpoint.path, params)).set('Cookie', cookie)).status;
+  const request = server.request[method](fillPath(endpoint.path, params));
+  const reply = isToken(caller)
+    ? await request.set('Authorization', `Bearer ${fixture.tokens[caller]}`)
+    : await request.set('Cookie', fixture.cookies[caller] ?? '');
+  return reply.status;
 }
 
 /** Asks on a copy of the fixture, so that what a caller deletes is there for the next one. */
-async function askOnCopy(endpoint: Endpoint, caller: Caller): Promise<number> {
+async function askOnCopy(endpoint: Endpoint, caller: Caller | TokenCaller): Promise<number> {
   const server = await testServer({}, fixture.folder);
   const status = await ask(server, endpoint, caller);
   await server.close();
@@ -261,8 +321,8 @@ describe('every route', () => {
     '%s lets in whom it should',
     async (name, endpoint) => {
       const rule = expected[name];
-      for (const caller of callers) {
-        const wanted = refusal(rule, caller);
+      for (const caller of [...callers, ...tokenCallers]) {
+        const wanted = isToken(caller) ? tokenRefusal(name, caller) : refusal(rule, caller);
         if (wanted !== undefined)
           expect([caller, await ask(shared, endpoint, caller)]).toEqual([caller, wanted]);
         else {

@@ -1,5 +1,6 @@
 import { apiRoutes } from './features/api/api.routes.ts';
 import { accountRoutes } from './features/account/account.routes.ts';
+import { tokenRoutes } from './features/account/token.routes.ts';
 import { inviteRoutes } from './features/auth/invite.routes.ts';
 import { passwordResetRoutes } from './features/auth/password-reset.routes.ts';
 import { sessionRoutes } from './features/auth/session.routes.ts';
@@ -34,6 +35,7 @@ export function allRoutes(services: Services): Route[] {
     ...inviteRoutes(services),
     ...passwordResetRoutes(services),
     ...accountRoutes(services),
+    ...tokenRoutes(services),
     ...memberRoutes(services),
     ...teamInviteRoutes(services),
     ...outboxRoutes(services),

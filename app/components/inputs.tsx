@@ -9,11 +9,11 @@ function split<Props extends FieldProps>({ label, unit, hint, error, className, 
 
 export type TextFieldProps = FieldProps &
   Omit<InputHTMLAttributes<HTMLInputElement>, 'className' | 'type'> & {
-    type?: 'text' | 'email' | 'password';
+    type?: 'text' | 'email' | 'password' | 'date';
     ref?: Ref<HTMLInputElement>;
   };
 
-/** A line of text, an e-mail address or a password. Spreads what `register` of react-hook-form gives. */
+/** A line of text, an e-mail address, a password or a day. Spreads what `register` of react-hook-form gives. */
 export function TextField(props: TextFieldProps) {
   const { field, input } = split(props);
   return (

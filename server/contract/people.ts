@@ -110,7 +110,7 @@ export const requestPasswordReset = endpoint({
 export const completePasswordReset = endpoint({
   method: 'POST',
   path: '/api/password-resets/:token',
-  summary: 'Set a new password; ends all sessions',
+  summary: 'Set a new password; ends all sessions and revokes all access tokens',
   params: tokenParams,
   body: z.strictObject({ password: passwordSchema }),
 });
@@ -169,6 +169,12 @@ export const inviteSchema = z.object({
   expiresAt: instant,
   invitedBy: z.string(),
 });
+export const listMyTeams = endpoint({
+  method: 'GET',
+  path: '/api/teams',
+  summary: 'The teams that I am in, with my role in each; by access token, those that it reaches',
+  reply: z.object({ teams: z.array(membershipSchema) }),
+});
 export const createTeam = endpoint({
   method: 'POST',
   path: '/api/teams',
@@ -201,7 +207,7 @@ export const removeMember = endpoint({
 export const endMemberSessions = endpoint({
   method: 'DELETE',
   path: '/api/teams/:teamId/members/:personId/sessions',
-  summary: 'Sign a member out everywhere',
+  summary: 'Sign a member out everywhere: ends their sessions and revokes their access tokens',
   params: memberParams,
 });
 export const listInvites = endpoint({

@@ -5,6 +5,7 @@ export const problemCodes = [
   'invalid-request', // 400: a field is wrong, see `fields`
   'not-signed-in', // 401
   'wrong-credentials', // 401
+  'token-refused', // 401: an access token that is unknown, revoked or over
   'forbidden', // 403: signed in, but the role does not allow it
   'not-found', // 404: also what another team's things look like
   'conflict', // 409: somebody else changed it meanwhile

@@ -1,3 +1,4 @@
+import { AccessTokenEntity } from './entities/access-token.ts';
 import { InviteEntity } from './entities/invite.ts';
 import { MembershipEntity } from './entities/membership.ts';
 import { OneTimeLinkEntity } from './entities/one-time-link.ts';
@@ -36,6 +37,7 @@ export const entities = [
   TeamEntity,
   MembershipEntity,
   SessionEntity,
+  AccessTokenEntity,
   InviteEntity,
   OneTimeLinkEntity,
   OutboxMessageEntity,

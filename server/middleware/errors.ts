@@ -1,7 +1,13 @@
 import type { ErrorRequestHandler, RequestHandler } from 'express';
-import type { Problem } from '#contract/problem.ts';
+import type { Problem, ProblemCode } from '#contract/problem.ts';
 import { classifyError } from './classify-error.ts';
 import { notFound, statusOf, titleOf } from './problem-error.ts';
+
+/** What tells programs how to sign in (RFC 6750). Browsers ask for nothing upon `Bearer`. */
+const challenges: Partial<Record<ProblemCode, string>> = {
+  'not-signed-in': 'Bearer realm="Foothold"',
+  'token-refused': 'Bearer realm="Foothold", error="invalid_token"',
+};
 
 /** Writes every error out as an RFC 9457 problem; what is not known is logged with the request's number. */
 export const problemWriter: ErrorRequestHandler = (error: unknown, request, response, next) => {
@@ -22,6 +28,8 @@ export const problemWriter: ErrorRequestHandler = (error: unknown, request, resp
     code: problem.code,
     ...problem.extra,
   };
+  const challenge = challenges[problem.code];
+  if (challenge) response.set('WWW-Authenticate', challenge);
   response.status(status).set('Cache-Control', 'no-store').type('application/problem+json');
   response.send(JSON.stringify(body));
 };

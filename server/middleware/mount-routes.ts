@@ -1,7 +1,8 @@
 import type { IRouter, Request, RequestHandler, Response } from 'express';
 import type { z } from 'zod';
 import type { Services } from '../services.ts';
-import { admit } from './access.ts';
+import { admit, sessionCaller } from './access.ts';
+import { bearerOf, tokenReader, type TokenReader } from './access-token.ts';
 import { createAttemptLimits } from './attempts.ts';
 import { bodyReader } from './body.ts';
 import { problemOfIssues } from './classify-error.ts';
@@ -27,17 +28,24 @@ function parseBody({ endpoint, options }: Route, request: Request): unknown {
 }
 
 /**
- * What happens to a request, in this order: attempts are counted, the session is loaded, the access rule speaks, the body
- * is read, everything is parsed, the handler works, its reply is checked.
+ * What happens to a request, in this order: attempts are counted, the access token is read or else the session is loaded, the
+ * access rule speaks, the body is read, everything is parsed, the handler works, its reply is checked.
  */
-function answer(route: Route, services: Services, loadSession: RequestHandler) {
-  const { endpoint, access, options, handle } = route;
+function answer(route: Route, services: Services, loadSession: RequestHandler, readToken: TokenReader) {
+  const { endpoint, options, handle } = route;
+  const findCaller = async (request: Request, response: Response) => {
+    // A token wins: the cookie beside it is not even read, so it can lend a token nothing.
+    const token = bearerOf(request);
+    if (token !== undefined) return readToken(token, request, response);
+    await runMiddleware(loadSession, request, response);
+    return sessionCaller(request, services);
+  };
   const limits = options.limitAttempts && createAttemptLimits(services.config, options.limitAttempts);
   const readBody = bodyReader(route);
   return async (request: Request, response: Response): Promise<void> => {
     if (limits) await runMiddleware(limits.byAddress, request, response);
-    await runMiddleware(loadSession, request, response);
-    const { person, membership } = await admit(request, access, services);
+    const caller = await findCaller(request, response);
+    const { membership } = await admit(caller, request, route, services);
     await runMiddleware(readBody, request, response);
     if (limits) await runMiddleware(limits.byAccount, request, response);
     const call = {
@@ -46,8 +54,9 @@ function answer(route: Route, services: Services, loadSession: RequestHandler) {
       body: parseBody(route, request),
       bytes: Buffer.isBuffer(request.body) ? request.body : undefined,
       // Present whenever the rule asks for it: admit has thrown otherwise.
-      person: person!,
+      person: caller.person!,
       membership,
+      token: caller.token,
       request,
       response,
     };
@@ -62,7 +71,8 @@ const methods = { GET: 'get', POST: 'post', PUT: 'put', PATCH: 'patch', DELETE: 
 /** Mounts every route on an app. Whatever is not mounted does not answer. */
 export function mountRoutes(app: IRouter, routes: readonly Route[], services: Services): void {
   const loadSession = sessions(services);
+  const readToken = tokenReader(services);
   for (const route of routes) {
-    app[methods[route.endpoint.method]](route.endpoint.path, answer(route, services, loadSession));
+    app[methods[route.endpoint.method]](route.endpoint.path, answer(route, services, loadSession, readToken));
   }
 }

@@ -34,6 +34,7 @@ const titles: Record<ProblemCode, readonly [status: number, title: string]> = {
   'invalid-request': [400, 'The request is not right'],
   'not-signed-in': [401, 'Not signed in'],
   'wrong-credentials': [401, 'Wrong e-mail address or password'],
+  'token-refused': [401, 'The access token does not work'],
   forbidden: [403, 'Not allowed'],
   'not-found': [404, 'Not found'],
   conflict: [409, 'Changed meanwhile'],

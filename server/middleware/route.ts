@@ -3,6 +3,7 @@ import type { Request, RequestHandler, Response } from 'express';
 import type { z } from 'zod';
 import type { Endpoint } from '#contract/endpoint.ts';
 import type { Role } from '#contract/people.ts';
+import type { TokenLimits } from './access-token.ts';
 import type { CountedAttempts } from './attempts.ts';
 
 /**
@@ -36,6 +37,8 @@ export interface Call<E extends Endpoint = Endpoint, A extends Access = Access> 
   person: A extends 'anyone' ? SignedIn | undefined : SignedIn;
   /** the caller's membership in the team that owns what the route is about */
   membership: A extends string ? undefined : CallMembership;
+  /** what the access token allows that the caller came with; undefined of whoever came with a session */
+  token: TokenLimits | undefined;
   request: Request;
   response: Response;
 }
@@ -64,7 +67,12 @@ export interface RouteOptions {
   form?: RequestHandler;
   /** counts attempts by address and by account or link */
   limitAttempts?: CountedAttempts;
+  /** whether access tokens may be used here; where a rule names roles they are unless said, else they are not */
+  tokens?: 'taken' | 'refused';
 }
+
+/** Closed to access tokens, though its rule names roles: people and their letters. */
+export const sessionsOnly: RouteOptions = { tokens: 'refused' };
 
 /** An endpoint with its rule and its handler. */
 export interface Route {
@@ -73,6 +81,10 @@ export interface Route {
   readonly options: RouteOptions;
   readonly handle: (call: Call) => unknown;
 }
+
+/** Whether a route answers to access tokens; accounts, sessions and whatever makes members are closed to them. */
+export const takesTokens = ({ access, options }: Pick<Route, 'access' | 'options'>): boolean =>
+  (options.tokens ?? (typeof access === 'string' ? 'refused' : 'taken')) === 'taken';
 
 /** The parameter of the path that an access rule looks at. */
 export const scopeParameter = (access: Exclude<Access, string>): 'teamId' | 'siteId' | 'runId' =>

@@ -8,6 +8,7 @@ import { makeTestBrief, startTestComparison } from './comparisons.ts';
 import { packed, sendBytes } from './runs.ts';
 import { cover, makeSite, sendUpload } from './sites.ts';
 import { testServer, type TestServer } from './test-server.ts';
+import { makeCallerTokens, makeToken, type TokenCaller } from './tokens.ts';
 import { addMember } from '../people/people.repository.ts';
 
 /** A data folder with one of everything that a path can point at, and the cookies of whoever may ask for it. */
@@ -18,6 +19,10 @@ export interface AccessFixture {
   cookies: Partial<Record<Role | 'outsider' | 'nobody', string>>;
   /** the shown id of each caller's session */
   sessionIds: Partial<Record<Role | 'outsider' | 'nobody', string>>;
+  /** an access token of each caller's, to be revoked by its owner */
+  tokenIds: Partial<Record<Role | 'outsider' | 'nobody', string>>;
+  /** the access token of each caller that comes with one */
+  tokens: Record<TokenCaller, string>;
 }
 
 const surveyYear = 2026;
@@ -131,11 +136,16 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
   const callers = { ...people, outsider: other.people.admin };
   const cookies: AccessFixture['cookies'] = {};
   const sessionIds: AccessFixture['sessionIds'] = {};
+  const tokenIds: AccessFixture['tokenIds'] = {};
   for (const [caller, person] of Object.entries(callers) as [Role | 'outsider', TestPerson][]) {
     const cookie = await cookieOf(server, person);
     cookies[caller] = cookie;
     sessionIds[caller] = await currentSessionId(server, cookie);
+    tokenIds[caller] = (await makeToken(server, person.id)).id;
   }
+  // A member of both teams, so that it is the token's limit that hides one of them.
+  await write((manager) => addMember(manager, other.teamId, people.admin.id, 'admin', clock()));
+  const tokens = await makeCallerTokens(server, people, other.teamId);
   const params = {
     token: 'x'.repeat(43),
     teamId,
@@ -163,5 +173,5 @@ export async function makeAccessFixture(): Promise<AccessFixture> {
     map: 'closing',
     briefId: brief.id,
   };
-  return { folder: await server.freeze(), params, cookies, sessionIds };
+  return { folder: await server.freeze(), params, cookies, sessionIds, tokenIds, tokens };
 }

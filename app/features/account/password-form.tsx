@@ -43,7 +43,7 @@ export function PasswordForm({ email }: { email: string }) {
         label="New password"
         type="password"
         autoComplete="new-password"
-        hint="At least 10 characters. Changing it ends your other sessions."
+        hint="At least 10 characters. Changing it ends your other sessions; access tokens go on."
         error={errors.password?.message}
         {...form.register('password')}
       />

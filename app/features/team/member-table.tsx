@@ -135,7 +135,7 @@ function DeedDialog(props: { teamId: string; deed: Deed; onClose: () => void }) 
       description={
         removing
           ? 'They lose sight of the team’s sites at once. What they made stays, with their name on it.'
-          : 'Every browser where they are signed in asks for their password again. What they are typing there is lost.'
+          : 'Every browser where they are signed in asks for their password again, and their access tokens stop working. What they are typing there is lost.'
       }
       action={removing ? 'Remove' : 'Sign out everywhere'}
       keep={removing ? 'Keep them' : 'Leave them signed in'}

@@ -6,6 +6,7 @@ import { FoundTeam } from '#app/features/account/found-team.tsx';
 import { NameForm } from '#app/features/account/name-form.tsx';
 import { PasswordForm } from '#app/features/account/password-form.tsx';
 import { SessionSection } from '#app/features/account/session-section.tsx';
+import { TokenSection } from '#app/features/account/token-section.tsx';
 import { sessionQuery } from '#app/features/session/session.ts';
 import { themeOptions } from '#app/lib/theme.ts';
 import { useTheme } from '#app/lib/use-theme.ts';
@@ -25,6 +26,7 @@ export function Page() {
           <Section title="Password">
             <PasswordForm email={session.person.email} />
           </Section>
+          <TokenSection memberships={session.memberships} />
         </div>
         <div>
           <SessionSection />

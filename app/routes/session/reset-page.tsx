@@ -34,7 +34,7 @@ export function Page() {
     }
   });
   return (
-    <DoorLayout title="New password" lead="It signs you out everywhere else.">
+    <DoorLayout title="New password" lead="It signs you out everywhere else and revokes your access tokens.">
       <form className="mt-4" noValidate onSubmit={(event) => void submit(event)}>
         <TextField
           className="mt-3.5"

@@ -1,4 +1,3 @@
-import { useState } from 'react';
 import type { Comparison } from '#contract/comparisons.ts';
 import { Button } from '#app/components/button.tsx';
 import { Dialog, DialogActions } from '#app/components/dialog.tsx';
@@ -7,6 +6,7 @@ import { WordButton } from '#app/components/word-button.tsx';
 import { decisionText } from '#app/features/comparisons/decision-text.ts';
 import { answersCsv, pairsCsv, recoveryCsv } from '#app/features/comparisons/figures-files.ts';
 import { saveFile } from '#app/lib/save-file.ts';
+import { useCopy } from '#app/lib/use-copy.ts';
 import type { ComparisonFigures } from '#sim-core/compare/comparison-figures.ts';
 
 /** The decision as a text to be copied, saved or printed, and the figures behind it as CSV. */
@@ -18,22 +18,10 @@ export function ComparisonFiles(props: {
 }) {
   const { comparison, figures } = props;
   const text = decisionText(comparison, figures, props.siteName);
-  const [refused, setRefused] = useState(false);
+  const { copy, refused } = useCopy(() => sayDone('Copied'));
   const stem = comparison.name.replaceAll(/[^\p{L}\p{N}]+/gu, '-').replaceAll(/^-|-$/g, '') || 'comparison';
   const save = (name: string, content: string, type: string) =>
     saveFile(`${stem}-${name}`, new Blob([content], { type: `${type};charset=utf-8` }));
-  const copy = () => {
-    // There is no clipboard on plain http beyond this machine.
-    const clipboard = navigator.clipboard as Clipboard | undefined;
-    if (!clipboard) {
-      setRefused(true);
-      return;
-    }
-    clipboard.writeText(text).then(
-      () => sayDone('Copied'),
-      () => setRefused(true),
-    );
-  };
   return (
     <Dialog
       open
@@ -72,7 +60,7 @@ export function ComparisonFiles(props: {
         </WordButton>
       </p>
       <DialogActions>
-        <Button kind="primary" onClick={copy}>
+        <Button kind="primary" onClick={() => copy(text)}>
           Copy the text
         </Button>
         <Button onClick={() => save('decision.txt', text, 'text/plain')}>Save it as a file</Button>

@@ -8,11 +8,13 @@ export function apiRoutes(others: readonly Route[]): Route[] {
   let described: ApiDescription | undefined;
   const describe = () => (described ??= describeApi([...others, ...own]));
   const own: Route[] = [
-    route(contract.getApiDescription, 'anyone', () => describe()),
-    route(contract.getApiPage, 'anyone', () => ({
-      bytes: Buffer.from(apiPage(describe())),
-      type: 'text/html; charset=utf-8',
-    })),
+    route(contract.getApiDescription, 'anyone', () => describe(), { tokens: 'taken' }),
+    route(
+      contract.getApiPage,
+      'anyone',
+      () => ({ bytes: Buffer.from(apiPage(describe())), type: 'text/html; charset=utf-8' }),
+      { tokens: 'taken' },
+    ),
   ];
   return own;
 }

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import * as accessTokens from '#contract/access-tokens.ts';
 import * as api from '#contract/api.ts';
 import * as briefs from '#contract/briefs.ts';
 import * as comparisons from '#contract/comparisons.ts';
@@ -33,6 +34,7 @@ import * as weatherSource from '#sim-core/spec/weather-source.ts';
 /** Modules of the contract by the heading under which their endpoints are described. */
 const headings: Record<string, object> = {
   'People and teams': people,
+  'Access tokens': accessTokens,
   Sites: sites,
   'Plant library': plants,
   Uploads: uploads,

@@ -43,7 +43,7 @@ test('a route in full', () => {
         },
       },
     },
-    security: [{ session: [] }],
+    security: [{ session: [] }, { token: [] }],
   });
   expect(patch.responses['200'].content).toEqual({
     'application/json': { schema: { $ref: '#/components/schemas/Site' } },
@@ -53,7 +53,11 @@ test('a route in full', () => {
     properties: { name: { type: 'string', maxLength: 100 } },
     required: ['name'],
   });
-  expect(patch.description).toContain('modeller, admin');
+  expect(patch.description).toMatch(/modeller, admin.*By access tokens that may read and write/);
+  expect(description.components.securitySchemes.token).toMatchObject({ type: 'http', scheme: 'bearer' });
+  const account = description.paths['/api/account'].patch;
+  expect(account.security).toEqual([{ session: [] }]);
+  expect(account.description).toContain('Not by access token');
 });
 
 test('every reference leads somewhere', () => {

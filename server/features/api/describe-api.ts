@@ -2,7 +2,7 @@ import { z } from 'zod';
 import type { Endpoint } from '#contract/endpoint.ts';
 import { productVersion } from '#server/project.ts';
 import { cookieName } from '#server/middleware/session.ts';
-import type { Access, Route } from '#server/middleware/route.ts';
+import { takesTokens, type Access, type Route } from '#server/middleware/route.ts';
 import { capital, endpointNames, namedSchemas } from './contract-names.ts';
 
 type Json = Record<string, unknown>;
@@ -68,6 +68,13 @@ export function describeApi(routes: readonly Route[]): ApiDescription {
           name: cookieName,
           description: 'Signed in as in a browser: POST /api/session sets the cookie.',
         },
+        token: {
+          type: 'http',
+          scheme: 'bearer',
+          description:
+            'An access token of the account page, for scripts: it may do what its person’s role allows, as far as its ' +
+            'scope and its team go. Where it is sent, the cookie is not looked at.',
+        },
       },
     },
   };
@@ -129,13 +136,14 @@ function describeSchemas(routes: readonly Route[]): Schemas {
   };
 }
 
-function describeRoute({ endpoint, access, options }: Route, schemas: Schemas): Operation {
+function describeRoute(route: Route, schemas: Schemas): Operation {
+  const { endpoint, access, options } = route;
   const { name, heading } = nameOf(endpoint);
   const takesBody = endpoint.method !== 'GET' && endpoint.method !== 'DELETE';
   return {
     operationId: name,
     summary: endpoint.summary,
-    description: whoMay(access),
+    description: `${whoMay(access)}${whichTokens(route)}`,
     tags: [heading],
     parameters: [...parametersOf(endpoint, 'params', 'path'), ...parametersOf(endpoint, 'query', 'query')],
     ...(takesBody && bodyOf(endpoint, schemas)),
@@ -148,7 +156,7 @@ function describeRoute({ endpoint, access, options }: Route, schemas: Schemas): 
         ]),
       ),
     },
-    security: access === 'anyone' ? [] : [{ session: [] }],
+    security: access === 'anyone' ? [] : [{ session: [] }, ...(takesTokens(route) ? [{ token: [] }] : [])],
   };
 }
 
@@ -157,6 +165,14 @@ function whoMay(access: Access): string {
   if (access === 'signed-in') return 'For whoever is signed in.';
   const roles = 'team' in access ? access.team : 'site' in access ? access.site : access.run;
   return `For members of the team whose role is ${roles.join(', ')}; to everybody outside the team it does not exist.`;
+}
+
+function whichTokens(route: Route): string {
+  if (route.access === 'anyone') return '';
+  if (!takesTokens(route)) return ' Not by access token.';
+  return route.endpoint.method === 'GET'
+    ? ' By any access token.'
+    : ' By access tokens that may read and write.';
 }
 
 function parametersOf(endpoint: Endpoint, what: 'params' | 'query', place: 'path' | 'query'): Json[] {
@@ -223,8 +239,10 @@ function refusals(endpoint: Endpoint, access: Access, counted: boolean): [string
   const scoped = typeof access !== 'string';
   return [
     ...(takesInput ? [['400', 'A field is wrong; `fields` says which'] as [string, string]] : []),
-    ...(access === 'anyone' ? [] : [['401', 'Not signed in'] as [string, string]]),
-    ...(scoped ? [['403', 'The role does not allow it'] as [string, string]] : []),
+    ...(access === 'anyone'
+      ? []
+      : [['401', 'Not signed in, or the access token does not work'] as [string, string]]),
+    ...(scoped ? [['403', 'The role or the access token does not allow it'] as [string, string]] : []),
     ...(scoped || endpoint.path.includes(':')
       ? [['404', 'There is no such thing in any team of the caller'] as [string, string]]
       : []),

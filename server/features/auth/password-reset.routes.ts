@@ -3,6 +3,7 @@ import { resetLetter } from '#server/mail/letters.ts';
 import { ProblemError } from '#server/middleware/problem-error.ts';
 import { route, type Route } from '#server/middleware/route.ts';
 import { mayEnter } from '#server/people/may-enter.ts';
+import { revokeTokensOf } from '#server/people/access-tokens.repository.ts';
 import { dropLinks, findLink, makeLink } from '#server/people/one-time-links.repository.ts';
 import {
   endSessionsOf,
@@ -57,6 +58,7 @@ export const passwordResetRoutes = (services: Services): Route[] => {
           await dropLinks(manager, 'password-reset', link.personId);
           await setPasswordHash(manager, link.personId, passwordHash);
           await endSessionsOf(manager, link.personId);
+          await revokeTokensOf(manager, link.personId, clock());
         });
       },
       { limitAttempts: 'refused' },

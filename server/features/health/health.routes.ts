@@ -4,8 +4,13 @@ import { productVersion } from '#server/project.ts';
 import type { Services } from '#server/services.ts';
 
 export const healthRoutes = ({ dataSource }: Services): Route[] => [
-  route(getHealth, 'anyone', async () => {
-    await dataSource.query('SELECT 1');
-    return { status: 'ok' as const, version: productVersion };
-  }),
+  route(
+    getHealth,
+    'anyone',
+    async () => {
+      await dataSource.query('SELECT 1');
+      return { status: 'ok' as const, version: productVersion };
+    },
+    { tokens: 'taken' },
+  ),
 ];

@@ -1,7 +1,7 @@
 import { listInvites, sendInvite, withdrawInvite } from '#contract/people.ts';
 import { inviteLetter } from '#server/mail/letters.ts';
 import { notFound, ProblemError } from '#server/middleware/problem-error.ts';
-import { route, type Route } from '#server/middleware/route.ts';
+import { route, sessionsOnly, type Route } from '#server/middleware/route.ts';
 import { makeToken } from '#server/people/tokens.ts';
 import type { Services } from '#server/services.ts';
 import {
@@ -17,9 +17,12 @@ const days = 7;
 export const teamInviteRoutes = (services: Services): Route[] => {
   const { config, dataSource, write, mail, clock } = services;
   return [
-    route(listInvites, { team: ['admin'] }, async ({ params }) => ({
-      invites: await listOpenInvites(dataSource.manager, params.teamId, clock()),
-    })),
+    route(
+      listInvites,
+      { team: ['admin'] },
+      async ({ params }) => ({ invites: await listOpenInvites(dataSource.manager, params.teamId, clock()) }),
+      sessionsOnly,
+    ),
 
     route(
       sendInvite,
@@ -48,12 +51,17 @@ export const teamInviteRoutes = (services: Services): Route[] => {
         await mail.send({ to: email, letter, teamIds: [params.teamId], showLink: 'unless-sent' });
         return { ...invite, invitedBy: person.name };
       },
-      { limitAttempts: 'all' },
+      { limitAttempts: 'all', ...sessionsOnly },
     ),
 
-    route(withdrawInvite, { team: ['admin'] }, async ({ params }) => {
-      const dropped = await write((manager) => dropInvite(manager, params.teamId, params.inviteId));
-      if (!dropped) throw notFound();
-    }),
+    route(
+      withdrawInvite,
+      { team: ['admin'] },
+      async ({ params }) => {
+        const dropped = await write((manager) => dropInvite(manager, params.teamId, params.inviteId));
+        if (!dropped) throw notFound();
+      },
+      sessionsOnly,
+    ),
   ];
 };

@@ -3,13 +3,15 @@ import {
   createTeam,
   endMemberSessions,
   listMembers,
+  listMyTeams,
   removeMember,
   roles,
   type Role,
 } from '#contract/people.ts';
 import type { Manager } from '#server/database/manager.ts';
 import { notFound, ProblemError } from '#server/middleware/problem-error.ts';
-import { route, type Route } from '#server/middleware/route.ts';
+import { route, sessionsOnly, type Route } from '#server/middleware/route.ts';
+import { revokeTokensOf } from '#server/people/access-tokens.repository.ts';
 import { addMember, addTeam, endSessionsOf } from '#server/people/people.repository.ts';
 import { viewSession } from '#server/people/session-view.repository.ts';
 import type { Services } from '#server/services.ts';
@@ -40,6 +42,16 @@ async function keepAnAdmin(manager: Manager, params: MemberParams, becomes: Role
 export const memberRoutes = (services: Services): Route[] => {
   const { dataSource, write, clock } = services;
   return [
+    route(
+      listMyTeams,
+      'signed-in',
+      async ({ person, token }) => {
+        const { memberships } = await viewSession(services, person.id);
+        return { teams: memberships.filter(({ teamId }) => !token?.teamId || token.teamId === teamId) };
+      },
+      { tokens: 'taken' },
+    ),
+
     route(createTeam, 'signed-in', async ({ person, body }) => {
       await write(async (manager) => {
         const team = await addTeam(manager, body.name, clock());
@@ -48,31 +60,47 @@ export const memberRoutes = (services: Services): Route[] => {
       return viewSession(services, person.id);
     }),
 
-    route(listMembers, { team: roles }, async ({ params }) => ({
-      members: await listMembersOf(dataSource.manager, params.teamId, clock()),
-    })),
-
-    route(changeMemberRole, { team: ['admin'] }, ({ params, body }) =>
-      write(async (manager) => {
-        await keepAnAdmin(manager, params, body.role);
-        await setRole(manager, params.teamId, params.personId, body.role);
-        const members = await listMembersOf(manager, params.teamId, clock());
-        return members.find((member) => member.personId === params.personId)!;
-      }),
+    route(
+      listMembers,
+      { team: roles },
+      async ({ params }) => ({ members: await listMembersOf(dataSource.manager, params.teamId, clock()) }),
+      sessionsOnly,
     ),
 
-    route(removeMember, { team: ['admin'] }, ({ params }) =>
-      write(async (manager) => {
-        await keepAnAdmin(manager, params, undefined);
-        await dropMembership(manager, params.teamId, params.personId);
-      }),
+    route(
+      changeMemberRole,
+      { team: ['admin'] },
+      ({ params, body }) =>
+        write(async (manager) => {
+          await keepAnAdmin(manager, params, body.role);
+          await setRole(manager, params.teamId, params.personId, body.role);
+          const members = await listMembersOf(manager, params.teamId, clock());
+          return members.find((member) => member.personId === params.personId)!;
+        }),
+      sessionsOnly,
     ),
 
-    route(endMemberSessions, { team: ['admin'] }, ({ params }) =>
-      write(async (manager) => {
-        await requireMember(manager, params);
-        await endSessionsOf(manager, params.personId);
-      }),
+    route(
+      removeMember,
+      { team: ['admin'] },
+      ({ params }) =>
+        write(async (manager) => {
+          await keepAnAdmin(manager, params, undefined);
+          await dropMembership(manager, params.teamId, params.personId);
+        }),
+      sessionsOnly,
+    ),
+
+    route(
+      endMemberSessions,
+      { team: ['admin'] },
+      ({ params }) =>
+        write(async (manager) => {
+          await requireMember(manager, params);
+          await endSessionsOf(manager, params.personId);
+          await revokeTokensOf(manager, params.personId, clock());
+        }),
+      sessionsOnly,
     ),
   ];
 };
