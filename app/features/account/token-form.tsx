@@ -70,7 +70,7 @@ export function TokenForm(props: {
             </option>
           ))}
         </SelectField>
-        <SelectField label="in" error={errors.teamId?.message} {...form.register('teamId')}>
+        <SelectField label="In" error={errors.teamId?.message} {...form.register('teamId')}>
           <option value="">all my teams</option>
           {props.memberships.map(({ teamId, teamName }) => (
             <option key={teamId} value={teamId}>

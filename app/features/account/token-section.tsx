@@ -6,6 +6,7 @@ import { LoadingLines } from '#app/components/loading-lines.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
 import { Section } from '#app/components/paper-layout.tsx';
 import { sayDone } from '#app/components/toast.tsx';
+import { WordAnchor } from '#app/components/word-button.tsx';
 import type { AccessToken } from '#contract/access-tokens.ts';
 import type { Session } from '#contract/people.ts';
 import { MadeToken } from './made-token.tsx';
@@ -21,9 +22,11 @@ export function TokenSection({ memberships }: { memberships: Session['membership
   const [revoking, setRevoking] = useState<AccessToken>();
   return (
     <Section title="Access tokens">
-      <p className="mb-3 max-w-[52ch]">
-        A token lets a script use Foothold as you, without your password. It cannot touch accounts or members.{' '}
-        <a href="/api/docs">What scripts can ask for</a>
+      <p className="max-w-[52ch]">
+        A token lets a script use Foothold as you, without your password. It cannot touch accounts or members.
+      </p>
+      <p className="mb-3">
+        <WordAnchor href="/api/docs">What scripts can ask for</WordAnchor>
       </p>
       {tokens.isPending && <LoadingLines label="Fetching your tokens" lines={2} />}
       {tokens.isError && <ProblemNotice error={tokens.error} title="Your tokens did not come." />}

@@ -1,5 +1,6 @@
 import { Table } from '#app/components/table.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
+import { classNames } from '#app/lib/class-names.ts';
 import { formatDateTime } from '#app/lib/formats.ts';
 import type { AccessToken } from '#contract/access-tokens.ts';
 import { hasEnded, tokenEndWords, tokenMay } from './token-words.ts';
@@ -22,7 +23,8 @@ export function TokenTable(props: {
             <div className={pale(token)}>
               <b className="font-semibold [overflow-wrap:anywhere]">{token.name}</b>
               <span className="block text-axis text-ink-2">
-                <span className="font-mono">{token.start}…</span> {tokenMay(token)}
+                <span className="font-mono">{token.start}…</span> {tokenMay(token)};{' '}
+                <span className="whitespace-nowrap">{tokenEndWords(token, now)}</span>
               </span>
             </div>
           ),
@@ -31,15 +33,10 @@ export function TokenTable(props: {
           key: 'used',
           head: 'Last used',
           cell: (token) => (
-            <span className={pale(token)}>
+            <span className={classNames('whitespace-nowrap', pale(token))}>
               {token.lastUsedAt ? formatDateTime(token.lastUsedAt) : 'never'}
             </span>
           ),
-        },
-        {
-          key: 'end',
-          head: 'Ends',
-          cell: (token) => <span className={pale(token)}>{tokenEndWords(token, now)}</span>,
         },
         {
           key: 'deeds',

@@ -10,8 +10,8 @@ export const tokenMay = ({ scope, team }: Pick<AccessToken, 'scope' | 'team'>): 
 export const hasEnded = ({ expiresAt, revokedAt }: AccessToken, now: Date): boolean =>
   revokedAt !== null || Date.parse(expiresAt) <= now.getTime();
 
-/** `1 Mar 2027`, or how it ended. */
+/** `ends 1 Mar 2027`, or how it ended. */
 export function tokenEndWords(token: AccessToken, now: Date): string {
   if (token.revokedAt) return `revoked ${formatDate(token.revokedAt)}`;
-  return hasEnded(token, now) ? `ran out ${formatDate(token.expiresAt)}` : formatDate(token.expiresAt);
+  return `${hasEnded(token, now) ? 'ran out' : 'ends'} ${formatDate(token.expiresAt)}`;
 }

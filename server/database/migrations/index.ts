@@ -10,7 +10,7 @@ import { Plants1796150000000 } from './1796150000000-plants.ts';
 import { Fits1796156000000 } from './1796156000000-fits.ts';
 import { StudyRuns1796161000000 } from './1796161000000-study-runs.ts';
 import { Briefs1796170000000 } from './1796170000000-briefs.ts';
-import { AccessTokens1796165000000 } from './1796165000000-access-tokens.ts';
+import { AccessTokens1796172000000 } from './1796172000000-access-tokens.ts';
 
 /** Every change of the schema, oldest first. One that has been released is never edited. */
 export const migrations = [
@@ -26,5 +26,5 @@ export const migrations = [
   Fits1796156000000,
   StudyRuns1796161000000,
   Briefs1796170000000,
-  AccessTokens1796165000000,
+  AccessTokens1796172000000,
 ];

@@ -1,8 +1,8 @@
 import type { MigrationInterface, QueryRunner } from 'typeorm';
 
 /** Keys that people make for their scripts. */
-export class AccessTokens1796165000000 implements MigrationInterface {
-  name = 'AccessTokens1796165000000';
+export class AccessTokens1796172000000 implements MigrationInterface {
+  name = 'AccessTokens1796172000000';
 
   async up(runner: QueryRunner): Promise<void> {
     await runner.query(`CREATE TABLE "access_token" (
