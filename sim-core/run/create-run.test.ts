@@ -63,8 +63,8 @@ describe('a run', () => {
   test.each([
     ['mean-field', '5b9892578f5f3864b4a2f4aa005010ca97cd6795f6a566e4cb30cc1e347c1c0e'],
     ['counts', '014f62bc95a4f698065d25c1dceba6d5a090ecbd8fbaf3ccef1730e24bded316'],
-  ] as const)('keeps the digest of engine 2.0.0 (%s)', (mode, digest) => {
-    expect(engineVersion).toBe('2.0.0');
+  ] as const)('keeps the digest of engine 2.1.0 (%s)', (mode, digest) => {
+    expect(engineVersion).toBe('2.1.0');
     expect(runAll({ spec: spec({ mode }), grid, ground: ground() }).result.digest).toBe(digest);
   });
 

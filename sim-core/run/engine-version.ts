@@ -1,2 +1,2 @@
 /** Changes whenever the same specification may come to another digest. */
-export const engineVersion = '2.0.0';
+export const engineVersion = '2.1.0';

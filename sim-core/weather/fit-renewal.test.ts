@@ -72,6 +72,32 @@ describe('recovers the renewal that made a record', () => {
     expect(renewal).toMatchObject({ sinceLatest: 3, depth: -3.98, between: 0 });
     expect(renewalOf(fitRenewal(some, -2)!, 1911).sinceLatest).toBe(6);
   });
+  test('droughts drawn from a fit last as long as those on record, and are of one year as often', () => {
+    const drawnLengths = (lengths: readonly number[]) => {
+      const chain = record(
+        lengths.flatMap((n) => [...new Array<number>(9).fill(0), ...new Array<number>(n).fill(-4)]).concat(0),
+      );
+      // The return interval is set wide, so that no drought is cut short by the next one.
+      const renewal: DroughtRenewal = {
+        ...renewalOf(fitRenewal(chain, -2)!, 2000),
+        returnInterval: { law: 'exponential', mean: 60 },
+      };
+      const draws = stream('lengths', 'weather/0');
+      const years = drawRenewal(renewal, 200_000, 1, () => ((draws.int32() >>> 0) + 0.5) / 2 ** 32);
+      const seen = recordDroughts(record(years, 2000), -2).droughts.map((drought) => drought.years);
+      return {
+        mean: seen.reduce((a, b) => a + b, 0) / seen.length,
+        ones: seen.filter((n) => n === 1).length / seen.length,
+      };
+    };
+    // Some 3,000 droughts are drawn: four standard errors of the share are 0.03; a few come so close that they join.
+    const short = drawnLengths([1, 1, 1, 2, 1, 1]);
+    expect(Math.abs(short.mean - 7 / 6)).toBeLessThan(0.06);
+    expect(Math.abs(short.ones - 5 / 6)).toBeLessThan(0.05);
+    const mixed = drawnLengths([1, 3, 2, 1, 4, 2, 2, 3, 1, 2]);
+    expect(Math.abs(mixed.mean - 2.1)).toBeLessThan(0.2);
+    expect(Math.abs(mixed.ones - 0.3)).toBeLessThan(0.08);
+  });
   test('mixed lengths get a law that rounds to them as often', () => {
     const chain = record(
       Array.from({ length: 400 }, (_, i) =>

@@ -10,7 +10,7 @@ import {
   type WaitingFit,
 } from './fit-waiting-law.ts';
 import { recordDroughts, type RecordDroughts } from './record-droughts.ts';
-import { chanceOfLonger } from './waiting-law.ts';
+import { meanWithin } from './waiting-law.ts';
 import type { YearIndex } from './yearly-record.ts';
 
 /** Beginnings of droughts that a fit takes at least. */
@@ -26,7 +26,7 @@ export interface RenewalFit {
   readonly interval: WaitingFit;
   /** share of intervals longer than so many years as seen, those still open counted as long as they were seen */
   readonly seen: readonly CurvePoint[];
-  /** of the length of a drought: fixed where all are as long */
+  /** of the length of a drought: fixed where all are about as long */
   readonly length: WaitingLaw;
   readonly depth: number;
   readonly depthSpread: number;
@@ -36,8 +36,8 @@ export interface RenewalFit {
 
 /**
  * Fits the return interval, length and depth of droughts at or below a threshold. Return intervals by maximum likelihood
- * with the open last interval and the first wait of each stretch (`logLikelihood`); lengths are whole years, so the law
- * of lengths is fitted to their chance of rounding to what was seen, S(n − ½) − S(n + ½).
+ * with the open last interval and the first wait of each stretch (`logLikelihood`); lengths by the chance that
+ * a drawn drought covers as many years as were seen (`lengthLikelihood`).
  *
  * @param years ascending
  * @returns undefined where fewer than `fewestBeginnings` droughts begin within the record
@@ -74,23 +74,32 @@ export function fitRenewal(years: readonly YearIndex[], threshold: number): Rene
   };
 }
 
-/** Likelihood of lengths in whole years; an open one lasted at least half a year less than was seen of it. */
-function lengthLikelihood(wait: FittedLaw, { whole, open }: SeenWaits): number {
+/**
+ * Likelihood of lengths in whole years as `drawRenewal` makes them: a drought of L years covers the middles of ⌊L⌋ or ⌈L⌉
+ * years, of L on average, as it begins at any time of a year. So it covers n or more with the chance ∫S from n − 1 to n.
+ * Droughts that cover none are never on record, and a law that makes them pays for it.
+ */
+function lengthLikelihood(wait: WaitingLaw, { whole, open }: Pick<SeenWaits, 'whole' | 'open'>): number {
   const safe = (chance: number) => log(Math.max(1e-300, chance));
+  const atLeast = (n: number) => meanWithin(wait, n) - meanWithin(wait, n - 1);
   return (
-    whole.reduce((s, n) => s + safe(chanceOfLonger(wait, n - 0.5) - chanceOfLonger(wait, n + 0.5)), 0) +
-    open.reduce((s, n) => s + safe(chanceOfLonger(wait, n - 0.5)), 0)
+    whole.reduce((s, n) => s + safe(atLeast(n) - atLeast(n + 1)), 0) +
+    open.reduce((s, n) => s + safe(atLeast(n)), 0)
   );
 }
 
+/** The law of lengths of lowest AIC: exponential, Weibull or gamma, or always as long, which then is the mean on record. */
 function fitLengths({ droughts }: RecordDroughts): WaitingLaw {
   const whole = droughts.filter(({ cutShort }) => !cutShort).map(({ years }) => years);
   const open = droughts.filter(({ cutShort }) => cutShort).map(({ years }) => years);
-  const [longest, shortest] = [Math.max(...whole, ...open), Math.min(...whole)];
-  if (whole.length < fewestBeginnings || longest === shortest)
-    return { law: 'fixed', years: whole.length > 0 ? moments(whole).mean : longest };
+  const longest = Math.max(...whole, ...open);
+  const fixed = { law: 'fixed', years: whole.length > 0 ? moments(whole).mean : longest } as const;
+  if (whole.length < fewestBeginnings || longest === Math.min(...whole)) return fixed;
   const seen = { whole, open, first: [], without: [] };
-  const fits = laws.flatMap((law) => fitWaitingLaw(law, seen, lengthLikelihood) ?? []);
+  const fits: { wait: WaitingLaw; aic: number }[] = [
+    { wait: fixed, aic: 2 - 2 * lengthLikelihood(fixed, seen) },
+    ...laws.flatMap((law) => fitWaitingLaw(law, seen, lengthLikelihood) ?? []),
+  ];
   return fits.reduce((a, b) => (b.aic < a.aic ? b : a)).wait;
 }
 

@@ -4,7 +4,7 @@ import { log } from '#sim-core/numeric/log.ts';
 import { power } from '#sim-core/numeric/power.ts';
 import type { WaitingLaw } from '#sim-core/spec/weather-source.ts';
 import { largestOf } from './largest-of.ts';
-import { chanceOfLonger, meanWait } from './waiting-law.ts';
+import { chanceOfLonger, meanWait, meanWithin } from './waiting-law.ts';
 
 /** Waits that were seen, years. All lists may be empty. */
 export interface SeenWaits {
@@ -46,7 +46,7 @@ export function logLikelihood(wait: FittedLaw, { whole, open, first, without }: 
     whole.reduce((sum, t) => sum + logDensity(wait, t), 0) +
     open.reduce((sum, t) => sum + survival(t), 0) +
     first.reduce((sum, t) => sum + survival(t) - log(mean), 0) +
-    without.reduce((sum, t) => sum + log(Math.max(1e-300, 1 - meanBelow(wait, t) / mean)), 0)
+    without.reduce((sum, t) => sum + log(Math.max(1e-300, 1 - meanWithin(wait, t) / mean)), 0)
   );
 }
 
@@ -61,17 +61,6 @@ function logDensity(wait: FittedLaw, t: number): number {
     case 'gamma':
       return (wait.shape - 1) * log(t) - t / wait.scale - wait.shape * log(wait.scale) - logGamma(wait.shape);
   }
-}
-
-/** ∫_0^t S, by Simpson's rule on 200 parts. */
-function meanBelow(wait: FittedLaw, t: number): number {
-  const parts = 200;
-  let sum = 0;
-  for (let i = 0; i <= parts; i++) {
-    const weight = i === 0 || i === parts ? 1 : i % 2 === 1 ? 4 : 2;
-    sum += weight * chanceOfLonger(wait, (t * i) / parts);
-  }
-  return (sum * t) / parts / 3;
 }
 
 /** The law of a kind with a given mean; `shape` is not read of an exponential one. */

@@ -68,16 +68,17 @@ test('the first drought comes within n years with the chance of its law', () => 
         length: fixed(1),
         ...given,
       };
-      // A drought of one year from time t on takes the step whose middle lies in it: years + ½ steps' worth of time.
+      // A drought of one year from time t on takes the step whose middle lies in it, and until the middle of the survey
+      // year none began: exactly `years` years in which one may.
       if (drawRenewal(renewal, years, 1, uniformOf('first', replicate)).some((x) => x < 0)) hits++;
     }
     return hits / 4000;
   };
   const error = 4 * Math.sqrt(0.25 / 4000);
-  expect(Math.abs(within({}, 10) - (1 - Math.exp(-9.5 / 10)))).toBeLessThan(error);
-  // Weibull of shape 2 and scale 10, of which 7 years have passed: S(16.5) / S(7)
+  expect(Math.abs(within({}, 10) - (1 - Math.exp(-10 / 10)))).toBeLessThan(error);
+  // Weibull of shape 2 and scale 10, of which 6.5 years are known to have passed: S(16.5) / S(6.5)
   const aged = within({ returnInterval: { law: 'weibull', shape: 2, scale: 10 } }, 10);
-  expect(Math.abs(aged - (1 - Math.exp(0.7 ** 2 - 1.65 ** 2)))).toBeLessThan(error);
+  expect(Math.abs(aged - (1 - Math.exp(0.65 ** 2 - 1.65 ** 2)))).toBeLessThan(error);
 });
 
 test('depths have their spread and are never milder than other times', () => {
@@ -101,3 +102,29 @@ test('depths have their spread and are never milder than other times', () => {
   expect(Math.abs(cut - 0.158655)).toBeLessThan(4 * Math.sqrt((0.159 * 0.841) / depths.length));
   expect(x.filter((_, i) => i % 2 === 1).every((d) => d === -0.5)).toBe(true);
 });
+
+test.each([1, 4])(
+  'without memory, a drought is as likely in the first step as in any later one: %i steps a year',
+  (perYear) => {
+    const steps = 8;
+    const dry = new Array<number>(steps).fill(0);
+    const futures = 6000;
+    for (let replicate = 0; replicate < futures; replicate++)
+      drawRenewal(
+        // Droughts of one step each, so that none that shows in the survey could still last.
+        {
+          returnInterval: exponential(6 / perYear),
+          sinceLatest: 5,
+          depth: -4,
+          length: fixed(1 / perYear),
+        },
+        steps,
+        perYear,
+        uniformOf('stationary', replicate),
+      ).forEach((x, step) => (dry[step] += x < 0 ? 1 : 0));
+    // A step is dry when a drought began in the step's length of time up to its middle: 1 − e^(−1/6) = 0.1535.
+    const chance = 1 - Math.exp(-1 / 6);
+    const error = 4 * Math.sqrt((chance * (1 - chance)) / futures);
+    for (const count of dry) expect(Math.abs(count / futures - chance)).toBeLessThan(error);
+  },
+);

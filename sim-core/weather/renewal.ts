@@ -10,6 +10,10 @@ import { remainingWait, waitExceededWith } from './waiting-law.ts';
  * Each drought takes the same three draws (how deep, how long, when the next one begins), in order of time, so a longer
  * horizon begins with the same years.
  *
+ * A drought is seen once the middle of a step is dry, so what is known at the survey is that none began up to the middle
+ * of the last step before it: the wait for the next one goes on from there. Under the exponential law the chance that a
+ * drought begins to show is then the same in the first step as in any other. A fixed interval is taken as known exactly.
+ *
  * @param uniform draws strictly between 0 and 1
  * @param clock by which droughts come back where a trend makes them more or less frequent; lengths stay as they are
  * @returns Float64, one value a step
@@ -28,15 +32,15 @@ export function drawRenewal(
   let begins = -sinceLatest;
   /** the same on the clock of droughts */
   let time = -sinceLatest;
-  let waited = sinceLatest;
+  let waited = returnInterval.law === 'fixed' ? sinceLatest : Math.max(0, sinceLatest - 0.5 / stepsPerYear);
   while (stepFrom(begins) < steps) {
     const index = Math.min(between, depth + depthSpread * normalQuantile(uniform()));
     const ends = begins + waitExceededWith(length, uniform());
     const wait = uniform();
-    time =
+    time +=
       waited > 0
-        ? remainingWait(returnInterval, waited, wait)
-        : time + waitExceededWith(returnInterval, wait);
+        ? waited + remainingWait(returnInterval, waited, wait)
+        : waitExceededWith(returnInterval, wait);
     waited = 0;
     const next = clock.yearsAt(time);
     indices.fill(index, stepFrom(begins), stepFrom(Math.min(ends, next)));

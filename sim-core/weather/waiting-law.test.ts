@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { chanceOfLonger, meanWait, remainingWait, waitExceededWith } from './waiting-law.ts';
+import { chanceOfLonger, meanWait, meanWithin, remainingWait, waitExceededWith } from './waiting-law.ts';
 import type { WaitingLaw } from '#sim-core/spec/weather-source.ts';
 
 const weibull = (shape: number, scale: number): WaitingLaw => ({ law: 'weibull', shape, scale });
@@ -72,4 +72,21 @@ test('what is still to wait after waiting: the same law without memory, sooner w
   expect(remainingWait({ law: 'fixed', years: 10 }, 4, 0.1)).toBe(6);
   expect(remainingWait({ law: 'fixed', years: 10 }, 40, 0.1)).toBe(0);
   expect(remainingWait(weibull(30, 1), 100, 0.5)).toBe(0);
+});
+
+test.each([
+  { law: 'fixed', years: 2.5 },
+  { law: 'exponential', mean: 3 },
+  { law: 'weibull', shape: 0.6, scale: 3 },
+  { law: 'weibull', shape: 9, scale: 3 },
+  { law: 'gamma', shape: 0.7, scale: 2 },
+  { law: 'gamma', shape: 12, scale: 0.3 },
+] as const)('the mean within some years is the area under the chance of longer: $law', (law) => {
+  for (const years of [0.7, 3, 20]) {
+    const parts = 20_000;
+    let area = 0;
+    for (let i = 0; i < parts; i++) area += chanceOfLonger(law, ((i + 0.5) * years) / parts);
+    expect(meanWithin(law, years)).toBeCloseTo((area * years) / parts, 3);
+  }
+  expect(meanWithin(law, 0)).toBe(0);
 });

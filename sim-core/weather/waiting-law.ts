@@ -32,6 +32,28 @@ export function chanceOfLonger(wait: WaitingLaw, years: number): number {
   }
 }
 
+/**
+ * Mean of the part of a wait that falls into its first `years` years, ∫₀^years S. Of the Weibull law
+ * scale Γ(1 + 1/shape) P(1/shape, (years/scale)^shape), of the gamma law years S + shape scale P(shape + 1, years/scale),
+ * P the lower incomplete gamma function (by integration; cf. NIST Digital Library of Mathematical Functions, chapter 8).
+ */
+export function meanWithin(wait: WaitingLaw, years: number): number {
+  if (!(years > 0)) return 0;
+  switch (wait.law) {
+    case 'fixed':
+      return Math.min(years, wait.years);
+    case 'exponential':
+      return wait.mean * (1 - exp(-years / wait.mean));
+    case 'weibull':
+      return meanWait(wait) * (1 - gammaAbove(1 / wait.shape, power(years / wait.scale, wait.shape)));
+    case 'gamma':
+      return (
+        years * chanceOfLonger(wait, years) +
+        meanWait(wait) * (1 - gammaAbove(wait.shape + 1, years / wait.scale))
+      );
+  }
+}
+
 /** Years that are exceeded with the given chance, strictly between 0 and 1; falls as the chance rises. */
 export function waitExceededWith(wait: WaitingLaw, chance: number): number {
   switch (wait.law) {
