@@ -77,8 +77,8 @@ export interface OutlookWeather {
 }
 
 /**
- * What an outlook brings to the runs of an ensemble, whose weather may be drawn, or to a single run, which has the listed
- * years: droughts that come more often then say nothing.
+ * What an outlook brings to the runs of an ensemble and to a run of one of its futures, whose weather may be drawn, or to
+ * a run of the listed years: droughts that come more often then say nothing.
  */
 export function outlookWeather(outlook: Outlook, of: 'ensemble' | 'single run'): OutlookWeather {
   const { drawn, droughtIndex, trend, losses, grazing, surveyYear, years } = outlook;

@@ -31,6 +31,22 @@ export const runSummarySchema = z.object({
 });
 export type RunSummary = z.infer<typeof runSummarySchema>;
 
+/** Which of the site's outlooks and which plant a run took, as they were called when it was started. */
+export const runOriginsSchema = z.object({
+  /** null where none of the site's outlooks brings this weather */
+  outlook: z.object({ name: z.string(), weather: z.enum(['listed', 'drawn']) }).nullable(),
+  plant: z.object({
+    name: z.string(),
+    /** the profile that it was taken from, its version where it is one of the team's, and whether it was changed since */
+    profile: z
+      .object({ name: z.string(), version: z.number().int().nullable(), changed: z.boolean() })
+      .nullable(),
+    /** whether the run has the rates of the site's plant; a future of a comparison may have drawn its own */
+    asSet: z.boolean(),
+  }),
+});
+export type RunOrigins = z.infer<typeof runOriginsSchema>;
+
 export const runSchema = runSummarySchema.extend({
   spec: runSpecSchema,
   grid: gridSchema,
@@ -54,6 +70,8 @@ export const runSchema = runSummarySchema.extend({
   storedYears: z.array(z.number().int()),
   /** where belief outran data when it was started */
   cautions: z.array(cautionSchema),
+  /** null for runs that were started before this was kept */
+  origins: runOriginsSchema.nullable(),
   hasClosing: z.boolean(),
   result: runResultSchema.nullable(),
 });

@@ -69,7 +69,7 @@ export function DrawnWeatherSection(props: {
   return (
     <section aria-labelledby="drawn-weather" className="mb-4 border-y border-rule py-3 text-[13.5px]">
       <h2 id="drawn-weather" className="text-lead">
-        In ensembles
+        In runs and ensembles
       </h2>
       <p className="mt-1 leading-[2]">
         Each future{' '}

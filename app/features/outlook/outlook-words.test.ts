@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { listYears, outlookWords, yearEffect } from './outlook-words.ts';
+import { drawnOutlookWords, listYears, outlookWords, yearEffect } from './outlook-words.ts';
 
 const tolerances = { open: -2.3, mound: -4.2 };
 const series = (...values: number[]) => values.map((index, i) => ({ year: 2027 + i, index }));
@@ -44,4 +44,23 @@ it('says what one year does', () => {
   expect(yearEffect(-2, tolerances)).toBe('open marsh bears it');
   expect(yearEffect(-3, tolerances)).toBe('kills open marsh, not near a mound');
   expect(yearEffect(-5, tolerances)).toBe('kills marsh, also near a mound');
+});
+
+it('speaks of drawn futures where the weather is drawn, and of the listed years as what they are', () => {
+  const futures = {
+    futures: 1000,
+    lines: [
+      { below: -2, inYear: [0.5, 0.5], byThen: [0.5, 0.99] },
+      { below: -4, inYear: [0.1, 0.1], byThen: [0.1, 0.19] },
+    ],
+  };
+  const series = [
+    { year: 2027, index: 0 },
+    { year: 2028, index: 0 },
+  ];
+  const words = drawnOutlookWords(futures, series, { open: -2, mound: -4 }).join(' ');
+  expect(words).toContain('By 2028, a year dry enough to kill open marsh comes in 99 % of futures');
+  expect(words).toContain('near a mound too in 19 %');
+  expect(words).toContain('none of the 2 would kill open marsh');
+  expect(words).not.toContain('without a drought');
 });

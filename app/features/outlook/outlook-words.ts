@@ -1,4 +1,5 @@
-import { formatCounted } from '#app/lib/formats.ts';
+import { formatCounted, formatNumber } from '#app/lib/formats.ts';
+import type { DrawnFutures } from '#sim-core/weather/drawn-futures.ts';
 
 /** Drought indices below which plants die: alone on open marsh, and on a full refuge. */
 export interface Tolerances {
@@ -67,6 +68,37 @@ export function outlookWords(series: readonly YearIndex[], tolerances: Tolerance
           ? 'no drought ends it within this outlook.'
           : 'what has not closed by then starts again from its footholds.'),
     );
+  return words;
+}
+
+/**
+ * What weather that is drawn means for the plant, one sentence each; the listed years come after it, as what they are.
+ *
+ * @param futures undefined until they are drawn
+ */
+export function drawnOutlookWords(
+  futures: Pick<DrawnFutures, 'futures' | 'lines'> | undefined,
+  series: readonly YearIndex[],
+  tolerances: Tolerances,
+): string[] {
+  const last = series[series.length - 1].year;
+  const words = [
+    'The weather is drawn: runs and comparisons take futures of it, each with its own droughts.',
+  ];
+  if (futures) {
+    const [open, mound] = futures.lines.map(({ byThen }) => formatNumber(100 * byThen[byThen.length - 1], 0));
+    words.push(
+      `By ${last}, a year dry enough to kill open marsh comes in ${open} % of futures, and one that kills near a mound too in ${mound} %.`,
+    );
+  }
+  const listed = series.filter(({ index }) => index < tolerances.open).map(({ year }) => year);
+  words.push(
+    `The listed years act only where a run is told to take them: ${
+      listed.length === 0
+        ? `none of the ${series.length} would kill open marsh.`
+        : `${listed.length} of ${formatCounted(series.length, 'year')} would kill open marsh, ${listYears(listed)}.`
+    }`,
+  );
   return words;
 }
 

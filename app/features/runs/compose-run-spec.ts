@@ -1,7 +1,7 @@
 import { layerOf, layerSources } from '#contract/layer-sources.ts';
 import { runActions, type WorkInput } from '#contract/works.ts';
 import { valueUnitScale } from '#contract/layers.ts';
-import { outlookWeather } from '#contract/outlooks.ts';
+import { outlookWeather, type Outlook } from '#contract/outlooks.ts';
 import type { Site } from '#contract/sites.ts';
 import { gridProblems } from '#sim-core/run/grid-problems.ts';
 import { fieldProblems, type FieldProblem } from '#sim-core/spec/problems.ts';
@@ -11,6 +11,10 @@ import { runSpecSchema, runSpecVersion, type Mode, type RunSpec } from '#sim-cor
 export interface RunChoices {
   readonly mode: Mode;
   readonly seed: string;
+  /** one of the site's outlooks; the main one unless said */
+  readonly outlook?: Outlook;
+  /** the future of an outlook that draws its weather, counted from 1; the listed years unless said */
+  readonly future?: number | undefined;
   /** outlooks of a comparison say each for itself whether the plant's grazers come; then they are kept */
   readonly keepGrazers?: boolean;
 }
@@ -33,16 +37,20 @@ export type Composition =
 export function composeRunSpec(
   site: Site,
   option: { readonly works: readonly WorkInput[] },
-  { mode, seed, keepGrazers = false }: RunChoices,
+  { mode, seed, keepGrazers = false, outlook = site.outlook, future }: RunChoices,
 ): Composition {
   const missing = missingGround(site);
   if (missing.length > 0) return { problems: missing };
-  const { surveyYear, years, stepsPerYear, boundary } = site.outlook;
-  const { droughtIndex, trend, losses, grazing } = outlookWeather(site.outlook, 'single run');
+  const { surveyYear, years, stepsPerYear, boundary } = outlook;
+  const { droughtIndex, trend, losses, grazing } = outlookWeather(
+    outlook,
+    future === undefined ? 'single run' : 'ensemble',
+  );
   const parsed = runSpecSchema.safeParse({
     version: runSpecVersion,
     mode,
     seed: seed.trim(),
+    ...(future !== undefined && { replicate: future - 1 }),
     surveyYear,
     years,
     stepsPerYear,
@@ -94,6 +102,7 @@ const places: readonly [prefix: string, mend: MendingPlace][] = [
   ['actions', 'options'],
   ['seed', 'form'],
   ['mode', 'form'],
+  ['replicate', 'form'],
 ];
 
 function placed(problem: FieldProblem): CompositionProblem {

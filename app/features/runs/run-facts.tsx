@@ -5,6 +5,7 @@ import { RasterHashes } from '#app/components/raster-hashes.tsx';
 import { formatArea, formatDateTime, formatNumber, formatShare } from '#app/lib/formats.ts';
 import type { YearRecord } from '#app/yearline/year-records.ts';
 import { lossWords, trendWords } from './outlook-in-words.ts';
+import { outlookOfRun, plantOfRun } from './origins-in-words.ts';
 import { lossesIn, type YearLosses } from './run-series.ts';
 import { modeWords } from './run-words.ts';
 import { surveyedInWords } from './surveyed-places.ts';
@@ -78,6 +79,8 @@ export function RunFacts({ run, result }: { run: Run; result: RunResult | undefi
       <h2 className="mb-1 text-body font-bold">What decided it</h2>
       <dl className="grid grid-cols-[92px_minmax(0,1fr)] gap-x-3 gap-y-1 text-note">
         <Fact name="option">{run.optionName}</Fact>
+        <Fact name="outlook">{outlookOfRun(run)}</Fact>
+        {run.origins && <Fact name="plant">{plantOfRun(run.origins.plant)}</Fact>}
         <Fact name="seed">
           <span className="font-mono">{spec.seed}</span>
         </Fact>

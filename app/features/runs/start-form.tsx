@@ -13,6 +13,8 @@ import type { Mode, RunSpec } from '#sim-core/spec/run-spec.ts';
 import { composeRunSpec } from './compose-run-spec.ts';
 import { CompositionProblems } from './composition-problems.tsx';
 import { randomSeed } from './random-seed.ts';
+import { mostFutures, readFuture } from './read-future.ts';
+import { RunOutlook } from './run-outlook.tsx';
 import { estimateSeconds } from './run-pace.ts';
 import { modeWords } from './run-words.ts';
 
@@ -45,19 +47,34 @@ export function StartForm(props: {
   const [drawnSeed] = useState(() => randomSeed());
   const [typedSeed, setSeed] = useState<string>();
   const [mode, setMode] = useState<Mode>('counts');
+  const [outlookId, setOutlookId] = useState<string>();
+  const [listed, setListed] = useState(false);
+  const [typedFuture, setFuture] = useState('1');
+  const outlook = site.otherOutlooks.find(({ id }) => id === outlookId) ?? site.outlook;
+  const takesDrawn = outlook.drawn !== null && !listed;
+  const future = readFuture(typedFuture);
+  const futureProblem =
+    takesDrawn && future === undefined
+      ? `Found “${typedFuture}” as the future; a whole number from 1 to ${formatCount(mostFutures)} is expected.`
+      : undefined;
   // Options share the luck of Wait unless the person says otherwise.
   const seed = typedSeed ?? (option.wait ? undefined : waitRun?.seed) ?? drawnSeed;
   const sharesLuck = waitRun !== undefined && !option.wait && seed === waitRun.seed && mode === 'counts';
   const name = typed ?? freeName(option.name, names);
-  const { surveyYear, years, stepsPerYear } = site.outlook;
-  const composed = composeRunSpec(site, option, { mode, seed });
+  const { surveyYear, years, stepsPerYear } = outlook;
+  const composed = composeRunSpec(site, option, {
+    mode,
+    seed,
+    outlook,
+    future: takesDrawn ? (future ?? 1) : undefined,
+  });
   const problems = composed.problems ?? [];
   const nameProblem = name.trim() === '' ? 'Give the run a name.' : undefined;
   const ownProblems = problems.filter((problem) => problem.mend === 'form');
   const cells = site.grid.width * site.grid.height;
   const seconds = estimateSeconds(mode, cells, years * stepsPerYear);
   const start = () => {
-    if (composed.spec && !nameProblem)
+    if (composed.spec && !nameProblem && !futureProblem)
       props.onStart({ name: name.trim(), optionId: option.id, spec: composed.spec });
   };
   return (
@@ -84,6 +101,13 @@ export function StartForm(props: {
         </BlankSelect>
         <span>from the survey of {surveyYear} to</span>
         <b>{surveyYear + years}</b>
+        <RunOutlook
+          {...{ site, outlook, listed, futureProblem }}
+          future={typedFuture}
+          onOutlook={setOutlookId}
+          onListed={setListed}
+          onFuture={setFuture}
+        />
         <span>with the seed</span>
         <Blank
           label="Seed, from which every draw of chance follows"
@@ -129,8 +153,13 @@ export function StartForm(props: {
       {sharesLuck && (
         <p className="mt-1 text-note text-ink-2">
           {waitRun.mode === mode
-            ? `The seed is that of “${waitRun.name}”, so both share their luck: under the same outlook, what differs is what the works did.`
+            ? `The seed is that of “${waitRun.name}”, so both share their luck: under the same outlook${outlook.drawn ? ' and in the same future' : ''}, what differs is what the works did.`
             : `The seed is that of “${waitRun.name}”, but that run was without chance, so they do not share their luck.`}
+        </p>
+      )}
+      {futureProblem && (
+        <p role="alert" className="mt-1 text-note text-danger">
+          {futureProblem}
         </p>
       )}
       <CompositionProblems problems={problems} nameProblem={nameProblem} site={site} optionId={option.id} />
@@ -154,7 +183,7 @@ export function StartForm(props: {
           type="submit"
           busy={props.busy}
           busyLabel="Starting"
-          disabled={composed.spec === undefined || nameProblem !== undefined}
+          disabled={composed.spec === undefined || nameProblem !== undefined || futureProblem !== undefined}
         >
           Start the run
         </Button>

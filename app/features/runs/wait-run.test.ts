@@ -7,7 +7,7 @@ import { checkWords, recoveryWords, recoveryYears, statusWords } from './run-wor
 import { randomSeed } from './random-seed.ts';
 import type { LiveRun } from './run-manager.ts';
 import { siteFixture } from './testing/site-fixture.ts';
-import { sameOutlook, waitRunFor } from './wait-run.ts';
+import { sameOutlook, waitRunsFor } from './wait-run.ts';
 
 const summary = (more: Partial<RunSummary>) =>
   ({
@@ -45,13 +45,24 @@ describe('the run of Wait beside another', () => {
       summary({ id: 'd', mode: 'mean-field' }),
       summary({ id: 'e', optionId: 'other' }),
     ];
-    expect(waitRunFor(mine, [...others, good], 'wait')).toBe(good);
-    expect(waitRunFor(mine, others, 'wait')).toBeUndefined();
-    expect(waitRunFor(good, [summary({ id: 'x' })], 'wait')).toBeUndefined();
+    const older = summary({ id: 'older' });
+    expect(waitRunsFor(mine, [...others, good, older], 'wait')).toEqual([good, older]);
+    expect(waitRunsFor(mine, others, 'wait')).toEqual([]);
+    expect(waitRunsFor(good, [summary({ id: 'x' })], 'wait')).toEqual([]);
   });
   it('differs in nothing but its works', () => {
     expect(sameOutlook(specOf('s', 1002), specOf('s'))).toBe(true);
     expect(sameOutlook(specOf('s', 1002), specOf('t'))).toBe(false);
+  });
+  it('lives through the same future of an outlook that draws its weather', () => {
+    const site = siteFixture();
+    const drawn = { kind: 'palmer-type', standardDeviation: 2 } as const;
+    const outlook = { ...site.outlook, drawn };
+    const spec = (future?: number) =>
+      composeRunSpec(site, { works: [] }, { mode: 'counts', seed: 's', outlook, future }).spec!;
+    expect(sameOutlook(spec(2), spec(2))).toBe(true);
+    expect(sameOutlook(spec(2), spec(3))).toBe(false);
+    expect(sameOutlook(spec(1), spec())).toBe(false);
   });
 });
 

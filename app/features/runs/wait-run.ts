@@ -24,24 +24,29 @@ export function sameOutlook(a: RunSpec, b: RunSpec): boolean {
   return part(a) === part(b);
 }
 
+/** Most runs of Wait that are fetched to find the one that shares weather and luck. */
+const mostCandidates = 6;
+
 /**
- * The run of Wait to set beside a run: the newest finished one that, as far as the list tells, may share its outlook
- * and luck. `sameOutlook` on the whole run says whether it does.
+ * The runs of Wait that may be set beside a run: the newest finished ones that, as far as the list tells, may share its
+ * outlook, future and luck. `sameOutlook` on the whole run says which one does.
  */
-export function waitRunFor(
+export function waitRunsFor(
   run: Pick<Run, 'id' | 'optionId' | 'seed' | 'mode' | 'surveyYear' | 'years'>,
   runs: readonly RunSummary[],
   waitId: string | undefined,
-): RunSummary | undefined {
-  if (waitId === undefined || run.optionId === waitId) return undefined;
-  return runs.find(
-    (other) =>
-      other.id !== run.id &&
-      other.optionId === waitId &&
-      other.status === 'finished' &&
-      other.seed === run.seed &&
-      other.mode === run.mode &&
-      other.surveyYear === run.surveyYear &&
-      other.years === run.years,
-  );
+): RunSummary[] {
+  if (waitId === undefined || run.optionId === waitId) return [];
+  return runs
+    .filter(
+      (other) =>
+        other.id !== run.id &&
+        other.optionId === waitId &&
+        other.status === 'finished' &&
+        other.seed === run.seed &&
+        other.mode === run.mode &&
+        other.surveyYear === run.surveyYear &&
+        other.years === run.years,
+    )
+    .slice(0, mostCandidates);
 }

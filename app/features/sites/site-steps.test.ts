@@ -76,6 +76,10 @@ describe('siteSteps', () => {
     expect(
       step('outlook', { outlookSet: true, outlook: { ...two, droughtIndex: [0, 1], drawn: null } }).state,
     ).toBe('2 years, no drought');
+    const drawn = { kind: 'palmer-type', standardDeviation: 2 } as const;
+    expect(
+      step('outlook', { outlookSet: true, outlook: { ...two, droughtIndex: [0, 1], drawn } }).state,
+    ).toBe('2 years, weather drawn');
   });
 
   it('counts options beside Wait, and runs that are under way', () => {

@@ -86,6 +86,7 @@ export function killingYears(
 function outlookState({ outlook, outlookSet, plant }: StatedSite): State {
   const years = formatCounted(outlook.years, 'year');
   if (!outlookSet) return ['not yet looked at', 0];
+  if (outlook.drawn) return [`${years}, weather drawn`, 1];
   const killing = killingYears(outlook, plant.rates.tolerance);
   if (killing.length === 0) return [`${years}, no drought`, 1];
   return [`${years}, ${killing.length === 1 ? `drought ${killing[0]}` : `${killing.length} of drought`}`, 1];

@@ -23,7 +23,7 @@ import {
   type OutlookEvent,
 } from '#app/features/outlook/outlook-draft.ts';
 import { OutlookSentence } from '#app/features/outlook/outlook-sentence.tsx';
-import { outlookWords, type Tolerances } from '#app/features/outlook/outlook-words.ts';
+import { drawnOutlookWords, outlookWords, type Tolerances } from '#app/features/outlook/outlook-words.ts';
 import { SeriesDialog } from '#app/features/outlook/series-dialog.tsx';
 import { useWeatherWork } from '#app/features/outlook/use-weather-work.ts';
 import { YearTable } from '#app/features/outlook/year-table.tsx';
@@ -158,7 +158,10 @@ export function Page() {
         <>
           <h1 className="text-lead">Outlook</h1>
           <div className="mb-3 text-[13.5px]">
-            {outlookWords(acting, tolerances).map((sentence) => (
+            {(outlook?.drawn
+              ? drawnOutlookWords(futures, acting, tolerances)
+              : outlookWords(acting, tolerances)
+            ).map((sentence) => (
               <p key={sentence} className="mt-1">
                 {sentence}
               </p>
@@ -166,7 +169,8 @@ export function Page() {
             <p className="mt-1.5 text-note text-ink-2">
               Dry enough to kill: below {formatNumber(tolerances.open)} on open marsh and{' '}
               {formatNumber(tolerances.mound)} on a full refuge, where more than half of the drought loss of{' '}
-              {site.plant.name} acts. Full neighbours add {formatNumber(site.plant.rates.neighbourShift)}.
+              {site.plant.name} acts. A plant with full cover around it bears an index lower by{' '}
+              {formatNumber(site.plant.rates.neighbourShift)}.
               {mayKeepGround
                 ? ' Drag a bar, or type below.'
                 : ' Modellers and admins of the team change the outlook.'}

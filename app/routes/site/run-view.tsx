@@ -1,4 +1,4 @@
-import { useQuery } from '@tanstack/react-query';
+import { useQueries, useQuery } from '@tanstack/react-query';
 import { useMemo, useState } from 'react';
 import { useNavigate, useSearchParams } from 'react-router-dom';
 import type { Run } from '#contract/runs.ts';
@@ -15,7 +15,7 @@ import { isAtWork, type LiveRun } from '#app/features/runs/run-manager.ts';
 import { driestByYear } from '#app/features/runs/run-series.ts';
 import { recoveryYears } from '#app/features/runs/run-words.ts';
 import { useFrame } from '#app/features/runs/use-frame.ts';
-import { sameOutlook, waitRunFor } from '#app/features/runs/wait-run.ts';
+import { sameOutlook, waitRunsFor } from '#app/features/runs/wait-run.ts';
 import { yearRecords } from '#app/yearline/year-records.ts';
 import { Yearline } from '#app/yearline/Yearline.tsx';
 import { YearlineTable } from '#app/yearline/YearlineTable.tsx';
@@ -166,13 +166,15 @@ function useWaitCompare(run: Run) {
   const options = useQuery(optionsQuery(run.siteId)).data;
   const runs = useQuery(runsQuery(run.siteId)).data?.runs;
   const waitId = options?.find(({ wait }) => wait)?.id;
-  const candidate = waitRunFor(run, runs ?? [], waitId);
-  const wait = useQuery({ ...runQuery(candidate?.id ?? ''), enabled: candidate !== undefined }).data;
+  const found = useQueries({
+    queries: waitRunsFor(run, runs ?? [], waitId).map(({ id }) => runQuery(id)),
+  });
+  const wait = found.map(({ data }) => data).find((other) => other && sameOutlook(other.spec, run.spec));
   return useMemo(
     () =>
-      wait?.result && sameOutlook(wait.spec, run.spec)
+      wait?.result
         ? { label: 'Wait', records: yearRecords(wait.result.series), recovery: recoveryYears(wait) }
         : undefined,
-    [wait, run.spec],
+    [wait],
   );
 }

@@ -30,6 +30,8 @@ export interface RunRow {
   check: string | null;
   /** JSON: where belief outran data when it was started */
   cautions: string;
+  /** JSON: outlook and plant by name; null for runs from before this was kept */
+  origins: string | null;
 }
 
 export const RunEntity = new EntitySchema<RunRow>({
@@ -59,6 +61,7 @@ export const RunEntity = new EntitySchema<RunRow>({
     startedBy: { type: 'text' },
     check: { type: 'text', nullable: true },
     cautions: { type: 'text', default: '[]' },
+    origins: { type: 'text', nullable: true },
   },
   indices: [
     { name: 'run_by_site', columns: ['siteId', 'startedAt'] },

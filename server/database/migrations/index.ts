@@ -11,6 +11,7 @@ import { Fits1796156000000 } from './1796156000000-fits.ts';
 import { StudyRuns1796161000000 } from './1796161000000-study-runs.ts';
 import { Briefs1796170000000 } from './1796170000000-briefs.ts';
 import { AccessTokens1796172000000 } from './1796172000000-access-tokens.ts';
+import { RunOrigins1796174000000 } from './1796174000000-run-origins.ts';
 
 /** Every change of the schema, oldest first. One that has been released is never edited. */
 export const migrations = [
@@ -27,4 +28,5 @@ export const migrations = [
   StudyRuns1796161000000,
   Briefs1796170000000,
   AccessTokens1796172000000,
+  RunOrigins1796174000000,
 ];

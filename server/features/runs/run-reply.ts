@@ -1,5 +1,11 @@
 import { z } from 'zod';
-import { runStatuses, runSummarySchema, type Run, type RunSummary } from '#contract/runs.ts';
+import {
+  runOriginsSchema,
+  runStatuses,
+  runSummarySchema,
+  type Run,
+  type RunSummary,
+} from '#contract/runs.ts';
 import { gridSchema } from '#contract/grid.ts';
 import { layerFactsSchema, layerPartSchema } from '#contract/layers.ts';
 import { cautionSchema } from '#sim-core/spec/caution.ts';
@@ -74,6 +80,7 @@ export async function runReply(manager: Manager, runId: string): Promise<Run> {
     ),
     storedYears: frames.map((frame) => frame.year),
     cautions: readJson(z.array(cautionSchema), run.cautions),
+    origins: run.origins === null ? null : readJson(runOriginsSchema, run.origins),
     hasClosing: run.closingHash !== null,
     result: run.result === null ? null : readJson(runResultSchema, run.result),
   };

@@ -15,6 +15,7 @@ import { recordYears } from '#server/specs/drought-record.ts';
 import { releaseBlobs } from '#server/files/stored-files.ts';
 import { fieldProblem, notFound, ProblemError, refuseFields } from '#server/middleware/problem-error.ts';
 import type { Services } from '#server/services.ts';
+import { runOrigins } from './run-origins.ts';
 import { requireRun, runReply } from './run-reply.ts';
 import { deleteRunRows, findOption, findSite, framesOfRun, insertRun, updateRun } from './run.repository.ts';
 
@@ -66,6 +67,7 @@ export async function startRun(
           published: publishedSpeed(readJson(plantSchema, site.plant)),
         }),
       ),
+      origins: JSON.stringify(await runOrigins(manager, site, spec)),
     };
     await insertRun(
       manager,

@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Run } from '#contract/runs.ts';
 import type { Site } from '#contract/sites.ts';
+import type { RunSpec } from '#sim-core/spec/run-spec.ts';
 import { decodeCellValues } from '#rasters/cells/cell-values.ts';
 import { binaryReply } from '#server/testing/binary-reply.ts';
 import { makeTeam, type TestTeam } from '#server/testing/people.ts';
@@ -58,6 +59,28 @@ describe('a run', () => {
     }
     const closing = await binaryReply(trainer.get(`/api/runs/${id}/closing`)).expect(200);
     expect(decodeCellValues(closing.body as Buffer).values).toEqual(computed.closing);
+  });
+
+  it('names the outlook and the plant that it took, and no outlook where none brings its weather', async () => {
+    const { manager } = team.agents;
+    const drawn = { kind: 'palmer-type', standardDeviation: 2 } as const;
+    const own = await makeSite(team.agents.modeller, team.teamId);
+    const outlook = { ...own.outlook, name: 'Dry decades', drawn };
+    await team.agents.modeller.put(`/api/sites/${own.id}/outlook`).send(outlook).expect(200);
+    const from = { ...own.outlook, rates: own.plant.rates };
+    const { surveyYear, years, stepsPerYear, droughtIndex, rates } = from;
+    const taken = async (weather: Partial<RunSpec>) => {
+      const spec = specFor(own, { surveyYear, years, stepsPerYear, rates, ...weather });
+      return (await openRun(manager, own, spec)).origins;
+    };
+    expect(await taken({ droughtIndex: drawn, replicate: 2 })).toEqual({
+      outlook: { name: 'Dry decades', weather: 'drawn' },
+      plant: { name: own.plant.name, profile: null, asSet: true },
+    });
+    expect((await taken({ droughtIndex }))?.outlook).toEqual({ name: 'Dry decades', weather: 'listed' });
+    expect((await taken({ droughtIndex: -1 }))?.outlook).toBeNull();
+    const slower = { ...rates, lateralSpread: rates.lateralSpread / 2 };
+    expect((await taken({ droughtIndex, rates: slower }))?.plant.asSet).toBe(false);
   });
 
   it('says in the list, too, when it lost again what it had recovered', async () => {
