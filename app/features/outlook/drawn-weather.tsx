@@ -67,7 +67,7 @@ export function DrawnWeatherSection(props: {
     />
   );
   return (
-    <section aria-labelledby="drawn-weather" className="mb-4 border-y border-rule py-3 text-[13.5px]">
+    <section aria-labelledby="drawn-weather" className="mb-4 border-t border-rule pt-3 text-[13.5px]">
       <h2 id="drawn-weather" className="text-lead">
         In runs and ensembles
       </h2>

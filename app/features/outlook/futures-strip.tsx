@@ -2,7 +2,7 @@ import type { DrawnFutures } from '#sim-core/weather/drawn-futures.ts';
 
 const rowHeight = 9;
 
-/** A line a future, darker where it is drier. */
+/** A line a future, further from the ground's colour where it is drier: darker on a light sheet, lighter on a dark one. */
 export function FuturesStrip(props: {
   examples: DrawnFutures['examples'];
   tolerance: number;
@@ -16,7 +16,8 @@ export function FuturesStrip(props: {
   return (
     <figure className="my-2">
       <figcaption className="text-note text-ink-2">
-        {examples.length} futures, a line each, darker where drier; ink where a year kills open marsh
+        {examples.length} futures, a line each: the drier a year, the more it stands out; full strength where
+        it kills open marsh
       </figcaption>
       <svg
         viewBox={`0 0 ${years} ${height}`}

@@ -61,7 +61,7 @@ export function KillingChanceFigure(props: { futures: DrawnFutures; firstYear: n
           />
         </svg>
       </div>
-      <div className="flex justify-between pl-11 text-note text-ink-2 tabular-nums">
+      <div className="flex justify-between gap-x-3 pl-11 text-note text-ink-2 tabular-nums">
         <span>{firstYear}</span>
         <span aria-hidden>% by then: — open marsh, – – near a mound</span>
         <span>{last}</span>

@@ -13,7 +13,7 @@ import { yearlyRecord } from '#sim-core/weather/yearly-record.ts';
 import { listYears } from './outlook-words.ts';
 import { palmerRange, readSeries, standardisedRange } from './read-series.ts';
 import { RecordPlot } from './record-plot.tsx';
-import { factorNote, kindWords, monthNames, usualFactor } from './record-words.ts';
+import { factorNote, kindNamed, kindWords, monthNames, usualFactor } from './record-words.ts';
 import { LineProblems, SeriesIntake } from './series-intake.tsx';
 import { likelyColumns, seriesTable, type SeriesColumns } from './series-table.ts';
 
@@ -32,12 +32,15 @@ export function RecordDialog(props: {
   const [fileName, setFileName] = useState<string>();
   const [name, setName] = useState<string>();
   const [source, setSource] = useState('');
-  const [kind, setKind] = useState<IndexKind>('palmer');
+  const [chosenKind, setKind] = useState<IndexKind>();
   const [typedFactor, setFactor] = useState<string>();
   const [season, setSeason] = useState({ from: 1, to: 12 });
   const [chosen, setChosen] = useState<Partial<SeriesColumns>>({});
   const table = useMemo(() => (text.trim() === '' ? undefined : seriesTable(text)), [text]);
   const columns = table && { ...likelyColumns(table), ...chosen };
+  const head = table && columns ? table.columns[columns.value] : '';
+  const kind = chosenKind ?? kindNamed(head);
+  const presetByName = chosenKind === undefined && kind === 'standardised';
   const read =
     table && columns && readSeries(table, columns, kind === 'palmer' ? palmerRange : standardisedRange);
   const factorText = typedFactor ?? String(usualFactor[kind]);
@@ -149,6 +152,9 @@ export function RecordDialog(props: {
         <p role="alert" className="text-note text-danger">
           Found “{factorText}” as the factor; a number above 0 and up to 10 is expected.
         </p>
+      )}
+      {presetByName && (
+        <p className="text-note text-ink-2">Taken for an SPEI or SPI, as its column is called “{head}”.</p>
       )}
       {kind === 'standardised' && <p className="text-note text-ink-2">{factorNote}</p>}
       <div className="mt-3 min-h-12" aria-live="polite">

@@ -1,4 +1,4 @@
-import type { DroughtRecord } from '#sim-core/spec/drought-record.ts';
+import type { DroughtRecord, IndexKind } from '#sim-core/spec/drought-record.ts';
 import { formatNumber } from '#app/lib/formats.ts';
 
 export const monthNames = [
@@ -7,6 +7,10 @@ export const monthNames = [
 ] as const;
 
 export const kindWords = { palmer: 'Palmer-type index', standardised: 'SPEI or SPI' } as const;
+
+/** What a column holds by its name: `SPEI`, `spi_12` and `SPEI12` are standardised, all else is taken as Palmer-type. */
+export const kindNamed = (column = ''): IndexKind =>
+  /(^|[^a-z])spe?i([^a-z]|$)/i.test(column) ? 'standardised' : 'palmer';
 
 /** How a record is read: said wherever it shows. */
 export function mappingWords(
