@@ -16,6 +16,8 @@ export interface GeoTiffContent {
   readonly bandName?: string;
   /** unit of the values, e.g. `share` or `year` */
   readonly unit?: string;
+  /** what the values are worth, in a sentence, ASCII: the field ImageDescription */
+  readonly description?: string;
   /** further facts for the file's metadata, such as where the data comes from */
   readonly facts?: Readonly<Record<string, string>>;
 }
@@ -135,8 +137,8 @@ function geoFields({ grid, crsName }: GeoTiffContent): TiffField[] {
   ];
 }
 
-/** GDAL's own tags: 42112 metadata as XML, 42113 the no-data value as text. */
-function textFields({ noData, bandName, unit, facts = {} }: GeoTiffContent): TiffField[] {
+/** The description, and GDAL's own tags: 42112 metadata as XML, 42113 the no-data value as text. */
+function textFields({ noData, bandName, unit, description, facts = {} }: GeoTiffContent): TiffField[] {
   const items = [
     ...Object.entries(facts).map(
       ([name, value]) => `<Item name="${escapeXml(name)}">${escapeTwice(value)}</Item>`,
@@ -148,6 +150,7 @@ function textFields({ noData, bandName, unit, facts = {} }: GeoTiffContent): Tif
   ];
   const noDataText = noData === undefined ? undefined : Number.isNaN(noData) ? 'nan' : String(noData);
   return [
+    ...(description ? [{ tag: 270, type: 'ascii', text: description } as const] : []),
     ...(items.length > 0
       ? [{ tag: 42112, type: 'ascii', text: `<GDALMetadata>${items.join('')}</GDALMetadata>` } as const]
       : []),

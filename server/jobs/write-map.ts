@@ -1,19 +1,16 @@
 import { readFile } from 'node:fs/promises';
 import { decodeCellValues } from '#rasters/cells/cell-values.ts';
+import { coverPrecision, coverValues, noCover } from '#server/files/cover-map.ts';
 import { encodeGeoTiff } from '#rasters/write/geotiff.ts';
 import type { Grid } from '#sim-core/grid/grid.ts';
-import { closingBandName } from '#sim-core/measure/closing.ts';
+import { cannotClose, closingBandName } from '#sim-core/measure/closing.ts';
 import type { WriteMapTask, WrittenFile } from './raster-tasks.ts';
 import { writeHashed } from './read-layer.ts';
 
-/** Closing year of a cell that cannot hold the plant. */
-const cannotGrow = -32_768;
-/** Cover of such a cell in a GeoTIFF; where the closing years are not stored nobody knows it, and it is 0. */
-const noCover = -9999;
-
 /**
  * Writes a map of a run as GeoTIFF to `outPath`. Cover is Float32, the stored k/255 as a share 0..1; closing years are
- * Int16, with 0 for cells that are open at the horizon. Where the plant cannot grow there is no data.
+ * Int16, with 0 for cells that are open at the horizon. Where the plant cannot grow there is no data; in cover,
+ * where the closing years are not stored, nobody knows where that is, and it is 0.
  */
 export async function writeMap(task: WriteMapTask): Promise<WrittenFile> {
   const { grid, title, note } = task;
@@ -25,18 +22,24 @@ export async function writeMap(task: WriteMapTask): Promise<WrittenFile> {
       encodeGeoTiff({
         grid,
         values: stored,
-        noData: cannotGrow,
+        noData: cannotClose,
         bandName: closingBandName,
         unit: 'year',
         facts,
       }),
     );
   const closing = task.closingPath === null ? undefined : await readCells(task.closingPath, grid);
-  const values = new Float32Array(stored.length);
-  for (let i = 0; i < values.length; i++) values[i] = closing?.[i] === cannotGrow ? noCover : stored[i] / 255;
   return writeHashed(
     task.outPath,
-    encodeGeoTiff({ grid, values, noData: noCover, bandName: 'cover', unit: 'share', facts }),
+    encodeGeoTiff({
+      grid,
+      values: coverValues(stored.length, (cell) => stored[cell] / 255, closing),
+      noData: noCover,
+      bandName: 'cover',
+      unit: 'share',
+      description: coverPrecision.stored,
+      facts,
+    }),
   );
 }
 

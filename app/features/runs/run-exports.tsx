@@ -39,9 +39,10 @@ export function RunExports({ run, year }: { run: Run; year: number | undefined }
         </WordAnchor>
       </div>
       <p className="text-note text-ink-2">
-        Unpacked, the ZIP runs from the command line as it stands and comes to the same digest. The RunSpec by
-        itself names the same rasters, each with its SHA-256, and refuses any other: a file as it was uploaded
-        need not be the raster that was made of it on the grid.
+        Cover is kept in steps of 1/255, so this GeoTIFF holds it rounded to them; from the command line it
+        comes unrounded. Unpacked, the ZIP runs from the command line as it stands and comes to the same
+        digest. The RunSpec by itself names the same rasters, each with its SHA-256, and refuses any other: a
+        file as it was uploaded need not be the raster that was made of it on the grid.
       </p>
     </section>
   );

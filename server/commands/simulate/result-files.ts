@@ -1,13 +1,24 @@
+import { coverPrecision, coverValues, noCover } from '#server/files/cover-map.ts';
 import { encodeGeoTiff } from '#rasters/write/geotiff.ts';
 import { cannotClose, engineVersion, type RunResult } from '#sim-core/index.ts';
 import type { GroundOnFile } from './read-ground.ts';
 
-/** A GeoTIFF of cover, Float32. */
+/** A GeoTIFF of cover, Float32, with the no data of the product's own where the closing years say that nothing grows. */
 export const coverMap = (
   { grid, crsName }: GroundOnFile,
   bandName: string,
-  values: Float32Array,
-): Uint8Array => encodeGeoTiff({ grid, crsName, values, bandName, unit: 'share' });
+  cover: Float32Array,
+  closing: Int16Array,
+): Uint8Array =>
+  encodeGeoTiff({
+    grid,
+    crsName,
+    values: coverValues(cover.length, (cell) => cover[cell], closing),
+    bandName,
+    unit: 'share',
+    noData: noCover,
+    description: coverPrecision.exact,
+  });
 
 /** A GeoTIFF of closing years, Int16. */
 export const closingMap = (

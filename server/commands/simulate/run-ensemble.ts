@@ -59,10 +59,14 @@ export async function runEnsemble(
     await pool.close();
   }
   folder ??= await open();
+  const closing = maps.medianClosing();
   for (const year of years)
-    await folder.write(`cover-${year}.tif`, coverMap(onFile, `mean cover ${year}`, maps.meanCover(year)));
+    await folder.write(
+      `cover-${year}.tif`,
+      coverMap(onFile, `mean cover ${year}`, maps.meanCover(year), closing),
+    );
   const closingName = `median ${closingBandName}`;
-  await folder.write('closing.tif', closingMap(onFile, closingName, maps.medianClosing()));
+  await folder.write('closing.tif', closingMap(onFile, closingName, closing));
   await folder.write('series.csv', seriesOfAll(results));
   if (spec.uncertain) await folder.write('draws.csv', drawsOfAll(spec, results));
   const said = { ...spec, replicate: undefined, replicates };

@@ -40,7 +40,10 @@ async function runOnce(spec: RunSpec, onFile: GroundOnFile, { open, tell }: Spec
   const folder = await open();
   for (let year = run.survey; ;) {
     if (reported.has(year.year))
-      await folder.write(`cover-${year.year}.tif`, coverMap(onFile, `cover ${year.year}`, run.cover()));
+      await folder.write(
+        `cover-${year.year}.tif`,
+        coverMap(onFile, `cover ${year.year}`, run.cover(), run.closing()),
+      );
     // A year is computed in one go; between years the process must be able to hear that it is to stop.
     await nextTurn();
     const next = run.nextYear(tell);

@@ -69,6 +69,7 @@ describe('exports', () => {
     // Cell 5 of the habitat has no class.
     const expected = Float32Array.from(computed.frames.get(2026)!, (k, i) => (i === 5 ? -9999 : k / 255));
     expect(raster.values).toEqual(expected);
+    expect((reply.body as Buffer).toString('latin1')).toContain('rounded to steps of 1/255');
   });
 
   it('the closing years, 0 for what is still open', async () => {
