@@ -3,7 +3,7 @@ import type { LayerPart } from '#contract/layers.ts';
 /** In the order in which they are tried: `landcover` is habitat before it is cover. */
 const hints: readonly [LayerPart, RegExp][] = [
   ['habitat', /habitat|class|landcover|land-cover|zones?/i],
-  ['elevation', /elevation|heights?|dem\b|dtm|dsm|lidar|bathy|topo/i],
+  ['elevation', /elev|heights?|(^|[^a-z])(dem|dtm|dsm)([^a-z]|$)|lidar|bathy|topo/i],
   ['resurvey', /resurvey|repeat/i],
   ['cover', /cover|vegetation|canopy/i],
   ['exposure', /exposure|waves?|fetch|stress/i],

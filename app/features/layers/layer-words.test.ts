@@ -21,10 +21,19 @@ it('says what was done to the file, and what was lost by it', () => {
 });
 
 it('says how much is there', () => {
-  expect(noDataInWords({ noDataShare: 0, noData: 255, dataType: 'uint8' })).toBe(
+  const alignment: Layer['alignment'] = { method: 'copy', reprojectedFrom: null, cropped: 0, padded: 0 };
+  expect(noDataInWords({ noDataShare: 0, noData: 255, dataType: 'uint8', alignment })).toBe(
     'Every cell has a value; stored as uint8.',
   );
-  expect(noDataInWords({ noDataShare: 0.1, noData: -9999, dataType: 'float32' })).toBe(
+  expect(
+    noDataInWords({
+      noDataShare: 0,
+      noData: 255,
+      dataType: 'uint8',
+      alignment: { ...alignment, padded: 11 },
+    }),
+  ).toBe('Every cell that the file reaches has a value; stored as uint8.');
+  expect(noDataInWords({ noDataShare: 0.1, noData: -9999, dataType: 'float32', alignment })).toBe(
     '10 % of the cells have no data (marked -9999); stored as float32.',
   );
 });

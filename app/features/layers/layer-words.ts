@@ -32,9 +32,12 @@ export const noDataInWords = ({
   noDataShare,
   noData,
   dataType,
-}: Pick<Layer, 'noDataShare' | 'noData' | 'dataType'>) =>
+  alignment,
+}: Pick<Layer, 'noDataShare' | 'noData' | 'dataType' | 'alignment'>) =>
   `${
     noDataShare === 0
-      ? 'Every cell has a value'
+      ? alignment.padded > 0
+        ? 'Every cell that the file reaches has a value'
+        : 'Every cell has a value'
       : `${formatShare(noDataShare)} of the cells have no data${noData === null ? '' : ` (marked ${noData})`}`
   }; stored as ${dataType}.`;

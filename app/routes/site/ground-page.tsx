@@ -57,7 +57,7 @@ export function Page() {
   const rows = useDeferredValue(classes.rows);
   const shownClasses = useMemo(() => classesForMap(rows), [rows]);
   const draft = useMemo(() => {
-    const changed = classes.dirty || habitat?.classes;
+    const changed = classes.dirty || classes.suggested || habitat?.classes;
     return {
       ...site,
       elevationCurves: elevation.draft.elevationCurves,
@@ -65,12 +65,15 @@ export function Page() {
         layer.part === 'habitat' && changed ? { ...layer, classes: shownClasses } : layer,
       ),
     };
-  }, [site, habitat, classes.dirty, shownClasses, elevation.draft.elevationCurves]);
+  }, [site, habitat, classes.dirty, classes.suggested, shownClasses, elevation.draft.elevationCurves]);
   const settled = useSettled(draft, rest);
   // What was saved is shown at once; a draft waits until the hand rests.
   const shownMap = view?.of === 'engine' ? view.map : undefined;
   const first = useMemo(() => (shownMap ? [...new Set(['capacity', shownMap] as const)] : []), [shownMap]);
-  const ground = useGroundRasters(classes.dirty || elevation.dirty ? settled : site, first);
+  const ground = useGroundRasters(
+    classes.dirty || classes.suggested || elevation.dirty ? settled : site,
+    first,
+  );
 
   const unsaved =
     mayKeepGround && (elevation.dirty || (habitat !== undefined && (classes.dirty || classes.suggested)));

@@ -11,7 +11,7 @@ import { guessPart } from '#app/features/layers/guess-part.ts';
 import { createSendingStore } from '#app/features/layers/uploads/sending-store.ts';
 import { sendUpload } from '#app/features/layers/uploads/send-upload.ts';
 import { SendingRow } from '#app/features/layers/uploads/upload-panel.tsx';
-import { isReady } from '#app/features/layers/uploads/plan-words.ts';
+import { isReady, missingWords } from '#app/features/layers/uploads/plan-words.ts';
 import { UploadRow } from '#app/features/layers/uploads/upload-row.tsx';
 import { dismiss, uploadsQuery } from '#app/features/layers/uploads/uploads-query.ts';
 import { WorkingGridChoice } from '#app/features/layers/uploads/working-grid-choice.tsx';
@@ -60,6 +60,11 @@ function NewSite({ teamId, teamName, me }: { teamId: string; teamName: string; m
   };
   useDropAnywhere(make.isPending ? undefined : (files) => choose(files[0]));
   const ready = upload !== undefined && isReady(upload) && !sending;
+
+  const missing =
+    upload && !ready && !sending && upload.state === 'choices'
+      ? [...missingWords(upload), ...(name.trim() === '' ? ['the name of the site'] : [])]
+      : [];
 
   const submit = (event: FormEvent) => {
     event.preventDefault();
@@ -117,9 +122,7 @@ function NewSite({ teamId, teamName, me }: { teamId: string; teamName: string; m
           >
             Make the site
           </Button>
-          {upload && !ready && upload.state === 'choices' && (
-            <p className="text-note text-ink-2">Say which part it plays, and from which band, first.</p>
-          )}
+          {missing.length > 0 && <p className="text-note text-ink-2">Still missing: {missing.join(', ')}.</p>}
         </div>
       </form>
       <LeaveGuard

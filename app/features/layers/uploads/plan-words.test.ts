@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { Upload } from '#contract/uploads.ts';
-import { clearUploads, fileInWords, isReady, planInWords } from './plan-words.ts';
+import { clearUploads, fileInWords, isReady, missingWords, planInWords } from './plan-words.ts';
 
 const metric = {
   epsg: 32631,
@@ -105,6 +105,17 @@ describe('what is ready', () => {
     ] as Partial<Upload>[])
       expect(isReady(upload('cover', more))).toBe(false);
     expect(isReady(upload(null))).toBe(false);
+  });
+
+  it('names what is still missing, and nothing else', () => {
+    expect(missingWords(upload(null, { decisions: ['band'] }))).toEqual([
+      'which part it plays',
+      'which band to read',
+    ]);
+    expect(missingWords(upload('elevation', { decisions: ['heights', 'pad'] }))).toEqual([
+      'what its heights are in',
+    ]);
+    expect(missingWords(upload('cover'))).toEqual([]);
   });
 
   it('is placed together only where nothing is to be looked at and no two play one part', () => {

@@ -82,6 +82,20 @@ export const isReady = ({ state, plan, choices, problem, decisions }: Stated): b
   choices.part !== null &&
   !(['part', 'band', 'heights', 'year', 'values'] as const).some((open) => decisions.includes(open));
 
+const openWords = {
+  part: 'which part it plays',
+  band: 'which band to read',
+  heights: 'what its heights are in',
+  year: 'the year it was surveyed in',
+  values: 'what its values are',
+} as const;
+
+/** What must still be said of an upload before it can become a layer, each by name. */
+export const missingWords = ({ choices, decisions }: Pick<Upload, 'choices' | 'decisions'>): string[] =>
+  (['part', 'band', 'heights', 'year', 'values'] as const)
+    .filter((open) => decisions.includes(open) || (open === 'part' && choices.part === null))
+    .map((open) => openWords[open]);
+
 /** Of the uploads, those that nobody has to look at again before they are placed, each with a part of its own. */
 export function clearUploads<T extends Stated>(uploads: readonly T[]): T[] {
   const roleOf = ({ choices }: T) => `${choices.part} ${choices.part === 'resurvey' ? choices.year : ''}`;

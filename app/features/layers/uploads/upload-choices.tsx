@@ -72,7 +72,7 @@ export function UploadChoices(props: {
       )}
       <p className="text-ink-2">
         {facts.noDataShare === 0
-          ? 'Every cell has a value.'
+          ? 'Every cell of the file has a value.'
           : `${formatShare(facts.noDataShare)} of its cells have no data.`}
       </p>
       <Sentence
