@@ -51,7 +51,7 @@ export function yearlineScale({
   const compact = width < compactBelow;
   const shape = compact
     ? { left: 46, right: width - 24, top: 30, datum: 86, hang: 36, labels: 138, height: 144 }
-    : { left: 196, right: width - 104, top: 30, datum: 104, hang: 44, labels: 165, height: 172 };
+    : { left: 196, right: width - 120, top: 30, datum: 104, hang: 44, labels: 165, height: 172 };
   const { left, right, top, datum, hang } = shape;
   const years = Math.max(1, lastYear - surveyYear);
   const yearWidth = (right - left) / years;

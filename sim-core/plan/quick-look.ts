@@ -30,7 +30,7 @@ export interface WorksChange<Key = number> {
 
 /** What the quick look leaves out, to be said wherever it is shown. */
 export const quickLookLeavesOut =
-  'A quick look takes growth alone: weather, chance, grazing and the losses you expect are left out. Only a run takes them in.';
+  'A quick look takes growth alone: weather, ordinary background loss, chance, grazing, fences and the losses you expect are left out. Only a run takes them in.';
 
 export interface QuickLook {
   /** year in which each cell closes, as a run reports it: 0 not by the horizon, −32768 cannot hold the plant */
@@ -54,7 +54,7 @@ export interface QuickLook {
  * share starts once it has grown to it.
  *
  * Mounds make growth faster in the cells that they shelter, from their year on; plantings and clumps start growth in
- * theirs. Weather, chance, grazing, fences and losses are left out (`quickLookLeavesOut`).
+ * theirs. Weather, background loss, chance, grazing, fences and losses are left out (`quickLookLeavesOut`).
  *
  * @throws RunProblem where no kernel gives the rates on such cells (`fitKernel`)
  */

@@ -79,11 +79,17 @@ export function PairTable(props: { figures: OutlookFigures; chosen: number | und
         <p className="mt-1.5 text-note text-ink-2">
           Years are cut at the horizon, so futures still open there count as recovering then, never as lost.
           {typical >= 1.05 &&
-            ` All options meet the same weather and luck, future by future. With luck of its own for each option, the same intervals would take ${formatNumber(typical, typical < 10 ? 1 : 0)} times as many futures.`}
+            ` All options meet the same weather and luck, future by future. With luck of its own for each option, the same intervals would take ${moreFutures(typical)}.`}
         </p>
       )}
     </section>
   );
 }
+
+/** `40 % more futures`, and from twice as many on `2.4 times the futures`. */
+const moreFutures = (ratio: number) =>
+  ratio < 2
+    ? `${formatNumber(100 * (ratio - 1), 0)} % more futures`
+    : `${formatNumber(ratio, ratio < 10 ? 1 : 0)} times the futures`;
 
 const signed = (n: number) => (n === 0 ? '0' : `${n > 0 ? '+' : '−'}${Math.abs(n)}`);

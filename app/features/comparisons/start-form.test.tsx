@@ -1,4 +1,5 @@
 import { cleanup, fireEvent, render, screen } from '@testing-library/react';
+import { MemoryRouter } from 'react-router-dom';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import type { Option } from '#contract/options.ts';
 import { startComparison } from '#contract/comparisons.ts';
@@ -31,12 +32,12 @@ const options = ['Wait', 'Clumps', 'Mounds'].map(
   (name, i) => ({ id: ids[i], name, works: [] }) as unknown as Option,
 );
 
-function open(blocked?: string) {
+function open(blocked?: string, offered = options) {
   const onStart = vi.fn();
   render(
     <ComparisonStartForm
       site={site}
-      options={options}
+      options={offered}
       compose={(option, mode, seed) =>
         option.name === blocked || seed.trim() === ''
           ? undefined
@@ -60,6 +61,7 @@ function open(blocked?: string) {
       error={undefined}
       onStart={onStart}
     />,
+    { wrapper: MemoryRouter },
   );
   return onStart;
 }
@@ -106,6 +108,17 @@ describe('the form that starts a comparison', () => {
     expect(screen.getByRole('alert').textContent).toMatch(words);
     expect(screen.getByLabelText(label).getAttribute('aria-invalid')).toBe('true');
     expect(start().disabled).toBe(true);
+    fireEvent.submit(screen.getByRole('form'));
+    expect(onStart).not.toHaveBeenCalled();
+  });
+
+  it('says where options come from while there is one alone, and blames nobody', () => {
+    const onStart = open(undefined, options.slice(0, 1));
+    expect(screen.queryByRole('alert')).toBeNull();
+    expect(screen.getByText(/this site has only Wait/)).toBeTruthy();
+    expect(screen.getByRole('link', { name: 'Draw one on Options' }).getAttribute('href')).toBe(
+      `/sites/${site.id}/options`,
+    );
     fireEvent.submit(screen.getByRole('form'));
     expect(onStart).not.toHaveBeenCalled();
   });

@@ -6,7 +6,7 @@ import { Blank, BlankSelect } from '#app/components/blank.tsx';
 import { Button } from '#app/components/button.tsx';
 import { CautionList } from '#app/components/caution-list.tsx';
 import { ProblemNotice } from '#app/components/notice.tsx';
-import { WordButton } from '#app/components/word-button.tsx';
+import { WordButton, WordLink } from '#app/components/word-button.tsx';
 import { formatCount, formatDuration, formatNumber } from '#app/lib/formats.ts';
 import { parseNumber } from '#app/lib/parse-number.ts';
 import { findCautions, gatherCautions } from '#sim-core/cautions/find-cautions.ts';
@@ -109,7 +109,11 @@ export function ComparisonStartForm(props: {
         : outlooks.length > mostOutlooks
           ? `Found ${outlooks.length} outlooks; up to ${mostOutlooks} can be compared at once.`
           : undefined,
-    options: chosen.length < 2 ? 'Choose at least two options; Wait is one of them.' : undefined,
+    // Where there is one option only, nothing was done wrong yet; what to do is said beside the list.
+    options:
+      chosen.length < 2 && options.length > 1
+        ? 'Choose at least two options; Wait is one of them.'
+        : undefined,
     replicates: replicatesFit
       ? undefined
       : `Found “${typed}” futures; a whole number from 2 to 2000 is expected.`,
@@ -120,7 +124,7 @@ export function ComparisonStartForm(props: {
     name: name.trim() === '' ? 'Give the comparison a name.' : undefined,
   };
   const said = Object.values(wrong).filter((words) => words !== undefined);
-  const fits = replicatesFit && thresholdFits && said.length === 0 && blocked < 0;
+  const fits = chosen.length > 1 && replicatesFit && thresholdFits && said.length === 0 && blocked < 0;
   const toggle = (set: ReadonlySet<string>, key: string) => {
     const next = new Set(set);
     if (!next.delete(key)) next.add(key);
@@ -243,6 +247,13 @@ export function ComparisonStartForm(props: {
           onChange={(event) => setName(event.target.value)}
         />
       </p>
+      {options.length < 2 && (
+        <p className="text-note">
+          A comparison takes two options or more, and this site has{' '}
+          {options.length === 0 ? 'none' : `only ${options[0].name}`}.{' '}
+          <WordLink to={`/sites/${site.id}/options`}>Draw one on Options</WordLink>
+        </p>
+      )}
       {said.length > 0 && (
         <p role="alert" className="text-note text-danger">
           {said.join(' ')}

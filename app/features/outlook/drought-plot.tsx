@@ -188,7 +188,7 @@ function ToleranceLines({ tolerances, scale, compact }: PlotProps) {
         textAnchor={compact ? 'end' : 'start'}
         className="fill-ink stroke-ground text-note font-semibold [paint-order:stroke] [stroke-width:4px]"
       >
-        {words}
+        {compact ? `${words} dies beyond` : words}
       </text>
       {!compact && i === 0 && (
         <text x={scale.right + 13} y={scale.y(at) - 11} className="fill-ink-2 text-note">

@@ -28,20 +28,22 @@ export function CellHistory(props: {
   return (
     <section aria-label="One cell" className="border-t border-rule py-2">
       <h2 className="text-body font-bold">One cell</h2>
-      <svg
-        viewBox={`0 0 ${width} 34`}
-        width="100%"
-        height="34"
-        aria-hidden="true"
-        className="block overflow-visible"
-      >
-        <path d={`M0 30.500H${width}`} className="stroke-rule" />
-        <path d={`M${x(year)} 0V34`} className="stroke-rule" />
-        {points.length > 1 && <path d={`M${line}`} fill="none" strokeWidth="1.5" className="stroke-ink" />}
-        {points.length === 1 && (
-          <circle cx={x(first.year)} cy={30 - (first.byte / 255) * 28} r="2" className="fill-ink" />
-        )}
-      </svg>
+      {points.length > 0 && (
+        <svg
+          viewBox={`0 0 ${width} 34`}
+          width="100%"
+          height="34"
+          aria-hidden="true"
+          className="block overflow-visible"
+        >
+          <path d={`M0 30.500H${width}`} className="stroke-rule" />
+          <path d={`M${x(year)} 0V34`} className="stroke-rule" />
+          {points.length > 1 && <path d={`M${line}`} fill="none" strokeWidth="1.5" className="stroke-ink" />}
+          {points.length === 1 && (
+            <circle cx={x(first.year)} cy={30 - (first.byte / 255) * 28} r="2" className="fill-ink" />
+          )}
+        </svg>
+      )}
       <p className="min-h-[2.8em] text-note text-ink-2">
         {first && last
           ? `Cover here: ${formatShare(first.byte / 255)} in ${first.year}, ${formatShare(last.byte / 255)} in ${last.year}${

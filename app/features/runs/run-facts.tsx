@@ -102,7 +102,7 @@ export function RunFacts({ run, result }: { run: Run; result: RunResult | undefi
         {result && (
           <Fact name="front">
             {formatNumber(result.kernel.frontSpeed)} m a year,{' '}
-            {formatNumber(result.kernel.diagonalFrontSpeed)} along the diagonal
+            {formatNumber(result.kernel.diagonalFrontSpeed)} m a year along the diagonal
           </Fact>
         )}
         {result && <Fact name="engine">{result.engineVersion}</Fact>}

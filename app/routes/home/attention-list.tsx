@@ -14,6 +14,8 @@ interface Item {
   words: string;
   to: string;
   action: string;
+  /** only somebody with another role can bring it on */
+  others?: boolean;
 }
 
 /** What waits for this person: runs that have not finished, then what each site needs next from their role. */
@@ -36,8 +38,9 @@ export function AttentionList(props: {
       return {
         key: comparison.id,
         name: `${comparison.name}, ${site.name}`,
-        words: `${comparison.done} futures of each of ${comparison.options.length} options${decides ? ', waits for your decision' : ', waits for a manager’s decision'}`,
+        words: `${comparison.done} futures of each of ${comparison.options.length} options${decides ? ', waits for your decision' : ''}`,
         to: `/sites/${site.id}/compare/${comparison.id}`,
+        others: !decides,
         action: decides ? 'Compare and decide' : 'Open the comparison',
       };
     }),
@@ -46,9 +49,24 @@ export function AttentionList(props: {
       return next?.roles.includes(role) ? [{ key: site.id, name: site.name, ...next }] : [];
     }),
   ];
+  const mine = items.filter(({ others }) => !others);
+  return (
+    <>
+      <Items title="Waits for you" items={mine} />
+      <Items
+        title="Waits for a manager"
+        items={items.filter(({ others }) => others)}
+        first={mine.length === 0}
+      />
+    </>
+  );
+}
+
+/** @param first the first of them is the page's main step */
+function Items({ title, items, first = true }: { title: string; items: readonly Item[]; first?: boolean }) {
   if (items.length === 0) return null;
   return (
-    <Section title="Waits for you">
+    <Section title={title}>
       <ul>
         {items.map((item, i) => (
           <li
@@ -58,7 +76,7 @@ export function AttentionList(props: {
             <p className="min-w-0">
               <b>{item.name}</b> <span className="text-ink-2">{item.words}</span>
             </p>
-            {i === 0 ? (
+            {first && i === 0 ? (
               <LinkButton kind="primary" to={item.to}>
                 {item.action}
               </LinkButton>
