@@ -20,6 +20,7 @@ test.each<[Belief, string, RegExp]>([
     'mode',
     /Found 0.5; the likeliest value lies between 1 and 2/,
   ],
+  [{ law: 'triangular', low: 2, mode: 1.5, high: 1 }, 'high', /Found 1; expected more than the low value, 2/],
   [{ law: 'normal', mean: 30, standardDeviation: 1 }, 'mean', /Found 30/],
   [{ law: 'normal', mean: 1, standardDeviation: 0 }, 'standardDeviation', /expected number to be >0/],
   [{ law: 'log-normal', median: 21, factor: 2 }, 'median', /Found 21/],

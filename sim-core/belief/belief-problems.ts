@@ -14,11 +14,14 @@ export function beliefProblems(belief: Belief, rate: Range): FieldProblem[] {
       return ascending(['low', belief.low], ['high', belief.high]) ?? within(rate, belief, ['low', 'high']);
     case 'triangular': {
       const { low, mode, high } = belief;
+      // Where the bounds themselves are turned round no likeliest value could lie between them.
+      const turned = ascending(['low', low], ['high', high]);
+      if (turned) return turned;
       if (mode < low || mode > high)
         return [
           { field: 'mode', message: `Found ${mode}; the likeliest value lies between ${low} and ${high}` },
         ];
-      return ascending(['low', low], ['high', high]) ?? within(rate, belief, ['low', 'mode', 'high']);
+      return within(rate, belief, ['low', 'mode', 'high']);
     }
     case 'normal':
       return within(rate, belief, ['mean']);

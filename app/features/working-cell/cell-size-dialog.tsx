@@ -1,11 +1,13 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
+import { defaultRates } from '#sim-core/spec/parameters.ts';
 import type { Site } from '#contract/sites.ts';
 import type { CellSize } from '#contract/working-grid.ts';
 import { Button } from '#app/components/button.tsx';
 import { Dialog, DialogActions } from '#app/components/dialog.tsx';
 import { LoadingLines } from '#app/components/loading-lines.tsx';
 import { Notice, ProblemNotice } from '#app/components/notice.tsx';
+import { WordLink } from '#app/components/word-button.tsx';
 import { Table } from '#app/components/table.tsx';
 import { classNames } from '#app/lib/class-names.ts';
 import { formatBytes, formatCount, formatDuration, formatLength, formatNumber } from '#app/lib/formats.ts';
@@ -23,6 +25,7 @@ export function CellSizeDialog(props: { site: Site; onClose: () => void }) {
   const queryClient = useQueryClient();
   const start = useMutation(startGridChangeMutation(queryClient, site.id));
   const shown = chosen ?? now;
+  const { lateralSpread } = site.plant.rates;
   const impossible = sizes.data?.filter(({ problem }) => problem !== null) ?? [];
   return (
     <Dialog
@@ -101,16 +104,27 @@ export function CellSizeDialog(props: { site: Site; onClose: () => void }) {
         </div>
       )}
       {impossible.length > 0 && (
-        <dl className="mt-2 text-note text-ink-2">
-          {impossible.map((size) => (
-            <div key={size.factor} id={whyNotId(size)} className="mt-0.5">
-              <dt className="inline font-semibold">
-                On cells of {formatLength(size.grid.cellSize)} no run can start.
-              </dt>{' '}
-              <dd className="inline">{size.problem}</dd>
-            </div>
-          ))}
-        </dl>
+        <div className="mt-2 text-note">
+          <p>
+            On {impossible.map(({ grid }) => formatLength(grid.cellSize)).join(', ')} no run can start with a
+            lateral spread of {formatNumber(lateralSpread, 4)} m a year
+            {lateralSpread === defaultRates.lateralSpread && ', which is the starting value'}.{' '}
+            <WordLink to={`/sites/${site.id}/plant`}>Change it under Plant</WordLink>
+          </p>
+          <details className="text-ink-2">
+            <summary className="min-h-7 cursor-pointer py-1 touch:min-h-11 touch:py-2.5">
+              Why, cell by cell
+            </summary>
+            <dl>
+              {impossible.map((size) => (
+                <div key={size.factor} id={whyNotId(size)} className="mt-0.5">
+                  <dt className="inline font-semibold">{formatLength(size.grid.cellSize)}:</dt>{' '}
+                  <dd className="inline">{size.problem}</dd>
+                </div>
+              ))}
+            </dl>
+          </details>
+        </div>
       )}
       {shown && shown.warnings.length > 0 && (
         <Notice className="mt-2">

@@ -19,6 +19,8 @@ export function PlantMargin(props: {
   /** the same over draws of what is believed; undefined before they are there */
   drawn: ImpliedDraws | undefined;
   uncertain: boolean;
+  /** blanks that make no sense now: the pictures stand for what they said before */
+  wrong: number;
   rates: Rates;
   /** processes that are on: none of the pictures knows of them */
   grazing: boolean;
@@ -37,6 +39,12 @@ export function PlantMargin(props: {
       <p className="mb-2.5 text-note text-ink-2">
         on cells of {formatNumber(cellSize)} m, {formatCounted(site.outlook.stepsPerYear, 'step')} a year
       </p>
+      {props.wrong > 0 && (
+        <Notice className="mb-2" title="Out of date.">
+          {formatCounted(props.wrong, 'blank')} cannot be read. These pictures show the values that made sense
+          last.
+        </Notice>
+      )}
       <LeftOut {...props} />
       <Part title="A straight edge moves">
         {kernel === undefined ? (

@@ -212,6 +212,7 @@ export function Page() {
             implied={implied}
             drawn={drawn}
             uncertain={Object.keys(beliefs).length > 0}
+            wrong={wrong}
             rates={rates}
             grazing={draft.grazers.on}
             fragments={draft.fragments.on}
