@@ -5,6 +5,7 @@ import { runSpecFields, type RunSpec } from '#sim-core/spec/run-spec.ts';
 import { replicateRecordSchema } from '#sim-core/spec/replicate-record.ts';
 import { expectedLossesSchema, trendSchema } from '#sim-core/spec/outlook-changes.ts';
 import { beliefsThatApply } from '#sim-core/spec/uncertain.ts';
+import { unitCostsSchema } from '#sim-core/spec/unit-costs.ts';
 import { weatherSourceSchema } from '#sim-core/spec/weather-source.ts';
 import { endpoint, id, instant, sha256, text } from './endpoint.ts';
 import { gridSchema } from './grid.ts';
@@ -57,6 +58,8 @@ const planFields = {
     .string()
     .regex(/^[A-Z]{3}$/)
     .nullable(),
+  /** prices and budget as they were when it began; null where nobody had set any, absent of plans from before they were kept */
+  unitCosts: unitCostsSchema.nullable().optional(),
 };
 
 /** An option as it was when the comparison began: later changes of it change nothing here. */

@@ -131,6 +131,7 @@ function start(
       droughtThreshold: rates.tolerance,
       mapYears: [...mapYears],
       currency: demoCosts.currency,
+      unitCosts: demoCosts,
     },
     by,
   );

@@ -16,7 +16,7 @@ export const unitCostsSchema = z.strictObject({
   visit: money.default(0),
   /** visits in each year that has works */
   visitsPerYear: z.number().int().min(0).max(366).default(1),
-  /** whatever falls due every year, works or not, such as watching over the site */
+  /** what an option with works costs every year to the horizon, such as watching over them; none without works */
   perYear: money.default(0),
   /** share a year by which a cost weighs less for each year it is put off */
   discountRate: z.number().min(0).max(1).default(0),

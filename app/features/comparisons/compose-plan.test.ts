@@ -1,6 +1,7 @@
 // @vitest-environment node
 import { describe, expect, it } from 'vitest';
 import { startComparison } from '#contract/comparisons.ts';
+import { unitCostsSchema } from '#sim-core/spec/unit-costs.ts';
 import { replicateSpec } from '#contract/comparisons.ts';
 import { mapYears, shiftedWeather, startBody } from './compose-plan.ts';
 import { smallComparison } from './testing/small-comparison.ts';
@@ -44,9 +45,11 @@ it('makes a body that the contract takes, whose runs are those of the options', 
     stop: { atLeast: 20, halfWidth: 0.05 },
     droughtThreshold: -2.3,
     currency: 'EUR',
+    unitCosts: unitCostsSchema.parse({ currency: 'EUR', mound: 300, budget: 900 }),
     cells: 140,
   });
   const parsed = startComparison.body.parse(body);
   expect(parsed.common).toEqual(plan.common);
+  expect(parsed.unitCosts).toMatchObject({ mound: 300, budget: 900 });
   expect(parsed.mapYears).toHaveLength(13);
 });

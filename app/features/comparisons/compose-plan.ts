@@ -2,6 +2,7 @@ import type { Comparison } from '#contract/comparisons.ts';
 import { driest, wettest } from '#sim-core/spec/limits.ts';
 import type { Beliefs } from '#sim-core/spec/uncertain.ts';
 import type { RunSpec } from '#sim-core/spec/run-spec.ts';
+import type { UnitCosts } from '#sim-core/spec/unit-costs.ts';
 import type { WeatherSource } from '#sim-core/spec/weather-source.ts';
 import type { StartBody } from './change-comparison.ts';
 
@@ -61,6 +62,8 @@ export interface PlanChoices {
   readonly stop: Comparison['plan']['stop'];
   readonly droughtThreshold: number;
   readonly currency: string | null;
+  /** prices and budget of today; null where nobody has set any */
+  readonly unitCosts: UnitCosts | null;
   readonly cells: number;
   /** what is believed of rates that are not known; none: every future takes the rates of a single run */
   readonly beliefs?: Beliefs | undefined;

@@ -48,6 +48,10 @@ export function LossTable(props: { figures: OutlookFigures; chosen: number | und
           },
         ]}
       />
+      <p className="mt-1.5 text-note text-ink-2">
+        Options with more marsh can lose more of it: a larger loss than under Wait need not mean that works do
+        harm.
+      </p>
     </section>
   );
 }

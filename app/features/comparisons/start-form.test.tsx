@@ -54,6 +54,7 @@ function open(blocked?: string, offered = options) {
       }
       problems={(option) => <p>{option.name} cannot be run</p>}
       costOf={() => null}
+      unitCosts={null}
       secondsOf={() => 0.1}
       drawSeed={() => 'a seed'}
       names={['Wait or Clumps and others']}

@@ -12,6 +12,7 @@ import { parseNumber } from '#app/lib/parse-number.ts';
 import { findCautions, gatherCautions } from '#sim-core/cautions/find-cautions.ts';
 import { allParameters, anyRateNames } from '#sim-core/spec/all-parameters.ts';
 import type { Mode, RunSpec } from '#sim-core/spec/run-spec.ts';
+import type { UnitCosts } from '#sim-core/spec/unit-costs.ts';
 import type { StartBody } from './change-comparison.ts';
 import { mapYears, startBody } from './compose-plan.ts';
 import { mainOutlookKey, offeredOutlooks } from './offered-outlooks.ts';
@@ -42,6 +43,8 @@ export function ComparisonStartForm(props: {
   /** what stands in the way of an option's run, said with the page that mends it */
   problems: (option: Option, mode: Mode, seed: string) => ReactNode;
   costOf: (option: Option) => KnownCost | null;
+  /** prices and budget of the site; null where nobody has set any */
+  unitCosts: UnitCosts | null;
   /** seconds that one run takes on this browser */
   secondsOf: (mode: Mode) => number;
   drawSeed: () => string;
@@ -149,7 +152,8 @@ export function ComparisonStartForm(props: {
                   ? { atLeast: Math.min(20, replicates), halfWidth: 0.05 }
                   : { atLeast: Math.min(20, replicates), rankSettled: true },
             droughtThreshold: threshold,
-            currency: props.costOf(chosen[0])?.currency ?? null,
+            currency: props.unitCosts?.currency ?? null,
+            unitCosts: props.unitCosts,
             cells,
             beliefs: asBelieved ? site.plant.beliefs : undefined,
           }),

@@ -79,6 +79,7 @@ export function Page() {
               />
             )}
             costOf={(option) => (costs?.changedAt ? optionCost(site, costs.costs, option.works) : null)}
+            unitCosts={costs?.changedAt ? costs.costs : null}
             secondsOf={(mode) => estimateSeconds(mode, cells, steps)}
             drawSeed={randomSeed}
             names={listed.map(({ name }) => name)}

@@ -31,7 +31,7 @@ export function GoOn(props: {
       <span className="text-note text-ink-2">
         {open && !paused
           ? 'This comparison is not at work in this tab. If another tab works on it, leave it there.'
-          : 'What is saved stays; the same futures come to the same digests.'}
+          : 'What is saved stays as it is; only new futures are added.'}
       </span>
       {props.error ? <ProblemNotice error={props.error} title="Not resumed." /> : null}
     </div>

@@ -2,6 +2,8 @@ import { memo } from 'react';
 import type { Comparison } from '#contract/comparisons.ts';
 import type { ComparisonFigures, OutlookFigures } from '#sim-core/compare/comparison-figures.ts';
 import type { KnownRecords } from '#sim-core/compare/known-records.ts';
+import type { SiteCosts } from '#contract/costs.ts';
+import { priceChangeWords } from '#app/features/comparisons/price-change.ts';
 import { CostGain } from '#app/features/comparisons/cost-gain.tsx';
 import { FuturesLines } from '#app/features/comparisons/futures-lines.tsx';
 import { LossTable } from '#app/features/comparisons/loss-table.tsx';
@@ -41,7 +43,8 @@ export const ComparisonCharts = memo(function ComparisonCharts(props: {
   comparison: Comparison;
   figures: ComparisonFigures;
   shown: OutlookFigures;
-  budget: number | null;
+  /** prices of today; undefined while they are fetched */
+  today: SiteCosts | undefined;
   chosen: number | undefined;
 }) {
   const { figures, shown, chosen } = props;
@@ -55,7 +58,15 @@ export const ComparisonCharts = memo(function ComparisonCharts(props: {
         chosen={chosen}
       />
       {plan.currency !== null && shown.options.every(({ cost }) => cost !== null) ? (
-        <CostGain figures={shown} currency={plan.currency} budget={props.budget} chosen={chosen} />
+        <div>
+          <CostGain
+            figures={shown}
+            currency={plan.currency}
+            budget={plan.unitCosts?.budget ?? null}
+            chosen={chosen}
+          />
+          <p className="mt-1 text-note text-ink-2 empty:hidden">{priceChangeWords(plan, props.today)}</p>
+        </div>
       ) : (
         <p className="text-note text-ink-2">
           Cost against gain needs unit costs: set them on Options, then start a comparison anew.

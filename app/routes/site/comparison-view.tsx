@@ -174,10 +174,7 @@ export function ComparisonView({ comparison }: { comparison: Comparison }) {
             />
           )}
           <div className="grid gap-x-10 gap-y-8 border-t border-ink pt-4 lg:grid-cols-2">
-            <ComparisonCharts
-              {...{ comparison, figures, shown, chosen }}
-              budget={costs?.costs.budget ?? null}
-            />
+            <ComparisonCharts {...{ comparison, figures, shown, chosen }} today={costs} />
             <div className="grid content-start gap-6">
               <DecisionBox
                 comparison={counted}

@@ -59,8 +59,7 @@ export function OptionMeters(
     <>
       {props.faint > 0 && (
         <p role="status" className="text-note font-semibold">
-          With the {formatCounted(props.faint, 'faint work')} that {props.faint === 1 ? 'is' : 'are'} not
-          placed yet:
+          Counted in: {formatCounted(props.faint, 'work')} drawn pale on the map, not placed yet.
         </p>
       )}
       {sums && costs && <BudgetRule total={sums.total} budget={costs.budget} currency={sums.currency} />}

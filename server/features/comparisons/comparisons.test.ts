@@ -7,6 +7,7 @@ import type { Problem } from '#contract/problem.ts';
 import type { Site } from '#contract/sites.ts';
 import { decodeCellValues } from '#rasters/cells/cell-values.ts';
 import { processesSchema } from '#sim-core/spec/processes.ts';
+import { unitCostsSchema } from '#sim-core/spec/unit-costs.ts';
 import { runSpecSchema } from '#sim-core/spec/run-spec.ts';
 import { binaryReply } from '#server/testing/binary-reply.ts';
 import { optionsOf, planFor, replicateOf, startTestComparison } from '#server/testing/comparisons.ts';
@@ -46,7 +47,9 @@ const get = async (comparison: Comparison) =>
 describe('a comparison', () => {
   it('keeps the works and the settings of its options as they were, and lists newest first', async () => {
     const { manager, trainer } = team.agents;
-    const comparison = await startTestComparison(manager, site);
+    const unitCosts = unitCostsSchema.parse({ currency: 'EUR', mound: 1000, budget: 5000 });
+    const comparison = await startTestComparison(manager, site, { unitCosts });
+    expect((await get(comparison)).plan.unitCosts).toEqual(unitCosts);
     expect(comparison).toMatchObject({
       name: 'A comparison',
       status: 'running',

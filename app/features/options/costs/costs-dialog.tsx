@@ -69,8 +69,9 @@ export function CostsDialog(props: { siteId: string; set: SiteCosts; onClose: ()
         </p>
         <p>
           The crew comes {blank('visitsPerYear', 'Visits in each year with works')} times in each year that
-          has works, at {blank('visit', 'Cost of a visit')} a visit. Every year to the horizon costs{' '}
-          {blank('perYear', 'Fixed cost of every year')} more, such as watching over the site.
+          has works, at {blank('visit', 'Cost of a visit')} a visit. An option with works costs{' '}
+          {blank('perYear', 'Fixed cost of every year')} more every year to the horizon, such as watching over
+          the works; Wait, which has none, costs nothing.
         </p>
         <p>
           There is {blank('budget', 'Budget, empty where there is none')} to spend in all; leave it empty

@@ -26,7 +26,7 @@ export function CostDetails(props: {
         {each !== undefined && closed && closed.works - closed.wait < leastArea
           ? `By ${lastYear} hardly more ground closes than under Wait: too little to price by the hectare.`
           : each !== undefined && closed
-            ? `${money(each)} a hectare: ${formatArea(closed.works - closed.wait)} close by ${lastYear} that would not under Wait.`
+            ? `${money(each)} for each hectare that closes by ${lastYear} and would still be open then under Wait (${formatArea(closed.works - closed.wait)}, by growth alone). Ground that Wait closes too, only later, is not counted.`
             : closed && costs.total > 0
               ? `By ${lastYear} no more ground closes than under Wait, so there is no cost per hectare.`
               : ''}
