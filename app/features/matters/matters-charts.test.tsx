@@ -90,7 +90,7 @@ it('reads what an address asks, and the usual where it asks what cannot be', () 
   );
 });
 
-it('says what is wrong with a size, and tells only sizes that fit', async () => {
+it('says what is wrong with a size, and tells only sizes that fit', () => {
   const onChange = vi.fn();
   render(<StudyForm settings={settingsOf('method=indices')} disabled={false} onChange={onChange} />);
   const blank = screen.getByLabelText('Number of rows');
