@@ -99,9 +99,21 @@ export function SelectionForm(props: {
   };
   return (
     <section aria-label="What is selected" className="mb-3 border-b border-rule pb-2 text-[13.5px]">
-      <h2 className="text-body leading-tight font-bold">
-        {alone ? props.title : `${things.length} selected`}
-      </h2>
+      <div className="flex flex-wrap items-baseline justify-between gap-x-4">
+        <h2 className="text-body leading-tight font-bold">
+          {alone ? props.title : `${things.length} selected`}
+        </h2>
+        {edit && (
+          <p className="flex gap-x-4">
+            <WordButton lined onClick={edit.onCopy}>
+              Copy
+            </WordButton>
+            <WordButton lined onClick={edit.onRemove}>
+              Remove
+            </WordButton>
+          </p>
+        )}
+      </div>
       {!alone && <p className="text-note text-ink-2">{worksInWords(works)}</p>}
       <p className="mt-0.5 flex flex-wrap items-baseline gap-x-1.5 gap-y-1">
         {sentence.map((piece) => (
@@ -133,19 +145,11 @@ export function SelectionForm(props: {
           {alone ? 'Stands' : 'Some of it stands'} on marsh already: the plant was there at the survey.
         </p>
       )}
-      {edit && (
-        <p className="mt-0.5 flex flex-wrap gap-x-4">
-          <WordButton lined onClick={edit.onCopy}>
-            Copy
+      {edit?.onLay && (
+        <p className="mt-0.5">
+          <WordButton lined onClick={edit.onLay}>
+            Lay the pattern anew
           </WordButton>
-          <WordButton lined onClick={edit.onRemove}>
-            Remove
-          </WordButton>
-          {edit.onLay && (
-            <WordButton lined onClick={edit.onLay}>
-              Lay the pattern anew
-            </WordButton>
-          )}
         </p>
       )}
     </section>
