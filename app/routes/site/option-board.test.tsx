@@ -2,6 +2,7 @@ import { QueryClientProvider } from '@tanstack/react-query';
 import { cleanup, fireEvent, render, screen } from '@testing-library/react';
 import { createMemoryRouter, Outlet, RouterProvider } from 'react-router-dom';
 import { afterEach, beforeEach, expect, it, vi } from 'vitest';
+import type { Feature } from '#contract/features.ts';
 import type { Option } from '#contract/options.ts';
 import type { Site } from '#contract/sites.ts';
 import { startingPens } from '#app/features/options/board/board-pens.ts';
@@ -13,7 +14,20 @@ import type { SiteContext } from './use-site.ts';
 
 const site = siteFixture();
 const { grid } = site;
-const cells = grid.width * grid.height;
+/** A mound in the last cell that was found at the survey. */
+const surveyed = {
+  id: 'surveyed',
+  kind: 'refuge',
+  name: '',
+  strength: 1,
+  halo: 0,
+  shape: {
+    shape: 'disc',
+    x: grid.originX + (grid.width - 0.5) * grid.cellSize,
+    y: grid.originY - (grid.height - 0.5) * grid.cellSize,
+    radius: 1,
+  },
+} as Feature;
 const mound = {
   id: 'm1',
   kind: 'mound' as const,
@@ -52,9 +66,6 @@ afterEach(() => {
 function show(more: { works?: Work[]; on?: Site; year?: string; justMade?: boolean } = {}) {
   const on = more.on ?? site;
   const option = optionWith(more.works ?? []);
-  // The last cell of the site bears a mound that was found at the survey.
-  const refuge = new Uint8Array(cells);
-  refuge[cells - 1] = 255;
   const context: SiteContext = {
     site: on,
     teamName: 'Northmarsh',
@@ -68,7 +79,7 @@ function show(more: { works?: Work[]; on?: Site; year?: string; justMade?: boole
       options={[option]}
       option={option}
       ground={{
-        refuge,
+        refuge: new Uint8Array(grid.width * grid.height),
         error: null,
         outdated: false,
         coarse: false,
@@ -128,7 +139,7 @@ it('takes back by Ctrl+Z what was placed', () => {
 });
 
 it('finds planned mounds first, and says why a surveyed one stays', () => {
-  const { press } = show({ works: [mound] });
+  const { press } = show({ works: [mound], on: { ...site, features: [surveyed] } });
   press('n');
   expect(screen.getAllByText('Mound 1').length).toBeGreaterThan(0);
   press('n');
