@@ -76,11 +76,11 @@ test('from a GeoTIFF to a run that is replayed, repeated and exported', async ({
     await page.getByRole('textbox', { name: /^Lateral spread/ }).fill('0');
     await expect(page.getByText(/must lie between 0.005 and 20/).first()).toBeVisible();
     await page.getByRole('textbox', { name: /^Lateral spread/ }).fill('1.5');
-    await page.getByRole('button', { name: /^(Save|Keep)/ }).click();
+    await page.getByRole('button', { name: 'Save the plant' }).click();
     await expect(page.getByRole('link', { name: 'On to Outlook' })).toBeVisible();
     await step(page, 'Outlook').click();
     await page.getByLabel('Years to simulate').fill('12');
-    await page.getByRole('button', { name: /^(Save|Keep)/ }).click();
+    await page.getByRole('button', { name: 'Save the outlook' }).click();
     await expect(step(page, 'Outlook')).toContainText('12 years');
   });
 
