@@ -1,3 +1,4 @@
+import type { Site } from '#contract/sites.ts';
 import AxeBuilder from '@axe-core/playwright';
 import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
@@ -130,6 +131,18 @@ test('a team’s own rasters, whatever they look like, become the ground of runs
   });
 
   await test.step('a coarser working cell, with what it means said before', async () => {
+    await page.getByRole('button', { name: 'Another cell size' }).click();
+    // No run can start on such cells with a plant that spreads half a metre a year.
+    await expect(page.getByRole('radio', { name: '10 m' })).toBeDisabled();
+    const [, siteId] = /sites\/([\w-]+)/.exec(page.url())!;
+    const { plant } = (await (await page.request.get(`/api/sites/${siteId}`)).json()) as Site;
+    const faster = { ...plant, rates: { ...plant.rates, lateralSpread: 8 } };
+    const saved = await page.request.put(`/api/sites/${siteId}/plant`, {
+      data: faster,
+      headers: { origin: new URL(page.url()).origin },
+    });
+    expect(saved.status()).toBe(200);
+    await page.reload();
     await page.getByRole('button', { name: 'Another cell size' }).click();
     await page.getByRole('radio', { name: '10 m' }).check();
     await page.getByRole('button', { name: 'Use cells of 10 m' }).click();
