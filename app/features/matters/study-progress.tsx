@@ -1,5 +1,6 @@
 import { Progress } from '#app/components/progress.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
+import { WorkTrouble } from '#app/components/work-trouble.tsx';
 import { formatCounted, formatDuration } from '#app/lib/formats.ts';
 import { isStudying, type LiveStudy } from './study-manager.ts';
 
@@ -40,16 +41,7 @@ export function StudyProgress({ live, onPause }: { live: LiveStudy; onPause: () 
           {refused === 1 ? 'is' : 'are'} left out; narrow what is believed of spread, fill-in or carry-over.
         </p>
       )}
-      {trouble && (
-        <p role="status" className="border-l-[6px] border-flag py-1 pl-3">
-          {trouble}
-        </p>
-      )}
-      {phase === 'failed' && (
-        <p role="alert" className="border-l-[6px] border-danger py-1 pl-3">
-          {error}
-        </p>
-      )}
+      <WorkTrouble trouble={trouble} failure={phase === 'failed' ? (error ?? '') : undefined} />
     </>
   );
 }

@@ -1,5 +1,6 @@
 import { Progress } from '#app/components/progress.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
+import { WorkTrouble } from '#app/components/work-trouble.tsx';
 import { isWorking } from '#app/features/comparisons/comparison-manager.ts';
 import { comparisonManager, useLiveComparison } from '#app/features/comparisons/live-comparisons.ts';
 import { formatDuration } from '#app/lib/formats.ts';
@@ -46,16 +47,7 @@ export function ComparisonProgress({ comparisonId }: { comparisonId: string }) {
           </div>
         </div>
       )}
-      {trouble && (
-        <p role="status" className="border-l-[6px] border-flag py-1 pl-3">
-          {trouble}
-        </p>
-      )}
-      {phase === 'failed' && (
-        <p role="alert" className="border-l-[6px] border-danger py-1 pl-3">
-          {error}
-        </p>
-      )}
+      <WorkTrouble trouble={trouble} failure={phase === 'failed' ? (error ?? '') : undefined} />
     </>
   );
 }

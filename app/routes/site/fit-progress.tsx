@@ -1,6 +1,7 @@
 import type { Fit } from '#contract/fits.ts';
 import { Progress } from '#app/components/progress.tsx';
 import { WordButton } from '#app/components/word-button.tsx';
+import { WorkTrouble } from '#app/components/work-trouble.tsx';
 import { isFitting } from '#app/features/fits/fit-manager.ts';
 import { fitManager, useLiveFit } from '#app/features/fits/live-fits.ts';
 import { formatCount } from '#app/lib/formats.ts';
@@ -49,16 +50,7 @@ export function FitProgress({ fit }: { fit: Fit }) {
           </div>
         </div>
       )}
-      {trouble && (
-        <p role="status" className="border-l-[6px] border-flag py-1 pl-3">
-          {trouble}
-        </p>
-      )}
-      {phase === 'failed' && (
-        <p role="alert" className="border-l-[6px] border-danger py-1 pl-3">
-          {error}
-        </p>
-      )}
+      <WorkTrouble trouble={trouble} failure={phase === 'failed' ? (error ?? '') : undefined} />
     </>
   );
 }
